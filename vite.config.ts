@@ -1,0 +1,65 @@
+import { defineConfig } from 'vitest/config';
+import { playwright } from '@vitest/browser-playwright';
+import { fileURLToPath } from 'node:url';
+import { chromiumArguments, findBrowser } from './tests/support/browser.mjs';
+
+/** Command line build: one ES module for Node that keeps the packages it uses outside. */
+const commandLine = {
+  build: {
+    ssr: fileURLToPath(new URL('./src/cli/main.ts', import.meta.url)),
+    outDir: 'dist/cli',
+    target: 'node20',
+    emptyOutDir: true,
+    rollupOptions: { output: { entryFileNames: 'main.js', format: 'es' as const } },
+  },
+};
+
+/** Page build: everything below `dist/page`, no request after load. */
+const page = {
+  base: './',
+  build: { outDir: 'dist/page', target: 'es2022', emptyOutDir: true, assetsInlineLimit: 0 },
+  worker: { format: 'es' as const },
+};
+
+export default defineConfig(({ mode }) => ({
+  ...(mode === 'cli' ? commandLine : page),
+  test: {
+    projects: [
+      {
+        extends: true,
+        test: {
+          name: 'node',
+          environment: 'node',
+          include: ['tests/{unit,laws,outside,fuzz,cli,guard}/**/*.test.ts'],
+          testTimeout: 60_000,
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'bench',
+          environment: 'node',
+          include: ['tests/bench/**/*.bench-test.ts'],
+          testTimeout: 600_000,
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'browser',
+          include: ['tests/{components,gpu,pictures}/**/*.test.ts'],
+          testTimeout: 60_000,
+          browser: {
+            enabled: true,
+            headless: true,
+            screenshotFailures: false,
+            provider: playwright({
+              launchOptions: { executablePath: findBrowser() ?? '/nonexistent', args: chromiumArguments },
+            }),
+            instances: [{ browser: 'chromium' }],
+          },
+        },
+      },
+    ],
+  },
+}));
