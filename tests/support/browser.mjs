@@ -12,7 +12,14 @@ export const chromiumArguments = [
   '--enable-unsafe-swiftshader',
 ];
 
-const names = ['chromium', 'chromium-browser', 'google-chrome', 'google-chrome-stable', 'chrome', 'microsoft-edge'];
+const names = [
+  'chromium',
+  'chromium-browser',
+  'google-chrome',
+  'google-chrome-stable',
+  'chrome',
+  'microsoft-edge',
+];
 
 const fixedPlaces = [
   '/Applications/Google Chrome.app/Contents/MacOS/Google Chrome',

@@ -6,7 +6,7 @@ import { findBrowser } from './browser.mjs';
 function installChromium() {
   const mayInstall = existsSync('/usr/bin/apt-get') && process.getuid?.() === 0;
   if (!mayInstall) return;
-  console.log('No Chrome, Chromium or Edge found: installing Debian\'s chromium.');
+  console.log("No Chrome, Chromium or Edge found: installing Debian's chromium.");
   spawnSync('apt-get', ['update'], { stdio: 'ignore' });
   spawnSync('apt-get', ['install', '-y', '--no-install-recommends', 'chromium'], { stdio: 'inherit' });
 }
@@ -20,7 +20,15 @@ if (!findBrowser()) {
 }
 const run = spawnSync(
   process.execPath,
-  ['node_modules/vitest/vitest.mjs', 'run', '--project', 'node', '--project', 'browser', ...process.argv.slice(2)],
+  [
+    'node_modules/vitest/vitest.mjs',
+    'run',
+    '--project',
+    'node',
+    '--project',
+    'browser',
+    ...process.argv.slice(2),
+  ],
   { stdio: 'inherit' },
 );
 process.exit(run.status ?? 1);
