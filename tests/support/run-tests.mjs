@@ -18,17 +18,12 @@ if (!findBrowser()) {
   );
   process.exit(1);
 }
+const report = process.env.ELLIPSITE_TEST_REPORT;
+const reporters = report ? ['--reporter=default', '--reporter=json', `--outputFile.json=${report}`] : [];
+const projects = ['--project', 'node', '--project', 'browser'];
 const run = spawnSync(
   process.execPath,
-  [
-    'node_modules/vitest/vitest.mjs',
-    'run',
-    '--project',
-    'node',
-    '--project',
-    'browser',
-    ...process.argv.slice(2),
-  ],
+  ['node_modules/vitest/vitest.mjs', 'run', ...projects, ...reporters, ...process.argv.slice(2)],
   { stdio: 'inherit' },
 );
 process.exit(run.status ?? 1);
