@@ -1,0 +1,109 @@
+import { parseArgs } from 'node:util';
+import type { Reference } from '#src/dossier/dossier.ts';
+import type { DossierSettings } from '#src/dossier/dossier.ts';
+import { defaultSettings } from '#src/dossier/default-settings.ts';
+import { nuclide } from '#src/data/nuclides.ts';
+import { latticeSettings } from '#src/crystal/settings.ts';
+import { UsageError } from './io.ts';
+
+/** What the common options of all commands say. */
+export interface CommonArguments {
+  readonly files: readonly string[];
+  readonly json: boolean;
+  readonly block: string | null;
+  readonly settings: DossierSettings;
+}
+
+const commonOptions = {
+  json: { type: 'boolean' },
+  block: { type: 'string' },
+  isotope: { type: 'string', multiple: true },
+  reference: { type: 'string', multiple: true },
+  moment: { type: 'string', multiple: true },
+  frame: { type: 'string' },
+  symmetry: { type: 'string' },
+  tolerance: { type: 'string' },
+} as const;
+
+function knownNuclide(name: string, option: string) {
+  const found = nuclide(name);
+  if (!found) throw new UsageError(`--${option} ${name}: no such nuclide; write it like 27Al.`);
+  return found;
+}
+
+function finite(text: string, option: string): number {
+  const value = Number(text);
+  if (text.trim() === '' || !Number.isFinite(value))
+    throw new UsageError(`--${option}: ${text} is not a number.`);
+  return value;
+}
+
+/** `13C=170.5` (simple), `13C=170.5,-0.97` (intercept and slope), `13C=170.5,exact` (IUPAC's exact form). */
+function parseReference(text: string): Reference {
+  const match = /^([^=]+)=([^,]+)(?:,(.+))?$/.exec(text);
+  if (!match) throw new UsageError(`--reference ${text}: write 13C=170.5 or 13C=170.5,-0.97.`);
+  const [, isotope = '', intercept = '', second] = match;
+  knownNuclide(isotope, 'reference');
+  const interceptPpm = finite(intercept, 'reference');
+  if (second === undefined) return { kind: 'simple', interceptPpm, slope: -1, isotope };
+  if (second.trim() === 'exact') return { kind: 'exact', interceptPpm, slope: -1, isotope };
+  const slope = finite(second, 'reference');
+  if (slope >= 0) throw new UsageError(`--reference ${text}: the slope must be negative, near −1.`);
+  return { kind: 'regression', interceptPpm, slope, isotope };
+}
+
+function parseMoment(text: string): [string, number] {
+  const [isotope = '', barn = ''] = text.split('=');
+  knownNuclide(isotope, 'moment');
+  return [isotope, finite(barn, 'moment')];
+}
+
+function parseSymmetry(text: string | undefined): DossierSettings['symmetry'] {
+  if (text === undefined) return 'auto';
+  if (text === 'file' || text === 'find' || text === 'none') return text;
+  throw new UsageError(`--symmetry ${text}: allowed are file, find, none.`);
+}
+
+function parseTolerance(text: string | undefined): number {
+  if (text === undefined) return defaultSettings.symmetryToleranceAngstrom;
+  const value = finite(text, 'tolerance');
+  if (value <= 0 || value > 1) throw new UsageError(`--tolerance ${text}: allowed are 0 < Å ≤ 1.`);
+  return value;
+}
+
+function parseFrame(text: string | undefined): string | null {
+  if (text === undefined) return null;
+  const names = latticeSettings.map(({ name }) => name);
+  if (names.some((name) => name === text)) return text;
+  throw new UsageError(`--frame ${text}: allowed are ${names.join(', ')}.`);
+}
+
+/** Reads the common options. Raises `UsageError` with a sentence for the user. */
+export function parseCommonArguments(argv: readonly string[]): CommonArguments {
+  let parsed;
+  try {
+    parsed = parseArgs({ args: [...argv], options: commonOptions, allowPositionals: true });
+  } catch (error) {
+    throw new UsageError(error instanceof Error ? error.message : String(error));
+  }
+  const { values, positionals } = parsed;
+  if (positionals.length === 0) throw new UsageError('Name at least one FILE, or - for standard input.');
+  const isotopes = (values.isotope ?? []).map(
+    (name) => [knownNuclide(name, 'isotope').element, name] as const,
+  );
+  const references = (values.reference ?? []).map(parseReference);
+  return {
+    files: positionals,
+    json: values.json ?? false,
+    block: values.block ?? null,
+    settings: {
+      ...defaultSettings,
+      isotopes: Object.fromEntries(isotopes),
+      references: Object.fromEntries(references.map((reference) => [reference.isotope, reference])),
+      quadrupoleMomentsBarn: Object.fromEntries((values.moment ?? []).map(parseMoment)),
+      symmetry: parseSymmetry(values.symmetry),
+      symmetryToleranceAngstrom: parseTolerance(values.tolerance),
+      frame: parseFrame(values.frame),
+    },
+  };
+}

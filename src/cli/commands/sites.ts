@@ -1,0 +1,100 @@
+import type { CrystalDossier, SiteDossier } from '#src/dossier/dossier.ts';
+import { parseCommonArguments } from '../arguments.ts';
+import type { CommandIo } from '../io.ts';
+import { loadCase } from '../load-case.ts';
+import { problemLine, statusOf } from '../print-problems.ts';
+import { sitesJson } from '../sites-json.ts';
+import { fixed, textTable } from '../text-table.ts';
+
+interface Column {
+  readonly header: string;
+  readonly cell: (site: SiteDossier) => string;
+  /** A column stands only where some site has a value. */
+  readonly present: (site: SiteDossier) => boolean;
+}
+
+const always = () => true;
+
+/** Columns of the readable table, units in the header. */
+const columns: readonly Column[] = [
+  { header: 'site', cell: (site) => site.label, present: always },
+  { header: 'isotope', cell: (site) => site.isotope ?? site.element, present: always },
+  { header: 'mult.', cell: (site) => String(site.multiplicity), present: always },
+  { header: 'Wyckoff', cell: (site) => site.wyckoff ?? '–', present: always },
+  { header: 'site sym.', cell: (site) => site.siteSymmetry ?? '–', present: always },
+  { header: 'occ.', cell: (site) => fixed(site.occupancy, 3), present: (site) => site.occupancy !== 1 },
+  ...([0, 1, 2] as const).map((axis): Column => ({
+    header: ['x', 'y', 'z'][axis] ?? '',
+    cell: (site) => fixed(site.fractional?.[axis] ?? site.cartesian[axis], 4),
+    present: always,
+  })),
+  { header: 'orient.', cell: (site) => String(site.distinctOrientations), present: always },
+  ...shieldingColumns(),
+  ...shiftColumns(),
+  ...efgColumns(),
+];
+
+function shieldingColumns(): Column[] {
+  const present = (site: SiteDossier) => site.shielding !== null;
+  return [
+    { header: 'σiso/ppm', cell: (site) => fixed(site.shielding?.isotropic ?? null, 2), present },
+    { header: 'Ωσ/ppm', cell: (site) => fixed(site.shielding?.span ?? null, 2), present },
+    { header: 'κ', cell: (site) => fixed(site.shielding?.skew ?? null, 2), present },
+  ];
+}
+
+function shiftColumns(): Column[] {
+  const present = (site: SiteDossier) => site.shift !== null;
+  return [
+    { header: 'δiso/ppm', cell: (site) => fixed(site.shift?.isotropic ?? null, 2), present },
+    { header: 'Ωδ/ppm', cell: (site) => fixed(site.shift?.span ?? null, 2), present },
+  ];
+}
+
+function efgColumns(): Column[] {
+  const present = (site: SiteDossier) => site.efg !== null;
+  return [
+    { header: 'Vzz/a.u.', cell: (site) => fixed(site.efg?.components[2] ?? null, 4), present },
+    { header: 'CQ/MHz', cell: (site) => fixed(site.efg?.couplingMHz ?? null, 3), present },
+    { header: 'η', cell: (site) => fixed(site.efg?.asymmetry ?? null, 2), present },
+  ];
+}
+
+function heading(dossier: CrystalDossier): string {
+  const { lattice } = dossier;
+  const cell = lattice
+    ? [lattice.cell.a, lattice.cell.b, lattice.cell.c].map((x) => fixed(x, 4)).join(', ') +
+      ' Å; ' +
+      [lattice.cell.alpha, lattice.cell.beta, lattice.cell.gamma].map((x) => fixed(x, 3)).join(', ') +
+      `°; V ${fixed(lattice.volume, 2)} Å³`
+    : 'no cell; positions in Å';
+  const composition = Object.entries(dossier.composition)
+    .map(([element, count]) => `${element}${Number(count.toFixed(3))}`)
+    .join(' ');
+  return [
+    dossier.name,
+    cell,
+    `${dossier.spaceGroup}; ${dossier.symmetry.operations.length} operations, ${dossier.symmetry.reason}`,
+    `${dossier.atomsInCell} atoms in the cell: ${composition}`,
+  ].join('\n');
+}
+
+function readable(dossier: CrystalDossier): string {
+  const shown = columns.filter(({ present }) => dossier.sites.some(present));
+  const rows = dossier.sites.map((site) => shown.map(({ cell }) => cell(site)));
+  const header = shown.map((column) => column.header);
+  return `${heading(dossier)}\n\n${textTable(header, rows)}\n`;
+}
+
+/** `ellipsite sites FILE… [options]`: one dossier a site, as a readable table or as JSON. */
+export async function sitesCommand(argv: readonly string[], io: CommandIo): Promise<number> {
+  const common = parseCommonArguments(argv);
+  const { dossier, problems } = await loadCase(common, io);
+  if (common.json) {
+    io.writeOut(`${JSON.stringify(sitesJson(dossier, problems), null, 1)}\n`);
+  } else {
+    problems.forEach((found) => io.writeError(`${problemLine(found)}\n`));
+    if (dossier) io.writeOut(readable(dossier));
+  }
+  return statusOf(problems);
+}

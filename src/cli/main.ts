@@ -1,0 +1,39 @@
+#!/usr/bin/env node
+import { readFileSync } from 'node:fs';
+import { readFile } from 'node:fs/promises';
+import { createRequire } from 'node:module';
+import packageFacts from '../../package.json' with { type: 'json' };
+import type { CommandIo } from './io.ts';
+import { main } from './run.ts';
+
+const require = createRequire(import.meta.url);
+
+async function standardInput(): Promise<Uint8Array> {
+  const chunks: Buffer[] = [];
+  for await (const chunk of process.stdin) chunks.push(chunk as Buffer);
+  return Buffer.concat(chunks);
+}
+
+async function bytesOf(path: string): Promise<Uint8Array> {
+  try {
+    return await readFile(path);
+  } catch (error) {
+    const code = (error as NodeJS.ErrnoException).code;
+    if (code === 'ENOENT') throw new Error('there is no such file.', { cause: error });
+    if (code === 'EISDIR') throw new Error('this is a folder; name a file.', { cause: error });
+    throw new Error(`cannot be read (${code ?? 'unknown reason'}).`, { cause: error });
+  }
+}
+
+const io: CommandIo = {
+  readFile: bytesOf,
+  readStandardInput: standardInput,
+  writeOut: (text) => void process.stdout.write(text),
+  writeError: (text) => void process.stderr.write(text),
+  symmetryModule: () => readFileSync(require.resolve('@spglib/moyo-wasm/moyo_wasm_bg.wasm')),
+};
+
+process.stdout.on('error', (error: NodeJS.ErrnoException) => {
+  if (error.code !== 'EPIPE') throw error;
+});
+process.exitCode = await main(process.argv.slice(2), io, packageFacts.version);

@@ -1,0 +1,61 @@
+import { sitesCommand } from './commands/sites.ts';
+import type { CommandIo } from './io.ts';
+import { exitStatus, UsageError } from './io.ts';
+
+interface Command {
+  readonly summary: string;
+  readonly run: (argv: readonly string[], io: CommandIo) => Promise<number>;
+}
+
+/** Every command by its name; one file each below `commands`. */
+const commands: Readonly<Record<string, Command>> = {
+  sites: {
+    summary: 'one row a site: symmetry, tensors in every convention, equivalent atoms',
+    run: sitesCommand,
+  },
+};
+
+const options = `Options of every command
+  --json                     one JSON document on standard output
+  --block NAME               which of several structures
+  --isotope 27Al             nuclide of an element (repeatable)
+  --reference 13C=170.5      shift = 170.5 − shielding; 13C=170.5,-0.97 for intercept and slope;
+                             13C=170.5,exact for (σref − σ)/(1 − σref) (repeatable)
+  --moment 27Al=0.1466       your own quadrupole moment, barn (repeatable)
+  --symmetry file|find|none  whose operations: the file's, those found from the atoms, none
+  --tolerance Å              of the symmetry search (default 0.01)
+  --frame NAME               named Cartesian setting of the tensors, instead of the one found
+A FILE is recognised by content: CIF, XYZ or extended XYZ; - reads standard input.
+Exit status: 0 clean, 1 the content has errors, 2 wrong usage, 3 our fault.`;
+
+function usage(): string {
+  const list = Object.entries(commands).map(([name, { summary }]) => `  ${name.padEnd(10)} ${summary}`);
+  return `Usage: ellipsite COMMAND FILE… [options]\n\nCommands\n${list.join('\n')}\n\n${options}\n`;
+}
+
+/** The whole command line: words in, exit status out; nothing but `io` is touched. */
+export async function main(argv: readonly string[], io: CommandIo, version: string): Promise<number> {
+  const [name, ...rest] = argv;
+  if (name === '--version') {
+    io.writeOut(`${version}\n`);
+    return exitStatus.clean;
+  }
+  if (name === '--help' || name === 'help' || rest.includes('--help')) {
+    io.writeOut(usage());
+    return exitStatus.clean;
+  }
+  const command = name === undefined || !Object.hasOwn(commands, name) ? undefined : commands[name];
+  try {
+    if (!command)
+      throw new UsageError(name === undefined ? 'Name a command.' : `No command is called ${name}.`);
+    return await command.run(rest, io);
+  } catch (error) {
+    if (error instanceof UsageError) {
+      io.writeError(`ellipsite: ${error.message}\n${command ? '' : usage()}`);
+      return exitStatus.wrongUsage;
+    }
+    const story = error instanceof Error ? (error.stack ?? error.message) : String(error);
+    io.writeError(`ellipsite: our fault, please report it with the file: ${story}\n`);
+    return exitStatus.ourFault;
+  }
+}

@@ -1,0 +1,128 @@
+import { nested } from '#src/base/matrix3.ts';
+import type { Vec3 } from '#src/base/matrix3.ts';
+import type { Problem } from '#src/base/problem.ts';
+import type {
+  CrystalDossier,
+  EfgDossier,
+  ShieldingDossier,
+  ShiftDossier,
+  SiteDossier,
+} from '#src/dossier/dossier.ts';
+
+const list = (v: Vec3 | null): number[] | null => (v ? [...v] : null);
+
+function shieldingJson(shielding: ShieldingDossier | null) {
+  if (!shielding) return null;
+  return {
+    tensor: nested(shielding.tensor),
+    isotropic: shielding.isotropic,
+    components: list(shielding.components),
+    axes: shielding.axes.map(list),
+    span: shielding.span,
+    skew: shielding.skew,
+    reducedAnisotropy: shielding.reducedAnisotropy,
+    anisotropy: shielding.anisotropy,
+    asymmetry: shielding.asymmetry,
+    antisymmetricNorm: shielding.antisymmetricNorm,
+    symmetryResidual: shielding.symmetryResidual,
+    equivalentSpread: shielding.equivalentSpread,
+    symmetrised: nested(shielding.projected),
+    undefinedBecause: shielding.undefinedBecause,
+    source: { file: shielding.source.file, line: shielding.source.line },
+  };
+}
+
+function shiftJson(shift: ShiftDossier | null) {
+  if (!shift) return null;
+  return {
+    isotropic: shift.isotropic,
+    components: list(shift.components),
+    axes: shift.axes.map(list),
+    span: shift.span,
+    skew: shift.skew,
+    reducedAnisotropy: shift.reducedAnisotropy,
+    anisotropy: shift.anisotropy,
+    asymmetry: shift.asymmetry,
+    reference: shift.reference,
+    undefinedBecause: shift.undefinedBecause,
+  };
+}
+
+function efgJson(efg: EfgDossier | null) {
+  if (!efg) return null;
+  return {
+    tensor: nested(efg.tensor),
+    components: list(efg.components),
+    axes: efg.axes.map(list),
+    asymmetry: efg.asymmetry,
+    isotope: efg.isotope,
+    quadrupoleMomentBarn: efg.quadrupoleMomentBarn,
+    quadrupoleMomentSource: efg.quadrupoleMomentSource,
+    couplingMHz: efg.couplingMHz,
+    productMHz: efg.productMHz,
+    quadrupoleFrequencyMHz: efg.quadrupoleFrequencyMHz,
+    signDetermined: efg.signDetermined,
+    antisymmetricNorm: efg.antisymmetricNorm,
+    trace: efg.trace,
+    symmetryResidual: efg.symmetryResidual,
+    equivalentSpread: efg.equivalentSpread,
+    symmetrised: nested(efg.projected),
+    undefinedBecause: efg.undefinedBecause,
+    source: { file: efg.source.file, line: efg.source.line },
+  };
+}
+
+function siteJson(site: SiteDossier) {
+  return {
+    label: site.label,
+    element: site.element,
+    isotope: site.isotope,
+    occupancy: site.occupancy,
+    fractional: list(site.fractional),
+    cartesian: list(site.cartesian),
+    multiplicity: site.multiplicity,
+    siteSymmetryOrder: site.siteSymmetryOrder,
+    wyckoff: site.wyckoff,
+    siteSymmetry: site.siteSymmetry,
+    distinctOrientations: site.distinctOrientations,
+    forced: site.forced,
+    equivalents: site.equivalents.map(({ operation, fractional }) => ({
+      operation,
+      fractional: list(fractional),
+    })),
+    shielding: shieldingJson(site.shielding),
+    shift: shiftJson(site.shift),
+    efg: efgJson(site.efg),
+    source: { file: site.source.file, line: site.source.line },
+  };
+}
+
+function crystalJson(dossier: CrystalDossier) {
+  const { lattice, symmetry } = dossier;
+  return {
+    name: dossier.name,
+    cell: lattice ? { ...lattice.cell, volume: lattice.volume } : null,
+    lattice: lattice ? nested(lattice.rows) : null,
+    frame: lattice?.frame ?? null,
+    symmetry: {
+      number: symmetry.number,
+      hermannMauguin: symmetry.hermannMauguin,
+      hall: symmetry.hall,
+      operations: symmetry.operations.length,
+      source: symmetry.source,
+      reason: symmetry.reason,
+    },
+    atoms: dossier.atomsInCell,
+    composition: dossier.composition,
+  };
+}
+
+/** The document of `ellipsite sites --json`, schema `ellipsite/sites/1`; `crystal` is null where no structure was read. */
+export function sitesJson(dossier: CrystalDossier | null, problems: readonly Problem[]) {
+  return {
+    schema: 'ellipsite/sites/1',
+    crystal: dossier ? crystalJson(dossier) : null,
+    sites: dossier ? dossier.sites.map(siteJson) : [],
+    problems,
+  };
+}

@@ -1,0 +1,94 @@
+import { apply, identity3, inverse } from '#src/base/matrix3.ts';
+import type { Mat3, Vec3, VecFrac } from '#src/base/matrix3.ts';
+import type { ProblemLog } from '#src/base/problem.ts';
+import type { Crystal, Site } from '#src/crystal/crystal.ts';
+import { distinctOrientations } from '#src/crystal/distinct-orientations.ts';
+import { toCartesian } from '#src/crystal/lattice.ts';
+import type { Lattice } from '#src/crystal/lattice.ts';
+import { orbitOf } from '#src/crystal/orbit.ts';
+import type { Orbit } from '#src/crystal/orbit.ts';
+import { cartesianRotation, formatOperation } from '#src/crystal/symmetry-operation.ts';
+import type { EquivalentAtom } from './dossier.ts';
+
+/** A site with all its atoms of the cell and the operations that leave it in place. */
+export interface SiteAtoms {
+  readonly site: Site;
+  readonly atoms: readonly EquivalentAtom[];
+  /** Indices into symmetry.operations. */
+  readonly stabiliser: readonly number[];
+  readonly distinctOrientations: number;
+}
+
+function loneAtom(site: Site): SiteAtoms {
+  const atom: EquivalentAtom = {
+    id: `${site.index}.0`,
+    siteIndex: site.index,
+    operationIndex: 0,
+    operation: 'x,y,z',
+    fractional: null,
+    cartesian: site.cartesian,
+    rotation: identity3,
+    orientation: 0,
+  };
+  return { site, atoms: [atom], stabiliser: [0], distinctOrientations: 1 };
+}
+
+/** Cartesian matrices of all operations of a crystal; the identity alone without a cell. */
+export function cartesianOperations(crystal: Crystal): Mat3[] {
+  const { lattice, symmetry } = crystal;
+  if (!lattice) return [identity3];
+  return symmetry.operations.map((operation) => cartesianRotation(operation, lattice));
+}
+
+function atomsOfOrbit(
+  site: Site,
+  orbit: Orbit,
+  crystal: Crystal,
+  lattice: Lattice,
+  rotations: Mat3[],
+): SiteAtoms {
+  const { operations } = crystal.symmetry;
+  const orientations = distinctOrientations(operations, orbit.stabiliser);
+  const atoms = orbit.images.map((image, index): EquivalentAtom => {
+    const operation = operations[image.operationIndex]!;
+    const translation = operation.translation.map((t, axis) => t + image.cellShift[axis]!) as unknown as Vec3;
+    return {
+      id: `${site.index}.${index}`,
+      siteIndex: site.index,
+      operationIndex: image.operationIndex,
+      operation: formatOperation({ rotation: operation.rotation, translation }),
+      fractional: image.fractional,
+      cartesian: toCartesian(lattice, image.fractional),
+      rotation: rotations[image.operationIndex]!,
+      orientation: orientations.orientationOf(image.operationIndex),
+    };
+  });
+  return { site, atoms, stabiliser: orbit.stabiliser, distinctOrientations: orientations.count };
+}
+
+/**
+ * All atoms of the cell, site by site: images of every site under the operations, those closer than the merge
+ * distance (Å) being one. Raises `uneven-orbit` where the images do not fall into equal groups.
+ */
+export function cellAtoms(crystal: Crystal, mergeDistanceAngstrom: number, log: ProblemLog): SiteAtoms[] {
+  const { lattice } = crystal;
+  if (!lattice) return crystal.sites.map(loneAtom);
+  const rotations = cartesianOperations(crystal);
+  return crystal.sites.map((site) => {
+    const fractional: VecFrac = site.fractional ?? apply(inverse(lattice.toCartesian), site.cartesian);
+    const orbit = orbitOf(fractional, crystal.symmetry.operations, lattice, mergeDistanceAngstrom);
+    if (orbit.uneven) {
+      log.add(
+        'warning',
+        'uneven-orbit',
+        `The images of ${site.label} merge unevenly within ${mergeDistanceAngstrom} Å.`,
+        {
+          place: site.place,
+          got: fractional.map((x) => x.toFixed(4)).join(', '),
+          hint: 'The position lies near a symmetry element but not on it: correct the coordinates or the merge distance.',
+        },
+      );
+    }
+    return atomsOfOrbit(site, orbit, crystal, lattice, rotations);
+  });
+}

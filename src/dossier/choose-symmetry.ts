@@ -1,0 +1,208 @@
+import type { Vec3, VecFrac } from '#src/base/matrix3.ts';
+import { length, subtract } from '#src/base/vector3.ts';
+import type { ProblemLog } from '#src/base/problem.ts';
+import type { Crystal, CrystalSymmetry, Site } from '#src/crystal/crystal.ts';
+import { toCartesian } from '#src/crystal/lattice.ts';
+import type { Lattice } from '#src/crystal/lattice.ts';
+import { identityOperation } from '#src/crystal/symmetry-operation.ts';
+import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
+import type { SiteAtoms } from './cell-atoms.ts';
+import { cellAtoms } from './cell-atoms.ts';
+import type { DossierSettings } from './dossier.ts';
+
+/** A crystal under the symmetry the settings ask for, and where each row of the file went. */
+export interface ChosenCrystal {
+  readonly crystal: Crystal;
+  readonly sites: readonly SiteAtoms[];
+  /** Row of the file → index into the flat list of all atoms (site after site). */
+  readonly rowAtoms: readonly number[];
+  /** Wyckoff letters and site symmetries where the search already gave them. */
+  readonly found: {
+    readonly wyckoff: readonly (string | null)[];
+    readonly siteSymmetry: readonly (string | null)[];
+  } | null;
+}
+
+/** Atoms searched for symmetry at most; beyond this the search is left to the user's explicit wish. */
+const searchedAtomsLimit = 20_000;
+
+/** Flat index of the first atom of each site. */
+export function firstAtoms(sites: readonly SiteAtoms[]): number[] {
+  let next = 0;
+  return sites.map(({ atoms }) => {
+    const first = next;
+    next += atoms.length;
+    return first;
+  });
+}
+
+function asListed(crystal: Crystal, settings: DossierSettings, log: ProblemLog): ChosenCrystal {
+  const sites = cellAtoms(crystal, settings.mergeDistanceAngstrom, log);
+  return { crystal, sites, rowAtoms: firstAtoms(sites), found: null };
+}
+
+const noSymmetry: CrystalSymmetry = {
+  operations: [identityOperation],
+  number: 1,
+  hermannMauguin: 'P 1',
+  hall: 'P 1',
+  source: 'none',
+  reason: 'symmetry set aside by the user',
+  stated: true,
+};
+
+/** Every atom of the cell as a site of its own; labels of images get the running number of the image. */
+function expanded(listed: ChosenCrystal, lattice: Lattice): Site[] {
+  return listed.sites
+    .flatMap(({ site, atoms }) =>
+      atoms.map((atom, image): Site => ({
+        ...site,
+        index: 0,
+        label: atoms.length > 1 && image > 0 ? `${site.label}_${image + 1}` : site.label,
+        fractional: image === 0 ? site.fractional : atom.fractional,
+        cartesian: image === 0 || !atom.fractional ? site.cartesian : toCartesian(lattice, atom.fractional),
+        displacement: image === 0 ? site.displacement : null,
+      })),
+    )
+    .map((site, index) => ({ ...site, index }));
+}
+
+function withoutSymmetry(
+  crystal: Crystal,
+  lattice: Lattice,
+  settings: DossierSettings,
+  log: ProblemLog,
+): ChosenCrystal {
+  const listed = asListed(crystal, settings, log);
+  const whole: Crystal = { ...crystal, symmetry: noSymmetry, sites: expanded(listed, lattice) };
+  const sites = cellAtoms(whole, settings.mergeDistanceAngstrom, log);
+  return { crystal: whole, sites, rowAtoms: listed.rowAtoms, found: null };
+}
+
+/** One number for each different content of a site: element, shares, and the file's own site label where it groups. */
+function speciesNumbers(sites: readonly Site[]): number[] {
+  const numbers = new Map<string, number>();
+  return sites.map((site) => {
+    const key = site.species.map(({ element, occupancy }) => `${element}:${occupancy.toFixed(4)}`).join('+');
+    const number = numbers.get(key) ?? numbers.size + 1;
+    numbers.set(key, number);
+    return number;
+  });
+}
+
+function nearestAtom(position: VecFrac, from: SiteAtoms, lattice: Lattice): number {
+  let best = 0;
+  let bestDistance = Infinity;
+  from.atoms.forEach((atom, index) => {
+    if (!atom.fractional) return;
+    const difference = subtract(atom.fractional, position).map((x) => x - Math.round(x)) as unknown as Vec3;
+    const distance = length(toCartesian(lattice, difference));
+    if (distance < bestDistance) {
+      best = index;
+      bestDistance = distance;
+    }
+  });
+  return best;
+}
+
+function searched(
+  crystal: Crystal,
+  lattice: Lattice,
+  tables: SymmetryTables,
+  settings: DossierSettings,
+  log: ProblemLog,
+): ChosenCrystal | null {
+  const listed = asListed(crystal, settings, log);
+  const whole = expanded(listed, lattice);
+  const positions = whole.map(({ fractional }) => fractional ?? [0, 0, 0]);
+  const tolerance = settings.symmetryToleranceAngstrom;
+  const result = tables.search(lattice, positions, speciesNumbers(whole), tolerance);
+  if (!result) return null;
+  const leaders = result.orbits
+    .map((leader, atom) => (leader === atom ? atom : -1))
+    .filter((atom) => atom >= 0);
+  const siteOfLeader = new Map(leaders.map((leader, site) => [leader, site]));
+  const reduced: Crystal = {
+    ...crystal,
+    symmetry: {
+      operations: result.operations,
+      number: result.number,
+      hermannMauguin: result.hermannMauguin,
+      hall: result.hall,
+      source: 'found',
+      reason: `found from the atoms within ${tolerance} Å`,
+      stated: true,
+    },
+    sites: leaders.map((leader, index) => ({ ...whole[leader]!, index })),
+  };
+  const sites = cellAtoms(reduced, settings.mergeDistanceAngstrom, log);
+  const first = firstAtoms(sites);
+  const atomOf = whole.map((site, atom) => {
+    const siteIndex = siteOfLeader.get(result.orbits[atom]!) ?? 0;
+    return first[siteIndex]! + nearestAtom(site.fractional ?? [0, 0, 0], sites[siteIndex]!, lattice);
+  });
+  return {
+    crystal: reduced,
+    sites,
+    rowAtoms: listed.rowAtoms.map((atom) => atomOf[atom]!),
+    found: {
+      wyckoff: leaders.map((leader) => result.wyckoff[leader] ?? null),
+      siteSymmetry: leaders.map((leader) => result.siteSymmetry[leader] ?? null),
+    },
+  };
+}
+
+/**
+ * Puts a crystal under the symmetry the settings ask for: the file's, the one found from its atoms, or none.
+ * `auto` takes the file's where it states one. Raises `symmetry-found`, `symmetry-not-found`, `symmetry-search-too-large`.
+ */
+export function chooseSymmetry(
+  crystal: Crystal,
+  settings: DossierSettings,
+  tables: SymmetryTables | null,
+  log: ProblemLog,
+): ChosenCrystal {
+  const { lattice } = crystal;
+  const wish = settings.symmetry;
+  if (!lattice) return asListed(crystal, settings, log);
+  if (wish === 'none') return withoutSymmetry(crystal, lattice, settings, log);
+  const search = wish === 'find' || (wish === 'auto' && !crystal.symmetry.stated);
+  if (!search) return asListed(crystal, settings, log);
+  if (wish === 'auto' && crystal.sites.length > searchedAtomsLimit) {
+    log.add(
+      'warning',
+      'symmetry-search-too-large',
+      `No symmetry stated and ${crystal.sites.length} atoms: not searched.`,
+      {
+        allowed: `at most ${searchedAtomsLimit} atoms`,
+        hint: 'Ask for the search expressly, or give the operations.',
+        place: crystal.place,
+      },
+    );
+    return asListed(crystal, settings, log);
+  }
+  const result = tables && searched(crystal, lattice, tables, settings, log);
+  if (!result) {
+    log.add(
+      'warning',
+      'symmetry-not-found',
+      'The search for symmetry gave no result: every atom is a site of its own.',
+      {
+        place: crystal.place,
+        hint: 'Try another tolerance, or give the operations in the file.',
+      },
+    );
+    return asListed(crystal, settings, log);
+  }
+  const { number, hermannMauguin, reason } = result.crystal.symmetry;
+  log.add(
+    'note',
+    'symmetry-found',
+    `Space group ${hermannMauguin ?? '?'} (No. ${number ?? '?'}) ${reason}.`,
+    {
+      place: crystal.place,
+      hint: 'State the symmetry in the file, or change the tolerance.',
+    },
+  );
+  return result;
+}

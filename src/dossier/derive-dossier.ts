@@ -1,0 +1,149 @@
+import { attachTensors } from '#src/attach/attach.ts';
+import type { AtomImage, Attachment } from '#src/attach/attachment.ts';
+import { identity3 } from '#src/base/matrix3.ts';
+import { ProblemLog } from '#src/base/problem.ts';
+import type { Problem } from '#src/base/problem.ts';
+import { unwatched } from '#src/base/progress.ts';
+import type { ReportProgress } from '#src/base/progress.ts';
+import type { Crystal } from '#src/crystal/crystal.ts';
+import { latticeFromCell } from '#src/crystal/lattice.ts';
+import type { LatticeSettingName } from '#src/crystal/settings.ts';
+import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
+import type { TensorSet } from '#src/tensor/tensor-set.ts';
+import { bondsOf } from './bonds-of-cell.ts';
+import type { SiteAtoms } from './cell-atoms.ts';
+import { cartesianOperations } from './cell-atoms.ts';
+import { chooseSymmetry } from './choose-symmetry.ts';
+import type { ChosenCrystal } from './choose-symmetry.ts';
+import { compositionOf } from './composition.ts';
+import type { CrystalDossier, DossierSettings, SiteDossier } from './dossier.ts';
+import { describeSymmetry } from './describe-symmetry.ts';
+import { siteTensors } from './site-tensors.ts';
+
+/** Everything a dossier is derived from. */
+export interface DossierInput {
+  readonly crystal: Crystal;
+  readonly tensorSets: readonly TensorSet[];
+  /** null: no symmetry search and no Wyckoff letters. */
+  readonly tables: SymmetryTables | null;
+  readonly settings: DossierSettings;
+  /** What reading already raised; kept at the head of the dossier's problems. */
+  readonly problems: readonly Problem[];
+}
+
+/** The same crystal and sets with the Cartesian frame the user named put in place of the given one. */
+function inNamedFrame(crystal: Crystal, sets: readonly TensorSet[], frame: string | null) {
+  if (frame === null || !crystal.lattice) return { crystal, sets };
+  const lattice = latticeFromCell(crystal.lattice.cell, frame as LatticeSettingName);
+  const turned = sets.map((set) =>
+    set.lattice ? { ...set, lattice: latticeFromCell(set.lattice.cell, frame as LatticeSettingName) } : set,
+  );
+  return { crystal: { ...crystal, lattice }, sets: turned };
+}
+
+function imagesOf(sites: readonly SiteAtoms[]): AtomImage[] {
+  return sites.flatMap(({ site, atoms }) =>
+    atoms.map((atom, image) => ({
+      siteIndex: site.index,
+      element: site.element,
+      label: site.label,
+      fractional: atom.fractional,
+      rotation: image === 0 ? identity3 : atom.rotation,
+      own: image === 0,
+    })),
+  );
+}
+
+/** Sets of the crystal's own file go by rows, others by geometry or labels; one attachment a quantity, the first wins. */
+function attachAll(
+  crystal: Crystal,
+  sets: readonly TensorSet[],
+  chosen: ChosenCrystal,
+  log: ProblemLog,
+): Attachment[] {
+  const images = imagesOf(chosen.sites);
+  const attachments: Attachment[] = [];
+  for (const set of sets) {
+    if (attachments.some(({ quantity }) => quantity === set.quantity)) {
+      log.add(
+        'warning',
+        'second-set-left-out',
+        `A second set of ${set.quantity} tensors, ${set.name}, was left out.`,
+        {
+          place: { file: set.file, line: set.entries[0]?.place.line ?? 1 },
+          hint: 'Open one set of each quantity at a time.',
+        },
+      );
+      continue;
+    }
+    const sameFile = set.file === crystal.place.file && set.structureIndex !== null;
+    const target = {
+      lattice: chosen.crystal.lattice,
+      images,
+      siteCount: chosen.sites.length,
+      rows: sameFile ? chosen.rowAtoms : null,
+    };
+    const attachment = attachTensors(set, target, log);
+    if (attachment) attachments.push(attachment);
+  }
+  return attachments;
+}
+
+/**
+ * Derives every number of a crystal once: symmetry as the settings ask, atoms of the cell, tensors bound to sites and
+ * turned along their equivalents, conventions, noise, bonds. Never throws for content; problems carry what was doubtful.
+ */
+export function deriveDossier(input: DossierInput, progress: ReportProgress = unwatched): CrystalDossier {
+  const { settings, tables } = input;
+  const log = new ProblemLog();
+  input.problems.forEach((found) => log.push(found));
+  const { crystal, sets } = inNamedFrame(input.crystal, input.tensorSets, settings.frame);
+  progress(0, 'symmetry');
+  const chosen = chooseSymmetry(crystal, settings, tables, log);
+  const symmetry = describeSymmetry(chosen, tables, settings, log);
+  progress(0.4, 'tensors');
+  const attachments = attachAll(crystal, sets, chosen, log);
+  const rotations = cartesianOperations(chosen.crystal);
+  const sites = chosen.sites.map((siteAtoms, index): SiteDossier => {
+    const { site } = siteAtoms;
+    const stabiliser = siteAtoms.stabiliser.map((operation) => rotations[operation] ?? identity3);
+    return {
+      index,
+      label: site.label,
+      element: site.element,
+      species: site.species,
+      occupancy: site.occupancy,
+      fractional: site.fractional,
+      cartesian: site.cartesian,
+      multiplicity: siteAtoms.atoms.length,
+      siteSymmetryOrder: siteAtoms.stabiliser.length,
+      wyckoff: symmetry.wyckoff[index] ?? null,
+      siteSymmetry: symmetry.siteSymmetry[index] ?? null,
+      distinctOrientations: siteAtoms.distinctOrientations,
+      equivalents: siteAtoms.atoms,
+      displacement: site.displacement,
+      disorder: site.disorder,
+      charge: site.charge,
+      attachedHydrogens: site.attachedHydrogens,
+      source: site.place,
+      ...siteTensors({ site, stabiliser, attachments, settings }, log),
+    };
+  });
+  progress(0.7, 'bonds');
+  const { bonds, wholeMolecules } = bondsOf(chosen);
+  progress(1, 'done');
+  return {
+    name: crystal.name,
+    lattice: chosen.crystal.lattice,
+    symmetry: symmetry.symmetry,
+    spaceGroup: symmetry.spaceGroup,
+    atomsInCell: sites.reduce((sum, { multiplicity }) => sum + multiplicity, 0),
+    composition: compositionOf(sites),
+    sites,
+    bonds,
+    wholeMolecules,
+    temperatureK: crystal.temperatureK,
+    settings,
+    problems: log.list(),
+  };
+}

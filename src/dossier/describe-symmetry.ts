@@ -1,0 +1,62 @@
+import type { ProblemLog } from '#src/base/problem.ts';
+import type { CrystalSymmetry } from '#src/crystal/crystal.ts';
+import { identifySetting } from '#src/crystal/space-group.ts';
+import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
+import type { ChosenCrystal } from './choose-symmetry.ts';
+import type { DossierSettings } from './dossier.ts';
+
+/** The group named as far as it can be, and letter and site symmetry of every site. */
+export interface SymmetryDescription {
+  readonly symmetry: CrystalSymmetry;
+  readonly spaceGroup: string;
+  readonly wyckoff: readonly (string | null)[];
+  readonly siteSymmetry: readonly (string | null)[];
+}
+
+function heading({ hermannMauguin, number, operations, stated }: CrystalSymmetry): string {
+  if (!stated) return 'no symmetry stated';
+  const name = hermannMauguin ?? `group of ${operations.length} operations`;
+  return number === null ? name : `${name} (No. ${number})`;
+}
+
+/**
+ * Names the group of the operations in use (number, Hall symbol where tabulated) and gives Wyckoff letters and oriented
+ * site-symmetry symbols for that very group. Raises `wyckoff-unknown`.
+ */
+export function describeSymmetry(
+  chosen: ChosenCrystal,
+  tables: SymmetryTables | null,
+  settings: DossierSettings,
+  log: ProblemLog,
+): SymmetryDescription {
+  const { crystal, sites, found } = chosen;
+  const { lattice, symmetry } = crystal;
+  const unknown = { wyckoff: sites.map(() => null), siteSymmetry: sites.map(() => null) };
+  if (!lattice) return { symmetry, spaceGroup: 'molecule without a cell', ...unknown };
+  const setting = identifySetting(symmetry.operations);
+  const positions = sites.map(({ site }) => site.fractional ?? ([0, 0, 0] as const));
+  const told =
+    tables?.describeSites(lattice, symmetry.operations, positions, settings.mergeDistanceAngstrom) ?? null;
+  if (tables && !told && !found) {
+    log.add(
+      'note',
+      'wyckoff-unknown',
+      'The operations are no space group of the tables: no Wyckoff letters.',
+      {
+        place: crystal.place,
+      },
+    );
+  }
+  const named: CrystalSymmetry = {
+    ...symmetry,
+    number: setting?.number ?? told?.number ?? symmetry.number,
+    hermannMauguin: symmetry.hermannMauguin ?? setting?.hermannMauguinShort ?? told?.hermannMauguin ?? null,
+    hall: symmetry.hall ?? setting?.hall ?? null,
+  };
+  return {
+    symmetry: named,
+    spaceGroup: heading(named),
+    wyckoff: told?.wyckoff ?? found?.wyckoff ?? unknown.wyckoff,
+    siteSymmetry: told?.siteSymmetry ?? found?.siteSymmetry ?? unknown.siteSymmetry,
+  };
+}
