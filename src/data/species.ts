@@ -1,0 +1,111 @@
+import { elementOf } from './elements.ts';
+
+/** One element with what an atom type says about it. */
+export interface ParsedSpecies {
+  /** Symbol; `D` and `T` for the heavy hydrogens. */
+  readonly element: string;
+  /** Formal charge, e; null where not given. */
+  readonly charge: number | null;
+  /** Mass number, where the type names an isotope; null elsewhere. */
+  readonly massNumber: number | null;
+  /** Hydrogens the type counts on the atom: 1 in `OH`, 2 in `H2O`, 0 elsewhere. */
+  readonly hydrogens: number;
+}
+
+/** Elements that share a position. */
+export interface SpeciesMixture {
+  readonly species: readonly (ParsedSpecies & { readonly share: number })[];
+  /** False where the text gives no shares and equal ones were put in. */
+  readonly sharesGiven: boolean;
+}
+
+const single =
+  /^(?<mass>\d{1,3})?(?<symbol>[A-Za-z]{1,2}?)(?<valence>val|va|v)?(?<charge>(?:\d+(?:\.\d+)?)?[+-]+|[+-]\d+(?:\.\d+)?|\d*)$/;
+
+/**
+ * An atom type as files write it: `Si`, `SI`, `O2-`, `Fe3+`, `Fe+3`, `Na1+`, `Cu0+`, `2H`, `D`, `Siva` (valence form
+ * factor), `OH`, `H2O`. A bare trailing number (`Fe2`) is no charge. null for anything that is not one element.
+ *
+ * `parseSpecies('O2-')` → `{element: 'O', charge: -2, massNumber: null, hydrogens: 0}`
+ */
+export function parseSpecies(text: string): ParsedSpecies | null {
+  const clean = text.trim().replace(/[−–]/g, '-').replace(/\s+/g, '');
+  const group = hydrogenGroup(clean);
+  if (group) return group;
+  const parts = single.exec(clean)?.groups;
+  if (!parts) return null;
+  const symbol = parts.symbol ?? '';
+  if (parts.valence && !/^(C|Si)$/i.test(symbol)) return null;
+  const element = elementOf(symbol);
+  if (!element) return null;
+  const massNumber = parts.mass ? Number(parts.mass) : null;
+  return {
+    element: element.symbol === 'H' ? hydrogenOfMass(massNumber) : element.symbol,
+    charge: chargeOf(parts.charge ?? ''),
+    massNumber,
+    hydrogens: 0,
+  };
+}
+
+/**
+ * An atom type that may name several elements on one position: `Al0.5Si0.5`, `(Fe,Mg)`, `Al/Si`, `Mg0.9 Fe0.1`,
+ * `AlSi`. Shares are returned as given (they may add up to less than 1); where none is given each has the same. A
+ * single element is a mixture of one with share 1. null where something in it is no element.
+ */
+export function parseMixture(text: string): SpeciesMixture | null {
+  const alone = parseSpecies(text);
+  if (alone) return { species: [{ ...alone, share: 1 }], sharesGiven: true };
+  const pieces = mixturePieces(text.trim().replace(/[()[\]{}]/g, ' '));
+  if (!pieces || pieces.length < 2) return null;
+  const species: (ParsedSpecies & { share: number | null })[] = [];
+  for (const piece of pieces) {
+    const parts = /^(.*?[A-Za-z+-])[:=]?(\d*\.\d+|[01])?$/.exec(piece);
+    const found = parseSpecies(parts?.[1] ?? piece);
+    if (!found) return null;
+    species.push({ ...found, share: parts?.[2] ? Number(parts[2]) : null });
+  }
+  return withShares(species);
+}
+
+/** Cut at separators, else before every capital where the shares or two-letter symbols show that it is a mixture. */
+function mixturePieces(text: string): string[] | null {
+  const separated = text.split(/[,;/|&\s]+/).filter((piece) => piece !== '');
+  if (separated.length > 1) return separated;
+  const joined = separated[0] ?? '';
+  const cut = joined.match(/[A-Z][a-z]?(?:\d?[+-](?=\d*\.|[A-Z]|$))?(?:\d*\.\d+)?/g);
+  if (!cut || cut.join('') !== joined) return null;
+  const telling = /\./.test(joined) || (/[A-Z][a-z]/.test(joined) && !/[HDT](?![a-z])/.test(joined));
+  return telling ? cut : null;
+}
+
+function withShares(species: readonly (ParsedSpecies & { share: number | null })[]): SpeciesMixture {
+  const missing = species.filter(({ share }) => share === null).length;
+  const given = species.reduce((sum, { share }) => sum + (share ?? 0), 0);
+  const each = missing > 0 ? Math.max(0, 1 - given) / missing : 0;
+  return {
+    species: species.map((one) => ({ ...one, share: one.share ?? each })),
+    sharesGiven: missing === 0,
+  };
+}
+
+function hydrogenGroup(text: string): ParsedSpecies | null {
+  const parts = /^(?:([CNO])H([1-4]?)|H2(O)|(wat)|(aq))([+-]?\d*[+-]?)$/i.exec(text);
+  if (!parts || /^(ch|nh|oh)/.test(text)) return null;
+  const heavy = parts[1]?.toUpperCase() ?? 'O';
+  const hydrogens = parts[1] ? Number(parts[2] || 1) : 2;
+  return { element: heavy, charge: chargeOf(parts[6] ?? ''), massNumber: null, hydrogens };
+}
+
+function hydrogenOfMass(massNumber: number | null): string {
+  if (massNumber === 2) return 'D';
+  return massNumber === 3 ? 'T' : 'H';
+}
+
+/** `2-`, `-2`, `+`, `3+`, `0+`, `2.5+`, `--`; null for an empty text or a number without a sign. */
+function chargeOf(text: string): number | null {
+  const sign = /[+-]/.exec(text)?.[0];
+  if (!sign) return null;
+  const digits = text.replace(/[+-]/g, '');
+  const size = digits === '' ? text.length : Number(digits);
+  return size === 0 ? 0 : sign === '-' ? -size : size;
+}
