@@ -1,0 +1,112 @@
+import type { Species } from '#src/crystal/crystal.ts';
+import { elementFromLabel, elementOf } from '#src/data/elements.ts';
+import type { SpeciesMixture } from '#src/data/species.ts';
+import { parseMixture } from '#src/data/species.ts';
+
+/** What stands on a row of the atom list. */
+export interface SiteSpecies {
+  /** Main element's symbol, `X` where unknown. */
+  readonly element: string;
+  /** Shares of the row's occupancy, which sum to 1 or to what the type says. */
+  readonly shares: readonly Species[];
+  readonly charge: number | null;
+  /** Hydrogens the type counts on the atom, such as 1 for `OH`. */
+  readonly hydrogens: number;
+  /** How the element was found, and whether another reading was possible. */
+  readonly from: 'type' | 'label' | 'nothing';
+  readonly certain: boolean;
+  /** False where a mixture named no shares and equal ones were taken. */
+  readonly sharesGiven: boolean;
+}
+
+/** Names of points that are no atoms: ring centres, centroids, lone pairs, vacancies. Common practice, no source. */
+const dummyNames =
+  /^(x|xx|du|dum|dummy|cg|cgs|cnt|cent|centroid|ctr|ct|lp|va|vac|vacancy|void|hole|\u25a1)(?![a-z])/i;
+
+/** True for a row that stands for no atom: `dum` as calculation flag, or a dummy name where no element is told. */
+export function isDummy(
+  typeText: string | null,
+  label: string,
+  calcFlag: string | null,
+  known: ReadonlySet<string>,
+): boolean {
+  if (calcFlag?.toLowerCase() === 'dum') return true;
+  const name = typeText ?? label;
+  if (!dummyNames.test(name)) return false;
+  if (parseMixture(name) !== null && typeText !== null) return false;
+  if (typeText !== null) return elementFromKnown(label, known) === null;
+  const reading = elementFromLabel(label, known);
+  return reading === null || !known.has(reading.element);
+}
+
+/**
+ * Element, shares and charge of a row from its type symbol, else from its label; `known` holds the elements of the
+ * formula, which decide between readings such as `CA1` (calcium or carbon).
+ */
+export function speciesOfSite(
+  typeText: string | null,
+  label: string,
+  known: ReadonlySet<string>,
+): SiteSpecies {
+  const typed = typeText === null ? null : parseMixture(typeText);
+  if (typed && typeText !== null && !contradicted(typeText, typed, known)) return fromMixture(typed, 'type');
+  const typeReading = typeText === null ? null : elementFromLabel(typeText, known);
+  if (typeReading && (known.size === 0 || known.has(typeReading.element))) {
+    return ofElement(typeReading.element, 'type', typeReading.certain);
+  }
+  const mixture = /[,/]/.test(label) ? parseMixture(label) : null;
+  if (mixture) return fromMixture(mixture, 'label');
+  const reading = elementFromLabel(label, known);
+  if (reading && (known.size === 0 || known.has(reading.element))) {
+    return ofElement(reading.element, 'label', reading.certain);
+  }
+  if (/^[HD](?![a-z])/.test(label)) return ofElement(label.startsWith('D') ? 'D' : 'H', 'label', false);
+  const inside = elementFromKnown(label, known);
+  if (inside) return ofElement(inside, 'label', false);
+  if (typed) return fromMixture(typed, 'type');
+  if (reading) return ofElement(reading.element, 'label', false);
+  return ofElement('X', 'nothing', false);
+}
+
+/** Two capitals as a type, such as `CO` or `HO`, that name no element of the formula while their letters alone do. */
+function contradicted(text: string, mixture: SpeciesMixture, known: ReadonlySet<string>): boolean {
+  const [only, ...more] = mixture.species;
+  if (!only || more.length > 0 || known.size === 0 || !/^[A-Z]{2}\d*$/.test(text)) return false;
+  if (known.has(only.element)) return false;
+  return known.has(elementFromLabel(text, known)?.element ?? '');
+}
+
+/** An element of the formula anywhere in the label, as in `M1Mg` or `T2-Al`; the longest symbol wins. */
+function elementFromKnown(label: string, known: ReadonlySet<string>): string | null {
+  const pieces = label.match(/[A-Z][a-z]?/g) ?? [];
+  return pieces.find((piece) => piece.length === 2 && known.has(piece)) ?? pieces.find((piece) => known.has(piece)) ?? null;
+}
+
+function fromMixture(mixture: SpeciesMixture, from: 'type' | 'label'): SiteSpecies {
+  const { species, sharesGiven } = mixture;
+  const main = species.reduce((best, one) => (one.share > best.share ? one : best));
+  const charged = species.filter(({ charge }) => charge !== null);
+  const charge = charged.length === 0 ? null : charged.reduce((sum, one) => sum + one.charge! * one.share, 0);
+  return {
+    element: main.element,
+    shares: species.map(({ element, share }) => ({ element, occupancy: share })),
+    charge,
+    hydrogens: species.reduce((sum, one) => sum + one.hydrogens * one.share, 0),
+    from,
+    certain: true,
+    sharesGiven,
+  };
+}
+
+function ofElement(element: string, from: SiteSpecies['from'], certain: boolean): SiteSpecies {
+  const symbol = elementOf(element)?.symbol ?? element;
+  return {
+    element: symbol,
+    shares: [{ element: symbol, occupancy: 1 }],
+    charge: null,
+    hydrogens: 0,
+    from,
+    certain,
+    sharesGiven: true,
+  };
+}

@@ -1,0 +1,152 @@
+import type { Mat3 } from '#src/base/matrix3.ts';
+import { asMat3 } from '#src/base/matrix3.ts';
+import type { Place, ProblemLog } from '#src/base/problem.ts';
+import type { Lattice } from '#src/crystal/lattice.ts';
+import type { Site } from '#src/crystal/crystal.ts';
+import type { Quantity, TensorEntry, TensorSet } from '#src/tensor/tensor-set.ts';
+import { efgTensorToAtomicUnits, efgUnitOf } from '#src/tensor/units.ts';
+import type { CifValue } from '../cif-document.ts';
+import type { BlockView } from './block-view.ts';
+import { placeOfValue, textOf } from './block-view.ts';
+import type { CategoryTable } from './category-table.ts';
+import { categoryTable } from './category-table.ts';
+import { readNumber } from './tolerant-number.ts';
+
+/** Our own loop for tensors in a CIF: label of the site, quantity, unit, nine components row by row. */
+const prefix = '_ellipsite_tensor_';
+const componentNames = [11, 12, 13, 21, 22, 23, 31, 32, 33].map((index) => `${prefix}${index}`);
+const quantities: readonly Quantity[] = ['shielding', 'shift', 'efg'];
+
+/** What the tensors of a block are bound to. */
+export interface TensorGround {
+  readonly sites: readonly Site[];
+  readonly lattice: Lattice | null;
+  /** False where the Cartesian frame is the dictionary's default and not written in the file. */
+  readonly frameGiven: boolean;
+  readonly structureIndex: number;
+}
+
+/**
+ * Tensor sets of a block, one a quantity, from the loop `_ellipsite_tensor_…`: shielding and shift in ppm, EFG in
+ * `a.u.` (also without a unit), `1e21V/m2` or `V/A2`, converted to atomic units; frame = that of the Cartesian transform of the
+ * file, else the default frame (`cif-tensor-frame-assumed`). Rows with a faulty quantity, unit or component are left out
+ * (`cif-bad-tensor`); a label that no site has, or several have, or that came before is reported (`cif-tensor-label`).
+ */
+export function readTensorSets(view: BlockView, ground: TensorGround, log: ProblemLog): TensorSet[] {
+  const table = categoryTable(view, [`${prefix}site_label`, ...componentNames, `${prefix}quantity`]);
+  if (!table) return [];
+  const sites = sitesByLabel(ground.sites);
+  const sets = new Map<Quantity, { quantity: Quantity; unitGiven: string; entries: TensorEntry[] }>();
+  const seen = new Set<string>();
+  for (let row = 0; row < table.rows; row++) {
+    const read = readRow(view, table, row, log);
+    if (!read) continue;
+    const index = siteOf(read, sites, seen, log);
+    if (index === 'repeated') continue;
+    const site = index === null ? null : ground.sites[index]!;
+    const set = sets.get(read.quantity) ?? { quantity: read.quantity, unitGiven: read.unitGiven, entries: [] };
+    sets.set(read.quantity, set);
+    set.entries.push({
+      label: read.label,
+      element: site?.element ?? 'X',
+      atomIndex: index,
+      cartesian: site?.cartesian ?? null,
+      tensor: read.tensor,
+      place: read.place,
+    });
+  }
+  if (sets.size > 0 && ground.lattice && !ground.frameGiven) reportFrame(view, table, ground.lattice, log);
+  return [...sets.values()].map(({ quantity, unitGiven, entries }) => ({
+    name: `${view.block.name}, ${quantity}`,
+    quantity,
+    unitGiven,
+    lattice: ground.lattice,
+    structureIndex: ground.structureIndex,
+    entries,
+    file: view.source.name,
+  }));
+}
+
+interface TensorRow {
+  readonly label: string;
+  readonly quantity: Quantity;
+  readonly unitGiven: string;
+  readonly tensor: Mat3;
+  readonly place: Place;
+}
+
+function readRow(view: BlockView, table: CategoryTable, row: number, log: ProblemLog): TensorRow | null {
+  const cell = (name: string): CifValue | undefined => table.column(prefix + name)?.at(row);
+  const label = textOf(cell('site_label'));
+  const place = placeOfTensor(view, table, row);
+  const bad = (what: string, got: string, allowed: string): null => {
+    log.add('error', 'cif-bad-tensor', `Tensor row ${row + 1} (${label ?? 'no label'}): ${what}; the row was left out.`, {
+      place,
+      got,
+      allowed,
+    });
+    return null;
+  };
+  if (label === null) return bad('no site label', '?', 'a label of the atom list');
+  const named = textOf(cell('quantity')) ?? '?';
+  const quantity = quantities.find((one) => one === named.toLowerCase());
+  if (!quantity) return bad(`the quantity is “${named}”`, named, quantities.join(', '));
+  const unitText = textOf(cell('unit'));
+  const components = componentNames.map((name) => textOf(table.column(name)?.at(row)));
+  const numbers = components.map((text) => (text === null ? null : (readNumber(text)?.value ?? null)));
+  if (!numbers.every((number) => number !== null && Number.isFinite(number))) {
+    return bad('a component is missing or no number', components.map((text) => text ?? '?').join(' '), 'nine numbers');
+  }
+  const given = asMat3(numbers as number[]);
+  if (quantity !== 'efg') {
+    if (unitText !== null && !/^(ppm|1e-6)$/i.test(unitText)) return bad(`the unit is “${unitText}”`, unitText, 'ppm');
+    return { label, quantity, unitGiven: unitText ?? 'ppm', tensor: given, place };
+  }
+  const unit = efgUnitOf(unitText ?? 'a.u.');
+  if (!unit) return bad(`the unit is “${unitText}”`, unitText ?? '?', 'a.u., 1e21V/m2, V/A2');
+  return { label, quantity, unitGiven: unitText ?? 'a.u.', tensor: efgTensorToAtomicUnits(given, unit), place };
+}
+
+function sitesByLabel(sites: readonly Site[]): Map<string, number[]> {
+  const found = new Map<string, number[]>();
+  for (const { label, index } of sites) {
+    const before = found.get(label);
+    if (before) before.push(index);
+    else found.set(label, [index]);
+  }
+  return found;
+}
+
+function siteOf(
+  { label, quantity, place }: TensorRow,
+  sites: ReadonlyMap<string, readonly number[]>,
+  seen: Set<string>,
+  log: ProblemLog,
+): number | null | 'repeated' {
+  const key = `${quantity} ${label}`;
+  if (seen.has(key)) {
+    log.add('error', 'cif-tensor-label', `${label} has a second ${quantity} tensor; the first was kept.`, { place, got: label });
+    return 'repeated';
+  }
+  seen.add(key);
+  const indices = sites.get(label) ?? [];
+  if (indices.length === 1) return indices[0]!;
+  const message =
+    indices.length === 0
+      ? `No site is called ${label}; its ${quantity} tensor stands alone.`
+      : `${indices.length} sites are called ${label}; its ${quantity} tensor cannot be told to one of them.`;
+  log.add('warning', 'cif-tensor-label', message, { place, got: label, allowed: 'a label of exactly one site' });
+  return null;
+}
+
+function reportFrame(view: BlockView, table: CategoryTable, lattice: Lattice, log: ProblemLog): void {
+  log.add('warning', 'cif-tensor-frame-assumed', `The file does not say in which Cartesian frame its tensors are; assumed: ${lattice.frame}.`, {
+    place: placeOfTensor(view, table, 0),
+    hint: 'Give _atom_sites_Cartn_tran_matrix_11 to _33, whose columns are a, b and c in that frame.',
+  });
+}
+
+function placeOfTensor(view: BlockView, table: CategoryTable, row: number): Place {
+  const value = table.column(`${prefix}site_label`, componentNames[0]!)?.at(row);
+  return placeOfValue(view, value ?? view.block);
+}

@@ -1,0 +1,72 @@
+import type { Problem, ProblemDetails, ProblemLog, Severity } from '#src/base/problem.ts';
+import { problem } from '#src/base/problem.ts';
+import type { SourceText } from '#src/bytes/source-text.ts';
+import { placeOf } from '#src/bytes/source-text.ts';
+
+export type CifProblemDetails = Omit<ProblemDetails, 'place'>;
+
+/** Problems of one code that are worth building; the log counts the rest. */
+const builtPerCode = 50;
+const heldAtMost = 1000;
+
+/**
+ * Turns offsets into places and hands problems to the log. Problems of an attempt that may be taken back (a bracket that
+ * could open a list or be plain text) are held until the attempt is decided.
+ */
+export class CifReport {
+  readonly #source: SourceText;
+  readonly #log: ProblemLog;
+  readonly #built = new Map<string, { count: number; last: Problem }>();
+  #held: Problem[] | null = null;
+
+  constructor(source: SourceText, log: ProblemLog) {
+    this.#source = source;
+    this.#log = log;
+  }
+
+  add(
+    severity: Severity,
+    code: string,
+    offset: number,
+    message: string,
+    details: CifProblemDetails = {},
+  ): void {
+    const known = this.#built.get(code);
+    if (known && known.count >= builtPerCode) {
+      this.#pass(known.last);
+      return;
+    }
+    const place = placeOf(this.#source, Math.min(offset, this.#source.text.length));
+    const last = problem(severity, code, message, { ...details, place });
+    this.#built.set(code, { count: (known?.count ?? 0) + 1, last });
+    this.#pass(last);
+  }
+
+  hold(): void {
+    this.#held = [];
+  }
+
+  release(keep: boolean): void {
+    const held = this.#held ?? [];
+    this.#held = null;
+    if (keep) held.forEach((found) => this.#log.push(found));
+  }
+
+  /** Offset at which the line after the one with this offset starts. */
+  nextLineStart(offset: number): number {
+    const { line } = placeOf(this.#source, offset);
+    return this.#source.lineStarts[line] ?? this.#source.text.length + 1;
+  }
+
+  /** What stands between two offsets, cut to the first line and 60 characters. */
+  excerpt(start: number, end: number): string {
+    const piece = this.#source.text.slice(start, Math.min(end, start + 61));
+    const line = piece.split(/[\r\n]/, 1)[0] ?? '';
+    return line.length > 60 || line.length < piece.length ? `${line.slice(0, 60)}…` : line;
+  }
+
+  #pass(found: Problem): void {
+    if (!this.#held) this.#log.push(found);
+    else if (this.#held.length < heldAtMost) this.#held.push(found);
+  }
+}
