@@ -80,8 +80,9 @@ export function sniffText(source: SourceText): Sniffed {
 
 function sniffXyz(source: SourceText): Sniffed | null {
   const first = firstFilledLine(source);
-  const count = /^\s*\+?(\d+)(\s.*)?$/.exec(lineText(source, first));
-  if (count === null) return null;
+  const line = lineText(source, first).slice(0, 400);
+  const count = /^\s*\+?(\d+)(\s.*)?$/.exec(line);
+  if (count === null || ((count[2] ?? '').trim() !== '' && looksLikeAtom(line))) return null;
   const atoms = count[1] ?? '0';
   const comment = lineText(source, first + 1);
   if (/(?:^|\s)"?(?:lattice|properties)"?\s*=/i.test(comment)) {
