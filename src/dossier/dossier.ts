@@ -2,6 +2,10 @@ import type { Mat3, Vec3, VecCart, VecFrac } from '#src/base/matrix3.ts';
 import type { Place, Problem } from '#src/base/problem.ts';
 import type { CrystalSymmetry, Displacement, Species } from '#src/crystal/crystal.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
+import type { EfgDescription } from '#src/tensor/efg.ts';
+import type { PrincipalAxis } from '#src/tensor/principal-axes.ts';
+import type { ShieldingDescription } from '#src/tensor/shielding.ts';
+import type { ShiftDescription } from '#src/tensor/shift.ts';
 
 /** δ = intercept + slope·σ (ppm); `simple` has slope −1; `exact` is (σref − σ)/(1 − σref) with σref = intercept. */
 export interface Reference {
@@ -34,7 +38,7 @@ export interface DossierSettings {
 export type Undefinable<T> = T | null;
 
 /** A principal axis: an unsigned direction, or null where its principal value is degenerate. */
-export type Axis = Undefinable<Vec3>;
+export type Axis = PrincipalAxis;
 
 /** Figures of noise: how far the calculation breaks the symmetry it should obey. Units of the tensor. */
 export interface NoiseFigures {
@@ -46,66 +50,21 @@ export interface NoiseFigures {
   readonly equivalentSpread: Undefinable<number>;
 }
 
-/** Shielding of one site, ppm; components σ11 ≤ σ22 ≤ σ33 (Harris et al. 2008). */
-export interface ShieldingDossier extends NoiseFigures {
-  readonly tensor: Mat3;
-  readonly symmetric: Mat3;
+/** What a tensor's description gains by standing on a site. */
+export interface OnSite extends NoiseFigures {
+  /** The tensor averaged over the site symmetry. */
   readonly projected: Mat3;
-  readonly isotropic: number;
-  readonly components: Vec3;
-  readonly axes: readonly [Axis, Axis, Axis];
-  readonly span: number;
-  readonly skew: Undefinable<number>;
-  readonly reducedAnisotropy: Undefinable<number>;
-  readonly anisotropy: Undefinable<number>;
-  readonly asymmetry: Undefinable<number>;
-  /** Axial vector of the antisymmetric part: (A23, A31, A12) up to the sign convention of the docstring of its maker, ppm. */
-  readonly axialVector: Vec3;
   readonly source: Place;
-  /** Why a value above is null, keyed by field name. */
-  readonly undefinedBecause: Readonly<Record<string, string>>;
 }
+
+/** Shielding of one site, ppm; components σ11 ≤ σ22 ≤ σ33 (Harris et al. 2008). `undefinedBecause` is keyed by field name. */
+export interface ShieldingDossier extends ShieldingDescription, OnSite {}
 
 /** Shift of one site, ppm; components δ11 ≥ δ22 ≥ δ33. */
-export interface ShiftDossier {
-  readonly isotropic: number;
-  readonly components: Vec3;
-  readonly axes: readonly [Axis, Axis, Axis];
-  readonly span: number;
-  readonly skew: Undefinable<number>;
-  readonly reducedAnisotropy: Undefinable<number>;
-  readonly anisotropy: Undefinable<number>;
-  readonly asymmetry: Undefinable<number>;
-  /** The conversion from shielding, or "as given" for a shift tensor of the file. */
-  readonly reference: string;
-  readonly undefinedBecause: Readonly<Record<string, string>>;
-}
+export type ShiftDossier = ShiftDescription;
 
 /** EFG of one site, atomic units; |Vzz| ≥ |Vyy| ≥ |Vxx| listed as [Vxx, Vyy, Vzz]. */
-export interface EfgDossier extends NoiseFigures {
-  readonly tensor: Mat3;
-  readonly symmetric: Mat3;
-  readonly projected: Mat3;
-  readonly components: Vec3;
-  readonly axes: readonly [Axis, Axis, Axis];
-  readonly asymmetry: Undefinable<number>;
-  readonly isotope: string | null;
-  readonly quadrupoleMomentBarn: Undefinable<number>;
-  /** Name and year of the set the moment is from, or "entered by the user". */
-  readonly quadrupoleMomentSource: string | null;
-  /** C_Q = e Q Vzz / h, MHz, signed. */
-  readonly couplingMHz: Undefinable<number>;
-  /** P_Q = C_Q √(1 + η²/3), MHz. */
-  readonly productMHz: Undefinable<number>;
-  /** ν_Q = 3 C_Q / (2I(2I − 1)), MHz. */
-  readonly quadrupoleFrequencyMHz: Undefinable<number>;
-  /** Trace before it was removed, a.u. */
-  readonly trace: number;
-  /** False where η is so near 1 that the sign of Vzz is noise. */
-  readonly signDetermined: boolean;
-  readonly source: Place;
-  readonly undefinedBecause: Readonly<Record<string, string>>;
-}
+export interface EfgDossier extends EfgDescription, OnSite {}
 
 /** One atom of the cell: an image of a site under an operation, with the tensors turned along (R T Rᵀ). */
 export interface EquivalentAtom {
