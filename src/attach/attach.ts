@@ -156,6 +156,7 @@ export function attachTensors(set: TensorSet, target: AttachTarget, log: Problem
     name: set.name,
     file: set.file,
     quantity: set.quantity,
+    unitGiven: set.unitGiven,
     method: binding.method,
     rotation: binding.rotation,
     bySite: own.map((list, site) => [...list, ...(others[site] ?? [])]),

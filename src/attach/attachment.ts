@@ -18,6 +18,8 @@ export interface Attachment {
   readonly name: string;
   readonly file: string;
   readonly quantity: Quantity;
+  /** Unit as printed in the file. */
+  readonly unitGiven: string;
   readonly method: AttachMethod;
   /** Orthogonal matrix, set frame → crystal frame. */
   readonly rotation: Mat3;

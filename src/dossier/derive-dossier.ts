@@ -1,6 +1,7 @@
 import { attachTensors } from '#src/attach/attach.ts';
 import type { AtomImage, Attachment } from '#src/attach/attachment.ts';
 import { identity3 } from '#src/base/matrix3.ts';
+import type { Mat3 } from '#src/base/matrix3.ts';
 import { ProblemLog } from '#src/base/problem.ts';
 import type { Problem } from '#src/base/problem.ts';
 import { unwatched } from '#src/base/progress.ts';
@@ -9,6 +10,7 @@ import type { Crystal } from '#src/crystal/crystal.ts';
 import { latticeFromCell } from '#src/crystal/lattice.ts';
 import type { LatticeSettingName } from '#src/crystal/settings.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
+import { forcedBySiteSymmetry } from '#src/tensor/forced.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
 import { bondsOf } from './bonds-of-cell.ts';
 import type { SiteAtoms } from './cell-atoms.ts';
@@ -89,6 +91,10 @@ function attachAll(
   return attachments;
 }
 
+function fractionalStabiliser({ stabiliser }: SiteAtoms, { crystal }: ChosenCrystal): Mat3[] {
+  return stabiliser.map((operation) => crystal.symmetry.operations[operation]?.rotation ?? identity3);
+}
+
 /**
  * Derives every number of a crystal once: symmetry as the settings ask, atoms of the cell, tensors bound to sites and
  * turned along their equivalents, conventions, noise, bonds. Never throws for content; problems carry what was doubtful.
@@ -120,6 +126,7 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
       wyckoff: symmetry.wyckoff[index] ?? null,
       siteSymmetry: symmetry.siteSymmetry[index] ?? null,
       distinctOrientations: siteAtoms.distinctOrientations,
+      forced: forcedBySiteSymmetry(fractionalStabiliser(siteAtoms, chosen), chosen.crystal.lattice).sentence,
       equivalents: siteAtoms.atoms,
       displacement: site.displacement,
       disorder: site.disorder,

@@ -1,0 +1,164 @@
+import type { Attachment, SiteTensor } from '#src/attach/attachment.ts';
+import type { Mat3 } from '#src/base/matrix3.ts';
+import type { Place, ProblemLog } from '#src/base/problem.ts';
+import type { Site } from '#src/crystal/crystal.ts';
+import { nuclide, usualIsotope } from '#src/data/nuclides.ts';
+import { describeEfg } from '#src/tensor/efg.ts';
+import { printedNoise, tensorNoise } from '#src/tensor/noise.ts';
+import { equivalentSpread, meanTensor, projectOnSiteSymmetry, turnBack } from '#src/tensor/projection.ts';
+import { describeShielding } from '#src/tensor/shielding.ts';
+import { describeReferencedShift, describeShift } from '#src/tensor/shift.ts';
+import type { Quantity } from '#src/tensor/tensor-set.ts';
+import { efgToAtomicUnits, efgUnitOf } from '#src/tensor/units.ts';
+import type { DossierSettings, EfgDossier, ShieldingDossier, ShiftDossier } from './dossier.ts';
+
+/** What the tensors of one site are described from. */
+export interface SiteTensorInput {
+  readonly site: Site;
+  /** Cartesian matrices of the operations that leave the site in place, identity included. */
+  readonly stabiliser: readonly Mat3[];
+  readonly attachments: readonly Attachment[];
+  readonly settings: DossierSettings;
+}
+
+/** The part of a site's dossier that its tensors fill. */
+export interface SiteTensorDossiers {
+  readonly isotope: string | null;
+  readonly shielding: ShieldingDossier | null;
+  readonly shift: ShiftDossier | null;
+  readonly efg: EfgDossier | null;
+}
+
+/** One tensor of a site with what its copies say about it. */
+interface Evidence {
+  readonly tensor: Mat3;
+  readonly projected: Mat3;
+  readonly symmetryResidual: number;
+  readonly equivalentSpread: number | null;
+  readonly noise: number;
+  readonly source: Place;
+}
+
+/** Factor from the printed unit to the canonical one, for judging printed digits. */
+function unitFactor(quantity: Quantity, unitGiven: string): number {
+  const unit = quantity === 'efg' ? efgUnitOf(unitGiven) : null;
+  return unit ? efgToAtomicUnits(1, unit) : 1;
+}
+
+function weigh(
+  quantity: Quantity,
+  found: readonly SiteTensor[],
+  unitGiven: string,
+  stabiliser: readonly Mat3[],
+): Evidence | null {
+  const [first] = found;
+  if (!first) return null;
+  const back = found.map(({ tensor, rotation }) => turnBack(rotation, tensor));
+  const tensor = back[0]!;
+  const { residual, anisotropicNorm } = projectOnSiteSymmetry(tensor, stabiliser);
+  const { projected } = projectOnSiteSymmetry(meanTensor(back), stabiliser);
+  const printed = printedNoise(first.entry.tensor, quantity, unitFactor(quantity, unitGiven));
+  return {
+    tensor,
+    projected,
+    symmetryResidual: residual,
+    equivalentSpread: equivalentSpread(
+      found.map((one) => one.tensor),
+      found.map((one) => one.rotation),
+    ),
+    noise: tensorNoise(printed, residual, anisotropicNorm),
+    source: first.entry.place,
+  };
+}
+
+/** The user's isotope, else the usual one for what the site has. */
+function isotopeOf(element: string, settings: DossierSettings, use: Quantity): string | null {
+  return settings.isotopes[element] ?? usualIsotope(element, use)?.symbol ?? null;
+}
+
+function shieldingDossier(evidence: Evidence): ShieldingDossier {
+  const { projected, symmetryResidual, source, noise } = evidence;
+  const described = describeShielding(evidence.tensor, noise);
+  return { ...described, projected, symmetryResidual, equivalentSpread: evidence.equivalentSpread, source };
+}
+
+function efgDossier(evidence: Evidence, isotope: string | null, settings: DossierSettings): EfgDossier {
+  const { projected, symmetryResidual, source, noise } = evidence;
+  const own = isotope === null ? null : (settings.quadrupoleMomentsBarn[isotope] ?? null);
+  const described = describeEfg(evidence.tensor, isotope === null ? null : nuclide(isotope), own, noise);
+  return { ...described, projected, symmetryResidual, equivalentSpread: evidence.equivalentSpread, source };
+}
+
+function reportUndefined(
+  site: Site,
+  name: string,
+  reasons: Readonly<Record<string, string>>,
+  log: ProblemLog,
+): void {
+  for (const [field, reason] of Object.entries(reasons)) {
+    log.add('note', 'undefined-value', `${site.label}: ${name} ${field} is undefined: ${reason}.`, {
+      place: site.place,
+    });
+  }
+}
+
+/** A residual above this share of the anisotropy speaks of a wrong frame or a wrong atom rather than of noise. */
+const doubtfulShare = 0.1;
+
+function reportResidual(
+  site: Site,
+  name: string,
+  evidence: Evidence,
+  anisotropic: number,
+  log: ProblemLog,
+): void {
+  const largest = Math.max(evidence.symmetryResidual, evidence.equivalentSpread ?? 0);
+  if (anisotropic === 0 || largest <= doubtfulShare * anisotropic) return;
+  const share = `${Math.round((100 * largest) / anisotropic)} % of its anisotropy`;
+  log.add(
+    'warning',
+    'symmetry-broken',
+    `The ${name} tensor of ${site.label} breaks the site's symmetry by ${share}.`,
+    {
+      place: evidence.source,
+      allowed: `at most ${doubtfulShare * 100} %`,
+      hint: 'A wrong Cartesian frame or a wrong atom does this; a calculation alone rarely does.',
+    },
+  );
+}
+
+/**
+ * Shielding, shift and EFG of one site from all its tensors: the site's own (or the first copy turned back), its
+ * projection, the spread among the equivalents, every convention. A shift tensor of the file goes before one made from the
+ * shielding by the reference of the isotope. Raises `undefined-value` for every null and `symmetry-broken`.
+ */
+export function siteTensors(input: SiteTensorInput, log: ProblemLog): SiteTensorDossiers {
+  const { site, stabiliser, attachments, settings } = input;
+  const evidenceOf = (quantity: Quantity): Evidence | null => {
+    const attachment = attachments.find((one) => one.quantity === quantity);
+    const found = attachment?.bySite[site.index] ?? [];
+    const evidence = attachment ? weigh(quantity, found, attachment.unitGiven, stabiliser) : null;
+    if (evidence) {
+      const { anisotropicNorm } = projectOnSiteSymmetry(evidence.tensor, []);
+      reportResidual(site, quantity === 'efg' ? 'EFG' : quantity, evidence, anisotropicNorm, log);
+    }
+    return evidence;
+  };
+  const ofShielding = evidenceOf('shielding');
+  const ofShift = evidenceOf('shift');
+  const ofEfg = evidenceOf('efg');
+  const use = ofEfg && !ofShielding && !ofShift ? 'efg' : 'shielding';
+  const isotope = isotopeOf(site.element, settings, use);
+  const shielding = ofShielding && shieldingDossier(ofShielding);
+  const reference = isotope === null ? undefined : settings.references[isotope];
+  const referenced =
+    ofShielding && reference
+      ? describeReferencedShift(ofShielding.tensor, reference, ofShielding.noise)
+      : null;
+  const shift = ofShift ? describeShift(ofShift.tensor, undefined, ofShift.noise) : referenced;
+  const efg = ofEfg && efgDossier(ofEfg, isotopeOf(site.element, settings, 'efg'), settings);
+  if (shielding) reportUndefined(site, 'shielding', shielding.undefinedBecause, log);
+  if (shift) reportUndefined(site, 'shift', shift.undefinedBecause, log);
+  if (efg) reportUndefined(site, 'EFG', efg.undefinedBecause, log);
+  return { isotope, shielding, shift, efg };
+}

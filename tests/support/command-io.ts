@@ -1,0 +1,36 @@
+import { readFileSync } from 'node:fs';
+import { readFile } from 'node:fs/promises';
+import { createRequire } from 'node:module';
+import { main } from '#src/cli/run.ts';
+
+const require = createRequire(import.meta.url);
+const symmetryModule = readFileSync(require.resolve('@spglib/moyo-wasm/moyo_wasm_bg.wasm'));
+
+export interface CommandResult {
+  readonly status: number;
+  readonly out: string;
+  readonly error: string;
+}
+
+/** Runs the command line in this process on texts given by name; names not given are read from the disk. */
+export async function runCommand(
+  argv: readonly string[],
+  files: Readonly<Record<string, string | Uint8Array>> = {},
+): Promise<CommandResult> {
+  let out = '';
+  let error = '';
+  const bytesOf = (content: string | Uint8Array) =>
+    typeof content === 'string' ? new TextEncoder().encode(content) : content;
+  const status = await main(
+    argv,
+    {
+      readFile: async (path) => (path in files ? bytesOf(files[path] ?? '') : await readFile(path)),
+      readStandardInput: async () => bytesOf(files['-'] ?? ''),
+      writeOut: (text) => (out += text),
+      writeError: (text) => (error += text),
+      symmetryModule: () => symmetryModule,
+    },
+    '0.0.0-test',
+  );
+  return { status, out, error };
+}
