@@ -73,8 +73,8 @@ export function independentComponents(group: readonly Mat3[]): {
     antisymmetric += (squared - ofSquare) / 2;
   }
   return {
-    symmetricCount: Math.round(symmetric / group.length),
-    antisymmetricCount: Math.round(antisymmetric / group.length),
+    symmetricCount: Math.round(symmetric / group.length) + 0,
+    antisymmetricCount: Math.round(antisymmetric / group.length) + 0,
   };
 }
 
