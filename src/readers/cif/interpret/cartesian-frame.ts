@@ -99,11 +99,7 @@ function given(lattice: Lattice, shift: Vec3): CartesianFrame {
 }
 
 /** Orientation of the standard lattice that comes nearest to the inverse of a fractional transform; a sentence where none does. */
-function frameOfFractional(
-  found: ReadMatrix,
-  standard: Lattice,
-  cell: CellConstants,
-): Lattice | string {
+function frameOfFractional(found: ReadMatrix, standard: Lattice, cell: CellConstants): Lattice | string {
   if (Math.abs(determinant(found.matrix)) < 1e-12) return 'it has no inverse';
   const columns = inverse(found.matrix);
   const misfit = rowsProblem(transpose(columns)) ?? misfitOf(cellFromRows(transpose(columns)), cell);
@@ -187,7 +183,8 @@ function listNumbers(view: BlockView, name: string): number[] {
 }
 
 function flatNumbers(value: CifValue): number[] {
-  if (value.kind === 'list') return value.items.flatMap((item) => (item.kind === 'table' ? [] : flatNumbers(item)));
+  if (value.kind === 'list')
+    return value.items.flatMap((item) => (item.kind === 'table' ? [] : flatNumbers(item)));
   const number = value.kind === 'text' ? readNumber(value.text) : null;
   return number ? [number.value] : [];
 }

@@ -95,9 +95,14 @@ function fillLengths(
       const known = found.get(from);
       if (known === undefined || found.has(to)) continue;
       found.set(to, known);
-      log.add('warning', 'cif-cell-completed', `${to} is not given; taken as ${from} = ${known} Å, which the symmetry demands.`, {
-        place: placeOfCell(view),
-      });
+      log.add(
+        'warning',
+        'cif-cell-completed',
+        `${to} is not given; taken as ${from} = ${known} Å, which the symmetry demands.`,
+        {
+          place: placeOfCell(view),
+        },
+      );
     }
   }
 }
@@ -110,7 +115,9 @@ function fillAngles(
 ): void {
   const absent = angleNames.filter((name) => !found.has(name));
   if (absent.length === 0) return;
-  const hexagonal = operations.some(({ rotation: r }) => r[0] + r[4] === -1 && r[8] === 1 && r[1] * r[3] === -1);
+  const hexagonal = operations.some(
+    ({ rotation: r }) => r[0] + r[4] === -1 && r[8] === 1 && r[1] * r[3] === -1,
+  );
   for (const name of absent) found.set(name, name === 'gamma' && hexagonal ? 120 : 90);
   const taken = absent.map((name) => `${name} = ${found.get(name)}°`).join(', ');
   log.add('warning', 'cif-cell-completed', `Cell angles are not given; taken as ${taken}.`, {

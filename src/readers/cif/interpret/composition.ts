@@ -44,7 +44,8 @@ export function fitFormula(
   const elements = [...new Set([...Object.keys(found), ...Object.keys(wanted)])];
   const heavy = elements.filter((element) => element !== 'H');
   const compared = heavy.length > 0 ? heavy : elements;
-  const sum = (counts: ElementCounts): number => compared.reduce((total, element) => total + (counts[element] ?? 0), 0);
+  const sum = (counts: ElementCounts): number =>
+    compared.reduce((total, element) => total + (counts[element] ?? 0), 0);
   if (sum(wanted) <= 0 || sum(found) <= 0) return null;
   const factor = units ?? sum(found) / sum(wanted);
   const agrees = (element: string): boolean => {

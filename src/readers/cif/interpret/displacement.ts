@@ -1,4 +1,4 @@
-import { rowsOf } from "#src/base/matrix3.ts";
+import { rowsOf } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { Displacement } from '#src/crystal/crystal.ts';
 import { displacementMatrix } from '#src/crystal/crystal.ts';
@@ -82,9 +82,14 @@ function isotropicReader(
 }
 
 function reportCalledU(view: BlockView, name: string, log: ProblemLog): void {
-  log.add('warning', 'cif-b-called-u', `Numbers in ${name} are marked as B by the displacement type; they were divided by 8π².`, {
-    place: placeOfBlock(view),
-  });
+  log.add(
+    'warning',
+    'cif-b-called-u',
+    `Numbers in ${name} are marked as B by the displacement type; they were divided by 8π².`,
+    {
+      place: placeOfBlock(view),
+    },
+  );
 }
 
 interface Anisotropic {
@@ -131,7 +136,10 @@ function anisotropicReader(
   };
 }
 
-function sixReader(table: CategoryTable, lattice: Lattice | null): ((row: number) => Anisotropic | null) | null {
+function sixReader(
+  table: CategoryTable,
+  lattice: Lattice | null,
+): ((row: number) => Anisotropic | null) | null {
   const found = conventions
     .map(({ prefix, kind }) => ({ kind, columns: indices.map((index) => table.column(prefix + index)) }))
     .filter(({ columns }) => columns.every((column) => column !== null));
@@ -167,4 +175,3 @@ function numberAt(column: CategoryColumn | null, row: number): number | null {
   const value = text === null ? null : (readNumber(text)?.value ?? null);
   return value !== null && Number.isFinite(value) ? value : null;
 }
-

@@ -20,11 +20,16 @@ export function readFormula(view: BlockView, log: ProblemLog): StatedFormula {
   const item = knownItem(view, '_chemical_formula_sum');
   const counts = item && parseFormula(item.text);
   if (item && !counts) {
-    log.add('note', 'cif-formula-unreadable', `The formula sum “${item.text}” is not made of element symbols and numbers; it was not compared with the atoms.`, {
-      place: placeOfValue(view, item.value),
-      got: item.text,
-      allowed: 'element symbols with numbers, such as C12 H17 N O5',
-    });
+    log.add(
+      'note',
+      'cif-formula-unreadable',
+      `The formula sum “${item.text}” is not made of element symbols and numbers; it was not compared with the atoms.`,
+      {
+        place: placeOfValue(view, item.value),
+        got: item.text,
+        allowed: 'element symbols with numbers, such as C12 H17 N O5',
+      },
+    );
   }
   return { item, counts, units: readUnits(view, log) };
 }
@@ -98,9 +103,14 @@ function settleHydrogens(
   if (!agrees(sites)) {
     const without = sites.map((site) => ({ ...site, attachedHydrogens: 0 }));
     if (attached && agrees(without)) {
-      log.add('note', 'cif-attached-hydrogens-have-sites', 'Hydrogens counted on other atoms stand in the atom list as well; they were not counted twice.', {
-        place: placeOfBlock(view),
-      });
+      log.add(
+        'note',
+        'cif-attached-hydrogens-have-sites',
+        'Hydrogens counted on other atoms stand in the atom list as well; they were not counted twice.',
+        {
+          place: placeOfBlock(view),
+        },
+      );
       return without;
     }
     const withImplied = without.map((site, i) => ({ ...site, attachedHydrogens: implied[i] ?? 0 }));
@@ -115,9 +125,14 @@ function settleHydrogens(
 
 function noteAttached(view: BlockView, sites: readonly Site[], how: string, log: ProblemLog): void {
   const labels = sites.filter(({ attachedHydrogens }) => attachedHydrogens > 0).map(({ label }) => label);
-  log.add('note', 'cif-attached-hydrogens', `Hydrogens ${how} have no sites: on ${labels.slice(0, 10).join(', ')}. They count in the composition and are not drawn.`, {
-    place: placeOfBlock(view),
-  });
+  log.add(
+    'note',
+    'cif-attached-hydrogens',
+    `Hydrogens ${how} have no sites: on ${labels.slice(0, 10).join(', ')}. They count in the composition and are not drawn.`,
+    {
+      place: placeOfBlock(view),
+    },
+  );
 }
 
 function report(
@@ -135,27 +150,42 @@ function report(
   if (!fit.heavyAgree) {
     const expected = formatFormula(scaled(counts!, fit.units));
     const times = units === null ? `about ${shown}` : `Z = ${units}`;
-    log.add('warning', 'cif-composition-disagrees', `The atoms of the cell are ${atoms}; the formula ${item.text} with ${times} gives ${expected}.`, {
-      place,
-      got: atoms,
-      allowed: expected,
-      hint: 'Operations, occupancies, coordinates or the formula may be wrong or incomplete.',
-    });
+    log.add(
+      'warning',
+      'cif-composition-disagrees',
+      `The atoms of the cell are ${atoms}; the formula ${item.text} with ${times} gives ${expected}.`,
+      {
+        place,
+        got: atoms,
+        allowed: expected,
+        hint: 'Operations, occupancies, coordinates or the formula may be wrong or incomplete.',
+      },
+    );
     return;
   }
   if (units === null) {
-    log.add('note', 'cif-z-derived', `The file gives no number of formula units; the atoms of the cell make it ${shown}.`, { place });
+    log.add(
+      'note',
+      'cif-z-derived',
+      `The file gives no number of formula units; the atoms of the cell make it ${shown}.`,
+      { place },
+    );
   } else if (Math.abs(fit.units - units) > 0.02 * units) {
     reportUnits(item, atoms, shown, units, place, log);
   }
   if (fit.hydrogenAgrees) return;
   const expected = formatFormula(scaled(counts!, fit.units));
   const missing = fit.missingHydrogens > 0;
-  log.add('warning', missing ? 'cif-hydrogens-missing' : 'cif-hydrogens-surplus', `The atoms of the cell are ${atoms}; the formula says ${expected}: ${Math.abs(fit.missingHydrogens).toFixed(1)} hydrogens ${missing ? 'have no site' : 'too many'}.`, {
-    place,
-    got: atoms,
-    allowed: expected,
-  });
+  log.add(
+    'warning',
+    missing ? 'cif-hydrogens-missing' : 'cif-hydrogens-surplus',
+    `The atoms of the cell are ${atoms}; the formula says ${expected}: ${Math.abs(fit.missingHydrogens).toFixed(1)} hydrogens ${missing ? 'have no site' : 'too many'}.`,
+    {
+      place,
+      got: atoms,
+      allowed: expected,
+    },
+  );
 }
 
 function reportUnits(
@@ -167,17 +197,27 @@ function reportUnits(
   log: ProblemLog,
 ): void {
   if (shown === 1) {
-    log.add('note', 'cif-formula-whole-cell', `The formula sum ${item.text} is that of the whole cell, although Z is ${units}.`, {
-      place,
-    });
+    log.add(
+      'note',
+      'cif-formula-whole-cell',
+      `The formula sum ${item.text} is that of the whole cell, although Z is ${units}.`,
+      {
+        place,
+      },
+    );
     return;
   }
-  log.add('warning', 'cif-z-disagrees', `The atoms of the cell are ${atoms}: ${shown} formula units of ${item.text}, not Z = ${units}.`, {
-    place,
-    got: String(units),
-    allowed: String(shown),
-    hint: 'Z, the formula or the operations may be wrong.',
-  });
+  log.add(
+    'warning',
+    'cif-z-disagrees',
+    `The atoms of the cell are ${atoms}: ${shown} formula units of ${item.text}, not Z = ${units}.`,
+    {
+      place,
+      got: String(units),
+      allowed: String(shown),
+      hint: 'Z, the formula or the operations may be wrong.',
+    },
+  );
 }
 
 function scaled(counts: ElementCounts, factor: number): ElementCounts {

@@ -30,7 +30,8 @@ function splitParts(text: string): string[] {
 }
 
 function addGroup(text: string, factor: number, counts: Record<string, number>): boolean {
-  const token = /\s*(?:([([{])|([)\]}])\s*(\d+(?:\.\d*)?|\.\d+)?|([A-Za-z]{1,2}?)(?=[^a-z]|$)(\d*[+-])?\s*(\d+(?:\.\d*)?|\.\d+)?)/y;
+  const token =
+    /\s*(?:([([{])|([)\]}])\s*(\d+(?:\.\d*)?|\.\d+)?|([A-Za-z]{1,2}?)(?=[^a-z]|$)(\d*[+-])?\s*(\d+(?:\.\d*)?|\.\d+)?)/y;
   const levels: Record<string, number>[] = [{}];
   let at = 0;
   while (at < text.trimEnd().length) {

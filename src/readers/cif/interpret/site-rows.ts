@@ -40,11 +40,7 @@ const axes = ['x', 'y', 'z'] as const;
  * Numbers with a repair are reported (`cif-odd-number`); a missing occupancy is 1, one outside 0 to 1 is taken as given
  * (`cif-occupancy`). null where the block has no atom list.
  */
-export function readSiteRows(
-  view: BlockView,
-  known: ReadonlySet<string>,
-  log: ProblemLog,
-): SiteRows | null {
+export function readSiteRows(view: BlockView, known: ReadonlySet<string>, log: ProblemLog): SiteRows | null {
   const table = categoryTable(view, coordinateKeys);
   if (!table) return null;
   const reader = rowReader(view, table, known, log);
@@ -149,18 +145,28 @@ function position(
     if (!column || !value || text === null) return 'absent';
     const read = readNumber(text);
     if (!read || !Number.isFinite(read.value)) {
-      log.add('error', 'cif-bad-number', `${column.name} of ${label} is “${text}”, which is no number; the row was left out.`, {
-        place: placeOfValue(view, value),
-        got: text,
-        allowed: 'a number, with an uncertainty in parentheses if known, or a fraction such as 1/3',
-      });
+      log.add(
+        'error',
+        'cif-bad-number',
+        `${column.name} of ${label} is “${text}”, which is no number; the row was left out.`,
+        {
+          place: placeOfValue(view, value),
+          got: text,
+          allowed: 'a number, with an uncertainty in parentheses if known, or a fraction such as 1/3',
+        },
+      );
       return 'bad';
     }
     if (read.repair !== null) {
-      log.add('warning', 'cif-odd-number', `${column.name} of ${label} has ${read.repair}; read as ${read.value}.`, {
-        place: placeOfValue(view, value),
-        got: text,
-      });
+      log.add(
+        'warning',
+        'cif-odd-number',
+        `${column.name} of ${label} has ${read.repair}; read as ${read.value}.`,
+        {
+          place: placeOfValue(view, value),
+          got: text,
+        },
+      );
     }
     numbers.push(read.value);
   }
@@ -181,11 +187,16 @@ function readOccupancy(
   const read = readNumber(text);
   const allowed = 'a number from 0 to 1';
   if (!read || !Number.isFinite(read.value)) {
-    log.add('warning', 'cif-occupancy', `The occupancy of ${label} is “${text}”, which is no number; taken as 1.`, {
-      place,
-      got: text,
-      allowed,
-    });
+    log.add(
+      'warning',
+      'cif-occupancy',
+      `The occupancy of ${label} is “${text}”, which is no number; taken as 1.`,
+      {
+        place,
+        got: text,
+        allowed,
+      },
+    );
     return 1;
   }
   if (read.value < 0 || read.value > 1.0005) {
@@ -199,27 +210,44 @@ function readOccupancy(
 }
 
 function placeOfRow(view: BlockView, table: CategoryTable, row: number): Place {
-  const first = table.column('_atom_site_label', '_atom_site_id', '_atom_site_type_symbol', ...coordinateKeys);
+  const first = table.column(
+    '_atom_site_label',
+    '_atom_site_id',
+    '_atom_site_type_symbol',
+    ...coordinateKeys,
+  );
   const value = first?.at(row);
   return value ? placeOfValue(view, value) : placeOfValue(view, view.block);
 }
 
 function reportMissing(label: string, place: Place, log: ProblemLog): void {
-  log.add('warning', 'cif-missing-coordinates', `${label} has no complete coordinates; the row was left out.`, {
-    place,
-    got: '? or .',
-    allowed: 'three numbers',
-    hint: 'The atom exists in the crystal but was not located: composition and pictures lack it.',
-  });
+  log.add(
+    'warning',
+    'cif-missing-coordinates',
+    `${label} has no complete coordinates; the row was left out.`,
+    {
+      place,
+      got: '? or .',
+      allowed: 'three numbers',
+      hint: 'The atom exists in the crystal but was not located: composition and pictures lack it.',
+    },
+  );
 }
 
 function reportModels(first: string | null, others: number, place: Place, log: ProblemLog): void {
-  log.add('warning', 'cif-several-models', `The atom list holds several models; model ${first ?? '1'} was read, ${others} rows of others were left out.`, {
-    place,
-  });
+  log.add(
+    'warning',
+    'cif-several-models',
+    `The atom list holds several models; model ${first ?? '1'} was read, ${others} rows of others were left out.`,
+    {
+      place,
+    },
+  );
 }
 
 function reportDummies(labels: readonly string[], place: Place, log: ProblemLog): void {
   const named = labels.slice(0, 10).join(', ') + (labels.length > 10 ? ', …' : '');
-  log.add('note', 'cif-dummy-atoms', `${labels.length} rows stand for no atom and were left out: ${named}.`, { place });
+  log.add('note', 'cif-dummy-atoms', `${labels.length} rows stand for no atom and were left out: ${named}.`, {
+    place,
+  });
 }

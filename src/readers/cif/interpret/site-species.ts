@@ -79,7 +79,11 @@ function contradicted(text: string, mixture: SpeciesMixture, known: ReadonlySet<
 /** An element of the formula anywhere in the label, as in `M1Mg` or `T2-Al`; the longest symbol wins. */
 function elementFromKnown(label: string, known: ReadonlySet<string>): string | null {
   const pieces = label.match(/[A-Z][a-z]?/g) ?? [];
-  return pieces.find((piece) => piece.length === 2 && known.has(piece)) ?? pieces.find((piece) => known.has(piece)) ?? null;
+  return (
+    pieces.find((piece) => piece.length === 2 && known.has(piece)) ??
+    pieces.find((piece) => known.has(piece)) ??
+    null
+  );
 }
 
 function fromMixture(mixture: SpeciesMixture, from: 'type' | 'label'): SiteSpecies {

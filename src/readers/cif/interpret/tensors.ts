@@ -44,7 +44,11 @@ export function readTensorSets(view: BlockView, ground: TensorGround, log: Probl
     const index = siteOf(read, sites, seen, log);
     if (index === 'repeated') continue;
     const site = index === null ? null : ground.sites[index]!;
-    const set = sets.get(read.quantity) ?? { quantity: read.quantity, unitGiven: read.unitGiven, entries: [] };
+    const set = sets.get(read.quantity) ?? {
+      quantity: read.quantity,
+      unitGiven: read.unitGiven,
+      entries: [],
+    };
     sets.set(read.quantity, set);
     set.entries.push({
       label: read.label,
@@ -80,11 +84,16 @@ function readRow(view: BlockView, table: CategoryTable, row: number, log: Proble
   const label = textOf(cell('site_label'));
   const place = placeOfTensor(view, table, row);
   const bad = (what: string, got: string, allowed: string): null => {
-    log.add('error', 'cif-bad-tensor', `Tensor row ${row + 1} (${label ?? 'no label'}): ${what}; the row was left out.`, {
-      place,
-      got,
-      allowed,
-    });
+    log.add(
+      'error',
+      'cif-bad-tensor',
+      `Tensor row ${row + 1} (${label ?? 'no label'}): ${what}; the row was left out.`,
+      {
+        place,
+        got,
+        allowed,
+      },
+    );
     return null;
   };
   if (label === null) return bad('no site label', '?', 'a label of the atom list');
@@ -95,16 +104,27 @@ function readRow(view: BlockView, table: CategoryTable, row: number, log: Proble
   const components = componentNames.map((name) => textOf(table.column(name)?.at(row)));
   const numbers = components.map((text) => (text === null ? null : (readNumber(text)?.value ?? null)));
   if (!numbers.every((number) => number !== null && Number.isFinite(number))) {
-    return bad('a component is missing or no number', components.map((text) => text ?? '?').join(' '), 'nine numbers');
+    return bad(
+      'a component is missing or no number',
+      components.map((text) => text ?? '?').join(' '),
+      'nine numbers',
+    );
   }
   const given = asMat3(numbers as number[]);
   if (quantity !== 'efg') {
-    if (unitText !== null && !/^(ppm|1e-6)$/i.test(unitText)) return bad(`the unit is “${unitText}”`, unitText, 'ppm');
+    if (unitText !== null && !/^(ppm|1e-6)$/i.test(unitText))
+      return bad(`the unit is “${unitText}”`, unitText, 'ppm');
     return { label, quantity, unitGiven: unitText ?? 'ppm', tensor: given, place };
   }
   const unit = efgUnitOf(unitText ?? 'a.u.');
   if (!unit) return bad(`the unit is “${unitText}”`, unitText ?? '?', 'a.u., 1e21V/m2, V/A2');
-  return { label, quantity, unitGiven: unitText ?? 'a.u.', tensor: efgTensorToAtomicUnits(given, unit), place };
+  return {
+    label,
+    quantity,
+    unitGiven: unitText ?? 'a.u.',
+    tensor: efgTensorToAtomicUnits(given, unit),
+    place,
+  };
 }
 
 function sitesByLabel(sites: readonly Site[]): Map<string, number[]> {
@@ -125,7 +145,10 @@ function siteOf(
 ): number | null | 'repeated' {
   const key = `${quantity} ${label}`;
   if (seen.has(key)) {
-    log.add('error', 'cif-tensor-label', `${label} has a second ${quantity} tensor; the first was kept.`, { place, got: label });
+    log.add('error', 'cif-tensor-label', `${label} has a second ${quantity} tensor; the first was kept.`, {
+      place,
+      got: label,
+    });
     return 'repeated';
   }
   seen.add(key);
@@ -135,15 +158,24 @@ function siteOf(
     indices.length === 0
       ? `No site is called ${label}; its ${quantity} tensor stands alone.`
       : `${indices.length} sites are called ${label}; its ${quantity} tensor cannot be told to one of them.`;
-  log.add('warning', 'cif-tensor-label', message, { place, got: label, allowed: 'a label of exactly one site' });
+  log.add('warning', 'cif-tensor-label', message, {
+    place,
+    got: label,
+    allowed: 'a label of exactly one site',
+  });
   return null;
 }
 
 function reportFrame(view: BlockView, table: CategoryTable, lattice: Lattice, log: ProblemLog): void {
-  log.add('warning', 'cif-tensor-frame-assumed', `The file does not say in which Cartesian frame its tensors are; assumed: ${lattice.frame}.`, {
-    place: placeOfTensor(view, table, 0),
-    hint: 'Give _atom_sites_Cartn_tran_matrix_11 to _33, whose columns are a, b and c in that frame.',
-  });
+  log.add(
+    'warning',
+    'cif-tensor-frame-assumed',
+    `The file does not say in which Cartesian frame its tensors are; assumed: ${lattice.frame}.`,
+    {
+      place: placeOfTensor(view, table, 0),
+      hint: 'Give _atom_sites_Cartn_tran_matrix_11 to _33, whose columns are a, b and c in that frame.',
+    },
+  );
 }
 
 function placeOfTensor(view: BlockView, table: CategoryTable, row: number): Place {

@@ -1,0 +1,193 @@
+import type { VecFrac } from '#src/base/matrix3.ts';
+import { ProblemLog } from '#src/base/problem.ts';
+import type { Crystal, CrystalSymmetry, Site } from '#src/crystal/crystal.ts';
+import type { CellConstants } from '#src/crystal/lattice.ts';
+import { uniqueOperations } from '#src/crystal/group.ts';
+import { identityOperation } from '#src/crystal/symmetry-operation.ts';
+import type { TensorSet } from '#src/tensor/tensor-set.ts';
+import type { BlockView } from './block-view.ts';
+import { knownItem, placeOfBlock, placeOfValue } from './block-view.ts';
+import type { CartesianFrame } from './cartesian-frame.ts';
+import { readFrame } from './cartesian-frame.ts';
+import { checkVolume, readCell } from './cell.ts';
+import type { StatedFormula } from './formula-check.ts';
+import { checkComposition, readFormula } from './formula-check.ts';
+import { readGroupNames } from './group-names.ts';
+import { knownElements } from './known-elements.ts';
+import { countImages } from './multiplicity.ts';
+import type { ListedOperations } from './operation-list.ts';
+import { listedOperations } from './operation-list.ts';
+import { chooseOrigin } from './origin-choice.ts';
+import type { SiteRows } from './site-rows.ts';
+import { readSiteRows } from './site-rows.ts';
+import { buildSites } from './sites.ts';
+import { reportMultiplicities } from './special-positions.ts';
+import { decideSymmetry } from './symmetry.ts';
+import { readTensorSets } from './tensors.ts';
+import { readNumber } from './tolerant-number.ts';
+
+/** A structure of a block with the tensors that stand beside it. */
+export interface InterpretedBlock {
+  readonly crystal: Crystal;
+  readonly tensorSets: readonly TensorSet[];
+}
+
+/**
+ * The structure of one block; null, with problems, where no atom has a usable position. Order matters: formula (elements), atom
+ * rows, operations, cell, symmetry, frame, sites, orbits, composition, tensors.
+ */
+export function interpretBlock(
+  view: BlockView,
+  structureIndex: number,
+  log: ProblemLog,
+): InterpretedBlock | null {
+  const formula = readFormula(view, log);
+  const rows = readSiteRows(view, knownElements(view, formula.counts), log);
+  if (!rows || rows.rows.length === 0) return null;
+  reportDialects(view, log);
+  const lists = listedOperations(view, log);
+  const cell = usableCell(view, lists, rows, log);
+  const frame = cell ? readFrame(view, cell, log) : null;
+  const { sites, impliedHydrogens } = buildSites(view, rows, knownElements(view, formula.counts), frame, log);
+  if (sites.length === 0) return null;
+  if (!cell || !frame) return molecule(view, sites, formula, structureIndex, log);
+  checkVolume(view, frame.lattice.volume, log);
+  const choice = decideSymmetry(view, lists, readGroupNames(view, cell, log), cell, log);
+  const symmetry = chooseOrigin(view, choice, sites, frame.lattice, formula, log);
+  const counts = sites.map(({ fractional }) =>
+    countImages(fractional as VecFrac, symmetry.operations, frame.lattice),
+  );
+  reportMultiplicities(view, rows.table, rows.rows, sites, counts, symmetry.operations.length, log);
+  const multiplicities = counts.map(({ merged }) => merged);
+  const checked = checkComposition(view, formula, sites, multiplicities, impliedHydrogens, log);
+  const crystal = crystalOf(view, frame, symmetry, checked.sites, { ...formula, units: checked.units });
+  return withTensors(view, crystal, frame, structureIndex, log);
+}
+
+/** null for atoms without a crystal: no cell, or the 1 × 1 × 1 Å filler that stands where there is none. */
+function usableCell(
+  view: BlockView,
+  lists: readonly ListedOperations[],
+  { rows }: SiteRows,
+  log: ProblemLog,
+): CellConstants | null {
+  const operations =
+    lists.length > 0
+      ? uniqueOperations(lists[0]!.operations)
+      : (readGroupNames(view, null, new ProblemLog()).groups[0]?.operations ?? []);
+  const cell = readCell(view, operations, log);
+  if (!cell) return null;
+  const filler = Math.max(cell.a, cell.b, cell.c) <= 1.001;
+  if (!filler || rows.some(({ fractional }) => fractional !== null)) return cell;
+  log.add(
+    'note',
+    'cif-no-crystal',
+    'The cell of 1 Å edges stands where there is no crystal; the atoms were read as a molecule.',
+    {
+      place: placeOfBlock(view),
+    },
+  );
+  return null;
+}
+
+function molecule(
+  view: BlockView,
+  sites: readonly Site[],
+  formula: StatedFormula,
+  structureIndex: number,
+  log: ProblemLog,
+): InterpretedBlock {
+  const symmetry: CrystalSymmetry = {
+    operations: [identityOperation],
+    number: null,
+    hermannMauguin: null,
+    hall: null,
+    source: 'none',
+    reason: 'a molecule without a cell',
+    stated: true,
+  };
+  const checked = checkComposition(
+    view,
+    formula,
+    sites,
+    sites.map(() => 1),
+    sites.map(() => 0),
+    log,
+  );
+  return withTensors(
+    view,
+    crystalOf(view, null, symmetry, checked.sites, { ...formula, units: checked.units }),
+    null,
+    structureIndex,
+    log,
+  );
+}
+
+function withTensors(
+  view: BlockView,
+  crystal: Crystal,
+  frame: CartesianFrame | null,
+  structureIndex: number,
+  log: ProblemLog,
+): InterpretedBlock {
+  const { sites, lattice } = crystal;
+  const ground = { sites, lattice, frameGiven: frame?.source === 'given', structureIndex };
+  return { crystal, tensorSets: readTensorSets(view, ground, log) };
+}
+
+function crystalOf(
+  view: BlockView,
+  frame: CartesianFrame | null,
+  symmetry: CrystalSymmetry,
+  sites: readonly Site[],
+  formula: StatedFormula,
+): Crystal {
+  const periodic = frame !== null;
+  return {
+    name: view.block.name,
+    lattice: frame?.lattice ?? null,
+    periodic: [periodic, periodic, periodic],
+    symmetry,
+    sites,
+    formula: { sum: formula.item?.text ?? null, units: formula.units },
+    temperatureK: temperature(view),
+    place: placeOfBlock(view),
+  };
+}
+
+function temperature(view: BlockView): number | null {
+  for (const name of ['_diffrn_ambient_temperature', '_cell_measurement_temperature']) {
+    const item = knownItem(view, name);
+    const kelvin = item && readNumber(item.text)?.value;
+    if (typeof kelvin === 'number' && kelvin >= 0 && kelvin < 10_000) return kelvin;
+  }
+  return null;
+}
+
+/** Dialects that say more than one three-dimensional structure can hold. */
+function reportDialects(view: BlockView, log: ProblemLog): void {
+  const schema = knownItem(view, '_audit_schema');
+  if (schema && !/^(base|custom)$/i.test(schema.text)) {
+    log.add(
+      'warning',
+      'cif-other-schema',
+      `The block follows the schema “${schema.text}”, in which one block may hold several crystals or space groups; it was read as one crystal.`,
+      {
+        place: placeOfValue(view, schema.value),
+        got: schema.text,
+        allowed: 'Base',
+      },
+    );
+  }
+  const dimension = knownItem(view, '_cell_modulation_dimension');
+  if (dimension && Number(dimension.text) > 0) {
+    log.add(
+      'warning',
+      'cif-modulated',
+      `The structure is modulated (${dimension.text} further dimension); only its average is shown.`,
+      {
+        place: placeOfValue(view, dimension.value),
+      },
+    );
+  }
+}

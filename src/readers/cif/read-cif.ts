@@ -1,0 +1,55 @@
+import { ProblemLog } from '#src/base/problem.ts';
+import type { ReportProgress } from '#src/base/progress.ts';
+import { unwatched } from '#src/base/progress.ts';
+import type { SourceText } from '#src/bytes/source-text.ts';
+import type { Crystal } from '#src/crystal/crystal.ts';
+import type { TensorSet } from '#src/tensor/tensor-set.ts';
+import type { Reading } from '../reading.ts';
+import type { CifBlock, CifDocument } from './cif-document.ts';
+import { viewBlock } from './interpret/block-view.ts';
+import { interpretBlock } from './interpret/interpret-block.ts';
+import { reportNoStructure, reportSeveral } from './interpret/block-choice.ts';
+import { parseCif } from './parse.ts';
+
+export interface ReadCifOptions {
+  readonly progress?: ReportProgress;
+}
+
+/** Share of the work that is syntax. */
+const syntaxShare = 0.7;
+
+/**
+ * Reads a CIF: every data block with atoms becomes a crystal, with tensors from our own loop beside them. Never throws for
+ * content; a text that is no CIF, or holds no atoms, gives an empty reading and an error that says which.
+ */
+export function readCif(source: SourceText, options: ReadCifOptions = {}): Reading {
+  const progress = options.progress ?? unwatched;
+  const log = new ProblemLog();
+  const document = parseCif(source, log, (share, stage) => progress(share * syntaxShare, stage));
+  const structures: Crystal[] = [];
+  const tensorSets: TensorSet[] = [];
+  const blocks = blocksOf(document);
+  const step = Math.max(1, Math.ceil(blocks.length / 25));
+  blocks.forEach((block, i) => {
+    if (i % step === 0) progress(syntaxShare + ((1 - syntaxShare) * i) / blocks.length, 'reading structures');
+    const read = interpretBlock(viewBlock(block, source), structures.length, log);
+    if (!read) return;
+    structures.push(read.crystal);
+    tensorSets.push(...read.tensorSets);
+  });
+  if (structures.length === 0) reportNoStructure(source, document, log);
+  else if (structures.length > 1) reportSeveral(structures, log);
+  progress(1, 'done');
+  return {
+    format: document.blocks.length > 0 ? 'cif' : 'unknown',
+    file: source.name,
+    structures,
+    tensorSets,
+    proposals: [],
+    problems: log.list(),
+  };
+}
+
+function blocksOf({ blocks }: CifDocument): readonly CifBlock[] {
+  return blocks;
+}
