@@ -1,6 +1,6 @@
 import type { Mat3 } from '#src/base/matrix3.ts';
 import { frobeniusNorm, trace } from '#src/base/matrix3.ts';
-import type { ColumnProposal } from '../reading.ts';
+import type { ColumnProposal } from '#src/readers/reading.ts';
 
 interface NameRule {
   readonly pattern: RegExp;

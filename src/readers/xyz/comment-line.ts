@@ -34,6 +34,8 @@ interface Piece {
 
 /** After so many unclosed quotes and brackets the rest of a line is taken as bare words: reading stays linear. */
 const maxUnclosed = 20;
+/** Faults of one line that are kept. */
+const maxFaults = 100;
 
 const closerOf: Readonly<Record<string, string>> = { '{': '}', '[': ']' };
 
@@ -46,19 +48,20 @@ export function parseCommentLine(line: string): CommentLine {
   const entries: CommentEntry[] = [];
   const byKey = new Map<string, CommentEntry>();
   const faults: CommentFault[] = [];
+  let unclosed = 0;
   let at = skipSpace(line, 0);
   while (at < line.length) {
     const keyStart = at;
-    const bareOnly = faults.length >= maxUnclosed;
+    const bareOnly = unclosed >= maxUnclosed;
     const key = readKey(line, at, bareOnly);
-    noteUnclosed(faults, key, keyStart, line);
+    unclosed += noteUnclosed(faults, key, keyStart, line);
     const equals = skipSpace(line, key.next);
     const assigned = line[equals] === '=';
     const valueStart = assigned ? skipSpace(line, equals + 1) : key.next;
     const value = assigned
       ? readValue(line, valueStart, bareOnly)
       : { text: 'T', next: key.next, closed: true };
-    if (assigned) noteUnclosed(faults, value, valueStart, line);
+    if (assigned) unclosed += noteUnclosed(faults, value, valueStart, line);
     const entry = { key: key.text, value: value.text, assigned, keyStart, valueStart };
     entries.push(entry);
     const lower = key.text.toLowerCase();
@@ -66,7 +69,7 @@ export function parseCommentLine(line: string): CommentLine {
     else if (assigned) byKey.set(lower, entry);
     at = skipSpace(line, Math.max(value.next, keyStart + 1));
   }
-  return { entries, byKey, faults };
+  return { entries, byKey, faults: faults.slice(0, maxFaults) };
 }
 
 function readKey(line: string, start: number, bareOnly: boolean): Piece {
@@ -97,6 +100,8 @@ function readQuoted(line: string, start: number, quote: string): Piece {
       i++;
       from = i + 1;
     } else if (line[i] === quote) {
+      // `a="1 b="2"`: the second quote opens the value of b, the first was never closed.
+      if (/\s[A-Za-z_]\w*=$/.test(line.slice(Math.max(start, i - 64), i))) break;
       parts.push(line.slice(from, i));
       return { text: parts.join(''), next: i + 1, closed: true };
     }
@@ -129,8 +134,8 @@ function cutAtNextKey(line: string, start: number): Piece {
   return { text: line.slice(start, end), next: end, closed: false };
 }
 
-function noteUnclosed(faults: CommentFault[], piece: Piece, column: number, line: string): void {
-  if (piece.closed) return;
+function noteUnclosed(faults: CommentFault[], piece: Piece, column: number, line: string): number {
+  if (piece.closed) return 0;
   const opening = line[column] ?? '"';
   const quoted = opening === '"' || opening === "'";
   faults.push({
@@ -138,6 +143,7 @@ function noteUnclosed(faults: CommentFault[], piece: Piece, column: number, line
     code: quoted ? 'xyz-unclosed-quote' : 'xyz-unclosed-bracket',
     message: `The ${quoted ? 'quote' : 'bracket'} ${opening} is not closed; its text was taken up to the next key.`,
   });
+  return 1;
 }
 
 function repeatedKey(key: string, column: number): CommentFault {

@@ -6,7 +6,7 @@ import { lineCount, lineText } from '#src/bytes/source-from-text.ts';
 import type { SourceText } from '#src/bytes/source-text.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
-import type { ColumnProposal, Reading } from '../reading.ts';
+import type { ColumnProposal, Reading } from '#src/readers/reading.ts';
 import { guessColumn } from './column-guess.ts';
 import type { AcceptedColumns, ColumnPlan } from './column-plan.ts';
 import { planColumns } from './column-plan.ts';
