@@ -1,6 +1,7 @@
 import { charClass, code } from './characters.ts';
 import type { CifValue } from './cif-document.ts';
-import type { CifLexer } from './lexer.ts';
+import type { CifScanner } from './scanner.ts';
+import { readField } from './text-field.ts';
 import { cifLimits } from './limits.ts';
 import { readQuoted } from './quoted.ts';
 
@@ -19,42 +20,43 @@ const reserved = /^(?:data_|save_|(?:loop_|global_|stop_)$)/i;
 const attemptsInVain = 4;
 
 /**
- * Reads the CIF 2.0 list or table that opens at `start`; sets `lexer.end` behind it. Gives `null` (and reports it) where the
+ * Reads the CIF 2.0 list or table that opens at `start`; sets `scanner.end` behind it. Gives `null` (and reports it) where the
  * bracket turns out to be plain text, as in files that carry the 2.0 magic code over CIF 1 content: it never closes before the
  * next name or reserved word, or what it encloses is part of one word.
  */
-export function readCollection(lexer: CifLexer, start: number): CifValue | null {
-  if (lexer.plainBrackets.has(start)) return null;
-  if (lexer.charactersInVain > attemptsInVain * lexer.text.length) return null;
-  const { isField, valuesMade } = lexer;
-  lexer.report.hold();
-  const reader = new CollectionReader(lexer, start);
+export function readCollection(scanner: CifScanner, start: number): CifValue | null {
+  if (scanner.plainBrackets.has(start)) return null;
+  if (scanner.charactersInVain > attemptsInVain * scanner.text.length) return null;
+  const { isField, valuesMade } = scanner;
+  scanner.report.hold();
+  const reader = new CollectionReader(scanner, start);
   const value = reader.read();
-  const partOfWord = value !== null && !lexer.isBlankAt(lexer.end) && lexer.wordEndFrom(start) > lexer.end;
+  const partOfWord =
+    value !== null && !scanner.isBlankAt(scanner.end) && scanner.wordEndFrom(start) > scanner.end;
   const accepted = value !== null && !partOfWord;
-  lexer.report.release(accepted);
-  lexer.isField = isField;
+  scanner.report.release(accepted);
+  scanner.isField = isField;
   if (accepted) {
-    if (!lexer.isBlankAt(lexer.end)) lexer.missingBlank(lexer.end);
+    if (!scanner.isBlankAt(scanner.end)) scanner.missingBlank(scanner.end);
     return value;
   }
-  lexer.charactersInVain += lexer.end - start;
-  lexer.valuesMade = valuesMade;
+  scanner.charactersInVain += scanner.end - start;
+  scanner.valuesMade = valuesMade;
   if (!partOfWord) {
-    reader.open.forEach(({ offset }) => lexer.plainBrackets.add(offset));
-    reportPlain(lexer, start);
+    reader.open.forEach(({ offset }) => scanner.plainBrackets.add(offset));
+    reportPlain(scanner, start);
   }
   return null;
 }
 
-function reportPlain(lexer: CifLexer, start: number): void {
-  lexer.report.add(
+function reportPlain(scanner: CifScanner, start: number): void {
+  scanner.report.add(
     'warning',
     'cif-unclosed-list',
     start,
     'A bracket opens here and does not close before the next name or reserved word; it was read as ordinary text.',
     {
-      got: lexer.report.excerpt(start, lexer.lineEndFrom(start)),
+      got: scanner.report.excerpt(start, scanner.lineEndFrom(start)),
       allowed: 'a list [ … ] or a table { … }',
       hint: 'Close the bracket, or put the value in quotes.',
     },
@@ -64,29 +66,29 @@ function reportPlain(lexer: CifLexer, start: number): void {
 /** Reads nested lists and tables with a stack of its own, so that depth costs no call stack. */
 class CollectionReader {
   readonly open: Open[] = [];
-  readonly #lexer: CifLexer;
+  readonly #scanner: CifScanner;
   readonly #start: number;
   /** Levels beyond the limit; their content is kept as text. */
   #deeper = 0;
   #deepStart = 0;
 
-  constructor(lexer: CifLexer, start: number) {
-    this.#lexer = lexer;
+  constructor(scanner: CifScanner, start: number) {
+    this.#scanner = scanner;
     this.#start = start;
   }
 
-  /** The value, or `null` where it does not close; `lexer.end` is where reading stopped. */
+  /** The value, or `null` where it does not close; `scanner.end` is where reading stopped. */
   read(): CifValue | null {
-    const { text, table } = this.#lexer;
+    const { text, table } = this.#scanner;
     let p = this.#start;
     for (;;) {
-      this.#lexer.end = p = this.#lexer.skipBlanks(p);
-      if (p >= text.length || this.#lexer.valuesMade > cifLimits.values) return null;
+      this.#scanner.end = p = this.#scanner.skipBlanks(p);
+      if (p >= text.length || this.#scanner.valuesMade > cifLimits.values) return null;
       const kind = table[text.charCodeAt(p)];
       if (kind === charClass.openBracket) this.#push(p++);
       else if (kind === charClass.closeBracket) {
         const done = this.#close(p++);
-        this.#lexer.end = p;
+        this.#scanner.end = p;
         if (done) return done;
       } else {
         const next = this.#element(p);
@@ -98,13 +100,13 @@ class CollectionReader {
 
   #push(offset: number): void {
     if (this.open.length < cifLimits.nestingDepth) {
-      const isTable = this.#lexer.text[offset] === '{';
+      const isTable = this.#scanner.text[offset] === '{';
       this.open.push({ offset, isTable, items: [], entries: new Map(), key: null });
       return;
     }
     if (this.#deeper++ > 0) return;
     this.#deepStart = offset;
-    this.#lexer.report.add(
+    this.#scanner.report.add(
       'error',
       'cif-nesting-too-deep',
       offset,
@@ -118,13 +120,13 @@ class CollectionReader {
     if (this.#deeper > 0) {
       this.#deeper--;
       if (this.#deeper === 0) {
-        const text = this.#lexer.text.slice(this.#deepStart, offset + 1);
-        this.#put(this.#lexer.textValue(text, true, this.#deepStart));
+        const text = this.#scanner.text.slice(this.#deepStart, offset + 1);
+        this.#put(this.#scanner.textValue(text, true, this.#deepStart));
       }
       return null;
     }
     const closed = this.open.pop()!;
-    if ((this.#lexer.text[offset] === '}') !== closed.isTable) {
+    if ((this.#scanner.text[offset] === '}') !== closed.isTable) {
       this.#warn(
         'cif-wrong-bracket',
         offset,
@@ -135,7 +137,7 @@ class CollectionReader {
       );
     }
     if (closed.key !== null) this.#missingValue(closed, offset);
-    this.#lexer.valuesMade++;
+    this.#scanner.valuesMade++;
     const value: CifValue = closed.isTable
       ? { kind: 'table', entries: closed.entries, offset: closed.offset }
       : { kind: 'list', items: closed.items, offset: closed.offset };
@@ -146,23 +148,23 @@ class CollectionReader {
 
   /** Reads a scalar or a table key at `p`; gives the offset behind it, or -1 where no element can start. */
   #element(p: number): number {
-    const { text, table } = this.#lexer;
+    const { text, table } = this.#scanner;
     const kind = table[text.charCodeAt(p)];
     if (kind === charClass.underscore) return -1;
     if (text.charCodeAt(p) === code.colon && this.#spacedColon(p)) return p + 1;
-    if (kind === charClass.quote) return this.#keyOrValue(readQuoted(this.#lexer, p, true));
-    if (kind === charClass.semicolon && this.#lexer.startsLine(p))
-      return this.#keyOrValue(this.#lexer.readField(p));
+    if (kind === charClass.quote) return this.#keyOrValue(readQuoted(this.#scanner, p, true));
+    if (kind === charClass.semicolon && this.#scanner.startsLine(p))
+      return this.#keyOrValue(readField(this.#scanner, p));
     return this.#bare(p);
   }
 
-  /** Handles a delimited string that ends at `lexer.end`. */
+  /** Handles a delimited string that ends at `scanner.end`. */
   #keyOrValue(value: CifValue): number {
-    const { text, end } = this.#lexer;
+    const { text, end } = this.#scanner;
     const top = this.open.at(-1)!;
     const isKey = text.charCodeAt(end) === code.colon;
     if (top.isTable && top.key === null && this.#deeper === 0 && value.kind === 'text') {
-      const colon = isKey ? end : this.#lexer.skipBlanks(end);
+      const colon = isKey ? end : this.#scanner.skipBlanks(end);
       if (text.charCodeAt(colon) === code.colon) {
         if (!isKey)
           this.#warn(
@@ -186,13 +188,13 @@ class CollectionReader {
 
   #spacedColon(p: number): boolean {
     const top = this.open.at(-1)!;
-    if (!this.#lexer.isBlankAt(p + 1) || this.#deeper > 0 || !top.isTable || top.key !== null) return false;
+    if (!this.#scanner.isBlankAt(p + 1) || this.#deeper > 0 || !top.isTable || top.key !== null) return false;
     this.#warn('cif-missing-key', p, 'A colon stands in a table without a key before it; it was skipped.');
     return true;
   }
 
   #bare(p: number): number {
-    const { text, table } = this.#lexer;
+    const { text, table } = this.#scanner;
     let end = p + 1;
     while (end < text.length) {
       const kind = table[text.charCodeAt(end)]!;
@@ -215,8 +217,8 @@ class CollectionReader {
   }
 
   #bareValue(word: string, offset: number): CifValue {
-    if (word !== '?' && word !== '.') return this.#lexer.textValue(word, false, offset);
-    this.#lexer.valuesMade++;
+    if (word !== '?' && word !== '.') return this.#scanner.textValue(word, false, offset);
+    this.#scanner.valuesMade++;
     return { kind: word === '?' ? 'unknown' : 'inapplicable', offset };
   }
 
@@ -262,6 +264,6 @@ class CollectionReader {
     message: string,
     details: { got?: string; allowed?: string } = {},
   ): void {
-    this.#lexer.report.add('warning', problem, offset, message, details);
+    this.#scanner.report.add('warning', problem, offset, message, details);
   }
 }

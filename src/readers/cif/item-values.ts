@@ -5,6 +5,7 @@ import { completeLoop } from './loop.ts';
 import type { NameAt } from './loop.ts';
 import { numberFromText } from './number.ts';
 import type { CifReport } from './report.ts';
+import { recoverField } from './text-field.ts';
 
 /** The first value after a name. */
 export interface FirstValue {
@@ -25,7 +26,7 @@ export type ItemValues =
  */
 export function readItemValues(lexer: CifLexer, first: FirstValue, names: readonly NameAt[]): ItemValues {
   if (first.isField && names.length === 1) {
-    const shorter = lexer.recoverField(first.value.offset, first.end);
+    const shorter = recoverField(lexer, first.value.offset, first.end);
     if (shorter) {
       lexer.position = lexer.end;
       return { loop: null, value: shorter, token: lexer.next() };
@@ -49,7 +50,7 @@ export function readItemValues(lexer: CifLexer, first: FirstValue, names: readon
 
 /** In a place where no value belongs, a text field that runs over names was never opened on purpose. */
 function recovered(lexer: CifLexer): CifValue | null {
-  const shorter = lexer.recoverField(lexer.start, lexer.end);
+  const shorter = recoverField(lexer, lexer.start, lexer.end);
   if (shorter) lexer.position = lexer.end;
   return shorter;
 }

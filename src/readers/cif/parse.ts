@@ -2,17 +2,19 @@ import type { ProblemLog } from '#src/base/problem.ts';
 import type { ReportProgress } from '#src/base/progress.ts';
 import { unwatched } from '#src/base/progress.ts';
 import type { SourceText } from '#src/bytes/source-text.ts';
-import { addItem, addLoop, openBlock, shortName } from './block-builder.ts';
-import type { OpenBlock } from './block-builder.ts';
-import type { CifDocument, CifValue } from './cif-document.ts';
+import { addItem, addLoop, shortName } from './block-builder.ts';
+import { BlockStack } from './block-stack.ts';
+import type { CifBlock, CifDocument, CifValue } from './cif-document.ts';
 import { readItemValues, reportStray } from './item-values.ts';
 import { CifLexer } from './lexer.ts';
 import type { TokenKind } from './lexer.ts';
 import { cifLimits } from './limits.ts';
 import { completeLoop } from './loop.ts';
 import type { NameAt } from './loop.ts';
+import { foldCase, noteNameLength } from './names.ts';
 import { readPreamble } from './preamble.ts';
 import { CifReport } from './report.ts';
+import { recoverField } from './text-field.ts';
 
 /**
  * Reads the syntax of a CIF 1.1 (International Tables G 2.2.7) or CIF 2.0 text (Bernstein et al., J. Appl. Cryst. 49 (2016)
@@ -31,16 +33,15 @@ export function parseCif(
   return { version, blocks: parser.read() };
 }
 
+/** Loops of more values than this get their room at once. */
+const roomFrom = 1000;
+
 class Parser {
   readonly #text: string;
   readonly #lexer: CifLexer;
   readonly #report: CifReport;
   readonly #progress: ReportProgress;
-  readonly #blocks: OpenBlock[] = [];
-  readonly #blockNames = new Map<string, OpenBlock>();
-  /** The data block and the save frames open inside it, innermost last. */
-  readonly #open: OpenBlock[] = [];
-  #blockCount = 0;
+  readonly #blocks: BlockStack;
   #nextProgress = 0;
   #stopped = false;
 
@@ -49,17 +50,18 @@ class Parser {
     this.#lexer = lexer;
     this.#report = report;
     this.#progress = progress;
+    this.#blocks = new BlockStack(report);
   }
 
-  read(): OpenBlock[] {
+  read(): CifBlock[] {
     let token = this.#lexer.next();
     while (token !== 'end' && !this.#stopped) {
       token = this.#readPart(token);
       this.#tick();
     }
-    this.#closeFrames(this.#lexer.start);
+    this.#blocks.closeFrames(this.#lexer.start);
     this.#progress(1, 'reading CIF');
-    return this.#blocks;
+    return this.#blocks.blocks;
   }
 
   #readPart(token: TokenKind): TokenKind {
@@ -82,124 +84,23 @@ class Parser {
   }
 
   #startBlock(name: string): TokenKind {
-    const { start } = this.#lexer;
-    this.#closeFrames(start);
-    if (name === '')
-      this.#report.add(
-        'warning',
-        'cif-unnamed-block',
-        start,
-        'A data block has no name; it was read as a block without one.',
-        {
-          got: 'data_',
-          allowed: 'data_ and a name without blanks',
-        },
-      );
-    const block = openBlock(name, start);
-    const folded = foldCase(name);
-    const earlier = this.#blockNames.get(folded);
-    if (earlier)
-      this.#report.add(
-        'warning',
-        'cif-repeated-block',
-        start,
-        'Two data blocks have the same name; both were kept.',
-        {
-          got: `data_${shortName(name)}`,
-          allowed: 'each block name once a file',
-        },
-      );
-    else this.#blockNames.set(folded, block);
-    this.#noteLength(name, start);
-    this.#open.length = 0;
-    this.#open.push(block);
-    this.#blocks.push(block);
-    this.#count();
-    return this.#lexer.next();
-  }
-
-  /** The block that takes what comes; one without a name where no `data_` stood yet. */
-  #current(): OpenBlock {
-    const top = this.#open.at(-1);
-    if (top) return top;
-    const { start } = this.#lexer;
-    this.#report.add(
-      'warning',
-      'cif-no-data-header',
-      start,
-      'Items stand before any data_ line; they were read as a block without a name.',
-      {
-        got: this.#report.excerpt(start, this.#lexer.end),
-        allowed: 'a line data_NAME first',
-        hint: 'Put a line that starts with data_ and a name at the top.',
-      },
-    );
-    const block = openBlock('', start);
-    this.#open.push(block);
-    this.#blocks.push(block);
-    return block;
+    const tooMany = this.#blocks.startBlock(name, this.#lexer.start);
+    return tooMany ? this.#giveUp(tooMany) : this.#lexer.next();
   }
 
   #saveFrame(): TokenKind {
     const { start, end } = this.#lexer;
     const name = this.#text.slice(start + 5, end);
-    if (name === '') {
-      if (this.#open.length > 1) this.#open.pop();
-      else
-        this.#report.add(
-          'warning',
-          'cif-stray-save',
-          start,
-          'A save_ closes a save frame, but none is open; it was skipped.',
-          {
-            got: 'save_',
-            allowed: 'save_NAME before it',
-          },
-        );
-      return this.#lexer.next();
-    }
-    const parent = this.#current();
-    if (this.#open.length > 1)
-      this.#report.add(
-        'warning',
-        'cif-nested-frame',
-        start,
-        `A save frame starts inside the frame ${shortName(parent.name)}; it was read as part of it.`,
-        {
-          got: `save_${shortName(name)}`,
-          allowed: 'save_ to close the first frame',
-        },
-      );
-    if (this.#open.length > cifLimits.frameDepth)
-      return this.#giveUp(`save frames nested deeper than ${cifLimits.frameDepth}`);
-    const frame = openBlock(name, start);
-    this.#noteLength(name, start);
-    parent.frames.push(frame);
-    this.#open.push(frame);
-    this.#count();
-    return this.#lexer.next();
-  }
-
-  #closeFrames(offset: number): void {
-    for (let depth = this.#open.length - 1; depth > 0; depth--) {
-      const { name } = this.#open[depth]!;
-      this.#report.add(
-        'warning',
-        'cif-unclosed-frame',
-        offset,
-        `The save frame ${shortName(name)} is not closed; it was ended here.`,
-        {
-          allowed: 'save_ after the frame',
-        },
-      );
-    }
-    this.#open.length = Math.min(1, this.#open.length);
+    let tooMany: string | null = null;
+    if (name === '') this.#blocks.closeFrame(start);
+    else tooMany = this.#blocks.openFrame(name, start, end);
+    return tooMany ? this.#giveUp(tooMany) : this.#lexer.next();
   }
 
   #readLoop(): TokenKind {
     const lexer = this.#lexer;
-    const block = this.#current();
-    const { start } = lexer;
+    const { start, end } = lexer;
+    const block = this.#blocks.current(start, end);
     const names: NameAt[] = [];
     let token = lexer.next();
     for (; token === 'name'; token = lexer.next()) {
@@ -208,14 +109,7 @@ class Parser {
       names.push(this.#name());
     }
     const values: CifValue[] = [];
-    for (; token === 'value'; token = lexer.next()) {
-      values.push(lexer.value);
-      if (lexer.position >= this.#nextProgress) this.#tick();
-      if (lexer.valuesMade > cifLimits.values) {
-        token = this.#giveUp(`more than ${cifLimits.values} values`);
-        break;
-      }
-    }
+    if (token === 'value') token = this.#readValues(values);
     if (names.length > 0) {
       addLoop(block, completeLoop(names, values, start, this.#report), names, this.#report);
       return token;
@@ -233,9 +127,25 @@ class Parser {
     return token;
   }
 
-  #readItem(): TokenKind {
-    const block = this.#current();
+  /** Reads values as long as they come; the lexer stands on the first. */
+  #readValues(values: CifValue[]): TokenKind {
     const lexer = this.#lexer;
+    values.push(lexer.value);
+    const words = lexer.countWords();
+    if (words > roomFrom) values.length = Math.min(words, cifLimits.values);
+    const run = { values, count: 1 };
+    let token: TokenKind = 'value';
+    while (token === 'value' && !this.#stopped) {
+      this.#tick();
+      token = lexer.takeValues(run, this.#nextProgress);
+    }
+    values.length = run.count;
+    return this.#stopped ? 'end' : token;
+  }
+
+  #readItem(): TokenKind {
+    const lexer = this.#lexer;
+    const block = this.#blocks.current(lexer.start, lexer.end);
     let last = this.#name();
     let earlier: NameAt[] | null = null;
     let token = lexer.next();
@@ -287,7 +197,7 @@ class Parser {
     let token: TokenKind = 'value';
     let end = start;
     while (token === 'value') {
-      const open = lexer.isField ? lexer.recoverField(lexer.start, lexer.end) : null;
+      const open = lexer.isField ? recoverField(lexer, lexer.start, lexer.end) : null;
       if (open) lexer.position = lexer.end;
       count++;
       end = lexer.end;
@@ -298,16 +208,12 @@ class Parser {
   }
 
   #global(): TokenKind {
-    const { start } = this.#lexer;
     this.#report.add(
       'warning',
       'cif-global',
-      start,
+      this.#lexer.start,
       'global_ belongs to an older syntax; what follows was read as a block of that name.',
-      {
-        got: 'global_',
-        allowed: 'data_NAME',
-      },
+      { got: 'global_', allowed: 'data_NAME' },
     );
     return this.#startBlock('global_');
   }
@@ -326,27 +232,8 @@ class Parser {
   #name(): NameAt {
     const { start, end } = this.#lexer;
     const written = this.#text.slice(start, end);
-    if (end - start > cifLimits.nameLength) this.#noteLength(written, start);
+    noteNameLength(written, start, this.#report);
     return { name: foldCase(written), offset: start };
-  }
-
-  #noteLength(name: string, offset: number): void {
-    if (name.length <= cifLimits.nameLength) return;
-    this.#report.add(
-      'note',
-      'cif-long-name',
-      offset,
-      `A name is longer than ${cifLimits.nameLength} characters; it was read whole.`,
-      {
-        got: `${name.length} characters`,
-        allowed: `${cifLimits.nameLength} characters`,
-      },
-    );
-  }
-
-  #count(): void {
-    this.#blockCount++;
-    if (this.#blockCount > cifLimits.blocks) this.#giveUp(`more than ${cifLimits.blocks} blocks and frames`);
   }
 
   #giveUp(what: string): 'end' {
@@ -372,10 +259,4 @@ class Parser {
     this.#nextProgress = position + this.#text.length / 100;
     this.#progress(position / Math.max(1, this.#text.length), 'reading CIF');
   }
-}
-
-/** Names compare without case; beyond ASCII also without regard to how accents are composed (CIF 2.0). */
-function foldCase(name: string): string {
-  const folded = name.toLowerCase();
-  return /[^\0-\x7f]/.test(folded) ? folded.normalize('NFC') : folded;
 }

@@ -1,60 +1,60 @@
 import { charClass, code } from './characters.ts';
 import type { CifValue } from './cif-document.ts';
-import type { CifLexer } from './lexer.ts';
+import type { CifScanner } from './scanner.ts';
 
 /**
- * Reads the quoted string that opens at `start`; sets `lexer.end` behind it. CIF 1.1: the closing quote is the first one on the
+ * Reads the quoted string that opens at `start`; sets `scanner.end` behind it. CIF 1.1: the closing quote is the first one on the
  * line that a blank follows. CIF 2.0: the first one on the line; where no blank follows, the CIF 1.1 rule is tried and noted.
  * A string that does not close is kept to the end of its line.
  */
-export function readQuoted(lexer: CifLexer, start: number, inCollection: boolean): CifValue {
-  const quote = lexer.text.charCodeAt(start);
-  if (lexer.version === '1.1') {
-    const close = blankFollowedQuote(lexer, start + 1, quote, false);
-    return close < 0 ? unclosed(lexer, start, quote) : closed(lexer, start, close);
+export function readQuoted(scanner: CifScanner, start: number, inCollection: boolean): CifValue {
+  const quote = scanner.text.charCodeAt(start);
+  if (scanner.version === '1.1') {
+    const close = blankFollowedQuote(scanner, start + 1, quote, false);
+    return close < 0 ? unclosed(scanner, start, quote) : closed(scanner, start, close);
   }
-  return triple(lexer, start, quote, inCollection) ?? single(lexer, start, quote, inCollection);
+  return triple(scanner, start, quote, inCollection) ?? single(scanner, start, quote, inCollection);
 }
 
-function single(lexer: CifLexer, start: number, quote: number, inCollection: boolean): CifValue {
-  const first = firstQuote(lexer, start + 1, quote);
-  if (first < 0) return unclosed(lexer, start, quote);
-  if (endsValue(lexer, first + 1, inCollection)) return closed(lexer, start, first);
-  const loose = looseClose(lexer, first + 1, quote, inCollection);
+function single(scanner: CifScanner, start: number, quote: number, inCollection: boolean): CifValue {
+  const first = firstQuote(scanner, start + 1, quote);
+  if (first < 0) return unclosed(scanner, start, quote);
+  if (endsValue(scanner, first + 1, inCollection)) return closed(scanner, start, first);
+  const loose = looseClose(scanner, first + 1, quote, inCollection);
   if (loose < 0) {
-    if (!inCollection || lexer.text.charCodeAt(first + 1) !== code.comma) lexer.missingBlank(first + 1);
-    return closed(lexer, start, first);
+    if (!inCollection || scanner.text.charCodeAt(first + 1) !== code.comma) scanner.missingBlank(first + 1);
+    return closed(scanner, start, first);
   }
-  lexer.report.add(
+  scanner.report.add(
     'note',
     'cif-quote-inside',
     first,
     'The quote that delimits this string stands inside it too; it was read by the rule of CIF 1.1.',
     {
-      got: lexer.report.excerpt(start, loose + 1),
+      got: scanner.report.excerpt(start, loose + 1),
       allowed: 'CIF 2.0 ends the string at the first such quote',
       hint: 'Use the other quote or three of them, or take the CIF 2.0 magic code out.',
     },
   );
-  return closed(lexer, start, loose);
+  return closed(scanner, start, loose);
 }
 
-function triple(lexer: CifLexer, start: number, quote: number, inCollection: boolean): CifValue | null {
-  const { text } = lexer;
+function triple(scanner: CifScanner, start: number, quote: number, inCollection: boolean): CifValue | null {
+  const { text } = scanner;
   if (text.charCodeAt(start + 1) !== quote || text.charCodeAt(start + 2) !== quote) return null;
-  const close = lexer.tripleClose(quote, start + 3);
+  const close = scanner.tripleClose(quote, start + 3);
   if (close < 0) {
-    if (!endsValue(lexer, start + 2, inCollection)) reportOpenTriple(lexer, start);
+    if (!endsValue(scanner, start + 2, inCollection)) reportOpenTriple(scanner, start);
     return null;
   }
-  lexer.end = close + 3;
-  if (!endsValue(lexer, lexer.end, inCollection)) lexer.missingBlank(lexer.end);
+  scanner.end = close + 3;
+  if (!endsValue(scanner, scanner.end, inCollection)) scanner.missingBlank(scanner.end);
   const raw = text.slice(start + 3, close);
-  return lexer.textValue(raw.includes('\r') ? raw.replace(/\r\n?/g, '\n') : raw, true, start);
+  return scanner.textValue(raw.includes('\r') ? raw.replace(/\r\n?/g, '\n') : raw, true, start);
 }
 
-function reportOpenTriple(lexer: CifLexer, start: number): void {
-  lexer.report.add(
+function reportOpenTriple(scanner: CifScanner, start: number): void {
+  scanner.report.add(
     'warning',
     'cif-unclosed-triple-quote',
     start,
@@ -63,40 +63,40 @@ function reportOpenTriple(lexer: CifLexer, start: number): void {
   );
 }
 
-function closed(lexer: CifLexer, start: number, close: number): CifValue {
-  lexer.end = close + 1;
-  return lexer.textValue(lexer.text.slice(start + 1, close), true, start);
+function closed(scanner: CifScanner, start: number, close: number): CifValue {
+  scanner.end = close + 1;
+  return scanner.textValue(scanner.text.slice(start + 1, close), true, start);
 }
 
-function unclosed(lexer: CifLexer, start: number, quote: number): CifValue {
-  const lineEnd = lexer.lineEndFrom(start);
-  lexer.end = lineEnd;
-  let text = lexer.text.slice(start + 1, lineEnd).trimEnd();
+function unclosed(scanner: CifScanner, start: number, quote: number): CifValue {
+  const lineEnd = scanner.lineEndFrom(start);
+  scanner.end = lineEnd;
+  let text = scanner.text.slice(start + 1, lineEnd).trimEnd();
   const other = quote === code.singleQuote ? '"' : "'";
   if (text.indexOf(other) === text.length - 1) text = text.slice(0, -1);
-  lexer.report.add(
+  scanner.report.add(
     'warning',
     'cif-unclosed-quote',
     start,
     'The quote that opens this string does not close on the line; the rest of the line was taken.',
     {
-      got: lexer.report.excerpt(start, lineEnd),
+      got: scanner.report.excerpt(start, lineEnd),
       allowed: `the text, then ${String.fromCharCode(quote)} and a blank`,
     },
   );
-  return lexer.textValue(text, true, start);
+  return scanner.textValue(text, true, start);
 }
 
 /** True where a value may end: before a blank, and inside a list or table before a bracket or colon. */
-function endsValue(lexer: CifLexer, offset: number, inCollection: boolean): boolean {
-  if (lexer.isBlankAt(offset)) return true;
+function endsValue(scanner: CifScanner, offset: number, inCollection: boolean): boolean {
+  if (scanner.isBlankAt(offset)) return true;
   if (!inCollection) return false;
-  const next = lexer.text.charCodeAt(offset);
-  return lexer.table[next] === charClass.closeBracket || next === code.colon;
+  const next = scanner.text.charCodeAt(offset);
+  return scanner.table[next] === charClass.closeBracket || next === code.colon;
 }
 
-function firstQuote(lexer: CifLexer, from: number, quote: number): number {
-  const { text, table } = lexer;
+function firstQuote(scanner: CifScanner, from: number, quote: number): number {
+  const { text, table } = scanner;
   for (let p = from; p < text.length; p++) {
     const unit = text.charCodeAt(p);
     if (unit === quote) return p;
@@ -105,15 +105,15 @@ function firstQuote(lexer: CifLexer, from: number, quote: number): number {
   return -1;
 }
 
-function blankFollowedQuote(lexer: CifLexer, from: number, quote: number, inCollection: boolean): number {
-  let p = firstQuote(lexer, from, quote);
-  while (p >= 0 && !endsValue(lexer, p + 1, inCollection)) p = firstQuote(lexer, p + 1, quote);
+function blankFollowedQuote(scanner: CifScanner, from: number, quote: number, inCollection: boolean): number {
+  let p = firstQuote(scanner, from, quote);
+  while (p >= 0 && !endsValue(scanner, p + 1, inCollection)) p = firstQuote(scanner, p + 1, quote);
   return p;
 }
 
 /** As {@link blankFollowedQuote}; a line that was searched in vain is not searched again. */
-function looseClose(lexer: CifLexer, from: number, quote: number, inCollection: boolean): number {
-  const failed = lexer.noLooseClose;
+function looseClose(scanner: CifScanner, from: number, quote: number, inCollection: boolean): number {
+  const failed = scanner.noLooseClose;
   if (
     failed.quote === quote &&
     failed.inCollection === inCollection &&
@@ -121,7 +121,7 @@ function looseClose(lexer: CifLexer, from: number, quote: number, inCollection: 
     from <= failed.to
   )
     return -1;
-  const close = blankFollowedQuote(lexer, from, quote, inCollection);
-  if (close < 0) lexer.noLooseClose = { quote, inCollection, from, to: lexer.lineEndFrom(from) };
+  const close = blankFollowedQuote(scanner, from, quote, inCollection);
+  if (close < 0) scanner.noLooseClose = { quote, inCollection, from, to: scanner.lineEndFrom(from) };
   return close;
 }
