@@ -1,0 +1,69 @@
+// CPU twin: src/scene/view-quadric.ts. A quadric seen along -z: T = lower triangle with T Tᵀ = M Mᵀ, surface T (e, s).
+struct ViewQuadric {
+  vec3 outline; // l11, l21, l22
+  vec3 depth; // g1, g2, w
+};
+
+// Columns of m are the semi-axes in view axes, pixels.
+ViewQuadric viewQuadric(mat3 m) {
+  mat3 sigma = m * transpose(m);
+  float l11 = sqrt(sigma[0][0]);
+  float l21 = sigma[0][1] / l11;
+  float l22 = sqrt(max(sigma[1][1] - l21 * l21, 1e-20));
+  float g1 = sigma[0][2] / l11;
+  float g2 = (sigma[1][2] - l21 * g1) / l22;
+  float w = sqrt(max(sigma[2][2] - g1 * g1 - g2 * g2, 1e-20));
+  return ViewQuadric(vec3(l11, l21, l22), vec3(g1, g2, w));
+}
+
+// Offset on screen of a point of the unit disc.
+vec2 outlinePoint(ViewQuadric q, vec2 e) {
+  return vec2(q.outline.x * e.x, q.outline.y * e.x + q.outline.z * e.y);
+}
+
+// (e, s) to coordinates along the quadric's own axes, on the unit sphere. Orthogonal.
+mat3 bodyRotation(mat3 m, ViewQuadric q) {
+  mat3 t = mat3(
+    q.outline.x, q.outline.y, q.depth.x,
+    0.0, q.outline.z, q.depth.y,
+    0.0, 0.0, q.depth.z
+  );
+  return inverse(m) * t;
+}
+
+float surfaceDepth(ViewQuadric q, vec3 unit) {
+  return dot(q.depth, unit);
+}
+
+vec3 surfaceNormal(ViewQuadric q, vec3 unit) {
+  float z = unit.z / q.depth.z;
+  float y = (unit.y - q.depth.y * z) / q.outline.z;
+  float x = (unit.x - q.outline.y * y - q.depth.x * z) / q.outline.x;
+  return vec3(x, y, z);
+}
+
+// A gradient in e as a gradient in pixels.
+vec2 pixelGradient(ViewQuadric q, vec2 g) {
+  float y = g.y / q.outline.z;
+  return vec2((g.x - q.outline.y * y) / q.outline.x, y);
+}
+
+const float rimFloor = 0.02;
+
+// First-order distances on screen, pixels, to the three great circles u_k = 0.
+vec3 circleDistances(ViewQuadric q, mat3 body, vec3 unit) {
+  vec3 u = body * unit;
+  vec3 steep = body[2] / max(unit.z, rimFloor);
+  vec3 d;
+  for (int k = 0; k < 3; k++) {
+    vec2 g = vec2(body[0][k], body[1][k]) - steep[k] * unit.xy;
+    d[k] = abs(u[k]) / length(pixelGradient(q, g));
+  }
+  return d;
+}
+
+// First-order distance from the outline, pixels; positive outside.
+float outlineDistance(ViewQuadric q, vec2 e) {
+  float radius = length(e);
+  return (radius - 1.0) / length(pixelGradient(q, e / radius));
+}

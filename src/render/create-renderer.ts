@@ -1,0 +1,303 @@
+import type { BufferGeometry, RawShaderMaterial } from 'three';
+import {
+  Camera as StillCamera,
+  Color,
+  LinearSRGBColorSpace,
+  Mesh,
+  Scene as Group,
+  WebGLRenderer,
+} from 'three';
+import type { Camera, Viewport } from '#src/scene/camera.ts';
+import type { PickHit } from '#src/scene/pick.ts';
+import { pick as pickInScene } from '#src/scene/pick.ts';
+import type { Scene } from '#src/scene/scene.ts';
+import { cylinderGeometry, lineGeometry, quadricGeometry, setQuadricStates } from './batch-geometry.ts';
+import { applyTheme, applyView, programMaterial, sharedUniforms } from './materials.ts';
+import type { Supersampling } from './supersampling.ts';
+import { createSupersampling } from './supersampling.ts';
+import type { RenderTheme } from './theme.ts';
+import { lightTheme } from './theme.ts';
+
+export { darkTheme, lightTheme } from './theme.ts';
+export type { RenderTheme } from './theme.ts';
+
+export interface RendererOptions {
+  readonly theme?: RenderTheme;
+  /** Samples across a pixel at rest, 1 to turn smoothing off; 1 is always used while the picture changes. */
+  readonly samplesAcross?: number;
+  /** Called when the context was lost, and when the picture is back. Nothing needs to be set again. */
+  readonly onContextLost?: () => void;
+  readonly onContextRestored?: () => void;
+}
+
+export interface RenderCounters {
+  /** Frames drawn so far, fast ones and smoothed ones. */
+  readonly frames: number;
+  readonly smoothFrames: number;
+  readonly quadrics: number;
+  readonly cylinders: number;
+  readonly lines: number;
+  readonly drawCalls: number;
+  /** How often the context was lost. */
+  readonly contextLosses: number;
+  /** What changed last, as a sentence. */
+  readonly lastReason: string;
+}
+
+/**
+ * Draws a scene by WebGL2, on demand: each `set…` marks the picture as stale, the next animation frame draws it, and when
+ * nothing has changed for a moment it is drawn once more with smoothed edges.
+ */
+export interface CrystalRenderer {
+  setScene(scene: Scene): void;
+  setCamera(camera: Camera): void;
+  setTheme(theme: RenderTheme): void;
+  /** Atom ids (EquivalentAtom.id); every drawn copy gets its ring. */
+  setSelection(atomIds: readonly string[]): void;
+  setHover(atomId: string | null): void;
+  /** CSS pixels, and device pixels for one of them. The canvas' own style is left alone. */
+  resize(widthPx: number, heightPx: number, devicePixelRatio?: number): void;
+  /** Draws now, smoothed, so that the canvas can be read in the same task. */
+  render(): void;
+  pick(xPx: number, yPx: number): PickHit | null;
+  counters(): RenderCounters;
+  dispose(): void;
+}
+
+/** ms without a change before the picture is smoothed. */
+const restMs = 140;
+
+/** Throws with a plain sentence where the canvas gives no WebGL2 context: ask `probeWebGL` first. */
+export function createCrystalRenderer(
+  canvas: HTMLCanvasElement,
+  options: RendererOptions = {},
+): CrystalRenderer {
+  return new Renderer(canvas, options);
+}
+
+type QuadMesh = Mesh<BufferGeometry, RawShaderMaterial>;
+
+class Renderer implements CrystalRenderer {
+  readonly #canvas: HTMLCanvasElement;
+  readonly #options: RendererOptions;
+  readonly #gl: WebGLRenderer;
+  readonly #uniforms = sharedUniforms();
+  readonly #group = new Group();
+  readonly #still = new StillCamera();
+  readonly #smoothing: Supersampling;
+  readonly #quadrics: QuadMesh;
+  readonly #cylinders: QuadMesh;
+  readonly #lines: QuadMesh;
+  #scene: Scene | null = null;
+  #camera: Camera | null = null;
+  #theme: RenderTheme;
+  #viewport: Viewport = { widthPx: 1, heightPx: 1 };
+  #deviceRatio = 1;
+  #selected: ReadonlySet<string> = new Set();
+  #hovered: string | null = null;
+  #frame: number | null = null;
+  #rest: ReturnType<typeof setTimeout> | null = null;
+  #lost = false;
+  #frames = 0;
+  #smoothFrames = 0;
+  #losses = 0;
+  #lastReason = 'made';
+
+  constructor(canvas: HTMLCanvasElement, options: RendererOptions) {
+    const context = canvas.getContext('webgl2', {
+      alpha: false,
+      antialias: false,
+      depth: true,
+      stencil: false,
+    });
+    if (!context) throw new Error('This canvas gives no WebGL 2 context, which the crystal picture needs.');
+    this.#canvas = canvas;
+    this.#options = options;
+    this.#gl = new WebGLRenderer({ canvas, context, antialias: false });
+    this.#gl.outputColorSpace = LinearSRGBColorSpace;
+    this.#gl.setPixelRatio(1);
+    this.#smoothing = createSupersampling(this.#gl.capabilities.maxTextureSize);
+    this.#quadrics = this.#mesh('quadric', 0);
+    this.#cylinders = this.#mesh('cylinder', 1);
+    this.#lines = this.#mesh('line', 2);
+    this.#theme = options.theme ?? lightTheme;
+    this.setTheme(this.#theme);
+    canvas.addEventListener('webglcontextlost', this.#onLost);
+    canvas.addEventListener('webglcontextrestored', this.#onRestored);
+  }
+
+  setScene(scene: Scene): void {
+    this.#scene = scene;
+    this.#replace(this.#quadrics, quadricGeometry(scene.quadrics));
+    this.#replace(this.#cylinders, cylinderGeometry(scene.cylinders));
+    this.#replace(this.#lines, lineGeometry(scene.lines));
+    this.#markStates();
+    this.#stale('another scene');
+  }
+
+  setCamera(camera: Camera): void {
+    this.#camera = camera;
+    this.#stale('the camera moved');
+  }
+
+  setTheme(theme: RenderTheme): void {
+    this.#theme = theme;
+    applyTheme(this.#uniforms, theme);
+    const [red, green, blue] = theme.paper;
+    // in the renderer's output space, so that the clear colour is the paper's sRGB bytes unchanged
+    this.#gl.setClearColor(new Color().setRGB(red / 255, green / 255, blue / 255, LinearSRGBColorSpace), 1);
+    this.#stale('another theme');
+  }
+
+  setSelection(atomIds: readonly string[]): void {
+    this.#selected = new Set(atomIds);
+    this.#markStates();
+    this.#stale('another selection');
+  }
+
+  setHover(atomId: string | null): void {
+    if (atomId === this.#hovered) return;
+    this.#hovered = atomId;
+    this.#markStates();
+    this.#stale('another atom is hovered');
+  }
+
+  resize(widthPx: number, heightPx: number, devicePixelRatio = 1): void {
+    this.#viewport = { widthPx: Math.max(1, widthPx), heightPx: Math.max(1, heightPx) };
+    this.#deviceRatio = devicePixelRatio;
+    const { width, height } = this.#deviceSize();
+    this.#gl.setSize(width, height, false);
+    this.#stale('another size');
+  }
+
+  render(): void {
+    this.#cancel();
+    this.#draw(true);
+  }
+
+  pick(xPx: number, yPx: number): PickHit | null {
+    if (!this.#scene || !this.#camera) return null;
+    return pickInScene(this.#scene, this.#camera, xPx, yPx, this.#viewport);
+  }
+
+  counters(): RenderCounters {
+    return {
+      frames: this.#frames,
+      smoothFrames: this.#smoothFrames,
+      quadrics: this.#scene?.quadrics.count ?? 0,
+      cylinders: this.#scene?.cylinders.count ?? 0,
+      lines: this.#scene?.lines.count ?? 0,
+      drawCalls: [this.#quadrics, this.#cylinders, this.#lines].filter((mesh) => mesh.visible).length,
+      contextLosses: this.#losses,
+      lastReason: this.#lastReason,
+    };
+  }
+
+  dispose(): void {
+    this.#cancel();
+    this.#canvas.removeEventListener('webglcontextlost', this.#onLost);
+    this.#canvas.removeEventListener('webglcontextrestored', this.#onRestored);
+    for (const mesh of [this.#quadrics, this.#cylinders, this.#lines]) {
+      mesh.geometry.dispose();
+      mesh.material.dispose();
+    }
+    this.#smoothing.dispose();
+    this.#gl.dispose();
+    this.#gl.forceContextLoss();
+    this.#lost = true;
+  }
+
+  #mesh(name: 'quadric' | 'cylinder' | 'line', order: number): QuadMesh {
+    const mesh = new Mesh(quadricGeometry(emptyQuadrics), programMaterial(name, this.#uniforms));
+    mesh.frustumCulled = false;
+    mesh.visible = false;
+    mesh.renderOrder = order;
+    this.#group.add(mesh);
+    return mesh;
+  }
+
+  #replace(mesh: QuadMesh, geometry: BufferGeometry): void {
+    mesh.geometry.dispose();
+    mesh.geometry = geometry;
+    mesh.visible = (geometry.index?.count ?? 0) > 0;
+  }
+
+  #markStates(): void {
+    const scene = this.#scene;
+    if (!scene) return;
+    const states = new Uint8Array(scene.quadrics.count);
+    for (let i = 0; i < states.length; i++) {
+      const entry = scene.picks[scene.quadrics.pickIds[i]! - 1];
+      if (entry?.kind !== 'atom' || entry.context) continue;
+      states[i] = (entry.atomId === this.#hovered ? 1 : 0) + (this.#selected.has(entry.atomId) ? 2 : 0);
+    }
+    setQuadricStates(this.#quadrics.geometry, states);
+  }
+
+  #deviceSize(): { width: number; height: number } {
+    const { widthPx, heightPx } = this.#viewport;
+    return {
+      width: Math.max(1, Math.round(widthPx * this.#deviceRatio)),
+      height: Math.max(1, Math.round(heightPx * this.#deviceRatio)),
+    };
+  }
+
+  #stale(reason: string): void {
+    this.#lastReason = reason;
+    if (this.#rest !== null) clearTimeout(this.#rest);
+    this.#rest = null;
+    this.#frame ??= requestAnimationFrame(() => {
+      this.#frame = null;
+      this.#draw(false);
+      if (this.#samples() > 1) this.#rest = setTimeout(() => this.#draw(true), restMs);
+    });
+  }
+
+  #cancel(): void {
+    if (this.#frame !== null) cancelAnimationFrame(this.#frame);
+    if (this.#rest !== null) clearTimeout(this.#rest);
+    this.#frame = null;
+    this.#rest = null;
+  }
+
+  #samples(): number {
+    return Math.max(1, Math.floor(this.#options.samplesAcross ?? (this.#deviceRatio > 1.5 ? 2 : 3)));
+  }
+
+  #draw(smooth: boolean): void {
+    if (this.#lost || !this.#scene || !this.#camera) return;
+    const { width, height } = this.#deviceSize();
+    const samples = smooth ? this.#samples() : 1;
+    const target = samples > 1 ? this.#smoothing.target(width, height, samples) : null;
+    const across = target ? samples : 1;
+    applyView(this.#uniforms, this.#scene, this.#camera, this.#viewport, this.#deviceRatio * across);
+    this.#gl.setRenderTarget(target);
+    this.#gl.render(this.#group, this.#still);
+    if (target) this.#smoothing.resolve(this.#gl, target, across);
+    this.#frames += 1;
+    if (target) this.#smoothFrames += 1;
+  }
+
+  readonly #onLost = (event: Event): void => {
+    event.preventDefault();
+    this.#lost = true;
+    this.#losses += 1;
+    this.#cancel();
+    this.#options.onContextLost?.();
+  };
+
+  readonly #onRestored = (): void => {
+    this.#lost = false;
+    this.#stale('the graphics context came back');
+    this.#options.onContextRestored?.();
+  };
+}
+
+const emptyQuadrics = {
+  count: 0,
+  centres: new Float32Array(),
+  shapes: new Float32Array(),
+  colours: new Uint8Array(),
+  circles: new Uint8Array(),
+  pickIds: new Uint32Array(),
+};

@@ -1,0 +1,57 @@
+/** What the browser can draw with, found out without loading the renderer. */
+export interface WebGLProbe {
+  /** WebGL2 works at all. */
+  readonly available: boolean;
+  /** It runs on the processor instead of a graphics chip. */
+  readonly software: boolean;
+  /** Unmasked renderer string; null where the browser hides it. */
+  readonly renderer: string | null;
+  /** For people. */
+  readonly sentence: string;
+}
+
+/** Words by which software renderers name themselves. `failIfMajorPerformanceCaveat` does not tell them reliably. */
+const softwareNames = /swiftshader|llvmpipe|softpipe|basic render|software/i;
+
+export function isSoftwareRenderer(renderer: string | null): boolean {
+  return renderer !== null && softwareNames.test(renderer);
+}
+
+/** Makes a WebGL2 context for a moment, asks what drives it, and lets it go. */
+export function probeWebGL(makeCanvas: () => HTMLCanvasElement = newCanvas): WebGLProbe {
+  const gl = contextOf(makeCanvas());
+  if (!gl) {
+    return {
+      available: false,
+      software: false,
+      renderer: null,
+      sentence:
+        'This browser offers no WebGL 2, usually because it finds no graphics chip, so the crystal is not drawn; everything else works.',
+    };
+  }
+  const info = gl.getExtension('WEBGL_debug_renderer_info');
+  const renderer = info ? String(gl.getParameter(info.UNMASKED_RENDERER_WEBGL)) : null;
+  gl.getExtension('WEBGL_lose_context')?.loseContext();
+  const software = isSoftwareRenderer(renderer);
+  const by = renderer ? ` (${renderer})` : '';
+  return {
+    available: true,
+    software,
+    renderer,
+    sentence: software
+      ? `The crystal is drawn by WebGL 2 on the processor, without a graphics chip${by}: turning large cells may be slow.`
+      : `The crystal is drawn by WebGL 2${by}.`,
+  };
+}
+
+function newCanvas(): HTMLCanvasElement {
+  return document.createElement('canvas');
+}
+
+function contextOf(canvas: HTMLCanvasElement): WebGL2RenderingContext | null {
+  try {
+    return canvas.getContext('webgl2');
+  } catch {
+    return null;
+  }
+}

@@ -1,0 +1,96 @@
+import type { ColourStop } from '#src/data/colour-maps.data.ts';
+import { batlowStops, vikStops } from '#src/data/colour-maps.data.ts';
+import type { ColourMapName, Legend, SceneQuantity } from './scene.ts';
+
+/**
+ * The maps as drawn. The darkest and the palest ends are left out, where shading and principal circles would be lost; what
+ * remains is the published map unchanged, and the colour bar shows just that.
+ */
+const maps: Readonly<Record<ColourMapName, readonly ColourStop[]>> = {
+  batlow: batlowStops.slice(6, 45),
+  vik: vikStops.slice(6, 46),
+};
+
+const titles: Readonly<Record<SceneQuantity, string>> = {
+  shielding: 'isotropic shielding σ(iso)',
+  shift: 'isotropic shift δ(iso)',
+  efg: 'largest EFG component V(zz)',
+};
+
+/** Stops of a map, sRGB bytes, evenly spaced. */
+export function colourStops(map: ColourMapName): readonly ColourStop[] {
+  return maps[map];
+}
+
+/** Colour at a share of a map, linear between its stops in sRGB; shares outside [0, 1] take the ends. */
+export function mapColour(map: ColourMapName, share: number): readonly [number, number, number] {
+  const stops = maps[map];
+  const place = Math.min(1, Math.max(0, Number.isFinite(share) ? share : 0)) * (stops.length - 1);
+  const low = Math.min(stops.length - 2, Math.floor(place));
+  const part = place - low;
+  const channel = (k: 0 | 1 | 2) => Math.round(stops[low]![k] * (1 - part) + stops[low + 1]![k] * part);
+  return [channel(0), channel(1), channel(2)];
+}
+
+/** Colour of a value on a colour bar. */
+export function legendColour(legend: Legend, value: number): readonly [number, number, number] {
+  return mapColour(legend.map, (value - legend.low) / (legend.high - legend.low));
+}
+
+/**
+ * Colour bar for the values drawn: sequential (dark = low) for isotropic values, diverging about zero for signed Vzz.
+ * Automatic limits are the extreme values moved outwards to a readable step of about a fortieth of their distance.
+ */
+export function legendFor(
+  quantity: SceneQuantity,
+  values: readonly number[],
+  limits: readonly [number, number] | null,
+): Legend {
+  const diverging = quantity === 'efg';
+  const map = diverging ? 'vik' : 'batlow';
+  const given = limits ? ([Math.min(...limits), Math.max(...limits)] as const) : null;
+  const { low, high, digits } =
+    given && given[0] < given[1] ? exactLimits(given) : automatic(values, diverging);
+  return {
+    title: titles[quantity],
+    unit: quantity === 'efg' ? 'a.u.' : 'ppm',
+    low,
+    high,
+    digits,
+    map,
+    diverging,
+    stops: colourStops(map),
+  };
+}
+
+function exactLimits(limits: readonly [number, number]): { low: number; high: number; digits: number } {
+  const digits = (value: number) => Math.min(4, (String(value).split('.')[1] ?? '').length);
+  return { low: limits[0], high: limits[1], digits: Math.max(digits(limits[0]), digits(limits[1])) };
+}
+
+function automatic(
+  values: readonly number[],
+  diverging: boolean,
+): { low: number; high: number; digits: number } {
+  let low = Infinity;
+  let high = -Infinity;
+  for (const value of values) {
+    low = Math.min(low, value);
+    high = Math.max(high, value);
+  }
+  if (!Number.isFinite(low)) [low, high] = [0, 0];
+  if (diverging) {
+    high = Math.max(Math.abs(low), Math.abs(high));
+    low = -high;
+  }
+  // equal values still get a bar of some width, which puts them in its middle
+  const width = high - low || Math.max(1e-3, 0.01 * Math.abs(high));
+  if (high === low) [low, high] = [low - width / 2, high + width / 2];
+  const exponent = Math.floor(Math.log10(width / 20));
+  const step = 10 ** exponent;
+  return {
+    low: Number((Math.floor(low / step + 1e-9) * step).toPrecision(12)),
+    high: Number((Math.ceil(high / step - 1e-9) * step).toPrecision(12)),
+    digits: Math.max(0, -exponent),
+  };
+}

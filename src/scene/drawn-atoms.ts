@@ -1,0 +1,116 @@
+import type { Vec3 } from '#src/base/matrix3.ts';
+import { apply } from '#src/base/matrix3.ts';
+import { add, subtract } from '#src/base/vector3.ts';
+import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
+
+/** One copy of an atom that is in the picture. */
+export interface DrawnAtom {
+  readonly atom: EquivalentAtom;
+  readonly site: SiteDossier;
+  /** Å */
+  readonly position: Vec3;
+  /** Cells by which this copy is away from the atom's own position. */
+  readonly cellShift: Vec3;
+  /** A neighbour outside the picture's own atoms, there to complete their bonds: drawn as a small sphere. */
+  readonly context: boolean;
+}
+
+/** An atom this close to a face, in Å along the cell edge, lies on it and is repeated on the opposite face. */
+const faceToleranceAngstrom = 0.02;
+
+/**
+ * Atoms of the picture: of one unit cell with those on faces, edges and corners repeated, or moved together into whole
+ * molecules (`wholeMolecules` of the dossier). Without a cell both are the atoms as given.
+ */
+export function drawnAtoms(dossier: CrystalDossier, extent: 'cell' | 'molecules'): DrawnAtom[] {
+  const drawn: DrawnAtom[] = [];
+  for (const site of dossier.sites) {
+    for (const atom of site.equivalents) {
+      for (const cellShift of shiftsOf(dossier, atom, extent)) {
+        drawn.push(copyOf(dossier, atom, site, cellShift, false));
+      }
+    }
+  }
+  return drawn;
+}
+
+/**
+ * The atoms bonded to drawn ones that are not drawn themselves, each once. They complete the coordination of atoms at the
+ * faces of a cell; their own bonds to one another are not wanted.
+ */
+export function bondedNeighbours(dossier: CrystalDossier, drawn: readonly DrawnAtom[]): DrawnAtom[] {
+  const atoms = atomsById(dossier);
+  const copies = copiesById(drawn);
+  const added = new Map<string, DrawnAtom>();
+  const addMissing = (id: string, cellShift: Vec3) => {
+    const known = atoms.get(id);
+    const key = `${id} ${cellShift.join()}`;
+    if (!known || copies.get(id)?.has(cellShift.join()) || added.has(key)) return;
+    added.set(key, copyOf(dossier, known.atom, known.site, cellShift, true));
+  };
+  for (const bond of dossier.bonds) {
+    if (bond.kind !== 'bond') continue;
+    for (const from of copies.get(bond.from)?.values() ?? []) {
+      addMissing(bond.to, add(from.cellShift, bond.shift));
+    }
+    for (const to of copies.get(bond.to)?.values() ?? []) {
+      addMissing(bond.from, subtract(to.cellShift, bond.shift));
+    }
+  }
+  return [...added.values()];
+}
+
+/** Drawn copies of each atom id, by their cell shift as text. */
+export function copiesById(drawn: readonly DrawnAtom[]): ReadonlyMap<string, ReadonlyMap<string, DrawnAtom>> {
+  const copies = new Map<string, Map<string, DrawnAtom>>();
+  for (const one of drawn) {
+    const known = copies.get(one.atom.id) ?? new Map<string, DrawnAtom>();
+    known.set(one.cellShift.join(), one);
+    copies.set(one.atom.id, known);
+  }
+  return copies;
+}
+
+/** Every atom of the dossier by its id. */
+export function atomsById(
+  dossier: CrystalDossier,
+): ReadonlyMap<string, { readonly atom: EquivalentAtom; readonly site: SiteDossier }> {
+  return new Map(dossier.sites.flatMap((site) => site.equivalents.map((atom) => [atom.id, { atom, site }])));
+}
+
+function copyOf(
+  dossier: CrystalDossier,
+  atom: EquivalentAtom,
+  site: SiteDossier,
+  cellShift: Vec3,
+  context: boolean,
+): DrawnAtom {
+  return { atom, site, cellShift, context, position: shiftedPosition(dossier, atom.cartesian, cellShift) };
+}
+
+/** Å; `cellShift` in cells. */
+export function shiftedPosition(dossier: CrystalDossier, cartesian: Vec3, cellShift: Vec3): Vec3 {
+  return dossier.lattice ? add(cartesian, apply(dossier.lattice.toCartesian, cellShift)) : cartesian;
+}
+
+function shiftsOf(
+  dossier: CrystalDossier,
+  atom: EquivalentAtom,
+  extent: 'cell' | 'molecules',
+): readonly Vec3[] {
+  if (!dossier.lattice || !atom.fractional) return [[0, 0, 0]];
+  if (extent === 'molecules') return [dossier.wholeMolecules[atom.id] ?? [0, 0, 0]];
+  const { a, b, c } = dossier.lattice.cell;
+  const [x, y, z] = atom.fractional;
+  const shifts: Vec3[] = [];
+  for (const i of faceShifts(x, a)) {
+    for (const j of faceShifts(y, b)) for (const k of faceShifts(z, c)) shifts.push([i, j, k]);
+  }
+  return shifts;
+}
+
+function faceShifts(fraction: number, edgeAngstrom: number): readonly number[] {
+  const tolerance = faceToleranceAngstrom / edgeAngstrom;
+  if (fraction < tolerance) return [0, 1];
+  return fraction > 1 - tolerance ? [0, -1] : [0];
+}

@@ -1,0 +1,148 @@
+import type { Vec3 } from '#src/base/matrix3.ts';
+
+/**
+ * Ellipsoids and spheres. One quadric is { centre + A u : |u| = 1 }; the columns of A are its semi-axis vectors.
+ * Colours are sRGB bytes, not premultiplied by any light.
+ */
+export interface QuadricBatch {
+  readonly count: number;
+  /** Three a quadric, Å, Cartesian frame of the lattice. */
+  readonly centres: Float32Array;
+  /** Nine a quadric: A row-major, Å. Never singular. */
+  readonly shapes: Float32Array;
+  /** Three a quadric. */
+  readonly colours: Uint8Array;
+  /** Bit k set: the great circle perpendicular to semi-axis k (column k of A) is drawn. */
+  readonly circles: Uint8Array;
+  /** Index into `picks`, plus 1. */
+  readonly pickIds: Uint32Array;
+}
+
+/** Straight round cylinders with flat ends: bonds, and the dashes of hydrogen bonds. */
+export interface CylinderBatch {
+  readonly count: number;
+  /** Three a cylinder, Å. */
+  readonly starts: Float32Array;
+  readonly ends: Float32Array;
+  /** Å. */
+  readonly radii: Float32Array;
+  /** Three a cylinder: colour of the half at `start`, and of the half at `end`. */
+  readonly startColours: Uint8Array;
+  readonly endColours: Uint8Array;
+  readonly pickIds: Uint32Array;
+}
+
+/** Straight lines of constant width on screen, in the theme's line colour: cell edges. */
+export interface LineBatch {
+  readonly count: number;
+  /** Three a line, Å. */
+  readonly starts: Float32Array;
+  readonly ends: Float32Array;
+  /** CSS pixels. */
+  readonly widthPx: number;
+}
+
+/** What a pick id leads back to. */
+export type PickEntry =
+  | {
+      readonly kind: 'atom';
+      /** EquivalentAtom.id */
+      readonly atomId: string;
+      readonly siteIndex: number;
+      /** Cell of this copy, against the atom's own position in the dossier. */
+      readonly cellShift: Vec3;
+      /** A bonded neighbour outside the picture's own atoms: a small sphere without tensor and rings. */
+      readonly context: boolean;
+    }
+  | {
+      readonly kind: 'bond';
+      readonly bond: 'bond' | 'hydrogen';
+      readonly fromAtomId: string;
+      readonly toAtomId: string;
+      readonly lengthAngstrom: number;
+    };
+
+/** A text to stand beside an atom. */
+export interface LabelAnchor {
+  readonly text: string;
+  readonly position: Vec3;
+  /** Pick id of the atom. */
+  readonly pickId: number;
+  /** Index of the atom's quadric. */
+  readonly quadric: number;
+}
+
+/** Name of a colour map of src/data/colour-maps.data.ts. */
+export type ColourMapName = 'batlow' | 'vik';
+
+/** Colour bar: what the colour of a tensor says. */
+export interface Legend {
+  /** Such as "isotropic shielding". */
+  readonly title: string;
+  readonly unit: 'ppm' | 'a.u.';
+  readonly low: number;
+  readonly high: number;
+  /** Fraction digits with which `low` and `high` are printed. */
+  readonly digits: number;
+  readonly map: ColourMapName;
+  /** True where the middle of the bar is zero. */
+  readonly diverging: boolean;
+  /** Evenly spaced from low to high, sRGB bytes. */
+  readonly stops: readonly (readonly [number, number, number])[];
+}
+
+/** One element that is drawn in its own colour, for a key beside the picture. */
+export interface ElementKey {
+  readonly element: string;
+  readonly colour: readonly [number, number, number];
+}
+
+export interface CellAxis {
+  readonly letter: 'a' | 'b' | 'c';
+  /** The cell vector, Å. */
+  readonly vector: Vec3;
+}
+
+/** Enclosing sphere of everything drawn. */
+export interface SceneBounds {
+  readonly centre: Vec3;
+  readonly radiusAngstrom: number;
+}
+
+/** What stands for a tensor: its principal values as semi-axes, or a sphere bulged by the deviation. */
+export type EllipsoidKind = 'total' | 'deviation';
+
+export type SceneQuantity = 'shielding' | 'shift' | 'efg';
+
+/** How tensors were turned into lengths; the statement in words is `Scene.scaleStatement`. */
+export interface TensorScale {
+  readonly quantity: SceneQuantity;
+  readonly kind: EllipsoidKind;
+  /** ppm or a.u. that make one Å. */
+  readonly unitsPerAngstrom: number;
+  /** Å; radius of a tensor without deviation; 0 where kind is `total`. */
+  readonly baseRadiusAngstrom: number;
+}
+
+/**
+ * One picture of one crystal, ready to draw: plain arrays in Å, in the Cartesian frame of the crystal's lattice.
+ * Holds nothing of a screen, a theme or a camera, and crosses worker borders.
+ */
+export interface Scene {
+  readonly quadrics: QuadricBatch;
+  readonly cylinders: CylinderBatch;
+  readonly lines: LineBatch;
+  readonly labels: readonly LabelAnchor[];
+  /** Empty without a cell. */
+  readonly axes: readonly CellAxis[];
+  readonly bounds: SceneBounds;
+  readonly picks: readonly PickEntry[];
+  readonly legend: Legend | null;
+  readonly elements: readonly ElementKey[];
+  readonly scale: TensorScale | null;
+  /** Such as "1 Å = 250 ppm"; null without tensors. */
+  readonly scaleStatement: string | null;
+  /** One or two sentences: what is drawn, in which convention. */
+  readonly caption: string;
+  readonly extent: 'cell' | 'molecules';
+}
