@@ -37,6 +37,8 @@ export interface EfgDescription {
   readonly productMHz: number | null;
   /** ν_Q = 3 C_Q / (2I(2I − 1)), MHz, with the sign of C_Q. */
   readonly quadrupoleFrequencyMHz: number | null;
+  /** ω_Q = e²qQ/(4I(2I − 1)ħ) = 2πν_Q/6, 10³ rad s⁻¹, with the sign of C_Q: also called quadrupole frequency elsewhere. */
+  readonly quadrupoleAngularFrequency?: number | null;
   /** tr V as given, a.u., before it was taken off: a measure of numerical noise or of a wrong reading. */
   readonly trace: number;
   /** False where the two largest |V| tie within the noise (η ≈ 1) or V is zero: the signs of Vzz and C_Q are accidents. */
@@ -85,7 +87,7 @@ export function productFromInvariantMHz(momentBarn: number, symmetricTraceless: 
   return Math.abs(couplingConstantMHz(momentBarn, Math.sqrt(2 / 3) * frobeniusNorm(symmetricTraceless)));
 }
 
-/** e Q in C m² of a moment in barn, for formulas in SI; Vzz in V m⁻² is a.u. × `efgAtomicUnitVPerM2`. */
+/** C_Q = e Q Vzz / h in Hz from Q in barn and Vzz in V m⁻², wholly in SI: a second route to `couplingConstantMHz`. */
 export function couplingFromSiHz(momentBarn: number, vzzVPerM2: number): number {
   const momentCM2 = elementaryChargeC * momentBarn * barnM2;
   return (momentCM2 * vzzVPerM2) / (2 * Math.PI * reducedPlanckJs);
@@ -121,7 +123,16 @@ interface Coupling {
   readonly couplingMHz: number | null;
   readonly productMHz: number | null;
   readonly quadrupoleFrequencyMHz: number | null;
+  readonly quadrupoleAngularFrequency: number | null;
 }
+
+const couplingFields = [
+  'quadrupoleMomentBarn',
+  'couplingMHz',
+  'productMHz',
+  'quadrupoleFrequencyMHz',
+  'quadrupoleAngularFrequency',
+] as const;
 
 /** Why there is no coupling, or null when there is one. */
 function couplingReason(nuclide: Nuclide | null, moment: number | null): string | null {
@@ -143,6 +154,7 @@ function couplingOf(components: Vec3, nuclide: Nuclide | null, ownMomentBarn: nu
       couplingMHz: null,
       productMHz: null,
       quadrupoleFrequencyMHz: null,
+      quadrupoleAngularFrequency: null,
     };
   }
   const [vxx, vyy, vzz] = components;
@@ -154,6 +166,7 @@ function couplingOf(components: Vec3, nuclide: Nuclide | null, ownMomentBarn: nu
     couplingMHz,
     productMHz: quadrupolarProductMHz(couplingMHz, vzz === 0 ? 0 : (vxx - vyy) / vzz),
     quadrupoleFrequencyMHz: quadrupoleFrequencyMHz(couplingMHz, nuclide.spin),
+    quadrupoleAngularFrequency: quadrupoleAngularFrequency(couplingMHz, nuclide.spin),
   };
 }
 
@@ -185,11 +198,7 @@ export function describeEfg(
   if (axisReason) undefinedBecause.axes = axisReason;
   if (reason) undefinedBecause.asymmetry = reason;
   const missing = couplingReason(nuclide, coupling.quadrupoleMomentBarn);
-  if (missing) {
-    for (const field of ['quadrupoleMomentBarn', 'couplingMHz', 'productMHz', 'quadrupoleFrequencyMHz']) {
-      undefinedBecause[field] = missing;
-    }
-  }
+  if (missing) for (const field of couplingFields) undefinedBecause[field] = missing;
   return {
     tensor,
     symmetric,
