@@ -19,6 +19,7 @@ const page = {
   base: './',
   build: { outDir: 'dist/page', target: 'es2022', emptyOutDir: true, assetsInlineLimit: 0 },
   worker: { format: 'es' as const },
+  optimizeDeps: { include: ['lit', 'lit/directives/live.js', 'gl-matrix', 'three'] },
 };
 
 export default defineConfig(({ mode }) => ({

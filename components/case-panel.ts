@@ -1,0 +1,143 @@
+import { css, html, nothing } from 'lit';
+import type { TemplateResult } from 'lit';
+import type { DerivedCase, SourceSummary } from '#src/store/engine-protocol.ts';
+import { drawerStyles } from './drawer-styles.ts';
+import { formatCount } from './number-format.ts';
+import { askForPanel } from './panel.ts';
+import { acceptedWords, pickFiles } from './pick-files.ts';
+import type { SampleCase } from './sample-cases.ts';
+import { openSample, sampleCases } from './sample-cases.ts';
+import { StoreElement } from './store-element.ts';
+import { shared } from './styles.ts';
+
+const kinds = { cif: 'CIF', xyz: 'XYZ', unknown: 'not recognised' } as const;
+
+/** The files of the case, how to open others, and the sample cases. */
+export class CasePanel extends StoreElement {
+  static override styles = [
+    shared,
+    drawerStyles,
+    css`
+      ul {
+        list-style: none;
+      }
+      li {
+        display: flex;
+        align-items: baseline;
+        justify-content: space-between;
+        gap: 10px;
+        padding: 6px 0;
+        border-top: 1px solid var(--hairline);
+      }
+      li div {
+        min-width: 0;
+        overflow-wrap: anywhere;
+      }
+      .commands {
+        display: flex;
+        flex-wrap: wrap;
+        gap: 8px;
+        margin: 8px 0 6px;
+      }
+      .sample {
+        display: block;
+        width: 100%;
+        text-align: left;
+        padding: 7px 8px;
+        margin-left: -8px;
+        overflow-wrap: anywhere;
+      }
+      .sample span {
+        display: block;
+        font-size: 13px;
+      }
+      .soft {
+        font-size: 13px;
+      }
+    `,
+  ];
+
+  protected override readonly watches = ['derived', 'decisions'] as const;
+
+  override render(): TemplateResult {
+    const { store } = this;
+    if (!store) return html``;
+    const { derived } = store.state;
+    return html`
+      <header>
+        <h2>Case</h2>
+        <button @click=${() => askForPanel(this, null)} aria-label="Close the case panel">Close</button>
+      </header>
+      ${derived ? this.#files(derived) : nothing}
+      <div class="commands">
+        <button class="line" @click=${this.#open}>Open files …</button>
+        <button class="line" ?disabled=${!derived} @click=${this.#add}>Add tensors to this crystal …</button>
+      </div>
+      <p class="soft">
+        Or drop files anywhere on the page. Read are ${acceptedWords}. Nothing leaves this machine.
+      </p>
+      <h3>Sample cases</h3>
+      ${sampleCases().map((sample) => this.#sample(sample))}
+    `;
+  }
+
+  #files(derived: DerivedCase): TemplateResult {
+    return html`<ul aria-label="Files of this case">
+      ${derived.sources.map(
+        (source) =>
+          html`<li>
+            <div>
+              <button class="link" @click=${() => this.store?.showPlace({ file: source.name, line: 1 })}>
+                ${source.name}
+              </button>
+              <div class="soft">${describe(source, derived)}</div>
+            </div>
+            ${
+              derived.sources.length > 1
+                ? html`<button
+                    @click=${() => this.store?.remove(source.id)}
+                    aria-label="Take out ${source.name}"
+                  >
+                    Take out
+                  </button>`
+                : nothing
+            }
+          </li>`,
+      )}
+    </ul>`;
+  }
+
+  #sample(sample: SampleCase): TemplateResult {
+    return html`<button class="sample" @click=${() => this.store && openSample(this.store, sample)}>
+      <strong>${sample.title}</strong><span>${sample.description}</span>
+    </button>`;
+  }
+
+  async #open(): Promise<void> {
+    const files = await pickFiles();
+    if (files.length > 0) void this.store?.open(files);
+  }
+
+  async #add(): Promise<void> {
+    const files = await pickFiles();
+    if (files.length > 0) void this.store?.add(files);
+  }
+}
+
+function describe(source: SourceSummary, derived: DerivedCase): string {
+  const tensors = derived.tensors
+    .filter(({ sourceId, used }) => sourceId === source.id && used)
+    .map(
+      ({ entryCount, quantity, unitGiven }) =>
+        `${formatCount(entryCount)} ${quantity} tensors (${unitGiven})`,
+    );
+  const structures = derived.structures.filter(({ sourceId }) => sourceId === source.id).length;
+  return [
+    kinds[source.format],
+    `${formatCount(source.lines)} lines`,
+    `${structures} structure${structures === 1 ? '' : 's'}`,
+    ...tensors,
+  ].join(', ');
+}
+
+customElements.define('ellipsite-case-panel', CasePanel);

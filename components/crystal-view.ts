@@ -1,0 +1,247 @@
+import { html, nothing, svg } from 'lit';
+import type { PropertyValues, TemplateResult } from 'lit';
+import type { WebGLProbe } from '#src/render/probe-webgl.ts';
+import { probeWebGL } from '#src/render/probe-webgl.ts';
+import type { PickEntry } from '#src/scene/scene.ts';
+import { siteColour } from '#src/store/site-colour.ts';
+import type { Selection, WorkbenchState } from '#src/store/state.ts';
+import { colourBar, colourBarStyles } from './colour-bar.ts';
+import type { CrystalPicture, PictureOverlay } from './crystal-picture.ts';
+import { pointedSentence } from './pointed-sentence.ts';
+import './show-panel.ts';
+import { StoreElement } from './store-element.ts';
+import { shared } from './styles.ts';
+import { viewStyles } from './view-styles.ts';
+
+const keysInWords =
+  'Arrow keys turn, with Shift they move. Plus and minus zoom, comma and full stop roll, a, b and c look along a cell axis, 0 shows all. The site table holds the same atoms as text.';
+
+/** The crystal on a canvas with what belongs to it: axes, labels, colour bar, caption, ways to turn it. */
+export class CrystalView extends StoreElement {
+  static override properties = {
+    theme: { attribute: false },
+    probe: { state: true },
+    fault: { state: true },
+    isLost: { state: true },
+    isShowing: { state: true },
+    pointed: { state: true },
+  };
+
+  static override styles = [shared, colourBarStyles, viewStyles];
+
+  declare theme: 'light' | 'dark';
+  /** How the browser can draw; null before it was asked. Tests hand in their own. */
+  declare probe: WebGLProbe | null;
+  declare fault: string | null;
+  declare isLost: boolean;
+  declare isShowing: boolean;
+  declare pointed: PickEntry | null;
+
+  protected override readonly watches = ['derived', 'decisions', 'selection', 'hover', 'picture'] as const;
+  #picture: CrystalPicture | null = null;
+  #resize: ResizeObserver | null = null;
+  #crystalKey: string | null = null;
+
+  constructor() {
+    super();
+    this.theme = 'light';
+    this.probe = null;
+    this.fault = null;
+    this.isLost = false;
+    this.isShowing = false;
+    this.pointed = null;
+  }
+
+  override disconnectedCallback(): void {
+    super.disconnectedCallback();
+    this.#resize?.disconnect();
+    this.#picture?.dispose();
+    this.#picture = null;
+  }
+
+  protected override firstUpdated(): void {
+    this.probe ??= probeWebGL();
+    if (this.probe.available) void this.#start();
+  }
+
+  override render(): TemplateResult {
+    const { probe, fault } = this;
+    const name = this.store?.state.derived?.dossier?.name ?? '';
+    if (probe && !probe.available) {
+      return html`<h2>Crystal${name ? ` · ${name}` : ''}</h2>
+        <p class="none" role="note">
+          ${probe.sentence} The site table, the site card and all numbers work without it.
+        </p>`;
+    }
+    if (fault)
+      return html`<h2>Crystal</h2>
+        <p class="none" role="alert">${fault}</p>`;
+    const scene = this.#picture?.scene ?? null;
+    const overlay = this.#picture?.overlay() ?? { axes: [], labels: [], rings: [] };
+    return html`
+      <div class="line">
+        <h2>Crystal${name ? ` · ${name}` : ''}</h2>
+        ${this.#tools(overlay.axes.length === 3)}
+      </div>
+      <div
+        class="stage"
+        role="application"
+        tabindex="0"
+        aria-label="Picture of the crystal"
+        aria-describedby="caption keys"
+        @keydown=${this.#keydown}
+      >
+        <canvas></canvas>
+        ${this.#rings(overlay)} ${axesDrawing(overlay)}
+        ${overlay.labels.map(
+          ({ text, leftPx, topPx }) =>
+            html`<span class="label" .style=${`left: ${leftPx}px; top: ${topPx}px`}>${text}</span>`,
+        )}
+        ${colourBar(scene?.legend ?? null, scene?.scaleStatement ?? null)} ${this.#pointedLine()}
+        ${this.isLost ? html`<p class="lost">The graphics chip took the picture away; it comes back by itself.</p>` : nothing}
+      </div>
+      <p class="caption" id="caption">${scene?.caption ?? ''}</p>
+      <p class="hidden-but-spoken" id="keys">${keysInWords}</p>
+    `;
+  }
+
+  protected override updated(changed: PropertyValues): void {
+    if (changed.has('theme')) this.#picture?.setTheme(this.theme);
+  }
+
+  protected override stateChanged(state: WorkbenchState, before: WorkbenchState | null): void {
+    if (!this.#picture) return;
+    try {
+      this.#draw(this.#picture, state, before);
+    } catch (error) {
+      this.fault = `The picture could not be drawn: ${error instanceof Error ? error.message : String(error)}. The site table, the site card and all numbers are complete without it.`;
+    }
+  }
+
+  async #start(): Promise<void> {
+    try {
+      const { CrystalPicture: Picture } = await import('./crystal-picture.ts');
+      const canvas = this.renderRoot.querySelector('canvas');
+      const stage = this.renderRoot.querySelector<HTMLElement>('.stage');
+      if (!canvas || !stage || !this.isConnected) return;
+      const picture = new Picture(canvas, stage, {
+        moved: () => this.requestUpdate(),
+        clicked: (entry) => this.store?.select(entry?.kind === 'atom' ? selectionOf(entry) : null),
+        pointed: (entry) => this.#point(entry),
+        lost: (isLost) => (this.isLost = isLost),
+      });
+      this.#picture = picture;
+      picture.setTheme(this.theme);
+      this.#resize = new ResizeObserver(() => picture.resize(stage.clientWidth, stage.clientHeight));
+      this.#resize.observe(stage);
+      picture.resize(stage.clientWidth, stage.clientHeight);
+      if (this.store) this.stateChanged(this.store.state, null);
+      this.requestUpdate();
+    } catch (error) {
+      this.fault = `The picture could not be started: ${error instanceof Error ? error.message : String(error)}. The site table, the site card and all numbers are complete without it.`;
+    }
+  }
+
+  #draw(picture: CrystalPicture, state: WorkbenchState, before: WorkbenchState | null): void {
+    const { derived, decisions, picture: options, selection, hover } = state;
+    const dossier = derived?.dossier;
+    if (!dossier) return;
+    const key = `${derived.chosen?.sourceId} ${derived.chosen?.index} ${decisions?.settings.symmetry}`;
+    picture.show(dossier, options, key !== this.#crystalKey);
+    this.#crystalKey = key;
+    const isNew = derived !== before?.derived;
+    if (isNew || selection !== before?.selection) picture.select(atomIds(state, selection));
+    if (isNew || hover !== before?.hover) picture.hover(atomIds(state, hover));
+  }
+
+  #tools(hasAxes: boolean): TemplateResult {
+    const axis = (letter: 'a' | 'b' | 'c'): TemplateResult =>
+      html`<button aria-label="Look along ${letter}" @click=${() => this.#picture?.lookAlong(letter)}>
+        <i>${letter}</i>
+      </button>`;
+    return html`<div class="tools" role="toolbar" aria-label="View">
+      ${hasAxes ? html`along ${axis('a')}${axis('b')}${axis('c')}` : nothing}
+      <button title="the first view" @click=${() => this.#picture?.showAll()}>all</button>
+      <button aria-label="Smaller" @click=${() => this.#picture?.zoomBy(1 / 1.25)}>−</button>
+      <button aria-label="Larger" @click=${() => this.#picture?.zoomBy(1.25)}>+</button>
+      <div class="show">
+        <button
+          aria-expanded=${this.isShowing ? 'true' : 'false'}
+          @click=${() => (this.isShowing = !this.isShowing)}
+        >
+          Show
+        </button>
+        ${
+          this.isShowing
+            ? html`<ellipsite-show-panel
+                .store=${this.store}
+                @keydown=${this.#closeShow}
+              ></ellipsite-show-panel>`
+            : nothing
+        }
+      </div>
+    </div>`;
+  }
+
+  #rings({ rings }: PictureOverlay): TemplateResult | typeof nothing {
+    const siteIndex = this.store?.state.hover?.siteIndex;
+    if (rings.length === 0 || siteIndex === undefined) return nothing;
+    const colour = siteColour(siteIndex);
+    return html`<svg class="rings" aria-hidden="true">
+      ${rings.map(
+        (ring) =>
+          svg`<ellipse cx=${ring.xPx} cy=${ring.yPx} rx=${ring.halfWidthPx + 4} ry=${ring.halfHeightPx + 4} stroke=${colour}></ellipse>`,
+      )}
+    </svg>`;
+  }
+
+  #pointedLine(): TemplateResult | typeof nothing {
+    const dossier = this.store?.state.derived?.dossier;
+    if (!this.pointed || !dossier) return nothing;
+    return html`<div class="pointed">${pointedSentence(this.pointed, dossier)}</div>`;
+  }
+
+  #point(entry: PickEntry | null): void {
+    this.pointed = entry;
+    this.store?.hover(entry?.kind === 'atom' ? selectionOf(entry) : null);
+  }
+
+  readonly #keydown = (event: KeyboardEvent): void => {
+    if (event.key === 'Escape' && this.store?.state.selection) {
+      event.preventDefault();
+      this.store.select(null);
+    } else if (this.#picture?.key(event)) event.preventDefault();
+  };
+
+  readonly #closeShow = (event: KeyboardEvent): void => {
+    if (event.key !== 'Escape') return;
+    event.preventDefault();
+    this.isShowing = false;
+    this.renderRoot.querySelector<HTMLElement>('.show button')?.focus();
+  };
+}
+
+function selectionOf({ siteIndex, atomId }: Extract<PickEntry, { kind: 'atom' }>): Selection {
+  return { siteIndex, atomId };
+}
+
+/** The atoms a selection means: the one, or all of the site. */
+function atomIds({ derived }: WorkbenchState, selection: Selection | null): string[] {
+  if (!selection) return [];
+  if (selection.atomId !== null) return [selection.atomId];
+  return derived?.dossier?.sites[selection.siteIndex]?.equivalents.map(({ id }) => id) ?? [];
+}
+
+/** Cell axes in the corner: lines with letters, the farther ones drawn first. */
+function axesDrawing({ axes }: PictureOverlay): TemplateResult | typeof nothing {
+  if (axes.length === 0) return nothing;
+  const ordered = [...axes].sort((a, b) => a.depthPx - b.depthPx);
+  return html`<svg class="axes" viewBox="-50 -50 100 100" aria-hidden="true">
+    ${ordered.map(({ letter, xPx, yPx }) => {
+      const beyond = 1 + 11 / Math.max(12, Math.hypot(xPx, yPx));
+      return svg`<line x1="0" y1="0" x2=${xPx} y2=${yPx}></line><text x=${xPx * beyond} y=${yPx * beyond}>${letter}</text>`;
+    })}
+  </svg>`;
+}
+
+customElements.define('ellipsite-crystal-view', CrystalView);

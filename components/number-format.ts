@@ -1,0 +1,71 @@
+/** A number with a fixed count of decimals and a true minus; −0.00 reads 0.00; null and non-finite numbers read "undefined". */
+export function formatNumber(value: number | null | undefined, decimals: number): string {
+  if (value === null || value === undefined || !Number.isFinite(value)) return 'undefined';
+  const text = value.toFixed(decimals);
+  const isZero = Number(text) === 0;
+  return isZero ? text.replace('-', '') : text.replace('-', '−');
+}
+
+/** A figure of noise: three significant digits, in powers of ten when small. */
+export function formatSmall(value: number | null): string {
+  if (value === null || !Number.isFinite(value)) return 'undefined';
+  if (value === 0) return '0';
+  if (Math.abs(value) >= 0.001) return formatNumber(value, Math.abs(value) >= 10 ? 1 : 3);
+  const [mantissa = '', exponent = ''] = value.toExponential(1).split('e');
+  return `${mantissa.replace('-', '−')} × 10${superscript(exponent.replace('+', ''))}`;
+}
+
+const superscripts: Readonly<Record<string, string>> = {
+  '-': '⁻',
+  '0': '⁰',
+  '1': '¹',
+  '2': '²',
+  '3': '³',
+  '4': '⁴',
+  '5': '⁵',
+  '6': '⁶',
+  '7': '⁷',
+  '8': '⁸',
+  '9': '⁹',
+};
+
+/** Digits and signs raised: `27` → `²⁷`. */
+export function superscript(text: string): string {
+  return [...text].map((character) => superscripts[character] ?? character).join('');
+}
+
+/** `27Al` → `²⁷Al`. */
+export function isotopeSymbol(isotope: string): string {
+  const match = /^(\d+)(.*)$/.exec(isotope);
+  return match ? superscript(match[1] ?? '') + (match[2] ?? '') : isotope;
+}
+
+/** A direction or position: three numbers with true minus signs. */
+export function formatTriple(values: readonly number[], decimals: number): string {
+  return values.map((value) => formatNumber(value, decimals)).join(', ');
+}
+
+/** Decimals of a shift or shielding of a site: hydrogen's whole range is 20 ppm, so it gets one more. */
+export function ppmDecimals(element: string): number {
+  return element === 'H' || element === 'D' || element === 'T' ? 2 : 1;
+}
+
+/** Decimals of a coupling constant in MHz: deuterium's are below 0.3 MHz. */
+export function couplingDecimals(element: string): number {
+  return element === 'D' || element === 'H' ? 4 : 2;
+}
+
+/** A symmetry operation with true minus signs. */
+export function formatOperation(operation: string): string {
+  return operation.replaceAll('-', '−').replaceAll(',', ', ').replaceAll(/, +/g, ', ');
+}
+
+/** 1,234,567 with thin spaces: 1 234 567. */
+export function formatCount(count: number): string {
+  return String(count).replace(/\B(?=(\d{3})+$)/g, '\u202f');
+}
+
+/** `-3m` → `3̄m`: a bar over the digit, as the symbols are printed. */
+export function symmetrySymbol(symbol: string | null): string {
+  return (symbol ?? '').replaceAll(/-(\d)/g, '$1\u0305');
+}

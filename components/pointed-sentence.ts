@@ -1,0 +1,32 @@
+import type { PickEntry } from '#src/scene/scene.ts';
+import type { CrystalDossier, SiteDossier } from '#src/store/dossier-types.ts';
+import { couplingDecimals, formatNumber, formatOperation, ppmDecimals } from './number-format.ts';
+
+/** What is under the pointer, in a line: site, operation, main numbers; or the two ends and the length of a bond. */
+export function pointedSentence(entry: PickEntry, dossier: CrystalDossier): string {
+  if (entry.kind === 'bond') {
+    const kind = entry.bond === 'hydrogen' ? 'hydrogen bond ' : '';
+    const ends = [entry.fromAtomId, entry.toAtomId].map((id) => labelOf(id, dossier));
+    return `${kind}${ends.join('–')} ${formatNumber(entry.lengthAngstrom, 3)} Å`;
+  }
+  const site = dossier.sites[entry.siteIndex];
+  if (!site) return '';
+  const atom = site.equivalents.find(({ id }) => id === entry.atomId);
+  const operation = atom && dossier.lattice ? [formatOperation(atom.operation)] : [];
+  return [site.label, ...operation, ...numbersOf(site)].join(' · ');
+}
+
+function numbersOf({ element, shielding, shift, efg }: SiteDossier): string[] {
+  const decimals = ppmDecimals(element);
+  return [
+    ...(shielding ? [`σiso ${formatNumber(shielding.isotropic, decimals)} ppm`] : []),
+    ...(shift ? [`δiso ${formatNumber(shift.isotropic, decimals)} ppm`] : []),
+    ...(efg && efg.couplingMHz !== null
+      ? [`C_Q ${formatNumber(efg.couplingMHz, couplingDecimals(element))} MHz`]
+      : []),
+  ];
+}
+
+function labelOf(atomId: string, dossier: CrystalDossier): string {
+  return dossier.sites.find(({ equivalents }) => equivalents.some(({ id }) => id === atomId))?.label ?? '?';
+}

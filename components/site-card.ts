@@ -1,0 +1,160 @@
+import { html, nothing } from 'lit';
+import type { TemplateResult } from 'lit';
+import type { Place, SiteDossier } from '#src/store/dossier-types.ts';
+import type { WorkbenchState } from '#src/store/state.ts';
+import { efgSection } from './card-efg.ts';
+import { shieldingSection } from './card-shielding.ts';
+import { cardStyles } from './card-styles.ts';
+import { matrixStyles } from './matrix-table.ts';
+import {
+  formatNumber,
+  formatOperation,
+  formatTriple,
+  isotopeSymbol,
+  symmetrySymbol,
+} from './number-format.ts';
+import { siteChip } from './site-chip.ts';
+import { StoreElement } from './store-element.ts';
+import { shared } from './styles.ts';
+
+/** Text of one source line, as fetched from the engine. */
+interface SourceLine {
+  readonly place: Place;
+  readonly text: string | null;
+}
+
+/** All numbers of the selected site with their conventions, noise and the lines they came from. */
+export class SiteCard extends StoreElement {
+  static override properties = { sourceLines: { state: true } };
+
+  static override styles = [shared, matrixStyles, cardStyles];
+
+  declare sourceLines: readonly SourceLine[];
+
+  protected override readonly watches = ['derived', 'selection'] as const;
+  #site: SiteDossier | null = null;
+
+  constructor() {
+    super();
+    this.sourceLines = [];
+  }
+
+  protected override stateChanged(state: WorkbenchState): void {
+    const site = selectedSite(state);
+    if (site === this.#site) return;
+    this.#site = site;
+    this.sourceLines = [];
+    if (site) void this.#fetchLines(site);
+  }
+
+  override render(): TemplateResult {
+    const state = this.store?.state;
+    const dossier = state?.derived?.dossier;
+    const site = this.#site;
+    if (!state || !dossier) return html`<h2>Site</h2>`;
+    if (!site) {
+      return html`<h2>Site</h2>
+        <p class="soft">Choose a site in the table or an atom in the crystal to see its numbers here.</p>`;
+    }
+    const atom = site.equivalents.find(({ id }) => id === state.selection?.atomId) ?? null;
+    return html`
+      <article aria-label="Site ${site.label}">
+        <h2 class="title">${siteChip(site.index)}<strong>${site.label}</strong> ${summary(site)}</h2>
+        ${atom ? html`<p>Atom ${formatOperation(atom.operation)} is selected.</p>` : nothing} ${facts(site)}
+        ${
+          !site.shielding && !site.shift && !site.efg
+            ? html`<p class="soft">The files hold no tensor for this site.</p>`
+            : nothing
+        }
+        ${shieldingSection(site, atom, dossier.lattice)} ${efgSection(site, atom, dossier.lattice)}
+        ${this.#origin()}
+      </article>
+    `;
+  }
+
+  #origin(): TemplateResult {
+    return html`<section>
+      <h3>From</h3>
+      ${this.sourceLines.map(
+        ({ place, text }) =>
+          html`<button
+              class="link"
+              @click=${() => this.store?.showPlace({ file: place.file, line: place.line })}
+            >
+              ${place.file}, line ${place.line}
+            </button>
+            ${text === null ? nothing : html`<pre tabindex="0" aria-label="Line ${place.line}">${text}</pre>`}`,
+      )}
+    </section>`;
+  }
+
+  async #fetchLines(site: SiteDossier): Promise<void> {
+    const places = [site.source, site.shielding?.source, site.efg?.source].filter(
+      (place) => place !== undefined,
+    );
+    const unique = places.filter(
+      (place, i) => places.findIndex((other) => other.file === place.file && other.line === place.line) === i,
+    );
+    this.sourceLines = unique.map((place) => ({ place, text: null }));
+    const lines = await Promise.all(
+      unique.map(async (place) => {
+        const page = await this.store?.lines(place.file, place.line, 1).catch(() => null);
+        return { place, text: page?.lines[0] ?? null };
+      }),
+    );
+    if (this.#site === site) this.sourceLines = lines;
+  }
+}
+
+function selectedSite({ derived, selection }: WorkbenchState): SiteDossier | null {
+  return selection ? (derived?.dossier?.sites[selection.siteIndex] ?? null) : null;
+}
+
+/** `²⁷Al, site symmetry 3m, 4 atoms, 2 orientations`. */
+function summary(site: SiteDossier): string {
+  const symmetry =
+    site.siteSymmetryOrder === 1
+      ? 'general position'
+      : `site symmetry ${symmetrySymbol(site.siteSymmetry) || `of order ${site.siteSymmetryOrder}`}`;
+  const count = (number: number, word: string): string => `${number} ${word}${number === 1 ? '' : 's'}`;
+  return [
+    site.isotope ? isotopeSymbol(site.isotope) : site.element,
+    symmetry + (site.wyckoff ? ` (Wyckoff ${site.wyckoff})` : ''),
+    count(site.multiplicity, 'atom'),
+    count(site.distinctOrientations, 'orientation'),
+  ].join(', ');
+}
+
+function facts(site: SiteDossier): TemplateResult {
+  const { species, occupancy, disorder, displacement } = site;
+  const isMixed = species.length > 1;
+  const rows: readonly (readonly [string, string | null])[] = [
+    ['position', site.fractional ? formatTriple(site.fractional, 5) : `${formatTriple(site.cartesian, 4)} Å`],
+    ['symmetry forces', site.forced],
+    [
+      'occupancy',
+      occupancy === 1 && !isMixed
+        ? null
+        : species.map(({ element, occupancy: share }) => `${element} ${formatNumber(share, 3)}`).join(', '),
+    ],
+    ['disorder', disorder ? `assembly ${disorder.assembly ?? '–'}, group ${disorder.group ?? '–'}` : null],
+    ['charge', site.charge === null ? null : `${formatNumber(site.charge, 0)} e`],
+    [
+      'displacement',
+      displacement?.uEquivalent === null || displacement?.uEquivalent === undefined
+        ? null
+        : `U = ${formatNumber(displacement.uEquivalent, 4)} Å²`,
+    ],
+    ['hydrogens without sites', site.attachedHydrogens > 0 ? String(site.attachedHydrogens) : null],
+  ];
+  return html`<dl class="facts">
+    ${rows.map(([name, value]) =>
+      value
+        ? html`<dt>${name}</dt>
+            <dd>${value}</dd>`
+        : nothing,
+    )}
+  </dl>`;
+}
+
+customElements.define('ellipsite-site-card', SiteCard);

@@ -1,0 +1,111 @@
+import { css } from 'lit';
+
+/** Look of the site table: hairlines between rows, no boxes. */
+export const tableStyles = css`
+  :host {
+    display: flex;
+    flex-direction: column;
+    min-height: 0;
+    min-width: 0;
+  }
+  h2 {
+    padding: 0 0 6px;
+  }
+  .scroller {
+    overflow: auto;
+    flex: 1;
+    min-height: 0;
+    overscroll-behavior: contain;
+  }
+  .scroller:focus-visible {
+    outline-offset: -2px;
+  }
+  .row {
+    display: grid;
+    grid-template-columns: var(--columns);
+    column-gap: 10px;
+    align-items: center;
+    padding: 0 8px 0 2px;
+    border-bottom: 1px solid var(--hairline);
+    min-width: max-content;
+    width: 100%;
+  }
+  .head {
+    position: sticky;
+    top: 0;
+    z-index: 1;
+    height: 32px;
+    background: var(--paper);
+    color: var(--soft);
+    font-size: 12.5px;
+    white-space: nowrap;
+  }
+  .body {
+    position: relative;
+  }
+  .body .row {
+    position: absolute;
+    left: 0;
+    cursor: pointer;
+  }
+  .site {
+    height: 32px;
+  }
+  .atom {
+    height: 50px;
+    grid-template-columns: 1fr;
+    font-size: 12.5px;
+  }
+  .atom-cell {
+    padding-left: 30px;
+    font-variant-numeric: tabular-nums lining-nums;
+    white-space: nowrap;
+  }
+  .operation {
+    display: inline-block;
+    min-width: 150px;
+    padding-right: 12px;
+  }
+  .axes {
+    color: var(--soft);
+    font-size: 11.5px;
+  }
+  .axes span + span {
+    margin-left: 10px;
+  }
+  .hovered {
+    background: var(--hovered);
+  }
+  .selected {
+    background: var(--lit);
+  }
+  .scroller:focus-visible .active {
+    box-shadow: inset 2px 0 var(--accent);
+  }
+  .name {
+    display: flex;
+    align-items: center;
+    gap: 7px;
+    min-width: 0;
+  }
+  .label {
+    overflow: hidden;
+    text-overflow: ellipsis;
+    white-space: nowrap;
+  }
+  .text {
+    white-space: nowrap;
+  }
+  .opener {
+    min-width: 24px;
+    min-height: 24px;
+    padding: 0;
+    color: var(--soft);
+    line-height: 1;
+  }
+  .undefined {
+    font-style: italic;
+    color: var(--soft);
+    font-size: 12.5px;
+  }
+`;

@@ -1,0 +1,101 @@
+import { css } from 'lit';
+
+/** Layout of the page: two columns from 900 px on, one below. */
+export const workbenchStyles = css`
+  :host {
+    display: grid;
+    grid-template-rows: auto auto minmax(0, 1fr);
+    height: 100dvh;
+    background: var(--paper);
+    position: relative;
+  }
+  main {
+    display: grid;
+    grid-template-columns: minmax(0, 1fr) clamp(440px, 43%, 960px);
+    min-height: 0;
+  }
+  ellipsite-crystal-view {
+    min-width: 0;
+    min-height: 0;
+  }
+  .numbers {
+    display: grid;
+    grid-template-rows: fit-content(46%) minmax(0, 1fr);
+    min-height: 0;
+    min-width: 0;
+    border-left: 1px solid var(--hairline);
+  }
+  ellipsite-site-table {
+    padding: 12px 0 0 16px;
+    min-height: 96px;
+  }
+  ellipsite-site-card {
+    padding: 12px 18px 24px;
+    border-top: 1px solid var(--hairline);
+  }
+  .drawer {
+    position: absolute;
+    z-index: 5;
+    right: 0;
+    top: 0;
+    bottom: 0;
+    width: min(460px, 100%);
+    overflow: auto;
+    overscroll-behavior: contain;
+    background: var(--raised);
+    border-left: 1px solid var(--line);
+  }
+  .body {
+    position: relative;
+    min-height: 0;
+    display: grid;
+  }
+  ellipsite-source-view {
+    position: absolute;
+    z-index: 4;
+    left: 0;
+    bottom: 0;
+    right: 0;
+    height: min(340px, 55%);
+    border-top: 1px solid var(--line);
+  }
+  .with-drawer ellipsite-source-view {
+    right: min(460px, 100%);
+  }
+  @media (max-width: 899px) {
+    :host {
+      display: block;
+      height: auto;
+      min-height: 100dvh;
+    }
+    .body,
+    main,
+    .numbers {
+      display: block;
+    }
+    ellipsite-crystal-view {
+      height: 72vh;
+      height: 72svh;
+    }
+    .numbers {
+      border-left: none;
+    }
+    ellipsite-site-table {
+      border-top: 1px solid var(--hairline);
+      height: 60vh;
+      height: 60svh;
+      max-height: var(--table-height);
+    }
+    .drawer,
+    ellipsite-source-view {
+      position: fixed;
+    }
+    .drawer {
+      top: 0;
+    }
+    .with-drawer ellipsite-source-view {
+      right: 0;
+      z-index: 6;
+    }
+  }
+`;

@@ -1,0 +1,149 @@
+import { html, nothing } from 'lit';
+import type { PropertyValues, TemplateResult } from 'lit';
+import type { WebGLProbe } from '#src/render/probe-webgl.ts';
+import type { WorkbenchState } from '#src/store/state.ts';
+import { announcement } from './announcement.ts';
+import './crystal-view.ts';
+import './drop-zone.ts';
+import './page-header.ts';
+import type { Panel } from './panel.ts';
+import './problems-drawer.ts';
+import './progress-bar.ts';
+import './site-card.ts';
+import './site-table.ts';
+import './source-view.ts';
+import { StoreElement } from './store-element.ts';
+import { shared, themes } from './styles.ts';
+import { effectiveTheme, keepTheme, watchTheme } from './theme.ts';
+import { workbenchStyles } from './workbench-styles.ts';
+
+/** The whole page: header, crystal, sites, site card, drawers; owns the theme, the shortcuts and the live region. */
+export class Workbench extends StoreElement {
+  static override properties = { panel: { state: true }, probe: { attribute: false } };
+
+  static override styles = [themes, shared, workbenchStyles];
+
+  declare panel: Panel;
+  /** How the browser can draw; null lets the crystal view find out. */
+  declare probe: WebGLProbe | null;
+
+  protected override readonly watches = ['theme', 'shownPlace', 'selection', 'derived', 'refused'] as const;
+  #unwatchTheme: (() => void) | null = null;
+  #spoken = '';
+  /** What had the focus when a drawer was opened; it gets it back. */
+  #opener: HTMLElement | null = null;
+
+  constructor() {
+    super();
+    this.panel = null;
+    this.probe = null;
+  }
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    this.#unwatchTheme = watchTheme(() => this.requestUpdate());
+    document.addEventListener('keydown', this.#shortcuts);
+  }
+
+  override disconnectedCallback(): void {
+    super.disconnectedCallback();
+    this.#unwatchTheme?.();
+    document.removeEventListener('keydown', this.#shortcuts);
+  }
+
+  protected override stateChanged(state: WorkbenchState, before: WorkbenchState | null): void {
+    if (before && state.theme !== before.theme) keepTheme(state.theme);
+    if (state.refused && state.refused !== before?.refused) this.#show('problems');
+    this.#spoken = announcement(state, before) ?? this.#spoken;
+  }
+
+  override render(): TemplateResult {
+    const { store, panel } = this;
+    if (!store) return html``;
+    const theme = effectiveTheme(store.state.theme);
+    this.setAttribute('theme', theme);
+    return html`
+      <ellipsite-page-header
+        .store=${store}
+        .panel=${panel}
+        role="banner"
+        @ask-panel=${this.#askPanel}
+      ></ellipsite-page-header>
+      <ellipsite-progress-bar .store=${store}></ellipsite-progress-bar>
+      <div class="body ${panel ? 'with-drawer' : ''}" @ask-panel=${this.#askPanel}>
+        <main>
+          <ellipsite-crystal-view
+            .store=${store}
+            .theme=${theme}
+            .probe=${this.probe}
+          ></ellipsite-crystal-view>
+          <div class="numbers">
+            <ellipsite-site-table .store=${store}></ellipsite-site-table>
+            <ellipsite-site-card .store=${store}></ellipsite-site-card>
+          </div>
+        </main>
+        ${
+          store.state.shownPlace
+            ? html`<ellipsite-source-view .store=${store}></ellipsite-source-view>`
+            : nothing
+        }
+        ${panel ? this.#drawer(panel) : nothing}
+      </div>
+      <ellipsite-drop-zone .store=${store}></ellipsite-drop-zone>
+      <div class="hidden-but-spoken" role="status" aria-live="polite">${this.#spoken}</div>
+    `;
+  }
+
+  protected override updated(changed: PropertyValues): void {
+    if (changed.has('panel') && this.panel) this.renderRoot.querySelector<HTMLElement>('.drawer')?.focus();
+  }
+
+  #drawer(panel: NonNullable<Panel>): TemplateResult {
+    const { store } = this;
+    const names = { problems: 'Problems', settings: 'Settings', case: 'Case' } as const;
+    return html`<aside class="drawer" tabindex="-1" role="dialog" aria-label=${names[panel]}>
+      ${panel === 'problems' ? html`<ellipsite-problems-drawer .store=${store}></ellipsite-problems-drawer>` : nothing}
+      ${panel === 'settings' ? html`<ellipsite-settings-panel .store=${store}></ellipsite-settings-panel>` : nothing}
+      ${panel === 'case' ? html`<ellipsite-case-panel .store=${store}></ellipsite-case-panel>` : nothing}
+    </aside>`;
+  }
+
+  readonly #askPanel = ({ detail }: CustomEvent<Panel>): void => {
+    if (detail) this.#show(detail);
+    else this.#close();
+  };
+
+  #show(panel: NonNullable<Panel>): void {
+    if (this.panel === null) this.#opener = deepestFocus();
+    if (panel === 'settings') void import('./settings-panel.ts');
+    if (panel === 'case') void import('./case-panel.ts');
+    this.panel = panel;
+  }
+
+  #close(): void {
+    this.panel = null;
+    this.#opener?.focus();
+    this.#opener = null;
+  }
+
+  readonly #shortcuts = (event: KeyboardEvent): void => {
+    const isTyping = event.composedPath()[0] instanceof HTMLInputElement;
+    const key = event.key.toLowerCase();
+    if ((event.ctrlKey || event.metaKey) && key === 'z' && !isTyping) {
+      event.preventDefault();
+      void (event.shiftKey ? this.store?.redo() : this.store?.undo());
+    }
+    if (event.key !== 'Escape' || event.defaultPrevented) return;
+    if (this.store?.state.shownPlace) this.store.showPlace(null);
+    else if (this.panel) this.#close();
+  };
+}
+
+/** The focused element, through shadow roots. */
+function deepestFocus(): HTMLElement | null {
+  let focused = document.activeElement;
+  while (focused?.shadowRoot?.activeElement) focused = focused.shadowRoot.activeElement;
+  return focused instanceof HTMLElement ? focused : null;
+}
+
+customElements.define('ellipsite-workbench', Workbench);

@@ -1,0 +1,49 @@
+import type { Vec3 } from '#src/base/matrix3.ts';
+import { apply, rowsOf } from '#src/base/matrix3.ts';
+import { dot, length } from '#src/base/vector3.ts';
+import type { Lattice } from '#src/crystal/lattice.ts';
+import type { Axis, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
+
+/** A quantity that has principal axes. */
+export type TensorQuantity = 'shielding' | 'shift' | 'efg';
+
+/** Angle in degrees, 0 to 90, between two axes. A principal axis has no sign, so the angle is folded. */
+export function foldedAngleDegrees(a: Vec3, b: Vec3): number {
+  const cosine = Math.abs(dot(a, b)) / (length(a) * length(b));
+  return (Math.acos(Math.min(1, cosine)) * 180) / Math.PI;
+}
+
+/** Folded angles of an axis to the cell vectors a, b, c; null for an undefined axis or without a cell. */
+export function anglesToCell(axis: Axis, lattice: Lattice | null): Vec3 | null {
+  if (!axis || !lattice) return null;
+  const [a, b, c] = rowsOf(lattice.rows);
+  return [foldedAngleDegrees(axis, a), foldedAngleDegrees(axis, b), foldedAngleDegrees(axis, c)];
+}
+
+/**
+ * An axis with the sign that reads best: its largest component is positive. The sign of a principal axis means
+ * nothing, a fixed choice keeps equal axes looking equal.
+ */
+export function withReadableSign(axis: Vec3): Vec3 {
+  const largest = [0, 1, 2].reduce((best, i) =>
+    Math.abs(axis[i]!) > Math.abs(axis[best]!) + 1e-9 ? i : best,
+  );
+  return axis[largest]! < 0 ? [-axis[0], -axis[1], -axis[2]] : axis;
+}
+
+/** Principal axes of a site in the order of its components; null where the site has no such tensor. */
+export function siteAxes(site: SiteDossier, quantity: TensorQuantity): readonly [Axis, Axis, Axis] | null {
+  return site[quantity]?.axes ?? null;
+}
+
+/** The same axes turned along with an equivalent atom: R·axis, R its Cartesian rotation. */
+export function atomAxes(
+  site: SiteDossier,
+  atom: EquivalentAtom,
+  quantity: TensorQuantity,
+): readonly [Axis, Axis, Axis] | null {
+  const axes = siteAxes(site, quantity);
+  if (!axes) return null;
+  const turned = (axis: Axis): Axis => axis && withReadableSign(apply(atom.rotation, axis));
+  return [turned(axes[0]), turned(axes[1]), turned(axes[2])];
+}

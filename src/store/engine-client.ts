@@ -1,0 +1,134 @@
+import type { ReportProgress } from '#src/base/progress.ts';
+import type {
+  CaseInput,
+  DerivedCase,
+  EngineReply,
+  EngineRequest,
+  LinePage,
+  SourceFile,
+} from './engine-protocol.ts';
+
+/** What the store needs of an engine; the worker client is one, tests bring their own. */
+export interface EngineClient {
+  /** Derives a case. A derivation still running is given up for the new one. */
+  derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase>;
+  lines(source: SourceFile, first: number, count: number): Promise<LinePage>;
+  /** Stops the running derivation, whose promise rejects with `Cancelled`. */
+  cancel(): void;
+}
+
+/** The part of a Worker that is used, so that tests can stand in for it. */
+export interface WorkerLike {
+  postMessage(message: EngineRequest): void;
+  terminate(): void;
+  onmessage: ((event: { data: EngineReply }) => void) | null;
+  onerror: ((event: { message?: string }) => void) | null;
+}
+
+/** Rejection of a derivation that was cancelled or overtaken by a newer one: nothing to show. */
+export class Cancelled extends Error {}
+
+interface Pending {
+  readonly request: EngineRequest;
+  readonly report: ReportProgress;
+  readonly settle: (reply: EngineReply) => void;
+  readonly reject: (reason: Error) => void;
+}
+
+/**
+ * Talks to the engine in a worker. A synchronous read cannot be interrupted, so cancelling ends the worker and
+ * starts a new one, which reads the files again from their blobs when it needs them.
+ */
+class WorkerEngineClient implements EngineClient {
+  readonly #start: () => WorkerLike;
+  readonly #pending = new Map<number, Pending>();
+  #worker: WorkerLike | null = null;
+  #nextId = 1;
+
+  constructor(start: () => WorkerLike) {
+    this.#start = start;
+  }
+
+  derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase> {
+    this.cancel();
+    return this.#ask({ id: this.#nextId++, kind: 'derive', input }, report, (reply) =>
+      reply.kind === 'derived' ? reply.result : null,
+    );
+  }
+
+  lines(source: SourceFile, first: number, count: number): Promise<LinePage> {
+    const request: EngineRequest = { id: this.#nextId++, kind: 'lines', source, first, count };
+    return this.#ask(
+      request,
+      () => undefined,
+      (reply) => (reply.kind === 'lines' ? reply.page : null),
+    );
+  }
+
+  cancel(): void {
+    const running = [...this.#pending.values()].filter(({ request }) => request.kind === 'derive');
+    if (running.length === 0) return;
+    this.#worker?.terminate();
+    this.#worker = null;
+    for (const { request, reject } of running) {
+      this.#pending.delete(request.id);
+      reject(new Cancelled('cancelled'));
+    }
+    for (const { request } of this.#pending.values()) this.#running().postMessage(request);
+  }
+
+  #ask<Result>(
+    request: EngineRequest,
+    report: ReportProgress,
+    take: (reply: EngineReply) => Result | null,
+  ): Promise<Result> {
+    return new Promise<Result>((resolve, reject) => {
+      const settle = (reply: EngineReply): void => {
+        const result = take(reply);
+        if (result !== null) resolve(result);
+        else reject(new Error(reply.kind === 'failed' ? reply.message : `unexpected ${reply.kind}`));
+      };
+      this.#pending.set(request.id, { request, report, settle, reject });
+      this.#running().postMessage(request);
+    });
+  }
+
+  #running(): WorkerLike {
+    if (this.#worker) return this.#worker;
+    const worker = this.#start();
+    worker.onmessage = ({ data }) => this.#receive(data);
+    worker.onerror = (event) => this.#crash(event.message ?? 'the engine stopped without a message');
+    this.#worker = worker;
+    return worker;
+  }
+
+  #receive(reply: EngineReply): void {
+    const pending = this.#pending.get(reply.id);
+    if (!pending) return;
+    if (reply.kind === 'progress') {
+      pending.report(reply.share, reply.stage);
+      return;
+    }
+    this.#pending.delete(reply.id);
+    pending.settle(reply);
+  }
+
+  /** A crashed worker (out of memory, a script that did not load) rejects all that waits; the next request starts afresh. */
+  #crash(message: string): void {
+    this.#worker?.terminate();
+    this.#worker = null;
+    const waiting = [...this.#pending.values()];
+    this.#pending.clear();
+    for (const { reject } of waiting) reject(new Error(message));
+  }
+}
+
+export function createEngineClient(
+  start: () => WorkerLike = () =>
+    new Worker(new URL('./engine-worker.ts', import.meta.url), {
+      type: 'module',
+      name: 'ellipsite engine',
+    }) as unknown as WorkerLike,
+): EngineClient {
+  return new WorkerEngineClient(start);
+}

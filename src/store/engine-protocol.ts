@@ -1,0 +1,88 @@
+import type { Problem } from '#src/base/problem.ts';
+import type { CrystalDossier, DossierSettings } from '#src/dossier/dossier.ts';
+import type { Quantity } from '#src/tensor/tensor-set.ts';
+
+/** One file the user gave. The blob holds the bytes as they were; it crosses to the worker without a copy. */
+export interface SourceFile {
+  /** Unique in the session; two files may share a name. */
+  readonly id: string;
+  readonly name: string;
+  readonly blob: Blob;
+}
+
+/** Which structure of which file is *the crystal*. */
+export interface StructureChoice {
+  readonly sourceId: string;
+  readonly index: number;
+}
+
+/** Everything a derivation depends on: the same input gives the same case. */
+export interface CaseInput {
+  readonly sources: readonly SourceFile[];
+  /** null takes the first structure of the first file that holds one. */
+  readonly structure: StructureChoice | null;
+  readonly settings: DossierSettings;
+}
+
+export interface SourceSummary {
+  readonly id: string;
+  readonly name: string;
+  readonly format: 'cif' | 'xyz' | 'unknown';
+  readonly bytes: number;
+  readonly lines: number;
+}
+
+/** One structure that can be chosen. */
+export interface StructureSummary extends StructureChoice {
+  readonly name: string;
+  readonly file: string;
+  readonly line: number;
+  readonly siteCount: number;
+  readonly formula: string | null;
+  readonly periodic: boolean;
+}
+
+export interface TensorSummary {
+  readonly sourceId: string;
+  readonly name: string;
+  readonly quantity: Quantity;
+  readonly unitGiven: string;
+  readonly entryCount: number;
+  /** False when the set belongs to another structure than the chosen one. */
+  readonly used: boolean;
+}
+
+/** What the engine makes of a case. `dossier` is null when the files hold no structure. */
+export interface DerivedCase {
+  readonly sources: readonly SourceSummary[];
+  readonly structures: readonly StructureSummary[];
+  readonly tensors: readonly TensorSummary[];
+  readonly chosen: StructureChoice | null;
+  readonly dossier: CrystalDossier | null;
+  readonly problems: readonly Problem[];
+}
+
+/** Lines of a source text, for the text view. */
+export interface LinePage {
+  /** Number of the first line, from 1. */
+  readonly first: number;
+  /** Lines without their ending; a line longer than 2,000 characters is cut and ends in `…`. */
+  readonly lines: readonly string[];
+  readonly total: number;
+}
+
+export type EngineRequest =
+  | { readonly id: number; readonly kind: 'derive'; readonly input: CaseInput }
+  | {
+      readonly id: number;
+      readonly kind: 'lines';
+      readonly source: SourceFile;
+      readonly first: number;
+      readonly count: number;
+    };
+
+export type EngineReply =
+  | { readonly id: number; readonly kind: 'progress'; readonly share: number; readonly stage: string }
+  | { readonly id: number; readonly kind: 'derived'; readonly result: DerivedCase }
+  | { readonly id: number; readonly kind: 'lines'; readonly page: LinePage }
+  | { readonly id: number; readonly kind: 'failed'; readonly message: string };

@@ -1,0 +1,27 @@
+import moyoUrl from '@spglib/moyo-wasm/moyo_wasm_bg.wasm?url';
+import { loadSymmetryTables } from '#src/crystal/symmetry-tables.ts';
+import type { EngineReply, EngineRequest } from './engine-protocol.ts';
+import { createEngine } from './engine.ts';
+
+/** The page's engine: everything that takes time runs here. The symmetry tables are fetched at the first crystal. */
+const engine = createEngine(async () => {
+  const response = await fetch(new URL(moyoUrl, import.meta.url));
+  if (!response.ok) throw new Error(`the symmetry tables could not be loaded (status ${response.status})`);
+  return loadSymmetryTables(await response.arrayBuffer());
+});
+
+const reply = (message: EngineReply): void => self.postMessage(message);
+
+self.onmessage = async ({ data: request }: MessageEvent<EngineRequest>): Promise<void> => {
+  const { id } = request;
+  try {
+    if (request.kind === 'lines') {
+      reply({ id, kind: 'lines', page: await engine.lines(request.source, request.first, request.count) });
+      return;
+    }
+    const report = (share: number, stage: string): void => reply({ id, kind: 'progress', share, stage });
+    reply({ id, kind: 'derived', result: await engine.derive(request.input, report) });
+  } catch (error) {
+    reply({ id, kind: 'failed', message: error instanceof Error ? error.message : String(error) });
+  }
+};

@@ -1,0 +1,172 @@
+import type { ReportProgress } from '#src/base/progress.ts';
+import type { Problem } from '#src/base/problem.ts';
+import { problem } from '#src/base/problem.ts';
+import { decodeBytes, defaultByteLimits } from '#src/bytes/decode-bytes.ts';
+import type { DecodedBytes } from '#src/bytes/decode-bytes.ts';
+import type { SourceText } from '#src/bytes/source-text.ts';
+import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
+import { deriveDossier } from '#src/dossier/derive-dossier.ts';
+import { readText } from '#src/readers/read.ts';
+import type { Reading } from '#src/readers/reading.ts';
+import type { CaseInput, DerivedCase, LinePage, SourceFile } from './engine-protocol.ts';
+import { chooseStructure, structuresOf, tensorsFor } from './choose-structure.ts';
+import { linePage } from './line-page.ts';
+
+/** One file after reading. */
+export interface ReadSource {
+  readonly file: SourceFile;
+  readonly source: SourceText | null;
+  readonly reading: Reading;
+}
+
+export interface Engine {
+  derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase>;
+  lines(file: SourceFile, first: number, count: number): Promise<LinePage>;
+}
+
+/** Shares of the progress bar: reading up to here, deriving the rest. */
+const readingShare = 0.7;
+
+/** Reports at most every hundredth, and whenever the stage changes. */
+export function throttled(report: ReportProgress): ReportProgress {
+  let last = -1;
+  let lastStage = '';
+  return (share, stage) => {
+    if (stage === lastStage && share - last < 0.01) return;
+    last = share;
+    lastStage = stage;
+    report(share, stage);
+  };
+}
+
+/** Bytes of a file as text. A file too large to hold, or gone from the disk since, is a problem, not a fault. */
+async function decodeFile({ name, blob }: SourceFile): Promise<DecodedBytes> {
+  const limit = defaultByteLimits.maxUnpackedBytes;
+  if (blob.size > limit) {
+    const message = `${name} is larger than what is read: nothing was taken from it.`;
+    const details = { got: `${blob.size} bytes`, allowed: `at most ${limit} bytes` };
+    return { source: null, problems: [problem('error', 'bytes-too-large', message, details)] };
+  }
+  try {
+    return await decodeBytes(name, new Uint8Array(await blob.arrayBuffer()));
+  } catch (error) {
+    const message = `${name} could not be read from the disk.`;
+    const got = error instanceof Error ? error.message : String(error);
+    const hint = 'It may be a folder, or have been moved or changed since. Choose the file again.';
+    return { source: null, problems: [problem('error', 'file-unreadable', message, { got, hint })] };
+  }
+}
+
+async function readSource(file: SourceFile, report: ReportProgress): Promise<ReadSource> {
+  report(0, `reading ${file.name}`);
+  const { source, problems } = await decodeFile(file);
+  if (!source) return { file, source, reading: { ...unreadable(file.name), problems } };
+  const reading = readText(source, { progress: report });
+  return { file, source, reading: { ...reading, problems: [...problems, ...reading.problems] } };
+}
+
+function unreadable(file: string): Reading {
+  return { format: 'unknown', file, structures: [], tensorSets: [], proposals: [], problems: [] };
+}
+
+function noStructure(read: readonly ReadSource[]): Problem[] {
+  const held = read.some(({ reading }) => reading.tensorSets.length > 0);
+  const names = read.map(({ file }) => file.name).join(', ');
+  const message = held
+    ? `${names} holds tensors but no structure to put them on.`
+    : `${names} holds no structure that could be read.`;
+  const hint = held
+    ? 'Open a structure first, then add this file to it.'
+    : 'A CIF, an XYZ or an extended XYZ with a Lattice is expected; the problems above say what stood in the way.';
+  return [problem('error', 'no-structure', message, { hint, allowed: 'CIF, XYZ, extended XYZ' })];
+}
+
+/**
+ * Turns files into a case. Readings are kept by source, so that a change of a setting reads nothing again; what was
+ * not asked for in the last derivation is forgotten.
+ */
+class ReadingEngine implements Engine {
+  readonly #loadTables: () => Promise<SymmetryTables>;
+  #tables: Promise<SymmetryTables> | null = null;
+  #read = new Map<string, ReadSource>();
+
+  constructor(loadTables: () => Promise<SymmetryTables>) {
+    this.#loadTables = loadTables;
+  }
+
+  async derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase> {
+    const watched = throttled(report);
+    const read = await this.#readAll(input.sources, watched);
+    const chosen = chooseStructure(read, input.structure);
+    const base = {
+      sources: read.map(({ file, source, reading }) => ({
+        id: file.id,
+        name: file.name,
+        format: reading.format,
+        bytes: file.blob.size,
+        lines: source?.lineStarts.length ?? 0,
+      })),
+      structures: structuresOf(read),
+      tensors: tensorsFor(read, chosen?.choice ?? null).map(({ summary }) => summary),
+    };
+    const readingProblems = read.flatMap(({ reading }) => reading.problems);
+    if (!chosen) {
+      const problems = [...readingProblems, ...noStructure(read)];
+      return { ...base, chosen: null, dossier: null, problems };
+    }
+    watched(readingShare, 'loading the symmetry tables');
+    const tables = await this.#symmetryTables();
+    const dossier = deriveDossier(
+      {
+        crystal: chosen.crystal,
+        tensorSets: tensorsFor(read, chosen.choice).flatMap(({ summary, set }) =>
+          summary.used ? [set] : [],
+        ),
+        tables,
+        settings: input.settings,
+        problems: readingProblems,
+      },
+      (share, stage) => watched(readingShare + (1 - readingShare) * share, stage),
+    );
+    return { ...base, chosen: chosen.choice, dossier, problems: dossier.problems };
+  }
+
+  async lines(file: SourceFile, first: number, count: number): Promise<LinePage> {
+    const known = this.#read.get(file.id);
+    if (known?.source) return linePage(known.source, first, count);
+    const { source } = await decodeFile(file);
+    return source ? linePage(source, first, count) : { first: 1, lines: [], total: 0 };
+  }
+
+  async #readAll(sources: readonly SourceFile[], report: ReportProgress): Promise<ReadSource[]> {
+    const total = sources.reduce((sum, { blob }) => sum + blob.size, 0) || 1;
+    const read: ReadSource[] = [];
+    let done = 0;
+    for (const file of sources) {
+      const share = file.blob.size / total;
+      const start = done;
+      const known = this.#read.get(file.id);
+      const here = (part: number, stage: string): void =>
+        report(readingShare * (start + share * part), stage);
+      read.push(known ?? (await readSource(file, here)));
+      done += share;
+    }
+    this.#read = new Map(read.map((one) => [one.file.id, one]));
+    return read;
+  }
+
+  async #symmetryTables(): Promise<SymmetryTables> {
+    this.#tables ??= this.#loadTables();
+    try {
+      return await this.#tables;
+    } catch (error) {
+      this.#tables = null;
+      throw error;
+    }
+  }
+}
+
+/** An engine that loads the symmetry tables by the given way when it meets the first crystal. */
+export function createEngine(loadTables: () => Promise<SymmetryTables>): Engine {
+  return new ReadingEngine(loadTables);
+}

@@ -1,0 +1,102 @@
+import type { Problem } from '#src/base/problem.ts';
+import type { DossierSettings } from '#src/dossier/dossier.ts';
+import { defaultSceneOptions } from '#src/scene/scene-options.ts';
+import type { SceneOptions } from '#src/scene/scene-options.ts';
+import type { SceneQuantity } from '#src/scene/scene.ts';
+import type { DerivedCase, SourceFile, StructureChoice } from './engine-protocol.ts';
+
+/** Everything the user decided about a case; undo steps through a list of these. */
+export interface Decisions {
+  readonly title: string;
+  readonly sources: readonly SourceFile[];
+  readonly structure: StructureChoice | null;
+  readonly settings: DossierSettings;
+}
+
+/** A decision that can be undone, with its name: "undo *open quartz.cif*". */
+export interface Step {
+  readonly name: string;
+  /** Decisions that held before the step (in the past) or after it (in the future). */
+  readonly decisions: Decisions;
+}
+
+/** A site, or one atom of it. */
+export interface Selection {
+  readonly siteIndex: number;
+  /** null selects the site with all its atoms. */
+  readonly atomId: string | null;
+}
+
+/** Files that could not be opened; the case on screen stayed. */
+export interface Refusal {
+  readonly what: string;
+  readonly problems: readonly Problem[];
+}
+
+export interface Progress {
+  readonly what: string;
+  /** 0 to 1. */
+  readonly share: number;
+  readonly stage: string;
+}
+
+export type ThemeChoice = 'auto' | 'light' | 'dark';
+
+/** A place in a source text that is shown in the text view. */
+export interface ShownPlace {
+  readonly file: string;
+  readonly line: number;
+}
+
+/** Everything on screen. Immutable: a change makes a new state that shares what stayed. */
+export interface WorkbenchState {
+  readonly decisions: Decisions | null;
+  readonly derived: DerivedCase | null;
+  readonly refused: Refusal | null;
+  readonly selection: Selection | null;
+  readonly hover: Selection | null;
+  readonly theme: ThemeChoice;
+  /** What the picture shows; nothing here changes a number. */
+  readonly picture: SceneOptions;
+  readonly shownPlace: ShownPlace | null;
+  readonly progress: Progress | null;
+  readonly past: readonly Step[];
+  readonly future: readonly Step[];
+}
+
+export const emptyState: WorkbenchState = {
+  decisions: null,
+  derived: null,
+  refused: null,
+  selection: null,
+  hover: null,
+  theme: 'auto',
+  picture: defaultSceneOptions,
+  shownPlace: null,
+  progress: null,
+  past: [],
+  future: [],
+};
+
+/** Problems on screen: those of the case and those of files that could not be opened. */
+export function countProblems(state: WorkbenchState): Record<Problem['severity'], number> {
+  const all = [...(state.derived?.problems ?? []), ...(state.refused?.problems ?? [])];
+  const count = (severity: Problem['severity']): number =>
+    all.filter((problem) => problem.severity === severity).length;
+  return { error: count('error'), warning: count('warning'), note: count('note') };
+}
+
+/** The quantity to show: the wanted one where the case has it, else the first it has; null without tensors. */
+export function quantityToShow(
+  wanted: SceneOptions['quantity'],
+  derived: DerivedCase | null,
+): SceneQuantity | null {
+  const available = availableQuantities(derived);
+  return available.find((quantity) => quantity === wanted) ?? available[0] ?? null;
+}
+
+/** Quantities at least one site of the case has. */
+export function availableQuantities(derived: DerivedCase | null): SceneQuantity[] {
+  const sites = derived?.dossier?.sites ?? [];
+  return (['shielding', 'shift', 'efg'] as const).filter((quantity) => sites.some((site) => site[quantity]));
+}

@@ -1,0 +1,257 @@
+import type { Problem } from '#src/base/problem.ts';
+import { problem } from '#src/base/problem.ts';
+import type { SceneOptions } from '#src/scene/scene-options.ts';
+import { defaultSettings } from '#src/dossier/default-settings.ts';
+import type { DossierSettings } from '#src/dossier/dossier.ts';
+
+import type { EngineClient } from './engine-client.ts';
+import { Cancelled } from './engine-client.ts';
+import type { DerivedCase, LinePage, SourceFile, StructureChoice } from './engine-protocol.ts';
+import type { Decisions, Selection, ShownPlace, Step, ThemeChoice, WorkbenchState } from './state.ts';
+import { emptyState } from './state.ts';
+
+/** A file before it has an id. */
+export interface FileInput {
+  readonly name: string;
+  readonly blob: Blob;
+}
+
+/** Told after every change, with a sentence that says what changed and why. */
+export type Listener = (state: WorkbenchState, reason: string) => void;
+
+/** Steps kept for undo; decisions are small, their files are shared. */
+const keptSteps = 200;
+
+/**
+ * Holder of everything on screen. Decisions that change numbers go through the engine and become state only once the
+ * engine has answered: what was on screen stays until then, and for good when the answer holds no crystal.
+ */
+export class Store {
+  readonly #engine: EngineClient;
+  readonly #listeners = new Set<Listener>();
+  #state: WorkbenchState;
+  /** Decisions on their way through the engine; later ones build on them. */
+  #underway: Decisions | null = null;
+  #nextSource = 1;
+
+  constructor(engine: EngineClient, initial: Partial<WorkbenchState>) {
+    this.#engine = engine;
+    this.#state = { ...emptyState, ...initial };
+  }
+
+  get state(): WorkbenchState {
+    return this.#state;
+  }
+
+  /** Calls the listener after every change until the returned function is called. */
+  subscribe(listener: Listener): () => void {
+    this.#listeners.add(listener);
+    return () => this.#listeners.delete(listener);
+  }
+
+  /** Opens files as a new case; settings and references stay. */
+  open(files: readonly FileInput[], title = titleOf(files)): Promise<boolean> {
+    const settings = this.#base()?.settings ?? defaultSettings;
+    return this.#decide(`open ${title}`, {
+      title,
+      sources: this.#identified(files, []),
+      structure: null,
+      settings,
+    });
+  }
+
+  /** Adds files (tensors, as a rule) to the case on screen. */
+  add(files: readonly FileInput[]): Promise<boolean> {
+    const base = this.#base();
+    if (!base) return this.open(files);
+    const sources = [...base.sources, ...this.#identified(files, base.sources)];
+    return this.#decide(`add ${titleOf(files)}`, { ...base, sources });
+  }
+
+  /** Takes one file out of the case. */
+  remove(sourceId: string): Promise<boolean> {
+    const base = this.#base();
+    const gone = base?.sources.find(({ id }) => id === sourceId);
+    if (!base || !gone) return Promise.resolve(false);
+    return this.#decide(`take out ${gone.name}`, {
+      ...base,
+      sources: base.sources.filter(({ id }) => id !== sourceId),
+      structure: base.structure?.sourceId === sourceId ? null : base.structure,
+    });
+  }
+
+  chooseStructure(structure: StructureChoice, name: string): Promise<boolean> {
+    const base = this.#base();
+    return base ? this.#decide(`choose ${name}`, { ...base, structure }) : Promise.resolve(false);
+  }
+
+  changeSettings(change: Partial<DossierSettings>, name: string): Promise<boolean> {
+    const base = this.#base();
+    if (!base) return Promise.resolve(false);
+    return this.#decide(name, { ...base, settings: { ...base.settings, ...change } });
+  }
+
+  undo(): Promise<boolean> {
+    const { past, decisions } = this.#state;
+    const step = past.at(-1);
+    if (!step || !decisions) return Promise.resolve(false);
+    return this.#derive(step.decisions, `undo ${step.name}`, (state) => ({
+      past: state.past.slice(0, -1),
+      future: [...state.future, { name: step.name, decisions }],
+    }));
+  }
+
+  redo(): Promise<boolean> {
+    const { future, decisions } = this.#state;
+    const step = future.at(-1);
+    if (!step || !decisions) return Promise.resolve(false);
+    return this.#derive(step.decisions, `redo ${step.name}`, (state) => ({
+      past: [...state.past, { name: step.name, decisions }],
+      future: state.future.slice(0, -1),
+    }));
+  }
+
+  /** Gives up what the engine is doing; the screen stays as it is. */
+  cancel(): void {
+    this.#engine.cancel();
+  }
+
+  select(selection: Selection | null): void {
+    if (same(selection, this.#state.selection)) return;
+    this.#change({ selection }, selection ? 'a site was selected' : 'the selection was cleared');
+  }
+
+  hover(hover: Selection | null): void {
+    if (!same(hover, this.#state.hover)) this.#change({ hover }, 'the pointer moved to another site');
+  }
+
+  setTheme(theme: ThemeChoice): void {
+    this.#change({ theme }, `the theme was set to ${theme}`);
+  }
+
+  setPicture(change: Partial<SceneOptions>, reason: string): void {
+    this.#change({ picture: { ...this.#state.picture, ...change } }, reason);
+  }
+
+  /** Opens the text view at a line, or closes it. */
+  showPlace(shownPlace: ShownPlace | null): void {
+    this.#change({ shownPlace }, shownPlace ? 'a line of a file was asked for' : 'the text view was closed');
+  }
+
+  dismissRefusal(): void {
+    this.#change({ refused: null }, 'the refused file was dismissed');
+  }
+
+  /** Lines of a file of the case, by name. */
+  lines(file: string, first: number, count: number): Promise<LinePage | null> {
+    const source = this.#state.decisions?.sources.find(({ name }) => name === file);
+    return source ? this.#engine.lines(source, first, count) : Promise.resolve(null);
+  }
+
+  /** Files with an id, and a name that is theirs alone: places in a file are told by its name. */
+  #identified(files: readonly FileInput[], beside: readonly SourceFile[]): SourceFile[] {
+    const taken = new Set(beside.map(({ name }) => name));
+    return files.map(({ name, blob }) => {
+      let unique = name;
+      for (let copy = 2; taken.has(unique); copy++) unique = `${name} (${copy})`;
+      taken.add(unique);
+      return { id: `source-${this.#nextSource++}`, name: unique, blob };
+    });
+  }
+
+  #base(): Decisions | null {
+    return this.#underway ?? this.#state.decisions;
+  }
+
+  /** A new decision: derives it and, when it holds, remembers the state before as a step. */
+  #decide(name: string, decisions: Decisions): Promise<boolean> {
+    const before = this.#state.decisions;
+    return this.#derive(decisions, name, (state) => ({
+      past: before
+        ? [...state.past, { name, decisions: before } satisfies Step].slice(-keptSteps)
+        : state.past,
+      future: [],
+    }));
+  }
+
+  async #derive(
+    decisions: Decisions,
+    reason: string,
+    history: (state: WorkbenchState) => Pick<WorkbenchState, 'past' | 'future'>,
+  ): Promise<boolean> {
+    const isLatest = (): boolean => this.#underway === decisions;
+    this.#underway = decisions;
+    this.#change({ progress: { what: reason, share: 0, stage: 'starting' } }, `${reason} began`);
+    try {
+      const derived = await this.#engine.derive(decisions, (share, stage) => {
+        if (isLatest()) this.#change({ progress: { what: reason, share, stage } }, `${stage} went on`);
+      });
+      if (!isLatest()) return false;
+      if (!derived.dossier) return this.#refuse(reason, derived.problems);
+      this.#underway = null;
+      this.#accept(decisions, derived, history(this.#state), reason);
+      return true;
+    } catch (error) {
+      if (!isLatest()) return false;
+      if (!(error instanceof Cancelled)) return this.#refuse(reason, [engineFault(error)]);
+      this.#underway = null;
+      this.#change({ progress: null }, `${reason} was cancelled`);
+      return false;
+    }
+  }
+
+  #accept(
+    decisions: Decisions,
+    derived: DerivedCase,
+    history: Pick<WorkbenchState, 'past' | 'future'>,
+    reason: string,
+  ): void {
+    const sameCrystal = decisions.sources[0]?.id === this.#state.decisions?.sources[0]?.id;
+    const { selection } = this.#state;
+    const siteCount = derived.dossier?.sites.length ?? 0;
+    const keeps = sameCrystal && selection !== null && selection.siteIndex < siteCount;
+    const change = {
+      decisions,
+      derived,
+      ...history,
+      refused: null,
+      progress: null,
+      hover: null,
+      selection: keeps ? selection : null,
+      shownPlace: sameCrystal ? this.#state.shownPlace : null,
+    };
+    this.#change(change, `${reason} is on screen`);
+  }
+
+  #refuse(what: string, problems: readonly Problem[]): false {
+    this.#underway = null;
+    this.#change({ refused: { what, problems }, progress: null }, `${what} failed`);
+    return false;
+  }
+
+  #change(change: Partial<WorkbenchState>, reason: string): void {
+    this.#state = { ...this.#state, ...change };
+    for (const listener of [...this.#listeners]) listener(this.#state, reason);
+  }
+}
+
+function titleOf(files: readonly FileInput[]): string {
+  const [first, ...rest] = files;
+  if (!first) return 'nothing';
+  return rest.length === 0 ? first.name : `${first.name} and ${rest.length} more`;
+}
+
+function same(a: Selection | null, b: Selection | null): boolean {
+  return a === b || (a?.siteIndex === b?.siteIndex && a?.atomId === b?.atomId && a !== null && b !== null);
+}
+
+function engineFault(error: unknown): Problem {
+  const message = error instanceof Error ? error.message : String(error);
+  return problem('error', 'engine-fault', `The engine stopped: ${message}`, {
+    hint: 'What was on screen is still there. Try the file again; if it happens again, it is our fault.',
+  });
+}
+
+export function createStore(engine: EngineClient, initial: Partial<WorkbenchState> = {}): Store {
+  return new Store(engine, initial);
+}
