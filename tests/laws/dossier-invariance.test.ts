@@ -193,7 +193,7 @@ function primitiveModel(name: string, model: Model): Model {
   const seen = new Map<string, Atom>();
   for (const atom of model.atoms) {
     const fractional = apply(toNew, atom.fractional).map((x) => x - Math.floor(x + 1e-6)) as unknown as Vec3;
-    seen.set(fractional.map((x) => Math.round(x * 1e4)).join(), { ...atom, fractional });
+    seen.set(fractional.map((x) => Math.round(x * 997)).join(), { ...atom, fractional });
   }
   return { rows: multiply(basis, model.rows), atoms: [...seen.values()] };
 }
