@@ -89,16 +89,26 @@ function efgDossier(evidence: Evidence, isotope: string | null, settings: Dossie
   return { ...described, projected, symmetryResidual, equivalentSpread: evidence.equivalentSpread, source };
 }
 
+/** One note a reason, naming every field it holds for. */
 function reportUndefined(
   site: Site,
   name: string,
   reasons: Readonly<Record<string, string>>,
   log: ProblemLog,
 ): void {
+  const fieldsOf = new Map<string, string[]>();
   for (const [field, reason] of Object.entries(reasons)) {
-    log.add('note', 'undefined-value', `${site.label}: ${name} ${field} is undefined: ${reason}.`, {
-      place: site.place,
-    });
+    fieldsOf.set(reason, [...(fieldsOf.get(reason) ?? []), field]);
+  }
+  for (const [reason, fields] of fieldsOf) {
+    log.add(
+      'note',
+      'undefined-value',
+      `${site.label} ${name}, ${fields.join(', ')}: undefined, for ${reason}.`,
+      {
+        place: site.place,
+      },
+    );
   }
 }
 

@@ -60,6 +60,11 @@ function efgColumns(): Column[] {
   ];
 }
 
+function operationsSentence({ symmetry }: CrystalDossier): string {
+  const count = `${symmetry.operations.length} operations`;
+  return symmetry.reason.startsWith(count) ? symmetry.reason : `${count}, ${symmetry.reason}`;
+}
+
 function heading(dossier: CrystalDossier): string {
   const { lattice } = dossier;
   const cell = lattice
@@ -74,7 +79,7 @@ function heading(dossier: CrystalDossier): string {
   return [
     dossier.name,
     cell,
-    `${dossier.spaceGroup}; ${dossier.symmetry.operations.length} operations, ${dossier.symmetry.reason}`,
+    `${dossier.spaceGroup}; ${operationsSentence(dossier)}`,
     `${dossier.atomsInCell} atoms in the cell: ${composition}`,
   ].join('\n');
 }
