@@ -1,7 +1,7 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { apply, determinant, identity3, inverse, multiply } from '#src/base/matrix3.ts';
 import { add, subtract } from '#src/base/vector3.ts';
-import { closeGroup, uniqueOperations } from './group.ts';
+import { closeGroup, distinctRotations, uniqueOperations } from './group.ts';
 import type { SymmetryOperation } from './symmetry-operation.ts';
 import { composeOperations, gridTranslation, isCrystallographicRotation } from './symmetry-operation.ts';
 
@@ -32,6 +32,23 @@ function spansLatticeVectors(operations: readonly SymmetryOperation[], basis: Ma
   return unit.every((vector) => lattice.has(apply(basis, vector).map(gridTranslation).join()));
 }
 
+/** One operation on the new axes; null where its rotation part does not fit them. */
+function onNewAxes(
+  { rotation, translation }: SymmetryOperation,
+  basis: Mat3,
+  back: Mat3,
+  origin: Vec3,
+): SymmetryOperation | null {
+  const turned = roundedRotation(multiply(multiply(back, rotation), basis));
+  const moved = subtract(add(translation, apply(rotation, origin)), origin);
+  return turned && { rotation: turned, translation: apply(back, moved) };
+}
+
+/** Translations of the old lattice in the new cell. */
+function oldLattice(back: Mat3): SymmetryOperation[] | null {
+  return closeGroup(unit.map((vector) => translationOperation(apply(back, vector))));
+}
+
 /**
  * The same group on other axes: (a′, b′, c′) = (a, b, c)P with the new basis vectors as columns of P, and the new
  * origin at p in old fractional coordinates, so that x′ = P⁻¹(x − p), W′ = P⁻¹WP, w′ = P⁻¹(w + Wp − p) (International
@@ -43,18 +60,22 @@ export function changeBasis(
   basis: Mat3,
   origin: Vec3 = [0, 0, 0],
 ): SymmetryOperation[] | null {
+  const distinct = distinctRotations(operations).length;
+  const changed = changeBasisWhereFitting(operations, basis, origin);
+  return changed && distinctRotations(changed).length === distinct ? changed : null;
+}
+
+/** As `changeBasis`, but operations that do not fit the new axes are left out: the subgroup that the new cell can hold. */
+export function changeBasisWhereFitting(
+  operations: readonly SymmetryOperation[],
+  basis: Mat3,
+  origin: Vec3 = [0, 0, 0],
+): SymmetryOperation[] | null {
   if (Math.abs(determinant(basis)) < 1e-6 || !spansLatticeVectors(operations, basis)) return null;
   const back = inverse(basis);
-  const changed: SymmetryOperation[] = [];
-  for (const { rotation, translation } of operations) {
-    const turned = roundedRotation(multiply(multiply(back, rotation), basis));
-    if (!turned) return null;
-    const moved = subtract(add(translation, apply(rotation, origin)), origin);
-    changed.push({ rotation: turned, translation: apply(back, moved) });
-  }
-  const centring = closeGroup(unit.map((vector) => translationOperation(apply(back, vector))));
-  if (!centring) return null;
-  return withCentring(changed, centring);
+  const changed = operations.flatMap((operation) => onNewAxes(operation, basis, back, origin) ?? []);
+  const centring = oldLattice(back);
+  return centring && withCentring(changed, centring);
 }
 
 /** Every operation followed by every centring translation, without repetitions. */

@@ -12,7 +12,7 @@ export { operationsOfSetting, settingFromHallNumber, settingName } from './space
 
 /**
  * The tabulated setting whose operations are exactly these (modulo lattice translations, in any order); null where the
- * set is in none of the 530. Of the two pairs of settings with the same operations (No. 68) the first is named.
+ * set is in none of the 530. Of three pairs of settings with the same operations (No. 68, origin choice 1) the first is named.
  */
 export function identifySetting(operations: readonly SymmetryOperation[]): SpaceGroupSetting | null {
   const all = uniqueOperations(operations);

@@ -1,0 +1,152 @@
+import type { Mat3, Vec3, VecFrac } from '#src/base/matrix3.ts';
+import {
+  addMatrices,
+  apply,
+  identity3,
+  inverse,
+  multiply,
+  scaleMatrix,
+  transpose,
+} from '#src/base/matrix3.ts';
+import { subtract } from '#src/base/vector3.ts';
+import type { MoyoDataset } from '@spglib/moyo-wasm';
+import { analyze_cell } from '@spglib/moyo-wasm';
+import { changeBasis } from './basis-change.ts';
+import { distinctRotations, operationSetKey } from './group.ts';
+import type { CellConstants, Lattice } from './lattice.ts';
+import { latticeFromCell } from './lattice.ts';
+import { identifySetting } from './space-group.ts';
+import type { SpaceGroupSetting } from './space-group-settings.ts';
+import { operationsOfSetting, settingFromHallNumber } from './space-group-settings.ts';
+import type { SymmetryOperation } from './symmetry-operation.ts';
+import { applyOperation } from './symmetry-operation.ts';
+
+/** How a cell with its operations relates to a tabulated setting: x(tabulated) = P⁻¹(x − p). */
+export interface StandardFrame {
+  readonly setting: SpaceGroupSetting;
+  /** Tabulated axes as columns, in fractions of the cell's own. */
+  readonly basis: Mat3;
+  /** Tabulated origin in the cell's own fractional coordinates. */
+  readonly origin: Vec3;
+  /** True where the operations are the tabulated ones, letter by letter. */
+  readonly tabulated: boolean;
+}
+
+/** A position in the tabulated setting of a frame. */
+export function inStandardFrame(position: VecFrac, frame: StandardFrame): VecFrac {
+  return apply(inverse(frame.basis), subtract(position, frame.origin));
+}
+
+/** Input of the symmetry search: atoms in fractions of a right-handed cell, with one number for each kind. */
+export interface SearchAtoms {
+  readonly cell: CellConstants;
+  readonly positions: readonly VecFrac[];
+  readonly species: readonly number[];
+}
+
+/** One search by the symmetry library, in its standard setting; null where it fails, which it does by throwing. */
+export function analyseAtoms(atoms: SearchAtoms, toleranceAngstrom: number): MoyoDataset | null {
+  const text = JSON.stringify({
+    lattice: { basis: latticeFromCell(atoms.cell).rows },
+    positions: atoms.positions.map((position) => position.map((x) => x - Math.floor(x))),
+    numbers: atoms.species,
+  });
+  try {
+    return analyze_cell(text, toleranceAngstrom, 'Standard');
+  } catch {
+    return null;
+  }
+}
+
+/** Matrices of the library's results come column by column; ours are row-major. */
+export function matrixOfResult(columns: readonly number[]): Mat3 {
+  return transpose(columns as unknown as Mat3);
+}
+
+/** The library's transformation to its standard setting as a frame. */
+export function frameOfResult(result: MoyoDataset): StandardFrame | null {
+  const setting = settingFromHallNumber(result.hall_number);
+  if (!setting) return null;
+  const basis = matrixOfResult(result.std_linear);
+  return { setting, basis, origin: result.std_origin_shift, tabulated: false };
+}
+
+/** Cell constants of the metric averaged over the rotation parts: exactly as symmetric as the group asks. */
+function symmetricCell(operations: readonly SymmetryOperation[], { toCartesian }: Lattice): CellConstants {
+  const metric = multiply(transpose(toCartesian), toCartesian);
+  const rotations = distinctRotations(operations);
+  const sum = rotations
+    .map((rotation) => multiply(multiply(transpose(rotation), metric), rotation))
+    .reduce(addMatrices);
+  const [aa, ab, ac, , bb, bc, , , cc] = scaleMatrix(1 / rotations.length, sum);
+  const [a, b, c] = [Math.sqrt(aa), Math.sqrt(bb), Math.sqrt(cc)];
+  const degrees = (cosine: number): number => (Math.acos(cosine) * 180) / Math.PI;
+  return { a, b, c, alpha: degrees(bc / (b * c)), beta: degrees(ac / (a * c)), gamma: degrees(ab / (a * b)) };
+}
+
+/** Points without any site symmetry in any group on simple fractions; a pair for each attempt. */
+const generalPoints: readonly (readonly [VecFrac, VecFrac])[] = [
+  [
+    [0.1318, 0.2764, 0.3907],
+    [0.4135, 0.0671, 0.2231],
+  ],
+  [
+    [0.0917, 0.3163, 0.1879],
+    [0.2843, 0.4417, 0.0539],
+  ],
+];
+
+/** A crystal that has just this group: two orbits of general points, each a kind of its own. */
+function crystalOfGroup(
+  operations: readonly SymmetryOperation[],
+  cell: CellConstants,
+  points: readonly [VecFrac, VecFrac],
+): SearchAtoms {
+  const orbit = (point: VecFrac): VecFrac[] =>
+    operations.map((operation) => applyOperation(operation, point));
+  const [first, second] = [orbit(points[0]), orbit(points[1])];
+  return {
+    cell,
+    positions: [...first, ...second],
+    species: [...first.map(() => 1), ...second.map(() => 2)],
+  };
+}
+
+/** Å; the invented crystal is exact, so the search may be strict. */
+const strictTolerance = 1e-4;
+
+/** A well-conditioned cell without any symmetry of its own, for the second attempt. */
+const plainCell: CellConstants = { a: 7.3, b: 8.9, c: 10.7, alpha: 84, beta: 97, gamma: 103 };
+
+function frameFromSearch(
+  operations: readonly SymmetryOperation[],
+  cell: CellConstants,
+  points: readonly [VecFrac, VecFrac],
+): StandardFrame | null {
+  const result = analyseAtoms(crystalOfGroup(operations, cell, points), strictTolerance);
+  const frame = result && frameOfResult(result);
+  if (!frame) return null;
+  const carried = changeBasis(operations, frame.basis, frame.origin);
+  const tabulated = operationsOfSetting(frame.setting);
+  return carried && operationSetKey(carried) === operationSetKey(tabulated) ? frame : null;
+}
+
+/**
+ * Finds the tabulated setting of a group of operations, for this group and never a higher one: by comparison with the
+ * 530 settings, else by a search on an invented crystal that has exactly the group (the lattice made as symmetric as
+ * the group asks, two general orbits of two kinds). The frame is checked by carrying the operations over. Pure
+ * translations of an enlarged cell are allowed. Null where the operations are no space group.
+ */
+export function standardFrame(
+  operations: readonly SymmetryOperation[],
+  lattice: Lattice,
+): StandardFrame | null {
+  const setting = identifySetting(operations);
+  if (setting) return { setting, basis: identity3, origin: [0, 0, 0], tabulated: true };
+  for (const points of generalPoints) {
+    const found = frameFromSearch(operations, symmetricCell(operations, lattice), points);
+    if (found) return found;
+  }
+  const plain = symmetricCell(operations, latticeFromCell(plainCell));
+  return frameFromSearch(operations, plain, generalPoints[0]!);
+}

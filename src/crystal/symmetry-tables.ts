@@ -1,0 +1,169 @@
+import type { VecFrac } from '#src/base/matrix3.ts';
+import { add, scale, subtract } from '#src/base/vector3.ts';
+import initialise, { initSync, wyckoff_positions } from '@spglib/moyo-wasm';
+import { groupTable } from './group-table.ts';
+import type { Lattice } from './lattice.ts';
+import { nearOffsetFinder } from './near-images.ts';
+import { orbitOf } from './orbit.ts';
+import type { StandardFrame } from './standard-frame.ts';
+import { inStandardFrame, standardFrame } from './standard-frame.ts';
+import { operationsOfSetting, settingName, settingsOfNumber } from './space-group-settings.ts';
+import type { FoundSymmetry } from './symmetry-search.ts';
+import { searchSymmetry } from './symmetry-search.ts';
+import type { SymmetryOperation } from './symmetry-operation.ts';
+import { applyOperation } from './symmetry-operation.ts';
+import type { WyckoffPosition } from './wyckoff.ts';
+import { wyckoffPositionOf } from './wyckoff.ts';
+
+/** The name of a group of operations. */
+export interface NamedGroup {
+  /** International Tables number. */
+  readonly number: number;
+  /** Hall number of the tabulated setting (1 to 530); null where the operations stand in no tabulated setting. */
+  readonly hallNumber: number | null;
+  /** Of the tabulated setting (`settingName`), else the short symbol of the space-group type. */
+  readonly hermannMauguin: string;
+  /** null where the operations stand in no tabulated setting. */
+  readonly hall: string | null;
+}
+
+/** Letter and site symmetry of every position; `null` where they could not be told. */
+export interface SiteLetters {
+  readonly wyckoff: readonly (string | null)[];
+  /** Oriented symbols, such as `.m.`, whose places are the axes of the tabulated setting the letters were looked up in. */
+  readonly siteSymmetry: readonly (string | null)[];
+}
+
+export interface SiteDescription extends NamedGroup, SiteLetters {}
+
+export interface SymmetrySearchResult extends NamedGroup, SiteLetters {
+  /** In the basis of the input cell, identity first. */
+  readonly operations: readonly SymmetryOperation[];
+  /** By atom: index of the first atom of its orbit. */
+  readonly orbits: readonly number[];
+}
+
+/** Symmetry tables and search, ready for use without waiting. */
+export interface SymmetryTables {
+  /**
+   * Names the group of the operations and gives Wyckoff letter and oriented site-symmetry symbol (International Tables
+   * A) of each position (fractional) — for exactly this group, never a higher one that the atoms may have. Positions
+   * within the merge distance (Å) of a symmetry element count as on it. In a tabulated setting letters and symbol
+   * orientation are those of that setting as the tables give it; elsewhere the cell is related to a tabulated setting
+   * first, and the places of a symbol refer to the axes of that one. Null where the operations form no space group.
+   */
+  readonly describeSites: (
+    lattice: Lattice,
+    operations: readonly SymmetryOperation[],
+    positions: readonly VecFrac[],
+    mergeDistanceAngstrom: number,
+  ) => SiteDescription | null;
+  /**
+   * Searches the symmetry of all atoms of a cell within a tolerance (Å); `species` holds one number for each kind of
+   * atom. Operations come in the basis of the input cell. Null where the search fails.
+   */
+  readonly search: (
+    lattice: Lattice,
+    positions: readonly VecFrac[],
+    species: readonly number[],
+    toleranceAngstrom: number,
+  ) => SymmetrySearchResult | null;
+}
+
+const positionsByHallNumber = new Map<number, readonly WyckoffPosition[]>();
+
+/** Wyckoff positions of a tabulated setting, general position first. */
+function positionsOf(hallNumber: number): readonly WyckoffPosition[] {
+  const known = positionsByHallNumber.get(hallNumber);
+  if (known) return known;
+  const made = wyckoff_positions(hallNumber).map(({ multiplicity, letter, site_symmetry, coordinates }) => ({
+    multiplicity,
+    letter,
+    siteSymmetry: site_symmetry,
+    coordinates,
+  }));
+  positionsByHallNumber.set(hallNumber, made);
+  return made;
+}
+
+function nameOf({ setting, tabulated }: StandardFrame): NamedGroup {
+  const { number } = setting;
+  const type = settingsOfNumber(number)[0]!.hermannMauguinShort;
+  return {
+    number,
+    hallNumber: tabulated ? setting.hallNumber : null,
+    hermannMauguin: tabulated ? settingName(setting) : type,
+    hall: tabulated ? setting.hall : null,
+  };
+}
+
+/** A site as letters need it: exactly on its elements, with the order of its site-symmetry group. */
+interface PlacedSite {
+  readonly averaged: VecFrac;
+  readonly order: number;
+}
+
+function lettersOf(frame: StandardFrame, sites: readonly PlacedSite[]): SiteLetters {
+  const operations = operationsOfSetting(frame.setting);
+  const positions = positionsOf(frame.setting.hallNumber);
+  const found = sites.map(({ averaged, order }) =>
+    wyckoffPositionOf(inStandardFrame(averaged, frame), order, operations, positions),
+  );
+  return {
+    wyckoff: found.map((entry) => entry?.letter ?? null),
+    siteSymmetry: found.map((entry) => entry?.siteSymmetry ?? null),
+  };
+}
+
+const describeSites: SymmetryTables['describeSites'] = (lattice, operations, positions, mergeDistance) => {
+  if (!groupTable(operations).isGroup) return null;
+  const frame = standardFrame(operations, lattice);
+  if (!frame) return null;
+  const sites = positions.map((position) => {
+    const { averaged, stabiliser } = orbitOf(position, operations, lattice, mergeDistance);
+    return { averaged, order: stabiliser.length };
+  });
+  return { ...nameOf(frame), ...lettersOf(frame, sites) };
+};
+
+/** Positions averaged over the operations that keep each atom. */
+function placedAtoms(
+  { operations, stabilisers }: FoundSymmetry,
+  lattice: Lattice,
+  positions: readonly VecFrac[],
+  reachAngstrom: number,
+): PlacedSite[] {
+  const nearOffset = nearOffsetFinder(lattice, reachAngstrom);
+  return positions.map((position, atom) => {
+    const stabiliser = stabilisers[atom]!;
+    const sum = stabiliser
+      .map((index) => nearOffset(subtract(applyOperation(operations[index]!, position), position)))
+      .reduce((total, near) => add(total, near?.offset ?? [0, 0, 0]), [0, 0, 0] as VecFrac);
+    return { averaged: add(position, scale(1 / stabiliser.length, sum)), order: stabiliser.length };
+  });
+}
+
+const search: SymmetryTables['search'] = (lattice, positions, species, toleranceAngstrom) => {
+  const found = searchSymmetry(lattice, positions, species, toleranceAngstrom);
+  if (!found) return null;
+  const { operations, orbits, frame } = found;
+  const sites = placedAtoms(found, lattice, positions, 10 * toleranceAngstrom);
+  return { operations, orbits, ...nameOf(frame), ...lettersOf(frame, sites) };
+};
+
+const tables: SymmetryTables = { describeSites, search };
+
+/** What the WebAssembly module of the symmetry library can be loaded from. */
+export type SymmetryTablesSource = BufferSource | URL | Response | WebAssembly.Module | string;
+
+/** Starts the symmetry library (`@spglib/moyo-wasm`) from its module's bytes, address or response. Rejects where that is no such module. */
+export async function loadSymmetryTables(source: SymmetryTablesSource): Promise<SymmetryTables> {
+  await initialise({ module_or_path: source });
+  return tables;
+}
+
+/** Starts the symmetry library from its module's bytes, at once: for Node. Throws where the bytes are no such module. */
+export function symmetryTablesFromBytes(bytes: BufferSource): SymmetryTables {
+  initSync({ module: bytes });
+  return tables;
+}
