@@ -154,12 +154,12 @@ class CollectionReader {
     if (text.charCodeAt(p) === code.colon && this.#spacedColon(p)) return p + 1;
     if (kind === charClass.quote) return this.#keyOrValue(readQuoted(this.#scanner, p, true));
     if (kind === charClass.semicolon && this.#scanner.startsLine(p))
-      return this.#keyOrValue(readField(this.#scanner, p));
+      return this.#keyOrValue(readField(this.#scanner, p), true);
     return this.#bare(p);
   }
 
   /** Handles a delimited string that ends at `scanner.end`. */
-  #keyOrValue(value: CifValue): number {
+  #keyOrValue(value: CifValue, isField = false): number {
     const { text, end } = this.#scanner;
     const top = this.open.at(-1)!;
     const isKey = text.charCodeAt(end) === code.colon;
@@ -171,6 +171,12 @@ class CollectionReader {
             'cif-blank-before-colon',
             end,
             'A blank stands between a table key and its colon; it was ignored.',
+          );
+        if (isField)
+          this.#warn(
+            'cif-text-field-key',
+            value.offset,
+            'A table key stands as a text field, where only a quoted string may; it was taken as the key.',
           );
         top.key = value.text;
         return colon + 1;

@@ -41,7 +41,7 @@ export function readItemValues(lexer: CifLexer, first: FirstValue, names: readon
     ends.push(lexer.end);
     token = lexer.next();
   }
-  if (lacksLoop(values, names, lexer.report)) {
+  if (lacksLoop(values, ends, names, lexer.report)) {
     reportMissingLoop(names, values.length, lexer.report);
     return { loop: completeLoop(names, values, names[0]!.offset, lexer.report), value: null, token };
   }
@@ -55,14 +55,20 @@ function recovered(lexer: CifLexer): CifValue | null {
   return shorter;
 }
 
-function lacksLoop(values: readonly CifValue[], names: readonly NameAt[], report: CifReport): boolean {
+/** Of one name only where name and values all stand on lines of their own. */
+function lacksLoop(
+  values: readonly CifValue[],
+  ends: readonly number[],
+  names: readonly NameAt[],
+  report: CifReport,
+): boolean {
   if (names.length > 1) return values.length >= names.length;
   let lineEnd = report.nextLineStart(names[0]!.offset);
-  for (const { offset } of values) {
-    if (offset < lineEnd) return false;
-    lineEnd = report.nextLineStart(offset);
-  }
-  return true;
+  return values.every(({ offset }, index) => {
+    const apart = offset >= lineEnd;
+    lineEnd = report.nextLineStart(ends[index]!);
+    return apart;
+  });
 }
 
 function reportMissingLoop(names: readonly NameAt[], count: number, report: CifReport): void {

@@ -70,6 +70,13 @@ function closed(scanner: CifScanner, start: number, close: number): CifValue {
 
 function unclosed(scanner: CifScanner, start: number, quote: number): CifValue {
   const lineEnd = scanner.lineEndFrom(start);
+  const glued = gluedClose(scanner, start, lineEnd, quote);
+  if (glued > 0) {
+    scanner.missingBlank(glued + 1);
+    const value = closed(scanner, start, glued);
+    if (scanner.text[glued + 1] !== '#') scanner.end = lineEnd;
+    return value;
+  }
   scanner.end = lineEnd;
   let text = scanner.text.slice(start + 1, lineEnd).trimEnd();
   const other = quote === code.singleQuote ? '"' : "'";
@@ -85,6 +92,13 @@ function unclosed(scanner: CifScanner, start: number, quote: number): CifValue {
     },
   );
   return scanner.textValue(text, true, start);
+}
+
+/** The last quote of a line, where only a comment or punctuation follows it without a blank; else -1. */
+function gluedClose(scanner: CifScanner, start: number, lineEnd: number, quote: number): number {
+  const line = scanner.text.slice(start + 1, lineEnd);
+  const last = line.lastIndexOf(String.fromCharCode(quote));
+  return last >= 0 && /^(?:#|[,;]+\s*$)/.test(line.slice(last + 1)) ? start + 1 + last : -1;
 }
 
 /** True where a value may end: before a blank, and inside a list or table before a bracket or colon. */
