@@ -1,3 +1,4 @@
+import type { Problem } from '#src/base/problem.ts';
 import { ProblemLog } from '#src/base/problem.ts';
 import type { ReportProgress } from '#src/base/progress.ts';
 import { unwatched } from '#src/base/progress.ts';
@@ -5,7 +6,6 @@ import type { SourceText } from '#src/bytes/source-text.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
 import type { Reading } from '../reading.ts';
-import type { CifBlock, CifDocument } from './cif-document.ts';
 import { viewBlock } from './interpret/block-view.ts';
 import { interpretBlock } from './interpret/interpret-block.ts';
 import { reportNoStructure, reportSeveral } from './interpret/block-choice.ts';
@@ -28,7 +28,7 @@ export function readCif(source: SourceText, options: ReadCifOptions = {}): Readi
   const document = parseCif(source, log, (share, stage) => progress(share * syntaxShare, stage));
   const structures: Crystal[] = [];
   const tensorSets: TensorSet[] = [];
-  const blocks = blocksOf(document);
+  const { blocks } = document;
   const step = Math.max(1, Math.ceil(blocks.length / 25));
   blocks.forEach((block, i) => {
     if (i % step === 0) progress(syntaxShare + ((1 - syntaxShare) * i) / blocks.length, 'reading structures');
@@ -46,10 +46,12 @@ export function readCif(source: SourceText, options: ReadCifOptions = {}): Readi
     structures,
     tensorSets,
     proposals: [],
-    problems: log.list(),
+    problems: withoutTwins(log.list()),
   };
 }
 
-function blocksOf({ blocks }: CifDocument): readonly CifBlock[] {
-  return blocks;
+/** Syntax says “no data block” of the same text of which we say more plainly what it is. */
+function withoutTwins(problems: readonly Problem[]): readonly Problem[] {
+  if (!problems.some(({ code }) => code === 'cif-not-a-cif')) return problems;
+  return problems.filter(({ code }) => code !== 'cif-no-data-block');
 }

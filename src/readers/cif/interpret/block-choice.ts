@@ -20,8 +20,8 @@ const contents: readonly { readonly start: RegExp; readonly what: string }[] = [
  */
 export function reportNoStructure(source: SourceText, document: CifDocument, log: ProblemLog): void {
   const place = placeOf(source, 0);
-  if (document.blocks.length === 0) {
-    const what = otherKind(source.text);
+  const what = otherKind(source.text);
+  if (document.blocks.length === 0 || what !== null) {
     const message =
       what === 'empty'
         ? 'The file is empty.'
@@ -33,6 +33,7 @@ export function reportNoStructure(source: SourceText, document: CifDocument, log
     });
     return;
   }
+  if (log.list().some(({ code }) => code === 'cif-no-cell')) return;
   const held = whatBlocksHold(document);
   log.add(
     'error',

@@ -13,6 +13,11 @@ export interface CategoryTable {
   readonly loops: readonly CifLoop[];
 }
 
+/** The table of some of a table's loops. */
+export function tableOfLoops(view: BlockView, loops: readonly CifLoop[]): CategoryTable {
+  return loopTable(view, loops);
+}
+
 export interface CategoryColumn {
   /** Spelling of the file. */
   readonly name: string;

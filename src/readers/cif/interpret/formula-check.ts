@@ -73,7 +73,7 @@ export function checkComposition(
   const content = cellContent(sites, multiplicities);
   const fit = bestFit(content, counts, stated.units);
   if (!fit) return { sites, units: stated.units };
-  const units = fit.heavyAgree ? roundUnits(fit.units) : stated.units;
+  const units = fit.heavyAgree && fit.units >= 0.95 ? roundUnits(fit.units) : stated.units;
   report(view, stated, item, content, fit, log);
   return { sites, units };
 }
@@ -147,9 +147,11 @@ function report(
   const atoms = formatFormula(content);
   const found = roundUnits(fit.units);
   const shown = Number(found.toFixed(3));
-  if (!fit.heavyAgree) {
-    const expected = formatFormula(scaled(counts!, fit.units));
-    const times = units === null ? `about ${shown}` : `Z = ${units}`;
+  const partOfUnit = units === null && fit.units < 0.95;
+  if (!fit.heavyAgree || partOfUnit) {
+    const factor = partOfUnit ? 1 : fit.units;
+    const expected = formatFormula(scaled(counts!, factor));
+    const times = units === null ? `Z not given, about ${Number(factor.toFixed(2))},` : `Z = ${units}`;
     log.add(
       'warning',
       'cif-composition-disagrees',

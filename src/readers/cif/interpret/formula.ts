@@ -13,15 +13,31 @@ export function parseFormula(text: string): ElementCounts | null {
     .replace(/[~^'"]/g, '')
     .replace(/<\/?su[bp]>/gi, '')
     .replace(/(\d)\(\d+\)/g, '$1')
+    .replace(/(^|\s)(?:\(2H\)|2H)(?=\d|\s|$)/g, '$1D')
     .replace(/(?:\s|^)\d*[+-](?=\s|$|,)/g, ' ')
     .trim();
   if (clean === '') return null;
+  const capitals = inCapitals(clean) ? titleCased(clean) : clean;
   const counts: Record<string, number> = {};
-  for (const part of splitParts(clean)) {
+  for (const part of splitParts(capitals)) {
     const lead = /^\s*(\d+(?:\.\d+)?)?\s*([\s\S]*)$/.exec(part)!;
     if (!addGroup(lead[2] ?? '', lead[1] === undefined ? 1 : Number(lead[1]), counts)) return null;
   }
   return Object.keys(counts).length > 0 ? counts : null;
+}
+
+/** `CA2 SI O4`: symbols of two capitals with blanks between, so that `SI` is not sulfur and iodine. */
+function inCapitals(text: string): boolean {
+  const words = text.split(/\s+/);
+  return (
+    words.length > 1 &&
+    words.every((word) => /^[A-Z]{1,2}[\d.]*$/.test(word)) &&
+    words.some((word) => /^[A-Z]{2}/.test(word))
+  );
+}
+
+function titleCased(text: string): string {
+  return text.replace(/([A-Z])([A-Z])/g, (_, first: string, second: string) => first + second.toLowerCase());
 }
 
 /** Parts of an addition compound: `Cu S O4 . 5H2O`, `2(C6 H6), H2 O`. A point inside a number does not part. */

@@ -27,7 +27,9 @@ export function reportAgreement(
       continue;
     }
     const sameNumber = identified !== null && identified.number === group.number;
-    if (group.kind === 'number' && (sameNumber || (identified === null && related !== null))) continue;
+    const told = names.groups.some(({ kind, number }) => kind !== 'number' && number === group.number);
+    if (group.kind === 'number' && (told || sameNumber || (identified === null && related !== null)))
+      continue;
     if (sameNumber) {
       if (!othersTold) reportOtherSetting(view, group, identified, log);
       othersTold = true;

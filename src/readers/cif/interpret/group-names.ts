@@ -46,21 +46,31 @@ const numberItems = ['_space_group_it_number', '_symmetry_int_tables_number', '_
 /**
  * Reads every item that names the space group: Hall symbol, Hermann–Mauguin symbol in any of its items (with the cell
  * deciding between settings it leaves open), number. A Hall item that repeats the Hermann–Mauguin symbol is one of those by
- * mistake and counts as such. What names no group is reported (`cif-unknown-group-name`).
+ * mistake and counts as such. What names no group is reported (`cif-unknown-group-name`) with the weight given: a note where
+ * operations are listed anyway.
  */
-export function readGroupNames(view: BlockView, cell: CellConstants | null, log: ProblemLog): GroupNames {
+export function readGroupNames(
+  view: BlockView,
+  cell: CellConstants | null,
+  weight: 'warning' | 'note',
+  log: ProblemLog,
+): GroupNames {
   const groups: NamedGroup[] = [];
+  const push = (item: KnownItem, found: NamedGroup | null): void => {
+    if (found) groups.push(found);
+    else reportUnknown(view, item, weight, log);
+  };
   const symbols = symbolItems.map((name) => knownItem(view, name)).filter((item) => item !== null);
   const hall = knownItem(view, ...hallItems);
   const squeeze = (text: string): string => text.replace(/[\s_]+/g, '');
   const mistaken = hall !== null && symbols.some(({ text }) => squeeze(text) === squeeze(hall.text));
-  if (hall && !mistaken) push(groups, fromHall(hall), view, hall, log);
-  for (const item of symbols) push(groups, fromSymbol(view, item, cell), view, item, log);
-  if (hall && mistaken) push(groups, fromSymbol(view, hall, cell) ?? fromHall(hall), view, hall, log);
+  if (hall && !mistaken) push(hall, fromHall(hall));
+  for (const item of symbols) push(item, fromSymbol(view, item, cell));
+  if (hall && mistaken) push(hall, fromSymbol(view, hall, cell) ?? fromHall(hall));
   const number = knownItem(view, ...numberItems);
   const numeral = number === null ? Number.NaN : Number(number.text.replace(/^['"\s#]+|[\s'"]+$/g, ''));
   const valid = Number.isInteger(numeral) && numeral >= 1 && numeral <= 230;
-  if (number) push(groups, valid ? fromNumber(number, numeral, cell) : null, view, number, log);
+  if (number) push(number, valid ? fromNumber(number, numeral, cell) : null);
   return {
     hermannMauguin: symbols[0]?.text ?? null,
     hall: hall && !mistaken ? hall.text : null,
@@ -69,19 +79,9 @@ export function readGroupNames(view: BlockView, cell: CellConstants | null, log:
   };
 }
 
-function push(
-  groups: NamedGroup[],
-  found: NamedGroup | null,
-  view: BlockView,
-  item: KnownItem,
-  log: ProblemLog,
-): void {
-  if (found) {
-    groups.push(found);
-    return;
-  }
+function reportUnknown(view: BlockView, item: KnownItem, weight: 'warning' | 'note', log: ProblemLog): void {
   log.add(
-    'warning',
+    weight,
     'cif-unknown-group-name',
     `${item.name} is “${item.text}”, which names no space group we know.`,
     {

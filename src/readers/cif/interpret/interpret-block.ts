@@ -10,7 +10,7 @@ import { knownItem, placeOfBlock, placeOfValue } from './block-view.ts';
 import type { CartesianFrame } from './cartesian-frame.ts';
 import { readFrame } from './cartesian-frame.ts';
 import { checkVolume, readCell } from './cell.ts';
-import type { StatedFormula } from './formula-check.ts';
+import type { CheckedComposition, StatedFormula } from './formula-check.ts';
 import { checkComposition, readFormula } from './formula-check.ts';
 import { readGroupNames } from './group-names.ts';
 import { knownElements } from './known-elements.ts';
@@ -20,7 +20,10 @@ import { listedOperations } from './operation-list.ts';
 import { chooseOrigin } from './origin-choice.ts';
 import type { SiteRows } from './site-rows.ts';
 import { readSiteRows } from './site-rows.ts';
+import type { BuiltSites } from './sites.ts';
 import { buildSites } from './sites.ts';
+import { reportSpecies } from './species-report.ts';
+import { settleRivals } from './label-rivals.ts';
 import { reportMultiplicities } from './special-positions.ts';
 import { decideSymmetry } from './symmetry.ts';
 import { readTensorSets } from './tensors.ts';
@@ -48,18 +51,20 @@ export function interpretBlock(
   const lists = listedOperations(view, log);
   const cell = usableCell(view, lists, rows, log);
   const frame = cell ? readFrame(view, cell, log) : null;
-  const { sites, impliedHydrogens } = buildSites(view, rows, knownElements(view, formula.counts), frame, log);
+  const built = buildSites(view, rows, knownElements(view, formula.counts), frame, log);
+  const { sites } = built;
   if (sites.length === 0) return null;
-  if (!cell || !frame) return molecule(view, sites, formula, structureIndex, log);
+  if (!cell || !frame) return molecule(view, built, formula, structureIndex, log);
   checkVolume(view, frame.lattice.volume, log);
-  const choice = decideSymmetry(view, lists, readGroupNames(view, cell, log), cell, log);
-  const symmetry = chooseOrigin(view, choice, sites, frame.lattice, formula, log);
+  const names = readGroupNames(view, cell, lists.length > 0 ? 'note' : 'warning', log);
+  const choice = decideSymmetry(view, lists, names, cell, log);
+  const symmetry = chooseOrigin(view, choice, { sites, rows }, frame.lattice, formula, log);
   const counts = sites.map(({ fractional }) =>
     countImages(fractional as VecFrac, symmetry.operations, frame.lattice),
   );
-  reportMultiplicities(view, rows.table, rows.rows, sites, counts, symmetry.operations.length, log);
+  reportMultiplicities(rows, sites, counts, symmetry.operations.length, log);
   const multiplicities = counts.map(({ merged }) => merged);
-  const checked = checkComposition(view, formula, sites, multiplicities, impliedHydrogens, log);
+  const checked = settled(view, built, multiplicities, formula, log);
   const crystal = crystalOf(view, frame, symmetry, checked.sites, { ...formula, units: checked.units });
   return withTensors(view, crystal, frame, structureIndex, log);
 }
@@ -74,7 +79,7 @@ function usableCell(
   const operations =
     lists.length > 0
       ? uniqueOperations(lists[0]!.operations)
-      : (readGroupNames(view, null, new ProblemLog()).groups[0]?.operations ?? []);
+      : (readGroupNames(view, null, 'note', new ProblemLog()).groups[0]?.operations ?? []);
   const cell = readCell(view, operations, log);
   if (!cell) return null;
   const filler = Math.max(cell.a, cell.b, cell.c) <= 1.001;
@@ -92,7 +97,7 @@ function usableCell(
 
 function molecule(
   view: BlockView,
-  sites: readonly Site[],
+  built: BuiltSites,
   formula: StatedFormula,
   structureIndex: number,
   log: ProblemLog,
@@ -106,12 +111,11 @@ function molecule(
     reason: 'a molecule without a cell',
     stated: true,
   };
-  const checked = checkComposition(
+  const checked = settled(
     view,
+    built,
+    built.sites.map(() => 1),
     formula,
-    sites,
-    sites.map(() => 1),
-    sites.map(() => 0),
     log,
   );
   return withTensors(
@@ -121,6 +125,20 @@ function molecule(
     structureIndex,
     log,
   );
+}
+
+/** Elements and hydrogens settled by the composition, then reported. */
+function settled(
+  view: BlockView,
+  built: BuiltSites,
+  multiplicities: readonly number[],
+  formula: StatedFormula,
+  log: ProblemLog,
+): CheckedComposition {
+  const { sites, species } = settleRivals(built, multiplicities, formula);
+  reportSpecies(sites, species, log);
+  const implied = species.map(({ hydrogens }) => hydrogens);
+  return checkComposition(view, formula, sites, multiplicities, implied, log);
 }
 
 function withTensors(

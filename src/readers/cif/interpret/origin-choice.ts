@@ -5,72 +5,99 @@ import type { Lattice } from '#src/crystal/lattice.ts';
 import { toCartesian } from '#src/crystal/lattice.ts';
 import { findNeighbours } from '#src/crystal/neighbours.ts';
 import { orbitOf } from '#src/crystal/orbit.ts';
+import { elementOf } from '#src/data/elements.ts';
 import type { BlockView } from './block-view.ts';
-import { placeOfBlock } from './block-view.ts';
+import { knownItem, placeOfBlock } from './block-view.ts';
 import { cellContent, fitFormula } from './composition.ts';
+import type { ElementCounts } from './formula.ts';
 import type { StatedFormula } from './formula-check.ts';
 import { mergeDistanceAngstrom } from './multiplicity.ts';
+import type { SiteRows } from './site-rows.ts';
+import { statedMultiplicities } from './special-positions.ts';
 import type { SymmetryChoice } from './symmetry.ts';
+import { readNumber } from './tolerant-number.ts';
 
 /** Two full atoms are never this near to each other, Å; hydrogens are left out of the count. */
 const clashAngstrom = 1;
 /** Atoms looked at for clashes. */
 const mostAtoms = 20_000;
+/** g cm⁻³ of one u Å⁻³ (CODATA 2022). */
+const densityPerUPerAngstrom3 = 1.66053906892;
+const densityTolerance = 0.04;
 
-/** How well atoms and an origin go together; larger is better, compared entry by entry. */
-type Score = readonly [formula: number, clashes: number];
+/** Atoms of a block as far as the choice needs them. */
+export interface PlacedAtoms {
+  readonly sites: readonly Site[];
+  readonly rows: SiteRows;
+}
+
+/** How well atoms and operations go together; larger is better, compared entry by entry. */
+type Score = readonly [formula: number, multiplicities: number, density: number, clashes: number];
 
 /**
- * Where a name leaves origin or setting open, the one whose atoms fit formula × Z, else the one without atoms on top of each
- * other; the first in the tables where several do equally well. The choice is told in any case (`cif-origin-chosen`, `cif-origin-open`).
+ * Where a name leaves origin or setting open, the operations that fit what the file says beside it: formula × Z, then stated
+ * multiplicities, then the density, then no atoms on top of each other. Where that does not decide, the first in the tables,
+ * and `cif-origin-open` warns. The choice is told in any case (`cif-origin-chosen`).
  */
 export function chooseOrigin(
   view: BlockView,
   choice: SymmetryChoice,
-  sites: readonly Site[],
+  atoms: PlacedAtoms,
   lattice: Lattice | null,
   formula: StatedFormula,
   log: ProblemLog,
 ): CrystalSymmetry {
   if (choice.alternatives.length === 0 || !lattice) return choice.symmetry;
   const candidates = [choice.symmetry, ...choice.alternatives];
-  const scores = candidates.map(({ operations }) => scoreOf(sites, operations, lattice, formula));
+  const scores = candidates.map(({ operations }) => scoreOf(view, atoms, operations, lattice, formula));
   let best = 0;
   scores.forEach((score, i) => {
     if (compare(score, scores[best]!) > 0) best = i;
   });
   const chosen = candidates[best]!;
+  const rivals = scores.filter((score) => compare(score, scores[best]!) === 0).length - 1;
+  report(view, chosen, best, rivals, log);
+  return chosen;
+}
+
+function report(
+  view: BlockView,
+  chosen: CrystalSymmetry,
+  best: number,
+  rivals: number,
+  log: ProblemLog,
+): void {
   const place = placeOfBlock(view);
-  const decided = scores.some((score) => compare(score, scores[best]!) < 0);
-  if (!decided) {
+  const open = 'The name of the group leaves its origin or setting open';
+  if (rivals > 0) {
     log.add(
       'warning',
       'cif-origin-open',
-      `The file does not say which origin or setting of the group it means; atoms and formula fit several. Taken: ${chosen.reason}.`,
+      `${open}, and ${rivals + 1} choices fit the atoms equally well. Taken: ${chosen.reason}.`,
       {
         place,
         hint: 'Compare bond lengths, or list the operations in the file.',
       },
     );
-  } else {
-    log.add(
-      best === 0 ? 'note' : 'warning',
-      'cif-origin-chosen',
-      `The file does not say which origin or setting of the group it means; atoms and formula decide. Taken: ${chosen.reason}.`,
-      {
-        place,
-      },
-    );
+    return;
   }
-  return chosen;
+  log.add(
+    best === 0 ? 'note' : 'warning',
+    'cif-origin-chosen',
+    `${open}; atoms and formula decide. Taken: ${chosen.reason}.`,
+    {
+      place,
+    },
+  );
 }
 
 function compare(p: Score, q: Score): number {
-  return p[0] - q[0] || p[1] - q[1];
+  return p.map((value, i) => value - q[i]!).find((difference) => difference !== 0) ?? 0;
 }
 
 function scoreOf(
-  sites: readonly Site[],
+  view: BlockView,
+  { sites, rows }: PlacedAtoms,
   operations: CrystalSymmetry['operations'],
   lattice: Lattice,
   { counts, units }: StatedFormula,
@@ -80,14 +107,27 @@ function scoreOf(
       (image) => image.fractional,
     ),
   );
-  const content = cellContent(
-    sites,
-    orbits.map((images) => images.length),
-  );
+  const multiplicities = orbits.map((images) => images.length);
+  const content = cellContent(sites, multiplicities);
   const exact = counts && units !== null ? fitFormula(content, counts, units) : null;
   const free = counts ? fitFormula(content, counts, null) : null;
   const formula = exact?.heavyAgree ? 2 : free?.heavyAgree ? 1 : 0;
-  return [formula, -clashes(sites, orbits, lattice)];
+  const stated = statedMultiplicities(rows);
+  const matching = stated.filter((value, i) => value === multiplicities[i]).length;
+  return [formula, matching, densityAgrees(view, content, lattice), -clashes(sites, orbits, lattice)];
+}
+
+/** 1 where the density of the content is the stated one, 0 where it is not or none is stated. */
+function densityAgrees(view: BlockView, content: ElementCounts, lattice: Lattice): number {
+  const item = knownItem(view, '_exptl_crystal_density_diffrn', '_exptl_crystal_density_meas');
+  const stated = item ? readNumber(item.text)?.value : undefined;
+  if (stated === undefined || !(stated > 0)) return 0;
+  const mass = Object.entries(content).reduce(
+    (sum, [symbol, n]) => sum + n * (elementOf(symbol)?.massU ?? 0),
+    0,
+  );
+  const density = (mass * densityPerUPerAngstrom3) / lattice.volume;
+  return Math.abs(density / stated - 1) <= densityTolerance ? 1 : 0;
 }
 
 /** Pairs of non-hydrogen atoms that fill their positions together and are too near to each other. */

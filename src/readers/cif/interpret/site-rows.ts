@@ -3,7 +3,7 @@ import type { Place, ProblemLog } from '#src/base/problem.ts';
 import type { BlockView } from './block-view.ts';
 import { placeOfValue, textOf } from './block-view.ts';
 import type { CategoryColumn, CategoryTable } from './category-table.ts';
-import { categoryTable } from './category-table.ts';
+import { categoryTable, tableOfLoops } from './category-table.ts';
 import { readNumber } from './tolerant-number.ts';
 import { isDummy } from './site-species.ts';
 
@@ -41,7 +41,7 @@ const axes = ['x', 'y', 'z'] as const;
  * (`cif-occupancy`). null where the block has no atom list.
  */
 export function readSiteRows(view: BlockView, known: ReadonlySet<string>, log: ProblemLog): SiteRows | null {
-  const table = categoryTable(view, coordinateKeys);
+  const table = atomTable(view, log);
   if (!table) return null;
   const reader = rowReader(view, table, known, log);
   const rows: SiteRow[] = [];
@@ -51,6 +51,36 @@ export function readSiteRows(view: BlockView, known: ReadonlySet<string>, log: P
   }
   reader.close();
   return { table, rows, withoutPosition: reader.withoutPosition(), dummies: reader.dummies() };
+}
+
+/**
+ * The atom list, also where it is cut into several loops (which CIF forbids): a further loop belongs to it where none of its labels
+ * came before; one that repeats labels is another list and is left out (`cif-several-atom-lists`).
+ */
+function atomTable(view: BlockView, log: ProblemLog): CategoryTable | null {
+  const table = categoryTable(view, coordinateKeys);
+  if (!table || table.loops.length < 2) return table;
+  const seen = new Set<string>();
+  const kept = table.loops.filter((loop) => {
+    const part = tableOfLoops(view, [loop]);
+    const column = part.column('_atom_site_label', '_atom_site_id');
+    const labels = Array.from({ length: part.rows }, (_, row) => textOf(column?.at(row)) ?? '');
+    const fresh = labels.every((label) => !seen.has(label));
+    if (fresh) for (const label of labels) seen.add(label);
+    return fresh;
+  });
+  const left = table.loops.length - kept.length;
+  const what = left === 0 ? 'were read as one list' : `repeat labels: ${left} of them were left out`;
+  log.add(
+    'warning',
+    'cif-several-atom-lists',
+    `The block holds ${table.loops.length} loops of atoms, which ${what}.`,
+    {
+      place: placeOfValue(view, table.loops[1]!),
+      allowed: 'one loop of atoms a block',
+    },
+  );
+  return tableOfLoops(view, kept);
 }
 
 interface RowReader {

@@ -15,13 +15,18 @@ export interface SiteSpecies {
   /** How the element was found, and whether another reading was possible. */
   readonly from: 'type' | 'label' | 'nothing';
   readonly certain: boolean;
+  /** Another element of the formula that the label may mean as well: carbon for `CO1` read as cobalt. */
+  readonly rival: string | null;
   /** False where a mixture named no shares and equal ones were taken. */
   readonly sharesGiven: boolean;
 }
 
-/** Names of points that are no atoms: ring centres, centroids, lone pairs, vacancies. Common practice, no source. */
-const dummyNames =
-  /^(x|xx|du|dum|dummy|cg|cgs|cnt|cent|centroid|ctr|ct|lp|va|vac|vacancy|void|hole|\u25a1)(?![a-z])/i;
+/** Names of points that are no atoms: ring centres, residual peaks, lone pairs, vacancies. Common practice, no source. */
+const dummyTypes =
+  /^(x|xx|du|dum|dummy|cg|cgs|cnt|cent|centroid|ctr|lp|va|vac|vacancy|void|hole|q|\u25a1)(?![a-z])/i;
+/** As labels, where the type says nothing; `CG1` in capitals may be a carbon, `Cg1` is the centre of a ring. */
+const dummyLabels =
+  /^(X|XX|Du|DU|Dum|DUM|Dummy|DUMMY|Cg|Cgs|Cnt|CNT|Cent|CENT|Centroid|Ctr|CTR|Ct|Lp|LP|Va|Vac|Q|\u25a1)(?![a-z])/;
 
 /** True for a row that stands for no atom: `dum` as calculation flag, or a dummy name where no element is told. */
 export function isDummy(
@@ -31,12 +36,9 @@ export function isDummy(
   known: ReadonlySet<string>,
 ): boolean {
   if (calcFlag?.toLowerCase() === 'dum') return true;
-  const name = typeText ?? label;
-  if (!dummyNames.test(name)) return false;
-  if (parseMixture(name) !== null && typeText !== null) return false;
-  if (typeText !== null) return elementFromKnown(label, known) === null;
-  const reading = elementFromLabel(label, known);
-  return reading === null || !known.has(reading.element);
+  if (typeText === null) return dummyLabels.test(label);
+  if (!dummyTypes.test(typeText) || parseMixture(typeText) !== null) return false;
+  return dummyLabels.test(label) || elementFromKnown(label, known) === null;
 }
 
 /**
@@ -58,7 +60,10 @@ export function speciesOfSite(
   if (mixture) return fromMixture(mixture, 'label');
   const reading = elementFromLabel(label, known);
   if (reading && (known.size === 0 || known.has(reading.element))) {
-    return ofElement(reading.element, 'label', reading.certain);
+    return {
+      ...ofElement(reading.element, 'label', reading.certain),
+      rival: rivalOf(label, reading.element, known),
+    };
   }
   if (/^[HD](?![a-z])/.test(label)) return ofElement(label.startsWith('D') ? 'D' : 'H', 'label', false);
   const inside = elementFromKnown(label, known);
@@ -66,6 +71,14 @@ export function speciesOfSite(
   if (typed) return fromMixture(typed, 'type');
   if (reading) return ofElement(reading.element, 'label', false);
   return ofElement('X', 'nothing', false);
+}
+
+/** The other of the two readings, one letter or two, where the formula has both. */
+function rivalOf(label: string, taken: string, known: ReadonlySet<string>): string | null {
+  const letters = /[A-Za-z]{2}/.exec(label)?.[0] ?? '';
+  const readings = [letters, letters.slice(0, 1)].map((text) => elementOf(text)?.symbol ?? '');
+  if (!readings.every((symbol) => known.has(symbol))) return null;
+  return readings.find((symbol) => symbol !== taken) ?? null;
 }
 
 /** Two capitals as a type, such as `CO` or `HO`, that name no element of the formula while their letters alone do. */
@@ -98,6 +111,7 @@ function fromMixture(mixture: SpeciesMixture, from: 'type' | 'label'): SiteSpeci
     hydrogens: species.reduce((sum, one) => sum + one.hydrogens * one.share, 0),
     from,
     certain: true,
+    rival: null,
     sharesGiven,
   };
 }
@@ -111,6 +125,7 @@ function ofElement(element: string, from: SiteSpecies['from'], certain: boolean)
     hydrogens: 0,
     from,
     certain,
+    rival: null,
     sharesGiven: true,
   };
 }

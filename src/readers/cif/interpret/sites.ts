@@ -12,16 +12,15 @@ import type { SiteSpecies } from './site-species.ts';
 import { speciesOfSite } from './site-species.ts';
 import { readNumber } from './tolerant-number.ts';
 
-/** Sites of a block, with the hydrogens that a type such as `OH` implies (one number a site, not yet counted). */
+/** Sites of a block, with what was found out about their elements (one entry a site). */
 export interface BuiltSites {
   readonly sites: readonly Site[];
-  readonly impliedHydrogens: readonly number[];
+  readonly species: readonly SiteSpecies[];
 }
 
 /**
- * Sites from the rows of the atom list: element, shares and charge from type symbol or label (`cif-element-guessed`,
- * `cif-unknown-element`, `cif-mixture-shares`), positions in the frame of the lattice, displacement, disorder, flags,
- * attached hydrogens. Labels that repeat are noted (`cif-repeated-labels`): the index is the key, never the label. `frame` null
+ * Sites from the rows of the atom list: element, shares and charge from type symbol or label, positions in the frame of the
+ * lattice (`cif-frame-assumed` for Cartesian coordinates without a transform), displacement, disorder, flags, attached hydrogens. Labels that repeat are noted (`cif-repeated-labels`): the index is the key, never the label. `frame` null
  * is a molecule: rows then need Cartesian coordinates and the others are dropped with `cif-no-cell`.
  */
 export function buildSites(
@@ -54,9 +53,9 @@ export function buildSites(
       place: row.place,
     };
   });
-  reportSpecies(placed, species, log);
   reportLabels(placed, log);
-  return { sites, impliedHydrogens: species.map(({ hydrogens }) => hydrogens) };
+  if (frame?.source === 'default') reportAssumedFrame(placed, frame, log);
+  return { sites, species };
 }
 
 function positionOf(row: SiteRow, frame: CartesianFrame | null): Pick<Site, 'fractional' | 'cartesian'> {
@@ -103,45 +102,17 @@ function reportNoCell(rows: readonly SiteRow[], placed: readonly SiteRow[], log:
   );
 }
 
-function reportSpecies(rows: readonly SiteRow[], species: readonly SiteSpecies[], log: ProblemLog): void {
-  const told = (
-    code: string,
-    severity: 'warning' | 'note',
-    test: (one: SiteSpecies) => boolean,
-    say: (list: string, count: number) => string,
-  ): void => {
-    const indices = species.flatMap((one, i) => (test(one) ? [i] : []));
-    if (indices.length === 0) return;
-    const shown = indices
-      .slice(0, 8)
-      .map((i) => `${rows[i]!.label} = ${species[i]!.shares.map(({ element }) => element).join('/')}`);
-    const list = shown.join(', ') + (indices.length > 8 ? ', …' : '');
-    log.add(severity, code, say(list, indices.length), { place: rows[indices[0]!]!.place });
-  };
-  told(
-    'cif-unknown-element',
+function reportAssumedFrame(rows: readonly SiteRow[], { lattice }: CartesianFrame, log: ProblemLog): void {
+  const first = rows.find(({ fractional }) => fractional === null);
+  if (!first) return;
+  log.add(
     'warning',
-    ({ from }) => from === 'nothing',
-    (list, count) => `${count} atoms have no element that could be told from type or label: ${list}.`,
-  );
-  told(
-    'cif-element-guessed',
-    'warning',
-    ({ from, certain }) => from !== 'nothing' && !certain,
-    (list, count) => `The element of ${count} atoms is a guess from the label: ${list}.`,
-  );
-  told(
-    'cif-element-from-label',
-    'note',
-    ({ from, certain }) => from === 'label' && certain,
-    (list, count) => `The element of ${count} atoms was read from the label: ${list}.`,
-  );
-  told(
-    'cif-mixture-shares',
-    'warning',
-    ({ sharesGiven }) => !sharesGiven,
-    (list, count) =>
-      `${count} positions hold several elements without their shares; equal shares were taken: ${list}.`,
+    'cif-frame-assumed',
+    `Atoms have Cartesian coordinates, and the file does not say how their axes lie in the cell; assumed: ${lattice.frame}.`,
+    {
+      place: first.place,
+      hint: 'Give _atom_sites_Cartn_tran_matrix_11 to _33.',
+    },
   );
 }
 

@@ -1,22 +1,18 @@
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { Site } from '#src/crystal/crystal.ts';
-import type { BlockView } from './block-view.ts';
-import { placeOfValue, textOf } from './block-view.ts';
-import type { CategoryTable } from './category-table.ts';
 import type { ImageCounts } from './multiplicity.ts';
 import { farAngstrom, mergeDistanceAngstrom, nearAngstrom } from './multiplicity.ts';
-import type { SiteRow } from './site-rows.ts';
+import { textOf } from './block-view.ts';
+import type { SiteRows } from './site-rows.ts';
 import { readNumber } from './tolerant-number.ts';
 
 /**
  * Reports sites whose number of images depends on the merging distance between 0.01 and 0.3 Å (`cif-near-special-position`) and
- * stated multiplicities that are neither the number of images nor the order of the site symmetry
+ * stated multiplicities that are neither the number of images nor the order of the site symmetry nor 1
  * (`cif-multiplicity-disagrees`): the stated ones are only compared, never used.
  */
 export function reportMultiplicities(
-  view: BlockView,
-  table: CategoryTable,
-  rows: readonly SiteRow[],
+  rows: SiteRows,
   sites: readonly Site[],
   counts: readonly ImageCounts[],
   operationCount: number,
@@ -37,40 +33,44 @@ export function reportMultiplicities(
       },
     );
   });
-  reportStated(view, table, rows, sites, counts, operationCount, log);
+  reportStated(rows, sites, counts, operationCount, log);
+}
+
+/** Multiplicity of every row as the file states it; null where it does not. Practice differs: some print the order of the site symmetry. */
+export function statedMultiplicities({ table, rows }: SiteRows): (number | null)[] {
+  const column = table.column('_atom_site_symmetry_multiplicity', '_atom_site_site_symmetry_multiplicity');
+  return rows.map(({ row }) => {
+    const text = textOf(column?.at(row));
+    return text === null ? null : (readNumber(text)?.value ?? null);
+  });
 }
 
 function reportStated(
-  view: BlockView,
-  table: CategoryTable,
-  rows: readonly SiteRow[],
+  rows: SiteRows,
   sites: readonly Site[],
   counts: readonly ImageCounts[],
   operationCount: number,
   log: ProblemLog,
 ): void {
-  const column = table.column('_atom_site_symmetry_multiplicity', '_atom_site_site_symmetry_multiplicity');
-  if (!column) return;
-  const differing: string[] = [];
-  let first: ReturnType<typeof placeOfValue> | null = null;
-  const rowOf = new Map(rows.map((row) => [row.place, row.row]));
-  sites.forEach((site, i) => {
-    const value = column.at(rowOf.get(site.place) ?? -1);
-    const text = textOf(value);
-    const stated = text === null ? null : (readNumber(text)?.value ?? null);
+  const stated = statedMultiplicities(rows);
+  const differing = sites.flatMap((site, i) => {
+    const value = stated[i] ?? null;
     const { merged } = counts[i]!;
-    if (!value || stated === null || stated === merged || stated * merged === operationCount || stated === 1)
-      return;
-    differing.push(`${site.label} ${stated} instead of ${merged}`);
-    first ??= placeOfValue(view, value);
+    const fine = value === null || value === merged || value * merged === operationCount || value === 1;
+    return fine ? [] : [{ site, text: `${site.label} ${value} instead of ${merged}` }];
   });
+  const [first] = differing;
   if (!first) return;
+  const shown = differing
+    .slice(0, 6)
+    .map(({ text }) => text)
+    .join(', ');
   log.add(
     'note',
     'cif-multiplicity-disagrees',
-    `${differing.length} stated multiplicities differ from those of the operations: ${differing.slice(0, 6).join(', ')}${differing.length > 6 ? ', …' : ''}. The operations count.`,
+    `${differing.length} stated multiplicities differ from those of the operations: ${shown}${differing.length > 6 ? ', …' : ''}. The operations count.`,
     {
-      place: first,
+      place: first.site.place,
     },
   );
 }
