@@ -62,7 +62,7 @@ function decodeUnpacked(name: string, bytes: Uint8Array, before: readonly Proble
   if (nul > 0) all.push(nulWarning(name, text, nul));
   // A space keeps every offset where it was.
   const source = sourceFromText(name, nul === 0 ? text : text.replaceAll('\0', ' '), encoding);
-  if (source.text.trim() === '') all.push(emptyFile(name));
+  if (source.text.trim() === '') return { source: null, problems: [...all, emptyFile(name)] };
   return { source, problems: all };
 }
 
@@ -170,9 +170,14 @@ function nulWarning(name: string, text: string, count: number): Problem {
   const at = text.indexOf('\0');
   const before = text.slice(0, at).split(/\r\n|\r|\n/);
   const column = (before.at(-1)?.length ?? 0) + 1;
-  return problem('warning', 'bytes-nul', `${count} NUL characters were read as spaces.`, {
-    place: { file: name, line: before.length, column },
-    got: `${count} NUL characters`,
-    hint: 'The file may have been damaged on the way; compare it with the original.',
-  });
+  return problem(
+    'warning',
+    'bytes-nul',
+    count === 1 ? 'A NUL character was read as a space.' : `${count} NUL characters were read as spaces.`,
+    {
+      place: { file: name, line: before.length, column },
+      got: `NUL, ${count} in all`,
+      hint: 'The file may have been damaged on the way; compare it with the original.',
+    },
+  );
 }

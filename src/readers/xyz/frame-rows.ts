@@ -7,7 +7,7 @@ import type { ColumnPlan } from './column-plan.ts';
 import type { Frame } from './frames.ts';
 import { isBlank } from './frames.ts';
 import type { Column } from './properties.ts';
-import { isMissingMark, readReal } from './real-number.ts';
+import { isAbsentMark, isMissingMark, readReal } from './real-number.ts';
 import type { RowFields } from './row-fields.ts';
 import { fieldText, splitRow } from './row-fields.ts';
 import type { SpeciesField } from './species-field.ts';
@@ -35,6 +35,8 @@ export interface FrameRows {
   readonly atoms: readonly RowAtom[];
   /** One list a tensor column of the plan. */
   readonly tensors: readonly (readonly RowTensor[])[];
+  /** For each tensor column, the atoms with a mark such as `nan` in all nine places. */
+  readonly absent: readonly number[];
   /** One list a candidate column: what a guess needs. */
   readonly candidates: readonly (readonly Mat3[])[];
   /** Fields of the widest row. */
@@ -59,12 +61,14 @@ const candidateSample = 2000;
 /**
  * Reads the rows of one frame after a plan. A row without usable coordinates is left out (`xyz-bad-coordinate`); of a
  * row shorter than the plan what stands there is kept (`xyz-short-row`), a longer one keeps its first fields
- * (`xyz-long-row`); a tensor with a missing or unreadable component is left out (`xyz-missing-tensor`, `xyz-bad-tensor`).
+ * (`xyz-long-row`); a tensor with a missing or unreadable component is left out (`xyz-missing-tensor`, `xyz-bad-tensor`),
+ * one that is missing as a whole is counted.
  */
 export function readRows(context: RowContext, frame: Frame, plan: ColumnPlan, plain: boolean): FrameRows {
   const { source, fields } = context;
   const atoms: RowAtom[] = [];
   const tensors: RowTensor[][] = plan.tensors.map(() => []);
+  const absent = plan.tensors.map(() => 0);
   const candidates: Mat3[][] = plan.candidates.map(() => []);
   let widest = 0;
   for (let line = frame.firstRow; line < frame.endLine; line++) {
@@ -78,7 +82,8 @@ export function readRows(context: RowContext, frame: Frame, plan: ColumnPlan, pl
     atoms.push(readAtom(context, line, plan, cartesian));
     plan.tensors.forEach(({ column, toCanonical }, index) => {
       const tensor = readTensor(context, line, column);
-      if (tensor === null) return;
+      if (tensor === 'absent') absent[index] = (absent[index] ?? 0) + 1;
+      if (tensor === null || tensor === 'absent') return;
       tensors[index]?.push({
         atom: atoms.length - 1,
         tensor: toCanonical === 1 ? tensor : scaleMatrix(toCanonical, tensor),
@@ -91,7 +96,7 @@ export function readRows(context: RowContext, frame: Frame, plan: ColumnPlan, pl
       if (tensor !== null) candidates[index]?.push(tensor);
     });
   }
-  return { atoms, tensors, candidates, widest };
+  return { atoms, tensors, absent, candidates, widest };
 }
 
 function placeOfField({ source, fields }: RowContext, line: number, field: number): Place {
@@ -170,9 +175,10 @@ function speciesOf(context: RowContext, text: string, line: number, field: numbe
   return read;
 }
 
-function readTensor(context: RowContext, line: number, column: Column): Mat3 | null {
+function readTensor(context: RowContext, line: number, column: Column): Mat3 | 'absent' | null {
   const tensor = nineNumbers(context, column);
   if (tensor !== null) return tensor;
+  if (isAbsent(context, column)) return 'absent';
   const { source, fields, log } = context;
   // A short row has been reported; only what stands there and is no number needs words.
   for (let field = column.first; field < Math.min(column.first + 9, fields.count); field++) {
@@ -192,6 +198,13 @@ function readTensor(context: RowContext, line: number, column: Column): Mat3 | n
     return null;
   }
   return null;
+}
+
+function isAbsent({ source, fields }: RowContext, column: Column): boolean {
+  for (let i = 0; i < 9; i++) {
+    if (!isAbsentMark(fieldText(source.text, fields, column.first + i))) return false;
+  }
+  return true;
 }
 
 function nineNumbers({ source, fields }: RowContext, column: Column): Mat3 | null {

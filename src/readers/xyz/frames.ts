@@ -136,7 +136,7 @@ function reportSkipped(
     log.add(
       'error',
       'xyz-rows-beyond-count',
-      `Line ${before.countLine + 1} counts ${before.promised} atoms, but more rows like atoms follow; they were not read.`,
+      `The count in line ${before.countLine + 1} is ${before.promised}, but more rows like atoms follow; they were not read.`,
       {
         place,
         got: shown,
@@ -158,7 +158,7 @@ function reportTruncated(source: SourceText, frame: Frame, log: ProblemLog): voi
   log.add(
     'error',
     'xyz-truncated',
-    `Line ${frame.countLine + 1} counts ${frame.promised} atoms, but only ${frame.rows} rows follow; these were read.`,
+    `The count in line ${frame.countLine + 1} is ${frame.promised}, but fewer rows follow (${frame.rows}); these were read.`,
     {
       place: { file: source.name, line: frame.countLine + 1, column: 1 },
       got: `${frame.rows} rows`,

@@ -156,6 +156,7 @@ function readOneFrame(
     });
     return;
   }
+  plan.tensors.forEach(({ column }, index) => noteAbsent(column.name, rows, index, place, log));
   const labels = labelsOf(rows.atoms);
   const made = plan.position !== null;
   const structureIndex = made ? collected.structures.length : null;
@@ -167,6 +168,13 @@ function readOneFrame(
   }
   collected.tensorSets.push(...tensorSets(plan, rows, cell, structureIndex, suffix, source.name));
   propose(plan, rows, structureIndex, place.line, collected);
+}
+
+function noteAbsent(name: string, rows: FrameRows, index: number, place: Place, log: ProblemLog): void {
+  const absent = rows.absent[index] ?? 0;
+  if (absent === 0) return;
+  const message = `${absent} of ${rows.atoms.length} atoms have no ${name}: all nine components are marked as missing.`;
+  log.add('note', 'xyz-tensor-absent', message, { place });
 }
 
 function noteExtraColumns(widest: number, place: Place, collected: Collected, log: ProblemLog): void {

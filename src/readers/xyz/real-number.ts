@@ -20,6 +20,11 @@ export function readReal(text: string): number | null {
   return Number.isFinite(value) ? value : null;
 }
 
+/** True for `nan`, `N/A`, `?` and the like, with which a whole tensor is left out on purpose; not for `*****`. */
+export function isAbsentMark(text: string): boolean {
+  return isMissingMark(text) && !text.includes('*');
+}
+
 /** True for `nan`, `inf`, `*****`, `N/A`, `?` and the like: a number is meant, but none is there. */
 export function isMissingMark(text: string): boolean {
   return missingMark.test(text);

@@ -127,6 +127,16 @@ describe('tensors', () => {
     ]);
   });
 
+  it('counts atoms whose tensor is left out as a whole in one note', () => {
+    const absent = Array(9).fill('nan').join(' ');
+    const { tensorSets, problems } = read(
+      `3\n${header}:efg:R:9\nSi 0 0 0 ${absent}\nO 1 0 0 ${nine}\nSi 2 0 0 ${absent}\n`,
+    );
+    expect(tensorSets[0]?.entries.map(({ atomIndex }) => atomIndex)).toEqual([1]);
+    expect(problems).toMatchObject([{ code: 'xyz-tensor-absent', severity: 'note', line: 2 }]);
+    expect(problems[0]?.message).toContain('2 of 3 atoms');
+  });
+
   it('keeps tensors without positions, but makes no structure', () => {
     const reading = read(`2\n${cell} Properties=site:S:1:shielding:R:9\nSi1 ${nine}\nO1 ${nine}\n`);
     expect(reading.structures).toEqual([]);
