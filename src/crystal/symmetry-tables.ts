@@ -163,7 +163,7 @@ export async function loadSymmetryTables(source: SymmetryTablesSource): Promise<
 }
 
 /** Starts the symmetry library from its module's bytes, at once: for Node. Throws where the bytes are no such module. */
-export function symmetryTablesFromBytes(bytes: BufferSource): SymmetryTables {
-  initSync({ module: bytes });
+export function symmetryTablesFromBytes(bytes: Uint8Array | ArrayBuffer): SymmetryTables {
+  initSync({ module: bytes as BufferSource });
   return tables;
 }
