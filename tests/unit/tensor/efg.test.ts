@@ -68,6 +68,12 @@ describe('describeEfg', () => {
     expect(described.axes.includes(null)).toBe(false);
   });
 
+  it('opens the sign where |Vxx| falls below √(2/3) times the noise', () => {
+    const tensor = diagonalMatrix([-0.98, -0.02, 1]);
+    expect(describeEfg(tensor, null, null, 0.0244).signDetermined).toBe(true);
+    expect(describeEfg(tensor, null, null, 0.0246).signDetermined).toBe(false);
+  });
+
   it('keeps only the unique axis at η = 0', () => {
     const described = describeEfg(diagonalMatrix([-0.1, 0.2, -0.1]), nuclide('27Al'));
     expect(described.axes).toEqual([null, null, [0, 1, 0]]);
