@@ -30,7 +30,7 @@ export interface BondOptions {
 }
 
 /** Pairs within bonding reach that are looked at per atom before the arrangement counts as a heap on one spot. */
-const pairsPerAtom = 500;
+const pairsPerAtom = 300;
 
 /** Two atoms within reach that can be there at once. */
 interface Contact {

@@ -45,9 +45,9 @@ export function findNeighbours(
   options: NeighbourOptions = {},
 ): NeighbourPairs {
   const { periodic = [true, true, true], maximumPairs = 20_000_000 } = options;
-  const found = new PairCollector(maximumPairs);
-  if (!(cutoffAngstrom > 0 && cutoffAngstrom < Infinity)) return found.result(0);
   const basis = periodicBasis(lattice, periodic);
+  const found = new PairCollector(maximumPairs, basis);
+  if (!(cutoffAngstrom > 0 && cutoffAngstrom < Infinity)) return found.result(0);
   const grid = sortIntoBins(basis, flatten(positions), cutoffAngstrom);
   const steps = halfStencil(grid.reach);
   let tested = 0;
@@ -89,21 +89,14 @@ function searchBinPair(
       const dz = wrapped[3 * j + 2]! - z;
       const squared = dx * dx + dy * dy + dz * dz;
       if (squared > cutoff * cutoff) continue;
-      const turns: Vec3 = [
-        other.turn[0] + wraps[3 * i]! - wraps[3 * j]!,
-        other.turn[1] + wraps[3 * i + 1]! - wraps[3 * j + 1]!,
-        other.turn[2] + wraps[3 * i + 2]! - wraps[3 * j + 2]!,
-      ];
-      found.add(i, j, latticeShift(basis, turns), Math.sqrt(squared));
+      const u = other.turn[0] + wraps[3 * i]! - wraps[3 * j]!;
+      const v = other.turn[1] + wraps[3 * i + 1]! - wraps[3 * j + 1]!;
+      const w = other.turn[2] + wraps[3 * i + 2]! - wraps[3 * j + 2]!;
+      found.add(i, j, u, v, w, Math.sqrt(squared));
       if (found.full) return tested;
     }
   }
   return tested;
-}
-
-/** Multiples of the basis rows as multiples of a, b, c. */
-function latticeShift({ translations: [p, q, r] }: PeriodicBasis, [u, v, w]: Vec3): Vec3 {
-  return [u * p[0] + v * q[0] + w * r[0], u * p[1] + v * q[1] + w * r[1], u * p[2] + v * q[2] + w * r[2]];
 }
 
 function basisToCartesian({ rows: m }: PeriodicBasis): PeriodicBasis['rows'] {
@@ -136,30 +129,37 @@ class PairCollector {
   #distances = new Float64Array(64);
   #count = 0;
   readonly #maximum: number;
+  readonly #translations: PeriodicBasis['translations'];
   #stopped = false;
 
-  constructor(maximum: number) {
+  constructor(maximum: number, { translations }: PeriodicBasis) {
     this.#maximum = maximum;
+    this.#translations = translations;
   }
 
   get full(): boolean {
     return this.#stopped;
   }
 
-  add(i: number, j: number, shift: Vec3, distance: number): void {
+  /** u, v, w: multiples of the rows of the basis by which the second position is moved. */
+  add(i: number, j: number, u: number, v: number, w: number, distance: number): void {
     if (this.#count >= this.#maximum) {
       this.#stopped = true;
       return;
     }
-    const turned = i > j || (i === j && isNegative(shift));
+    const [p, q, r] = this.#translations;
+    const a = u * p[0] + v * q[0] + w * r[0];
+    const b = u * p[1] + v * q[1] + w * r[1];
+    const c = u * p[2] + v * q[2] + w * r[2];
+    const backwards = a < 0 || (a === 0 && (b < 0 || (b === 0 && c < 0)));
+    const turned = i > j || (i === j && backwards);
     const at = this.#count++;
     if (at === this.#from.length) this.#grow();
     this.#from[at] = turned ? j : i;
     this.#to[at] = turned ? i : j;
-    for (let axis = 0; axis < 3; axis++) {
-      const multiple = shift[axis as 0 | 1 | 2];
-      this.#shifts[3 * at + axis] = turned ? -multiple : multiple;
-    }
+    this.#shifts[3 * at] = turned ? -a : a;
+    this.#shifts[3 * at + 1] = turned ? -b : b;
+    this.#shifts[3 * at + 2] = turned ? -c : c;
     this.#distances[at] = distance;
   }
 
@@ -188,9 +188,4 @@ class PairCollector {
 function copyInto<Numbers extends Int32Array | Float64Array>(target: Numbers, source: Numbers): Numbers {
   target.set(source);
   return target;
-}
-
-/** Whether the first multiple that is not zero is negative. */
-function isNegative([u, v, w]: Vec3): boolean {
-  return u < 0 || (u === 0 && (v < 0 || (v === 0 && w < 0)));
 }

@@ -54,7 +54,7 @@ const ice: TestStructure = {
   ],
 };
 
-/** Ammonium chloride, phase III (ordered): Levy & Peterson, Phys. Rev. 86, 766 (1952); from memory. */
+/** Ammonium chloride, ordered phase: Levy & Peterson, Phys. Rev. 86, 766 (1952); from memory. */
 const ammoniumChloride: TestStructure = {
   cell: [3.8758, 3.8758, 3.8758, 90, 90, 90],
   hall: 'P -4 2 3',
