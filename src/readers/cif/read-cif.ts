@@ -29,10 +29,9 @@ export function readCif(source: SourceText, options: ReadCifOptions = {}): Readi
   const structures: Crystal[] = [];
   const tensorSets: TensorSet[] = [];
   const { blocks } = document;
-  const step = Math.max(1, Math.ceil(blocks.length / 25));
+  const report = blockProgress(progress, blocks.length);
   blocks.forEach((block, i) => {
-    if (i % step === 0) progress(syntaxShare + ((1 - syntaxShare) * i) / blocks.length, 'reading structures');
-    const read = interpretBlock(viewBlock(block, source), structures.length, log);
+    const read = interpretBlock(viewBlock(block, source), structures.length, log, report(i));
     if (!read) return;
     structures.push(read.crystal);
     tensorSets.push(...read.tensorSets);
@@ -47,6 +46,17 @@ export function readCif(source: SourceText, options: ReadCifOptions = {}): Readi
     tensorSets,
     proposals: [],
     problems: withoutTwins(log.list()),
+  };
+}
+
+/** Progress inside each of a few blocks, else one report for every twenty-fifth of them. */
+function blockProgress(progress: ReportProgress, count: number): (block: number) => ReportProgress {
+  const step = Math.ceil(count / 25);
+  return (block) => {
+    const start = syntaxShare + ((1 - syntaxShare) * block) / count;
+    if (block % step === 0) progress(start, 'reading structures');
+    if (count > 3) return unwatched;
+    return (share, stage) => progress(start + ((1 - syntaxShare) * share) / count, stage);
   };
 }
 

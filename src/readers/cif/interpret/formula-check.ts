@@ -94,33 +94,30 @@ function settleHydrogens(
   implied: readonly number[],
   log: ProblemLog,
 ): readonly Site[] {
-  const agrees = (variant: readonly Site[]): boolean => {
-    const fit = counts && bestFit(cellContent(variant, multiplicities), counts, units);
-    return fit?.heavyAgree === true && fit.hydrogenAgrees;
-  };
   const attached = sites.some(({ attachedHydrogens }) => attachedHydrogens > 0);
-  if (!attached && !implied.some((count) => count > 0)) return sites;
-  if (!agrees(sites)) {
-    const without = sites.map((site) => ({ ...site, attachedHydrogens: 0 }));
-    if (attached && agrees(without)) {
-      log.add(
-        'note',
-        'cif-attached-hydrogens-have-sites',
-        'Hydrogens counted on other atoms stand in the atom list as well; they were not counted twice.',
-        {
-          place: placeOfBlock(view),
-        },
-      );
-      return without;
-    }
-    const withImplied = without.map((site, i) => ({ ...site, attachedHydrogens: implied[i] ?? 0 }));
-    if (implied.some((count) => count > 0) && agrees(withImplied)) {
-      noteAttached(view, withImplied, 'named by the atom types', log);
-      return withImplied;
-    }
-  }
-  if (attached) noteAttached(view, sites, 'counted on other atoms', log);
-  return sites;
+  const hasImplied = implied.some((count) => count > 0);
+  if (!attached && !hasImplied) return sites;
+  const misfit = (variant: readonly Site[]): number => {
+    const fit = counts && bestFit(cellContent(variant, multiplicities), counts, units);
+    return fit?.heavyAgree ? Math.abs(fit.missingHydrogens) : Infinity;
+  };
+  const without = sites.map((site) => ({ ...site, attachedHydrogens: 0 }));
+  const withImplied = sites.map((site, i) => ({ ...site, attachedHydrogens: implied[i] ?? 0 }));
+  const variants = [sites, ...(attached ? [without] : []), ...(hasImplied ? [withImplied] : [])];
+  const misfits = variants.map(misfit);
+  const chosen = variants[misfits.indexOf(Math.min(...misfits))] ?? sites;
+  if (chosen === without) {
+    log.add(
+      'note',
+      'cif-attached-hydrogens-have-sites',
+      'Hydrogens counted on other atoms stand in the atom list as well; they were not counted twice.',
+      {
+        place: placeOfBlock(view),
+      },
+    );
+  } else if (chosen === withImplied) noteAttached(view, withImplied, 'named by the atom types', log);
+  else if (attached) noteAttached(view, sites, 'counted on other atoms', log);
+  return chosen;
 }
 
 function noteAttached(view: BlockView, sites: readonly Site[], how: string, log: ProblemLog): void {

@@ -1,5 +1,5 @@
-import type { VecFrac } from '#src/base/matrix3.ts';
 import { ProblemLog } from '#src/base/problem.ts';
+import type { ReportProgress } from '#src/base/progress.ts';
 import type { Crystal, CrystalSymmetry, Site } from '#src/crystal/crystal.ts';
 import type { CellConstants } from '#src/crystal/lattice.ts';
 import { uniqueOperations } from '#src/crystal/group.ts';
@@ -14,7 +14,7 @@ import type { CheckedComposition, StatedFormula } from './formula-check.ts';
 import { checkComposition, readFormula } from './formula-check.ts';
 import { readGroupNames } from './group-names.ts';
 import { knownElements } from './known-elements.ts';
-import { countImages } from './multiplicity.ts';
+import { countAllImages } from './multiplicity.ts';
 import type { ListedOperations } from './operation-list.ts';
 import { listedOperations } from './operation-list.ts';
 import { chooseOrigin } from './origin-choice.ts';
@@ -43,15 +43,17 @@ export function interpretBlock(
   view: BlockView,
   structureIndex: number,
   log: ProblemLog,
+  progress: ReportProgress,
 ): InterpretedBlock | null {
   const formula = readFormula(view, log);
-  const rows = readSiteRows(view, knownElements(view, formula.counts), log);
+  const known = knownElements(view, formula.counts);
+  const rows = readSiteRows(view, known, log);
   if (!rows || rows.rows.length === 0) return null;
   reportDialects(view, log);
   const lists = listedOperations(view, log);
   const cell = usableCell(view, lists, rows, log);
   const frame = cell ? readFrame(view, cell, log) : null;
-  const built = buildSites(view, rows, knownElements(view, formula.counts), frame, log);
+  const built = buildSites(view, rows, known, frame, log);
   const { sites } = built;
   if (sites.length === 0) return null;
   if (!cell || !frame) return molecule(view, built, formula, structureIndex, log);
@@ -59,9 +61,7 @@ export function interpretBlock(
   const names = readGroupNames(view, cell, lists.length > 0 ? 'note' : 'warning', log);
   const choice = decideSymmetry(view, lists, names, cell, log);
   const symmetry = chooseOrigin(view, choice, { sites, rows }, frame.lattice, formula, log);
-  const counts = sites.map(({ fractional }) =>
-    countImages(fractional as VecFrac, symmetry.operations, frame.lattice),
-  );
+  const counts = countAllImages(sites, symmetry.operations, frame.lattice, progress);
   reportMultiplicities(rows, sites, counts, symmetry.operations.length, log);
   const multiplicities = counts.map(({ merged }) => merged);
   const checked = settled(view, built, multiplicities, formula, log);

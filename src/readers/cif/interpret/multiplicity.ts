@@ -1,4 +1,6 @@
 import type { VecFrac } from '#src/base/matrix3.ts';
+import type { ReportProgress } from '#src/base/progress.ts';
+import type { Site } from '#src/crystal/crystal.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import { orbitOf } from '#src/crystal/orbit.ts';
 import type { SymmetryOperation } from '#src/crystal/symmetry-operation.ts';
@@ -34,4 +36,18 @@ export function countImages(
   if (!inDoubt) return { near: merged, merged, far: merged };
   const count = (distance: number): number => orbitOf(position, operations, lattice, distance).images.length;
   return { near: count(nearAngstrom), merged, far: count(farAngstrom) };
+}
+
+/** Image counts of all sites of a crystal; progress is reported ten times. */
+export function countAllImages(
+  sites: readonly Site[],
+  operations: readonly SymmetryOperation[],
+  lattice: Lattice,
+  progress: ReportProgress,
+): ImageCounts[] {
+  const step = Math.ceil(sites.length / 10);
+  return sites.map(({ fractional }, i) => {
+    if (i % step === 0) progress(i / sites.length, 'counting atoms');
+    return countImages(fractional as VecFrac, operations, lattice);
+  });
 }

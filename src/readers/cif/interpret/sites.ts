@@ -34,7 +34,8 @@ export function buildSites(
   if (placed.length < rows.length) reportNoCell(rows, placed, log);
   const displacements = readDisplacements(view, table, placed, frame?.lattice ?? null, log);
   const details = detailReader(table, view.macromolecular);
-  const species = placed.map((row) => speciesOfSite(row.typeText, row.label, known));
+  const speciesOf = rememberedSpecies(known);
+  const species = placed.map((row) => speciesOf(row.typeText, row.label));
   const sites = placed.map((row, index): Site => {
     const found = species[index]!;
     return {
@@ -56,6 +57,18 @@ export function buildSites(
   reportLabels(placed, log);
   if (frame?.source === 'default') reportAssumedFrame(placed, frame, log);
   return { sites, species };
+}
+
+/** A type symbol stands on thousands of rows of a large list and means the same on each, unless the label had to decide. */
+function rememberedSpecies(known: ReadonlySet<string>): (type: string | null, label: string) => SiteSpecies {
+  const byType = new Map<string, SiteSpecies>();
+  return (type, label) => {
+    const before = type === null ? undefined : byType.get(type);
+    if (before) return before;
+    const found = speciesOfSite(type, label, known);
+    if (type !== null && found.from === 'type') byType.set(type, found);
+    return found;
+  };
 }
 
 function positionOf(row: SiteRow, frame: CartesianFrame | null): Pick<Site, 'fractional' | 'cartesian'> {
