@@ -24,7 +24,7 @@ const names = ['drum-1-quartz', 'drum-2-diopside', 'drum-3-malate'];
 
 function crystalOf(name: string): Crystal {
   const [crystal] = readSample(name).structures;
-  if (crystal?.lattice == null) throw new Error(`${name} holds no crystal`);
+  if (!crystal?.lattice) throw new Error(`${name} holds no crystal`);
   return crystal;
 }
 

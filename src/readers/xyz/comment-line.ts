@@ -33,7 +33,7 @@ interface Piece {
 }
 
 /** After so many unclosed quotes and brackets the rest of a line is taken as bare words: reading stays linear. */
-const maxUnclosed = 20;
+const maxUnclosed = 5;
 /** Faults of one line that are kept. */
 const maxFaults = 100;
 
@@ -65,11 +65,11 @@ export function parseCommentLine(line: string): CommentLine {
     const entry = { key: key.text, value: value.text, assigned, keyStart, valueStart };
     entries.push(entry);
     const lower = key.text.toLowerCase();
-    if (assigned && byKey.has(lower)) faults.push(repeatedKey(key.text, keyStart));
-    else if (assigned) byKey.set(lower, entry);
+    if (assigned && !byKey.has(lower)) byKey.set(lower, entry);
+    else if (assigned && faults.length < maxFaults) faults.push(repeatedKey(key.text, keyStart));
     at = skipSpace(line, Math.max(value.next, keyStart + 1));
   }
-  return { entries, byKey, faults: faults.slice(0, maxFaults) };
+  return { entries, byKey, faults };
 }
 
 function readKey(line: string, start: number, bareOnly: boolean): Piece {
