@@ -2,11 +2,18 @@
 import { readFileSync } from 'node:fs';
 import { readFile } from 'node:fs/promises';
 import { createRequire } from 'node:module';
-import packageFacts from '../../package.json' with { type: 'json' };
 import type { CommandIo } from './io.ts';
 import { main } from './run.ts';
 
 const require = createRequire(import.meta.url);
+
+/** The same distance from the package's root as source and as build. */
+function packageVersion(): string {
+  const facts = JSON.parse(readFileSync(new URL('../../package.json', import.meta.url), 'utf8')) as {
+    version: string;
+  };
+  return facts.version;
+}
 
 async function standardInput(): Promise<Uint8Array> {
   const chunks: Buffer[] = [];
@@ -36,4 +43,4 @@ const io: CommandIo = {
 process.stdout.on('error', (error: NodeJS.ErrnoException) => {
   if (error.code !== 'EPIPE') throw error;
 });
-process.exitCode = await main(process.argv.slice(2), io, packageFacts.version);
+process.exitCode = await main(process.argv.slice(2), io, packageVersion());

@@ -114,7 +114,7 @@ function searched(
 ): ChosenCrystal | null {
   const listed = asListed(crystal, settings, log);
   const whole = expanded(listed, lattice);
-  const positions = whole.map(({ fractional }) => fractional ?? [0, 0, 0]);
+  const positions = whole.map(({ fractional }): VecFrac => fractional ?? [0, 0, 0]);
   const tolerance = settings.symmetryToleranceAngstrom;
   const result = tables.search(lattice, positions, speciesNumbers(whole), tolerance);
   if (!result) return null;

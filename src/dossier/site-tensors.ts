@@ -4,6 +4,7 @@ import type { Place, ProblemLog } from '#src/base/problem.ts';
 import type { Site } from '#src/crystal/crystal.ts';
 import { nuclide, usualIsotope } from '#src/data/nuclides.ts';
 import { describeEfg } from '#src/tensor/efg.ts';
+import { independentComponents } from '#src/tensor/forced.ts';
 import { printedNoise, tensorNoise } from '#src/tensor/noise.ts';
 import { equivalentSpread, meanTensor, projectOnSiteSymmetry, turnBack } from '#src/tensor/projection.ts';
 import { describeShielding } from '#src/tensor/shielding.ts';
@@ -35,6 +36,7 @@ interface Evidence {
   readonly projected: Mat3;
   readonly symmetryResidual: number;
   readonly equivalentSpread: number | null;
+  readonly anisotropicNorm: number;
   readonly noise: number;
   readonly source: Place;
 }
@@ -57,6 +59,8 @@ function weigh(
   const tensor = back[0]!;
   const { residual, anisotropicNorm } = projectOnSiteSymmetry(tensor, stabiliser);
   const { projected } = projectOnSiteSymmetry(meanTensor(back), stabiliser);
+  // Where symmetry leaves no anisotropy in any frame, all of it is noise.
+  const forcedIsotropic = independentComponents(stabiliser).symmetricCount === 1;
   const printed = printedNoise(first.entry.tensor, quantity, unitFactor(quantity, unitGiven));
   return {
     tensor,
@@ -66,7 +70,8 @@ function weigh(
       found.map((one) => one.tensor),
       found.map((one) => one.rotation),
     ),
-    noise: tensorNoise(printed, residual, anisotropicNorm),
+    anisotropicNorm,
+    noise: forcedIsotropic ? Math.max(printed, residual) : tensorNoise(printed, residual, anisotropicNorm),
     source: first.entry.place,
   };
 }
@@ -115,16 +120,15 @@ function reportUndefined(
 /** A residual above this share of the anisotropy speaks of a wrong frame or a wrong atom rather than of noise. */
 const doubtfulShare = 0.1;
 
-function reportResidual(
-  site: Site,
-  name: string,
-  evidence: Evidence,
-  anisotropic: number,
-  log: ProblemLog,
-): void {
+/** Anisotropy a nearly isotropic tensor is credited with when its residual is judged: ppm, ppm, a.u. */
+const leastScale: Readonly<Record<Quantity, number>> = { shielding: 5, shift: 5, efg: 0.05 };
+
+function reportResidual(site: Site, quantity: Quantity, evidence: Evidence, log: ProblemLog): void {
+  const scale = Math.max(evidence.anisotropicNorm, leastScale[quantity]);
   const largest = Math.max(evidence.symmetryResidual, evidence.equivalentSpread ?? 0);
-  if (anisotropic === 0 || largest <= doubtfulShare * anisotropic) return;
-  const share = `${Math.round((100 * largest) / anisotropic)} % of its anisotropy`;
+  if (largest <= doubtfulShare * scale) return;
+  const name = quantity === 'efg' ? 'EFG' : quantity;
+  const share = `${Math.round((100 * largest) / scale)} % of its anisotropy`;
   log.add(
     'warning',
     'symmetry-broken',
@@ -148,10 +152,7 @@ export function siteTensors(input: SiteTensorInput, log: ProblemLog): SiteTensor
     const attachment = attachments.find((one) => one.quantity === quantity);
     const found = attachment?.bySite[site.index] ?? [];
     const evidence = attachment ? weigh(quantity, found, attachment.unitGiven, stabiliser) : null;
-    if (evidence) {
-      const { anisotropicNorm } = projectOnSiteSymmetry(evidence.tensor, []);
-      reportResidual(site, quantity === 'efg' ? 'EFG' : quantity, evidence, anisotropicNorm, log);
-    }
+    if (evidence) reportResidual(site, quantity, evidence, log);
     return evidence;
   };
   const ofShielding = evidenceOf('shielding');

@@ -1,0 +1,59 @@
+import { describe, expect, it } from 'vitest';
+import { dossierOfText } from '#tests/support/derive.ts';
+
+/** Tensors made up for these tests; rock salt's cubic arrangement (Bragg 1913) in a cell of 4 Å. */
+function rockSalt(noise: number): string {
+  const tensor = `${500 + noise} 0 0 0 500 0 0 0 ${500 - noise}`;
+  const metal = ['0 0 0', '0 2 2', '2 0 2', '2 2 0'].map((at) => `Na ${at} ${tensor}`);
+  const other = ['2 2 2', '2 0 0', '0 2 0', '0 0 2'].map((at) => `Cl ${at} 800 0 0 0 800 0 0 0 800`);
+  const head = '8\nLattice="4 0 0 0 4 0 0 0 4" Properties=species:S:1:pos:R:3:shielding:R:9\n';
+  return `${head}${[...metal, ...other].join('\n')}\n`;
+}
+
+describe('tensors of a site', () => {
+  it('takes all anisotropy on a cubic site for noise', () => {
+    const dossier = dossierOfText('salt.xyz', rockSalt(0.05));
+    const { shielding, siteSymmetryOrder } = dossier.sites[0]!;
+    expect(siteSymmetryOrder).toBe(48);
+    expect(shielding).toMatchObject({ axes: [null, null, null], skew: null, reducedAnisotropy: null });
+    expect(shielding!.symmetryResidual).toBeCloseTo(0.05 * Math.SQRT2, 9);
+    expect(shielding!.projected.map((x) => Math.round(x * 1e9) / 1e9)).toEqual([
+      500, 0, 0, 0, 500, 0, 0, 0, 500,
+    ]);
+    expect(dossier.problems.some(({ code }) => code === 'symmetry-broken')).toBe(false);
+  });
+
+  it('says so when a tensor breaks its site symmetry grossly', () => {
+    const dossier = dossierOfText('salt.xyz', rockSalt(20));
+    expect(dossier.problems.filter(({ code }) => code === 'symmetry-broken')).toMatchObject([
+      { severity: 'warning', line: 3 },
+    ]);
+  });
+
+  it('gives one note a reason, naming the fields', () => {
+    const dossier = dossierOfText('salt.xyz', rockSalt(0));
+    const notes = dossier.problems.filter(({ code }) => code === 'undefined-value');
+    expect(notes.map(({ message }) => message.split(':')[0])).toEqual([
+      'Na1 shielding, skew',
+      'Na1 shielding, axes',
+      'Cl1 shielding, skew',
+      'Cl1 shielding, axes',
+    ]);
+  });
+
+  it('uses the user’s isotope, reference and moment', () => {
+    const text =
+      '1\nProperties=species:S:1:pos:R:3:shielding:R:9:efg:R:9\nN 0 0 0 100 0 0 0 110 0 0 0 150 -.3 0 0 0 -.2 0 0 0 .5\n';
+    const usual = dossierOfText('n.xyz', text).sites[0]!;
+    expect([usual.isotope, usual.efg!.isotope]).toEqual(['15N', '14N']);
+    const own = dossierOfText('n.xyz', text, {
+      isotopes: { N: '14N' },
+      references: { '14N': { kind: 'regression', interceptPpm: 200, slope: -0.9, isotope: '14N' } },
+      quadrupoleMomentsBarn: { '14N': 0.02 },
+    }).sites[0]!;
+    expect(own.shift!.isotropic).toBeCloseTo(200 - 0.9 * 120, 9);
+    expect(own.shift!.components[0]).toBeCloseTo(200 - 0.9 * 100, 9);
+    expect(own.efg).toMatchObject({ isotope: '14N', quadrupoleMomentSource: 'entered by the user' });
+    expect(own.efg!.couplingMHz).toBeCloseTo(234.9647785 * 0.02 * 0.5, 6);
+  });
+});
