@@ -43,6 +43,9 @@ export const cardStyles = css`
   .facts dd {
     margin: 0;
   }
+  .hint {
+    margin-top: 14px;
+  }
   .scroll {
     overflow-x: auto;
     max-width: 100%;
@@ -59,6 +62,9 @@ export const cardStyles = css`
     font-size: 12.5px;
     padding: 2px 0 3px 14px;
     border-bottom: 1px solid var(--hairline);
+  }
+  thead th:first-child {
+    padding-left: 0;
   }
   thead th.number {
     text-align: right;

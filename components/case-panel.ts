@@ -10,6 +10,7 @@ import { openSample, sampleCases } from './sample-cases.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
 
+const quantities = { shielding: 'shielding', shift: 'shift', efg: 'field-gradient' } as const;
 const kinds = { cif: 'CIF', xyz: 'XYZ', unknown: 'not recognised' } as const;
 
 /** The files of the case, how to open others, and the sample cases. */
@@ -109,7 +110,7 @@ export class CasePanel extends StoreElement {
 
   #sample(sample: SampleCase): TemplateResult {
     return html`<button class="sample" @click=${() => this.store && openSample(this.store, sample)}>
-      <strong>${sample.title}</strong><span>${sample.description}</span>
+      <strong>${sample.title}</strong><span>${sample.sentence}</span>
     </button>`;
   }
 
@@ -129,7 +130,7 @@ function describe(source: SourceSummary, derived: DerivedCase): string {
     .filter(({ sourceId, used }) => sourceId === source.id && used)
     .map(
       ({ entryCount, quantity, unitGiven }) =>
-        `${formatCount(entryCount)} ${quantity} tensors (${unitGiven})`,
+        `${formatCount(entryCount)} ${quantities[quantity]} tensor${entryCount === 1 ? '' : 's'} (${unitGiven})`,
     );
   const structures = derived.structures.filter(({ sourceId }) => sourceId === source.id).length;
   return [

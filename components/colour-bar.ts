@@ -5,22 +5,21 @@ import { formatNumber } from './number-format.ts';
 
 export const colourBarStyles = css`
   .legend {
-    width: 220px;
-    max-width: 100%;
-    font-size: 12px;
-    color: var(--soft);
+    display: flex;
+    flex-wrap: wrap;
+    align-items: center;
+    gap: 2px 9px;
+    font-size: 12.5px;
     font-variant-numeric: tabular-nums lining-nums;
+    padding: 6px 12px 2px 0;
   }
   .legend .bar {
-    height: 9px;
-    margin: 3px 0 2px;
+    width: 150px;
+    height: 10px;
     forced-color-adjust: none;
   }
-  .legend .limits {
-    display: flex;
-    justify-content: space-between;
-    gap: 8px;
-    white-space: nowrap;
+  .legend .soft {
+    margin-left: 6px;
   }
 `;
 
@@ -33,11 +32,10 @@ export function colourBar(
   const stops = legend.stops.map(([r, g, b]) => `rgb(${r} ${g} ${b})`).join(', ');
   const { low, high, digits, title, unit } = legend;
   return html`<div class="legend">
-    ${scaleStatement ? html`<div>${scaleStatement}</div>` : nothing}
-    <div class="bar" aria-hidden="true" .style=${`background: linear-gradient(to right, ${stops})`}></div>
-    <div class="limits">
-      <span>${formatNumber(low, digits)}</span><span>${title}/${unit}</span
-      ><span>${formatNumber(high, digits)}</span>
-    </div>
+    <span>${title}/${unit}</span>
+    <span>${formatNumber(low, digits)}</span>
+    <span class="bar" aria-hidden="true" .style=${`background: linear-gradient(to right, ${stops})`}></span>
+    <span>${formatNumber(high, digits)}</span>
+    ${scaleStatement ? html`<span class="soft">radius: ${scaleStatement}</span>` : nothing}
   </div>`;
 }

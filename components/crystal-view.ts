@@ -16,6 +16,10 @@ import { viewStyles } from './view-styles.ts';
 const keysInWords =
   'Arrow keys turn, with Shift they move. Plus and minus zoom, comma and full stop roll, a, b and c look along a cell axis, 0 shows all. The site table holds the same atoms as text.';
 
+/** All there is to say where nothing can be drawn. */
+const withoutWebGL =
+  'This browser offers no WebGL 2, usually because it finds no graphics chip, so the crystal is not drawn; the site table, the site card and all numbers work without it.';
+
 /** The crystal on a canvas with what belongs to it: axes, labels, colour bar, caption, ways to turn it. */
 export class CrystalView extends StoreElement {
   static override properties = {
@@ -69,9 +73,7 @@ export class CrystalView extends StoreElement {
     const name = this.store?.state.derived?.dossier?.name ?? '';
     if (probe && !probe.available) {
       return html`<h2>Crystal${name ? ` · ${name}` : ''}</h2>
-        <p class="none" role="note">
-          ${probe.sentence} The site table, the site card and all numbers work without it.
-        </p>`;
+        <p class="none" role="note">${withoutWebGL}</p>`;
     }
     if (fault)
       return html`<h2>Crystal</h2>
@@ -97,9 +99,10 @@ export class CrystalView extends StoreElement {
           ({ text, leftPx, topPx }) =>
             html`<span class="label" .style=${`left: ${leftPx}px; top: ${topPx}px`}>${text}</span>`,
         )}
-        ${colourBar(scene?.legend ?? null, scene?.scaleStatement ?? null)} ${this.#pointedLine()}
+        ${this.#pointedLine()}
         ${this.isLost ? html`<p class="lost">The graphics chip took the picture away; it comes back by itself.</p>` : nothing}
       </div>
+      ${colourBar(scene?.legend ?? null, scene?.scaleStatement ?? null)}
       <p class="caption" id="caption">${scene?.caption ?? ''}</p>
       <p class="hidden-but-spoken" id="keys">${keysInWords}</p>
     `;

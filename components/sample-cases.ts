@@ -2,13 +2,15 @@ import type { FileInput, Store } from '#src/store/store.ts';
 
 /** One case of samples/index.json. */
 export interface SampleCase {
+  readonly id: string;
   readonly title: string;
-  readonly description: string;
+  /** What it holds, and what in it is invented. */
+  readonly sentence: string;
   /** Names of files in samples/, the structure first. */
   readonly files: readonly string[];
 }
 
-const indexes = import.meta.glob<readonly SampleCase[]>('/samples/index.json', {
+const indexes = import.meta.glob<{ readonly cases: readonly SampleCase[] }>('/samples/index.json', {
   eager: true,
   import: 'default',
 });
@@ -16,7 +18,7 @@ const texts = import.meta.glob<string>('/samples/*.{cif,xyz,extxyz}', { query: '
 
 /** The cases the page offers, in the order of the index; they are part of the built page, nothing is fetched from elsewhere. */
 export function sampleCases(): readonly SampleCase[] {
-  return Object.values(indexes)[0] ?? [];
+  return Object.values(indexes)[0]?.cases ?? [];
 }
 
 /** Opens a sample case like files of the user's own. */

@@ -45,6 +45,10 @@ export class SettingsPanel extends StoreElement {
       }
       select {
         max-width: 100%;
+        width: max-content;
+      }
+      .entry select {
+        width: 168px;
       }
       .reference {
         display: grid;

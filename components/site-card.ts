@@ -2,6 +2,7 @@ import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { Place, SiteDossier } from '#src/store/dossier-types.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
+import { crystalOverview } from './card-crystal.ts';
 import { efgSection } from './card-efg.ts';
 import { shieldingSection } from './card-shielding.ts';
 import { cardStyles } from './card-styles.ts';
@@ -52,10 +53,7 @@ export class SiteCard extends StoreElement {
     const dossier = state?.derived?.dossier;
     const site = this.#site;
     if (!state || !dossier) return html`<h2>Site</h2>`;
-    if (!site) {
-      return html`<h2>Site</h2>
-        <p class="soft">Choose a site in the table or an atom in the crystal to see its numbers here.</p>`;
-    }
+    if (!site) return crystalOverview(dossier);
     const atom = site.equivalents.find(({ id }) => id === state.selection?.atomId) ?? null;
     return html`
       <article aria-label="Site ${site.label}">

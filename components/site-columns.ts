@@ -15,8 +15,8 @@ export interface SiteColumn {
   readonly heading: TemplateResult;
   /** The heading in plain words, unit included: tooltip and accessible name. */
   readonly words: string;
-  /** Track of the grid. */
-  readonly width: string;
+  /** Least width, px, and share of the room left over. */
+  readonly width: readonly [number, number];
   readonly numeric: boolean;
   readonly text: (site: SiteDossier) => string;
   /** Why the text is "undefined", where it is. */
@@ -32,7 +32,7 @@ const identity: readonly SiteColumn[] = [
     key: 'label',
     heading: html`site`,
     words: 'site label',
-    width: 'minmax(92px, 1.3fr)',
+    width: [84, 1.4],
     numeric: false,
     text: (site) => site.label,
   },
@@ -40,7 +40,7 @@ const identity: readonly SiteColumn[] = [
     key: 'element',
     heading: html`nuclide`,
     words: 'isotope or element',
-    width: 'minmax(54px, 0.6fr)',
+    width: [46, 0.6],
     numeric: false,
     text: (site) => (site.isotope ? isotopeSymbol(site.isotope) : site.element),
   },
@@ -48,7 +48,7 @@ const identity: readonly SiteColumn[] = [
     key: 'multiplicity',
     heading: html`mult.`,
     words: 'multiplicity: atoms of this site in the cell',
-    width: '46px',
+    width: [36, 0.2],
     numeric: true,
     text: (site) => String(site.multiplicity),
   },
@@ -56,7 +56,7 @@ const identity: readonly SiteColumn[] = [
     key: 'symmetry',
     heading: html`symmetry`,
     words: 'Wyckoff letter and site symmetry',
-    width: 'minmax(84px, 1fr)',
+    width: [58, 1],
     numeric: false,
     text: wyckoffAndSymmetry,
   },
@@ -72,7 +72,7 @@ const shielding: readonly SiteColumn[] = [
     key: 'shielding-isotropic',
     heading: html`σ<sub>iso</sub>/ppm`,
     words: 'isotropic shielding in ppm',
-    width: 'minmax(70px, 0.8fr)',
+    width: [62, 0.8],
     numeric: true,
     text: (site) => value(site.shielding, site.shielding?.isotropic, ppmDecimals(site.element)),
   },
@@ -83,7 +83,7 @@ const shift: readonly SiteColumn[] = [
     key: 'shift-isotropic',
     heading: html`δ<sub>iso</sub>/ppm`,
     words: 'isotropic shift in ppm',
-    width: 'minmax(70px, 0.8fr)',
+    width: [62, 0.8],
     numeric: true,
     text: (site) => value(site.shift, site.shift?.isotropic, ppmDecimals(site.element)),
   },
@@ -98,7 +98,7 @@ const spanAndSkew: readonly SiteColumn[] = [
     key: 'span',
     heading: html`Ω/ppm`,
     words: 'span in ppm',
-    width: 'minmax(62px, 0.8fr)',
+    width: [52, 0.8],
     numeric: true,
     text: (site) => value(anisotropic(site), anisotropic(site)?.span, ppmDecimals(site.element)),
   },
@@ -106,7 +106,7 @@ const spanAndSkew: readonly SiteColumn[] = [
     key: 'skew',
     heading: html`κ`,
     words: 'skew',
-    width: 'minmax(62px, 0.7fr)',
+    width: [56, 0.7],
     numeric: true,
     text: (site) => value(anisotropic(site), anisotropic(site)?.skew, 2),
     because: (site) => anisotropic(site)?.undefinedBecause['skew'],
@@ -118,7 +118,7 @@ const efg: readonly SiteColumn[] = [
     key: 'coupling',
     heading: html`C<sub>Q</sub>/MHz`,
     words: 'quadrupole coupling constant in MHz, signed',
-    width: 'minmax(70px, 0.8fr)',
+    width: [62, 0.8],
     numeric: true,
     text: (site) => value(site.efg, site.efg?.couplingMHz, couplingDecimals(site.element)),
     because: (site) => site.efg?.undefinedBecause['couplingMHz'],
@@ -127,7 +127,7 @@ const efg: readonly SiteColumn[] = [
     key: 'efg-asymmetry',
     heading: html`η<sub>Q</sub>`,
     words: 'asymmetry of the electric field gradient',
-    width: 'minmax(62px, 0.7fr)',
+    width: [56, 0.7],
     numeric: true,
     text: (site) => value(site.efg, site.efg?.asymmetry, 2),
     because: (site) => site.efg?.undefinedBecause['asymmetry'],
@@ -144,4 +144,17 @@ export function columnsFor(dossier: CrystalDossier): SiteColumn[] {
     ...(has('shielding') || has('shift') ? spanAndSkew : []),
     ...(has('efg') ? efg : []),
   ];
+}
+
+/** Space between columns, px. */
+export const columnGap = 8;
+
+/** Tracks of the table's grid, and the width below which it scrolls sideways. */
+export function gridOf(columns: readonly SiteColumn[]): {
+  readonly tracks: string;
+  readonly leastPx: number;
+} {
+  const tracks = columns.map(({ width: [least, share] }) => `minmax(${least}px, ${share}fr)`).join(' ');
+  const leastPx = columns.reduce((sum, { width: [least] }) => sum + least + columnGap, 0);
+  return { tracks, leastPx };
 }

@@ -1,5 +1,5 @@
 import { html, nothing } from 'lit';
-import type { PropertyValues, TemplateResult } from 'lit';
+import type { TemplateResult } from 'lit';
 import { atomAxes } from '#src/store/axes.ts';
 import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/store/dossier-types.ts';
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
@@ -8,7 +8,7 @@ import { axisNames } from './axis-names.ts';
 import { formatCount, formatOperation, formatTriple } from './number-format.ts';
 import { siteChip } from './site-chip.ts';
 import type { SiteColumn } from './site-columns.ts';
-import { columnsFor } from './site-columns.ts';
+import { columnsFor, gridOf } from './site-columns.ts';
 import type { RowList, SiteRow } from './site-rows.ts';
 import { indexOfRow, listRows, siteRowHeight, visibleRows } from './site-rows.ts';
 import { StoreElement } from './store-element.ts';
@@ -61,6 +61,7 @@ export class SiteTable extends StoreElement {
     const dossier = this.#dossier;
     if (!dossier) return html`<h2>Sites</h2>`;
     const { rows, tops } = this.#list;
+    const { tracks, leastPx } = gridOf(this.#columns);
     const scroller = this.#scroller;
     const [first, last] = visibleRows(this.#list, scroller?.scrollTop ?? 0, scroller?.clientHeight ?? 600);
     const active = rows.length > 0 ? `row-${this.#active}` : nothing;
@@ -74,7 +75,7 @@ export class SiteTable extends StoreElement {
         aria-rowcount=${rows.length + 1}
         aria-colcount=${this.#columns.length}
         aria-activedescendant=${active}
-        .style=${`--columns: ${this.#columns.map(({ width }) => width).join(' ')}`}
+        .style=${`--columns: ${tracks}; --least: ${leastPx}px`}
         @scroll=${() => this.requestUpdate()}
         @keydown=${this.#keydown}
         @pointerleave=${() => this.store?.hover(null)}
@@ -245,9 +246,15 @@ export class SiteTable extends StoreElement {
       scroller.scrollTop = bottom - scroller.clientHeight;
   }
 
-  protected override firstUpdated(_changed: PropertyValues): void {
+  protected override firstUpdated(): void {
     // The height is known only now: draw the rows that fit.
     this.requestUpdate();
+  }
+
+  /** Tells the layout how tall the whole table would be, so that a short one leaves no gap. */
+  protected override updated(): void {
+    const { rows, tops } = this.#list;
+    this.style.setProperty('--content-height', `${tops[rows.length]! + siteRowHeight + 62}px`);
   }
 }
 

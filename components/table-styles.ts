@@ -23,11 +23,11 @@ export const tableStyles = css`
   .row {
     display: grid;
     grid-template-columns: var(--columns);
-    column-gap: 10px;
+    column-gap: 8px;
     align-items: center;
-    padding: 0 8px 0 2px;
+    padding: 0 8px 0 0;
     border-bottom: 1px solid var(--hairline);
-    min-width: max-content;
+    min-width: var(--least);
     width: 100%;
   }
   .head {
@@ -106,6 +106,6 @@ export const tableStyles = css`
   .undefined {
     font-style: italic;
     color: var(--soft);
-    font-size: 12.5px;
+    font-size: 12px;
   }
 `;

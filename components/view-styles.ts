@@ -49,7 +49,6 @@ export const viewStyles = css`
   }
   svg,
   .label,
-  .legend,
   .pointed,
   .lost {
     position: absolute;
@@ -95,10 +94,6 @@ export const viewStyles = css`
       0 0 2px var(--paper),
       0 0 3px var(--paper);
   }
-  .legend {
-    right: 6px;
-    bottom: 6px;
-  }
   .pointed {
     left: 0;
     top: 2px;
@@ -126,7 +121,7 @@ export const viewStyles = css`
   .caption {
     color: var(--soft);
     font-size: 12.5px;
-    padding: 6px 16px 0 0;
+    padding: 2px 16px 0 0;
     max-width: 110ch;
   }
   .show {

@@ -11,7 +11,7 @@ export const workbenchStyles = css`
   }
   main {
     display: grid;
-    grid-template-columns: minmax(0, 1fr) clamp(440px, 43%, 960px);
+    grid-template-columns: minmax(0, 1fr) clamp(440px, 47%, 980px);
     min-height: 0;
   }
   ellipsite-crystal-view {
@@ -84,7 +84,7 @@ export const workbenchStyles = css`
       border-top: 1px solid var(--hairline);
       height: 60vh;
       height: 60svh;
-      max-height: var(--table-height);
+      max-height: var(--content-height);
     }
     .drawer,
     ellipsite-source-view {

@@ -179,7 +179,8 @@ describe('the page', () => {
   it('says in a sentence that the crystal cannot be drawn without WebGL, and what works', () => {
     const view = textOf(page.part('ellipsite-crystal-view').shadowRoot);
     expect(view).toContain('no WebGL 2');
-    expect(view).toContain('The site table, the site card and all numbers work without it.');
+    expect(view).toContain('the site table, the site card and all numbers work without it.');
+    expect(page.part('ellipsite-crystal-view').shadowRoot.querySelector('canvas')).toBeNull();
   });
 });
 
