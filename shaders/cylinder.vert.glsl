@@ -1,4 +1,4 @@
-// Four vertices a cylinder: the rectangle round its projection, its caps' ellipses included.
+// Four vertices a cylinder: the rectangle round its projection, its caps' ellipses included, grown by a pixel.
 precision highp float;
 precision highp int;
 
@@ -11,9 +11,9 @@ in float aRadius;
 in vec3 aStartColour;
 in vec3 aEndColour;
 
-out vec2 vPlace; // along and across the projected axis, pixels from the start
 flat out vec4 vShape; // length, lie, rise, radius
-flat out vec3 vFrame; // direction of the projected axis, z of the start
+flat out vec2 vAlong; // direction of the projected axis
+flat out vec3 vStart; // view axes, pixels
 flat out vec3 vStartColour;
 flat out vec3 vEndColour;
 
@@ -26,11 +26,11 @@ void main() {
   float radius = aRadius * uPixelsPerAngstrom;
   float cap = radius * abs(axis.z) / size;
   bool first = (gl_VertexID & 1) == 0;
-  float a = first ? -cap : onScreen + cap;
-  float c = (gl_VertexID & 2) == 0 ? -radius : radius;
-  vPlace = vec2(a, c);
+  float a = first ? -cap - 1.0 : onScreen + cap + 1.0;
+  float c = (gl_VertexID & 2) == 0 ? -radius - 1.0 : radius + 1.0;
   vShape = vec4(size, onScreen / size, axis.z / size, radius);
-  vFrame = vec3(along, start.z);
+  vAlong = along;
+  vStart = start;
   vStartColour = linearFromSrgb(aStartColour);
   vEndColour = linearFromSrgb(aEndColour);
   gl_Position = clipPoint(vec3(start.xy + a * along + c * vec2(-along.y, along.x), start.z));

@@ -2,6 +2,7 @@ import colour from './chunks/_colour.glsl?raw';
 import cylinderChunk from './chunks/_cylinder.glsl?raw';
 import depthCue from './chunks/_depth-cue.glsl?raw';
 import light from './chunks/_light.glsl?raw';
+import pixel from './chunks/_pixel.glsl?raw';
 import quadricChunk from './chunks/_quadric.glsl?raw';
 import view from './chunks/_view.glsl?raw';
 import cylinderFragment from './cylinder.frag.glsl?raw';
@@ -19,6 +20,7 @@ export const chunks = {
   _cylinder: cylinderChunk,
   '_depth-cue': depthCue,
   _light: light,
+  _pixel: pixel,
   _quadric: quadricChunk,
   _view: view,
 } as const;

@@ -6,7 +6,7 @@ float softLight(vec3 normal) {
   float key = dot(normal, keyDirection);
   float wrapped = 0.5 + 0.5 * key;
   float facing = 0.5 + 0.5 * keyDirection.z;
-  float form = mix(0.22, 1.0, wrapped * wrapped) / mix(0.22, 1.0, facing * facing);
+  float form = mix(0.16, 1.0, wrapped * wrapped) / mix(0.16, 1.0, facing * facing);
   float turnedAway = 1.0 - normal.z;
   return form * (1.0 - 0.25 * turnedAway * turnedAway);
 }

@@ -21,6 +21,12 @@ vec2 outlinePoint(ViewQuadric q, vec2 e) {
   return vec2(q.outline.x * e.x, q.outline.y * e.x + q.outline.z * e.y);
 }
 
+// And back: the point of the disc's plane under an offset on screen.
+vec2 discPoint(ViewQuadric q, vec2 d) {
+  float x = d.x / q.outline.x;
+  return vec2(x, (d.y - q.outline.y * x) / q.outline.z);
+}
+
 // (e, s) to coordinates along the quadric's own axes, on the unit sphere. Orthogonal.
 mat3 bodyRotation(mat3 m, ViewQuadric q) {
   mat3 t = mat3(

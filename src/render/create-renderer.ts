@@ -288,6 +288,9 @@ class Renderer implements CrystalRenderer {
 
   readonly #onRestored = (): void => {
     this.#lost = false;
+    // three starts afresh on a restored context: what is not kept in its objects is set again
+    this.setTheme(this.#theme);
+    this.resize(this.#viewport.widthPx, this.#viewport.heightPx, this.#deviceRatio);
     this.#stale('the graphics context came back');
     this.#options.onContextRestored?.();
   };

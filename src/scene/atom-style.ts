@@ -17,7 +17,7 @@ export function atomColour(element: string): Rgb {
 }
 
 /** Å */
-export const bondRadiusAngstrom = 0.07;
+export const bondRadiusAngstrom = 0.062;
 export const hydrogenBondRadiusAngstrom = 0.028;
 /** Å; a dash and the gap after it together. */
 export const dashAngstrom = 0.2;

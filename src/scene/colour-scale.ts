@@ -39,7 +39,8 @@ export function legendColour(legend: Legend, value: number): readonly [number, n
 
 /**
  * Colour bar for the values drawn: sequential (dark = low) for isotropic values, diverging about zero for signed Vzz.
- * Automatic limits are the extreme values moved outwards to a readable step of about a fortieth of their distance.
+ * Automatic limits are the extreme values moved outwards to a power of ten between a twentieth and a
+ * two-hundredth of their distance.
  */
 export function legendFor(
   quantity: SceneQuantity,

@@ -1,0 +1,222 @@
+import { describe, expect, it } from 'vitest';
+import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
+import { asMat3, multiply, transpose } from '#src/base/matrix3.ts';
+import { buildScene } from '#src/scene/build-scene.ts';
+import type { PickEntry, Scene } from '#src/scene/scene.ts';
+import { madeDossier } from '#tests/support/made-dossier.ts';
+import { madeQuartz } from '#tests/support/made-quartz.ts';
+import { madeUrea } from '#tests/support/made-urea.ts';
+
+type AtomPick = Extract<PickEntry, { kind: 'atom' }>;
+
+function atomsOf(scene: Scene): { pick: AtomPick; centre: Vec3; shape: Mat3; circles: number }[] {
+  return scene.picks.flatMap((pick, i) =>
+    pick.kind === 'atom'
+      ? [
+          {
+            pick,
+            centre: [...scene.quadrics.centres.subarray(3 * i, 3 * i + 3)] as unknown as Vec3,
+            shape: asMat3(scene.quadrics.shapes.subarray(9 * i, 9 * i + 9)),
+            circles: scene.quadrics.circles[i]!,
+          },
+        ]
+      : [],
+  );
+}
+
+const cube: Mat3 = [4, 0, 0, 0, 5, 0, 0, 0, 6];
+
+describe('atoms of the unit cell', () => {
+  it.each([
+    ['inside', [0.5, 0.5, 0.5], 1],
+    ['on a face', [0, 0.5, 0.5], 2],
+    ['on an edge', [0, 0, 0.5], 4],
+    ['on a corner', [0, 0, 0], 8],
+    ['just under a far face', [0.4, 0.999, 0.5], 2],
+  ] as const)('%s', (_name, position, copies) => {
+    const dossier = madeDossier({ rows: cube, sites: [{ label: 'Si1', element: 'Si', position }] });
+    const atoms = atomsOf(buildScene(dossier));
+    expect(atoms).toHaveLength(copies);
+    const places = new Set(atoms.map(({ centre }) => centre.join()));
+    expect(places.size).toBe(copies);
+    for (const { centre } of atoms) {
+      expect(Math.min(...centre)).toBeGreaterThan(-0.01);
+      [4, 5, 6].forEach((edge, k) => expect(centre[k]).toBeLessThan(edge + 0.01));
+    }
+  });
+
+  it('draws twelve cell edges whose summed length is four times a + b + c', () => {
+    const { lines, axes } = buildScene(madeDossier({ rows: cube, sites: [] }));
+    let sum = 0;
+    for (let i = 0; i < lines.count; i++) {
+      sum += Math.hypot(...[0, 1, 2].map((k) => lines.ends[3 * i + k]! - lines.starts[3 * i + k]!));
+    }
+    expect(lines.count).toBe(12);
+    expect(sum).toBeCloseTo(4 * (4 + 5 + 6), 5);
+    expect(axes.map(({ letter }) => letter)).toEqual(['a', 'b', 'c']);
+  });
+
+  it('completes every coordination: each silicon of the cell ends up with four bonds', () => {
+    const scene = buildScene(madeQuartz());
+    const own = atomsOf(scene).filter(({ pick }) => !pick.context && pick.siteIndex === 0);
+    expect(own.length).toBeGreaterThanOrEqual(3);
+    for (const { centre } of own) {
+      const touching = [scene.cylinders.starts, scene.cylinders.ends].flatMap((points) =>
+        Array.from({ length: scene.cylinders.count }, (_, i) =>
+          Math.hypot(...centre.map((x, k) => x - points[3 * i + k]!)),
+        ).filter((distance) => distance < 1e-3),
+      );
+      expect(touching).toHaveLength(4);
+    }
+  });
+});
+
+describe('whole molecules', () => {
+  it('keeps every bond between two drawn atoms and repeats none', () => {
+    const dossier = madeUrea();
+    const scene = buildScene(dossier);
+    expect(scene.extent).toBe('molecules');
+    expect(atomsOf(scene)).toHaveLength(16);
+    const bonds = dossier.bonds.filter(({ kind }) => kind === 'bond');
+    // 7 covalent bonds a molecule of urea, two molecules a cell
+    expect(bonds).toHaveLength(14);
+    expect(scene.picks.filter((pick) => pick.kind === 'bond' && pick.bond === 'bond')).toHaveLength(14);
+  });
+
+  it('draws hydrogen bonds as dashes that leave gaps', () => {
+    const scene = buildScene(madeUrea(), { bonds: false });
+    expect(scene.cylinders.count).toBeGreaterThan(3);
+    let dashes = 0;
+    for (let i = 0; i < scene.cylinders.count; i++) {
+      dashes += Math.hypot(
+        ...[0, 1, 2].map((k) => scene.cylinders.ends[3 * i + k]! - scene.cylinders.starts[3 * i + k]!),
+      );
+    }
+    const lengths = scene.picks.reduce(
+      (sum, pick) => sum + (pick.kind === 'bond' ? pick.lengthAngstrom : 0),
+      0,
+    );
+    expect(dashes).toBeGreaterThan(0.35 * lengths);
+    expect(dashes).toBeLessThan(0.6 * lengths);
+  });
+});
+
+/** A Aᵀ of a quadric against a matrix given row by row, to single precision. */
+function expectSquared(shape: Mat3, expected: Mat3): void {
+  const square = multiply(shape, transpose(shape));
+  const size = Math.max(...expected.map(Math.abs));
+  square.forEach((value, k) => expect(Math.abs(value - expected[k]!)).toBeLessThan(2e-6 * size));
+}
+
+describe('tensor ellipsoids', () => {
+  it('total: A Aᵀ = (R S Rᵀ / units)² on every equivalent atom', () => {
+    const dossier = madeQuartz();
+    const scene = buildScene(dossier, { ellipsoid: 'total', unitsPerAngstrom: 500 });
+    let seen = 0;
+    for (const { pick, shape } of atomsOf(scene).filter((atom) => !atom.pick.context)) {
+      const site = dossier.sites[pick.siteIndex]!;
+      const r = site.equivalents.find(({ id }) => id === pick.atomId)!.rotation;
+      const turned = multiply(multiply(r, site.shielding!.symmetric), transpose(r));
+      const semi = asMat3(turned.map((value) => value / 500));
+      expectSquared(shape, multiply(semi, semi));
+      seen += 1;
+    }
+    expect(seen).toBeGreaterThanOrEqual(9);
+  });
+
+  it('deviation: A Aᵀ = (r₀ + (R S Rᵀ − iso)/units)², of one base radius', () => {
+    const dossier = madeUrea();
+    const scene = buildScene(dossier);
+    expect(scene.scale?.kind).toBe('deviation');
+    const { baseRadiusAngstrom: r0, unitsPerAngstrom: units } = scene.scale!;
+    for (const { pick, shape } of atomsOf(scene)) {
+      const site = dossier.sites[pick.siteIndex]!;
+      const r = site.equivalents.find(({ id }) => id === pick.atomId)!.rotation;
+      const turned = multiply(multiply(r, site.shielding!.symmetric), transpose(r));
+      const semi = asMat3(
+        turned.map((value, k) =>
+          k % 4 === 0 ? r0 + (value - site.shielding!.isotropic) / units : value / units,
+        ),
+      );
+      expectSquared(shape, multiply(semi, semi));
+    }
+  });
+
+  it('offers no total where a principal value is negative, and says why', () => {
+    const scene = buildScene(madeUrea(), { ellipsoid: 'total' });
+    expect(scene.scale?.kind).toBe('deviation');
+    expect(scene.caption).toContain('not positive');
+  });
+
+  it('marks only circles perpendicular to defined axes', () => {
+    const axial: Mat3 = [100, 0, 0, 0, 100, 0, 0, 0, 160];
+    const of = (undefinedAxes: number[]) => {
+      const site = {
+        label: 'O1',
+        element: 'O',
+        position: [0.5, 0.5, 0.5] as Vec3,
+        shieldingPpm: axial,
+        undefinedAxes,
+      };
+      return atomsOf(buildScene(madeDossier({ rows: cube, sites: [site] })))[0]!;
+    };
+    expect(of([]).circles).toBe(0b111);
+    expect(of([0, 1]).circles).toBe(0b100);
+    expect(of([0, 1, 2]).circles).toBe(0);
+    // the shape with two undefined axes is still the ellipsoid of revolution about z
+    const { shape } = of([0, 1]);
+    const square = multiply(shape, transpose(shape));
+    expect(square[0]).toBeCloseTo(square[4], 5);
+    expect(square[8] / square[0]).toBeCloseTo(1.6 ** 2, 4);
+  });
+
+  it('leaves neighbours apart: half axes of a bonded pair stay below their distance', () => {
+    for (const made of [madeQuartz(), madeUrea()]) {
+      const scene = buildScene(made);
+      const longest = new Map(
+        atomsOf(scene).map(({ pick, shape }) => [
+          pick.atomId + pick.context,
+          Math.max(...[0, 1, 2].map((k) => Math.hypot(shape[k]!, shape[k + 3]!, shape[k + 6]!))),
+        ]),
+      );
+      for (const bond of made.bonds) {
+        const sum = longest.get(`${bond.from}false`)! + longest.get(`${bond.to}false`)!;
+        expect(sum).toBeLessThan(bond.lengthAngstrom);
+      }
+    }
+  });
+});
+
+describe('what was chosen is said', () => {
+  it('falls back to a quantity that exists', () => {
+    const scene = buildScene(madeUrea(), { quantity: 'efg' });
+    expect(scene.scale?.quantity).toBe('shielding');
+    expect(scene.caption).toContain('There are no EFG tensors here');
+  });
+
+  it('without tensors shows atoms coloured by element', () => {
+    const scene = buildScene(madeQuartz(), { showTensors: false });
+    expect(scene.legend).toBeNull();
+    expect(scene.scaleStatement).toBeNull();
+    expect(scene.caption).toMatch(/^Atoms coloured by element\./);
+    expect(scene.elements.map(({ element }) => element)).toEqual(['Si', 'O']);
+  });
+
+  it('states the scale in caption and statement, and the asked one exactly', () => {
+    const scene = buildScene(madeQuartz(), { unitsPerAngstrom: 725 });
+    expect(scene.scaleStatement).toBe('1 Å = 725 ppm');
+    expect(scene.caption).toContain('semi-axes = principal values of the symmetric part, 1 Å = 725 ppm');
+  });
+
+  it('keeps tensors to the elements asked for', () => {
+    const scene = buildScene(madeQuartz(), { tensorElements: ['O'] });
+    const withCircles = atomsOf(scene).filter(({ circles }) => circles !== 0);
+    expect(new Set(withCircles.map(({ pick }) => pick.siteIndex))).toEqual(new Set([1]));
+    expect(scene.caption).toContain('ellipsoids of O:');
+  });
+
+  it('crosses worker borders', () => {
+    const scene = buildScene(madeUrea(), { labels: true });
+    expect(structuredClone(scene)).toEqual(scene);
+  });
+});
