@@ -17,6 +17,7 @@ import {
 import { hydrogenBondReach, hydrogenBonds, longestHydrogenBond } from './hydrogen-bonds.ts';
 import { ligandCounts } from './ligand-counts.ts';
 import type { Lattice } from './lattice.ts';
+import { withoutUntaggedAlternatives } from './untagged-disorder.ts';
 import type { NeighbourPairs } from './neighbours.ts';
 import { findNeighbours } from './neighbours.ts';
 
@@ -48,7 +49,7 @@ interface Contact {
  * non-metal and to a second one only up to + 0.3 Å, to metals only where no non-metal holds it, to hydrogen only in H₂.
  * A metal is bonded to O, S, Se, Te and halogens up to + 0.5 Å, to N up to + 0.4 Å, to others up to + 0.3 Å, but not
  * past the complete coordination of a centre such as Si in SiO₄. Metal atoms are bonded to each other in their first
- * shell where none of them has non-metal neighbours, otherwise only when clearly closer than their ligands explain.
+ * shell where none of them has a non-metal as near, otherwise only when clearly closer than their ligands explain.
  * Alternatives of a disordered group and overlapping atoms of partial occupancy are never bonded.
  *
  * Rock salt → six bonds to each atom; O₂ at 1.21 Å → one bond of 1.21 Å.
@@ -80,9 +81,12 @@ export function findBonds(
     pairs,
     (a, b, distance) => distance <= Math.max(longestBond(a, b), longestHydrogenBond(a, b)),
   );
-  const covalent = nonmetalBonds(elements, contacts);
+  const covalent = withoutUntaggedAlternatives(atoms, elements, nonmetalBonds(elements, contacts));
   const ionic = metalLigandBonds(atoms, elements, contacts, covalent);
-  const metallic = metalBonds(atoms, elements, lattice, contacts, ionic, periodic);
+  const metallic = [
+    ...ligatedMetalBonds(elements, contacts, ionic),
+    ...firstShells(bareMetals(elements, ionic, pairs), atoms, elements, lattice, periodic),
+  ];
   const bonds = [...covalent, ...ionic, ...metallic].map(asBond);
   return sortBonds([...bonds, ...hydrogenBonds(atoms, elements, lattice, contacts, bonds)]);
 }
@@ -153,46 +157,69 @@ function metalLigandBonds(
   });
 }
 
-/** Bonds between metal atoms: first shells of bare metals, and short bonds of ligated ones. */
-function metalBonds(
-  atoms: readonly BondAtom[],
+/** Short bonds between metal atoms of which at least one has ligands. */
+function ligatedMetalBonds(
   elements: readonly BondingElement[],
-  lattice: Lattice | null,
   contacts: readonly Contact[],
   ionic: readonly Contact[],
-  periodic: readonly [boolean, boolean, boolean],
 ): Contact[] {
-  const ligated = new Uint8Array(atoms.length);
-  for (const { from, to } of ionic) ligated[from] = ligated[to] = 1;
-  const isMetal = (atom: number): boolean => elements[atom]!.class === 'metal';
-  const short = contacts.filter(
-    ({ from, to, distance }) =>
-      isMetal(from) &&
-      isMetal(to) &&
-      (ligated[from] === 1 || ligated[to] === 1) &&
-      ligatedMetalsBond(elements[from]!, elements[to]!, distance),
-  );
-  const bare = atoms.flatMap((_, atom) => (isMetal(atom) && ligated[atom] === 0 ? [atom] : []));
-  return [...short, ...firstShells(bare, atoms, elements, lattice, periodic)];
+  const ligated = new Set(ionic.flatMap(({ from, to }) => [from, to]));
+  return contacts.filter(({ from, to, distance }) => {
+    const [a, b] = [elements[from]!, elements[to]!];
+    if (a.class !== 'metal' || b.class !== 'metal' || !(ligated.has(from) || ligated.has(to))) return false;
+    return ligatedMetalsBond(a, b, distance);
+  });
 }
 
+/** A metal atom without ligands, and how far (Å) its nearest non-metal is; infinite where none is near. */
+interface BareMetal {
+  readonly atom: number;
+  readonly clearance: number;
+}
+
+function bareMetals(
+  elements: readonly BondingElement[],
+  ionic: readonly Contact[],
+  pairs: NeighbourPairs,
+): BareMetal[] {
+  const ligated = new Set(ionic.flatMap(({ from, to }) => [from, to]));
+  const clearance = new Map<number, number>();
+  elements.forEach(({ class: kind }, atom) => {
+    if (kind === 'metal' && !ligated.has(atom)) clearance.set(atom, Infinity);
+  });
+  if (clearance.size === 0) return [];
+  const note = (metal: number, other: number, distance: number): void => {
+    const known = clearance.get(metal);
+    if (known !== undefined && elements[other]!.class !== 'metal') {
+      clearance.set(metal, Math.min(known, distance));
+    }
+  };
+  for (let k = 0; k < pairs.count; k++) {
+    const [from, to] = [pairs.from[k]!, pairs.to[k]!];
+    note(from, to, pairs.distances[k]!);
+    note(to, from, pairs.distances[k]!);
+  }
+  return [...clearance].map(([atom, distance]) => ({ atom, clearance: distance }));
+}
+
+/** Contacts in the first shell of bare metals, none that is longer than the way to a non-metal. */
 function firstShells(
-  bare: readonly number[],
+  bare: readonly BareMetal[],
   atoms: readonly BondAtom[],
   elements: readonly BondingElement[],
   lattice: Lattice | null,
   periodic: readonly [boolean, boolean, boolean],
 ): Contact[] {
   if (bare.length === 0) return [];
-  const largest = bare.reduce((radius, atom) => Math.max(radius, elements[atom]!.radius), 0);
+  const largest = bare.reduce((radius, { atom }) => Math.max(radius, elements[atom]!.radius), 0);
   const pairs = findNeighbours(
     lattice,
-    bare.map((atom) => atoms[atom]!.cartesian),
+    bare.map(({ atom }) => atoms[atom]!.cartesian),
     2 * metalReach * largest,
     { periodic, maximumPairs: pairsPerAtom * bare.length },
   );
-  const bareAtoms = bare.map((atom) => atoms[atom]!);
-  const bareElements = bare.map((atom) => elements[atom]!);
+  const bareAtoms = bare.map(({ atom }) => atoms[atom]!);
+  const bareElements = bare.map(({ atom }) => elements[atom]!);
   const relative = ({ from, to, distance }: Contact): number =>
     distance / (bareElements[from]!.radius + bareElements[to]!.radius);
   const within = contactsOf(
@@ -200,7 +227,7 @@ function firstShells(
     bareElements,
     pairs,
     (a, b, distance) => distance <= metalReach * (a.radius + b.radius),
-  );
+  ).filter(({ from, to, distance }) => distance < Math.min(bare[from]!.clearance, bare[to]!.clearance));
   const nearest = new Float64Array(bare.length).fill(Infinity);
   for (const contact of within) {
     const share = relative(contact);
@@ -209,7 +236,7 @@ function firstShells(
   }
   return within
     .filter((c) => relative(c) <= shellWidth * Math.max(nearest[c.from]!, nearest[c.to]!))
-    .map((c) => ({ ...c, from: bare[c.from]!, to: bare[c.to]! }));
+    .map((c) => ({ ...c, from: bare[c.from]!.atom, to: bare[c.to]!.atom }));
 }
 
 function isHydrogen(element: BondingElement | undefined): boolean {

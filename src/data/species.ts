@@ -19,6 +19,9 @@ export interface SpeciesMixture {
   readonly sharesGiven: boolean;
 }
 
+/** Characters; a longer text is no atom type. */
+const longestType = 200;
+
 const single =
   /^(?<mass>\d{1,3})?(?<symbol>[A-Za-z]{1,2}?)(?<valence>val|va|v)?(?<charge>(?:\d+(?:\.\d+)?)?[+-]+|[+-]\d+(?:\.\d+)?|\d*)$/;
 
@@ -29,6 +32,7 @@ const single =
  * `parseSpecies('O2-')` → `{element: 'O', charge: -2, massNumber: null, hydrogens: 0}`
  */
 export function parseSpecies(text: string): ParsedSpecies | null {
+  if (text.length > longestType) return null;
   const clean = text.trim().replace(/[−–]/g, '-').replace(/\s+/g, '');
   const group = hydrogenGroup(clean);
   if (group) return group;
@@ -53,6 +57,7 @@ export function parseSpecies(text: string): ParsedSpecies | null {
  * single element is a mixture of one with share 1. null where something in it is no element.
  */
 export function parseMixture(text: string): SpeciesMixture | null {
+  if (text.length > longestType) return null;
   const alone = parseSpecies(text);
   if (alone) return { species: [{ ...alone, share: 1 }], sharesGiven: true };
   const pieces = mixturePieces(text.trim().replace(/[()[\]{}]/g, ' '));
@@ -90,7 +95,7 @@ function withShares(species: readonly (ParsedSpecies & { share: number | null })
 
 function hydrogenGroup(text: string): ParsedSpecies | null {
   const parts = /^(?:([CNO])H([1-4]?)|H2(O)|(wat)|(aq))([+-]?\d*[+-]?)$/i.exec(text);
-  if (!parts || /^(ch|nh|oh)/.test(text)) return null;
+  if (!parts || /^([cno]h|Nh)/.test(text)) return null;
   const heavy = parts[1]?.toUpperCase() ?? 'O';
   const hydrogens = parts[1] ? Number(parts[2] || 1) : 2;
   return { element: heavy, charge: chargeOf(parts[6] ?? ''), massNumber: null, hydrogens };

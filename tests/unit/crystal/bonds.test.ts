@@ -114,6 +114,12 @@ describe('bonds of metals', () => {
     expect(pairs(aqua)).toEqual(['0-1', '1-2', '1-3']);
   });
 
+  it('join bare metals only where no non-metal is nearer', () => {
+    expect(pairs([atom('La', 0, 0, 0), atom('La', 4.16, 0, 0)])).toEqual(['0-1']);
+    const borideLike = [atom('La', 0, 0, 0), atom('La', 4.16, 0, 0), atom('B', 0, 3.4, 0)];
+    expect(pairs(borideLike)).toEqual([]);
+  });
+
   it('join ligated metals only when clearly short', () => {
     const dimer = (metal: string, apart: number): string[] =>
       pairs([
@@ -192,6 +198,17 @@ describe('disorder', () => {
     expect(ring).toHaveLength(0);
     const whole = findBonds([atom('C', 0.2, 0, 0, copy(0)), atom('C', 8.8, 0, 0, copy(0, 1))], cube(10));
     expect(whole).toMatchObject([{ shift: [-1, 0, 0] }]);
+  });
+
+  it('sees the alternatives of an atom that the file does not mark as such', () => {
+    const half = { occupancy: 0.5 };
+    const perchlorate = [
+      atom('Cl', 0, 0, 0),
+      ...corners(1.44).map((cartesian) => ({ element: 'O', cartesian, ...half })),
+      ...corners(-1.44).map((cartesian) => ({ element: 'O', cartesian, ...half })),
+    ];
+    expect(pairs(perchlorate)).toHaveLength(8);
+    expect(pairs(perchlorate).every((bond) => bond.startsWith('0-'))).toBe(true);
   });
 
   it('does not bond halves of one split atom that carry no group', () => {
