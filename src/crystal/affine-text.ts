@@ -6,7 +6,7 @@ export interface AffineExpressions {
   readonly constant: Vec3;
   /** Every constant and coefficient stood there as whole number or fraction: no decimals. */
   readonly exact: boolean;
-  /** Largest number of decimals that a constant was given with; 0 without decimals. */
+  /** Largest number of decimals that a constant was given with, final zeros not counted; 0 without decimals. */
   readonly decimals: number;
 }
 
@@ -39,7 +39,7 @@ function readTerm(text: string, letters: string, first: boolean): { term: Term; 
   if (signs === '' && !first) return null;
   if (Number(under ?? 1) === 0 || Number(letterUnder ?? 1) === 0) return null;
   const value = (signOf(signs) * Number(digits ?? 1)) / (Number(under ?? 1) * Number(letterUnder ?? 1));
-  const decimals = digits?.includes('.') ? digits.length - digits.indexOf('.') - 1 : 0;
+  const decimals = /\.(\d*?)0*$/.exec(digits ?? '')?.[1]?.length ?? 0;
   const term = {
     letter: letter === '' ? null : index,
     value,

@@ -163,6 +163,11 @@ function generatorsOf(symbols: readonly RotationSymbol[]): SymmetryOperation[] |
   return generators;
 }
 
+/** More of them than the lattice letter names show that the letter and the rotations do not go together. */
+function pureTranslations(group: readonly SymmetryOperation[]): number {
+  return group.filter(({ rotation }) => rotationOrder(rotation) === 1).length;
+}
+
 /** New basis and origin of the bracketed part: `(0 0 -1)` in twelfths, or `(x-y,x+y,z)` with x′ = V x. */
 function readChange(text: string): { basis: Mat3; origin: Vec3 } | null {
   const numbers = /^\s*([+-]?\d+)[\s,]+([+-]?\d+)[\s,]+([+-]?\d+)\s*$/.exec(text);
@@ -202,7 +207,7 @@ function splitSymbol(
 /** Quotation marks of a file left around the symbol; a closing `"` alone is a double prime. */
 function unquoted(symbol: string): string {
   const match = /^\s*(['"])(.*)\1\s*$/s.exec(symbol);
-  return match ? match[2]! : symbol;
+  return (match ? match[2]! : symbol).replace(/^\s*['"]/, '');
 }
 
 /**
@@ -215,15 +220,23 @@ function unquoted(symbol: string): string {
  * `operationsFromHall('-P 2yn')` → x,y,z; -x+1/2,y+1/2,-z+1/2; -x,-y,-z; x+1/2,-y+1/2,z+1/2
  */
 export function operationsFromHall(symbol: string): SymmetryOperation[] | null {
-  const parts = splitSymbol(unquoted(symbol));
-  const centring = parts && centringVectors[parts.lattice];
+  const bare = unquoted(symbol);
+  const operations = operationsOfParts(bare);
+  const strayQuote = operations === null && /['"]\s*$/.test(bare);
+  return strayQuote ? operationsOfParts(bare.replace(/['"]\s*$/, '')) : operations;
+}
+
+function operationsOfParts(symbol: string): SymmetryOperation[] | null {
+  const parts = splitSymbol(symbol);
+  const centring = parts && (centringVectors[parts.lattice] ?? null);
   const rotations = parts && readRotations(parts.rotations);
   const generators = rotations && generatorsOf(rotations);
   if (!parts || !centring || !generators) return null;
   if (parts.bar) generators.unshift({ rotation: scaleMatrix(-1, identity3), translation: [0, 0, 0] });
   if (generators.some(({ rotation }) => rotationOrder(rotation) === null)) return null;
   const group = closeGroup([...centring.map(translationOperation), ...generators].map(normalizeOperation));
-  if (!group || parts.change.trim() === '') return group;
+  if (!group || pureTranslations(group) !== 1 + centring.length) return null;
+  if (parts.change.trim() === '') return group;
   const change = readChange(parts.change);
   return change && changeBasis(group, change.basis, change.origin);
 }

@@ -72,9 +72,27 @@ interface Wish {
   readonly grants: (code: string) => boolean;
 }
 
+/** The setting code that a symbol names outright, or by its cell choice (of unique axis b where it names none). */
+function settingCode({ code, cellChoice, uniqueAxis }: SymbolText): string | null {
+  if (code !== null || cellChoice === null) return code;
+  return `${uniqueAxis ?? 'b'}${cellChoice}`;
+}
+
+/** A code refers to the group: `P 21/c :b3` is P 1 21/a 1. Without such a setting the candidates stay. */
+function withSettingOfCode(candidates: Candidate[], text: SymbolText): Candidate[] {
+  const code = settingCode(text);
+  const number = candidates[0]?.setting?.number;
+  if (code === null || number === undefined || candidates.some((candidate) => candidate.code === code)) {
+    return candidates;
+  }
+  const meant = settingsOfNumber(number).filter(({ setting }) => setting === code);
+  return meant.length > 0 ? meant.map(tabulated) : candidates;
+}
+
 function wishesOf(text: SymbolText): Wish[] {
   const wishes: Wish[] = [];
-  const { origin, axes, uniqueAxis, cellChoice, code } = text;
+  const { origin, axes, uniqueAxis } = text;
+  const code = settingCode(text);
   if (code !== null) wishes.push({ words: `setting ${code}`, grants: (given) => given === code });
   if (origin !== null) {
     wishes.push({ words: `origin choice ${origin}`, grants: (given) => given.startsWith(String(origin)) });
@@ -87,12 +105,6 @@ function wishesOf(text: SymbolText): Wish[] {
     wishes.push({
       words: `unique axis ${uniqueAxis}`,
       grants: (given) => new RegExp(`^-?${uniqueAxis}\\d?$`).test(given),
-    });
-  }
-  if (cellChoice !== null) {
-    wishes.push({
-      words: `cell choice ${cellChoice}`,
-      grants: (given) => given.endsWith(String(cellChoice)),
     });
   }
   return wishes;
@@ -192,7 +204,7 @@ export function settingFromHermannMauguin(symbol: string, cell?: CellConstants):
   const read = readSymbolText(symbol);
   if (!read) return null;
   const text = macromolecular(read);
-  const candidates = onGivenAxes(candidatesOf(text.compact), text);
+  const candidates = onGivenAxes(withSettingOfCode(candidatesOf(text.compact), text), text);
   return choose(symbol.trim(), candidates, wishesOf(text), cell);
 }
 

@@ -65,13 +65,21 @@ function wishesOfCode(code: string): Partial<Wishes> {
   return wishesOfWords(bare);
 }
 
+/** A bracketed digit is a screw subscript only behind a larger digit; `P -1 (2)` gives the number of the group. */
+function subscript(_all: string, order: string, screw: string): string {
+  return Number(screw) < Number(order) ? `${order}${screw}` : order;
+}
+
 /** Typographic marks of subscripts and overbars taken out; what remains is digits, letters, `-`, `/` and words. */
 function withoutMarkup(text: string): string {
   return plainSigns(text)
-    .replace(/\\(?:bar|overline)\s*\{?\s*(\d)\s*\}?/g, '-$1')
+    .replace(/\\?(?:bar|overline)\s*\{?\s*(\d)\s*\}?/gi, '-$1')
+    .replace(/(\d)[\u0304\u0305]/g, '-$1')
     .replace(/<\/?[a-z]+>/gi, '')
     .replace(/sub\s*[({[]?\s*(\d)\s*[)}\]]?/gi, '$1')
-    .replace(/[({[]\s*(\d)\s*[)}\]]/g, '$1')
+    .replace(/([2346])\s*_?[({[]\s*([1-5])\s*[)}\]]/g, subscript)
+    .replace(/\{\s*([2346])[_~]?([1-5])\s*\}/g, '$1$2')
+    .replace(/(?:#|\bno\.?)\s*\d+\s*$/i, '')
     .replace(/[~_$^'"`\u2018-\u201D]/g, ' ')
     .trim();
 }
@@ -121,7 +129,7 @@ function withoutLastLetter(bare: string): Stripped {
 export function readSymbolText(text: string): SymbolText | null {
   if (text.length > 200) return null;
   const brackets = withoutBrackets(withoutMarkup(text));
-  const words = withoutWords(brackets.rest);
+  const words = withoutWords(brackets.rest.replace(/[,;.].*$/s, ''));
   const last = withoutLastLetter(words.rest.replace(/\s/g, ''));
   if (!/^[A-Z](?:[-/\dabcdemn]+)$/i.test(last.rest)) return null;
   return {

@@ -120,14 +120,20 @@ export interface OperationReading {
 /** Denominators beyond 24 that occur in lists of enlarged cells. */
 const rareDenominators = [5, 7, 9, 10, 11];
 
+/** How far n/24 may be from a decimal of so many digits: what two digits of 0.33 or 0.67 need, then 0.002, then 0.0001. */
+function snapTolerance(decimals: number): number {
+  if (decimals <= 2) return 0.0051;
+  return decimals <= 4 ? 0.002 : 1e-4;
+}
+
 /**
- * A decimal translation brought to the fraction it stands for: n/24 within 0.002 (0.0051 for two decimals, as 0.33
- * or 0.67 need; never for one decimal), else n/5, n/7, n/9, n/10 or n/11 within half a unit of the last digit.
+ * A decimal translation brought to the fraction it stands for: n/24 within `snapTolerance` (never for one digit), else
+ * n/5, n/7, n/9, n/10 or n/11 within half a unit of the last digit.
  */
 function snapDecimal(value: number, decimals: number): number {
   if (decimals < 2) return cleanFraction(value);
   const near = (parts: number): number => Math.round(value * parts) / parts;
-  if (Math.abs(near(24) - value) <= (decimals === 2 ? 0.0051 : 0.002)) return near(24);
+  if (Math.abs(near(24) - value) <= snapTolerance(decimals)) return near(24);
   const within = 0.5 * 10 ** -decimals;
   const parts = decimals < 3 ? undefined : rareDenominators.find((n) => Math.abs(near(n) - value) <= within);
   return parts === undefined ? value : near(parts);
