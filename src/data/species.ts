@@ -23,7 +23,7 @@ export interface SpeciesMixture {
 const longestType = 200;
 
 const single =
-  /^(?<mass>\d{1,3})?(?<symbol>[A-Za-z]{1,2}?)(?<valence>val|va|v)?(?<charge>(?:\d+(?:\.\d+)?)?[+-]+|[+-]\d+(?:\.\d+)?|\d*)$/;
+  /^(?<mass>\d{1,3})?(?:(?<valence>C|Si)(?:val|va|v)|(?<symbol>[A-Za-z]{1,2}))(?<charge>(?:\d+(?:\.\d+)?)?[+-]+|[+-]\d+(?:\.\d+)?|\d*)$/;
 
 /**
  * An atom type as files write it: `Si`, `SI`, `O2-`, `Fe3+`, `Fe+3`, `Na1+`, `Cu0+`, `2H`, `D`, `Siva` (valence form
@@ -38,9 +38,7 @@ export function parseSpecies(text: string): ParsedSpecies | null {
   if (group) return group;
   const parts = single.exec(clean)?.groups;
   if (!parts) return null;
-  const symbol = parts.symbol ?? '';
-  if (parts.valence && !/^(C|Si)$/i.test(symbol)) return null;
-  const element = elementOf(symbol);
+  const element = elementOf(parts.valence ?? parts.symbol ?? '');
   if (!element) return null;
   const massNumber = parts.mass ? Number(parts.mass) : null;
   return {
