@@ -14,6 +14,8 @@ import type { EquivalentAtom } from './dossier.ts';
 export interface SiteAtoms {
   readonly site: Site;
   readonly atoms: readonly EquivalentAtom[];
+  /** Lattice translation that brought each atom into the cell after its operation. */
+  readonly cellShifts: readonly Vec3[];
   /** Indices into symmetry.operations. */
   readonly stabiliser: readonly number[];
   readonly distinctOrientations: number;
@@ -30,7 +32,7 @@ function loneAtom(site: Site): SiteAtoms {
     rotation: identity3,
     orientation: 0,
   };
-  return { site, atoms: [atom], stabiliser: [0], distinctOrientations: 1 };
+  return { site, atoms: [atom], cellShifts: [[0, 0, 0]], stabiliser: [0], distinctOrientations: 1 };
 }
 
 /** Cartesian matrices of all operations of a crystal; the identity alone without a cell. */
@@ -63,7 +65,8 @@ function atomsOfOrbit(
       orientation: orientations.orientationOf(image.operationIndex),
     };
   });
-  return { site, atoms, stabiliser: orbit.stabiliser, distinctOrientations: orientations.count };
+  const cellShifts = orbit.images.map(({ cellShift }) => cellShift);
+  return { site, atoms, cellShifts, stabiliser: orbit.stabiliser, distinctOrientations: orientations.count };
 }
 
 /**

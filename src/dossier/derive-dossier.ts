@@ -137,7 +137,7 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
     };
   });
   progress(0.7, 'bonds');
-  const { bonds, wholeMolecules } = bondsOf(chosen);
+  const { bonds, wholeMolecules } = bondsOf(chosen, log);
   progress(1, 'done');
   return {
     name: crystal.name,
