@@ -4,7 +4,6 @@ import type { Place, ProblemLog } from '#src/base/problem.ts';
 import type { Site } from '#src/crystal/crystal.ts';
 import { nuclide, usualIsotope } from '#src/data/nuclides.ts';
 import { describeEfg } from '#src/tensor/efg.ts';
-import { independentComponents } from '#src/tensor/forced.ts';
 import { printedNoise, tensorNoise } from '#src/tensor/noise.ts';
 import { equivalentSpread, meanTensor, projectOnSiteSymmetry, turnBack } from '#src/tensor/projection.ts';
 import { describeShielding } from '#src/tensor/shielding.ts';
@@ -41,6 +40,9 @@ interface Evidence {
   readonly source: Place;
 }
 
+/** Anisotropy a nearly isotropic tensor is credited with when its residual is judged: ppm, ppm, a.u. */
+const leastScale: Readonly<Record<Quantity, number>> = { shielding: 5, shift: 5, efg: 0.05 };
+
 /** Factor from the printed unit to the canonical one, for judging printed digits. */
 function unitFactor(quantity: Quantity, unitGiven: string): number {
   const unit = quantity === 'efg' ? efgUnitOf(unitGiven) : null;
@@ -59,8 +61,6 @@ function weigh(
   const tensor = back[0]!;
   const { residual, anisotropicNorm } = projectOnSiteSymmetry(tensor, stabiliser);
   const { projected } = projectOnSiteSymmetry(meanTensor(back), stabiliser);
-  // Where symmetry leaves no anisotropy in any frame, all of it is noise.
-  const forcedIsotropic = independentComponents(stabiliser).symmetricCount === 1;
   const printed = printedNoise(first.entry.tensor, quantity, unitFactor(quantity, unitGiven));
   return {
     tensor,
@@ -71,7 +71,7 @@ function weigh(
       found.map((one) => one.rotation),
     ),
     anisotropicNorm,
-    noise: forcedIsotropic ? Math.max(printed, residual) : tensorNoise(printed, residual, anisotropicNorm),
+    noise: tensorNoise(printed, residual, Math.max(anisotropicNorm, leastScale[quantity])),
     source: first.entry.place,
   };
 }
@@ -119,9 +119,6 @@ function reportUndefined(
 
 /** A residual above this share of the anisotropy speaks of a wrong frame or a wrong atom rather than of noise. */
 const doubtfulShare = 0.1;
-
-/** Anisotropy a nearly isotropic tensor is credited with when its residual is judged: ppm, ppm, a.u. */
-const leastScale: Readonly<Record<Quantity, number>> = { shielding: 5, shift: 5, efg: 0.05 };
 
 function reportResidual(site: Site, quantity: Quantity, evidence: Evidence, log: ProblemLog): void {
   const scale = Math.max(evidence.anisotropicNorm, leastScale[quantity]);
