@@ -33,6 +33,8 @@ export interface SiteRows {
 
 export const coordinateKeys = ['_atom_site_fract_x', '_atom_site_cartn_x'] as const;
 const axes = ['x', 'y', 'z'] as const;
+/** Cells or Å from the origin; further out no digits are left to place an atom by. */
+const largestCoordinate = 1e6;
 
 /**
  * Rows of the atom list. Left out, each with a problem: rows with a coordinate `?` or `.` (`cif-missing-coordinates`) or one
@@ -174,15 +176,15 @@ function position(
     const text = textOf(value);
     if (!column || !value || text === null) return 'absent';
     const read = readNumber(text);
-    if (!read || !Number.isFinite(read.value)) {
+    if (!read || Math.abs(read.value) > largestCoordinate) {
       log.add(
         'error',
         'cif-bad-number',
-        `${column.name} of ${label} is “${text}”, which is no number; the row was left out.`,
+        `${column.name} of ${label} is “${text}”, which is no usable number; the row was left out.`,
         {
           place: placeOfValue(view, value),
           got: text,
-          allowed: 'a number, with an uncertainty in parentheses if known, or a fraction such as 1/3',
+          allowed: `a number of at most ${largestCoordinate}, with an uncertainty in parentheses if known, or a fraction such as 1/3`,
         },
       );
       return 'bad';
