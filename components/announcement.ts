@@ -1,13 +1,7 @@
-import type { SiteDossier } from '#src/store/dossier-types.ts';
 import { countProblems } from '#src/store/state.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
-import {
-  couplingDecimals,
-  formatNumber,
-  formatOperation,
-  isotopeSymbol,
-  ppmDecimals,
-} from './number-format.ts';
+import { mainNumbers } from './convention-symbol.ts';
+import { formatOperation, isotopeSymbol } from './number-format.ts';
 import { problemSummary } from './problem-summary.ts';
 
 /** What the live region says after a change; null when there is nothing to say. */
@@ -33,16 +27,4 @@ function sentenceOf({ derived, selection }: WorkbenchState): string | null {
     ? `atom ${formatOperation(atom.operation)}`
     : `${site.multiplicity} atom${site.multiplicity === 1 ? '' : 's'}`;
   return [`${name} selected`, where, ...mainNumbers(site)].join(', ');
-}
-
-function mainNumbers(site: SiteDossier): string[] {
-  const ppm = (value: number): string => `${formatNumber(value, ppmDecimals(site.element))} ppm`;
-  const { shielding, shift, efg } = site;
-  return [
-    ...(shielding ? [`isotropic shielding ${ppm(shielding.isotropic)}`] : []),
-    ...(shift ? [`isotropic shift ${ppm(shift.isotropic)}`] : []),
-    ...(efg && efg.couplingMHz !== null
-      ? [`C Q ${formatNumber(efg.couplingMHz, couplingDecimals(site.element))} MHz`]
-      : []),
-  ];
 }

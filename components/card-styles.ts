@@ -89,8 +89,8 @@ export const cardStyles = css`
     color: var(--soft);
     font-size: 12.5px;
   }
-  .words {
-    margin-left: 6px;
+  .conventions td.words {
+    padding-left: 8px;
   }
   td.definition {
     padding-left: 20px;

@@ -45,16 +45,6 @@ export function formatTriple(values: readonly number[], decimals: number): strin
   return values.map((value) => formatNumber(value, decimals)).join(', ');
 }
 
-/** Decimals of a shift or shielding of a site: hydrogen's whole range is 20 ppm, so it gets one more. */
-export function ppmDecimals(element: string): number {
-  return element === 'H' || element === 'D' || element === 'T' ? 2 : 1;
-}
-
-/** Decimals of a coupling constant in MHz: deuterium's are below 0.3 MHz. */
-export function couplingDecimals(element: string): number {
-  return element === 'D' || element === 'H' ? 4 : 2;
-}
-
 /** A symmetry operation with true minus signs. */
 export function formatOperation(operation: string): string {
   return operation.replaceAll('-', '−').replaceAll(',', ', ').replaceAll(/, +/g, ', ');

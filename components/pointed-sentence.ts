@@ -1,6 +1,7 @@
 import type { PickEntry } from '#src/scene/scene.ts';
-import type { CrystalDossier, SiteDossier } from '#src/store/dossier-types.ts';
-import { couplingDecimals, formatNumber, formatOperation, ppmDecimals } from './number-format.ts';
+import type { CrystalDossier } from '#src/store/dossier-types.ts';
+import { mainNumbers } from './convention-symbol.ts';
+import { formatNumber, formatOperation } from './number-format.ts';
 
 /** What is under the pointer, in a line: site, operation, main numbers; or the two ends and the length of a bond. */
 export function pointedSentence(entry: PickEntry, dossier: CrystalDossier): string {
@@ -13,18 +14,7 @@ export function pointedSentence(entry: PickEntry, dossier: CrystalDossier): stri
   if (!site) return '';
   const atom = site.equivalents.find(({ id }) => id === entry.atomId);
   const operation = atom && dossier.lattice ? [formatOperation(atom.operation)] : [];
-  return [site.label, ...operation, ...numbersOf(site)].join(' · ');
-}
-
-function numbersOf({ element, shielding, shift, efg }: SiteDossier): string[] {
-  const decimals = ppmDecimals(element);
-  return [
-    ...(shielding ? [`σiso ${formatNumber(shielding.isotropic, decimals)} ppm`] : []),
-    ...(shift ? [`δiso ${formatNumber(shift.isotropic, decimals)} ppm`] : []),
-    ...(efg && efg.couplingMHz !== null
-      ? [`C_Q ${formatNumber(efg.couplingMHz, couplingDecimals(element))} MHz`]
-      : []),
-  ];
+  return [site.label, ...operation, ...mainNumbers(site)].join(' · ');
 }
 
 function labelOf(atomId: string, dossier: CrystalDossier): string {

@@ -91,27 +91,27 @@ export class ProblemsDrawer extends StoreElement {
                 Could not ${refused.what}; what was on screen stayed.
                 <button class="link" @click=${() => this.store?.dismissRefusal()}>Forget it</button>
               </h3>
-              ${this.#list(refused.problems)}
+              ${this.#list(refused.problems, true)}
               <h3>The case on screen</h3>`
           : nothing
       }
-      ${this.#list(derived?.problems ?? [])}
+      ${this.#list(derived?.problems ?? [], false)}
     `;
   }
 
-  #list(problems: readonly Problem[]): TemplateResult {
+  #list(problems: readonly Problem[], isRefused: boolean): TemplateResult {
     if (problems.length === 0) return html`<p class="soft">Nothing was guessed, repaired or left out.</p>`;
     const sorted = [...problems].sort(
       (a, b) => severityOrder.indexOf(a.severity) - severityOrder.indexOf(b.severity),
     );
     const more = sorted.length - shownProblems;
     return html`<ul>
-      ${sorted.slice(0, shownProblems).map((problem) => this.#problem(problem))}
+      ${sorted.slice(0, shownProblems).map((problem) => this.#problem(problem, isRefused))}
       ${more > 0 ? html`<li>${more} more are not listed here.</li>` : nothing}
     </ul>`;
   }
 
-  #problem(problem: Problem): TemplateResult {
+  #problem(problem: Problem, isRefused: boolean): TemplateResult {
     const { severity, code, message, got, allowed, hint } = problem;
     const facts: readonly (readonly [string, string | null])[] = [
       ['found', got],
@@ -135,17 +135,19 @@ export class ProblemsDrawer extends StoreElement {
             </dl>`
           : nothing
       }
-      ${this.#place(problem)}
+      ${this.#place(problem, isRefused)}
     </li>`;
   }
 
-  #place({ file, line, column }: Problem): TemplateResult | typeof nothing {
+  #place({ file, line, column }: Problem, isRefused: boolean): TemplateResult | typeof nothing {
     if (file === null) return nothing;
     if (line === null) return html`<span class="soft">${file}</span>`;
-    const known = this.store?.state.decisions?.sources.some(({ name }) => name === file) ?? false;
+    const known = this.store?.sourceOf({ file, isRefused }) ?? null;
     const place = `${file}, line ${line}${column === null ? '' : `, column ${column}`}`;
-    if (!known) return html`<span class="soft">${place}</span>`;
-    return html`<button class="link" @click=${() => this.store?.showPlace({ file, line })}>${place}</button>`;
+    if (known === null) return html`<span class="soft">${place}</span>`;
+    return html`<button class="link" @click=${() => this.store?.showPlace({ file, line, isRefused })}>
+      ${place}
+    </button>`;
   }
 
   #close(): void {

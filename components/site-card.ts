@@ -96,7 +96,7 @@ export class SiteCard extends StoreElement {
     this.sourceLines = unique.map((place) => ({ place, text: null }));
     const lines = await Promise.all(
       unique.map(async (place) => {
-        const page = await this.store?.lines(place.file, place.line, 1).catch(() => null);
+        const page = await this.store?.lines(place, 1).catch(() => null);
         return { place, text: page?.lines[0] ?? null };
       }),
     );

@@ -1,13 +1,9 @@
 import { html } from 'lit';
 import type { TemplateResult } from 'lit';
+import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { CrystalDossier, SiteDossier } from '#src/store/dossier-types.ts';
-import {
-  couplingDecimals,
-  formatNumber,
-  isotopeSymbol,
-  ppmDecimals,
-  symmetrySymbol,
-} from './number-format.ts';
+import { headingOf, knownConvention, siteNumber } from './convention-symbol.ts';
+import { isotopeSymbol, symmetrySymbol } from './number-format.ts';
 
 /** One column of the site table: how it is headed, spoken and filled. */
 export interface SiteColumn {
@@ -62,76 +58,36 @@ const identity: readonly SiteColumn[] = [
   },
 ];
 
-/** Absent tensors leave the cell empty; undefined values say so. */
-function value(part: object | null, number: number | null | undefined, decimals: number): string {
-  return part === null ? '' : formatNumber(number, decimals);
+/** A column of a number the catalogue knows; absent tensors leave its cell empty. */
+function numberColumn(
+  quantity: ConventionEntry['quantity'],
+  key: string,
+  width: SiteColumn['width'],
+): SiteColumn {
+  const entry = knownConvention(quantity, key);
+  return {
+    key: `${quantity}-${key}`,
+    heading: headingOf(entry),
+    words: [entry.name, entry.unit && `in ${entry.unit}`].filter(Boolean).join(' '),
+    width,
+    numeric: true,
+    text: (site) => siteNumber(site, entry),
+    because: (site) => site[quantity]?.undefinedBecause[entry.field],
+  };
 }
 
-const shielding: readonly SiteColumn[] = [
-  {
-    key: 'shielding-isotropic',
-    heading: html`σ<sub>iso</sub>/ppm`,
-    words: 'isotropic shielding in ppm',
-    width: [62, 0.8],
-    numeric: true,
-    text: (site) => value(site.shielding, site.shielding?.isotropic, ppmDecimals(site.element)),
-  },
-];
-
-const shift: readonly SiteColumn[] = [
-  {
-    key: 'shift-isotropic',
-    heading: html`δ<sub>iso</sub>/ppm`,
-    words: 'isotropic shift in ppm',
-    width: [62, 0.8],
-    numeric: true,
-    text: (site) => value(site.shift, site.shift?.isotropic, ppmDecimals(site.element)),
-  },
-];
+const isotropic = (quantity: 'shielding' | 'shift'): SiteColumn =>
+  numberColumn(quantity, 'isotropic', [66, 0.8]);
 
 /** Span and skew: of the shielding where there is one, else of the shift; both are defined alike on the two scales. */
-const anisotropic = (site: SiteDossier): SiteDossier['shielding'] | SiteDossier['shift'] =>
-  site.shielding ?? site.shift;
-
-const spanAndSkew: readonly SiteColumn[] = [
-  {
-    key: 'span',
-    heading: html`Ω/ppm`,
-    words: 'span in ppm',
-    width: [52, 0.8],
-    numeric: true,
-    text: (site) => value(anisotropic(site), anisotropic(site)?.span, ppmDecimals(site.element)),
-  },
-  {
-    key: 'skew',
-    heading: html`κ`,
-    words: 'skew',
-    width: [56, 0.7],
-    numeric: true,
-    text: (site) => value(anisotropic(site), anisotropic(site)?.skew, 2),
-    because: (site) => anisotropic(site)?.undefinedBecause['skew'],
-  },
+const spanAndSkew = (quantity: 'shielding' | 'shift'): SiteColumn[] => [
+  numberColumn(quantity, 'span', [56, 0.8]),
+  numberColumn(quantity, 'skew', [56, 0.7]),
 ];
 
 const efg: readonly SiteColumn[] = [
-  {
-    key: 'coupling',
-    heading: html`C<sub>Q</sub>/MHz`,
-    words: 'quadrupole coupling constant in MHz, signed',
-    width: [62, 0.8],
-    numeric: true,
-    text: (site) => value(site.efg, site.efg?.couplingMHz, couplingDecimals(site.element)),
-    because: (site) => site.efg?.undefinedBecause['couplingMHz'],
-  },
-  {
-    key: 'efg-asymmetry',
-    heading: html`η<sub>Q</sub>`,
-    words: 'asymmetry of the electric field gradient',
-    width: [56, 0.7],
-    numeric: true,
-    text: (site) => value(site.efg, site.efg?.asymmetry, 2),
-    because: (site) => site.efg?.undefinedBecause['asymmetry'],
-  },
+  numberColumn('efg', 'couplingMHz', [62, 0.8]),
+  numberColumn('efg', 'asymmetry', [54, 0.7]),
 ];
 
 /** Columns of a crystal: those of tensors it does not have are left out. */
@@ -139,9 +95,9 @@ export function columnsFor(dossier: CrystalDossier): SiteColumn[] {
   const has = (part: 'shielding' | 'shift' | 'efg'): boolean => dossier.sites.some((site) => site[part]);
   return [
     ...identity,
-    ...(has('shielding') ? shielding : []),
-    ...(has('shift') ? shift : []),
-    ...(has('shielding') || has('shift') ? spanAndSkew : []),
+    ...(has('shielding') ? [isotropic('shielding')] : []),
+    ...(has('shift') ? [isotropic('shift')] : []),
+    ...(has('shielding') ? spanAndSkew('shielding') : has('shift') ? spanAndSkew('shift') : []),
     ...(has('efg') ? efg : []),
   ];
 }

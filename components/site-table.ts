@@ -37,6 +37,7 @@ export class SiteTable extends StoreElement {
 
   override connectedCallback(): void {
     super.connectedCallback();
+    // also called once the first height is known
     this.#resize = new ResizeObserver(() => this.requestUpdate());
     this.#resize.observe(this);
   }
@@ -244,11 +245,6 @@ export class SiteTable extends StoreElement {
     if (top < scroller.scrollTop) scroller.scrollTop = top;
     else if (bottom > scroller.scrollTop + scroller.clientHeight)
       scroller.scrollTop = bottom - scroller.clientHeight;
-  }
-
-  protected override firstUpdated(): void {
-    // The height is known only now: draw the rows that fit.
-    this.requestUpdate();
   }
 
   /** Tells the layout how tall the whole table would be, so that a short one leaves no gap. */

@@ -129,7 +129,7 @@ export class SourceView extends StoreElement {
   async #load(first: number): Promise<void> {
     const place = this.store?.state.shownPlace;
     if (!place) return;
-    const page = await this.store?.lines(place.file, first, pageLines);
+    const page = await this.store?.lines({ ...place, line: first }, pageLines);
     if (this.store?.state.shownPlace === place) this.page = page ?? null;
   }
 }

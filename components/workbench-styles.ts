@@ -45,6 +45,9 @@ export const workbenchStyles = css`
     background: var(--raised);
     border-left: 1px solid var(--line);
   }
+  .drawer:focus-visible {
+    outline: none;
+  }
   .body {
     position: relative;
     min-height: 0;

@@ -30,6 +30,8 @@ export class Workbench extends StoreElement {
   protected override readonly watches = ['theme', 'shownPlace', 'selection', 'derived', 'refused'] as const;
   #unwatchTheme: (() => void) | null = null;
   #spoken = '';
+  /** The problems were opened by a refused file, not by the user: they go when the refusal goes. */
+  #isOwnOpening = false;
   /** What had the focus when a drawer was opened; it gets it back. */
   #opener: HTMLElement | null = null;
 
@@ -53,7 +55,12 @@ export class Workbench extends StoreElement {
 
   protected override stateChanged(state: WorkbenchState, before: WorkbenchState | null): void {
     if (before && state.theme !== before.theme) keepTheme(state.theme);
-    if (state.refused && state.refused !== before?.refused) this.#show('problems');
+    if (state.refused && state.refused !== before?.refused) {
+      this.#isOwnOpening = this.panel === null;
+      this.#show('problems');
+    }
+    if (!state.refused && before?.refused && this.#isOwnOpening && this.panel === 'problems')
+      this.panel = null;
     this.#spoken = announcement(state, before) ?? this.#spoken;
   }
 
@@ -109,6 +116,7 @@ export class Workbench extends StoreElement {
   }
 
   readonly #askPanel = ({ detail }: CustomEvent<Panel>): void => {
+    this.#isOwnOpening = false;
     if (detail) this.#show(detail);
     else this.#close();
   };

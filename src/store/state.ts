@@ -30,6 +30,8 @@ export interface Selection {
 /** Files that could not be opened; the case on screen stayed. */
 export interface Refusal {
   readonly what: string;
+  /** Kept so that the problems can lead to their lines. */
+  readonly sources: readonly SourceFile[];
   readonly problems: readonly Problem[];
 }
 
@@ -46,6 +48,8 @@ export type ThemeChoice = 'auto' | 'light' | 'dark';
 export interface ShownPlace {
   readonly file: string;
   readonly line: number;
+  /** The file is one of those refused last; else it belongs to the case. */
+  readonly isRefused?: boolean;
 }
 
 /** Everything on screen. Immutable: a change makes a new state that shares what stayed. */

@@ -142,10 +142,17 @@ export class Store {
     this.#change({ refused: null }, 'the refused file was dismissed');
   }
 
-  /** Lines of a file of the case, by name. */
-  lines(file: string, first: number, count: number): Promise<LinePage | null> {
-    const source = this.#state.decisions?.sources.find(({ name }) => name === file);
-    return source ? this.#engine.lines(source, first, count) : Promise.resolve(null);
+  /** The file of that name, of the case or of what was refused last; two files of one case never share a name. */
+  sourceOf({ file, isRefused = false }: Omit<ShownPlace, 'line'>): SourceFile | null {
+    const { decisions, refused } = this.#state;
+    const sources = (isRefused ? refused : decisions)?.sources ?? [];
+    return sources.find(({ name }) => name === file) ?? null;
+  }
+
+  /** Up to `count` lines from the place on. */
+  lines(place: ShownPlace, count: number): Promise<LinePage | null> {
+    const source = this.sourceOf(place);
+    return source ? this.#engine.lines(source, place.line, count) : Promise.resolve(null);
   }
 
   /** Files with an id, and a name that is theirs alone: places in a file are told by its name. */
@@ -187,13 +194,13 @@ export class Store {
         if (isLatest()) this.#change({ progress: { what: reason, share, stage } }, `${stage} went on`);
       });
       if (!isLatest()) return false;
-      if (!derived.dossier) return this.#refuse(reason, derived.problems);
+      if (!derived.dossier) return this.#refuse(reason, decisions.sources, derived.problems);
       this.#underway = null;
       this.#accept(decisions, derived, history(this.#state), reason);
       return true;
     } catch (error) {
       if (!isLatest()) return false;
-      if (!(error instanceof Cancelled)) return this.#refuse(reason, [engineFault(error)]);
+      if (!(error instanceof Cancelled)) return this.#refuse(reason, decisions.sources, [engineFault(error)]);
       this.#underway = null;
       this.#change({ progress: null }, `${reason} was cancelled`);
       return false;
@@ -223,9 +230,9 @@ export class Store {
     this.#change(change, `${reason} is on screen`);
   }
 
-  #refuse(what: string, problems: readonly Problem[]): false {
+  #refuse(what: string, sources: readonly SourceFile[], problems: readonly Problem[]): false {
     this.#underway = null;
-    this.#change({ refused: { what, problems }, progress: null }, `${what} failed`);
+    this.#change({ refused: { what, sources, problems }, progress: null }, `${what} failed`);
     return false;
   }
 

@@ -66,7 +66,8 @@ describe('the store', () => {
     expect(store.state.decisions).toBe(before.decisions);
     expect(store.state.derived).toBe(before.derived);
     expect(store.state.past).toBe(before.past);
-    expect(store.state.refused).toEqual({ what: 'open broken.cif', problems: empty.problems });
+    expect(store.state.refused).toMatchObject({ what: 'open broken.cif', problems: empty.problems });
+    expect(store.sourceOf({ file: 'broken.cif', isRefused: true })?.blob.size).toBe('broken.cif'.length);
   });
 
   it('keeps the case when the engine breaks', async () => {

@@ -1,0 +1,149 @@
+import { afterEach, describe, expect, it } from 'vitest';
+import type { Mounted } from './mount.ts';
+import { mountWorkbench, press, settle, textOf } from './mount.ts';
+
+/** Waits for what comes from a dynamic import or the next smoothed frame. */
+async function eventually<Value>(look: () => Value | null | undefined | false): Promise<Value> {
+  for (let i = 0; i < 200; i++) {
+    const found = look();
+    if (found) return found;
+    await new Promise((resolve) => setTimeout(resolve, 25));
+  }
+  throw new Error('it did not come');
+}
+
+let page: Mounted;
+
+async function drawnPage(): Promise<ShadowRoot> {
+  page = await mountWorkbench(undefined, true);
+  const root = page.part('ellipsite-crystal-view').shadowRoot;
+  await eventually(() => textOf(root.querySelector('#caption')) !== '');
+  return root;
+}
+
+const stageOf = (root: ShadowRoot): HTMLElement => root.querySelector<HTMLElement>('.stage')!;
+
+/** Ends of the drawn cell axes: they tell how the crystal is turned. */
+const axesOf = (root: ShadowRoot): string =>
+  [...root.querySelectorAll('svg.axes line')]
+    .map((line) => `${line.getAttribute('x2')},${line.getAttribute('y2')}`)
+    .join(' ');
+
+function click(target: HTMLElement, xPx: number, yPx: number): void {
+  const { left, top } = target.getBoundingClientRect();
+  const init = { clientX: left + xPx, clientY: top + yPx, pointerId: 1, bubbles: true, button: 0 };
+  target.dispatchEvent(new PointerEvent('pointermove', init));
+  target.dispatchEvent(new PointerEvent('pointerdown', init));
+  target.dispatchEvent(new PointerEvent('pointerup', init));
+}
+
+describe('the crystal on screen', () => {
+  afterEach(() => document.body.replaceChildren());
+
+  it('says what it shows: caption, colour bar with quantity, unit and limits, scale, axes', async () => {
+    const root = await drawnPage();
+    expect(textOf(root.querySelector('#caption'))).toMatch(/shielding/i);
+    expect(textOf(root.querySelector('.legend'))).toMatch(/shielding.*ppm.*radius: 1 Å = /);
+    expect([...root.querySelectorAll('svg.axes text')].map(textOf).sort()).toEqual(['a', 'b', 'c']);
+  });
+
+  it('turns by arrow keys, looks along an axis by its letter and shows all again', async () => {
+    const root = await drawnPage();
+    const stage = stageOf(root);
+    const first = axesOf(root);
+    press(stage, 'ArrowRight');
+    await settle();
+    expect(axesOf(root)).not.toBe(first);
+    press(stage, 'c');
+    await settle();
+    // along c of a tetragonal cell: a to the right, b upwards, c towards the viewer, so a point in the drawing
+    const ends = axesOf(root)
+      .split(' ')
+      .map((end) => end.split(',').map((x) => Math.round(Number(x))));
+    expect(ends).toHaveLength(3);
+    for (const end of [
+      [34, 0],
+      [0, -34],
+      [0, 0],
+    ]) {
+      expect(ends.some(([x, y]) => Math.abs(x! - end[0]!) === 0 && Math.abs(y! - end[1]!) === 0)).toBe(true);
+    }
+    press(stage, '0');
+    await settle();
+    expect(axesOf(root)).toBe(first);
+  });
+
+  it('has the same by buttons', async () => {
+    const root = await drawnPage();
+    press(stageOf(root), 'a');
+    await settle();
+    const byKey = axesOf(root);
+    press(stageOf(root), '0');
+    root.querySelector<HTMLElement>('[aria-label="Look along a"]')!.click();
+    await settle();
+    expect(axesOf(root)).toBe(byKey);
+    for (const button of root.querySelectorAll('button')) {
+      const box = button.getBoundingClientRect();
+      expect(Math.min(box.width, box.height), textOf(button)).toBeGreaterThanOrEqual(24);
+    }
+  });
+
+  it('selects the atom that is clicked, everywhere, and nothing beside it', async () => {
+    const root = await drawnPage();
+    const stage = stageOf(root);
+    press(stage, 'c');
+    await settle();
+    // a grid of presses finds the atoms wherever the fit put them
+    const found = new Set<number>();
+    for (let x = 20; x < stage.clientWidth; x += 12) {
+      for (let y = 20; y < stage.clientHeight; y += 12) {
+        click(stage, x, y);
+        const { selection } = page.store.state;
+        if (selection) found.add(selection.siteIndex);
+      }
+    }
+    expect([...found].sort()).toEqual([0, 1, 2]);
+    click(stage, 2, 2);
+    expect(page.store.state.selection).toBeNull();
+  });
+
+  it('turns by dragging without selecting', async () => {
+    const root = await drawnPage();
+    const stage = stageOf(root);
+    const before = axesOf(root);
+    const { left, top } = stage.getBoundingClientRect();
+    const at = (x: number, y: number) => ({
+      clientX: left + x,
+      clientY: top + y,
+      pointerId: 1,
+      bubbles: true,
+    });
+    stage.dispatchEvent(new PointerEvent('pointerdown', at(100, 100)));
+    for (let step = 1; step <= 8; step++)
+      stage.dispatchEvent(new PointerEvent('pointermove', at(100 + 8 * step, 100)));
+    stage.dispatchEvent(new PointerEvent('pointerup', at(164, 100)));
+    await settle();
+    expect(axesOf(root)).not.toBe(before);
+    expect(page.store.state.selection).toBeNull();
+  });
+
+  it('rings the atoms of the site that is hovered in the table', async () => {
+    const root = await drawnPage();
+    page.store.hover({ siteIndex: 0, atomId: null });
+    await settle();
+    expect(root.querySelectorAll('svg.rings ellipse').length).toBeGreaterThanOrEqual(2);
+    page.store.hover(null);
+    await settle();
+    expect(root.querySelectorAll('svg.rings ellipse')).toHaveLength(0);
+  });
+
+  it('shows another quantity, with its own unit in the colour bar', async () => {
+    const root = await drawnPage();
+    page.store.setPicture({ quantity: 'efg' }, 'test');
+    await settle();
+    expect(textOf(root.querySelector('.legend'))).toContain('a.u.');
+    page.store.setPicture({ showTensors: false }, 'test');
+    await settle();
+    expect(root.querySelector('.legend')).toBeNull();
+  });
+});
