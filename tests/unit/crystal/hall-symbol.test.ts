@@ -68,7 +68,7 @@ describe('operationsFromHall', () => {
       'P 2yz',
       'P 33',
       'P 4*',
-      'P 3"',
+      'P 3" 2',
       'P 2 2 2',
       'S 3',
       'P 2 (1 2)',
