@@ -41,6 +41,7 @@ export function readCollection(scanner: CifScanner, start: number): CifValue | n
     return value;
   }
   scanner.charactersInVain += scanner.end - start;
+  if (scanner.valuesMade > cifLimits.values) return null;
   scanner.valuesMade = valuesMade;
   if (!partOfWord) {
     reader.open.forEach(({ offset }) => scanner.plainBrackets.add(offset));
@@ -55,11 +56,11 @@ function reportPlain(scanner: CifScanner, start: number): void {
     'cif-unclosed-list',
     start,
     'A bracket opens here and does not close before the next name or reserved word; it was read as ordinary text.',
-    {
-      got: scanner.report.excerpt(start, scanner.lineEndFrom(start)),
+    () => ({
+      got: scanner.report.excerpt(start, scanner.text.length),
       allowed: 'a list [ … ] or a table { … }',
       hint: 'Close the bracket, or put the value in quotes.',
-    },
+    }),
   );
 }
 

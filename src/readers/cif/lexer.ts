@@ -146,11 +146,11 @@ export class CifLexer extends CifScanner {
       'cif-bracket-in-bare-value',
       offset,
       'A bracket stands in a value without quotes; the value was read whole, as CIF 1.1 does.',
-      {
-        got: this.report.excerpt(offset, this.wordEndFrom(offset)),
+      () => ({
+        got: this.report.word(offset),
         allowed: 'CIF 2.0 keeps [ ] { } for lists and tables',
         hint: 'Put the value in quotes, or take the CIF 2.0 magic code out.',
-      },
+      }),
     );
   }
 
@@ -200,7 +200,7 @@ export class CifLexer extends CifScanner {
       'cif-reserved-start',
       start,
       `A value without quotes starts with ${character}, which the grammar reserves; it was read as ordinary text.`,
-      { got: this.report.excerpt(start, this.end), hint: 'Put the value in quotes.' },
+      () => ({ got: this.report.excerpt(start, this.end), hint: 'Put the value in quotes.' }),
     );
   }
 }

@@ -19,10 +19,11 @@ export function readQuoted(scanner: CifScanner, start: number, inCollection: boo
 function single(scanner: CifScanner, start: number, quote: number, inCollection: boolean): CifValue {
   const first = firstQuote(scanner, start + 1, quote);
   if (first < 0) return unclosed(scanner, start, quote);
-  if (endsValue(scanner, first + 1, inCollection)) return closed(scanner, start, first);
+  const beforeComma = inCollection && scanner.text.charCodeAt(first + 1) === code.comma;
+  if (beforeComma || endsValue(scanner, first + 1, inCollection)) return closed(scanner, start, first);
   const loose = looseClose(scanner, first + 1, quote, inCollection);
   if (loose < 0) {
-    if (!inCollection || scanner.text.charCodeAt(first + 1) !== code.comma) scanner.missingBlank(first + 1);
+    scanner.missingBlank(first + 1);
     return closed(scanner, start, first);
   }
   scanner.report.add(
@@ -30,11 +31,11 @@ function single(scanner: CifScanner, start: number, quote: number, inCollection:
     'cif-quote-inside',
     first,
     'The quote that delimits this string stands inside it too; it was read by the rule of CIF 1.1.',
-    {
+    () => ({
       got: scanner.report.excerpt(start, loose + 1),
       allowed: 'CIF 2.0 ends the string at the first such quote',
       hint: 'Use the other quote or three of them, or take the CIF 2.0 magic code out.',
-    },
+    }),
   );
   return closed(scanner, start, loose);
 }
@@ -86,10 +87,10 @@ function unclosed(scanner: CifScanner, start: number, quote: number): CifValue {
     'cif-unclosed-quote',
     start,
     'The quote that opens this string does not close on the line; the rest of the line was taken.',
-    {
+    () => ({
       got: scanner.report.excerpt(start, lineEnd),
       allowed: `the text, then ${String.fromCharCode(quote)} and a blank`,
-    },
+    }),
   );
   return scanner.textValue(text, true, start);
 }

@@ -8,6 +8,7 @@ export type CifProblemDetails = Omit<ProblemDetails, 'place'>;
 /** Problems of one code that are worth building; the log counts the rest. */
 const builtPerCode = 50;
 const heldAtMost = 1000;
+const longestExcerpt = 60;
 
 /**
  * Turns offsets into places and hands problems to the log. Problems of an attempt that may be taken back (a bracket that
@@ -24,12 +25,13 @@ export class CifReport {
     this.#log = log;
   }
 
+  /** `details` as a function are made only where the problem is kept, for those that may come by the million. */
   add(
     severity: Severity,
     code: string,
     offset: number,
     message: string,
-    details: CifProblemDetails = {},
+    details: CifProblemDetails | (() => CifProblemDetails) = {},
   ): void {
     const known = this.#built.get(code);
     if (known && known.count >= builtPerCode) {
@@ -37,11 +39,13 @@ export class CifReport {
       return;
     }
     const place = placeOf(this.#source, Math.min(offset, this.#source.text.length));
-    const last = problem(severity, code, message, { ...details, place });
+    const given = typeof details === 'function' ? details() : details;
+    const last = problem(severity, code, message, { ...given, place });
     this.#built.set(code, { count: (known?.count ?? 0) + 1, last });
     this.#pass(last);
   }
 
+  /** Starts to hold problems back. */
   hold(): void {
     this.#held = [];
   }
@@ -60,9 +64,18 @@ export class CifReport {
 
   /** What stands between two offsets, cut to the first line and 60 characters. */
   excerpt(start: number, end: number): string {
-    const piece = this.#source.text.slice(start, Math.min(end, start + 61));
+    const piece = this.#source.text.slice(start, Math.min(end, start + longestExcerpt + 1));
     const line = piece.split(/[\r\n]/, 1)[0] ?? '';
-    return line.length > 60 || line.length < piece.length ? `${line.slice(0, 60)}…` : line;
+    return line.length > longestExcerpt || line.length < piece.length
+      ? `${line.slice(0, longestExcerpt)}…`
+      : line;
+  }
+
+  /** The word at an offset, cut to 60 characters; long texts without a blank are not searched for its end. */
+  word(offset: number): string {
+    const piece = this.#source.text.slice(offset, offset + longestExcerpt + 1);
+    const word = piece.split(/\s/, 1)[0] ?? '';
+    return word.length > longestExcerpt ? `${word.slice(0, longestExcerpt)}…` : word;
   }
 
   #pass(found: Problem): void {

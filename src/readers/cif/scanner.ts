@@ -103,7 +103,7 @@ export class CifScanner {
       'cif-missing-blank',
       offset,
       'A value follows the one before without a blank between them; both were read.',
-      { got: this.report.excerpt(offset, this.wordEndFrom(offset)), allowed: 'a blank or a line end' },
+      () => ({ got: this.report.word(offset), allowed: 'a blank or a line end' }),
     );
   }
 }
