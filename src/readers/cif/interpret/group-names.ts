@@ -46,7 +46,7 @@ const numberItems = ['_space_group_it_number', '_symmetry_int_tables_number', '_
 /**
  * Reads every item that names the space group: Hall symbol, Hermann–Mauguin symbol in any of its items (with the cell
  * deciding between settings it leaves open), number. A Hall item that repeats the Hermann–Mauguin symbol is one of those by
- * mistake and counts as such. What names no group is reported (`cif-unknown-group-name`) with the weight given: a note where
+ * mistake and counts as such, and the other way round. What names no group is reported (`cif-unknown-group-name`) with the weight given: a note where
  * operations are listed anyway.
  */
 export function readGroupNames(
@@ -65,7 +65,7 @@ export function readGroupNames(
   const squeeze = (text: string): string => text.replace(/[\s_]+/g, '');
   const mistaken = hall !== null && symbols.some(({ text }) => squeeze(text) === squeeze(hall.text));
   if (hall && !mistaken) push(hall, fromHall(hall));
-  for (const item of symbols) push(item, fromSymbol(view, item, cell));
+  for (const item of symbols) push(item, fromSymbol(view, item, cell) ?? fromHall(item));
   if (hall && mistaken) push(hall, fromSymbol(view, hall, cell) ?? fromHall(hall));
   const number = knownItem(view, ...numberItems);
   const numeral = number === null ? Number.NaN : Number(number.text.replace(/^['"\s#]+|[\s'"]+$/g, ''));

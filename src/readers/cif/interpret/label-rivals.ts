@@ -9,8 +9,8 @@ const mostGroups = 6;
 
 /**
  * Decides labels that may mean two elements of the formula (`CD1`: carbon or cadmium) by the composition: all labels that begin
- * alike change together, and the first assignment that fits the formula is taken. Unchanged where the first reading
- * fits already or none does.
+ * alike change together, and the first assignment that fits the formula is taken. Where none fits, the formula does not hold
+ * all elements, and labels that spell one it lacks (`FeM1`, not fluorine) mean that one.
  */
 export function settleRivals(
   built: BuiltSites,
@@ -18,7 +18,8 @@ export function settleRivals(
   { counts, units }: StatedFormula,
 ): BuiltSites {
   const groups = [...new Set(built.species.flatMap((one, i) => (one.rival ? [groupOf(built, i)] : [])))];
-  if (!counts || groups.length === 0 || groups.length > mostGroups) return built;
+  const spelled = built.species.some((one) => one.spelled !== null);
+  if (!counts || (groups.length === 0 && !spelled)) return built;
   const quality = (sites: readonly Site[]): number => {
     const content = cellContent(sites, multiplicities);
     const fits = units === null ? [null] : [units, null];
@@ -27,16 +28,17 @@ export function settleRivals(
   };
   let best = built;
   let bestQuality = quality(built.sites);
-  for (let choice = 1; choice < 2 ** groups.length && bestQuality < 2; choice++) {
+  const tries = 2 ** Math.min(mostGroups, groups.length);
+  for (let choice = 1; choice < tries && bestQuality < 2; choice++) {
     const exchanged = new Set(groups.filter((_, i) => (choice >> i) & 1));
-    const candidate = exchange(built, exchanged);
+    const candidate = exchange(built, (one, i) => (exchanged.has(groupOf(built, i)) ? one.rival : null));
     const found = quality(candidate.sites);
     if (found > bestQuality) {
       best = candidate;
       bestQuality = found;
     }
   }
-  return best;
+  return bestQuality === 0 && spelled ? exchange(built, (one) => one.spelled) : best;
 }
 
 function groupOf({ sites, species }: BuiltSites, i: number): string {
@@ -44,11 +46,12 @@ function groupOf({ sites, species }: BuiltSites, i: number): string {
   return `${letters} ${species[i]!.element}`;
 }
 
-function exchange(built: BuiltSites, groups: ReadonlySet<string>): BuiltSites {
+function exchange(built: BuiltSites, other: (species: SiteSpecies, i: number) => string | null): BuiltSites {
   const species = built.species.map((one, i): SiteSpecies => {
-    if (one.rival === null || !groups.has(groupOf(built, i))) return one;
-    const shares = one.shares.map(({ occupancy }) => ({ element: one.rival!, occupancy }));
-    return { ...one, element: one.rival, rival: one.element, shares, certain: false };
+    const element = other(one, i);
+    if (element === null) return one;
+    const shares = one.shares.map(({ occupancy }) => ({ element, occupancy }));
+    return { ...one, element, rival: one.element, shares, certain: false };
   });
   const sites = built.sites.map((site, i): Site => {
     const { element } = species[i]!;

@@ -17,6 +17,8 @@ export interface SiteSpecies {
   readonly certain: boolean;
   /** Another element of the formula that the label may mean as well: carbon for `CO1` read as cobalt. */
   readonly rival: string | null;
+  /** A two-letter element that the label spells and the formula lacks, where the formula made it a one-letter one: iron in `FeM1`. */
+  readonly spelled: string | null;
   /** False where a mixture named no shares and equal ones were taken. */
   readonly sharesGiven: boolean;
 }
@@ -25,8 +27,10 @@ export interface SiteSpecies {
 const dummyTypes =
   /^(x|xx|du|dum|dummy|cg|cgs|cnt|cent|centroid|ctr|lp|va|vac|vacancy|void|hole|q|\u25a1)(?![a-z])/i;
 /** As labels, where the type says nothing; `CG1` in capitals may be a carbon, `Cg1` is the centre of a ring. */
-const dummyLabels =
-  /^(X|XX|Du|DU|Dum|DUM|Dummy|DUMMY|Cg|Cgs|Cnt|CNT|Cent|CENT|Centroid|Ctr|CTR|Ct|Lp|LP|Va|Vac|Q|\u25a1)(?![a-z])/;
+const dummyLabels = /^(X|XX|Du|DU|Dum|DUM|Dummy|DUMMY|Cg|Cgs|Cnt|CNT|Cent|CENT|Centroid|\u25a1)(?![a-z])/;
+
+/** Symbols that a label hardly means as a first letter with a letter for the place behind it. Common practice, no source. */
+const spelledOut: ReadonlySet<string> = new Set('Br Cl Cr Cu Fe In Ir Pt Si Sn Sr'.split(' '));
 
 /** True for a row that stands for no atom: `dum` as calculation flag, or a dummy name where no element is told. */
 export function isDummy(
@@ -63,6 +67,7 @@ export function speciesOfSite(
     return {
       ...ofElement(reading.element, 'label', reading.certain),
       rival: rivalOf(label, reading.element, known),
+      spelled: spelledIn(label, known),
     };
   }
   if (/^[HD](?![a-z])/.test(label)) return ofElement(label.startsWith('D') ? 'D' : 'H', 'label', false);
@@ -73,12 +78,18 @@ export function speciesOfSite(
   return ofElement('X', 'nothing', false);
 }
 
-/** The other of the two readings, one letter or two, where the formula has both. */
+/** The other of the two readings, one letter or two, where the formula has both; oxygen for `H2O1` read as a hydrogen. */
 function rivalOf(label: string, taken: string, known: ReadonlySet<string>): string | null {
+  if (/^[HD][23]O/.test(label) && known.has('O')) return 'O';
   const letters = /[A-Za-z]{2}/.exec(label)?.[0] ?? '';
   const readings = [letters, letters.slice(0, 1)].map((text) => elementOf(text)?.symbol ?? '');
   if (!readings.every((symbol) => known.has(symbol))) return null;
   return readings.find((symbol) => symbol !== taken) ?? null;
+}
+
+function spelledIn(label: string, known: ReadonlySet<string>): string | null {
+  const symbol = elementOf(/[A-Za-z]{2}/.exec(label)?.[0] ?? '')?.symbol ?? '';
+  return spelledOut.has(symbol) && !known.has(symbol) ? symbol : null;
 }
 
 /** Two capitals as a type, such as `CO` or `HO`, that name no element of the formula while their letters alone do. */
@@ -112,6 +123,7 @@ function fromMixture(mixture: SpeciesMixture, from: 'type' | 'label'): SiteSpeci
     from,
     certain: true,
     rival: null,
+    spelled: null,
     sharesGiven,
   };
 }
@@ -126,6 +138,7 @@ function ofElement(element: string, from: SiteSpecies['from'], certain: boolean)
     from,
     certain,
     rival: null,
+    spelled: null,
     sharesGiven: true,
   };
 }

@@ -52,6 +52,11 @@ describe('without listed operations', () => {
     expect(operationsOf(block(monoclinic, text, atom))).toEqual(['x,y,z', '-x,y,-z']);
   });
 
+  it('a Hall symbol in the Hermann–Mauguin item is read as that', () => {
+    const reading = block(monoclinic, "_symmetry_space_group_name_H-M '-P 2ybc'\n", atom);
+    expect(only(reading).symmetry).toMatchObject({ number: 14, source: 'symbol' });
+  });
+
   it('a name that does not fit the cell yields to one that does', () => {
     const text = "_symmetry_space_group_name_Hall 'P 4'\n_symmetry_space_group_name_H-M 'P 21/c'\n";
     const reading = block(monoclinic, text, atom);

@@ -117,6 +117,27 @@ describe('elements', () => {
     expect(elements('Cd C4', plainColumns, ...methane)).toEqual(['C', 'C', 'Cd']);
   });
 
+  it('a molecule of water or a hydrogen on oxygen goes by the composition', () => {
+    const gypsum = [
+      'Ca1 0 0 .1',
+      'S1 0 0 .2',
+      'O1 .1 0 .2',
+      'O2 .2 0 .2',
+      'O3 .3 0 .2',
+      'O4 .4 0 .2',
+      'H2O1 .1 .1 .1',
+      'H2O2 .2 .1 .1',
+    ];
+    expect(elements('Ca H4 O6 S', plainColumns, ...gypsum).slice(-2)).toEqual(['O', 'O']);
+    const acid = ['C1 .1 .1 .1', 'O1 .2 .1 .1', 'O2 .3 .1 .1', 'H1C .1 .2 .2', 'H2O .2 .2 .2'];
+    expect(elements('C H2 O2', plainColumns, ...acid).at(-1)).toBe('H');
+  });
+
+  it('that a label spells and the formula lacks are believed where the formula does not fit', () => {
+    const rows = ['K 0 0 .1', 'FeM1 0 0 .2', 'AlT .1 0 .2', 'F1 .2 0 .2', 'F2 .3 0 .2'];
+    expect(elements('K Mg Al F2', plainColumns, ...rows)).toEqual(['K', 'Fe', 'Al', 'F', 'F']);
+  });
+
   it('that are a guess or unknown are told', () => {
     const reading = block(box, inversion, atomText(plainColumns, 'W1 .1 .2 .3', 'M1 .2 .2 .3'));
     expect(codes(reading)).toEqual(['cif-unknown-element', 'cif-element-guessed']);
