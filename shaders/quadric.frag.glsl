@@ -56,10 +56,11 @@ void main() {
   if (bits != 0) {
     vec3 d = circleDistances(q, mat3(vBody1, vBody2, vBody3), unit) / uPixelScale;
     vec3 drawn = vec3(bits & 1, (bits >> 1) & 1, (bits >> 2) & 1);
-    float halfWidth = 0.5 * uCircleWidthPx;
+    // finer lines on small ellipsoids, which they would cover
+    float halfWidth = 0.5 * min(uCircleWidthPx, 0.5 + 0.055 * narrowest);
     vec3 line = drawn * (1.0 - smoothstep(halfWidth - 0.35, halfWidth + 0.35, d));
     float strongest = max(line.x, max(line.y, line.z)) * smoothstep(4.0, 10.0, narrowest);
-    colour = mix(colour, inkOn(vColour, colour), 0.86 * strongest);
+    colour = mix(colour, inkOn(vColour, colour), 0.92 * strongest);
   }
   float rim = -outlineDistance(q, e) / uPixelScale;
   float rimInk = (1.0 - smoothstep(uRimWidthPx - 0.4, uRimWidthPx + 0.4, rim)) * smoothstep(2.0, 6.0, narrowest);

@@ -13,6 +13,7 @@ import { pick as pickInScene } from '#src/scene/pick.ts';
 import type { Scene } from '#src/scene/scene.ts';
 import { cylinderGeometry, lineGeometry, quadricGeometry, setQuadricStates } from './batch-geometry.ts';
 import { applyTheme, applyView, programMaterial, sharedUniforms } from './materials.ts';
+import { isSoftwareRenderer, rendererName } from './probe-webgl.ts';
 import type { Supersampling } from './supersampling.ts';
 import { createSupersampling } from './supersampling.ts';
 import type { RenderTheme } from './theme.ts';
@@ -23,7 +24,10 @@ export type { RenderTheme } from './theme.ts';
 
 export interface RendererOptions {
   readonly theme?: RenderTheme;
-  /** Samples across a pixel at rest, 1 to turn smoothing off; 1 is always used while the picture changes. */
+  /**
+   * Samples across a pixel at rest, 1 to turn smoothing off; 1 is always used while the picture changes. Usual: 2 without a
+   * graphics chip or on dense screens, else 3.
+   */
   readonly samplesAcross?: number;
   /** Called when the context was lost, and when the picture is back. Nothing needs to be set again. */
   readonly onContextLost?: () => void;
@@ -81,6 +85,7 @@ class Renderer implements CrystalRenderer {
   readonly #canvas: HTMLCanvasElement;
   readonly #options: RendererOptions;
   readonly #gl: WebGLRenderer;
+  readonly #software: boolean;
   readonly #uniforms = sharedUniforms();
   readonly #group = new Group();
   readonly #still = new StillCamera();
@@ -114,6 +119,7 @@ class Renderer implements CrystalRenderer {
     this.#canvas = canvas;
     this.#options = options;
     this.#gl = new WebGLRenderer({ canvas, context, antialias: false });
+    this.#software = isSoftwareRenderer(rendererName(context));
     this.#gl.outputColorSpace = LinearSRGBColorSpace;
     this.#gl.setPixelRatio(1);
     this.#smoothing = createSupersampling(this.#gl.capabilities.maxTextureSize);
@@ -261,7 +267,8 @@ class Renderer implements CrystalRenderer {
   }
 
   #samples(): number {
-    return Math.max(1, Math.floor(this.#options.samplesAcross ?? (this.#deviceRatio > 1.5 ? 2 : 3)));
+    const usual = this.#software || this.#deviceRatio > 1.5 ? 2 : 3;
+    return Math.max(1, Math.floor(this.#options.samplesAcross ?? usual));
   }
 
   #draw(smooth: boolean): void {

@@ -17,6 +17,12 @@ export function isSoftwareRenderer(renderer: string | null): boolean {
   return renderer !== null && softwareNames.test(renderer);
 }
 
+/** Unmasked renderer string of a context; null where the browser hides it. */
+export function rendererName(gl: WebGL2RenderingContext): string | null {
+  const info = gl.getExtension('WEBGL_debug_renderer_info');
+  return info ? String(gl.getParameter(info.UNMASKED_RENDERER_WEBGL)) : null;
+}
+
 /** Makes a WebGL2 context for a moment, asks what drives it, and lets it go. */
 export function probeWebGL(makeCanvas: () => HTMLCanvasElement = newCanvas): WebGLProbe {
   const gl = contextOf(makeCanvas());
@@ -29,8 +35,7 @@ export function probeWebGL(makeCanvas: () => HTMLCanvasElement = newCanvas): Web
         'This browser offers no WebGL 2, usually because it finds no graphics chip, so the crystal is not drawn; everything else works.',
     };
   }
-  const info = gl.getExtension('WEBGL_debug_renderer_info');
-  const renderer = info ? String(gl.getParameter(info.UNMASKED_RENDERER_WEBGL)) : null;
+  const renderer = rendererName(gl);
   gl.getExtension('WEBGL_lose_context')?.loseContext();
   const software = isSoftwareRenderer(renderer);
   const by = renderer ? ` (${renderer})` : '';

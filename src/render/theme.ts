@@ -21,7 +21,7 @@ export const lightTheme: RenderTheme = {
   selected: [11, 110, 110],
   hovered: [94, 88, 78],
   depthCue: 0.3,
-  circleWidthPx: 1.5,
+  circleWidthPx: 1.8,
   rimWidthPx: 0.9,
 };
 
@@ -31,6 +31,6 @@ export const darkTheme: RenderTheme = {
   selected: [98, 196, 190],
   hovered: [188, 181, 168],
   depthCue: 0.38,
-  circleWidthPx: 1.5,
+  circleWidthPx: 1.8,
   rimWidthPx: 0.9,
 };

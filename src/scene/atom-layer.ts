@@ -47,7 +47,7 @@ export function atomQuadrics(
 }
 
 /** Neighbours outside are this much smaller, so that they stand back. */
-const contextShare = 0.68;
+const contextShare = 0.58;
 
 function sphereColour({ site, context }: DrawnAtom): readonly [number, number, number] {
   return context ? bondColour(site.element) : atomColour(site.element);

@@ -49,7 +49,7 @@ export function buildScene(dossier: CrystalDossier, options: Partial<SceneOption
     caption: caption({
       scale,
       legend,
-      kindBecause: tensors?.kindBecause ?? null,
+      notes: tensors?.notes ?? [],
       askedFor: chosen.quantity !== 'auto' && chosen.quantity !== quantity ? chosen.quantity : null,
       extent,
       neighbours: atoms.length > own.length,
@@ -74,7 +74,7 @@ function chooseQuantity(dossier: CrystalDossier, options: SceneOptions): SceneQu
 }
 
 interface ChosenTensors extends TensorDrawing {
-  readonly kindBecause: ScaleChoice['because'];
+  readonly notes: ScaleChoice['notes'];
 }
 
 function drawTensors(
@@ -90,11 +90,11 @@ function drawTensors(
     if (form && wanted) forms.set(site.index, form);
   }
   if (forms.size === 0) return null;
-  const { scale, because } = chooseScale(forms, nearPairs(dossier, atoms), quantity, options, (site) =>
+  const { scale, notes } = chooseScale(forms, nearPairs(dossier, atoms), quantity, options, (site) =>
     atomRadius(site.element),
   );
   const values = [...forms.values()].map((form) => form.colourValue);
-  return { forms, scale, legend: legendFor(quantity, values, options.colourLimits), kindBecause: because };
+  return { forms, scale, legend: legendFor(quantity, values, options.colourLimits), notes };
 }
 
 function elementKeys(atoms: readonly DrawnAtom[]): ElementKey[] {

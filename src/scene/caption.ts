@@ -10,7 +10,8 @@ const quantityWords: Readonly<Record<SceneQuantity, string>> = {
 export interface CaptionParts {
   readonly scale: TensorScale | null;
   readonly legend: Legend | null;
-  readonly kindBecause: string | null;
+  /** Sentences about kind and scale. */
+  readonly notes: readonly string[];
   /** Quantity asked for, where another one is drawn. */
   readonly askedFor: SceneQuantity | null;
   readonly extent: 'cell' | 'molecules';
@@ -34,15 +35,14 @@ export function scaleStatement(scale: TensorScale): string {
 /** One or two sentences that say in words what is drawn and in which convention. */
 export function caption(parts: CaptionParts): string {
   const sentences = [tensorSentence(parts)];
-  const { askedFor, scale, kindBecause } = parts;
+  const { askedFor, scale, notes } = parts;
   if (askedFor && scale) {
     const asked = quantityWords[askedFor];
     sentences.push(
       `There are no ${asked === 'EFG' ? asked : asked.toLowerCase()} tensors here, so this is shown instead.`,
     );
   }
-  if (kindBecause) sentences.push(`Deviations are drawn because ${kindBecause}.`);
-  sentences.push(extentSentence(parts));
+  sentences.push(...notes, extentSentence(parts));
   return sentences.join(' ');
 }
 
@@ -61,6 +61,6 @@ function tensorSentence({ scale, legend, onlyElements }: CaptionParts): string {
 function extentSentence({ extent, hasCell, neighbours }: CaptionParts): string {
   if (!hasCell) return 'Molecule without a cell.';
   if (extent === 'molecules') return 'One unit cell, its molecules drawn whole.';
-  const outside = neighbours ? ', and small spheres outside are bonded neighbours' : '';
+  const outside = neighbours ? '; small plain spheres outside complete the coordination' : '';
   return `One unit cell; atoms on its faces are repeated${outside}.`;
 }

@@ -1,6 +1,7 @@
 import type { Vec3 } from '#src/base/matrix3.ts';
 import { apply } from '#src/base/matrix3.ts';
 import { add, subtract } from '#src/base/vector3.ts';
+import { electronegativity, elementClass } from '#src/data/radii.ts';
 import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
 
 /** One copy of an atom that is in the picture. */
@@ -35,29 +36,42 @@ export function drawnAtoms(dossier: CrystalDossier, extent: 'cell' | 'molecules'
 }
 
 /**
- * The atoms bonded to drawn ones that are not drawn themselves, each once. They complete the coordination of atoms at the
- * faces of a cell; their own bonds to one another are not wanted.
+ * Atoms outside that complete the coordination of drawn ones, each once: anions about cations, and either partner of a bond
+ * between alike non-metals. A cation outside is not added to an anion inside, which would only fray the picture. Their own
+ * bonds to one another are not wanted.
  */
 export function bondedNeighbours(dossier: CrystalDossier, drawn: readonly DrawnAtom[]): DrawnAtom[] {
   const atoms = atomsById(dossier);
   const copies = copiesById(drawn);
   const added = new Map<string, DrawnAtom>();
-  const addMissing = (id: string, cellShift: Vec3) => {
+  const addMissing = (inside: DrawnAtom, id: string, cellShift: Vec3) => {
     const known = atoms.get(id);
     const key = `${id} ${cellShift.join()}`;
-    if (!known || copies.get(id)?.has(cellShift.join()) || added.has(key)) return;
+    if (!known || !completes(inside.site.element, known.site.element)) return;
+    if (copies.get(id)?.has(cellShift.join()) || added.has(key)) return;
     added.set(key, copyOf(dossier, known.atom, known.site, cellShift, true));
   };
   for (const bond of dossier.bonds) {
     if (bond.kind !== 'bond') continue;
     for (const from of copies.get(bond.from)?.values() ?? []) {
-      addMissing(bond.to, add(from.cellShift, bond.shift));
+      addMissing(from, bond.to, add(from.cellShift, bond.shift));
     }
     for (const to of copies.get(bond.to)?.values() ?? []) {
-      addMissing(bond.from, subtract(to.cellShift, bond.shift));
+      addMissing(to, bond.from, subtract(to.cellShift, bond.shift));
     }
   }
   return [...added.values()];
+}
+
+/** Difference of electronegativity (Pauling's scale) beyond which a bond has a cation and an anion. Our own choice. */
+const ionicDifference = 1;
+
+/** Whether an atom outside belongs to the coordination of one inside. */
+function completes(inside: string, outside: string): boolean {
+  if (elementClass(outside) === 'metal') return elementClass(inside) === 'metal';
+  const [one, other] = [electronegativity(inside), electronegativity(outside)];
+  if (one === null || other === null || elementClass(outside) === 'hydrogen') return true;
+  return one - other <= ionicDifference;
 }
 
 /** Drawn copies of each atom id, by their cell shift as text. */

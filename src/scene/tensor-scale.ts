@@ -11,18 +11,24 @@ export interface NearPair {
 }
 
 /** Semi-axes of two neighbours together take at most this share of their distance, so that the bond stays visible. */
-const filledShare = 0.74;
+const filledShare = { total: 0.74, deviation: 0.8 } as const;
 /** Å; no semi-axis is longer, however far the neighbours are. */
 const longestAngstrom = 1.1;
 /** A deviation bulges a sphere by at most this share of its radius, either way. */
-const largestBulge = 0.6;
-/** Å; ellipsoids thinner than this vanish in a bond. */
-const thinnestAngstrom = 0.1;
+const largestBulge = 0.65;
+/** The same for a scale that was asked for: beyond 1 the ellipsoid would turn inside out. */
+const deepestBulge = 0.95;
+/** Å; a base radius never exceeds this. */
+const largestBaseAngstrom = 0.55;
+/** Å; ellipsoids thinner than this vanish beside a bond. */
+const thinnestAngstrom = 0.14;
+/** Values more unequal than this make a picture of a few giants. */
+const largestRatio = 4;
 
 export interface ScaleChoice {
   readonly scale: TensorScale;
-  /** Why another kind of ellipsoid was taken than asked for or usual; null otherwise. */
-  readonly because: string | null;
+  /** Sentences: why another kind of ellipsoid or another scale was taken than asked for or usual. */
+  readonly notes: readonly string[];
 }
 
 /**
@@ -40,8 +46,15 @@ export function chooseScale(
   const all = [...forms.values()];
   const total = totalScale(forms, pairs, quantity, options.unitsPerAngstrom, otherRadius);
   const { kind, because } = chooseKind(all, total, options.ellipsoid);
-  if (kind === 'total') return { scale: total, because };
-  return { scale: deviationScale(forms, pairs, quantity, options.unitsPerAngstrom, otherRadius), because };
+  // an EFG has no trace: it is never asked why it isn't drawn as a total, unless someone does ask for it
+  const expected = quantity === 'efg' && options.ellipsoid === 'auto';
+  const notes = because && !expected ? [`Deviations are drawn because ${because}.`] : [];
+  if (kind === 'total') return { scale: total, notes };
+  const scale = deviationScale(forms, pairs, quantity, options.unitsPerAngstrom, otherRadius);
+  if (options.unitsPerAngstrom !== null && options.unitsPerAngstrom < scale.unitsPerAngstrom) {
+    notes.push('The scale asked for would turn an ellipsoid inside out; the nearest possible one is taken.');
+  }
+  return { scale, notes };
 }
 
 function chooseKind(
@@ -57,10 +70,12 @@ function chooseKind(
       because: 'some principal values are not positive, so their totals have no ellipsoid',
     };
   }
-  if (asked === 'auto' && lowest / total.unitsPerAngstrom < thinnestAngstrom) {
+  const highest = Math.max(...forms.map((form) => Math.max(...form.values)));
+  const vanishing = lowest / total.unitsPerAngstrom < thinnestAngstrom || highest > largestRatio * lowest;
+  if (asked === 'auto' && vanishing) {
     return {
       kind: 'deviation',
-      because: 'the values are so unequal that the smallest ellipsoids would vanish at one scale',
+      because: 'the totals are so unequal that the smallest ellipsoids would be lost at one scale',
     };
   }
   return { kind: 'total', because: null };
@@ -80,7 +95,7 @@ function totalScale(
     const units = reach(pair.first) + reach(pair.second);
     const fixed = [pair.first, pair.second].filter((site) => !forms.has(site.index));
     const room =
-      filledShare * pair.distanceAngstrom - fixed.reduce((sum, site) => sum + otherRadius(site), 0);
+      filledShare.total * pair.distanceAngstrom - fixed.reduce((sum, site) => sum + otherRadius(site), 0);
     if (units > 0 && room > 0.2) needed = Math.max(needed, units / room);
   }
   const unitsPerAngstrom = asked ?? readableAtLeast(needed);
@@ -94,20 +109,28 @@ function deviationScale(
   asked: number | null,
   otherRadius: (site: SiteDossier) => number,
 ): TensorScale {
-  let room = 2 * longestAngstrom;
-  for (const { first, second, distanceAngstrom } of pairs) {
-    const fixed = [first, second].filter((site) => !forms.has(site.index));
-    if (fixed.length === 2) continue;
-    const free = filledShare * distanceAngstrom - fixed.reduce((sum, site) => sum + otherRadius(site), 0);
-    if (free > 0.2) room = Math.min(room, fixed.length === 1 ? 2 * free : free);
+  const outward = new Map<number, number>();
+  let largest = 0;
+  for (const [index, { values, isotropic }] of forms) {
+    outward.set(index, Math.max(...values) - isotropic);
+    largest = Math.max(largest, ...values.map((value) => Math.abs(value - isotropic)));
   }
-  const baseRadiusAngstrom = Math.round(100 * Math.min(0.55, room / 2 / (1 + largestBulge / 2))) / 100;
-  const deviations = [...forms.values()].map((form) =>
-    Math.max(...form.values.map((value) => Math.abs(value - form.isotropic))),
-  );
-  const largest = Math.max(...deviations);
+  const bulge = (index: number) => (largest > 0 ? (largestBulge * (outward.get(index) ?? 0)) / largest : 0);
+  let base = largestBaseAngstrom;
+  for (const { first, second, distanceAngstrom } of pairs) {
+    const drawn = [first, second].filter((site) => forms.has(site.index));
+    if (drawn.length === 0) continue;
+    const fixed = [first, second].filter((site) => !forms.has(site.index));
+    const room =
+      filledShare.deviation * distanceAngstrom - fixed.reduce((sum, site) => sum + otherRadius(site), 0);
+    const radii = drawn.reduce((sum, site) => sum + 1 + bulge(site.index), 0);
+    if (room > 0.2) base = Math.min(base, room / radii);
+  }
+  const baseRadiusAngstrom = Math.max(0.1, Math.floor(100 * base) / 100);
   const needed = largest / (largestBulge * baseRadiusAngstrom);
-  const unitsPerAngstrom = asked ?? (needed > 0 ? readableAtLeast(needed) : 1);
+  const least = largest / (deepestBulge * baseRadiusAngstrom);
+  const unitsPerAngstrom =
+    asked === null ? (needed > 0 ? readableAtLeast(needed) : 1) : Math.max(asked, least);
   return { quantity, kind: 'deviation', unitsPerAngstrom, baseRadiusAngstrom };
 }
 

@@ -2,7 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { buildScene } from '#src/scene/build-scene.ts';
 import { turn } from '#src/scene/camera.ts';
 import { firstCamera } from '#src/scene/framing.ts';
-import { projectAtoms } from '#src/scene/project.ts';
+import type { Vec3 } from '#src/base/matrix3.ts';
+import { projectAtoms, projection, projectPoint } from '#src/scene/project.ts';
 import { darkTheme, lightTheme } from '#src/render/create-renderer.ts';
 import { isSoftwareRenderer, probeWebGL } from '#src/render/probe-webgl.ts';
 import { madeQuartz } from '#tests/support/made-quartz.ts';
@@ -115,6 +116,42 @@ describe('renderer', () => {
     }
     const circumference = Math.PI * (atom!.halfWidthPx + atom!.halfHeightPx);
     expect(accent).toBeGreaterThan(1.2 * circumference);
+    s.end();
+  });
+
+  it('draws atoms, bonds and dashes exactly where they are picked', () => {
+    const s = stage(400, 300);
+    const scene = buildScene(madeUrea(), { cellEdges: false });
+    const camera = turn(firstCamera(scene, s.viewport), 200, 90, s.viewport);
+    const picture = s.draw(scene, camera);
+    let [wrong, bonds] = [0, 0];
+    for (let y = 0; y < 300; y++) {
+      for (let x = 0; x < 400; x++) {
+        const hit = s.renderer.pick(x + 0.5, y + 0.5);
+        const paper = picture.at(x, y).every((byte, k) => byte === lightTheme.paper[k]);
+        if (paper === (hit !== null)) wrong += 1;
+        if (hit?.entry.kind === 'bond') bonds += 1;
+      }
+    }
+    expect(bonds).toBeGreaterThan(300);
+    expect(wrong).toBeLessThanOrEqual(8);
+    s.end();
+  });
+
+  it('draws each cell edge as a fine line', () => {
+    const s = stage(400, 300, { theme: { ...lightTheme, depthCue: 0 } });
+    const scene = buildScene(madeQuartz(), { bonds: false, showTensors: false });
+    const camera = firstCamera(scene, s.viewport);
+    const picture = s.draw({ ...scene, quadrics: { ...scene.quadrics, count: 0 } }, camera);
+    const p = projection(camera, s.viewport);
+    const { starts, ends, count } = scene.lines;
+    for (let i = 0; i < count; i++) {
+      const middle = [0, 1, 2].map((k) => (starts[3 * i + k]! + ends[3 * i + k]!) / 2) as unknown as Vec3;
+      const { xPx, yPx } = projectPoint(p, middle);
+      const around = [-1, 0, 1].flatMap((dx) => [-1, 0, 1].map((dy) => picture.at(xPx + dx, yPx + dy)[0]));
+      expect(Math.min(...around)).toBeLessThan(lightTheme.paper[0] - 60);
+      expect(Math.min(...around)).toBeGreaterThanOrEqual(lightTheme.line[0] - 2);
+    }
     s.end();
   });
 

@@ -208,6 +208,14 @@ describe('what was chosen is said', () => {
     expect(scene.caption).toContain('semi-axes = principal values of the symmetric part, 1 Å = 725 ppm');
   });
 
+  it('does not turn an ellipsoid inside out for a scale asked for, and says so', () => {
+    const scene = buildScene(madeUrea(), { unitsPerAngstrom: 10 });
+    const { baseRadiusAngstrom, unitsPerAngstrom } = scene.scale!;
+    // largest deviation from the isotropic value: O1, −10 against 87.33 ppm
+    expect(unitsPerAngstrom * baseRadiusAngstrom).toBeGreaterThan(262 / 3 + 10);
+    expect(scene.caption).toContain('inside out');
+  });
+
   it('keeps tensors to the elements asked for', () => {
     const scene = buildScene(madeQuartz(), { tensorElements: ['O'] });
     const withCircles = atomsOf(scene).filter(({ circles }) => circles !== 0);
