@@ -55,7 +55,7 @@ function tensorSentence({ scale, legend, onlyElements }: CaptionParts): string {
     scale.kind === 'total'
       ? 'semi-axes = principal values of the symmetric part'
       : `semi-axes = ${printed(scale.baseRadiusAngstrom)} Å + ${middle}`;
-  return `${name} ellipsoids${of}: ${axes}, ${scaleStatement(scale)}; colour = ${legend.title}; dark circles lie perpendicular to the principal axes that are defined.`;
+  return `${name} ellipsoids${of}: ${axes}, ${scaleStatement(scale)}; colour = ${legend.title}; great circles lie perpendicular to the principal axes that are defined.`;
 }
 
 function extentSentence({ extent, hasCell, neighbours }: CaptionParts): string {
