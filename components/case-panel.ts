@@ -1,6 +1,6 @@
 import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import type { DerivedCase, SourceSummary } from '#src/store/engine-protocol.ts';
+import type { DerivedCase, ProposalSummary, SourceSummary } from '#src/store/engine-protocol.ts';
 import { drawerStyles } from './drawer-styles.ts';
 import { formatCount } from './number-format.ts';
 import { askForPanel } from './panel.ts';
@@ -40,6 +40,11 @@ export class CasePanel extends StoreElement {
         gap: 8px;
         margin: 8px 0 6px;
       }
+      .proposal {
+        border-left: 2px solid var(--accent);
+        padding-left: 10px;
+        margin: 8px 0;
+      }
       .sample {
         display: block;
         width: 100%;
@@ -70,6 +75,7 @@ export class CasePanel extends StoreElement {
         <button @click=${() => askForPanel(this, null)} aria-label="Close the case panel">Close</button>
       </header>
       ${derived ? this.#files(derived) : nothing}
+      ${derived?.proposals.map((proposal) => this.#proposal(proposal))}
       <div class="commands">
         <button class="line" @click=${this.#open}>Open files …</button>
         <button class="line" ?disabled=${!derived} @click=${this.#add}>Add tensors to this crystal …</button>
@@ -106,6 +112,21 @@ export class CasePanel extends StoreElement {
           </li>`,
       )}
     </ul>`;
+  }
+
+  #proposal({ sourceId, name, quantity, reason }: ProposalSummary): TemplateResult {
+    const guess = quantity === 'unknown' ? '' : ` It looks like ${quantities[quantity]} (${reason}).`;
+    return html`<div class="proposal" role="group" aria-label="Column ${name}">
+      <p>Column <code>${name}</code> holds nine numbers an atom and was not taken.${guess} Read it as</p>
+      <div class="commands">
+        ${(['shielding', 'shift', 'efg'] as const).map(
+          (option) =>
+            html`<button class="line" @click=${() => this.store?.acceptColumn(sourceId, name, option)}>
+              ${quantities[option]}
+            </button>`,
+        )}
+      </div>
+    </div>`;
   }
 
   #sample(sample: SampleCase): TemplateResult {

@@ -2,6 +2,7 @@ import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { DossierSettings, Reference } from '#src/store/dossier-types.ts';
 import { nuclidesOf } from '#src/store/isotopes.ts';
+import { latticeSettings } from '#src/store/frames.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
 import { drawerStyles } from './drawer-styles.ts';
 import { isotopeSymbol } from './number-format.ts';
@@ -29,6 +30,9 @@ export class SettingsPanel extends StoreElement {
         gap: 6px 12px;
         align-items: center;
       }
+      .lines select {
+        width: 100%;
+      }
       .lines .soft {
         font-size: 13px;
       }
@@ -45,7 +49,6 @@ export class SettingsPanel extends StoreElement {
       }
       select {
         max-width: 100%;
-        width: max-content;
       }
       .entry select {
         width: 168px;
@@ -75,7 +78,7 @@ export class SettingsPanel extends StoreElement {
       <p class="soft">Each changes numbers, can be undone, and holds for the files opened next.</p>
       <h3>Nuclides, shift reference, quadrupole moment</h3>
       ${elementsOf(state).map((element) => this.#element(element, state, settings))}
-      <h3>Symmetry</h3>
+      <h3>Symmetry and frame</h3>
       <div class="lines">
         <label for="symmetry">symmetry</label>
         <select id="symmetry" @change=${(event: Event) => this.#symmetry(event)}>
@@ -98,6 +101,14 @@ export class SettingsPanel extends StoreElement {
           )}
           Å</span
         >
+        <label for="frame">tensor frame</label>
+        <select id="frame" @change=${(event: Event) => this.#frame(event)}>
+          <option value="" .selected=${settings.frame === null}>as found with the tensors</option>
+          ${latticeSettings.map(
+            ({ name, sentence }) =>
+              html`<option value=${name} .selected=${settings.frame === name}>${sentence}</option>`,
+          )}
+        </select>
       </div>
     `;
   }
@@ -198,6 +209,11 @@ export class SettingsPanel extends StoreElement {
   #symmetry(event: Event): void {
     const symmetry = (event.target as HTMLSelectElement).value as DossierSettings['symmetry'];
     this.#change({ symmetry }, `symmetry: ${symmetry}`);
+  }
+
+  #frame(event: Event): void {
+    const frame = (event.target as HTMLSelectElement).value || null;
+    this.#change({ frame }, `tensor frame: ${frame ?? 'as found'}`);
   }
 
   #change(change: Partial<DossierSettings>, name: string): void {

@@ -1,7 +1,7 @@
 import type { Crystal } from '#src/crystal/crystal.ts';
 import type { Reading } from '#src/readers/reading.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
-import type { StructureChoice, StructureSummary, TensorSummary } from './engine-protocol.ts';
+import type { ProposalSummary, StructureChoice, StructureSummary, TensorSummary } from './engine-protocol.ts';
 
 /** A reading and the file it came from. */
 interface ReadFile {
@@ -55,4 +55,15 @@ export function tensorsFor(
       return { summary, set };
     }),
   );
+}
+
+/** Columns the readers propose, one each, however many structures have it. */
+export function proposalsOf(read: readonly ReadFile[]): ProposalSummary[] {
+  return read.flatMap(({ file, reading }) => {
+    const byName = new Map<string, ProposalSummary>();
+    for (const { name, line, quantity, reason } of reading.proposals) {
+      if (!byName.has(name)) byName.set(name, { sourceId: file.id, name, line, quantity, reason });
+    }
+    return [...byName.values()];
+  });
 }

@@ -1,4 +1,5 @@
 import type { Problem } from '#src/base/problem.ts';
+import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
 import type { CrystalDossier, DossierSettings } from '#src/dossier/dossier.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
 
@@ -22,6 +23,8 @@ export interface CaseInput {
   /** null takes the first structure of the first file that holds one. */
   readonly structure: StructureChoice | null;
   readonly settings: DossierSettings;
+  /** Proposed columns the user took, by source id. */
+  readonly accepted?: Readonly<Record<string, AcceptedColumns>>;
 }
 
 export interface SourceSummary {
@@ -52,11 +55,21 @@ export interface TensorSummary {
   readonly used: boolean;
 }
 
+/** A column of nine numbers an atom that is not one of ours: shown, never taken unasked. */
+export interface ProposalSummary {
+  readonly sourceId: string;
+  readonly name: string;
+  readonly line: number;
+  readonly quantity: Quantity | 'unknown';
+  readonly reason: string;
+}
+
 /** What the engine makes of a case. `dossier` is null when the files hold no structure. */
 export interface DerivedCase {
   readonly sources: readonly SourceSummary[];
   readonly structures: readonly StructureSummary[];
   readonly tensors: readonly TensorSummary[];
+  readonly proposals: readonly ProposalSummary[];
   readonly chosen: StructureChoice | null;
   readonly dossier: CrystalDossier | null;
   readonly problems: readonly Problem[];

@@ -8,12 +8,15 @@ import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import { deriveDossier } from '#src/dossier/derive-dossier.ts';
 import { readText } from '#src/readers/read.ts';
 import type { Reading } from '#src/readers/reading.ts';
+import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
 import type { CaseInput, DerivedCase, LinePage, SourceFile } from './engine-protocol.ts';
-import { chooseStructure, structuresOf, tensorsFor } from './choose-structure.ts';
+import { chooseStructure, proposalsOf, structuresOf, tensorsFor } from './choose-structure.ts';
 import { linePage } from './line-page.ts';
 
 /** One file after reading. */
 export interface ReadSource {
+  /** Source and accepted columns: the same key reads the same. */
+  readonly key: string;
   readonly file: SourceFile;
   readonly source: SourceText | null;
   readonly reading: Reading;
@@ -57,11 +60,15 @@ async function decodeFile({ name, blob }: SourceFile): Promise<DecodedBytes> {
   }
 }
 
-async function readSource(file: SourceFile, report: ReportProgress): Promise<ReadSource> {
+async function readSource(
+  file: SourceFile,
+  accept: AcceptedColumns,
+  report: ReportProgress,
+): Promise<Omit<ReadSource, 'key'>> {
   report(0, `reading ${file.name}`);
   const { source, problems } = await decodeFile(file);
   if (!source) return { file, source, reading: { ...unreadable(file.name), problems } };
-  const reading = readText(source, { progress: report });
+  const reading = readText(source, { accept, progress: report });
   return { file, source, reading: { ...reading, problems: [...problems, ...reading.problems] } };
 }
 
@@ -96,7 +103,7 @@ class ReadingEngine implements Engine {
 
   async derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase> {
     const watched = throttled(report);
-    const read = await this.#readAll(input.sources, watched);
+    const read = await this.#readAll(input, watched);
     const chosen = chooseStructure(read, input.structure);
     const base = {
       sources: read.map(({ file, source, reading }) => ({
@@ -108,6 +115,7 @@ class ReadingEngine implements Engine {
       })),
       structures: structuresOf(read),
       tensors: tensorsFor(read, chosen?.choice ?? null).map(({ summary }) => summary),
+      proposals: proposalsOf(read),
     };
     const readingProblems = read.flatMap(({ reading }) => reading.problems);
     if (!chosen) {
@@ -138,17 +146,19 @@ class ReadingEngine implements Engine {
     return source ? linePage(source, first, count) : { first: 1, lines: [], total: 0 };
   }
 
-  async #readAll(sources: readonly SourceFile[], report: ReportProgress): Promise<ReadSource[]> {
+  async #readAll({ sources, accepted = {} }: CaseInput, report: ReportProgress): Promise<ReadSource[]> {
     const total = sources.reduce((sum, { blob }) => sum + blob.size, 0) || 1;
     const read: ReadSource[] = [];
     let done = 0;
     for (const file of sources) {
       const share = file.blob.size / total;
       const start = done;
+      const accept = accepted[file.id] ?? {};
+      const key = JSON.stringify([file.id, accept]);
       const known = this.#read.get(file.id);
       const here = (part: number, stage: string): void =>
         report(readingShare * (start + share * part), stage);
-      read.push(known ?? (await readSource(file, here)));
+      read.push(known?.key === key ? known : { key, ...(await readSource(file, accept, here)) });
       done += share;
     }
     this.#read = new Map(read.map((one) => [one.file.id, one]));

@@ -1,4 +1,5 @@
 import type { Problem } from '#src/base/problem.ts';
+import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
 import { defaultSceneOptions } from '#src/scene/scene-options.ts';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
@@ -11,6 +12,8 @@ export interface Decisions {
   readonly sources: readonly SourceFile[];
   readonly structure: StructureChoice | null;
   readonly settings: DossierSettings;
+  /** Proposed columns that were taken, by source id. */
+  readonly accepted: Readonly<Record<string, AcceptedColumns>>;
 }
 
 /** A decision that can be undone, with its name: "undo *open quartz.cif*". */

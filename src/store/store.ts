@@ -1,6 +1,7 @@
 import type { Problem } from '#src/base/problem.ts';
 import { problem } from '#src/base/problem.ts';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
+import type { Quantity } from '#src/tensor/tensor-set.ts';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
 
@@ -49,14 +50,15 @@ export class Store {
     return () => this.#listeners.delete(listener);
   }
 
-  /** Opens files as a new case; settings and references stay. */
+  /** Opens files as a new case; settings and references stay, but for the frame, which belongs to one file. */
   open(files: readonly FileInput[], title = titleOf(files)): Promise<boolean> {
-    const settings = this.#base()?.settings ?? defaultSettings;
+    const settings = { ...(this.#base()?.settings ?? defaultSettings), frame: null };
     return this.#decide(`open ${title}`, {
       title,
       sources: this.#identified(files, []),
       structure: null,
       settings,
+      accepted: {},
     });
   }
 
@@ -83,6 +85,17 @@ export class Store {
   chooseStructure(structure: StructureChoice, name: string): Promise<boolean> {
     const base = this.#base();
     return base ? this.#decide(`choose ${name}`, { ...base, structure }) : Promise.resolve(false);
+  }
+
+  /** Takes a proposed column of one file as a quantity, in its usual unit or the one the file names. */
+  acceptColumn(sourceId: string, name: string, quantity: Quantity): Promise<boolean> {
+    const base = this.#base();
+    if (!base) return Promise.resolve(false);
+    const columns = { ...base.accepted[sourceId], [name]: { quantity } };
+    return this.#decide(`take ${name} as ${quantity}`, {
+      ...base,
+      accepted: { ...base.accepted, [sourceId]: columns },
+    });
   }
 
   changeSettings(change: Partial<DossierSettings>, name: string): Promise<boolean> {

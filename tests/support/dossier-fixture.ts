@@ -252,6 +252,7 @@ export function fixtureCase(dossier: CrystalDossier = fixtureDossier): DerivedCa
     tensors: [
       { sourceId, name: 'shielding', quantity: 'shielding', unitGiven: 'ppm', entryCount: 2, used: true },
     ],
+    proposals: [],
     chosen: { sourceId, index: 0 },
     dossier,
     problems: dossier.problems,

@@ -160,6 +160,24 @@ describe('the store', () => {
     expect(waiting.at(-1)!.input.settings.symmetryToleranceAngstrom).toBe(0.05);
   });
 
+  it('takes a proposed column as a decision that can be undone', async () => {
+    const { store, waiting } = await openedStore();
+    const taken = store.acceptColumn('source-1', 'tens', 'efg');
+    expect(waiting[1]!.input.accepted).toEqual({ 'source-1': { tens: { quantity: 'efg' } } });
+    waiting[1]!.answer(fixtureCase());
+    await taken;
+    expect(store.state.past.at(-1)?.name).toBe('take tens as efg');
+  });
+
+  it('leaves a frame of its own behind when another file is opened', async () => {
+    const { store, waiting } = await openedStore();
+    const framed = store.changeSettings({ frame: 'c-z-b-yz' }, 'frame');
+    waiting[1]!.answer(fixtureCase());
+    await framed;
+    void store.open([file('b.cif')]);
+    expect(waiting[2]!.input.settings.frame).toBeNull();
+  });
+
   it('adds and takes out files, with names of their own', async () => {
     const { store, waiting } = await openedStore();
     const added = store.add([file('a.cif'), file('t.xyz')]);
