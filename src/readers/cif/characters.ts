@@ -50,6 +50,7 @@ export const charTables: Readonly<Record<'1.1' | '2.0', CharTable>> = {
   '2.0': buildTable(false),
 };
 
+/** UTF-16 units that are compared one by one. */
 export const code = {
   lineFeed: 10,
   carriageReturn: 13,
@@ -58,4 +59,6 @@ export const code = {
   comma: 44,
   colon: 58,
   semicolon: 59,
+  questionMark: 63,
+  underscore: 95,
 } as const;

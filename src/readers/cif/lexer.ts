@@ -1,4 +1,4 @@
-import { charClass } from './characters.ts';
+import { charClass, code } from './characters.ts';
 import type { CifValue } from './cif-document.ts';
 import { readCollection } from './collection.ts';
 import { readQuoted } from './quoted.ts';
@@ -41,7 +41,7 @@ export class CifLexer extends CifScanner {
       case charClass.special:
         this.#bare(start);
         if (this.end > start + 1) return this.#bareValue(start);
-        this.value = { kind: text.charCodeAt(start) === 63 ? 'unknown' : 'inapplicable', offset: start };
+        this.value = specialValue(text.charCodeAt(start), start);
         this.valuesMade++;
         return 'value';
       case charClass.quote:
@@ -66,24 +66,24 @@ export class CifLexer extends CifScanner {
    */
   takeValues(into: ValueRun, until: number): TokenKind {
     const { text, table } = this;
+    const { lineEnd, ordinary, keyword, special } = charClass;
     const end = Math.min(until, text.length);
     const isStrict = this.version === '2.0';
     const { values } = into;
     let p = this.position;
     for (;;) {
       let kind = 0;
-      while (p < end && (kind = table[text.charCodeAt(p)]!) <= charClass.lineEnd) p++;
+      while (p < end && (kind = table[text.charCodeAt(p)]!) <= lineEnd) p++;
       const start = p;
-      if (p < end && kind === charClass.ordinary) {
+      const isWord = kind === ordinary || (kind === keyword && !this.#mayBeReserved(start));
+      if (p < end && (isWord || kind === special)) {
         do p++;
-        while (p < end && table[text.charCodeAt(p)]! > charClass.lineEnd);
+        while (p < end && table[text.charCodeAt(p)]! > lineEnd);
         if (p < end && !(isStrict && this.#hasBracket(start, p))) {
-          values[into.count++] = {
-            kind: 'text',
-            text: text.slice(start, p),
-            delimited: false,
-            offset: start,
-          };
+          values[into.count++] =
+            kind === special && p === start + 1
+              ? specialValue(text.charCodeAt(start), start)
+              : { kind: 'text', text: text.slice(start, p), delimited: false, offset: start };
           this.valuesMade++;
           continue;
         }
@@ -109,11 +109,18 @@ export class CifLexer extends CifScanner {
       let kind = 0;
       while (p < length && (kind = table[text.charCodeAt(p)]!) <= charClass.lineEnd) p++;
       if (p >= length || kind === charClass.underscore) return words;
-      if (kind === charClass.keyword && (text.charCodeAt(p + 4) === 95 || text.charCodeAt(p + 6) === 95))
-        return words;
+      if (kind === charClass.keyword && this.#mayBeReserved(p)) return words;
       p = this.wordEndFrom(p);
       words++;
     }
+  }
+
+  /** Cheap test before the letters are compared: all reserved words have their underscore fifth or seventh. */
+  #mayBeReserved(start: number): boolean {
+    return (
+      this.text.charCodeAt(start + 4) === code.underscore ||
+      this.text.charCodeAt(start + 6) === code.underscore
+    );
   }
 
   #take(value: CifValue): TokenKind {
@@ -157,11 +164,11 @@ export class CifLexer extends CifScanner {
   #wordOrValue(start: number): TokenKind {
     const { text, end } = this;
     const underscore = start + (this.#isLetter(start, 'g') ? 6 : 4);
-    if (underscore >= end || text.charCodeAt(underscore) !== 95) return this.#bareValue(start);
+    if (underscore >= end || text.charCodeAt(underscore) !== code.underscore) return this.#bareValue(start);
     const word = text.slice(start, underscore).toLowerCase();
     if (word === 'data' || word === 'save') return word;
     const whole = end === underscore + 1;
-    if (word === 'loop' && (whole || text.charCodeAt(underscore + 1) === 95)) {
+    if (word === 'loop' && (whole || text.charCodeAt(underscore + 1) === code.underscore)) {
       if (!whole) this.#splitLoop(underscore + 1);
       return 'loop';
     }
@@ -203,4 +210,9 @@ export class CifLexer extends CifScanner {
       () => ({ got: this.report.excerpt(start, this.end), hint: 'Put the value in quotes.' }),
     );
   }
+}
+
+/** Bare `?` or `.`. */
+function specialValue(unit: number, offset: number): CifValue {
+  return { kind: unit === code.questionMark ? 'unknown' : 'inapplicable', offset };
 }
