@@ -77,9 +77,9 @@ function row(leading: ConventionEntry, columns: readonly ValueColumn[]): Templat
   </tr>`;
 }
 
-/** The scale stands in the column's heading. */
+/** The scale stands in the column's heading, what a component is in the definition. */
 function plainName({ name }: ConventionEntry): string {
-  return name.replace(/ on the \w+ scale$/, '');
+  return name.replace(/ on the \w+ scale$/, '').replace(/ principal component( by magnitude)?$/, '');
 }
 
 /** What comes before the first semicolon; the rest is in the tooltip. */

@@ -91,10 +91,11 @@ export const cardStyles = css`
   }
   .conventions td.words {
     padding-left: 8px;
+    max-width: 24ch;
   }
-  td.definition {
-    padding-left: 20px;
-    white-space: nowrap;
+  .conventions td.definition {
+    padding-left: 18px;
+    min-width: 17ch;
   }
   caption {
     text-align: left;

@@ -13,6 +13,12 @@ export const colourBarStyles = css`
     font-variant-numeric: tabular-nums lining-nums;
     padding: 6px 12px 2px 0;
   }
+  .legend .scale {
+    display: inline-flex;
+    align-items: center;
+    gap: 9px;
+    white-space: nowrap;
+  }
   .legend .bar {
     width: 150px;
     height: 10px;
@@ -33,9 +39,11 @@ export function colourBar(
   const { low, high, digits, title, unit } = legend;
   return html`<div class="legend">
     <span>${title}/${unit}</span>
-    <span>${formatNumber(low, digits)}</span>
-    <span class="bar" aria-hidden="true" .style=${`background: linear-gradient(to right, ${stops})`}></span>
-    <span>${formatNumber(high, digits)}</span>
+    <span class="scale"
+      ><span>${formatNumber(low, digits)}</span>
+      <span class="bar" aria-hidden="true" .style=${`background: linear-gradient(to right, ${stops})`}></span>
+      <span>${formatNumber(high, digits)}</span></span
+    >
     ${scaleStatement ? html`<span class="soft">radius: ${scaleStatement}</span>` : nothing}
   </div>`;
 }

@@ -28,7 +28,7 @@ const identity: readonly SiteColumn[] = [
     key: 'label',
     heading: html`site`,
     words: 'site label',
-    width: [84, 1.4],
+    width: [72, 1.4],
     numeric: false,
     text: (site) => site.label,
   },
@@ -36,7 +36,7 @@ const identity: readonly SiteColumn[] = [
     key: 'element',
     heading: html`nuclide`,
     words: 'isotope or element',
-    width: [46, 0.6],
+    width: [44, 0.6],
     numeric: false,
     text: (site) => (site.isotope ? isotopeSymbol(site.isotope) : site.element),
   },
@@ -44,7 +44,7 @@ const identity: readonly SiteColumn[] = [
     key: 'multiplicity',
     heading: html`mult.`,
     words: 'multiplicity: atoms of this site in the cell',
-    width: [36, 0.2],
+    width: [34, 0.2],
     numeric: true,
     text: (site) => String(site.multiplicity),
   },
@@ -52,7 +52,7 @@ const identity: readonly SiteColumn[] = [
     key: 'symmetry',
     heading: html`symmetry`,
     words: 'Wyckoff letter and site symmetry',
-    width: [58, 1],
+    width: [54, 1],
     numeric: false,
     text: wyckoffAndSymmetry,
   },
@@ -77,16 +77,16 @@ function numberColumn(
 }
 
 const isotropic = (quantity: 'shielding' | 'shift'): SiteColumn =>
-  numberColumn(quantity, 'isotropic', [66, 0.8]);
+  numberColumn(quantity, 'isotropic', [60, 0.8]);
 
 /** Span and skew: of the shielding where there is one, else of the shift; both are defined alike on the two scales. */
 const spanAndSkew = (quantity: 'shielding' | 'shift'): SiteColumn[] => [
-  numberColumn(quantity, 'span', [56, 0.8]),
+  numberColumn(quantity, 'span', [54, 0.8]),
   numberColumn(quantity, 'skew', [56, 0.7]),
 ];
 
 const efg: readonly SiteColumn[] = [
-  numberColumn('efg', 'couplingMHz', [62, 0.8]),
+  numberColumn('efg', 'couplingMHz', [58, 0.8]),
   numberColumn('efg', 'asymmetry', [54, 0.7]),
 ];
 
@@ -103,7 +103,7 @@ export function columnsFor(dossier: CrystalDossier): SiteColumn[] {
 }
 
 /** Space between columns, px. */
-export const columnGap = 8;
+export const columnGap = 6;
 
 /** Tracks of the table's grid, and the width below which it scrolls sideways. */
 export function gridOf(columns: readonly SiteColumn[]): {

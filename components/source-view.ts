@@ -35,7 +35,7 @@ export class SourceView extends StoreElement {
         font-weight: 600;
         color: var(--ink);
         overflow-wrap: anywhere;
-        flex: 1;
+        flex: 1 1 200px;
       }
       .text {
         overflow: auto;
@@ -53,10 +53,13 @@ export class SourceView extends StoreElement {
         display: flex;
         width: max-content;
         min-width: 100%;
-        white-space: pre;
+        min-height: 18px;
       }
       .row span {
         flex: none;
+        white-space: pre;
+      }
+      .row .count {
         width: 7ch;
         padding-right: 1.5ch;
         text-align: right;
@@ -117,8 +120,9 @@ export class SourceView extends StoreElement {
 
   #line(text: string, number: number, marked: number): TemplateResult {
     const isMarked = number === marked;
-    return html`<div class="row ${isMarked ? 'marked' : ''}" aria-current=${isMarked ? 'true' : 'false'}>
-      <span>${number}</span>${text}
+    const classes = isMarked ? 'row marked' : 'row';
+    return html`<div class=${classes} aria-current=${isMarked ? 'true' : 'false'}>
+      <span class="count">${number}</span><span>${text}</span>
     </div>`;
   }
 

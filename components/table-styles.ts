@@ -18,12 +18,12 @@ export const tableStyles = css`
     overscroll-behavior: contain;
   }
   .scroller:focus-visible {
-    outline-offset: -2px;
+    outline: none;
   }
   .row {
     display: grid;
     grid-template-columns: var(--columns);
-    column-gap: 8px;
+    column-gap: 6px;
     align-items: center;
     padding: 0 8px 0 0;
     border-bottom: 1px solid var(--hairline);
@@ -80,12 +80,13 @@ export const tableStyles = css`
     background: var(--lit);
   }
   .scroller:focus-visible .active {
-    box-shadow: inset 2px 0 var(--accent);
+    outline: 2px solid var(--accent);
+    outline-offset: -2px;
   }
   .name {
     display: flex;
     align-items: center;
-    gap: 7px;
+    gap: 6px;
     min-width: 0;
   }
   .label {

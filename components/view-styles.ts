@@ -35,7 +35,6 @@ export const viewStyles = css`
     touch-action: none;
     cursor: grab;
     margin-right: 8px;
-    border-radius: 4px;
   }
   .stage:active {
     cursor: grabbing;

@@ -11,7 +11,7 @@ export const workbenchStyles = css`
   }
   main {
     display: grid;
-    grid-template-columns: minmax(0, 1fr) clamp(440px, 47%, 980px);
+    grid-template-columns: minmax(0, 1fr) clamp(440px, 49%, 980px);
     min-height: 0;
   }
   ellipsite-crystal-view {
@@ -52,18 +52,14 @@ export const workbenchStyles = css`
     position: relative;
     min-height: 0;
     display: grid;
+    grid-template-rows: minmax(0, 1fr) auto;
   }
   ellipsite-source-view {
-    position: absolute;
-    z-index: 4;
-    left: 0;
-    bottom: 0;
-    right: 0;
-    height: min(340px, 55%);
+    height: min(340px, 45dvh);
     border-top: 1px solid var(--line);
   }
   .with-drawer ellipsite-source-view {
-    right: min(460px, 100%);
+    margin-right: min(460px, 100%);
   }
   @media (max-width: 899px) {
     :host {
@@ -92,12 +88,15 @@ export const workbenchStyles = css`
     .drawer,
     ellipsite-source-view {
       position: fixed;
+      inset: 0;
     }
     .drawer {
-      top: 0;
+      left: auto;
     }
+    ellipsite-source-view,
     .with-drawer ellipsite-source-view {
-      right: 0;
+      height: auto;
+      margin: 0;
       z-index: 6;
     }
   }
