@@ -1,5 +1,6 @@
 import { defineConfig } from 'vitest/config';
 import { playwright } from '@vitest/browser-playwright';
+import { readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import { chromiumArguments, findBrowser } from './tests/support/browser.mjs';
 
@@ -14,11 +15,18 @@ const commandLine = {
   },
 };
 
+/** The content-security policy of index.html, sent as a header too: a worker obeys only the header of its own script. */
+function pagePolicy(): string {
+  const html = readFileSync(new URL('./index.html', import.meta.url), 'utf8');
+  return /Content-Security-Policy"\s+content="([^"]+)"/.exec(html)?.[1] ?? "default-src 'none'";
+}
+
 /** Page build: everything below `dist/page`, no request after load. */
 const page = {
   base: './',
   build: { outDir: 'dist/page', target: 'es2022', emptyOutDir: true, assetsInlineLimit: 0 },
   worker: { format: 'es' as const },
+  preview: { headers: { 'Content-Security-Policy': pagePolicy() } },
   optimizeDeps: { include: ['lit', 'lit/directives/live.js', 'gl-matrix', 'three'] },
 };
 

@@ -1,4 +1,4 @@
-import { mkdtemp, readFile, rm } from 'node:fs/promises';
+import { mkdtemp, readdir, readFile, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
@@ -241,5 +241,10 @@ describe('the page’s policy', () => {
     expect(policy).toContain("default-src 'none'");
     expect(policy).toContain("connect-src 'self'");
     expect(policy).not.toMatch(/https?:|\*|unsafe-inline|'unsafe-eval'/);
+    const script = (await readdir(join(folder, 'page/assets'))).find((name) =>
+      name.startsWith('engine-worker'),
+    );
+    const worker = await fetch(new URL(`assets/${script}`, address));
+    expect(worker.headers.get('content-security-policy')).toBe(policy);
   });
 });
