@@ -184,6 +184,7 @@ export function parseOperation(text: string): SymmetryOperation | null {
 }
 
 function fractionText(value: number): string {
+  if (Math.abs(value - Math.round(value)) < 1e-6) return String(Math.round(value));
   for (const under of [2, 3, 4, 6, 8, 12, 24, ...rareDenominators]) {
     const over = Math.round(value * under);
     if (Math.abs(over / under - value) < 1e-6) return `${over}/${under}`;
@@ -197,7 +198,8 @@ function rowText(coefficients: readonly number[], constant: number): string {
     const size = Math.abs(value) === 1 ? '' : String(Math.abs(value));
     return `${value < 0 ? '-' : '+'}${size}${'xyz'[index]}`;
   });
-  const shift = constant === 0 ? '' : `${constant < 0 ? '-' : '+'}${fractionText(Math.abs(constant))}`;
+  const shift =
+    Math.abs(constant) < 1e-6 ? '' : `${constant < 0 ? '-' : '+'}${fractionText(Math.abs(constant))}`;
   return `${letters.join('')}${shift}`.replace(/^\+/, '') || '0';
 }
 

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { identity3 } from '#src/base/matrix3.ts';
 import { latticeFromCell } from '#src/crystal/lattice.ts';
 import {
   applyOperation,
@@ -128,5 +129,15 @@ describe('operations', () => {
     expect(isCrystallographicRotation([0.5, 0, 0, 0, 2, 0, 0, 0, 1])).toBe(false);
     // x+2y is a two-fold in a skewed cell.
     expect(isCrystallographicRotation([1, 2, 0, 0, -1, 0, 0, 0, -1])).toBe(true);
+  });
+});
+
+describe('printing whole translations', () => {
+  it('writes them as whole numbers', () => {
+    const text = (shift: number) => formatOperation({ rotation: identity3, translation: [shift, -shift, 0] });
+    expect(text(1)).toBe('x+1,y-1,z');
+    expect(text(2)).toBe('x+2,y-2,z');
+    expect(text(1.5)).toBe('x+3/2,y-3/2,z');
+    expect(text(1e-12)).toBe('x,y,z');
   });
 });
