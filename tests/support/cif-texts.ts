@@ -32,7 +32,7 @@ _end "" # last
 data_second
 _a ;b
 save_frame
-_dictionary.name _x
+_dictionary.name '_x'
 save_
 `;
 

@@ -1,4 +1,5 @@
 import type { CifLoop, CifValue } from './cif-document.ts';
+import { rowsByLine } from './loop-rows.ts';
 import type { CifReport } from './report.ts';
 
 /** A name with its place. */
@@ -50,60 +51,4 @@ export function completeLoop(
   );
   values.length -= excess;
   return { ...loop, values };
-}
-
-/** Rows found line by line, or `null` where lines are no guide. A broken line is reported and left out. */
-function rowsByLine(values: readonly CifValue[], width: number, report: CifReport): CifValue[] | null {
-  if (width === 1) return null;
-  const groups = groupByLine(values, report);
-  const whole = groups.filter(([from, to]) => to - from === width).length;
-  const broken: [number, number][] = [];
-  const kept: CifValue[] = [];
-  let open: [number, number] | null = null;
-  for (const [from, to] of groups) {
-    if (open && to - from === width) {
-      broken.push(open);
-      open = null;
-    }
-    const start: number = open ? open[0] : from;
-    if (to - start < width) open = [start, to];
-    else {
-      if (to - start === width) for (let i = start; i < to; i++) kept.push(values[i]!);
-      else broken.push([start, to]);
-      open = null;
-    }
-  }
-  if (open) broken.push(open);
-  if (whole < 2 || broken.length * 4 > whole + 4) return null;
-  for (const [from, to] of broken) reportBroken(values[from]!, to - from, width, report);
-  return kept;
-}
-
-function reportBroken(first: CifValue, count: number, width: number, report: CifReport): void {
-  report.add(
-    'error',
-    'cif-loop-row-broken',
-    first.offset,
-    `This row holds ${count} values for the ${width} names of its loop; it was left out and the other rows kept.`,
-    {
-      got: `${count} values`,
-      allowed: `${width} values`,
-      hint: 'Look for a missing value or a missing quote.',
-    },
-  );
-}
-
-/** Runs of values that start on one line, as index pairs. */
-function groupByLine(values: readonly CifValue[], report: CifReport): [number, number][] {
-  const groups: [number, number][] = [];
-  let lineEnd = -1;
-  let from = 0;
-  values.forEach(({ offset }, index) => {
-    if (offset < lineEnd) return;
-    if (index > 0) groups.push([from, index]);
-    from = index;
-    lineEnd = report.nextLineStart(offset);
-  });
-  groups.push([from, values.length]);
-  return groups;
 }

@@ -109,8 +109,11 @@ class Parser {
       names.push(this.#name());
     }
     const values: CifValue[] = [];
+    const recovered = lexer.fieldsRecovered;
     if (token === 'value') token = this.#readValues(values);
     if (names.length > 0) {
+      const isDoubtful = values.length % names.length !== 0 || lexer.fieldsRecovered > recovered;
+      if (isDoubtful) token = this.#reopen(values) ?? token;
       addLoop(block, completeLoop(names, values, start, this.#report), names, this.#report);
       return token;
     }
@@ -125,6 +128,28 @@ class Parser {
       },
     );
     return token;
+  }
+
+  /**
+   * In a loop whose values do not fill its rows or that ends in an open text field: the first text field that runs over names was most likely never closed. It is
+   * ended there and reading goes back; gives the next token, or `null` where no such field is. Going back is bounded.
+   */
+  #reopen(values: CifValue[]): TokenKind | null {
+    const lexer = this.#lexer;
+    if (lexer.charactersInVain > this.#text.length) return null;
+    const isField = ({ offset }: CifValue) => this.#text[offset] === ';' && lexer.startsLine(offset);
+    for (let index = 0; index < values.length; index++) {
+      if (!isField(values[index]!)) continue;
+      const end = values[index + 1]?.offset ?? lexer.start;
+      const shorter = recoverField(lexer, values[index]!.offset, end);
+      if (!shorter) continue;
+      lexer.charactersInVain += lexer.position - lexer.end;
+      lexer.position = lexer.end;
+      values.length = index;
+      values.push(shorter);
+      return lexer.next();
+    }
+    return null;
   }
 
   /** Reads values as long as they come; the lexer stands on the first. */

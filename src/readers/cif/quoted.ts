@@ -78,6 +78,8 @@ function unclosed(scanner: CifScanner, start: number, quote: number): CifValue {
     if (scanner.text[glued + 1] !== '#') scanner.end = lineEnd;
     return value;
   }
+  const nextLine = continuation(scanner, lineEnd, quote);
+  if (nextLine > 0) return overTwoLines(scanner, start, nextLine);
   scanner.end = lineEnd;
   let text = scanner.text.slice(start + 1, lineEnd).trimEnd();
   const other = quote === code.singleQuote ? '"' : "'";
@@ -100,6 +102,35 @@ function gluedClose(scanner: CifScanner, start: number, lineEnd: number, quote: 
   const line = scanner.text.slice(start + 1, lineEnd);
   const last = line.lastIndexOf(String.fromCharCode(quote));
   return last >= 0 && /^(?:#|[,;]+\s*$)/.test(line.slice(last + 1)) ? start + 1 + last : -1;
+}
+
+/**
+ * Offset of the quote that ends the next line, where that line holds no other and does not look like structure; else -1. Then
+ * the string was broken over two lines.
+ */
+function continuation(scanner: CifScanner, lineEnd: number, quote: number): number {
+  const { text } = scanner;
+  const start = lineEnd + (text.startsWith('\r\n', lineEnd) ? 2 : 1);
+  const line = text.slice(start, scanner.lineEndFrom(start)).trimEnd();
+  const close = line.length - 1;
+  if (close < 1 || /^(?:[_;#]|\s*(?:loop_|data_|save_))/i.test(line)) return -1;
+  return line.indexOf(String.fromCharCode(quote)) === close ? start + close : -1;
+}
+
+function overTwoLines(scanner: CifScanner, start: number, close: number): CifValue {
+  scanner.report.add(
+    'warning',
+    'cif-quote-over-lines',
+    start,
+    'This quoted string closes only on the next line; both lines were taken.',
+    () => ({
+      got: scanner.report.excerpt(start, close),
+      allowed: 'a string that closes on its line, or a text field between semicolons',
+    }),
+  );
+  scanner.end = close + 1;
+  const text = scanner.text.slice(start + 1, close).replace(/\r\n?/g, '\n');
+  return scanner.textValue(text, true, start);
 }
 
 /** True where a value may end: before a blank, and inside a list or table before a bracket or colon. */

@@ -62,6 +62,10 @@ export class CifReport {
     return this.#source.lineStarts[line] ?? this.#source.text.length + 1;
   }
 
+  between(start: number, end: number): string {
+    return this.#source.text.slice(start, end);
+  }
+
   /** What stands between two offsets, cut to the first line and 60 characters. */
   excerpt(start: number, end: number): string {
     const piece = this.#source.text.slice(start, Math.min(end, start + longestExcerpt + 1));

@@ -19,6 +19,8 @@ export class CifScanner {
   isField = false;
   /** Values made so far, those inside lists and tables included. */
   valuesMade = 0;
+  /** Text fields ended because they were never closed. */
+  fieldsRecovered = 0;
   /** Stretch of a line in which a closing quote was sought in vain. */
   noLooseClose = { quote: 0, inCollection: false, from: 1, to: 0 };
   /** Brackets known to open no list, because what they open never closes. */

@@ -28,6 +28,7 @@ export function recoverField(scanner: CifScanner, start: number, limit: number):
   const found = findStructure(scanner.text, start + 1, limit);
   if (!found) return null;
   scanner.isField = true;
+  scanner.fieldsRecovered++;
   scanner.end = found.resume;
   scanner.report.add(
     'warning',

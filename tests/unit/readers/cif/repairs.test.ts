@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { readOne, readSyntax, showBlock } from '#tests/support/cif-syntax.ts';
+import { plainCif, richCif } from '#tests/support/cif-texts.ts';
 import { block, loop } from '#tests/support/grammar-row.ts';
 
 function first(text: string) {
@@ -71,6 +72,27 @@ describe('loops', () => {
       allowed: 'a multiple of 3',
     });
     expect(problems[0]?.message).toContain('the last 2 were left out');
+  });
+
+  it('joins unquoted words at their commas where a row is too long', () => {
+    const { block: read, codes } = first("data_x loop_ _id _op\n1 x,y,z\n2 -x, -y,-z\n3 'x, -y, z'\n");
+    expect(read.loops[0]?.rows).toEqual([
+      ['1', 'x,y,z'],
+      ['2', '-x, -y,-z'],
+      ['3', '«x, -y, z»'],
+    ]);
+    expect(codes).toEqual(['cif-unquoted-words']);
+  });
+
+  it('ends a text field that ran over what follows, where the rows do not fit', () => {
+    const text = 'data_x loop_ _id _text\n1\n;one\n;\n2\n;two\n_b 2\n_c\n;\nthree words here\n;\n_d 4\n';
+    const { block: read, codes } = first(text);
+    expect(read).toEqual(
+      block('x', { _b: '2', _c: '«\nthree words here»', _d: '4' }, [
+        loop(['_id', '_text'], ['1', '«one»'], ['2', '«two»']),
+      ]),
+    );
+    expect(new Set(codes)).toEqual(new Set(['cif-unclosed-text-field']));
   });
 
   it('keeps both where a name heads columns of two loops, and finds the filled one', () => {
@@ -165,6 +187,10 @@ describe('lists and tables', () => {
 });
 
 describe('places and the rest', () => {
+  it.each([plainCif, richCif])('finds nothing to report in a text that keeps the rules', (text) => {
+    expect(readSyntax(text).problems).toEqual([]);
+  });
+
   it('names line and column whatever the line ends', () => {
     for (const lineEnd of ['\n', '\r\n', '\r']) {
       const { problems } = readSyntax(['data_x', '_a 1', "  _b 'open", '_c 2'].join(lineEnd));
@@ -175,6 +201,13 @@ describe('places and the rest', () => {
   it('takes the rest of the line after an open quote, without a wrong closing quote', () => {
     expect(readOne('\'x, y, z"').value).toBe('«x, y, z»');
     expect(readOne("'x, y',").value).toBe('«x, y»');
+  });
+
+  it('takes a string that was broken over two lines, and no more', () => {
+    expect(readOne("'one\ntwo'")).toEqual({ value: '«one\ntwo»', codes: ['cif-quote-over-lines'] });
+    expect(readOne("'one\r\ntwo'").value).toBe('«one\ntwo»');
+    const { block: read } = first("data_x\nloop_\n_author\n'A, B.\n'C, D.'\n_c 1");
+    expect(read.loops[0]?.rows).toEqual([['«A, B.»'], ['«C, D.»']]);
   });
 
   it('reports control characters once, and reads them as blanks outside strings', () => {
