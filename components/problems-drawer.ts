@@ -2,6 +2,7 @@ import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { Problem } from '#src/store/dossier-types.ts';
 import { countProblems } from '#src/store/state.ts';
+import { drawerStyles } from './drawer-styles.ts';
 import { askForPanel } from './panel.ts';
 import { problemSummary, severityOrder } from './problem-summary.ts';
 import { shared } from './styles.ts';
@@ -14,24 +15,8 @@ const shownProblems = 500;
 export class ProblemsDrawer extends StoreElement {
   static override styles = [
     shared,
+    drawerStyles,
     css`
-      :host {
-        display: block;
-        background: var(--raised);
-        padding: 14px 18px 18px;
-      }
-      header {
-        display: flex;
-        align-items: baseline;
-        justify-content: space-between;
-        gap: 12px;
-        margin-bottom: 6px;
-      }
-      h2 {
-        font-size: 14px;
-        font-weight: 600;
-        color: var(--ink);
-      }
       h3 {
         margin: 12px 0 2px;
         font-weight: 400;

@@ -1,7 +1,9 @@
 /** Columns padded to their widest cell; the first column left-aligned, the others right. */
 export function textTable(header: readonly string[], rows: readonly (readonly string[])[]): string {
   const all = [header, ...rows];
-  const widths = header.map((_, column) => Math.max(...all.map((row) => [...(row[column] ?? '')].length)));
+  const widths = header.map((_, column) =>
+    all.reduce((width, row) => Math.max(width, [...(row[column] ?? '')].length), 0),
+  );
   const line = (row: readonly string[]) =>
     widths
       .map((width, column) => {

@@ -63,14 +63,14 @@ function chooseKind(
   asked: SceneOptions['ellipsoid'],
 ): { kind: EllipsoidKind; because: string | null } {
   if (asked === 'deviation') return { kind: 'deviation', because: null };
-  const lowest = Math.min(...forms.map((form) => Math.min(...form.values)));
+  const lowest = forms.reduce((least, form) => Math.min(least, ...form.values), Infinity);
   if (!(lowest > 0)) {
     return {
       kind: 'deviation',
       because: 'some principal values are not positive, so their totals have no ellipsoid',
     };
   }
-  const highest = Math.max(...forms.map((form) => Math.max(...form.values)));
+  const highest = forms.reduce((most, form) => Math.max(most, ...form.values), -Infinity);
   const vanishing = lowest / total.unitsPerAngstrom < thinnestAngstrom || highest > largestRatio * lowest;
   if (asked === 'auto' && vanishing) {
     return {
@@ -89,7 +89,7 @@ function totalScale(
   otherRadius: (site: SiteDossier) => number,
 ): TensorScale {
   const reach = (site: SiteDossier) => Math.max(0, ...(forms.get(site.index)?.values ?? [0]));
-  const largest = Math.max(...[...forms.values()].map((form) => Math.max(...form.values)));
+  const largest = [...forms.values()].reduce((most, form) => Math.max(most, ...form.values), -Infinity);
   let needed = largest / longestAngstrom;
   for (const pair of pairs) {
     const units = reach(pair.first) + reach(pair.second);
