@@ -6,13 +6,11 @@ import type { Scene } from '#src/scene/scene.ts';
 import type { Camera, Viewport } from '#src/scene/camera.ts';
 import { pixelsPerAngstrom } from '#src/scene/camera.ts';
 import { projection, projectPoint } from '#src/scene/project.ts';
+import { ringPx } from '#src/scene/theme.ts';
 import type { RenderTheme, Rgb } from './theme.ts';
 
 /** Uniforms that all programs share: one object each, so that a change reaches every material. */
 export type SharedUniforms = ReturnType<typeof sharedUniforms>;
-
-/** CSS pixels: ring round an atom, inner and outer distance from its outline. */
-const ringPx = [1.6, 4] as const;
 
 export function sharedUniforms() {
   return {

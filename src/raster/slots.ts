@@ -1,0 +1,162 @@
+/**
+ * The parameter block at the start of the kernel's memory: four bytes a slot, numbered here for the host, the plain
+ * JavaScript kernel and the AssemblyScript one alike. "At" slots hold byte addresses. Lengths are in samples (pixels
+ * times the samples across one); columns run to the right, rows downwards.
+ */
+export const blockBytes = 512;
+
+// whole numbers
+export const quadricCount = 0;
+export const cylinderCount = 1;
+export const lineCount = 2;
+/** Columns and rows of the picture, and of them the rows this kernel draws. */
+export const columns = 3;
+export const rows = 4;
+export const firstRow = 5;
+export const endRow = 6;
+/** Samples in one row of the strip's buffers: columns and some room for the last step of four. */
+export const stride = 7;
+export const samplesAcross = 8;
+export const markedCount = 9;
+/** 1 where ids and depths are wanted. */
+export const wantsIds = 10;
+/** Objects that reach into the rows, after sorting. */
+export const visibleCount = 11;
+export const paperPixel = 12;
+export const selectedPixel = 13;
+export const hoveredPixel = 14;
+/** Samples in one row of the colours. */
+export const colourStride = 15;
+
+// addresses
+export const centresAt = 20;
+export const shapesAt = 21;
+export const circlesAt = 22;
+export const statesAt = 23;
+export const quadricTintsAt = 24;
+export const startsAt = 25;
+export const endsAt = 26;
+export const radiiAt = 27;
+export const startTintsAt = 28;
+export const endTintsAt = 29;
+export const lineStartsAt = 30;
+export const lineEndsAt = 31;
+export const markedAt = 32;
+export const recordsAt = 33;
+export const candidatesAt = 34;
+export const sortedAt = 35;
+export const binsAt = 36;
+export const depthAt = 37;
+export const idsAt = 38;
+export const coloursAt = 39;
+export const tilesAt = 40;
+export const pixelsAt = 41;
+export const linearTableAt = 42;
+export const bytesTableAt = 43;
+export const outIdsAt = 44;
+export const outDepthAt = 45;
+
+// floats
+/** Nine: crystal to view axes, row-major, times samples per Å. */
+export const turn = 60;
+/** Three, Å. */
+export const target = 69;
+/** Column and row of the point that the camera looks at: 0.5 less than its place, so that sample centres are whole. */
+export const middleColumn = 72;
+export const middleRow = 73;
+export const samplesPerAngstrom = 74;
+/** Samples in one CSS pixel. */
+export const pixelScale = 75;
+export const nearest = 76;
+/** 1 / (nearest − farthest depth of the scene). */
+export const perDepth = 77;
+export const depthCue = 78;
+/** Three each: sRGB from 0 to 1. */
+export const paper = 79;
+export const lineColour = 82;
+/** CSS pixels. */
+export const lineWidth = 85;
+export const circleWidth = 86;
+export const rimWidth = 87;
+export const ringInner = 88;
+export const ringOuter = 89;
+
+// sizes of what the addresses lead to, in units of four bytes
+export const recordSize = 48;
+export const tintSize = 9;
+/** Of candidates and sorted objects: object, first row, last row. */
+export const entrySize = 3;
+export const binCount = 4096;
+/** Rows of a strip at most, and sides of the tiles that skip what is hidden. */
+export const stripRows = 32;
+export const tileSide = 16;
+/** Of a tile: farthest depth in it, objects drawn since that was found. */
+export const tileSize = 2;
+/** Objects drawn into a tile before its farthest depth is looked for again. */
+export const tilePatience = 2;
+
+/** Depths of nothing drawn yet, and of the room beside the picture, where nothing may be drawn. */
+export const nothingDepth: number = -1e30;
+export const closedDepth: number = 1e30;
+
+// A quadric's record, in units of four bytes. Both kinds: 10 and 11.
+/** Column and row of the centre (less 0.5 each), depth of the centre. */
+export const qColumn = 0;
+export const qRow = 1;
+export const qDepth = 2;
+/** K = Σxy⁻¹ */
+export const qKxx = 3;
+export const qKxy = 4;
+export const qKyy = 5;
+/** Slopes of the contour plane, half depth. */
+export const qSlopeX = 6;
+export const qSlopeY = 7;
+export const qHalfDepth = 8;
+/** Half the outline's width at the centre's row; shift of a row's middle with its height; 1 / Σyy. */
+export const qHalfWidth = 9;
+export const oNearest = 11;
+/** Half width of the outline's box. */
+export const oReach = 10;
+export const qShear = 12;
+export const qPerYy = 13;
+/** Half the outline's smallest width, CSS pixels. */
+export const qNarrowest = 14;
+/** 1 where what follows was filled for this frame. */
+export const oShaded = 15;
+/** Three circles: x, y and z coefficients of u_k in offset and unit height. */
+export const qCircles = 16;
+export const qCircleLow = 25;
+export const qCirclePer = 26;
+export const qCircleInk = 27;
+export const qRimInk = 28;
+/** Beyond this rest = 1 − e² no rim is near. */
+export const qRimRest = 29;
+export const qBits = 30;
+export const qIsDark = 31;
+export const qCholesky11 = 32;
+export const qCholesky21 = 33;
+export const qCholesky22 = 34;
+
+// A cylinder's record.
+export const cColumn = 0;
+export const cRow = 1;
+export const cDepth = 2;
+/** Direction of the projected axis, y up. */
+export const cAlongX = 3;
+export const cAlongY = 4;
+export const cRadius = 5;
+export const cSize = 6;
+export const cLie = 7;
+export const cRise = 8;
+export const cMiddle = 9;
+export const cLow = 12;
+export const cHigh = 13;
+export const cPerLie = 14;
+export const cBias = 16;
+export const cPerRise = 17;
+export const cCapBias = 18;
+export const cCapAt = 19;
+export const cRimInk = 20;
+export const cRimLow = 21;
+export const cRimPer = 22;
+export const cFacing = 23;

@@ -1,0 +1,70 @@
+import type { Rgb } from '#src/scene/theme.ts';
+import { tintSize } from './slots.ts';
+
+/** sRGB byte as linear light (IEC 61966-2-1). */
+export function linearLight(byte: number): number {
+  const c = byte / 255;
+  return c <= 0.04045 ? c / 12.92 : ((c + 0.055) / 1.055) ** 2.4;
+}
+
+/** Linear light as sRGB, 0 to 1. */
+export function srgb(light: number): number {
+  const x = Math.min(1, Math.max(0, light));
+  return x <= 0.0031308 ? 12.92 * x : 1.055 * x ** (1 / 2.4) - 0.055;
+}
+
+/** Brightest that light of shaders/chunks/_light.glsl becomes, rounded up. */
+const brightest = 1.33;
+const offset = 0.055;
+
+/** sRGB + 0.055 of a colour under light above 1, as `lit` of the shader chunk has it. */
+function overlit(colour: number, light: number): number {
+  return srgb(1 - (1 - Math.min(colour, 0.999)) ** light) + offset;
+}
+
+/**
+ * What the shading loop needs of a colour, three numbers a channel: S(t) = a + b t + c t², t = max(light − 1, 0), with
+ * sRGB = S(t)·min(light, 1)^(5/12) − 0.055. The power law of sRGB makes everything that darkens a factor, so that one power
+ * a pixel serves all channels; above 1 a parabola through three points follows the shader to better than 1/1000.
+ */
+function tintChannel(byte: number, tints: Float32Array, at: number): void {
+  const colour = linearLight(byte);
+  const a = 1.055 * colour ** (5 / 12);
+  const [t1, t2] = [(brightest - 1) / 2, brightest - 1];
+  const s1 = (overlit(colour, 1 + t1) - a) / t1;
+  const s2 = (overlit(colour, brightest) - a) / t2;
+  const c = (s2 - s1) / (t2 - t1);
+  tints[at] = a;
+  tints[at + 1] = s1 - c * t1;
+  tints[at + 2] = c;
+}
+
+/** Tints of sRGB bytes, three a colour, into `tints` (nine a colour). */
+export function fillTints(colours: Uint8Array, tints: Float32Array): void {
+  const known = new Map<number, number>();
+  for (let i = 0; 3 * i < colours.length; i++) {
+    const key = (colours[3 * i]! << 16) | (colours[3 * i + 1]! << 8) | colours[3 * i + 2]!;
+    const same = known.get(key);
+    const at = tintSize * i;
+    if (same !== undefined) {
+      tints.copyWithin(at, same, same + tintSize);
+      continue;
+    }
+    known.set(key, at);
+    for (let k = 0; k < 3; k++) tintChannel(colours[3 * i + k]!, tints, at + 3 * k);
+  }
+}
+
+/** Colour as the four bytes of a pixel, little-endian, opaque. */
+export function pixelOf([red, green, blue]: Rgb): number {
+  return (255 << 24) | (blue << 16) | (green << 8) | red;
+}
+
+/** Steps of the table from linear light to sRGB bytes. */
+export const byteSteps = 8192;
+
+/** Byte → linear light, 256 entries; linear light in `byteSteps` steps → byte. For the mean of samples. */
+export function fillTables(linear: Float32Array, bytes: Uint8Array): void {
+  for (let byte = 0; byte < 256; byte++) linear[byte] = linearLight(byte);
+  for (let k = 0; k <= byteSteps; k++) bytes[k] = Math.round(255 * srgb(k / byteSteps));
+}

@@ -1,0 +1,88 @@
+import { describe, expect, it } from 'vitest';
+import { javaScriptKernel } from '#src/raster/kernel.ts';
+import { createRasterizer } from '#src/raster/rasterizer.ts';
+import { buildScene } from '#src/scene/build-scene.ts';
+import type { Camera } from '#src/scene/camera.ts';
+import { turn, zoom } from '#src/scene/camera.ts';
+import { firstCamera } from '#src/scene/framing.ts';
+import type { Scene } from '#src/scene/scene.ts';
+import type { RenderTheme } from '#src/scene/theme.ts';
+import { darkTheme, lightTheme } from '#src/scene/theme.ts';
+import { madeQuartz } from '#tests/support/made-quartz.ts';
+import { madeUrea } from '#tests/support/made-urea.ts';
+import { readBack, stage } from './picture-harness.ts';
+
+const kernels = [['JavaScript', javaScriptKernel]] as const;
+
+const scenes: readonly (readonly [name: string, scene: Scene, theme: RenderTheme])[] = [
+  ['urea on light paper', buildScene(madeUrea()), lightTheme],
+  ['quartz on dark paper', buildScene(madeQuartz()), darkTheme],
+  ['urea without tensors', buildScene(madeUrea(), { showTensors: false }), lightTheme],
+];
+
+interface Compared {
+  /** Share of pixels that differ by more than 16 of 255 in a channel. */
+  readonly share: number;
+  readonly webgl: Uint8Array;
+  readonly raster: Uint8ClampedArray;
+}
+
+function compare(
+  makeKernel: (typeof kernels)[number][1],
+  scene: Scene,
+  camera: Camera,
+  theme: RenderTheme,
+  samplesAcross: number,
+): Compared {
+  const s = stage(400, 300, { theme, samplesAcross });
+  s.renderer.setScene(scene);
+  s.renderer.setCamera(camera);
+  s.renderer.setSelection(['0:0']);
+  s.renderer.setHover('1:0');
+  s.renderer.render();
+  const webgl = readBack(s.canvas).data;
+  s.end();
+  const rasterizer = createRasterizer(makeKernel());
+  rasterizer.setScene(scene);
+  const states = Uint8Array.from(scene.quadrics.pickIds, (pickId) => {
+    const entry = scene.picks[pickId - 1];
+    if (entry?.kind !== 'atom' || entry.context) return 0;
+    return entry.atomId === '0:0' ? 2 : entry.atomId === '1:0' ? 1 : 0;
+  });
+  rasterizer.setStates(states);
+  const view = { camera, viewport: { widthPx: 400, heightPx: 300 }, theme, pixelRatio: 1, samplesAcross };
+  const { pixels } = rasterizer.draw(view);
+  let differing = 0;
+  for (let at = 0; at < pixels.length; at += 4) {
+    if ([0, 1, 2].some((k) => Math.abs(pixels[at + k]! - webgl[at + k]!) > 16)) differing += 1;
+  }
+  return { share: differing / (pixels.length / 4), webgl, raster: pixels };
+}
+
+/** Share of pixels that are not paper. */
+function drawnShare(data: ArrayLike<number>, { paper }: RenderTheme): number {
+  let drawn = 0;
+  for (let at = 0; at < data.length; at += 4) {
+    if ([0, 1, 2].some((k) => data[at + k] !== paper[k])) drawn += 1;
+  }
+  return drawn / (data.length / 4);
+}
+
+describe.each(kernels)('the CPU renderer (%s) against WebGL', (_name, makeKernel) => {
+  it.each(scenes)('%s: the same picture but for rims', (_scene, scene, theme) => {
+    const viewport = { widthPx: 400, heightPx: 300 };
+    const first = firstCamera(scene, viewport);
+    for (const camera of [
+      first,
+      turn(first, 130, 70, viewport),
+      zoom(turn(first, -60, 40, viewport), 3, viewport),
+    ]) {
+      for (const samplesAcross of [1, 2, 3]) {
+        const { share, webgl, raster } = compare(makeKernel, scene, camera, theme, samplesAcross);
+        expect(drawnShare(webgl, theme)).toBeGreaterThan(0.02);
+        expect(drawnShare(raster, theme)).toBeGreaterThan(0.02);
+        expect(share).toBeLessThan(0.005);
+      }
+    }
+  });
+});
