@@ -47,9 +47,19 @@ function tabulated(setting: SpaceGroupSetting): Candidate {
   };
 }
 
+/** `P 21/c 1` or `P 1 21/c`: a full monoclinic symbol of which one 1 is missing. */
+function monoclinicWithoutOnes(compact: string): readonly SpaceGroupSetting[] {
+  const first = compact.replace(/^([A-Z])1(?=[2a-z])/, '$1');
+  const last = compact.replace(/(?<=[2a-z])1$/, '');
+  if ((first === compact) === (last === compact)) return [];
+  return settingsNamed(first === compact ? last : first).filter(({ number }) => number >= 3 && number <= 15);
+}
+
 function candidatesOf(compact: string): Candidate[] {
   const named = settingsNamed(compact);
   if (named.length > 0) return named.map(tabulated);
+  const halfFull = monoclinicWithoutOnes(compact);
+  if (halfFull.length > 0) return halfFull.map(tabulated);
   return uncommonSettings(compact).map(({ operations, number, from, how }) => ({
     setting: null,
     number,
@@ -59,10 +69,10 @@ function candidatesOf(compact: string): Candidate[] {
   }));
 }
 
-/** `H 3` and `H 3 2` stand for R 3 and R 3 2 on hexagonal axes in macromolecular files. */
-function macromolecular(text: SymbolText): SymbolText {
-  const hexagonal = text.compact === 'H3' || text.compact === 'H32';
-  if (hexagonal) return { ...text, compact: text.compact.replace('H', 'R'), axes: 'H' };
+/** `H 3`, `H 3 2`, `H -3 c` stand for R groups on hexagonal axes, in macromolecular files above all; `C 6/m` for P 6/m. */
+function onHexagonalAxes(text: SymbolText): SymbolText {
+  const rhombohedral = /^H-?3(2\/?)?[mc2]?$/.test(text.compact);
+  if (rhombohedral) return { ...text, compact: text.compact.replace('H', 'R'), axes: 'H' };
   const oldHexagonal = /^C-?[36]/.test(text.compact) && settingsNamed(text.compact).length === 0;
   return oldHexagonal ? { ...text, compact: text.compact.replace('C', 'P') } : text;
 }
@@ -203,7 +213,7 @@ function onGivenAxes(candidates: Candidate[], { basis }: SymbolText): Candidate[
 export function settingFromHermannMauguin(symbol: string, cell?: CellConstants): SymbolMatch | null {
   const read = readSymbolText(symbol);
   if (!read) return null;
-  const text = macromolecular(read);
+  const text = onHexagonalAxes(read);
   const candidates = onGivenAxes(withSettingOfCode(candidatesOf(text.compact), text), text);
   return choose(symbol.trim(), candidates, wishesOf(text), cell);
 }

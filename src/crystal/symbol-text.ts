@@ -74,7 +74,8 @@ function subscript(_all: string, order: string, screw: string): string {
 function withoutMarkup(text: string): string {
   return plainSigns(text)
     .replace(/\\?(?:bar|overline)\s*\{?\s*(\d)\s*\}?/gi, '-$1')
-    .replace(/(\d)[\u0304\u0305]/g, '-$1')
+    .replace(/(\d)(?:[\u0304\u0305]|\s*bar\b)/g, '-$1')
+    .replace(/\(\s*(-\s*[12346])\s*\)/g, '$1')
     .replace(/<\/?[a-z]+>/gi, '')
     .replace(/sub\s*[({[]?\s*(\d)\s*[)}\]]?/gi, '$1')
     .replace(/([2346])\s*_?[({[]\s*([1-5])\s*[)}\]]/g, subscript)
@@ -121,14 +122,22 @@ function withoutLastLetter(bare: string): Stripped {
   return { rest: code[1]!, wishes: wishesOfCode(code[2]!) };
 }
 
+/** A superspace-group symbol, such as `Pnma(0b0)s0s` or `P 21/c(\\a0\\g)`: its basic group. */
+function basicSymbol(text: string): string {
+  const wave =
+    /\(([\\\s\d/abg\u03b1-\u03b3]*[abg\u03b1-\u03b3][\\\s\d/abg\u03b1-\u03b3]*)\)[0stqh\s]*$/i.exec(text);
+  return wave && /[0\\\u03b1-\u03b3]|1\/[23]/.test(wave[1]!) ? text.slice(0, wave.index) : text;
+}
+
 /**
  * Takes a Hermann–Mauguin symbol of a real file apart: marks of subscripts (`2~1~`, `2_1`, `2(1)`, `2_{1}`, `2sub1`),
  * origin and axes in whatever form (`:2`, `:R`, `(origin choice 2)`, `{origin @ centre (-3m)}`, `hexagonal axes`, a
- * last S, Z, H or R), unique axis and cell choice, new axes in brackets. Null for text that can be no symbol.
+ * last S, Z, H or R), unique axis and cell choice, new axes in brackets; the wave vector of a modulated structure with
+ * what follows it is dropped. Null for text that can be no symbol.
  */
 export function readSymbolText(text: string): SymbolText | null {
   if (text.length > 200) return null;
-  const brackets = withoutBrackets(withoutMarkup(text));
+  const brackets = withoutBrackets(withoutMarkup(basicSymbol(text)));
   const words = withoutWords(brackets.rest.replace(/[,;.].*$/s, ''));
   const last = withoutLastLetter(words.rest.replace(/\s/g, ''));
   if (!/^[A-Z](?:[-/\dabcdemn]+)$/i.test(last.rest)) return null;

@@ -7,6 +7,7 @@ import type { Crystal } from '#src/crystal/crystal.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
 import type { Reading } from '../reading.ts';
 import { viewBlock } from './interpret/block-view.ts';
+import { withBorrowedItems } from './interpret/borrowed-items.ts';
 import { interpretBlock } from './interpret/interpret-block.ts';
 import { reportNoStructure, reportSeveral } from './interpret/block-choice.ts';
 import { parseCif } from './parse.ts';
@@ -30,8 +31,12 @@ export function readCif(source: SourceText, options: ReadCifOptions = {}): Readi
   const tensorSets: TensorSet[] = [];
   const { blocks } = document;
   const report = blockProgress(progress, blocks.length);
-  blocks.forEach((block, i) => {
-    const read = interpretBlock(viewBlock(block, source), structures.length, log, report(i));
+  const views = withBorrowedItems(
+    blocks.map((block) => viewBlock(block, source)),
+    log,
+  );
+  views.forEach((view, i) => {
+    const read = interpretBlock(view, structures.length, log, report(i));
     if (!read) return;
     structures.push(read.crystal);
     tensorSets.push(...read.tensorSets);

@@ -97,6 +97,12 @@ describe('readSymbolText', () => {
     ['P2sub1/c', 'P21/c', {}],
     ['R\\bar{3}m', 'R-3m', {}],
     ['R3\u0305m', 'R-3m', {}],
+    ['P1bar', 'P-1', {}],
+    ['F m 3bar m', 'Fm-3m', {}],
+    ['P(-1)', 'P-1', {}],
+    ['Pnma(0b0)s0s', 'Pnma', {}],
+    ['P 2(1)/c (\\a 0 \\g) 0 s', 'P21/c', {}],
+    ['P -3 1 m(1/3 1/3 \u03b3)', 'P-31m', {}],
     ['P\u22121', 'P-1', {}],
     ["'P 21/c'", 'P21/c', {}],
     ['"P n m a', 'Pnma', {}],
@@ -126,6 +132,21 @@ describe('readSymbolText', () => {
 
   it.each(['', 'P', '123', 'P ü', 'P'.repeat(300)])('refuses %j', (text) => {
     expect(readSymbolText(text)).toBeNull();
+  });
+});
+
+describe('settingFromHermannMauguin: spellings between the tabulated ones', () => {
+  it.each([
+    ['H 3 m', 'R 3 -2"'],
+    ['H -3 c', '-R 3 2"c'],
+    ['H -3 2/m', '-R 3 2"'],
+    ['H 3 2', 'R 3 2"'],
+    ['P 21/c 1', '-P 2ybc'],
+    ['P 1 21/n', '-P 2yn'],
+    ['C 1 c', 'C -2yc'],
+  ])('%s is %s', (symbol, hall) => {
+    const found = settingFromHermannMauguin(symbol);
+    expect(found && operationSetKey(found.operations)).toBe(operationSetKey(operationsFromHall(hall)!));
   });
 });
 

@@ -10,6 +10,9 @@ const lengthNames = ['a', 'b', 'c'] as const;
 const angleNames = ['alpha', 'beta', 'gamma'] as const;
 type CellName = (typeof lengthNames)[number] | (typeof angleNames)[number];
 
+/** Levelled names of the constants, lengths first. */
+export const cellItems: readonly string[] = [...lengthNames, ...angleNames].map(itemName);
+
 /** How far a stated volume may be from that of the constants before it is reported, relative. */
 const volumeTolerance = 0.02;
 

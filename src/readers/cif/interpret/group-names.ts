@@ -43,6 +43,14 @@ const symbolItems = [
 ];
 const numberItems = ['_space_group_it_number', '_symmetry_int_tables_number', '_symmetry_space_group_number'];
 
+/** Levelled names of all items that name the space group or its setting. */
+export const groupNameItems: readonly string[] = [
+  ...hallItems,
+  ...symbolItems,
+  ...numberItems,
+  '_space_group_it_coordinate_system_code',
+];
+
 /**
  * Reads every item that names the space group: Hall symbol, Hermann–Mauguin symbol in any of its items (with the cell
  * deciding between settings it leaves open), number. A Hall item that repeats the Hermann–Mauguin symbol is one of those by

@@ -31,6 +31,11 @@ const operationItems = [
   },
 ] as const;
 
+/** Levelled names of all items that list operations. */
+export const operationListItems: readonly string[] = operationItems.flatMap(({ list, centring }) =>
+  centring === null ? [list] : [list, centring],
+);
+
 /** No group of a lattice in a conventional cell has more than 192 operations; supercells of it may list more. */
 const mostOperations = 20_000;
 
@@ -98,12 +103,14 @@ interface OperationText {
   readonly value: CifValue;
 }
 
-/** Several operations in one text, a line or a semicolon apart, are as many operations. */
+/** Several operations in one text, a line, a semicolon or (all without blanks inside) a blank apart, are as many operations. */
 function textParts(value: CifValue): OperationText[] {
   const text = textOf(value);
   if (text === null) return [];
   if (understand(text)) return [{ text, value }];
-  const parts = text.split(/[\n\r;]+/).filter((part) => part.trim() !== '');
+  const words = text.split(/[\s;]+/).filter((part) => part !== '');
+  const byWord = words.length > 1 && words.every((word) => understand(word) !== null);
+  const parts = byWord ? words : text.split(/[\n\r;]+/).filter((part) => part.trim() !== '');
   return parts.map((part) => ({ text: part, value }));
 }
 
@@ -141,13 +148,27 @@ interface ReadOperation {
 
 /** One operation, with an id before it, a suffix for time reversal or further coordinates left out. */
 function understand(raw: string): ReadOperation | null {
-  const text = raw
-    .replace(/^\s*\(?\d+\)?[.:)]?\s+(?=[-+xyz\d.])/i, '')
+  const text = plainFractions(raw)
+    .replace(/^\s*(?:\(?\d+\)?[.:)]?\s+|\d+\s*,\s*(?=[^,]*,[^,]*,))(?=[-+xyz\d.])/i, '')
     .replace(/^[\s'"(]+|[\s'",;)]+$/g, '')
     .replace(/,[-+]?m[xyz].*$/i, '');
   const modulated = /x\s*[1-9]/i.test(text);
   const read = readOperation(modulated ? averageStructurePart(text) : text);
   return read && { operation: read.operation, timeReversal: read.timeReversal !== null, modulated };
+}
+
+const fractionSigns: Readonly<Record<string, string>> = {
+  '\u00bc': '1/4',
+  '\u00bd': '1/2',
+  '\u00be': '3/4',
+  '\u2153': '1/3',
+  '\u2154': '2/3',
+  '\u2159': '1/6',
+  '\u215a': '5/6',
+};
+
+function plainFractions(text: string): string {
+  return text.replace(/[\u00bc-\u00be\u2153-\u215a]/g, (sign) => fractionSigns[sign] ?? sign);
 }
 
 const letters: Readonly<Record<string, string>> = { x1: 'x', x2: 'y', x3: 'z' };

@@ -3,6 +3,7 @@ import {
   atomText,
   block,
   box,
+  cellText,
   codes,
   inversion,
   only,
@@ -27,6 +28,26 @@ describe('blocks', () => {
     const reading = read(`data_global\n_journal_year 2001\ndata_I\n${structure}`);
     expect(only(reading).place.line).toBe(3);
     expect(codes(reading)).toEqual([]);
+  });
+
+  it('cell and symmetry of a block of their own serve the atoms of another', () => {
+    const both = read(`data_crystal\n${box}${inversion}data_atoms\n${atoms}`);
+    expect(only(both).symmetry.operations).toHaveLength(2);
+    expect(only(both).lattice?.cell.a).toBe(8);
+    expect(codes(both)).toEqual(['cif-from-other-block', 'cif-from-other-block']);
+    const symmetry = read(`data_group\n${inversion}data_atoms\n${box}${atoms}`);
+    expect(only(symmetry).symmetry.operations).toHaveLength(2);
+    expect(problemOf(symmetry, 'cif-from-other-block').message).toContain('block group');
+  });
+
+  it.each([
+    ['another cell', `data_a\n${cellText(9, 9, 9)}${inversion}data_b\n${box}${atoms}`],
+    ['atoms of its own', `data_b\n${box}${atoms}data_a\n${box}${inversion}${atoms}`],
+    ['a rival', `data_a\n${inversion}data_b\n${box}${atoms}data_c\n${inversion}`],
+  ])('symmetry is not taken from a block with %s', (_, text) => {
+    const reading = read(text);
+    expect(reading.structures.find(({ name }) => name === 'b')?.symmetry.stated).toBe(false);
+    expect(codes(reading)).toEqual(['cif-no-symmetry']);
   });
 
   it('items before any data_ line are a block without a name', () => {

@@ -43,6 +43,10 @@ describe('operations listed in a loop', () => {
       ['+x,+y,+z', '-y,+x-y,+z+2/3', '-x+y,-x,+z+1/3', '+y,+x,-z', '+x-y,-y,-z+1/3', '-x,-x+y,-z+2/3'],
     ],
     ['with time reversal', quartz.map((op, i) => `${op},${i % 2 ? '-1' : '+1'}`)],
+    ['numbered with a comma', quartz.map((op, i) => `'${i + 1}, ${op}'`)],
+    ['one text with blanks between', [`'${quartz.join(' ')}'`]],
+    ['one text with semicolons between', [`'${quartz.join('; ')}'`]],
+    ['with signs for thirds', quartz.map((op) => op.replace('1/3', '\u2153').replace('2/3', '\u2154'))],
     ['unquoted with blanks', quartz.map((op) => op.replaceAll(',', ', '))],
   ])('%s', (_, rows) => {
     const reading = block(hexagonal, list(rows), atom);
