@@ -49,10 +49,8 @@ function tabulated(setting: SpaceGroupSetting): Candidate {
 
 /** `P 21/c 1` or `P 1 21/c`: a full monoclinic symbol of which one 1 is missing. */
 function monoclinicWithoutOnes(compact: string): readonly SpaceGroupSetting[] {
-  const first = compact.replace(/^([A-Z])1(?=[2a-z])/, '$1');
-  const last = compact.replace(/(?<=[2a-z])1$/, '');
-  if ((first === compact) === (last === compact)) return [];
-  return settingsNamed(first === compact ? last : first).filter(({ number }) => number >= 3 && number <= 15);
+  const bare = compact.replace(/^([A-Z])1(?=[2a-z].*[a-z]$)|(?<=[a-z])1$/, '$1');
+  return bare === compact ? [] : settingsNamed(bare).filter(({ number }) => number >= 3 && number <= 15);
 }
 
 function candidatesOf(compact: string): Candidate[] {
