@@ -49,7 +49,7 @@ function tabulated(setting: SpaceGroupSetting): Candidate {
 
 /** `P 21/c 1` or `P 1 21/c`: a full monoclinic symbol of which one 1 is missing. */
 function monoclinicWithoutOnes(compact: string): readonly SpaceGroupSetting[] {
-  const bare = compact.replace(/^([A-Z])1(?=[2a-z].*[a-z]$)|(?<=[a-z])1$/, '$1');
+  const bare = compact.replace(/^([A-Z])1(?=(?:2.*)?[a-z]$)|(?<=[a-z])1$/, '$1');
   return bare === compact ? [] : settingsNamed(bare).filter(({ number }) => number >= 3 && number <= 15);
 }
 
