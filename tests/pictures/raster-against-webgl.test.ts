@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { javaScriptKernel } from '#src/raster/kernel.ts';
+import { bestKernel } from '#src/raster/wasm-kernel.ts';
 import { createRasterizer } from '#src/raster/rasterizer.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
 import type { Camera } from '#src/scene/camera.ts';
@@ -12,7 +13,10 @@ import { madeQuartz } from '#tests/support/made-quartz.ts';
 import { madeUrea } from '#tests/support/made-urea.ts';
 import { readBack, stage } from './picture-harness.ts';
 
-const kernels = [['JavaScript', javaScriptKernel]] as const;
+const kernels = [
+  ['JavaScript', javaScriptKernel],
+  ['WebAssembly', bestKernel],
+] as const;
 
 const scenes: readonly (readonly [name: string, scene: Scene, theme: RenderTheme])[] = [
   ['urea on light paper', buildScene(madeUrea()), lightTheme],

@@ -18,6 +18,8 @@ if (!findBrowser()) {
   );
   process.exit(1);
 }
+const kernel = spawnSync(process.execPath, ['src/raster/build-kernel.mjs'], { stdio: 'inherit' });
+if (kernel.status !== 0) process.exit(kernel.status ?? 1);
 const report = process.env.ELLIPSITE_TEST_REPORT;
 const reporters = report ? ['--reporter=default', '--reporter=json', `--outputFile.json=${report}`] : [];
 const projects = ['--project', 'node', '--project', 'browser'];

@@ -1,0 +1,304 @@
+import * as S from '../slots.ts';
+import { lanes, part, real, setPart, smooth, whole } from './memory.ts';
+
+/** As shadePass of ../twin/shade.ts: run by run, four samples a step; what a step writes too far is overwritten by the next. */
+export function shadePass(first: i32, count: i32): void {
+  const columns = whole(S.columns);
+  const quadrics = whole(S.quadricCount);
+  const paper = i32x4.splat(whole(S.paperPixel));
+  for (let row = 0; row < count; row++) {
+    const ids: i32 = whole(S.idsAt) + ((row * whole(S.stride)) << 2);
+    const colours: i32 = whole(S.coloursAt) + ((row * whole(S.colourStride)) << 2);
+    const depth: i32 = whole(S.depthAt) + ((row * whole(S.stride)) << 2);
+    let x = 0;
+    while (x < columns) {
+      const id = load<i32>(ids + (x << 2));
+      const end = runEnd(ids, x, columns, id);
+      if (id === 0) {
+        for (let k = x; k < end; k += 4) v128.store(colours + (k << 2), paper);
+      } else if (id <= quadrics) {
+        quadricRun(id - 1, first + row, x, end, colours, depth);
+      } else {
+        cylinderRun(id - 1, first + row, x, end, colours, depth);
+      }
+      x = end;
+    }
+  }
+}
+
+/** First column from x on that shows something else. */
+function runEnd(ids: i32, x: i32, columns: i32, id: i32): i32 {
+  const same = i32x4.splat(id);
+  let end = x;
+  while (end + 4 <= columns && i32x4.all_true(i32x4.eq(v128.load(ids + (end << 2)), same))) end += 4;
+  while (end < columns && load<i32>(ids + (end << 2)) === id) end += 1;
+  return end;
+}
+
+/** One component of a turned semi-axis. */
+function axis(a: i32, row: i32): f32 {
+  const t: i32 = (S.turn + row) << 2;
+  return part(t, 0) * part(a, 0) + part(t, 1) * part(a, 3) + part(t, 2) * part(a, 6);
+}
+
+/** Row k of the inverse of the turned semi-axes is the cross product of the other two over the determinant. */
+function fillCircle(r: i32, k: i32, a: i32, p: i32, q: i32): void {
+  const px = axis(a + (p << 2), 0);
+  const py = axis(a + (p << 2), 3);
+  const pz = axis(a + (p << 2), 6);
+  const qx = axis(a + (q << 2), 0);
+  const qy = axis(a + (q << 2), 3);
+  const qz = axis(a + (q << 2), 6);
+  const own = a + (k << 2);
+  const x = py * qz - pz * qy;
+  const y = pz * qx - px * qz;
+  const z = px * qy - py * qx;
+  const per = <f32>1 / (axis(own, 0) * x + axis(own, 3) * y + axis(own, 6) * z);
+  const at: i32 = S.qCircles + 3 * k;
+  setPart(r, at, (x + z * part(r, S.qSlopeX)) * per);
+  setPart(r, at + 1, (y + z * part(r, S.qSlopeY)) * per);
+  setPart(r, at + 2, z * part(r, S.qHalfDepth) * per);
+}
+
+function fillQuadric(object: i32, r: i32): void {
+  const a: i32 = whole(S.shapesAt) + 36 * object;
+  fillCircle(r, 0, a, 1, 2);
+  fillCircle(r, 1, a, 2, 0);
+  fillCircle(r, 2, a, 0, 1);
+  const narrowest = part(r, S.qNarrowest);
+  const scale = real(S.pixelScale);
+  const halfWidth = <f32>0.5 * min<f32>(real(S.circleWidth), <f32>0.5 + <f32>0.055 * narrowest);
+  setPart(r, S.qCircleLow, (halfWidth - <f32>0.35) * scale);
+  setPart(r, S.qCirclePer, 1 / (<f32>0.7 * scale));
+  setPart(r, S.qCircleInk, <f32>0.92 * smooth(narrowest, 4, <f32>(1.0 / 6.0)));
+  setPart(r, S.qRimInk, <f32>0.52 * smooth(narrowest, 2, 0.25));
+  const rim = min<f32>(1, (real(S.rimWidth) + <f32>0.4) / narrowest);
+  setPart(r, S.qRimRest, rim * (2 - rim));
+  store<i32>(r + (S.qBits << 2), load<u8>(whole(S.circlesAt) + object));
+  const tint: i32 = whole(S.quadricTintsAt) + ((S.tintSize * object) << 2);
+  const scaled = f32x4(part(tint, 0), part(tint, 3), part(tint, 6), 0);
+  const linear = power24(f32x4.mul(scaled, f32x4.splat(1 / 1.055)));
+  const luminance =
+    <f32>0.2126 * f32x4.extract_lane(linear, 0) +
+    <f32>0.7152 * f32x4.extract_lane(linear, 1) +
+    <f32>0.0722 * f32x4.extract_lane(linear, 2);
+  setPart(r, S.qIsDark, luminance > <f32>0.14 ? 0 : 1);
+  setPart(r, S.oShaded, 1);
+}
+
+function power512(x: v128): v128 {
+  const half = f32x4.sqrt(x);
+  const quarter = f32x4.sqrt(half);
+  const a = f32x4.mul(
+    half,
+    f32x4.sub(f32x4.splat(1.2705759888882475), f32x4.mul(quarter, f32x4.splat(0.5536525642542288))),
+  );
+  const b = f32x4.mul(x, f32x4.splat(0.1716749964715031));
+  return f32x4.add(f32x4.add(a, b), f32x4.mul(quarter, f32x4.splat(0.11166797321960593)));
+}
+
+function power24(x: v128): v128 {
+  const inner = f32x4.sub(f32x4.splat(0.8560349965918098), f32x4.mul(x, f32x4.splat(0.24422505341382666)));
+  return f32x4.mul(f32x4.mul(x, x), f32x4.add(f32x4.splat(0.3871972473784141), f32x4.mul(x, inner)));
+}
+
+/** Held between 0 and 1; not a number becomes 0. */
+function share(x: v128): v128 {
+  return f32x4.pmin(f32x4.splat(1), f32x4.pmax(f32x4.splat(0), x));
+}
+
+function smoothLanes(value: v128, low: v128, per: v128): v128 {
+  const x = share(f32x4.mul(f32x4.sub(value, low), per));
+  return f32x4.mul(f32x4.mul(x, x), f32x4.sub(f32x4.splat(3), f32x4.add(x, x)));
+}
+
+function softLight(x: v128, y: v128, z: v128): v128 {
+  const aside = f32x4.sub(f32x4.mul(y, f32x4.splat(0.3)), f32x4.mul(x, f32x4.splat(0.21)));
+  const wrapped = f32x4.add(f32x4.splat(0.5), f32x4.add(aside, f32x4.mul(z, f32x4.splat(0.34))));
+  const away = f32x4.sub(f32x4.splat(1), z);
+  const form = f32x4.add(
+    f32x4.splat(0.16 / 0.752704),
+    f32x4.mul(f32x4.mul(wrapped, wrapped), f32x4.splat(0.84 / 0.752704)),
+  );
+  return f32x4.mul(form, f32x4.sub(f32x4.splat(1), f32x4.mul(f32x4.mul(away, away), f32x4.splat(0.25))));
+}
+
+/** One channel as a byte in each lane: tint under light, power of what darkens it, white mixed in, faded. */
+function channel(tint: i32, k: i32, over: v128, power: v128, fade: v128): v128 {
+  const at = tint + 12 * k;
+  const inner = f32x4.add(lanes(at, 1), f32x4.mul(over, lanes(at, 2)));
+  const value = f32x4.mul(f32x4.add(lanes(at, 0), f32x4.mul(over, inner)), power);
+  return mixed(value, k, fade);
+}
+
+function mixed(value: v128, k: i32, fade: v128): v128 {
+  const srgb = f32x4.sub(value, f32x4.splat(0.055));
+  const faded = f32x4.add(srgb, f32x4.mul(f32x4.sub(lanes((S.paper + k) << 2, 0), srgb), fade));
+  const scaled = f32x4.add(f32x4.mul(faded, f32x4.splat(255)), f32x4.splat(0.5));
+  return i32x4.trunc_sat_f32x4_s(f32x4.pmin(f32x4.splat(255), f32x4.pmax(f32x4.splat(0), scaled)));
+}
+
+function pixels(red: v128, green: v128, blue: v128): v128 {
+  const opaque = i32x4.splat(0xff000000);
+  return v128.or(v128.or(opaque, red), v128.or(i32x4.shl(green, 8), i32x4.shl(blue, 16)));
+}
+
+function fadeOf(z: v128): v128 {
+  const far = share(f32x4.mul(f32x4.sub(f32x4.splat(real(S.nearest)), z), f32x4.splat(real(S.perDepth))));
+  return f32x4.mul(far, f32x4.splat(real(S.depthCue)));
+}
+
+function colourOf(tint: i32, light: v128, ink: v128, z: v128): v128 {
+  const one = f32x4.splat(1);
+  const over = f32x4.pmax(f32x4.splat(0), f32x4.sub(light, one));
+  const power = power512(f32x4.mul(f32x4.pmin(one, light), ink));
+  const fade = fadeOf(z);
+  const red = channel(tint, 0, over, power, fade);
+  const green = channel(tint, 1, over, power, fade);
+  return pixels(red, green, channel(tint, 2, over, power, fade));
+}
+
+/** A channel of a dark colour whose circles are drawn in light. */
+function inkedChannel(tint: i32, k: i32, over: v128, power: v128, white: v128, ink: v128, fade: v128): v128 {
+  const at = tint + 12 * k;
+  const inner = f32x4.add(lanes(at, 1), f32x4.mul(over, lanes(at, 2)));
+  const value = f32x4.mul(f32x4.add(lanes(at, 0), f32x4.mul(over, inner)), power);
+  const linear = power24(f32x4.mul(value, f32x4.splat(1 / 1.055)));
+  const light = f32x4.add(linear, f32x4.mul(f32x4.sub(f32x4.splat(1), linear), white));
+  return mixed(f32x4.mul(power512(f32x4.mul(light, ink)), f32x4.splat(1.055)), k, fade);
+}
+
+function inkedColour(tint: i32, light: v128, ink: v128, white: v128, z: v128): v128 {
+  const one = f32x4.splat(1);
+  const over = f32x4.pmax(f32x4.splat(0), f32x4.sub(light, one));
+  const power = power512(f32x4.pmin(one, light));
+  const fade = fadeOf(z);
+  const red = inkedChannel(tint, 0, over, power, white, ink, fade);
+  const green = inkedChannel(tint, 1, over, power, white, ink, fade);
+  return pixels(red, green, inkedChannel(tint, 2, over, power, white, ink, fade));
+}
+
+function quadricRun(object: i32, row: i32, start: i32, end: i32, colours: i32, depth: i32): void {
+  const r: i32 = whole(S.recordsAt) + ((S.recordSize * object) << 2);
+  if (part(r, S.oShaded) === 0) fillQuadric(object, r);
+  const tint: i32 = whole(S.quadricTintsAt) + ((S.tintSize * object) << 2);
+  const one = f32x4.splat(1);
+  const zero = f32x4.splat(0);
+  const bits = load<i32>(r + (S.qBits << 2));
+  const isDark = part(r, S.qIsDark) === 1;
+  const dyOne = part(r, S.qRow) - <f32>row;
+  const dy = f32x4.splat(dyOne);
+  const kxx = lanes(r, S.qKxx);
+  const kxy = lanes(r, S.qKxy);
+  const exOfRow = f32x4.splat(part(r, S.qKxy) * dyOne);
+  const eyOfRow = f32x4.splat(part(r, S.qKyy) * dyOne);
+  const perHalf = f32x4.splat(1 / part(r, S.qHalfDepth));
+  const rimRest = lanes(r, S.qRimRest);
+  let dx = f32x4.add(f32x4(0, 1, 2, 3), f32x4.splat(<f32>start - part(r, S.qColumn)));
+  for (let x = start; x < end; x += 4, dx = f32x4.add(dx, f32x4.splat(4))) {
+    const ex = f32x4.add(f32x4.mul(kxx, dx), exOfRow);
+    const ey = f32x4.add(f32x4.mul(kxy, dx), eyOfRow);
+    const square = f32x4.add(f32x4.mul(dx, ex), f32x4.mul(dy, ey));
+    const rest = f32x4.pmax(zero, f32x4.sub(one, square));
+    const unit = f32x4.sqrt(rest);
+    const nz = f32x4.mul(unit, perHalf);
+    const nx = f32x4.sub(ex, f32x4.mul(lanes(r, S.qSlopeX), nz));
+    const ny = f32x4.sub(ey, f32x4.mul(lanes(r, S.qSlopeY), nz));
+    const norm = f32x4.add(f32x4.mul(nx, nx), f32x4.add(f32x4.mul(ny, ny), f32x4.mul(nz, nz)));
+    const per = f32x4.div(one, f32x4.sqrt(norm));
+    const light = softLight(f32x4.mul(nx, per), f32x4.mul(ny, per), f32x4.mul(nz, per));
+    let ink = one;
+    const isRim = f32x4.lt(rest, rimRest);
+    if (v128.any_true(isRim)) ink = rimInk(r, rest, ex, ey, isRim);
+    const z = v128.load(depth + (x << 2));
+    let colour: v128;
+    const circle = bits === 0 ? zero : circleInk(r, bits, dx, dy, unit, ex, ey);
+    if (isDark && v128.any_true(circle)) {
+      colour = inkedColour(tint, light, ink, f32x4.mul(circle, f32x4.splat(0.55)), z);
+    } else {
+      ink = f32x4.mul(ink, f32x4.sub(one, f32x4.mul(circle, f32x4.splat(0.88))));
+      colour = colourOf(tint, light, ink, z);
+    }
+    v128.store(colours + (x << 2), colour);
+  }
+}
+
+function rimInk(r: i32, rest: v128, ex: v128, ey: v128, isRim: v128): v128 {
+  const one = f32x4.splat(1);
+  const radius = f32x4.sqrt(f32x4.sub(one, rest));
+  const slope = f32x4.sqrt(f32x4.add(f32x4.mul(ex, ex), f32x4.mul(ey, ey)));
+  const run = f32x4.mul(f32x4.mul(f32x4.sub(one, radius), radius), f32x4.splat(1 / real(S.pixelScale)));
+  const rim = f32x4.div(run, slope);
+  const inside = smoothLanes(rim, f32x4.splat(real(S.rimWidth) - <f32>0.4), f32x4.splat(1 / 0.8));
+  const ink = f32x4.sub(one, f32x4.mul(lanes(r, S.qRimInk), f32x4.sub(one, inside)));
+  return v128.bitselect(ink, one, isRim);
+}
+
+/** Squared distance to one circle. */
+function circleSquare(r: i32, k: i32, dx: v128, dy: v128, unit: v128, per: v128, ex: v128, ey: v128): v128 {
+  const at = r + ((S.qCircles + 3 * k) << 2);
+  const x = lanes(at, 0);
+  const y = lanes(at, 1);
+  const z = lanes(at, 2);
+  const u = f32x4.add(f32x4.mul(x, dx), f32x4.add(f32x4.mul(y, dy), f32x4.mul(z, unit)));
+  const steep = f32x4.mul(z, per);
+  const gx = f32x4.sub(x, f32x4.mul(steep, ex));
+  const gy = f32x4.sub(y, f32x4.mul(steep, ey));
+  return f32x4.div(f32x4.mul(u, u), f32x4.add(f32x4.mul(gx, gx), f32x4.mul(gy, gy)));
+}
+
+function circleInk(r: i32, bits: i32, dx: v128, dy: v128, unit: v128, ex: v128, ey: v128): v128 {
+  const per = f32x4.div(f32x4.splat(1), f32x4.pmax(unit, f32x4.splat(0.02)));
+  let least = f32x4.splat(1e30);
+  if (bits & 1) least = f32x4.pmin(least, circleSquare(r, 0, dx, dy, unit, per, ex, ey));
+  if (bits & 2) least = f32x4.pmin(least, circleSquare(r, 1, dx, dy, unit, per, ex, ey));
+  if (bits & 4) least = f32x4.pmin(least, circleSquare(r, 2, dx, dy, unit, per, ex, ey));
+  const away = smoothLanes(f32x4.sqrt(least), lanes(r, S.qCircleLow), lanes(r, S.qCirclePer));
+  return f32x4.mul(lanes(r, S.qCircleInk), f32x4.sub(f32x4.splat(1), away));
+}
+
+function cylinderRun(object: i32, row: i32, start: i32, end: i32, colours: i32, depth: i32): void {
+  const r: i32 = whole(S.recordsAt) + ((S.recordSize * object) << 2);
+  const offset: i32 = (S.tintSize * (object - whole(S.quadricCount))) << 2;
+  const startTint: i32 = whole(S.startTintsAt) + offset;
+  const endTint: i32 = whole(S.endTintsAt) + offset;
+  const one = f32x4.splat(1);
+  const zero = f32x4.splat(0);
+  const tx = lanes(r, S.cAlongX);
+  const ty = lanes(r, S.cAlongY);
+  const radius = lanes(r, S.cRadius);
+  const perRadius = f32x4.div(one, radius);
+  const lie = lanes(r, S.cLie);
+  const rise = lanes(r, S.cRise);
+  const facing = lanes(r, S.cFacing);
+  const size = lanes(r, S.cSize);
+  const dy = f32x4.splat(part(r, S.cRow) - <f32>row);
+  let dx = f32x4.add(f32x4(0, 1, 2, 3), f32x4.splat(<f32>start - part(r, S.cColumn)));
+  for (let x = start; x < end; x += 4, dx = f32x4.add(dx, f32x4.splat(4))) {
+    const along = f32x4.add(f32x4.mul(dx, tx), f32x4.mul(dy, ty));
+    const across = f32x4.sub(f32x4.mul(dy, tx), f32x4.mul(dx, ty));
+    const bulge = f32x4.sub(f32x4.mul(radius, radius), f32x4.mul(across, across));
+    const height = f32x4.sqrt(f32x4.pmax(zero, bulge));
+    const raised = f32x4.mul(f32x4.add(along, f32x4.mul(height, rise)), lanes(r, S.cPerLie));
+    const t = f32x4.add(raised, lanes(r, S.cBias));
+    const isSide = v128.and(f32x4.ge(t, zero), f32x4.le(t, size));
+    const q = f32x4.mul(height, perRadius);
+    const nAlong = v128.bitselect(f32x4.neg(f32x4.mul(rise, q)), f32x4.mul(facing, lie), isSide);
+    const nAcross = v128.and(f32x4.mul(across, perRadius), isSide);
+    const nz = v128.bitselect(f32x4.mul(lie, q), f32x4.mul(facing, rise), isSide);
+    const nx = f32x4.sub(f32x4.mul(nAlong, tx), f32x4.mul(nAcross, ty));
+    const ny = f32x4.add(f32x4.mul(nAlong, ty), f32x4.mul(nAcross, tx));
+    const edge = smoothLanes(f32x4.sub(radius, f32x4.abs(across)), lanes(r, S.cRimLow), lanes(r, S.cRimPer));
+    const ink = f32x4.sub(one, f32x4.mul(lanes(r, S.cRimInk), f32x4.sub(one, edge)));
+    const light = softLight(nx, ny, nz);
+    const z = v128.load(depth + (x << 2));
+    const half = f32x4.lt(t, f32x4.mul(size, f32x4.splat(0.5)));
+    const isStart = v128.bitselect(half, f32x4.lt(facing, zero), isSide);
+    const isAll = i32x4.all_true(isStart);
+    let colour = colourOf(isAll ? startTint : endTint, light, ink, z);
+    if (!isAll && v128.any_true(isStart)) {
+      colour = v128.bitselect(colourOf(startTint, light, ink, z), colour, isStart);
+    }
+    v128.store(colours + (x << 2), colour);
+  }
+}
