@@ -37,6 +37,9 @@ export const elements: readonly ChemicalElement[] = elementTable
 const bySymbol: ReadonlyMap<string, ChemicalElement> = new Map(
   elements.map((element) => [element.symbol, element]),
 );
+const byName: ReadonlyMap<string, ChemicalElement> = new Map(
+  elements.map((element) => [element.name, element]),
+);
 const byNumber: ReadonlyMap<number, ChemicalElement> = new Map(
   elements.filter(({ symbol }) => symbol !== 'D' && symbol !== 'T').map((e) => [e.atomicNumber, e]),
 );
@@ -77,7 +80,7 @@ const dummyWords = /^du(m|mmy)?([^a-z]|$)/i;
 const firstUnlikely = 95;
 
 /**
- * The element a label stands for, such as `Si1A`, `CL2`, `Ow3`, `OH1`, `Wat`, `1HB`. `known` holds the element symbols
+ * The element a label stands for, such as `Si1A`, `CL2`, `Ow3`, `OH1`, `Wat`, `1HB`, `Carbon3`. `known` holds the element symbols
  * of the formula sum, where there is one, and decides between readings: with calcium in it and no carbon, `CA1` is
  * calcium. Without it a second letter counts when it is lower-case, or when it is a capital and the pair does not
  * usually name a carbon, hydrogen, nitrogen or oxygen atom by its place. null for labels without an element (`T1`, `M2`, `X`).
@@ -86,6 +89,10 @@ export function elementFromLabel(label: string, known?: ReadonlySet<string>): La
   const letters = /[A-Za-z]+/.exec(label)?.[0];
   if (!letters || dummyWords.test(letters)) return null;
   if (waterWords.test(label.trim()) && known?.has('O') !== false) return { element: 'O', certain: true };
+  const named = byName.get(letters.toLowerCase());
+  if (named && (!known || known.size === 0 || known.has(named.symbol))) {
+    return { element: named.symbol, certain: true };
+  }
   const two = letters.length > 1 ? (bySymbol.get(titleCase(letters.slice(0, 2))) ?? null) : null;
   const one = bySymbol.get(letters[0]!.toUpperCase()) ?? null;
   if (known && known.size > 0) {

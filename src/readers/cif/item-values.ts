@@ -108,8 +108,11 @@ function oneValue(values: readonly CifValue[], ends: readonly number[], lexer: C
       },
     );
   }
-  if (joined < values.length)
-    reportStray(lexer.report, values[joined]!.offset, ends.at(-1)!, values.length - joined);
+  if (joined === values.length) return value;
+  const last = values.at(-1)!;
+  if (isNumber(first) && last.offset < lexer.report.nextLineStart(first.offset)) {
+    reportAfterNumber(lexer.report, values[joined]!.offset, ends.at(-1)!);
+  } else reportStray(lexer.report, values[joined]!.offset, ends.at(-1)!, values.length - joined);
   return value;
 }
 
@@ -125,6 +128,24 @@ function wordsOnLine(values: readonly CifValue[], report: CifReport): number {
     if (value.kind === 'list' || value.kind === 'table') break;
   }
   return count;
+}
+
+function isNumber(value: CifValue): boolean {
+  return value.kind === 'text' && !value.delimited && numberFromText(value.text) !== null;
+}
+
+/** `8.012 (3)` or `8.012 A`: the number is what was asked for. */
+function reportAfterNumber(report: CifReport, start: number, end: number): void {
+  report.add(
+    'warning',
+    'cif-words-after-number',
+    start,
+    'More stands after a number on its line; only the number was read.',
+    {
+      got: report.excerpt(start, end),
+      allowed: 'a number, with its uncertainty in parentheses and no blank before',
+    },
+  );
 }
 
 /** Reports values that belong to no name as one problem. */

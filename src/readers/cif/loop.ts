@@ -1,6 +1,7 @@
 import type { CifLoop, CifValue } from './cif-document.ts';
 import { rowsByLine } from './loop-rows.ts';
 import type { CifReport } from './report.ts';
+import { joinSplitNumbers } from './split-numbers.ts';
 
 /** A name with its place. */
 export interface NameAt {
@@ -9,7 +10,7 @@ export interface NameAt {
 }
 
 /**
- * Makes whole rows of what a loop held. Where the number of values does not fit, rows that stand complete on their lines are
+ * Makes whole rows of what a loop held. Where the number of values does not fit, blanks inside numbers are closed; else rows that stand complete on their lines are
  * kept, if nearly all do, so that one missing value spoils one row only; else the incomplete last row is cut. Both are reported.
  */
 export function completeLoop(
@@ -35,7 +36,7 @@ export function completeLoop(
     return { ...loop, values };
   }
   if (excess === 0) return { ...loop, values };
-  const rows = rowsByLine(values, width, report);
+  const rows = joinSplitNumbers(values, width, report) ?? rowsByLine(values, width, report);
   if (rows) return { ...loop, values: rows };
   const cut = values[values.length - excess]!;
   report.add(

@@ -88,6 +88,16 @@ describe('an element from a label', () => {
     expect(elementFromLabel(label)).toEqual({ element, certain: false });
   });
 
+  it.each([
+    ['Carbon3', 'C'],
+    ['nitrogen', 'N'],
+    ['SODIUM1', 'Na'],
+    ['Iron', 'Fe'],
+  ])('%s is a name', (label, element) => {
+    expect(elementFromLabel(label)).toEqual({ element, certain: true });
+    expect(elementFromLabel(label, new Set(['Li']))?.certain).not.toBe(true);
+  });
+
   it.each(['T1', 'M2', 'X', 'A1', '?', '', '12', 'Q3', 'Dum', 'DUM1', 'Du2'])(
     '%j names no element',
     (label) => {

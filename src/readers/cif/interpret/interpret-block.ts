@@ -12,6 +12,7 @@ import { readFrame } from './cartesian-frame.ts';
 import { checkVolume, readCell } from './cell.ts';
 import type { CheckedComposition, StatedFormula } from './formula-check.ts';
 import { checkComposition, readFormula } from './formula-check.ts';
+import { settleByElimination } from './element-by-elimination.ts';
 import { readGroupNames } from './group-names.ts';
 import { knownElements } from './known-elements.ts';
 import { countAllImages } from './multiplicity.ts';
@@ -135,7 +136,8 @@ function settled(
   formula: StatedFormula,
   log: ProblemLog,
 ): CheckedComposition {
-  const { sites, species } = settleRivals(built, multiplicities, formula);
+  const rivals = settleRivals(built, multiplicities, formula);
+  const { sites, species } = settleByElimination(rivals, multiplicities, formula);
   reportSpecies(sites, species, log);
   const implied = species.map(({ hydrogens }) => hydrogens);
   return checkComposition(view, formula, sites, multiplicities, implied, log);

@@ -70,6 +70,7 @@ export function speciesOfSite(
       spelled: spelledIn(label, known),
     };
   }
+  if (/^[HD]2O/.test(label) && known.has('O')) return ofElement('O', 'label', false);
   if (/^[HD](?![a-z])/.test(label)) return ofElement(label.startsWith('D') ? 'D' : 'H', 'label', false);
   const inside = elementFromKnown(label, known);
   if (inside) return ofElement(inside, 'label', false);

@@ -133,6 +133,17 @@ describe('elements', () => {
     expect(elements('C H2 O2', plainColumns, ...acid).at(-1)).toBe('H');
   });
 
+  it('a label that names none gets the one element that the formula has left, if it then fits', () => {
+    const silica = ['T1 0 0 .1', 'T2 0 0 .2', 'O1 .1 0 .2', 'O2 .2 0 .2', 'O3 .3 0 .2', 'O4 .4 0 .2'];
+    expect(elements('O2 Si', plainColumns, ...silica).slice(0, 2)).toEqual(['Si', 'Si']);
+    expect(elements('O6 Si5', plainColumns, ...silica).slice(0, 2)).toEqual(['X', 'X']);
+    expect(elements('Al O4 Si', plainColumns, ...silica).slice(0, 2)).toEqual(['X', 'X']);
+  });
+
+  it('H2O5 is water where the formula has no hydrogen', () => {
+    expect(elements('Na O', plainColumns, 'Na1 0 0 .1', 'H2O5 .1 .2 .3')).toEqual(['Na', 'O']);
+  });
+
   it('that a label spells and the formula lacks are believed where the formula does not fit', () => {
     const rows = ['K 0 0 .1', 'FeM1 0 0 .2', 'AlT .1 0 .2', 'F1 .2 0 .2', 'F2 .3 0 .2'];
     expect(elements('K Mg Al F2', plainColumns, ...rows)).toEqual(['K', 'Fe', 'Al', 'F', 'F']);

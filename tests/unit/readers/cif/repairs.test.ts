@@ -30,7 +30,7 @@ describe('single items', () => {
     expect(readOne('P 21/c')).toEqual({ value: 'P 21/c', codes: ['cif-unquoted-words'] });
     expect(readOne('5.43(2) Å')).toEqual({
       value: '5.43(2)',
-      codes: ['cif-beyond-ascii', 'cif-stray-value'],
+      codes: ['cif-beyond-ascii', 'cif-words-after-number'],
     });
     expect(readOne("'P 21/c' c")).toEqual({ value: '«P 21/c»', codes: ['cif-stray-value'] });
   });
@@ -40,6 +40,12 @@ describe('single items', () => {
     expect(read).toEqual(block('x', { _a: '1' }, [loop(['_symop'], ['«x,y,z»'], ['«-x,-y,-z»'])]));
     expect(codes).toEqual(['cif-missing-loop']);
   });
+});
+
+it('reads a number and drops a unit or a parted uncertainty behind it', () => {
+  expect(readOne('8.012 (3)')).toEqual({ value: '8.012', codes: ['cif-words-after-number'] });
+  expect(readOne('293 K')).toEqual({ value: '293', codes: ['cif-words-after-number'] });
+  expect(readOne('293\nK')).toEqual({ value: '293', codes: ['cif-stray-value'] });
 });
 
 describe('loops', () => {
@@ -54,6 +60,26 @@ describe('loops', () => {
     ];
     expect(read.loops).toEqual([loop(['_label', '_x', '_y'], ...rows)]);
     expect(codes).toEqual(['cif-loop-row-broken']);
+  });
+
+  it.each([
+    ['A 0.25 (3) 1\nB 0.5 2\nC 0.75 (12) 3\n', '0.25(3)', '0.75(12)'],
+    ['A - 0.25 1\nB 0.5 2\nC 0.75 3\n', '-0.25', '0.75'],
+    ['A 0.25 (3) 1\nB 0.5 (3) 2\nC -0.75 (2) 3\nD 1 (1) 2', '0.25(3)', '-0.75(2)'],
+  ])('closes blanks inside the numbers of %j', (rows, start, end) => {
+    const { block: read, codes } = first(header + rows);
+    expect(read.loops[0]!.rows[0]).toEqual(['A', start, '1']);
+    expect(read.loops[0]!.rows[2]).toEqual(['C', end, '3']);
+    expect(codes).toEqual(['cif-split-number']);
+  });
+
+  it('leaves a number and a bracketed number apart where rows are whole', () => {
+    const { block: read, codes } = first(`${header}A 1 (2)\nB 3 (4)\n`);
+    expect(read.loops[0]!.rows).toEqual([
+      ['A', '1', '(2)'],
+      ['B', '3', '(4)'],
+    ]);
+    expect(codes).toEqual([]);
   });
 
   it('leaves out only the row that holds a stray word, and keeps rows on two lines', () => {
