@@ -1,6 +1,8 @@
-import type { RenderTheme } from '#src/render/create-renderer.ts';
-import { createCrystalRenderer, darkTheme, lightTheme } from '#src/render/create-renderer.ts';
-import type { CrystalRenderer } from '#src/render/create-renderer.ts';
+import { chooseRenderer } from '#src/render/choose-renderer.ts';
+import type { WebGLProbe } from '#src/render/probe-webgl.ts';
+import type { CrystalRenderer, DrawnBy } from '#src/render/renderer.ts';
+import { darkTheme, lightTheme } from '#src/render/theme.ts';
+import type { RenderTheme } from '#src/render/theme.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
 import type { Camera, Viewport } from '#src/scene/camera.ts';
 import { zoom } from '#src/scene/camera.ts';
@@ -37,10 +39,7 @@ const axesPx = 34;
 /** Rings drawn at most round the atoms of a hovered site. */
 const ringsShown = 400;
 
-/**
- * The drawn crystal: scene, camera and renderer of one canvas. Loaded only where WebGL2 is there, since it brings the
- * renderer with it.
- */
+/** The drawn crystal: scene, camera and renderer of one canvas. Loaded only where something can be drawn. */
 export class CrystalPicture {
   readonly #canvas: HTMLCanvasElement;
   readonly #events: PictureEvents;
@@ -54,13 +53,30 @@ export class CrystalPicture {
   #ringed: ReadonlySet<string> = new Set();
   #measuring: CanvasRenderingContext2D | null = null;
 
-  constructor(canvas: HTMLCanvasElement, surface: HTMLElement, events: PictureEvents) {
-    this.#canvas = canvas;
-    this.#events = events;
-    this.#renderer = createCrystalRenderer(canvas, {
+  /** With the renderer that suits the browser; rejects with a sentence where none does. */
+  static async create(
+    canvas: HTMLCanvasElement,
+    surface: HTMLElement,
+    probe: WebGLProbe,
+    events: PictureEvents,
+  ): Promise<CrystalPicture> {
+    const renderer = await chooseRenderer(canvas, probe, {
       onContextLost: () => events.lost(true),
       onContextRestored: () => events.lost(false),
+      onStandIn: () => events.moved(),
     });
+    return new CrystalPicture(canvas, surface, events, renderer);
+  }
+
+  private constructor(
+    canvas: HTMLCanvasElement,
+    surface: HTMLElement,
+    events: PictureEvents,
+    renderer: CrystalRenderer,
+  ) {
+    this.#canvas = canvas;
+    this.#events = events;
+    this.#renderer = renderer;
     this.#detach = attachControls(surface, {
       camera: () => this.#camera,
       viewport: () => this.#viewport,
@@ -70,6 +86,10 @@ export class CrystalPicture {
         events.pointed(point && (this.#renderer.pick(point.xPx, point.yPx)?.entry ?? null));
       },
     });
+  }
+
+  get drawnBy(): DrawnBy {
+    return this.#renderer.counters().drawnBy;
   }
 
   get scene(): Scene | null {

@@ -17,8 +17,8 @@ const keysInWords =
   'Arrow keys turn, with Shift they move. Plus and minus zoom, comma and full stop roll, a, b and c look along a cell axis, 0 shows all. The site table holds the same atoms as text.';
 
 /** All there is to say where nothing can be drawn. */
-const withoutWebGL =
-  'This browser offers no WebGL 2, usually because it finds no graphics chip, so the crystal is not drawn; the site table, the site card and all numbers work without it.';
+const nothingDraws =
+  'This browser offers neither WebGL 2 nor a canvas to paint on, so the crystal is not drawn; the site table, the site card and all numbers work without it.';
 
 /** The crystal on a canvas with what belongs to it: axes, labels, colour bar, caption, ways to turn it. */
 export class CrystalView extends StoreElement {
@@ -65,15 +65,15 @@ export class CrystalView extends StoreElement {
 
   protected override firstUpdated(): void {
     this.probe ??= probeWebGL();
-    if (this.probe.available) void this.#start();
+    if (draws(this.probe)) void this.#start(this.probe);
   }
 
   override render(): TemplateResult {
     const { probe, fault } = this;
     const name = this.store?.state.derived?.dossier?.name ?? '';
-    if (probe && !probe.available) {
+    if (probe && !draws(probe)) {
       return html`<h2>Crystal${name ? ` · ${name}` : ''}</h2>
-        <p class="none" role="note">${withoutWebGL}</p>`;
+        <p class="none" role="note">${nothingDraws}</p>`;
     }
     if (fault)
       return html`<h2>Crystal</h2>
@@ -100,10 +100,12 @@ export class CrystalView extends StoreElement {
             html`<span class="label" .style=${`left: ${leftPx}px; top: ${topPx}px`}>${text}</span>`,
         )}
         ${this.#pointedLine()}
-        ${this.isLost ? html`<p class="lost">The graphics chip took the picture away; it comes back by itself.</p>` : nothing}
+        ${this.isLost ? html`<p class="lost">The graphics chip took the picture away; until it comes back the CPU draws.</p>` : nothing}
       </div>
       ${colourBar(scene?.legend ?? null, scene?.scaleStatement ?? null)}
-      <p class="caption" id="caption">${scene?.caption ?? ''}</p>
+      <p class="caption" id="caption">
+        ${scene?.caption ?? ''}${scene ? html` <span class="soft">Drawn by ${this.#picture?.drawnBy}.</span>` : nothing}
+      </p>
       <p class="hidden-but-spoken" id="keys">${keysInWords}</p>
     `;
   }
@@ -121,18 +123,22 @@ export class CrystalView extends StoreElement {
     }
   }
 
-  async #start(): Promise<void> {
+  async #start(probe: WebGLProbe): Promise<void> {
     try {
       const { CrystalPicture: Picture } = await import('./crystal-picture.ts');
       const canvas = this.renderRoot.querySelector('canvas');
       const stage = this.renderRoot.querySelector<HTMLElement>('.stage');
       if (!canvas || !stage || !this.isConnected) return;
-      const picture = new Picture(canvas, stage, {
+      const picture = await Picture.create(canvas, stage, probe, {
         moved: () => this.requestUpdate(),
         clicked: (entry) => this.store?.select(entry?.kind === 'atom' ? selectionOf(entry) : null),
         pointed: (entry) => this.#point(entry),
         lost: (isLost) => (this.isLost = isLost),
       });
+      if (!this.isConnected) {
+        picture.dispose();
+        return;
+      }
       this.#picture = picture;
       picture.setTheme(this.theme);
       this.#resize = new ResizeObserver(() => picture.resize(stage.clientWidth, stage.clientHeight));
@@ -222,6 +228,10 @@ export class CrystalView extends StoreElement {
     this.isShowing = false;
     this.renderRoot.querySelector<HTMLElement>('.show button')?.focus();
   };
+}
+
+function draws(probe: WebGLProbe): boolean {
+  return probe.available || probe.canPaint;
 }
 
 function selectionOf({ siteIndex, atomId }: Extract<PickEntry, { kind: 'atom' }>): Selection {

@@ -14,6 +14,8 @@ import type { Scene } from '#src/scene/scene.ts';
 import { cylinderGeometry, lineGeometry, quadricGeometry, setQuadricStates } from './batch-geometry.ts';
 import { applyTheme, applyView, programMaterial, sharedUniforms } from './materials.ts';
 import { isSoftwareRenderer, rendererName } from './probe-webgl.ts';
+import type { CrystalRenderer, RenderCounters, RendererOptions } from './renderer.ts';
+import { restMs, ringStates } from './renderer.ts';
 import type { Supersampling } from './supersampling.ts';
 import { createSupersampling } from './supersampling.ts';
 import type { RenderTheme } from './theme.ts';
@@ -21,55 +23,7 @@ import { lightTheme } from './theme.ts';
 
 export { darkTheme, lightTheme } from './theme.ts';
 export type { RenderTheme } from './theme.ts';
-
-export interface RendererOptions {
-  readonly theme?: RenderTheme;
-  /**
-   * Samples across a pixel at rest, 1 to turn smoothing off; 1 is always used while the picture changes. Usual: 2 without a
-   * graphics chip or on dense screens, else 3.
-   */
-  readonly samplesAcross?: number;
-  /** Called when the context was lost, and when the picture is back. Nothing needs to be set again. */
-  readonly onContextLost?: () => void;
-  readonly onContextRestored?: () => void;
-}
-
-export interface RenderCounters {
-  /** Frames drawn so far, fast ones and smoothed ones. */
-  readonly frames: number;
-  readonly smoothFrames: number;
-  readonly quadrics: number;
-  readonly cylinders: number;
-  readonly lines: number;
-  readonly drawCalls: number;
-  /** How often the context was lost. */
-  readonly contextLosses: number;
-  /** What changed last, as a sentence. */
-  readonly lastReason: string;
-}
-
-/**
- * Draws a scene by WebGL2, on demand: each `set…` marks the picture as stale, the next animation frame draws it, and when
- * nothing has changed for a moment it is drawn once more with smoothed edges.
- */
-export interface CrystalRenderer {
-  setScene(scene: Scene): void;
-  setCamera(camera: Camera): void;
-  setTheme(theme: RenderTheme): void;
-  /** Atom ids (EquivalentAtom.id); every drawn copy gets its ring. */
-  setSelection(atomIds: readonly string[]): void;
-  setHover(atomId: string | null): void;
-  /** CSS pixels, and device pixels for one of them. The canvas' own style is left alone. */
-  resize(widthPx: number, heightPx: number, devicePixelRatio?: number): void;
-  /** Draws now, smoothed, so that the canvas can be read in the same task. */
-  render(): void;
-  pick(xPx: number, yPx: number): PickHit | null;
-  counters(): RenderCounters;
-  dispose(): void;
-}
-
-/** ms without a change before the picture is smoothed. */
-const restMs = 140;
+export type { CrystalRenderer, RenderCounters, RendererOptions } from './renderer.ts';
 
 /** Throws with a plain sentence where the canvas gives no WebGL2 context: ask `probeWebGL` first. */
 export function createCrystalRenderer(
@@ -196,6 +150,7 @@ class Renderer implements CrystalRenderer {
       drawCalls: [this.#quadrics, this.#cylinders, this.#lines].filter((mesh) => mesh.visible).length,
       contextLosses: this.#losses,
       lastReason: this.#lastReason,
+      drawnBy: 'WebGL 2',
     };
   }
 
@@ -231,13 +186,7 @@ class Renderer implements CrystalRenderer {
   #markStates(): void {
     const scene = this.#scene;
     if (!scene) return;
-    const states = new Uint8Array(scene.quadrics.count);
-    for (let i = 0; i < states.length; i++) {
-      const entry = scene.picks[scene.quadrics.pickIds[i]! - 1];
-      if (entry?.kind !== 'atom' || entry.context) continue;
-      states[i] = (entry.atomId === this.#hovered ? 1 : 0) + (this.#selected.has(entry.atomId) ? 2 : 0);
-    }
-    setQuadricStates(this.#quadrics.geometry, states);
+    setQuadricStates(this.#quadrics.geometry, ringStates(scene, this.#selected, this.#hovered));
   }
 
   #deviceSize(): { width: number; height: number } {

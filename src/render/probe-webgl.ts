@@ -6,6 +6,8 @@ export interface WebGLProbe {
   readonly software: boolean;
   /** Unmasked renderer string; null where the browser hides it. */
   readonly renderer: string | null;
+  /** A canvas can be painted on by the CPU renderer. */
+  readonly canPaint: boolean;
   /** For people. */
   readonly sentence: string;
 }
@@ -23,16 +25,24 @@ export function rendererName(gl: WebGL2RenderingContext): string | null {
   return info ? String(gl.getParameter(info.UNMASKED_RENDERER_WEBGL)) : null;
 }
 
+/** WebGL2 that runs on a graphics chip: the way to draw where it is there. */
+export function hasHardware(probe: WebGLProbe): boolean {
+  return probe.available && !probe.software;
+}
+
 /** Makes a WebGL2 context for a moment, asks what drives it, and lets it go. */
 export function probeWebGL(makeCanvas: () => HTMLCanvasElement = newCanvas): WebGLProbe {
+  const canPaint = paints(makeCanvas());
   const gl = contextOf(makeCanvas());
   if (!gl) {
     return {
       available: false,
       software: false,
       renderer: null,
-      sentence:
-        'This browser offers no WebGL 2, usually because it finds no graphics chip, so the crystal is not drawn; everything else works.',
+      canPaint,
+      sentence: canPaint
+        ? 'This browser offers no WebGL 2, usually because it finds no graphics chip, so the crystal is drawn by the CPU.'
+        : 'This browser offers neither WebGL 2 nor a canvas to paint on, so the crystal is not drawn; everything else works.',
     };
   }
   const renderer = rendererName(gl);
@@ -43,8 +53,9 @@ export function probeWebGL(makeCanvas: () => HTMLCanvasElement = newCanvas): Web
     available: true,
     software,
     renderer,
+    canPaint,
     sentence: software
-      ? `The crystal is drawn by WebGL 2 on the processor, without a graphics chip${by}: turning large cells may be slow.`
+      ? `WebGL 2 runs on the processor here, without a graphics chip${by}, so the crystal is drawn by the CPU without it.`
       : `The crystal is drawn by WebGL 2${by}.`,
   };
 }
@@ -58,5 +69,13 @@ function contextOf(canvas: HTMLCanvasElement): WebGL2RenderingContext | null {
     return canvas.getContext('webgl2');
   } catch {
     return null;
+  }
+}
+
+function paints(canvas: HTMLCanvasElement): boolean {
+  try {
+    return canvas.getContext('2d') !== null;
+  } catch {
+    return false;
   }
 }

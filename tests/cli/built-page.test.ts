@@ -211,8 +211,20 @@ describe('the built page in a browser with WebGL', () => {
   });
 });
 
+/** Shares of the canvas: pixels that are not paper, and different colours in a thousand of them. */
+async function looksOf(page: Page): Promise<{ drawn: number; colours: number; picture: string }> {
+  return page.locator('canvas').evaluate((canvas: HTMLCanvasElement) => {
+    const { data } = canvas.getContext('2d')!.getImageData(0, 0, canvas.width, canvas.height);
+    const words = new Uint32Array(data.buffer);
+    const paper = words[0];
+    const colours = new Set(words);
+    const drawn = words.reduce((sum, word) => sum + (word === paper ? 0 : 1), 0);
+    return { drawn: drawn / words.length, colours: colours.size, picture: canvas.toDataURL() };
+  });
+}
+
 describe('the built page in a browser without WebGL', () => {
-  it('says so in a sentence; table and card work, and three.js is not loaded', async () => {
+  it('draws the crystal by the CPU, turned by keyboard; three.js is not loaded', async () => {
     const args = [
       ...chromiumArguments.filter((argument) => !argument.includes('swiftshader')),
       '--disable-software-rasterizer',
@@ -220,7 +232,14 @@ describe('the built page in a browser without WebGL', () => {
     const browser = await chromium.launch({ executablePath: findBrowser() ?? '', args });
     try {
       const { page, complaints, requested } = await openPage(browser);
-      await page.getByText(/no WebGL 2.*numbers work without it\./).waitFor();
+      await page.locator('#caption', { hasText: 'Drawn by the CPU.' }).waitFor();
+      await expect.poll(async () => (await looksOf(page)).drawn).toBeGreaterThan(0.02);
+      const first = await looksOf(page);
+      expect(first.drawn).toBeLessThan(0.9);
+      expect(first.colours).toBeGreaterThan(100);
+      await page.getByRole('application', { name: 'Picture of the crystal' }).focus();
+      await page.keyboard.press('ArrowRight');
+      await expect.poll(async () => (await looksOf(page)).picture).not.toBe(first.picture);
       await page.getByRole('row', { name: /O1/ }).click();
       expect(await page.getByRole('article', { name: 'Site O1' }).isVisible()).toBe(true);
       const scripts = requested.filter((url) => url.endsWith('.js'));

@@ -12,11 +12,12 @@ export interface Mounted {
   readonly part: (tag: string) => Element & { readonly shadowRoot: ShadowRoot };
 }
 
-export const noWebGL: WebGLProbe = {
+export const nothingDraws: WebGLProbe = {
   available: false,
   software: false,
   renderer: null,
-  sentence: 'This browser offers no WebGL 2.',
+  canPaint: false,
+  sentence: 'This browser draws nothing.',
 };
 
 /** Lets elements draw what they were told: two frames are enough for an element inside an element. */
@@ -34,7 +35,7 @@ export async function mountWorkbench(
   await store.open([{ name: 'invented.xyz', blob: new Blob(['x']) }]);
   const workbench = new Workbench();
   workbench.store = store;
-  if (!withPicture) workbench.probe = noWebGL;
+  if (!withPicture) workbench.probe = nothingDraws;
   document.body.append(workbench);
   await settle();
   const part = (tag: string): Element & { readonly shadowRoot: ShadowRoot } => {

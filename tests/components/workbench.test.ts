@@ -186,9 +186,9 @@ describe('the page', () => {
     expect(header.activeElement).toBe(button);
   });
 
-  it('says in a sentence that the crystal cannot be drawn without WebGL, and what works', () => {
+  it('says in a sentence where the crystal cannot be drawn at all, and what works', () => {
     const view = textOf(page.part('ellipsite-crystal-view').shadowRoot);
-    expect(view).toContain('no WebGL 2');
+    expect(view).toContain('neither WebGL 2 nor a canvas');
     expect(view).toContain('the site table, the site card and all numbers work without it.');
     expect(page.part('ellipsite-crystal-view').shadowRoot.querySelector('canvas')).toBeNull();
   });

@@ -232,8 +232,14 @@ describe('probe', () => {
       canvas.getContext('2d');
       return canvas;
     });
-    expect(without).toMatchObject({ available: false, software: false, renderer: null });
-    expect(without.sentence).toMatch(/no WebGL 2.*everything else works\.$/);
+    expect(without).toMatchObject({ available: false, software: false, renderer: null, canPaint: true });
+    expect(without.sentence).toMatch(/no WebGL 2.*drawn by the CPU\.$/);
+  });
+
+  it('says in one sentence that nothing can be drawn', () => {
+    const nothing = probeWebGL(() => ({ getContext: () => null }) as unknown as HTMLCanvasElement);
+    expect(nothing).toMatchObject({ available: false, canPaint: false });
+    expect(nothing.sentence).toMatch(/neither.*everything else works\.$/);
   });
 
   it.each([
