@@ -137,7 +137,7 @@ class RasterRenderer implements CrystalRenderer {
   }
 
   #samples(): number {
-    return Math.max(1, Math.floor(this.#options.samplesAcross ?? 2));
+    return Math.max(1, Math.floor(this.#options.samplesAcross ?? (this.#deviceRatio > 1.5 ? 2 : 3)));
   }
 
   #view(isSmooth: boolean): RasterView | null {

@@ -10,7 +10,7 @@ export const cubeEdge = 20;
 /** Invented: n ellipsoids of random shape, place and colour in a cube, each tenth bonded to the next, edges of the cube. */
 export function randomScene(count: number, seed = 1, bonds = Math.floor(count / 10)): Scene {
   const random = seededRandom(seed);
-  const size = 0.42 * cubeEdge * count ** (-1 / 3);
+  const size = 0.42 * cubeEdge * Math.max(1, count) ** (-1 / 3);
   const centres = Float32Array.from({ length: 3 * count }, () => (random() - 0.5) * cubeEdge);
   const shapes = new Float32Array(9 * count);
   for (let k = 0; k < count; k++) {

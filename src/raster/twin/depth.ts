@@ -171,16 +171,16 @@ function cylinderRow(
   }
 }
 
-/** As `cylinderSurface` of src/scene/pick.ts; `nothingDepth` where the line of sight misses. */
+/** As `cylinderSurface` of src/scene/pick.ts; −Infinity where the line of sight misses. */
 function cylinderDepth(f: Float32Array, r: number, along: number, across: number): number {
   const radius = f[r + S.cRadius]!;
   const bulge = radius * radius - across * across;
-  if (bulge < 0) return S.nothingDepth;
+  if (bulge < 0) return -Infinity;
   const height = Math.sqrt(bulge);
   const rise = f[r + S.cRise]!;
   const lie = f[r + S.cLie]!;
   const t = (along + height * rise) * f[r + S.cPerLie]! + f[r + S.cBias]!;
   if (t >= 0 && t <= f[r + S.cSize]!) return f[r + S.cDepth]! + t * rise + height * lie;
   const k = f[r + S.cCapBias]! - along * f[r + S.cPerRise]!;
-  return k * k <= bulge ? f[r + S.cDepth]! + f[r + S.cCapAt]! + k * lie : S.nothingDepth;
+  return k * k <= bulge ? f[r + S.cDepth]! + f[r + S.cCapAt]! + k * lie : -Infinity;
 }
