@@ -119,16 +119,18 @@ function describeCell({ cell }: Lattice): string {
 
 /**
  * Binds a tensor set to the atoms of a crystal and turns its tensors into the crystal's frame.
- * Raises `attach-other-cell`, `attach-no-evidence`, `attach-by-label`, `attach-unmatched`, `attach-twice`, `attach-moved`.
+ * Raises `attach-other-cell`, `attach-no-evidence`, `attach-refused`, `attach-by-label`, `attach-unmatched`, `attach-twice`, `attach-moved`.
  */
 export function attachTensors(set: TensorSet, target: AttachTarget, log: ProblemLog): Attachment | null {
   const binding = chooseBinding(set, target, log);
   if (!binding) return null;
   const own: SiteTensor[][] = Array.from({ length: target.siteCount }, () => []);
   const others: SiteTensor[][] = Array.from({ length: target.siteCount }, () => []);
+  const indices = set.entries.map(binding.imageOf);
+  if (refused(set, binding.method, indices, log)) return null;
   const taken = new Set<number>();
-  for (const entry of set.entries) {
-    const index = binding.imageOf(entry);
+  for (const [row, entry] of set.entries.entries()) {
+    const index = indices[row] ?? null;
     const image = index === null ? undefined : target.images[index];
     if (index === null || !image) {
       reportUnmatched(entry, binding.method, log);
@@ -162,6 +164,31 @@ export function attachTensors(set: TensorSet, target: AttachTarget, log: Problem
     bySite: own.map((list, site) => [...list, ...(others[site] ?? [])]),
     rmsDisplacementAngstrom,
   };
+}
+
+/** Share of a set's atoms that must be found in the crystal; below it the agreement of the others is chance. */
+const leastMatchedShare = 0.5;
+
+/** True, with one problem, where too few atoms of another file's set lie on atoms of the crystal. */
+function refused(
+  set: TensorSet,
+  method: AttachMethod,
+  indices: readonly (number | null)[],
+  log: ProblemLog,
+): boolean {
+  const found = indices.filter((index) => index !== null).length;
+  if (method === 'same-file' || found >= leastMatchedShare * indices.length) return false;
+  log.add(
+    'error',
+    'attach-refused',
+    `Only ${found} of the ${indices.length} atoms of ${set.name} are found in the crystal: its tensors were left out.`,
+    {
+      place: { file: set.file, line: set.entries[0]?.place.line ?? 1 },
+      allowed: `at least ${leastMatchedShare * 100} % of them within ${matchDistanceAngstrom} Å of an atom of the same element`,
+      hint: 'Another compound, another origin or setting, or the other hand: open the file alone to see it.',
+    },
+  );
+  return true;
 }
 
 function reportUnmatched(entry: TensorEntry, method: AttachMethod, log: ProblemLog): void {

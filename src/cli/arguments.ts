@@ -78,13 +78,24 @@ function parseFrame(text: string | undefined): string | null {
   throw new UsageError(`--frame ${text}: allowed are ${names.join(', ')}.`);
 }
 
+/** What was wrong with the options, without the parser's own advice. */
+function plainSentence(error: unknown): string {
+  const message = error instanceof Error ? error.message : String(error);
+  const unknown = /Unknown option '([^']+)'/.exec(message);
+  if (unknown) return `No option is called ${unknown[1]}; ellipsite --help lists them.`;
+  const missing =
+    /Option '([^' ]+)[^']*'[^.]*argument missing|Option '([^' ]+)[^']*' argument is ambiguous/.exec(message);
+  if (missing) return `${missing[1] ?? missing[2]} needs a value; ellipsite --help says which.`;
+  return message.split(/\.\s|\n/)[0] ?? message;
+}
+
 /** Reads the common options. Raises `UsageError` with a sentence for the user. */
 export function parseCommonArguments(argv: readonly string[]): CommonArguments {
   let parsed;
   try {
     parsed = parseArgs({ args: [...argv], options: commonOptions, allowPositionals: true });
   } catch (error) {
-    throw new UsageError(error instanceof Error ? error.message : String(error));
+    throw new UsageError(plainSentence(error));
   }
   const { values, positionals } = parsed;
   if (positionals.length === 0) throw new UsageError('Name at least one FILE, or - for standard input.');

@@ -56,6 +56,22 @@ function chooseStructure(
       `--block ${block}: allowed are ${all.map(({ crystal }) => crystal.name).join(', ')}.`,
     );
   }
+  const others = readings.filter(
+    (reading) => named && reading !== named.reading && reading.structures.length > 0,
+  );
+  for (const { file, structures } of others) {
+    const withTensors = readings.some((reading) => reading.file === file && reading.tensorSets.length > 0);
+    if (withTensors) continue;
+    log.add(
+      'warning',
+      'second-structure-left-out',
+      `${file} holds another structure, ${structures[0]!.name}; the first file's is the crystal.`,
+      {
+        place: structures[0]!.place,
+        hint: 'Open one crystal at a time; further files may bring its tensors.',
+      },
+    );
+  }
   if (named && block === null && named.reading.structures.length > 1) {
     const names = named.reading.structures.map(({ name }) => name);
     log.add('note', 'first-structure-taken', `${names.length} structures: ${named.crystal.name} was taken.`, {

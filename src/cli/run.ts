@@ -1,3 +1,4 @@
+import { latticeSettings } from '#src/crystal/settings.ts';
 import { sitesCommand } from './commands/sites.ts';
 import type { CommandIo } from './io.ts';
 import { exitStatus, UsageError } from './io.ts';
@@ -15,6 +16,13 @@ const commands: Readonly<Record<string, Command>> = {
   },
 };
 
+/** Names of the Cartesian settings with their sentences, one a line. */
+function frames(): string {
+  return latticeSettings
+    .map(({ name, sentence }) => `${' '.repeat(29)}${name.padEnd(10)} ${sentence}`)
+    .join('\n');
+}
+
 const options = `Options of every command
   --json                     one JSON document on standard output
   --block NAME               which of several structures
@@ -24,7 +32,8 @@ const options = `Options of every command
   --moment 27Al=0.1466       your own quadrupole moment, barn (repeatable)
   --symmetry file|find|none  whose operations: the file's, those found from the atoms, none
   --tolerance Å              of the symmetry search (default 0.01)
-  --frame NAME               named Cartesian setting of the tensors, instead of the one found
+  --frame NAME               Cartesian setting of the tensors, instead of the one found:
+${frames()}
 A FILE is recognised by content: CIF, XYZ or extended XYZ; - reads standard input.
 Exit status: 0 clean, 1 the content has errors, 2 wrong usage, 3 our fault.`;
 

@@ -117,12 +117,17 @@ function crystalJson(dossier: CrystalDossier) {
   };
 }
 
-/** The document of `ellipsite sites --json`, schema `ellipsite/sites/1`; `crystal` is null where no structure was read. */
-export function sitesJson(dossier: CrystalDossier | null, problems: readonly Problem[]) {
-  return {
-    schema: 'ellipsite/sites/1',
-    crystal: dossier ? crystalJson(dossier) : null,
-    sites: dossier ? dossier.sites.map(siteJson) : [],
-    problems,
-  };
+/**
+ * The document of `ellipsite sites --json`, schema `ellipsite/sites/1`, in pieces of one site each, so that a crystal of
+ * any size can be written. `crystal` is null where no structure was read.
+ */
+export function* sitesJson(dossier: CrystalDossier | null, problems: readonly Problem[]): Generator<string> {
+  const crystal = dossier ? crystalJson(dossier) : null;
+  yield `{\n "schema": "ellipsite/sites/1",\n "crystal": ${JSON.stringify(crystal, null, 1)},\n "sites": [`;
+  let separator = '\n';
+  for (const site of dossier?.sites ?? []) {
+    yield separator + JSON.stringify(siteJson(site), null, 1);
+    separator = ',\n';
+  }
+  yield `],\n "problems": ${JSON.stringify(problems, null, 1)}\n}\n`;
 }

@@ -10,6 +10,7 @@ import type { Crystal } from '#src/crystal/crystal.ts';
 import { latticeFromCell } from '#src/crystal/lattice.ts';
 import type { LatticeSettingName } from '#src/crystal/settings.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
+import { nuclide } from '#src/data/nuclides.ts';
 import { forcedBySiteSymmetry } from '#src/tensor/forced.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
 import { bondsOf } from './bonds-of-cell.ts';
@@ -86,9 +87,53 @@ function attachAll(
       rows: sameFile ? chosen.rowAtoms : null,
     };
     const attachment = attachTensors(set, target, log);
-    if (attachment) attachments.push(attachment);
+    if (attachment) {
+      attachments.push(attachment);
+      reportBareSites(attachment, chosen.sites, log);
+    }
   }
   return attachments;
+}
+
+/** One note naming the sites of the set's elements that have no tensor of it. */
+function reportBareSites(attachment: Attachment, sites: readonly SiteAtoms[], log: ProblemLog): void {
+  const filled = sites.filter(({ site }) => (attachment.bySite[site.index]?.length ?? 0) > 0);
+  const elements = new Set(filled.map(({ site }) => site.element));
+  const bare = sites.filter(
+    ({ site }) => elements.has(site.element) && (attachment.bySite[site.index]?.length ?? 0) === 0,
+  );
+  if (bare.length === 0) return;
+  const names = bare.slice(0, 10).map(({ site }) => site.label);
+  const more = bare.length > names.length ? `, … (${bare.length} in all)` : '';
+  log.add(
+    'note',
+    'sites-without-tensor',
+    `${attachment.name} holds no ${attachment.quantity} tensor for ${names.join(', ')}${more}.`,
+    { place: { file: attachment.file, line: attachment.bySite.flat()[0]?.entry.place.line ?? 1 } },
+  );
+}
+
+/** Isotopes, references and moments that name no element of the crystal are wishes without effect: each is said once. */
+function reportUnusedWishes(crystal: Crystal, settings: DossierSettings, log: ProblemLog): void {
+  const present = new Set(crystal.sites.flatMap(({ species }) => species.map(({ element }) => element)));
+  const wished = [
+    ...Object.values(settings.isotopes),
+    ...Object.keys(settings.references),
+    ...Object.keys(settings.quadrupoleMomentsBarn),
+  ];
+  for (const isotope of new Set(wished)) {
+    const element = nuclide(isotope)?.element;
+    const names = element === 'H' ? ['H', 'D', 'T'] : [element ?? ''];
+    if (names.some((name) => present.has(name))) continue;
+    log.add(
+      'note',
+      'isotope-absent',
+      `The crystal holds no ${element ?? isotope}: what was set for ${isotope} has no effect.`,
+      {
+        place: crystal.place,
+      },
+    );
+  }
 }
 
 function fractionalStabiliser({ stabiliser }: SiteAtoms, { crystal }: ChosenCrystal): Mat3[] {
@@ -104,6 +149,7 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
   const log = new ProblemLog();
   input.problems.forEach((found) => log.push(found));
   const { crystal, sets } = inNamedFrame(input.crystal, input.tensorSets, settings.frame);
+  reportUnusedWishes(crystal, settings, log);
   progress(0, 'symmetry');
   const chosen = chooseSymmetry(crystal, settings, tables, log);
   const symmetry = describeSymmetry(chosen, tables, settings, log);

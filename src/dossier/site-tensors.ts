@@ -91,7 +91,46 @@ function efgDossier(evidence: Evidence, isotope: string | null, settings: Dossie
   const { projected, symmetryResidual, source, noise } = evidence;
   const own = isotope === null ? null : (settings.quadrupoleMomentsBarn[isotope] ?? null);
   const described = describeEfg(evidence.tensor, isotope === null ? null : nuclide(isotope), own, noise);
-  return { ...described, projected, symmetryResidual, equivalentSpread: evidence.equivalentSpread, source };
+  const undefinedBecause =
+    described.signDetermined || described.components[2] === 0
+      ? described.undefinedBecause
+      : { ...described.undefinedBecause, sign: signReason };
+  return {
+    ...described,
+    undefinedBecause,
+    projected,
+    symmetryResidual,
+    equivalentSpread: evidence.equivalentSpread,
+    source,
+  };
+}
+
+const signReason =
+  'Vyy and Vzz tie in size within the noise (η ≈ 1), so the sign of Vzz and of C_Q is an accident';
+
+/** A trace above this share of the largest component is no rounding: the tensor may be something else. */
+const largestTraceShare = 0.1;
+
+function reportTrace(site: Site, efg: EfgDossier, log: ProblemLog): void {
+  const largest = Math.max(Math.abs(efg.components[2]), leastScale.efg);
+  if (Math.abs(efg.trace) <= largestTraceShare * largest) return;
+  log.add(
+    'warning',
+    'efg-trace',
+    `The EFG of ${site.label} has a trace, which no field gradient has; it was taken off.`,
+    {
+      place: efg.source,
+      got: `tr V = ${Number(efg.trace.toPrecision(4))} a.u. beside Vzz = ${Number(efg.components[2].toPrecision(4))} a.u.`,
+      allowed: 'tr V = 0',
+      hint: 'The column may hold a shielding or stand in another unit.',
+    },
+  );
+}
+
+/** `couplingMHz` → `coupling`, `reducedAnisotropy` → `reduced anisotropy`: field names as words, without their unit. */
+function inWords(field: string): string {
+  const bare = field.replace(/(MHz|Barn)$/, '');
+  return bare.replaceAll(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`);
 }
 
 /** One note a reason, naming every field it holds for. */
@@ -109,7 +148,7 @@ function reportUndefined(
     log.add(
       'note',
       'undefined-value',
-      `${site.label} ${name}, ${fields.join(', ')}: undefined, for ${reason}.`,
+      `${site.label} ${name}, ${fields.map(inWords).join(', ')}: undefined, for ${reason}.`,
       {
         place: site.place,
       },
@@ -141,7 +180,7 @@ function reportResidual(site: Site, quantity: Quantity, evidence: Evidence, log:
 /**
  * Shielding, shift and EFG of one site from all its tensors: the site's own (or the first copy turned back), its
  * projection, the spread among the equivalents, every convention. A shift tensor of the file goes before one made from the
- * shielding by the reference of the isotope. Raises `undefined-value` for every null and `symmetry-broken`.
+ * shielding by the reference of the isotope. Raises `undefined-value` for every null, `symmetry-broken`, `efg-trace`.
  */
 export function siteTensors(input: SiteTensorInput, log: ProblemLog): SiteTensorDossiers {
   const { site, stabiliser, attachments, settings } = input;
@@ -167,6 +206,9 @@ export function siteTensors(input: SiteTensorInput, log: ProblemLog): SiteTensor
   const efg = ofEfg && efgDossier(ofEfg, isotopeOf(site.element, settings, 'efg'), settings);
   if (shielding) reportUndefined(site, 'shielding', shielding.undefinedBecause, log);
   if (shift) reportUndefined(site, 'shift', shift.undefinedBecause, log);
-  if (efg) reportUndefined(site, 'EFG', efg.undefinedBecause, log);
+  if (efg) {
+    reportUndefined(site, 'EFG', efg.undefinedBecause, log);
+    reportTrace(site, efg, log);
+  }
   return { isotope, shielding, shift, efg };
 }

@@ -29,7 +29,10 @@ export function isotropicValue(tensor: Mat3): number {
 export function withoutIsotropic(tensor: Mat3): Mat3 {
   const isotropic = isotropicValue(tensor);
   const [xx, xy, xz, yx, yy, yz, zx, zy, zz] = tensor;
-  return [xx - isotropic, xy, xz, yx, yy - isotropic, yz, zx, zy, zz - isotropic];
+  // What rounding of the mean leaves of an isotropic tensor is zero.
+  const dust = 2 * Number.EPSILON * Math.max(Math.abs(xx), Math.abs(yy), Math.abs(zz));
+  const rest = (element: number) => (Math.abs(element - isotropic) <= dust ? 0 : element - isotropic);
+  return [rest(xx), xy, xz, yx, rest(yy), yz, zx, zy, rest(zz)];
 }
 
 /** Frobenius norm of the traceless part of T, antisymmetric part included; the scale relative residuals refer to. */

@@ -51,11 +51,18 @@ function shiftColumns(): Column[] {
   ];
 }
 
+/** C_Q with its nuclide where that is not the row's, and without a sign where the sign is noise. */
+function coupling({ efg, isotope }: SiteDossier): string {
+  if (!efg || efg.couplingMHz === null) return fixed(null, 3);
+  const size = efg.signDetermined ? fixed(efg.couplingMHz, 3) : `±${fixed(Math.abs(efg.couplingMHz), 3)}`;
+  return efg.isotope === isotope ? size : `${size} (${efg.isotope ?? ''})`;
+}
+
 function efgColumns(): Column[] {
   const present = (site: SiteDossier) => site.efg !== null;
   return [
     { header: 'Vzz/a.u.', cell: (site) => fixed(site.efg?.components[2] ?? null, 4), present },
-    { header: 'CQ/MHz', cell: (site) => fixed(site.efg?.couplingMHz ?? null, 3), present },
+    { header: 'CQ/MHz', cell: (site) => coupling(site), present },
     { header: 'η', cell: (site) => fixed(site.efg?.asymmetry ?? null, 2), present },
   ];
 }
@@ -96,7 +103,7 @@ export async function sitesCommand(argv: readonly string[], io: CommandIo): Prom
   const common = parseCommonArguments(argv);
   const { dossier, problems } = await loadCase(common, io);
   if (common.json) {
-    io.writeOut(`${JSON.stringify(sitesJson(dossier, problems), null, 1)}\n`);
+    for (const piece of sitesJson(dossier, problems)) io.writeOut(piece);
   } else {
     problems.forEach((found) => io.writeError(`${problemLine(found)}\n`));
     if (dossier) io.writeOut(readable(dossier));

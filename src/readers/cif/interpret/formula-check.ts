@@ -13,6 +13,8 @@ export interface StatedFormula {
   readonly item: KnownItem | null;
   readonly counts: ElementCounts | null;
   readonly units: number | null;
+  /** False where the file names no symmetry, so that atoms may be missing; true unless given. */
+  readonly symmetryStated?: boolean;
 }
 
 /** Reads `_chemical_formula_sum` and `_cell_formula_units_Z`; what cannot be read is reported and null. */
@@ -134,7 +136,7 @@ function noteAttached(view: BlockView, sites: readonly Site[], how: string, log:
 
 function report(
   view: BlockView,
-  { units, counts }: StatedFormula,
+  { units, counts, symmetryStated = true }: StatedFormula,
   item: KnownItem,
   content: ElementCounts,
   fit: FormulaFit,
@@ -168,6 +170,18 @@ function report(
       'cif-z-derived',
       `The file gives no number of formula units; the atoms of the cell make it ${shown}.`,
       { place },
+    );
+  } else if (!symmetryStated && fit.units < 0.98 * units) {
+    log.add(
+      'warning',
+      'cif-atoms-missing',
+      `The listed atoms make ${shown} formula units of ${item.text}, not Z = ${units}: without operations the others are missing.`,
+      {
+        place,
+        got: atoms,
+        allowed: formatFormula(scaled(counts!, units)),
+        hint: 'Add the operations or the space group to the file.',
+      },
     );
   } else if (Math.abs(fit.units - units) > 0.02 * units) {
     reportUnits(item, atoms, shown, units, place, log);

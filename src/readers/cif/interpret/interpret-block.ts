@@ -65,7 +65,8 @@ export function interpretBlock(
   const counts = countAllImages(sites, symmetry.operations, frame.lattice, progress);
   reportMultiplicities(rows, sites, counts, symmetry.operations.length, log);
   const multiplicities = counts.map(({ merged }) => merged);
-  const checked = settled(view, built, multiplicities, formula, log);
+  const stated = { ...formula, symmetryStated: symmetry.stated };
+  const checked = settled(view, built, multiplicities, stated, log);
   const crystal = crystalOf(view, frame, symmetry, checked.sites, { ...formula, units: checked.units });
   return withTensors(view, crystal, frame, structureIndex, log);
 }
