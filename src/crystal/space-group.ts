@@ -1,4 +1,6 @@
 import { operationSetKey, uniqueOperations } from './group.ts';
+import { isLeftHanded } from './handedness.ts';
+import type { Lattice } from './lattice.ts';
 import { operationsFromHall } from './hall-symbol.ts';
 import { operationSetFingerprint } from './set-fingerprint.ts';
 import type { SpaceGroupSetting } from './space-group-settings.ts';
@@ -21,6 +23,34 @@ export function identifySetting(operations: readonly SymmetryOperation[]): Space
   if (candidates.length === 0) return null;
   const key = operationSetKey(all);
   return candidates.find((setting) => operationSetKey(operationsOfSetting(setting)) === key) ?? null;
+}
+
+/** The eleven pairs of space groups that are each other's mirror images (International Tables A, 1.4). */
+const enantiomorphicPairs: readonly (readonly [number, number])[] = [
+  [76, 78],
+  [91, 95],
+  [92, 96],
+  [144, 145],
+  [151, 153],
+  [152, 154],
+  [169, 170],
+  [171, 172],
+  [178, 179],
+  [180, 181],
+  [212, 213],
+];
+
+/**
+ * As `identifySetting`, for operations on the axes of a lattice: null also where those are left-handed and the mirror
+ * image of the tabulated group is another one, so that the triplets of one group are the operations of the other.
+ */
+export function identifySettingIn(
+  operations: readonly SymmetryOperation[],
+  lattice: Lattice,
+): SpaceGroupSetting | null {
+  const setting = identifySetting(operations);
+  if (!setting || !isLeftHanded(lattice)) return setting;
+  return enantiomorphicPairs.some((pair) => pair.includes(setting.number)) ? null : setting;
 }
 
 function plainHall(symbol: string): string {

@@ -8,14 +8,15 @@ import {
   scaleMatrix,
   transpose,
 } from '#src/base/matrix3.ts';
-import { subtract } from '#src/base/vector3.ts';
+import { scale, subtract } from '#src/base/vector3.ts';
 import type { MoyoDataset } from '@spglib/moyo-wasm';
 import { analyze_cell } from '@spglib/moyo-wasm';
 import { changeBasis } from './basis-change.ts';
 import { distinctRotations, operationSetKey } from './group.ts';
+import { isLeftHanded, onInvertedAxes, operationsOnInvertedAxes } from './handedness.ts';
 import type { CellConstants, Lattice } from './lattice.ts';
 import { latticeFromCell } from './lattice.ts';
-import { identifySetting } from './space-group.ts';
+import { identifySettingIn } from './space-group.ts';
 import type { SpaceGroupSetting } from './space-group-settings.ts';
 import { operationsOfSetting, settingFromHallNumber } from './space-group-settings.ts';
 import type { SymmetryOperation } from './symmetry-operation.ts';
@@ -24,7 +25,7 @@ import { applyOperation } from './symmetry-operation.ts';
 /** How a cell with its operations relates to a tabulated setting: x(tabulated) = P⁻¹(x − p). */
 export interface StandardFrame {
   readonly setting: SpaceGroupSetting;
-  /** Tabulated axes as columns, in fractions of the cell's own. */
+  /** Tabulated axes as columns, in fractions of the cell's own; of negative determinant where those are left-handed. */
   readonly basis: Mat3;
   /** Tabulated origin in the cell's own fractional coordinates. */
   readonly origin: Vec3;
@@ -131,18 +132,29 @@ function frameFromSearch(
   return carried && operationSetKey(carried) === operationSetKey(tabulated) ? frame : null;
 }
 
+/** A frame found on −a, −b, −c, told in terms of a, b, c: x′ = P⁻¹(−x − p) = (−P)⁻¹(x + p). */
+function invertedFrame(frame: StandardFrame): StandardFrame {
+  const { setting, basis, origin } = frame;
+  return { setting, basis: scaleMatrix(-1, basis), origin: scale(-1, origin), tabulated: false };
+}
+
 /**
  * Finds the tabulated setting of a group of operations, for this group and never a higher one: by comparison with the
  * 530 settings, else by a search on an invented crystal that has exactly the group (the lattice made as symmetric as
  * the group asks, two general orbits of two kinds). The frame is checked by carrying the operations over. Pure
- * translations of an enlarged cell are allowed. Null where the operations are no space group.
+ * translations of an enlarged cell are allowed. On left-handed axes the group is judged on the right-handed −a, −b, −c.
+ * Null where the operations are no space group.
  */
 export function standardFrame(
   operations: readonly SymmetryOperation[],
   lattice: Lattice,
 ): StandardFrame | null {
-  const setting = identifySetting(operations);
+  const setting = identifySettingIn(operations, lattice);
   if (setting) return { setting, basis: identity3, origin: [0, 0, 0], tabulated: true };
+  if (isLeftHanded(lattice)) {
+    const inverted = standardFrame(operationsOnInvertedAxes(operations), onInvertedAxes(lattice));
+    return inverted && invertedFrame(inverted);
+  }
   for (const points of generalPoints) {
     const found = frameFromSearch(operations, symmetricCell(operations, lattice), points);
     if (found) return found;

@@ -4,6 +4,12 @@ import { scale } from '#src/base/vector3.ts';
 import { atomFinder } from './atom-finder.ts';
 import { changeBasisWhereFitting } from './basis-change.ts';
 import { closeGroup, uniqueOperations } from './group.ts';
+import {
+  isLeftHanded,
+  onInvertedAxes,
+  operationsOnInvertedAxes,
+  positionOnInvertedAxes,
+} from './handedness.ts';
 import type { Lattice } from './lattice.ts';
 import type { StandardFrame } from './standard-frame.ts';
 import { analyseAtoms, frameOfResult, matrixOfResult, standardFrame } from './standard-frame.ts';
@@ -101,7 +107,8 @@ function listedOperations(result: {
 /**
  * Searches the symmetry of atoms within a tolerance (Å). The operations are those of the tabulated group, carried into
  * the input cell, and every one is checked to take every atom onto one of its kind. A supercell whose shape breaks
- * rotations of its crystal has the group that the shape allows. Null where the search fails or a check does.
+ * rotations of its crystal has the group that the shape allows. Left-handed axes are searched on −a, −b, −c. Null where
+ * the search fails or a check does.
  */
 export function searchSymmetry(
   lattice: Lattice,
@@ -110,6 +117,21 @@ export function searchSymmetry(
   toleranceAngstrom: number,
 ): FoundSymmetry | null {
   if (positions.length === 0) return null;
+  if (!isLeftHanded(lattice)) return searchRightHanded(lattice, positions, species, toleranceAngstrom);
+  const inverted = positions.map(positionOnInvertedAxes);
+  const found = searchRightHanded(onInvertedAxes(lattice), inverted, species, toleranceAngstrom);
+  if (!found) return null;
+  const operations = operationsOnInvertedAxes(found.operations);
+  const frame = standardFrame(operations, lattice);
+  return frame && { ...found, operations, frame };
+}
+
+function searchRightHanded(
+  lattice: Lattice,
+  positions: readonly VecFrac[],
+  species: readonly number[],
+  toleranceAngstrom: number,
+): FoundSymmetry | null {
   const result = analyseAtoms({ cell: lattice.cell, positions, species }, toleranceAngstrom);
   const found = result && frameOfResult(result);
   if (!result || !found) return null;

@@ -1,6 +1,6 @@
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { CrystalSymmetry } from '#src/crystal/crystal.ts';
-import { identifySetting } from '#src/crystal/space-group.ts';
+import { identifySettingIn } from '#src/crystal/space-group.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import type { ChosenCrystal } from './choose-symmetry.ts';
 import type { DossierSettings } from './dossier.ts';
@@ -33,7 +33,7 @@ export function describeSymmetry(
   const { lattice, symmetry } = crystal;
   const unknown = { wyckoff: sites.map(() => null), siteSymmetry: sites.map(() => null) };
   if (!lattice) return { symmetry, spaceGroup: 'molecule without a cell', ...unknown };
-  const setting = identifySetting(symmetry.operations);
+  const setting = identifySettingIn(symmetry.operations, lattice);
   const positions = sites.map(({ site }) => site.fractional ?? ([0, 0, 0] as const));
   const told =
     tables?.describeSites(lattice, symmetry.operations, positions, settings.mergeDistanceAngstrom) ?? null;
