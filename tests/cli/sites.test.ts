@@ -154,6 +154,21 @@ describe('ellipsite sites', () => {
     expect(error).toMatch(/^ellipsite: \S/);
   });
 
+  it('warns where a file without symmetry holds fewer atoms than its formula and Z ask for', async () => {
+    const bare = quartzCif.replace("_space_group_name_H-M_alt 'P 32 2 1'\n", '');
+    const { error } = await runCommand(['sites', 'b.cif'], { 'b.cif': bare });
+    expect(error).toContain('warning cif-no-symmetry');
+    expect(error).toContain('cif-');
+    expect(error).not.toContain('whole cell');
+  });
+
+  it('prints the nuclide of a coupling that is not the row’s', async () => {
+    const text =
+      '1\nProperties=species:S:1:pos:R:3:shielding:R:9:efg:R:9\nN 0 0 0 1 0 0 0 2 0 0 0 6 -.1 0 0 0 -.2 0 0 0 .3\n';
+    const { out } = await runCommand(['sites', 'n.xyz'], { 'n.xyz': text });
+    expect(out).toMatch(/15N .* \(14N\)/);
+  });
+
   it('prints help and version with status 0', async () => {
     expect((await runCommand(['--help'])).out).toContain('--reference');
     expect(await runCommand(['--version'])).toEqual({ status: 0, out: '0.0.0-test\n', error: '' });

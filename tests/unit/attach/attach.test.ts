@@ -175,4 +175,14 @@ describe('attaching a set', () => {
     expect(attached.rmsDisplacementAngstrom).toBeCloseTo(0.3, 9);
     expect(log.list()[0]).toMatchObject({ code: 'attach-moved', severity: 'note' });
   });
+
+  it('refuses a set of which most atoms lie elsewhere, rather than keep chance matches', () => {
+    const log = new ProblemLog();
+    const at = (fractional: Vec3) => apply(lattice.toCartesian, fractional);
+    const entries = [at([0.1, 0.2, 0.3]), at([0.6, 0.7, 0.8]), at([0.4, 0.9, 0.6])].map((p) =>
+      entry('Al', p, tensor),
+    );
+    expect(attachTensors(set(entries), target, log)).toBeNull();
+    expect(log.list()).toMatchObject([{ code: 'attach-refused', severity: 'error' }]);
+  });
 });

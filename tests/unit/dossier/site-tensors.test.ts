@@ -56,4 +56,41 @@ describe('tensors of a site', () => {
     expect(own.efg).toMatchObject({ isotope: '14N', quadrupoleMomentSource: 'entered by the user' });
     expect(own.efg!.couplingMHz).toBeCloseTo(234.9647785 * 0.02 * 0.5, 6);
   });
+
+  it('warns of an EFG with a trace: it may be another quantity', () => {
+    const head = '1\nProperties=species:S:1:pos:R:3:efg:R:9\n';
+    const traced = dossierOfText('tr.xyz', `${head}Al 0 0 0 430 0 0 0 431 0 0 0 440\n`);
+    expect(traced.problems.filter(({ code }) => code === 'efg-trace')).toMatchObject([
+      { severity: 'warning', line: 3 },
+    ]);
+    const clean = dossierOfText('tr.xyz', `${head}Al 0 0 0 -.1 0 0 0 -.2 0 0 0 .3001\n`);
+    expect(clean.problems.some(({ code }) => code === 'efg-trace')).toBe(false);
+  });
+
+  it('leaves no dust of an isotropic tensor', () => {
+    const head = '1\nProperties=species:S:1:pos:R:3:efg:R:9\n';
+    const { efg } = dossierOfText('iso.xyz', `${head}Al 0 0 0 0.1 0 0 0 0.1 0 0 0 0.1\n`).sites[0]!;
+    expect(efg).toMatchObject({ components: [0, 0, 0], couplingMHz: 0 });
+  });
+
+  it('says that the sign of C_Q is an accident at η = 1', () => {
+    const head = '1\nProperties=species:S:1:pos:R:3:efg:R:9\n';
+    const dossier = dossierOfText('eta.xyz', `${head}O 0 0 0 0.2 0 0 0 -0.2 0 0 0 0\n`);
+    expect(dossier.sites[0]!.efg).toMatchObject({ signDetermined: false });
+    expect(dossier.sites[0]!.efg!.undefinedBecause.sign).toContain('η ≈ 1');
+    expect(dossier.problems.some(({ message }) => message.startsWith('O1 EFG, sign: undefined'))).toBe(true);
+  });
+
+  it('names the sites a set leaves bare, and settings without effect', () => {
+    const text =
+      'data_x\n_cell_length_a 5\n_cell_length_b 6\n_cell_length_c 7\n_cell_angle_alpha 90\n_cell_angle_beta 90\n' +
+      "_cell_angle_gamma 90\n_space_group_name_H-M_alt 'P -1'\nloop_\n_atom_site_label\n_atom_site_fract_x\n" +
+      '_atom_site_fract_y\n_atom_site_fract_z\nO1 .1 .2 .3\nO2 .4 .3 .8\nloop_\n_ellipsite_tensor_site_label\n' +
+      '_ellipsite_tensor_quantity\n_ellipsite_tensor_unit\n' +
+      [11, 12, 13, 21, 22, 23, 31, 32, 33].map((ij) => `_ellipsite_tensor_${ij}\n`).join('') +
+      'O1 shielding ppm 10 0 0 0 20 0 0 0 40\n';
+    const { problems } = dossierOfText('x.cif', text, { isotopes: { Al: '27Al' } });
+    expect(problems.find(({ code }) => code === 'sites-without-tensor')!.message).toContain('O2');
+    expect(problems.find(({ code }) => code === 'isotope-absent')!.message).toContain('27Al');
+  });
 });
