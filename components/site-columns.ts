@@ -15,6 +15,8 @@ export interface SiteColumn {
   readonly width: readonly [number, number];
   readonly numeric: boolean;
   readonly text: (site: SiteDossier) => string;
+  /** The quantity whose colour in the picture says this number. */
+  readonly coloured?: ConventionEntry['quantity'];
   /** Why the text is "undefined", where it is. */
   readonly because?: (site: SiteDossier) => string | undefined;
 }
@@ -71,13 +73,14 @@ function numberColumn(
     words: [entry.name, entry.unit && `in ${entry.unit}`].filter(Boolean).join(' '),
     width,
     numeric: true,
+    ...(key === 'isotropic' || key === 'couplingMHz' ? { coloured: quantity } : {}),
     text: (site) => siteNumber(site, entry),
     because: (site) => site[quantity]?.undefinedBecause[entry.field],
   };
 }
 
 const isotropic = (quantity: 'shielding' | 'shift'): SiteColumn =>
-  numberColumn(quantity, 'isotropic', [60, 0.8]);
+  numberColumn(quantity, 'isotropic', [74, 0.8]);
 
 /** Span and skew: of the shielding where there is one, else of the shift; both are defined alike on the two scales. */
 const spanAndSkew = (quantity: 'shielding' | 'shift'): SiteColumn[] => [
@@ -86,7 +89,7 @@ const spanAndSkew = (quantity: 'shielding' | 'shift'): SiteColumn[] => [
 ];
 
 const efg: readonly SiteColumn[] = [
-  numberColumn('efg', 'couplingMHz', [58, 0.8]),
+  numberColumn('efg', 'couplingMHz', [72, 0.8]),
   numberColumn('efg', 'asymmetry', [54, 0.7]),
 ];
 

@@ -1,12 +1,14 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
+import type { ChosenTensors } from '#src/scene/tensor-choice.ts';
+import { chooseTensors, ellipsoidColour } from '#src/scene/tensor-choice.ts';
 import { atomAxes } from '#src/store/axes.ts';
 import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/store/dossier-types.ts';
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { quantityToShow } from '#src/store/state.ts';
 import { axisNames } from './axis-names.ts';
 import { formatCount, formatOperation, formatTriple } from './number-format.ts';
-import { siteChip } from './site-chip.ts';
+import { siteChip, valueSwatch } from './site-chip.ts';
 import type { SiteColumn } from './site-columns.ts';
 import { columnsFor, gridOf } from './site-columns.ts';
 import type { RowList, SiteRow } from './site-rows.ts';
@@ -33,6 +35,8 @@ export class SiteTable extends StoreElement {
   #opened: ReadonlySet<number> = new Set();
   #list: RowList = empty;
   #active = 0;
+  /** What the picture colours, for the swatches. */
+  #coloured: ChosenTensors | null = null;
   #resize: ResizeObserver | null = null;
 
   override connectedCallback(): void {
@@ -55,6 +59,8 @@ export class SiteTable extends StoreElement {
       this.#opened = new Set();
       this.#relist();
     }
+    if (state.derived !== before?.derived || state.picture !== before?.picture)
+      this.#coloured = dossier && chooseTensors(dossier, state.picture);
     if (state.selection !== before?.selection) this.#follow(state.selection);
   }
 
@@ -152,12 +158,14 @@ export class SiteTable extends StoreElement {
           ${siteChip(site.index)}<span class="label" title=${text}>${text}</span>
         </div>`;
       }
+      const isColoured = column.coloured !== undefined && column.coloured === this.#coloured?.quantity;
+      const colour = isColoured ? ellipsoidColour(this.#coloured, site.index) : null;
       return html`<div
         role="gridcell"
         class="${column.numeric ? 'number' : 'text'} ${text === 'undefined' ? 'undefined' : ''}"
         title=${because ?? nothing}
       >
-        ${text}${because ? html`<span class="hidden-but-spoken">: ${because}</span>` : nothing}
+        ${colour ? valueSwatch(colour) : nothing}${text}${because ? html`<span class="hidden-but-spoken">: ${because}</span>` : nothing}
       </div>`;
     })}`;
   }

@@ -137,7 +137,16 @@ export const shared = css`
     display: inline-block;
     width: 10px;
     height: 10px;
-    border-radius: 3px;
+    border: 1.5px solid;
+    border-radius: 50%;
+    flex: none;
+  }
+  .swatch {
+    display: inline-block;
+    width: 9px;
+    height: 9px;
+    border-radius: 2px;
+    margin-right: 5px;
     flex: none;
   }
   .hidden-but-spoken {
@@ -149,7 +158,8 @@ export const shared = css`
     white-space: nowrap;
   }
   @media (forced-colors: active) {
-    .chip {
+    .chip,
+    .swatch {
       forced-color-adjust: none;
     }
   }

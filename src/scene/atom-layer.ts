@@ -35,7 +35,9 @@ export function atomQuadrics(
     quadrics.centres.set(drawn.position, 3 * i);
     quadrics.shapes.set(shape, 9 * i);
     quadrics.colours.set(
-      form && tensors ? legendColour(tensors.legend, form.colourValue) : sphereColour(drawn),
+      form && tensors
+        ? legendColour(tensors.legend, form.colourValue)
+        : sphereColour(drawn, tensors !== null),
       3 * i,
     );
     quadrics.circles[i] = circles;
@@ -49,8 +51,8 @@ export function atomQuadrics(
 /** Neighbours outside are this much smaller, so that they stand back. */
 const contextShare = 0.58;
 
-function sphereColour({ site, context }: DrawnAtom): readonly [number, number, number] {
-  return context ? bondColour(site.element) : atomColour(site.element);
+function sphereColour({ site, context }: DrawnAtom, neutral: boolean): readonly [number, number, number] {
+  return context ? bondColour(site.element, neutral) : atomColour(site.element);
 }
 
 function sphere({ site, context }: DrawnAtom): TensorShape {

@@ -24,11 +24,14 @@ export const dashAngstrom = 0.2;
 
 /** Warm grey that bonds are mixed with, so that they stand back behind the atoms. */
 const bondGrey: Rgb = [168, 161, 149];
+/** The same beside tensors: as grey as the paper is, since any hue would be read off the colour bar. */
+const neutralGrey: Rgb = [163, 160, 154];
 
-/** Colour of a half bond: the element's own colour, greyed. */
-export function bondColour(element: string): Rgb {
+/** Colour of a half bond: the element's own colour, greyed; `neutral`, where colour means a value, with a trace of it only. */
+export function bondColour(element: string, neutral = false): Rgb {
   const own = atomColour(element);
-  const mixed = (k: 0 | 1 | 2) => Math.round(0.45 * own[k] + 0.55 * bondGrey[k]);
+  const [share, grey] = neutral ? [0.06, neutralGrey] : [0.45, bondGrey];
+  const mixed = (k: 0 | 1 | 2) => Math.round(share * own[k] + (1 - share) * grey[k]);
   return [mixed(0), mixed(1), mixed(2)];
 }
 

@@ -25,13 +25,13 @@ interface Cylinder {
 }
 
 /**
- * Bonds between drawn atoms as cylinders, half in the colour of either end; hydrogen bonds as rows of thin dashes. Bonds
+ * Bonds between drawn atoms as cylinders, half in the colour of either end (`neutral`: grey); hydrogen bonds as rows of thin dashes. Bonds
  * between two atoms that only complete others' bonds are left out. Pick entries continue after `picksBefore`.
  */
 export function bondCylinders(
   dossier: CrystalDossier,
   drawn: readonly DrawnAtom[],
-  shown: { readonly bonds: boolean; readonly hydrogenBonds: boolean },
+  shown: { readonly bonds: boolean; readonly hydrogenBonds: boolean; readonly neutral: boolean },
   picksBefore: number,
 ): { readonly cylinders: CylinderBatch; readonly picks: readonly PickEntry[] } {
   const copies = copiesById(drawn);
@@ -44,7 +44,7 @@ export function bondCylinders(
     for (const from of copies.get(bond.from)?.values() ?? []) {
       const to = copies.get(bond.to)?.get(add(from.cellShift, bond.shift).join());
       if (to && !(from.context && to.context))
-        cylinders.push(...cylindersBetween(bond.kind, from, to, pickId));
+        cylinders.push(...cylindersBetween(bond.kind, from, to, pickId, shown.neutral));
     }
     if (cylinders.length === before) continue;
     picks.push({
@@ -63,11 +63,12 @@ function cylindersBetween(
   from: DrawnAtom,
   to: DrawnAtom,
   pickId: number,
+  neutral: boolean,
 ): Cylinder[] {
   const [start, end] = [from.position, to.position];
   if (kind === 'hydrogen') return dashes(start, end, pickId);
-  const startColour = bondColour(from.site.element);
-  const endColour = bondColour(to.site.element);
+  const startColour = bondColour(from.site.element, neutral);
+  const endColour = bondColour(to.site.element, neutral);
   return [{ start, end, radius: bondRadiusAngstrom, startColour, endColour, pickId }];
 }
 

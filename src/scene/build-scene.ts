@@ -5,17 +5,16 @@ import { atomColour, atomRadius } from './atom-style.ts';
 import { bondCylinders, nearPairs } from './bond-layer.ts';
 import { caption, scaleStatement } from './caption.ts';
 import { cellAxes, cellEdges } from './cell-layer.ts';
-import { legendFor } from './colour-scale.ts';
 import type { DrawnAtom } from './drawn-atoms.ts';
 import { bondedNeighbours, drawnAtoms } from './drawn-atoms.ts';
 import { enclosingSphere } from './framing.ts';
-import type { ElementKey, Scene, SceneQuantity } from './scene.ts';
+import type { ElementKey, Scene } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
 import { defaultSceneOptions } from './scene-options.ts';
+import type { ChosenTensors } from './tensor-choice.ts';
+import { chooseTensors } from './tensor-choice.ts';
 import type { ScaleChoice } from './tensor-scale.ts';
 import { chooseScale } from './tensor-scale.ts';
-import type { PrincipalForm } from './tensor-shape.ts';
-import { principalForm } from './tensor-shape.ts';
 
 /**
  * The plain description of one picture: everything a renderer needs, in Å, in the Cartesian frame of the crystal's
@@ -27,10 +26,10 @@ export function buildScene(dossier: CrystalDossier, options: Partial<SceneOption
   const own = drawnAtoms(dossier, extent);
   const completed = extent === 'cell' && chosen.bonds && chosen.bondedNeighbours;
   const atoms = completed ? [...own, ...bondedNeighbours(dossier, own)] : own;
-  const quantity = chooseQuantity(dossier, chosen);
-  const tensors = quantity ? drawTensors(dossier, atoms, quantity, chosen) : null;
+  const choice = chooseTensors(dossier, chosen);
+  const tensors = choice && drawTensors(dossier, atoms, choice, chosen);
   const { quadrics, picks } = atomQuadrics(atoms, tensors);
-  const bonds = bondCylinders(dossier, atoms, chosen, picks.length);
+  const bonds = bondCylinders(dossier, atoms, { ...chosen, neutral: tensors !== null }, picks.length);
   const lines = cellEdges(dossier, chosen.cellEdges);
   const scale = tensors?.scale ?? null;
   const legend = tensors?.legend ?? null;
@@ -43,14 +42,14 @@ export function buildScene(dossier: CrystalDossier, options: Partial<SceneOption
     bounds: enclosingSphere({ quadrics, lines }),
     picks: [...picks, ...bonds.picks],
     legend,
-    elements: elementKeys(atoms),
+    elements: elementKeys(atoms, tensors),
     scale,
     scaleStatement: scale && scaleStatement(scale),
     caption: caption({
       scale,
       legend,
       notes: tensors?.notes ?? [],
-      askedFor: chosen.quantity !== 'auto' && chosen.quantity !== quantity ? chosen.quantity : null,
+      askedFor: chosen.quantity !== 'auto' && chosen.quantity !== choice?.quantity ? chosen.quantity : null,
       extent,
       neighbours: atoms.length > own.length,
       hasCell: dossier.lattice !== null,
@@ -65,39 +64,22 @@ function chooseExtent(dossier: CrystalDossier, asked: SceneOptions['extent']): '
   return Object.keys(dossier.wholeMolecules).length > 0 ? 'molecules' : 'cell';
 }
 
-/** Shielding before shift before EFG, where nothing is asked for or what is asked for does not exist. */
-function chooseQuantity(dossier: CrystalDossier, options: SceneOptions): SceneQuantity | null {
-  if (!options.showTensors) return null;
-  const asked = options.quantity === 'auto' ? [] : [options.quantity];
-  const order: readonly SceneQuantity[] = [...asked, 'shielding', 'shift', 'efg'];
-  return order.find((quantity) => dossier.sites.some((site) => site[quantity] !== null)) ?? null;
-}
-
-interface ChosenTensors extends TensorDrawing {
-  readonly notes: ScaleChoice['notes'];
-}
-
+/** Forms, one scale and the colour bar of the tensors of the picture; null where none is drawn. */
 function drawTensors(
   dossier: CrystalDossier,
   atoms: readonly DrawnAtom[],
-  quantity: SceneQuantity,
+  { quantity, forms, legend }: ChosenTensors,
   options: SceneOptions,
-): ChosenTensors | null {
-  const forms = new Map<number, PrincipalForm>();
-  for (const site of dossier.sites) {
-    const form = principalForm(site, quantity);
-    const wanted = !options.tensorElements || options.tensorElements.includes(site.element);
-    if (form && wanted) forms.set(site.index, form);
-  }
-  if (forms.size === 0) return null;
+): TensorDrawing & Pick<ScaleChoice, 'notes'> {
   const { scale, notes } = chooseScale(forms, nearPairs(dossier, atoms), quantity, options, (site) =>
     atomRadius(site.element),
   );
-  const values = [...forms.values()].map((form) => form.colourValue);
-  return { forms, scale, legend: legendFor(quantity, values, options.colourLimits), notes };
+  return { forms, scale, legend, notes };
 }
 
-function elementKeys(atoms: readonly DrawnAtom[]): ElementKey[] {
-  const elements = [...new Set(atoms.map(({ site }) => site.element))];
+/** Elements of which some atom is drawn in its element's colour. */
+function elementKeys(atoms: readonly DrawnAtom[], tensors: TensorDrawing | null): ElementKey[] {
+  const plain = atoms.filter(({ site, context }) => !context && !tensors?.forms.has(site.index));
+  const elements = [...new Set(plain.map(({ site }) => site.element))];
   return elements.map((element) => ({ element, colour: atomColour(element) }));
 }

@@ -50,6 +50,17 @@ describe('the page', () => {
     ]);
   });
 
+  it('marks a site by a ring and its value by a swatch in the colour of the colour bar', () => {
+    const [first] = rows('.site');
+    expect(getComputedStyle(first!.querySelector('.chip')!).backgroundColor).toBe('rgba(0, 0, 0, 0)');
+    const swatched = [...grid().querySelectorAll('.swatch')].map((swatch) => textOf(swatch.parentElement));
+    expect(swatched).toEqual(['526.67', '200.00']);
+    const [one, other] = [...grid().querySelectorAll('.swatch')].map(
+      (swatch) => getComputedStyle(swatch).backgroundColor,
+    );
+    expect(one).not.toBe(other);
+  });
+
   it('says undefined with the reason instead of a number', () => {
     const skew = rows('.site')[1]!.querySelectorAll('[role=gridcell]')[7]!;
     expect(textOf(skew)).toBe('undefined: the tensor is isotropic: its span is zero');

@@ -2,6 +2,8 @@ import { describe, expect, it } from 'vitest';
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { asMat3, multiply, transpose } from '#src/base/matrix3.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
+import { defaultSceneOptions } from '#src/scene/scene-options.ts';
+import { chooseTensors, ellipsoidColour } from '#src/scene/tensor-choice.ts';
 import type { PickEntry, Scene } from '#src/scene/scene.ts';
 import { madeDossier } from '#tests/support/made-dossier.ts';
 import { madeQuartz } from '#tests/support/made-quartz.ts';
@@ -183,6 +185,52 @@ describe('tensor ellipsoids', () => {
         const sum = longest.get(`${bond.from}false`)! + longest.get(`${bond.to}false`)!;
         expect(sum).toBeLessThan(bond.lengthAngstrom);
       }
+    }
+  });
+});
+
+/** Largest difference of two channels: 0 for a pure grey. */
+const chroma = (colour: ArrayLike<number>): number => {
+  const [r, g, b] = [colour[0]!, colour[1]!, colour[2]!];
+  return Math.max(r, g, b) - Math.min(r, g, b);
+};
+
+describe('colours that are not values', () => {
+  it('are greys wherever tensors are coloured by value', () => {
+    const scene = buildScene(madeQuartz());
+    const { quadrics, cylinders, picks } = scene;
+    let contexts = 0;
+    for (let i = 0; i < quadrics.count; i++) {
+      const pick = picks[quadrics.pickIds[i]! - 1]!;
+      if (pick.kind !== 'atom' || !pick.context) continue;
+      contexts += 1;
+      expect(chroma(quadrics.colours.subarray(3 * i, 3 * i + 3))).toBeLessThan(20);
+    }
+    expect(contexts).toBeGreaterThan(0);
+    for (let i = 0; i < cylinders.count; i++) {
+      expect(chroma(cylinders.startColours.subarray(3 * i, 3 * i + 3))).toBeLessThan(20);
+    }
+    expect(scene.elements).toEqual([]);
+  });
+
+  it('have a key of just the elements that are drawn in their own colour', () => {
+    const scene = buildScene(madeQuartz(), { tensorElements: ['O'] });
+    expect(scene.elements.map(({ element }) => element)).toEqual(['Si']);
+    const silicon = atomsOf(scene).findIndex(({ pick }) => pick.siteIndex === 0 && !pick.context);
+    expect([...scene.quadrics.colours.subarray(3 * silicon, 3 * silicon + 3)]).toEqual([
+      ...scene.elements[0]!.colour,
+    ]);
+  });
+
+  it('give the swatch of a site the colour of its ellipsoids', () => {
+    const dossier = madeQuartz();
+    const scene = buildScene(dossier);
+    const chosen = chooseTensors(dossier, defaultSceneOptions);
+    for (let i = 0; i < scene.quadrics.count; i++) {
+      const pick = scene.picks[scene.quadrics.pickIds[i]! - 1]!;
+      if (pick.kind !== 'atom' || pick.context) continue;
+      const drawn = [...scene.quadrics.colours.subarray(3 * i, 3 * i + 3)];
+      expect(ellipsoidColour(chosen, pick.siteIndex)).toEqual(drawn);
     }
   });
 });
