@@ -102,7 +102,7 @@ export class CrystalView extends StoreElement {
         ${this.#pointedLine()}
         ${this.isLost ? html`<p class="lost">The graphics chip took the picture away; until it comes back the CPU draws.</p>` : nothing}
       </div>
-      ${colourBar(scene?.legend ?? null, scene?.scaleStatement ?? null)}
+      ${colourBar(scene?.legend ?? null, scene?.scaleStatement ?? null, scene?.elements)}
       <p class="caption" id="caption">
         ${scene?.caption ?? ''}${scene ? html` <span class="soft">Drawn by ${this.#picture?.drawnBy}.</span>` : nothing}
       </p>

@@ -144,6 +144,9 @@ describe('the crystal on screen', () => {
     expect(textOf(root.querySelector('.legend'))).toContain('a.u.');
     page.store.setPicture({ showTensors: false }, 'test');
     await settle();
-    expect(root.querySelector('.legend')).toBeNull();
+    const key = root.querySelector('.legend ul');
+    expect(textOf(root.querySelector('#caption'))).toContain('coloured by element');
+    expect([...key!.querySelectorAll('li')].map(textOf)).toEqual(['Al', 'O', 'H']);
+    expect(root.querySelector('.legend .bar')).toBeNull();
   });
 });
