@@ -11,6 +11,8 @@ import {
   positionOnInvertedAxes,
 } from './handedness.ts';
 import type { Lattice } from './lattice.ts';
+import type { ShapeLoss } from './shape-loss.ts';
+import { shapeLoss } from './shape-loss.ts';
 import type { StandardFrame } from './standard-frame.ts';
 import { analyseAtoms, frameOfResult, matrixOfResult, standardFrame } from './standard-frame.ts';
 import { operationsOfSetting } from './space-group-settings.ts';
@@ -26,6 +28,8 @@ export interface FoundSymmetry {
   readonly orbits: readonly number[];
   /** By atom: indices of the operations that map it onto itself. */
   readonly stabilisers: readonly (readonly number[])[];
+  /** Null where the cell holds the whole group of its crystal. */
+  readonly loss: ShapeLoss | null;
 }
 
 /** Images may be off by this many tolerances: a search places elements between atoms that are off by one each. */
@@ -107,8 +111,8 @@ function listedOperations(result: {
 /**
  * Searches the symmetry of atoms within a tolerance (Å). The operations are those of the tabulated group, carried into
  * the input cell, and every one is checked to take every atom onto one of its kind. A supercell whose shape breaks
- * rotations of its crystal has the group that the shape allows. Left-handed axes are searched on −a, −b, −c. Null where
- * the search fails or a check does.
+ * rotations of its crystal has the group that the shape allows, and `loss` tells what that leaves out. Left-handed
+ * axes are searched on −a, −b, −c. Null where the search fails or a check does.
  */
 export function searchSymmetry(
   lattice: Lattice,
@@ -141,5 +145,7 @@ function searchRightHanded(
   const operations = snappedOperations(complete ? carried : listed, lattice, toleranceAngstrom);
   const mapping = mapAtoms(operations, lattice, positions, species, slack * toleranceAngstrom);
   const frame = mapping && standardFrame(operations, lattice);
-  return frame && { operations, frame, ...mapping };
+  return (
+    frame && { operations, frame, ...mapping, loss: shapeLoss(found.setting, operations, result.orbits) }
+  );
 }

@@ -5,6 +5,7 @@ import { groupTable } from './group-table.ts';
 import type { Lattice } from './lattice.ts';
 import { nearOffsetFinder } from './near-images.ts';
 import { orbitOf } from './orbit.ts';
+import type { ShapeLoss } from './shape-loss.ts';
 import type { StandardFrame } from './standard-frame.ts';
 import { inStandardFrame, standardFrame } from './standard-frame.ts';
 import { operationsOfSetting, settingName, settingsOfNumber } from './space-group-settings.ts';
@@ -41,6 +42,8 @@ export interface SymmetrySearchResult extends NamedGroup, SiteLetters {
   readonly operations: readonly SymmetryOperation[];
   /** By atom: index of the first atom of its orbit. */
   readonly orbits: readonly number[];
+  /** What the shape of the cell keeps the crystal's group from; null where the cell holds all of it. */
+  readonly loss: ShapeLoss | null;
 }
 
 /** Symmetry tables and search, ready for use without waiting. */
@@ -146,9 +149,9 @@ function placedAtoms(
 const search: SymmetryTables['search'] = (lattice, positions, species, toleranceAngstrom) => {
   const found = searchSymmetry(lattice, positions, species, toleranceAngstrom);
   if (!found) return null;
-  const { operations, orbits, frame } = found;
+  const { operations, orbits, frame, loss } = found;
   const sites = placedAtoms(found, lattice, positions, 10 * toleranceAngstrom);
-  return { operations, orbits, ...nameOf(frame), ...lettersOf(frame, sites) };
+  return { operations, orbits, loss, ...nameOf(frame), ...lettersOf(frame, sites) };
 };
 
 const tables: SymmetryTables = { describeSites, search };

@@ -4,11 +4,13 @@ import type { ProblemLog } from '#src/base/problem.ts';
 import type { Crystal, CrystalSymmetry, Site } from '#src/crystal/crystal.ts';
 import { toCartesian } from '#src/crystal/lattice.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
+import type { ShapeLoss } from '#src/crystal/shape-loss.ts';
 import { identityOperation } from '#src/crystal/symmetry-operation.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import type { SiteAtoms } from './cell-atoms.ts';
 import { cellAtoms } from './cell-atoms.ts';
 import type { DossierSettings } from './dossier.ts';
+import { isTooLargeToSearch } from './search-size.ts';
 
 /** A crystal under the symmetry the settings ask for, and where each row of the file went. */
 export interface ChosenCrystal {
@@ -22,9 +24,6 @@ export interface ChosenCrystal {
     readonly siteSymmetry: readonly (string | null)[];
   } | null;
 }
-
-/** Atoms searched for symmetry at most; beyond this the search is left to the user's explicit wish. */
-const searchedAtomsLimit = 20_000;
 
 /** Flat index of the first atom of each site. */
 export function firstAtoms(sites: readonly SiteAtoms[]): number[] {
@@ -105,6 +104,23 @@ function nearestAtom(position: VecFrac, from: SiteAtoms, lattice: Lattice): numb
   return best;
 }
 
+/** Warns that the shape of a supercell hides symmetry of its crystal. */
+function reportShapeLoss(loss: ShapeLoss, siteCount: number, crystal: Crystal, log: ProblemLog): void {
+  const { hermannMauguin, number, primitiveCells, operations, lostOperations, orbits } = loss;
+  const sites = orbits < siteCount ? `, so ${orbits} sites appear as ${siteCount}` : '';
+  log.add(
+    'warning',
+    'supercell-breaks-symmetry',
+    `The cell is ${primitiveCells} × the primitive cell of ${hermannMauguin} (No. ${number}); its shape keeps only ${operations - lostOperations} of ${operations} operations${sites}.`,
+    {
+      place: crystal.place,
+      got: `${operations - lostOperations} operations`,
+      allowed: `${operations} operations`,
+      hint: 'Give the primitive or the conventional cell to have all symmetry of the crystal.',
+    },
+  );
+}
+
 function searched(
   crystal: Crystal,
   lattice: Lattice,
@@ -121,6 +137,7 @@ function searched(
   const leaders = result.orbits
     .map((leader, atom) => (leader === atom ? atom : -1))
     .filter((atom) => atom >= 0);
+  if (result.loss) reportShapeLoss(result.loss, leaders.length, crystal, log);
   const siteOfLeader = new Map(leaders.map((leader, site) => [leader, site]));
   const reduced: Crystal = {
     ...crystal,
@@ -168,19 +185,8 @@ export function chooseSymmetry(
   if (wish === 'none') return withoutSymmetry(crystal, lattice, settings, log);
   const search = wish === 'find' || (wish === 'auto' && !crystal.symmetry.stated);
   if (!search) return asListed(crystal, settings, log);
-  if (wish === 'auto' && crystal.sites.length > searchedAtomsLimit) {
-    log.add(
-      'warning',
-      'symmetry-search-too-large',
-      `No symmetry stated and ${crystal.sites.length} atoms: not searched.`,
-      {
-        allowed: `at most ${searchedAtomsLimit} atoms`,
-        hint: 'Ask for the search expressly, or give the operations.',
-        place: crystal.place,
-      },
-    );
-    return asListed(crystal, settings, log);
-  }
+  const kinds = speciesNumbers(crystal.sites);
+  if (isTooLargeToSearch(crystal, lattice, settings, kinds, log)) return asListed(crystal, settings, log);
   const result = tables && searched(crystal, lattice, tables, settings, log);
   if (!result) {
     log.add(
