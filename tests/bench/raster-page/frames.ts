@@ -1,0 +1,119 @@
+import { createRasterClient } from '#src/raster/raster-client.ts';
+import { createCrystalRenderer } from '#src/render/create-renderer.ts';
+import type { Camera } from '#src/scene/camera.ts';
+import { turn } from '#src/scene/camera.ts';
+import { pick } from '#src/scene/pick.ts';
+import { lightTheme } from '#src/scene/theme.ts';
+import { askew, randomScene } from '#tests/support/raster-scene.ts';
+import { instancedMesh } from './instanced-mesh.ts';
+
+/** Milliseconds of a frame by each way, the least of the rounds; NaN where a way was left out. */
+export interface FrameTimes {
+  readonly mesh: number;
+  readonly webgl: number;
+  readonly raster: number;
+  readonly pick: number;
+}
+
+const viewport = { widthPx: 1600, heightPx: 900 };
+const close: Camera = { ...askew, zoom: 1.3 * askew.zoom };
+
+function newCanvas(width: number, height: number): HTMLCanvasElement {
+  const canvas = document.createElement('canvas');
+  canvas.width = width;
+  canvas.height = height;
+  return canvas;
+}
+
+/** Waits until what was asked of a context is drawn. */
+function finish(canvas: HTMLCanvasElement): void {
+  const gl = canvas.getContext('webgl2')!;
+  gl.readPixels(0, 0, 1, 1, gl.RGBA, gl.UNSIGNED_BYTE, new Uint8Array(4));
+}
+
+async function timed(work: () => void | Promise<void>): Promise<number> {
+  const start = performance.now();
+  await work();
+  return performance.now() - start;
+}
+
+/** The ways take turns, so that what else the machine does meets all of them alike. */
+async function frameTimes(count: number, rounds: number, withMesh: boolean): Promise<FrameTimes> {
+  const scene = randomScene(count, 1, 0);
+  const [meshCanvas, glCanvas] = [newCanvas(1600, 900), newCanvas(1600, 900)];
+  const drawMesh = withMesh ? instancedMesh(meshCanvas, scene) : null;
+  const webgl = createCrystalRenderer(glCanvas, { samplesAcross: 1 });
+  webgl.resize(1600, 900, 1);
+  webgl.setScene(scene);
+  const client = createRasterClient();
+  client.setScene(scene);
+  const paper = newCanvas(1600, 900).getContext('2d', { alpha: false })!;
+  const raster = async (camera: Camera): Promise<void> => {
+    const picture = await client.draw({
+      camera,
+      viewport,
+      theme: lightTheme,
+      pixelRatio: 1,
+      samplesAcross: 1,
+    });
+    for (const { pixels, firstRow, rowCount, width } of picture!.bands) {
+      paper.putImageData(new ImageData(pixels, width, rowCount), 0, firstRow);
+    }
+  };
+  const best = { mesh: Infinity, webgl: Infinity, raster: Infinity, pick: Infinity };
+  const keep = (way: keyof FrameTimes, ms: number): void => void (best[way] = Math.min(best[way], ms));
+  for (let round = 0; round <= rounds; round++) {
+    for (let step = 0; step < 6; step++) {
+      const camera = turn(close, 10 * round + step, 5, viewport);
+      const ms = await timed(() => raster(camera));
+      if (round > 0) keep('raster', ms);
+    }
+    for (let step = 0; step < 2; step++) {
+      webgl.setCamera(turn(close, 10 * round + step, 5, viewport));
+      keep('webgl', await timed(() => (webgl.render(), finish(glCanvas))));
+    }
+    if (drawMesh)
+      keep('mesh', await timed(() => (drawMesh(turn(close, 10 * round, 5, viewport)), finish(meshCanvas))));
+    keep('pick', (await timed(() => manyPicks(20))) / 20);
+  }
+  webgl.dispose();
+  client.dispose();
+  meshCanvas.getContext('webgl2')?.getExtension('WEBGL_lose_context')?.loseContext();
+  return best;
+
+  function manyPicks(picks: number): void {
+    for (let k = 0; k < picks; k++) pick(scene, close, 800 + k, 450, viewport);
+  }
+}
+
+/** Milliseconds of a still: the CPU with 2 × 2 samples, WebGL with one. */
+async function stillTimes(side: number): Promise<{ readonly raster: number; readonly webgl: number }> {
+  const scene = randomScene(2000, 1, 0);
+  const square = { widthPx: side, heightPx: side };
+  const canvas = newCanvas(side, side);
+  const webgl = createCrystalRenderer(canvas, { samplesAcross: 1 });
+  webgl.resize(side, side, 1);
+  webgl.setScene(scene);
+  webgl.setCamera(askew);
+  const client = createRasterClient();
+  client.setScene(scene);
+  const view = { camera: askew, viewport: square, theme: lightTheme, pixelRatio: 1, samplesAcross: 2 };
+  const best = { raster: Infinity, webgl: Infinity };
+  for (let round = 0; round < 3; round++) {
+    best.raster = Math.min(best.raster, await timed(async () => void (await client.draw(view))));
+    best.webgl = Math.min(best.webgl, await timed(() => (webgl.render(), finish(canvas))));
+  }
+  webgl.dispose();
+  client.dispose();
+  return best;
+}
+
+declare global {
+  interface Window {
+    frameTimes: typeof frameTimes;
+    stillTimes: typeof stillTimes;
+  }
+}
+
+window.frameTimes = frameTimes;
+window.stillTimes = stillTimes;
