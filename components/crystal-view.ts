@@ -3,6 +3,7 @@ import type { PropertyValues, TemplateResult } from 'lit';
 import type { WebGLProbe } from '#src/render/probe-webgl.ts';
 import { probeWebGL } from '#src/render/probe-webgl.ts';
 import type { PickEntry } from '#src/scene/scene.ts';
+import { sharedPositions } from '#src/scene/shared-positions.ts';
 import { siteColour } from '#src/store/site-colour.ts';
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { colourBar, colourBarStyles } from './colour-bar.ts';
@@ -238,11 +239,13 @@ function selectionOf({ siteIndex, atomId }: Extract<PickEntry, { kind: 'atom' }>
   return { siteIndex, atomId };
 }
 
-/** The atoms a selection means: the one, or all of the site. */
+/** The atoms a selection means: the one, or all of the site; of a site that is not drawn, those on its position. */
 function atomIds({ derived }: WorkbenchState, selection: Selection | null): string[] {
   if (!selection) return [];
-  if (selection.atomId !== null) return [selection.atomId];
-  return derived?.dossier?.sites[selection.siteIndex]?.equivalents.map(({ id }) => id) ?? [];
+  const dossier = derived?.dossier;
+  const instead = dossier && sharedPositions(dossier).drawnInstead.get(selection.siteIndex);
+  if (selection.atomId !== null && instead === undefined) return [selection.atomId];
+  return dossier?.sites[instead ?? selection.siteIndex]?.equivalents.map(({ id }) => id) ?? [];
 }
 
 /** Cell axes in the corner: lines with letters, the farther ones drawn first. */

@@ -2,6 +2,7 @@ import type { PickEntry } from '#src/scene/scene.ts';
 import type { CrystalDossier } from '#src/store/dossier-types.ts';
 import { mainNumbers } from './convention-symbol.ts';
 import { formatNumber, formatOperation } from './number-format.ts';
+import { percent, sharingSentence } from './shared-position.ts';
 
 /** What is under the pointer, in a line: site, operation, main numbers; or the two ends and the length of a bond. */
 export function pointedSentence(entry: PickEntry, dossier: CrystalDossier): string {
@@ -14,7 +15,9 @@ export function pointedSentence(entry: PickEntry, dossier: CrystalDossier): stri
   if (!site) return '';
   const atom = site.equivalents.find(({ id }) => id === entry.atomId);
   const operation = atom && dossier.lattice ? [formatOperation(atom.operation)] : [];
-  return [site.label, ...operation, ...mainNumbers(site)].join(' · ');
+  const sharing = sharingSentence(site, dossier);
+  const shares = sharing ? [`${percent(site.occupancy)}, ${sharing}`] : [];
+  return [site.label, ...shares, ...operation, ...mainNumbers(site)].join(' · ');
 }
 
 function labelOf(atomId: string, dossier: CrystalDossier): string {

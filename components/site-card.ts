@@ -1,6 +1,6 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import type { Place, SiteDossier } from '#src/store/dossier-types.ts';
+import type { CrystalDossier, Place, SiteDossier } from '#src/store/dossier-types.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
 import { crystalOverview } from './card-crystal.ts';
 import { efgSection } from './card-efg.ts';
@@ -14,6 +14,7 @@ import {
   isotopeSymbol,
   symmetrySymbol,
 } from './number-format.ts';
+import { sharingSentence } from './shared-position.ts';
 import { siteChip } from './site-chip.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
@@ -58,7 +59,8 @@ export class SiteCard extends StoreElement {
     return html`
       <article aria-label="Site ${site.label}">
         <h2 class="title">${siteChip(site.index)}<strong>${site.label}</strong> ${summary(site)}</h2>
-        ${atom ? html`<p>Atom ${formatOperation(atom.operation)} is selected.</p>` : nothing} ${facts(site)}
+        ${atom ? html`<p>Atom ${formatOperation(atom.operation)} is selected.</p>` : nothing}
+        ${facts(site, dossier)}
         ${
           !site.shielding && !site.shift && !site.efg
             ? html`<p class="soft">The files hold no tensor for this site.</p>`
@@ -123,7 +125,7 @@ function summary(site: SiteDossier): string {
   ].join(', ');
 }
 
-function facts(site: SiteDossier): TemplateResult {
+function facts(site: SiteDossier, dossier: CrystalDossier): TemplateResult {
   const { species, occupancy, disorder, displacement } = site;
   const isMixed = species.length > 1;
   const rows: readonly (readonly [string, string | null])[] = [
@@ -135,6 +137,7 @@ function facts(site: SiteDossier): TemplateResult {
         ? null
         : species.map(({ element, occupancy: share }) => `${element} ${formatNumber(share, 3)}`).join(', '),
     ],
+    ['mixed', sharingSentence(site, dossier)],
     ['disorder', disorder ? `assembly ${disorder.assembly ?? '–'}, group ${disorder.group ?? '–'}` : null],
     ['charge', site.charge === null ? null : `${formatNumber(site.charge, 0)} e`],
     [

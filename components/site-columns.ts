@@ -3,7 +3,7 @@ import type { TemplateResult } from 'lit';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { CrystalDossier, SiteDossier } from '#src/store/dossier-types.ts';
 import { headingOf, knownConvention, siteNumber } from './convention-symbol.ts';
-import { isotopeSymbol, symmetrySymbol } from './number-format.ts';
+import { formatNumber, isotopeSymbol, symmetrySymbol } from './number-format.ts';
 
 /** One column of the site table: how it is headed, spoken and filled. */
 export interface SiteColumn {
@@ -60,6 +60,16 @@ const identity: readonly SiteColumn[] = [
   },
 ];
 
+/** Stands in the table only where a site is not fully occupied. */
+const occupancy: SiteColumn = {
+  key: 'occupancy',
+  heading: html`occ.`,
+  words: 'occupancy: share of the cells in which an atom is there',
+  width: [40, 0.3],
+  numeric: true,
+  text: (site) => formatNumber(site.occupancy, 3),
+};
+
 /** A column of a number the catalogue knows; absent tensors leave its cell empty. */
 function numberColumn(
   quantity: ConventionEntry['quantity'],
@@ -98,6 +108,7 @@ export function columnsFor(dossier: CrystalDossier): SiteColumn[] {
   const has = (part: 'shielding' | 'shift' | 'efg'): boolean => dossier.sites.some((site) => site[part]);
   return [
     ...identity,
+    ...(dossier.sites.some(({ occupancy: share }) => share !== 1) ? [occupancy] : []),
     ...(has('shielding') ? [isotropic('shielding')] : []),
     ...(has('shift') ? [isotropic('shift')] : []),
     ...(has('shielding') ? spanAndSkew('shielding') : has('shift') ? spanAndSkew('shift') : []),

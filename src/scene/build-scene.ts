@@ -11,6 +11,7 @@ import { enclosingSphere } from './framing.ts';
 import type { ElementKey, Scene } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
 import { defaultSceneOptions } from './scene-options.ts';
+import { sharedPositions } from './shared-positions.ts';
 import type { ChosenTensors } from './tensor-choice.ts';
 import { chooseTensors } from './tensor-choice.ts';
 import type { ScaleChoice } from './tensor-scale.ts';
@@ -54,6 +55,7 @@ export function buildScene(dossier: CrystalDossier, options: Partial<SceneOption
       neighbours: atoms.length > own.length,
       hasCell: dossier.lattice !== null,
       onlyElements: chosen.tensorElements,
+      hiddenSites: sharedPositions(dossier).drawnInstead.size,
     }),
     extent,
   };

@@ -20,6 +20,8 @@ export interface CaptionParts {
   readonly neighbours: boolean;
   /** Elements whose tensors are drawn, where only some are. */
   readonly onlyElements: readonly string[] | null;
+  /** Sites not drawn because another one with a larger occupancy stands on their position. */
+  readonly hiddenSites: number;
 }
 
 /** A number for people: − as minus sign, no trailing zeros, at most four significant digits. */
@@ -43,6 +45,8 @@ export function caption(parts: CaptionParts): string {
     );
   }
   sentences.push(...notes, extentSentence(parts));
+  if (parts.hiddenSites > 0)
+    sentences.push('Where sites share a position, the one with the largest occupancy is drawn.');
   return sentences.join(' ');
 }
 

@@ -3,6 +3,7 @@ import { apply } from '#src/base/matrix3.ts';
 import { add, subtract } from '#src/base/vector3.ts';
 import { electronegativity, elementClass } from '#src/data/radii.ts';
 import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
+import { sharedPositions } from './shared-positions.ts';
 
 /** One copy of an atom that is in the picture. */
 export interface DrawnAtom {
@@ -21,11 +22,14 @@ const faceToleranceAngstrom = 0.02;
 
 /**
  * Atoms of the picture: of one unit cell with those on faces, edges and corners repeated, or moved together into whole
- * molecules (`wholeMolecules` of the dossier). Without a cell both are the atoms as given.
+ * molecules (`wholeMolecules` of the dossier). Without a cell both are the atoms as given. Of sites that share a position
+ * the one with the largest occupancy is drawn.
  */
 export function drawnAtoms(dossier: CrystalDossier, extent: 'cell' | 'molecules'): DrawnAtom[] {
   const drawn: DrawnAtom[] = [];
+  const { drawnInstead } = sharedPositions(dossier);
   for (const site of dossier.sites) {
+    if (drawnInstead.has(site.index)) continue;
     for (const atom of site.equivalents) {
       for (const cellShift of shiftsOf(dossier, atom, extent)) {
         drawn.push(copyOf(dossier, atom, site, cellShift, false));
@@ -44,10 +48,12 @@ export function bondedNeighbours(dossier: CrystalDossier, drawn: readonly DrawnA
   const atoms = atomsById(dossier);
   const copies = copiesById(drawn);
   const added = new Map<string, DrawnAtom>();
+  const { drawnInstead } = sharedPositions(dossier);
   const addMissing = (inside: DrawnAtom, id: string, cellShift: Vec3) => {
     const known = atoms.get(id);
     const key = `${id} ${cellShift.join()}`;
-    if (!known || !completes(inside.site.element, known.site.element)) return;
+    if (!known || drawnInstead.has(known.site.index) || !completes(inside.site.element, known.site.element))
+      return;
     if (copies.get(id)?.has(cellShift.join()) || added.has(key)) return;
     added.set(key, copyOf(dossier, known.atom, known.site, cellShift, true));
   };
