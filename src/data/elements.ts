@@ -88,19 +88,20 @@ const firstUnlikely = 95;
 export function elementFromLabel(label: string, known?: ReadonlySet<string>): LabelReading | null {
   const letters = /[A-Za-z]+/.exec(label)?.[0];
   if (!letters || dummyWords.test(letters)) return null;
-  if (waterWords.test(label.trim()) && known?.has('O') !== false) return { element: 'O', certain: true };
+  const anyElement = !known || known.size === 0;
+  if (waterWords.test(label.trim()) && (anyElement || known.has('O'))) return { element: 'O', certain: true };
   const named = byName.get(letters.toLowerCase());
-  if (named && (!known || known.size === 0 || known.has(named.symbol))) {
+  if (named && (anyElement || known.has(named.symbol))) {
     return { element: named.symbol, certain: true };
   }
   const two = letters.length > 1 ? (bySymbol.get(titleCase(letters.slice(0, 2))) ?? null) : null;
   const one = bySymbol.get(letters[0]!.toUpperCase()) ?? null;
-  if (known && known.size > 0) {
+  if (!anyElement) {
     const decided = readingByFormula(letters, two, one, known);
     if (decided) return decided;
   }
   const guess = readingByLetters(letters, two, one);
-  return guess && known && known.size > 0 ? { ...guess, certain: false } : guess;
+  return guess && !anyElement ? { ...guess, certain: false } : guess;
 }
 
 function readingByFormula(

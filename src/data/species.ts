@@ -82,6 +82,9 @@ function mixturePieces(text: string): string[] | null {
 }
 
 function withShares(species: readonly (ParsedSpecies & { share: number | null })[]): SpeciesMixture {
+  if (species.every(({ share }) => share === 1)) {
+    return withShares(species.map((one) => ({ ...one, share: null })));
+  }
   const missing = species.filter(({ share }) => share === null).length;
   const given = species.reduce((sum, { share }) => sum + (share ?? 0), 0);
   const each = missing > 0 ? Math.max(0, 1 - given) / missing : 0;
@@ -92,10 +95,10 @@ function withShares(species: readonly (ParsedSpecies & { share: number | null })
 }
 
 function hydrogenGroup(text: string): ParsedSpecies | null {
-  const parts = /^(?:([CNO])H([1-4]?)|H2(O)|(wat)|(aq))([+-]?\d*[+-]?)$/i.exec(text);
+  const parts = /^(?:([CNO])H([1-4]?)|H([23])O|(wat)|(aq))([+-]?\d*[+-]?)$/i.exec(text);
   if (!parts || /^([cno]h|Nh)/.test(text)) return null;
   const heavy = parts[1]?.toUpperCase() ?? 'O';
-  const hydrogens = parts[1] ? Number(parts[2] || 1) : 2;
+  const hydrogens = parts[1] ? Number(parts[2] || 1) : Number(parts[3] ?? 2);
   return { element: heavy, charge: chargeOf(parts[6] ?? ''), massNumber: null, hydrogens };
 }
 

@@ -117,6 +117,13 @@ describe('an element from a label', () => {
     expect(elementFromLabel('T1', new Set(['T', 'O']))).toEqual({ element: 'T', certain: true });
   });
 
+  it('takes an empty set for no formula', () => {
+    for (const label of ['Wat1', 'CA1', 'Si2', 'Carbon', 'Fe3', 'W1']) {
+      expect(elementFromLabel(label, new Set())).toEqual(elementFromLabel(label));
+    }
+    expect(elementFromLabel('Wat1', new Set())).toEqual({ element: 'O', certain: true });
+  });
+
   it('keeps a reading that the formula lacks, with a doubt', () => {
     expect(elementFromLabel('Fe1', new Set(['Si', 'O']))).toEqual({ element: 'Fe', certain: false });
     expect(elementFromLabel('D1', new Set(['H', 'O']))).toEqual({ element: 'D', certain: true });

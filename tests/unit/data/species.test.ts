@@ -39,6 +39,7 @@ describe('an atom type', () => {
     expect(parseSpecies('OH')).toMatchObject({ element: 'O', hydrogens: 1 });
     expect(parseSpecies('OH1-')).toMatchObject({ element: 'O' });
     expect(parseSpecies('H2O')).toMatchObject({ element: 'O', hydrogens: 2 });
+    expect(parseSpecies('H3O+')).toMatchObject({ element: 'O', hydrogens: 3, charge: 1 });
     expect(parseSpecies('Wat')).toMatchObject({ element: 'O', hydrogens: 2 });
     expect(parseSpecies('NH4')).toMatchObject({ element: 'N', hydrogens: 4 });
     expect(parseSpecies('NH4+')).toMatchObject({ element: 'N', hydrogens: 4, charge: 1 });
@@ -76,6 +77,7 @@ describe('a position with several elements', () => {
     ['(Fe,Mg)', 'Fe 0.5, Mg 0.5'],
     ['Al/Si', 'Al 0.5, Si 0.5'],
     ['AlSi', 'Al 0.5, Si 0.5'],
+    ['Al1/Si1', 'Al 0.5, Si 0.5'],
     ['Ca2+/Sr2+', 'Ca 0.5, Sr 0.5'],
     ['Mg0.5,Fe,Al', 'Mg 0.5, Fe 0.25, Al 0.25'],
   ])('%s gets equal shares, and says so', (text, expected) => {
