@@ -3,13 +3,14 @@ import type { TemplateResult } from 'lit';
 import { conventionCatalogue, digitsOf, entryValue } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { EfgDossier, EquivalentAtom, Lattice, SiteDossier } from '#src/store/dossier-types.ts';
+import { atomTensor } from '#src/store/axes.ts';
 import { efgFromAtomicUnits } from '#src/store/efg-units.ts';
 import { axesTable } from './card-axes.ts';
 import type { ValueColumn } from './card-conventions.ts';
 import { conventionTable } from './card-conventions.ts';
 import { isDiagnostic, noiseList } from './card-noise.ts';
 import { reasons, valueOrReason } from './card-value.ts';
-import { matrixTable } from './matrix-table.ts';
+import { matrixTable, turnedSentence } from './matrix-table.ts';
 import { formatNumber, isotopeSymbol } from './number-format.ts';
 
 /** The electric field gradient of a site, the couplings it makes, its axes, matrices and noise. */
@@ -39,11 +40,11 @@ export function efgSection(
             The sign of V<sub>zz</sub> and of C<sub>Q</sub> is not determined: η is too near 1.
           </p>`
     }
-    ${axesTable(site, atom, 'efg', lattice)}
+    ${axesTable(site, atom, 'efg', lattice)} ${turnedSentence(atom)}
     <div class="matrices">
-      ${matrixTable('V/a.u. as given', efg.tensor, 4)}
-      ${matrixTable('symmetric, traceless', efg.symmetric, 4)}
-      ${matrixTable('projected on the site symmetry', efg.projected, 4)}
+      ${matrixTable('V/a.u. as given', atomTensor(efg.tensor, atom), 4)}
+      ${matrixTable('symmetric, traceless', atomTensor(efg.symmetric, atom), 4)}
+      ${matrixTable('projected on the site symmetry', atomTensor(efg.projected, atom), 4)}
     </div>
     ${noiseList('efg', efg, site)}
   </section>`;

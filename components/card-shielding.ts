@@ -1,5 +1,6 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
+import { atomTensor } from '#src/store/axes.ts';
 import { conventionCatalogue, digitsOf, entryValue } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { EquivalentAtom, Lattice, SiteDossier } from '#src/store/dossier-types.ts';
@@ -8,7 +9,7 @@ import type { ValueColumn } from './card-conventions.ts';
 import { conventionTable } from './card-conventions.ts';
 import { isDiagnostic, noiseList } from './card-noise.ts';
 import { reasons, valueOrReason } from './card-value.ts';
-import { matrixTable } from './matrix-table.ts';
+import { matrixTable, turnedSentence } from './matrix-table.ts';
 
 /** Shielding and shift of a site in every convention, their axes, matrices and noise. */
 export function shieldingSection(
@@ -34,10 +35,11 @@ export function shieldingSection(
     ${axesTable(site, atom, leading, lattice)}
     ${
       shielding
-        ? html`<div class="matrices">
-              ${matrixTable('σ/ppm as given', shielding.tensor, 2)}
-              ${matrixTable('symmetric part', shielding.symmetric, 2)}
-              ${matrixTable('projected on the site symmetry', shielding.projected, 2)}
+        ? html`${turnedSentence(atom)}
+            <div class="matrices">
+              ${matrixTable('σ/ppm as given', atomTensor(shielding.tensor, atom), 2)}
+              ${matrixTable('symmetric part', atomTensor(shielding.symmetric, atom), 2)}
+              ${matrixTable('projected on the site symmetry', atomTensor(shielding.projected, atom), 2)}
             </div>
             ${noiseList('shielding', shielding, site)}`
         : nothing

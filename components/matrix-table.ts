@@ -1,7 +1,7 @@
-import { css, html } from 'lit';
+import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import type { Mat3 } from '#src/store/dossier-types.ts';
-import { formatNumber } from './number-format.ts';
+import type { EquivalentAtom, Mat3 } from '#src/store/dossier-types.ts';
+import { formatNumber, formatOperation } from './number-format.ts';
 
 export const matrixStyles = css`
   .matrices {
@@ -49,4 +49,13 @@ export function matrixTable(caption: string, matrix: Mat3, decimals: number): Te
       )}
     </tbody>
   </table>`;
+}
+
+/** Says how the matrices below were turned to the selected atom; nothing where they are the site's own. */
+export function turnedSentence(atom: EquivalentAtom | null): TemplateResult | typeof nothing {
+  if (!atom) return nothing;
+  return html`<p class="soft">
+    Tensors of the atom ${formatOperation(atom.operation)}: those given for the site turned as R T Rᵀ, R the
+    Cartesian rotation of this operation.
+  </p>`;
 }

@@ -1,6 +1,6 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import type { CrystalDossier, Place, SiteDossier } from '#src/store/dossier-types.ts';
+import type { CrystalDossier, EquivalentAtom, Place, SiteDossier } from '#src/store/dossier-types.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
 import { crystalOverview } from './card-crystal.ts';
 import { efgSection } from './card-efg.ts';
@@ -59,8 +59,15 @@ export class SiteCard extends StoreElement {
     return html`
       <article aria-label="Site ${site.label}">
         <h2 class="title">${siteChip(site.index)}<strong>${site.label}</strong> ${summary(site)}</h2>
-        ${atom ? html`<p>Atom ${formatOperation(atom.operation)} is selected.</p>` : nothing}
-        ${facts(site, dossier)}
+        ${
+          atom
+            ? html`<p>
+                Atom ${formatOperation(atom.operation)} is selected: position, axes and matrices below are its
+                own.
+              </p>`
+            : nothing
+        }
+        ${facts(site, atom, dossier)}
         ${
           !site.shielding && !site.shift && !site.efg
             ? html`<p class="soft">The files hold no tensor for this site.</p>`
@@ -125,11 +132,15 @@ function summary(site: SiteDossier): string {
   ].join(', ');
 }
 
-function facts(site: SiteDossier, dossier: CrystalDossier): TemplateResult {
+function positionOf({ fractional, cartesian }: Pick<EquivalentAtom, 'fractional' | 'cartesian'>): string {
+  return fractional ? formatTriple(fractional, 5) : `${formatTriple(cartesian, 4)} Å`;
+}
+
+function facts(site: SiteDossier, atom: EquivalentAtom | null, dossier: CrystalDossier): TemplateResult {
   const { species, occupancy, disorder, displacement } = site;
   const isMixed = species.length > 1;
   const rows: readonly (readonly [string, string | null])[] = [
-    ['position', site.fractional ? formatTriple(site.fractional, 5) : `${formatTriple(site.cartesian, 4)} Å`],
+    [atom ? `position of ${formatOperation(atom.operation)}` : 'position', positionOf(atom ?? site)],
     ['symmetry forces', site.forced],
     [
       'occupancy',

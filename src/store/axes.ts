@@ -1,8 +1,9 @@
-import type { Vec3 } from '#src/base/matrix3.ts';
+import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { apply, rowsOf } from '#src/base/matrix3.ts';
 import { dot, length } from '#src/base/vector3.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import type { Axis, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
+import { rotateTensor } from '#src/tensor/projection.ts';
 
 /** A quantity that has principal axes. */
 export type TensorQuantity = 'shielding' | 'shift' | 'efg';
@@ -46,4 +47,9 @@ export function atomAxes(
   if (!axes) return null;
   const turned = (axis: Axis): Axis => axis && withReadableSign(apply(atom.rotation, axis));
   return [turned(axes[0]), turned(axes[1]), turned(axes[2])];
+}
+
+/** A tensor of a site turned along with an equivalent atom: R T Rᵀ, R its Cartesian rotation. */
+export function atomTensor(tensor: Mat3, atom: EquivalentAtom | null): Mat3 {
+  return atom ? rotateTensor(atom.rotation, tensor) : tensor;
 }

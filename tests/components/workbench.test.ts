@@ -116,6 +116,34 @@ describe('the page', () => {
     expect(spoken()).toBe('Al1, ²⁷Al selected, 2 atoms, σiso 526.67 ppm, δiso 23.3 ppm, C_Q −5.17 MHz');
   });
 
+  it('shows position, axes and matrices of the selected atom, named by its operation', async () => {
+    page.store.select({ siteIndex: 0, atomId: '0:1' });
+    await settle();
+    const root = page.part('ellipsite-site-card').shadowRoot;
+    const facts = textOf(root.querySelector('.facts'));
+    // −x, −y, z of 0.1, 0.2, 0.3
+    expect(facts).toContain('position of −x, −y, z 0.90000, 0.80000, 0.30000');
+    expect(card()).toContain('Principal axes of the atom −x, −y, z');
+    expect(card()).toContain('Tensors of the atom −x, −y, z: those given for the site turned as R T Rᵀ');
+  });
+
+  it('turns matrices along: a quarter turn about z exchanges xx and yy and the sign of xy', async () => {
+    const quarter = [0, -1, 0, 1, 0, 0, 0, 0, 1] as const;
+    const [first, ...others] = fixtureDossier.sites;
+    const [own, image] = first!.equivalents;
+    const turned = { ...first!, equivalents: [own!, { ...image!, rotation: quarter }] };
+    page = await mountWorkbench(fixtureCase({ ...fixtureDossier, sites: [turned, ...others] }));
+    const given = async (atomId: string | null): Promise<string[]> => {
+      page.store.select({ siteIndex: 0, atomId });
+      await settle();
+      const matrix = page.part('ellipsite-site-card').shadowRoot.querySelector('.matrix')!;
+      return [...matrix.querySelectorAll('td')].map(textOf);
+    };
+    expect((await given(null)).slice(0, 5)).toEqual(['500.00', '2.00', '0.00', '−2.00', '520.00']);
+    // R = (0 −1; 1 0): R T Rᵀ = (Tyy −Tyx; −Txy Txx)
+    expect((await given('0:1')).slice(0, 5)).toEqual(['520.00', '2.00', '0.00', '−2.00', '500.00']);
+  });
+
   it('gives angles of axes to the cell, folded', async () => {
     page.store.select({ siteIndex: 0, atomId: null });
     await settle();
