@@ -1,6 +1,6 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import { conventionCatalogue, digitsOf, entryValue } from '#src/store/conventions.ts';
+import { conventionCatalogue, entryValue } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { EfgDossier, EquivalentAtom, Lattice, SiteDossier } from '#src/store/dossier-types.ts';
 import { atomTensor } from '#src/store/axes.ts';
@@ -10,6 +10,7 @@ import type { ValueColumn } from './card-conventions.ts';
 import { conventionTable } from './card-conventions.ts';
 import { isDiagnostic, noiseList } from './card-noise.ts';
 import { reasons, valueOrReason } from './card-value.ts';
+import { foreignIsotope, printedValue } from './convention-symbol.ts';
 import { matrixTable, turnedSentence } from './matrix-table.ts';
 import { formatNumber, isotopeSymbol } from './number-format.ts';
 
@@ -27,7 +28,7 @@ export function efgSection(
   const nucleus = efg.isotope ? isotopeSymbol(efg.isotope) : 'no nuclide with a quadrupole moment';
   return html`<section>
     <h3>Electric field gradient</h3>
-    ${conventionTable(entries, [ownColumn(efg), siColumn(efg)])}
+    ${conventionTable(entries, [ownColumn(site, efg), siColumn(efg)])}
     <p class="soft">
       Couplings of
       ${nucleus}${efg.quadrupoleMomentSource ? html`; Q: ${efg.quadrupoleMomentSource}` : nothing}
@@ -37,7 +38,10 @@ export function efgSection(
       efg.signDetermined
         ? nothing
         : html`<p class="reason">
-            The sign of V<sub>zz</sub> and of C<sub>Q</sub> is not determined: η is too near 1.
+            The sign of V<sub>zz</sub> and of C<sub>Q</sub> is not determined (±): V<sub>zz</sub> and V<sub
+              >yy</sub
+            >
+            are equally large within the noise, so η is 1 and either may be the largest.
           </p>`
     }
     ${axesTable(site, atom, 'efg', lattice)} ${turnedSentence(atom)}
@@ -50,12 +54,15 @@ export function efgSection(
   </section>`;
 }
 
-function ownColumn(efg: EfgDossier): ValueColumn {
+function ownColumn(site: SiteDossier, efg: EfgDossier): ValueColumn {
   return {
     heading: 'value',
     entryFor: (entry) => entry,
-    cell: (entry) =>
-      valueOrReason(entryValue(efg, entry), digitsOf(entry, efg.isotope), efg.undefinedBecause[entry.field]),
+    cell: (entry) => {
+      const foreign = foreignIsotope(site, entry);
+      const text = printedValue(efg, entry, efg.isotope);
+      return html`${valueOrReason(text, efg.undefinedBecause[entry.field])}${foreign ? ` (${foreign})` : nothing}`;
+    },
   };
 }
 
@@ -69,7 +76,9 @@ function siColumn(efg: EfgDossier): ValueColumn {
     entryFor: (entry) => entry,
     cell: (entry) => {
       const value = inSi(entry);
-      return value === null ? nothing : html`${formatNumber(value, 3)}`;
+      if (value === null) return nothing;
+      const sign = /^[±∓]/.exec(printedValue(efg, entry, efg.isotope))?.[0];
+      return html`${sign ? sign + formatNumber(Math.abs(value), 3) : formatNumber(value, 3)}`;
     },
   };
 }

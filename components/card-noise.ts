@@ -1,6 +1,6 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import { conventionCatalogue, entryValue } from '#src/store/conventions.ts';
+import { conventionCatalogue, digitsOf, entryValue } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { NoiseFigures, SiteDossier } from '#src/store/dossier-types.ts';
 import { symbolOf } from './convention-symbol.ts';
@@ -37,6 +37,6 @@ function figure(entry: ConventionEntry, value: number | null, site: SiteDossier)
     return html`<span class="undefined">undefined</span>: ${reason}`;
   }
   const isFree = entry.field === 'symmetryResidual' && site.siteSymmetryOrder === 1;
-  return html`${formatSmall(value)}
+  return html`${formatSmall(value, digitsOf(entry))}
   ${entry.unit}${isFree ? html` <span class="soft">(nothing is forced)</span>` : nothing}`;
 }

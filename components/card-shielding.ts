@@ -1,7 +1,7 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import { atomTensor } from '#src/store/axes.ts';
-import { conventionCatalogue, digitsOf, entryValue } from '#src/store/conventions.ts';
+import { conventionCatalogue } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { EquivalentAtom, Lattice, SiteDossier } from '#src/store/dossier-types.ts';
 import { axesTable } from './card-axes.ts';
@@ -9,6 +9,7 @@ import type { ValueColumn } from './card-conventions.ts';
 import { conventionTable } from './card-conventions.ts';
 import { isDiagnostic, noiseList } from './card-noise.ts';
 import { reasons, valueOrReason } from './card-value.ts';
+import { printedValue } from './convention-symbol.ts';
 import { matrixTable, turnedSentence } from './matrix-table.ts';
 
 /** Shielding and shift of a site in every convention, their axes, matrices and noise. */
@@ -61,11 +62,7 @@ function scaleColumn(
       heading: scale,
       entryFor: (entry) => own[leading.indexOf(entry)] ?? null,
       cell: (entry) =>
-        valueOrReason(
-          entryValue(part, entry),
-          digitsOf(entry, site.isotope),
-          part.undefinedBecause[entry.field],
-        ),
+        valueOrReason(printedValue(part, entry, site.isotope), part.undefinedBecause[entry.field]),
     },
   ];
 }

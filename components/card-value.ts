@@ -3,18 +3,12 @@ import type { TemplateResult } from 'lit';
 import { convention } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import { symbolOf } from './convention-symbol.ts';
-import { formatNumber } from './number-format.ts';
+import { raiseIsotopes } from './number-format.ts';
 
-/** A number, or "undefined" with the reason as its tooltip; the reasons also stand below the table. */
-export function valueOrReason(
-  value: number | null | undefined,
-  decimals: number,
-  because: string | undefined,
-): TemplateResult {
-  if (value !== null && value !== undefined && Number.isFinite(value)) {
-    return html`${formatNumber(value, decimals)}`;
-  }
-  return html`<span class="undefined" title=${because ?? nothing}>undefined</span>`;
+/** A printed number, or what stands for none with the reason as its tooltip; the reasons also stand below the table. */
+export function valueOrReason(text: string, because: string | undefined): TemplateResult {
+  if (text !== 'undefined' && text !== '–') return html`${text}`;
+  return html`<span class="undefined" title=${because ? raiseIsotopes(because) : nothing}>${text}</span>`;
 }
 
 /** Sentences below a table for what is undefined in it, one for each reason. */
@@ -30,7 +24,7 @@ export function reasons(
     ([reason, fields]) =>
       html`<p class="reason">
         ${fields.map((field, i) => html`${i > 0 ? ', ' : nothing}${nameOf(quantity, field)}`)} undefined:
-        ${reason}
+        ${raiseIsotopes(reason)}
       </p>`,
   )}`;
 }

@@ -6,10 +6,10 @@ export function formatNumber(value: number | null | undefined, decimals: number)
   return isZero ? text.replace('-', '') : text.replace('-', '−');
 }
 
-/** A figure of noise: three significant digits, in powers of ten when small. */
-export function formatSmall(value: number | null): string {
+/** A figure of noise: three significant digits, in powers of ten when small; less than half of its last decimal is numerical dust, 0. */
+export function formatSmall(value: number | null, decimals: number): string {
   if (value === null || !Number.isFinite(value)) return 'undefined';
-  if (value === 0) return '0';
+  if (Math.abs(value) < 0.5 * 10 ** -decimals) return '0';
   if (Math.abs(value) >= 0.001) return formatNumber(value, Math.abs(value) >= 10 ? 1 : 3);
   const [mantissa = '', exponent = ''] = value.toExponential(1).split('e');
   return `${mantissa.replace('-', '−')} × 10${superscript(exponent.replace('+', ''))}`;
@@ -38,6 +38,13 @@ export function superscript(text: string): string {
 export function isotopeSymbol(isotope: string): string {
   const match = /^(\d+)(.*)$/.exec(isotope);
   return match ? superscript(match[1] ?? '') + (match[2] ?? '') : isotope;
+}
+
+/** Isotopes within a sentence raised: `1H has spin ½` → `¹H has spin ½`. Names of files and columns stay. */
+export function raiseIsotopes(sentence: string): string {
+  return sentence.replaceAll(/(?<![\w.])(\d{1,3})([A-Z][a-z]?)(?!\w|[-.]\w)/g, (isotope) =>
+    isotopeSymbol(isotope),
+  );
 }
 
 /** A direction or position: three numbers with true minus signs. */

@@ -2,7 +2,7 @@ import { html } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { CrystalDossier, SiteDossier } from '#src/store/dossier-types.ts';
-import { headingOf, knownConvention, siteNumber } from './convention-symbol.ts';
+import { foreignIsotope, headingOf, knownConvention, siteNumber } from './convention-symbol.ts';
 import { formatNumber, isotopeSymbol, symmetrySymbol } from './number-format.ts';
 
 /** One column of the site table: how it is headed, spoken and filled. */
@@ -17,7 +17,7 @@ export interface SiteColumn {
   readonly text: (site: SiteDossier) => string;
   /** The quantity whose colour in the picture says this number. */
   readonly coloured?: ConventionEntry['quantity'];
-  /** Why the text is "undefined", where it is. */
+  /** Why the text is "undefined" or a dash, where it is. */
   readonly because?: (site: SiteDossier) => string | undefined;
 }
 
@@ -98,10 +98,15 @@ const spanAndSkew = (quantity: 'shielding' | 'shift'): SiteColumn[] => [
   numberColumn(quantity, 'skew', [56, 0.7]),
 ];
 
-const efg: readonly SiteColumn[] = [
-  numberColumn('efg', 'couplingMHz', [72, 0.8]),
-  numberColumn('efg', 'asymmetry', [54, 0.7]),
-];
+/** Coupling and asymmetry; wider where couplings are of another isotope than the row's nuclide and say so. */
+function efgColumns(sites: readonly SiteDossier[]): SiteColumn[] {
+  const entry = knownConvention('efg', 'couplingMHz');
+  const isWide = sites.some((site) => foreignIsotope(site, entry) !== null);
+  return [
+    numberColumn('efg', 'couplingMHz', isWide ? [104, 1.1] : [72, 0.8]),
+    numberColumn('efg', 'asymmetry', [54, 0.7]),
+  ];
+}
 
 /** Columns of a crystal: those of tensors it does not have are left out. */
 export function columnsFor(dossier: CrystalDossier): SiteColumn[] {
@@ -112,7 +117,7 @@ export function columnsFor(dossier: CrystalDossier): SiteColumn[] {
     ...(has('shielding') ? [isotropic('shielding')] : []),
     ...(has('shift') ? [isotropic('shift')] : []),
     ...(has('shielding') ? spanAndSkew('shielding') : has('shift') ? spanAndSkew('shift') : []),
-    ...(has('efg') ? efg : []),
+    ...(has('efg') ? efgColumns(dossier.sites) : []),
   ];
 }
 

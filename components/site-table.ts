@@ -7,7 +7,7 @@ import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/store/dos
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { quantityToShow } from '#src/store/state.ts';
 import { axisNames } from './axis-names.ts';
-import { formatCount, formatOperation, formatTriple } from './number-format.ts';
+import { formatCount, formatOperation, formatTriple, raiseIsotopes } from './number-format.ts';
 import { siteChip, valueSwatch } from './site-chip.ts';
 import type { SiteColumn } from './site-columns.ts';
 import { columnsFor, gridOf } from './site-columns.ts';
@@ -149,7 +149,9 @@ export class SiteTable extends StoreElement {
     };
     return html`${this.#columns.map((column, i) => {
       const text = column.text(site);
-      const because = text === 'undefined' ? column.because?.(site) : undefined;
+      const isMissing = text === 'undefined' || text === '–';
+      const reason = isMissing ? column.because?.(site) : undefined;
+      const because = reason && raiseIsotopes(reason);
       if (i === 0) {
         return html`<div role="gridcell" class="name">
           <button class="opener" tabindex="-1" aria-hidden="true" @click=${toggle}>
@@ -162,7 +164,7 @@ export class SiteTable extends StoreElement {
       const colour = isColoured ? ellipsoidColour(this.#coloured, site.index) : null;
       return html`<div
         role="gridcell"
-        class="${column.numeric ? 'number' : 'text'} ${text === 'undefined' ? 'undefined' : ''}"
+        class="${column.numeric ? 'number' : 'text'} ${isMissing ? 'undefined' : ''}"
         title=${because ?? nothing}
       >
         ${colour ? valueSwatch(colour) : nothing}${text}${because ? html`<span class="hidden-but-spoken">: ${because}</span>` : nothing}

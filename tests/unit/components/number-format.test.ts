@@ -6,6 +6,7 @@ import {
   formatSmall,
   formatTriple,
   isotopeSymbol,
+  raiseIsotopes,
   symmetrySymbol,
 } from '#components/number-format.ts';
 import { parseNumber } from '#components/number-input.ts';
@@ -22,12 +23,24 @@ describe('numbers on the page', () => {
   });
 
   it('keep small figures readable', () => {
-    expect(formatSmall(0)).toBe('0');
-    expect(formatSmall(2.8284)).toBe('2.828');
-    expect(formatSmall(123.456)).toBe('123.5');
-    expect(formatSmall(-6.93e-16)).toBe('−6.9 × 10⁻¹⁶');
-    expect(formatSmall(0.00042)).toBe('4.2 × 10⁻⁴');
-    expect(formatSmall(null)).toBe('undefined');
+    expect(formatSmall(0, 4)).toBe('0');
+    expect(formatSmall(2.8284, 4)).toBe('2.828');
+    expect(formatSmall(123.456, 4)).toBe('123.5');
+    expect(formatSmall(0.00042, 4)).toBe('4.2 × 10⁻⁴');
+    expect(formatSmall(null, 4)).toBe('undefined');
+  });
+
+  it('are 0 where they are smaller than their digits', () => {
+    expect(formatSmall(-6.93e-18, 4)).toBe('0');
+    expect(formatSmall(0.0049, 2)).toBe('0');
+    expect(formatSmall(0.0051, 2)).toBe('0.005');
+    expect(formatNumber(-6.9e-18, 4)).toBe('0.0000');
+  });
+
+  it('raise isotopes in sentences, and nothing that only looks like one', () => {
+    expect(raiseIsotopes('1H has spin ½; see 27Al.')).toBe('¹H has spin ½; see ²⁷Al.');
+    for (const name of ['13C.cif', 'Si2O', 'P63', '1.5Å', '13C-run', '2H2O'])
+      expect(raiseIsotopes(name)).toBe(name);
   });
 
   it('group the digits of large counts', () => {
