@@ -71,7 +71,7 @@ export const nearest = 76;
 /** 1 / (nearest − farthest depth of the scene). */
 export const perDepth = 77;
 export const depthCue = 78;
-/** Three each: sRGB from 0 to 1. */
+/** Three each: sRGB from 0 to 255. */
 export const paper = 79;
 export const lineColour = 82;
 /** CSS pixels. */
@@ -133,9 +133,8 @@ export const qRimInk = 28;
 export const qRimRest = 29;
 export const qBits = 30;
 export const qIsDark = 31;
-export const qCholesky11 = 32;
-export const qCholesky21 = 33;
-export const qCholesky22 = 34;
+/** Square of the distance beyond which a circle's line ends. */
+export const qCircleHighSquare = 32;
 
 // A cylinder's record.
 export const cColumn = 0;

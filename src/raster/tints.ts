@@ -15,21 +15,24 @@ export function srgb(light: number): number {
 
 /** Brightest that light of shaders/chunks/_light.glsl becomes, rounded up. */
 const brightest = 1.33;
-const offset = 0.055;
 
-/** sRGB + 0.055 of a colour under light above 1, as `lit` of the shader chunk has it. */
+/** Of the power law of sRGB, in bytes: 255 × 0.055, and what its power is multiplied with. */
+export const inkOffset = 14.025;
+export const inkScale = 269.025;
+
+/** Byte + 14.025 of a colour under light above 1, as `lit` of the shader chunk has it. */
 function overlit(colour: number, light: number): number {
-  return srgb(1 - (1 - Math.min(colour, 0.999)) ** light) + offset;
+  return 255 * srgb(1 - (1 - Math.min(colour, 0.999)) ** light) + inkOffset;
 }
 
 /**
  * What the shading loop needs of a colour, three numbers a channel: S(t) = a + b t + c t², t = max(light − 1, 0), with
- * sRGB = S(t)·min(light, 1)^(5/12) − 0.055. The power law of sRGB makes everything that darkens a factor, so that one power
+ * 255 sRGB = S(t)·min(light, 1)^(5/12) − 14.025. The power law of sRGB makes everything that darkens a factor, so that one power
  * a pixel serves all channels; above 1 a parabola through three points follows the shader to better than 1/1000.
  */
 function tintChannel(byte: number, tints: Float32Array, at: number): void {
   const colour = linearLight(byte);
-  const a = 1.055 * colour ** (5 / 12);
+  const a = inkScale * colour ** (5 / 12);
   const [t1, t2] = [(brightest - 1) / 2, brightest - 1];
   const s1 = (overlit(colour, 1 + t1) - a) / t1;
   const s2 = (overlit(colour, brightest) - a) / t2;

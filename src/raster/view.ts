@@ -2,7 +2,7 @@ import type { Camera, Viewport } from '#src/scene/camera.ts';
 import { pixelsPerAngstrom, viewRotation } from '#src/scene/camera.ts';
 import { projection, projectPoint } from '#src/scene/project.ts';
 import type { Scene } from '#src/scene/scene.ts';
-import type { RenderTheme, Rgb } from '#src/scene/theme.ts';
+import type { RenderTheme } from '#src/scene/theme.ts';
 import { ringPx } from '#src/scene/theme.ts';
 import * as S from './slots.ts';
 import { pixelOf } from './tints.ts';
@@ -61,15 +61,11 @@ export function fillView(
   f[S.nearest] = middle + reach;
   f[S.perDepth] = 1 / Math.max(2 * reach, 1);
   f[S.depthCue] = theme.depthCue;
-  f.set(shares(theme.paper), S.paper);
-  f.set(shares(theme.line), S.lineColour);
+  f.set(theme.paper, S.paper);
+  f.set(theme.line, S.lineColour);
   f[S.lineWidth] = scene.lines.widthPx;
   f[S.circleWidth] = theme.circleWidthPx;
   f[S.rimWidth] = theme.rimWidthPx;
   f[S.ringInner] = ringPx[0];
   f[S.ringOuter] = ringPx[1];
-}
-
-function shares(rgb: Rgb): number[] {
-  return rgb.map((byte) => byte / 255);
 }

@@ -71,7 +71,7 @@ function blend(at: i32, cover: f32, z: f32): void {
   const fade = real(S.depthCue) * far;
   for (let k = 0; k < 3; k++) {
     const line = real(S.lineColour + k);
-    const own = <f32>255 * (line + (real(S.paper + k) - line) * fade);
+    const own = line + (real(S.paper + k) - line) * fade;
     const byte = <f32>load<u8>(at + k);
     store<u8>(at + k, <i32>(byte + (own - byte) * cover + <f32>0.5));
   }

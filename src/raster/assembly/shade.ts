@@ -1,6 +1,10 @@
 import * as S from '../slots.ts';
 import { lanes, part, real, setPart, smooth, whole } from './memory.ts';
 
+/** As inkOffset and inkScale of ../tints.ts. */
+const inkOffset: f32 = 14.025;
+const inkScale: f32 = 269.025;
+
 /** As shadePass of ../twin/shade.ts: run by run, four samples a step; what a step writes too far is overwritten by the next. */
 export function shadePass(first: i32, count: i32): void {
   const columns = whole(S.columns);
@@ -70,6 +74,8 @@ function fillQuadric(object: i32, r: i32): void {
   const halfWidth = <f32>0.5 * min<f32>(real(S.circleWidth), <f32>0.5 + <f32>0.055 * narrowest);
   setPart(r, S.qCircleLow, (halfWidth - <f32>0.35) * scale);
   setPart(r, S.qCirclePer, 1 / (<f32>0.7 * scale));
+  const high = (halfWidth + <f32>0.35) * scale;
+  setPart(r, S.qCircleHighSquare, high * high);
   setPart(r, S.qCircleInk, <f32>0.92 * smooth(narrowest, 4, <f32>(1.0 / 6.0)));
   setPart(r, S.qRimInk, <f32>0.52 * smooth(narrowest, 2, 0.25));
   const rim = min<f32>(1, (real(S.rimWidth) + <f32>0.4) / narrowest);
@@ -77,7 +83,7 @@ function fillQuadric(object: i32, r: i32): void {
   store<i32>(r + (S.qBits << 2), load<u8>(whole(S.circlesAt) + object));
   const tint: i32 = whole(S.quadricTintsAt) + ((S.tintSize * object) << 2);
   const scaled = f32x4(part(tint, 0), part(tint, 3), part(tint, 6), 0);
-  const linear = power24(f32x4.mul(scaled, f32x4.splat(1 / 1.055)));
+  const linear = power24(f32x4.mul(scaled, f32x4.splat(1 / inkScale)));
   const luminance =
     <f32>0.2126 * f32x4.extract_lane(linear, 0) +
     <f32>0.7152 * f32x4.extract_lane(linear, 1) +
@@ -123,19 +129,23 @@ function softLight(x: v128, y: v128, z: v128): v128 {
   return f32x4.mul(form, f32x4.sub(f32x4.splat(1), f32x4.mul(f32x4.mul(away, away), f32x4.splat(0.25))));
 }
 
-/** One channel as a byte in each lane: tint under light, power of what darkens it, white mixed in, faded. */
-function channel(tint: i32, k: i32, over: v128, power: v128, fade: v128): v128 {
+/** Tint under light above 1, of one channel: byte + 14.025 where nothing darkens it. */
+function tinted(tint: i32, k: i32, over: v128): v128 {
   const at = tint + 12 * k;
   const inner = f32x4.add(lanes(at, 1), f32x4.mul(over, lanes(at, 2)));
-  const value = f32x4.mul(f32x4.add(lanes(at, 0), f32x4.mul(over, inner)), power);
-  return mixed(value, k, fade);
+  return f32x4.add(lanes(at, 0), f32x4.mul(over, inner));
 }
 
-function mixed(value: v128, k: i32, fade: v128): v128 {
-  const srgb = f32x4.sub(value, f32x4.splat(0.055));
-  const faded = f32x4.add(srgb, f32x4.mul(f32x4.sub(lanes((S.paper + k) << 2, 0), srgb), fade));
-  const scaled = f32x4.add(f32x4.mul(faded, f32x4.splat(255)), f32x4.splat(0.5));
-  return i32x4.trunc_sat_f32x4_s(f32x4.pmin(f32x4.splat(255), f32x4.pmax(f32x4.splat(0), scaled)));
+/** Rounded to a byte: 2^23 added, a whole number is left in the low bits. */
+function byteOf(value: v128): v128 {
+  const held = f32x4.pmin(f32x4.splat(255), f32x4.pmax(f32x4.splat(0), value));
+  return v128.and(f32x4.add(held, f32x4.splat(8388608)), i32x4.splat(255));
+}
+
+/** Faded towards the paper; `near` already holds the share of its own colour. */
+function faded(near: v128, k: i32, fade: v128): v128 {
+  const paper = f32x4.mul(f32x4.splat(real(S.paper + k) + inkOffset), fade);
+  return byteOf(f32x4.sub(f32x4.add(near, paper), f32x4.splat(inkOffset)));
 }
 
 function pixels(red: v128, green: v128, blue: v128): v128 {
@@ -151,21 +161,21 @@ function fadeOf(z: v128): v128 {
 function colourOf(tint: i32, light: v128, ink: v128, z: v128): v128 {
   const one = f32x4.splat(1);
   const over = f32x4.pmax(f32x4.splat(0), f32x4.sub(light, one));
-  const power = power512(f32x4.mul(f32x4.pmin(one, light), ink));
   const fade = fadeOf(z);
-  const red = channel(tint, 0, over, power, fade);
-  const green = channel(tint, 1, over, power, fade);
-  return pixels(red, green, channel(tint, 2, over, power, fade));
+  const power = f32x4.mul(power512(f32x4.mul(f32x4.pmin(one, light), ink)), f32x4.sub(one, fade));
+  const red = faded(f32x4.mul(tinted(tint, 0, over), power), 0, fade);
+  const green = faded(f32x4.mul(tinted(tint, 1, over), power), 1, fade);
+  return pixels(red, green, faded(f32x4.mul(tinted(tint, 2, over), power), 2, fade));
 }
 
 /** A channel of a dark colour whose circles are drawn in light. */
 function inkedChannel(tint: i32, k: i32, over: v128, power: v128, white: v128, ink: v128, fade: v128): v128 {
-  const at = tint + 12 * k;
-  const inner = f32x4.add(lanes(at, 1), f32x4.mul(over, lanes(at, 2)));
-  const value = f32x4.mul(f32x4.add(lanes(at, 0), f32x4.mul(over, inner)), power);
-  const linear = power24(f32x4.mul(value, f32x4.splat(1 / 1.055)));
-  const light = f32x4.add(linear, f32x4.mul(f32x4.sub(f32x4.splat(1), linear), white));
-  return mixed(f32x4.mul(power512(f32x4.mul(light, ink)), f32x4.splat(1.055)), k, fade);
+  const one = f32x4.splat(1);
+  const value = f32x4.mul(tinted(tint, k, over), power);
+  const linear = power24(f32x4.mul(value, f32x4.splat(1 / inkScale)));
+  const light = f32x4.add(linear, f32x4.mul(f32x4.sub(one, linear), white));
+  const own = f32x4.mul(power512(f32x4.mul(light, ink)), f32x4.splat(inkScale));
+  return faded(f32x4.mul(own, f32x4.sub(one, fade)), k, fade);
 }
 
 function inkedColour(tint: i32, light: v128, ink: v128, white: v128, z: v128): v128 {
@@ -253,6 +263,7 @@ function circleInk(r: i32, bits: i32, dx: v128, dy: v128, unit: v128, ex: v128, 
   if (bits & 1) least = f32x4.pmin(least, circleSquare(r, 0, dx, dy, unit, per, ex, ey));
   if (bits & 2) least = f32x4.pmin(least, circleSquare(r, 1, dx, dy, unit, per, ex, ey));
   if (bits & 4) least = f32x4.pmin(least, circleSquare(r, 2, dx, dy, unit, per, ex, ey));
+  if (!v128.any_true(f32x4.lt(least, lanes(r, S.qCircleHighSquare)))) return f32x4.splat(0);
   const away = smoothLanes(f32x4.sqrt(least), lanes(r, S.qCircleLow), lanes(r, S.qCirclePer));
   return f32x4.mul(lanes(r, S.qCircleInk), f32x4.sub(f32x4.splat(1), away));
 }

@@ -71,7 +71,7 @@ function blend({ f, i }: KernelViews, at: number, cover: number, z: number): voi
   let pixel = 255 << 24;
   for (let k = 0; k < 3; k++) {
     const line = f[S.lineColour + k]!;
-    const own = 255 * (line + (f[S.paper + k]! - line) * fade);
+    const own = line + (f[S.paper + k]! - line) * fade;
     const byte = (under >> (8 * k)) & 255;
     pixel |= Math.floor(byte + (own - byte) * cover + 0.5) << (8 * k);
   }

@@ -77,9 +77,6 @@ function quadric(m: KernelViews, index: number, kept: number): number {
   f[r + S.oReach] = l11;
   f[r + S.oNearest] = f[r + S.qDepth]! + Math.sqrt(zz);
   f[r + S.qNarrowest] = narrow / Math.sqrt(l11 * l11 + l21 * l21 + l22 * l22) / f[S.pixelScale]!;
-  f[r + S.qCholesky11] = l11;
-  f[r + S.qCholesky21] = l21;
-  f[r + S.qCholesky22] = l22;
   f[r + S.oShaded] = 0;
   return keep(m, index, r, height, kept);
 }

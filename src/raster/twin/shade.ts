@@ -1,4 +1,5 @@
 import * as S from '../slots.ts';
+import { inkOffset, inkScale } from '../tints.ts';
 import type { KernelViews } from './memory.ts';
 import { smooth, wordAt } from './memory.ts';
 
@@ -52,13 +53,14 @@ function fillQuadric(m: KernelViews, object: number, r: number): void {
   const halfWidth = 0.5 * Math.min(f[S.circleWidth]!, 0.5 + 0.055 * narrowest);
   f[r + S.qCircleLow] = (halfWidth - 0.35) * scale;
   f[r + S.qCirclePer] = 1 / (0.7 * scale);
+  f[r + S.qCircleHighSquare] = ((halfWidth + 0.35) * scale) ** 2;
   f[r + S.qCircleInk] = 0.92 * smooth(narrowest, 4, 1 / 6);
   f[r + S.qRimInk] = 0.52 * smooth(narrowest, 2, 1 / 4);
   const rim = Math.min(1, (f[S.rimWidth]! + 0.4) / narrowest);
   f[r + S.qRimRest] = rim * (2 - rim);
   i[r + S.qBits] = b[i[S.circlesAt]! + object]!;
   const tint = wordAt(m, S.quadricTintsAt) + S.tintSize * object;
-  const linear = (k: number): number => power24(f[tint + 3 * k]! / 1.055);
+  const linear = (k: number): number => power24(f[tint + 3 * k]! / inkScale);
   f[r + S.qIsDark] = 0.2126 * linear(0) + 0.7152 * linear(1) + 0.0722 * linear(2) > 0.14 ? 0 : 1;
   f[r + S.oShaded] = 1;
 }
@@ -105,12 +107,12 @@ function colourOf(
     const at = tint + 3 * k;
     let value = (f[at]! + over * (f[at + 1]! + over * f[at + 2]!)) * power;
     if (white > 0) {
-      const linear = power24(value / 1.055);
-      value = 1.055 * power512((linear + (1 - linear) * white) * ink);
+      const linear = power24(value / inkScale);
+      value = inkScale * power512((linear + (1 - linear) * white) * ink);
     }
-    const srgb = value - 0.055;
-    const mixed = srgb + (f[S.paper + k]! - srgb) * fade;
-    pixel |= Math.min(255, Math.max(0, Math.floor(mixed * 255 + 0.5))) << (8 * k);
+    const byte = value - inkOffset;
+    const mixed = byte + (f[S.paper + k]! - byte) * fade;
+    pixel |= Math.min(255, Math.max(0, Math.floor(mixed + 0.5))) << (8 * k);
   }
   return pixel;
 }
@@ -176,6 +178,7 @@ function circleInk(
     const gy = f[at + 1]! - steep * ey;
     least = Math.min(least, (u * u) / (gx * gx + gy * gy));
   }
+  if (least >= f[r + S.qCircleHighSquare]!) return 0;
   return f[r + S.qCircleInk]! * (1 - smooth(Math.sqrt(least), f[r + S.qCircleLow]!, f[r + S.qCirclePer]!));
 }
 
