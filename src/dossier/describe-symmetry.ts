@@ -1,6 +1,7 @@
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { CrystalSymmetry } from '#src/crystal/crystal.ts';
-import { identifySettingIn } from '#src/crystal/space-group.ts';
+import { identifySettingIn, settingFromHermannMauguin } from '#src/crystal/space-group.ts';
+import type { SpaceGroupSetting } from '#src/crystal/space-group.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import type { ChosenCrystal } from './choose-symmetry.ts';
 import type { DossierSettings } from './dossier.ts';
@@ -13,10 +14,20 @@ export interface SymmetryDescription {
   readonly siteSymmetry: readonly (string | null)[];
 }
 
-function heading({ hermannMauguin, number, operations, stated }: CrystalSymmetry): string {
+/**
+ * The group in one line. Where the file's symbol names another group than its operations form, both stand there: the
+ * operations count. `tabulated` is the setting of the operations, null outside the tables.
+ */
+function heading(symmetry: CrystalSymmetry, tabulated: SpaceGroupSetting | null): string {
+  const { hermannMauguin, number, operations, stated } = symmetry;
   if (!stated) return 'no symmetry stated';
   const name = hermannMauguin ?? `group of ${operations.length} operations`;
-  return number === null ? name : `${name} (No. ${number})`;
+  if (number === null) return name;
+  const meant = hermannMauguin === null ? null : settingFromHermannMauguin(hermannMauguin);
+  if (tabulated && meant && meant.number !== null && meant.number !== number) {
+    return `${tabulated.hermannMauguinShort} (No. ${number}) by its operations, named ${name} in the file`;
+  }
+  return `${name} (No. ${number})`;
 }
 
 /**
@@ -55,7 +66,7 @@ export function describeSymmetry(
   };
   return {
     symmetry: named,
-    spaceGroup: heading(named),
+    spaceGroup: heading(named, setting),
     wyckoff: told?.wyckoff ?? found?.wyckoff ?? unknown.wyckoff,
     siteSymmetry: told?.siteSymmetry ?? found?.siteSymmetry ?? unknown.siteSymmetry,
   };
