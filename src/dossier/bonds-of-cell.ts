@@ -1,11 +1,21 @@
 import type { Vec3 } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import { findBonds } from '#src/crystal/bonds.ts';
+import type { Crystal } from '#src/crystal/crystal.ts';
 import { wholeMolecules } from '#src/crystal/molecules.ts';
 import type { ChosenCrystal } from './choose-symmetry.ts';
 import type { BondRecord } from './dossier.ts';
 
-/** Bonds among all atoms of the cell by atom id, and the cell shifts that make finite molecules whole. */
+/**
+ * Atoms × atoms per Å³ beyond which bonds are not looked for: the search visits some hundred times as many pairs. Crystals have
+ * 0.02 to 0.3 atoms per Å³, so that 200,000 atoms of one stay below; a cell in the wrong unit does not.
+ */
+const crowdingLimit = 60_000;
+
+/**
+ * Bonds among all atoms of the cell by atom id, and the cell shifts that make finite molecules whole. None, with
+ * `cell-too-crowded`, where atoms are packed far denser than in any crystal.
+ */
 export function bondsOf(
   { crystal, sites }: ChosenCrystal,
   log: ProblemLog,
@@ -16,6 +26,7 @@ export function bondsOf(
   const atoms = sites.flatMap(({ site, atoms: images, cellShifts }) =>
     images.map((atom, image) => ({ site, atom, cellShift: cellShifts[image] ?? ([0, 0, 0] as const) })),
   );
+  if (isTooCrowded(crystal, atoms.length, log)) return { bonds: [], wholeMolecules: {} };
   const found = findBonds(
     atoms.map(({ site, atom, cellShift }) => ({
       element: site.element,
@@ -43,4 +54,21 @@ export function bondsOf(
     shift.some((x) => x !== 0) ? [[atoms[index]!.atom.id, shift]] : [],
   );
   return { bonds, wholeMolecules: Object.fromEntries(moved) };
+}
+
+function isTooCrowded({ lattice, place }: Crystal, atoms: number, log: ProblemLog): boolean {
+  if (!lattice || (atoms * atoms) / lattice.volume <= crowdingLimit) return false;
+  const density = Number((atoms / lattice.volume).toPrecision(3));
+  log.add(
+    'warning',
+    'cell-too-crowded',
+    `The cell holds ${atoms} atoms, ${density} per Å³: bonds were not looked for.`,
+    {
+      place,
+      got: `${density} atoms per Å³`,
+      allowed: 'about 0.02 to 0.3 atoms per Å³ in crystals',
+      hint: 'The cell may be in another unit than Å, or operations or coordinates may be wrong.',
+    },
+  );
+  return true;
 }
