@@ -1,6 +1,7 @@
 import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
+import { chooseTensors, elementsWithTensors } from '#src/scene/tensor-choice.ts';
 import { availableQuantities, quantityToShow } from '#src/store/state.ts';
 import { numberInput } from './number-input.ts';
 import { StoreElement } from './store-element.ts';
@@ -98,7 +99,7 @@ export class ShowPanel extends StoreElement {
                 type="radio"
                 name="quantity"
                 .checked=${picture.showTensors && option === quantity}
-                @change=${() => this.#set({ quantity: option, showTensors: true }, `${option} is shown`)}
+                @change=${() => this.#set({ quantity: option, showTensors: true, tensorElements: 'auto' }, `${option} is shown`)}
               />${quantityWords[option]}</label
             >`,
         )}
@@ -111,6 +112,7 @@ export class ShowPanel extends StoreElement {
           />none</label
         >
       </fieldset>
+      ${picture.showTensors ? this.#elements(quantity) : nothing}
       ${this.#choice('ellipsoid', 'semi-axes', picture.ellipsoid, [
         ['auto', 'as fits the values'],
         ['total', 'principal values'],
@@ -121,6 +123,37 @@ export class ShowPanel extends StoreElement {
       )}
       ${unit} <span class="soft">empty: automatic</span>
     `;
+  }
+
+  /** Which elements carry tensors: a tick for each. */
+  #elements(quantity: 'shielding' | 'shift' | 'efg'): TemplateResult | typeof nothing {
+    const { derived, picture } = this.store!.state;
+    const dossier = derived?.dossier;
+    const all = dossier ? elementsWithTensors(dossier, quantity) : [];
+    if (!dossier || all.length < 2) return nothing;
+    const shown = chooseTensors(dossier, picture)?.elements ?? all;
+    const change = (element: string, isOn: boolean): void => {
+      const next = all.filter((one) => (one === element ? isOn : shown.includes(one)));
+      if (next.length === 0) this.#set({ showTensors: false }, 'tensors are hidden');
+      else
+        this.#set(
+          { tensorElements: next.length === all.length ? null : next },
+          `tensors of ${next.join(', ')}`,
+        );
+    };
+    return html`<fieldset>
+      <legend>Tensors of</legend>
+      ${all.map(
+        (element) =>
+          html`<label
+            ><input
+              type="checkbox"
+              .checked=${shown.includes(element)}
+              @change=${(event: Event) => change(element, (event.target as HTMLInputElement).checked)}
+            />${element}</label
+          >`,
+      )}
+    </fieldset>`;
   }
 
   #choice<Key extends 'extent' | 'ellipsoid'>(

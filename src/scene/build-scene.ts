@@ -6,7 +6,7 @@ import { bondCylinders, nearPairs } from './bond-layer.ts';
 import { caption, scaleStatement } from './caption.ts';
 import { cellAxes, cellEdges } from './cell-layer.ts';
 import type { DrawnAtom } from './drawn-atoms.ts';
-import { bondedNeighbours, drawnAtoms } from './drawn-atoms.ts';
+import { bondedNeighbours, drawnAtoms, mostAtoms } from './drawn-atoms.ts';
 import { enclosingSphere } from './framing.ts';
 import type { ElementKey, Scene } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
@@ -25,7 +25,8 @@ export function buildScene(dossier: CrystalDossier, options: Partial<SceneOption
   const chosen: SceneOptions = { ...defaultSceneOptions, ...options };
   const extent = chooseExtent(dossier, chosen.extent);
   const own = drawnAtoms(dossier, extent);
-  const completed = extent === 'cell' && chosen.bonds && chosen.bondedNeighbours;
+  const isCut = own.length >= mostAtoms;
+  const completed = extent === 'cell' && chosen.bonds && chosen.bondedNeighbours && !isCut;
   const atoms = completed ? [...own, ...bondedNeighbours(dossier, own)] : own;
   const choice = chooseTensors(dossier, chosen);
   const tensors = choice && drawTensors(dossier, atoms, choice, chosen);
@@ -54,7 +55,10 @@ export function buildScene(dossier: CrystalDossier, options: Partial<SceneOption
       extent,
       neighbours: atoms.length > own.length,
       hasCell: dossier.lattice !== null,
-      onlyElements: chosen.tensorElements,
+      onlyElements: choice?.elements ?? null,
+      elementsUnasked: choice?.isOwnChoice ?? false,
+      cutAt: isCut ? own.length : null,
+      atomsInCell: dossier.atomsInCell,
       hiddenSites: sharedPositions(dossier).drawnInstead.size,
     }),
     extent,

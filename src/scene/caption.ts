@@ -20,6 +20,11 @@ export interface CaptionParts {
   readonly neighbours: boolean;
   /** Elements whose tensors are drawn, where only some are. */
   readonly onlyElements: readonly string[] | null;
+  /** Nobody asked for these elements: the scale did. */
+  readonly elementsUnasked: boolean;
+  /** Atoms drawn, where the limit left out the rest. */
+  readonly cutAt: number | null;
+  readonly atomsInCell: number;
   /** Sites not drawn because another one with a larger occupancy stands on their position. */
   readonly hiddenSites: number;
 }
@@ -27,6 +32,11 @@ export interface CaptionParts {
 /** A number for people: − as minus sign, no trailing zeros, at most four significant digits. */
 export function printed(value: number): string {
   return String(Number(value.toPrecision(4))).replace('-', '−');
+}
+
+/** 30000 → 30,000 */
+function grouped(count: number): string {
+  return String(count).replace(/\B(?=(\d{3})+$)/g, ',');
 }
 
 /** The scale of the tensors in words, such as "1 Å = 250 ppm". */
@@ -44,7 +54,15 @@ export function caption(parts: CaptionParts): string {
       `There are no ${asked === 'EFG' ? asked : asked.toLowerCase()} tensors here, so this is shown instead.`,
     );
   }
+  if (parts.elementsUnasked && scale)
+    sentences.push(
+      'At the one scale of the picture, large and small tensors of the other elements would drown one another; they are drawn too when ticked under Show.',
+    );
   sentences.push(...notes, extentSentence(parts));
+  if (parts.cutAt !== null)
+    sentences.push(
+      `Only the first ${grouped(parts.cutAt)} atoms are drawn, the limit of the picture; there are ${grouped(parts.atomsInCell)}, all of them in the table.`,
+    );
   if (parts.hiddenSites > 0)
     sentences.push('Where sites share a position, the one with the largest occupancy is drawn.');
   return sentences.join(' ');

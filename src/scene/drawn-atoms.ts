@@ -20,10 +20,13 @@ export interface DrawnAtom {
 /** An atom this close to a face, in Å along the cell edge, lies on it and is repeated on the opposite face. */
 const faceToleranceAngstrom = 0.02;
 
+/** Atoms drawn at most: more would block the page while the picture is made, and show nothing but their surface. */
+export const mostAtoms = 30_000;
+
 /**
  * Atoms of the picture: of one unit cell with those on faces, edges and corners repeated, or moved together into whole
  * molecules (`wholeMolecules` of the dossier). Without a cell both are the atoms as given. Of sites that share a position
- * the one with the largest occupancy is drawn.
+ * the one with the largest occupancy is drawn. After `mostAtoms` the rest is left out.
  */
 export function drawnAtoms(dossier: CrystalDossier, extent: 'cell' | 'molecules'): DrawnAtom[] {
   const drawn: DrawnAtom[] = [];
@@ -32,6 +35,7 @@ export function drawnAtoms(dossier: CrystalDossier, extent: 'cell' | 'molecules'
     if (drawnInstead.has(site.index)) continue;
     for (const atom of site.equivalents) {
       for (const cellShift of shiftsOf(dossier, atom, extent)) {
+        if (drawn.length >= mostAtoms) return drawn;
         drawn.push(copyOf(dossier, atom, site, cellShift, false));
       }
     }

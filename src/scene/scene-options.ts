@@ -5,8 +5,11 @@ export interface SceneOptions {
   /** A quantity the crystal has no tensors of falls back to one it has. */
   readonly quantity: SceneQuantity | 'auto';
   readonly showTensors: boolean;
-  /** Elements whose tensors are drawn; null for all. The other atoms stay small spheres. */
-  readonly tensorElements: readonly string[] | null;
+  /**
+   * Elements whose tensors are drawn; null for all. The other atoms stay small spheres. `auto` is all, but where one scale
+   * would drown small field gradients beside large ones, those of quadrupolar nuclei other than hydrogen and oxygen.
+   */
+  readonly tensorElements: readonly string[] | 'auto' | null;
   /** `cell`: atoms of one unit cell, those on its faces and edges repeated; `molecules`: each molecule whole. */
   readonly extent: 'auto' | 'cell' | 'molecules';
   readonly ellipsoid: 'auto' | 'total' | 'deviation';
@@ -25,7 +28,7 @@ export interface SceneOptions {
 export const defaultSceneOptions: SceneOptions = {
   quantity: 'auto',
   showTensors: true,
-  tensorElements: null,
+  tensorElements: 'auto',
   extent: 'auto',
   ellipsoid: 'auto',
   unitsPerAngstrom: null,

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { asMat3, multiply, transpose } from '#src/base/matrix3.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
+import { mostAtoms } from '#src/scene/drawn-atoms.ts';
 import { defaultSceneOptions } from '#src/scene/scene-options.ts';
 import { chooseTensors, ellipsoidColour } from '#src/scene/tensor-choice.ts';
 import type { PickEntry, Scene } from '#src/scene/scene.ts';
@@ -269,6 +270,49 @@ describe('what was chosen is said', () => {
     const withCircles = atomsOf(scene).filter(({ circles }) => circles !== 0);
     expect(new Set(withCircles.map(({ pick }) => pick.siteIndex))).toEqual(new Set([1]));
     expect(scene.caption).toContain('ellipsoids of O:');
+  });
+
+  it('draws of field gradients the heavier quadrupolar nuclei where the others would drown them', () => {
+    const gradient = (vzz: number): Mat3 => [-vzz / 2, 0, 0, 0, -vzz / 2, 0, 0, 0, vzz];
+    const crystal = (ofHydrogen: number) => {
+      const made = madeDossier({
+        rows: cube,
+        sites: [
+          { label: 'Al1', element: 'Al', position: [0.2, 0.2, 0.2], efg: gradient(0.1) },
+          { label: 'H1', element: 'H', position: [0.6, 0.6, 0.6], efg: gradient(ofHydrogen) },
+        ],
+      });
+      const sites = made.sites.map((site) => ({
+        ...site,
+        efg: { ...site.efg!, couplingMHz: site.element === 'Al' ? 3.4 : null },
+      }));
+      return { ...made, sites };
+    };
+    const drawn = buildScene(crystal(0.7));
+    expect(drawn.caption).toContain('EFG ellipsoids of Al:');
+    expect(drawn.caption).toContain('under Show');
+    expect(drawn.elements.map(({ element }) => element)).toEqual(['H']);
+    expect(buildScene(crystal(0.5)).caption).toContain('EFG ellipsoids:');
+    expect(buildScene(crystal(0.7), { tensorElements: null }).caption).toContain('EFG ellipsoids:');
+  });
+
+  it('draws a limited number of atoms of a very large file and states it', () => {
+    const one = madeDossier({
+      rows: cube,
+      sites: [
+        { label: 'O1', element: 'O', position: [0.3, 0.3, 0.3], shieldingPpm: [9, 0, 0, 0, 9, 0, 0, 0, 9] },
+      ],
+    });
+    const [site] = one.sites;
+    const many = Array.from({ length: mostAtoms + 10 }, (_, index) => ({
+      ...site!,
+      index,
+      equivalents: [{ ...site!.equivalents[0]!, siteIndex: index, id: `${index}:0` }],
+    }));
+    const scene = buildScene({ ...one, sites: many, atomsInCell: many.length });
+    expect(scene.quadrics.count).toBe(mostAtoms);
+    expect(scene.caption).toContain('Only the first 30,000 atoms are drawn');
+    expect(scene.caption).toContain('there are 30,010');
   });
 
   it('crosses worker borders', () => {
