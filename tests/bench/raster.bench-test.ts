@@ -51,7 +51,7 @@ it('rows 1 to 4 and 6: frames by the CPU renderer, by WebGL in software, by an i
   const sizes = [500, 2_000, 10_000, 50_000];
   const times: FrameTimes[] = [];
   for (const count of sizes) {
-    const rounds = count > 2_000 ? 2 : 5;
+    const rounds = count > 2_000 ? 1 : 3;
     times.push(
       await page.evaluate(([n, r, mesh]) => window.frameTimes(n, r, mesh), [
         count,

@@ -63,12 +63,12 @@ async function frameTimes(count: number, rounds: number, withMesh: boolean): Pro
   const best = { mesh: Infinity, webgl: Infinity, raster: Infinity, pick: Infinity };
   const keep = (way: keyof FrameTimes, ms: number): void => void (best[way] = Math.min(best[way], ms));
   for (let round = 0; round <= rounds; round++) {
-    for (let step = 0; step < 6; step++) {
+    for (let step = 0; step < 15; step++) {
       const camera = turn(close, 10 * round + step, 5, viewport);
       const ms = await timed(() => raster(camera));
       if (round > 0) keep('raster', ms);
     }
-    for (let step = 0; step < 2; step++) {
+    for (let step = 0; step < (count > 2_000 ? 1 : 2); step++) {
       webgl.setCamera(turn(close, 10 * round + step, 5, viewport));
       keep('webgl', await timed(() => (webgl.render(), finish(glCanvas))));
     }
@@ -99,7 +99,7 @@ async function stillTimes(side: number): Promise<{ readonly raster: number; read
   client.setScene(scene);
   const view = { camera: askew, viewport: square, theme: lightTheme, pixelRatio: 1, samplesAcross: 2 };
   const best = { raster: Infinity, webgl: Infinity };
-  for (let round = 0; round < 3; round++) {
+  for (let round = 0; round < 2; round++) {
     best.raster = Math.min(best.raster, await timed(async () => void (await client.draw(view))));
     best.webgl = Math.min(best.webgl, await timed(() => (webgl.render(), finish(canvas))));
   }
