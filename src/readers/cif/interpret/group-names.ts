@@ -73,18 +73,29 @@ export function readGroupNames(
   const squeeze = (text: string): string => text.replace(/[\s_]+/g, '');
   const mistaken = hall !== null && symbols.some(({ text }) => squeeze(text) === squeeze(hall.text));
   if (hall && !mistaken) push(hall, fromHall(hall));
-  for (const item of symbols) push(item, fromSymbol(view, item, cell) ?? fromHall(item));
+  for (const item of symbols) {
+    const digits = groupNumber(item.text);
+    const bare = digits === null ? null : fromNumber(item, digits, cell);
+    push(item, bare ?? fromSymbol(view, item, cell) ?? fromHall(item));
+  }
   if (hall && mistaken) push(hall, fromSymbol(view, hall, cell) ?? fromHall(hall));
   const number = knownItem(view, ...numberItems);
-  const numeral = number === null ? Number.NaN : Number(number.text.replace(/^['"\s#]+|[\s'"]+$/g, ''));
-  const valid = Number.isInteger(numeral) && numeral >= 1 && numeral <= 230;
-  if (number) push(number, valid ? fromNumber(number, numeral, cell) : null);
+  const numeral = number && groupNumber(number.text);
+  if (number) {
+    push(number, numeral === null ? fromSymbol(view, number, cell) : fromNumber(number, numeral, cell));
+  }
   return {
     hermannMauguin: symbols[0]?.text ?? null,
     hall: hall && !mistaken ? hall.text : null,
-    number: valid ? numeral : null,
+    number: numeral,
     groups,
   };
+}
+
+/** A bare number from 1 to 230, which also stands in a symbol's item by mistake. */
+function groupNumber(text: string): number | null {
+  const numeral = Number(text.replace(/^['"\s#]+|[\s'"]+$/g, '') || Number.NaN);
+  return Number.isInteger(numeral) && numeral >= 1 && numeral <= 230 ? numeral : null;
 }
 
 function reportUnknown(view: BlockView, item: KnownItem, weight: 'warning' | 'note', log: ProblemLog): void {

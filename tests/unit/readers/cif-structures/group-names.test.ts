@@ -29,6 +29,8 @@ describe('without listed operations', () => {
     ['_symmetry_Int_Tables_number', '14', 'number'],
     ['_space_group_IT_number', '14', 'number'],
     ['_symmetry.Int_Tables_number', '14', 'number'],
+    ['_symmetry_space_group_name_H-M', '14', 'number'],
+    ['_symmetry_Int_Tables_number', 'P 21/c', 'Hermann–Mauguin symbol'],
   ])('%s %s serves', (item, value, kind) => {
     const reading = block(monoclinic, `${item} '${value}'\n`, atom);
     expect(operationsOf(reading).sort()).toEqual(['-x,-y,-z', '-x,y+1/2,-z+1/2', 'x,-y+1/2,z+1/2', 'x,y,z']);
