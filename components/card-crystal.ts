@@ -1,14 +1,13 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { CrystalDossier } from '#src/store/dossier-types.ts';
-import { formatCount, formatNumber } from './number-format.ts';
+import { counted, formatCount, formatNumber } from './number-format.ts';
 
-const sourceWords = {
-  file: 'operations listed in the file',
-  symbol: 'operations made from a symbol of the file',
-  found: 'searched in the atoms',
-  none: 'none',
-} as const;
+/** How many operations and where they are from: the reason alone where it says the number itself. */
+function symmetrySentence({ operations, reason }: CrystalDossier['symmetry']): string {
+  const count = counted(operations.length, 'operation');
+  return reason.includes(`${operations.length} operation`) ? reason : `${count}: ${reason}`;
+}
 
 /** What the crystal as a whole is: shown in the card while no site is chosen. */
 export function crystalOverview(dossier: CrystalDossier): TemplateResult {
@@ -18,11 +17,7 @@ export function crystalOverview(dossier: CrystalDossier): TemplateResult {
     ['volume', lattice ? `${formatNumber(lattice.volume, 3)} Å³` : null],
     ['frame', lattice ? lattice.frame : null],
     ['space group', spaceGroup || null],
-    [
-      'symmetry',
-      html`${formatCount(symmetry.operations.length)} operation${symmetry.operations.length === 1 ? '' : 's'},
-        ${sourceWords[symmetry.source]} <span class="soft">(${symmetry.reason})</span>`,
-    ],
+    ['symmetry', symmetrySentence(symmetry)],
     ['composition', compositionOf(dossier)],
     ['temperature', dossier.temperatureK === null ? null : `${formatNumber(dossier.temperatureK, 0)} K`],
     ['tensors', tensorsOf(dossier)],

@@ -52,6 +52,16 @@ export function formatTriple(values: readonly number[], decimals: number): strin
   return values.map((value) => formatNumber(value, decimals)).join(', ');
 }
 
+/** A position: at most `decimals` decimals, none that say nothing: 0.25 stays 0.25. */
+export function formatPosition(values: readonly number[], decimals: number): string {
+  return values.map((value) => formatNumber(value, decimals).replace(/\.?0+$/, '')).join(', ');
+}
+
+/** `1 atom`, `2 atoms`. */
+export function counted(count: number, word: string): string {
+  return `${formatCount(count)} ${word}${count === 1 ? '' : 's'}`;
+}
+
 /** A symmetry operation with true minus signs. */
 export function formatOperation(operation: string): string {
   return operation.replaceAll('-', '−').replaceAll(',', ', ').replaceAll(/, +/g, ', ');

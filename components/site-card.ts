@@ -10,7 +10,7 @@ import { matrixStyles } from './matrix-table.ts';
 import {
   formatNumber,
   formatOperation,
-  formatTriple,
+  formatPosition,
   isotopeSymbol,
   symmetrySymbol,
 } from './number-format.ts';
@@ -133,7 +133,7 @@ function summary(site: SiteDossier): string {
 }
 
 function positionOf({ fractional, cartesian }: Pick<EquivalentAtom, 'fractional' | 'cartesian'>): string {
-  return fractional ? formatTriple(fractional, 5) : `${formatTriple(cartesian, 4)} Å`;
+  return fractional ? formatPosition(fractional, 5) : `${formatPosition(cartesian, 5)} Å`;
 }
 
 function facts(site: SiteDossier, atom: EquivalentAtom | null, dossier: CrystalDossier): TemplateResult {

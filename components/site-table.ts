@@ -7,7 +7,7 @@ import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/store/dos
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { quantityToShow } from '#src/store/state.ts';
 import { axisNames } from './axis-names.ts';
-import { formatCount, formatOperation, formatTriple, raiseIsotopes } from './number-format.ts';
+import { counted, formatOperation, formatPosition, formatTriple, raiseIsotopes } from './number-format.ts';
 import { siteChip, valueSwatch } from './site-chip.ts';
 import type { SiteColumn } from './site-columns.ts';
 import { columnsFor, gridOf } from './site-columns.ts';
@@ -177,8 +177,8 @@ export class SiteTable extends StoreElement {
     const quantity = quantityToShow(picture.quantity, derived);
     const axes = quantity && atomAxes(site, atom, quantity);
     const position = atom.fractional
-      ? formatTriple(atom.fractional, 4)
-      : `${formatTriple(atom.cartesian, 3)} Å`;
+      ? formatPosition(atom.fractional, 5)
+      : `${formatPosition(atom.cartesian, 5)} Å`;
     const names = quantity ? axisNames(quantity) : [];
     return html`<div role="gridcell" class="atom-cell" aria-colspan=${this.#columns.length}>
       <div><span class="operation">${formatOperation(atom.operation)}</span> <span>at ${position}</span></div>
@@ -271,8 +271,8 @@ function matches(selection: Selection | null, row: Selection): boolean {
 }
 
 function headline(dossier: CrystalDossier): string {
-  const sites = `${formatCount(dossier.sites.length)} site${dossier.sites.length === 1 ? '' : 's'}`;
-  const atoms = `${formatCount(dossier.atomsInCell)} atoms${dossier.lattice ? ' in the cell' : ''}`;
+  const sites = counted(dossier.sites.length, 'site');
+  const atoms = `${counted(dossier.atomsInCell, 'atom')}${dossier.lattice ? ' in the cell' : ''}`;
   return `Sites · ${[sites, atoms, dossier.spaceGroup].filter(Boolean).join(' · ')}`;
 }
 

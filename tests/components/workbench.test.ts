@@ -79,7 +79,7 @@ describe('the page', () => {
     const atoms = rows('.atom').map(textOf);
     expect(atoms).toHaveLength(2);
     expect(atoms[1]).toContain('−x, −y, z');
-    expect(atoms[1]).toContain('at 0.9000, 0.8000, 0.3000');
+    expect(atoms[1]).toContain('at 0.9, 0.8, 0.3');
     // (0.6, 0.8, 0) under the half turn about z is (−0.6, −0.8, 0): an axis has no sign, the readable one is positive
     expect(atoms[1]).toContain('σ11 (0.600, 0.800, 0.000)');
     expect(rows('.site')[0]!.getAttribute('aria-expanded')).toBe('true');
@@ -122,7 +122,7 @@ describe('the page', () => {
     const root = page.part('ellipsite-site-card').shadowRoot;
     const facts = textOf(root.querySelector('.facts'));
     // −x, −y, z of 0.1, 0.2, 0.3
-    expect(facts).toContain('position of −x, −y, z 0.90000, 0.80000, 0.30000');
+    expect(facts).toContain('position of −x, −y, z 0.9, 0.8, 0.3');
     expect(card()).toContain('Principal axes of the atom −x, −y, z');
     expect(card()).toContain('Tensors of the atom −x, −y, z: those given for the site turned as R T Rᵀ');
   });
