@@ -2,15 +2,15 @@ import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { DerivedCase, ProposalSummary, SourceSummary } from '#src/store/engine-protocol.ts';
 import { drawerStyles } from './drawer-styles.ts';
-import { formatCount } from './number-format.ts';
+import { counted, formatCount } from './number-format.ts';
 import { askForPanel } from './panel.ts';
 import { acceptedWords, pickFiles } from './pick-files.ts';
+import { proposalButtons, quantityWords } from './proposal-buttons.ts';
 import type { SampleCase } from './sample-cases.ts';
 import { openSample, sampleCases } from './sample-cases.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
 
-const quantities = { shielding: 'shielding', shift: 'shift', efg: 'field-gradient' } as const;
 const kinds = { cif: 'CIF', xyz: 'XYZ', unknown: 'not recognised' } as const;
 
 /** The files of the case, how to open others, and the sample cases. */
@@ -33,12 +33,6 @@ export class CasePanel extends StoreElement {
       li div {
         min-width: 0;
         overflow-wrap: anywhere;
-      }
-      .commands {
-        display: flex;
-        flex-wrap: wrap;
-        gap: 8px;
-        margin: 8px 0 6px;
       }
       .proposal {
         border-left: 2px solid var(--accent);
@@ -114,18 +108,12 @@ export class CasePanel extends StoreElement {
     </ul>`;
   }
 
-  #proposal({ sourceId, name, quantity, reason }: ProposalSummary): TemplateResult {
-    const guess = quantity === 'unknown' ? '' : ` It looks like ${quantities[quantity]} (${reason}).`;
-    return html`<div class="proposal" role="group" aria-label="Column ${name}">
+  #proposal(proposal: ProposalSummary): TemplateResult {
+    const { name, quantity, reason } = proposal;
+    const guess = quantity === 'unknown' ? '' : ` It looks like ${quantityWords[quantity]} (${reason}).`;
+    return html`<div class="proposal" role="region" aria-label="Column ${name}">
       <p>Column <code>${name}</code> holds nine numbers an atom and was not taken.${guess} Read it as</p>
-      <div class="commands">
-        ${(['shielding', 'shift', 'efg'] as const).map(
-          (option) =>
-            html`<button class="line" @click=${() => this.store?.acceptColumn(sourceId, name, option)}>
-              ${quantities[option]}
-            </button>`,
-        )}
-      </div>
+      ${proposalButtons(this.store, proposal)}
     </div>`;
   }
 
@@ -151,13 +139,13 @@ function describe(source: SourceSummary, derived: DerivedCase): string {
     .filter(({ sourceId, used }) => sourceId === source.id && used)
     .map(
       ({ entryCount, quantity, unitGiven }) =>
-        `${formatCount(entryCount)} ${quantities[quantity]} tensor${entryCount === 1 ? '' : 's'} (${unitGiven})`,
+        `${formatCount(entryCount)} ${quantityWords[quantity]} tensor${entryCount === 1 ? '' : 's'} (${unitGiven})`,
     );
   const structures = derived.structures.filter(({ sourceId }) => sourceId === source.id).length;
   return [
     kinds[source.format],
-    `${formatCount(source.lines)} lines`,
-    `${structures} structure${structures === 1 ? '' : 's'}`,
+    counted(source.lines, 'line'),
+    counted(structures, 'structure'),
     ...tensors,
   ].join(', ');
 }

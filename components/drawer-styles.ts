@@ -22,6 +22,12 @@ export const drawerStyles = css`
   h3 {
     margin: 16px 0 4px;
   }
+  .commands {
+    display: flex;
+    flex-wrap: wrap;
+    gap: 8px;
+    margin: 8px 0 6px;
+  }
   button:hover:not(:disabled) {
     background: var(--paper);
   }

@@ -4,6 +4,8 @@ import type { Problem } from '#src/store/dossier-types.ts';
 import { countProblems } from '#src/store/state.ts';
 import { drawerStyles } from './drawer-styles.ts';
 import { askForPanel } from './panel.ts';
+import { raiseIsotopes } from './number-format.ts';
+import { proposalButtons } from './proposal-buttons.ts';
 import { problemSummary, severityOrder } from './problem-summary.ts';
 import { shared } from './styles.ts';
 import { StoreElement } from './store-element.ts';
@@ -105,7 +107,7 @@ export class ProblemsDrawer extends StoreElement {
     ];
     return html`<li class=${severity}>
       <p>
-        <span class="severity">${severity}</span> <span>${message}</span>
+        <span class="severity">${severity}</span> <span>${raiseIsotopes(message)}</span>
         <code>${code}</code>
       </p>
       ${
@@ -114,14 +116,28 @@ export class ProblemsDrawer extends StoreElement {
               ${facts.map(([name, value]) =>
                 value
                   ? html`<dt>${name}</dt>
-                      <dd>${value}</dd>`
+                      <dd>${name === 'what to do' ? raiseIsotopes(value) : value}</dd>`
                   : nothing,
               )}
             </dl>`
           : nothing
       }
-      ${this.#place(problem, isRefused)}
+      ${this.#place(problem, isRefused)} ${isRefused ? nothing : this.#proposal(problem)}
     </li>`;
+  }
+
+  /** A column that is proposed can be taken here, too. */
+  #proposal({ code, file, line, message }: Problem): TemplateResult | typeof nothing {
+    if (code !== 'xyz-column-proposed' || file === null) return nothing;
+    const sourceId = this.store?.sourceOf({ file })?.id;
+    const proposals = (this.store?.state.derived?.proposals ?? []).filter(
+      (one) => one.sourceId === sourceId && one.line === line && message.includes(one.name),
+    );
+    return html`${proposals.map(
+      (proposal) =>
+        html`<p>Read <code>${proposal.name}</code> as</p>
+          ${proposalButtons(this.store, proposal)}`,
+    )}`;
   }
 
   #place({ file, line, column }: Problem, isRefused: boolean): TemplateResult | typeof nothing {

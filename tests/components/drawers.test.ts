@@ -1,4 +1,5 @@
 import { beforeEach, describe, expect, it } from 'vitest';
+import { problem } from '#src/base/problem.ts';
 import { fixtureCase } from '#tests/support/dossier-fixture.ts';
 import type { Mounted } from './mount.ts';
 import { mountWorkbench, settle, textOf } from './mount.ts';
@@ -90,12 +91,31 @@ describe('the case panel', () => {
     };
     page = await mountWorkbench({ ...fixtureCase(), proposals: [proposal] });
     const root = await openPanel('Case', 'ellipsite-case-panel');
-    const group = root.querySelector('[role=group]')!;
+    const group = root.querySelector('[role=region]')!;
     expect(textOf(group)).toContain('Column tens holds nine numbers an atom and was not taken.');
     expect(page.store.state.decisions?.accepted).toEqual({});
     group.querySelectorAll('button')[2]!.click();
     await settle();
     expect(page.store.state.decisions?.accepted).toEqual({ 'source-1': { tens: { quantity: 'efg' } } });
+  });
+});
+
+describe('a proposed column in the problems', () => {
+  it('can be taken from its entry', async () => {
+    const proposal = {
+      sourceId: 'source-1',
+      name: 'tens',
+      line: 2,
+      quantity: 'unknown' as const,
+      reason: 'nothing tells',
+    };
+    const place = { file: 'invented.xyz', line: 2, column: 1 };
+    const found = problem('note', 'xyz-column-proposed', 'Column tens was not taken.', { place });
+    page = await mountWorkbench({ ...fixtureCase(), proposals: [proposal], problems: [found] });
+    const root = await openPanel('1 note', 'ellipsite-problems-drawer');
+    root.querySelectorAll<HTMLElement>('li .commands button')[0]!.click();
+    await settle();
+    expect(page.store.state.decisions?.accepted).toEqual({ 'source-1': { tens: { quantity: 'shielding' } } });
   });
 });
 
