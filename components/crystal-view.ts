@@ -9,6 +9,7 @@ import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { colourBar, colourBarStyles } from './colour-bar.ts';
 import type { CrystalPicture, PictureOverlay } from './crystal-picture.ts';
 import { pointedSentence } from './pointed-sentence.ts';
+import { sampleOf } from './sample-cases.ts';
 import './show-panel.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
@@ -107,6 +108,7 @@ export class CrystalView extends StoreElement {
       <p class="caption" id="caption">
         ${scene?.caption ?? ''}${scene ? html` <span class="soft">Drawn by ${this.#picture?.drawnBy}.</span>` : nothing}
       </p>
+      ${this.#sampleLine()}
       <p class="hidden-but-spoken" id="keys">${keysInWords}</p>
     `;
   }
@@ -203,6 +205,18 @@ export class CrystalView extends StoreElement {
           svg`<ellipse cx=${ring.xPx} cy=${ring.yPx} rx=${ring.halfWidthPx + 4} ry=${ring.halfHeightPx + 4} stroke=${colour}></ellipse>`,
       )}
     </svg>`;
+  }
+
+  /** A sample says that its tensors are invented. */
+  #sampleLine(): TemplateResult | typeof nothing {
+    const decisions = this.store?.state.decisions;
+    const sample =
+      decisions &&
+      sampleOf(
+        decisions.title,
+        decisions.sources.map(({ name }) => name),
+      );
+    return sample ? html`<p class="caption sample">Sample case. ${sample.sentence}</p>` : nothing;
   }
 
   #pointedLine(): TemplateResult | typeof nothing {

@@ -21,6 +21,15 @@ export function sampleCases(): readonly SampleCase[] {
   return Object.values(indexes)[0]?.cases ?? [];
 }
 
+/** The sample case that decisions are about; files of the user's own are none, whatever their names. */
+export function sampleOf(title: string, names: readonly string[]): SampleCase | null {
+  return (
+    sampleCases().find(
+      (sample) => sample.title === title && sample.files.every((file) => names.includes(file)),
+    ) ?? null
+  );
+}
+
 /** Opens a sample case like files of the user's own. */
 export async function openSample(store: Store, sample: SampleCase): Promise<boolean> {
   const files = await Promise.all(sample.files.map(loadFile));
