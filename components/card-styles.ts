@@ -115,7 +115,8 @@ export const cardStyles = css`
   pre {
     margin: -4px 0 0;
     max-width: 100%;
-    overflow-x: auto;
+    white-space: pre-wrap;
+    overflow-wrap: anywhere;
     font:
       12px/18px ui-monospace,
       'Cascadia Mono',
@@ -123,5 +124,35 @@ export const cardStyles = css`
       monospace;
     background: var(--raised);
     padding: 4px 8px;
+  }
+  /* no room for a column of definitions: each goes below its number */
+  @media (max-width: 560px) {
+    .conventions,
+    .conventions thead,
+    .conventions tbody {
+      display: block;
+    }
+    .conventions tr:not(.group) {
+      display: flex;
+      flex-wrap: wrap;
+      align-items: baseline;
+    }
+    .conventions thead th:first-child {
+      flex: 1;
+    }
+    .conventions thead th:last-child {
+      display: none;
+    }
+    .conventions td.words {
+      flex: 1;
+      max-width: none;
+    }
+    .conventions .number {
+      flex: 0 0 10ch;
+    }
+    .conventions td.definition {
+      flex-basis: 100%;
+      padding: 0 0 4px;
+    }
   }
 `;

@@ -30,7 +30,7 @@ const identity: readonly SiteColumn[] = [
     key: 'label',
     heading: html`site`,
     words: 'site label',
-    width: [72, 1.4],
+    width: [62, 1.4],
     numeric: false,
     text: (site) => site.label,
   },
@@ -38,7 +38,7 @@ const identity: readonly SiteColumn[] = [
     key: 'element',
     heading: html`nuclide`,
     words: 'isotope or element',
-    width: [44, 0.6],
+    width: [46, 0.6],
     numeric: false,
     text: (site) => (site.isotope ? isotopeSymbol(site.isotope) : site.element),
   },
@@ -54,7 +54,7 @@ const identity: readonly SiteColumn[] = [
     key: 'symmetry',
     heading: html`symmetry`,
     words: 'Wyckoff letter and site symmetry',
-    width: [54, 1],
+    width: [60, 1],
     numeric: false,
     text: wyckoffAndSymmetry,
   },
@@ -103,7 +103,7 @@ function efgColumns(sites: readonly SiteDossier[]): SiteColumn[] {
   const entry = knownConvention('efg', 'couplingMHz');
   const isWide = sites.some((site) => foreignIsotope(site, entry) !== null);
   return [
-    numberColumn('efg', 'couplingMHz', isWide ? [104, 1.1] : [72, 0.8]),
+    numberColumn('efg', 'couplingMHz', isWide ? [104, 1.1] : [66, 0.8]),
     numberColumn('efg', 'asymmetry', [54, 0.7]),
   ];
 }
@@ -122,7 +122,7 @@ export function columnsFor(dossier: CrystalDossier): SiteColumn[] {
 }
 
 /** Space between columns, px. */
-export const columnGap = 6;
+export const columnGap = 10;
 
 /** Tracks of the table's grid, and the width below which it scrolls sideways. */
 export function gridOf(columns: readonly SiteColumn[]): {

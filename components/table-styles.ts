@@ -16,6 +16,12 @@ export const tableStyles = css`
     flex: 1;
     min-height: 0;
     overscroll-behavior: contain;
+    /* a shade at an edge beyond which there is more; the paper scrolls along and covers it where there is none */
+    background:
+      linear-gradient(to right, var(--paper) 40%, transparent) 0 0 / 40px 100% local no-repeat,
+      linear-gradient(to left, var(--paper) 40%, transparent) 100% 0 / 40px 100% local no-repeat,
+      linear-gradient(to right, var(--line), transparent) 0 0 / 10px 100% scroll no-repeat,
+      linear-gradient(to left, var(--line), transparent) 100% 0 / 10px 100% scroll no-repeat;
   }
   .scroller:focus-visible {
     outline: none;
@@ -23,7 +29,7 @@ export const tableStyles = css`
   .row {
     display: grid;
     grid-template-columns: var(--columns);
-    column-gap: 6px;
+    column-gap: 10px;
     align-items: center;
     padding: 0 8px 0 0;
     border-bottom: 1px solid var(--hairline);

@@ -13,8 +13,11 @@ export const viewStyles = css`
     align-items: center;
     justify-content: space-between;
     gap: 2px 10px;
-    padding-right: 12px;
-    min-height: 30px;
+    padding: 0 12px 4px 0;
+    min-height: 34px;
+    /* above the picture: the panel, and the focus ring of a button at its edge */
+    position: relative;
+    z-index: 3;
   }
   .tools {
     display: flex;
@@ -69,6 +72,11 @@ export const viewStyles = css`
     width: 100px;
     height: 100px;
     overflow: visible;
+    background: radial-gradient(
+      closest-side,
+      color-mix(in srgb, var(--paper) 88%, transparent) 80%,
+      transparent
+    );
   }
   svg.axes line {
     stroke: var(--ink);
@@ -123,16 +131,13 @@ export const viewStyles = css`
     padding: 2px 16px 0 0;
     max-width: 110ch;
   }
-  .show {
-    position: relative;
-  }
   ellipsite-show-panel {
     position: absolute;
     z-index: 3;
-    right: 0;
-    top: 32px;
+    right: 12px;
+    top: 100%;
     width: max-content;
-    max-width: min(320px, 80vw);
+    max-width: min(320px, 100% - 12px);
     border: 1px solid var(--line);
     border-radius: 4px;
     color: var(--ink);

@@ -33,17 +33,13 @@ export const workbenchStyles = css`
     padding: 12px 18px 24px;
     border-top: 1px solid var(--hairline);
   }
+  /* drawers take room of their own, below or beside: numbers stay in view while they are changed */
   .drawer {
-    position: absolute;
-    z-index: 5;
-    right: 0;
-    top: 0;
-    bottom: 0;
-    width: min(460px, 100%);
+    height: min(380px, 42dvh);
     overflow: auto;
     overscroll-behavior: contain;
     background: var(--raised);
-    border-left: 1px solid var(--line);
+    border-top: 1px solid var(--line);
   }
   .drawer:focus-visible {
     outline: none;
@@ -52,14 +48,24 @@ export const workbenchStyles = css`
     position: relative;
     min-height: 0;
     display: grid;
-    grid-template-rows: minmax(0, 1fr) auto;
+    grid-template-rows: minmax(0, 1fr) auto auto;
+    grid-template-columns: minmax(0, 1fr);
   }
   ellipsite-source-view {
     height: min(340px, 45dvh);
     border-top: 1px solid var(--line);
   }
-  .with-drawer ellipsite-source-view {
-    margin-right: min(460px, 100%);
+  @media (min-width: 1200px) {
+    .with-drawer {
+      grid-template-columns: minmax(0, 1fr) clamp(340px, 27%, 460px);
+    }
+    .drawer {
+      grid-column: 2;
+      grid-row: 1 / span 3;
+      height: auto;
+      border-top: none;
+      border-left: 1px solid var(--line);
+    }
   }
   @media (max-width: 899px) {
     :host {
@@ -88,15 +94,19 @@ export const workbenchStyles = css`
     .drawer,
     ellipsite-source-view {
       position: fixed;
+      z-index: 5;
       inset: 0;
     }
     .drawer {
-      left: auto;
+      top: auto;
+      height: 45vh;
+      height: 45svh;
     }
-    ellipsite-source-view,
-    .with-drawer ellipsite-source-view {
+    .with-drawer main {
+      padding-bottom: 45vh;
+    }
+    ellipsite-source-view {
       height: auto;
-      margin: 0;
       z-index: 6;
     }
   }
