@@ -1,7 +1,9 @@
 import type { ReportProgress } from '#src/base/progress.ts';
+import { joined } from './dossier-parts.ts';
 import type {
   CaseInput,
   DerivedCase,
+  DossierPart,
   EngineReply,
   EngineRequest,
   LinePage,
@@ -31,6 +33,8 @@ export class Cancelled extends Error {}
 interface Pending {
   readonly request: EngineRequest;
   readonly report: ReportProgress;
+  /** Of a large dossier, as they came. */
+  readonly parts: DossierPart[];
   readonly settle: (reply: EngineReply) => void;
   readonly reject: (reason: Error) => void;
 }
@@ -51,8 +55,8 @@ class WorkerEngineClient implements EngineClient {
 
   derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase> {
     this.cancel();
-    return this.#ask({ id: this.#nextId++, kind: 'derive', input }, report, (reply) =>
-      reply.kind === 'derived' ? reply.result : null,
+    return this.#ask({ id: this.#nextId++, kind: 'derive', input }, report, (reply, parts) =>
+      reply.kind === 'derived' ? joined(parts, reply.result) : null,
     );
   }
 
@@ -80,15 +84,16 @@ class WorkerEngineClient implements EngineClient {
   #ask<Result>(
     request: EngineRequest,
     report: ReportProgress,
-    take: (reply: EngineReply) => Result | null,
+    take: (reply: EngineReply, parts: readonly DossierPart[]) => Result | null,
   ): Promise<Result> {
     return new Promise<Result>((resolve, reject) => {
+      const parts: DossierPart[] = [];
       const settle = (reply: EngineReply): void => {
-        const result = take(reply);
+        const result = take(reply, parts);
         if (result !== null) resolve(result);
         else reject(new Error(reply.kind === 'failed' ? reply.message : `unexpected ${reply.kind}`));
       };
-      this.#pending.set(request.id, { request, report, settle, reject });
+      this.#pending.set(request.id, { request, report, parts, settle, reject });
       this.#running().postMessage(request);
     });
   }
@@ -107,6 +112,10 @@ class WorkerEngineClient implements EngineClient {
     if (!pending) return;
     if (reply.kind === 'progress') {
       pending.report(reply.share, reply.stage);
+      return;
+    }
+    if (reply.kind === 'part') {
+      pending.parts.push(reply.part);
       return;
     }
     this.#pending.delete(reply.id);

@@ -84,6 +84,9 @@ export interface LinePage {
   readonly total: number;
 }
 
+/** Some sites and bonds of a large dossier, sent ahead of it: taking all of them in one message would block the page. */
+export type DossierPart = Pick<CrystalDossier, 'sites' | 'bonds'>;
+
 export type EngineRequest =
   | { readonly id: number; readonly kind: 'derive'; readonly input: CaseInput }
   | {
@@ -96,6 +99,7 @@ export type EngineRequest =
 
 export type EngineReply =
   | { readonly id: number; readonly kind: 'progress'; readonly share: number; readonly stage: string }
+  | { readonly id: number; readonly kind: 'part'; readonly part: DossierPart }
   | { readonly id: number; readonly kind: 'derived'; readonly result: DerivedCase }
   | { readonly id: number; readonly kind: 'lines'; readonly page: LinePage }
   | { readonly id: number; readonly kind: 'failed'; readonly message: string };

@@ -1,5 +1,6 @@
 import moyoUrl from '@spglib/moyo-wasm/moyo_wasm_bg.wasm?url';
 import { loadSymmetryTables } from '#src/crystal/symmetry-tables.ts';
+import { inParts } from './dossier-parts.ts';
 import type { EngineReply, EngineRequest } from './engine-protocol.ts';
 import { createEngine } from './engine.ts';
 
@@ -20,7 +21,9 @@ self.onmessage = async ({ data: request }: MessageEvent<EngineRequest>): Promise
       return;
     }
     const report = (share: number, stage: string): void => reply({ id, kind: 'progress', share, stage });
-    reply({ id, kind: 'derived', result: await engine.derive(request.input, report) });
+    const { parts, rest } = inParts(await engine.derive(request.input, report));
+    for (const part of parts) reply({ id, kind: 'part', part });
+    reply({ id, kind: 'derived', result: rest });
   } catch (error) {
     reply({ id, kind: 'failed', message: error instanceof Error ? error.message : String(error) });
   }
