@@ -21,7 +21,7 @@ export interface DrawnAtom {
 const faceToleranceAngstrom = 0.02;
 
 /** Atoms drawn at most: more would block the page while the picture is made, and show nothing but their surface. */
-export const mostAtoms = 30_000;
+export const mostAtoms = 20_000;
 
 /**
  * Atoms of the picture: of one unit cell with those on faces, edges and corners repeated, or moved together into whole

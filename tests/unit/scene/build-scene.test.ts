@@ -311,8 +311,8 @@ describe('what was chosen is said', () => {
     }));
     const scene = buildScene({ ...one, sites: many, atomsInCell: many.length });
     expect(scene.quadrics.count).toBe(mostAtoms);
-    expect(scene.caption).toContain('Only the first 30,000 atoms are drawn');
-    expect(scene.caption).toContain('there are 30,010');
+    expect(scene.caption).toContain('Only the first 20,000 atoms are drawn');
+    expect(scene.caption).toContain('there are 20,010');
   });
 
   it('crosses worker borders', () => {
