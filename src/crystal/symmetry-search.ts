@@ -1,7 +1,7 @@
 import type { Vec3, VecFrac } from '#src/base/matrix3.ts';
 import { apply, inverse } from '#src/base/matrix3.ts';
 import { scale } from '#src/base/vector3.ts';
-import { atomFinder } from './atom-finder.ts';
+import { atomPartners } from './atom-partners.ts';
 import { changeBasisWhereFitting } from './basis-change.ts';
 import { closeGroup, uniqueOperations } from './group.ts';
 import {
@@ -11,13 +11,13 @@ import {
   positionOnInvertedAxes,
 } from './handedness.ts';
 import type { Lattice } from './lattice.ts';
+import { withRareKind } from './rare-surroundings.ts';
 import type { ShapeLoss } from './shape-loss.ts';
 import { shapeLoss } from './shape-loss.ts';
 import type { StandardFrame } from './standard-frame.ts';
 import { analyseAtoms, frameOfResult, matrixOfResult, standardFrame } from './standard-frame.ts';
 import { operationsOfSetting } from './space-group-settings.ts';
 import type { SymmetryOperation } from './symmetry-operation.ts';
-import { applyOperation } from './symmetry-operation.ts';
 
 /** What a search found, before letters are looked up. */
 export interface FoundSymmetry {
@@ -82,13 +82,13 @@ function mapAtoms(
   species: readonly number[],
   reachAngstrom: number,
 ): Mapping | null {
-  const find = atomFinder(lattice, positions, species, reachAngstrom);
+  const partnerOf = atomPartners(operations, lattice, positions, species, reachAngstrom);
+  if (!partnerOf) return null;
   const orbits = positions.map((_position, atom) => atom);
   const stabilisers = positions.map((): number[] => []);
-  for (const [atom, position] of positions.entries()) {
-    for (const [index, operation] of operations.entries()) {
-      const partner = find(applyOperation(operation, position), species[atom]!);
-      if (partner < 0) return null;
+  for (let atom = 0; atom < positions.length; atom += 1) {
+    for (let index = 0; index < operations.length; index += 1) {
+      const partner = partnerOf(index, atom);
       if (partner === atom) stabilisers[atom]!.push(index);
       orbits[partner] = Math.min(orbits[partner]!, orbits[atom]!);
     }
@@ -136,7 +136,8 @@ function searchRightHanded(
   species: readonly number[],
   toleranceAngstrom: number,
 ): FoundSymmetry | null {
-  const result = analyseAtoms({ cell: lattice.cell, positions, species }, toleranceAngstrom);
+  const kinds = withRareKind(lattice, positions, species, toleranceAngstrom);
+  const result = analyseAtoms({ cell: lattice.cell, positions, species: kinds }, toleranceAngstrom);
   const found = result && frameOfResult(result);
   if (!result || !found) return null;
   const carried = carriedOperations(found);
