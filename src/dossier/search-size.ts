@@ -3,16 +3,42 @@ import type { ProblemLog } from '#src/base/problem.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import { countPureTranslations } from '#src/crystal/pure-translations.ts';
+import { rarest, withRareKind } from '#src/crystal/rare-surroundings.ts';
 import type { DossierSettings } from './dossier.ts';
 
-/** Atoms searched for symmetry at most, which takes some 10 s; beyond this the search is left to the user's explicit wish. */
-const searchedAtomsLimit = 5000;
+/** Atoms searched for symmetry at most; beyond this the search is left to the user's explicit wish. */
+const searchedAtomsLimit = 20_000;
+/**
+ * Atoms times those of the rarest kind: pairs that a search compares. So many take some 3 s; 4,472 atoms that are all
+ * alike make 20 million, and 20,000 do not where a few have surroundings of their own.
+ */
+const comparedPairsLimit = 20_000_000;
 /** Repetitions of a smaller cell; the time of a search grows with their square, and so many operations say nothing. */
 const searchedRepetitionsLimit = 128;
 
+/** What passes a limit, and the limit; null where nothing does. */
+function whyTooMuch(
+  lattice: Lattice,
+  positions: readonly VecFrac[],
+  kinds: readonly number[],
+  toleranceAngstrom: number,
+): { got: string; allowed: string } | null {
+  const atoms = positions.length;
+  if (atoms > searchedAtomsLimit)
+    return { got: `${atoms} atoms`, allowed: `at most ${searchedAtomsLimit} atoms` };
+  if (atoms * rarest(kinds) <= comparedPairsLimit) return null;
+  const alike = rarest(withRareKind(lattice, positions, kinds, toleranceAngstrom));
+  if (atoms * alike <= comparedPairsLimit) return null;
+  return {
+    got: `${atoms} atoms, of which at least ${alike} have the same surroundings`,
+    allowed: `at most ${comparedPairsLimit} for the product of the two`,
+  };
+}
+
 /**
- * True, with `symmetry-search-too-large`, where a search of symmetry would not end in reasonable time: more than 5,000 atoms
- * (unless asked for expressly) or a cell that repeats a smaller one more than 128 times.
+ * True, with `symmetry-search-too-large`, where a search of symmetry would not end in reasonable time: more than 20,000
+ * atoms or 20 million pairs to compare (unless asked for expressly), or a cell that repeats a smaller one more than 128
+ * times.
  */
 export function isTooLargeToSearch(
   crystal: Crystal,
@@ -22,27 +48,18 @@ export function isTooLargeToSearch(
   log: ProblemLog,
 ): boolean {
   const { sites, place } = crystal;
-  if (settings.symmetry === 'auto' && sites.length > searchedAtomsLimit) {
-    log.add(
-      'warning',
-      'symmetry-search-too-large',
-      `No symmetry stated and ${sites.length} atoms: not searched.`,
-      {
-        allowed: `at most ${searchedAtomsLimit} atoms`,
-        hint: 'Ask for the search expressly, or give the operations.',
-        place,
-      },
-    );
+  const tolerance = settings.symmetryToleranceAngstrom;
+  const positions = sites.map(({ fractional }): VecFrac => fractional ?? ([0, 0, 0] as unknown as VecFrac));
+  const tooMuch = settings.symmetry === 'auto' && whyTooMuch(lattice, positions, kinds, tolerance);
+  if (tooMuch) {
+    log.add('warning', 'symmetry-search-too-large', `No symmetry stated and ${tooMuch.got}: not searched.`, {
+      ...tooMuch,
+      hint: 'Ask for the search expressly, or give the operations.',
+      place,
+    });
     return true;
   }
-  const positions = sites.map(({ fractional }): VecFrac => fractional ?? ([0, 0, 0] as unknown as VecFrac));
-  const repetitions = countPureTranslations(
-    lattice,
-    positions,
-    kinds,
-    settings.symmetryToleranceAngstrom,
-    searchedRepetitionsLimit,
-  );
+  const repetitions = countPureTranslations(lattice, positions, kinds, tolerance, searchedRepetitionsLimit);
   if (repetitions <= searchedRepetitionsLimit) return false;
   log.add(
     'warning',
