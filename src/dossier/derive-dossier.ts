@@ -7,8 +7,6 @@ import type { Problem } from '#src/base/problem.ts';
 import { unwatched } from '#src/base/progress.ts';
 import type { ReportProgress } from '#src/base/progress.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
-import { latticeFromCell } from '#src/crystal/lattice.ts';
-import type { LatticeSettingName } from '#src/crystal/settings.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import { nuclide } from '#src/data/nuclides.ts';
 import { forcedBySiteSymmetry } from '#src/tensor/forced.ts';
@@ -21,6 +19,7 @@ import type { ChosenCrystal } from './choose-symmetry.ts';
 import { compositionOf } from './composition.ts';
 import type { CrystalDossier, DossierSettings, SiteDossier } from './dossier.ts';
 import { describeSymmetry } from './describe-symmetry.ts';
+import { inNamedFrame } from './named-frame.ts';
 import { siteTensors } from './site-tensors.ts';
 
 /** Everything a dossier is derived from. */
@@ -32,16 +31,6 @@ export interface DossierInput {
   readonly settings: DossierSettings;
   /** What reading already raised; kept at the head of the dossier's problems. */
   readonly problems: readonly Problem[];
-}
-
-/** The same crystal and sets with the Cartesian frame the user named put in place of the given one. */
-function inNamedFrame(crystal: Crystal, sets: readonly TensorSet[], frame: string | null) {
-  if (frame === null || !crystal.lattice) return { crystal, sets };
-  const lattice = latticeFromCell(crystal.lattice.cell, frame as LatticeSettingName);
-  const turned = sets.map((set) =>
-    set.lattice ? { ...set, lattice: latticeFromCell(set.lattice.cell, frame as LatticeSettingName) } : set,
-  );
-  return { crystal: { ...crystal, lattice }, sets: turned };
 }
 
 function imagesOf(sites: readonly SiteAtoms[]): AtomImage[] {
@@ -148,7 +137,8 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
   const { settings, tables } = input;
   const log = new ProblemLog();
   input.problems.forEach((found) => log.push(found));
-  const { crystal, sets } = inNamedFrame(input.crystal, input.tensorSets, settings.frame);
+  const given = { crystal: input.crystal, sets: input.tensorSets };
+  const { crystal, sets } = inNamedFrame(given, settings.frame, log);
   reportUnusedWishes(crystal, settings, log);
   progress(0, 'symmetry');
   const chosen = chooseSymmetry(crystal, settings, tables, log);
