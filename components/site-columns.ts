@@ -30,7 +30,7 @@ const identity: readonly SiteColumn[] = [
     key: 'label',
     heading: html`site`,
     words: 'site label',
-    width: [62, 1.4],
+    width: [88, 1.4],
     numeric: false,
     text: (site) => site.label,
   },
@@ -38,7 +38,7 @@ const identity: readonly SiteColumn[] = [
     key: 'element',
     heading: html`nuclide`,
     words: 'isotope or element',
-    width: [46, 0.6],
+    width: [44, 0.6],
     numeric: false,
     text: (site) => (site.isotope ? isotopeSymbol(site.isotope) : site.element),
   },
@@ -54,7 +54,7 @@ const identity: readonly SiteColumn[] = [
     key: 'symmetry',
     heading: html`symmetry`,
     words: 'Wyckoff letter and site symmetry',
-    width: [60, 1],
+    width: [56, 1],
     numeric: false,
     text: wyckoffAndSymmetry,
   },
@@ -94,8 +94,8 @@ const isotropic = (quantity: 'shielding' | 'shift'): SiteColumn =>
 
 /** Span and skew: of the shielding where there is one, else of the shift; both are defined alike on the two scales. */
 const spanAndSkew = (quantity: 'shielding' | 'shift'): SiteColumn[] => [
-  numberColumn(quantity, 'span', [54, 0.8]),
-  numberColumn(quantity, 'skew', [56, 0.7]),
+  numberColumn(quantity, 'span', [50, 0.8]),
+  numberColumn(quantity, 'skew', [42, 0.7]),
 ];
 
 /** Coupling and asymmetry; wider where couplings are of another isotope than the row's nuclide and say so. */
@@ -104,7 +104,7 @@ function efgColumns(sites: readonly SiteDossier[]): SiteColumn[] {
   const isWide = sites.some((site) => foreignIsotope(site, entry) !== null);
   return [
     numberColumn('efg', 'couplingMHz', isWide ? [104, 1.1] : [66, 0.8]),
-    numberColumn('efg', 'asymmetry', [54, 0.7]),
+    numberColumn('efg', 'asymmetry', [40, 0.7]),
   ];
 }
 
