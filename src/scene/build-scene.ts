@@ -21,7 +21,8 @@ import { chooseScale } from './tensor-scale.ts';
  * The plain description of one picture: everything a renderer needs, in Å, in the Cartesian frame of the crystal's
  * lattice. Options not given are automatic; what was chosen stands in the caption. Linear in atoms and bonds.
  */
-export function buildScene(dossier: CrystalDossier, options: Partial<SceneOptions> = {}): Scene {
+export function buildScene(whole: CrystalDossier, options: Partial<SceneOptions> = {}): Scene {
+  const dossier = drawableSites(whole);
   const chosen: SceneOptions = { ...defaultSceneOptions, ...options };
   const extent = chooseExtent(dossier, chosen.extent);
   const own = drawnAtoms(dossier, extent);
@@ -63,6 +64,14 @@ export function buildScene(dossier: CrystalDossier, options: Partial<SceneOption
     }),
     extent,
   };
+}
+
+/** The dossier with only as many of its first sites as can come into the picture, so that a huge one costs no more. */
+function drawableSites(dossier: CrystalDossier): CrystalDossier {
+  let atoms = 0;
+  // Twice the limit: sites that share a position with a fuller one are passed over.
+  const past = dossier.sites.findIndex((site) => (atoms += site.equivalents.length) > 2 * mostAtoms);
+  return past < 0 ? dossier : { ...dossier, sites: dossier.sites.slice(0, past + 1) };
 }
 
 function chooseExtent(dossier: CrystalDossier, asked: SceneOptions['extent']): 'cell' | 'molecules' {
