@@ -55,7 +55,7 @@ it('row 8: symmetry, neighbours, bonds and dossiers grow linearly', () => {
   });
   const exponent = Math.log(times[3]! / times[1]!) / Math.log(sizes[3]! / sizes[1]!);
   recordResult('growth', { sizes, inSortsOf10000Numbers: times.map((time) => time / sort), exponent });
-  expect(exponent).toBeLessThan(1.3);
+  expect(exponent, 'the aim of row 8, not reached yet').toBeLessThan(1.1);
 });
 
 it('row 14: the command line against an empty Node process', () => {
