@@ -75,7 +75,7 @@ function drawableSites(dossier: CrystalDossier): CrystalDossier {
 }
 
 function chooseExtent(dossier: CrystalDossier, asked: SceneOptions['extent']): 'cell' | 'molecules' {
-  if (asked !== 'auto') return asked;
+  if (asked !== 'auto') return asked === 'molecules' ? 'molecules' : 'cell';
   return Object.keys(dossier.wholeMolecules).length > 0 ? 'molecules' : 'cell';
 }
 

@@ -16,6 +16,11 @@ export interface Camera {
   readonly orientation: Quaternion;
   /** Share of the viewport's smaller side that one Å takes: a picture keeps its framing when its size changes. */
   readonly zoom: number;
+  /**
+   * Full angle, degrees, under which the viewport's smaller side is seen in true perspective; 0 or absent for none. The scale
+   * in the plane of the target stays that of `zoom`: the eye stands at half the smaller side ÷ tan(angle/2) before it.
+   */
+  readonly perspectiveDegrees?: number;
 }
 
 /** Size of the picture, CSS pixels. */

@@ -16,6 +16,40 @@ export interface QuadricBatch {
   readonly circles: Uint8Array;
   /** Index into `picks`, plus 1. */
   readonly pickIds: Uint32Array;
+  /**
+   * One a quadric: how much of it has its own colour, 255 for all. The rest, from the azimuth 2π·share/255 about column 2 of A
+   * (counted from column 0 towards column 1) to 2π, has its `restColours`: partial occupancy and mixed sites. Absent: all 255.
+   */
+  readonly shares?: Uint8Array;
+  /** Three a quadric; read only where the share is below 255. */
+  readonly restColours?: Uint8Array;
+  /** One a quadric: 0 plain, 1 striped, 2 dotted (in the own frame of A): disorder alternatives. Absent: all plain. */
+  readonly patterns?: Uint8Array;
+}
+
+/**
+ * Signed polar surfaces of symmetric tensors: the points centre + |n·T·n| n for all unit vectors n. Drawn as meshes whose
+ * fineness follows their size on screen; positive and negative lobes differ in colour, and negative ones are striped too.
+ */
+export interface PolarBatch {
+  readonly count: number;
+  /** Three a surface, Å. */
+  readonly centres: Float32Array;
+  /** Six a surface: T as xx, yy, zz, xy, xz, yz in Å. */
+  readonly tensors: Float32Array;
+  /** Three a surface. */
+  readonly positiveColours: Uint8Array;
+  readonly negativeColours: Uint8Array;
+  readonly pickIds: Uint32Array;
+}
+
+/** Flat triangles seen through: faces of coordination polyhedra. Drawn after all else, the farther ones first; never picked. */
+export interface FacetBatch {
+  readonly count: number;
+  /** Nine a triangle, Å. */
+  readonly corners: Float32Array;
+  /** Four a triangle: sRGB and opacity. */
+  readonly colours: Uint8Array;
 }
 
 /** Straight round cylinders with flat ends: bonds, and the dashes of hydrogen bonds. */
@@ -75,11 +109,14 @@ export interface LabelAnchor {
 /** Name of a colour map of src/data/colour-maps.data.ts. */
 export type ColourMapName = 'batlow' | 'vik';
 
+/** What stands for a tensor in the picture. */
+export type GlyphKind = 'ellipsoid' | 'polar' | 'axes';
+
 /** Colour bar: what the colour of a tensor says. */
 export interface Legend {
   /** Such as "isotropic shielding". */
   readonly title: string;
-  readonly unit: 'ppm' | 'a.u.';
+  readonly unit: 'ppm' | 'a.u.' | 'MHz' | '';
   readonly low: number;
   readonly high: number;
   /** Fraction digits with which `low` and `high` are printed. */
@@ -124,6 +161,9 @@ export interface TensorScale {
   readonly baseRadiusAngstrom: number;
 }
 
+/** Which atoms are in the picture. */
+export type SceneExtent = 'cell' | 'molecules' | 'asymmetric' | 'range' | 'shell';
+
 /**
  * One picture of one crystal, ready to draw: plain arrays in Å, in the Cartesian frame of the crystal's lattice.
  * Holds nothing of a screen, a theme or a camera, and crosses worker borders.
@@ -132,6 +172,9 @@ export interface Scene {
   readonly quadrics: QuadricBatch;
   readonly cylinders: CylinderBatch;
   readonly lines: LineBatch;
+  /** Absent: none. */
+  readonly polars?: PolarBatch;
+  readonly facets?: FacetBatch;
   readonly labels: readonly LabelAnchor[];
   /** Empty without a cell. */
   readonly axes: readonly CellAxis[];
@@ -144,5 +187,7 @@ export interface Scene {
   readonly scaleStatement: string | null;
   /** One or two sentences: what is drawn, in which convention. */
   readonly caption: string;
-  readonly extent: 'cell' | 'molecules';
+  readonly extent: SceneExtent;
+  /** Four bytes a site of the dossier: the sRGB colour its tensor has by the legend, and 255, or 0 where it has none. */
+  readonly siteColours?: Uint8Array;
 }

@@ -13,6 +13,10 @@ export interface RenderTheme {
   readonly depthCue: number;
   readonly circleWidthPx: number;
   readonly rimWidthPx: number;
+  /** Dark outline round every object, CSS pixels; 0 or absent for none. */
+  readonly outlineWidthPx?: number;
+  /** A picture without paper: what nothing covers is transparent (straight alpha). Stills only. */
+  readonly transparent?: boolean;
 }
 
 export const lightTheme: RenderTheme = {
