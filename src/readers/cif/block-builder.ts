@@ -49,15 +49,20 @@ export function addLoop(block: OpenBlock, loop: CifLoop, names: readonly NameAt[
       if (block.items.has(at.name)) reportLooped(at, report);
       continue;
     }
-    if (earlier !== loop && earlier.values.length === 0) block.loopOf.set(at.name, loop);
+    const replaces = earlier !== loop && isEmpty(earlier);
+    if (replaces) block.loopOf.set(at.name, loop);
     report.add(
       'warning',
       'cif-repeated-column',
       at.offset,
-      `${shortName(at.name)} heads ${earlier === loop ? 'two columns of this loop' : 'a column of two loops in this block'}; the ${earlier.values.length === 0 && earlier !== loop ? 'second' : 'first'} was taken.`,
+      `${shortName(at.name)} heads ${earlier === loop ? 'two columns of this loop' : 'a column of two loops in this block'}; the ${replaces ? 'second' : 'first'} was taken.`,
       { got: at.name.slice(0, 80), allowed: 'each name once a block' },
     );
   }
+}
+
+function isEmpty({ values, rowsPassedOver = 0 }: CifLoop): boolean {
+  return values.length === 0 && rowsPassedOver === 0;
 }
 
 function reportLooped(at: NameAt, report: CifReport): void {

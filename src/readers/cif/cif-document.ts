@@ -33,6 +33,8 @@ export interface CifLoop {
   readonly names: readonly string[];
   /** Row-major, length = rows × names. */
   readonly values: readonly CifValue[];
+  /** Whole rows that were read and not kept, because nobody asked for any of the names; `values` is then empty. */
+  readonly rowsPassedOver?: number;
   readonly offset: number;
 }
 

@@ -1,7 +1,7 @@
 import type { CifLoop, CifValue } from './cif-document.ts';
 import type { CifLexer, TokenKind } from './lexer.ts';
 import { cifLimits } from './limits.ts';
-import { completeLoop } from './loop.ts';
+import { completeLoop, rowsBeforeEnd } from './loop.ts';
 import type { NameAt } from './loop.ts';
 import { numberFromText } from './number.ts';
 import type { CifReport } from './report.ts';
@@ -43,6 +43,8 @@ export function readItemValues(lexer: CifLexer, first: FirstValue, names: readon
   }
   if (lacksLoop(values, ends, names, lexer.report)) {
     reportMissingLoop(names, values.length, lexer.report);
+    if (token === 'value')
+      return { loop: rowsBeforeEnd(names, values, names[0]!.offset), value: null, token };
     return { loop: completeLoop(names, values, names[0]!.offset, lexer.report), value: null, token };
   }
   return { loop: null, value: oneValue(values, ends, lexer), token };

@@ -8,11 +8,24 @@ import { readField } from './text-field.ts';
 /** What stands next. `value` is any value; its content is in `lexer.value`. */
 export type TokenKind = 'end' | 'name' | 'value' | 'data' | 'save' | 'loop' | 'global' | 'stop';
 
-/** Values of a loop while they are read; `values` may be longer than `count`. */
+/**
+ * Values of a loop while they are read; `values` may be longer than `count`, and is `null` where values are checked and counted but not
+ * kept. `fields` tells where the first text fields stand: one of them may prove not to have been closed.
+ */
 export interface ValueRun {
-  readonly values: CifValue[];
+  readonly values: CifValue[] | null;
+  readonly fields: FieldAt[];
   count: number;
 }
+
+export interface FieldAt {
+  readonly index: number;
+  readonly offset: number;
+  readonly end: number;
+}
+
+/** Text fields of one loop that may be taken back. */
+const mostFields = 100_000;
 
 /**
  * Cuts a text into tokens in one pass. After `next()`: `start` and `end` are offsets of the token, `value` the value (kind
@@ -80,6 +93,10 @@ export class CifLexer extends CifScanner {
         do p++;
         while (p < end && table[text.charCodeAt(p)]! > lineEnd);
         if (p < end && !(isStrict && this.#hasBracket(start, p))) {
+          if (values === null) {
+            into.count++;
+            continue;
+          }
           values[into.count++] =
             kind === special && p === start + 1
               ? specialValue(text.charCodeAt(start), start)
@@ -90,10 +107,19 @@ export class CifLexer extends CifScanner {
       }
       this.position = start;
       const token = this.next();
-      if (token === 'value') values[into.count++] = this.value;
+      if (token === 'value') this.takeValue(into);
       p = this.position;
       if (token !== 'value' || p >= until) return token;
     }
+  }
+
+  /** Puts the value read last at the end of a run. */
+  takeValue(into: ValueRun): void {
+    const index = into.count++;
+    if (into.values) into.values[index] = this.value;
+    const isField = this.isField && this.text.charCodeAt(this.start) === code.semicolon;
+    if (isField && into.fields.length < mostFields)
+      into.fields.push({ index, offset: this.start, end: this.end });
   }
 
   /**

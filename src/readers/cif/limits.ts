@@ -6,7 +6,7 @@ export const cifLimits = {
   frameDepth: 16,
   /** Data blocks and save frames of one file. */
   blocks: 100_000,
-  /** Values and names of one file, those inside lists and tables included. */
+  /** Values of one file that are kept, those inside lists and tables included. Loops that nobody reads do not count. */
   values: 10_000_000,
   /** Names in the header of one loop. */
   loopNames: 10_000,

@@ -23,16 +23,7 @@ export function completeLoop(
   const excess = values.length % width;
   const loop = { names: names.map(({ name }) => name), offset };
   if (values.length === 0) {
-    report.add(
-      'warning',
-      'cif-empty-loop',
-      offset,
-      `This loop has ${width === 1 ? 'a name' : `${width} names`} and no values.`,
-      {
-        got: names[0]!.name,
-        allowed: 'at least one row of values',
-      },
-    );
+    reportEmptyLoop(names, offset, report);
     return { ...loop, values };
   }
   if (excess === 0) return { ...loop, values };
@@ -52,4 +43,23 @@ export function completeLoop(
   );
   values.length -= excess;
   return { ...loop, values };
+}
+
+export function reportEmptyLoop(names: readonly NameAt[], offset: number, report: CifReport): void {
+  report.add(
+    'warning',
+    'cif-empty-loop',
+    offset,
+    `This loop has ${names.length === 1 ? 'a name' : `${names.length} names`} and no values.`,
+    {
+      got: names[0]!.name,
+      allowed: 'at least one row of values',
+    },
+  );
+}
+
+/** The whole rows of a loop at which reading was given up; that was said already. */
+export function rowsBeforeEnd(names: readonly NameAt[], values: CifValue[], offset: number): CifLoop {
+  values.length -= values.length % names.length;
+  return { names: names.map(({ name }) => name), values, offset };
 }

@@ -4,15 +4,17 @@ import { unwatched } from '#src/base/progress.ts';
 import type { SourceText } from '#src/bytes/source-text.ts';
 import { addItem, addLoop, shortName } from './block-builder.ts';
 import { BlockStack } from './block-stack.ts';
-import type { CifBlock, CifDocument, CifValue } from './cif-document.ts';
+import type { CifBlock, CifDocument, CifLoop } from './cif-document.ts';
 import { readItemValues, reportStray } from './item-values.ts';
 import { CifLexer } from './lexer.ts';
-import type { TokenKind } from './lexer.ts';
+import type { TokenKind, ValueRun } from './lexer.ts';
 import { cifLimits } from './limits.ts';
-import { completeLoop } from './loop.ts';
+import { completeLoop, rowsBeforeEnd } from './loop.ts';
 import type { NameAt } from './loop.ts';
 import { foldCase, noteNameLength } from './names.ts';
+import { passedLoop } from './passed-loop.ts';
 import { readPreamble } from './preamble.ts';
+import { reopenField } from './reopen-field.ts';
 import { CifReport } from './report.ts';
 import { recoverField } from './text-field.ts';
 
@@ -20,16 +22,19 @@ import { recoverField } from './text-field.ts';
  * Reads the syntax of a CIF 1.1 (International Tables G 2.2.7) or CIF 2.0 text (Bernstein et al., J. Appl. Cryst. 49 (2016)
  * 277). Never throws for content: whatever breaks the grammar is repaired so that as little as possible is lost, and becomes a
  * `cif-…` problem with its place. One pass; time and memory grow with the length of the text. `progress` is called at most
- * some 100 times, with the stage `reading CIF`.
+ * some 100 times, with the stage `reading CIF`. Of loops none of whose names (lower case, with `_`) is needed, syntax and rows are
+ * checked and the values let go, so that memory does not grow with reflections and profiles.
  */
 export function parseCif(
   source: SourceText,
   log: ProblemLog,
   progress: ReportProgress = unwatched,
+  isNeeded: (name: string) => boolean = () => true,
 ): CifDocument {
   const report = new CifReport(source, log);
   const { version, start } = readPreamble(source, report);
-  const parser = new Parser(source.text, new CifLexer(source.text, version, report, start), report, progress);
+  const lexer = new CifLexer(source.text, version, report, start);
+  const parser = new Parser(lexer, report, progress, isNeeded);
   return { version, blocks: parser.read() };
 }
 
@@ -41,14 +46,21 @@ class Parser {
   readonly #lexer: CifLexer;
   readonly #report: CifReport;
   readonly #progress: ReportProgress;
+  readonly #isNeeded: (name: string) => boolean;
   readonly #blocks: BlockStack;
   #nextProgress = 0;
   #stopped = false;
 
-  constructor(text: string, lexer: CifLexer, report: CifReport, progress: ReportProgress) {
-    this.#text = text;
+  constructor(
+    lexer: CifLexer,
+    report: CifReport,
+    progress: ReportProgress,
+    isNeeded: (name: string) => boolean,
+  ) {
+    this.#text = lexer.text;
     this.#lexer = lexer;
     this.#report = report;
+    this.#isNeeded = isNeeded;
     this.#progress = progress;
     this.#blocks = new BlockStack(report);
   }
@@ -108,63 +120,55 @@ class Parser {
         return this.#giveUp(`a loop of more than ${cifLimits.loopNames} names`);
       names.push(this.#name());
     }
-    const values: CifValue[] = [];
+    const isKept = names.some(({ name }) => this.#isNeeded(name));
+    const run: ValueRun = { values: isKept || names.length === 0 ? [] : null, fields: [], count: 0 };
     const recovered = lexer.fieldsRecovered;
-    if (token === 'value') token = this.#readValues(values);
-    if (names.length > 0) {
-      const isDoubtful = values.length % names.length !== 0 || lexer.fieldsRecovered > recovered;
-      if (isDoubtful) token = this.#reopen(values) ?? token;
-      addLoop(block, completeLoop(names, values, start, this.#report), names, this.#report);
+    const from = lexer.start;
+    if (token === 'value') token = this.#readValues(run);
+    if (names.length === 0) {
+      this.#reportNoNames(start, run.count);
       return token;
     }
+    const isDoubtful = run.count % names.length !== 0 || lexer.fieldsRecovered > recovered;
+    if (isDoubtful && !this.#stopped) token = reopenField(lexer, run) ?? token;
+    addLoop(block, this.#loop(names, run, start, from), names, this.#report);
+    return token;
+  }
+
+  #loop(names: readonly NameAt[], { values, count }: ValueRun, start: number, from: number): CifLoop {
+    const lexer = this.#lexer;
+    if (values === null) return passedLoop(names, { count, from, to: lexer.start }, start, lexer);
+    if (this.#stopped) return rowsBeforeEnd(names, values, start);
+    return completeLoop(names, values, start, this.#report);
+  }
+
+  #reportNoNames(start: number, count: number): void {
     this.#report.add(
       'error',
       'cif-loop-without-names',
       start,
       'A loop_ has no names after it; its values were left out.',
       {
-        got: values.length === 0 ? 'no values' : `${values.length} values`,
+        got: count === 0 ? 'no values' : `${count} values`,
         allowed: 'names that start with _, then values',
       },
     );
-    return token;
   }
 
-  /**
-   * In a loop whose values do not fill its rows or that ends in an open text field: the first text field that runs over names was most likely never closed. It is
-   * ended there and reading goes back; gives the next token, or `null` where no such field is. Going back is bounded.
-   */
-  #reopen(values: CifValue[]): TokenKind | null {
+  /** Reads values as long as they come; the lexer stands on the first. Values that are not kept do not count for the limit. */
+  #readValues(run: ValueRun): TokenKind {
     const lexer = this.#lexer;
-    if (lexer.charactersInVain > this.#text.length) return null;
-    const isField = ({ offset }: CifValue) => this.#text[offset] === ';' && lexer.startsLine(offset);
-    for (let index = 0; index < values.length; index++) {
-      if (!isField(values[index]!)) continue;
-      const end = values[index + 1]?.offset ?? lexer.start;
-      const shorter = recoverField(lexer, values[index]!.offset, end);
-      if (!shorter) continue;
-      lexer.charactersInVain += lexer.position - lexer.end;
-      lexer.position = lexer.end;
-      values.length = index;
-      values.push(shorter);
-      return lexer.next();
-    }
-    return null;
-  }
-
-  /** Reads values as long as they come; the lexer stands on the first. */
-  #readValues(values: CifValue[]): TokenKind {
-    const lexer = this.#lexer;
-    values.push(lexer.value);
-    const words = lexer.countWords();
-    if (words > roomFrom) values.length = Math.min(words, cifLimits.values);
-    const run = { values, count: 1 };
+    const made = lexer.valuesMade - 1;
+    lexer.takeValue(run);
+    const words = run.values ? lexer.countWords() : 0;
+    if (run.values && words > roomFrom) run.values.length = Math.min(words, cifLimits.values);
     let token: TokenKind = 'value';
     while (token === 'value' && !this.#stopped) {
       this.#tick();
       token = lexer.takeValues(run, this.#nextProgress);
+      if (run.values === null) lexer.valuesMade = made;
     }
-    values.length = run.count;
+    if (run.values) run.values.length = run.count;
     return this.#stopped ? 'end' : token;
   }
 

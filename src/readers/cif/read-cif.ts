@@ -7,6 +7,7 @@ import type { Crystal } from '#src/crystal/crystal.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
 import type { Reading } from '../reading.ts';
 import { viewBlock } from './interpret/block-view.ts';
+import { isNeededName } from './interpret/needed-names.ts';
 import { withBorrowedItems } from './interpret/borrowed-items.ts';
 import { interpretBlock } from './interpret/interpret-block.ts';
 import { reportNoStructure, reportSeveral } from './interpret/block-choice.ts';
@@ -26,7 +27,12 @@ const syntaxShare = 0.7;
 export function readCif(source: SourceText, options: ReadCifOptions = {}): Reading {
   const progress = options.progress ?? unwatched;
   const log = new ProblemLog();
-  const document = parseCif(source, log, (share, stage) => progress(share * syntaxShare, stage));
+  const document = parseCif(
+    source,
+    log,
+    (share, stage) => progress(share * syntaxShare, stage),
+    isNeededName,
+  );
   const structures: Crystal[] = [];
   const tensorSets: TensorSet[] = [];
   const { blocks } = document;

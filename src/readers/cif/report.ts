@@ -1,5 +1,5 @@
-import type { Problem, ProblemDetails, ProblemLog, Severity } from '#src/base/problem.ts';
-import { problem } from '#src/base/problem.ts';
+import type { Problem, ProblemDetails, Severity } from '#src/base/problem.ts';
+import { problem, ProblemLog } from '#src/base/problem.ts';
 import type { SourceText } from '#src/bytes/source-text.ts';
 import { placeOf } from '#src/bytes/source-text.ts';
 
@@ -54,6 +54,11 @@ export class CifReport {
     const held = this.#held ?? [];
     this.#held = null;
     if (keep) held.forEach((found) => this.#log.push(found));
+  }
+
+  /** A report of the same text whose problems nobody sees. */
+  silent(): CifReport {
+    return new CifReport(this.#source, new ProblemLog());
   }
 
   /** Offset at which the line after the one with this offset starts. */
