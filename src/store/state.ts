@@ -1,6 +1,11 @@
 import type { Problem } from '#src/base/problem.ts';
 import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
+import type { Camera } from '#src/scene/camera.ts';
+import { defaultLook } from '#src/scene/look.ts';
+import type { Look } from '#src/scene/look.ts';
+import type { Measurement } from '#src/scene/measurement.ts';
+import type { SavedView } from '#src/scene/saved-view.ts';
 import { defaultSceneOptions } from '#src/scene/scene-options.ts';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
 import type { SceneQuantity } from '#src/scene/scene.ts';
@@ -65,6 +70,12 @@ export interface WorkbenchState {
   readonly theme: ThemeChoice;
   /** What the picture shows; nothing here changes a number. */
   readonly picture: SceneOptions;
+  /** null is the first view of the crystal: all of it, from where the picture thinks best. */
+  readonly camera: Camera | null;
+  readonly look: Look;
+  /** In the order in which they were saved. */
+  readonly savedViews: readonly SavedView[];
+  readonly measurements: readonly Measurement[];
   readonly shownPlace: ShownPlace | null;
   readonly progress: Progress | null;
   readonly past: readonly Step[];
@@ -79,6 +90,10 @@ export const emptyState: WorkbenchState = {
   hover: null,
   theme: 'auto',
   picture: defaultSceneOptions,
+  camera: null,
+  look: defaultLook,
+  savedViews: [],
+  measurements: [],
   shownPlace: null,
   progress: null,
   past: [],
