@@ -1,10 +1,12 @@
-import { transpose } from '#src/base/matrix3.ts';
+import type { Vec3 } from '#src/base/matrix3.ts';
+import { identity3, transpose } from '#src/base/matrix3.ts';
 import { changeBasis } from './basis-change.ts';
 import type { CellConstants } from './lattice.ts';
 import { metricMisfit } from './metric-fit.ts';
 import { settingsNamed } from './space-group-names.ts';
 import type { SpaceGroupSetting } from './space-group-settings.ts';
 import { operationsOfSetting, settingName, settingsOfNumber } from './space-group-settings.ts';
+import { withoutTail } from './symbol-tail.ts';
 import type { SymbolText } from './symbol-text.ts';
 import { readSymbolText } from './symbol-text.ts';
 import type { SymmetryOperation } from './symmetry-operation.ts';
@@ -25,6 +27,8 @@ export interface SymbolReading {
 export interface SymbolMatch extends SymbolReading {
   /** Readings that the symbol leaves open just as well, such as the other origin choice; empty where it names the setting. */
   readonly alternatives: readonly SymbolReading[];
+  /** What the symbol says and could not be used, in words; absent where all of it was. */
+  readonly doubt?: string;
 }
 
 interface Candidate extends SymbolReading {
@@ -212,8 +216,27 @@ export function settingFromHermannMauguin(symbol: string, cell?: CellConstants):
   const read = readSymbolText(symbol);
   if (!read) return null;
   const text = onHexagonalAxes(read);
-  const candidates = onGivenAxes(withSettingOfCode(candidatesOf(text.compact), text), text);
-  return choose(symbol.trim(), candidates, wishesOf(text), cell);
+  const found = choose(symbol.trim(), candidatesFor(text), wishesOf(text), cell);
+  if (found) return found;
+  const bare = withoutTail(text);
+  if (!bare) return null;
+  const candidates = candidatesFor(bare.text);
+  const shifted = bare.origin === null ? [] : atOrigin(candidates, bare.origin, bare.reason ?? '');
+  const match = choose(symbol.trim(), [...shifted, ...candidates], wishesOf(bare.text), cell);
+  if (!match || !bare.doubtful) return match;
+  return { ...match, reason: `${match.reason}; ${bare.reason}`, doubt: bare.reason ?? '' };
+}
+
+function candidatesFor(text: SymbolText): Candidate[] {
+  return onGivenAxes(withSettingOfCode(candidatesOf(text.compact), text), text);
+}
+
+function atOrigin(candidates: readonly Candidate[], origin: Vec3, why: string): Candidate[] {
+  return candidates.flatMap((candidate) => {
+    const operations = changeBasis(candidate.operations, identity3, origin);
+    const reason = `${candidate.reason}; ${why}`;
+    return operations ? [{ ...candidate, setting: null, operations, reason }] : [];
+  });
 }
 
 /**

@@ -98,17 +98,17 @@ function withoutBrackets(text: string): Stripped {
       const inside = String(parts[0] ?? parts[1] ?? parts[2] ?? '');
       const basis = inside.includes(',') ? readAffineExpressions(inside, 'abc') : null;
       wishes = { ...wishes, ...(basis ? { basis } : wishesOfWords(inside)) };
-      return ' ';
+      return /^\s*[abc][123]?\s*$/i.test(inside) ? ` ${inside} ` : ' ';
     },
   );
-  return { rest, wishes };
+  return { rest: rest.replace(/[()[\]{}]/g, ' '), wishes };
 }
 
 function withoutWords(text: string): Stripped {
   const colon = text.indexOf(':');
   if (colon >= 0) return { rest: text.slice(0, colon), wishes: wishesOfCode(text.slice(colon + 1)) };
   const words =
-    /[\s,;]*\b(?:origin|hexagonal|rhombohedral|unique|cell\s*choice|setting|choice|[abc]-axis)\b.*$/i.exec(
+    /[\s,;]*\b(?:origin|hex|hexagonal|rhombohedral|unique|cell\s*choice|setting|choice|[abc]-axis)\b.*$/i.exec(
       text,
     );
   if (!words) return { rest: text, wishes: {} };
@@ -117,7 +117,7 @@ function withoutWords(text: string): Stripped {
 
 /** No symbol ends with h, r, s or z: such a last letter is a code for axes (H, R) or origin (S first, Z second). */
 function withoutLastLetter(bare: string): Stripped {
-  const code = /^(.{2,}?)(HR|[HRSZ])$/i.exec(bare);
+  const code = /^(.{2,}?)(HR|O[12]|[HRSZ])$/i.exec(bare);
   if (!code) return { rest: bare, wishes: {} };
   return { rest: code[1]!, wishes: wishesOfCode(code[2]!) };
 }

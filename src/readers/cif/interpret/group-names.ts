@@ -20,6 +20,8 @@ export interface NamedGroup {
   readonly reading: string;
   /** Other operations that the name may mean just as well, such as those at the other origin. */
   readonly alternatives: readonly SymbolReading[];
+  /** What of the name could not be used, in words. */
+  readonly doubt?: string;
 }
 
 /** The names of the group as the file gives them, and the groups they mean, most telling first. */
@@ -143,7 +145,6 @@ function fromNumber(item: KnownItem, number: number, cell: CellConstants | null)
 }
 
 function matched(kind: NamedGroup['kind'], item: KnownItem, name: string, found: SymbolMatch): NamedGroup {
-  const { operations, setting, number, reason, alternatives } = found;
-  const reading = `${name} (${item.name}: ${reason})`;
-  return { kind, item, operations, setting, number, reading, alternatives };
+  const { reason, ...rest } = found;
+  return { ...rest, kind, item, reading: `${name} (${item.name}: ${reason})` };
 }

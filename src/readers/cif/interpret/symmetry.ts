@@ -187,6 +187,18 @@ function fromNames(
       },
     );
   }
+  if (chosen.doubt !== undefined) {
+    log.add(
+      'warning',
+      'cif-group-name-open',
+      `Of the space group “${chosen.item.text}” ${chosen.doubt}: the origin may be another than taken.`,
+      {
+        place: placeOfValue(view, chosen.item.value),
+        got: chosen.item.text,
+        hint: 'List the operations in the file, or compare bond lengths.',
+      },
+    );
+  }
   log.add(
     'note',
     'cif-symmetry-from-name',

@@ -40,6 +40,12 @@ describe('without listed operations', () => {
     expect(codes(reading)).toEqual([]);
   });
 
+  it('a letter behind the symbol whose origin is not known is told', () => {
+    const reading = block(cellText(7, 8, 9), "_symmetry_space_group_name_H-M 'C 2 2 21 A'\n", atom);
+    expect(codes(reading)).toEqual(['cif-group-name-open']);
+    expect(only(reading).symmetry.operations).toHaveLength(8);
+  });
+
   it('Hall goes before Hermann–Mauguin, that before the number', () => {
     const reading = block(
       monoclinic,

@@ -1,6 +1,7 @@
 import { describe, expect, it, vi } from 'vitest';
 import { ProblemLog } from '#src/base/problem.ts';
 import { sourceFromText } from '#src/bytes/source-from-text.ts';
+import type * as Limits from '#src/readers/cif/limits.ts';
 import { parseCif } from '#src/readers/cif/parse.ts';
 import {
   atomText,
@@ -14,7 +15,7 @@ import {
 } from '#tests/support/cif-structure.ts';
 
 vi.mock('#src/readers/cif/limits.ts', async (original) => {
-  const { cifLimits } = await original<typeof import('#src/readers/cif/limits.ts')>();
+  const { cifLimits } = await original<typeof Limits>();
   return { cifLimits: { ...cifLimits, values: 400 } };
 });
 
