@@ -3,7 +3,7 @@ import type { AtomImage, Attachment } from '#src/attach/attachment.ts';
 import { identity3 } from '#src/base/matrix3.ts';
 import type { Mat3 } from '#src/base/matrix3.ts';
 import { ProblemLog } from '#src/base/problem.ts';
-import type { Problem } from '#src/base/problem.ts';
+import type { Place, Problem } from '#src/base/problem.ts';
 import { unwatched } from '#src/base/progress.ts';
 import type { ReportProgress } from '#src/base/progress.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
@@ -20,7 +20,7 @@ import { compositionOf } from './composition.ts';
 import type { CrystalDossier, DossierSettings, SiteDossier } from './dossier.ts';
 import { describeSymmetry } from './describe-symmetry.ts';
 import { inNamedFrame } from './named-frame.ts';
-import { siteTensors } from './site-tensors.ts';
+import { otherTensors, siteTensors } from './site-tensors.ts';
 
 /** Everything a dossier is derived from. */
 export interface DossierInput {
@@ -46,26 +46,30 @@ function imagesOf(sites: readonly SiteAtoms[]): AtomImage[] {
   );
 }
 
-/** Sets of the crystal's own file go by rows, others by geometry or labels; one attachment a quantity, the first wins. */
+/** Bound sets: the main one of each quantity, and a second one of it to compare with. */
+interface BoundSets {
+  readonly main: readonly Attachment[];
+  readonly other: readonly Attachment[];
+}
+
+/**
+ * Sets of the crystal's own file go by rows, others by geometry or labels. The first set of a quantity is the main one, the
+ * second the other one of a comparison; more are left out.
+ */
 function attachAll(
   crystal: Crystal,
   sets: readonly TensorSet[],
   chosen: ChosenCrystal,
   log: ProblemLog,
-): Attachment[] {
+): BoundSets {
   const images = imagesOf(chosen.sites);
-  const attachments: Attachment[] = [];
+  const main: Attachment[] = [];
+  const other: Attachment[] = [];
   for (const set of sets) {
-    if (attachments.some(({ quantity }) => quantity === set.quantity)) {
-      log.add(
-        'warning',
-        'second-set-left-out',
-        `A second set of ${set.quantity} tensors, ${set.name}, was left out.`,
-        {
-          place: { file: set.file, line: set.entries[0]?.place.line ?? 1 },
-          hint: 'Open one set of each quantity at a time.',
-        },
-      );
+    const isSameQuantity = ({ quantity }: Attachment): boolean => quantity === set.quantity;
+    const first = main.find(isSameQuantity);
+    if (first && other.some(isSameQuantity)) {
+      reportLeftOut(set, log);
       continue;
     }
     const sameFile = set.file === crystal.place.file && set.structureIndex !== null;
@@ -76,12 +80,39 @@ function attachAll(
       rows: sameFile ? chosen.rowAtoms : null,
     };
     const attachment = attachTensors(set, target, log);
-    if (attachment) {
-      attachments.push(attachment);
-      reportBareSites(attachment, chosen.sites, log);
-    }
+    if (!attachment) continue;
+    if (first) reportSecondSet(first, attachment, set, log);
+    (first ? other : main).push(attachment);
+    reportBareSites(attachment, chosen.sites, log);
   }
-  return attachments;
+  return { main, other };
+}
+
+function placeOf(set: TensorSet): Place {
+  return { file: set.file, line: set.entries[0]?.place.line ?? 1 };
+}
+
+function reportLeftOut(set: TensorSet, log: ProblemLog): void {
+  log.add(
+    'warning',
+    'third-set-left-out',
+    `A third set of ${set.quantity} tensors, ${set.name}, was left out.`,
+    {
+      place: placeOf(set),
+      allowed: 'at most two sets of one quantity: a main one, and one to compare with',
+      hint: 'Open at most two files with tensors of one quantity at a time.',
+    },
+  );
+}
+
+function reportSecondSet(main: Attachment, other: Attachment, set: TensorSet, log: ProblemLog): void {
+  const name = ({ name: own, file }: Attachment): string => (own === file ? own : `${own} (${file})`);
+  log.add(
+    'note',
+    'second-set',
+    `There are two sets of ${main.quantity} tensors: ${name(main)} is the main one, whose numbers are shown; ${name(other)} is the other one, and differences are other minus main.`,
+    { place: placeOf(set), hint: 'To exchange the two, open their files in the other order.' },
+  );
 }
 
 /** One note naming the sites of the set's elements that have no tensor of it. */
@@ -144,7 +175,7 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
   const chosen = chooseSymmetry(crystal, settings, tables, log);
   const symmetry = describeSymmetry(chosen, tables, settings, log);
   progress(0.4, 'tensors');
-  const attachments = attachAll(crystal, sets, chosen, log);
+  const bound = attachAll(crystal, sets, chosen, log);
   const rotations = cartesianOperations(chosen.crystal);
   const sites = chosen.sites.map((siteAtoms, index): SiteDossier => {
     const { site } = siteAtoms;
@@ -169,7 +200,8 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
       charge: site.charge,
       attachedHydrogens: site.attachedHydrogens,
       source: site.place,
-      ...siteTensors({ site, stabiliser, attachments, settings }, log),
+      ...siteTensors({ site, stabiliser, attachments: bound.main, settings }, log),
+      ...otherTensors({ site, stabiliser, attachments: bound.other, settings }, log),
     };
   });
   progress(0.7, 'bonds');

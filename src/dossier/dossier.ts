@@ -110,7 +110,16 @@ export interface SiteDossier {
   readonly shielding: ShieldingDossier | null;
   readonly shift: ShiftDossier | null;
   readonly efg: EfgDossier | null;
+  /** The same from a second set of a quantity, such as another calculation; absent without one. */
+  readonly other?: OtherTensors;
   readonly source: Place;
+}
+
+/** Tensors of one site from a second set; null where that set holds none of the quantity. */
+export interface OtherTensors {
+  readonly shielding: ShieldingDossier | null;
+  readonly shift: ShiftDossier | null;
+  readonly efg: EfgDossier | null;
 }
 
 /** A bond between two atoms of the cell; `shift` is the cell of the second atom relative to the first. */

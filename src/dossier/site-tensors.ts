@@ -1,6 +1,7 @@
 import type { Attachment, SiteTensor } from '#src/attach/attachment.ts';
 import type { Mat3 } from '#src/base/matrix3.ts';
-import type { Place, ProblemLog } from '#src/base/problem.ts';
+import type { Place } from '#src/base/problem.ts';
+import { ProblemLog } from '#src/base/problem.ts';
 import type { Site } from '#src/crystal/crystal.ts';
 import { nuclide, usualIsotope } from '#src/data/nuclides.ts';
 import { describeEfg } from '#src/tensor/efg.ts';
@@ -10,7 +11,7 @@ import { describeShielding } from '#src/tensor/shielding.ts';
 import { describeReferencedShift, describeShift } from '#src/tensor/shift.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
 import { efgToAtomicUnits, efgUnitOf } from '#src/tensor/units.ts';
-import type { DossierSettings, EfgDossier, ShieldingDossier, ShiftDossier } from './dossier.ts';
+import type { DossierSettings, EfgDossier, OtherTensors, ShieldingDossier, ShiftDossier } from './dossier.ts';
 
 /** What the tensors of one site are described from. */
 export interface SiteTensorInput {
@@ -211,4 +212,16 @@ export function siteTensors(input: SiteTensorInput, log: ProblemLog): SiteTensor
     reportTrace(site, efg, log);
   }
   return { isotope, shielding, shift, efg };
+}
+
+/**
+ * The tensors of one site from the second sets, as `siteTensors` makes them; nothing where there is no second set or it holds
+ * none for the site. Only warnings are passed on: what is undefined in the main set is undefined in the other one for the same reasons.
+ */
+export function otherTensors(input: SiteTensorInput, log: ProblemLog): { readonly other?: OtherTensors } {
+  if (!input.attachments.some(({ bySite }) => (bySite[input.site.index]?.length ?? 0) > 0)) return {};
+  const own = new ProblemLog();
+  const { shielding, shift, efg } = siteTensors(input, own);
+  for (const found of own.list()) if (found.severity === 'warning') log.push(found);
+  return { other: { shielding, shift, efg } };
 }
