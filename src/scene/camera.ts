@@ -7,7 +7,7 @@ import { add, cross, dot, length, normalize, scale, subtract } from '#src/base/v
 export type Quaternion = readonly [number, number, number, number];
 
 /**
- * Where the picture is seen from, orthographic. View axes: x to the right, y up, z towards the viewer. Plain data.
+ * Where the picture is seen from. View axes: x to the right, y up, z towards the viewer. Plain data.
  */
 export interface Camera {
   /** Å; the point in the middle of the picture. */
@@ -31,8 +31,17 @@ export interface Viewport {
 
 export const zoomLimits = { lowest: 1e-4, highest: 10 } as const;
 
+/** Degrees; beyond the highest the rim of the picture is drawn out of shape, and 180° is no picture at all. */
+export const perspectiveLimits = { lowest: 0, usual: 25, highest: 90 } as const;
+
 export function pixelsPerAngstrom(camera: Camera, viewport: Viewport): number {
   return camera.zoom * Math.max(1, Math.min(viewport.widthPx, viewport.heightPx));
+}
+
+/** Å from the target to the eye, towards the viewer: 1 / (2 zoom tan(angle/2)); Infinity without perspective. */
+export function eyeDistanceAngstrom(camera: Camera): number {
+  const degrees = Math.min(camera.perspectiveDegrees ?? 0, perspectiveLimits.highest);
+  return degrees > 0 ? 1 / (2 * camera.zoom * Math.tan((degrees * Math.PI) / 360)) : Infinity;
 }
 
 /** Rotation of Cartesian into view axes, row-major. */

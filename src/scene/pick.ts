@@ -1,10 +1,12 @@
-import type { Vec3 } from '#src/base/matrix3.ts';
-import { apply } from '#src/base/matrix3.ts';
-import { subtract } from '#src/base/vector3.ts';
+import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
+import { apply, matrixFromRows, multiply } from '#src/base/matrix3.ts';
+import { cross, normalize, subtract } from '#src/base/vector3.ts';
 import type { Camera, Viewport } from './camera.ts';
+import { anyPerpendicular } from './camera.ts';
+import { polarSurface } from './pick-polar.ts';
 import type { Projection } from './project.ts';
-import { centreOf, projection, projectPoint, viewShape } from './project.ts';
-import type { PickEntry, Scene } from './scene.ts';
+import { centreOf, projection, viewPoint, viewShape } from './project.ts';
+import type { CylinderBatch, PickEntry, PolarBatch, QuadricBatch, Scene } from './scene.ts';
 import { surfaceDepth, unitPoint, viewQuadric } from './view-quadric.ts';
 
 /** What is in front at a point of the picture. */
@@ -16,8 +18,9 @@ export interface PickHit {
 }
 
 /**
- * Front-most atom or bond under a point (CSS pixels from the upper left corner), by intersecting the line of sight with
- * every quadric and cylinder analytically; null over the paper. Exactly what the shaders draw there.
+ * Front-most atom, bond or polar surface under a point (CSS pixels from the upper left corner), by intersecting the line of
+ * sight with every one of them; null over the paper. Exactly what the shaders draw there. What reaches to the eye of a
+ * true perspective is not met.
  */
 export function pick(
   scene: Scene,
@@ -27,49 +30,95 @@ export function pick(
   viewport: Viewport,
 ): PickHit | null {
   const p = projection(camera, viewport);
-  let best = 0;
-  let depthPx = -Infinity;
-  for (let i = 0; i < scene.quadrics.count; i++) {
-    const depth = quadricDepth(scene, p, i, xPx, yPx);
-    if (depth !== null && depth > depthPx) {
-      depthPx = depth;
-      best = scene.quadrics.pickIds[i]!;
+  const ray = sightThrough(p, xPx - p.centreXPx, p.centreYPx - yPx);
+  const front = { pickId: 0, height: -Infinity };
+  const meet = (count: number, pickIds: Uint32Array, heightOf: (i: number) => number | null): void => {
+    for (let i = 0; i < count; i++) {
+      const height = heightOf(i);
+      if (height === null || height <= front.height || height >= ray.eye) continue;
+      front.height = height;
+      front.pickId = pickIds[i]!;
     }
-  }
-  for (let i = 0; i < scene.cylinders.count; i++) {
-    const depth = cylinderDepth(scene, p, i, xPx, yPx);
-    if (depth !== null && depth > depthPx) {
-      depthPx = depth;
-      best = scene.cylinders.pickIds[i]!;
-    }
-  }
-  const entry = scene.picks[best - 1];
-  return entry ? { pickId: best, entry, depthPx } : null;
+  };
+  const { quadrics, cylinders, polars } = scene;
+  meet(quadrics.count, quadrics.pickIds, (i) => quadricHeight(quadrics, p, ray, i));
+  meet(cylinders.count, cylinders.pickIds, (i) => cylinderHeight(cylinders, p, ray, i));
+  if (polars) meet(polars.count, polars.pickIds, (i) => polarHeight(polars, p, ray, i));
+  const entry = scene.picks[front.pickId - 1];
+  return entry ? { pickId: front.pickId, entry, depthPx: depthAt(p, ray, front.height) } : null;
 }
 
-function quadricDepth(scene: Scene, p: Projection, i: number, xPx: number, yPx: number): number | null {
-  const centre = projectPoint(p, centreOf(scene.quadrics, i));
-  const dx = xPx - centre.xPx;
-  const dy = centre.yPx - yPx;
+/**
+ * A line of sight as an axis of its own: `turn` takes view axes (pixels) to axes in which it runs along −z through
+ * (x, y) = offset. Without perspective those are the view axes.
+ */
+interface Sight {
+  readonly turn: Mat3 | null;
+  readonly offset: readonly [number, number];
+  /** The eye, in view axes; taken off before turning. */
+  readonly origin: Vec3;
+  /** Height beyond which nothing is seen. */
+  readonly eye: number;
+}
+
+function sightThrough(p: Projection, x: number, y: number): Sight {
+  if (p.eyePx === Infinity) return { turn: null, offset: [x, y], origin: [0, 0, 0], eye: Infinity };
+  const towardsEye = normalize([-x, -y, p.eyePx]);
+  const aside = anyPerpendicular(towardsEye);
+  return {
+    turn: matrixFromRows(aside, cross(towardsEye, aside), towardsEye),
+    offset: [0, 0],
+    origin: [0, 0, p.eyePx],
+    eye: 0,
+  };
+}
+
+/** Depth in view axes of a height along the line of sight. */
+function depthAt(p: Projection, { turn }: Sight, height: number): number {
+  return turn ? p.eyePx + height * turn[8] : height;
+}
+
+function alongSight(p: Projection, { turn, origin }: Sight, point: Vec3): Vec3 {
+  const seen = viewPoint(p, point);
+  return turn ? apply(turn, subtract(seen, origin)) : seen;
+}
+
+function quadricHeight(quadrics: QuadricBatch, p: Projection, ray: Sight, i: number): number | null {
+  const [x, y, z] = alongSight(p, ray, centreOf(quadrics, i));
+  const dx = ray.offset[0] - x;
+  const dy = ray.offset[1] - y;
   const o = 9 * i;
-  const shapes = scene.quadrics.shapes;
+  const { shapes } = quadrics;
   // the Frobenius norm of A bounds its largest semi-axis: most quadrics are passed over without turning them
   let reach = 0;
   for (let k = o; k < o + 9; k++) reach += shapes[k]! * shapes[k]!;
   if (dx * dx + dy * dy > reach * p.scale * p.scale) return null;
-  const q = viewQuadric(viewShape(p, scene.quadrics, i));
+  const shape = viewShape(p, quadrics, i);
+  const q = viewQuadric(ray.turn ? multiply(ray.turn, shape) : shape);
   const unit = unitPoint(q, dx, dy);
-  return unit && centre.depthPx + surfaceDepth(q, unit);
+  return unit && z + surfaceDepth(q, unit);
 }
 
-function cylinderDepth(scene: Scene, p: Projection, i: number, xPx: number, yPx: number): number | null {
-  const { starts, ends, radii } = scene.cylinders;
-  const view = (points: Float32Array) =>
-    apply(p.rotation, subtract([points[3 * i]!, points[3 * i + 1]!, points[3 * i + 2]!], p.target));
-  const x = (xPx - p.centreXPx) / p.scale;
-  const y = (p.centreYPx - yPx) / p.scale;
-  const depth = cylinderSurface(view(starts), view(ends), radii[i]!, x, y);
-  return depth === null ? null : depth * p.scale;
+function cylinderHeight(
+  { starts, ends, radii }: CylinderBatch,
+  p: Projection,
+  ray: Sight,
+  i: number,
+): number | null {
+  const end = (points: Float32Array): Vec3 =>
+    alongSight(p, ray, [points[3 * i]!, points[3 * i + 1]!, points[3 * i + 2]!]);
+  return cylinderSurface(end(starts), end(ends), radii[i]! * p.scale, ray.offset[0], ray.offset[1]);
+}
+
+function polarHeight(polars: PolarBatch, p: Projection, ray: Sight, i: number): number | null {
+  const { centres, tensors } = polars;
+  const centre: Vec3 = [centres[3 * i]!, centres[3 * i + 1]!, centres[3 * i + 2]!];
+  const [x, y, z] = alongSight(p, ray, centre);
+  const t = tensors.subarray(6 * i, 6 * i + 6);
+  const tensor: Mat3 = [t[0]!, t[3]!, t[4]!, t[3]!, t[1]!, t[5]!, t[4]!, t[5]!, t[2]!];
+  const turn = ray.turn ? multiply(ray.turn, p.rotation) : p.rotation;
+  const height = polarSurface(tensor, turn, (ray.offset[0] - x) / p.scale, (ray.offset[1] - y) / p.scale);
+  return height === null ? null : z + height * p.scale;
 }
 
 /**

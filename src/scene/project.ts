@@ -1,11 +1,14 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { apply, multiply } from '#src/base/matrix3.ts';
-import { subtract } from '#src/base/vector3.ts';
+import { dot, length, scale, subtract } from '#src/base/vector3.ts';
 import type { Camera, Viewport } from './camera.ts';
-import { pixelsPerAngstrom, viewRotation } from './camera.ts';
+import { eyeDistanceAngstrom, pixelsPerAngstrom, viewRotation } from './camera.ts';
 import type { QuadricBatch, Scene } from './scene.ts';
 
-/** A point on screen: CSS pixels from the upper left corner; `depthPx` grows towards the viewer, 0 at the target. */
+/**
+ * A point on screen: CSS pixels from the upper left corner; `depthPx` grows towards the viewer, 0 at the target. At or behind
+ * the eye of a true perspective a point has a depth but no place: x and y are NaN.
+ */
 export interface ScreenPoint {
   readonly xPx: number;
   readonly yPx: number;
@@ -20,21 +23,37 @@ export interface Projection {
   readonly target: Vec3;
   readonly centreXPx: number;
   readonly centreYPx: number;
+  /** Distance of the eye before the target, pixels; Infinity without perspective. */
+  readonly eyePx: number;
 }
 
 export function projection(camera: Camera, viewport: Viewport): Projection {
+  const scale = pixelsPerAngstrom(camera, viewport);
   return {
     rotation: viewRotation(camera.orientation),
-    scale: pixelsPerAngstrom(camera, viewport),
+    scale,
     target: camera.target,
     centreXPx: viewport.widthPx / 2,
     centreYPx: viewport.heightPx / 2,
+    eyePx: scale * eyeDistanceAngstrom(camera),
   };
 }
 
+/** By how much things at a depth are enlarged against the plane of the target; NaN at and behind the eye. */
+export function enlargement({ eyePx }: Projection, depthPx: number): number {
+  if (eyePx === Infinity) return 1;
+  return depthPx < eyePx ? eyePx / (eyePx - depthPx) : NaN;
+}
+
+/** View axes with the target as origin, pixels of the target's plane. */
+export function viewPoint(p: Projection, point: Vec3): Vec3 {
+  return scale(p.scale, apply(p.rotation, subtract(point, p.target)));
+}
+
 export function projectPoint(p: Projection, point: Vec3): ScreenPoint {
-  const [x, y, z] = apply(p.rotation, subtract(point, p.target));
-  return { xPx: p.centreXPx + p.scale * x, yPx: p.centreYPx - p.scale * y, depthPx: p.scale * z };
+  const [x, y, depthPx] = viewPoint(p, point);
+  const grown = enlargement(p, depthPx);
+  return { xPx: p.centreXPx + grown * x, yPx: p.centreYPx - grown * y, depthPx };
 }
 
 /** Semi-axes of quadric i in view axes and pixels (y up), row-major, columns = semi-axes. */
@@ -60,7 +79,7 @@ export function centreOf(quadrics: QuadricBatch, i: number): Vec3 {
   return [c[3 * i]!, c[3 * i + 1]!, c[3 * i + 2]!];
 }
 
-/** One drawn copy of an atom on screen; half widths of its outline's box in pixels. */
+/** One drawn copy of an atom on screen: middle and half widths of its outline's box in pixels, depth of its centre. */
 export interface ProjectedAtom extends ScreenPoint {
   readonly pickId: number;
   readonly halfWidthPx: number;
@@ -79,19 +98,56 @@ export function projectAtoms(
   for (let i = 0; i < scene.quadrics.count; i++) {
     const pickId = scene.quadrics.pickIds[i]!;
     const entry = scene.picks[pickId - 1];
-    if (entry?.kind === 'atom' && atomIds.has(entry.atomId)) found.push(projectQuadric(p, scene.quadrics, i));
+    if (entry?.kind !== 'atom' || !atomIds.has(entry.atomId)) continue;
+    const atom = projectQuadric(p, scene.quadrics, i);
+    if (atom) found.push(atom);
   }
   return found;
 }
 
-export function projectQuadric(p: Projection, quadrics: QuadricBatch, i: number): ProjectedAtom {
+/** The outline's box of quadric i, exact in perspective too; null where the quadric reaches to the eye or behind it. */
+export function projectQuadric(p: Projection, quadrics: QuadricBatch, i: number): ProjectedAtom | null {
   const m = viewShape(p, quadrics, i);
+  const pickId = quadrics.pickIds[i]!;
+  const [x, y, depthPx] = viewPoint(p, centreOf(quadrics, i));
+  const across: Vec3 = [m[0], m[1], m[2]];
+  const upwards: Vec3 = [m[3], m[4], m[5]];
+  if (p.eyePx === Infinity) {
+    return {
+      pickId,
+      xPx: p.centreXPx + x,
+      yPx: p.centreYPx - y,
+      depthPx,
+      halfWidthPx: length(across),
+      halfHeightPx: length(upwards),
+    };
+  }
+  const along: Vec3 = [m[6], m[7], m[8]];
+  const away = p.eyePx - depthPx;
+  if (away <= length(along)) return null;
+  const [middleX, halfWidthPx] = seenInterval(x, across, along, away, p.eyePx);
+  const [middleY, halfHeightPx] = seenInterval(y, upwards, along, away, p.eyePx);
   return {
-    ...projectPoint(p, centreOf(quadrics, i)),
-    pickId: quadrics.pickIds[i]!,
-    halfWidthPx: Math.hypot(m[0], m[1], m[2]),
-    halfHeightPx: Math.hypot(m[3], m[4], m[5]),
+    pickId,
+    xPx: p.centreXPx + middleX,
+    yPx: p.centreYPx - middleY,
+    depthPx,
+    halfWidthPx,
+    halfHeightPx,
   };
+}
+
+/**
+ * Middle and half width, on the target's plane, of a quadric between the two planes through the eye that touch it and are
+ * parallel to one axis of the picture. The plane that cuts the target's plane at k·eye has the normal n = (1, k) in (x, z); it
+ * touches where (x − k·away)² = |Mᵀn|², a quadratic in k. `across` and `along` are rows of the semi-axis matrix M.
+ */
+function seenInterval(x: number, across: Vec3, along: Vec3, away: number, eyePx: number): [number, number] {
+  const square = away * away - dot(along, along);
+  const mixed = x * away + dot(across, along);
+  const rest = x * x - dot(across, across);
+  const root = Math.sqrt(Math.max(0, mixed * mixed - square * rest));
+  return [(eyePx * mixed) / square, (eyePx * root) / square];
 }
 
 /** Directions of the cell axes in the picture, each `sizePx` long when it lies flat; y downwards. */
