@@ -137,7 +137,7 @@ export const arbitraryNewCase: fc.Arbitrary<NewCase> = fc.record({
   title: fc.string(),
   sources: fc.array(source, { minLength: 1, maxLength: 3 }),
   decisions: fc.record({
-    structure: fc.option(fc.record({ source: fc.constant(0), index: fc.nat(9) })),
+    structure: fc.option(fc.record({ source: fc.constant(0), index: fc.nat(9) }), { nil: null }),
     settings: arbitrarySettings,
     accepted: fc.array(
       fc.record({
