@@ -50,16 +50,18 @@ export function parseSpecies(text: string): ParsedSpecies | null {
 }
 
 /**
- * An atom type that may name several elements on one position: `Al0.5Si0.5`, `(Fe,Mg)`, `Al/Si`, `Mg0.9 Fe0.1`,
+ * An atom type that may name several elements on one position: `Al0.5Si0.5`, `(Fe,Mg)`, `Al/Si`, `Mg0.9 Fe0.1`, `Mg 0.9 Fe 0.1`,
  * `AlSi`. Shares are returned as given (they may add up to less than 1); where none is given each has the same. A
- * single element is a mixture of one with share 1. null where something in it is no element.
+ * single element is a mixture of one, with share 1 or the one it names: `Pb2+0.5`, `Pb2+ 0.50(2)`, `Na0.5`, `Pb0.52+` (a half of
+ * Pb2+). null where something in it is no element.
  */
 export function parseMixture(text: string): SpeciesMixture | null {
   if (text.length > longestType) return null;
-  const alone = parseSpecies(text);
+  const plain = shareApart(text.trim());
+  const alone = parseSpecies(plain);
   if (alone) return { species: [{ ...alone, share: 1 }], sharesGiven: true };
-  const pieces = mixturePieces(text.trim().replace(/[()[\]{}]/g, ' '));
-  if (!pieces || pieces.length < 2) return null;
+  const pieces = mixturePieces(plain.replace(uncertainty, '$1').replace(/[()[\]{}]/g, ' '));
+  if (!pieces) return null;
   const species: (ParsedSpecies & { share: number | null })[] = [];
   for (const piece of pieces) {
     const parts = /^(.*?[A-Za-z+-])[:=]?(\d*\.\d+|[01])?$/.exec(piece);
@@ -67,15 +69,32 @@ export function parseMixture(text: string): SpeciesMixture | null {
     if (!found) return null;
     species.push({ ...found, share: parts?.[2] ? Number(parts[2]) : null });
   }
+  if (species.length === 1 && !species.some(({ share }) => share !== null && share > 0 && share < 1)) {
+    return null;
+  }
   return withShares(species);
+}
+
+/** Of a share, as in `0.50(2)`. */
+const uncertainty = /(\d*\.\d+)\(\d+\)/g;
+
+/** A share that would be read as part of a charge, in `Pb0.52+`, `Na+0.5`, `Pb+20.5`, set apart; `Fe2.5+` and `Fe+2.5` are charges. */
+function shareApart(text: string): string {
+  return text
+    .replace(/^([A-Z][a-z]?)(0?\.\d+)(\d[+-])$/, '$1$3:$2')
+    .replace(/^([A-Z][a-z]?)([+-])(0?\.\d+)$/, '$1$2:$3')
+    .replace(/^([A-Z][a-z]?)([+-])(\d)(0\.\d+)$/, '$1$3$2:$4');
 }
 
 /** Cut at separators, else before every capital where the shares or two-letter symbols show that it is a mixture. */
 function mixturePieces(text: string): string[] | null {
-  const separated = text.split(/[,;/|&\s]+/).filter((piece) => piece !== '');
+  const separated = text
+    .replace(/([A-Za-z+-])\s+(?=\d*\.\d)/g, '$1')
+    .split(/[,;/|&\s]+/)
+    .filter((piece) => piece !== '');
   if (separated.length > 1) return separated;
   const joined = separated[0] ?? '';
-  const cut = joined.match(/[A-Z][a-z]?(?:\d?[+-](?=\d*\.|[A-Z]|$))?(?:\d*\.\d+)?/g);
+  const cut = joined.match(/[A-Z][a-z]?(?:\d?[+-](?=[:=]?\d*\.|[A-Z]|$))?(?:[:=]?\d*\.\d+)?/g);
   if (!cut || cut.join('') !== joined) return null;
   const telling = /\./.test(joined) || (/[A-Z][a-z]/.test(joined) && !/[HDT](?![a-z])/.test(joined));
   return telling ? cut : null;

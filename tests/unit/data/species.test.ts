@@ -65,7 +65,23 @@ describe('a position with several elements', () => {
     ['(Mg0.9Fe0.1)', 'Mg 0.9, Fe 0.1'],
     ['Mg0.9 Fe0.1', 'Mg 0.9, Fe 0.1'],
     ['Mg:0.9, Fe:0.1', 'Mg 0.9, Fe 0.1'],
-    ['Na0.5', null],
+    ['Mg 0.9 Fe 0.1', 'Mg 0.9, Fe 0.1'],
+    ['Mg(0.9)Fe(0.1)', 'Mg 0.9, Fe 0.1'],
+    ['Na0.5', 'Na 0.5'],
+    ['Pb2+0.5', 'Pb 0.5'],
+    ['Pb2+.5', 'Pb 0.5'],
+    ['Pb2+ 0.5', 'Pb 0.5'],
+    ['Pb2+:0.5', 'Pb 0.5'],
+    ['Pb2+(0.5)', 'Pb 0.5'],
+    ['Pb2+0.50(2)', 'Pb 0.5'],
+    ['Pb0.52+', 'Pb 0.5'],
+    ['O2-0.25', 'O 0.25'],
+    ['Na+0.5', 'Na 0.5'],
+    ['Pb+20.5', 'Pb 0.5'],
+    ['Fe:0.4Mg:0.6', 'Fe 0.4, Mg 0.6'],
+    ['Fe2.5+', 'Fe 1'],
+    ['Fe+2.5', 'Fe 1'],
+    ['Na1.5', null],
     ['Fe3+0.5Al3+0.5', 'Fe 0.5, Al 0.5'],
     ['O0.5F0.3', 'O 0.5, F 0.3'],
   ])('%s has the shares it names', (text, expected) => {
@@ -87,6 +103,9 @@ describe('a position with several elements', () => {
 
   it('keeps charges', () => {
     expect(parseMixture('Fe3+0.5Al3+0.5')?.species.map((s) => s.charge)).toEqual([3, 3]);
+    for (const text of ['Pb2+0.5', 'Pb0.52+', 'Pb+20.5', 'Pb2+ 0.5']) {
+      expect(parseMixture(text)?.species).toMatchObject([{ element: 'Pb', charge: 2, share: 0.5 }]);
+    }
   });
 
   it('takes a single element as a mixture of one', () => {

@@ -99,6 +99,7 @@ function settleHydrogens(
   const attached = sites.some(({ attachedHydrogens }) => attachedHydrogens > 0);
   const hasImplied = implied.some((count) => count > 0);
   if (!attached && !hasImplied) return sites;
+  if (!counts && hasImplied) return impliedWithoutFormula(view, sites, implied, log);
   const misfit = (variant: readonly Site[]): number => {
     const fit = counts && bestFit(cellContent(variant, multiplicities), counts, units);
     return fit?.heavyAgree ? Math.abs(fit.missingHydrogens) : Infinity;
@@ -120,6 +121,32 @@ function settleHydrogens(
   } else if (chosen === withImplied) noteAttached(view, withImplied, 'named by the atom types', log);
   else if (attached) noteAttached(view, sites, 'counted on other atoms', log);
   return chosen;
+}
+
+/** Nothing tells whether `OH` counts a hydrogen that has a row of its own; where no hydrogen has one, it counts. */
+function impliedWithoutFormula(
+  view: BlockView,
+  sites: readonly Site[],
+  implied: readonly number[],
+  log: ProblemLog,
+): readonly Site[] {
+  const listed = sites.some(({ species }) => species.some(({ element }) => /^[HDT]$/.test(element)));
+  if (!listed) {
+    const counted = sites.map((site, i) => ({
+      ...site,
+      attachedHydrogens: Math.max(site.attachedHydrogens, implied[i] ?? 0),
+    }));
+    noteAttached(view, counted, 'named by the atom types', log);
+    return counted;
+  }
+  const first = sites.find((_, i) => (implied[i] ?? 0) > 0)!;
+  log.add(
+    'warning',
+    'cif-type-hydrogens-open',
+    `Types such as that of ${first.label} name hydrogens, and the list holds hydrogens too; those of the types were not counted.`,
+    { place: first.place, hint: 'Give _chemical_formula_sum, or a type that is an element.' },
+  );
+  return sites;
 }
 
 function noteAttached(view: BlockView, sites: readonly Site[], how: string, log: ProblemLog): void {

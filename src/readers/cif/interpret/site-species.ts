@@ -2,6 +2,8 @@ import type { Species } from '#src/crystal/crystal.ts';
 import { elementFromLabel, elementOf } from '#src/data/elements.ts';
 import type { SpeciesMixture } from '#src/data/species.ts';
 import { parseMixture } from '#src/data/species.ts';
+import type { TypeStyle } from './group-type.ts';
+import { groupReading } from './group-type.ts';
 
 /** What stands on a row of the atom list. */
 export interface SiteSpecies {
@@ -19,6 +21,8 @@ export interface SiteSpecies {
   readonly rival: string | null;
   /** A two-letter element that the label spells and the formula lacks, where the formula made it a one-letter one: iron in `FeM1`. */
   readonly spelled: string | null;
+  /** Why the type, which names a group of atoms or may name one, was read so; null for a plain type. */
+  readonly group: string | null;
   /** False where a mixture named no shares and equal ones were taken. */
   readonly sharesGiven: boolean;
 }
@@ -47,18 +51,23 @@ export function isDummy(
 
 /**
  * Element, shares and charge of a row from its type symbol, else from its label; `known` holds the elements of the
- * formula, which decide between readings such as `CA1` (calcium or carbon).
+ * formula, which decide between readings such as `CA1` (calcium or carbon); `style` is that of all types.
  */
 export function speciesOfSite(
   typeText: string | null,
   label: string,
   known: ReadonlySet<string>,
+  style: TypeStyle = { properCase: false, capitals: false },
 ): SiteSpecies {
+  const group = typeText === null ? null : groupReading(typeText, label, known, style);
+  if (group) return { ...ofElement(group.element, 'type', true), group: `${typeText}: ${group.reason}` };
   const typed = typeText === null ? null : parseMixture(typeText);
   if (typed && typeText !== null && !contradicted(typeText, typed, known)) return fromMixture(typed, 'type');
   const typeReading = typeText === null ? null : elementFromLabel(typeText, known);
   if (typeReading && (known.size === 0 || known.has(typeReading.element))) {
-    return ofElement(typeReading.element, 'type', typeReading.certain);
+    const partly = typeText !== null && /\d*\.\d|[;/&|]/.test(typeText);
+    const group = partly ? `${typeText}: only a part of the type could be read` : null;
+    return { ...ofElement(typeReading.element, 'type', typeReading.certain), group };
   }
   const mixture = /[,/]/.test(label) ? parseMixture(label) : null;
   if (mixture) return fromMixture(mixture, 'label');
@@ -96,7 +105,7 @@ function spelledIn(label: string, known: ReadonlySet<string>): string | null {
 /** Two capitals as a type, such as `CO` or `HO`, that name no element of the formula while their letters alone do. */
 function contradicted(text: string, mixture: SpeciesMixture, known: ReadonlySet<string>): boolean {
   const [only, ...more] = mixture.species;
-  if (!only || more.length > 0 || known.size === 0 || !/^[A-Z]{2}\d*$/.test(text)) return false;
+  if (!only || more.length > 0 || known.size === 0 || !/^[A-Z]{2}\d*[+-]?\d?$/.test(text)) return false;
   if (known.has(only.element)) return false;
   return known.has(elementFromLabel(text, known)?.element ?? '');
 }
@@ -115,7 +124,9 @@ function fromMixture(mixture: SpeciesMixture, from: 'type' | 'label'): SiteSpeci
   const { species, sharesGiven } = mixture;
   const main = species.reduce((best, one) => (one.share > best.share ? one : best));
   const charged = species.filter(({ charge }) => charge !== null);
-  const charge = charged.length === 0 ? null : charged.reduce((sum, one) => sum + one.charge! * one.share, 0);
+  const whole = species.reduce((sum, { share }) => sum + share, 0) || 1;
+  const charge =
+    charged.length === 0 ? null : charged.reduce((sum, one) => sum + one.charge! * (one.share / whole), 0);
   return {
     element: main.element,
     shares: species.map(({ element, share }) => ({ element, occupancy: share })),
@@ -125,6 +136,7 @@ function fromMixture(mixture: SpeciesMixture, from: 'type' | 'label'): SiteSpeci
     certain: true,
     rival: null,
     spelled: null,
+    group: null,
     sharesGiven,
   };
 }
@@ -140,6 +152,7 @@ function ofElement(element: string, from: SiteSpecies['from'], certain: boolean)
     certain,
     rival: null,
     spelled: null,
+    group: null,
     sharesGiven: true,
   };
 }

@@ -7,6 +7,9 @@ import { textOf } from './block-view.ts';
 import type { CartesianFrame } from './cartesian-frame.ts';
 import type { CategoryTable } from './category-table.ts';
 import { readDisplacements } from './displacement.ts';
+import type { TypeStyle } from './group-type.ts';
+import { typeStyle } from './group-type.ts';
+import { reportShares, sharedOccupancy } from './type-shares.ts';
 import type { SiteRow, SiteRows } from './site-rows.ts';
 import type { SiteSpecies } from './site-species.ts';
 import { speciesOfSite } from './site-species.ts';
@@ -34,19 +37,17 @@ export function buildSites(
   if (placed.length < rows.length) reportNoCell(rows, placed, log);
   const displacements = readDisplacements(view, table, placed, frame?.lattice ?? null, log);
   const details = detailReader(table, view.macromolecular);
-  const speciesOf = rememberedSpecies(known);
+  const speciesOf = rememberedSpecies(known, typeStyle(placed.map(({ typeText }) => typeText)));
   const species = placed.map((row) => speciesOf(row.typeText, row.label));
   const sites = placed.map((row, index): Site => {
     const found = species[index]!;
+    const { whole, occupancy } = sharedOccupancy(found, row.occupancy);
     return {
       index,
       label: row.label,
       element: found.element,
-      species: found.shares.map(({ element, occupancy }) => ({
-        element,
-        occupancy: occupancy * row.occupancy,
-      })),
-      occupancy: row.occupancy,
+      species: found.shares.map((one) => ({ element: one.element, occupancy: one.occupancy * whole })),
+      occupancy,
       charge: found.charge,
       ...positionOf(row, frame),
       displacement: displacements[index] ?? null,
@@ -55,18 +56,22 @@ export function buildSites(
     };
   });
   reportLabels(placed, log);
+  reportShares(placed, species, log);
   if (frame?.source === 'default') reportAssumedFrame(placed, frame, log);
   return { sites, species };
 }
 
 /** A type symbol stands on thousands of rows of a large list and means the same on each, unless the label had to decide. */
-function rememberedSpecies(known: ReadonlySet<string>): (type: string | null, label: string) => SiteSpecies {
+function rememberedSpecies(
+  known: ReadonlySet<string>,
+  style: TypeStyle,
+): (type: string | null, label: string) => SiteSpecies {
   const byType = new Map<string, SiteSpecies>();
   return (type, label) => {
     const before = type === null ? undefined : byType.get(type);
     if (before) return before;
-    const found = speciesOfSite(type, label, known);
-    if (type !== null && found.from === 'type') byType.set(type, found);
+    const found = speciesOfSite(type, label, known, style);
+    if (type !== null && found.from === 'type' && found.group === null) byType.set(type, found);
     return found;
   };
 }

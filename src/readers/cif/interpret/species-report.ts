@@ -9,7 +9,7 @@ interface Remark {
   readonly code: string;
   readonly severity: Severity;
   readonly holds: (species: SiteSpecies) => boolean;
-  readonly sentence: (count: number, list: string) => string;
+  readonly sentence: (count: number, list: string, reasons: string) => string;
 }
 
 const remarks: readonly Remark[] = [
@@ -31,6 +31,13 @@ const remarks: readonly Remark[] = [
     severity: 'note',
     holds: ({ from, certain }) => from === 'label' && certain,
     sentence: (count, list) => `The element of ${count} atoms was read from the label: ${list}.`,
+  },
+  {
+    code: 'cif-type-names-group',
+    severity: 'warning',
+    holds: ({ group }) => group !== null,
+    sentence: (count, list, reasons) =>
+      `The types of ${count} atoms are no plain elements: ${list}. ${reasons}.`,
   },
   {
     code: 'cif-mixture-shares',
@@ -55,6 +62,9 @@ export function reportSpecies(
       .slice(0, mostShown)
       .map((site) => `${site.label} = ${site.species.map(({ element }) => element).join('/')}`);
     const list = shown.join(', ') + (found.length > mostShown ? ', …' : '');
-    log.add(severity, code, sentence(found.length, list), { place: first.place });
+    const reasons = [...new Set(found.map(({ index }) => species[index]!.group ?? ''))]
+      .slice(0, 4)
+      .join('; ');
+    log.add(severity, code, sentence(found.length, list, reasons), { place: first.place });
   }
 }
