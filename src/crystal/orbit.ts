@@ -54,6 +54,15 @@ function intoCell(position: VecFrac): { fractional: VecFrac; cellShift: Vec3 } {
   return { fractional: [Math.max(0, x + i), Math.max(0, y + j), Math.max(0, z + k)], cellShift };
 }
 
+/** The image of a position under one operation, brought into the cell. */
+export function imageOf(
+  position: VecFrac,
+  operations: readonly SymmetryOperation[],
+  operationIndex: number,
+): OrbitImage {
+  return { ...intoCell(applyOperation(operations[operationIndex]!, position)), operationIndex };
+}
+
 /** By operation: the way from the position to its nearest image, null where that is further than the lookout. */
 type Offsets = readonly (NearOffset | null)[];
 
@@ -149,10 +158,7 @@ export function orbitOf(
     lattice,
     mergeDistanceAngstrom,
   );
-  const images = representatives.map((operationIndex): OrbitImage => {
-    const { fractional, cellShift } = intoCell(moved[operationIndex]!);
-    return { fractional, operationIndex, cellShift };
-  });
+  const images = representatives.map((operationIndex) => imageOf(position, operations, operationIndex));
   const averaged = averagedPosition(position, stabiliser, offsets);
   return { images, stabiliser, averaged, uneven, ...margins(stabiliser, offsets) };
 }

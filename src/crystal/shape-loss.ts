@@ -4,8 +4,8 @@ import { operationsOfSetting } from './space-group-settings.ts';
 import type { SymmetryOperation } from './symmetry-operation.ts';
 
 /**
- * What a cell loses by its shape: a crystal repeated 2 × 1 × 1 still has its threefold axis, but the doubled lattice
- * has not, and no operation with whole-numbered rotation part can express it in that cell.
+ * What a cell cannot hold by its shape: a crystal repeated 2 × 1 × 1 still has its threefold axis, but the doubled
+ * lattice has not, and no operation with whole-numbered rotation part can express it in that cell.
  */
 export interface ShapeLoss {
   /** International Tables number of the crystal's group. */
@@ -22,7 +22,7 @@ export interface ShapeLoss {
   readonly orbits: number;
 }
 
-/** Compares the operations of a cell with the group of the crystal in it; null where the shape of the cell keeps all of it. */
+/** Compares the operations that a cell holds with the group of the crystal in it; null where its shape keeps all of it. */
 export function shapeLoss(
   setting: SpaceGroupSetting,
   operations: readonly SymmetryOperation[],

@@ -2,17 +2,19 @@ import type { Mat3, Vec3, VecFrac } from '#src/base/matrix3.ts';
 import {
   addMatrices,
   apply,
+  determinant,
   identity3,
   inverse,
   multiply,
   scaleMatrix,
   transpose,
 } from '#src/base/matrix3.ts';
-import { scale, subtract } from '#src/base/vector3.ts';
+import { add, scale, subtract } from '#src/base/vector3.ts';
 import type { MoyoDataset } from '@spglib/moyo-wasm';
 import { analyze_cell } from '@spglib/moyo-wasm';
 import { changeBasis } from './basis-change.ts';
 import { distinctRotations, operationSetKey } from './group.ts';
+import { operationsFromHall } from './hall-symbol.ts';
 import { isLeftHanded, onInvertedAxes, operationsOnInvertedAxes } from './handedness.ts';
 import type { CellConstants, Lattice } from './lattice.ts';
 import { latticeFromCell } from './lattice.ts';
@@ -20,7 +22,7 @@ import { identifySettingIn } from './space-group.ts';
 import type { SpaceGroupSetting } from './space-group-settings.ts';
 import { operationsOfSetting, settingFromHallNumber } from './space-group-settings.ts';
 import type { SymmetryOperation } from './symmetry-operation.ts';
-import { applyOperation } from './symmetry-operation.ts';
+import { applyOperation, operationKey } from './symmetry-operation.ts';
 
 /** How a cell with its operations relates to a tabulated setting: x(tabulated) = P⁻¹(x − p). */
 export interface StandardFrame {
@@ -119,6 +121,44 @@ const strictTolerance = 1e-4;
 /** A well-conditioned cell without any symmetry of its own, for the second attempt. */
 const plainCell: CellConstants = { a: 7.3, b: 8.9, c: 10.7, alpha: 84, beta: 97, gamma: 103 };
 
+/** Rotations that a tabulated cell of a space group (by its number) has by its axes alone. */
+function turnsOfAxes(number: number): Mat3[] {
+  const family = families.find(([first]) => number >= first)!;
+  const rotations = distinctRotations(operationsFromHall(family[1]) ?? []);
+  return rotations.filter((rotation) => determinant(rotation) > 0);
+}
+
+/** First space-group number and Hall symbol of the holohedry, from the highest on. */
+const families: readonly (readonly [number, string])[] = [
+  [195, '-P 4 2 3'],
+  [143, '-P 6 2'],
+  [75, '-P 4 2'],
+  [16, '-P 2 2'],
+  [3, '-P 2y'],
+  [1, '-P 1'],
+];
+
+/**
+ * The same setting with its origin at that of the cell, by other turns of the axes where need be. Tables allow several
+ * origins in most groups, and letters change places between them: crystals given in different cells with one origin
+ * keep their letters so. The frame unchanged where the cell's origin is none that the tables allow.
+ */
+function onGivenOrigin(frame: StandardFrame): StandardFrame {
+  const { setting, basis } = frame;
+  const tabulated = operationsOfSetting(setting);
+  const keys = new Set(tabulated.map(operationKey));
+  const given = inStandardFrame([0, 0, 0], frame);
+  const turn = turnsOfAxes(setting.number).find((candidate) => {
+    const back = inverse(candidate).map(Math.round) as unknown as Mat3;
+    return tabulated.every(({ rotation, translation }) => {
+      const moved = subtract(add(translation, apply(rotation, given)), given);
+      const turned = multiply(multiply(back, rotation), candidate);
+      return keys.has(operationKey({ rotation: turned, translation: apply(back, moved) }));
+    });
+  });
+  return turn ? { ...frame, basis: multiply(basis, turn), origin: [0, 0, 0] } : frame;
+}
+
 function frameFromSearch(
   operations: readonly SymmetryOperation[],
   cell: CellConstants,
@@ -129,7 +169,8 @@ function frameFromSearch(
   if (!frame) return null;
   const carried = changeBasis(operations, frame.basis, frame.origin);
   const tabulated = operationsOfSetting(frame.setting);
-  return carried && operationSetKey(carried) === operationSetKey(tabulated) ? frame : null;
+  if (!carried || operationSetKey(carried) !== operationSetKey(tabulated)) return null;
+  return onGivenOrigin(frame);
 }
 
 /** A frame found on −a, −b, −c, told in terms of a, b, c: x′ = P⁻¹(−x − p) = (−P)⁻¹(x + p). */

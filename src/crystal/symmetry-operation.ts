@@ -4,7 +4,11 @@ import { scale } from '#src/base/vector3.ts';
 import { plainSigns, readAffineExpressions } from './affine-text.ts';
 import type { Lattice } from './lattice.ts';
 
-/** x′ = W x + w on fractional columns; W has small integers, w is in [0, 1) once normalised. */
+/**
+ * x′ = W x + w on fractional columns; w is in [0, 1) once normalised. W has small integers, except for operations of a
+ * crystal that the shape of its supercell cannot hold (`operationsInGivenCell`): these have fractions, act on a position
+ * rather than on a position modulo the cell, and form no group with the others.
+ */
 export interface SymmetryOperation {
   readonly rotation: Mat3;
   readonly translation: Vec3;
@@ -178,6 +182,29 @@ export function readOperation(text: string): OperationReading | null {
   };
 }
 
+/** True for a matrix of determinant ±1 and finite order, within rounding: what a crystal's operation is in any basis. */
+function isRotationOfSomeBasis(rotation: Mat3): boolean {
+  const near = (a: Mat3, b: Mat3): boolean => a.every((entry, index) => Math.abs(entry - b[index]!) < 1e-9);
+  if (Math.abs(Math.abs(determinant(rotation)) - 1) > 1e-9) return false;
+  let power = rotation;
+  for (let order = 1; order <= 6; order += 1) {
+    if (near(power, identity3)) return true;
+    power = multiply(power, rotation);
+  }
+  return false;
+}
+
+/**
+ * Reads what `formatOperation` prints, also where the rotation part has fractions (`x/2-y,2x,z`), as operations of a
+ * crystal have in a supercell that cannot hold them; files may not state such ones. The translation is kept as it
+ * stands, lattice translations included. Null where the rotation part is an isometry in no basis.
+ */
+export function parseImageOperation(text: string): SymmetryOperation | null {
+  const read = text.length > 200 ? null : readAffineExpressions(text, 'xyz');
+  if (!read || !isRotationOfSomeBasis(read.linear)) return null;
+  return { rotation: read.linear, translation: read.constant };
+}
+
 /** `readOperation` without the by-products. */
 export function parseOperation(text: string): SymmetryOperation | null {
   return readOperation(text)?.operation ?? null;
@@ -189,21 +216,42 @@ function fractionText(value: number): string {
     const over = Math.round(value * under);
     if (Math.abs(over / under - value) < 1e-6) return `${over}/${under}`;
   }
-  return String(Number(value.toFixed(6)));
+  return smallFractionText(value) ?? String(Number(value.toFixed(6)));
+}
+
+/** Denominators go this far: cells that repeat a smaller one hold 128 of it at most where their symmetry is searched. */
+const largestDenominator = 128;
+
+/** `3/14` where a value is such a fraction to the last digits of its double; null where it is none. */
+function smallFractionText(value: number): string | null {
+  for (let under = 1; under <= largestDenominator; under += 1) {
+    const over = Math.round(value * under);
+    if (Math.abs(over - value * under) < 1e-10 * under)
+      return under === 1 ? String(over) : `${over}/${under}`;
+  }
+  return null;
+}
+
+/** A letter with its factor: `x`, `2x`, `x/2`, `3x/2`. */
+function letterText(letter: string, size: number): string {
+  const [over = '1', under] = (smallFractionText(size) ?? String(size)).split('/');
+  return `${over === '1' ? '' : over}${letter}${under === undefined ? '' : `/${under}`}`;
 }
 
 function rowText(coefficients: readonly number[], constant: number): string {
   const letters = coefficients.map((value, index) => {
     if (value === 0) return '';
-    const size = Math.abs(value) === 1 ? '' : String(Math.abs(value));
-    return `${value < 0 ? '-' : '+'}${size}${'xyz'[index]}`;
+    return `${value < 0 ? '-' : '+'}${letterText('xyz'[index]!, Math.abs(value))}`;
   });
   const shift =
     Math.abs(constant) < 1e-6 ? '' : `${constant < 0 ? '-' : '+'}${fractionText(Math.abs(constant))}`;
   return `${letters.join('')}${shift}`.replace(/^\+/, '') || '0';
 }
 
-/** `-x,y+1/2,-z`: coordinates first, translation as a fraction (as a decimal where it is none). Reads back to the same operation. */
+/**
+ * `-x,y+1/2,-z`, `x/2-y,2x,z`: coordinates first, translation as a fraction (as a decimal where it is none). Reads back to
+ * the same operation by `parseOperation`, or by `parseImageOperation` where a factor is a fraction.
+ */
 export function formatOperation(operation: SymmetryOperation): string {
   const { rotation, translation } = operation;
   return [0, 1, 2].map((row) => rowText(rotation.slice(3 * row, 3 * row + 3), translation[row]!)).join(',');

@@ -1,8 +1,9 @@
-import type { Vec3, VecFrac } from '#src/base/matrix3.ts';
-import { apply, inverse } from '#src/base/matrix3.ts';
-import { scale } from '#src/base/vector3.ts';
+import type { Mat3, Vec3, VecFrac } from '#src/base/matrix3.ts';
+import { apply, inverse, multiply } from '#src/base/matrix3.ts';
+import { add, scale, subtract } from '#src/base/vector3.ts';
+import { atomFinder } from './atom-finder.ts';
 import { atomPartners } from './atom-partners.ts';
-import { changeBasisWhereFitting } from './basis-change.ts';
+import { changeBasis, changeBasisWhereFitting } from './basis-change.ts';
 import { closeGroup, uniqueOperations } from './group.ts';
 import {
   isLeftHanded,
@@ -11,25 +12,43 @@ import {
   positionOnInvertedAxes,
 } from './handedness.ts';
 import type { Lattice } from './lattice.ts';
+import { nearOffsetFinder } from './near-images.ts';
 import { withRareKind } from './rare-surroundings.ts';
 import type { ShapeLoss } from './shape-loss.ts';
 import { shapeLoss } from './shape-loss.ts';
+import type { SmallCell } from './small-cell.ts';
+import {
+  operationsInGivenCell,
+  smallCellOnInvertedAxes,
+  smallLattice,
+  smallTranslations,
+} from './small-cell.ts';
 import type { StandardFrame } from './standard-frame.ts';
 import { analyseAtoms, frameOfResult, matrixOfResult, standardFrame } from './standard-frame.ts';
 import { operationsOfSetting } from './space-group-settings.ts';
 import type { SymmetryOperation } from './symmetry-operation.ts';
+import { applyOperation } from './symmetry-operation.ts';
 
 /** What a search found, before letters are looked up. */
 export interface FoundSymmetry {
   /** In the basis of the input cell, identity first, pure translations of an enlarged cell included. */
   readonly operations: readonly SymmetryOperation[];
+  /** Of the small cell where there is one, else of the input cell. */
   readonly frame: StandardFrame;
   /** By atom: the first atom of its orbit. */
   readonly orbits: readonly number[];
-  /** By atom: indices of the operations that map it onto itself. */
-  readonly stabilisers: readonly (readonly number[])[];
+  /** By atom, in the basis that `frame` refers to. */
+  readonly placed: readonly PlacedSite[];
   /** Null where the cell holds the whole group of its crystal. */
   readonly loss: ShapeLoss | null;
+  /** Where the shape of the input cell cannot hold the group and the operations are those of its crystal: the cell that can. */
+  readonly small: SmallCell | null;
+}
+
+/** An atom as letters need it: exactly on its elements, with the order of its site-symmetry group. */
+export interface PlacedSite {
+  readonly averaged: VecFrac;
+  readonly order: number;
 }
 
 /** Images may be off by this many tolerances: a search places elements between atoms that are off by one each. */
@@ -69,6 +88,13 @@ function snappedOperations(
   return closeGroup(snapped, snapped.length) === null ? operations : snapped;
 }
 
+/** Atoms of a cell: fractional positions, and one number for each kind. */
+interface Atoms {
+  readonly lattice: Lattice;
+  readonly positions: readonly VecFrac[];
+  readonly species: readonly number[];
+}
+
 interface Mapping {
   readonly orbits: readonly number[];
   readonly stabilisers: readonly (readonly number[])[];
@@ -77,9 +103,7 @@ interface Mapping {
 /** Where each operation takes each atom; null as soon as an atom has no partner of its kind. */
 function mapAtoms(
   operations: readonly SymmetryOperation[],
-  lattice: Lattice,
-  positions: readonly VecFrac[],
-  species: readonly number[],
+  { lattice, positions, species }: Atoms,
   reachAngstrom: number,
 ): Mapping | null {
   const partnerOf = atomPartners(operations, lattice, positions, species, reachAngstrom);
@@ -108,11 +132,99 @@ function listedOperations(result: {
   );
 }
 
+/** Positions averaged over the operations that keep each atom. */
+function placedAtoms(
+  operations: readonly SymmetryOperation[],
+  stabilisers: Mapping['stabilisers'],
+  { lattice, positions }: Atoms,
+  reachAngstrom: number,
+): PlacedSite[] {
+  const nearOffset = nearOffsetFinder(lattice, reachAngstrom);
+  return positions.map((position, atom) => {
+    const stabiliser = stabilisers[atom]!;
+    const sum = stabiliser
+      .map((index) => nearOffset(subtract(applyOperation(operations[index]!, position), position)))
+      .reduce((total, near) => add(total, near?.offset ?? [0, 0, 0]), [0, 0, 0] as VecFrac);
+    return { averaged: add(position, scale(1 / stabiliser.length, sum)), order: stabiliser.length };
+  });
+}
+
+/** The group checked on the atoms and related to the tables; null where an atom has no partner. */
+function groupOnAtoms(
+  operations: readonly SymmetryOperation[],
+  atoms: Atoms,
+  toleranceAngstrom: number,
+): Pick<FoundSymmetry, 'operations' | 'frame' | 'orbits' | 'placed'> | null {
+  const mapping = mapAtoms(operations, atoms, slack * toleranceAngstrom);
+  const frame = mapping && standardFrame(operations, atoms.lattice);
+  if (!frame) return null;
+  const placed = placedAtoms(operations, mapping.stabilisers, atoms, 10 * toleranceAngstrom);
+  return { operations, frame, orbits: mapping.orbits, placed };
+}
+
+/** By atom: the first atom that is alike by a translation of the small cell; null where a copy is missing. */
+function firstCopies(
+  translations: readonly Vec3[],
+  { lattice, positions, species }: Atoms,
+  reachAngstrom: number,
+): Int32Array | null {
+  const find = atomFinder(lattice, positions, species, reachAngstrom);
+  const firsts = new Int32Array(positions.length).fill(-1);
+  for (const [atom, position] of positions.entries()) {
+    if (firsts[atom]! >= 0) continue;
+    for (const translation of translations) {
+      const copy = find(add(position, translation) as VecFrac, species[atom]!);
+      if (copy < 0 || firsts[copy]! >= 0) return null;
+      firsts[copy] = atom;
+    }
+  }
+  return firsts;
+}
+
+/** The whole group of the crystal, found and checked in its primitive cell; null where that fails. */
+function searchInSmallCell(
+  found: StandardFrame,
+  primitive: Mat3,
+  atoms: Atoms,
+  toleranceAngstrom: number,
+): Omit<FoundSymmetry, 'loss'> | null {
+  const repeat = inverse(primitive).map((x) => Math.round(x) + 0) as unknown as Mat3;
+  const toSmall = multiply(inverse(found.basis), inverse(repeat));
+  const origin = scale(-1, apply(inverse(found.basis), found.origin));
+  const carried = changeBasis(operationsOfSetting(found.setting), toSmall, origin);
+  const firsts = carried && firstCopies(smallTranslations(repeat), atoms, slack * toleranceAngstrom);
+  if (!firsts) return null;
+  const lattice = smallLattice(atoms.lattice, repeat);
+  const own = [...firsts].flatMap((first, atom) => (first === atom ? [atom] : []));
+  const inSmall: Atoms = {
+    lattice,
+    positions: own.map((atom): VecFrac => apply(repeat, atoms.positions[atom]!)),
+    species: own.map((atom) => atoms.species[atom]!),
+  };
+  const group = groupOnAtoms(
+    snappedOperations(carried, lattice, toleranceAngstrom),
+    inSmall,
+    toleranceAngstrom,
+  );
+  if (!group) return null;
+  const small: SmallCell = { lattice, repeat, operations: group.operations };
+  const placeOf = new Map(own.map((atom, place) => [atom, place]));
+  const places = [...firsts].map((first) => placeOf.get(first)!);
+  return {
+    operations: operationsInGivenCell(small),
+    frame: group.frame,
+    orbits: places.map((place) => own[group.orbits[place]!]!),
+    placed: places.map((place) => group.placed[place]!),
+    small,
+  };
+}
+
 /**
  * Searches the symmetry of atoms within a tolerance (Å). The operations are those of the tabulated group, carried into
  * the input cell, and every one is checked to take every atom onto one of its kind. A supercell whose shape breaks
- * rotations of its crystal has the group that the shape allows, and `loss` tells what that leaves out. Left-handed
- * axes are searched on −a, −b, −c. Null where the search fails or a check does.
+ * rotations of its crystal is searched in the primitive cell: it has all operations of the crystal, and `loss` tells
+ * how many of them its shape cannot hold. Left-handed axes are searched on −a, −b, −c. Null where the search fails or
+ * a check does.
  */
 export function searchSymmetry(
   lattice: Lattice,
@@ -121,32 +233,36 @@ export function searchSymmetry(
   toleranceAngstrom: number,
 ): FoundSymmetry | null {
   if (positions.length === 0) return null;
-  if (!isLeftHanded(lattice)) return searchRightHanded(lattice, positions, species, toleranceAngstrom);
-  const inverted = positions.map(positionOnInvertedAxes);
-  const found = searchRightHanded(onInvertedAxes(lattice), inverted, species, toleranceAngstrom);
+  if (!isLeftHanded(lattice)) return searchRightHanded({ lattice, positions, species }, toleranceAngstrom);
+  const inverted = onInvertedAxes(lattice);
+  const found = searchRightHanded(
+    { lattice: inverted, positions: positions.map(positionOnInvertedAxes), species },
+    toleranceAngstrom,
+  );
   if (!found) return null;
+  const small = found.small && smallCellOnInvertedAxes(found.small);
   const operations = operationsOnInvertedAxes(found.operations);
-  const frame = standardFrame(operations, lattice);
-  return frame && { ...found, operations, frame };
+  const frame = small ? standardFrame(small.operations, small.lattice) : standardFrame(operations, lattice);
+  const placed = found.placed.map(({ averaged, order }) => ({
+    averaged: positionOnInvertedAxes(averaged),
+    order,
+  }));
+  return frame && { ...found, operations, frame, placed, small };
 }
 
-function searchRightHanded(
-  lattice: Lattice,
-  positions: readonly VecFrac[],
-  species: readonly number[],
-  toleranceAngstrom: number,
-): FoundSymmetry | null {
+function searchRightHanded(atoms: Atoms, toleranceAngstrom: number): FoundSymmetry | null {
+  const { lattice, positions, species } = atoms;
   const kinds = withRareKind(lattice, positions, species, toleranceAngstrom);
   const result = analyseAtoms({ cell: lattice.cell, positions, species: kinds }, toleranceAngstrom);
   const found = result && frameOfResult(result);
   if (!result || !found) return null;
-  const carried = carriedOperations(found);
-  const listed = listedOperations(result);
-  const complete = carried !== null && carried.length === listed.length;
-  const operations = snappedOperations(complete ? carried : listed, lattice, toleranceAngstrom);
-  const mapping = mapAtoms(operations, lattice, positions, species, slack * toleranceAngstrom);
-  const frame = mapping && standardFrame(operations, lattice);
-  return (
-    frame && { operations, frame, ...mapping, loss: shapeLoss(found.setting, operations, result.orbits) }
-  );
+  // The library's own list may hold matrices rounded to whole numbers that are no operations of a skew supercell.
+  const operations = carriedOperations(found) ?? listedOperations(result);
+  const loss = shapeLoss(found.setting, operations, result.orbits);
+  const whole =
+    loss && searchInSmallCell(found, matrixOfResult(result.prim_std_linear), atoms, toleranceAngstrom);
+  if (whole) return { ...whole, loss };
+  const snapped = snappedOperations(operations, lattice, toleranceAngstrom);
+  const group = groupOnAtoms(snapped, atoms, toleranceAngstrom);
+  return group && { ...group, loss, small: null };
 }

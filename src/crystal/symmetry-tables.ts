@@ -1,18 +1,16 @@
 import type { VecFrac } from '#src/base/matrix3.ts';
-import { add, scale, subtract } from '#src/base/vector3.ts';
 import initialise, { initSync, wyckoff_positions } from '@spglib/moyo-wasm';
 import { groupTable } from './group-table.ts';
 import type { Lattice } from './lattice.ts';
-import { nearOffsetFinder } from './near-images.ts';
 import { orbitOf } from './orbit.ts';
 import type { ShapeLoss } from './shape-loss.ts';
+import type { SmallCell } from './small-cell.ts';
 import type { StandardFrame } from './standard-frame.ts';
 import { inStandardFrame, standardFrame } from './standard-frame.ts';
 import { operationsOfSetting, settingName, settingsOfNumber } from './space-group-settings.ts';
-import type { FoundSymmetry } from './symmetry-search.ts';
+import type { PlacedSite } from './symmetry-search.ts';
 import { searchSymmetry } from './symmetry-search.ts';
 import type { SymmetryOperation } from './symmetry-operation.ts';
-import { applyOperation } from './symmetry-operation.ts';
 import type { WyckoffPosition } from './wyckoff.ts';
 import { wyckoffPositionOf } from './wyckoff.ts';
 
@@ -44,6 +42,11 @@ export interface SymmetrySearchResult extends NamedGroup, SiteLetters {
   readonly orbits: readonly number[];
   /** What the shape of the cell keeps the crystal's group from; null where the cell holds all of it. */
   readonly loss: ShapeLoss | null;
+  /**
+   * With a loss, the primitive cell by which orbits and operations are those of the whole crystal all the same; null
+   * without a loss, and where the operations are only those that the input cell holds.
+   */
+  readonly smallCell: SmallCell | null;
 }
 
 /** Symmetry tables and search, ready for use without waiting. */
@@ -63,7 +66,8 @@ export interface SymmetryTables {
   ) => SiteDescription | null;
   /**
    * Searches the symmetry of all atoms of a cell within a tolerance (Å); `species` holds one number for each kind of
-   * atom. Operations come in the basis of the input cell. Null where the search fails.
+   * atom. Operations come in the basis of the input cell; where its shape breaks the crystal's symmetry they are those
+   * of the crystal, some with fractions as rotation parts, and `smallCell` holds them whole. Null where the search fails.
    */
   readonly search: (
     lattice: Lattice,
@@ -100,12 +104,6 @@ function nameOf({ setting, tabulated }: StandardFrame): NamedGroup {
   };
 }
 
-/** A site as letters need it: exactly on its elements, with the order of its site-symmetry group. */
-interface PlacedSite {
-  readonly averaged: VecFrac;
-  readonly order: number;
-}
-
 function lettersOf(frame: StandardFrame, sites: readonly PlacedSite[]): SiteLetters {
   const operations = operationsOfSetting(frame.setting);
   const positions = positionsOf(frame.setting.hallNumber);
@@ -129,29 +127,13 @@ const describeSites: SymmetryTables['describeSites'] = (lattice, operations, pos
   return { ...nameOf(frame), ...lettersOf(frame, sites) };
 };
 
-/** Positions averaged over the operations that keep each atom. */
-function placedAtoms(
-  { operations, stabilisers }: FoundSymmetry,
-  lattice: Lattice,
-  positions: readonly VecFrac[],
-  reachAngstrom: number,
-): PlacedSite[] {
-  const nearOffset = nearOffsetFinder(lattice, reachAngstrom);
-  return positions.map((position, atom) => {
-    const stabiliser = stabilisers[atom]!;
-    const sum = stabiliser
-      .map((index) => nearOffset(subtract(applyOperation(operations[index]!, position), position)))
-      .reduce((total, near) => add(total, near?.offset ?? [0, 0, 0]), [0, 0, 0] as VecFrac);
-    return { averaged: add(position, scale(1 / stabiliser.length, sum)), order: stabiliser.length };
-  });
-}
-
 const search: SymmetryTables['search'] = (lattice, positions, species, toleranceAngstrom) => {
   const found = searchSymmetry(lattice, positions, species, toleranceAngstrom);
   if (!found) return null;
-  const { operations, orbits, frame, loss } = found;
-  const sites = placedAtoms(found, lattice, positions, 10 * toleranceAngstrom);
-  return { operations, orbits, loss, ...nameOf(frame), ...lettersOf(frame, sites) };
+  const { operations, orbits, frame, loss, small, placed } = found;
+  // In the given cell the operations stand in no tabulated setting, even where they do in the small one.
+  const name = nameOf(small ? { ...frame, tabulated: false } : frame);
+  return { operations, orbits, loss, smallCell: small, ...name, ...lettersOf(frame, placed) };
 };
 
 const tables: SymmetryTables = { describeSites, search };

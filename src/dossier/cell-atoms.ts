@@ -2,11 +2,15 @@ import { apply, identity3, inverse } from '#src/base/matrix3.ts';
 import type { Mat3, Vec3, VecFrac } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { Crystal, Site } from '#src/crystal/crystal.ts';
+import type { DistinctOrientations } from '#src/crystal/distinct-orientations.ts';
 import { distinctOrientations } from '#src/crystal/distinct-orientations.ts';
 import { toCartesian } from '#src/crystal/lattice.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import { orbitOf } from '#src/crystal/orbit.ts';
 import type { Orbit } from '#src/crystal/orbit.ts';
+import type { SmallCell } from '#src/crystal/small-cell.ts';
+import { orbitInSmallCell, smallOperationIndex } from '#src/crystal/small-cell.ts';
+import type { SymmetryOperation } from '#src/crystal/symmetry-operation.ts';
 import { cartesianRotation, formatOperation } from '#src/crystal/symmetry-operation.ts';
 import type { EquivalentAtom } from './dossier.ts';
 
@@ -42,15 +46,27 @@ export function cartesianOperations(crystal: Crystal): Mat3[] {
   return symmetry.operations.map((operation) => cartesianRotation(operation, lattice));
 }
 
+/** Which operations turn the site's tensor alike, in the cell in which rotation parts are whole-numbered. */
+function orientationsOf(
+  { stabiliser }: Orbit,
+  operations: readonly SymmetryOperation[],
+  small: SmallCell | null,
+): DistinctOrientations {
+  if (!small) return distinctOrientations(operations, stabiliser);
+  const inSmall = (operationIndex: number): number => smallOperationIndex(small, operationIndex);
+  const { count, orientationOf } = distinctOrientations(small.operations, stabiliser.map(inSmall));
+  return { count, orientationOf: (operationIndex) => orientationOf(inSmall(operationIndex)) };
+}
+
 function atomsOfOrbit(
   site: Site,
   orbit: Orbit,
+  orientations: DistinctOrientations,
   crystal: Crystal,
   lattice: Lattice,
   rotations: Mat3[],
 ): SiteAtoms {
   const { operations } = crystal.symmetry;
-  const orientations = distinctOrientations(operations, orbit.stabiliser);
   const atoms = orbit.images.map((image, index): EquivalentAtom => {
     const operation = operations[image.operationIndex]!;
     const translation = operation.translation.map((t, axis) => t + image.cellShift[axis]!) as unknown as Vec3;
@@ -71,15 +87,24 @@ function atomsOfOrbit(
 
 /**
  * All atoms of the cell, site by site: images of every site under the operations, those closer than the merge
- * distance (Å) being one. Raises `uneven-orbit` where the images do not fall into equal groups.
+ * distance (Å) being one. With a small cell the operations are those of a crystal whose cell cannot hold all of them.
+ * Raises `uneven-orbit` where the images do not fall into equal groups.
  */
-export function cellAtoms(crystal: Crystal, mergeDistanceAngstrom: number, log: ProblemLog): SiteAtoms[] {
+export function cellAtoms(
+  crystal: Crystal,
+  mergeDistanceAngstrom: number,
+  log: ProblemLog,
+  small: SmallCell | null = null,
+): SiteAtoms[] {
   const { lattice } = crystal;
   if (!lattice) return crystal.sites.map(loneAtom);
+  const { operations } = crystal.symmetry;
   const rotations = cartesianOperations(crystal);
   return crystal.sites.map((site) => {
     const fractional: VecFrac = site.fractional ?? apply(inverse(lattice.toCartesian), site.cartesian);
-    const orbit = orbitOf(fractional, crystal.symmetry.operations, lattice, mergeDistanceAngstrom);
+    const orbit = small
+      ? orbitInSmallCell(fractional, small, operations, mergeDistanceAngstrom)
+      : orbitOf(fractional, operations, lattice, mergeDistanceAngstrom);
     if (orbit.uneven) {
       log.add(
         'warning',
@@ -92,6 +117,7 @@ export function cellAtoms(crystal: Crystal, mergeDistanceAngstrom: number, log: 
         },
       );
     }
-    return atomsOfOrbit(site, orbit, crystal, lattice, rotations);
+    const orientations = orientationsOf(orbit, operations, small);
+    return atomsOfOrbit(site, orbit, orientations, crystal, lattice, rotations);
   });
 }

@@ -2,9 +2,11 @@ import type { Vec3, VecFrac } from '#src/base/matrix3.ts';
 import { length, subtract } from '#src/base/vector3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { Crystal, CrystalSymmetry, Site } from '#src/crystal/crystal.ts';
+import { atomFinder } from '#src/crystal/atom-finder.ts';
 import { toCartesian } from '#src/crystal/lattice.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import type { ShapeLoss } from '#src/crystal/shape-loss.ts';
+import type { SmallCell } from '#src/crystal/small-cell.ts';
 import { identityOperation } from '#src/crystal/symmetry-operation.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import type { SiteAtoms } from './cell-atoms.ts';
@@ -18,6 +20,8 @@ export interface ChosenCrystal {
   readonly sites: readonly SiteAtoms[];
   /** Row of the file → index into the flat list of all atoms (site after site). */
   readonly rowAtoms: readonly number[];
+  /** Where the shape of the cell cannot hold the operations of the crystal: the cell that can. */
+  readonly smallCell: SmallCell | null;
   /** Wyckoff letters and site symmetries where the search already gave them. */
   readonly found: {
     readonly wyckoff: readonly (string | null)[];
@@ -37,7 +41,7 @@ export function firstAtoms(sites: readonly SiteAtoms[]): number[] {
 
 function asListed(crystal: Crystal, settings: DossierSettings, log: ProblemLog): ChosenCrystal {
   const sites = cellAtoms(crystal, settings.mergeDistanceAngstrom, log);
-  return { crystal, sites, rowAtoms: firstAtoms(sites), found: null };
+  return { crystal, sites, rowAtoms: firstAtoms(sites), smallCell: null, found: null };
 }
 
 const noSymmetry: CrystalSymmetry = {
@@ -75,7 +79,7 @@ function withoutSymmetry(
   const listed = asListed(crystal, settings, log);
   const whole: Crystal = { ...crystal, symmetry: noSymmetry, sites: expanded(listed, lattice) };
   const sites = cellAtoms(whole, settings.mergeDistanceAngstrom, log);
-  return { crystal: whole, sites, rowAtoms: listed.rowAtoms, found: null };
+  return { crystal: whole, sites, rowAtoms: listed.rowAtoms, smallCell: null, found: null };
 }
 
 /** One number for each different content of a site: element, shares, and the file's own site label where it groups. */
@@ -88,6 +92,9 @@ function speciesNumbers(sites: readonly Site[]): number[] {
     return number;
   });
 }
+
+/** Atoms are looked for among those so near first, Å: images are nearer than the tolerance to their atoms. */
+const nearAngstrom = 0.5;
 
 function nearestAtom(position: VecFrac, from: SiteAtoms, lattice: Lattice): number {
   let best = 0;
@@ -104,21 +111,46 @@ function nearestAtom(position: VecFrac, from: SiteAtoms, lattice: Lattice): numb
   return best;
 }
 
-/** Warns that the shape of a supercell hides symmetry of its crystal. */
-function reportShapeLoss(loss: ShapeLoss, siteCount: number, crystal: Crystal, log: ProblemLog): void {
-  const { hermannMauguin, number, primitiveCells, operations, lostOperations, orbits } = loss;
-  const sites = orbits < siteCount ? `, so ${orbits} sites appear as ${siteCount}` : '';
-  log.add(
-    'warning',
-    'supercell-breaks-symmetry',
-    `The cell is ${primitiveCells} × the primitive cell of ${hermannMauguin} (No. ${number}); its shape keeps only ${operations - lostOperations} of ${operations} operations${sites}.`,
-    {
-      place: crystal.place,
-      got: `${operations - lostOperations} operations`,
-      allowed: `${operations} operations`,
-      hint: 'Give the primitive or the conventional cell to have all symmetry of the crystal.',
-    },
+/** By position: flat index of the atom of its site that lies nearest. */
+function nearestAtoms(
+  positions: readonly VecFrac[],
+  siteOf: readonly number[],
+  sites: readonly SiteAtoms[],
+  lattice: Lattice,
+): number[] {
+  const first = firstAtoms(sites);
+  const atoms = sites.flatMap((one) => one.atoms);
+  const find = atomFinder(
+    lattice,
+    atoms.map(({ fractional }): VecFrac => fractional ?? [0, 0, 0]),
+    atoms.map(({ siteIndex }) => siteIndex),
+    nearAngstrom,
   );
+  return positions.map((position, atom) => {
+    const site = siteOf[atom]!;
+    const found = find(position, site);
+    return found >= 0 ? found : first[site]! + nearestAtom(position, sites[site]!, lattice);
+  });
+}
+
+/** Says that the shape of a supercell cannot hold its crystal's symmetry, and what became of that. */
+function reportShapeLoss(loss: ShapeLoss, mended: boolean, crystal: Crystal, log: ProblemLog): void {
+  const { hermannMauguin, number, primitiveCells, operations, lostOperations } = loss;
+  const held = operations - lostOperations;
+  const cell = `The cell is ${primitiveCells} × the primitive cell of ${hermannMauguin} (No. ${number}); its shape holds only ${held} of ${operations} operations itself`;
+  if (mended) {
+    log.add('note', 'supercell-breaks-symmetry', `${cell}; the sites are grouped by all of them.`, {
+      place: crystal.place,
+      hint: 'Operations that the cell cannot hold have fractions of x, y, z. The primitive or the conventional cell needs none.',
+    });
+    return;
+  }
+  log.add('warning', 'supercell-breaks-symmetry', `${cell}, and the sites are grouped by these.`, {
+    place: crystal.place,
+    got: `${held} operations`,
+    allowed: `${operations} operations`,
+    hint: 'Give the primitive or the conventional cell to have all symmetry of the crystal.',
+  });
 }
 
 function searched(
@@ -137,7 +169,7 @@ function searched(
   const leaders = result.orbits
     .map((leader, atom) => (leader === atom ? atom : -1))
     .filter((atom) => atom >= 0);
-  if (result.loss) reportShapeLoss(result.loss, leaders.length, crystal, log);
+  if (result.loss) reportShapeLoss(result.loss, result.smallCell !== null, crystal, log);
   const siteOfLeader = new Map(leaders.map((leader, site) => [leader, site]));
   const reduced: Crystal = {
     ...crystal,
@@ -152,16 +184,14 @@ function searched(
     },
     sites: leaders.map((leader, index) => ({ ...whole[leader]!, index })),
   };
-  const sites = cellAtoms(reduced, settings.mergeDistanceAngstrom, log);
-  const first = firstAtoms(sites);
-  const atomOf = whole.map((site, atom) => {
-    const siteIndex = siteOfLeader.get(result.orbits[atom]!) ?? 0;
-    return first[siteIndex]! + nearestAtom(site.fractional ?? [0, 0, 0], sites[siteIndex]!, lattice);
-  });
+  const sites = cellAtoms(reduced, settings.mergeDistanceAngstrom, log, result.smallCell);
+  const siteOf = result.orbits.map((leader) => siteOfLeader.get(leader) ?? 0);
+  const atomOf = nearestAtoms(positions, siteOf, sites, lattice);
   return {
     crystal: reduced,
     sites,
     rowAtoms: listed.rowAtoms.map((atom) => atomOf[atom]!),
+    smallCell: result.smallCell,
     found: {
       wyckoff: leaders.map((leader) => result.wyckoff[leader] ?? null),
       siteSymmetry: leaders.map((leader) => result.siteSymmetry[leader] ?? null),
@@ -171,7 +201,8 @@ function searched(
 
 /**
  * Puts a crystal under the symmetry the settings ask for: the file's, the one found from its atoms, or none.
- * `auto` takes the file's where it states one. Raises `symmetry-found`, `symmetry-not-found`, `symmetry-search-too-large`.
+ * `auto` takes the file's where it states one. Raises `symmetry-found`, `symmetry-not-found`, `symmetry-search-too-large`,
+ * `supercell-breaks-symmetry`.
  */
 export function chooseSymmetry(
   crystal: Crystal,

@@ -1,3 +1,5 @@
+import { apply } from '#src/base/matrix3.ts';
+import type { VecFrac } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { CrystalSymmetry } from '#src/crystal/crystal.ts';
 import { identifySettingIn, settingFromHermannMauguin } from '#src/crystal/space-group.ts';
@@ -40,14 +42,16 @@ export function describeSymmetry(
   settings: DossierSettings,
   log: ProblemLog,
 ): SymmetryDescription {
-  const { crystal, sites, found } = chosen;
+  const { crystal, sites, smallCell, found } = chosen;
   const { lattice, symmetry } = crystal;
   const unknown = { wyckoff: sites.map(() => null), siteSymmetry: sites.map(() => null) };
   if (!lattice) return { symmetry, spaceGroup: 'molecule without a cell', ...unknown };
-  const setting = identifySettingIn(symmetry.operations, lattice);
-  const positions = sites.map(({ site }) => site.fractional ?? ([0, 0, 0] as const));
-  const told =
-    tables?.describeSites(lattice, symmetry.operations, positions, settings.mergeDistanceAngstrom) ?? null;
+  const setting = smallCell ? null : identifySettingIn(symmetry.operations, lattice);
+  const given = sites.map(({ site }): VecFrac => site.fractional ?? [0, 0, 0]);
+  const [cell, operations, positions] = smallCell
+    ? [smallCell.lattice, smallCell.operations, given.map((at): VecFrac => apply(smallCell.repeat, at))]
+    : [lattice, symmetry.operations, given];
+  const told = tables?.describeSites(cell, operations, positions, settings.mergeDistanceAngstrom) ?? null;
   if (tables && !told && !found) {
     log.add(
       'note',

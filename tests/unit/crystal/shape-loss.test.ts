@@ -56,15 +56,18 @@ const quartzRepeated = (times: readonly [number, number, number]) =>
   searchRepeated(quartz, 'P 32 2"', quartzSeeds, times);
 
 describe('search in supercells', () => {
-  it('tells what 2 × 1 × 1 quartz loses: the threefold axes', () => {
+  it('tells what 2 × 1 × 1 quartz cannot hold: the threefold axes', () => {
     const found = quartzRepeated([2, 1, 1]);
-    expect(found).toMatchObject({ number: 5 });
-    expect(found.operations).toHaveLength(4);
+    expect(found).toMatchObject({ number: 154, hermannMauguin: 'P 32 2 1', hall: null, hallNumber: null });
+    expect(found.operations).toHaveLength(12);
+    expect(found.smallCell!.operations).toHaveLength(6);
+    expect(found.smallCell!.lattice.volume).toBeCloseTo(latticeFromCell(quartz).volume, 6);
     expect(found.loss).toEqual({
       ...{ number: 154, hermannMauguin: 'P 32 2 1', primitiveCells: 2 },
       ...{ operations: 12, lostOperations: 8, orbits: 2 },
     });
-    expect(new Set(found.orbits).size).toBe(5);
+    expect(new Set(found.orbits).size).toBe(2);
+    expect(new Set(found.wyckoff)).toEqual(new Set(['a', 'c']));
   });
 
   it.each([
@@ -73,7 +76,7 @@ describe('search in supercells', () => {
     [[2, 2, 1], 24],
   ] as const)('nothing is lost by quartz repeated %j', (times, operations) => {
     const found = quartzRepeated(times);
-    expect(found).toMatchObject({ number: 154, loss: null });
+    expect(found).toMatchObject({ number: 154, loss: null, smallCell: null });
     expect(found.operations).toHaveLength(operations);
     expect(new Set(found.orbits).size).toBe(2);
   });

@@ -11,6 +11,7 @@ import {
   isCrystallographicRotation,
   normalizeOperation,
   operationKey,
+  parseImageOperation,
   parseOperation,
   readOperation,
   rotationOrder,
@@ -139,5 +140,32 @@ describe('printing whole translations', () => {
     expect(text(2)).toBe('x+2,y-2,z');
     expect(text(1.5)).toBe('x+3/2,y-3/2,z');
     expect(text(1e-12)).toBe('x,y,z');
+  });
+});
+
+describe('operations with fractions as factors', () => {
+  const threefold = { rotation: [0, -0.5, 0, 2, -1, 0, 0, 0, 1], translation: [0.5, 0, 2 / 3] } as const;
+
+  it('print as fractions of letters and read back', () => {
+    expect(formatOperation(threefold)).toBe('-y/2+1/2,2x-y,z+2/3');
+    expect(parseImageOperation('-y/2+1/2,2x-y,z+2/3')).toEqual(threefold);
+    const [p, q] = [5 / 7, 3 / 14];
+    const odd = {
+      rotation: [p, q, 0, 16 / 7, -p, 0, 0, 0, -1],
+      translation: [-1.25, 9 / 14, 0.123456],
+    } as const;
+    expect(formatOperation(odd)).toBe('5x/7+3y/14-5/4,16x/7-5y/7+9/14,-z+0.123456');
+    expect(parseImageOperation(formatOperation(odd))).toEqual(odd);
+  });
+
+  it.each(['x/2,y,z', 'x+y,y,z', '2x,y/2,z', 'x,y', 'x,y,0', '', 'x,y,z'.repeat(50)])(
+    'refuses %j',
+    (text) => {
+      expect(parseImageOperation(text)).toBeNull();
+    },
+  );
+
+  it('cannot be stated by a file', () => {
+    expect(parseOperation('-y/2+1/2,2x-y,z+2/3')).toBeNull();
   });
 });
