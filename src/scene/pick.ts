@@ -1,8 +1,9 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { apply, matrixFromRows, multiply } from '#src/base/matrix3.ts';
-import { cross, normalize, subtract } from '#src/base/vector3.ts';
+import { cross, length, normalize, subtract } from '#src/base/vector3.ts';
 import type { Camera, Viewport } from './camera.ts';
 import { anyPerpendicular } from './camera.ts';
+import { leastNearness } from './perspective.ts';
 import { polarSurface } from './pick-polar.ts';
 import type { Projection } from './project.ts';
 import { centreOf, projection, viewPoint, viewShape } from './project.ts';
@@ -94,9 +95,16 @@ function quadricHeight(quadrics: QuadricBatch, p: Projection, ray: Sight, i: num
   for (let k = o; k < o + 9; k++) reach += shapes[k]! * shapes[k]!;
   if (dx * dx + dy * dy > reach * p.scale * p.scale) return null;
   const shape = viewShape(p, quadrics, i);
+  if (ray.turn && isTooNear(p, centreOf(quadrics, i), shape)) return null;
   const q = viewQuadric(ray.turn ? multiply(ray.turn, shape) : shape);
   const unit = unitPoint(q, dx, dy);
   return unit && z + surfaceDepth(q, unit);
+}
+
+/** Whether an ellipsoid reaches so near to the eye that it isn't drawn. */
+function isTooNear(p: Projection, centre: Vec3, shape: Mat3): boolean {
+  const reach = length([shape[6], shape[7], shape[8]]);
+  return p.eyePx - viewPoint(p, centre)[2] - reach < leastNearness * p.eyePx;
 }
 
 function cylinderHeight(

@@ -3,6 +3,7 @@ import { apply, multiply } from '#src/base/matrix3.ts';
 import { dot, length, scale, subtract } from '#src/base/vector3.ts';
 import type { Camera, Viewport } from './camera.ts';
 import { eyeDistanceAngstrom, pixelsPerAngstrom, viewRotation } from './camera.ts';
+import { leastNearness } from './perspective.ts';
 import type { QuadricBatch, Scene } from './scene.ts';
 
 /**
@@ -105,7 +106,7 @@ export function projectAtoms(
   return found;
 }
 
-/** The outline's box of quadric i, exact in perspective too; null where the quadric reaches to the eye or behind it. */
+/** The outline's box of quadric i, exact in perspective too; null where the quadric is too near to the eye to be drawn. */
 export function projectQuadric(p: Projection, quadrics: QuadricBatch, i: number): ProjectedAtom | null {
   const m = viewShape(p, quadrics, i);
   const pickId = quadrics.pickIds[i]!;
@@ -124,7 +125,7 @@ export function projectQuadric(p: Projection, quadrics: QuadricBatch, i: number)
   }
   const along: Vec3 = [m[6], m[7], m[8]];
   const away = p.eyePx - depthPx;
-  if (away <= length(along)) return null;
+  if (away - length(along) < leastNearness * p.eyePx) return null;
   const [middleX, halfWidthPx] = seenInterval(x, across, along, away, p.eyePx);
   const [middleY, halfHeightPx] = seenInterval(y, upwards, along, away, p.eyePx);
   return {
