@@ -9,28 +9,29 @@ precision highp int;
 #include <_light>
 #include <_depth-cue>
 
-flat in vec4 vShape;
-flat in vec2 vAlong;
 flat in vec3 vStart;
+flat in vec3 vAxis;
+flat in vec2 vSize;
 flat in vec3 vStartColour;
 flat in vec3 vEndColour;
+
+uniform vec4 uCylinderRim; // width, ink, and the radii between which it comes in, CSS pixels
 
 out vec4 fragColour;
 
 void main() {
-  ViewCylinder c = ViewCylinder(vShape.x, vShape.y, vShape.z, vShape.w);
-  vec2 aside = vec2(-vAlong.y, vAlong.x);
-  vec2 d = viewPixel() - vStart.xy;
-  float across = dot(d, aside);
-  CylinderHit hit = cylinderSurface(c, dot(d, vAlong), across);
+  // the line of sight through this pixel: (x, y, 0) + z (-x/E, -y/E, 1)
+  vec2 pixel = viewPixel();
+  vec3 sight = vec3(-uPerEyePx * pixel, 1.0);
+  CylinderHit hit = cylinderSurface(vAxis, vSize.x, vSize.y, vec3(pixel, 0.0) - vStart, sight);
   if (!hit.found) discard;
-  vec3 normal = vec3(hit.normal.x * vAlong + hit.normal.y * aside, hit.normal.z);
-  float z = vStart.z + hit.z;
-  vec3 colour = lit(hit.t < 0.5 * c.size ? vStartColour : vEndColour, normal);
+  float near = nearness(hit.z);
+  vec3 colour = lit(hit.t < 0.5 * vSize.x ? vStartColour : vEndColour, hit.normal);
   // a thin dark edge, as on the ellipsoids
-  float edge = (c.radius - abs(across)) / uPixelScale;
-  float rimInk = (1.0 - smoothstep(0.3, 1.1, edge)) * smoothstep(1.5, 4.0, c.radius / uPixelScale);
-  colour = mix(colour, colour * 0.4, 0.6 * rimInk);
-  fragColour = vec4(srgbWithDepthCue(colour, z), 1.0);
-  gl_FragDepth = fragmentDepth(z);
+  float edge = (vSize.y - hit.miss) / near / uPixelScale;
+  float radius = vSize.y / nearness(vStart.z + 0.5 * vSize.x * vAxis.z) / uPixelScale;
+  float rimInk = 1.0 - smoothstep(uCylinderRim.x - 0.4, uCylinderRim.x + 0.4, edge);
+  colour *= 1.0 - uCylinderRim.y * rimInk * smoothstep(uCylinderRim.z, uCylinderRim.w, radius);
+  fragColour = vec4(srgbWithDepthCue(colour, hit.z), 1.0);
+  gl_FragDepth = fragmentDepth(hit.z / near);
 }

@@ -6,6 +6,7 @@ precision highp int;
 #include <_pixel>
 #include <_colour>
 #include <_quadric>
+#include <_pattern>
 #include <_light>
 #include <_depth-cue>
 
@@ -14,22 +15,19 @@ flat in vec3 vDepth;
 flat in vec3 vBody1;
 flat in vec3 vBody2;
 flat in vec3 vBody3;
+flat in vec3 vBodyShift;
 flat in vec3 vColour;
+flat in vec3 vRestColour;
 flat in vec3 vCentre;
-flat in vec2 vMarks;
+flat in vec4 vMarks;
 
 uniform vec3 uAccent;
 uniform vec3 uHoverColour;
 uniform float uCircleWidthPx;
-uniform float uRimWidthPx;
+uniform vec4 uRim; // width, ink, and the half widths between which it comes in, CSS pixels
 uniform vec2 uRingPx; // inner and outer distance of the ring from the outline, CSS pixels
 
 out vec4 fragColour;
-
-// Ink that stands out from a colour in grey, too: darker on light colours, lighter on dark ones.
-vec3 inkOn(vec3 own, vec3 shaded) {
-  return luminance(own) > 0.14 ? shaded * 0.12 : mix(shaded, vec3(1.0), 0.55);
-}
 
 void ring(ViewQuadric q, vec2 e) {
   float d = outlineDistance(q, e) / uPixelScale;
@@ -49,22 +47,28 @@ void main() {
     return;
   }
   vec3 unit = vec3(e, sqrt(inside));
-  float z = vCentre.z + surfaceDepth(q, unit);
-  vec3 colour = lit(vColour, normalize(surfaceNormal(q, unit)));
+  vec3 place = vCentre + vec3(viewPixel() - vCentre.xy, surfaceDepth(q, unit));
+  vec3 normal = surfaceNormal(q, unit);
+  normal.z += uPerEyePx * dot(normal, place);
+  mat3 body = mat3(vBody1, vBody2, vBody3);
+  vec3 u = body * unit + vBodyShift;
+  vec3 own = hasOwnColour(u.xy, vMarks.z) ? vColour : vRestColour;
+  vec3 colour = lit(own, normalize(normal));
   float narrowest = vOutline.x * vOutline.z / length(vOutline) / uPixelScale;
+  if (isOnPattern(u, int(vMarks.w + 0.5))) colour = mix(colour, inkOn(own, colour), patternInk);
   int bits = int(vMarks.x + 0.5);
   if (bits != 0) {
-    vec3 d = circleDistances(q, mat3(vBody1, vBody2, vBody3), unit) / uPixelScale;
+    vec3 d = circleDistances(q, body, u, unit) / uPixelScale;
     vec3 drawn = vec3(bits & 1, (bits >> 1) & 1, (bits >> 2) & 1);
     // finer lines on small ellipsoids, which they would cover
     float halfWidth = 0.5 * min(uCircleWidthPx, 0.5 + 0.055 * narrowest);
     vec3 line = drawn * (1.0 - smoothstep(halfWidth - 0.35, halfWidth + 0.35, d));
     float strongest = max(line.x, max(line.y, line.z)) * smoothstep(4.0, 10.0, narrowest);
-    colour = mix(colour, inkOn(vColour, colour), 0.92 * strongest);
+    colour = mix(colour, inkOn(own, colour), 0.92 * strongest);
   }
   float rim = -outlineDistance(q, e) / uPixelScale;
-  float rimInk = (1.0 - smoothstep(uRimWidthPx - 0.4, uRimWidthPx + 0.4, rim)) * smoothstep(2.0, 6.0, narrowest);
-  colour = mix(colour, colour * 0.35, 0.8 * rimInk);
-  fragColour = vec4(srgbWithDepthCue(colour, z), 1.0);
-  gl_FragDepth = fragmentDepth(z);
+  float rimInk = (1.0 - smoothstep(uRim.x - 0.4, uRim.x + 0.4, rim)) * smoothstep(uRim.z, uRim.w, narrowest);
+  colour *= 1.0 - uRim.y * rimInk;
+  fragColour = vec4(srgbWithDepthCue(colour, pointOfImage(place).z), 1.0);
+  gl_FragDepth = fragmentDepth(place.z);
 }

@@ -14,6 +14,9 @@ in vec3 aAxis3;
 in vec3 aColour;
 in float aCircles;
 in float aState; // 0 plain, 1 hovered, 2 selected, 3 both
+in float aShare; // 1 whole
+in vec3 aRestColour;
+in float aPattern; // 0 plain, 1 striped, 2 dotted
 
 uniform float uRingReachPx; // CSS pixels
 
@@ -22,15 +25,19 @@ flat out vec3 vDepth;
 flat out vec3 vBody1;
 flat out vec3 vBody2;
 flat out vec3 vBody3;
+flat out vec3 vBodyShift;
 flat out vec3 vColour;
-flat out vec3 vCentre; // view axes, pixels
-flat out vec2 vMarks; // circle bits, state
+flat out vec3 vRestColour;
+flat out vec3 vCentre; // image axes, pixels
+flat out vec4 vMarks; // circle bits, state, share, pattern
 
 void main() {
   vec3 centre = viewPoint(aCentre);
   mat3 m = mat3(viewDirection(aAxis1), viewDirection(aAxis2), viewDirection(aAxis3));
-  ViewQuadric q = viewQuadric(m);
-  mat3 body = bodyRotation(m, q);
+  ImageQuadric image = imageQuadric(centre, m, uPerEyePx);
+  ViewQuadric q = quadricOfSigma(image.sigma);
+  mat3 inverseShape = inverse(m);
+  mat3 body = bodyOfImage(inverseShape, q, centre, uPerEyePx);
   // how far its sides lie from the centre: l11, and l11 l22 / |(l11, l21)|
   vec2 sides = vec2(q.outline.x, q.outline.x * q.outline.z / length(q.outline.xy));
   vec2 reach = 1.0 + (1.0 + (aState > 0.5 ? uRingReachPx * uPixelScale : 0.0)) / sides;
@@ -40,8 +47,10 @@ void main() {
   vBody1 = body[0];
   vBody2 = body[1];
   vBody3 = body[2];
+  vBodyShift = inverseShape * image.shift;
   vColour = linearFromSrgb(aColour);
-  vCentre = centre;
-  vMarks = vec2(aCircles, aState);
-  gl_Position = clipPoint(centre + vec3(outlinePoint(q, reach * corner), 0.0));
+  vRestColour = linearFromSrgb(aRestColour);
+  vCentre = image.centre;
+  vMarks = vec4(aCircles, aState, aShare, aPattern);
+  gl_Position = image.seen ? clipPoint(image.centre + vec3(outlinePoint(q, reach * corner), 0.0)) : nowhere;
 }

@@ -2,13 +2,19 @@ import colour from './chunks/_colour.glsl?raw';
 import cylinderChunk from './chunks/_cylinder.glsl?raw';
 import depthCue from './chunks/_depth-cue.glsl?raw';
 import light from './chunks/_light.glsl?raw';
+import pattern from './chunks/_pattern.glsl?raw';
 import pixel from './chunks/_pixel.glsl?raw';
+import polarChunk from './chunks/_polar.glsl?raw';
 import quadricChunk from './chunks/_quadric.glsl?raw';
 import view from './chunks/_view.glsl?raw';
 import cylinderFragment from './cylinder.frag.glsl?raw';
 import cylinderVertex from './cylinder.vert.glsl?raw';
+import facetFragment from './facet.frag.glsl?raw';
+import facetVertex from './facet.vert.glsl?raw';
 import lineFragment from './line.frag.glsl?raw';
 import lineVertex from './line.vert.glsl?raw';
+import polarFragment from './polar.frag.glsl?raw';
+import polarVertex from './polar.vert.glsl?raw';
 import quadricFragment from './quadric.frag.glsl?raw';
 import quadricVertex from './quadric.vert.glsl?raw';
 import resolveFragment from './resolve.frag.glsl?raw';
@@ -20,7 +26,9 @@ export const chunks = {
   _cylinder: cylinderChunk,
   '_depth-cue': depthCue,
   _light: light,
+  _pattern: pattern,
   _pixel: pixel,
+  _polar: polarChunk,
   _quadric: quadricChunk,
   _view: view,
 } as const;
@@ -28,7 +36,9 @@ export const chunks = {
 /** Vertex and fragment shader of each program, as written; NAME.vert.glsl and NAME.frag.glsl. */
 export const programs = {
   cylinder: { vertex: cylinderVertex, fragment: cylinderFragment },
+  facet: { vertex: facetVertex, fragment: facetFragment },
   line: { vertex: lineVertex, fragment: lineFragment },
+  polar: { vertex: polarVertex, fragment: polarFragment },
   quadric: { vertex: quadricVertex, fragment: quadricFragment },
   resolve: { vertex: resolveVertex, fragment: resolveFragment },
 } as const;

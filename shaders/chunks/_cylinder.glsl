@@ -1,33 +1,34 @@
-// CPU twin: cylinderSurface in src/scene/pick.ts. A flat-ended cylinder seen along -z, in pixels, origin at its start.
-struct ViewCylinder {
-  float size; // length
-  float lie; // sine of the angle between axis and line of sight
-  float rise; // cosine of it: positive where the end is nearer
-  float radius;
-};
-
+// CPU twin: cylinderSurface in src/scene/pick.ts. A flat-ended cylinder met by a line of sight q + z k, z its height in view axes,
+// from the cylinder's start on, pixels: k = (0, 0, 1) without perspective.
 struct CylinderHit {
   bool found;
-  float z; // above the start
+  float z;
   float t; // along the axis
-  vec3 normal; // x along the projected axis, y across it, z to the viewer
+  float miss; // how far the line of sight passes from the axis, pixels
+  vec3 normal; // view axes
 };
 
-CylinderHit cylinderSurface(ViewCylinder c, float along, float across) {
-  CylinderHit hit = CylinderHit(false, 0.0, 0.0, vec3(0.0, 0.0, 1.0));
-  float bulge = c.radius * c.radius - across * across;
-  if (bulge < 0.0) return hit;
-  float height = sqrt(bulge);
-  float t = c.lie > 1e-6 ? (along + height * c.rise) / c.lie : -1.0;
-  if (t >= 0.0 && t <= c.size) {
-    float q = height / c.radius;
-    vec3 normal = vec3(-c.rise * q, across / c.radius, c.lie * q);
-    return CylinderHit(true, t * c.rise + height * c.lie, t, normal);
+CylinderHit cylinderSurface(vec3 axis, float size, float radius, vec3 q, vec3 k) {
+  float qAlong = dot(q, axis);
+  float kAlong = dot(k, axis);
+  vec3 qAcross = q - qAlong * axis;
+  vec3 kAcross = k - kAlong * axis;
+  float square = dot(kAcross, kAcross);
+  // |q × k| without the part along the axis: no difference of large squares
+  float moment = dot(axis, cross(q, k));
+  float bulge = square * radius * radius - moment * moment;
+  CylinderHit hit = CylinderHit(false, 0.0, 0.0, abs(moment) * inversesqrt(max(square, 1e-12)), vec3(0.0, 0.0, 1.0));
+  bool endOn = square < 1e-12 * dot(k, k);
+  if (endOn ? dot(qAcross, qAcross) > radius * radius : bulge < 0.0) return hit;
+  if (!endOn) {
+    float z = (sqrt(bulge) - dot(qAcross, kAcross)) / square;
+    float t = qAlong + z * kAlong;
+    if (t >= 0.0 && t <= size) return CylinderHit(true, z, t, hit.miss, (qAcross + z * kAcross) / radius);
   }
-  if (abs(c.rise) < 1e-6) return hit;
-  float capAt = c.rise > 0.0 ? c.size : 0.0;
-  float k = (capAt * c.lie - along) / c.rise;
-  if (k * k > bulge) return hit;
-  float facing = sign(c.rise);
-  return CylinderHit(true, capAt * c.rise + k * c.lie, capAt, facing * vec3(c.lie, 0.0, c.rise));
+  if (abs(kAlong) < 1e-6) return hit;
+  float capAt = kAlong > 0.0 ? size : 0.0;
+  float z = (capAt - qAlong) / kAlong;
+  vec3 off = qAcross + z * kAcross;
+  if (dot(off, off) > radius * radius) return hit;
+  return CylinderHit(true, z, capAt, hit.miss, sign(kAlong) * axis);
 }

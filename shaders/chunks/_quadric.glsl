@@ -1,12 +1,31 @@
-// CPU twin: src/scene/view-quadric.ts. A quadric seen along -z: T = lower triangle with T Tᵀ = M Mᵀ, surface T (e, s).
+// CPU twin: src/scene/view-quadric.ts and perspective.ts. A quadric's image, seen along -z: T = lower triangle with T Tᵀ = Σ,
+// surface centre + T (e, s).
 struct ViewQuadric {
   vec3 outline; // l11, l21, l22
   vec3 depth; // g1, g2, w
 };
 
-// Columns of m are the semi-axes in view axes, pixels.
-ViewQuadric viewQuadric(mat3 m) {
+struct ImageQuadric {
+  bool seen; // false where it reaches too near to the eye
+  vec3 centre;
+  mat3 sigma;
+  vec3 shift;
+};
+
+// Image of { centre + M u : |u| = 1 }, see imageQuadric of perspective.ts.
+ImageQuadric imageQuadric(vec3 centre, mat3 m, float perEye) {
   mat3 sigma = m * transpose(m);
+  vec3 s = sigma[2] * perEye;
+  float inner = s.z * perEye;
+  float w = 1.0 - centre.z * perEye;
+  bool seen = w - sqrt(inner) >= 0.05;
+  float d = w * w - inner;
+  mat3 image = (d * sigma + inner * outerProduct(centre, centre) +
+    w * (outerProduct(centre, s) + outerProduct(s, centre)) + outerProduct(s, s)) / (d * d);
+  return ImageQuadric(seen, (w * centre + s) / d, image, s / d);
+}
+
+ViewQuadric quadricOfSigma(mat3 sigma) {
   float l11 = sqrt(sigma[0][0]);
   float l21 = sigma[0][1] / l11;
   float l22 = sqrt(max(sigma[1][1] - l21 * l21, 1e-20));
@@ -14,6 +33,11 @@ ViewQuadric viewQuadric(mat3 m) {
   float g2 = (sigma[1][2] - l21 * g1) / l22;
   float w = sqrt(max(sigma[2][2] - g1 * g1 - g2 * g2, 1e-20));
   return ViewQuadric(vec3(l11, l21, l22), vec3(g1, g2, w));
+}
+
+// Columns of m are the semi-axes in view axes, pixels; without perspective.
+ViewQuadric viewQuadric(mat3 m) {
+  return quadricOfSigma(m * transpose(m));
 }
 
 // Offset on screen of a point of the unit disc.
@@ -27,14 +51,24 @@ vec2 discPoint(ViewQuadric q, vec2 d) {
   return vec2(x, (d.y - q.outline.y * x) / q.outline.z);
 }
 
-// (e, s) to coordinates along the quadric's own axes, on the unit sphere. Orthogonal.
-mat3 bodyRotation(mat3 m, ViewQuadric q) {
-  mat3 t = mat3(
+mat3 triangleOf(ViewQuadric q) {
+  return mat3(
     q.outline.x, q.outline.y, q.depth.x,
     0.0, q.outline.z, q.depth.y,
     0.0, 0.0, q.depth.z
   );
-  return inverse(m) * t;
+}
+
+// (e, s) to coordinates along the quadric's own axes, on the unit sphere. Orthogonal.
+mat3 bodyRotation(mat3 m, ViewQuadric q) {
+  return inverse(m) * triangleOf(q);
+}
+
+// The same in perspective, up to a positive factor and a shift, inverse(m) * image.shift: bodyPointInImage of perspective.ts.
+mat3 bodyOfImage(mat3 inverseShape, ViewQuadric q, vec3 centre, float perEye) {
+  mat3 back = mat3(1.0);
+  back[2] -= centre * perEye;
+  return inverseShape * back * triangleOf(q);
 }
 
 float surfaceDepth(ViewQuadric q, vec3 unit) {
@@ -56,9 +90,8 @@ vec2 pixelGradient(ViewQuadric q, vec2 g) {
 
 const float rimFloor = 0.02;
 
-// First-order distances on screen, pixels, to the three great circles u_k = 0.
-vec3 circleDistances(ViewQuadric q, mat3 body, vec3 unit) {
-  vec3 u = body * unit;
+// First-order distances on screen, pixels, to the three great circles u_k = 0; u = body (e, s) + shift at this point.
+vec3 circleDistances(ViewQuadric q, mat3 body, vec3 u, vec3 unit) {
   vec3 steep = body[2] / max(unit.z, rimFloor);
   vec3 d;
   for (int k = 0; k < 3; k++) {

@@ -1,4 +1,5 @@
-// Crystal axes (Å) to view axes in device pixels: x right, y up, z towards the viewer, origin at the camera's target.
+// Crystal axes (Å) to view axes in device pixels: x right, y up, z towards the viewer, origin at the camera's target; and
+// those to image axes, in which a true perspective is orthographic. CPU twin: src/scene/perspective.ts.
 uniform vec3 uTarget;
 uniform vec4 uOrientation;
 uniform float uPixelsPerAngstrom;
@@ -6,6 +7,13 @@ uniform vec2 uHalfViewportPx;
 uniform float uDepthRangePx;
 // Device pixels of one CSS pixel.
 uniform float uPixelScale;
+// 1 / distance of the eye before the target, per device pixel; 0 without perspective.
+uniform float uPerEyePx;
+
+// What reaches nearer to the eye is left out.
+const float leastNearness = 0.05;
+// Outside of every picture: a vertex of what is left out.
+const vec4 nowhere = vec4(2.0, 2.0, 2.0, 1.0);
 
 vec3 rotateBy(vec4 q, vec3 v) {
   return v + 2.0 * cross(q.xyz, cross(q.xyz, v) + q.w * v);
@@ -19,11 +27,24 @@ vec3 viewPoint(vec3 p) {
   return viewDirection(p - uTarget);
 }
 
-// Orthographic: depth is linear in z, and gl_FragDepth agrees with it.
-vec4 clipPoint(vec3 v) {
-  return vec4(v.xy / uHalfViewportPx, -v.z / uDepthRangePx, 1.0);
+// 1 in the plane of the target, 0 at the eye.
+float nearness(float z) {
+  return 1.0 - z * uPerEyePx;
 }
 
-float fragmentDepth(float zPx) {
-  return 0.5 - 0.5 * zPx / uDepthRangePx;
+vec3 imagePoint(vec3 v) {
+  return v / nearness(v.z);
+}
+
+vec3 pointOfImage(vec3 image) {
+  return image / (1.0 + image.z * uPerEyePx);
+}
+
+// Of an image point. Depth is linear in its height, and gl_FragDepth agrees with it.
+vec4 clipPoint(vec3 image) {
+  return vec4(image.xy / uHalfViewportPx, -image.z / uDepthRangePx, 1.0);
+}
+
+float fragmentDepth(float imageZ) {
+  return 0.5 - 0.5 * imageZ / uDepthRangePx;
 }

@@ -1,4 +1,5 @@
 import { BufferAttribute, BufferGeometry } from 'three';
+import type { FacetView } from '#src/scene/facet-view.ts';
 import type { CylinderBatch, LineBatch, QuadricBatch } from '#src/scene/scene.ts';
 
 /**
@@ -23,6 +24,9 @@ export function quadricGeometry(batch: QuadricBatch): BufferGeometry {
   put(geometry, 'aColour', batch.colours, 3, true);
   put(geometry, 'aCircles', batch.circles, 1);
   put(geometry, 'aState', new Uint8Array(batch.count), 1);
+  put(geometry, 'aShare', batch.shares ?? new Uint8Array(batch.count).fill(255), 1, true);
+  put(geometry, 'aRestColour', batch.restColours ?? batch.colours, 3, true);
+  put(geometry, 'aPattern', batch.patterns ?? new Uint8Array(batch.count), 1);
   return geometry;
 }
 
@@ -40,6 +44,20 @@ export function lineGeometry(batch: LineBatch): BufferGeometry {
   const geometry = quadGeometry(batch.count);
   put(geometry, 'aStart', batch.starts, 3);
   put(geometry, 'aEnd', batch.ends, 3);
+  return geometry;
+}
+
+/** Facets as seen, three vertices each; already sorted and lit. */
+export function facetGeometry({ count, corners: places, colours }: FacetView): BufferGeometry {
+  const geometry = new BufferGeometry();
+  const tints = new Float32Array(12 * count);
+  for (let i = 0; i < count; i++) {
+    const [red, green, blue, opacity] = colours.subarray(4 * i, 4 * i + 4);
+    for (let k = 0; k < 3; k++) tints.set([red! / 255, green! / 255, blue! / 255, opacity!], 12 * i + 4 * k);
+  }
+  geometry.setAttribute('aCorner', new BufferAttribute(places, 3));
+  geometry.setAttribute('aTint', new BufferAttribute(tints, 4));
+  geometry.setDrawRange(0, 3 * count);
   return geometry;
 }
 

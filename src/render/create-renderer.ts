@@ -8,11 +8,20 @@ import {
   WebGLRenderer,
 } from 'three';
 import type { Camera, Viewport } from '#src/scene/camera.ts';
+import { facetView } from '#src/scene/facet-view.ts';
 import type { PickHit } from '#src/scene/pick.ts';
 import { pick as pickInScene } from '#src/scene/pick.ts';
+import { projection } from '#src/scene/project.ts';
 import type { Scene } from '#src/scene/scene.ts';
-import { cylinderGeometry, lineGeometry, quadricGeometry, setQuadricStates } from './batch-geometry.ts';
+import {
+  cylinderGeometry,
+  facetGeometry,
+  lineGeometry,
+  quadricGeometry,
+  setQuadricStates,
+} from './batch-geometry.ts';
 import { applyTheme, applyView, programMaterial, sharedUniforms } from './materials.ts';
+import { PolarMeshes } from './polar-meshes.ts';
 import { isSoftwareRenderer, rendererName } from './probe-webgl.ts';
 import type { CrystalRenderer, RenderCounters, RendererOptions } from './renderer.ts';
 import { restMs, ringStates } from './renderer.ts';
@@ -46,7 +55,9 @@ class Renderer implements CrystalRenderer {
   readonly #smoothing: Supersampling;
   readonly #quadrics: QuadMesh;
   readonly #cylinders: QuadMesh;
+  readonly #polars: PolarMeshes;
   readonly #lines: QuadMesh;
+  readonly #facets: QuadMesh;
   #scene: Scene | null = null;
   #camera: Camera | null = null;
   #theme: RenderTheme;
@@ -79,7 +90,9 @@ class Renderer implements CrystalRenderer {
     this.#smoothing = createSupersampling(this.#gl.capabilities.maxTextureSize);
     this.#quadrics = this.#mesh('quadric', 0);
     this.#cylinders = this.#mesh('cylinder', 1);
-    this.#lines = this.#mesh('line', 2);
+    this.#polars = new PolarMeshes(this.#group, programMaterial('polar', this.#uniforms), 2);
+    this.#lines = this.#mesh('line', 3);
+    this.#facets = this.#mesh('facet', 4);
     this.#theme = options.theme ?? lightTheme;
     this.setTheme(this.#theme);
     canvas.addEventListener('webglcontextlost', this.#onLost);
@@ -91,6 +104,7 @@ class Renderer implements CrystalRenderer {
     this.#replace(this.#quadrics, quadricGeometry(scene.quadrics));
     this.#replace(this.#cylinders, cylinderGeometry(scene.cylinders));
     this.#replace(this.#lines, lineGeometry(scene.lines));
+    this.#polars.setBatch(scene.polars ?? null);
     this.#markStates();
     this.#stale('another scene');
   }
@@ -147,7 +161,7 @@ class Renderer implements CrystalRenderer {
       quadrics: this.#scene?.quadrics.count ?? 0,
       cylinders: this.#scene?.cylinders.count ?? 0,
       lines: this.#scene?.lines.count ?? 0,
-      drawCalls: [this.#quadrics, this.#cylinders, this.#lines].filter((mesh) => mesh.visible).length,
+      drawCalls: this.#meshes().filter((mesh) => mesh.visible).length + this.#polars.drawCalls,
       contextLosses: this.#losses,
       lastReason: this.#lastReason,
       drawnBy: 'WebGL 2',
@@ -158,17 +172,22 @@ class Renderer implements CrystalRenderer {
     this.#cancel();
     this.#canvas.removeEventListener('webglcontextlost', this.#onLost);
     this.#canvas.removeEventListener('webglcontextrestored', this.#onRestored);
-    for (const mesh of [this.#quadrics, this.#cylinders, this.#lines]) {
+    for (const mesh of this.#meshes()) {
       mesh.geometry.dispose();
       mesh.material.dispose();
     }
+    this.#polars.dispose();
     this.#smoothing.dispose();
     this.#gl.dispose();
     this.#gl.forceContextLoss();
     this.#lost = true;
   }
 
-  #mesh(name: 'quadric' | 'cylinder' | 'line', order: number): QuadMesh {
+  #meshes(): readonly QuadMesh[] {
+    return [this.#quadrics, this.#cylinders, this.#lines, this.#facets];
+  }
+
+  #mesh(name: 'quadric' | 'cylinder' | 'line' | 'facet', order: number): QuadMesh {
     const mesh = new Mesh(quadricGeometry(emptyQuadrics), programMaterial(name, this.#uniforms));
     mesh.frustumCulled = false;
     mesh.visible = false;
@@ -180,7 +199,7 @@ class Renderer implements CrystalRenderer {
   #replace(mesh: QuadMesh, geometry: BufferGeometry): void {
     mesh.geometry.dispose();
     mesh.geometry = geometry;
-    mesh.visible = (geometry.index?.count ?? 0) > 0;
+    mesh.visible = (geometry.index?.count ?? geometry.drawRange.count) > 0;
   }
 
   #markStates(): void {
@@ -227,11 +246,22 @@ class Renderer implements CrystalRenderer {
     const target = samples > 1 ? this.#smoothing.target(width, height, samples) : null;
     const across = target ? samples : 1;
     applyView(this.#uniforms, this.#scene, this.#camera, this.#viewport, this.#deviceRatio * across);
+    this.#fitToView(this.#deviceRatio * across);
     this.#gl.setRenderTarget(target);
     this.#gl.render(this.#group, this.#still);
     if (target) this.#smoothing.resolve(this.#gl, target, across);
     this.#frames += 1;
     if (target) this.#smoothFrames += 1;
+  }
+
+  /** What depends on the view itself: order and light of facets, fineness of polar surfaces. */
+  #fitToView(samples: number): void {
+    if (!this.#scene || !this.#camera) return;
+    const p = projection(this.#camera, this.#viewport);
+    this.#polars.fit(p, samples);
+    const { facets } = this.#scene;
+    if (facets && facets.count > 0) this.#replace(this.#facets, facetGeometry(facetView(facets, p)));
+    else this.#facets.visible = false;
   }
 
   readonly #onLost = (event: Event): void => {

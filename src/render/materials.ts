@@ -1,10 +1,21 @@
 import type { IUniform } from 'three';
-import { GLSL3, NoBlending, NormalBlending, RawShaderMaterial, Vector2, Vector3, Vector4 } from 'three';
+import {
+  DoubleSide,
+  FrontSide,
+  GLSL3,
+  NoBlending,
+  NormalBlending,
+  RawShaderMaterial,
+  Vector2,
+  Vector3,
+  Vector4,
+} from 'three';
 import type { ProgramName } from '#shaders/registry.ts';
 import { shaderSource } from '#shaders/registry.ts';
 import type { Scene } from '#src/scene/scene.ts';
 import type { Camera, Viewport } from '#src/scene/camera.ts';
-import { pixelsPerAngstrom } from '#src/scene/camera.ts';
+import { linearLight, rimLine } from '#src/scene/light.ts';
+import { leastNearness, nearness } from '#src/scene/perspective.ts';
 import { projection, projectPoint } from '#src/scene/project.ts';
 import { ringPx } from '#src/scene/theme.ts';
 import type { RenderTheme, Rgb } from './theme.ts';
@@ -20,6 +31,7 @@ export function sharedUniforms() {
     uHalfViewportPx: { value: new Vector2(1, 1) },
     uDepthRangePx: { value: 1 },
     uPixelScale: { value: 1 },
+    uPerEyePx: { value: 0 },
     uPaper: { value: new Vector3() },
     uDepthCue: { value: 0 },
     uSceneDepthPx: { value: new Vector2() },
@@ -28,16 +40,17 @@ export function sharedUniforms() {
     uLineColour: { value: new Vector3() },
     uLineWidthPx: { value: 1 },
     uCircleWidthPx: { value: 1 },
-    uRimWidthPx: { value: 1 },
+    uRim: { value: new Vector4() },
+    uCylinderRim: { value: new Vector4() },
     uRingPx: { value: new Vector2(...ringPx) },
     uRingReachPx: { value: ringPx[1] + 1.5 },
   } satisfies Record<string, IUniform>;
 }
 
-/** Opaque raw shader of the registry; lines blend over what is behind them. */
+/** Opaque raw shader of the registry; lines and facets blend over what is behind them. */
 export function programMaterial(name: ProgramName, uniforms: Record<string, IUniform>): RawShaderMaterial {
   const { vertex, fragment } = shaderSource(name);
-  const soft = name === 'line';
+  const soft = name === 'line' || name === 'facet';
   const covers = name === 'resolve';
   return new RawShaderMaterial({
     name,
@@ -45,6 +58,7 @@ export function programMaterial(name: ProgramName, uniforms: Record<string, IUni
     vertexShader: vertex,
     fragmentShader: fragment,
     uniforms,
+    side: name === 'facet' ? DoubleSide : FrontSide,
     depthTest: !covers,
     depthWrite: !soft && !covers,
     transparent: soft,
@@ -52,23 +66,22 @@ export function programMaterial(name: ProgramName, uniforms: Record<string, IUni
   });
 }
 
-/** sRGB bytes as linear light (IEC 61966-2-1), for uniforms. */
-export function linearLight(rgb: Rgb): [number, number, number] {
-  const channel = (byte: number) => {
-    const c = byte / 255;
-    return c <= 0.04045 ? c / 12.92 : ((c + 0.055) / 1.055) ** 2.4;
-  };
-  return [channel(rgb[0]), channel(rgb[1]), channel(rgb[2])];
-}
+const inLinearLight = ([red, green, blue]: Rgb): [number, number, number] => [
+  linearLight(red),
+  linearLight(green),
+  linearLight(blue),
+];
 
 export function applyTheme(uniforms: SharedUniforms, theme: RenderTheme): void {
-  uniforms.uPaper.value.set(...linearLight(theme.paper));
-  uniforms.uLineColour.value.set(...linearLight(theme.line));
-  uniforms.uAccent.value.set(...linearLight(theme.selected));
-  uniforms.uHoverColour.value.set(...linearLight(theme.hovered));
+  uniforms.uPaper.value.set(...inLinearLight(theme.paper));
+  uniforms.uLineColour.value.set(...inLinearLight(theme.line));
+  uniforms.uAccent.value.set(...inLinearLight(theme.selected));
+  uniforms.uHoverColour.value.set(...inLinearLight(theme.hovered));
   uniforms.uDepthCue.value = theme.depthCue;
   uniforms.uCircleWidthPx.value = theme.circleWidthPx;
-  uniforms.uRimWidthPx.value = theme.rimWidthPx;
+  const rim = rimLine(theme);
+  uniforms.uRim.value.set(rim.widthPx, rim.ink, rim.from, rim.full);
+  uniforms.uCylinderRim.value.set(rim.cylinderWidthPx, rim.cylinderInk, rim.cylinderFrom, rim.cylinderFull);
 }
 
 /** `pixelScale`: device pixels, samples included, of one CSS pixel. */
@@ -79,8 +92,10 @@ export function applyView(
   viewport: Viewport,
   pixelScale: number,
 ): void {
-  const scale = pixelsPerAngstrom(camera, viewport) * pixelScale;
-  const middle = projectPoint(projection(camera, viewport), scene.bounds.centre).depthPx * pixelScale;
+  const p = projection(camera, viewport);
+  const scale = p.scale * pixelScale;
+  const middle = projectPoint(p, scene.bounds.centre).depthPx * pixelScale;
+  const eye = p.eyePx * pixelScale;
   const reach = scene.bounds.radiusAngstrom * scale;
   uniforms.uTarget.value.set(...camera.target);
   uniforms.uOrientation.value.set(...camera.orientation);
@@ -89,8 +104,16 @@ export function applyView(
     (viewport.widthPx * pixelScale) / 2,
     (viewport.heightPx * pixelScale) / 2,
   );
-  uniforms.uDepthRangePx.value = 1.05 * (Math.abs(middle) + reach) + 1;
+  uniforms.uDepthRangePx.value = 1.05 * farthestImage(middle, reach, eye) + 1;
+  uniforms.uPerEyePx.value = 1 / eye;
   uniforms.uSceneDepthPx.value.set(middle + reach, middle - reach);
   uniforms.uPixelScale.value = pixelScale;
   uniforms.uLineWidthPx.value = scene.lines.widthPx;
+}
+
+/** Largest height of the scene's image, either way; see src/scene/perspective.ts. */
+function farthestImage(middle: number, reach: number, eye: number): number {
+  const near = Math.min(middle + reach, (1 - leastNearness) * eye);
+  const heights = [near, middle - reach].map((z) => z / nearness(z, eye));
+  return Math.max(...heights.map(Math.abs));
 }

@@ -1,10 +1,12 @@
 import { afterAll, describe, expect, it } from 'vitest';
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
-import { apply } from '#src/base/matrix3.ts';
+import { apply, inverse } from '#src/base/matrix3.ts';
 import { seededRandom } from '#src/base/seeded-random.ts';
 import type { Quaternion } from '#src/scene/camera.ts';
 import { viewRotation } from '#src/scene/camera.ts';
+import { imageQuadric } from '#src/scene/perspective.ts';
 import { cylinderSurface } from '#src/scene/pick.ts';
+import { cornerAtCentre, polarPoint, polarRadius, polarRimDistance } from '#src/scene/polar-mesh.ts';
 import {
   bodyRotation,
   circleDistance,
@@ -13,6 +15,7 @@ import {
   surfaceNormal,
   viewQuadric,
 } from '#src/scene/view-quadric.ts';
+import { hasOwnColour, isOnPattern } from '#src/scene/wedge-and-pattern.ts';
 import { floatReadback } from './float-readback.ts';
 
 const gpu = floatReadback();
@@ -77,7 +80,7 @@ describe('_quadric against src/scene/view-quadric.ts', () => {
   });
 
   it('distances to the principal circles and to the outline', () => {
-    const body = `${unpack} result = vec4(circleDistances(q, bodyRotation(m, q), unit), outlineDistance(q, e));`;
+    const body = `${unpack} result = vec4(circleDistances(q, bodyRotation(m, q), bodyRotation(m, q) * unit, unit), outlineDistance(q, e));`;
     const found = gpu.run(['_quadric'], body, quadricCases);
     shapes.forEach(({ m, e }, i) => {
       const q = viewQuadric(m);
@@ -102,29 +105,18 @@ describe('_cylinder against cylinderSurface of src/scene/pick.ts', () => {
   it('height, and whether it is met at all', () => {
     const found = gpu.run(
       ['_cylinder'],
-      `CylinderHit hit = cylinderSurface(ViewCylinder(inputs[0].x, inputs[0].y, inputs[0].z, inputs[0].w), inputs[1].x, inputs[1].y);
+      `CylinderHit hit = cylinderSurface(normalize(inputs[0].xyz), length(inputs[0].xyz), inputs[0].w, inputs[1].xyz, vec3(0.0, 0.0, 1.0));
        result = vec4(hit.found ? 1.0 : 0.0, hit.z, length(hit.normal), hit.normal.z);`,
-      cases.map(({ axis, radius, size, lie, along, across }) => [
-        size,
-        lie / size,
-        axis[2] / size,
-        radius,
-        along,
-        across,
-        0,
-        0,
-      ]),
+      cases.map(({ axis, radius, lie, along, across }) => {
+        const [tx, ty] = [axis[0] / lie, axis[1] / lie];
+        return [...axis, radius, along * tx - across * ty, along * ty + across * tx, 0, 0];
+      }),
     );
     let [met, missed] = [0, 0];
     cases.forEach(({ axis, radius, lie, along, across }, i) => {
       const [tx, ty] = [axis[0] / lie, axis[1] / lie];
-      const expected = cylinderSurface(
-        [0, 0, 0],
-        axis,
-        radius,
-        along * tx - across * ty,
-        along * ty + across * tx,
-      );
+      const place = [along * tx - across * ty, along * ty + across * tx] as const;
+      const expected = cylinderSurface([0, 0, 0], axis, radius, ...place);
       expect(found[i]![0] === 1).toBe(expected !== null);
       if (expected === null) {
         missed += 1;
@@ -135,6 +127,196 @@ describe('_cylinder against cylinderSurface of src/scene/pick.ts', () => {
       expect(found[i]![3]).toBeGreaterThanOrEqual(0);
     });
     expect(Math.min(met, missed)).toBeGreaterThan(30);
+  });
+
+  it('a slanted line of sight meets the surface: radius and flat ends by distance', () => {
+    const slanted = cases.map((one) => ({
+      ...one,
+      sight: [between(-0.4, 0.4), between(-0.4, 0.4), 1] as Vec3,
+      from: [between(-20, 20), between(-20, 20), 0] as Vec3,
+    }));
+    const found = gpu.run(
+      ['_cylinder'],
+      `CylinderHit hit = cylinderSurface(normalize(inputs[0].xyz), length(inputs[0].xyz), inputs[0].w, inputs[1].xyz, inputs[2].xyz);
+       result = vec4(hit.found ? 1.0 : 0.0, hit.z, hit.t, hit.miss);`,
+      slanted.map(({ axis, radius, from, sight }) => [...axis, radius, ...from, 0, ...sight, 0]),
+    );
+    let met = 0;
+    slanted.forEach(({ axis, radius, size, from, sight }, i) => {
+      const [isMet, z, t] = found[i]!;
+      if (isMet !== 1) return;
+      met += 1;
+      const point = from.map((value, k) => value + z! * sight[k]!) as unknown as Vec3;
+      const along = (point[0] * axis[0] + point[1] * axis[1] + point[2] * axis[2]) / size;
+      const away = Math.hypot(...point.map((value, k) => value - (along * axis[k]!) / size));
+      expect(t).toBeCloseTo(along, 2);
+      const isOnSide = Math.abs(away - radius) < 0.01 && along > -0.01 && along < size + 0.01;
+      const isOnEnd = away < radius + 0.01 && Math.min(Math.abs(along), Math.abs(along - size)) < 0.01;
+      expect(isOnSide || isOnEnd).toBe(true);
+    });
+    expect(met).toBeGreaterThan(20);
+  });
+});
+
+describe('_quadric in perspective against src/scene/perspective.ts', () => {
+  const perEye = 1 / 700;
+  const cases = shapes.map(({ m, e }) => ({
+    m,
+    e,
+    centre: [between(-200, 200), between(-200, 200), between(-300, 300)] as Vec3,
+  }));
+  const inputs = cases.map(({ m, e, centre }) => {
+    const columns = [m[0], m[3], m[6], 0, m[1], m[4], m[7], 0, m[2], m[5], m[8], 0];
+    return [...columns, ...centre, 0, ...e, 0, 0];
+  });
+  const unpackImage = `mat3 m = mat3(inputs[0].xyz, inputs[1].xyz, inputs[2].xyz);
+    float perEye = ${perEye.toFixed(10)};
+    ImageQuadric image = imageQuadric(inputs[3].xyz, m, perEye);
+    ViewQuadric q = quadricOfSigma(image.sigma);
+    vec2 e = inputs[4].xy;
+    vec3 unit = vec3(e, sqrt(1.0 - dot(e, e)));`;
+
+  it('centre and Σ of the image', () => {
+    const centres = gpu.run(
+      ['_quadric'],
+      `${unpackImage} result = vec4(image.centre, image.seen ? 1.0 : 0.0);`,
+      inputs,
+    );
+    const sigmas = gpu.run(
+      ['_quadric'],
+      `${unpackImage} result = vec4(image.sigma[0], image.sigma[2].z);`,
+      inputs,
+    );
+    cases.forEach(({ m, centre }, i) => {
+      const expected = imageQuadric(centre, m, 1 / perEye)!;
+      const [xx, xy, , xz, , zz] = expected.sigma;
+      expectClose(centres[i]!, [...expected.centre, 1], 1e-3);
+      const scale = Math.max(...expected.sigma.map(Math.abs));
+      [xx, xy, xz, zz].forEach((value, k) =>
+        expect(Math.abs(sigmas[i]![k]! - value)).toBeLessThan(1e-3 * scale),
+      );
+    });
+  });
+
+  it('a point of the image lies on the quadric when taken back, at the direction that the body matrix tells', () => {
+    const places = gpu.run(
+      ['_quadric'],
+      `${unpackImage} vec3 p = image.centre + vec3(outlinePoint(q, e), surfaceDepth(q, unit));
+       result = vec4(p / (1.0 + p.z * perEye), 0.0);`,
+      inputs,
+    );
+    const bodies = gpu.run(
+      ['_quadric'],
+      `${unpackImage} mat3 back = inverse(m);
+       result = vec4(normalize(bodyOfImage(back, q, inputs[3].xyz, perEye) * unit + back * image.shift), 0.0);`,
+      inputs,
+    );
+    cases.forEach(({ m, centre }, i) => {
+      const off = places[i]!.slice(0, 3).map((value, k) => value - centre[k]!) as unknown as Vec3;
+      const u = apply(inverse(m), off);
+      expect(Math.hypot(...u)).toBeCloseTo(1, 1);
+      expectClose(
+        bodies[i]!.slice(0, 3),
+        [...u].map((value) => value / Math.hypot(...u)),
+        2e-2,
+      );
+    });
+  });
+});
+
+describe('_pattern against src/scene/wedge-and-pattern.ts', () => {
+  const points = Array.from({ length: 400 }, () =>
+    apply(viewRotation(unitQuaternion()), [0, 0, between(0.2, 3)]),
+  );
+
+  it('parts by azimuth, stripes and dots', () => {
+    const shares = points.map((_point, i) => (i * 37) % 256);
+    const found = gpu.run(
+      ['_colour', '_pattern'],
+      `result = vec4(hasOwnColour(inputs[0].xy, inputs[0].w), isOnPattern(inputs[0].xyz, 1), isOnPattern(inputs[0].xyz, 2), isOnPattern(inputs[0].xyz, 0));`,
+      points.map((point, i) => [...point, shares[i]! / 255]),
+    );
+    let different = 0;
+    points.forEach(([x, y, z], i) => {
+      const expected = [
+        hasOwnColour(x, y, shares[i]!),
+        isOnPattern(x, y, z, 1),
+        isOnPattern(x, y, z, 2),
+        false,
+      ];
+      expected.forEach((value, k) => (different += Number(value) === found[i]![k] ? 0 : 1));
+    });
+    // single precision may decide otherwise on a border
+    expect(different).toBeLessThan(4);
+  });
+});
+
+describe('_polar against src/scene/polar-mesh.ts', () => {
+  const cases = Array.from({ length: 200 }, () => {
+    const t = [
+      between(-30, 30),
+      between(-30, 30),
+      between(-30, 30),
+      between(-30, 30),
+      between(-30, 30),
+      between(-30, 30),
+    ];
+    const n = apply(viewRotation(unitQuaternion()), [0, 0, 1]);
+    const radius = polarRadius(t, ...n);
+    const p = n.map((value) => value * Math.abs(radius)) as unknown as Vec3;
+    const v = apply(viewRotation(unitQuaternion()), [0, 0, 1]);
+    const [xx, yy, zz, xy, xz, yz] = t as unknown as [number, number, number, number, number, number];
+    return { t, matrix: [xx, xy, xz, xy, yy, yz, xz, yz, zz] as Mat3, n, radius, p, v };
+  }).filter(({ radius }) => Math.abs(radius) > 1);
+  const inputs = cases.map(({ t, p, v }) => [
+    t[0]!,
+    t[1]!,
+    t[2]!,
+    0,
+    t[3]!,
+    t[4]!,
+    t[5]!,
+    0,
+    ...p,
+    0,
+    ...v,
+    0,
+  ]);
+  const unpackPolar = `mat3 t = symmetric(inputs[0].xyz, inputs[1].xyz); vec3 p = inputs[2].xyz; vec3 v = inputs[3].xyz;
+    PolarPoint point = polarPoint(t, p);`;
+
+  it('radius, sign, normal and distance from the silhouette', () => {
+    const normals = gpu.run(
+      ['_polar'],
+      `${unpackPolar} result = vec4(normalize(point.normal), point.negative);`,
+      inputs,
+    );
+    const rims = gpu.run(
+      ['_polar'],
+      `${unpackPolar} result = vec4(polarRadius(t, normalize(p)), polarRimDistance(t, p, point, v), 0.0, 0.0);`,
+      inputs,
+    );
+    cases.forEach(({ matrix, radius, p, v }, i) => {
+      const expected = polarPoint(matrix, p);
+      const size = Math.hypot(...expected.normal);
+      expect(expected.isNegative).toBe(radius < 0);
+      expectClose(
+        normals[i]!,
+        [...expected.normal.map((value) => value / size), expected.isNegative ? 1 : 0],
+        2e-3,
+      );
+      expectClose(rims[i]!.slice(0, 2), [radius, polarRimDistance(matrix, p, v)], 1e-2);
+    });
+  });
+
+  it('the corner of a triangle that moves to the centre', () => {
+    const signs = [0, 1, 2, 3, 4, 5, 6, 7].map((bits) => [0, 1, 2].map((k) => ((bits >> k) & 1 ? -1.5 : 2)));
+    const found = gpu.run(
+      ['_polar'],
+      'result = vec4(float(cornerAtCentre(inputs[0].xyz)), 0.0, 0.0, 0.0);',
+      signs.map((three) => [...three, 0]),
+    );
+    signs.forEach(([a, b, c], i) => expect(found[i]![0]).toBe(cornerAtCentre(a!, b!, c!)));
   });
 });
 
@@ -158,7 +340,7 @@ describe('_view', () => {
       ['_view'],
       'vec4 c = clipPoint(vec3(0.0, 0.0, inputs[0].x)); result = vec4(0.5 + 0.5 * c.z / c.w, fragmentDepth(inputs[0].x), 0.0, 0.0);',
       zs,
-      { uHalfViewportPx: [50, 50], uDepthRangePx: [100] },
+      { uHalfViewportPx: [50, 50], uDepthRangePx: [100], uPerEyePx: [0] },
     );
     found.forEach(([fromClip, written], i) => {
       expect(written).toBeCloseTo(fromClip!, 6);
