@@ -1,69 +1,131 @@
 import type { Mat3 } from '#src/base/matrix3.ts';
+import { identity3, multiply, scaleMatrix } from '#src/base/matrix3.ts';
+import { siteColourBytes } from '#src/data/site-colour.ts';
 import { atomColour, atomRadius, bondColour } from './atom-style.ts';
-import { legendColour } from './colour-scale.ts';
 import type { DrawnAtom } from './drawn-atoms.ts';
-import type { Legend, LabelAnchor, PickEntry, QuadricBatch, TensorScale } from './scene.ts';
-import type { PrincipalForm, TensorShape } from './tensor-shape.ts';
+import type { OccupancyLook } from './occupancy.ts';
+import type { PickEntry, QuadricBatch } from './scene.ts';
+import type { Bead, TensorDrawing } from './tensor-drawing.ts';
+import { centreRadius } from './tensor-drawing.ts';
 import { tensorShape } from './tensor-shape.ts';
 
-/** What the atoms' tensors are drawn with; null where no tensor is drawn. */
-export interface TensorDrawing {
+type Rgb = readonly [number, number, number];
+
+/** Everything that decides how atoms look. */
+export interface AtomsLook {
+  readonly tensors: TensorDrawing | null;
+  /** Displacement ellipsoids at the sites' own positions, by site index; `circles`: with principal circles. */
+  readonly displacement: { readonly shapes: ReadonlyMap<number, Mat3>; readonly circles: boolean } | null;
+  /** By site index; empty where occupancies are not shown. */
+  readonly occupancy: ReadonlyMap<number, OccupancyLook>;
   /** By site index. */
-  readonly forms: ReadonlyMap<number, PrincipalForm>;
-  readonly scale: TensorScale;
-  readonly legend: Legend;
+  readonly patterns: ReadonlyMap<number, number>;
+  /** Patterns tell alternatives of disorder apart; else they mark negative values. */
+  readonly hasDisorderPatterns: boolean;
+  readonly isSiteColoured: boolean;
+  /** Grey where an element's colour would be read off the colour bar. */
+  readonly isNeutral: boolean;
+  /** Orthonormal columns: the frame of divided and patterned spheres. */
+  readonly frame: Mat3;
 }
 
-/** Quadrics of all drawn atoms: tensor ellipsoids coloured by value, small spheres coloured by element. */
+/** One ellipsoid. */
+export interface QuadricLook {
+  readonly shape: Mat3;
+  readonly circles: number;
+  readonly colour: Rgb;
+  /** 255: undivided. */
+  readonly share: number;
+  readonly rest: Rgb;
+  readonly pattern: number;
+}
+
+/** Quadrics of all drawn atoms in their order, then beads; picks of the atoms. */
 export function atomQuadrics(
   atoms: readonly DrawnAtom[],
-  tensors: TensorDrawing | null,
+  look: AtomsLook,
+  beads: readonly Bead[] = [],
 ): { readonly quadrics: QuadricBatch; readonly picks: readonly PickEntry[] } {
-  const count = atoms.length;
-  const quadrics = {
-    count,
-    centres: new Float32Array(3 * count),
-    shapes: new Float32Array(9 * count),
-    colours: new Uint8Array(3 * count),
-    circles: new Uint8Array(count),
-    pickIds: new Uint32Array(count),
-  };
+  const count = atoms.length + beads.length;
+  const centres = new Float32Array(3 * count);
+  const shapes = new Float32Array(9 * count);
+  const colours = new Uint8Array(3 * count);
+  const circles = new Uint8Array(count);
+  const pickIds = new Uint32Array(count);
+  const shares = new Uint8Array(count).fill(255);
+  const restColours = new Uint8Array(3 * count);
+  const patterns = new Uint8Array(count);
   const picks = atoms.map((drawn, i): PickEntry => {
-    const form = drawn.context ? undefined : tensors?.forms.get(drawn.site.index);
-    const { shape, circles } =
-      form && tensors ? tensorShape(form, drawn.atom.rotation, tensors.scale) : sphere(drawn);
-    quadrics.centres.set(drawn.position, 3 * i);
-    quadrics.shapes.set(shape, 9 * i);
-    quadrics.colours.set(
-      form && tensors
-        ? legendColour(tensors.legend, form.colourValue)
-        : sphereColour(drawn, tensors !== null),
-      3 * i,
-    );
-    quadrics.circles[i] = circles;
-    quadrics.pickIds[i] = i + 1;
+    const one = lookOf(drawn, i, look);
+    centres.set(drawn.position, 3 * i);
+    shapes.set(one.shape, 9 * i);
+    colours.set(one.colour, 3 * i);
+    circles[i] = one.circles;
+    pickIds[i] = i + 1;
+    shares[i] = one.share;
+    restColours.set(one.rest, 3 * i);
+    patterns[i] = one.pattern;
     const { atom, site, cellShift, context } = drawn;
     return { kind: 'atom', atomId: atom.id, siteIndex: site.index, cellShift, context };
   });
-  return { quadrics, picks };
+  beads.forEach((bead, k) => {
+    const i = atoms.length + k;
+    centres.set(bead.centre, 3 * i);
+    shapes.set(scaleMatrix(bead.radiusAngstrom, identity3), 9 * i);
+    colours.set(bead.colour, 3 * i);
+    pickIds[i] = bead.pickId;
+  });
+  const isDivided = shares.some((share) => share < 255);
+  return {
+    quadrics: {
+      ...{ count, centres, shapes, colours, circles, pickIds },
+      ...(isDivided ? { shares, restColours } : {}),
+      ...(patterns.some((pattern) => pattern > 0) ? { patterns } : {}),
+    },
+    picks,
+  };
 }
 
 /** Neighbours outside are this much smaller, so that they stand back. */
 const contextShare = 0.58;
 
-function sphereColour({ site, context }: DrawnAtom, neutral: boolean): readonly [number, number, number] {
-  return context ? bondColour(site.element, neutral) : atomColour(site.element);
+const undivided = { share: 255, rest: [0, 0, 0], circles: 0, pattern: 0 } as const;
+
+function lookOf(drawn: DrawnAtom, index: number, look: AtomsLook): QuadricLook {
+  const { site, atom, context } = drawn;
+  if (context) {
+    const shape = scaleMatrix(atomRadius(site.element) * contextShare, identity3);
+    const colour = look.isSiteColoured
+      ? siteColourBytes(site.index)
+      : bondColour(site.element, look.isNeutral);
+    return { ...undivided, shape, colour };
+  }
+  const occupancy = look.occupancy.get(site.index);
+  const share = occupancy?.share ?? 255;
+  const rest = occupancy?.rest ?? undivided.rest;
+  const pattern = look.patterns.get(site.index) ?? 0;
+  const divided = { share, rest, pattern };
+  const form = look.tensors?.carries[index] ? look.tensors.forms.get(site.index) : undefined;
+  if (form && look.tensors) {
+    const colour = look.tensors.centreColourOf(site.index);
+    const radius = centreRadius(look.tensors);
+    if (radius !== null) return { ...divided, shape: sphere(radius, divided, look), circles: 0, colour };
+    return { ...divided, ...tensorShape(form, atom.rotation, look.tensors.scale), colour };
+  }
+  const colour = look.isSiteColoured ? siteColourBytes(site.index) : atomColour(site.element);
+  const displaced = look.displacement?.shapes.get(site.index);
+  if (displaced) {
+    const circles = look.displacement?.circles ? 0b111 : 0;
+    return { ...divided, shape: multiply(atom.rotation, displaced), circles, colour };
+  }
+  return { ...divided, shape: sphere(atomRadius(site.element), divided, look), circles: 0, colour };
 }
 
-function sphere({ site, context }: DrawnAtom): TensorShape {
-  const r = atomRadius(site.element) * (context ? contextShare : 1);
-  const shape: Mat3 = [r, 0, 0, 0, r, 0, 0, 0, r];
-  return { shape, circles: 0 };
-}
-
-/** One label for each atom of the picture's own: its site's label. */
-export function atomLabels(atoms: readonly DrawnAtom[], quadrics: QuadricBatch): LabelAnchor[] {
-  return atoms.flatMap(({ site, position, context }, i) =>
-    context ? [] : [{ text: site.label, position, pickId: quadrics.pickIds[i]!, quadric: i }],
-  );
+/** Spheres whose surface is marked turn with the crystal: the marks stand in the frame of its cell. */
+function sphere(
+  radius: number,
+  { share, pattern }: Pick<QuadricLook, 'share' | 'pattern'>,
+  { frame }: AtomsLook,
+): Mat3 {
+  return scaleMatrix(radius, share < 255 || pattern > 0 ? frame : identity3);
 }

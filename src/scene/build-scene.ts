@@ -1,100 +1,224 @@
+import { siteColourBytes } from '#src/data/site-colour.ts';
 import type { CrystalDossier } from '#src/dossier/dossier.ts';
-import type { TensorDrawing } from './atom-layer.ts';
-import { atomLabels, atomQuadrics } from './atom-layer.ts';
-import { atomColour, atomRadius } from './atom-style.ts';
-import { bondCylinders, nearPairs } from './bond-layer.ts';
+import { atomQuadrics } from './atom-layer.ts';
+import type { AtomsLook } from './atom-layer.ts';
+import { atomColour, bondColour } from './atom-style.ts';
+import { bondCylinders } from './bond-layer.ts';
 import { caption, scaleStatement } from './caption.ts';
-import { cellAxes, cellEdges } from './cell-layer.ts';
+import type { CaptionParts, TensorCaption } from './caption.ts';
+import { cellAxes, cellEdges, cellFrame } from './cell-layer.ts';
+import { packedCylinders } from './cylinder-list.ts';
+import { displacementShapes } from './displacement.ts';
+import type { DisplacementShapes } from './displacement.ts';
+import { drawTensors } from './draw-tensors.ts';
 import type { DrawnAtom } from './drawn-atoms.ts';
-import { bondedNeighbours, drawnAtoms, mostAtoms } from './drawn-atoms.ts';
-import { enclosingSphere } from './framing.ts';
-import type { ElementKey, Scene } from './scene.ts';
+import { chooseAtoms, drawableSites } from './extent.ts';
+import { atomLabels } from './label-text.ts';
+import { occupancyLooks } from './occupancy.ts';
+import { coordinationPolyhedra } from './polyhedra-layer.ts';
+import { sceneBounds } from './scene-bounds.ts';
+import type { ElementKey, PolarBatch, Scene } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
 import { defaultSceneOptions } from './scene-options.ts';
 import { sharedPositions } from './shared-positions.ts';
+import { chooseTensors, lobeColours, siteColours } from './tensor-choice.ts';
 import type { ChosenTensors } from './tensor-choice.ts';
-import { chooseTensors } from './tensor-choice.ts';
-import type { ScaleChoice } from './tensor-scale.ts';
-import { chooseScale } from './tensor-scale.ts';
+import { axialVectors, axisRods, polarSurfaces } from './tensor-drawing.ts';
+import type { TensorDrawing } from './tensor-drawing.ts';
+import { disorderPatterns, visibleSites } from './visible-sites.ts';
+import type { VisibleSites } from './visible-sites.ts';
 
 /**
  * The plain description of one picture: everything a renderer needs, in Å, in the Cartesian frame of the crystal's
  * lattice. Options not given are automatic; what was chosen stands in the caption. Linear in atoms and bonds.
  */
 export function buildScene(whole: CrystalDossier, options: Partial<SceneOptions> = {}): Scene {
-  const dossier = drawableSites(whole);
-  const chosen: SceneOptions = { ...defaultSceneOptions, ...options };
-  const extent = chooseExtent(dossier, chosen.extent);
-  const own = drawnAtoms(dossier, extent);
-  const isCut = own.length >= mostAtoms;
-  const completed = extent === 'cell' && chosen.bonds && chosen.bondedNeighbours && !isCut;
-  const atoms = completed ? [...own, ...bondedNeighbours(dossier, own)] : own;
+  const asked: SceneOptions = { ...defaultSceneOptions, ...options };
+  const dossier = drawableSites(whole, asked.extent);
+  const displacement = displacementOf(dossier, asked);
+  const chosen = { ...asked, showTensors: asked.showTensors && displacement?.mode !== 'instead' };
+  const visible = visibleSites(dossier, chosen.disorder);
+  const drawn = chooseAtoms({ dossier, hidden: visible.hidden }, chosen);
+  const { atoms } = drawn;
   const choice = chooseTensors(dossier, chosen);
   const tensors = choice && drawTensors(dossier, atoms, choice, chosen);
-  const { quadrics, picks } = atomQuadrics(atoms, tensors);
-  const bonds = bondCylinders(dossier, atoms, { ...chosen, neutral: tensors !== null }, picks.length);
-  const lines = cellEdges(dossier, chosen.cellEdges);
-  const scale = tensors?.scale ?? null;
-  const legend = tensors?.legend ?? null;
+  const drawing = tensors?.drawing ?? null;
+  const look = looksOf(dossier, visible, drawing, displacement, chosen);
+  const glyphs = glyphsOf(atoms, drawing);
+  const { quadrics, picks } = atomQuadrics(atoms, look, glyphs.beads);
+  const shown = { ...chosen, neutral: look.isNeutral };
+  const bonds = bondCylinders(dossier, atoms, shown, picks.length);
+  const polyhedra = polyhedraOf(dossier, atoms, drawing, look, chosen);
+  const cylinders = packedCylinders([...bonds.cylinders, ...glyphs.rods, ...polyhedra.edges]);
+  const lines = cellEdges(dossier, chosen.cellEdges, drawn.range);
+  const scale = drawing?.scale ?? null;
+  const polars = glyphs.polars ? { polars: glyphs.polars } : {};
   return {
     quadrics,
-    cylinders: bonds.cylinders,
+    cylinders,
     lines,
-    labels: chosen.labels ? atomLabels(atoms, quadrics) : [],
+    ...polars,
+    ...(polyhedra.facets.count > 0 ? { facets: polyhedra.facets } : {}),
+    labels: chosen.labels ? atomLabels(atoms, chosen.labelContent, choice?.coloured ?? null) : [],
     axes: cellAxes(dossier),
-    bounds: enclosingSphere({ quadrics, lines }),
+    bounds: sceneBounds({ quadrics, lines, cylinders, ...polars }),
     picks: [...picks, ...bonds.picks],
-    legend,
-    elements: elementKeys(atoms, tensors),
+    legend: choice?.legend ?? null,
+    elements: elementKeys(atoms, drawing, look),
     scale,
     scaleStatement: scale && scaleStatement(scale),
     caption: caption({
-      scale,
-      legend,
-      notes: tensors?.notes ?? [],
+      tensors: drawing && tensorCaption(dossier, drawing, chosen, look),
       askedFor: chosen.quantity !== 'auto' && chosen.quantity !== choice?.quantity ? chosen.quantity : null,
-      extent,
-      neighbours: atoms.length > own.length,
+      isSiteColoured: look.isSiteColoured,
+      displacement: displacement && { ...displacement, probability: chosen.displacementProbability },
+      chosen: drawn,
       hasCell: dossier.lattice !== null,
-      onlyElements: choice?.elements ?? null,
-      elementsUnasked: choice?.isOwnChoice ?? false,
-      cutAt: isCut ? own.length : null,
       atomsInCell: dossier.atomsInCell,
-      hiddenSites: sharedPositions(dossier).drawnInstead.size,
+      isShared: visible.isShared,
+      polyhedra: polyhedra.count > 0 ? chosen.polyhedra : [],
+      ...marksOf(atoms, look),
+      labels: chosen.labels && chosen.labelContent === 'value' && choice ? labelWords(choice) : null,
+      notes: [
+        ...visible.notes,
+        ...(choice?.notes ?? []),
+        ...(tensors?.notes ?? []),
+        ...(asked.displacement !== 'none' && !displacement ? [noDisplacements] : []),
+      ],
     }),
-    extent,
+    extent: drawn.extent,
+    siteColours: siteColours(whole, choice),
+    ...(choice?.colourBy === 'sign' ? { lobeColours } : {}),
+    drawnInstead: sharedPositions(dossier).drawnInstead,
+    tensorElements: choice?.elements ?? null,
   };
 }
 
-/** The dossier with only as many of its first sites as can come into the picture, so that a huge one costs no more. */
-function drawableSites(dossier: CrystalDossier): CrystalDossier {
-  let atoms = 0;
-  // Twice the limit: sites that share a position with a fuller one are passed over.
-  const past = dossier.sites.findIndex((site) => (atoms += site.equivalents.length) > 2 * mostAtoms);
-  return past < 0 ? dossier : { ...dossier, sites: dossier.sites.slice(0, past + 1) };
+const noDisplacements = 'The file gives no displacements, so none are drawn.';
+
+interface ShownDisplacement extends DisplacementShapes {
+  readonly mode: 'beside' | 'instead';
 }
 
-function chooseExtent(dossier: CrystalDossier, asked: SceneOptions['extent']): 'cell' | 'molecules' {
-  if (asked !== 'auto') return asked === 'molecules' ? 'molecules' : 'cell';
-  return Object.keys(dossier.wholeMolecules).length > 0 ? 'molecules' : 'cell';
+/** Displacement ellipsoids, where they are asked for and the file has any. */
+function displacementOf(dossier: CrystalDossier, options: SceneOptions): ShownDisplacement | null {
+  if (options.displacement === 'none') return null;
+  const found = displacementShapes(dossier, options.displacementProbability);
+  const isEmpty = found.shapes.size === 0 && found.impossible.length === 0;
+  return isEmpty ? null : { ...found, mode: options.displacement };
 }
 
-/** Forms, one scale and the colour bar of the tensors of the picture; null where none is drawn. */
-function drawTensors(
+function looksOf(
+  dossier: CrystalDossier,
+  visible: VisibleSites,
+  tensors: TensorDrawing | null,
+  displacement: ShownDisplacement | null,
+  options: SceneOptions,
+): AtomsLook {
+  const disorder =
+    options.disorder === 'patterns' ? disorderPatterns(dossier, visible.hidden) : new Map<number, number>();
+  const hasAlternatives = [...disorder.values()].some((pattern) => pattern > 0);
+  const isSiteColoured = options.colourBy === 'site';
+  return {
+    tensors,
+    displacement: displacement && { shapes: displacement.shapes, circles: displacement.mode === 'instead' },
+    occupancy: options.occupancy ? occupancyLooks(dossier) : new Map(),
+    patterns: hasAlternatives ? disorder : negativeSites(tensors),
+    hasDisorderPatterns: hasAlternatives,
+    isSiteColoured,
+    isNeutral: isSiteColoured || (tensors !== null && tensors.choice.colourBy !== 'element'),
+    frame: cellFrame(dossier),
+  };
+}
+
+/** Striped: sites with a negative value where the colour bar runs through zero. Lobes have stripes of their own. */
+function negativeSites(tensors: TensorDrawing | null): Map<number, number> {
+  const stripes = new Map<number, number>();
+  if (tensors?.choice.legend?.map !== 'vik' || isLobes(tensors)) return stripes;
+  for (const [index, value] of tensors.choice.values) if (value < 0) stripes.set(index, 1);
+  return stripes;
+}
+
+function isLobes({ scale }: TensorDrawing): boolean {
+  return scale.glyph === 'polar' && scale.part !== 'antisymmetric';
+}
+
+type Glyphs = ReturnType<typeof axialVectors> & { readonly polars: PolarBatch | null };
+
+/** What stands for tensors besides the quadrics of the atoms. */
+function glyphsOf(atoms: readonly DrawnAtom[], tensors: TensorDrawing | null): Glyphs {
+  if (tensors?.scale.part === 'antisymmetric') return { ...axialVectors(atoms, tensors), polars: null };
+  if (tensors?.scale.glyph === 'axes') return { rods: axisRods(atoms, tensors), beads: [], polars: null };
+  return { rods: [], beads: [], polars: tensors && isLobes(tensors) ? polarSurfaces(atoms, tensors) : null };
+}
+
+/** Polyhedra have the colour of the value of the atom in them, or grey beside such colours, else the element's. */
+function polyhedraOf(
   dossier: CrystalDossier,
   atoms: readonly DrawnAtom[],
-  { quantity, forms, legend }: ChosenTensors,
+  tensors: TensorDrawing | null,
+  look: AtomsLook,
   options: SceneOptions,
-): TensorDrawing & Pick<ScaleChoice, 'notes'> {
-  const { scale, notes } = chooseScale(forms, nearPairs(dossier, atoms), quantity, options, (site) =>
-    atomRadius(site.element),
-  );
-  return { forms, scale, legend, notes };
+): ReturnType<typeof coordinationPolyhedra> {
+  const colourOf = (index: number): readonly [number, number, number] => {
+    const { site } = atoms[index]!;
+    if (look.isSiteColoured) return siteColourBytes(site.index);
+    const valued = tensors?.choice.legend && tensors.carries[index];
+    const own = valued ? tensors.choice.colours.get(site.index) : undefined;
+    return own ?? (look.isNeutral ? bondColour(site.element, true) : atomColour(site.element));
+  };
+  return coordinationPolyhedra({ dossier, atoms, elements: options.polyhedra, colourOf });
+}
+
+function tensorCaption(
+  dossier: CrystalDossier,
+  { choice, scale }: TensorDrawing,
+  options: SceneOptions,
+  look: AtomsLook,
+): TensorCaption {
+  const { glyph, legend, colourBy, elements, isOwnChoice, forms } = choice;
+  const isPart = options.tensorSites !== null;
+  return {
+    ...{ scale, glyph, legend, colourBy, elements },
+    sites: isPart ? [...forms.keys()].map((index) => dossier.sites[index]!.label) : null,
+    elementsUnasked: isOwnChoice && !isPart,
+    copies: options.tensorCopies,
+    hasUndefinedAxes: [...forms.values()].some(({ axes }) => axes.includes(null)),
+    isStriped: !look.hasDisorderPatterns && look.patterns.size > 0,
+  };
+}
+
+/** What of the marks on spheres is really in the picture. */
+function marksOf(
+  atoms: readonly DrawnAtom[],
+  look: AtomsLook,
+): Pick<CaptionParts, 'occupancy' | 'hasDisorderPatterns'> {
+  const kinds = new Set<string>();
+  let hasDisorderPatterns = false;
+  for (const { site, context } of atoms) {
+    if (context) continue;
+    kinds.add(look.occupancy.get(site.index)?.kind ?? '');
+    hasDisorderPatterns ||= look.hasDisorderPatterns && (look.patterns.get(site.index) ?? 0) > 0;
+  }
+  return {
+    occupancy: { hasPartial: kinds.has('partial'), hasMixed: kinds.has('mixed') },
+    hasDisorderPatterns,
+  };
+}
+
+function labelWords({ coloured }: ChosenTensors): string {
+  return coloured.title + (coloured.unit ? ` in ${coloured.unit}` : '');
 }
 
 /** Elements of which some atom is drawn in its element's colour. */
-function elementKeys(atoms: readonly DrawnAtom[], tensors: TensorDrawing | null): ElementKey[] {
-  const plain = atoms.filter(({ site, context }) => !context && !tensors?.forms.has(site.index));
-  const elements = [...new Set(plain.map(({ site }) => site.element))];
+function elementKeys(
+  atoms: readonly DrawnAtom[],
+  tensors: TensorDrawing | null,
+  look: AtomsLook,
+): ElementKey[] {
+  if (look.isSiteColoured) return [];
+  const isOwnColour = ({ context }: DrawnAtom, i: number): boolean =>
+    !context && !(tensors?.carries[i] && tensors.choice.colourBy !== 'element');
+  const elements = [...new Set(atoms.filter(isOwnColour).map(({ site }) => site.element))];
   return elements.map((element) => ({ element, colour: atomColour(element) }));
 }

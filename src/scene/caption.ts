@@ -1,4 +1,6 @@
-import type { Legend, SceneQuantity, TensorScale } from './scene.ts';
+import type { ChosenAtoms } from './extent.ts';
+import type { GlyphKind, Legend, SceneQuantity, TensorScale } from './scene.ts';
+import type { SceneOptions } from './scene-options.ts';
 
 const quantityWords: Readonly<Record<SceneQuantity, string>> = {
   shielding: 'Shielding',
@@ -6,27 +8,51 @@ const quantityWords: Readonly<Record<SceneQuantity, string>> = {
   efg: 'EFG',
 };
 
-/** What the caption is made from. */
-export interface CaptionParts {
-  readonly scale: TensorScale | null;
+/** The tensors of a picture, as far as the caption speaks of them. */
+export interface TensorCaption {
+  readonly scale: TensorScale;
+  readonly glyph: GlyphKind;
   readonly legend: Legend | null;
-  /** Sentences about kind and scale. */
-  readonly notes: readonly string[];
-  /** Quantity asked for, where another one is drawn. */
-  readonly askedFor: SceneQuantity | null;
-  readonly extent: 'cell' | 'molecules';
-  readonly hasCell: boolean;
-  /** Bonded neighbours outside the cell are drawn. */
-  readonly neighbours: boolean;
-  /** Elements whose tensors are drawn, where only some are. */
-  readonly onlyElements: readonly string[] | null;
+  readonly colourBy: SceneOptions['colourBy'] | 'sign';
+  /** Elements and labels of sites whose tensors are drawn, where only some are. */
+  readonly elements: readonly string[] | null;
+  readonly sites: readonly string[] | null;
   /** Nobody asked for these elements: the scale did. */
   readonly elementsUnasked: boolean;
-  /** Atoms drawn, where the limit left out the rest. */
-  readonly cutAt: number | null;
+  readonly copies: SceneOptions['tensorCopies'];
+  /** Some principal axis drawn from is undefined. */
+  readonly hasUndefinedAxes: boolean;
+  /** Stripes mean a negative value. */
+  readonly isStriped: boolean;
+}
+
+/** What the caption is made from. */
+export interface CaptionParts {
+  readonly tensors: TensorCaption | null;
+  /** Quantity asked for, where another one is drawn. */
+  readonly askedFor: SceneQuantity | null;
+  readonly isSiteColoured: boolean;
+  readonly displacement: DisplacementCaption | null;
+  readonly chosen: ChosenAtoms;
+  readonly hasCell: boolean;
   readonly atomsInCell: number;
   /** Sites not drawn because another one with a larger occupancy stands on their position. */
-  readonly hiddenSites: number;
+  readonly isShared: boolean;
+  readonly polyhedra: readonly string[];
+  readonly occupancy: { readonly hasPartial: boolean; readonly hasMixed: boolean };
+  readonly hasDisorderPatterns: boolean;
+  /** What labels print, where it is a number. */
+  readonly labels: string | null;
+  /** Sentences of the parts themselves. */
+  readonly notes: readonly string[];
+}
+
+export interface DisplacementCaption {
+  readonly mode: 'beside' | 'instead';
+  /** 0 to 1. */
+  readonly probability: number;
+  /** Labels of drawn sites without a possible ellipsoid. */
+  readonly impossible: readonly string[];
 }
 
 /** A number for people: − as minus sign, no trailing zeros, at most four significant digits. */
@@ -40,49 +66,157 @@ function grouped(count: number): string {
 }
 
 /** The scale of the tensors in words, such as "1 Å = 250 ppm". */
-export function scaleStatement(scale: TensorScale): string {
-  return `1 Å = ${printed(scale.unitsPerAngstrom)} ${scale.quantity === 'efg' ? 'a.u.' : 'ppm'}`;
+export function scaleStatement({ unitsPerAngstrom, quantity, part }: TensorScale): string {
+  const of = part === 'antisymmetric' ? ' of the axial vector' : '';
+  return `1 Å = ${printed(unitsPerAngstrom)} ${quantity === 'efg' ? 'a.u.' : 'ppm'}${of}`;
 }
 
-/** One or two sentences that say in words what is drawn and in which convention. */
+/** A few sentences that say in words what is drawn and in which convention. */
 export function caption(parts: CaptionParts): string {
-  const sentences = [tensorSentence(parts)];
-  const { askedFor, scale, notes } = parts;
-  if (askedFor && scale) {
+  const { tensors, askedFor } = parts;
+  const sentences = [tensors ? tensorSentence(tensors) : plainSentence(parts)];
+  if (askedFor && tensors) {
     const asked = quantityWords[askedFor];
     sentences.push(
       `There are no ${asked === 'EFG' ? asked : asked.toLowerCase()} tensors here, so this is shown instead.`,
     );
   }
-  if (parts.elementsUnasked && scale)
+  if (tensors?.elementsUnasked)
     sentences.push(
       'At the one scale of the picture, large and small tensors of the other elements would drown one another; they are drawn too when ticked under Show.',
     );
-  sentences.push(...notes, extentSentence(parts));
-  if (parts.cutAt !== null)
-    sentences.push(
-      `Only the first ${grouped(parts.cutAt)} atoms are drawn, the limit of the picture; there are ${grouped(parts.atomsInCell)}, all of them in the table.`,
-    );
-  if (parts.hiddenSites > 0)
-    sentences.push('Where sites share a position, the one with the largest occupancy is drawn.');
+  if (tensors) sentences.push(...tensorAsides(tensors));
+  sentences.push(
+    ...parts.notes,
+    ...displacementSentences(parts),
+    ...extentSentences(parts),
+    ...markSentences(parts),
+  );
   return sentences.join(' ');
 }
 
-function tensorSentence({ scale, legend, onlyElements }: CaptionParts): string {
-  if (!scale || !legend) return 'Atoms coloured by element.';
-  const of = onlyElements ? ` of ${onlyElements.join(', ')}` : '';
-  const name = quantityWords[scale.quantity];
+function plainSentence({ isSiteColoured, displacement }: CaptionParts): string {
+  const what = displacement?.mode === 'instead' ? displacementWords(displacement) : 'Atoms';
+  return `${what} coloured by ${isSiteColoured ? 'site' : 'element'}.`;
+}
+
+function displacementWords({ probability }: DisplacementCaption): string {
+  return `Displacement ellipsoids at ${printed(100 * probability)} % probability`;
+}
+
+function tensorSentence(tensors: TensorCaption): string {
+  const { scale, elements, sites } = tensors;
+  const of = sites ? ` of ${listed(sites)}` : elements ? ` of ${elements.join(', ')}` : '';
+  return `${quantityWords[scale.quantity]} ${glyphWords(tensors, of)}; ${colourWords(tensors)}.`;
+}
+
+function glyphWords({ scale, glyph }: TensorCaption, of: string): string {
+  const letter = { shielding: 'σ', shift: 'δ', efg: 'V' }[scale.quantity];
+  const isDeviation = scale.kind === 'deviation' && scale.quantity !== 'efg';
+  const statement = scaleStatement(scale);
+  if (scale.part === 'antisymmetric') {
+    return `tensors${of}, antisymmetric part: rods along the axial vector, half as long as its size to either side, ${statement}; beads grow in the sense in which it turns the field`;
+  }
+  if (glyph === 'polar') {
+    const from = isDeviation
+      ? `without the isotropic value, r(n) = |n·${letter}·n − ${letter}(iso)|`
+      : `r(n) = |n·${letter}·n|`;
+    return `polar surfaces${of} of the symmetric part, ${from}, ${statement}`;
+  }
+  if (glyph === 'axes') {
+    const lengths = isDeviation ? 'deviations from the isotropic value' : 'principal values';
+    const names = scale.quantity === 'efg' ? ['Vxx', 'Vzz'] : [`${letter}11`, `${letter}33`];
+    return `principal axes${of} of the symmetric part: half lengths = sizes of the ${lengths}, ${statement}; thin and pale ${names[0]} to thick and dark ${names[1]}, dashed where negative`;
+  }
   const middle = scale.quantity === 'efg' ? 'principal value' : 'deviation from the isotropic value';
   const axes =
     scale.kind === 'total'
       ? 'semi-axes = principal values of the symmetric part'
       : `semi-axes = ${printed(scale.baseRadiusAngstrom)} Å + ${middle}`;
-  return `${name} ellipsoids${of}: ${axes}, ${scaleStatement(scale)}; colour = ${legend.title}; great circles lie perpendicular to the principal axes that are defined.`;
+  return `ellipsoids${of}: ${axes}, ${statement}; great circles lie perpendicular to the principal axes that are defined`;
 }
 
-function extentSentence({ extent, hasCell, neighbours }: CaptionParts): string {
+function colourWords({ colourBy, legend, glyph, scale }: TensorCaption): string {
+  const isLobes = glyph === 'polar' && scale.part !== 'antisymmetric';
+  if (colourBy === 'sign') return 'positive lobes brown, negative lobes blue and striped';
+  if (legend && isLobes && legend.map === 'vik')
+    return `colour = size of ${legend.title}, with the sign of the lobe; negative lobes are striped too`;
+  const colour = legend ? `colour = ${legend.title}` : `coloured by ${colourBy}`;
+  return isLobes ? `${colour}; negative lobes dark grey and striped` : colour;
+}
+
+function tensorAsides({ copies, glyph, scale, hasUndefinedAxes, isStriped }: TensorCaption): string[] {
+  const sentences: string[] = [];
+  if (isStriped) sentences.push('Stripes mark negative values.');
+  if (copies === 'first') sentences.push('Tensors stand on one atom of each site.');
+  if (copies === 'orientations')
+    sentences.push('Of each site one tensor is drawn for every orientation it has in the crystal.');
+  if (glyph === 'axes' && scale.part !== 'antisymmetric' && hasUndefinedAxes)
+    sentences.push('Axes of equal principal values are undefined and not drawn.');
+  return sentences;
+}
+
+function displacementSentences({ displacement, tensors }: CaptionParts): string[] {
+  if (!displacement) return [];
+  const { mode, impossible } = displacement;
+  const sentences: string[] = [];
+  if (mode === 'instead')
+    sentences.push('Great circles lie perpendicular to their principal axes; isotropic ones are spheres.');
+  else
+    sentences.push(`${displacementWords(displacement)} on atoms without a ${tensors ? '' : 'drawn '}tensor.`);
+  if (impossible.length > 0)
+    sentences.push(`None for ${listed(impossible)}: the displacement is not positive in every direction.`);
+  return sentences;
+}
+
+function extentSentences(parts: CaptionParts): string[] {
+  const { chosen, atomsInCell, isShared } = parts;
+  const sentences = [extentSentence(parts)];
+  if (chosen.isNarrowed)
+    sentences.push('The range asked for holds more atoms than can be drawn: its middle is shown.');
+  if (chosen.isCut) {
+    const all = chosen.range ? '' : `; there are ${grouped(atomsInCell)}, all of them in the table`;
+    sentences.push(
+      `Only the first ${grouped(chosen.ownCount)} atoms are drawn, the limit of the picture${all}.`,
+    );
+  }
+  if (isShared) sentences.push('Where sites share a position, the one with the largest occupancy is drawn.');
+  return sentences;
+}
+
+function extentSentence({ chosen, hasCell, polyhedra }: CaptionParts): string {
+  const { extent, range, middle } = chosen;
+  const hasOutside = chosen.atoms.length > chosen.ownCount;
+  const outside = hasOutside
+    ? `; small plain spheres outside complete the ${polyhedra.length > 0 ? 'polyhedra' : 'coordination'}`
+    : '';
+  if (extent === 'shell') return `The surroundings of ${listed(middle)}${outside}.`;
   if (!hasCell) return 'Molecule without a cell.';
-  if (extent === 'molecules') return 'One unit cell, its molecules drawn whole.';
-  const outside = neighbours ? '; small plain spheres outside complete the coordination' : '';
+  if (extent === 'asymmetric') return `The first atom of each site${outside}.`;
+  if (extent === 'molecules') return `One unit cell, its molecules drawn whole${outside}.`;
+  if (range) {
+    const [low, high] = range;
+    const along = ['a', 'b', 'c'].map((axis, k) => `${axis} ${printed(low[k]!)} to ${printed(high[k]!)}`);
+    const whole = chosen.isCompleted ? ', molecules that reach into it drawn whole' : '';
+    return `Cells ${along.join(', ')}${whole}${outside}.`;
+  }
   return `One unit cell; atoms on its faces are repeated${outside}.`;
+}
+
+function markSentences({ polyhedra, occupancy, hasDisorderPatterns, labels }: CaptionParts): string[] {
+  const sentences: string[] = [];
+  if (polyhedra.length > 0) sentences.push(`Polyhedra join the atoms bonded to ${listed(polyhedra)}.`);
+  if (occupancy.hasMixed)
+    sentences.push('Two colours on one sphere: its two most abundant elements, by their shares.');
+  if (occupancy.hasPartial)
+    sentences.push('Pale parts of spheres: the share of cells in which no atom is there.');
+  if (hasDisorderPatterns) sentences.push('Stripes and dots mark further alternatives of disorder.');
+  if (labels) sentences.push(`Labels: ${labels}.`);
+  return sentences;
+}
+
+/** At most six names, then how many more. */
+function listed(names: readonly string[]): string {
+  const more = names.length - 6;
+  return names.slice(0, 6).join(', ') + (more > 0 ? ` and ${more} more` : '');
 }

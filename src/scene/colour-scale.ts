@@ -1,6 +1,7 @@
 import type { ColourStop } from '#src/data/colour-maps.data.ts';
 import { batlowStops, vikStops } from '#src/data/colour-maps.data.ts';
-import type { ColourMapName, Legend, SceneQuantity } from './scene.ts';
+import type { ColouredValue } from './colour-meaning.ts';
+import type { ColourMapName, Legend } from './scene.ts';
 
 /**
  * The maps as drawn. The darkest and the palest ends are left out, where shading and principal circles would be lost; what
@@ -11,12 +12,6 @@ const maps: Readonly<Record<ColourMapName, readonly ColourStop[]>> = {
   vik: vikStops.slice(6, 46),
 };
 
-const titles: Readonly<Record<SceneQuantity, string>> = {
-  shielding: 'isotropic shielding σ(iso)',
-  shift: 'isotropic shift δ(iso)',
-  efg: 'largest EFG component V(zz)',
-};
-
 /** Stops of a map, sRGB bytes, evenly spaced. */
 export function colourStops(map: ColourMapName): readonly ColourStop[] {
   return maps[map];
@@ -24,7 +19,10 @@ export function colourStops(map: ColourMapName): readonly ColourStop[] {
 
 /** Colour at a share of a map, linear between its stops in sRGB; shares outside [0, 1] take the ends. */
 export function mapColour(map: ColourMapName, share: number): readonly [number, number, number] {
-  const stops = maps[map];
+  return colourAmong(maps[map], share);
+}
+
+function colourAmong(stops: readonly ColourStop[], share: number): readonly [number, number, number] {
   const place = Math.min(1, Math.max(0, Number.isFinite(share) ? share : 0)) * (stops.length - 1);
   const low = Math.min(stops.length - 2, Math.floor(place));
   const part = place - low;
@@ -32,36 +30,48 @@ export function mapColour(map: ColourMapName, share: number): readonly [number, 
   return [channel(0), channel(1), channel(2)];
 }
 
-/** Colour of a value on a colour bar. */
+/** Colour of a value on a colour bar, linear between its stops in sRGB; values beyond its limits take the ends. */
 export function legendColour(legend: Legend, value: number): readonly [number, number, number] {
-  return mapColour(legend.map, (value - legend.low) / (legend.high - legend.low));
+  return colourAmong(legend.stops, (value - legend.low) / (legend.high - legend.low));
 }
 
 /**
- * Colour bar for the values drawn: sequential (dark = low) for isotropic values, diverging about zero for signed Vzz.
- * Automatic limits are the extreme values moved outwards to a power of ten between a twentieth and a
- * two-hundredth of their distance.
+ * Colour bar for the values drawn: sequential (dark = low), or diverging with the palest colour at zero where the sign matters.
+ * Automatic limits are the natural ones, or the extreme values moved outwards to a power of ten between a twentieth and a
+ * two-hundredth of their distance. Typed limits are kept; zero stays palest on a diverging bar, which then shows one side of its map shorter.
  */
 export function legendFor(
-  quantity: SceneQuantity,
+  coloured: Pick<ColouredValue, 'title' | 'unit' | 'isSigned' | 'naturalLimits'>,
   values: readonly number[],
   limits: readonly [number, number] | null,
+  asked: ColourMapName | null = null,
 ): Legend {
-  const diverging = quantity === 'efg';
-  const map = diverging ? 'vik' : 'batlow';
+  const map = asked ?? (coloured.isSigned ? 'vik' : 'batlow');
+  const isAboutZero = map === 'vik';
   const given = limits ? ([Math.min(...limits), Math.max(...limits)] as const) : null;
-  const { low, high, digits } =
-    given && given[0] < given[1] ? exactLimits(given) : automatic(values, diverging);
+  const natural = isAboutZero ? null : coloured.naturalLimits;
+  const exact = given && given[0] < given[1] ? given : natural;
+  const { low, high, digits } = exact ? exactLimits(exact) : automatic(values, isAboutZero);
   return {
-    title: titles[quantity],
-    unit: quantity === 'efg' ? 'a.u.' : 'ppm',
+    title: coloured.title,
+    unit: coloured.unit,
     low,
     high,
     digits,
     map,
-    diverging,
-    stops: colourStops(map),
+    diverging: isAboutZero && low === -high,
+    stops: isAboutZero && low !== -high ? stopsAboutZero(map, low, high) : colourStops(map),
   };
+}
+
+/** The part of a diverging map between two limits of which the larger, by size, is an end of the map. */
+function stopsAboutZero(map: ColourMapName, low: number, high: number): ColourStop[] {
+  const largest = Math.max(Math.abs(low), Math.abs(high));
+  const count = maps[map].length;
+  return Array.from({ length: count }, (_, k) => {
+    const value = low + ((high - low) * k) / (count - 1);
+    return mapColour(map, 0.5 + value / largest / 2);
+  });
 }
 
 function exactLimits(limits: readonly [number, number]): { low: number; high: number; digits: number } {

@@ -1,9 +1,7 @@
 import type { Vec3 } from '#src/base/matrix3.ts';
 import { apply } from '#src/base/matrix3.ts';
-import { add, subtract } from '#src/base/vector3.ts';
-import { electronegativity, elementClass } from '#src/data/radii.ts';
+import { add } from '#src/base/vector3.ts';
 import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
-import { sharedPositions } from './shared-positions.ts';
 
 /** One copy of an atom that is in the picture. */
 export interface DrawnAtom {
@@ -17,24 +15,38 @@ export interface DrawnAtom {
   readonly context: boolean;
 }
 
-/** An atom this close to a face, in Å along the cell edge, lies on it and is repeated on the opposite face. */
-const faceToleranceAngstrom = 0.02;
+/** An atom this close to a border, in Å along the cell edge, lies on it and is in. */
+const borderToleranceAngstrom = 0.02;
 
-/** Atoms drawn at most: more would block the page while the picture is made, and show nothing but their surface. */
-export const mostAtoms = 20_000;
+/** Atoms drawn at most: what both renderers stay usable with. */
+export const mostAtoms = 60_000;
 
-/**
- * Atoms of the picture: of one unit cell with those on faces, edges and corners repeated, or moved together into whole
- * molecules (`wholeMolecules` of the dossier). Without a cell both are the atoms as given. Of sites that share a position
- * the one with the largest occupancy is drawn. After `mostAtoms` the rest is left out.
- */
-export function drawnAtoms(dossier: CrystalDossier, extent: 'cell' | 'molecules'): DrawnAtom[] {
+/** Lower and upper corner, in cells. */
+export type CellRange = readonly [Vec3, Vec3];
+
+const oneCell: CellRange = [
+  [0, 0, 0],
+  [1, 1, 1],
+];
+
+/** What all the extents need: the crystal and the sites that stay out. */
+export interface ExtentInput {
+  readonly dossier: CrystalDossier;
+  readonly hidden: ReadonlySet<number>;
+}
+
+/** Atoms of one unit cell, those on faces, edges and corners repeated; without a cell the atoms as given. */
+export function atomsOfCell(input: ExtentInput): DrawnAtom[] {
+  return atomsInRange(input, oneCell);
+}
+
+/** Atoms between the corners of a range of cells, those on its borders in; without a cell the atoms as given. */
+export function atomsInRange({ dossier, hidden }: ExtentInput, range: CellRange): DrawnAtom[] {
   const drawn: DrawnAtom[] = [];
-  const { drawnInstead } = sharedPositions(dossier);
   for (const site of dossier.sites) {
-    if (drawnInstead.has(site.index)) continue;
+    if (hidden.has(site.index)) continue;
     for (const atom of site.equivalents) {
-      for (const cellShift of shiftsOf(dossier, atom, extent)) {
+      for (const cellShift of shiftsInto(dossier, atom, range)) {
         if (drawn.length >= mostAtoms) return drawn;
         drawn.push(copyOf(dossier, atom, site, cellShift, false));
       }
@@ -43,66 +55,67 @@ export function drawnAtoms(dossier: CrystalDossier, extent: 'cell' | 'molecules'
   return drawn;
 }
 
-/**
- * Atoms outside that complete the coordination of drawn ones, each once: anions about cations, and either partner of a bond
- * between alike non-metals. A cation outside is not added to an anion inside, which would only fray the picture. Their own
- * bonds to one another are not wanted.
- */
-export function bondedNeighbours(dossier: CrystalDossier, drawn: readonly DrawnAtom[]): DrawnAtom[] {
-  const atoms = atomsById(dossier);
-  const copies = copiesById(drawn);
-  const added = new Map<string, DrawnAtom>();
-  const { drawnInstead } = sharedPositions(dossier);
-  const addMissing = (inside: DrawnAtom, id: string, cellShift: Vec3) => {
-    const known = atoms.get(id);
-    const key = `${id} ${cellShift.join()}`;
-    if (!known || drawnInstead.has(known.site.index) || !completes(inside.site.element, known.site.element))
-      return;
-    if (copies.get(id)?.has(cellShift.join()) || added.has(key)) return;
-    added.set(key, copyOf(dossier, known.atom, known.site, cellShift, true));
+/** Atoms of one cell moved together into whole molecules (`wholeMolecules` of the dossier). */
+export function atomsOfMolecules({ dossier, hidden }: ExtentInput): DrawnAtom[] {
+  const drawn: DrawnAtom[] = [];
+  for (const site of dossier.sites) {
+    if (hidden.has(site.index)) continue;
+    for (const atom of site.equivalents) {
+      if (drawn.length >= mostAtoms) return drawn;
+      const cellShift = dossier.lattice ? (dossier.wholeMolecules[atom.id] ?? nowhere) : nowhere;
+      drawn.push(copyOf(dossier, atom, site, cellShift, false));
+    }
+  }
+  return drawn;
+}
+
+/** No shift. */
+export const nowhere: Vec3 = [0, 0, 0];
+
+/** A range that holds about as many atoms as can be drawn, about the same middle; the same range where it holds fewer. */
+export function drawableRange(dossier: CrystalDossier, asked: CellRange): CellRange {
+  const low = asked[0].map((x, k) => Math.min(x, asked[1][k]!)) as unknown as Vec3;
+  const high = asked[0].map((x, k) => Math.max(x, asked[1][k]!)) as unknown as Vec3;
+  if (![...low, ...high].every(Number.isFinite)) return oneCell;
+  const cells = [0, 1, 2].reduce((product, k) => product * Math.max(1, high[k]! - low[k]!), 1);
+  const share = Math.cbrt(mostAtoms / Math.max(1, cells * dossier.atomsInCell));
+  if (share >= 1 || cells <= 1) return [low, high];
+  const about = (k: 0 | 1 | 2, side: -1 | 1) => {
+    const [middle, half] = [(low[k] + high[k]) / 2, (high[k] - low[k]) / 2];
+    return middle + side * half * (half > 0.5 ? share : 1);
   };
-  for (const bond of dossier.bonds) {
-    if (bond.kind !== 'bond') continue;
-    for (const from of copies.get(bond.from)?.values() ?? []) {
-      addMissing(from, bond.to, add(from.cellShift, bond.shift));
-    }
-    for (const to of copies.get(bond.to)?.values() ?? []) {
-      addMissing(to, bond.from, subtract(to.cellShift, bond.shift));
+  return [
+    [about(0, -1), about(1, -1), about(2, -1)],
+    [about(0, 1), about(1, 1), about(2, 1)],
+  ];
+}
+
+/** Cell shifts of an atom that bring it between the corners of a range, borders included. */
+function* shiftsInto(dossier: CrystalDossier, atom: EquivalentAtom, [low, high]: CellRange): Generator<Vec3> {
+  const { lattice } = dossier;
+  const { fractional } = atom;
+  if (!lattice || !fractional) {
+    yield nowhere;
+    return;
+  }
+  const edges = [lattice.cell.a, lattice.cell.b, lattice.cell.c];
+  // + 0 turns −0 into 0
+  const first = [0, 1, 2].map(
+    (k) => Math.ceil(low[k]! - borderToleranceAngstrom / edges[k]! - fractional[k]!) + 0,
+  );
+  const last = [0, 1, 2].map((k) =>
+    Math.floor(high[k]! + borderToleranceAngstrom / edges[k]! - fractional[k]!),
+  );
+  if (first.some((from, k) => from > last[k]!)) return;
+  for (let i = first[0]!; i <= last[0]!; i++) {
+    for (let j = first[1]!; j <= last[1]!; j++) {
+      for (let k = first[2]!; k <= last[2]!; k++) yield [i, j, k];
     }
   }
-  return [...added.values()];
 }
 
-/** Difference of electronegativity (Pauling's scale) beyond which a bond has a cation and an anion. Our own choice. */
-const ionicDifference = 1;
-
-/** Whether an atom outside belongs to the coordination of one inside. */
-function completes(inside: string, outside: string): boolean {
-  if (elementClass(outside) === 'metal') return elementClass(inside) === 'metal';
-  const [one, other] = [electronegativity(inside), electronegativity(outside)];
-  if (one === null || other === null || elementClass(outside) === 'hydrogen') return true;
-  return one - other <= ionicDifference;
-}
-
-/** Drawn copies of each atom id, by their cell shift as text. */
-export function copiesById(drawn: readonly DrawnAtom[]): ReadonlyMap<string, ReadonlyMap<string, DrawnAtom>> {
-  const copies = new Map<string, Map<string, DrawnAtom>>();
-  for (const one of drawn) {
-    const known = copies.get(one.atom.id) ?? new Map<string, DrawnAtom>();
-    known.set(one.cellShift.join(), one);
-    copies.set(one.atom.id, known);
-  }
-  return copies;
-}
-
-/** Every atom of the dossier by its id. */
-export function atomsById(
-  dossier: CrystalDossier,
-): ReadonlyMap<string, { readonly atom: EquivalentAtom; readonly site: SiteDossier }> {
-  return new Map(dossier.sites.flatMap((site) => site.equivalents.map((atom) => [atom.id, { atom, site }])));
-}
-
-function copyOf(
+/** One copy of an atom, `cellShift` cells away from its own position. */
+export function copyOf(
   dossier: CrystalDossier,
   atom: EquivalentAtom,
   site: SiteDossier,
@@ -117,24 +130,35 @@ export function shiftedPosition(dossier: CrystalDossier, cartesian: Vec3, cellSh
   return dossier.lattice ? add(cartesian, apply(dossier.lattice.toCartesian, cellShift)) : cartesian;
 }
 
-function shiftsOf(
-  dossier: CrystalDossier,
-  atom: EquivalentAtom,
-  extent: 'cell' | 'molecules',
-): readonly Vec3[] {
-  if (!dossier.lattice || !atom.fractional) return [[0, 0, 0]];
-  if (extent === 'molecules') return [dossier.wholeMolecules[atom.id] ?? [0, 0, 0]];
-  const { a, b, c } = dossier.lattice.cell;
-  const [x, y, z] = atom.fractional;
-  const shifts: Vec3[] = [];
-  for (const i of faceShifts(x, a)) {
-    for (const j of faceShifts(y, b)) for (const k of faceShifts(z, c)) shifts.push([i, j, k]);
-  }
-  return shifts;
+/** Cells this far out still have keys of their own. */
+const keyReach = 1 << 16;
+
+/** A cell shift as one number, for maps. */
+export function shiftKey([i, j, k]: Vec3): number {
+  return ((i + keyReach) * 2 * keyReach + j + keyReach) * 2 * keyReach + k + keyReach;
 }
 
-function faceShifts(fraction: number, edgeAngstrom: number): readonly number[] {
-  const tolerance = faceToleranceAngstrom / edgeAngstrom;
-  if (fraction < tolerance) return [0, 1];
-  return fraction > 1 - tolerance ? [0, -1] : [0];
+/** Drawn copies of each atom id, by the key of their cell shift. */
+export type Copies = ReadonlyMap<string, ReadonlyMap<number, DrawnAtom>>;
+
+export function copiesById(drawn: readonly DrawnAtom[]): Copies {
+  const copies = new Map<string, Map<number, DrawnAtom>>();
+  for (const one of drawn) {
+    const known = copies.get(one.atom.id);
+    if (known) known.set(shiftKey(one.cellShift), one);
+    else copies.set(one.atom.id, new Map([[shiftKey(one.cellShift), one]]));
+  }
+  return copies;
+}
+
+export interface KnownAtom {
+  readonly atom: EquivalentAtom;
+  readonly site: SiteDossier;
+}
+
+/** Every atom of the dossier by its id. */
+export function atomsById(dossier: CrystalDossier): ReadonlyMap<string, KnownAtom> {
+  const atoms = new Map<string, KnownAtom>();
+  for (const site of dossier.sites) for (const atom of site.equivalents) atoms.set(atom.id, { atom, site });
+  return atoms;
 }

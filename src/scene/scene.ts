@@ -157,8 +157,12 @@ export interface TensorScale {
   readonly kind: EllipsoidKind;
   /** ppm or a.u. that make one Å. */
   readonly unitsPerAngstrom: number;
-  /** Å; radius of a tensor without deviation; 0 where kind is `total`. */
+  /** Å; radius of a tensor without deviation; 0 where kind is `total`, and for polar surfaces, rods and axial vectors. */
   readonly baseRadiusAngstrom: number;
+  /** Absent: ellipsoids. */
+  readonly glyph?: GlyphKind;
+  /** `antisymmetric`: the scale is that of axial vectors. Absent: the symmetric part is drawn. */
+  readonly part?: 'symmetric' | 'antisymmetric';
 }
 
 /** Which atoms are in the picture. */
@@ -190,4 +194,13 @@ export interface Scene {
   readonly extent: SceneExtent;
   /** Four bytes a site of the dossier: the sRGB colour its tensor has by the legend, and 255, or 0 where it has none. */
   readonly siteColours?: Uint8Array;
+  /** Colours of positive and negative lobes where all polar surfaces have the same two, for a key beside the picture. */
+  readonly lobeColours?: {
+    readonly positive: readonly [number, number, number];
+    readonly negative: readonly [number, number, number];
+  };
+  /** Which site is drawn in place of one that shares its position and is not drawn, by the index of the latter. Absent: none. */
+  readonly drawnInstead?: ReadonlyMap<number, number>;
+  /** Elements whose tensors are drawn, where not all are; null for all, or without tensors. */
+  readonly tensorElements?: readonly string[] | null;
 }

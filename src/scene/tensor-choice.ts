@@ -1,24 +1,46 @@
-import type { CrystalDossier } from '#src/dossier/dossier.ts';
-import { legendColour, legendFor } from './colour-scale.ts';
-import type { Legend, SceneQuantity } from './scene.ts';
-import type { SceneOptions } from './scene-options.ts';
+import { elementColour } from '#src/data/element-colour.ts';
+import { siteColourBytes } from '#src/data/site-colour.ts';
+import type { CrystalDossier, SiteDossier } from '#src/dossier/dossier.ts';
+import type { ColouredValue } from './colour-meaning.ts';
+import { colouredValue, usualValue } from './colour-meaning.ts';
+import { legendColour, legendFor, mapColour } from './colour-scale.ts';
+import type { GlyphKind, Legend, SceneQuantity } from './scene.ts';
+import type { ColourMeaning, SceneOptions } from './scene-options.ts';
 import type { PrincipalForm } from './tensor-shape.ts';
 import { principalForm } from './tensor-shape.ts';
+
+type Rgb = readonly [number, number, number];
 
 /** Which tensors a picture shows, and what their colour means. */
 export interface ChosenTensors {
   readonly quantity: SceneQuantity;
+  readonly glyph: GlyphKind;
   /** By site index. */
   readonly forms: ReadonlyMap<number, PrincipalForm>;
-  readonly legend: Legend;
+  /** Null where colours are those of elements or sites. */
+  readonly legend: Legend | null;
+  /** Colour of each site's tensor, by site index. */
+  readonly colours: ReadonlyMap<number, Rgb>;
+  /** The number colours say, by site index; undefined ones are not listed. */
+  readonly values: ReadonlyMap<number, number>;
+  /** `sign`: nothing but the sign of lobes. */
+  readonly colourBy: ColourMeaning | 'sign';
+  /** The number that labels print. */
+  readonly coloured: ColouredValue;
   /** Elements whose tensors are drawn, where not all are. */
   readonly elements: readonly string[] | null;
   /** True where nobody asked for these elements. */
   readonly isOwnChoice: boolean;
+  /** Sentences about colours. */
+  readonly notes: readonly string[];
 }
 
 /** What goes into the choice of tensors. */
-type ChoiceOptions = Pick<SceneOptions, 'quantity' | 'showTensors' | 'tensorElements' | 'colourLimits'>;
+type ChoiceOptions = Pick<SceneOptions, 'quantity' | 'showTensors' | 'tensorElements' | 'colourLimits'> &
+  Partial<Pick<SceneOptions, 'colourBy' | 'colourMap' | 'tensorSites' | 'glyph' | 'part'>>;
+
+/** Tensors whose number is undefined have this colour. */
+const undefinedColour: Rgb = [150, 147, 141];
 
 /** The tensors the options ask for, or those of the nearest quantity that exists; null where none is drawn. */
 export function chooseTensors(dossier: CrystalDossier, options: ChoiceOptions): ChosenTensors | null {
@@ -27,18 +49,93 @@ export function chooseTensors(dossier: CrystalDossier, options: ChoiceOptions): 
   const all = formsOf(dossier, quantity);
   const elements =
     options.tensorElements === 'auto' ? mainElements(dossier, quantity, all) : options.tensorElements;
-  const kept = [...all].filter(([index]) => elements?.includes(dossier.sites[index]!.element) ?? true);
+  const sites = options.tensorSites ? new Set(options.tensorSites) : null;
+  const kept = [...all].filter(
+    ([index]) => (elements?.includes(dossier.sites[index]!.element) ?? true) && (sites?.has(index) ?? true),
+  );
   const forms = new Map(kept);
   if (forms.size === 0) return null;
-  const values = [...forms.values()].map((form) => form.colourValue);
+  const glyph = chooseGlyph(quantity, options.glyph ?? 'auto');
+  const shown = [...forms.keys()].map((index) => dossier.sites[index]!);
+  const isLobes = glyph === 'polar' && options.part !== 'antisymmetric';
   return {
     quantity,
+    glyph,
     forms,
-    legend: legendFor(quantity, values, options.colourLimits),
+    ...(isLobes && quantity === 'efg' && (options.colourBy ?? 'isotropic') === 'isotropic'
+      ? signColours(shown)
+      : chooseColours(shown, quantity, options)),
     elements,
     isOwnChoice: options.tensorElements === 'auto' && elements !== null,
   };
 }
+
+function chooseGlyph(quantity: SceneQuantity, asked: SceneOptions['glyph']): GlyphKind {
+  if (asked !== 'auto') return asked;
+  return quantity === 'efg' ? 'polar' : 'ellipsoid';
+}
+
+/** Lobes of positive and of negative values, where colour says nothing but the sign: from either half of a diverging map. */
+export const lobeColours = { positive: mapColour('vik', 0.8), negative: mapColour('vik', 0.2) } as const;
+
+/** A field gradient has no isotropic value: its lobes say its sign by their colour, and its size by theirs. */
+function signColours(sites: readonly SiteDossier[]): ChosenColours {
+  const colours = new Map(sites.map(({ index }) => [index, lobeColours.positive]));
+  const coloured = usualValue('efg');
+  return { legend: null, colours, values: new Map(), colourBy: 'sign', coloured, notes: [] };
+}
+
+type ChosenColours = Pick<ChosenTensors, 'legend' | 'colours' | 'values' | 'colourBy' | 'coloured' | 'notes'>;
+
+function chooseColours(
+  sites: readonly SiteDossier[],
+  quantity: SceneQuantity,
+  options: ChoiceOptions,
+): ChosenColours {
+  const colourBy = options.colourBy ?? 'isotropic';
+  if (colourBy === 'element' || colourBy === 'site') {
+    const colourOf = (site: SiteDossier): Rgb =>
+      colourBy === 'element' ? elementColour(site.element) : siteColourBytes(site.index);
+    const colours = new Map(sites.map((site) => [site.index, colourOf(site)]));
+    return { legend: null, colours, values: new Map(), colourBy, coloured: usualValue(quantity), notes: [] };
+  }
+  const asked = colouredValue(colourBy, quantity);
+  const isKnown = asked !== null && sites.some((site) => isDefined(asked.valueOf(site)));
+  const coloured = isKnown ? asked : usualValue(quantity);
+  const notes: string[] = [];
+  // a field gradient has no isotropic value: that its largest component is taken goes without saying
+  if (!isKnown && colourBy !== 'isotropic') {
+    notes.push(`${missing[colourBy]} here, so colours say something else.`);
+  }
+  const values = new Map<number, number>();
+  for (const site of sites) {
+    const value = coloured.valueOf(site);
+    if (isDefined(value)) values.set(site.index, value);
+  }
+  const legend = legendFor(coloured, [...values.values()], options.colourLimits, options.colourMap ?? null);
+  const colours = new Map<number, Rgb>();
+  for (const { index } of sites) {
+    const value = values.get(index);
+    colours.set(index, value === undefined ? undefinedColour : legendColour(legend, value));
+  }
+  if (values.size < sites.length) notes.push('Grey tensors have no such number.');
+  return { legend, colours, values, colourBy: isKnown ? colourBy : 'isotropic', coloured, notes };
+}
+
+function isDefined(value: number | null): value is number {
+  return value !== null && Number.isFinite(value);
+}
+
+const missing: Readonly<Record<Exclude<ColourMeaning, 'element' | 'site'>, string>> = {
+  isotropic: 'There is no isotropic value',
+  span: 'There is no span',
+  anisotropy: 'There is no anisotropy',
+  asymmetry: 'There is no asymmetry',
+  vzz: 'There are no field gradients',
+  coupling: 'There is no quadrupolar coupling',
+  residual: 'There is no residual',
+  difference: 'There is no second set of this quantity',
+};
 
 function formsOf(dossier: CrystalDossier, quantity: SceneQuantity): Map<number, PrincipalForm> {
   const forms = new Map<number, PrincipalForm>();
@@ -79,13 +176,19 @@ function mainElements(
   return isDrowning && main.size > 0 && main.size < largest.size ? [...main] : null;
 }
 
-/** Colour of a site's ellipsoids in the picture of these options, sRGB bytes; null where it has none. */
-export function ellipsoidColour(
-  chosen: ChosenTensors | null,
-  siteIndex: number,
-): readonly [number, number, number] | null {
-  const form = chosen?.forms.get(siteIndex);
-  return chosen && form ? legendColour(chosen.legend, form.colourValue) : null;
+/** Colour of a site's tensors by the colour bar of these options, sRGB bytes; null where it has none. */
+export function ellipsoidColour(chosen: ChosenTensors | null, siteIndex: number): Rgb | null {
+  return (chosen?.legend && chosen.colours.get(siteIndex)) ?? null;
+}
+
+/** Four bytes for each site of the dossier: its colour by the colour bar and 255, or zeros where it has none. */
+export function siteColours(dossier: CrystalDossier, chosen: ChosenTensors | null): Uint8Array {
+  const bytes = new Uint8Array(4 * dossier.sites.length);
+  if (!chosen?.legend) return bytes;
+  for (const [index, colour] of chosen.colours) {
+    if (chosen.values.has(index)) bytes.set([...colour, 255], 4 * index);
+  }
+  return bytes;
 }
 
 /** Shielding before shift before EFG, where nothing is asked for or what is asked for does not exist. */

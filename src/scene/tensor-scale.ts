@@ -63,14 +63,14 @@ function chooseKind(
   asked: SceneOptions['ellipsoid'],
 ): { kind: EllipsoidKind; because: string | null } {
   if (asked === 'deviation') return { kind: 'deviation', because: null };
-  const lowest = forms.reduce((least, form) => Math.min(least, ...form.values), Infinity);
+  const lowest = extremeValue(forms, Math.min);
   if (!(lowest > 0)) {
     return {
       kind: 'deviation',
       because: 'some principal values are not positive, so their totals have no ellipsoid',
     };
   }
-  const highest = forms.reduce((most, form) => Math.max(most, ...form.values), -Infinity);
+  const highest = extremeValue(forms, Math.max);
   const vanishing = lowest / total.unitsPerAngstrom < thinnestAngstrom || highest > largestRatio * lowest;
   if (asked === 'auto' && vanishing) {
     return {
@@ -81,6 +81,10 @@ function chooseKind(
   return { kind: 'total', because: null };
 }
 
+function extremeValue(forms: readonly PrincipalForm[], choose: typeof Math.min): number {
+  return forms.reduce((found, { values }) => choose(found, ...values), choose());
+}
+
 function totalScale(
   forms: ReadonlyMap<number, PrincipalForm>,
   pairs: readonly NearPair[],
@@ -88,18 +92,52 @@ function totalScale(
   asked: number | null,
   otherRadius: (site: SiteDossier) => number,
 ): TensorScale {
-  const reach = (site: SiteDossier) => Math.max(0, ...(forms.get(site.index)?.values ?? [0]));
-  const largest = [...forms.values()].reduce((most, form) => Math.max(most, ...form.values), -Infinity);
-  let needed = largest / longestAngstrom;
-  for (const pair of pairs) {
-    const units = reach(pair.first) + reach(pair.second);
-    const fixed = [pair.first, pair.second].filter((site) => !forms.has(site.index));
-    const room =
-      filledShare.total * pair.distanceAngstrom - fixed.reduce((sum, site) => sum + otherRadius(site), 0);
+  const reaches = new Map([...forms].map(([index, { values }]) => [index, Math.max(0, ...values)]));
+  const limits = { longestAngstrom, filledShare: filledShare.total };
+  const unitsPerAngstrom = asked ?? fittingScale(reaches, pairs, limits, otherRadius);
+  return { quantity, kind: 'total', unitsPerAngstrom, baseRadiusAngstrom: 0 };
+}
+
+/** How large lengths may get: alone, and as a share of the distance of two neighbours together. */
+interface LengthLimits {
+  readonly longestAngstrom: number;
+  readonly filledShare: number;
+}
+
+/** Units for one Å at which lengths (units, by site index) stay within their limits, rounded to a readable number. */
+function fittingScale(
+  reaches: ReadonlyMap<number, number>,
+  pairs: readonly NearPair[],
+  limits: LengthLimits,
+  otherRadius: (site: SiteDossier) => number,
+): number {
+  let needed =
+    [...reaches.values()].reduce((most, reach) => Math.max(most, reach), 0) / limits.longestAngstrom;
+  for (const { first, second, distanceAngstrom } of pairs) {
+    let units = 0;
+    let room = limits.filledShare * distanceAngstrom;
+    for (const site of [first, second]) {
+      const reach = reaches.get(site.index);
+      if (reach === undefined) room -= otherRadius(site);
+      else units += reach;
+    }
     if (units > 0 && room > 0.2) needed = Math.max(needed, units / room);
   }
-  const unitsPerAngstrom = asked ?? readableAtLeast(needed);
-  return { quantity, kind: 'total', unitsPerAngstrom, baseRadiusAngstrom: 0 };
+  return readableAtLeast(needed);
+}
+
+/** Å and share: lobes and rods of neighbours may come nearer to each other than closed bodies, as they are thin. */
+const openLimits: LengthLimits = { longestAngstrom: 1.2, filledShare: 0.9 };
+
+/** One scale for lengths from the atom's centre (ppm or a.u., by site index): polar surfaces, rods, axial vectors. */
+export function chooseLengthScale(
+  reaches: ReadonlyMap<number, number>,
+  pairs: readonly NearPair[],
+  drawn: Pick<TensorScale, 'quantity' | 'kind' | 'glyph' | 'part'>,
+  asked: number | null,
+): TensorScale {
+  const unitsPerAngstrom = asked ?? fittingScale(reaches, pairs, openLimits, () => 0.1);
+  return { ...drawn, unitsPerAngstrom, baseRadiusAngstrom: 0 };
 }
 
 function deviationScale(

@@ -1,9 +1,9 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
-import { apply, matrixFromColumns } from '#src/base/matrix3.ts';
+import { apply, combine, diagonalMatrix, matrixFromColumns, multiply, transpose } from '#src/base/matrix3.ts';
 import { cross, normalize, scale } from '#src/base/vector3.ts';
 import type { Axis, SiteDossier } from '#src/dossier/dossier.ts';
 import { anyPerpendicular } from './camera.ts';
-import type { SceneQuantity, TensorScale } from './scene.ts';
+import type { EllipsoidKind, SceneQuantity, TensorScale } from './scene.ts';
 
 /** Principal values (ppm or a.u.) of the symmetric part with their axes; an undefined axis is null. */
 export interface PrincipalForm {
@@ -11,21 +11,37 @@ export interface PrincipalForm {
   readonly axes: readonly [Axis, Axis, Axis];
   /** Mean of the values; 0 for an EFG. */
   readonly isotropic: number;
-  /** What the colour says: the isotropic value, or signed Vzz of an EFG. */
-  readonly colourValue: number;
+  /** The symmetric part itself, row-major. */
+  readonly matrix: Mat3;
 }
 
 /** The tensor of a site in its own frame, or null where the site has none of that quantity. */
 export function principalForm(site: SiteDossier, quantity: SceneQuantity): PrincipalForm | null {
   const found = site[quantity];
   if (!found) return null;
+  const { components: values, axes, tensor } = found;
   const isotropic = 'isotropic' in found ? found.isotropic : 0;
-  return {
-    values: found.components,
-    axes: found.axes,
-    isotropic,
-    colourValue: quantity === 'efg' ? found.components[2] : isotropic,
-  };
+  const symmetric = 'symmetric' in found ? found.symmetric : tensor && halfSum(tensor);
+  return { values, axes, isotropic, matrix: symmetric ?? matrixOf(values, axes) };
+}
+
+function halfSum(tensor: Mat3): Mat3 {
+  return combine(0.5, tensor, 0.5, transpose(tensor));
+}
+
+/** Σ valueₖ axisₖ axisₖᵀ */
+function matrixOf(values: Vec3, axes: readonly [Axis, Axis, Axis]): Mat3 {
+  const frame = matrixFromColumns(...completeFrame(axes));
+  return multiply(multiply(frame, diagonalMatrix(values)), transpose(frame));
+}
+
+/**
+ * Largest length that stands for a tensor before scaling, ppm or a.u.: its largest principal value or, of a deviation, the
+ * largest distance of one from the isotropic value.
+ */
+export function largestReach({ values, isotropic }: PrincipalForm, kind: EllipsoidKind): number {
+  const zero = kind === 'total' ? 0 : isotropic;
+  return Math.max(...values.map((value) => Math.abs(value - zero)));
 }
 
 /** An ellipsoid with the great circles that are defined. */

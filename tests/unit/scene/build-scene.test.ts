@@ -288,12 +288,15 @@ describe('what was chosen is said', () => {
       }));
       return { ...made, sites };
     };
-    const drawn = buildScene(crystal(0.7));
+    const drawn = buildScene(crystal(0.7), { glyph: 'ellipsoid' });
     expect(drawn.caption).toContain('EFG ellipsoids of Al:');
     expect(drawn.caption).toContain('under Show');
     expect(drawn.elements.map(({ element }) => element)).toEqual(['H']);
-    expect(buildScene(crystal(0.5)).caption).toContain('EFG ellipsoids:');
-    expect(buildScene(crystal(0.7), { tensorElements: null }).caption).toContain('EFG ellipsoids:');
+    expect(buildScene(crystal(0.5), { glyph: 'ellipsoid' }).caption).toContain('EFG ellipsoids:');
+    expect(buildScene(crystal(0.7), { tensorElements: null, glyph: 'ellipsoid' }).caption).toContain(
+      'EFG ellipsoids:',
+    );
+    expect(buildScene(crystal(0.7)).caption).toContain('EFG polar surfaces of Al of the symmetric part');
   });
 
   it('draws a limited number of atoms of a very large file and states it', () => {
@@ -311,8 +314,8 @@ describe('what was chosen is said', () => {
     }));
     const scene = buildScene({ ...one, sites: many, atomsInCell: many.length });
     expect(scene.quadrics.count).toBe(mostAtoms);
-    expect(scene.caption).toContain('Only the first 20,000 atoms are drawn');
-    expect(scene.caption).toContain('there are 20,010');
+    expect(scene.caption).toContain('Only the first 60,000 atoms are drawn');
+    expect(scene.caption).toContain('there are 60,010');
   });
 
   it('crosses worker borders', () => {

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { batlowStops, vikStops } from '#src/data/colour-maps.data.ts';
+import { colouredValue, usualValue } from '#src/scene/colour-meaning.ts';
 import { legendColour, legendFor, mapColour } from '#src/scene/colour-scale.ts';
 
 /** CIE L* of sRGB bytes (IEC 61966-2-1, CIE 15). */
@@ -37,7 +38,7 @@ describe('published maps', () => {
 });
 
 describe('colour of a value', () => {
-  const legend = legendFor('shielding', [10, 20], [0, 100]);
+  const legend = legendFor(usualValue('shielding'), [10, 20], [0, 100]);
 
   it('is the end of the bar at and beyond its limits', () => {
     expect(legendColour(legend, 0)).toEqual(legend.stops[0]);
@@ -54,7 +55,7 @@ describe('colour of a value', () => {
   });
 
   it('a signed quantity has the lightest colour at zero', () => {
-    const signed = legendFor('efg', [-0.3, 1.27], null);
+    const signed = legendFor(usualValue('efg'), [-0.3, 1.27], null);
     expect(signed.low).toBe(-signed.high);
     expect(lightness(legendColour(signed, 0))).toBeGreaterThan(85);
     expect(lightness(legendColour(signed, signed.low))).toBeLessThan(40);
@@ -68,20 +69,20 @@ describe('automatic limits', () => {
     [[430.96, 431.41], 430.96, 431.41, 2],
     [[-58, 84], -58, 84, 0],
   ])('%j', (values, low, high, digits) => {
-    const legend = legendFor('shielding', values, null);
+    const legend = legendFor(usualValue('shielding'), values, null);
     expect(legend.low).toBeLessThanOrEqual(Math.min(...values));
     expect(legend.high).toBeGreaterThanOrEqual(Math.max(...values));
     expect([legend.low, legend.high, legend.digits]).toEqual([low, high, digits]);
   });
 
   it('one value lies in the middle of its bar', () => {
-    const { low, high } = legendFor('shift', [42], null);
+    const { low, high } = legendFor(usualValue('shift'), [42], null);
     expect(low).toBeLessThan(42);
     expect((low + high) / 2).toBeCloseTo(42, 1);
   });
 
   it('typed limits in the wrong order are put right; equal ones are ignored', () => {
-    expect(legendFor('shift', [1, 2], [80, -20])).toMatchObject({ low: -20, high: 80 });
-    expect(legendFor('shift', [1, 2], [5, 5]).low).toBeLessThanOrEqual(1);
+    expect(legendFor(usualValue('shift'), [1, 2], [80, -20])).toMatchObject({ low: -20, high: 80 });
+    expect(legendFor(usualValue('shift'), [1, 2], [5, 5]).low).toBeLessThanOrEqual(1);
   });
 });
