@@ -4,7 +4,7 @@ import { anglesToCell, atomAxes } from '#src/store/axes.ts';
 import type { TensorQuantity } from '#src/store/axes.ts';
 import type { EquivalentAtom, Lattice, SiteDossier } from '#src/store/dossier-types.ts';
 import { axisNames } from './axis-names.ts';
-import { formatNumber, formatOperation } from './number-format.ts';
+import { formatNumber, formatOperation } from '#src/table/number-format.ts';
 
 /** Principal axes of a site, or of one of its atoms: Cartesian directions and angles to the cell axes. */
 export function axesTable(

@@ -1,29 +1,29 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import type { CrystalDossier } from '#src/store/dossier-types.ts';
-import { counted, formatCount, formatNumber } from './number-format.ts';
+import type { CrystalSummary } from '#src/store/crystal-summary.ts';
+import { counted, formatCount, formatNumber } from '#src/table/number-format.ts';
 
 /** How many operations and where they are from: the reason alone where it says the number itself. */
-function symmetrySentence({ operations, reason }: CrystalDossier['symmetry']): string {
+function symmetrySentence({ operations, reason }: CrystalSummary['symmetry']): string {
   const count = counted(operations.length, 'operation');
   return reason.includes(`${operations.length} operation`) ? reason : `${count}: ${reason}`;
 }
 
 /** What the crystal as a whole is: shown in the card while no site is chosen. */
-export function crystalOverview(dossier: CrystalDossier): TemplateResult {
-  const { lattice, symmetry, spaceGroup } = dossier;
+export function crystalOverview(crystal: CrystalSummary): TemplateResult {
+  const { lattice, symmetry, spaceGroup } = crystal;
   const rows: readonly (readonly [string, string | TemplateResult | null])[] = [
-    ['cell', lattice ? cellText(dossier) : 'none: a molecule'],
+    ['cell', lattice ? cellText(crystal) : 'none: a molecule'],
     ['volume', lattice ? `${formatNumber(lattice.volume, 3)} Å³` : null],
     ['frame', lattice ? lattice.frame : null],
     ['space group', spaceGroup || null],
     ['symmetry', symmetrySentence(symmetry)],
-    ['composition', compositionOf(dossier)],
-    ['temperature', dossier.temperatureK === null ? null : `${formatNumber(dossier.temperatureK, 0)} K`],
-    ['tensors', tensorsOf(dossier)],
+    ['composition', compositionOf(crystal)],
+    ['temperature', crystal.temperatureK === null ? null : `${formatNumber(crystal.temperatureK, 0)} K`],
+    ['tensors', tensorsOf(crystal)],
   ];
   return html`<article aria-label="Crystal">
-    <h2 class="title"><strong>${dossier.name}</strong></h2>
+    <h2 class="title"><strong>${crystal.name}</strong></h2>
     <dl class="facts">
       ${rows.map(([name, value]) =>
         value
@@ -36,7 +36,7 @@ export function crystalOverview(dossier: CrystalDossier): TemplateResult {
   </article>`;
 }
 
-function cellText({ lattice }: CrystalDossier): TemplateResult {
+function cellText({ lattice }: CrystalSummary): TemplateResult {
   if (!lattice) return html``;
   const { a, b, c, alpha, beta, gamma } = lattice.cell;
   const lengths = [a, b, c].map((value) => formatNumber(value, 4)).join(', ');
@@ -44,7 +44,7 @@ function cellText({ lattice }: CrystalDossier): TemplateResult {
   return html`<i>a</i>, <i>b</i>, <i>c</i> = ${lengths} Å; α, β, γ = ${angles}°`;
 }
 
-function compositionOf({ composition, lattice }: CrystalDossier): TemplateResult {
+function compositionOf({ composition, lattice }: CrystalSummary): TemplateResult {
   const parts = Object.entries(composition).map(
     ([element, count]) =>
       html`${element} ${Number.isInteger(count) ? formatCount(count) : formatNumber(count, 3)}`,
@@ -52,11 +52,10 @@ function compositionOf({ composition, lattice }: CrystalDossier): TemplateResult
   return html`${parts.map((part, i) => html`${i > 0 ? ', ' : ''}${part}`)}${lattice ? ' in the cell' : ''}`;
 }
 
-function tensorsOf({ sites }: CrystalDossier): string {
-  const count = (part: 'shielding' | 'shift' | 'efg'): number => sites.filter((site) => site[part]).length;
+function tensorsOf({ quantities, tensorCounts, siteCount }: CrystalSummary): string {
   const words = { shielding: 'shielding', shift: 'shift', efg: 'field gradient' } as const;
-  const parts = (['shielding', 'shift', 'efg'] as const)
-    .filter((part) => count(part) > 0)
-    .map((part) => `${words[part]} on ${formatCount(count(part))} of ${formatCount(sites.length)} sites`);
+  const parts = quantities.map(
+    (part) => `${words[part]} on ${formatCount(tensorCounts[part])} of ${formatCount(siteCount)} sites`,
+  );
   return parts.join(', ') || 'none in these files';
 }

@@ -5,14 +5,14 @@ import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { EfgDossier, EquivalentAtom, Lattice, SiteDossier } from '#src/store/dossier-types.ts';
 import { atomTensor } from '#src/store/axes.ts';
 import { efgFromAtomicUnits } from '#src/store/efg-units.ts';
+import { formatNumber, isotopeSymbol } from '#src/table/number-format.ts';
+import { foreignIsotope, isDiagnostic, printedValue } from '#src/table/printed-value.ts';
 import { axesTable } from './card-axes.ts';
 import type { ValueColumn } from './card-conventions.ts';
 import { conventionTable } from './card-conventions.ts';
-import { isDiagnostic, noiseList } from './card-noise.ts';
+import { noiseList } from './card-noise.ts';
 import { reasons, valueOrReason } from './card-value.ts';
-import { foreignIsotope, printedValue } from './convention-symbol.ts';
 import { matrixTable, turnedSentence } from './matrix-table.ts';
-import { formatNumber, isotopeSymbol } from './number-format.ts';
 
 /** The electric field gradient of a site, the couplings it makes, its axes, matrices and noise. */
 export function efgSection(

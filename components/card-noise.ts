@@ -3,13 +3,9 @@ import type { TemplateResult } from 'lit';
 import { conventionCatalogue, digitsOf, entryValue } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { NoiseFigures, SiteDossier } from '#src/store/dossier-types.ts';
+import { formatSmall } from '#src/table/number-format.ts';
+import { isDiagnostic, undefinedReason } from '#src/table/printed-value.ts';
 import { symbolOf } from './convention-symbol.ts';
-import { formatSmall } from './number-format.ts';
-
-/** True for figures that judge the calculation instead of describing the site. */
-export function isDiagnostic(entry: ConventionEntry): boolean {
-  return entry.convention === 'diagnostic of the calculation';
-}
 
 /** How far the calculation breaks the symmetry it should obey: each figure with its name and unit. */
 export function noiseList(
@@ -30,11 +26,7 @@ export function noiseList(
 
 function figure(entry: ConventionEntry, value: number | null, site: SiteDossier): TemplateResult {
   if (value === null) {
-    const reason =
-      site.multiplicity === 1
-        ? 'the atom has no equivalents'
-        : 'only one of the equivalent atoms has a tensor';
-    return html`<span class="undefined">undefined</span>: ${reason}`;
+    return html`<span class="undefined">undefined</span>: ${undefinedReason(site, entry)}`;
   }
   const isFree = entry.field === 'symmetryResidual' && site.siteSymmetryOrder === 1;
   return html`${formatSmall(value, digitsOf(entry))}

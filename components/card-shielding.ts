@@ -4,12 +4,12 @@ import { atomTensor } from '#src/store/axes.ts';
 import { conventionCatalogue } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { EquivalentAtom, Lattice, SiteDossier } from '#src/store/dossier-types.ts';
+import { isDiagnostic, printedValue } from '#src/table/printed-value.ts';
 import { axesTable } from './card-axes.ts';
 import type { ValueColumn } from './card-conventions.ts';
 import { conventionTable } from './card-conventions.ts';
-import { isDiagnostic, noiseList } from './card-noise.ts';
+import { noiseList } from './card-noise.ts';
 import { reasons, valueOrReason } from './card-value.ts';
-import { printedValue } from './convention-symbol.ts';
 import { matrixTable, turnedSentence } from './matrix-table.ts';
 
 /** Shielding and shift of a site in every convention, their axes, matrices and noise. */

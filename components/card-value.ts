@@ -3,7 +3,7 @@ import type { TemplateResult } from 'lit';
 import { convention } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import { symbolOf } from './convention-symbol.ts';
-import { raiseIsotopes } from './number-format.ts';
+import { raiseIsotopes } from '#src/table/number-format.ts';
 
 /** A printed number, or what stands for none with the reason as its tooltip; the reasons also stand below the table. */
 export function valueOrReason(text: string, because: string | undefined): TemplateResult {

@@ -2,7 +2,7 @@ import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { DerivedCase, ProposalSummary, SourceSummary } from '#src/store/engine-protocol.ts';
 import { drawerStyles } from './drawer-styles.ts';
-import { counted, formatCount } from './number-format.ts';
+import { counted, formatCount } from '#src/table/number-format.ts';
 import { askForPanel } from './panel.ts';
 import { acceptedWords, pickFiles } from './pick-files.ts';
 import { proposalButtons, quantityWords } from './proposal-buttons.ts';

@@ -1,7 +1,7 @@
 import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { ElementKey, Legend } from '#src/scene/scene.ts';
-import { formatNumber } from './number-format.ts';
+import { formatNumber } from '#src/table/number-format.ts';
 
 export const colourBarStyles = css`
   .legend {

@@ -1,89 +1,21 @@
 import { html } from 'lit';
 import type { TemplateResult } from 'lit';
-import { convention, digitsOf, entryValue } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
-import type { SiteDossier } from '#src/store/dossier-types.ts';
-import { formatNumber, isotopeSymbol } from './number-format.ts';
+import type { HeadingPart, SiteColumn } from '#src/table/site-column.ts';
+
+function partsOf(parts: readonly HeadingPart[]): TemplateResult {
+  return html`${parts.map(({ text, position }) => {
+    if (position === 'sub') return html`<sub>${text}</sub>`;
+    return position === 'sup' ? html`<sup>${text}</sup>` : html`${text}`;
+  })}`;
+}
 
 /** The symbol of an entry with its subscript set as one. */
 export function symbolOf(entry: ConventionEntry): TemplateResult {
-  return html`${entry.symbolParts.map(({ text, position }) =>
-    position === 'sub' ? html`<sub>${text}</sub>` : html`${text}`,
-  )}`;
+  return partsOf(entry.symbolParts);
 }
 
-/** Symbol and unit as a heading: `Ω/ppm`, `κ`. */
-export function headingOf(entry: ConventionEntry): TemplateResult {
-  return html`${symbolOf(entry)}${entry.unit ? `/${entry.unit}` : ''}`;
-}
-
-/** An entry that must be in the catalogue; a missing one is a programmer's mistake. */
-export function knownConvention(quantity: ConventionEntry['quantity'], key: string): ConventionEntry {
-  const entry = convention(quantity, key);
-  if (!entry) throw new RangeError(`the catalogue has no ${key} of ${quantity}`);
-  return entry;
-}
-
-/** True for numbers made from a quadrupole moment: they belong to a nuclide with spin 1 or more. */
-export function isCoupling({ field }: ConventionEntry): boolean {
-  return couplingFields.has(field);
-}
-
-const couplingFields = new Set([
-  'couplingMHz',
-  'productMHz',
-  'quadrupoleFrequencyMHz',
-  'quadrupoleAngularFrequency',
-]);
-
-/**
- * A number of a tensor as the catalogue prints it. A sign that the tensor leaves open reads ± (∓ for Vyy, which has the other
- * one), a coupling there is none of reads –, another undefined number `undefined`.
- */
-export function printedValue(part: object, entry: ConventionEntry, isotope: string | null): string {
-  const value = entryValue(part, entry);
-  if (isCoupling(entry) && (value === null || value === undefined)) return '–';
-  const text = formatNumber(value, digitsOf(entry, isotope));
-  const isOpen = 'signDetermined' in part && part.signDetermined === false && Number(text) !== 0;
-  const isSigned = isCoupling(entry) || (entry.field === 'components' && entry.index !== 0);
-  if (!isOpen || !isSigned || text === 'undefined') return text;
-  return (entry.index === 1 ? '∓' : '±') + text.replace('−', '');
-}
-
-/** The isotope a coupling is of, where it is another one than the site's nuclide: raised, such as `¹⁴N`. */
-export function foreignIsotope(site: SiteDossier, entry: ConventionEntry): string | null {
-  const isotope = site.efg?.isotope ?? null;
-  const isForeign = isCoupling(entry) && site.efg?.couplingMHz !== null && isotope !== site.isotope;
-  return isForeign && isotope ? isotopeSymbol(isotope) : null;
-}
-
-/** A site's number as the table prints it, empty where the site has no such tensor: `−5.17`, `±1.20`, `−0.93 (¹⁴N)`, `–`. */
-export function siteNumber(site: SiteDossier, entry: ConventionEntry): string {
-  const part = site[entry.quantity];
-  if (!part) return '';
-  const foreign = foreignIsotope(site, entry);
-  return printedValue(part, entry, isotopeOf(site, entry)) + (foreign ? ` (${foreign})` : '');
-}
-
-function isotopeOf(site: SiteDossier, { quantity }: ConventionEntry): string | null {
-  return quantity === 'efg' ? (site.efg?.isotope ?? site.isotope) : site.isotope;
-}
-
-/** The site's main numbers for a sentence: `σiso 526.67 ppm`, `C_Q(¹⁴N) −0.93 MHz`. */
-export function mainNumbers(site: SiteDossier): string[] {
-  const entries = [
-    knownConvention('shielding', 'isotropic'),
-    knownConvention('shift', 'isotropic'),
-    knownConvention('efg', 'couplingMHz'),
-  ];
-  return entries.flatMap((entry) => {
-    const part = site[entry.quantity];
-    if (!part) return [];
-    const foreign = foreignIsotope(site, entry);
-    const symbol = entry.symbol + (foreign ? `(${foreign})` : '');
-    const text = printedValue(part, entry, isotopeOf(site, entry));
-    return [
-      text === '–' || text === 'undefined' ? `${symbol} undefined` : `${symbol} ${text} ${entry.unit}`.trim(),
-    ];
-  });
+/** Symbol and unit of a column: `Ω/ppm`, `κ`. */
+export function headingOf({ heading, unit }: SiteColumn): TemplateResult {
+  return html`${partsOf(heading)}${unit ? `/${unit}` : ''}`;
 }

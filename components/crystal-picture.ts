@@ -3,7 +3,6 @@ import type { WebGLProbe } from '#src/render/probe-webgl.ts';
 import type { CrystalRenderer, DrawnBy } from '#src/render/renderer.ts';
 import { darkTheme, lightTheme } from '#src/render/theme.ts';
 import type { RenderTheme } from '#src/render/theme.ts';
-import { buildScene } from '#src/scene/build-scene.ts';
 import type { Camera, Viewport } from '#src/scene/camera.ts';
 import { zoom } from '#src/scene/camera.ts';
 import { firstCamera, fit, lookAlong } from '#src/scene/framing.ts';
@@ -12,8 +11,6 @@ import type { PlacedLabel } from '#src/scene/place-labels.ts';
 import { placeLabels } from '#src/scene/place-labels.ts';
 import type { ProjectedAtom } from '#src/scene/project.ts';
 import { projectAtoms, projectAxes } from '#src/scene/project.ts';
-import type { SceneOptions } from '#src/scene/scene-options.ts';
-import type { CrystalDossier } from '#src/store/dossier-types.ts';
 import { attachControls } from './picture-controls.ts';
 import { cameraAfterKey } from './picture-keys.ts';
 
@@ -45,8 +42,6 @@ export class CrystalPicture {
   readonly #events: PictureEvents;
   readonly #renderer: CrystalRenderer;
   readonly #detach: () => void;
-  #dossier: CrystalDossier | null = null;
-  #options: Partial<SceneOptions> = {};
   #scene: Scene | null = null;
   #camera: Camera | null = null;
   #viewport: Viewport = { widthPx: 0, heightPx: 0 };
@@ -97,16 +92,14 @@ export class CrystalPicture {
   }
 
   /** Draws a crystal. A new crystal gets a first view; the same one with other numbers or options keeps its view. */
-  show(dossier: CrystalDossier, options: Partial<SceneOptions>, isNewCrystal: boolean): void {
-    if (dossier === this.#dossier && options === this.#options) return;
+  show(scene: Scene, isNewCrystal: boolean): void {
     const before = this.#scene;
-    this.#dossier = dossier;
-    this.#options = options;
-    this.#scene = buildScene(dossier, options);
-    this.#renderer.setScene(this.#scene);
+    if (scene === before) return;
+    this.#scene = scene;
+    this.#renderer.setScene(scene);
     if (isNewCrystal) this.#camera = null;
-    const isReframed = this.#camera !== null && before?.extent !== this.#scene.extent;
-    if (isReframed && this.#camera) this.#move(fit(this.#scene, this.#camera.orientation, this.#viewport));
+    const isReframed = this.#camera !== null && before?.extent !== scene.extent;
+    if (isReframed && this.#camera) this.#move(fit(scene, this.#camera.orientation, this.#viewport));
     else this.#frame();
   }
 

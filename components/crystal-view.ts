@@ -2,8 +2,7 @@ import { html, nothing, svg } from 'lit';
 import type { PropertyValues, TemplateResult } from 'lit';
 import type { WebGLProbe } from '#src/render/probe-webgl.ts';
 import { probeWebGL } from '#src/render/probe-webgl.ts';
-import type { PickEntry } from '#src/scene/scene.ts';
-import { sharedPositions } from '#src/scene/shared-positions.ts';
+import type { PickEntry, Scene } from '#src/scene/scene.ts';
 import { siteColour } from '#src/store/site-colour.ts';
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { colourBar, colourBarStyles } from './colour-bar.ts';
@@ -43,7 +42,16 @@ export class CrystalView extends StoreElement {
   declare isShowing: boolean;
   declare pointed: PickEntry | null;
 
-  protected override readonly watches = ['derived', 'decisions', 'selection', 'hover', 'picture'] as const;
+  protected override readonly watches = [
+    'derived',
+    'decisions',
+    'selection',
+    'hover',
+    'scene',
+    'sceneFault',
+    'isDrawing',
+    'sitesRead',
+  ] as const;
   #picture: CrystalPicture | null = null;
   #resize: ResizeObserver | null = null;
   #crystalKey: string | null = null;
@@ -72,7 +80,7 @@ export class CrystalView extends StoreElement {
 
   override render(): TemplateResult {
     const { probe, fault } = this;
-    const name = this.store?.state.derived?.dossier?.name ?? '';
+    const name = this.store?.state.derived?.crystal?.name ?? '';
     if (probe && !draws(probe)) {
       return html`<h2>Crystal${name ? ` · ${name}` : ''}</h2>
         <p class="none" role="note">${nothingDraws}</p>`;
@@ -101,7 +109,7 @@ export class CrystalView extends StoreElement {
           ({ text, leftPx, topPx }) =>
             html`<span class="label" .style=${`left: ${leftPx}px; top: ${topPx}px`}>${text}</span>`,
         )}
-        ${this.#pointedLine()}
+        ${this.#pointedLine()} ${this.#waiting()}
         ${this.isLost ? html`<p class="lost">The graphics chip took the picture away; until it comes back the CPU draws.</p>` : nothing}
       </div>
       ${colourBar(scene?.legend ?? null, scene?.scaleStatement ?? null, scene?.elements)}
@@ -155,15 +163,14 @@ export class CrystalView extends StoreElement {
   }
 
   #draw(picture: CrystalPicture, state: WorkbenchState, before: WorkbenchState | null): void {
-    const { derived, decisions, picture: options, selection, hover } = state;
-    const dossier = derived?.dossier;
-    if (!dossier) return;
+    const { derived, decisions, scene, selection, hover } = state;
+    if (!derived || !scene) return;
     const key = `${derived.chosen?.sourceId} ${derived.chosen?.index} ${decisions?.settings.symmetry}`;
-    picture.show(dossier, options, key !== this.#crystalKey);
+    picture.show(scene, key !== this.#crystalKey);
     this.#crystalKey = key;
-    const isNew = derived !== before?.derived;
-    if (isNew || selection !== before?.selection) picture.select(atomIds(state, selection));
-    if (isNew || hover !== before?.hover) picture.hover(atomIds(state, hover));
+    const isNew = scene !== before?.scene;
+    if (isNew || selection !== before?.selection) picture.select(atomIds(scene, selection));
+    if (isNew || hover !== before?.hover) picture.hover(atomIds(scene, hover));
   }
 
   #tools(hasAxes: boolean): TemplateResult {
@@ -220,9 +227,22 @@ export class CrystalView extends StoreElement {
   }
 
   #pointedLine(): TemplateResult | typeof nothing {
-    const dossier = this.store?.state.derived?.dossier;
-    if (!this.pointed || !dossier) return nothing;
-    return html`<div class="pointed">${pointedSentence(this.pointed, dossier)}</div>`;
+    const { store, pointed } = this;
+    const scene = this.#picture?.scene;
+    if (!pointed || !scene || !store) return nothing;
+    const sentence = pointedSentence(pointed, scene, (index) => store.site(index));
+    return sentence ? html`<div class="pointed">${sentence}</div>` : nothing;
+  }
+
+  /** What there is to say while a picture is made, or when it could not be. */
+  #waiting(): TemplateResult | typeof nothing {
+    const { sceneFault, isDrawing } = this.store?.state ?? {};
+    if (isDrawing) return html`<p class="lost" role="status">The new picture is being made.</p>`;
+    return sceneFault
+      ? html`<p class="lost" role="alert">
+          The picture could not be made: ${sceneFault}. What is shown is the one before.
+        </p>`
+      : nothing;
   }
 
   #point(entry: PickEntry | null): void {
@@ -254,12 +274,13 @@ function selectionOf({ siteIndex, atomId }: Extract<PickEntry, { kind: 'atom' }>
 }
 
 /** The atoms a selection means: the one, or all of the site; of a site that is not drawn, those on its position. */
-function atomIds({ derived }: WorkbenchState, selection: Selection | null): string[] {
+function atomIds({ picks, drawnInstead }: Scene, selection: Selection | null): string[] {
   if (!selection) return [];
-  const dossier = derived?.dossier;
-  const instead = dossier && sharedPositions(dossier).drawnInstead.get(selection.siteIndex);
+  const instead = drawnInstead?.get(selection.siteIndex);
   if (selection.atomId !== null && instead === undefined) return [selection.atomId];
-  return dossier?.sites[instead ?? selection.siteIndex]?.equivalents.map(({ id }) => id) ?? [];
+  const wanted = instead ?? selection.siteIndex;
+  const ids = picks.flatMap((pick) => (pick.kind === 'atom' && pick.siteIndex === wanted ? pick.atomId : []));
+  return [...new Set(ids)];
 }
 
 /** Cell axes in the corner: lines with letters, the farther ones drawn first. */

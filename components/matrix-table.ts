@@ -1,7 +1,7 @@
 import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { EquivalentAtom, Mat3 } from '#src/store/dossier-types.ts';
-import { formatNumber, formatOperation } from './number-format.ts';
+import { formatNumber, formatOperation } from '#src/table/number-format.ts';
 
 export const matrixStyles = css`
   .matrices {

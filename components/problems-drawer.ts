@@ -4,7 +4,7 @@ import type { Problem } from '#src/store/dossier-types.ts';
 import { countProblems } from '#src/store/state.ts';
 import { drawerStyles } from './drawer-styles.ts';
 import { askForPanel } from './panel.ts';
-import { raiseIsotopes } from './number-format.ts';
+import { raiseIsotopes } from '#src/table/number-format.ts';
 import { proposalButtons } from './proposal-buttons.ts';
 import { problemSummary, severityOrder } from './problem-summary.ts';
 import { shared } from './styles.ts';

@@ -5,7 +5,7 @@ import { nuclidesOf } from '#src/store/isotopes.ts';
 import { latticeSettings } from '#src/store/frames.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
 import { drawerStyles } from './drawer-styles.ts';
-import { isotopeSymbol } from './number-format.ts';
+import { isotopeSymbol } from '#src/table/number-format.ts';
 import { numberInput } from './number-input.ts';
 import { askForPanel } from './panel.ts';
 import { StoreElement } from './store-element.ts';
@@ -120,8 +120,8 @@ export class SettingsPanel extends StoreElement {
   ): TemplateResult | typeof nothing {
     const nuclides = nuclidesOf(element);
     if (nuclides.length === 0) return nothing;
-    const sites = state.derived?.dossier?.sites.filter((site) => site.element === element) ?? [];
-    const isotope = sites[0]?.isotope ?? nuclides[0]?.symbol ?? element;
+    const found = state.derived?.crystal?.elements.find((one) => one.element === element);
+    const isotope = found?.isotope ?? nuclides[0]?.symbol ?? element;
     const chooseIsotope = (event: Event): void => {
       const chosen = (event.target as HTMLSelectElement).value;
       this.#change({ isotopes: { ...settings.isotopes, [element]: chosen } }, `${element} as ${chosen}`);
@@ -137,8 +137,8 @@ export class SettingsPanel extends StoreElement {
             </option>`,
         )}
       </select>
-      ${sites.some(({ shielding }) => shielding) ? this.#reference(isotope, settings) : nothing}
-      ${hasMoment && sites.some(({ efg }) => efg) ? this.#moment(isotope, settings) : nothing}
+      ${found?.tensorCounts.shielding ? this.#reference(isotope, settings) : nothing}
+      ${hasMoment && found?.tensorCounts.efg ? this.#moment(isotope, settings) : nothing}
     </div>`;
   }
 
@@ -226,7 +226,7 @@ function without<Value>(record: Readonly<Record<string, Value>>, key: string): R
 }
 
 function elementsOf({ derived }: WorkbenchState): string[] {
-  return [...new Set(derived?.dossier?.sites.map(({ element }) => element) ?? [])];
+  return derived?.crystal?.elements.map(({ element }) => element) ?? [];
 }
 
 customElements.define('ellipsite-settings-panel', SettingsPanel);

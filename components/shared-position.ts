@@ -1,6 +1,5 @@
-import { sharedPositions } from '#src/scene/shared-positions.ts';
-import type { CrystalDossier, SiteDossier } from '#src/store/dossier-types.ts';
-import { formatNumber } from './number-format.ts';
+import type { KnownSite } from '#src/store/engine-queries.ts';
+import { formatNumber } from '#src/table/number-format.ts';
 
 /** An occupancy as people say it: 0.059 → `5.9 %`. */
 export function percent(occupancy: number): string {
@@ -8,8 +7,7 @@ export function percent(occupancy: number): string {
 }
 
 /** `shares its position with Nb1 (5.9 %)`; null for a site that is alone on its position. */
-export function sharingSentence(site: SiteDossier, dossier: CrystalDossier): string | null {
-  const others = sharedPositions(dossier).others.get(site.index) ?? [];
-  if (others.length === 0) return null;
-  return `shares its position with ${others.map(({ label, occupancy }) => `${label} (${percent(occupancy)})`).join(', ')}`;
+export function sharingSentence({ sharing }: KnownSite): string | null {
+  if (sharing.length === 0) return null;
+  return `shares its position with ${sharing.map(({ label, occupancy }) => `${label} (${percent(occupancy)})`).join(', ')}`;
 }

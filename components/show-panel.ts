@@ -1,7 +1,6 @@
 import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
-import { chooseTensors, elementsWithTensors } from '#src/scene/tensor-choice.ts';
 import { availableQuantities, quantityToShow } from '#src/store/state.ts';
 import { numberInput } from './number-input.ts';
 import { StoreElement } from './store-element.ts';
@@ -54,7 +53,7 @@ export class ShowPanel extends StoreElement {
     `,
   ];
 
-  protected override readonly watches = ['derived', 'picture'] as const;
+  protected override readonly watches = ['derived', 'picture', 'scene'] as const;
 
   override render(): TemplateResult {
     const { store } = this;
@@ -127,11 +126,12 @@ export class ShowPanel extends StoreElement {
 
   /** Which elements carry tensors: a tick for each. */
   #elements(quantity: 'shielding' | 'shift' | 'efg'): TemplateResult | typeof nothing {
-    const { derived, picture } = this.store!.state;
-    const dossier = derived?.dossier;
-    const all = dossier ? elementsWithTensors(dossier, quantity) : [];
-    if (!dossier || all.length < 2) return nothing;
-    const shown = chooseTensors(dossier, picture)?.elements ?? all;
+    const { derived, scene } = this.store!.state;
+    const all = (derived?.crystal?.elements ?? [])
+      .filter(({ tensorCounts }) => tensorCounts[quantity] > 0)
+      .map(({ element }) => element);
+    if (all.length < 2) return nothing;
+    const shown = scene?.tensorElements ?? all;
     const change = (element: string, isOn: boolean): void => {
       const next = all.filter((one) => (one === element ? isOn : shown.includes(one)));
       if (next.length === 0) this.#set({ showTensors: false }, 'tensors are hidden');

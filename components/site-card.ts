@@ -1,6 +1,7 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import type { CrystalDossier, EquivalentAtom, Place, SiteDossier } from '#src/store/dossier-types.ts';
+import type { EquivalentAtom, Place } from '#src/store/dossier-types.ts';
+import type { KnownSite } from '#src/store/engine-queries.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
 import { crystalOverview } from './card-crystal.ts';
 import { efgSection } from './card-efg.ts';
@@ -13,7 +14,7 @@ import {
   formatPosition,
   isotopeSymbol,
   symmetrySymbol,
-} from './number-format.ts';
+} from '#src/table/number-format.ts';
 import { sharingSentence } from './shared-position.ts';
 import { siteChip } from './site-chip.ts';
 import { StoreElement } from './store-element.ts';
@@ -33,8 +34,8 @@ export class SiteCard extends StoreElement {
 
   declare sourceLines: readonly SourceLine[];
 
-  protected override readonly watches = ['derived', 'selection'] as const;
-  #site: SiteDossier | null = null;
+  protected override readonly watches = ['derived', 'selection', 'sitesRead'] as const;
+  #site: KnownSite | null = null;
 
   constructor() {
     super();
@@ -42,8 +43,10 @@ export class SiteCard extends StoreElement {
   }
 
   protected override stateChanged(state: WorkbenchState): void {
-    const site = selectedSite(state);
-    if (site === this.#site) return;
+    const { selection } = state;
+    const site = selection && (this.store?.site(selection.siteIndex) ?? null);
+    // the card of before stays until the selected site has come
+    if (site === this.#site || (selection && !site)) return;
     this.#site = site;
     this.sourceLines = [];
     if (site) void this.#fetchLines(site);
@@ -51,10 +54,10 @@ export class SiteCard extends StoreElement {
 
   override render(): TemplateResult {
     const state = this.store?.state;
-    const dossier = state?.derived?.dossier;
+    const crystal = state?.derived?.crystal;
     const site = this.#site;
-    if (!state || !dossier) return html`<h2>Site</h2>`;
-    if (!site) return crystalOverview(dossier);
+    if (!state || !crystal) return html`<h2>Site</h2>`;
+    if (!site) return crystalOverview(crystal);
     const atom = site.equivalents.find(({ id }) => id === state.selection?.atomId) ?? null;
     return html`
       <article aria-label="Site ${site.label}">
@@ -67,13 +70,13 @@ export class SiteCard extends StoreElement {
               </p>`
             : nothing
         }
-        ${facts(site, atom, dossier)}
+        ${facts(site, atom)}
         ${
           !site.shielding && !site.shift && !site.efg
             ? html`<p class="soft">The files hold no tensor for this site.</p>`
             : nothing
         }
-        ${shieldingSection(site, atom, dossier.lattice)} ${efgSection(site, atom, dossier.lattice)}
+        ${shieldingSection(site, atom, crystal.lattice)} ${efgSection(site, atom, crystal.lattice)}
         ${this.#origin()}
       </article>
     `;
@@ -95,7 +98,7 @@ export class SiteCard extends StoreElement {
     </section>`;
   }
 
-  async #fetchLines(site: SiteDossier): Promise<void> {
+  async #fetchLines(site: KnownSite): Promise<void> {
     const places = [site.source, site.shielding?.source, site.efg?.source].filter(
       (place) => place !== undefined,
     );
@@ -113,12 +116,8 @@ export class SiteCard extends StoreElement {
   }
 }
 
-function selectedSite({ derived, selection }: WorkbenchState): SiteDossier | null {
-  return selection ? (derived?.dossier?.sites[selection.siteIndex] ?? null) : null;
-}
-
 /** `²⁷Al, site symmetry 3m, 4 atoms, 2 orientations`. */
-function summary(site: SiteDossier): string {
+function summary(site: KnownSite): string {
   const symmetry =
     site.siteSymmetryOrder === 1
       ? 'general position'
@@ -136,7 +135,7 @@ function positionOf({ fractional, cartesian }: Pick<EquivalentAtom, 'fractional'
   return fractional ? formatPosition(fractional, 5) : `${formatPosition(cartesian, 5)} Å`;
 }
 
-function facts(site: SiteDossier, atom: EquivalentAtom | null, dossier: CrystalDossier): TemplateResult {
+function facts(site: KnownSite, atom: EquivalentAtom | null): TemplateResult {
   const { species, occupancy, disorder, displacement } = site;
   const isMixed = species.length > 1;
   const rows: readonly (readonly [string, string | null])[] = [
@@ -148,7 +147,7 @@ function facts(site: SiteDossier, atom: EquivalentAtom | null, dossier: CrystalD
         ? null
         : species.map(({ element, occupancy: share }) => `${element} ${formatNumber(share, 3)}`).join(', '),
     ],
-    ['mixed', sharingSentence(site, dossier)],
+    ['mixed', sharingSentence(site)],
     ['disorder', disorder ? `assembly ${disorder.assembly ?? '–'}, group ${disorder.group ?? '–'}` : null],
     ['charge', site.charge === null ? null : `${formatNumber(site.charge, 0)} e`],
     [

@@ -1,58 +1,130 @@
-import type { SiteDossier } from '#src/store/dossier-types.ts';
-
 /** A line of the site table: a site, or one of its atoms below it. */
 export interface SiteRow {
   readonly siteIndex: number;
+  /** Position of the site among the rows of sites. */
+  readonly place: number;
   /** Position among the site's equivalents; null for the site's own row. */
   readonly atom: number | null;
 }
 
-/** All lines in order with the height at which each starts; the last entry of `tops` is the total height. */
+/** A site whose atoms are shown, and what comes before it. */
+interface OpenedSite {
+  readonly place: number;
+  readonly atomCount: number;
+  /** Atom rows above its own row. */
+  readonly atomsBefore: number;
+}
+
+/** All lines of the table, told by the order of the sites and the opened ones: nothing here grows with a row. */
 export interface RowList {
-  readonly rows: readonly SiteRow[];
-  readonly tops: Float64Array;
+  /** Site indices in the order of their rows. */
+  readonly order: Int32Array;
+  /** Opened sites by their place. */
+  readonly opened: readonly OpenedSite[];
+  readonly rowCount: number;
+  readonly heightPx: number;
 }
 
 export const siteRowHeight = 32;
 export const atomRowHeight = 50;
 
-/** Lines of the table with the given sites opened. */
-export function listRows(sites: readonly SiteDossier[], opened: ReadonlySet<number>): RowList {
-  const rows: SiteRow[] = [];
-  for (const site of sites) {
-    rows.push({ siteIndex: site.index, atom: null });
-    if (!opened.has(site.index)) continue;
-    site.equivalents.forEach((_, atom) => rows.push({ siteIndex: site.index, atom }));
-  }
-  const tops = new Float64Array(rows.length + 1);
-  rows.forEach((row, i) => {
-    tops[i + 1] = tops[i]! + (row.atom === null ? siteRowHeight : atomRowHeight);
-  });
-  return { rows, tops };
+const placesOf = new WeakMap<Int32Array, Int32Array>();
+
+/** Places by site index, −1 for a site without a row; made once for each order. */
+function places(order: Int32Array): Int32Array {
+  const known = placesOf.get(order);
+  if (known) return known;
+  const size = order.reduce((most, index) => Math.max(most, index + 1), 0);
+  const made = new Int32Array(size).fill(-1);
+  order.forEach((index, place) => (made[index] = place));
+  placesOf.set(order, made);
+  return made;
 }
 
-/** Index of the line at a height, by binary search; the last one beyond the end. */
-export function rowAt({ rows, tops }: RowList, height: number): number {
-  let low = 0;
-  let high = rows.length - 1;
+/** Lines of the table with some sites opened, each by its index with the number of its atoms. */
+export function listRows(order: Int32Array, opened: ReadonlyMap<number, number>): RowList {
+  const byPlace = [...opened]
+    .map(([siteIndex, atomCount]) => ({ place: places(order)[siteIndex] ?? -1, atomCount }))
+    .filter(({ place }) => place >= 0)
+    .sort((a, b) => a.place - b.place);
+  let atoms = 0;
+  const list = byPlace.map(({ place, atomCount }): OpenedSite => {
+    const site = { place, atomCount, atomsBefore: atoms };
+    atoms += atomCount;
+    return site;
+  });
+  return {
+    order,
+    opened: list,
+    rowCount: order.length + atoms,
+    heightPx: siteRowHeight * order.length + atomRowHeight * atoms,
+  };
+}
+
+/** The last opened site for which the test holds, by binary search; the test must hold up to some site and no further. */
+function lastOpened({ opened }: RowList, holds: (site: OpenedSite) => boolean): OpenedSite | null {
+  let low = -1;
+  let high = opened.length - 1;
   while (low < high) {
     const middle = (low + high + 1) >> 1;
-    if (tops[middle]! <= height) low = middle;
+    if (holds(opened[middle]!)) low = middle;
     else high = middle - 1;
   }
-  return Math.max(0, low);
+  return opened[low] ?? null;
+}
+
+/** The line of an index from 0; null outside. */
+export function rowOf(list: RowList, index: number): SiteRow | null {
+  if (index < 0 || index >= list.rowCount) return null;
+  const above = lastOpened(list, ({ place, atomsBefore }) => place + atomsBefore < index);
+  const after = above ? index - (above.place + above.atomsBefore) : 0;
+  if (above && after <= above.atomCount)
+    return { siteIndex: list.order[above.place]!, place: above.place, atom: after - 1 };
+  const place = above ? above.place + after - above.atomCount : index;
+  return { siteIndex: list.order[place]!, place, atom: null };
+}
+
+/** Height at which a line starts, px. */
+export function topOf(list: RowList, index: number): number {
+  const row = rowOf(list, index);
+  if (!row) return list.heightPx;
+  return siteRowHeight * sitesAbove(row) + atomRowHeight * (index - sitesAbove(row));
+}
+
+function sitesAbove({ place, atom }: SiteRow): number {
+  return atom === null ? place : place + 1;
+}
+
+/** Index of the line at a height; the first above all, the last one beyond the end. */
+export function rowAt(list: RowList, height: number): number {
+  const start = ({ place, atomsBefore }: OpenedSite): number =>
+    siteRowHeight * (place + 1) + atomRowHeight * atomsBefore;
+  const above = lastOpened(list, (site) => start(site) <= height);
+  const last = Math.max(0, list.rowCount - 1);
+  if (!above) return Math.min(last, Math.max(0, Math.floor(height / siteRowHeight)));
+  const first = above.place + above.atomsBefore + 1;
+  const atoms = Math.floor((height - start(above)) / atomRowHeight);
+  if (atoms < above.atomCount) return Math.min(last, first + atoms);
+  const below = height - start(above) - atomRowHeight * above.atomCount;
+  return Math.min(last, first + above.atomCount + Math.floor(below / siteRowHeight));
 }
 
 /** First and last line (exclusive) to draw for a scrolled window, with some to spare on both sides. */
 export function visibleRows(list: RowList, scrollTop: number, height: number): readonly [number, number] {
-  if (list.rows.length === 0) return [0, 0];
+  if (list.rowCount === 0) return [0, 0];
   const spare = 8;
   const first = Math.max(0, rowAt(list, scrollTop) - spare);
-  const last = Math.min(list.rows.length, rowAt(list, scrollTop + height) + 1 + spare);
+  const last = Math.min(list.rowCount, rowAt(list, scrollTop + height) + 1 + spare);
   return [first, last];
 }
 
 /** Index of the line of a site or of one of its atoms; −1 when the site is closed or not there. */
-export function indexOfRow({ rows }: RowList, siteIndex: number, atom: number | null): number {
-  return rows.findIndex((row) => row.siteIndex === siteIndex && row.atom === atom);
+export function indexOfRow(list: RowList, siteIndex: number, atom: number | null): number {
+  const place = places(list.order)[siteIndex] ?? -1;
+  if (place < 0) return -1;
+  const above = lastOpened(list, (site) => site.place <= place);
+  const isOpen = above?.place === place;
+  if (atom !== null) return isOpen && atom < above.atomCount ? place + above.atomsBefore + 1 + atom : -1;
+  if (!above) return place;
+  return place + above.atomsBefore + (isOpen ? 0 : above.atomCount);
 }

@@ -1,43 +1,64 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import type { ChosenTensors } from '#src/scene/tensor-choice.ts';
-import { chooseTensors, ellipsoidColour } from '#src/scene/tensor-choice.ts';
 import { atomAxes } from '#src/store/axes.ts';
-import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/store/dossier-types.ts';
+import type { CrystalSummary } from '#src/store/crystal-summary.ts';
+import { Cancelled } from '#src/store/engine-client.ts';
+import type { EquivalentAtom } from '#src/store/dossier-types.ts';
+import { NewestOnly } from '#src/store/newest-only.ts';
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { quantityToShow } from '#src/store/state.ts';
+import {
+  counted,
+  formatOperation,
+  formatPosition,
+  formatTriple,
+  raiseIsotopes,
+} from '#src/table/number-format.ts';
+import type { SiteColumn } from '#src/table/site-column.ts';
+import { columnsOf, defaultColumns, headingWords } from '#src/table/site-columns.ts';
+import type { TablePage, TableRequest, TableRow } from '#src/table/table-settings.ts';
 import { axisNames } from './axis-names.ts';
-import { counted, formatOperation, formatPosition, formatTriple, raiseIsotopes } from './number-format.ts';
+import { gridOf } from './column-widths.ts';
+import { headingOf } from './convention-symbol.ts';
+import { RowPages, pageRows } from './row-pages.ts';
 import { siteChip, valueSwatch } from './site-chip.ts';
-import type { SiteColumn } from './site-columns.ts';
-import { columnsFor, gridOf } from './site-columns.ts';
 import type { RowList, SiteRow } from './site-rows.ts';
-import { indexOfRow, listRows, siteRowHeight, visibleRows } from './site-rows.ts';
+import { indexOfRow, listRows, rowAt, rowOf, siteRowHeight, topOf, visibleRows } from './site-rows.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
 import { tableKeys } from './table-keys.ts';
 import { tableStyles } from './table-styles.ts';
 
-const empty: RowList = { rows: [], tops: new Float64Array(1) };
+const empty: RowList = listRows(new Int32Array(0), new Map());
 
 /**
  * One row a site, opening to its equivalent atoms: a tree grid with one focus stop, whose active row is named by
- * `aria-activedescendant`. Only rows near the visible part exist, so thousands stay fluid. Moving the active row
- * moves the selection.
+ * `aria-activedescendant`. Only rows near the visible part exist and are fetched, so hundreds of thousands stay fluid.
+ * Moving the active row moves the selection.
  */
 export class SiteTable extends StoreElement {
   static override styles = [shared, tableStyles];
 
-  protected override readonly watches = ['derived', 'selection', 'hover', 'picture'] as const;
+  protected override readonly watches = [
+    'derived',
+    'selection',
+    'hover',
+    'picture',
+    'scene',
+    'sitesRead',
+    'table',
+  ] as const;
 
-  #dossier: CrystalDossier | null = null;
+  #crystal: CrystalSummary | null = null;
   #columns: readonly SiteColumn[] = [];
-  #opened: ReadonlySet<number> = new Set();
+  /** Opened sites with the number of their atoms. */
+  #opened: ReadonlyMap<number, number> = new Map();
   #list: RowList = empty;
+  #pages: RowPages | null = null;
+  #fault: string | null = null;
   #active = 0;
-  /** What the picture colours, for the swatches. */
-  #coloured: ChosenTensors | null = null;
   #resize: ResizeObserver | null = null;
+  readonly #loads = new NewestOnly((request: TableRequest) => this.#ask(request));
 
   override connectedCallback(): void {
     super.connectedCallback();
@@ -52,34 +73,64 @@ export class SiteTable extends StoreElement {
   }
 
   protected override stateChanged(state: WorkbenchState, before: WorkbenchState | null): void {
-    const dossier = state.derived?.dossier ?? null;
-    if (dossier !== this.#dossier) {
-      this.#dossier = dossier;
-      this.#columns = dossier ? columnsFor(dossier) : [];
-      this.#opened = new Set();
-      this.#relist();
+    const crystal = state.derived?.crystal ?? null;
+    const isNew = crystal !== this.#crystal;
+    if (isNew) {
+      this.#crystal = crystal;
+      this.#opened = new Map();
     }
-    if (state.derived !== before?.derived || state.picture !== before?.picture)
-      this.#coloured = dossier && chooseTensors(dossier, state.picture);
+    if (isNew || state.table !== before?.table) void this.#load(state);
     if (state.selection !== before?.selection) this.#follow(state.selection);
   }
 
+  /** Fetches the order and the rows in view; what is shown stays until they have come. */
+  async #load({ derived, table }: WorkbenchState): Promise<void> {
+    const crystal = derived?.crystal;
+    if (!crystal) return;
+    const { sort, filter } = table;
+    const columns = columnsOf(table.columns ?? defaultColumns(crystal));
+    const keys = columns.map(({ key }) => key);
+    const first = pageRows * Math.floor(this.#firstPlace() / pageRows);
+    const request = { columns: keys, sort, filter };
+    try {
+      const page = await this.#loads.ask({ ...request, first, count: pageRows, withOrder: true });
+      if (this.#crystal !== crystal || !page.order) return;
+      this.#fault = null;
+      this.#columns = columns;
+      this.#pages = new RowPages(
+        (start, count) => this.#ask({ ...request, first: start, count, withOrder: false }),
+        () => this.requestUpdate(),
+      );
+      this.#pages.take(page);
+      this.#relist(page.order);
+    } catch (error) {
+      if (error instanceof Cancelled) return;
+      this.#fault = error instanceof Error ? error.message : String(error);
+    }
+    this.requestUpdate();
+  }
+
+  #ask(request: TableRequest): Promise<TablePage> {
+    return this.store ? this.store.ask('table', request) : Promise.reject(new Cancelled('no store'));
+  }
+
   override render(): TemplateResult {
-    const dossier = this.#dossier;
-    if (!dossier) return html`<h2>Sites</h2>`;
-    const { rows, tops } = this.#list;
-    const { tracks, leastPx } = gridOf(this.#columns);
+    const crystal = this.#crystal;
+    if (!crystal) return html`<h2>Sites</h2>`;
+    const list = this.#list;
+    const { tracks, leastPx } = gridOf(this.#columns, crystal.hasForeignCouplings);
     const scroller = this.#scroller;
-    const [first, last] = visibleRows(this.#list, scroller?.scrollTop ?? 0, scroller?.clientHeight ?? 600);
-    const active = rows.length > 0 ? `row-${this.#active}` : nothing;
+    const [first, last] = visibleRows(list, scroller?.scrollTop ?? 0, scroller?.clientHeight ?? 600);
+    const active = list.rowCount > 0 ? `row-${this.#active}` : nothing;
     return html`
-      <h2 id="title">${headline(dossier)}</h2>
+      <h2 id="title">${headline(crystal)}</h2>
+      ${this.#fault === null ? nothing : html`<p role="alert">The rows could not be read: ${this.#fault}</p>`}
       <div
         class="scroller"
         role="treegrid"
         tabindex="0"
         aria-labelledby="title"
-        aria-rowcount=${rows.length + 1}
+        aria-rowcount=${list.rowCount + 1}
         aria-colcount=${this.#columns.length}
         aria-activedescendant=${active}
         .style=${`--columns: ${tracks}; --least: ${leastPx}px`}
@@ -88,20 +139,20 @@ export class SiteTable extends StoreElement {
         @pointerleave=${() => this.store?.hover(null)}
       >
         <div class="row head" role="row" aria-rowindex="1">
-          ${this.#columns.map(
-            (column) =>
-              html`<div
-                role="columnheader"
-                class=${column.numeric ? 'number' : ''}
-                title=${column.words}
-                aria-label=${column.words}
-              >
-                ${column.heading}
-              </div>`,
-          )}
+          ${this.#columns.map((column) => {
+            const words = headingWords(column);
+            return html`<div
+              role="columnheader"
+              class=${column.numeric ? 'number' : ''}
+              title=${words}
+              aria-label=${words}
+            >
+              ${headingOf(column)}
+            </div>`;
+          })}
         </div>
-        <div class="body" role="rowgroup" .style=${`height: ${tops[rows.length]}px`}>
-          ${rows.slice(first, last).map((row, i) => this.#row(row, first + i))}
+        <div class="body" role="rowgroup" .style=${`height: ${list.heightPx}px`}>
+          ${Array.from({ length: last - first }, (_, i) => this.#row(first + i))}
         </div>
       </div>
     `;
@@ -111,17 +162,22 @@ export class SiteTable extends StoreElement {
     return this.renderRoot.querySelector<HTMLElement>('.scroller');
   }
 
-  #row(row: SiteRow, index: number): TemplateResult | typeof nothing {
-    const site = this.#dossier?.sites[row.siteIndex];
-    const atom = row.atom === null ? null : site?.equivalents[row.atom];
-    if (!site || atom === undefined) return nothing;
+  /** Place of the first row in view. */
+  #firstPlace(): number {
+    return rowOf(this.#list, rowAt(this.#list, this.#scroller?.scrollTop ?? 0))?.place ?? 0;
+  }
+
+  #row(index: number): TemplateResult | typeof nothing {
+    const row = rowOf(this.#list, index);
+    if (!row) return nothing;
     const { selection, hover } = this.store!.state;
-    const target: Selection = { siteIndex: row.siteIndex, atomId: atom?.id ?? null };
+    const target = this.#selectionOf(row);
+    const isSelected = target !== null && matches(selection, target);
     const classes = [
       'row',
-      atom ? 'atom' : 'site',
-      matches(selection, target) ? 'selected' : '',
-      matches(hover, target) ? 'hovered' : '',
+      row.atom === null ? 'site' : 'atom',
+      isSelected ? 'selected' : '',
+      target && matches(hover, target) ? 'hovered' : '',
       index === this.#active ? 'active' : '',
     ];
     return html`<div
@@ -129,59 +185,84 @@ export class SiteTable extends StoreElement {
       class=${classes.join(' ')}
       role="row"
       aria-rowindex=${index + 2}
-      aria-level=${atom ? 2 : 1}
-      aria-selected=${matches(selection, target) ? 'true' : 'false'}
-      aria-expanded=${atom ? nothing : String(this.#opened.has(site.index))}
-      .style=${`top: ${this.#list.tops[index]}px`}
+      aria-level=${row.atom === null ? 1 : 2}
+      aria-selected=${isSelected ? 'true' : 'false'}
+      aria-expanded=${row.atom === null ? String(this.#opened.has(row.siteIndex)) : nothing}
+      .style=${`top: ${topOf(this.#list, index)}px`}
       @click=${() => this.#choose(index)}
-      @dblclick=${() => this.#toggle(site.index, !this.#opened.has(site.index))}
-      @pointerenter=${() => this.store?.hover(target)}
+      @dblclick=${() => this.#toggle(row.siteIndex, row.place, !this.#opened.has(row.siteIndex))}
+      @pointerenter=${() => target && this.store?.hover(target)}
     >
-      ${atom ? this.#atomCells(site, atom) : this.#siteCells(site)}
+      ${row.atom === null ? this.#siteCells(row) : this.#atomCells(row.siteIndex, row.atom)}
     </div>`;
   }
 
-  #siteCells(site: SiteDossier): TemplateResult {
-    const isOpen = this.#opened.has(site.index);
+  /** What a row selects; null while the atom of its row is on its way. */
+  #selectionOf({ siteIndex, atom }: SiteRow): Selection | null {
+    if (atom === null) return { siteIndex, atomId: null };
+    const atomId = this.store?.site(siteIndex)?.equivalents[atom]?.id;
+    return atomId === undefined ? null : { siteIndex, atomId };
+  }
+
+  #siteCells({ siteIndex, place }: SiteRow): TemplateResult {
+    const row = this.#pages?.row(place) ?? null;
+    if (!row) return html`<div role="gridcell" class="name soft">…</div>`;
+    const isOpen = this.#opened.has(siteIndex);
     const toggle = (event: Event): void => {
       event.stopPropagation();
-      this.#toggle(site.index, !isOpen);
+      this.#toggle(siteIndex, place, !isOpen);
     };
     return html`${this.#columns.map((column, i) => {
-      const text = column.text(site);
-      const isMissing = text === 'undefined' || text === '–';
-      const reason = isMissing ? column.because?.(site) : undefined;
-      const because = reason && raiseIsotopes(reason);
-      if (i === 0) {
-        return html`<div role="gridcell" class="name">
-          <button class="opener" tabindex="-1" aria-hidden="true" @click=${toggle}>
-            ${isOpen ? '▾' : '▸'}
-          </button>
-          ${siteChip(site.index)}<span class="label" title=${text}>${text}</span>
-        </div>`;
-      }
-      const isColoured = column.coloured !== undefined && column.coloured === this.#coloured?.quantity;
-      const colour = isColoured ? ellipsoidColour(this.#coloured, site.index) : null;
-      return html`<div
-        role="gridcell"
-        class="${column.numeric ? 'number' : 'text'} ${isMissing ? 'undefined' : ''}"
-        title=${because ?? nothing}
-      >
-        ${colour ? valueSwatch(colour) : nothing}${text}${because ? html`<span class="hidden-but-spoken">: ${because}</span>` : nothing}
+      if (i > 0) return this.#cell(row, column, i);
+      return html`<div role="gridcell" class="name">
+        <button class="opener" tabindex="-1" aria-hidden="true" @click=${toggle}>
+          ${isOpen ? '▾' : '▸'}
+        </button>
+        ${siteChip(siteIndex)}<span class="label" title=${row.cells[0] ?? ''}>${row.cells[0]}</span>
       </div>`;
     })}`;
   }
 
-  #atomCells(site: SiteDossier, atom: EquivalentAtom): TemplateResult {
+  #cell(row: TableRow, column: SiteColumn, place: number): TemplateResult {
+    const text = row.cells[place] ?? '';
+    const reason = row.because[place];
+    const because = reason === undefined ? undefined : raiseIsotopes(reason);
+    const isMissing = text === 'undefined' || text === '–';
+    const colour = this.#colourOf(row.siteIndex, column);
+    return html`<div
+      role="gridcell"
+      class="${column.numeric ? 'number' : 'text'} ${isMissing ? 'undefined' : ''}"
+      title=${because ?? nothing}
+    >
+      ${colour ? valueSwatch(colour) : nothing}${text}${because ? html`<span class="hidden-but-spoken">: ${because}</span>` : nothing}
+    </div>`;
+  }
+
+  /** The colour of the site's tensors in the picture, beside the number that colour says. */
+  #colourOf(siteIndex: number, { key }: SiteColumn): readonly [number, number, number] | null {
+    const scene = this.store?.state.scene;
+    const quantity = scene?.scale?.quantity;
+    if (!quantity || !scene.siteColours) return null;
+    if (key !== (quantity === 'efg' ? 'efg-couplingMHz' : `${quantity}-isotropic`)) return null;
+    const [r = 0, g = 0, b = 0, isColoured = 0] = scene.siteColours.subarray(
+      4 * siteIndex,
+      4 * siteIndex + 4,
+    );
+    return isColoured ? [r, g, b] : null;
+  }
+
+  #atomCells(siteIndex: number, place: number): TemplateResult {
+    const site = this.store!.site(siteIndex);
+    const atom = site?.equivalents[place];
+    if (!site || !atom) return html`<div role="gridcell" class="atom-cell soft">…</div>`;
     const { derived, picture } = this.store!.state;
     const quantity = quantityToShow(picture.quantity, derived);
     const axes = quantity && atomAxes(site, atom, quantity);
-    const position = atom.fractional
-      ? formatPosition(atom.fractional, 5)
-      : `${formatPosition(atom.cartesian, 5)} Å`;
     const names = quantity ? axisNames(quantity) : [];
     return html`<div role="gridcell" class="atom-cell" aria-colspan=${this.#columns.length}>
-      <div><span class="operation">${formatOperation(atom.operation)}</span> <span>at ${position}</span></div>
+      <div>
+        <span class="operation">${formatOperation(atom.operation)}</span> <span>at ${positionOf(atom)}</span>
+      </div>
       <div class="axes">
         ${axes?.map(
           (axis, i) =>
@@ -193,31 +274,33 @@ export class SiteTable extends StoreElement {
     </div>`;
   }
 
-  #relist(): void {
-    this.#list = this.#dossier ? listRows(this.#dossier.sites, this.#opened) : empty;
-    this.#active = Math.max(0, Math.min(this.#active, this.#list.rows.length - 1));
+  #relist(order: Int32Array): void {
+    const active = rowOf(this.#list, this.#active);
+    this.#list = listRows(order, this.#opened);
+    const kept = active ? indexOfRow(this.#list, active.siteIndex, active.atom) : -1;
+    this.#active = Math.max(0, Math.min(kept >= 0 ? kept : this.#active, this.#list.rowCount - 1));
   }
 
-  #toggle(siteIndex: number, open: boolean): void {
-    const opened = new Set(this.#opened);
-    if (open) opened.add(siteIndex);
+  #toggle(siteIndex: number, place: number, open: boolean): void {
+    const opened = new Map(this.#opened);
+    const atomCount = this.#pages?.row(place)?.atomCount;
+    if (open && atomCount !== undefined) opened.set(siteIndex, atomCount);
     else opened.delete(siteIndex);
     this.#opened = opened;
-    const row = this.#list.rows[this.#active];
-    this.#relist();
+    const row = rowOf(this.#list, this.#active);
+    this.#relist(this.#list.order);
     const kept = row ? indexOfRow(this.#list, row.siteIndex, row.atom) : -1;
     this.#active = kept >= 0 ? kept : Math.max(0, indexOfRow(this.#list, siteIndex, null));
     this.requestUpdate();
   }
 
   #choose(index: number): void {
-    const row = this.#list.rows[index];
-    const site = row && this.#dossier?.sites[row.siteIndex];
-    if (!site) return;
+    const row = rowOf(this.#list, index);
+    if (!row) return;
     this.#active = index;
     this.#reveal(index);
-    const atomId = row.atom === null ? null : (site.equivalents[row.atom]?.id ?? null);
-    this.store?.select({ siteIndex: row.siteIndex, atomId });
+    const target = this.#selectionOf(row);
+    if (target) this.store?.select(target);
     this.requestUpdate();
   }
 
@@ -227,7 +310,7 @@ export class SiteTable extends StoreElement {
     event.preventDefault();
     if (action.kind === 'go') this.#choose(action.index);
     else if (action.kind === 'clear') this.store?.select(null);
-    else this.#toggle(action.siteIndex, action.open);
+    else this.#toggle(action.siteIndex, rowOf(this.#list, this.#active)?.place ?? 0, action.open);
   };
 
   get #pageRows(): number {
@@ -237,10 +320,11 @@ export class SiteTable extends StoreElement {
   /** Brings the selected row to the active one when the selection came from elsewhere. */
   #follow(selection: Selection | null): void {
     if (!selection) return;
-    const site = this.#dossier?.sites[selection.siteIndex];
-    const atom = site?.equivalents.findIndex(({ id }) => id === selection.atomId) ?? -1;
-    const ofAtom = atom >= 0 ? indexOfRow(this.#list, selection.siteIndex, atom) : -1;
-    const index = ofAtom >= 0 ? ofAtom : indexOfRow(this.#list, selection.siteIndex, null);
+    const { siteIndex, atomId } = selection;
+    const atoms = this.#opened.has(siteIndex) ? (this.store?.site(siteIndex)?.equivalents ?? []) : [];
+    const atom = atoms.findIndex(({ id }) => id === atomId);
+    const ofAtom = atom >= 0 ? indexOfRow(this.#list, siteIndex, atom) : -1;
+    const index = ofAtom >= 0 ? ofAtom : indexOfRow(this.#list, siteIndex, null);
     if (index < 0 || index === this.#active) return;
     this.#active = index;
     this.#reveal(index);
@@ -250,8 +334,8 @@ export class SiteTable extends StoreElement {
   #reveal(index: number): void {
     const scroller = this.#scroller;
     if (!scroller) return;
-    const top = this.#list.tops[index]!;
-    const bottom = this.#list.tops[index + 1]! + siteRowHeight;
+    const top = topOf(this.#list, index);
+    const bottom = topOf(this.#list, index + 1) + siteRowHeight;
     if (top < scroller.scrollTop) scroller.scrollTop = top;
     else if (bottom > scroller.scrollTop + scroller.clientHeight)
       scroller.scrollTop = bottom - scroller.clientHeight;
@@ -259,8 +343,7 @@ export class SiteTable extends StoreElement {
 
   /** Tells the layout how tall the whole table would be, so that a short one leaves no gap. */
   protected override updated(): void {
-    const { rows, tops } = this.#list;
-    this.style.setProperty('--content-height', `${tops[rows.length]! + siteRowHeight + 62}px`);
+    this.style.setProperty('--content-height', `${this.#list.heightPx + siteRowHeight + 62}px`);
   }
 }
 
@@ -270,10 +353,14 @@ function matches(selection: Selection | null, row: Selection): boolean {
   return row.atomId === null || selection.atomId === row.atomId;
 }
 
-function headline(dossier: CrystalDossier): string {
-  const sites = counted(dossier.sites.length, 'site');
-  const atoms = `${counted(dossier.atomsInCell, 'atom')}${dossier.lattice ? ' in the cell' : ''}`;
-  return `Sites · ${[sites, atoms, dossier.spaceGroup].filter(Boolean).join(' · ')}`;
+function positionOf({ fractional, cartesian }: EquivalentAtom): string {
+  return fractional ? formatPosition(fractional, 5) : `${formatPosition(cartesian, 5)} Å`;
+}
+
+function headline(crystal: CrystalSummary): string {
+  const sites = counted(crystal.siteCount, 'site');
+  const atoms = `${counted(crystal.atomsInCell, 'atom')}${crystal.lattice ? ' in the cell' : ''}`;
+  return `Sites · ${[sites, atoms, crystal.spaceGroup].filter(Boolean).join(' · ')}`;
 }
 
 customElements.define('ellipsite-site-table', SiteTable);

@@ -2,7 +2,7 @@ import { css, html } from 'lit';
 import type { PropertyValues, TemplateResult } from 'lit';
 import type { LinePage } from '#src/store/engine-protocol.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
-import { formatCount } from './number-format.ts';
+import { formatCount } from '#src/table/number-format.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
 

@@ -1,5 +1,5 @@
 import type { RowList } from './site-rows.ts';
-import { indexOfRow } from './site-rows.ts';
+import { indexOfRow, rowOf } from './site-rows.ts';
 
 /** What a key does in the site table. */
 export type TableAction =
@@ -15,12 +15,12 @@ export function tableKeys(
   { key, ctrlKey, metaKey, altKey }: Pick<KeyboardEvent, 'key' | 'ctrlKey' | 'metaKey' | 'altKey'>,
   list: RowList,
   active: number,
-  opened: ReadonlySet<number>,
+  opened: ReadonlyMap<number, number>,
   pageRows: number,
 ): TableAction | null {
-  const row = list.rows[active];
+  const row = rowOf(list, active);
   if (!row || ctrlKey || metaKey || altKey) return null;
-  const last = list.rows.length - 1;
+  const last = list.rowCount - 1;
   const go = (index: number): TableAction => ({ kind: 'go', index: Math.max(0, Math.min(last, index)) });
   const { siteIndex } = row;
   const isOpen = opened.has(siteIndex);

@@ -1,8 +1,8 @@
 import { html, nothing } from 'lit';
 import type { PropertyValues, TemplateResult } from 'lit';
 import type { WebGLProbe } from '#src/render/probe-webgl.ts';
-import type { WorkbenchState } from '#src/store/state.ts';
-import { announcement } from './announcement.ts';
+import type { Selection, WorkbenchState } from '#src/store/state.ts';
+import { announcement, selectionSentence } from './announcement.ts';
 import './crystal-view.ts';
 import './drop-zone.ts';
 import './page-header.ts';
@@ -27,9 +27,18 @@ export class Workbench extends StoreElement {
   /** How the browser can draw; null lets the crystal view find out. */
   declare probe: WebGLProbe | null;
 
-  protected override readonly watches = ['theme', 'shownPlace', 'selection', 'derived', 'refused'] as const;
+  protected override readonly watches = [
+    'theme',
+    'shownPlace',
+    'selection',
+    'derived',
+    'refused',
+    'sitesRead',
+  ] as const;
   #unwatchTheme: (() => void) | null = null;
   #spoken = '';
+  /** A selection that is spoken once its site has come. */
+  #unspoken: Selection | null = null;
   /** The problems were opened by a refused file, not by the user: they go when the refusal goes. */
   #isOwnOpening = false;
   /** What had the focus when a drawer was opened; it gets it back. */
@@ -61,7 +70,18 @@ export class Workbench extends StoreElement {
     }
     if (!state.refused && before?.refused && this.#isOwnOpening && this.panel === 'problems')
       this.panel = null;
+    this.#speak(state, before);
+  }
+
+  #speak(state: WorkbenchState, before: WorkbenchState | null): void {
+    const { selection } = state;
+    const isNew = selection !== before?.selection && state.derived === before?.derived;
+    if (isNew || !selection) this.#unspoken = selection;
     this.#spoken = announcement(state, before) ?? this.#spoken;
+    const site = this.#unspoken && this.store?.site(this.#unspoken.siteIndex);
+    if (!this.#unspoken || !site) return;
+    this.#spoken = selectionSentence(this.#unspoken, site);
+    this.#unspoken = null;
   }
 
   override render(): TemplateResult {

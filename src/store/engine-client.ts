@@ -1,19 +1,24 @@
 import type { ReportProgress } from '#src/base/progress.ts';
-import { joined } from './dossier-parts.ts';
 import type {
   CaseInput,
   DerivedCase,
-  DossierPart,
   EngineReply,
   EngineRequest,
   LinePage,
   SourceFile,
 } from './engine-protocol.ts';
+import type { Queries, Query, QueryAnswer, QueryKind } from './engine-queries.ts';
 
 /** What the store needs of an engine; the worker client is one, tests bring their own. */
 export interface EngineClient {
   /** Derives a case. A derivation still running is given up for the new one. */
   derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase>;
+  /** Asks about the crystal of a derived case: sites, rows of the table, a picture. */
+  ask<Kind extends QueryKind>(
+    derived: DerivedCase,
+    kind: Kind,
+    ask: Queries[Kind]['ask'],
+  ): Promise<Queries[Kind]['answer']>;
   lines(source: SourceFile, first: number, count: number): Promise<LinePage>;
   /** Stops the running derivation, whose promise rejects with `Cancelled`. */
   cancel(): void;
@@ -27,14 +32,12 @@ export interface WorkerLike {
   onerror: ((event: { message?: string }) => void) | null;
 }
 
-/** Rejection of a derivation that was cancelled or overtaken by a newer one: nothing to show. */
+/** Rejection of what was cancelled or overtaken by a newer request: nothing to show. */
 export class Cancelled extends Error {}
 
 interface Pending {
   readonly request: EngineRequest;
   readonly report: ReportProgress;
-  /** Of a large dossier, as they came. */
-  readonly parts: DossierPart[];
   readonly settle: (reply: EngineReply) => void;
   readonly reject: (reason: Error) => void;
 }
@@ -46,6 +49,8 @@ interface Pending {
 class WorkerEngineClient implements EngineClient {
   readonly #start: () => WorkerLike;
   readonly #pending = new Map<number, Pending>();
+  /** What a case was derived from, as long as someone holds it: a worker started afresh derives it again. */
+  readonly #inputs = new WeakMap<DerivedCase, CaseInput>();
   #worker: WorkerLike | null = null;
   #nextId = 1;
 
@@ -53,16 +58,37 @@ class WorkerEngineClient implements EngineClient {
     this.#start = start;
   }
 
-  derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase> {
+  async derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase> {
     this.cancel();
-    return this.#ask({ id: this.#nextId++, kind: 'derive', input }, report, (reply, parts) =>
-      reply.kind === 'derived' ? joined(parts, reply.result) : null,
+    const derived = await this.#request({ id: this.#nextId++, kind: 'derive', input }, report, (reply) =>
+      reply.kind === 'derived' ? reply.result : null,
     );
+    this.#inputs.set(derived, input);
+    return derived;
+  }
+
+  ask<Kind extends QueryKind>(
+    derived: DerivedCase,
+    kind: Kind,
+    ask: Queries[Kind]['ask'],
+  ): Promise<Queries[Kind]['answer']> {
+    const input = this.#inputs.get(derived);
+    if (!input) return Promise.reject(new RangeError('this case is not of this engine'));
+    const query = { kind, ask } as Query;
+    const request = {
+      id: this.#nextId++,
+      kind: 'query',
+      derivation: derived.derivation,
+      input,
+      query,
+    } as const;
+    const take = (reply: EngineReply): QueryAnswer | null => (reply.kind === 'answer' ? reply.answer : null);
+    return this.#request(request, () => undefined, take) as Promise<Queries[Kind]['answer']>;
   }
 
   lines(source: SourceFile, first: number, count: number): Promise<LinePage> {
     const request: EngineRequest = { id: this.#nextId++, kind: 'lines', source, first, count };
-    return this.#ask(
+    return this.#request(
       request,
       () => undefined,
       (reply) => (reply.kind === 'lines' ? reply.page : null),
@@ -81,19 +107,18 @@ class WorkerEngineClient implements EngineClient {
     for (const { request } of this.#pending.values()) this.#running().postMessage(request);
   }
 
-  #ask<Result>(
+  #request<Result>(
     request: EngineRequest,
     report: ReportProgress,
-    take: (reply: EngineReply, parts: readonly DossierPart[]) => Result | null,
+    take: (reply: EngineReply) => Result | null,
   ): Promise<Result> {
     return new Promise<Result>((resolve, reject) => {
-      const parts: DossierPart[] = [];
       const settle = (reply: EngineReply): void => {
-        const result = take(reply, parts);
+        const result = take(reply);
         if (result !== null) resolve(result);
         else reject(new Error(reply.kind === 'failed' ? reply.message : `unexpected ${reply.kind}`));
       };
-      this.#pending.set(request.id, { request, report, parts, settle, reject });
+      this.#pending.set(request.id, { request, report, settle, reject });
       this.#running().postMessage(request);
     });
   }
@@ -112,10 +137,6 @@ class WorkerEngineClient implements EngineClient {
     if (!pending) return;
     if (reply.kind === 'progress') {
       pending.report(reply.share, reply.stage);
-      return;
-    }
-    if (reply.kind === 'part') {
-      pending.parts.push(reply.part);
       return;
     }
     this.#pending.delete(reply.id);

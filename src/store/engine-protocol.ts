@@ -1,7 +1,9 @@
 import type { Problem } from '#src/base/problem.ts';
 import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
-import type { CrystalDossier, DossierSettings } from '#src/dossier/dossier.ts';
+import type { DossierSettings } from '#src/dossier/dossier.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
+import type { CrystalSummary } from './crystal-summary.ts';
+import type { Query, QueryAnswer } from './engine-queries.ts';
 
 /** One file the user gave. The blob holds the bytes as they were; it crosses to the worker without a copy. */
 export interface SourceFile {
@@ -64,14 +66,16 @@ export interface ProposalSummary {
   readonly reason: string;
 }
 
-/** What the engine makes of a case. `dossier` is null when the files hold no structure. */
+/** What the engine makes of a case. `crystal` is null when the files hold no structure. */
 export interface DerivedCase {
+  /** Under this number the crystal's sites, rows and pictures are asked for. */
+  readonly derivation: number;
   readonly sources: readonly SourceSummary[];
   readonly structures: readonly StructureSummary[];
   readonly tensors: readonly TensorSummary[];
   readonly proposals: readonly ProposalSummary[];
   readonly chosen: StructureChoice | null;
-  readonly dossier: CrystalDossier | null;
+  readonly crystal: CrystalSummary | null;
   readonly problems: readonly Problem[];
 }
 
@@ -84,11 +88,16 @@ export interface LinePage {
   readonly total: number;
 }
 
-/** Some sites and bonds of a large dossier, sent ahead of it: taking all of them in one message would block the page. */
-export type DossierPart = Pick<CrystalDossier, 'sites' | 'bonds'>;
-
 export type EngineRequest =
   | { readonly id: number; readonly kind: 'derive'; readonly input: CaseInput }
+  | {
+      readonly id: number;
+      readonly kind: 'query';
+      readonly derivation: number;
+      /** What the derivation was made from, for an engine that was started afresh since. */
+      readonly input: CaseInput;
+      readonly query: Query;
+    }
   | {
       readonly id: number;
       readonly kind: 'lines';
@@ -99,7 +108,7 @@ export type EngineRequest =
 
 export type EngineReply =
   | { readonly id: number; readonly kind: 'progress'; readonly share: number; readonly stage: string }
-  | { readonly id: number; readonly kind: 'part'; readonly part: DossierPart }
   | { readonly id: number; readonly kind: 'derived'; readonly result: DerivedCase }
+  | { readonly id: number; readonly kind: 'answer'; readonly answer: QueryAnswer }
   | { readonly id: number; readonly kind: 'lines'; readonly page: LinePage }
   | { readonly id: number; readonly kind: 'failed'; readonly message: string };

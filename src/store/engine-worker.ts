@@ -1,7 +1,7 @@
 import moyoUrl from '@spglib/moyo-wasm/moyo_wasm_bg.wasm?url';
 import { loadSymmetryTables } from '#src/crystal/symmetry-tables.ts';
-import { inParts } from './dossier-parts.ts';
 import type { EngineReply, EngineRequest } from './engine-protocol.ts';
+import { transferablesOf } from './engine-queries.ts';
 import { createEngine } from './engine.ts';
 
 /** The page's engine: everything that takes time runs here. The symmetry tables are fetched at the first crystal. */
@@ -11,7 +11,8 @@ const engine = createEngine(async () => {
   return loadSymmetryTables(await response.arrayBuffer());
 });
 
-const reply = (message: EngineReply): void => self.postMessage(message);
+const reply = (message: EngineReply, transfer: Transferable[] = []): void =>
+  self.postMessage(message, { transfer });
 
 self.onmessage = async ({ data: request }: MessageEvent<EngineRequest>): Promise<void> => {
   const { id } = request;
@@ -20,10 +21,13 @@ self.onmessage = async ({ data: request }: MessageEvent<EngineRequest>): Promise
       reply({ id, kind: 'lines', page: await engine.lines(request.source, request.first, request.count) });
       return;
     }
+    if (request.kind === 'query') {
+      const answer = await engine.answer(request.derivation, request.input, request.query);
+      reply({ id, kind: 'answer', answer }, transferablesOf(answer));
+      return;
+    }
     const report = (share: number, stage: string): void => reply({ id, kind: 'progress', share, stage });
-    const { parts, rest } = inParts(await engine.derive(request.input, report));
-    for (const part of parts) reply({ id, kind: 'part', part });
-    reply({ id, kind: 'derived', result: rest });
+    reply({ id, kind: 'derived', result: await engine.derive(id, request.input, report) });
   } catch (error) {
     reply({ id, kind: 'failed', message: error instanceof Error ? error.message : String(error) });
   }

@@ -6,10 +6,14 @@ import type { DecodedBytes } from '#src/bytes/decode-bytes.ts';
 import type { SourceText } from '#src/bytes/source-text.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import { deriveDossier } from '#src/dossier/derive-dossier.ts';
+import type { CrystalDossier } from '#src/dossier/dossier.ts';
 import { readText } from '#src/readers/read.ts';
 import type { Reading } from '#src/readers/reading.ts';
 import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
+import { summaryOf } from './crystal-summary.ts';
 import type { CaseInput, DerivedCase, LinePage, SourceFile } from './engine-protocol.ts';
+import { CrystalDesk } from './engine-queries.ts';
+import type { Query, QueryAnswer } from './engine-queries.ts';
 import { chooseStructure, proposalsOf, structuresOf, tensorsFor } from './choose-structure.ts';
 import { linePage } from './line-page.ts';
 
@@ -23,7 +27,10 @@ export interface ReadSource {
 }
 
 export interface Engine {
-  derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase>;
+  /** Derives a case and keeps its crystal under the number, to be asked about. */
+  derive(derivation: number, input: CaseInput, report: ReportProgress): Promise<DerivedCase>;
+  /** Answers a question about a derived crystal; one not kept any more is derived again from the input. */
+  answer(derivation: number, input: CaseInput, query: Query): Promise<QueryAnswer>;
   lines(file: SourceFile, first: number, count: number): Promise<LinePage>;
 }
 
@@ -96,16 +103,48 @@ class ReadingEngine implements Engine {
   readonly #loadTables: () => Promise<SymmetryTables>;
   #tables: Promise<SymmetryTables> | null = null;
   #read = new Map<string, ReadSource>();
+  /** Crystals that can be asked about: the newest, and until the page shows it the one before. */
+  #desks = new Map<number, Promise<CrystalDesk | null>>();
 
   constructor(loadTables: () => Promise<SymmetryTables>) {
     this.#loadTables = loadTables;
   }
 
-  async derive(input: CaseInput, report: ReportProgress): Promise<DerivedCase> {
+  async derive(derivation: number, input: CaseInput, report: ReportProgress): Promise<DerivedCase> {
+    const { derived, dossier } = await this.#derive(derivation, input, report);
+    if (dossier) this.#desks.set(derivation, Promise.resolve(new CrystalDesk(dossier)));
+    return derived;
+  }
+
+  async answer(derivation: number, input: CaseInput, query: Query): Promise<QueryAnswer> {
+    let desk = this.#desks.get(derivation);
+    if (!desk) {
+      desk = this.#derive(derivation, input, () => undefined).then(
+        ({ dossier }) => dossier && new CrystalDesk(dossier),
+      );
+      this.#desks.set(derivation, desk);
+    }
+    // whoever asks for rows or sites has the crystal on screen: the ones before are not asked about any more
+    if (query.kind !== 'scene')
+      for (const older of [...this.#desks.keys()]) if (older < derivation) this.#desks.delete(older);
+    const found = await desk.catch((error: unknown) => {
+      this.#desks.delete(derivation);
+      throw error;
+    });
+    if (!found) throw new Error('there is no crystal to ask about');
+    return found.answer(query);
+  }
+
+  async #derive(
+    derivation: number,
+    input: CaseInput,
+    report: ReportProgress,
+  ): Promise<{ readonly derived: DerivedCase; readonly dossier: CrystalDossier | null }> {
     const watched = throttled(report);
     const read = await this.#readAll(input, watched);
     const chosen = chooseStructure(read, input.structure);
     const base = {
+      derivation,
       sources: read.map(({ file, source, reading }) => ({
         id: file.id,
         name: file.name,
@@ -120,7 +159,7 @@ class ReadingEngine implements Engine {
     const readingProblems = read.flatMap(({ reading }) => reading.problems);
     if (!chosen) {
       const problems = [...readingProblems, ...noStructure(read)];
-      return { ...base, chosen: null, dossier: null, problems };
+      return { derived: { ...base, chosen: null, crystal: null, problems }, dossier: null };
     }
     watched(readingShare, 'loading the symmetry tables');
     const tables = await this.#symmetryTables();
@@ -136,7 +175,8 @@ class ReadingEngine implements Engine {
       },
       (share, stage) => watched(readingShare + (1 - readingShare) * share, stage),
     );
-    return { ...base, chosen: chosen.choice, dossier, problems: dossier.problems };
+    const crystal = summaryOf(dossier);
+    return { derived: { ...base, chosen: chosen.choice, crystal, problems: dossier.problems }, dossier };
   }
 
   async lines(file: SourceFile, first: number, count: number): Promise<LinePage> {

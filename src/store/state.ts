@@ -8,7 +8,9 @@ import type { Measurement } from '#src/scene/measurement.ts';
 import type { SavedView } from '#src/scene/saved-view.ts';
 import { defaultSceneOptions } from '#src/scene/scene-options.ts';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
-import type { SceneQuantity } from '#src/scene/scene.ts';
+import type { Scene, SceneQuantity } from '#src/scene/scene.ts';
+import { defaultTable } from '#src/table/table-settings.ts';
+import type { TableSettings } from '#src/table/table-settings.ts';
 import type { DerivedCase, SourceFile, StructureChoice } from './engine-protocol.ts';
 
 /** Everything the user decided about a case; undo steps through a list of these. */
@@ -70,6 +72,16 @@ export interface WorkbenchState {
   readonly theme: ThemeChoice;
   /** What the picture shows; nothing here changes a number. */
   readonly picture: SceneOptions;
+  /** The picture of the crystal on screen, as the engine described it last; null before the first. */
+  readonly scene: Scene | null;
+  /** Why there is no picture, or none of the present options; null when there is. */
+  readonly sceneFault: string | null;
+  /** A new picture has been waited for longer than half a second. */
+  readonly isDrawing: boolean;
+  /** Grows whenever sites that were asked for by `Store.site` have come. */
+  readonly sitesRead: number;
+  /** Columns, order and filter of the site table; nothing here changes a number. */
+  readonly table: TableSettings;
   /** null is the first view of the crystal: all of it, from where the picture thinks best. */
   readonly camera: Camera | null;
   readonly look: Look;
@@ -90,6 +102,11 @@ export const emptyState: WorkbenchState = {
   hover: null,
   theme: 'auto',
   picture: defaultSceneOptions,
+  scene: null,
+  sceneFault: null,
+  isDrawing: false,
+  sitesRead: 0,
+  table: defaultTable,
   camera: null,
   look: defaultLook,
   savedViews: [],
@@ -118,7 +135,6 @@ export function quantityToShow(
 }
 
 /** Quantities at least one site of the case has. */
-export function availableQuantities(derived: DerivedCase | null): SceneQuantity[] {
-  const sites = derived?.dossier?.sites ?? [];
-  return (['shielding', 'shift', 'efg'] as const).filter((quantity) => sites.some((site) => site[quantity]));
+export function availableQuantities(derived: DerivedCase | null): readonly SceneQuantity[] {
+  return derived?.crystal?.quantities ?? [];
 }

@@ -4,10 +4,14 @@ import type { SceneOptions } from '#src/scene/scene-options.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
-
+import type { Scene } from '#src/scene/scene.ts';
+import type { TableSettings } from '#src/table/table-settings.ts';
 import type { EngineClient } from './engine-client.ts';
 import { Cancelled } from './engine-client.ts';
 import type { DerivedCase, LinePage, SourceFile, StructureChoice } from './engine-protocol.ts';
+import type { KnownSite, Queries, QueryKind } from './engine-queries.ts';
+import { NewestOnly } from './newest-only.ts';
+import { SiteCache } from './site-cache.ts';
 import type { Decisions, Selection, ShownPlace, Step, ThemeChoice, WorkbenchState } from './state.ts';
 import { emptyState } from './state.ts';
 
@@ -19,6 +23,12 @@ export interface FileInput {
 
 /** Told after every change, with a sentence that says what changed and why. */
 export type Listener = (state: WorkbenchState, reason: string) => void;
+
+/** A picture and how it went. */
+type Drawn = Pick<WorkbenchState, 'scene' | 'sceneFault'>;
+
+/** Milliseconds after which it is said that a picture is being made. */
+const drawingIsLong = 500;
 
 /** Steps kept for undo; decisions are small, their files are shared. */
 const keptSteps = 200;
@@ -34,10 +44,20 @@ export class Store {
   /** Decisions on their way through the engine; later ones build on them. */
   #underway: Decisions | null = null;
   #nextSource = 1;
+  readonly #sites: SiteCache;
+  readonly #scenes: NewestOnly<
+    { readonly derived: DerivedCase; readonly options: Partial<SceneOptions> },
+    Scene
+  >;
 
   constructor(engine: EngineClient, initial: Partial<WorkbenchState>) {
     this.#engine = engine;
     this.#state = { ...emptyState, ...initial };
+    this.#sites = new SiteCache(
+      (derived, indices) => engine.ask(derived, 'sites', indices),
+      () => this.#change({ sitesRead: this.#state.sitesRead + 1 }, 'sites that were asked for have come'),
+    );
+    this.#scenes = new NewestOnly(({ derived, options }) => engine.ask(derived, 'scene', options));
   }
 
   get state(): WorkbenchState {
@@ -126,7 +146,24 @@ export class Store {
 
   /** Gives up what the engine is doing; the screen stays as it is. */
   cancel(): void {
+    const what = this.#state.progress?.what;
     this.#engine.cancel();
+    if (!this.#underway) return;
+    this.#underway = null;
+    this.#change({ progress: null }, `${what ?? 'what was begun'} was cancelled`);
+  }
+
+  /** A whole site of the crystal on screen, where it is here; else null, and `sitesRead` grows once it is. */
+  site(index: number): KnownSite | null {
+    const { derived } = this.#state;
+    return derived?.crystal ? this.#sites.get(derived, index) : null;
+  }
+
+  /** Asks about the crystal on screen; rejects without one, and where the engine could not answer. */
+  ask<Kind extends QueryKind>(kind: Kind, ask: Queries[Kind]['ask']): Promise<Queries[Kind]['answer']> {
+    const { derived } = this.#state;
+    if (!derived?.crystal) return Promise.reject(new Cancelled('there is no crystal to ask about'));
+    return this.#engine.ask(derived, kind, ask);
   }
 
   select(selection: Selection | null): void {
@@ -144,6 +181,12 @@ export class Store {
 
   setPicture(change: Partial<SceneOptions>, reason: string): void {
     this.#change({ picture: { ...this.#state.picture, ...change } }, reason);
+    void this.#redraw();
+  }
+
+  /** Changes columns, order or filter of the site table. */
+  setTable(change: Partial<TableSettings>, reason: string): void {
+    this.#change({ table: { ...this.#state.table, ...change } }, reason);
   }
 
   /** Opens the text view at a line, or closes it. */
@@ -207,9 +250,13 @@ export class Store {
         if (isLatest()) this.#change({ progress: { what: reason, share, stage } }, `${stage} went on`);
       });
       if (!isLatest()) return false;
-      if (!derived.dossier) return this.#refuse(reason, decisions.sources, derived.problems);
+      if (!derived.crystal) return this.#refuse(reason, decisions.sources, derived.problems);
+      const { picture } = this.#state;
+      const drawn = await this.#firstPicture(derived, picture, reason);
+      if (!isLatest()) return false;
       this.#underway = null;
-      this.#accept(decisions, derived, history(this.#state), reason);
+      this.#accept(decisions, derived, { ...history(this.#state), ...drawn }, reason);
+      if (this.#state.picture !== picture) void this.#redraw();
       return true;
     } catch (error) {
       if (!isLatest()) return false;
@@ -220,20 +267,51 @@ export class Store {
     }
   }
 
+  /** Picture and selected site of a crystal that is about to come on screen, so that all of it comes at once. */
+  async #firstPicture(derived: DerivedCase, picture: SceneOptions, reason: string): Promise<Drawn> {
+    const { selection } = this.#state;
+    this.#change(
+      { progress: { what: reason, share: 1, stage: 'making the picture' } },
+      'the picture is made',
+    );
+    if (selection) await this.#sites.read(derived, [selection.siteIndex]).catch(() => []);
+    const drawn = await this.#draw(derived, picture).catch(drawingFault);
+    return { scene: drawn?.scene ?? null, sceneFault: drawn?.sceneFault ?? null };
+  }
+
+  /** Asks for the picture of the present options; until it comes the one before stays. */
+  async #redraw(): Promise<void> {
+    const { derived, picture } = this.#state;
+    if (!derived?.crystal) return;
+    const late = setTimeout(
+      () => this.#change({ isDrawing: true }, 'the picture is waited for'),
+      drawingIsLong,
+    );
+    const drawn = await this.#draw(derived, picture).catch(drawingFault);
+    clearTimeout(late);
+    if (drawn && this.#state.derived === derived)
+      this.#change({ ...drawn, isDrawing: false }, 'a new picture came');
+  }
+
+  async #draw(derived: DerivedCase, options: Partial<SceneOptions>): Promise<Drawn> {
+    return { scene: await this.#scenes.ask({ derived, options }), sceneFault: null };
+  }
+
   #accept(
     decisions: Decisions,
     derived: DerivedCase,
-    history: Pick<WorkbenchState, 'past' | 'future'>,
+    also: Pick<WorkbenchState, 'past' | 'future'> & Drawn,
     reason: string,
   ): void {
     const sameCrystal = decisions.sources[0]?.id === this.#state.decisions?.sources[0]?.id;
     const { selection } = this.#state;
-    const siteCount = derived.dossier?.sites.length ?? 0;
+    const siteCount = derived.crystal?.siteCount ?? 0;
     const keeps = sameCrystal && selection !== null && selection.siteIndex < siteCount;
     const change = {
       decisions,
       derived,
-      ...history,
+      ...also,
+      isDrawing: false,
       refused: null,
       progress: null,
       hover: null,
@@ -263,6 +341,12 @@ function titleOf(files: readonly FileInput[]): string {
 
 function same(a: Selection | null, b: Selection | null): boolean {
   return a === b || (a?.siteIndex === b?.siteIndex && a?.atomId === b?.atomId && a !== null && b !== null);
+}
+
+/** What to show instead of a picture that could not be made; nothing where a newer one is on its way. */
+function drawingFault(error: unknown): Partial<Drawn> | null {
+  if (error instanceof Cancelled) return null;
+  return { sceneFault: error instanceof Error ? error.message : String(error) };
 }
 
 function engineFault(error: unknown): Problem {

@@ -238,7 +238,7 @@ describe('a file that cannot be opened', () => {
     const answer = fixtureCase();
     page = await mountWorkbench(answer);
     const refusedProblems = [problem('error', 'bytes-empty', 'The file is empty.')];
-    Object.assign(answer, { dossier: null, problems: refusedProblems });
+    Object.assign(answer, { crystal: null, problems: refusedProblems });
     await page.store.open([{ name: 'empty.cif', blob: new Blob([]) }]);
     await settle();
     const drawer = textOf(page.part('ellipsite-problems-drawer').shadowRoot);

@@ -13,18 +13,20 @@ const mayImport: Readonly<Record<string, readonly string[]>> = {
   'src/attach': ['src/base', 'src/crystal', 'src/tensor'],
   'src/dossier': ['src/base', 'src/data', 'src/crystal', 'src/tensor', 'src/attach'],
   'src/scene': ['src/base', 'src/data', 'src/dossier'],
+  'src/table': ['src/base', 'src/dossier'],
   'src/case': ['src/base', 'src/tensor', 'src/dossier', 'src/scene', 'src/table'],
   'src/raster': ['src/base', 'src/scene'],
+  'src/figure': ['src/base', 'src/scene', 'src/raster', 'src/table', 'src/case'],
   'src/render': ['src/base', 'src/scene', 'src/raster', 'shaders'],
   'src/store': [
     ...['src/base', 'src/data', 'src/bytes', 'src/crystal', 'src/tensor', 'src/readers'],
-    ...['src/attach', 'src/dossier', 'src/scene', 'src/case'],
+    ...['src/attach', 'src/dossier', 'src/scene', 'src/table', 'src/case'],
   ],
   'src/cli': [
     ...['src/base', 'src/data', 'src/bytes', 'src/crystal', 'src/tensor', 'src/readers'],
     ...['src/attach', 'src/dossier', 'src/scene', 'src/case'],
   ],
-  components: ['src/store', 'src/scene', 'src/render', 'samples'],
+  components: ['src/store', 'src/scene', 'src/table', 'src/render', 'src/figure', 'samples'],
   shaders: [],
 };
 

@@ -1,7 +1,11 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { problem } from '#src/base/problem.ts';
+import type { CrystalSummary } from '#src/store/crystal-summary.ts';
+import { summaryOf } from '#src/store/crystal-summary.ts';
 import type { EngineClient } from '#src/store/engine-client.ts';
 import type { DerivedCase } from '#src/store/engine-protocol.ts';
+import { CrystalDesk } from '#src/store/engine-queries.ts';
+import type { Queries, Query, QueryKind } from '#src/store/engine-queries.ts';
 import type {
   CrystalDossier,
   EfgDossier,
@@ -232,10 +236,17 @@ export const fixtureDossier: CrystalDossier = {
   problems: fixtureProblems,
 };
 
+/** The desk that answers for a crystal the fixtures summed up. */
+const desks = new WeakMap<CrystalSummary, CrystalDesk>();
+let derivations = 0;
+
 /** What the engine would answer for the fixture. */
 export function fixtureCase(dossier: CrystalDossier = fixtureDossier): DerivedCase {
   const sourceId = 'source-1';
+  const crystal = summaryOf(dossier);
+  desks.set(crystal, new CrystalDesk(dossier));
   return {
+    derivation: ++derivations,
     sources: [{ id: sourceId, name: 'invented.xyz', format: 'xyz', bytes: 300, lines: 8 }],
     structures: [
       {
@@ -254,9 +265,21 @@ export function fixtureCase(dossier: CrystalDossier = fixtureDossier): DerivedCa
     ],
     proposals: [],
     chosen: { sourceId, index: 0 },
-    dossier,
+    crystal,
     problems: dossier.problems,
   };
+}
+
+/** Answers a question about a case of `fixtureCase`, as the worker would. */
+export function answerFor<Kind extends QueryKind>(
+  { crystal }: DerivedCase,
+  kind: Kind,
+  ask: Queries[Kind]['ask'],
+): Promise<Queries[Kind]['answer']> {
+  const desk = crystal && desks.get(crystal);
+  return desk
+    ? Promise.resolve(desk.answer({ kind, ask } as Query) as Queries[Kind]['answer'])
+    : Promise.reject(new Error('no such fixture'));
 }
 
 /** An engine that answers every derivation with the given case and every request for lines with numbered ones. */
@@ -266,6 +289,7 @@ export function fixtureEngine(answer: DerivedCase = fixtureCase()): EngineClient
       report(0.5, 'reading');
       return Promise.resolve(answer);
     },
+    ask: answerFor,
     lines: (source, first, count) => {
       const total = 8;
       const last = Math.min(total, first + count - 1);

@@ -3,7 +3,10 @@ import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import type { CrystalDossier } from '#src/dossier/dossier.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
 import { sharedPositions } from '#src/scene/shared-positions.ts';
-import { columnsFor } from '#components/site-columns.ts';
+import { summaryOf } from '#src/store/crystal-summary.ts';
+import { CrystalDesk } from '#src/store/engine-queries.ts';
+import type { KnownSite } from '#src/store/engine-queries.ts';
+import { defaultColumns, siteColumn } from '#src/table/site-columns.ts';
 import { pointedSentence } from '#components/pointed-sentence.ts';
 import { madeDossier } from '#tests/support/made-dossier.ts';
 
@@ -46,10 +49,17 @@ describe('sites that share a position', () => {
 
   it('are both named under the pointer, and a column of occupancies appears', () => {
     const dossier = mixed();
-    const pick = buildScene(dossier).picks.find((one) => one.kind === 'atom' && one.siteIndex === 1)!;
-    expect(pointedSentence(pick, dossier)).toContain('Al1 · 94.1 %, shares its position with Nb1 (5.9 %)');
-    const text = (made: CrystalDossier) => columnsFor(made).find(({ key }) => key === 'occupancy');
-    expect(text(dossier)?.text(dossier.sites[0]!)).toBe('0.059');
-    expect(text({ ...dossier, sites: [dossier.sites[2]!] })).toBeUndefined();
+    const scene = buildScene(dossier);
+    const pick = scene.picks.find((one) => one.kind === 'atom' && one.siteIndex === 1)!;
+    const desk = new CrystalDesk(dossier);
+    const siteOf = (index: number): KnownSite | null =>
+      (desk.answer({ kind: 'sites', ask: [index] }) as readonly KnownSite[])[0] ?? null;
+    expect(pointedSentence(pick, scene, siteOf)).toContain(
+      'Al1 · 94.1 %, shares its position with Nb1 (5.9 %)',
+    );
+    const columns = (made: CrystalDossier) => defaultColumns(summaryOf(made));
+    expect(columns(dossier)).toContain('occupancy');
+    expect(siteColumn('occupancy')?.text(dossier.sites[0]!)).toBe('0.059');
+    expect(columns({ ...dossier, sites: [dossier.sites[2]!] })).not.toContain('occupancy');
   });
 });

@@ -42,7 +42,7 @@ describe('the engine client', () => {
     const { id } = workers[0]!.received[0]!;
     workers[0]!.onmessage?.({ data: { id, kind: 'progress', share: 0.25, stage: 'reading' } });
     workers[0]!.onmessage?.({ data: { id, kind: 'derived', result: fixtureCase() } });
-    expect((await derived).dossier?.name).toBe('invented aluminate');
+    expect((await derived).crystal?.name).toBe('invented aluminate');
     expect(seen).toEqual([[0.25, 'reading']]);
   });
 

@@ -2,7 +2,8 @@ import { describe, expect, it } from 'vitest';
 import { sourceFromText } from '#src/bytes/source-from-text.ts';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
 import { createEngine, throttled } from '#src/store/engine.ts';
-import type { SourceFile, StructureChoice } from '#src/store/engine-protocol.ts';
+import type { CaseInput, SourceFile, StructureChoice } from '#src/store/engine-protocol.ts';
+import type { KnownSite } from '#src/store/engine-queries.ts';
 import { linePage } from '#src/store/line-page.ts';
 import { symmetryTables } from '#tests/support/derive.ts';
 
@@ -35,9 +36,16 @@ function engineWithCount() {
     loads++;
     return Promise.resolve(symmetryTables);
   });
+  let derivations = 0;
   const derive = (sources: readonly SourceFile[], structure: StructureChoice | null = null) =>
-    engine.derive({ sources, structure, settings: defaultSettings }, () => undefined);
-  return { engine, derive, loads: () => loads };
+    deriveWith({ sources, structure, settings: defaultSettings });
+  const deriveWith = async (input: CaseInput) => {
+    const derived = await engine.derive(++derivations, input, () => undefined);
+    const ask = { kind: 'sites', ask: [0] } as const;
+    const sites = derived.crystal && (await engine.answer(derivations, input, ask));
+    return { ...derived, first: (sites as readonly KnownSite[] | null)?.[0] ?? null };
+  };
+  return { engine, derive, deriveWith, loads: () => loads };
 }
 
 describe('the engine', () => {
@@ -50,38 +58,41 @@ describe('the engine', () => {
       ['second, frame 2', 1],
     ]);
     expect(first.chosen).toEqual({ sourceId: frames.id, index: 0 });
-    expect(first.dossier?.sites[0]?.shielding?.isotropic).toBeCloseTo(110, 9);
+    expect(first.first?.shielding?.isotropic).toBeCloseTo(110, 9);
     expect(first.tensors.map(({ used }) => used)).toEqual([true, false]);
     const second = await derive([frames], { sourceId: frames.id, index: 1 });
-    expect(second.dossier?.sites[0]?.shielding?.isotropic).toBeCloseTo(210, 9);
+    expect(second.first?.shielding?.isotropic).toBeCloseTo(210, 9);
   });
 
   it('puts tensors of another file on the first structure', async () => {
     const { derive } = engineWithCount();
-    const { dossier, chosen } = await derive([file('bare.xyz', bareCrystal), file('frames.xyz', twoFrames)]);
+    const { crystal, first, chosen } = await derive([
+      file('bare.xyz', bareCrystal),
+      file('frames.xyz', twoFrames),
+    ]);
     expect(chosen?.index).toBe(0);
-    expect(dossier?.name).toBe('bare');
-    expect(dossier?.sites[0]?.shielding?.isotropic).toBeCloseTo(110, 9);
-    expect(dossier?.sites[0]?.shielding?.source).toMatchObject({ file: 'frames.xyz', line: 3 });
+    expect(crystal?.name).toBe('bare');
+    expect(first?.shielding?.isotropic).toBeCloseTo(110, 9);
+    expect(first?.shielding?.source).toMatchObject({ file: 'frames.xyz', line: 3 });
   });
 
   it('proposes a foreign column and takes it when told', async () => {
-    const { engine, derive } = engineWithCount();
+    const { deriveWith, derive } = engineWithCount();
     const foreign = file('foreign.xyz', twoFrames.replaceAll('shielding:R', 'tens:R'));
     const proposed = await derive([foreign]);
     expect(proposed.proposals.map(({ sourceId, name }) => [sourceId, name])).toEqual([[foreign.id, 'tens']]);
-    expect(proposed.dossier?.sites[0]?.shielding).toBeNull();
+    expect(proposed.first?.shielding).toBeNull();
     const accepted = { [foreign.id]: { tens: { quantity: 'shielding' as const } } };
     const input = { sources: [foreign], structure: null, settings: defaultSettings, accepted };
-    const taken = await engine.derive(input, () => undefined);
+    const taken = await deriveWith(input);
     expect(taken.proposals).toEqual([]);
-    expect(taken.dossier?.sites[0]?.shielding?.isotropic).toBeCloseTo(110, 9);
+    expect(taken.first?.shielding?.isotropic).toBeCloseTo(110, 9);
   });
 
   it('loads the symmetry tables once, and not for files without a structure', async () => {
     const { derive, loads } = engineWithCount();
     const empty = await derive([file('a.txt', 'nothing of ours')]);
-    expect(empty.dossier).toBeNull();
+    expect(empty.crystal).toBeNull();
     expect(empty.problems.map(({ code }) => code)).toContain('no-structure');
     expect(loads()).toBe(0);
     await derive([file('a.xyz', bareCrystal)]);
@@ -95,8 +106,8 @@ describe('the engine', () => {
       ++tries === 1 ? Promise.reject(new Error('offline')) : Promise.resolve(symmetryTables),
     );
     const input = { sources: [file('a.xyz', bareCrystal)], structure: null, settings: defaultSettings };
-    await expect(engine.derive(input, () => undefined)).rejects.toThrow('offline');
-    expect((await engine.derive(input, () => undefined)).dossier?.sites).toHaveLength(1);
+    await expect(engine.derive(1, input, () => undefined)).rejects.toThrow('offline');
+    expect((await engine.derive(2, input, () => undefined)).crystal?.siteCount).toBe(1);
   });
 
   it('reads a file once, however often it is derived', async () => {
@@ -143,7 +154,7 @@ describe('the engine', () => {
     const { engine } = engineWithCount();
     const shares: number[] = [];
     const input = { sources: [file('a.xyz', twoFrames)], structure: null, settings: defaultSettings };
-    await engine.derive(input, (share) => shares.push(share));
+    await engine.derive(1, input, (share) => shares.push(share));
     expect(shares.length).toBeGreaterThan(2);
     expect([...shares].sort((a, b) => a - b)).toEqual(shares);
     expect(shares.at(-1)).toBeCloseTo(1, 9);

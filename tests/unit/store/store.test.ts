@@ -4,7 +4,7 @@ import { Cancelled } from '#src/store/engine-client.ts';
 import type { EngineClient } from '#src/store/engine-client.ts';
 import type { CaseInput, DerivedCase } from '#src/store/engine-protocol.ts';
 import { createStore } from '#src/store/store.ts';
-import { fixtureCase } from '#tests/support/dossier-fixture.ts';
+import { answerFor, fixtureCase } from '#tests/support/dossier-fixture.ts';
 
 interface Waiting {
   readonly input: CaseInput;
@@ -18,6 +18,7 @@ function handEngine(): { engine: EngineClient; waiting: Waiting[] } {
   const waiting: Waiting[] = [];
   const engine: EngineClient = {
     derive: (input, report) => new Promise((answer, fail) => waiting.push({ input, answer, fail, report })),
+    ask: answerFor,
     lines: () => Promise.reject(new Error('no lines here')),
     cancel: () => waiting.at(-1)?.fail(new Cancelled('cancelled')),
   };
@@ -27,7 +28,7 @@ function handEngine(): { engine: EngineClient; waiting: Waiting[] } {
 const file = (name: string) => ({ name, blob: new Blob([name]) });
 const empty: DerivedCase = {
   ...fixtureCase(),
-  dossier: null,
+  crystal: null,
   problems: [problem('error', 'no-structure', 'nothing here')],
 };
 
@@ -52,9 +53,15 @@ describe('the store', () => {
     expect(store.state.derived).toBeNull();
     waiting[0]!.answer(fixtureCase());
     expect(await opened).toBe(true);
-    expect(store.state.derived?.dossier?.name).toBe('invented aluminate');
+    expect(store.state.derived?.crystal?.name).toBe('invented aluminate');
     expect(store.state.progress).toBeNull();
-    expect(reasons).toEqual(['open a.cif began', 'reading went on', 'open a.cif is on screen']);
+    expect(reasons).toEqual([
+      'open a.cif began',
+      'reading went on',
+      'the picture is made',
+      'open a.cif is on screen',
+    ]);
+    expect(store.state.scene?.picks.length).toBeGreaterThan(2);
   });
 
   it('keeps the case when a file holds none, and keeps its problems', async () => {

@@ -8,7 +8,7 @@ import {
   isotopeSymbol,
   raiseIsotopes,
   symmetrySymbol,
-} from '#components/number-format.ts';
+} from '#src/table/number-format.ts';
 import { parseNumber } from '#components/number-input.ts';
 
 describe('numbers on the page', () => {

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { knownConvention, mainNumbers, printedValue, siteNumber } from '#components/convention-symbol.ts';
+import { knownConvention, mainNumbers, printedValue, siteNumber } from '#src/table/printed-value.ts';
 import type { EfgDossier, SiteDossier } from '#src/dossier/dossier.ts';
 import { fixtureDossier } from '#tests/support/dossier-fixture.ts';
 

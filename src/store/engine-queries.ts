@@ -1,0 +1,124 @@
+import type { CrystalDossier, SiteDossier } from '#src/dossier/dossier.ts';
+import { buildScene } from '#src/scene/build-scene.ts';
+import type { SceneOptions } from '#src/scene/scene-options.ts';
+import type { Scene } from '#src/scene/scene.ts';
+import { sharedPositions } from '#src/scene/shared-positions.ts';
+import { columnsOf } from '#src/table/site-columns.ts';
+import { orderSites } from '#src/table/table-order.ts';
+import { tableRow } from '#src/table/table-rows.ts';
+import type { TablePage, TableRequest } from '#src/table/table-settings.ts';
+import { tableHtml, tableText } from '#src/table/table-text.ts';
+
+/** Another site on the same position. */
+export interface SharingSite {
+  readonly siteIndex: number;
+  readonly label: string;
+  readonly occupancy: number;
+}
+
+/** A site's dossier with what only the whole crystal tells. */
+export interface KnownSite extends SiteDossier {
+  /** Sites that share its position, such as two elements that mix on it. */
+  readonly sharing: readonly SharingSite[];
+}
+
+/** The table to take away: all rows in their order. */
+export interface TableTextRequest extends Omit<TableRequest, 'first' | 'count' | 'withOrder'> {
+  readonly format: 'text' | 'html';
+}
+
+/** Everything that can be asked of a crystal that was derived: question and answer by kind. */
+export interface Queries {
+  readonly scene: { readonly ask: Partial<SceneOptions>; readonly answer: Scene };
+  /** Sites of these indices; those that do not exist are passed over. */
+  readonly sites: { readonly ask: readonly number[]; readonly answer: readonly KnownSite[] };
+  readonly table: { readonly ask: TableRequest; readonly answer: TablePage };
+  readonly tableText: { readonly ask: TableTextRequest; readonly answer: string };
+}
+
+export type QueryKind = keyof Queries;
+
+/** One question of any kind, as it travels. */
+export type Query = {
+  readonly [Kind in QueryKind]: { readonly kind: Kind; readonly ask: Queries[Kind]['ask'] };
+}[QueryKind];
+
+export type QueryAnswer = Queries[QueryKind]['answer'];
+
+/** Answers questions about one crystal; keeps the order of the table, of which many windows are asked for. */
+export class CrystalDesk {
+  readonly #dossier: CrystalDossier;
+  #order: { readonly key: string; readonly sites: Int32Array } | null = null;
+
+  constructor(dossier: CrystalDossier) {
+    this.#dossier = dossier;
+  }
+
+  answer(query: Query): QueryAnswer {
+    switch (query.kind) {
+      case 'scene':
+        return buildScene(this.#dossier, query.ask);
+      case 'sites':
+        return this.#sites(query.ask);
+      case 'table':
+        return this.#page(query.ask);
+      case 'tableText':
+        return this.#text(query.ask);
+    }
+  }
+
+  #sites(indices: readonly number[]): KnownSite[] {
+    const { others } = sharedPositions(this.#dossier);
+    return indices.flatMap((index) => {
+      const site = this.#dossier.sites[index];
+      if (!site) return [];
+      const sharing = (others.get(index) ?? []).map(({ index: siteIndex, label, occupancy }) => ({
+        siteIndex,
+        label,
+        occupancy,
+      }));
+      return [{ ...site, sharing }];
+    });
+  }
+
+  #page(request: TableRequest): TablePage {
+    const order = this.#ordered(request);
+    const columns = columnsOf(request.columns);
+    const window = order.subarray(request.first, request.first + request.count);
+    return {
+      // a copy: what is sent is given away
+      order: request.withOrder ? order.slice() : null,
+      total: order.length,
+      first: request.first,
+      rows: Array.from(window, (index) => tableRow(this.#dossier.sites[index]!, columns)),
+    };
+  }
+
+  #text(request: TableTextRequest): string {
+    const sites = Array.from(this.#ordered(request), (index) => this.#dossier.sites[index]!);
+    const columns = columnsOf(request.columns);
+    return request.format === 'html' ? tableHtml(sites, columns) : tableText(sites, columns);
+  }
+
+  #ordered({ filter, sort }: Pick<TableRequest, 'filter' | 'sort'>): Int32Array {
+    const key = JSON.stringify([filter, sort]);
+    if (this.#order?.key !== key) this.#order = { key, sites: orderSites(this.#dossier.sites, filter, sort) };
+    return this.#order.sites;
+  }
+}
+
+/** Buffers of an answer that are given to the other side instead of being copied. */
+export function transferablesOf(answer: unknown): ArrayBuffer[] {
+  const buffers = new Set<ArrayBuffer>();
+  const collect = (value: unknown, depth: number): void => {
+    if (ArrayBuffer.isView(value)) {
+      if (value.buffer instanceof ArrayBuffer) buffers.add(value.buffer);
+      return;
+    }
+    // the arrays of a scene lie in it and in its batches, no deeper
+    if (depth < 2 && typeof value === 'object' && value !== null && !Array.isArray(value))
+      for (const part of Object.values(value)) collect(part, depth + 1);
+  };
+  collect(answer, 0);
+  return [...buffers];
+}
