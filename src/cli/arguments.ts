@@ -11,7 +11,10 @@ export interface CommonArguments {
   readonly files: readonly string[];
   readonly json: boolean;
   readonly block: string | null;
+  /** What the options say, defaults for the rest. */
   readonly settings: DossierSettings;
+  /** Only what the options say: it goes before the settings of a case file. */
+  readonly given: Partial<DossierSettings>;
 }
 
 const commonOptions = {
@@ -58,21 +61,18 @@ function parseMoment(text: string): [string, number] {
   return [isotope, finite(barn, 'moment')];
 }
 
-function parseSymmetry(text: string | undefined): DossierSettings['symmetry'] {
-  if (text === undefined) return 'auto';
+function parseSymmetry(text: string): DossierSettings['symmetry'] {
   if (text === 'file' || text === 'find' || text === 'none') return text;
   throw new UsageError(`--symmetry ${text}: allowed are file, find, none.`);
 }
 
-function parseTolerance(text: string | undefined): number {
-  if (text === undefined) return defaultSettings.symmetryToleranceAngstrom;
+function parseTolerance(text: string): number {
   const value = finite(text, 'tolerance');
   if (value <= 0 || value > 1) throw new UsageError(`--tolerance ${text}: allowed are 0 < Å ≤ 1.`);
   return value;
 }
 
-function parseFrame(text: string | undefined): string | null {
-  if (text === undefined) return null;
+function parseFrame(text: string): string {
   const names = latticeSettings.map(({ name }) => name);
   if (names.some((name) => name === text)) return text;
   throw new UsageError(`--frame ${text}: allowed are ${names.join(', ')}.`);
@@ -89,32 +89,76 @@ function plainSentence(error: unknown): string {
   return message.split(/\.\s|\n/)[0] ?? message;
 }
 
+/** Options of one command beside the common ones. */
+export type OwnOptions = Readonly<
+  Record<string, { readonly type: 'string' | 'boolean'; readonly short?: string }>
+>;
+
+/** Values of a command's own options as they were typed. */
+export type OwnValues = Readonly<Record<string, string | boolean | undefined>>;
+
 /** Reads the common options. Raises `UsageError` with a sentence for the user. */
 export function parseCommonArguments(argv: readonly string[]): CommonArguments {
+  return parseArguments(argv, {}).common;
+}
+
+/** Reads the common options and a command's own. Raises `UsageError` with a sentence for the user. */
+export function parseArguments(
+  argv: readonly string[],
+  own: OwnOptions,
+): { readonly common: CommonArguments; readonly own: OwnValues } {
   let parsed;
   try {
-    parsed = parseArgs({ args: [...argv], options: commonOptions, allowPositionals: true });
+    parsed = parseArgs({ args: [...argv], options: { ...own, ...commonOptions }, allowPositionals: true });
   } catch (error) {
     throw new UsageError(plainSentence(error));
   }
-  const { values, positionals } = parsed;
+  const values = parsed.values as CommonValues;
+  return { common: commonArguments(values, parsed.positionals), own: parsed.values as OwnValues };
+}
+
+interface CommonValues {
+  readonly json?: boolean;
+  readonly block?: string;
+  readonly isotope?: string[];
+  readonly reference?: string[];
+  readonly moment?: string[];
+  readonly frame?: string;
+  readonly symmetry?: string;
+  readonly tolerance?: string;
+}
+
+function commonArguments(values: CommonValues, positionals: readonly string[]): CommonArguments {
   if (positionals.length === 0) throw new UsageError('Name at least one FILE, or - for standard input.');
-  const isotopes = (values.isotope ?? []).map(
-    (name) => [knownNuclide(name, 'isotope').element, name] as const,
-  );
-  const references = (values.reference ?? []).map(parseReference);
+  const given = givenSettings(values);
   return {
     files: positionals,
     json: values.json ?? false,
     block: values.block ?? null,
-    settings: {
-      ...defaultSettings,
-      isotopes: Object.fromEntries(isotopes),
-      references: Object.fromEntries(references.map((reference) => [reference.isotope, reference])),
-      quadrupoleMomentsBarn: Object.fromEntries((values.moment ?? []).map(parseMoment)),
-      symmetry: parseSymmetry(values.symmetry),
-      symmetryToleranceAngstrom: parseTolerance(values.tolerance),
-      frame: parseFrame(values.frame),
-    },
+    settings: { ...defaultSettings, ...given },
+    given,
+  };
+}
+
+interface SettingWords {
+  readonly isotope?: string[] | undefined;
+  readonly reference?: string[] | undefined;
+  readonly moment?: string[] | undefined;
+  readonly symmetry?: string | undefined;
+  readonly tolerance?: string | undefined;
+  readonly frame?: string | undefined;
+}
+
+function givenSettings(words: SettingWords): Partial<DossierSettings> {
+  const { isotope, reference, moment, symmetry, tolerance, frame } = words;
+  const nuclides = isotope?.map((name) => [knownNuclide(name, 'isotope').element, name] as const);
+  const references = reference?.map(parseReference).map((one) => [one.isotope, one] as const);
+  return {
+    ...(nuclides && { isotopes: Object.fromEntries(nuclides) }),
+    ...(references && { references: Object.fromEntries(references) }),
+    ...(moment && { quadrupoleMomentsBarn: Object.fromEntries(moment.map(parseMoment)) }),
+    ...(symmetry !== undefined && { symmetry: parseSymmetry(symmetry) }),
+    ...(tolerance !== undefined && { symmetryToleranceAngstrom: parseTolerance(tolerance) }),
+    ...(frame !== undefined && { frame: parseFrame(frame) }),
   };
 }

@@ -1,38 +1,27 @@
-import { decodeBytes } from '#src/bytes/decode-bytes.ts';
 import { ProblemLog } from '#src/base/problem.ts';
 import type { Problem } from '#src/base/problem.ts';
+import type { CaseDecisions, CaseSource, CaseViews } from '#src/case/case-document.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
 import { symmetryTablesFromBytes } from '#src/crystal/symmetry-tables.ts';
 import { deriveDossier } from '#src/dossier/derive-dossier.ts';
 import type { CrystalDossier } from '#src/dossier/dossier.ts';
 import type { Reading } from '#src/readers/reading.ts';
-import { readText } from '#src/readers/read.ts';
 import type { CommonArguments } from './arguments.ts';
 import type { CommandIo } from './io.ts';
 import { UsageError } from './io.ts';
+import { readFiles, settingsFor } from './read-files.ts';
 
 /** What the files of one command line held. */
 export interface LoadedCase {
   /** null when no file holds a structure. */
   readonly dossier: CrystalDossier | null;
   readonly problems: readonly Problem[];
-}
-
-async function readOne(
-  path: string,
-  io: CommandIo,
-): Promise<{ reading: Reading | null; problems: Problem[] }> {
-  const name = path === '-' ? 'standard input' : path;
-  let bytes: Uint8Array;
-  try {
-    bytes = path === '-' ? await io.readStandardInput() : await io.readFile(path);
-  } catch (error) {
-    throw new UsageError(`${name}: ${error instanceof Error ? error.message : String(error)}`);
-  }
-  const { source, problems } = await decodeBytes(name, bytes);
-  if (!source) return { reading: null, problems: [...problems] };
-  const reading = readText(source);
-  return { reading, problems: [...problems, ...reading.problems] };
+  readonly title: string;
+  /** What `newCase` makes a case file of: the texts that were read, and what was decided about them. */
+  readonly sources: readonly Pick<CaseSource, 'name' | 'text'>[];
+  readonly decisions: CaseDecisions;
+  /** Those of the case file; null without one. */
+  readonly views: CaseViews | null;
 }
 
 interface ChosenStructure {
@@ -45,12 +34,16 @@ interface ChosenStructure {
 function chooseStructure(
   readings: readonly Reading[],
   block: string | null,
+  decided: CaseDecisions['structure'],
   log: ProblemLog,
 ): ChosenStructure | null {
   const all = readings.flatMap((reading) =>
     reading.structures.map((crystal, index) => ({ crystal, reading, index })),
   );
-  const named = block === null ? all[0] : all.find(({ crystal }) => crystal.name === block);
+  const ofCase =
+    decided &&
+    all.find(({ reading, index }) => reading === readings[decided.source] && index === decided.index);
+  const named = block === null ? (ofCase ?? all[0]) : all.find(({ crystal }) => crystal.name === block);
   if (!named && block !== null && all.length > 0) {
     throw new UsageError(
       `--block ${block}: allowed are ${all.map(({ crystal }) => crystal.name).join(', ')}.`,
@@ -72,7 +65,7 @@ function chooseStructure(
       },
     );
   }
-  if (named && block === null && named.reading.structures.length > 1) {
+  if (named && block === null && !ofCase && named.reading.structures.length > 1) {
     const names = named.reading.structures.map(({ name }) => name);
     log.add('note', 'first-structure-taken', `${names.length} structures: ${named.crystal.name} was taken.`, {
       place: named.crystal.place,
@@ -84,19 +77,25 @@ function chooseStructure(
 }
 
 /**
- * Reads the files, takes the first structure (or `--block`) as the crystal, attaches the tensors of that structure and
- * of the other files, and derives the dossier.
+ * Reads the files, takes the first structure (or `--block`, or the one a case file names) as the crystal, attaches the
+ * tensors of that structure and of the other files, and derives the dossier. Options go before what a case file says.
  */
 export async function loadCase(common: CommonArguments, io: CommandIo): Promise<LoadedCase> {
   const log = new ProblemLog();
-  const readings: Reading[] = [];
-  for (const path of common.files) {
-    const { reading, problems } = await readOne(path, io);
-    problems.forEach((found) => log.push(found));
-    if (reading) readings.push(reading);
-  }
-  const chosen = chooseStructure(readings, common.block, log);
-  if (!chosen) return { dossier: null, problems: log.list() };
+  const read = await readFiles(common.files, io);
+  read.problems.forEach((found) => log.push(found));
+  const { readings, case: opened } = read;
+  const settings = settingsFor(opened, common.given, common.settings);
+  const decided = opened?.decisions.structure ?? null;
+  const chosen = chooseStructure(readings, common.block, decided, log);
+  const structure = chosen && { source: readings.indexOf(chosen.reading), index: chosen.index };
+  const about = {
+    title: opened?.title ?? read.sources[0]?.name ?? '',
+    sources: read.sources,
+    decisions: { structure, settings, accepted: opened?.decisions.accepted ?? [] },
+    views: opened?.views ?? null,
+  };
+  if (!chosen) return { dossier: null, problems: log.list(), ...about };
   const tensorSets = readings.flatMap((reading) => {
     if (reading === chosen.reading)
       return reading.tensorSets.filter((set) => set.structureIndex === chosen.index);
@@ -106,8 +105,8 @@ export async function loadCase(common: CommonArguments, io: CommandIo): Promise<
     crystal: chosen.crystal,
     tensorSets,
     tables: symmetryTablesFromBytes(io.symmetryModule()),
-    settings: common.settings,
+    settings,
     problems: log.list(),
   });
-  return { dossier, problems: dossier.problems };
+  return { dossier, problems: dossier.problems, ...about };
 }

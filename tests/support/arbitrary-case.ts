@@ -14,6 +14,7 @@ import type { TableSettings } from '#src/table/table-settings.ts';
 /** A finite number other than −0, which JSON writes as 0. */
 const real = fc.double({ min: -1e6, max: 1e6, noNaN: true }).map((x) => x + 0);
 const positive = fc.double({ min: 1e-6, max: 1e6, noNaN: true });
+const orNull = <T>(some: fc.Arbitrary<T>): fc.Arbitrary<T | null> => fc.option(some, { nil: null });
 const vector: fc.Arbitrary<Vec3> = fc.tuple(real, real, real);
 const isotope = fc.constantFrom('1H', '13C', '27Al', '29Si', '17O');
 const element = fc.constantFrom('H', 'C', 'Al', 'Si', 'O');
@@ -35,7 +36,7 @@ export const arbitrarySettings: fc.Arbitrary<DossierSettings> = fc.record({
   symmetry: fc.constantFrom('auto', 'file', 'find', 'none'),
   symmetryToleranceAngstrom: fc.double({ min: 1e-9, max: 1, noNaN: true }),
   mergeDistanceAngstrom: fc.double({ min: 0, max: 10, noNaN: true }).map((x) => x + 0),
-  frame: fc.option(fc.constantFrom('c-z-b-yz', 'a-x-b-xy')),
+  frame: orNull(fc.constantFrom('c-z-b-yz', 'a-x-b-xy')),
 });
 
 /** Picture options, each choice in some of its forms. */
@@ -47,19 +48,19 @@ export const arbitraryPicture: fc.Arbitrary<SceneOptions> = fc
       tensorElements: fc.oneof(fc.constantFrom('auto' as const, null), fc.array(element)),
       extent: fc.constantFrom('auto', 'cell', 'molecules', 'asymmetric', 'range', 'shell'),
       range: fc.tuple(vector, vector),
-      shell: fc.option(
+      shell: orNull(
         fc.record({
           siteIndices: fc.array(fc.nat(99)),
           radiusAngstrom: fc.double({ min: 0, max: 99, noNaN: true }),
         }),
       ),
       glyph: fc.constantFrom('auto', 'ellipsoid', 'polar', 'axes'),
-      tensorSites: fc.option(fc.array(fc.nat(999))),
+      tensorSites: orNull(fc.array(fc.nat(999))),
       tensorCopies: fc.constantFrom('all', 'first', 'orientations'),
       colourBy: fc.constantFrom('isotropic', 'span', 'coupling', 'site'),
       colourMap: fc.constantFrom('batlow', 'vik', null),
-      unitsPerAngstrom: fc.option(positive),
-      colourLimits: fc.option(fc.tuple(real, real)),
+      unitsPerAngstrom: orNull(positive),
+      colourLimits: orNull(fc.tuple(real, real)),
       labels: fc.boolean(),
       displacementProbability: fc.double({ min: 0.01, max: 0.99, noNaN: true }),
       disorder: fc.oneof(
@@ -116,12 +117,12 @@ export const arbitraryMeasurement: fc.Arbitrary<Measurement> = fc.oneof(
 );
 
 export const arbitraryTable: fc.Arbitrary<TableSettings> = fc.record({
-  columns: fc.option(fc.uniqueArray(fc.constantFrom('label', 'isotope', 'span'))),
-  sort: fc.option(fc.record({ key: fc.constant('span'), descending: fc.boolean() })),
+  columns: orNull(fc.uniqueArray(fc.constantFrom('label', 'isotope', 'span'))),
+  sort: orNull(fc.record({ key: fc.constant('span'), descending: fc.boolean() })),
   filter: fc.record({
-    elements: fc.option(fc.uniqueArray(element)),
+    elements: orNull(fc.uniqueArray(element)),
     text: fc.string({ maxLength: 5 }),
-    ranges: fc.array(fc.record({ key: fc.constant('span'), low: fc.option(real), high: fc.option(real) }), {
+    ranges: fc.array(fc.record({ key: fc.constant('span'), low: orNull(real), high: orNull(real) }), {
       maxLength: 2,
     }),
   }),
@@ -137,7 +138,7 @@ export const arbitraryNewCase: fc.Arbitrary<NewCase> = fc.record({
   title: fc.string(),
   sources: fc.array(source, { minLength: 1, maxLength: 3 }),
   decisions: fc.record({
-    structure: fc.option(fc.record({ source: fc.constant(0), index: fc.nat(9) }), { nil: null }),
+    structure: orNull(fc.record({ source: fc.constant(0), index: fc.nat(9) })),
     settings: arbitrarySettings,
     accepted: fc.array(
       fc.record({
@@ -146,7 +147,7 @@ export const arbitraryNewCase: fc.Arbitrary<NewCase> = fc.record({
           fc.constantFrom('tens', 'ms', '__proto__', 'constructor'),
           fc.record({
             quantity: fc.constantFrom('shielding', 'shift', 'efg'),
-            unit: fc.option(fc.constant('ppm')),
+            unit: orNull(fc.constant('ppm')),
           }),
           { noNullPrototype: true },
         ),
@@ -156,12 +157,12 @@ export const arbitraryNewCase: fc.Arbitrary<NewCase> = fc.record({
   }),
   views: fc.record({
     picture: arbitraryPicture,
-    camera: fc.option(arbitraryCamera),
+    camera: orNull(arbitraryCamera),
     look: arbitraryLook,
     saved: fc.array(
       fc.record({
         name: fc.constantFrom('along c', 'Übersicht'),
-        camera: fc.option(arbitraryCamera),
+        camera: orNull(arbitraryCamera),
         picture: arbitraryPicture,
         look: arbitraryLook,
       }),
