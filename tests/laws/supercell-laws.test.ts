@@ -12,59 +12,14 @@ import {
   transpose,
 } from '#src/base/matrix3.ts';
 import { applyOperation, formatOperation, parseImageOperation } from '#src/crystal/symmetry-operation.ts';
-import type { CrystalDossier, SiteDossier } from '#src/dossier/dossier.ts';
+import type { CrystalDossier } from '#src/dossier/dossier.ts';
 import { framedStructures } from '#tests/support/crystal-frames.ts';
 import { dossierOfText } from '#tests/support/derive.ts';
+import { field, numbers } from '#tests/support/site-numbers.ts';
 import type { CellModel } from '#tests/support/supercell-models.ts';
-import { asXyz, modelOfGroup, repeated } from '#tests/support/supercell-models.ts';
+import { asXyz, modelOfGroup, pyrite, repeated } from '#tests/support/supercell-models.ts';
 
 const derived = (model: CellModel): CrystalDossier => dossierOfText('model.xyz', asXyz(model));
-
-const fixed = (value: number, digits: number): string => {
-  const text = value.toFixed(digits);
-  return Number(text) === 0 ? (0).toFixed(digits) : text;
-};
-
-/** Every number of a site that the choice of cell, origin of the list or order of rows may not change. */
-function siteNumbers(site: SiteDossier, cells: number) {
-  const shielding = site.shielding!;
-  return {
-    element: site.element,
-    multiplicity: site.multiplicity / cells,
-    equivalents: site.equivalents.length / cells,
-    order: site.siteSymmetryOrder,
-    wyckoff: site.wyckoff,
-    siteSymmetry: site.siteSymmetry,
-    orientations: site.distinctOrientations,
-    // Directions are named in the given axes; what is forced is not.
-    forced: site.forced.replaceAll(/\[[^\]]*\]/g, '[]'),
-    values: [shielding.isotropic, ...shielding.components, shielding.span, shielding.antisymmetricNorm].map(
-      (x) => fixed(x, 4),
-    ),
-    skew: shielding.skew === null ? null : fixed(shielding.skew, 4),
-    asymmetry: shielding.asymmetry === null ? null : fixed(shielding.asymmetry, 4),
-    unprojected: fixed(frobeniusNorm(subtractMatrices(shielding.tensor, shielding.projected)), 4),
-    residual: fixed(shielding.symmetryResidual, 4),
-    spread: fixed(shielding.equivalentSpread ?? 0, 4),
-  };
-}
-
-function numbers(dossier: CrystalDossier, cells: number): string[] {
-  return dossier.sites.map((site) => JSON.stringify(siteNumbers(site, cells))).sort();
-}
-
-/** The tensor of every atom in the common Cartesian frame, with how many of `cells` small cells' atoms have it. */
-function field(dossier: CrystalDossier, cells: number): string[] {
-  const counts = new Map<string, number>();
-  for (const site of dossier.sites) {
-    for (const { rotation } of site.equivalents) {
-      const turned = multiply(multiply(rotation, site.shielding!.projected), transpose(rotation));
-      const key = `${site.element} ${turned.map((x) => fixed(x, 3)).join(' ')}`;
-      counts.set(key, (counts.get(key) ?? 0) + 1);
-    }
-  }
-  return [...counts].map(([key, count]) => `${key}: ${count / cells}`).sort();
-}
 
 /** By how much two positions differ modulo cell translations, in fractions of an edge. */
 const apart = (a: Vec3, b: Vec3): number =>
@@ -86,12 +41,6 @@ function expectTrueOperations(dossier: CrystalDossier): void {
     }
   }
 }
-
-/** Pyrite, FeS2: P a -3, a = 5.42 Å, S at x = 0.385 (Bragg's structure; values from memory). */
-const pyrite = modelOfGroup({ a: 5.42, b: 5.42, c: 5.42, alpha: 90, beta: 90, gamma: 90 }, '-P 2ac 2ab 3', [
-  ['Fe', [0, 0, 0]],
-  ['S', [0.385, 0.385, 0.385]],
-]);
 
 /** Invented: F d -3 m with atoms at -43m and on threefold axes. */
 const diamondLike = modelOfGroup({ a: 8.1, b: 8.1, c: 8.1, alpha: 90, beta: 90, gamma: 90 }, '-F 4vw 2vw 3', [

@@ -99,3 +99,13 @@ export function asXyz({ rows, atoms }: CellModel): string {
   const properties = 'species:S:1:pos:R:3:shielding:R:9';
   return `${atoms.length}\nLattice="${rows.join(' ')}" Properties=${properties}\n${lines.join('\n')}\n`;
 }
+
+/** Pyrite, FeS2: P a -3, a = 5.42 Å, S at x = 0.385 (Bragg's structure; values from memory). */
+export const pyrite = modelOfGroup(
+  { a: 5.42, b: 5.42, c: 5.42, alpha: 90, beta: 90, gamma: 90 },
+  '-P 2ac 2ab 3',
+  [
+    ['Fe', [0, 0, 0]],
+    ['S', [0.385, 0.385, 0.385]],
+  ],
+);
