@@ -34,7 +34,7 @@ void ring(ViewQuadric q, vec2 e) {
   if (vMarks.y < 0.5 || d > uRingPx.y + 1.0) discard;
   bool onRing = d >= uRingPx.x && d <= uRingPx.y;
   vec3 colour = vMarks.y > 1.5 ? uAccent : uHoverColour;
-  fragColour = vec4(srgbFromLinear(onRing ? colour : uPaper), 1.0);
+  fragColour = vec4(onRing ? srgbFromLinear(colour) : uPaper, 1.0);
   gl_FragDepth = 0.0;
 }
 
@@ -58,10 +58,10 @@ void main() {
   if (isOnPattern(u, int(vMarks.w + 0.5))) colour = mix(colour, inkOn(own, colour), patternInk);
   int bits = int(vMarks.x + 0.5);
   if (bits != 0) {
-    vec3 d = circleDistances(q, body, u, unit) / uPixelScale;
-    vec3 drawn = vec3(bits & 1, (bits >> 1) & 1, (bits >> 2) & 1);
     // finer lines on small ellipsoids, which they would cover
     float halfWidth = 0.5 * min(uCircleWidthPx, 0.5 + 0.055 * narrowest);
+    vec3 drawn = vec3(bits & 1, (bits >> 1) & 1, (bits >> 2) & 1);
+    vec3 d = circleDistances(q, body, u, unit) / uPixelScale;
     vec3 line = drawn * (1.0 - smoothstep(halfWidth - 0.35, halfWidth + 0.35, d));
     float strongest = max(line.x, max(line.y, line.z)) * smoothstep(4.0, 10.0, narrowest);
     colour = mix(colour, inkOn(own, colour), 0.92 * strongest);

@@ -73,7 +73,8 @@ const inLinearLight = ([red, green, blue]: Rgb): [number, number, number] => [
 ];
 
 export function applyTheme(uniforms: SharedUniforms, theme: RenderTheme): void {
-  uniforms.uPaper.value.set(...inLinearLight(theme.paper));
+  const [red, green, blue] = theme.paper;
+  uniforms.uPaper.value.set(red / 255, green / 255, blue / 255);
   uniforms.uLineColour.value.set(...inLinearLight(theme.line));
   uniforms.uAccent.value.set(...inLinearLight(theme.selected));
   uniforms.uHoverColour.value.set(...inLinearLight(theme.hovered));
