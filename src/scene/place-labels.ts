@@ -17,8 +17,8 @@ export interface ProjectedAnchor {
   readonly depthPx: number;
   /** Distance from the centre to the atom's outline in a direction on screen (unit vector, y downwards). */
   readonly outlinePx: (dx: number, dy: number) => number;
-  /** True where another atom covers this one's centre. */
-  readonly hidden: boolean;
+  /** Whether another atom covers this one's centre. */
+  readonly isHidden: () => boolean;
 }
 
 /** A label that found room: its box's left upper corner. */
@@ -39,7 +39,7 @@ export interface PlacedLabel {
 export type MeasureText = (text: string) => { readonly widthPx: number; readonly heightPx: number };
 
 /** Labels looked at, most; beyond that no picture has room. */
-const mostLabels = 1500;
+const mostLabels = 1200;
 
 /** Anchors of all labels in the viewport, front first. */
 export function projectAnchors(scene: Scene, camera: Camera, viewport: Viewport): ProjectedAnchor[] {
@@ -60,7 +60,7 @@ function anchorsOf(scene: Scene, p: Projection, viewport: Viewport, atoms: Scree
       pickId: label.pickId,
       ...at,
       outlinePx: outlineOf(scene, p, label, enlargement(p, at.depthPx), polarOf.get(label.pickId)),
-      hidden: isCovered(at, label.pickId, atoms),
+      isHidden: () => isCovered(at, label.pickId, atoms),
     });
   }
   return anchors.sort((one, other) => other.depthPx - one.depthPx || one.pickId - other.pickId);
@@ -68,6 +68,18 @@ function anchorsOf(scene: Scene, p: Projection, viewport: Viewport, atoms: Scree
 
 /** Outline of the atom's ellipsoid: d / √(dᵀ Σ⁻¹ d), Σ = M Mᵀ on screen; or of its polar surface where that is farther. */
 function outlineOf(
+  scene: Scene,
+  p: Projection,
+  label: LabelAnchor,
+  grown: number,
+  polar: number | undefined,
+): (dx: number, dy: number) => number {
+  let known: ((dx: number, dy: number) => number) | null = null;
+  // most anchors are never placed: their shape is turned only when asked for
+  return (dx, dy) => (known ??= turnedOutline(scene, p, label, grown, polar))(dx, dy);
+}
+
+function turnedOutline(
   scene: Scene,
   p: Projection,
   label: LabelAnchor,
@@ -98,10 +110,11 @@ function isCovered(
 ): boolean {
   let covered = false;
   atoms.within(at.xPx, at.yPx, at.xPx, at.yPx, (i) => {
-    if (covered || atoms.pickIds[i] === ownId || atoms.depthPx[i]! <= at.depthPx) return;
+    if (atoms.pickIds[i] === ownId || atoms.depthPx[i]! <= at.depthPx) return false;
     const x = (at.xPx - atoms.xPx[i]!) / atoms.halfWidthPx[i]!;
     const y = (at.yPx - atoms.yPx[i]!) / atoms.halfHeightPx[i]!;
     covered = x * x + y * y < 1;
+    return covered;
   });
   return covered;
 }
@@ -120,12 +133,12 @@ const gapsPx = [3, 18, 36] as const;
 const gapPrices = [0, 0.6, 1] as const;
 /** Best direction first: upper right, right, lower right, upper left, left, lower left, above, below. */
 const directions: readonly (readonly [number, number])[] = [
-  [0.71, -0.71],
+  [Math.SQRT1_2, -Math.SQRT1_2],
   [1, 0],
-  [0.71, 0.71],
-  [-0.71, -0.71],
+  [Math.SQRT1_2, Math.SQRT1_2],
+  [-Math.SQRT1_2, -Math.SQRT1_2],
   [-1, 0],
-  [-0.71, 0.71],
+  [-Math.SQRT1_2, Math.SQRT1_2],
   [0, -1],
   [0, 1],
 ];
@@ -157,8 +170,10 @@ export function placeLabels(
   const atoms = screenAtoms(scene, p, viewport);
   const previous = new Map(before.map(({ pickId, spot }) => [pickId, spot]));
   const room = freeRoom(viewport);
-  const shown = anchorsOf(scene, p, viewport, atoms).filter(({ hidden }) => !hidden);
-  for (const anchor of shown.slice(0, mostLabels)) {
+  let looked = 0;
+  for (const anchor of anchorsOf(scene, p, viewport, atoms)) {
+    if (anchor.isHidden()) continue;
+    if (looked++ >= mostLabels) break;
     const best = cheapest(anchor, measure(anchor.text), previous.get(anchor.pickId), room, atoms);
     if (best) room.take(best);
   }
@@ -179,7 +194,7 @@ function cheapest(
     if (price >= bestPrice) return;
     const label = labelAt(anchor, size, index);
     if (!room.isFree(label)) return;
-    const full = price + coverPrice * coveredShare(label, atoms);
+    const full = price + coverPrice * coveredShare(label, atoms, (bestPrice - price) / coverPrice);
     if (full >= bestPrice) return;
     best = label;
     bestPrice = full;
@@ -205,21 +220,24 @@ function labelAt(
   return { text, pickId, leftPx, topPx, widthPx, heightPx, leader, spot };
 }
 
-/** Share of a label's box that lies on other atoms' boxes, at most 1. */
-function coveredShare({ leftPx, topPx, widthPx, heightPx, pickId }: PlacedLabel, atoms: ScreenAtoms): number {
-  const [right, bottom] = [leftPx + widthPx, topPx + heightPx];
-  const seen = new Set<number>();
+/** Share of a label's box that lies on other atoms' boxes, at most 1; not counted on where it reaches `enough`. */
+function coveredShare(
+  { leftPx, topPx, widthPx, heightPx, pickId }: PlacedLabel,
+  atoms: ScreenAtoms,
+  enough: number,
+): number {
+  const [right, bottom, whole] = [leftPx + widthPx, topPx + heightPx, widthPx * heightPx];
   let area = 0;
   atoms.within(leftPx, topPx, right, bottom, (i) => {
-    if (atoms.pickIds[i] === pickId || seen.has(i)) return;
-    seen.add(i);
+    if (atoms.pickIds[i] === pickId) return false;
     const [x, y] = [atoms.xPx[i]!, atoms.yPx[i]!];
     const [w, h] = [atoms.halfWidthPx[i]!, atoms.halfHeightPx[i]!];
     const wide = Math.min(right, x + w) - Math.max(leftPx, x - w);
     const high = Math.min(bottom, y + h) - Math.max(topPx, y - h);
     if (wide > 0 && high > 0) area += wide * high;
+    return area >= Math.min(1, enough) * whole;
   });
-  return Math.min(1, area / (widthPx * heightPx));
+  return Math.min(1, area / whole);
 }
 
 interface FreeRoom {

@@ -1,12 +1,13 @@
-import type { Vec3 } from '#src/base/matrix3.ts';
+import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { apply } from '#src/base/matrix3.ts';
+import { length } from '#src/base/vector3.ts';
 import type { Viewport } from './camera.ts';
 import type { Projection } from './project.ts';
-import { enlargement, projectPoint } from './project.ts';
+import { enlargement } from './project.ts';
 import type { Scene } from './scene.ts';
 
 /** Side of a cell of the grid in which atoms are found by their place on screen, CSS pixels. */
-const gridPx = 48;
+const gridPx = 24;
 
 /**
  * Where everything drawn stands on screen, as flat arrays: centre, half widths of its box (CSS pixels, exact but for a few
@@ -20,13 +21,13 @@ export interface ScreenAtoms {
   readonly halfHeightPx: Float64Array;
   readonly depthPx: Float64Array;
   readonly pickIds: Uint32Array;
-  /** Calls back with the index of everything whose box meets a box, some of it more than once. */
+  /** Calls back once with the index of everything whose box meets a box in the viewport, until the callback says true. */
   readonly within: (
     left: number,
     top: number,
     right: number,
     bottom: number,
-    found: (i: number) => void,
+    found: (i: number) => boolean,
   ) => void;
 }
 
@@ -34,46 +35,47 @@ export interface ScreenAtoms {
 export function screenAtoms(scene: Scene, p: Projection, viewport: Viewport): ScreenAtoms {
   const { quadrics, polars } = scene;
   const count = quadrics.count + (polars?.count ?? 0);
-  const [xPx, yPx, halfWidthPx, halfHeightPx, depthPx] = [0, 1, 2, 3, 4].map(
-    () => new Float64Array(count),
-  ) as [Float64Array, Float64Array, Float64Array, Float64Array, Float64Array];
-  const pickIds = new Uint32Array(count);
-  const put = (i: number, centres: Float32Array, k: number, wide: number, high: number, pickId: number) => {
-    const at = projectPoint(p, [centres[3 * k]!, centres[3 * k + 1]!, centres[3 * k + 2]!]);
-    const scale = p.scale * enlargement(p, at.depthPx);
-    [xPx[i], yPx[i], depthPx[i]] = [at.xPx, at.yPx, at.depthPx];
-    [halfWidthPx[i], halfHeightPx[i]] = [wide * scale, high * scale];
-    pickIds[i] = pickId;
+  const boxes = {
+    count,
+    xPx: new Float64Array(count),
+    yPx: new Float64Array(count),
+    halfWidthPx: new Float64Array(count),
+    halfHeightPx: new Float64Array(count),
+    depthPx: new Float64Array(count),
+    pickIds: new Uint32Array(count),
   };
   const right: Vec3 = [p.rotation[0], p.rotation[1], p.rotation[2]];
   const up: Vec3 = [p.rotation[3], p.rotation[4], p.rotation[5]];
+  const put = (i: number, centres: Float32Array, k: number, wide: number, high: number, pickId: number) => {
+    const x = centres[3 * k]! - p.target[0];
+    const y = centres[3 * k + 1]! - p.target[1];
+    const z = centres[3 * k + 2]! - p.target[2];
+    const r = p.rotation;
+    const depthPx = p.scale * (r[6] * x + r[7] * y + r[8] * z);
+    const scale = p.scale * enlargement(p, depthPx);
+    boxes.xPx[i] = p.centreXPx + scale * (r[0] * x + r[1] * y + r[2] * z);
+    boxes.yPx[i] = p.centreYPx - scale * (r[3] * x + r[4] * y + r[5] * z);
+    boxes.depthPx[i] = depthPx;
+    boxes.halfWidthPx[i] = wide * scale;
+    boxes.halfHeightPx[i] = high * scale;
+    boxes.pickIds[i] = pickId;
+  };
   for (let i = 0; i < quadrics.count; i++) {
     const wide = reachAlong(quadrics.shapes, 9 * i, right);
     put(i, quadrics.centres, i, wide, reachAlong(quadrics.shapes, 9 * i, up), quadrics.pickIds[i]!);
   }
   for (let k = 0; polars && k < polars.count; k++) {
     const t = polarTensor(polars.tensors, k);
-    const [wide, high] = [Math.hypot(...apply(t, right)), Math.hypot(...apply(t, up))];
+    const [wide, high] = [length(apply(t, right)), length(apply(t, up))];
     put(quadrics.count + k, polars.centres, k, wide, high, polars.pickIds[k]!);
   }
-  const boxes = { count, xPx, yPx, halfWidthPx, halfHeightPx };
-  return { ...boxes, depthPx, pickIds, within: gridOver(boxes, viewport) };
+  return { ...boxes, within: gridOver(boxes, viewport) };
 }
 
 /** The tensor of polar surface k, row-major. */
-export function polarTensor(
-  tensors: Float32Array,
-  k: number,
-): [number, number, number, number, number, number, number, number, number] {
-  const [xx, yy, zz, xy, xz, yz] = tensors.subarray(6 * k, 6 * k + 6) as unknown as [
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-  ];
-  return [xx, xy, xz, xy, yy, yz, xz, yz, zz];
+export function polarTensor(tensors: Float32Array, k: number): Mat3 {
+  const at = (n: number): number => tensors[6 * k + n]!;
+  return [at(0), at(3), at(4), at(3), at(1), at(5), at(4), at(5), at(2)];
 }
 
 /** How far an ellipsoid reaches along a unit vector: |Aᵀ d|. */
@@ -90,28 +92,38 @@ type Boxes = Pick<ScreenAtoms, 'count' | 'xPx' | 'yPx' | 'halfWidthPx' | 'halfHe
 function gridOver(boxes: Boxes, { widthPx, heightPx }: Viewport): ScreenAtoms['within'] {
   const columns = Math.max(1, Math.ceil(widthPx / gridPx));
   const rows = Math.max(1, Math.ceil(heightPx / gridPx));
-  const cells = (left: number, top: number, right: number, bottom: number, visit: (cell: number) => void) => {
-    if (!(right >= 0 && bottom >= 0 && left <= widthPx && top <= heightPx)) return;
-    const [c0, c1] = [
-      Math.max(0, Math.floor(left / gridPx)),
-      Math.min(columns - 1, Math.floor(right / gridPx)),
-    ];
-    const [r0, r1] = [Math.max(0, Math.floor(top / gridPx)), Math.min(rows - 1, Math.floor(bottom / gridPx))];
-    for (let r = r0; r <= r1; r++) for (let c = c0; c <= c1; c++) visit(r * columns + c);
-  };
-  const ofBox = (i: number, visit: (cell: number) => void) => {
-    const [x, y] = [boxes.xPx[i]!, boxes.yPx[i]!];
-    const [w, h] = [boxes.halfWidthPx[i]!, boxes.halfHeightPx[i]!];
-    cells(x - w, y - h, x + w, y + h, visit);
-  };
+  const column = (x: number): number => Math.min(columns - 1, Math.max(0, Math.floor(x / gridPx)));
+  const row = (y: number): number => Math.min(rows - 1, Math.max(0, Math.floor(y / gridPx)));
+  const { xPx, yPx, halfWidthPx, halfHeightPx, count } = boxes;
   const starts = new Uint32Array(columns * rows + 1);
-  for (let i = 0; i < boxes.count; i++) ofBox(i, (cell) => (starts[cell + 1]! += 1));
+  const eachCell = (visit: (cell: number, i: number) => void): void => {
+    for (let i = 0; i < count; i++) {
+      const [left, top] = [xPx[i]! - halfWidthPx[i]!, yPx[i]! - halfHeightPx[i]!];
+      const [right, bottom] = [xPx[i]! + halfWidthPx[i]!, yPx[i]! + halfHeightPx[i]!];
+      if (!(right >= 0 && bottom >= 0 && left <= widthPx && top <= heightPx)) continue;
+      const [c1, r1] = [column(right), row(bottom)];
+      for (let r = row(top); r <= r1; r++) for (let c = column(left); c <= c1; c++) visit(r * columns + c, i);
+    }
+  };
+  eachCell((cell) => (starts[cell + 1]! += 1));
   for (let cell = 0; cell < columns * rows; cell++) starts[cell + 1]! += starts[cell]!;
   const next = starts.slice();
   const listed = new Uint32Array(starts.at(-1)!);
-  for (let i = 0; i < boxes.count; i++) ofBox(i, (cell) => (listed[next[cell]!++] = i));
-  return (left, top, right, bottom, found) =>
-    cells(left, top, right, bottom, (cell) => {
-      for (let k = starts[cell]!; k < starts[cell + 1]!; k++) found(listed[k]!);
-    });
+  eachCell((cell, i) => (listed[next[cell]!++] = i));
+  return (left, top, right, bottom, found) => {
+    const [c0, c1, r0, r1] = [column(left), column(right), row(top), row(bottom)];
+    for (let r = r0; r <= r1; r++) {
+      for (let c = c0; c <= c1; c++) {
+        const cell = r * columns + c;
+        for (let k = starts[cell]!; k < starts[cell + 1]!; k++) {
+          const i = listed[k]!;
+          const [x, y, w, h] = [xPx[i]!, yPx[i]!, halfWidthPx[i]!, halfHeightPx[i]!];
+          if (x + w < left || x - w > right || y + h < top || y - h > bottom) continue;
+          // of the cells both boxes share only the first counts
+          if (r !== Math.max(r0, row(y - h)) || c !== Math.max(c0, column(x - w))) continue;
+          if (found(i)) return;
+        }
+      }
+    }
+  };
 }
