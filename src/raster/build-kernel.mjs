@@ -1,5 +1,6 @@
 import { spawnSync } from 'node:child_process';
 import {
+  cpSync,
   existsSync,
   mkdtempSync,
   readFileSync,
@@ -14,13 +15,14 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
 /**
- * Compiles assembly/kernel.ts to WebAssembly and writes it as base64 text into a module, which the page, its Workers, Node
+ * Compiles scalar/ and assembly/, which stands in for files of the same name, to WebAssembly and writes it as base64 text into a module, which the page, its Workers, Node
  * and the tests all import alike, without a request. Nothing to do where the module is newer than its sources.
  */
 const folder = fileURLToPath(new URL('.', import.meta.url));
 const target = join(folder, 'kernel-text.generated.ts');
 const compiler = fileURLToPath(new URL('../../node_modules/assemblyscript/bin/asc.js', import.meta.url));
-const sources = readdirSync(join(folder, 'assembly')).map((name) => join(folder, 'assembly', name));
+const parts = ['scalar', 'assembly'].map((name) => join(folder, name));
+const sources = parts.flatMap((part) => readdirSync(part).map((name) => join(part, name)));
 sources.push(join(folder, 'slots.ts'), fileURLToPath(import.meta.url));
 
 function isFresh() {
@@ -33,12 +35,16 @@ function compile() {
   const scratch = mkdtempSync(join(tmpdir(), 'ellipsite-kernel-'));
   try {
     const wasm = join(scratch, 'kernel.wasm');
+    const source = join(scratch, 'kernel');
+    for (const part of parts) cpSync(part, source, { recursive: true });
+    for (const name of ['number-types.d.ts', 'tsconfig.json']) rmSync(join(source, name), { force: true });
+    cpSync(join(folder, 'slots.ts'), join(scratch, 'slots.ts'));
     const options = ['--runtime', 'stub', '--importMemory', '--enable', 'simd', '--enable', 'bulk-memory'];
     const how = ['-O3', '--noAssert', '--use', 'abort=', '--disableWarning', '112'];
     const run = spawnSync(
       process.execPath,
-      [compiler, join(folder, 'assembly', 'kernel.ts'), '-o', wasm, ...options, ...how],
-      { cwd: folder, encoding: 'utf8' },
+      [compiler, join(source, 'kernel.ts'), '-o', wasm, ...options, ...how],
+      { cwd: scratch, encoding: 'utf8' },
     );
     if (run.status !== 0) throw new Error(`the kernel did not compile:\n${run.stdout}${run.stderr}`);
     const text = readFileSync(wasm).toString('base64');

@@ -1,9 +1,10 @@
+import { facetPass } from './scalar/triangle.ts';
+import { useMemory, viewsOf } from './scalar/memory.ts';
+import { linePass, ringPass } from './scalar/overlay.ts';
+import { prepareObjects } from './scalar/prepare.ts';
+import { keepIds, resolve } from './scalar/resolve.ts';
 import { samplesAcross, wantsIds } from './slots.ts';
 import { depthPass } from './twin/depth.ts';
-import { viewsOf } from './twin/memory.ts';
-import { linePass, ringPass } from './twin/overlay.ts';
-import { prepare } from './twin/prepare.ts';
-import { keepIds, resolve } from './twin/resolve.ts';
 import { shadePass } from './twin/shade.ts';
 
 /** What draws: works on a memory that starts with the parameter block of slots.ts. */
@@ -30,14 +31,19 @@ export function javaScriptKernel(): RasterKernel {
       }
       return views.b.buffer as ArrayBuffer;
     },
-    prepare: () => void prepare(views),
+    prepare() {
+      useMemory(views);
+      prepareObjects();
+    },
     strip(first, count) {
+      useMemory(views);
       depthPass(views, first, count);
       shadePass(views, first, count);
-      linePass(views, first, count);
-      ringPass(views, first, count);
-      if (views.i[samplesAcross]! > 1) resolve(views, first, count);
-      else if (views.i[wantsIds] === 1) keepIds(views, first, count);
+      linePass(first, count);
+      facetPass(first, count);
+      ringPass(first, count);
+      if (views.i[samplesAcross]! > 1) resolve(first, count);
+      else if (views.i[wantsIds] === 1) keepIds(first, count);
     },
   };
 }

@@ -94,8 +94,15 @@ class WorkerRasterClient implements RasterClient {
   }
 
   setScene(scene: RasterScene): void {
-    const { quadrics, cylinders, lines, bounds } = scene;
-    this.#scene = { quadrics, cylinders, lines, bounds };
+    const { quadrics, cylinders, lines, polars, facets, bounds } = scene;
+    this.#scene = {
+      quadrics,
+      cylinders,
+      lines,
+      ...(polars && { polars }),
+      ...(facets && { facets }),
+      bounds,
+    };
     this.#states = null;
     this.#local?.setScene(this.#scene);
     this.#tell({ kind: 'scene', scene: this.#scene });

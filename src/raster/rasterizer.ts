@@ -1,19 +1,22 @@
-import type { Scene } from '#src/scene/scene.ts';
+import { facetView } from '#src/scene/facet-view.ts';
+import { heightOfImage } from '#src/scene/perspective.ts';
 import type { RasterKernel } from './kernel.ts';
+import type { PolarPlan } from './polar-plan.ts';
+import { planPolars } from './polar-plan.ts';
+import type { RasterScene } from './scene-arrays.ts';
+import { emptyScene, meshArrays, sceneArrays } from './scene-arrays.ts';
 import * as S from './slots.ts';
-import { byteSteps, fillTables, fillTints } from './tints.ts';
 import type { RasterView } from './view.ts';
-import { fillView, pictureSize } from './view.ts';
+import { fillView, middleOf, pictureSize, sampleProjection } from './view.ts';
 
-/** The part of a scene that is drawn. */
-export type RasterScene = Pick<Scene, 'quadrics' | 'cylinders' | 'lines' | 'bounds'>;
+export type { RasterScene } from './scene-arrays.ts';
 
 /** Rows of a picture, top to bottom. */
 export interface RasterBand {
   readonly firstRow: number;
   readonly rowCount: number;
   readonly width: number;
-  /** RGBA, sRGB, opaque. */
+  /** RGBA, sRGB; opaque, or with straight alpha where the theme is transparent. */
   readonly pixels: Uint8ClampedArray<ArrayBuffer>;
 }
 
@@ -46,11 +49,13 @@ export function createRasterizer(kernel: RasterKernel): Rasterizer {
 
 class MemoryRasterizer implements Rasterizer {
   readonly #kernel: RasterKernel;
-  #scene: RasterScene = nothing;
+  #scene: RasterScene = emptyScene;
   #states: Uint8Array = new Uint8Array();
   /** Bytes from the start that hold the scene; what a picture needs comes after. */
   #sceneEnd = 0;
   #isLoaded = false;
+  /** Of the meshes that memory holds; -1 for none. */
+  #finestLevel = -1;
 
   constructor(kernel: RasterKernel) {
     this.#kernel = kernel;
@@ -81,25 +86,26 @@ class MemoryRasterizer implements Rasterizer {
 
   hits(view: RasterView): RasterHits {
     const { width, height } = pictureSize(view);
-    const buffer = this.#run({ ...view, samplesAcross: 1 }, 0, height, true);
+    const one = { ...view, samplesAcross: 1 };
+    const buffer = this.#run(one, 0, height, true);
     const i = new Int32Array(buffer);
     const size = 4 * width * height;
     const ids = new Uint32Array(buffer.slice(i[S.outIdsAt]!, i[S.outIdsAt]! + size));
     const depths = new Float32Array(buffer.slice(i[S.outDepthAt]!, i[S.outDepthAt]! + size));
-    const { quadrics, cylinders } = this.#scene;
+    const pickIds = [this.#scene.quadrics, this.#scene.cylinders, this.#scene.polars];
+    const { eyePx } = sampleProjection(one);
     for (let k = 0; k < ids.length; k++) {
-      const object = ids[k]! - 1;
-      if (object < 0) depths[k] = -Infinity;
-      else
-        ids[k] =
-          object < quadrics.count ? quadrics.pickIds[object]! : cylinders.pickIds[object - quadrics.count]!;
-      if (object >= 0) depths[k] = depths[k]! / view.pixelRatio;
+      let object = ids[k]! - 1;
+      depths[k] = object < 0 ? -Infinity : heightOfImage(depths[k]!, eyePx) / view.pixelRatio;
+      for (const batch of pickIds) {
+        if (object >= 0 && batch && object < batch.count) ids[k] = batch.pickIds[object]!;
+        object -= batch?.count ?? 0;
+      }
     }
     return { ids, depths };
   }
 
   #run(view: RasterView, firstRow: number, rowCount: number, wantsIds: boolean): ArrayBuffer {
-    if (!this.#isLoaded) this.#load();
     const across = view.samplesAcross;
     const { width, height } = pictureSize(view);
     if (Math.max(width, height) * across > largestSide) {
@@ -107,11 +113,13 @@ class MemoryRasterizer implements Rasterizer {
         `A picture of ${width} × ${height} pixels with ${across} × ${across} samples is too large: at most ${largestSide} samples a side.`,
       );
     }
-    const buffer = this.#plan(width * across, width, rowCount, across, wantsIds);
-    const i = new Int32Array(buffer);
-    fillView(new Float32Array(buffer), i, view, this.#scene);
     const first = firstRow * across;
     const end = (firstRow + rowCount) * across;
+    const polars = this.#planPolars(view, first, end);
+    if (!this.#isLoaded) this.#load();
+    const buffer = this.#plan(view, rowCount, wantsIds, polars);
+    const i = new Int32Array(buffer);
+    fillView(new Float32Array(buffer), i, view, this.#scene);
     i[S.firstRow] = first;
     i[S.endRow] = end;
     i[S.wantsIds] = wantsIds ? 1 : 0;
@@ -128,28 +136,13 @@ class MemoryRasterizer implements Rasterizer {
 
   /** Scene arrays, records and lists into memory. */
   #load(): void {
-    const { quadrics, cylinders, lines } = this.#scene;
-    const objects = quadrics.count + cylinders.count;
+    const { quadrics, cylinders, lines, polars } = this.#scene;
+    const objects = quadrics.count + cylinders.count + (polars?.count ?? 0);
     const places = new Places(S.blockBytes);
-    const arrays: readonly (readonly [slot: number, array: Float32Array | Uint8Array])[] = [
-      [S.centresAt, quadrics.centres],
-      [S.shapesAt, quadrics.shapes],
-      [S.circlesAt, quadrics.circles],
-      [S.quadricTintsAt, tintsOf(quadrics.colours)],
-      [S.startsAt, cylinders.starts],
-      [S.endsAt, cylinders.ends],
-      [S.radiiAt, cylinders.radii],
-      [S.startTintsAt, tintsOf(cylinders.startColours)],
-      [S.endTintsAt, tintsOf(cylinders.endColours)],
-      [S.lineStartsAt, lines.starts],
-      [S.lineEndsAt, lines.ends],
-    ];
-    const placed = arrays.map(([slot, array]) => ({ slot, array, at: places.take(array.byteLength) }));
-    const linear = new Float32Array(256);
-    const bytes = new Uint8Array(byteSteps + 1);
-    fillTables(linear, bytes);
-    placed.push({ slot: S.linearTableAt, array: linear, at: places.take(linear.byteLength) });
-    placed.push({ slot: S.bytesTableAt, array: bytes, at: places.take(bytes.byteLength) });
+    const meshes = meshArrays(this.#finestLevel);
+    const placed = [...sceneArrays(this.#scene), ...meshes.map((array) => [-1, array] as const)].map(
+      ([slot, array]) => ({ slot, array, at: places.take(array.byteLength) }),
+    );
     const empty: readonly (readonly [slot: number, bytes: number])[] = [
       [S.statesAt, quadrics.count],
       [S.markedAt, 4 * quadrics.count],
@@ -157,18 +150,24 @@ class MemoryRasterizer implements Rasterizer {
       [S.candidatesAt, 4 * S.entrySize * objects],
       [S.sortedAt, 4 * S.entrySize * objects],
       [S.binsAt, 4 * (S.binCount + 2)],
+      [S.meshTableAt, 8 * meshes.length],
+      [S.polarMeshesAt, 8 * (polars?.count ?? 0)],
     ];
     const reserved = empty.map(([slot, size]) => ({ slot, at: places.take(size) }));
     this.#sceneEnd = places.end;
     const buffer = this.#kernel.reserve(places.end);
     const i = new Int32Array(buffer);
-    for (const { slot, at } of [...placed, ...reserved]) i[slot] = at;
+    i.fill(0, 0, S.blockBytes / 4);
+    for (const { slot, at } of [...placed, ...reserved]) if (slot >= 0) i[slot] = at;
     for (const { array, at } of placed) {
       new Uint8Array(buffer).set(new Uint8Array(array.buffer, array.byteOffset, array.byteLength), at);
     }
+    const table = placed.filter(({ slot }) => slot < 0).flatMap(({ array, at }) => [at, array.length / 3]);
+    i.set(table, i[S.meshTableAt]! >> 2);
     i[S.quadricCount] = quadrics.count;
     i[S.cylinderCount] = cylinders.count;
     i[S.lineCount] = lines.count;
+    i[S.polarCount] = polars?.count ?? 0;
     this.#isLoaded = true;
     this.#loadStates();
   }
@@ -183,8 +182,33 @@ class MemoryRasterizer implements Rasterizer {
     i[S.markedCount] = count;
   }
 
-  /** Room for the buffers of a strip and the band's pixels. */
-  #plan(columns: number, width: number, rowCount: number, across: number, wantsIds: boolean): ArrayBuffer {
+  /** How finely polar surfaces are drawn; memory is filled anew where it lacks so fine a mesh. */
+  #planPolars(view: RasterView, firstRow: number, endRow: number): PolarPlan | null {
+    const { polars } = this.#scene;
+    if (!polars || polars.count === 0) return null;
+    const { width, height } = pictureSize(view);
+    const across = view.samplesAcross;
+    const plan = planPolars(
+      polars,
+      sampleProjection(view),
+      width * across,
+      height * across,
+      firstRow,
+      endRow,
+    );
+    if (plan.finestLevel > this.#finestLevel) {
+      this.#finestLevel = plan.finestLevel;
+      this.#isLoaded = false;
+    }
+    return plan;
+  }
+
+  /** Room for the buffers of a strip, the band's pixels and what else belongs to one picture; facets and meshes are filled in. */
+  #plan(view: RasterView, rowCount: number, wantsIds: boolean, polars: PolarPlan | null): ArrayBuffer {
+    const { width } = pictureSize(view);
+    const across = view.samplesAcross;
+    const columns = width * across;
+    const facets = this.#facets(view);
     const stride = (columns + S.tileSide + 3) & ~(S.tileSide - 1);
     const places = new Places(this.#sceneEnd);
     const strip = 4 * stride * S.stripRows;
@@ -198,13 +222,40 @@ class MemoryRasterizer implements Rasterizer {
       [S.pixelsAt, places.take(picture)],
       [S.outIdsAt, places.take(wantsIds ? picture : 0)],
       [S.outDepthAt, places.take(wantsIds ? picture : 0)],
+      [S.facetsAt, places.take(facets.byteLength)],
     ];
+    const vertices = places.take(polars?.vertexBytes ?? 0);
     const buffer = this.#kernel.reserve(places.end);
     const i = new Int32Array(buffer);
     for (const [slot, address] of at) i[slot] = address;
     i[S.stride] = stride;
     i[S.colourStride] = across > 1 ? stride : columns;
+    i[S.facetCount] = facets.length / S.facetSize;
+    i[S.polarScratchAt] = vertices;
+    new Float32Array(buffer).set(facets, i[S.facetsAt]! >> 2);
+    const meshes = polars?.meshes.map((word, k) => (k % 2 === 1 ? vertices + word : word));
+    if (meshes) i.set(meshes, i[S.polarMeshesAt]! >> 2);
     return buffer;
+  }
+
+  /** Corners in columns and rows, colour and opacity of each facet, the farther ones first. */
+  #facets(view: RasterView): Float32Array {
+    const batch = this.#scene.facets;
+    if (!batch || batch.count === 0) return new Float32Array();
+    const { count, corners, colours } = facetView(batch, sampleProjection(view));
+    const facets = new Float32Array(S.facetSize * count);
+    const [right, below] = middleOf(view);
+    for (let k = 0; k < count; k++) {
+      for (let corner = 0; corner < 3; corner++) {
+        const from = 9 * k + 3 * corner;
+        const to = S.facetSize * k + 3 * corner;
+        facets[to] = right + corners[from]!;
+        facets[to + 1] = below - corners[from + 1]!;
+        facets[to + 2] = corners[from + 2]!;
+      }
+      facets.set(colours.subarray(4 * k, 4 * k + 4), S.facetSize * k + 9);
+    }
+    return facets;
   }
 }
 
@@ -222,31 +273,3 @@ class Places {
     return at;
   }
 }
-
-function tintsOf(colours: Uint8Array): Float32Array {
-  const tints = new Float32Array((colours.length / 3) * S.tintSize);
-  fillTints(colours, tints);
-  return tints;
-}
-
-const nothing: RasterScene = {
-  quadrics: {
-    count: 0,
-    centres: new Float32Array(),
-    shapes: new Float32Array(),
-    colours: new Uint8Array(),
-    circles: new Uint8Array(),
-    pickIds: new Uint32Array(),
-  },
-  cylinders: {
-    count: 0,
-    starts: new Float32Array(),
-    ends: new Float32Array(),
-    radii: new Float32Array(),
-    startColours: new Uint8Array(),
-    endColours: new Uint8Array(),
-    pickIds: new Uint32Array(),
-  },
-  lines: { count: 0, starts: new Float32Array(), ends: new Float32Array(), widthPx: 1 },
-  bounds: { centre: [0, 0, 0], radiusAngstrom: 1 },
-};

@@ -27,6 +27,8 @@ export const selectedPixel = 13;
 export const hoveredPixel = 14;
 /** Samples in one row of the colours. */
 export const colourStride = 15;
+export const polarCount = 16;
+export const facetCount = 17;
 
 // addresses
 export const centresAt = 20;
@@ -55,6 +57,26 @@ export const linearTableAt = 42;
 export const bytesTableAt = 43;
 export const outIdsAt = 44;
 export const outDepthAt = 45;
+/** Bytes, one a quadric: share of its own colour, pattern; and tints of the rest. 0 where no quadric has such. */
+export const sharesAt = 46;
+export const patternsAt = 47;
+export const restTintsAt = 48;
+export const polarCentresAt = 49;
+export const polarTensorsAt = 50;
+export const positiveTintsAt = 51;
+export const negativeTintsAt = 52;
+/** Two words a polar surface: level of its mesh, -1 where it isn't drawn, and address of its vertices. */
+export const polarMeshesAt = 53;
+/** Four words a level: address and count of directions, address and count of triangles. */
+export const meshTableAt = 54;
+/** Facets from back to front, `facetSize` floats each. */
+export const facetsAt = 55;
+/** Cosine and sine of 2π·k/255 for k from 0 to 255. */
+export const circleTableAt = 56;
+/** Vertices of one polar surface at a time: of those whose own address it is. */
+export const polarScratchAt = 57;
+/** Object whose vertices stand there. */
+export const polarInScratch = 58;
 
 // floats
 /** Nine: crystal to view axes, row-major, times samples per Å. */
@@ -80,10 +102,27 @@ export const circleWidth = 86;
 export const rimWidth = 87;
 export const ringInner = 88;
 export const ringOuter = 89;
+/** 1 / (samples from the target to the eye); 0 without perspective. See src/scene/perspective.ts. */
+export const perEye = 90;
+/** As RimLine of src/scene/light.ts; `…Per` is 1 / (full − from). */
+export const rimInk = 91;
+export const rimFrom = 92;
+export const rimPer = 93;
+export const cylinderRimInk = 94;
+export const cylinderRimFrom = 95;
+export const cylinderRimPer = 96;
+export const cylinderRimWidth = 97;
+/** As leastNearness of src/scene/perspective.ts. */
+export const leastNearness = 98;
 
 // sizes of what the addresses lead to, in units of four bytes
 export const recordSize = 48;
 export const tintSize = 9;
+/** Of a polar surface's vertices: column, row, depth, signed radius. */
+export const vertexSize = 4;
+/** Of facets: column, row and depth of three corners, sRGB from 0 to 255, opacity. */
+export const facetSize = 13;
+export const meshSize = 4;
 /** Of candidates and sorted objects: object, first row, last row. */
 export const entrySize = 3;
 export const binCount = 4096;
@@ -117,6 +156,9 @@ export const qHalfWidth = 9;
 export const oNearest = 11;
 /** Half width of the outline's box. */
 export const oReach = 10;
+/** Middle row of the box and half its rows. */
+export const oBoxRow = 43;
+export const oBoxHalf = 44;
 export const qShear = 12;
 export const qPerYy = 13;
 /** Half the outline's smallest width, CSS pixels. */
@@ -135,6 +177,18 @@ export const qBits = 30;
 export const qIsDark = 31;
 /** Square of the distance beyond which a circle's line ends. */
 export const qCircleHighSquare = 32;
+/** Constant terms of the three u_k, which perspective brings. */
+export const qCircleBias = 33;
+/** Cosine and sine of the angle where the own colour ends; 1 where that is less than half a turn. */
+export const qShareCos = 36;
+export const qShareSin = 37;
+export const qIsNarrowShare = 38;
+/** 1 where all is of the own colour. */
+export const qIsWhole = 39;
+/** Pattern's number, and the share of its ink. */
+export const qPattern = 40;
+export const qPatternInk = 41;
+export const qRestIsDark = 42;
 
 // A cylinder's record.
 export const cColumn = 0;
@@ -159,3 +213,34 @@ export const cRimInk = 20;
 export const cRimLow = 21;
 export const cRimPer = 22;
 export const cFacing = 23;
+
+// In perspective a cylinder's 0, 1, 3, 4, 5, 9, 12 and 13 bound its image, and the following describe it, in view axes.
+/** Column and row of the image of its start. */
+export const pColumn = 24;
+export const pRow = 25;
+/** Direction of the axis. */
+export const pAxis = 26;
+/** From the start to the eye. */
+export const pToEye = 29;
+/** Components of (start to eye) × axis over the eye's distance. */
+export const pMomentX = 32;
+export const pMomentY = 33;
+/** The eye's place along the axis. */
+export const pEyeAlong = 34;
+export const pSize = 35;
+export const pRadius = 36;
+
+// A polar surface's record; 9 is cMiddle.
+export const sColumn = 0;
+export const sRow = 1;
+export const sDepth = 2;
+/** T in view axes, samples: xx, yy, zz, xy, xz, yz. */
+export const sTensor = 3;
+/** Centre in view axes, samples. */
+export const sCentre = 12;
+/** Bands in one sample, their ink, the rim's ink. */
+export const sBands = 20;
+export const sBandInk = 16;
+export const sRimInk = 17;
+export const sIsDark = 18;
+export const sNegativeIsDark = 19;

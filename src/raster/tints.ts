@@ -1,17 +1,6 @@
+import { linearLight, srgb } from '#src/scene/light.ts';
 import type { Rgb } from '#src/scene/theme.ts';
 import { tintSize } from './slots.ts';
-
-/** sRGB byte as linear light (IEC 61966-2-1). */
-export function linearLight(byte: number): number {
-  const c = byte / 255;
-  return c <= 0.04045 ? c / 12.92 : ((c + 0.055) / 1.055) ** 2.4;
-}
-
-/** Linear light as sRGB, 0 to 1. */
-export function srgb(light: number): number {
-  const x = Math.min(1, Math.max(0, light));
-  return x <= 0.0031308 ? 12.92 * x : 1.055 * x ** (1 / 2.4) - 0.055;
-}
 
 /** Brightest that light of shaders/chunks/_light.glsl becomes, rounded up. */
 const brightest = 1.33;

@@ -1,6 +1,9 @@
 import type { Camera, Viewport } from '#src/scene/camera.ts';
-import { pixelsPerAngstrom, viewRotation } from '#src/scene/camera.ts';
-import { projection, projectPoint } from '#src/scene/project.ts';
+import { viewRotation } from '#src/scene/camera.ts';
+import { rimLine } from '#src/scene/light.ts';
+import { leastNearness } from '#src/scene/perspective.ts';
+import type { Projection } from '#src/scene/project.ts';
+import { projection, viewPoint } from '#src/scene/project.ts';
 import type { Scene } from '#src/scene/scene.ts';
 import type { RenderTheme } from '#src/scene/theme.ts';
 import { ringPx } from '#src/scene/theme.ts';
@@ -30,6 +33,21 @@ export function pictureSize({ viewport, pixelRatio }: Pick<RasterView, 'viewport
   };
 }
 
+/** Projection into samples, x and y from the middle of the picture. */
+export function sampleProjection({ camera, viewport, pixelRatio, samplesAcross }: RasterView): Projection {
+  const ratio = pixelRatio * samplesAcross;
+  const p = projection(camera, viewport);
+  return { ...p, scale: p.scale * ratio, eyePx: p.eyePx * ratio, centreXPx: 0, centreYPx: 0 };
+}
+
+/** Column and row of the point that the camera looks at, 0.5 less than its place. */
+export function middleOf(view: RasterView): readonly [column: number, row: number] {
+  const { viewport, samplesAcross } = view;
+  const ratio = view.pixelRatio * samplesAcross;
+  const below = pictureSize(view).height * samplesAcross - (viewport.heightPx * ratio) / 2;
+  return [(viewport.widthPx * ratio) / 2 - 0.5, below - 0.5];
+}
+
 /** The view's part of the parameter block; the same numbers as the uniforms of src/render. */
 export function fillView(
   f: Float32Array,
@@ -37,16 +55,17 @@ export function fillView(
   view: RasterView,
   scene: Pick<Scene, 'bounds' | 'lines'>,
 ): void {
-  const { camera, viewport, theme, samplesAcross } = view;
+  const { camera, theme, samplesAcross } = view;
   const { width, height } = pictureSize(view);
   const ratio = view.pixelRatio * samplesAcross;
-  const scale = pixelsPerAngstrom(camera, viewport) * ratio;
-  const middle = projectPoint(projection(camera, viewport), scene.bounds.centre).depthPx * ratio;
+  const p = sampleProjection(view);
+  const { scale } = p;
+  const middle = viewPoint(p, scene.bounds.centre)[2];
   const reach = scene.bounds.radiusAngstrom * scale;
   i[S.columns] = width * samplesAcross;
   i[S.rows] = height * samplesAcross;
   i[S.samplesAcross] = samplesAcross;
-  i[S.paperPixel] = pixelOf(theme.paper);
+  i[S.paperPixel] = theme.transparent ? 0 : pixelOf(theme.paper);
   i[S.selectedPixel] = pixelOf(theme.selected);
   i[S.hoveredPixel] = pixelOf(theme.hovered);
   f.set(
@@ -54,8 +73,7 @@ export function fillView(
     S.turn,
   );
   f.set(camera.target, S.target);
-  f[S.middleColumn] = (viewport.widthPx * ratio) / 2 - 0.5;
-  f[S.middleRow] = height * samplesAcross - 0.5 - (viewport.heightPx * ratio) / 2;
+  f.set(middleOf(view), S.middleColumn);
   f[S.samplesPerAngstrom] = scale;
   f[S.pixelScale] = ratio;
   f[S.nearest] = middle + reach;
@@ -65,7 +83,21 @@ export function fillView(
   f.set(theme.line, S.lineColour);
   f[S.lineWidth] = scene.lines.widthPx;
   f[S.circleWidth] = theme.circleWidthPx;
-  f[S.rimWidth] = theme.rimWidthPx;
+  f[S.perEye] = 1 / p.eyePx;
+  f[S.leastNearness] = leastNearness;
+  fillRim(f, theme);
   f[S.ringInner] = ringPx[0];
   f[S.ringOuter] = ringPx[1];
+}
+
+function fillRim(f: Float32Array, theme: RenderTheme): void {
+  const rim = rimLine(theme);
+  f[S.rimWidth] = rim.widthPx;
+  f[S.rimInk] = rim.ink;
+  f[S.rimFrom] = rim.from;
+  f[S.rimPer] = 1 / (rim.full - rim.from);
+  f[S.cylinderRimWidth] = rim.cylinderWidthPx;
+  f[S.cylinderRimInk] = rim.cylinderInk;
+  f[S.cylinderRimFrom] = rim.cylinderFrom;
+  f[S.cylinderRimPer] = 1 / (rim.cylinderFull - rim.cylinderFrom);
 }

@@ -1,5 +1,7 @@
 import * as S from '../slots.ts';
-import { lanes, part, whole } from './memory.ts';
+import { lanes, part, real, whole } from './memory.ts';
+import { perspectiveCylinderSpan } from './perspective-cylinder.ts';
+import { drawPolar } from './polar.ts';
 
 /** As depthPass of ../twin/depth.ts, four samples a step. */
 export function depthPass(first: i32, count: i32): void {
@@ -70,7 +72,9 @@ function drawBetween(object: i32, r: i32, first: i32, top: i32, bottom: i32, lef
     const touched: i32 = tiles + 8 * k + 4;
     store<i32>(touched, load<i32>(touched) + 1);
   }
-  if (object < whole(S.quadricCount)) quadricRows(object, r, first, top, bottom, low, high);
+  const quadrics = whole(S.quadricCount);
+  if (object < quadrics) quadricRows(object, r, first, top, bottom, low, high);
+  else if (object >= quadrics + whole(S.cylinderCount)) drawPolar(object, r, first, top, bottom);
   else cylinderRows(object, r, first, top, bottom, low, high);
 }
 
@@ -159,7 +163,8 @@ function cylinderRows(object: i32, r: i32, first: i32, top: i32, bottom: i32, lo
     }
     const start = max<i32>(low, <i32>ceil<f32>(column + from));
     const end = min<i32>(high, <i32>floor<f32>(column + to));
-    cylinderSpan(object, r, dy, start, end, rowBytes * row);
+    if (real(S.perEye) > 0) perspectiveCylinderSpan(object, r, first + row, start, end, rowBytes * row);
+    else cylinderSpan(object, r, dy, start, end, rowBytes * row);
   }
 }
 

@@ -5,6 +5,7 @@ import { linePass, ringPass } from './overlay.ts';
 import { prepareObjects } from './prepare.ts';
 import { keepIds, resolve } from './resolve.ts';
 import { shadePass } from './shade.ts';
+import { facetPass } from './triangle.ts';
 
 export function prepare(): void {
   prepareObjects();
@@ -14,6 +15,7 @@ export function strip(first: i32, count: i32): void {
   depthPass(first, count);
   shadePass(first, count);
   linePass(first, count);
+  facetPass(first, count);
   ringPass(first, count);
   if (whole(samplesAcross) > 1) resolve(first, count);
   else if (whole(wantsIds) === 1) keepIds(first, count);

@@ -1,5 +1,8 @@
 import * as S from '../slots.ts';
-import { lanes, part, real, setPart, smooth, whole } from './memory.ts';
+import { fillQuadric } from './fill-quadric.ts';
+import { lanes, part, real, whole } from './memory.ts';
+import { perspectiveCylinderRun } from './perspective-cylinder.ts';
+import { polarRun } from './polar.ts';
 
 /** As inkOffset and inkScale of ../tints.ts. */
 const inkOffset: f32 = 14.025;
@@ -9,6 +12,7 @@ const inkScale: f32 = 269.025;
 export function shadePass(first: i32, count: i32): void {
   const columns = whole(S.columns);
   const quadrics = whole(S.quadricCount);
+  const solids = quadrics + whole(S.cylinderCount);
   const paper = i32x4.splat(whole(S.paperPixel));
   for (let row = 0; row < count; row++) {
     const ids: i32 = whole(S.idsAt) + ((row * whole(S.stride)) << 2);
@@ -22,6 +26,10 @@ export function shadePass(first: i32, count: i32): void {
         for (let k = x; k < end; k += 4) v128.store(colours + (k << 2), paper);
       } else if (id <= quadrics) {
         quadricRun(id - 1, first + row, x, end, colours, depth);
+      } else if (id > solids) {
+        polarRun(id - 1, first + row, x, end, colours, depth);
+      } else if (real(S.perEye) > 0) {
+        perspectiveCylinderRun(id - 1, first + row, x, end, colours, depth);
       } else {
         cylinderRun(id - 1, first + row, x, end, colours, depth);
       }
@@ -37,59 +45,6 @@ function runEnd(ids: i32, x: i32, columns: i32, id: i32): i32 {
   while (end + 4 <= columns && i32x4.all_true(i32x4.eq(v128.load(ids + (end << 2)), same))) end += 4;
   while (end < columns && load<i32>(ids + (end << 2)) === id) end += 1;
   return end;
-}
-
-/** One component of a turned semi-axis. */
-function axis(a: i32, row: i32): f32 {
-  const t: i32 = (S.turn + row) << 2;
-  return part(t, 0) * part(a, 0) + part(t, 1) * part(a, 3) + part(t, 2) * part(a, 6);
-}
-
-/** Row k of the inverse of the turned semi-axes is the cross product of the other two over the determinant. */
-function fillCircle(r: i32, k: i32, a: i32, p: i32, q: i32): void {
-  const px = axis(a + (p << 2), 0);
-  const py = axis(a + (p << 2), 3);
-  const pz = axis(a + (p << 2), 6);
-  const qx = axis(a + (q << 2), 0);
-  const qy = axis(a + (q << 2), 3);
-  const qz = axis(a + (q << 2), 6);
-  const own = a + (k << 2);
-  const x = py * qz - pz * qy;
-  const y = pz * qx - px * qz;
-  const z = px * qy - py * qx;
-  const per = <f32>1 / (axis(own, 0) * x + axis(own, 3) * y + axis(own, 6) * z);
-  const at: i32 = S.qCircles + 3 * k;
-  setPart(r, at, (x + z * part(r, S.qSlopeX)) * per);
-  setPart(r, at + 1, (y + z * part(r, S.qSlopeY)) * per);
-  setPart(r, at + 2, z * part(r, S.qHalfDepth) * per);
-}
-
-function fillQuadric(object: i32, r: i32): void {
-  const a: i32 = whole(S.shapesAt) + 36 * object;
-  fillCircle(r, 0, a, 1, 2);
-  fillCircle(r, 1, a, 2, 0);
-  fillCircle(r, 2, a, 0, 1);
-  const narrowest = part(r, S.qNarrowest);
-  const scale = real(S.pixelScale);
-  const halfWidth = <f32>0.5 * min<f32>(real(S.circleWidth), <f32>0.5 + <f32>0.055 * narrowest);
-  setPart(r, S.qCircleLow, (halfWidth - <f32>0.35) * scale);
-  setPart(r, S.qCirclePer, 1 / (<f32>0.7 * scale));
-  const high = (halfWidth + <f32>0.35) * scale;
-  setPart(r, S.qCircleHighSquare, high * high);
-  setPart(r, S.qCircleInk, <f32>0.92 * smooth(narrowest, 4, <f32>(1.0 / 6.0)));
-  setPart(r, S.qRimInk, <f32>0.52 * smooth(narrowest, 2, 0.25));
-  const rim = min<f32>(1, (real(S.rimWidth) + <f32>0.4) / narrowest);
-  setPart(r, S.qRimRest, rim * (2 - rim));
-  store<i32>(r + (S.qBits << 2), load<u8>(whole(S.circlesAt) + object));
-  const tint: i32 = whole(S.quadricTintsAt) + ((S.tintSize * object) << 2);
-  const scaled = f32x4(part(tint, 0), part(tint, 3), part(tint, 6), 0);
-  const linear = power24(f32x4.mul(scaled, f32x4.splat(1 / inkScale)));
-  const luminance =
-    <f32>0.2126 * f32x4.extract_lane(linear, 0) +
-    <f32>0.7152 * f32x4.extract_lane(linear, 1) +
-    <f32>0.0722 * f32x4.extract_lane(linear, 2);
-  setPart(r, S.qIsDark, luminance > <f32>0.14 ? 0 : 1);
-  setPart(r, S.oShaded, 1);
 }
 
 function power512(x: v128): v128 {
@@ -153,7 +108,10 @@ function pixels(red: v128, green: v128, blue: v128): v128 {
   return v128.or(v128.or(opaque, red), v128.or(i32x4.shl(green, 8), i32x4.shl(blue, 16)));
 }
 
-function fadeOf(z: v128): v128 {
+function fadeOf(imageDepth: v128): v128 {
+  const per = real(S.perEye);
+  let z = imageDepth;
+  if (per > 0) z = f32x4.div(z, f32x4.add(f32x4.mul(z, f32x4.splat(per)), f32x4.splat(1)));
   const far = share(f32x4.mul(f32x4.sub(f32x4.splat(real(S.nearest)), z), f32x4.splat(real(S.perDepth))));
   return f32x4.mul(far, f32x4.splat(real(S.depthCue)));
 }
@@ -188,14 +146,27 @@ function inkedColour(tint: i32, light: v128, ink: v128, white: v128, z: v128): v
   return pixels(red, green, inkedChannel(tint, 2, over, power, white, ink, fade));
 }
 
+/** The normal of the place itself, not of its image: realNormal of src/scene/perspective.ts, for z. */
+function realHeight(r: i32, nx: v128, ny: v128, nz: v128): v128 {
+  const right = f32x4.mul(nx, f32x4.splat(part(r, S.qColumn) - real(S.middleColumn)));
+  const up = f32x4.mul(ny, f32x4.splat(real(S.middleRow) - part(r, S.qRow)));
+  const sum = f32x4.add(f32x4.add(right, up), f32x4.mul(nz, lanes(r, S.qDepth)));
+  return f32x4.add(nz, f32x4.mul(f32x4.add(sum, f32x4.splat(1)), f32x4.splat(real(S.perEye))));
+}
+
 function quadricRun(object: i32, row: i32, start: i32, end: i32, colours: i32, depth: i32): void {
   const r: i32 = whole(S.recordsAt) + ((S.recordSize * object) << 2);
   if (part(r, S.oShaded) === 0) fillQuadric(object, r);
   const tint: i32 = whole(S.quadricTintsAt) + ((S.tintSize * object) << 2);
+  const restTint: i32 = whole(S.restTintsAt) + ((S.tintSize * object) << 2);
   const one = f32x4.splat(1);
   const zero = f32x4.splat(0);
   const bits = load<i32>(r + (S.qBits << 2));
   const isDark = part(r, S.qIsDark) === 1;
+  const isRestDark = part(r, S.qRestIsDark) === 1;
+  const isWhole = part(r, S.qIsWhole) === 1;
+  const pattern = load<i32>(r + (S.qPattern << 2));
+  const isPerspective = real(S.perEye) > 0;
   const dyOne = part(r, S.qRow) - <f32>row;
   const dy = f32x4.splat(dyOne);
   const kxx = lanes(r, S.qKxx);
@@ -211,9 +182,10 @@ function quadricRun(object: i32, row: i32, start: i32, end: i32, colours: i32, d
     const square = f32x4.add(f32x4.mul(dx, ex), f32x4.mul(dy, ey));
     const rest = f32x4.pmax(zero, f32x4.sub(one, square));
     const unit = f32x4.sqrt(rest);
-    const nz = f32x4.mul(unit, perHalf);
+    let nz = f32x4.mul(unit, perHalf);
     const nx = f32x4.sub(ex, f32x4.mul(lanes(r, S.qSlopeX), nz));
     const ny = f32x4.sub(ey, f32x4.mul(lanes(r, S.qSlopeY), nz));
+    if (isPerspective) nz = realHeight(r, nx, ny, nz);
     const norm = f32x4.add(f32x4.mul(nx, nx), f32x4.add(f32x4.mul(ny, ny), f32x4.mul(nz, nz)));
     const per = f32x4.div(one, f32x4.sqrt(norm));
     const light = softLight(f32x4.mul(nx, per), f32x4.mul(ny, per), f32x4.mul(nz, per));
@@ -221,16 +193,74 @@ function quadricRun(object: i32, row: i32, start: i32, end: i32, colours: i32, d
     const isRim = f32x4.lt(rest, rimRest);
     if (v128.any_true(isRim)) ink = rimInk(r, rest, ex, ey, isRim);
     const z = v128.load(depth + (x << 2));
-    let colour: v128;
-    const circle = bits === 0 ? zero : circleInk(r, bits, dx, dy, unit, ex, ey);
-    if (isDark && v128.any_true(circle)) {
-      colour = inkedColour(tint, light, ink, f32x4.mul(circle, f32x4.splat(0.55)), z);
-    } else {
-      ink = f32x4.mul(ink, f32x4.sub(one, f32x4.mul(circle, f32x4.splat(0.88))));
-      colour = colourOf(tint, light, ink, z);
+    let line = bits === 0 ? zero : circleInk(r, bits, dx, dy, unit, ex, ey);
+    if (pattern > 0) line = f32x4.pmax(line, patternInk(r, pattern, dx, dy, unit));
+    let colour = markedColour(tint, isDark, light, ink, line, z);
+    if (!isWhole) {
+      const own = ownShare(r, dx, dy, unit);
+      if (!i32x4.all_true(own)) {
+        colour = v128.bitselect(colour, markedColour(restTint, isRestDark, light, ink, line, z), own);
+      }
     }
     v128.store(colours + (x << 2), colour);
   }
+}
+
+/** Under the line of a circle or pattern: darker, or lighter on a dark colour. */
+function markedColour(tint: i32, isDark: bool, light: v128, ink: v128, line: v128, z: v128): v128 {
+  if (isDark && v128.any_true(line)) {
+    return inkedColour(tint, light, ink, f32x4.mul(line, f32x4.splat(0.55)), z);
+  }
+  const left = f32x4.sub(f32x4.splat(1), f32x4.mul(line, f32x4.splat(0.88)));
+  return colourOf(tint, light, f32x4.mul(ink, left), z);
+}
+
+/** Coordinate k on the own unit sphere, up to a factor. */
+function body(r: i32, k: i32, dx: v128, dy: v128, unit: v128): v128 {
+  const at = r + ((S.qCircles + 3 * k) << 2);
+  const flat = f32x4.add(f32x4.mul(lanes(at, 0), dx), f32x4.mul(lanes(at, 1), dy));
+  return f32x4.add(f32x4.add(flat, f32x4.mul(lanes(at, 2), unit)), lanes(r, S.qCircleBias + k));
+}
+
+/** As isOwn of ../scalar/fill-quadric.ts. */
+function ownShare(r: i32, dx: v128, dy: v128, unit: v128): v128 {
+  const zero = f32x4.splat(0);
+  const u0 = body(r, 0, dx, dy, unit);
+  const u1 = body(r, 1, dx, dy, unit);
+  const cross = f32x4.sub(f32x4.mul(lanes(r, S.qShareCos), u1), f32x4.mul(lanes(r, S.qShareSin), u0));
+  const isAbove = f32x4.ge(u1, zero);
+  const isBefore = f32x4.lt(cross, zero);
+  return part(r, S.qIsNarrowShare) === 1 ? v128.and(isAbove, isBefore) : v128.or(isAbove, isBefore);
+}
+
+function fraction(x: v128): v128 {
+  return f32x4.sub(x, f32x4.floor(x));
+}
+
+/** As isMarked of ../scalar/fill-quadric.ts, times the ink. */
+function patternInk(r: i32, pattern: i32, dx: v128, dy: v128, unit: v128): v128 {
+  const u0 = body(r, 0, dx, dy, unit);
+  const u1 = body(r, 1, dx, dy, unit);
+  const u2 = body(r, 2, dx, dy, unit);
+  const ink = lanes(r, S.qPatternInk);
+  const tiny = f32x4.splat(1e-20);
+  if (pattern === 1) {
+    const square = f32x4.add(f32x4.mul(u0, u0), f32x4.add(f32x4.mul(u1, u1), f32x4.mul(u2, u2)));
+    const norm = f32x4.pmax(f32x4.sqrt(f32x4.mul(square, f32x4.splat(3))), tiny);
+    const along = f32x4.div(f32x4.mul(f32x4.add(u0, f32x4.add(u1, u2)), f32x4.splat(3.5)), norm);
+    return v128.and(ink, f32x4.lt(fraction(along), f32x4.splat(0.5)));
+  }
+  const a0 = f32x4.abs(u0);
+  const a1 = f32x4.abs(u1);
+  const largest = f32x4.pmax(a0, f32x4.pmax(a1, f32x4.abs(u2)));
+  const isFirst = f32x4.eq(a0, largest);
+  const isThird = v128.andnot(f32x4.ne(a1, largest), isFirst);
+  const per = f32x4.div(f32x4.splat(2), f32x4.pmax(largest, tiny));
+  const half = f32x4.splat(0.5);
+  const x = f32x4.sub(fraction(f32x4.mul(v128.bitselect(u1, u0, isFirst), per)), half);
+  const y = f32x4.sub(fraction(f32x4.mul(v128.bitselect(u1, u2, isThird), per)), half);
+  const square = f32x4.add(f32x4.mul(x, x), f32x4.mul(y, y));
+  return v128.and(ink, f32x4.lt(square, f32x4.splat(0.09)));
 }
 
 function rimInk(r: i32, rest: v128, ex: v128, ey: v128, isRim: v128): v128 {
@@ -250,7 +280,8 @@ function circleSquare(r: i32, k: i32, dx: v128, dy: v128, unit: v128, per: v128,
   const x = lanes(at, 0);
   const y = lanes(at, 1);
   const z = lanes(at, 2);
-  const u = f32x4.add(f32x4.mul(x, dx), f32x4.add(f32x4.mul(y, dy), f32x4.mul(z, unit)));
+  const flat = f32x4.add(f32x4.mul(x, dx), f32x4.mul(y, dy));
+  const u = f32x4.add(f32x4.add(flat, f32x4.mul(z, unit)), lanes(r, S.qCircleBias + k));
   const steep = f32x4.mul(z, per);
   const gx = f32x4.sub(x, f32x4.mul(steep, ex));
   const gy = f32x4.sub(y, f32x4.mul(steep, ey));

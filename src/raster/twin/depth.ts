@@ -1,6 +1,8 @@
+import type { KernelViews } from '../scalar/memory.ts';
+import { wordAt } from '../scalar/memory.ts';
+import { perspectiveCylinderSpan } from '../scalar/perspective-cylinder.ts';
+import { drawPolar } from '../scalar/polar.ts';
 import * as S from '../slots.ts';
-import type { KernelViews } from './memory.ts';
-import { wordAt } from './memory.ts';
 
 /** Depth and object (number + 1) of every sample of a strip, nothing shaded yet. */
 export function depthPass(m: KernelViews, first: number, count: number): void {
@@ -70,8 +72,13 @@ function drawBetween(
   const high = Math.min(right, to * S.tileSide + S.tileSide - 1);
   const tile = wordAt(m, S.tilesAt) + S.tileSize * (tileRow * (i[S.stride]! / S.tileSide));
   for (let k = from; k <= to; k++) i[tile + S.tileSize * k + 1]! += 1;
+  const quadrics = i[S.quadricCount]!;
+  if (object >= quadrics + i[S.cylinderCount]!) {
+    drawPolar(object, 4 * record, first, top, bottom);
+    return;
+  }
   for (let row = top; row <= bottom; row++) {
-    if (object < i[S.quadricCount]!) quadricRow(m, object, record, first, row, low, high);
+    if (object < quadrics) quadricRow(m, object, record, first, row, low, high);
     else cylinderRow(m, object, record, first, row, low, high);
   }
 }
@@ -160,6 +167,10 @@ function cylinderRow(
   }
   const start = Math.max(low, Math.ceil(column + from));
   const end = Math.min(high, Math.floor(column + to));
+  if (f[S.perEye]! > 0) {
+    perspectiveCylinderSpan(object, 4 * r, first + row, start, end, 4 * row * i[S.stride]!);
+    return;
+  }
   const depth = wordAt(m, S.depthAt) + row * i[S.stride]!;
   const ids = wordAt(m, S.idsAt) + row * i[S.stride]!;
   for (let x = start; x <= end; x++) {

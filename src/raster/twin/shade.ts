@@ -1,13 +1,19 @@
+import { colourOf, softLight } from '../scalar/colour.ts';
+import { fillQuadric, isMarked, isOwn } from '../scalar/fill-quadric.ts';
+import type { KernelViews } from '../scalar/memory.ts';
+import { smooth, wordAt } from '../scalar/memory.ts';
+import { perspectiveCylinderRun } from '../scalar/perspective-cylinder.ts';
+import { polarRun } from '../scalar/polar.ts';
 import * as S from '../slots.ts';
-import { inkOffset, inkScale } from '../tints.ts';
-import type { KernelViews } from './memory.ts';
-import { smooth, wordAt } from './memory.ts';
 
 /** Colours of a strip from its depths and objects: every visible sample once, run by run. */
 export function shadePass(m: KernelViews, first: number, count: number): void {
-  const { i } = m;
+  const { f, i } = m;
   const columns = i[S.columns]!;
+  const quadrics = i[S.quadricCount]!;
+  const isPerspective = f[S.perEye]! > 0;
   for (let row = 0; row < count; row++) {
+    const depth = wordAt(m, S.depthAt) + row * i[S.stride]!;
     const ids = wordAt(m, S.idsAt) + row * i[S.stride]!;
     const colours = wordAt(m, S.coloursAt) + row * i[S.colourStride]!;
     for (let x = 0; x < columns;) {
@@ -15,106 +21,14 @@ export function shadePass(m: KernelViews, first: number, count: number): void {
       let end = x + 1;
       while (end < columns && i[ids + end] === id) end += 1;
       if (id === 0) i.fill(i[S.paperPixel]!, colours + x, colours + end);
-      else if (id <= i[S.quadricCount]!) quadricRun(m, id - 1, first, row, x, end, colours);
+      else if (id <= quadrics) quadricRun(m, id - 1, first, row, x, end, colours);
+      else if (id > quadrics + i[S.cylinderCount]!)
+        polarRun(id - 1, first + row, x, end, 4 * colours, 4 * depth);
+      else if (isPerspective) perspectiveCylinderRun(id - 1, first + row, x, end, 4 * colours, 4 * depth);
       else cylinderRun(m, id - 1, first, row, x, end, colours);
       x = end;
     }
   }
-}
-
-/** The rest of a quadric's record, needed only where it is seen. */
-function fillQuadric(m: KernelViews, object: number, r: number): void {
-  const { f, i, b } = m;
-  const a = wordAt(m, S.shapesAt) + 9 * object;
-  const t = S.turn;
-  const u: number[] = [];
-  for (let row = 0; row < 3; row++) {
-    for (let k = 0; k < 3; k++) {
-      const o = t + 3 * row;
-      u.push(f[o]! * f[a + k]! + f[o + 1]! * f[a + 3 + k]! + f[o + 2]! * f[a + 6 + k]!);
-    }
-  }
-  const cross = (p: number, q: number): readonly [number, number, number] => [
-    u[3 + p]! * u[6 + q]! - u[6 + p]! * u[3 + q]!,
-    u[6 + p]! * u[q]! - u[p]! * u[6 + q]!,
-    u[p]! * u[3 + q]! - u[3 + p]! * u[q]!,
-  ];
-  const rowsOfInverse = [cross(1, 2), cross(2, 0), cross(0, 1)];
-  const [c0] = rowsOfInverse;
-  const det = u[0]! * c0![0] + u[3]! * c0![1] + u[6]! * c0![2];
-  rowsOfInverse.forEach(([x, y, z], k) => {
-    const at = r + S.qCircles + 3 * k;
-    f[at] = (x + z * f[r + S.qSlopeX]!) / det;
-    f[at + 1] = (y + z * f[r + S.qSlopeY]!) / det;
-    f[at + 2] = (z * f[r + S.qHalfDepth]!) / det;
-  });
-  const narrowest = f[r + S.qNarrowest]!;
-  const scale = f[S.pixelScale]!;
-  const halfWidth = 0.5 * Math.min(f[S.circleWidth]!, 0.5 + 0.055 * narrowest);
-  f[r + S.qCircleLow] = (halfWidth - 0.35) * scale;
-  f[r + S.qCirclePer] = 1 / (0.7 * scale);
-  f[r + S.qCircleHighSquare] = ((halfWidth + 0.35) * scale) ** 2;
-  f[r + S.qCircleInk] = 0.92 * smooth(narrowest, 4, 1 / 6);
-  f[r + S.qRimInk] = 0.52 * smooth(narrowest, 2, 1 / 4);
-  const rim = Math.min(1, (f[S.rimWidth]! + 0.4) / narrowest);
-  f[r + S.qRimRest] = rim * (2 - rim);
-  i[r + S.qBits] = b[i[S.circlesAt]! + object]!;
-  const tint = wordAt(m, S.quadricTintsAt) + S.tintSize * object;
-  const linear = (k: number): number => power24(f[tint + 3 * k]! / inkScale);
-  f[r + S.qIsDark] = 0.2126 * linear(0) + 0.7152 * linear(1) + 0.0722 * linear(2) > 0.14 ? 0 : 1;
-  f[r + S.oShaded] = 1;
-}
-
-/** x^(5/12) in [0.003, 1], better than 3e-4. */
-export function power512(x: number): number {
-  const half = Math.sqrt(x);
-  const quarter = Math.sqrt(half);
-  return (
-    1.2705759888882475 * half +
-    0.11166797321960593 * quarter +
-    0.1716749964715031 * x -
-    0.5536525642542288 * half * quarter
-  );
-}
-
-/** x^2.4 in [0, 1], better than 1e-3. */
-export function power24(x: number): number {
-  return x * x * (0.3871972473784141 + x * (0.8560349965918098 - 0.24422505341382666 * x));
-}
-
-/** Light over the light of a surface that faces the viewer, as `softLight` of shaders/chunks/_light.glsl; z is the unit normal's. */
-function softLight(x: number, y: number, z: number): number {
-  const wrapped = 0.5 + 0.5 * (-0.42 * x + 0.6 * y + 0.68 * z);
-  const away = 1 - z;
-  return (0.16 + 0.84 * wrapped * wrapped) * (1 / 0.752704) * (1 - 0.25 * away * away);
-}
-
-/** A tint under light times ink (1: none) as a pixel, faded with depth. `white` is a share mixed in before `ink`. */
-function colourOf(
-  f: Float32Array,
-  tint: number,
-  light: number,
-  ink: number,
-  white: number,
-  z: number,
-): number {
-  const over = Math.max(0, light - 1);
-  const under = Math.min(1, light);
-  const fade = f[S.depthCue]! * Math.min(1, Math.max(0, (f[S.nearest]! - z) * f[S.perDepth]!));
-  const power = power512(white > 0 ? under : under * ink);
-  let pixel = 255 << 24;
-  for (let k = 0; k < 3; k++) {
-    const at = tint + 3 * k;
-    let value = (f[at]! + over * (f[at + 1]! + over * f[at + 2]!)) * power;
-    if (white > 0) {
-      const linear = power24(value / inkScale);
-      value = inkScale * power512((linear + (1 - linear) * white) * ink);
-    }
-    const byte = value - inkOffset;
-    const mixed = byte + (f[S.paper + k]! - byte) * fade;
-    pixel |= Math.min(255, Math.max(0, Math.floor(mixed + 0.5))) << (8 * k);
-  }
-  return pixel;
 }
 
 function quadricRun(
@@ -128,32 +42,71 @@ function quadricRun(
 ): void {
   const { f, i } = m;
   const r = wordAt(m, S.recordsAt) + S.recordSize * object;
-  if (f[r + S.oShaded] === 0) fillQuadric(m, object, r);
-  const tint = wordAt(m, S.quadricTintsAt) + S.tintSize * object;
+  if (f[r + S.oShaded] === 0) fillQuadric(object, 4 * r);
   const depth = wordAt(m, S.depthAt) + row * i[S.stride]!;
   const dy = f[r + S.qRow]! - (first + row);
   const perHalf = 1 / f[r + S.qHalfDepth]!;
+  const perEye = f[S.perEye]!;
+  const [right, up] = [f[r + S.qColumn]! - f[S.middleColumn]!, f[S.middleRow]! - f[r + S.qRow]!];
+  const isPlain = f[r + S.qIsWhole] === 1 && i[r + S.qPattern] === 0;
+  const look: Look = {
+    tint: 4 * (wordAt(m, S.quadricTintsAt) + S.tintSize * object),
+    isDark: f[r + S.qIsDark] === 1,
+    mark: 0,
+  };
   for (let x = start; x < end; x++) {
     const dx = x - f[r + S.qColumn]!;
     const ex = f[r + S.qKxx]! * dx + f[r + S.qKxy]! * dy;
     const ey = f[r + S.qKxy]! * dx + f[r + S.qKyy]! * dy;
     const rest = Math.max(0, 1 - (dx * ex + dy * ey));
     const unit = Math.sqrt(rest);
-    const nz = unit * perHalf;
-    const nx = ex - f[r + S.qSlopeX]! * nz;
-    const ny = ey - f[r + S.qSlopeY]! * nz;
+    const nx = ex - f[r + S.qSlopeX]! * unit * perHalf;
+    const ny = ey - f[r + S.qSlopeY]! * unit * perHalf;
+    let nz = unit * perHalf;
+    // the normal of the place itself, not of its image: realNormal of src/scene/perspective.ts
+    nz += (1 + nx * right + ny * up + nz * f[r + S.qDepth]!) * perEye;
     const per = 1 / Math.sqrt(nx * nx + ny * ny + nz * nz);
     const light = softLight(nx * per, ny * per, nz * per);
+    if (!isPlain) setLook(m, object, r, dx, dy, unit, look);
     const circle = i[r + S.qBits] === 0 ? 0 : circleInk(m, r, dx, dy, unit, ex, ey);
-    const isDark = f[r + S.qIsDark] === 1;
-    let ink = isDark ? 1 : 1 - 0.88 * circle;
+    const line = Math.max(circle, look.mark);
+    let ink = look.isDark ? 1 : 1 - 0.88 * line;
     if (rest < f[r + S.qRimRest]!) {
       const radius = Math.sqrt(1 - rest);
       const rim = ((1 - radius) * radius) / Math.sqrt(ex * ex + ey * ey) / f[S.pixelScale]!;
       ink *= 1 - f[r + S.qRimInk]! * (1 - smooth(rim, f[S.rimWidth]! - 0.4, 1 / 0.8));
     }
-    i[colours + x] = colourOf(f, tint, light, ink, isDark ? 0.55 * circle : 0, f[depth + x]!);
+    i[colours + x] = colourOf(look.tint, light, ink, look.isDark ? 0.55 * line : 0, f[depth + x]!);
   }
+}
+
+/** Which colour a sample has, and the ink of its pattern. */
+interface Look {
+  tint: number;
+  isDark: boolean;
+  mark: number;
+}
+
+function setLook(
+  m: KernelViews,
+  object: number,
+  r: number,
+  dx: number,
+  dy: number,
+  unit: number,
+  look: Look,
+): void {
+  const { f, i } = m;
+  const body = (k: number): number => {
+    const at = r + S.qCircles + 3 * k;
+    return f[at]! * dx + f[at + 1]! * dy + f[at + 2]! * unit + f[r + S.qCircleBias + k]!;
+  };
+  const [u0, u1, u2] = [body(0), body(1), body(2)];
+  const own = f[r + S.qIsWhole] === 1 || isOwn(4 * r, u0, u1);
+  look.tint = 4 * (wordAt(m, own ? S.quadricTintsAt : S.restTintsAt) + S.tintSize * object);
+  look.isDark = f[r + (own ? S.qIsDark : S.qRestIsDark)] === 1;
+  const pattern = i[r + S.qPattern]!;
+  look.mark = pattern > 0 && isMarked(pattern, u0, u1, u2) ? f[r + S.qPatternInk]! : 0;
 }
 
 /** Share of a circle's line in a sample, as `circleDistances` of shaders/chunks/_quadric.glsl gives it. */
@@ -172,7 +125,7 @@ function circleInk(
   for (let k = 0; k < 3; k++) {
     if ((i[r + S.qBits]! & (1 << k)) === 0) continue;
     const at = r + S.qCircles + 3 * k;
-    const u = f[at]! * dx + f[at + 1]! * dy + f[at + 2]! * unit;
+    const u = f[at]! * dx + f[at + 1]! * dy + f[at + 2]! * unit + f[r + S.qCircleBias + k]!;
     const steep = f[at + 2]! * per;
     const gx = f[at]! - steep * ex;
     const gy = f[at + 1]! - steep * ey;
@@ -194,8 +147,8 @@ function cylinderRun(
   const { f, i } = m;
   const r = wordAt(m, S.recordsAt) + S.recordSize * object;
   const offset = S.tintSize * (object - i[S.quadricCount]!);
-  const startTint = wordAt(m, S.startTintsAt) + offset;
-  const endTint = wordAt(m, S.endTintsAt) + offset;
+  const startTint = 4 * (wordAt(m, S.startTintsAt) + offset);
+  const endTint = 4 * (wordAt(m, S.endTintsAt) + offset);
   const depth = wordAt(m, S.depthAt) + row * i[S.stride]!;
   const tx = f[r + S.cAlongX]!;
   const ty = f[r + S.cAlongY]!;
@@ -219,6 +172,6 @@ function cylinderRun(
     const edge = 1 - smooth(radius - Math.abs(across), f[r + S.cRimLow]!, f[r + S.cRimPer]!);
     const isStart = isSide ? t < 0.5 * f[r + S.cSize]! : facing < 0;
     const tint = isStart ? startTint : endTint;
-    i[colours + x] = colourOf(f, tint, light, 1 - f[r + S.cRimInk]! * edge, 0, f[depth + x]!);
+    i[colours + x] = colourOf(tint, light, 1 - f[r + S.cRimInk]! * edge, 0, f[depth + x]!);
   }
 }
