@@ -4,6 +4,10 @@ export interface CommandIo {
   readonly readFile: (path: string) => Promise<Uint8Array>;
   readonly readStandardInput: () => Promise<Uint8Array>;
   readonly writeOut: (text: string) => void;
+  /** Bytes to standard output. */
+  readonly writeOutBytes: (bytes: Uint8Array) => void;
+  /** Writes a file; rejects with a sentence when it cannot be written. */
+  readonly writeFile: (path: string, bytes: Uint8Array) => Promise<void>;
   readonly writeError: (text: string) => void;
   /** Bytes of the symmetry module. */
   readonly symmetryModule: () => Uint8Array;

@@ -1,6 +1,6 @@
 #!/usr/bin/env node
 import { readFileSync } from 'node:fs';
-import { readFile } from 'node:fs/promises';
+import { readFile, writeFile } from 'node:fs/promises';
 import { createRequire } from 'node:module';
 import type { CommandIo } from './io.ts';
 import { main } from './run.ts';
@@ -32,10 +32,23 @@ async function bytesOf(path: string): Promise<Uint8Array> {
   }
 }
 
+async function keepBytes(path: string, bytes: Uint8Array): Promise<void> {
+  try {
+    await writeFile(path, bytes);
+  } catch (error) {
+    const code = (error as NodeJS.ErrnoException).code;
+    if (code === 'ENOENT') throw new Error('its folder does not exist.', { cause: error });
+    if (code === 'EISDIR') throw new Error('this is a folder; name a file.', { cause: error });
+    throw new Error(`cannot be written (${code ?? 'unknown reason'}).`, { cause: error });
+  }
+}
+
 const io: CommandIo = {
   readFile: bytesOf,
   readStandardInput: standardInput,
   writeOut: (text) => void process.stdout.write(text),
+  writeOutBytes: (bytes) => void process.stdout.write(bytes),
+  writeFile: keepBytes,
   writeError: (text) => void process.stderr.write(text),
   symmetryModule: () => readFileSync(require.resolve('@spglib/moyo-wasm/moyo_wasm_bg.wasm')),
 };

@@ -1,10 +1,13 @@
 import { latticeSettings } from '#src/crystal/settings.ts';
 import { sitesCommand } from './commands/sites.ts';
+import { figureHelp } from './figure-help.ts';
 import type { CommandIo } from './io.ts';
 import { exitStatus, UsageError } from './io.ts';
 
 interface Command {
   readonly summary: string;
+  /** Its own options, with an example. */
+  readonly help?: string;
   readonly run: (argv: readonly string[], io: CommandIo) => Promise<number>;
 }
 
@@ -13,6 +16,12 @@ const commands: Readonly<Record<string, Command>> = {
   sites: {
     summary: 'one row a site: symmetry, tensors in every convention, equivalent atoms',
     run: sitesCommand,
+  },
+  figure: {
+    summary: 'a picture to take away: ellipsite figure crystal.cif tensors.xyz --view c -o crystal.png',
+    help: figureHelp,
+    // Loaded when asked for, so that the table does not wait for the renderer.
+    run: async (argv, io) => (await import('./commands/figure.ts')).figureCommand(argv, io),
   },
 };
 
@@ -49,11 +58,11 @@ export async function main(argv: readonly string[], io: CommandIo, version: stri
     io.writeOut(`${version}\n`);
     return exitStatus.clean;
   }
+  const command = name === undefined || !Object.hasOwn(commands, name) ? undefined : commands[name];
   if (name === '--help' || name === 'help' || rest.includes('--help')) {
-    io.writeOut(usage());
+    io.writeOut(command?.help ? `${command.help}\n\n${options}\n` : usage());
     return exitStatus.clean;
   }
-  const command = name === undefined || !Object.hasOwn(commands, name) ? undefined : commands[name];
   try {
     if (!command)
       throw new UsageError(name === undefined ? 'Name a command.' : `No command is called ${name}.`);

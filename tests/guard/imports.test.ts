@@ -24,7 +24,7 @@ const mayImport: Readonly<Record<string, readonly string[]>> = {
   ],
   'src/cli': [
     ...['src/base', 'src/data', 'src/bytes', 'src/crystal', 'src/tensor', 'src/readers'],
-    ...['src/attach', 'src/dossier', 'src/scene', 'src/case'],
+    ...['src/attach', 'src/dossier', 'src/scene', 'src/case', 'src/raster', 'src/figure'],
   ],
   components: ['src/store', 'src/scene', 'src/table', 'src/render', 'src/figure', 'samples'],
   shaders: [],

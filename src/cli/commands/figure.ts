@@ -1,0 +1,168 @@
+import { problem } from '#src/base/problem.ts';
+import type { Problem } from '#src/base/problem.ts';
+import { defaultCaseViews, newCase } from '#src/case/new-case.ts';
+import { serialiseCase } from '#src/case/serialise-case.ts';
+import { figurePng } from '#src/figure/figure-png.ts';
+import type { FigureRequest, FigureView } from '#src/figure/figure-request.ts';
+import type { FigureSize } from '#src/figure/figure-size.ts';
+import { pixelSize, settleSize, sizeFault } from '#src/figure/figure-size.ts';
+import { layoutFigure } from '#src/figure/layout.ts';
+import type { Sheet } from '#src/figure/sheet.ts';
+import { createRasterizer } from '#src/raster/rasterizer.ts';
+import { bestKernel } from '#src/raster/wasm-kernel.ts';
+import { buildScene } from '#src/scene/build-scene.ts';
+import { parseLookAlong } from '#src/scene/look-along.ts';
+import type { Scene } from '#src/scene/scene.ts';
+import type { SceneOptions } from '#src/scene/scene-options.ts';
+import type { OwnValues } from '../arguments.ts';
+import { parseArguments } from '../arguments.ts';
+import {
+  contentsOf,
+  directionWords,
+  figureOptions,
+  lookOf,
+  outputOf,
+  sizeOf,
+  textOf,
+  themeOf,
+  withSignedValues,
+} from '../figure-options.ts';
+import { sceneOptionsOf, sceneOptionWords } from '../figure-scene-options.ts';
+import type { CommandIo } from '../io.ts';
+import { UsageError } from '../io.ts';
+import type { LoadedCase } from '../load-case.ts';
+import { loadCase } from '../load-case.ts';
+import { problemLine, statusOf } from '../print-problems.ts';
+
+/** What `--json` tells of a figure that was written. */
+interface FigureFacts {
+  readonly file: string;
+  readonly widthPx: number;
+  readonly heightPx: number;
+  readonly dpi: number | null;
+  readonly caption: string;
+  readonly scale: string | null;
+  readonly labelsLeftOut: number;
+  readonly holdsCase: boolean;
+}
+
+/** `ellipsite figure FILE… -o picture.png [options]`: a picture to take away, drawn without a browser. */
+export async function figureCommand(argv: readonly string[], io: CommandIo): Promise<number> {
+  const { common, own } = parseArguments(withSignedValues(argv), { ...figureOptions, ...sceneOptionWords });
+  const output = outputOf(own);
+  if (output === '-' && common.json)
+    throw new UsageError('-o - and --json both write to standard output; give one of them.');
+  const size = settleSize(sizeOf(own));
+  const theme = themeOf(own);
+  const loaded = await loadCase(common, io);
+  const { dossier } = loaded;
+  if (!dossier) return report(loaded.problems, null, common.json, io);
+  const views = loaded.views ?? defaultCaseViews;
+  const options = sceneOptionsOf(own, views.picture, dossier);
+  const scene = buildScene(dossier, options);
+  const look = lookOf(own, views.look);
+  const request: FigureRequest = {
+    ...size,
+    theme,
+    transparent: own['transparent'] === true,
+    view: viewOf(own, scene, loaded),
+    contents: contentsOf(own),
+    look,
+    title: textOf(own, 'title') ?? '',
+  };
+  const sheet = layoutFigure(scene, request);
+  const pixels = sizeWithin(sheet, size);
+  const caseText = own['no-case'] === true ? null : await caseTextOf(loaded, options, request, sheet);
+  const png = await figurePng(
+    { scene, request, sheet, pxPerPt: size.pxPerPt },
+    { dpi: size.dpi, title: request.title || dossier.name, caseText },
+    createRasterizer(bestKernel()),
+  );
+  if (output === '-') io.writeOutBytes(png);
+  else await keep(output, png, io);
+  const facts: FigureFacts = {
+    file: output,
+    ...pixels,
+    dpi: size.dpi,
+    caption: scene.caption,
+    scale: scene.scaleStatement,
+    labelsLeftOut: sheet.labelsLeftOut,
+    holdsCase: caseText !== null,
+  };
+  return report([...loaded.problems, ...figureProblems(own, scene, sheet)], facts, common.json, io);
+}
+
+async function keep(path: string, bytes: Uint8Array, io: CommandIo): Promise<void> {
+  try {
+    await io.writeFile(path, bytes);
+  } catch (error) {
+    throw new UsageError(`${path}: ${error instanceof Error ? error.message : String(error)}`);
+  }
+}
+
+function sizeWithin(sheet: Sheet, { pxPerPt }: FigureSize): { widthPx: number; heightPx: number } {
+  const pixels = pixelSize(sheet, pxPerPt);
+  const fault = sizeFault(pixels.widthPx, pixels.heightPx);
+  if (fault !== null) throw new UsageError(fault);
+  return pixels;
+}
+
+/** The direction asked for; else the camera of the case file, all of the crystal; else the first view. */
+function viewOf(own: OwnValues, scene: Scene, { views }: LoadedCase): FigureView {
+  const asked = textOf(own, 'view');
+  if (asked === undefined) {
+    const camera = views?.camera;
+    if (!camera) return { kind: 'direction', towards: null, words: null };
+    return { kind: 'camera', camera, viewport: { widthPx: 1, heightPx: 1 }, wholeCrystal: true, words: null };
+  }
+  const found = parseLookAlong(directionWords(asked), scene.axes);
+  if ('fault' in found) throw new UsageError(`--view ${asked}: ${found.fault} Also uvw:1,1,0 and hkl:1,0,0.`);
+  return { kind: 'direction', towards: found.towards, words: `viewed along ${found.words}` };
+}
+
+/** The case as it would be saved now: texts, decisions, and this picture as its view. */
+async function caseTextOf(
+  loaded: LoadedCase,
+  picture: SceneOptions,
+  { look }: FigureRequest,
+  { crystal }: Sheet,
+): Promise<string> {
+  const { title, sources, decisions } = loaded;
+  const views = { ...(loaded.views ?? defaultCaseViews), picture, look, camera: crystal.camera };
+  return serialiseCase(await newCase({ title, sources, decisions, views }));
+}
+
+/** What the picture could not do as asked. */
+function figureProblems(own: OwnValues, scene: Scene, { labelsLeftOut }: Sheet): Problem[] {
+  const found: Problem[] = [];
+  const asked = textOf(own, 'quantity');
+  if (asked !== undefined && scene.scale?.quantity !== asked) {
+    const drawn = scene.scale === null ? 'No tensors are drawn' : `${scene.scale.quantity} is drawn instead`;
+    found.push(
+      problem('warning', 'figure-quantity-missing', `There are no ${asked} tensors here. ${drawn}.`, {
+        got: asked,
+      }),
+    );
+  }
+  if (labelsLeftOut > 0) {
+    const count = labelsLeftOut === 1 ? '1 label' : `${labelsLeftOut} labels`;
+    found.push(
+      problem('note', 'figure-labels-left-out', `${count} found no room or belong to hidden atoms.`, {
+        hint: 'A larger picture, smaller --text-pt or another --view makes room.',
+      }),
+    );
+  }
+  return found;
+}
+
+function report(
+  problems: readonly Problem[],
+  facts: FigureFacts | null,
+  json: boolean,
+  io: CommandIo,
+): number {
+  if (json)
+    io.writeOut(`${JSON.stringify({ schema: 'ellipsite/figure/1', figure: facts, problems }, null, 2)}\n`);
+  else problems.forEach((found) => io.writeError(`${problemLine(found)}\n`));
+  return statusOf(problems);
+}

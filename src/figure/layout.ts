@@ -1,0 +1,300 @@
+import type { Camera, Viewport } from '#src/scene/camera.ts';
+import { pixelsPerAngstrom } from '#src/scene/camera.ts';
+import { firstCamera, fit, lookAlong } from '#src/scene/framing.ts';
+import { placeLabels } from '#src/scene/place-labels.ts';
+import type { Scene } from '#src/scene/scene.ts';
+import type { Block, BlockStyle } from './blocks.ts';
+import { axesBlock, keyBlock, legendBlock, scaleBlock, stacked, textBlock } from './blocks.ts';
+import type { FigureRequest } from './figure-request.ts';
+import { figureThemes, thinnestLinePt } from './figure-theme.ts';
+import type { TextRun } from './font/set-text.ts';
+import { baselineOf, breakLines, lineHeight, runsOf, setText } from './font/set-text.ts';
+import type { CrystalPlace, Sheet, SheetItem } from './sheet.ts';
+
+/** A rectangle of the sheet, points. */
+interface Place {
+  readonly xPt: number;
+  readonly yPt: number;
+  readonly widthPt: number;
+  readonly heightPt: number;
+}
+
+/** Share of the crystal's place left free on each side; more where labels stand round the atoms. */
+const crystalMargin = { plain: 0.02, labelled: 0.055 } as const;
+
+/** Of the text size: margin of the sheet, and gaps between blocks. */
+const marginEm = 0.9;
+const gapEm = 1.1;
+/** Widest notes beside a colour bar below the crystal, and widest column beside it. */
+const noteEm = 9.2;
+const columnEm = 15.5;
+
+/** Height over width that a figure takes by itself. */
+const heightShare = { least: 0.35, most: 1.25 } as const;
+
+/**
+ * Lays out a figure: the crystal as large as it can be, what belongs to it in a strip below or in a column beside it, whichever
+ * leaves the crystal larger. Pure: the same scene and request give the same sheet.
+ */
+export function layoutFigure(scene: Scene, request: FigureRequest): Sheet {
+  const orientation = cameraFor(scene, request, { widthPx: 400, heightPx: 400 });
+  const heightPt = request.heightPt ?? naturalHeight(scene, request, orientation);
+  const below = arranged(scene, request, heightPt, 'below');
+  const beside = request.heightPt === null ? below : arranged(scene, request, heightPt, 'beside');
+  const chosen = scaleOf(beside) > scaleOf(below) ? beside : below;
+  const labels = labelItems(scene, request, chosen.crystal);
+  return {
+    widthPt: request.widthPt,
+    heightPt,
+    crystal: chosen.crystal,
+    items: [...labels.items, ...chosen.items],
+    labelsLeftOut: labels.leftOut,
+  };
+}
+
+interface Arrangement {
+  readonly crystal: CrystalPlace;
+  readonly items: readonly SheetItem[];
+}
+
+/** Points for one Å. */
+function scaleOf({ crystal }: Arrangement): number {
+  return pixelsPerAngstrom(crystal.camera, crystal.viewport) * crystal.pointsPerCssPx;
+}
+
+/** The scene's CSS pixel is a twelfth of the letters' size: lines and letters keep their proportion at every size. */
+function cssPixelPt(request: FigureRequest): number {
+  return request.textPt / 12;
+}
+
+function arranged(
+  scene: Scene,
+  request: FigureRequest,
+  heightPt: number,
+  kind: 'below' | 'beside',
+): Arrangement {
+  const { widthPt, textPt } = request;
+  const margin = marginEm * textPt;
+  const head = headBlock(request);
+  const foot = captionBlock(scene, request);
+  const top = head ? margin + head.heightPt : 0;
+  const bottom = heightPt - (foot ? foot.heightPt + margin : 0);
+  const blocks = blocksFor(scene, request, kind, null);
+  const strip = kind === 'below' ? flowed(blocks, widthPt - 2 * margin, textPt) : column(blocks, textPt);
+  const isEmpty = blocks.length === 0;
+  const taken = isEmpty ? 0 : (kind === 'below' ? strip.heightPt : strip.widthPt) + margin;
+  const place: Place = {
+    xPt: 0,
+    yPt: top,
+    widthPt: Math.max(textPt, widthPt - (kind === 'beside' ? taken : 0)),
+    heightPt: Math.max(textPt, bottom - top - (kind === 'below' ? taken : 0)),
+  };
+  const crystal = crystalIn(scene, request, kind === 'beside' ? centred(scene, request, place) : place);
+  // The ruler's length is known only now; the room for it was reserved.
+  const final = blocksFor(scene, request, kind, scaleOf({ crystal, items: [] }));
+  const items =
+    kind === 'below'
+      ? flowed(final, widthPt - 2 * margin, textPt).itemsAt(margin, crystal.yPt + crystal.heightPt)
+      : beside(final, textPt, crystal, bottom);
+  return {
+    crystal,
+    items: [...(head?.itemsAt(margin, margin) ?? []), ...items, ...(foot?.itemsAt(margin, bottom) ?? [])],
+  };
+}
+
+function beside(blocks: readonly Block[], textPt: number, place: Place, bottom: number): SheetItem[] {
+  const stack = column(blocks, textPt);
+  const yPt = Math.max(place.yPt, bottom - stack.heightPt - 1.2 * marginEm * textPt);
+  return stack.itemsAt(place.xPt + place.widthPt, yPt);
+}
+
+/** A narrow crystal keeps the column near: crystal and column stand in the middle of the sheet together. */
+function centred(scene: Scene, request: FigureRequest, place: Place): Place {
+  if (request.view.kind === 'camera' && !request.view.wholeCrystal) return place;
+  const { camera, viewport, pointsPerCssPx } = crystalIn(scene, request, place);
+  const perAngstrom = pixelsPerAngstrom(camera, viewport) * pointsPerCssPx;
+  const needed = viewBox(scene, camera).widthAngstrom * perAngstrom + 8 * request.textPt;
+  const spare = Math.max(0, place.widthPt - needed);
+  return { ...place, xPt: place.xPt + spare / 2, widthPt: place.widthPt - spare };
+}
+
+/** Box of the crystal as it is turned, without perspective. */
+function viewBox(scene: Scene, { orientation }: Camera): { widthAngstrom: number; heightAngstrom: number } {
+  const zoomIn = (widthPx: number, heightPx: number): number =>
+    fit(scene, orientation, { widthPx, heightPx }, 0).zoom;
+  return { widthAngstrom: 1 / zoomIn(1, 1000), heightAngstrom: 1 / zoomIn(1000, 1) };
+}
+
+function headBlock({ title, widthPt, textPt, theme }: FigureRequest): Block | null {
+  if (title === '') return null;
+  const sizePt = 1.25 * textPt;
+  const lines = breakLines(title, sizePt, widthPt - 2 * marginEm * textPt);
+  return textBlock(lines, sizePt, figureThemes[theme].ink);
+}
+
+function captionBlock(scene: Scene, { contents, widthPt, textPt, theme }: FigureRequest): Block | null {
+  if (!contents.caption) return null;
+  const lines = breakLines(scene.caption, textPt, widthPt - 2 * marginEm * textPt);
+  return textBlock(lines, textPt, figureThemes[theme].soft);
+}
+
+/** What stands beside the crystal, in order. Before the scale is known, the ruler takes as much room as it may. */
+function blocksFor(
+  scene: Scene,
+  request: FigureRequest,
+  kind: 'below' | 'beside',
+  pointsPerAngstrom: number | null,
+): Block[] {
+  const { contents, textPt, theme, widthPt } = request;
+  const style: BlockStyle = { textPt, theme: figureThemes[theme] };
+  const room = widthPt - 2 * marginEm * textPt;
+  const most = kind === 'below' ? room : columnEm * textPt;
+  const notes = kind === 'below' ? noteEm * textPt : most;
+  const orientation = cameraFor(scene, request, { widthPx: 400, heightPx: 400 });
+  const axes = contents.axes ? axesBlock(scene, orientation, style) : null;
+  const legend = contents.legend && scene.legend ? legendBlock(scene.legend, most, style) : null;
+  const isFlat = request.look.perspectiveDegrees === 0 && !(orientation.perspectiveDegrees ?? 0);
+  const scale = contents.scale
+    ? scaleBlock(scene, isFlat ? (pointsPerAngstrom ?? (6.4 * textPt) / 10) : null, notes, style)
+    : null;
+  const key = contents.elementKey ? keyBlock(scene, notes, style) : null;
+  const words = contents.viewDirection ? request.view.words : null;
+  const view = words === null ? null : textBlock(viewLines(words, textPt, notes), textPt, style.theme.soft);
+  const last = [key, view].filter((block) => block !== null);
+  return [axes, legend, scale, last.length > 0 ? stacked(last, 0.15 * textPt) : null].filter(
+    (block) => block !== null,
+  );
+}
+
+/** Letters of axes are italic. */
+function viewLines(words: string, textPt: number, widthPt: number): (readonly TextRun[])[] {
+  const match = /^(viewed along −?)([abcxyz])(\*?)$/.exec(words);
+  if (!match) return breakLines(words, textPt, widthPt);
+  return [[{ text: match[1]! }, { text: match[2]!, style: 'italic' }, { text: match[3]! }]];
+}
+
+/** Blocks side by side, in as many rows as they need, spread over the width; tops in line. */
+function flowed(blocks: readonly Block[], widthPt: number, textPt: number): Block {
+  const gap = gapEm * textPt;
+  const rows: Block[][] = [];
+  let x = 0;
+  for (const block of blocks) {
+    if (rows.length === 0 || x + block.widthPt > widthPt) {
+      rows.push([block]);
+      x = block.widthPt + gap;
+    } else {
+      rows.at(-1)!.push(block);
+      x += block.widthPt + gap;
+    }
+  }
+  const rowBlocks = rows.map((row) => spread(row, widthPt, textPt));
+  return rowBlocks.length === 0 ? emptyBlock : stacked(rowBlocks, 0.5 * textPt);
+}
+
+const emptyBlock: Block = { widthPt: 0, heightPt: 0, itemsAt: () => [] };
+
+/** A row whose gaps grow with the room there is, the middles of the blocks on one line. */
+function spread(row: readonly Block[], widthPt: number, textPt: number): Block {
+  const used = row.reduce((sum, block) => sum + block.widthPt, 0);
+  const gap = row.length > 1 ? Math.min(3.4 * textPt, Math.max(0, (widthPt - used) / (row.length - 1))) : 0;
+  const heightPt = Math.max(...row.map((block) => block.heightPt));
+  const lefts = row.map((_, k) => row.slice(0, k).reduce((sum, block) => sum + block.widthPt + gap, 0));
+  return {
+    widthPt: used + gap * (row.length - 1),
+    heightPt,
+    itemsAt: (xPt, yPt) =>
+      row.flatMap((block, k) => block.itemsAt(xPt + lefts[k]!, yPt + (heightPt - block.heightPt) / 2)),
+  };
+}
+
+function column(blocks: readonly Block[], textPt: number): Block {
+  return blocks.length === 0 ? emptyBlock : stacked(blocks, 1.3 * textPt);
+}
+
+/** The crystal in its place: all of it, or what the screen showed. */
+function crystalIn(scene: Scene, request: FigureRequest, place: Place): CrystalPlace {
+  const pointsPerCssPx = cssPixelPt(request);
+  const viewport: Viewport = {
+    widthPx: place.widthPt / pointsPerCssPx,
+    heightPx: place.heightPt / pointsPerCssPx,
+  };
+  return { ...place, viewport, pointsPerCssPx, camera: cameraFor(scene, request, viewport) };
+}
+
+function cameraFor(scene: Scene, { view, look }: FigureRequest, viewport: Viewport): Camera {
+  const margin = scene.labels.length > 0 ? crystalMargin.labelled : crystalMargin.plain;
+  if (view.kind === 'direction') {
+    const first = firstCamera(scene, viewport);
+    const turned = view.towards === null ? first : lookAlong(first, scene, view.towards);
+    return fit(scene, turned.orientation, viewport, margin, look.perspectiveDegrees);
+  }
+  if (view.wholeCrystal) {
+    return fit(scene, view.camera.orientation, viewport, margin, view.camera.perspectiveDegrees ?? 0);
+  }
+  // Everything the screen showed along both sides stays in.
+  const shown = pixelsPerAngstrom(view.camera, view.viewport);
+  const perAngstrom = Math.min(
+    (shown * viewport.widthPx) / view.viewport.widthPx,
+    (shown * viewport.heightPx) / view.viewport.heightPx,
+  );
+  return { ...view.camera, zoom: perAngstrom / Math.max(1, Math.min(viewport.widthPx, viewport.heightPx)) };
+}
+
+/** The height at which the crystal fills the width, within bounds; with room for what stands below. */
+function naturalHeight(scene: Scene, request: FigureRequest, camera: Camera): number {
+  const { widthPt, textPt } = request;
+  const box = viewBox(scene, camera);
+  const wanted = box.heightAngstrom / box.widthAngstrom;
+  const share = Math.min(heightShare.most, Math.max(heightShare.least, wanted));
+  const margin = marginEm * textPt;
+  const strip = flowed(blocksFor(scene, request, 'below', null), widthPt - 2 * margin, textPt);
+  const head = headBlock(request);
+  const foot = captionBlock(scene, request);
+  return (
+    share * widthPt +
+    (strip.heightPt > 0 ? strip.heightPt + margin : 0) +
+    (head ? head.heightPt + margin : 0) +
+    (foot ? foot.heightPt + margin : 0)
+  );
+}
+
+/** Labels beside their atoms, by the same placement as on screen, measured in the letters they are drawn with. */
+function labelItems(
+  scene: Scene,
+  request: FigureRequest,
+  crystal: CrystalPlace,
+): { readonly items: SheetItem[]; readonly leftOut: number } {
+  const { textPt, theme } = request;
+  const { ink, soft, render } = figureThemes[theme];
+  const { pointsPerCssPx } = crystal;
+  const measure = (text: string): { widthPx: number; heightPx: number } => ({
+    widthPx: setText(runsOf(text), textPt).widthPt / pointsPerCssPx,
+    heightPx: lineHeight(textPt) / pointsPerCssPx,
+  });
+  const placed = placeLabels(scene, crystal.camera, crystal.viewport, measure);
+  const onSheet = (xPx: number, yPx: number): { xPt: number; yPt: number } => ({
+    xPt: crystal.xPt + xPx * pointsPerCssPx,
+    yPt: crystal.yPt + yPx * pointsPerCssPx,
+  });
+  const leaders = placed.flatMap(({ leader }): SheetItem[] => {
+    if (!leader) return [];
+    const [from, to] = [onSheet(leader[0], leader[1]), onSheet(leader[2], leader[3])];
+    const widthPt = Math.max(thinnestLinePt, 0.06 * textPt);
+    const ends = { x1Pt: from.xPt, y1Pt: from.yPt, x2Pt: to.xPt, y2Pt: to.yPt };
+    return [{ kind: 'line', ...ends, widthPt, colour: soft, ends: 'flat' }];
+  });
+  const texts = placed.map(({ text, leftPx, topPx }): SheetItem => {
+    const { xPt, yPt } = onSheet(leftPx, topPx);
+    const base = yPt + baselineOf(textPt);
+    return {
+      kind: 'text',
+      runs: runsOf(text),
+      xPt,
+      yPt: base,
+      sizePt: textPt,
+      colour: ink,
+      halo: render.paper,
+    };
+  });
+  return { items: [...leaders, ...texts], leftOut: scene.labels.length - placed.length };
+}
