@@ -27,6 +27,8 @@ export interface SymbolReading {
 export interface SymbolMatch extends SymbolReading {
   /** Readings that the symbol leaves open just as well, such as the other origin choice; empty where it names the setting. */
   readonly alternatives: readonly SymbolReading[];
+  /** Of a number, which stands for the standard setting: the other settings that fit the cell. */
+  readonly otherSettings?: readonly SymbolReading[];
   /** What the symbol says and could not be used, in words; absent where all of it was. */
   readonly doubt?: string;
 }
@@ -241,10 +243,15 @@ function atOrigin(candidates: readonly Candidate[], origin: Vec3, why: string): 
 
 /**
  * The setting of a bare International Tables number (1 to 230), chosen as `settingFromHermannMauguin` chooses between
- * the settings of one symbol: unique axis and cell choice 1, axes by the cell constants, else the first in the tables.
+ * the settings of one symbol: unique axis and cell choice 1, axes by the cell constants, else the first in the tables. Other cell
+ * choices and axes that the cell allows are no alternatives but stand in `otherSettings`.
  */
 export function settingFromNumber(number: number, cell?: CellConstants): SymbolMatch | null {
   const settings = settingsOfNumber(number);
   const usual = settings.filter(({ setting }) => /^(?:[12]|[HR]|[abc]1?)?$/.test(setting));
-  return choose(`No. ${number}`, usual.map(tabulated), [], cell);
+  const match = choose(`No. ${number}`, usual.map(tabulated), [], cell);
+  if (!match || !cell) return match;
+  const others = settings.filter((setting) => !usual.includes(setting)).map(tabulated);
+  const fitting = fitsOf(others, cell).filter(fits);
+  return { ...match, otherSettings: fitting.map(({ candidate }) => reading(candidate)) };
 }

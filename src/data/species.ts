@@ -57,7 +57,7 @@ export function parseSpecies(text: string): ParsedSpecies | null {
  */
 export function parseMixture(text: string): SpeciesMixture | null {
   if (text.length > longestType) return null;
-  const plain = shareApart(text.trim());
+  const plain = chargeInside(shareApart(withoutState(text.trim())));
   const alone = parseSpecies(plain);
   if (alone) return { species: [{ ...alone, share: 1 }], sharesGiven: true };
   const pieces = mixturePieces(plain.replace(uncertainty, '$1').replace(/[()[\]{}]/g, ' '));
@@ -69,10 +69,26 @@ export function parseMixture(text: string): SpeciesMixture | null {
     if (!found) return null;
     species.push({ ...found, share: parts?.[2] ? Number(parts[2]) : null });
   }
-  if (species.length === 1 && !species.some(({ share }) => share !== null && share > 0 && share < 1)) {
-    return null;
-  }
+  const [first] = species;
+  if (species.length === 1 && !(first!.share !== null && first!.share > 0 && first!.share < 1)) return null;
+  // `O.2` and `C.3` are names of bonding types.
+  if (species.length === 1 && first!.charge === null && !plain.includes('0.')) return null;
   return withShares(species);
+}
+
+/** `FeIII`, `Fe(III)`, `SiIV`: a number of valence or coordination in Roman numerals behind a two-letter symbol. */
+function withoutState(text: string): string {
+  return text.replace(/^([A-Z][a-z])\s*\(?(?:I{1,3}|I?V|VI{1,3}|IX|XI{0,2})\)?$/, '$1');
+}
+
+/** `(Mg,Fe)2+`: each of them has the charge. */
+function chargeInside(text: string): string {
+  const [, inside, charge] = /^[([{]([^()[\]{}]+)[)\]}](\d?[+-]|[+-]\d)$/.exec(text) ?? [];
+  if (inside === undefined) return text;
+  return inside
+    .split(/[,;/|&]/)
+    .map((one) => one.trim() + charge)
+    .join(',');
 }
 
 /** Of a share, as in `0.50(2)`. */
@@ -90,6 +106,7 @@ function shareApart(text: string): string {
 function mixturePieces(text: string): string[] | null {
   const separated = text
     .replace(/([A-Za-z+-])\s+(?=\d*\.\d)/g, '$1')
+    .replace(/(\.\d+)\+(?=[A-Z])/g, '$1,')
     .split(/[,;/|&\s]+/)
     .filter((piece) => piece !== '');
   if (separated.length > 1) return separated;

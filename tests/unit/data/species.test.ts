@@ -81,6 +81,12 @@ describe('a position with several elements', () => {
     ['Fe:0.4Mg:0.6', 'Fe 0.4, Mg 0.6'],
     ['Fe2.5+', 'Fe 1'],
     ['Fe+2.5', 'Fe 1'],
+    ['Al0.4+Si0.6', 'Al 0.4, Si 0.6'],
+    ['FeIII', 'Fe 1'],
+    ['Fe(II)', 'Fe 1'],
+    ['SiIV', 'Si 1'],
+    ['O.2', null],
+    ['N.ar', null],
     ['Na1.5', null],
     ['Fe3+0.5Al3+0.5', 'Fe 0.5, Al 0.5'],
     ['O0.5F0.3', 'O 0.5, F 0.3'],
@@ -91,6 +97,7 @@ describe('a position with several elements', () => {
 
   it.each([
     ['(Fe,Mg)', 'Fe 0.5, Mg 0.5'],
+    ['(Mg,Fe)2+', 'Mg 0.5, Fe 0.5'],
     ['Al/Si', 'Al 0.5, Si 0.5'],
     ['AlSi', 'Al 0.5, Si 0.5'],
     ['Al1/Si1', 'Al 0.5, Si 0.5'],

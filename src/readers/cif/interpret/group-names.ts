@@ -20,6 +20,8 @@ export interface NamedGroup {
   readonly reading: string;
   /** Other operations that the name may mean just as well, such as those at the other origin. */
   readonly alternatives: readonly SymbolReading[];
+  /** Settings other than the standard one, which a bare number stands for. */
+  readonly otherSettings?: readonly SymbolReading[];
   /** What of the name could not be used, in words. */
   readonly doubt?: string;
 }

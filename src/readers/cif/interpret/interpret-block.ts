@@ -19,6 +19,7 @@ import { countAllImages } from './multiplicity.ts';
 import type { ListedOperations } from './operation-list.ts';
 import { listedOperations } from './operation-list.ts';
 import { chooseOrigin } from './origin-choice.ts';
+import { reportOverlaps } from './site-overlaps.ts';
 import type { SiteRows } from './site-rows.ts';
 import { readSiteRows } from './site-rows.ts';
 import type { BuiltSites } from './sites.ts';
@@ -67,6 +68,7 @@ export function interpretBlock(
   const multiplicities = counts.map(({ merged }) => merged);
   const stated = { ...formula, symmetryStated: symmetry.stated };
   const checked = settled(view, built, multiplicities, stated, log);
+  reportOverlaps(checked.sites, symmetry, frame.lattice, log);
   const crystal = crystalOf(view, frame, symmetry, checked.sites, { ...formula, units: checked.units });
   return withTensors(view, crystal, frame, structureIndex, log);
 }

@@ -152,7 +152,7 @@ function understand(raw: string): ReadOperation | null {
     .replace(/^\s*(?:\(?\d+\)?[.:)]?\s+|\d+\s*,\s*(?=[^,]*,[^,]*,))(?=[-+xyz\d.])/i, '')
     .replace(/^[\s'"(]+|[\s'",;)]+$/g, '')
     .replace(/,[-+]?m[xyz].*$/i, '');
-  const modulated = /x\s*[1-9]/i.test(text);
+  const modulated = /x\s*[1-9]|,[^,]*,[^,]*,[^,]*[tuv]/i.test(text);
   const read = readOperation(modulated ? averageStructurePart(text) : text);
   return read && { operation: read.operation, timeReversal: read.timeReversal !== null, modulated };
 }
@@ -173,7 +173,7 @@ function plainFractions(text: string): string {
 
 const letters: Readonly<Record<string, string>> = { x1: 'x', x2: 'y', x3: 'z' };
 
-/** `x1,x2,x3,x4,+1`: the first three coordinates act on the average structure, a sign at the end is time reversal. */
+/** `x1,x2,x3,x4,+1` or `x,y,z,t`: the first three coordinates act on the average structure, a sign at the end is time reversal. */
 function averageStructurePart(text: string): string {
   const parts = text.replace(/\s+/g, '').split(',');
   const sign = /^[+-]1$/.test(parts.at(-1) ?? '') ? [parts.at(-1)!] : [];

@@ -24,6 +24,8 @@ const mostAtoms = 20_000;
 /** g cm⁻³ of one u Å⁻³ (CODATA 2022). */
 const densityPerUPerAngstrom3 = 1.66053906892;
 const densityTolerance = 0.04;
+/** Atoms up to which all settings of a number are tried. */
+const mostSitesTried = 500;
 
 /** Atoms of a block as far as the choice needs them. */
 export interface PlacedAtoms {
@@ -35,7 +37,7 @@ export interface PlacedAtoms {
 type Score = readonly [formula: number, multiplicities: number, density: number, clashes: number];
 
 /**
- * Where a name leaves origin or setting open, the operations that fit what the file says beside it: formula × Z, then stated
+ * Where a name leaves origin or setting open, or only a number stands for its standard setting, the operations that fit what the file says beside it: formula × Z, then stated
  * multiplicities, then the density, then no atoms on top of each other. Where that does not decide, the first in the tables,
  * and `cif-origin-open` warns. The choice is told in any case (`cif-origin-chosen`).
  */
@@ -47,15 +49,24 @@ export function chooseOrigin(
   formula: StatedFormula,
   log: ProblemLog,
 ): CrystalSymmetry {
-  if (choice.alternatives.length === 0 || !lattice) return choice.symmetry;
-  const candidates = [choice.symmetry, ...choice.alternatives];
-  const scores = candidates.map(({ operations }) => scoreOf(view, atoms, operations, lattice, formula));
+  const { alternatives, otherSettings = [] } = choice;
+  if (alternatives.length + otherSettings.length === 0 || !lattice) return choice.symmetry;
+  const score = ({ operations }: CrystalSymmetry): Score =>
+    scoreOf(view, atoms, operations, lattice, formula);
+  const candidates = [choice.symmetry, ...alternatives];
+  const scores = candidates.map(score);
+  if (atoms.sites.length <= mostSitesTried && isRuledOut(scores[0]!, formula)) {
+    candidates.push(...otherSettings);
+    scores.push(...otherSettings.map(score));
+  }
   let best = 0;
   scores.forEach((score, i) => {
     if (compare(score, scores[best]!) > 0) best = i;
   });
   const chosen = candidates[best]!;
-  const rivals = scores.filter((score) => compare(score, scores[best]!) === 0).length - 1;
+  const equal = best <= alternatives.length ? scores.slice(0, alternatives.length + 1) : scores;
+  const rivals = equal.filter((score) => compare(score, scores[best]!) === 0).length - 1;
+  if (best === 0 && alternatives.length === 0) return chosen;
   report(view, chosen, best, rivals, log);
   return chosen;
 }
@@ -89,6 +100,11 @@ function report(
       place,
     },
   );
+}
+
+/** Atoms on top of each other, or a formula that does not fit. */
+function isRuledOut([formula, , , clashes]: Score, { counts }: StatedFormula): boolean {
+  return clashes < 0 || (counts !== null && formula === 0);
 }
 
 function compare(p: Score, q: Score): number {

@@ -52,6 +52,7 @@ export function readSiteRows(view: BlockView, known: ReadonlySet<string>, log: P
     if (read) rows.push(read);
   }
   reader.close();
+  reportFarOut(rows, log);
   return { table, rows, withoutPosition: reader.withoutPosition(), dummies: reader.dummies() };
 }
 
@@ -262,6 +263,25 @@ function reportMissing(label: string, place: Place, log: ProblemLog): void {
       got: '? or .',
       allowed: 'three numbers',
       hint: 'The atom exists in the crystal but was not located: composition and pictures lack it.',
+    },
+  );
+}
+
+/** Cells from the origin beyond which a list is hardly one of fractions. */
+const farOut = 10;
+
+function reportFarOut(rows: readonly SiteRow[], log: ProblemLog): void {
+  const far = rows.filter(({ fractional }) => fractional?.some((value) => Math.abs(value) > farOut));
+  const [first] = far;
+  if (!first) return;
+  log.add(
+    'warning',
+    'cif-coordinates-far-out',
+    `${far.length} of ${rows.length} atoms lie more than ${farOut} cells from the origin: their coordinates may be per cent, ten-thousandths or Å and not fractions. They were read as fractions.`,
+    {
+      place: first.place,
+      got: first.fractional!.join(' '),
+      allowed: 'fractions of the cell edges, mostly between -1 and 2',
     },
   );
 }

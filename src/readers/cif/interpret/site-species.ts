@@ -72,9 +72,10 @@ export function speciesOfSite(
   const mixture = /[,/]/.test(label) ? parseMixture(label) : null;
   if (mixture) return fromMixture(mixture, 'label');
   const reading = elementFromLabel(label, known);
+  if (known.size === 0 && /^[HD][23]O$/i.test(label)) return ofElement('O', 'label', false);
   if (reading && (known.size === 0 || known.has(reading.element))) {
     return {
-      ...ofElement(reading.element, 'label', reading.certain),
+      ...ofElement(reading.element, 'label', reading.certain && !namesTwo(label, known)),
       rival: rivalOf(label, reading.element, known),
       spelled: spelledIn(label, known),
     };
@@ -95,6 +96,13 @@ function rivalOf(label: string, taken: string, known: ReadonlySet<string>): stri
   const readings = [letters, letters.slice(0, 1)].map((text) => elementOf(text)?.symbol ?? '');
   if (!readings.every((symbol) => known.has(symbol))) return null;
   return readings.find((symbol) => symbol !== taken) ?? null;
+}
+
+/** `MgFe1` or, without a formula, `H2O1`: two elements in one label. */
+function namesTwo(label: string, known: ReadonlySet<string>): boolean {
+  if (known.size === 0 && /^[HD][23]O/.test(label)) return true;
+  const [, one = '', two = ''] = /^([A-Z][a-z])([A-Z][a-z])(?![a-z])/.exec(label) ?? [];
+  return elementOf(one) !== null && elementOf(two) !== null;
 }
 
 function spelledIn(label: string, known: ReadonlySet<string>): string | null {

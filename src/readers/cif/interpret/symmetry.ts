@@ -17,6 +17,8 @@ export interface SymmetryChoice {
   readonly symmetry: CrystalSymmetry;
   /** The same group at its other origin, where the name leaves the origin open; empty where operations are listed. */
   readonly alternatives: readonly CrystalSymmetry[];
+  /** Other settings of a group that only its number names; taken only where the atoms rule the standard one out. */
+  readonly otherSettings?: readonly CrystalSymmetry[];
 }
 
 /** A group that misfits the cell by more than this is not taken while another name offers one that fits. */
@@ -209,7 +211,8 @@ function fromNames(
   );
   const symmetry = symmetryOf(chosen, names, null);
   const alternatives = chosen.alternatives.map((other) => symmetryOf(chosen, names, other));
-  return { symmetry, alternatives };
+  const otherSettings = (chosen.otherSettings ?? []).map((other) => symmetryOf(chosen, names, other));
+  return { symmetry, alternatives, otherSettings };
 }
 
 function symmetryOf(group: NamedGroup, names: GroupNames, other: SymbolReading | null): CrystalSymmetry {

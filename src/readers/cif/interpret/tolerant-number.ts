@@ -10,11 +10,13 @@ export interface ReadNumber {
 }
 
 const decimalComma = /^([+-]?\d*),(\d+(?:\(\d+\))?)$/;
+const withUnit =
+  /^([+-]?[\d.]+(?:\(\d+\))?)\s*(?:\u00c5|\u212b|A|ang(?:str\u00f6m|strom)?|deg(?:rees?)?)\.?$/i;
 const beginning = /^([+-]?(?:\d+\.?\d*|\.\d+)(?:[eE][+-]?\d+)?)(?:[([*°].*)$/;
 
 /**
  * Reads a number as CIF files really print it: `1.234(5)`, `.5`, `-3.`, the fraction `1/3`; with a repair also a decimal
- * comma, an unfinished bracket `0.51(`, an asterisk, blanks inside, a typographic minus. null for anything else: no digits
+ * comma, a unit behind it, an unfinished bracket `0.51(`, an asterisk, blanks inside, a typographic minus. null for anything else: no digits
  * are guessed.
  *
  * `readNumber('0,25')` → {value: 0.25, uncertainty: null, repair: 'a decimal comma'}
@@ -31,6 +33,11 @@ export function readNumber(text: string): ReadNumber | null {
   if (found) {
     const repair = comma ? 'a decimal comma' : 'blanks inside';
     return { value: found.value, uncertainty: found.uncertainty, repair };
+  }
+  const unit = withUnit.exec(close);
+  const measured = unit && numberFromText(unit[1]!.replace(/\s/g, ''));
+  if (measured) {
+    return { value: measured.value, uncertainty: measured.uncertainty, repair: 'a unit behind it' };
   }
   const start = beginning.exec(close);
   if (!start) return null;

@@ -40,6 +40,20 @@ describe('without listed operations', () => {
     expect(codes(reading)).toEqual([]);
   });
 
+  it('a bare number is its standard setting, unless atoms then lie on each other', () => {
+    // The c glide of P 21/c carries C1 onto C2, the a glide of P 21/a C3 onto C4; the n glide of P 21/n does neither.
+    const number = '_symmetry_Int_Tables_number 14\n';
+    const rows = ['C1 .1 .2 .3', 'C2 .1 .29 .8', 'C3 .3 .1 .1', 'C4 .8 .39 .1'];
+    const pairs = block(monoclinic, number, atomText(plainColumns, ...rows));
+    expect(operationsOf(pairs)).toContain('x+1/2,-y+1/2,z+1/2');
+    expect(codes(pairs)).toEqual(['cif-origin-chosen']);
+    const open = block(monoclinic, number, atomText(plainColumns, ...rows.slice(0, 2)));
+    expect(codes(open)).toEqual(['cif-origin-open']);
+    const fine = block(monoclinic, number, atomText(plainColumns, 'C1 .1 .2 .3', 'C2 .6 .29 .8'));
+    expect(operationsOf(fine)).toContain('x,-y+1/2,z+1/2');
+    expect(codes(fine)).toEqual([]);
+  });
+
   it('a letter behind the symbol whose origin is not known is told', () => {
     const reading = block(cellText(7, 8, 9), "_symmetry_space_group_name_H-M 'C 2 2 21 A'\n", atom);
     expect(codes(reading)).toEqual(['cif-group-name-open']);
