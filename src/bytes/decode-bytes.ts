@@ -3,6 +3,7 @@ import type { Place, Problem } from '#src/base/problem.ts';
 import { binaryKindOf } from './binary-kinds.ts';
 import { gunzip, looksGzipped } from './gunzip.ts';
 import type { Unpacked, UnpackLimits } from './gunzip.ts';
+import { looksLikePng, pngCase } from './png-case.ts';
 import { sourceFromText } from './source-from-text.ts';
 import type { SourceText } from './source-text.ts';
 import { decodeText } from './text-decoding.ts';
@@ -26,10 +27,11 @@ const binaryNulShare = 0.01;
 
 /**
  * Bytes of a file as one decoded text with its line index: gzip unpacked within limits, other binary formats refused by
- * name, encoding found (strict UTF-8, UTF-16, else windows-1252), single NUL characters turned into spaces.
+ * name, encoding found (strict UTF-8, UTF-16, else windows-1252), single NUL characters turned into spaces. A PNG that holds
+ * a case gives the text of that case.
  *
  * Never rejects. Reports `bytes-too-large`, `bytes-unpacks-too-far`, `bytes-gzip-broken`, `bytes-packed-twice`,
- * `bytes-binary`, `bytes-empty`, `bytes-not-utf8`, `bytes-half-character`, `bytes-nul`.
+ * `bytes-binary`, `bytes-picture-broken`, `bytes-empty`, `bytes-not-utf8`, `bytes-half-character`, `bytes-nul`.
  */
 export async function decodeBytes(
   name: string,
@@ -38,6 +40,7 @@ export async function decodeBytes(
 ): Promise<DecodedBytes> {
   const all = { ...defaultByteLimits, ...limits };
   if (bytes.length > all.maxUnpackedBytes) return refuse(tooLarge(name, bytes.length, all));
+  if (looksLikePng(bytes)) return decodePicture(name, bytes, all);
   if (!looksGzipped(bytes)) return decodeUnpacked(name, bytes, []);
   const unpacked = await gunzip(bytes, all);
   const found = unpackProblem(name, bytes.length, unpacked, all);
@@ -46,6 +49,28 @@ export async function decodeBytes(
   }
   if (looksGzipped(unpacked.bytes)) return refuse(packedTwice(name));
   return decodeUnpacked(name, unpacked.bytes, found === null ? [] : [found]);
+}
+
+async function decodePicture(name: string, bytes: Uint8Array, limits: UnpackLimits): Promise<DecodedBytes> {
+  const found = await pngCase(bytes, limits);
+  if (found.kind === 'found') return decodeUnpacked(name, found.bytes, []);
+  if (found.kind === 'too-large') return refuse(tooLarge(name, bytes.length, limits));
+  if (found.kind === 'broken') return refuse(pictureBroken(name, found.reason));
+  return refuse(isBinary(name, 'a PNG picture without a case in it', binaryKindOf(bytes)?.hint ?? ''));
+}
+
+function pictureBroken(name: string, reason: string): Problem {
+  return problem(
+    'error',
+    'bytes-picture-broken',
+    `The PNG picture is damaged or cut off: ${reason}. No case could be read from it.`,
+    {
+      place: firstLine(name),
+      got: reason,
+      allowed: 'a whole picture that was saved with its case',
+      hint: 'Fetch the picture again; some mail and chat programs leave out what stands beside the pixels.',
+    },
+  );
 }
 
 function decodeUnpacked(name: string, bytes: Uint8Array, before: readonly Problem[]): DecodedBytes {

@@ -20,7 +20,20 @@ export function looksGzipped(bytes: Uint8Array): boolean {
  * never held in memory. A damaged or cut file keeps what came out before the damage.
  */
 export async function gunzip(packed: Uint8Array, limits: UnpackLimits): Promise<Unpacked> {
-  const stream = new DecompressionStream('gzip');
+  return unpack(packed, 'gzip', limits);
+}
+
+/** Unpacks a zlib stream (RFC 1950) in the same way. */
+export async function inflate(packed: Uint8Array, limits: UnpackLimits): Promise<Unpacked> {
+  return unpack(packed, 'deflate', limits);
+}
+
+async function unpack(
+  packed: Uint8Array,
+  format: 'gzip' | 'deflate',
+  limits: UnpackLimits,
+): Promise<Unpacked> {
+  const stream = new DecompressionStream(format);
   const feeding = feed(stream.writable, packed);
   const reader = stream.readable.getReader();
   const pieces: Uint8Array[] = [];

@@ -170,7 +170,7 @@ function rulerBlock(lengthPt: number, { textPt, theme }: BlockStyle): Block {
 function tensorWords({ scale }: Scene): string | null {
   if (!scale) return null;
   if (scale.part === 'antisymmetric') return 'rods along the axial vectors';
-  if (scale.glyph === 'polar') return 'radius = |value in its direction|';
+  if (scale.glyph === 'polar') return 'radius = |n·T·n|';
   if (scale.glyph === 'axes') return 'rods = principal values';
   if (scale.kind === 'total') return 'semi-axes = principal values';
   const what = scale.quantity === 'efg' ? 'principal value' : 'deviation from isotropic';
@@ -182,23 +182,29 @@ export function keyBlock(scene: Scene, maxWidthPt: number, style: BlockStyle): B
   const { elements, lobeColours } = scene;
   const signs = lobeColours
     ? [
-        { text: 'positive', colour: lobeColours.positive },
-        { text: 'negative', colour: lobeColours.negative },
+        { text: 'positive', colour: lobeColours.positive, isStriped: false },
+        { text: 'negative', colour: lobeColours.negative, isStriped: true },
       ]
     : [];
-  const names = elements.map(({ element, colour }) => ({ text: element, colour }));
+  const names = elements.map(({ element, colour }) => ({ text: element, colour, isStriped: false }));
   const rows = [signs, names].flatMap((entries) => keyRows(entries, maxWidthPt, style) ?? []);
   return rows.length === 0 ? null : stacked(rows, 0);
 }
 
+interface KeyEntry {
+  readonly text: string;
+  readonly colour: Rgb;
+  readonly isStriped: boolean;
+}
+
 function keyRows(
-  texts: readonly { readonly text: string; readonly colour: Rgb }[],
+  texts: readonly KeyEntry[],
   maxWidthPt: number,
   { textPt, theme }: BlockStyle,
 ): Block | null {
-  const entries = texts.map(({ text, colour }) => {
+  const entries = texts.map(({ text, colour, isStriped }) => {
     const runs: TextRun[] = [{ text }];
-    return { runs, colour, widthPt: 1.15 * textPt + setText(runs, textPt).widthPt };
+    return { runs, colour, isStriped, widthPt: 1.15 * textPt + setText(runs, textPt).widthPt };
   });
   if (entries.length === 0) return null;
   const gap = 0.9 * textPt;
@@ -214,16 +220,30 @@ function keyRows(
     widthPt,
     heightPt: (row + 1) * lineHeight(textPt),
     itemsAt: (xPt, yPt) =>
-      entries.flatMap(({ runs, colour }, k): SheetItem[] => {
+      entries.flatMap(({ runs, colour, isStriped }, k): SheetItem[] => {
         const left = xPt + places[k]!.x;
         const base = yPt + places[k]!.row * lineHeight(textPt) + baselineOf(textPt);
         const radiusPt = 0.4 * textPt;
         return [
-          { kind: 'disc', xPt: left + radiusPt, yPt: base - 0.355 * textPt, radiusPt, colour },
+          ...ball(left + radiusPt, base - 0.355 * textPt, radiusPt, colour, isStriped),
           textItem(runs, left + 1.15 * textPt, base, textPt, theme.ink),
         ];
       }),
   };
+}
+
+/** A disc of a colour, with stripes where negative lobes have them. */
+function ball(xPt: number, yPt: number, radiusPt: number, colour: Rgb, isStriped: boolean): SheetItem[] {
+  const disc: SheetItem = { kind: 'disc', xPt, yPt, radiusPt, colour };
+  if (!isStriped) return [disc];
+  const dark: Rgb = [0.7 * colour[0], 0.7 * colour[1], 0.7 * colour[2]];
+  const stripes = [-0.5, 0, 0.5].map((share): SheetItem => {
+    const half = radiusPt * Math.sqrt(1 - share * share);
+    const y = yPt + share * radiusPt;
+    const ends = { x1Pt: xPt - half, y1Pt: y, x2Pt: xPt + half, y2Pt: y };
+    return { kind: 'line', ...ends, widthPt: 0.2 * radiusPt, colour: dark, ends: 'flat' };
+  });
+  return [disc, ...stripes];
 }
 
 /** The cell axes as seen, drawn from one origin; an axis towards the viewer keeps its letter beside the others. */

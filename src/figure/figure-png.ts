@@ -1,12 +1,10 @@
+import { caseKeyword } from '#src/base/case-keyword.ts';
 import type { Rasterizer } from '#src/raster/rasterizer.ts';
 import type { FigureDrawing } from './draw-figure.ts';
 import { drawFigure } from './draw-figure.ts';
 import { pixelSize } from './figure-size.ts';
 import type { PngText } from './png.ts';
 import { createPngWriter } from './png.ts';
-
-/** Keyword of the text chunk that holds the case file. */
-export const caseKeyword = 'ellipsite-case';
 
 /** What the file says besides its pixels. */
 export interface FigureFileFacts {
