@@ -27,6 +27,8 @@ export interface CaseInput {
   readonly settings: DossierSettings;
   /** Proposed columns the user took, by source id. */
   readonly accepted?: Readonly<Record<string, AcceptedColumns>>;
+  /** What was found amiss in the case file these come from; listed first. */
+  readonly openingProblems?: readonly Problem[];
 }
 
 export interface SourceSummary {

@@ -156,7 +156,10 @@ class ReadingEngine implements Engine {
       tensors: tensorsFor(read, chosen?.choice ?? null).map(({ summary }) => summary),
       proposals: proposalsOf(read),
     };
-    const readingProblems = read.flatMap(({ reading }) => reading.problems);
+    const readingProblems = [
+      ...(input.openingProblems ?? []),
+      ...read.flatMap(({ reading }) => reading.problems),
+    ];
     if (!chosen) {
       const problems = [...readingProblems, ...noStructure(read)];
       return { derived: { ...base, chosen: null, crystal: null, problems }, dossier: null };

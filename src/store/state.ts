@@ -21,13 +21,38 @@ export interface Decisions {
   readonly settings: DossierSettings;
   /** Proposed columns that were taken, by source id. */
   readonly accepted: Readonly<Record<string, AcceptedColumns>>;
+  /** What was found amiss when the case file was opened; it stays with the case. */
+  readonly openingProblems?: readonly Problem[];
+}
+
+/** Everything the user decided about pictures and tables; nothing here changes a number. */
+export interface Views {
+  readonly picture: SceneOptions;
+  /** null is the first view of the crystal: all of it, from where the picture thinks best. */
+  readonly camera: Camera | null;
+  readonly look: Look;
+  /** In the order in which they were saved. */
+  readonly savedViews: readonly SavedView[];
+  readonly measurements: readonly Measurement[];
+  /** Columns, order and filter of the site table. */
+  readonly table: TableSettings;
 }
 
 /** A decision that can be undone, with its name: "undo *open quartz.cif*". */
 export interface Step {
+  /** A few words that go behind "Undo": `colour by span`. */
   readonly name: string;
-  /** Decisions that held before the step (in the past) or after it (in the future). */
-  readonly decisions: Decisions;
+  /** What held before the step (in the past) or after it (in the future); null on an empty page. */
+  readonly decisions: Decisions | null;
+  readonly views: Views;
+}
+
+/** Whether the work is kept in the browser's database, so that it comes back after a reload. */
+export interface Keeping {
+  /** `off` before the first change that is worth keeping. */
+  readonly status: 'off' | 'kept' | 'failed';
+  /** Why it isn't, in one sentence. */
+  readonly reason: string | null;
 }
 
 /** A site, or one atom of it. */
@@ -63,15 +88,13 @@ export interface ShownPlace {
 }
 
 /** Everything on screen. Immutable: a change makes a new state that shares what stayed. */
-export interface WorkbenchState {
+export interface WorkbenchState extends Views {
   readonly decisions: Decisions | null;
   readonly derived: DerivedCase | null;
   readonly refused: Refusal | null;
   readonly selection: Selection | null;
   readonly hover: Selection | null;
   readonly theme: ThemeChoice;
-  /** What the picture shows; nothing here changes a number. */
-  readonly picture: SceneOptions;
   /** The picture of the crystal on screen, as the engine described it last; null before the first. */
   readonly scene: Scene | null;
   /** Why there is no picture, or none of the present options; null when there is. */
@@ -80,39 +103,37 @@ export interface WorkbenchState {
   readonly isDrawing: boolean;
   /** Grows whenever sites that were asked for by `Store.site` have come. */
   readonly sitesRead: number;
-  /** Columns, order and filter of the site table; nothing here changes a number. */
-  readonly table: TableSettings;
-  /** null is the first view of the crystal: all of it, from where the picture thinks best. */
-  readonly camera: Camera | null;
-  readonly look: Look;
-  /** In the order in which they were saved. */
-  readonly savedViews: readonly SavedView[];
-  readonly measurements: readonly Measurement[];
   readonly shownPlace: ShownPlace | null;
   readonly progress: Progress | null;
+  readonly keeping: Keeping;
   readonly past: readonly Step[];
   readonly future: readonly Step[];
 }
 
+export const defaultViews: Views = {
+  picture: defaultSceneOptions,
+  camera: null,
+  look: defaultLook,
+  savedViews: [],
+  measurements: [],
+  table: defaultTable,
+};
+
 export const emptyState: WorkbenchState = {
+  ...defaultViews,
   decisions: null,
   derived: null,
   refused: null,
   selection: null,
   hover: null,
   theme: 'auto',
-  picture: defaultSceneOptions,
   scene: null,
   sceneFault: null,
   isDrawing: false,
   sitesRead: 0,
-  table: defaultTable,
-  camera: null,
-  look: defaultLook,
-  savedViews: [],
-  measurements: [],
   shownPlace: null,
   progress: null,
+  keeping: { status: 'off', reason: null },
   past: [],
   future: [],
 };

@@ -1,37 +1,31 @@
 import type { Problem } from '#src/base/problem.ts';
-import { problem } from '#src/base/problem.ts';
+import type { Camera } from '#src/scene/camera.ts';
+import type { Look } from '#src/scene/look.ts';
+import type { Measurement } from '#src/scene/measurement.ts';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
-import type { Scene } from '#src/scene/scene.ts';
 import type { TableSettings } from '#src/table/table-settings.ts';
-import type { EngineClient } from './engine-client.ts';
+import type { OpenedCase } from './case-exchange.ts';
 import { Cancelled } from './engine-client.ts';
-import type { DerivedCase, LinePage, SourceFile, StructureChoice } from './engine-protocol.ts';
+import type { EngineClient } from './engine-client.ts';
+import type { LinePage, SourceFile, StructureChoice } from './engine-protocol.ts';
 import type { KnownSite, Queries, QueryKind } from './engine-queries.ts';
-import { NewestOnly } from './newest-only.ts';
+import type { FileInput } from './file-input.ts';
+import type { Work } from './kept-work.ts';
+import { filesOf } from './kept-work.ts';
+import { viewsForNewCase, viewsForNewCrystal, viewsOf } from './moment.ts';
+import { PictureMaker } from './picture-maker.ts';
 import { SiteCache } from './site-cache.ts';
-import type { Decisions, Selection, ShownPlace, Step, ThemeChoice, WorkbenchState } from './state.ts';
+import type { Listener } from './state-holder.ts';
+import { StateHolder } from './state-holder.ts';
+import type { Keeping, Selection, ShownPlace, ThemeChoice, WorkbenchState } from './state.ts';
 import { emptyState } from './state.ts';
+import type { ViewStepOptions } from './timeline.ts';
+import { Timeline } from './timeline.ts';
 
-/** A file before it has an id. */
-export interface FileInput {
-  readonly name: string;
-  readonly blob: Blob;
-}
-
-/** Told after every change, with a sentence that says what changed and why. */
-export type Listener = (state: WorkbenchState, reason: string) => void;
-
-/** A picture and how it went. */
-type Drawn = Pick<WorkbenchState, 'scene' | 'sceneFault'>;
-
-/** Milliseconds after which it is said that a picture is being made. */
-const drawingIsLong = 500;
-
-/** Steps kept for undo; decisions are small, their files are shared. */
-const keptSteps = 200;
+export type { FileInput } from './file-input.ts';
 
 /**
  * Holder of everything on screen. Decisions that change numbers go through the engine and become state only once the
@@ -39,168 +33,259 @@ const keptSteps = 200;
  */
 export class Store {
   readonly #engine: EngineClient;
-  readonly #listeners = new Set<Listener>();
-  #state: WorkbenchState;
-  /** Decisions on their way through the engine; later ones build on them. */
-  #underway: Decisions | null = null;
-  #nextSource = 1;
+  readonly #holder: StateHolder;
+  readonly #timeline: Timeline;
   readonly #sites: SiteCache;
-  readonly #scenes: NewestOnly<
-    { readonly derived: DerivedCase; readonly options: Partial<SceneOptions> },
-    Scene
-  >;
+  #nextSource = 1;
 
   constructor(engine: EngineClient, initial: Partial<WorkbenchState>) {
     this.#engine = engine;
-    this.#state = { ...emptyState, ...initial };
+    const holder = new StateHolder({ ...emptyState, ...initial });
+    this.#holder = holder;
     this.#sites = new SiteCache(
       (derived, indices) => engine.ask(derived, 'sites', indices),
-      () => this.#change({ sitesRead: this.#state.sitesRead + 1 }, 'sites that were asked for have come'),
+      () => holder.change({ sitesRead: this.state.sitesRead + 1 }, 'sites that were asked for have come'),
     );
-    this.#scenes = new NewestOnly(({ derived, options }) => engine.ask(derived, 'scene', options));
+    this.#timeline = new Timeline(holder, engine, new PictureMaker(holder, engine), this.#sites);
   }
 
   get state(): WorkbenchState {
-    return this.#state;
+    return this.#holder.state;
   }
 
   /** Calls the listener after every change until the returned function is called. */
   subscribe(listener: Listener): () => void {
-    this.#listeners.add(listener);
-    return () => this.#listeners.delete(listener);
+    return this.#holder.subscribe(listener);
   }
 
   /** Opens files as a new case; settings and references stay, but for the frame, which belongs to one file. */
   open(files: readonly FileInput[], title = titleOf(files)): Promise<boolean> {
-    const settings = { ...(this.#base()?.settings ?? defaultSettings), frame: null };
-    return this.#decide(`open ${title}`, {
-      title,
-      sources: this.#identified(files, []),
-      structure: null,
-      settings,
-      accepted: {},
-    });
+    const { decisions, views } = this.#timeline.newest;
+    const settings = { ...(decisions?.settings ?? defaultSettings), frame: null };
+    const sources = this.#identified(files, []);
+    return this.#timeline.decide(
+      `open ${title}`,
+      { title, sources, structure: null, settings, accepted: {} },
+      viewsForNewCase(views),
+    );
+  }
+
+  /** Opens what a case file says, with its settings and views. */
+  openCase({ decisions, views }: OpenedCase): Promise<boolean> {
+    const decided = decisions((files) => this.#identified(files, []));
+    return this.#timeline.decide(`open ${decided.title}`, decided, views);
+  }
+
+  /** Says why files could not be opened; the case on screen stays. */
+  refuse(what: string, files: readonly FileInput[], problems: readonly Problem[]): void {
+    const sources = this.#identified(files, []);
+    this.#holder.change({ refused: { what, sources, problems } }, `${what} failed`);
+  }
+
+  /** Clears the page; undo brings the case back. */
+  clear(): Promise<boolean> {
+    const { decisions, views } = this.#timeline.newest;
+    if (!decisions) return Promise.resolve(false);
+    return this.#timeline.decide('clear the page', null, viewsForNewCase(views));
   }
 
   /** Adds files (tensors, as a rule) to the case on screen. */
   add(files: readonly FileInput[]): Promise<boolean> {
-    const base = this.#base();
+    const base = this.#timeline.newest.decisions;
     if (!base) return this.open(files);
     const sources = [...base.sources, ...this.#identified(files, base.sources)];
-    return this.#decide(`add ${titleOf(files)}`, { ...base, sources });
+    return this.#timeline.decide(`add ${titleOf(files)}`, { ...base, sources });
   }
 
   /** Takes one file out of the case. */
   remove(sourceId: string): Promise<boolean> {
-    const base = this.#base();
+    const { decisions: base, views } = this.#timeline.newest;
     const gone = base?.sources.find(({ id }) => id === sourceId);
     if (!base || !gone) return Promise.resolve(false);
-    return this.#decide(`take out ${gone.name}`, {
-      ...base,
-      sources: base.sources.filter(({ id }) => id !== sourceId),
-      structure: base.structure?.sourceId === sourceId ? null : base.structure,
-    });
+    const isCrystal = this.state.derived?.chosen?.sourceId === sourceId;
+    return this.#timeline.decide(
+      `take out ${gone.name}`,
+      {
+        ...base,
+        sources: base.sources.filter(({ id }) => id !== sourceId),
+        structure: base.structure?.sourceId === sourceId ? null : base.structure,
+      },
+      isCrystal ? viewsForNewCrystal(views) : views,
+    );
   }
 
   chooseStructure(structure: StructureChoice, name: string): Promise<boolean> {
-    const base = this.#base();
-    return base ? this.#decide(`choose ${name}`, { ...base, structure }) : Promise.resolve(false);
+    const { decisions: base, views } = this.#timeline.newest;
+    if (!base) return Promise.resolve(false);
+    return this.#timeline.decide(`choose ${name}`, { ...base, structure }, viewsForNewCrystal(views));
   }
 
   /** Takes a proposed column of one file as a quantity, in its usual unit or the one the file names. */
   acceptColumn(sourceId: string, name: string, quantity: Quantity): Promise<boolean> {
-    const base = this.#base();
+    const base = this.#timeline.newest.decisions;
     if (!base) return Promise.resolve(false);
     const columns = { ...base.accepted[sourceId], [name]: { quantity } };
-    return this.#decide(`take ${name} as ${quantity}`, {
+    return this.#timeline.decide(`take ${name} as ${quantity}`, {
       ...base,
       accepted: { ...base.accepted, [sourceId]: columns },
     });
   }
 
   changeSettings(change: Partial<DossierSettings>, name: string): Promise<boolean> {
-    const base = this.#base();
+    const base = this.#timeline.newest.decisions;
     if (!base) return Promise.resolve(false);
-    return this.#decide(name, { ...base, settings: { ...base.settings, ...change } });
+    return this.#timeline.decide(name, { ...base, settings: { ...base.settings, ...change } });
   }
 
   undo(): Promise<boolean> {
-    const { past, decisions } = this.#state;
-    const step = past.at(-1);
-    if (!step || !decisions) return Promise.resolve(false);
-    return this.#derive(step.decisions, `undo ${step.name}`, (state) => ({
-      past: state.past.slice(0, -1),
-      future: [...state.future, { name: step.name, decisions }],
-    }));
+    return this.#timeline.undo();
   }
 
   redo(): Promise<boolean> {
-    const { future, decisions } = this.#state;
-    const step = future.at(-1);
-    if (!step || !decisions) return Promise.resolve(false);
-    return this.#derive(step.decisions, `redo ${step.name}`, (state) => ({
-      past: [...state.past, { name: step.name, decisions }],
-      future: state.future.slice(0, -1),
-    }));
+    return this.#timeline.redo();
+  }
+
+  /** Brings back work that was kept, with its history. */
+  async restore({ moment, selection }: Work): Promise<boolean> {
+    const numbers = filesOf(moment).map(({ id }) => Number(/\d+$/.exec(id)?.[0] ?? 0));
+    this.#nextSource = Math.max(this.#nextSource, ...numbers.map((number) => number + 1));
+    if (!(await this.#timeline.go(moment, `bring back ${moment.decisions?.title ?? 'the empty page'}`)))
+      return false;
+    const siteCount = this.state.derived?.crystal?.siteCount ?? 0;
+    if (selection && selection.siteIndex < siteCount) this.select(selection);
+    return true;
+  }
+
+  /** The case on screen as the text of a case file. Rejects with a sentence where there is none, or a file is gone. */
+  async caseText(): Promise<string> {
+    const { decisions } = this.state;
+    if (!decisions) throw new Error('There is nothing on screen to save.');
+    const { caseTextOf } = await import('./case-exchange.ts');
+    return caseTextOf(decisions, viewsOf(this.state));
   }
 
   /** Gives up what the engine is doing; the screen stays as it is. */
   cancel(): void {
-    const what = this.#state.progress?.what;
-    this.#engine.cancel();
-    if (!this.#underway) return;
-    this.#underway = null;
-    this.#change({ progress: null }, `${what ?? 'what was begun'} was cancelled`);
+    this.#timeline.cancel();
   }
 
   /** A whole site of the crystal on screen, where it is here; else null, and `sitesRead` grows once it is. */
   site(index: number): KnownSite | null {
-    const { derived } = this.#state;
+    const { derived } = this.state;
     return derived?.crystal ? this.#sites.get(derived, index) : null;
   }
 
   /** Asks about the crystal on screen; rejects without one, and where the engine could not answer. */
   ask<Kind extends QueryKind>(kind: Kind, ask: Queries[Kind]['ask']): Promise<Queries[Kind]['answer']> {
-    const { derived } = this.#state;
+    const { derived } = this.state;
     if (!derived?.crystal) return Promise.reject(new Cancelled('there is no crystal to ask about'));
     return this.#engine.ask(derived, kind, ask);
   }
 
   select(selection: Selection | null): void {
-    if (same(selection, this.#state.selection)) return;
-    this.#change({ selection }, selection ? 'a site was selected' : 'the selection was cleared');
+    if (same(selection, this.state.selection)) return;
+    this.#holder.change({ selection }, selection ? 'a site was selected' : 'the selection was cleared');
   }
 
   hover(hover: Selection | null): void {
-    if (!same(hover, this.#state.hover)) this.#change({ hover }, 'the pointer moved to another site');
+    if (!same(hover, this.state.hover)) this.#holder.change({ hover }, 'the pointer moved to another site');
   }
 
   setTheme(theme: ThemeChoice): void {
-    this.#change({ theme }, `the theme was set to ${theme}`);
+    this.#holder.change({ theme }, `the theme was set to ${theme}`);
   }
 
-  setPicture(change: Partial<SceneOptions>, reason: string): void {
-    this.#change({ picture: { ...this.#state.picture, ...change } }, reason);
-    void this.#redraw();
+  /** Changes what is drawn. The name goes behind "Undo": `colour by span`. */
+  setPicture(change: Partial<SceneOptions>, name: string, options: ViewStepOptions = {}): void {
+    this.#timeline.step(name, { picture: { ...this.state.picture, ...change } }, options);
+  }
+
+  /** Changes from where the crystal is seen; null is the first view of it. */
+  setCamera(camera: Camera | null, name: string, options: ViewStepOptions = {}): void {
+    this.#timeline.step(name, { camera }, options);
+  }
+
+  /** A camera that the picture chose itself, such as a fit to a new extent: no step of its own, part of the last one. */
+  adjustCamera(camera: Camera | null): void {
+    this.#timeline.amend({ camera }, 'the picture was fitted');
+  }
+
+  setLook(change: Partial<Look>, name: string, options: ViewStepOptions = {}): void {
+    this.#timeline.step(name, { look: { ...this.state.look, ...change } }, options);
   }
 
   /** Changes columns, order or filter of the site table. */
-  setTable(change: Partial<TableSettings>, reason: string): void {
-    this.#change({ table: { ...this.#state.table, ...change } }, reason);
+  setTable(change: Partial<TableSettings>, name: string, options: ViewStepOptions = {}): void {
+    this.#timeline.step(name, { table: { ...this.state.table, ...change } }, options);
+  }
+
+  /** Keeps the picture as it is under a name; one that is taken is kept anew. */
+  saveView(name: string): void {
+    const { camera, picture, look, savedViews } = this.state;
+    const saved = { name, camera, picture, look };
+    const isKnown = savedViews.some((view) => view.name === name);
+    const views = savedViews.map((view) => (view.name === name ? saved : view));
+    this.#timeline.step(`save view ${name}`, { savedViews: isKnown ? views : [...views, saved] });
+  }
+
+  applyView(name: string): void {
+    const view = this.state.savedViews.find((one) => one.name === name);
+    if (!view) return;
+    this.#timeline.step(`show view ${name}`, { camera: view.camera, picture: view.picture, look: view.look });
+  }
+
+  removeView(name: string): void {
+    const savedViews = this.state.savedViews.filter((view) => view.name !== name);
+    if (savedViews.length < this.state.savedViews.length)
+      this.#timeline.step(`remove view ${name}`, { savedViews });
+  }
+
+  /** Gives a saved view another name; false where that name is taken or empty. */
+  renameView(name: string, next: string): boolean {
+    const { savedViews } = this.state;
+    if (next === '' || savedViews.some((view) => view.name === next)) return next === name;
+    const renamed = savedViews.map((view) => (view.name === name ? { ...view, name: next } : view));
+    this.#timeline.step(`rename view ${name}`, { savedViews: renamed });
+    return true;
+  }
+
+  addMeasurement(measurement: Measurement): void {
+    this.#timeline.step(`measure ${measurement.kind}`, {
+      measurements: [...this.state.measurements, measurement],
+    });
+  }
+
+  removeMeasurement(id: string): void {
+    const { measurements } = this.state;
+    const gone = measurements.find((one) => one.id === id);
+    if (gone)
+      this.#timeline.step(`remove ${gone.kind}`, {
+        measurements: measurements.filter((one) => one !== gone),
+      });
+  }
+
+  /** Told by whoever keeps the work in the browser. */
+  setKeeping(keeping: Keeping): void {
+    const { status, reason } = this.state.keeping;
+    if (status !== keeping.status || reason !== keeping.reason)
+      this.#holder.change({ keeping }, `the work is ${keeping.status}`);
   }
 
   /** Opens the text view at a line, or closes it. */
   showPlace(shownPlace: ShownPlace | null): void {
-    this.#change({ shownPlace }, shownPlace ? 'a line of a file was asked for' : 'the text view was closed');
+    this.#holder.change(
+      { shownPlace },
+      shownPlace ? 'a line of a file was asked for' : 'the text view was closed',
+    );
   }
 
   dismissRefusal(): void {
-    this.#change({ refused: null }, 'the refused file was dismissed');
+    this.#holder.change({ refused: null }, 'the refused file was dismissed');
   }
 
   /** The file of that name, of the case or of what was refused last; two files of one case never share a name. */
   sourceOf({ file, isRefused = false }: Omit<ShownPlace, 'line'>): SourceFile | null {
-    const { decisions, refused } = this.#state;
+    const { decisions, refused } = this.state;
     const sources = (isRefused ? refused : decisions)?.sources ?? [];
     return sources.find(({ name }) => name === file) ?? null;
   }
@@ -221,116 +306,6 @@ export class Store {
       return { id: `source-${this.#nextSource++}`, name: unique, blob };
     });
   }
-
-  #base(): Decisions | null {
-    return this.#underway ?? this.#state.decisions;
-  }
-
-  /** A new decision: derives it and, when it holds, remembers the state before as a step. */
-  #decide(name: string, decisions: Decisions): Promise<boolean> {
-    const before = this.#state.decisions;
-    return this.#derive(decisions, name, (state) => ({
-      past: before
-        ? [...state.past, { name, decisions: before } satisfies Step].slice(-keptSteps)
-        : state.past,
-      future: [],
-    }));
-  }
-
-  async #derive(
-    decisions: Decisions,
-    reason: string,
-    history: (state: WorkbenchState) => Pick<WorkbenchState, 'past' | 'future'>,
-  ): Promise<boolean> {
-    const isLatest = (): boolean => this.#underway === decisions;
-    this.#underway = decisions;
-    this.#change({ progress: { what: reason, share: 0, stage: 'starting' } }, `${reason} began`);
-    try {
-      const derived = await this.#engine.derive(decisions, (share, stage) => {
-        if (isLatest()) this.#change({ progress: { what: reason, share, stage } }, `${stage} went on`);
-      });
-      if (!isLatest()) return false;
-      if (!derived.crystal) return this.#refuse(reason, decisions.sources, derived.problems);
-      const { picture } = this.#state;
-      const drawn = await this.#firstPicture(derived, picture, reason);
-      if (!isLatest()) return false;
-      this.#underway = null;
-      this.#accept(decisions, derived, { ...history(this.#state), ...drawn }, reason);
-      if (this.#state.picture !== picture) void this.#redraw();
-      return true;
-    } catch (error) {
-      if (!isLatest()) return false;
-      if (!(error instanceof Cancelled)) return this.#refuse(reason, decisions.sources, [engineFault(error)]);
-      this.#underway = null;
-      this.#change({ progress: null }, `${reason} was cancelled`);
-      return false;
-    }
-  }
-
-  /** Picture and selected site of a crystal that is about to come on screen, so that all of it comes at once. */
-  async #firstPicture(derived: DerivedCase, picture: SceneOptions, reason: string): Promise<Drawn> {
-    const { selection } = this.#state;
-    this.#change(
-      { progress: { what: reason, share: 1, stage: 'making the picture' } },
-      'the picture is made',
-    );
-    if (selection) await this.#sites.read(derived, [selection.siteIndex]).catch(() => []);
-    const drawn = await this.#draw(derived, picture).catch(drawingFault);
-    return { scene: drawn?.scene ?? null, sceneFault: drawn?.sceneFault ?? null };
-  }
-
-  /** Asks for the picture of the present options; until it comes the one before stays. */
-  async #redraw(): Promise<void> {
-    const { derived, picture } = this.#state;
-    if (!derived?.crystal) return;
-    const late = setTimeout(
-      () => this.#change({ isDrawing: true }, 'the picture is waited for'),
-      drawingIsLong,
-    );
-    const drawn = await this.#draw(derived, picture).catch(drawingFault);
-    clearTimeout(late);
-    if (drawn && this.#state.derived === derived)
-      this.#change({ ...drawn, isDrawing: false }, 'a new picture came');
-  }
-
-  async #draw(derived: DerivedCase, options: Partial<SceneOptions>): Promise<Drawn> {
-    return { scene: await this.#scenes.ask({ derived, options }), sceneFault: null };
-  }
-
-  #accept(
-    decisions: Decisions,
-    derived: DerivedCase,
-    also: Pick<WorkbenchState, 'past' | 'future'> & Drawn,
-    reason: string,
-  ): void {
-    const sameCrystal = decisions.sources[0]?.id === this.#state.decisions?.sources[0]?.id;
-    const { selection } = this.#state;
-    const siteCount = derived.crystal?.siteCount ?? 0;
-    const keeps = sameCrystal && selection !== null && selection.siteIndex < siteCount;
-    const change = {
-      decisions,
-      derived,
-      ...also,
-      isDrawing: false,
-      refused: null,
-      progress: null,
-      hover: null,
-      selection: keeps ? selection : null,
-      shownPlace: sameCrystal ? this.#state.shownPlace : null,
-    };
-    this.#change(change, `${reason} is on screen`);
-  }
-
-  #refuse(what: string, sources: readonly SourceFile[], problems: readonly Problem[]): false {
-    this.#underway = null;
-    this.#change({ refused: { what, sources, problems }, progress: null }, `${what} failed`);
-    return false;
-  }
-
-  #change(change: Partial<WorkbenchState>, reason: string): void {
-    this.#state = { ...this.#state, ...change };
-    for (const listener of [...this.#listeners]) listener(this.#state, reason);
-  }
 }
 
 function titleOf(files: readonly FileInput[]): string {
@@ -341,19 +316,6 @@ function titleOf(files: readonly FileInput[]): string {
 
 function same(a: Selection | null, b: Selection | null): boolean {
   return a === b || (a?.siteIndex === b?.siteIndex && a?.atomId === b?.atomId && a !== null && b !== null);
-}
-
-/** What to show instead of a picture that could not be made; nothing where a newer one is on its way. */
-function drawingFault(error: unknown): Partial<Drawn> | null {
-  if (error instanceof Cancelled) return null;
-  return { sceneFault: error instanceof Error ? error.message : String(error) };
-}
-
-function engineFault(error: unknown): Problem {
-  const message = error instanceof Error ? error.message : String(error);
-  return problem('error', 'engine-fault', `The engine stopped: ${message}`, {
-    hint: 'What was on screen is still there. Try the file again; if it happens again, it is our fault.',
-  });
 }
 
 export function createStore(engine: EngineClient, initial: Partial<WorkbenchState> = {}): Store {

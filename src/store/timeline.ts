@@ -1,0 +1,190 @@
+import type { Problem } from '#src/base/problem.ts';
+import { problem } from '#src/base/problem.ts';
+import { Cancelled } from './engine-client.ts';
+import type { EngineClient } from './engine-client.ts';
+import type { DerivedCase, SourceFile } from './engine-protocol.ts';
+import type { Moment } from './moment.ts';
+import { afterStep, momentOf, redone, undone, withViews } from './moment.ts';
+import type { Drawn, PictureMaker } from './picture-maker.ts';
+import type { SiteCache } from './site-cache.ts';
+import type { StateHolder } from './state-holder.ts';
+import type { Decisions, Step, Views } from './state.ts';
+
+/** How a change of the picture or the table becomes a step. */
+export interface ViewStepOptions {
+  /** Goes on with the step before where that has the same name: a drag or a burst of keys is one step. */
+  readonly coalesce?: boolean;
+}
+
+/**
+ * The work as a line of moments with a name between each two. A step that changes numbers goes through the engine and holds
+ * once it has answered; one that changes views holds at once, in front of what is underway too.
+ */
+export class Timeline {
+  readonly #holder: StateHolder;
+  readonly #engine: EngineClient;
+  readonly #pictures: PictureMaker;
+  readonly #sites: SiteCache;
+  /** What will hold when the engine has answered; later decisions build on it. */
+  #underway: Moment | null = null;
+  /** Counts derivations: only the latest may come on screen. */
+  #run = 0;
+  /** The view step that may still grow. */
+  #growing: Step | null = null;
+
+  constructor(holder: StateHolder, engine: EngineClient, pictures: PictureMaker, sites: SiteCache) {
+    this.#holder = holder;
+    this.#engine = engine;
+    this.#pictures = pictures;
+    this.#sites = sites;
+  }
+
+  /** The newest moment: the one underway, else the one on screen. */
+  get newest(): Moment {
+    return this.#underway ?? momentOf(this.#holder.state);
+  }
+
+  /** A new decision: derives it and, when it holds, remembers the moment before as a step. */
+  decide(name: string, decisions: Decisions | null, views: Views = this.newest.views): Promise<boolean> {
+    return this.go(afterStep(this.newest, name, { decisions, views }), name);
+  }
+
+  /** A step that changes no number. */
+  step(name: string, change: Partial<Views>, { coalesce = false }: ViewStepOptions = {}): void {
+    const present = momentOf(this.#holder.state);
+    const grows = coalesce && this.#growing?.name === name && present.past.at(-1) === this.#growing;
+    const after = (moment: Moment): Moment => {
+      const changed = withViews(moment, change);
+      return grows && moment.past.at(-1)?.name === name
+        ? changed
+        : afterStep(moment, name, { views: changed.views });
+    };
+    if (this.#underway) this.#underway = after(this.#underway);
+    const { views, past, future } = after(present);
+    this.#growing = past.at(-1) ?? null;
+    this.#holder.change({ ...views, past, future }, name);
+    if (change.picture) void this.#pictures.redraw();
+  }
+
+  /** Changes views as a part of the last step. */
+  amend(change: Partial<Views>, reason: string): void {
+    if (this.#underway) this.#underway = withViews(this.#underway, change);
+    this.#holder.change(change, reason);
+  }
+
+  undo(): Promise<boolean> {
+    const { newest } = this;
+    const before = undone(newest);
+    return before ? this.go(before, `undo ${newest.past.at(-1)?.name}`) : Promise.resolve(false);
+  }
+
+  redo(): Promise<boolean> {
+    const { newest } = this;
+    const after = redone(newest);
+    return after ? this.go(after, `redo ${newest.future.at(-1)?.name}`) : Promise.resolve(false);
+  }
+
+  /** Gives up what the engine is doing; the screen stays as it is. */
+  cancel(): void {
+    const what = this.#holder.state.progress?.what;
+    this.#engine.cancel();
+    if (!this.#underway) return;
+    this.#underway = null;
+    this.#holder.change({ progress: null }, `${what ?? 'what was begun'} was cancelled`);
+  }
+
+  /** Makes a moment the present one: at once where its numbers are on screen, else when the engine has answered. */
+  async go(next: Moment, reason: string): Promise<boolean> {
+    const run = ++this.#run;
+    const isLatest = (): boolean => this.#run === run && this.#underway !== null;
+    this.#growing = null;
+    const { decisions } = next;
+    if (!decisions || decisions === this.#holder.state.decisions) return this.#goAtOnce(next, reason);
+    this.#underway = next;
+    this.#holder.change({ progress: { what: reason, share: 0, stage: 'starting' } }, `${reason} began`);
+    try {
+      const derived = await this.#engine.derive(decisions, (share, stage) => {
+        if (isLatest()) this.#holder.change({ progress: { what: reason, share, stage } }, `${stage} went on`);
+      });
+      if (!isLatest()) return false;
+      if (!derived.crystal) return this.#refuse(reason, decisions.sources, derived.problems);
+      const { picture } = this.newest.views;
+      const drawn = await this.#firstPicture(derived, reason);
+      if (!isLatest()) return false;
+      this.#accept(this.newest, derived, drawn, reason);
+      if (this.#holder.state.picture !== picture) void this.#pictures.redraw();
+      return true;
+    } catch (error) {
+      if (!isLatest()) return false;
+      if (!(error instanceof Cancelled)) return this.#refuse(reason, decisions.sources, [engineFault(error)]);
+      this.#underway = null;
+      this.#holder.change({ progress: null }, `${reason} was cancelled`);
+      return false;
+    }
+  }
+
+  /** The way of every step that needs no engine. */
+  #goAtOnce({ decisions, views, past, future }: Moment, reason: string): boolean {
+    if (this.#underway) this.#engine.cancel();
+    this.#underway = null;
+    const { state } = this.#holder;
+    const empty = { derived: null, scene: null, sceneFault: null, selection: null, hover: null };
+    const cleared = decisions ? {} : { ...empty, shownPlace: null, refused: null };
+    this.#holder.change({ ...views, ...cleared, decisions, past, future, progress: null }, reason);
+    if (views.picture !== state.picture) void this.#pictures.redraw();
+    return true;
+  }
+
+  /** Picture and selected site of a crystal that is about to come on screen, so that all of it comes at once. */
+  async #firstPicture(derived: DerivedCase, reason: string): Promise<Drawn> {
+    const { selection } = this.#holder.state;
+    this.#holder.change(
+      { progress: { what: reason, share: 1, stage: 'making the picture' } },
+      'the picture is made',
+    );
+    if (selection) await this.#sites.read(derived, [selection.siteIndex]).catch(() => []);
+    return this.#pictures.first(derived, this.newest.views.picture);
+  }
+
+  #accept(
+    { decisions, views, past, future }: Moment,
+    derived: DerivedCase,
+    drawn: Drawn,
+    reason: string,
+  ): void {
+    this.#underway = null;
+    const { state } = this.#holder;
+    const sameCrystal = decisions?.sources[0]?.id === state.decisions?.sources[0]?.id;
+    const { selection } = state;
+    const siteCount = derived.crystal?.siteCount ?? 0;
+    const keeps = sameCrystal && selection !== null && selection.siteIndex < siteCount;
+    const change = {
+      ...views,
+      ...drawn,
+      decisions,
+      derived,
+      past,
+      future,
+      isDrawing: false,
+      refused: null,
+      progress: null,
+      hover: null,
+      selection: keeps ? selection : null,
+      shownPlace: sameCrystal ? state.shownPlace : null,
+    };
+    this.#holder.change(change, `${reason} is on screen`);
+  }
+
+  #refuse(what: string, sources: readonly SourceFile[], problems: readonly Problem[]): false {
+    this.#underway = null;
+    this.#holder.change({ refused: { what, sources, problems }, progress: null }, `${what} failed`);
+    return false;
+  }
+}
+
+function engineFault(error: unknown): Problem {
+  const message = error instanceof Error ? error.message : String(error);
+  return problem('error', 'engine-fault', `The engine stopped: ${message}`, {
+    hint: 'What was on screen is still there. Try the file again; if it happens again, it is our fault.',
+  });
+}
