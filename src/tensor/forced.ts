@@ -140,10 +140,13 @@ function elementName({ fold, proper, improper }: SymmetryAxis): string {
   return improper ? 'two-fold axis and mirror normal' : 'two-fold axis';
 }
 
+/** Indices have no larger common denominator than a cell repeats the primitive one where symmetry is searched. */
+const largestFactor = 128;
+
 /** Smallest integers along a rational direction, the first that is not zero positive. */
 function lowestIndices(direction: Vec3): Vec3 {
   const smallest = Math.min(...direction.map(Math.abs).filter((component) => component > near));
-  for (let factor = 1; factor <= 12; factor += 1) {
+  for (let factor = 1; factor <= largestFactor; factor += 1) {
     const scaled = direction.map((component) => (component / smallest) * factor);
     if (scaled.some((component) => Math.abs(component - Math.round(component)) > near)) continue;
     const sign = Math.sign(scaled.find((component) => Math.abs(component) > near) ?? 1);

@@ -4,7 +4,7 @@ import { seededRandom } from '#src/base/seeded-random.ts';
 import { latticeFromRows } from '#src/crystal/lattice.ts';
 import { framedStructures } from '#tests/support/crystal-frames.ts';
 import { dossierOfText } from '#tests/support/derive.ts';
-import { asXyz, repeated } from '#tests/support/supercell-models.ts';
+import { asXyz, modelOfGroup, repeated } from '#tests/support/supercell-models.ts';
 
 /** A simple cubic crystal of edge 4 Å, repeated along x. */
 function cubicXyz(times: number): string {
@@ -32,6 +32,13 @@ it('is silent where nothing is lost', () => {
   const { problems, symmetry } = dossierOfText('single.xyz', cubicXyz(1));
   expect(symmetry.number).toBe(221);
   expect(problems.map(({ code }) => code)).not.toContain('supercell-breaks-symmetry');
+});
+
+it('names directions that symmetry forces by whole numbers, in the given axes', () => {
+  const cell = { a: 5.4, b: 5.4, c: 5.4, alpha: 90, beta: 90, gamma: 90 };
+  const small = modelOfGroup(cell, 'P 2 2 3', [['Zn', [0.11, 0.11, 0.11]]]);
+  const { sites } = dossierOfText('long.xyz', asXyz(repeated(small, [5, 0, 0, 0, 6, 0, 0, 0, 1])));
+  expect(sites[0]!.forced).toContain('three-fold axis [6 5 30]');
 });
 
 describe('quartz given twice along a, row by row', () => {
