@@ -60,20 +60,16 @@ export class Store {
 
   /** Opens files as a new case; settings and references stay, but for the frame, which belongs to one file. */
   open(files: readonly FileInput[], title = titleOf(files)): Promise<boolean> {
-    const { decisions, views } = this.#timeline.newest;
-    const settings = { ...(decisions?.settings ?? defaultSettings), frame: null };
+    const settings = { ...(this.#timeline.newest.decisions?.settings ?? defaultSettings), frame: null };
     const sources = this.#identified(files, []);
-    return this.#timeline.decide(
-      `open ${title}`,
-      { title, sources, structure: null, settings, accepted: {} },
-      viewsForNewCase(views),
-    );
+    const decisions = { title, sources, structure: null, settings, accepted: {} };
+    return this.#timeline.decide(`open ${title}`, decisions, viewsForNewCase);
   }
 
   /** Opens what a case file says, with its settings and views. */
   openCase({ decisions, views }: OpenedCase): Promise<boolean> {
     const decided = decisions((files) => this.#identified(files, []));
-    return this.#timeline.decide(`open ${decided.title}`, decided, views);
+    return this.#timeline.decide(`open ${decided.title}`, decided, () => views);
   }
 
   /** Says why files could not be opened; the case on screen stays. */
@@ -84,9 +80,8 @@ export class Store {
 
   /** Clears the page; undo brings the case back. */
   clear(): Promise<boolean> {
-    const { decisions, views } = this.#timeline.newest;
-    if (!decisions) return Promise.resolve(false);
-    return this.#timeline.decide('clear the page', null, viewsForNewCase(views));
+    if (!this.#timeline.newest.decisions) return Promise.resolve(false);
+    return this.#timeline.decide('clear the page', null, viewsForNewCase);
   }
 
   /** Adds files (tensors, as a rule) to the case on screen. */
@@ -99,7 +94,7 @@ export class Store {
 
   /** Takes one file out of the case. */
   remove(sourceId: string): Promise<boolean> {
-    const { decisions: base, views } = this.#timeline.newest;
+    const base = this.#timeline.newest.decisions;
     const gone = base?.sources.find(({ id }) => id === sourceId);
     if (!base || !gone) return Promise.resolve(false);
     const isCrystal = this.state.derived?.chosen?.sourceId === sourceId;
@@ -110,14 +105,14 @@ export class Store {
         sources: base.sources.filter(({ id }) => id !== sourceId),
         structure: base.structure?.sourceId === sourceId ? null : base.structure,
       },
-      isCrystal ? viewsForNewCrystal(views) : views,
+      isCrystal ? viewsForNewCrystal : undefined,
     );
   }
 
   chooseStructure(structure: StructureChoice, name: string): Promise<boolean> {
-    const { decisions: base, views } = this.#timeline.newest;
+    const base = this.#timeline.newest.decisions;
     if (!base) return Promise.resolve(false);
-    return this.#timeline.decide(`choose ${name}`, { ...base, structure }, viewsForNewCrystal(views));
+    return this.#timeline.decide(`choose ${name}`, { ...base, structure }, viewsForNewCrystal);
   }
 
   /** Takes a proposed column of one file as a quantity, in its usual unit or the one the file names. */
@@ -197,12 +192,12 @@ export class Store {
 
   /** Changes what is drawn. The name goes behind "Undo": `colour by span`. */
   setPicture(change: Partial<SceneOptions>, name: string, options: ViewStepOptions = {}): void {
-    this.#timeline.step(name, { picture: { ...this.state.picture, ...change } }, options);
+    this.#timeline.step(name, ({ picture }) => ({ picture: { ...picture, ...change } }), options);
   }
 
   /** Changes from where the crystal is seen; null is the first view of it. */
   setCamera(camera: Camera | null, name: string, options: ViewStepOptions = {}): void {
-    this.#timeline.step(name, { camera }, options);
+    this.#timeline.step(name, () => ({ camera }), options);
   }
 
   /** A camera that the picture chose itself, such as a fit to a new extent: no step of its own, part of the last one. */
@@ -211,57 +206,59 @@ export class Store {
   }
 
   setLook(change: Partial<Look>, name: string, options: ViewStepOptions = {}): void {
-    this.#timeline.step(name, { look: { ...this.state.look, ...change } }, options);
+    this.#timeline.step(name, ({ look }) => ({ look: { ...look, ...change } }), options);
   }
 
   /** Changes columns, order or filter of the site table. */
   setTable(change: Partial<TableSettings>, name: string, options: ViewStepOptions = {}): void {
-    this.#timeline.step(name, { table: { ...this.state.table, ...change } }, options);
+    this.#timeline.step(name, ({ table }) => ({ table: { ...table, ...change } }), options);
   }
 
   /** Keeps the picture as it is under a name; one that is taken is kept anew. */
   saveView(name: string): void {
-    const { camera, picture, look, savedViews } = this.state;
-    const saved = { name, camera, picture, look };
-    const isKnown = savedViews.some((view) => view.name === name);
-    const views = savedViews.map((view) => (view.name === name ? saved : view));
-    this.#timeline.step(`save view ${name}`, { savedViews: isKnown ? views : [...views, saved] });
+    this.#timeline.step(`save view ${name}`, ({ camera, picture, look, savedViews }) => {
+      const saved = { name, camera, picture, look };
+      const isKnown = savedViews.some((view) => view.name === name);
+      const views = savedViews.map((view) => (view.name === name ? saved : view));
+      return { savedViews: isKnown ? views : [...views, saved] };
+    });
   }
 
   applyView(name: string): void {
     const view = this.state.savedViews.find((one) => one.name === name);
     if (!view) return;
-    this.#timeline.step(`show view ${name}`, { camera: view.camera, picture: view.picture, look: view.look });
+    const { camera, picture, look } = view;
+    this.#timeline.step(`show view ${name}`, () => ({ camera, picture, look }));
   }
 
   removeView(name: string): void {
-    const savedViews = this.state.savedViews.filter((view) => view.name !== name);
-    if (savedViews.length < this.state.savedViews.length)
-      this.#timeline.step(`remove view ${name}`, { savedViews });
+    if (!this.state.savedViews.some((view) => view.name === name)) return;
+    this.#timeline.step(`remove view ${name}`, ({ savedViews }) => ({
+      savedViews: savedViews.filter((view) => view.name !== name),
+    }));
   }
 
   /** Gives a saved view another name; false where that name is taken or empty. */
   renameView(name: string, next: string): boolean {
-    const { savedViews } = this.state;
-    if (next === '' || savedViews.some((view) => view.name === next)) return next === name;
-    const renamed = savedViews.map((view) => (view.name === name ? { ...view, name: next } : view));
-    this.#timeline.step(`rename view ${name}`, { savedViews: renamed });
+    if (next === '' || this.state.savedViews.some((view) => view.name === next)) return next === name;
+    this.#timeline.step(`rename view ${name}`, ({ savedViews }) => ({
+      savedViews: savedViews.map((view) => (view.name === name ? { ...view, name: next } : view)),
+    }));
     return true;
   }
 
   addMeasurement(measurement: Measurement): void {
-    this.#timeline.step(`measure ${measurement.kind}`, {
-      measurements: [...this.state.measurements, measurement],
-    });
+    this.#timeline.step(`measure ${measurement.kind}`, ({ measurements }) => ({
+      measurements: [...measurements, measurement],
+    }));
   }
 
   removeMeasurement(id: string): void {
-    const { measurements } = this.state;
-    const gone = measurements.find((one) => one.id === id);
-    if (gone)
-      this.#timeline.step(`remove ${gone.kind}`, {
-        measurements: measurements.filter((one) => one !== gone),
-      });
+    const gone = this.state.measurements.find((one) => one.id === id);
+    if (!gone) return;
+    this.#timeline.step(`remove ${gone.kind}`, ({ measurements }) => ({
+      measurements: measurements.filter((one) => one.id !== id),
+    }));
   }
 
   /** Told by whoever keeps the work in the browser. */

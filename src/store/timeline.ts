@@ -16,9 +16,13 @@ export interface ViewStepOptions {
   readonly coalesce?: boolean;
 }
 
+/** One step forth from any moment. */
+type Recipe = (moment: Moment) => Moment;
+
 /**
  * The work as a line of moments with a name between each two. A step that changes numbers goes through the engine and holds
- * once it has answered; one that changes views holds at once, in front of what is underway too.
+ * once it has answered; one that changes views holds at once. Views are of the crystal on screen: one changed while a
+ * decision is underway comes before that decision, and after an undo that is underway.
  */
 export class Timeline {
   readonly #holder: StateHolder;
@@ -27,6 +31,8 @@ export class Timeline {
   readonly #sites: SiteCache;
   /** What will hold when the engine has answered; later decisions build on it. */
   #underway: Moment | null = null;
+  /** How the screen's moment becomes the one underway; null where it is gone back to. */
+  #recipes: readonly Recipe[] | null = null;
   /** Counts derivations: only the latest may come on screen. */
   #run = 0;
   /** The view step that may still grow. */
@@ -45,31 +51,48 @@ export class Timeline {
   }
 
   /** A new decision: derives it and, when it holds, remembers the moment before as a step. */
-  decide(name: string, decisions: Decisions | null, views: Views = this.newest.views): Promise<boolean> {
-    return this.go(afterStep(this.newest, name, { decisions, views }), name);
+  decide(
+    name: string,
+    decisions: Decisions | null,
+    viewsAfter: (views: Views) => Views = (views) => views,
+  ): Promise<boolean> {
+    const recipe: Recipe = (moment) =>
+      afterStep(moment, name, { decisions, views: viewsAfter(moment.views) });
+    const before = this.#underway ? this.#recipes : [];
+    return this.go(recipe(this.newest), name, before && [...before, recipe]);
   }
 
   /** A step that changes no number. */
-  step(name: string, change: Partial<Views>, { coalesce = false }: ViewStepOptions = {}): void {
-    const present = momentOf(this.#holder.state);
+  step(
+    name: string,
+    change: (views: Views) => Partial<Views>,
+    { coalesce = false }: ViewStepOptions = {},
+  ): void {
+    const { state } = this.#holder;
+    const present = momentOf(state);
     const grows = coalesce && this.#growing?.name === name && present.past.at(-1) === this.#growing;
-    const after = (moment: Moment): Moment => {
-      const changed = withViews(moment, change);
+    const after: Recipe = (moment) => {
+      const changed = withViews(moment, change(moment.views));
       return grows && moment.past.at(-1)?.name === name
         ? changed
         : afterStep(moment, name, { views: changed.views });
     };
-    if (this.#underway) this.#underway = after(this.#underway);
-    const { views, past, future } = after(present);
+    const next = after(present);
+    if (this.#underway)
+      this.#underway = this.#recipes
+        ? this.#recipes.reduce((moment, recipe) => recipe(moment), next)
+        : after(this.#underway);
+    const { views, past, future } = next;
     this.#growing = past.at(-1) ?? null;
     this.#holder.change({ ...views, past, future }, name);
-    if (change.picture) void this.#pictures.redraw();
+    if (views.picture !== state.picture) void this.#pictures.redraw();
   }
 
   /** Changes views as a part of the last step. */
   amend(change: Partial<Views>, reason: string): void {
-    if (this.#underway) this.#underway = withViews(this.#underway, change);
     this.#holder.change(change, reason);
+    if (this.#underway && this.#recipes)
+      this.#underway = this.#recipes.reduce((moment, recipe) => recipe(moment), momentOf(this.#holder.state));
   }
 
   undo(): Promise<boolean> {
@@ -94,13 +117,14 @@ export class Timeline {
   }
 
   /** Makes a moment the present one: at once where its numbers are on screen, else when the engine has answered. */
-  async go(next: Moment, reason: string): Promise<boolean> {
+  async go(next: Moment, reason: string, recipes: readonly Recipe[] | null = null): Promise<boolean> {
     const run = ++this.#run;
     const isLatest = (): boolean => this.#run === run && this.#underway !== null;
     this.#growing = null;
     const { decisions } = next;
     if (!decisions || decisions === this.#holder.state.decisions) return this.#goAtOnce(next, reason);
     this.#underway = next;
+    this.#recipes = recipes;
     this.#holder.change({ progress: { what: reason, share: 0, stage: 'starting' } }, `${reason} began`);
     try {
       const derived = await this.#engine.derive(decisions, (share, stage) => {
