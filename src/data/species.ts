@@ -34,7 +34,7 @@ const single =
 export function parseSpecies(text: string): ParsedSpecies | null {
   if (text.length > longestType) return null;
   const clean = text.trim().replace(/[−–]/g, '-').replace(/\s+/g, '');
-  const group = hydrogenGroup(clean);
+  const group = hydrogenGroup(clean.replace(/^O(?:[-_]H|\(H\))$/i, 'OH'));
   if (group) return group;
   const parts = single.exec(clean)?.groups;
   if (!parts) return null;

@@ -36,7 +36,8 @@ describe('an atom type', () => {
   });
 
   it('counts the hydrogens of a group that stands for one atom', () => {
-    expect(parseSpecies('OH')).toMatchObject({ element: 'O', hydrogens: 1 });
+    for (const text of ['OH', 'O-H', 'O_H', 'O(H)'])
+      expect(parseSpecies(text)).toMatchObject({ element: 'O', hydrogens: 1 });
     expect(parseSpecies('OH1-')).toMatchObject({ element: 'O' });
     expect(parseSpecies('H2O')).toMatchObject({ element: 'O', hydrogens: 2 });
     expect(parseSpecies('H3O+')).toMatchObject({ element: 'O', hydrogens: 3, charge: 1 });

@@ -24,6 +24,7 @@ const firstUnlikely = 95;
 const usual = /^(?:HO|CO3|PO[34])$/;
 
 const pairType = /^([A-Z]{2})(\d?)(?:\d?([+-])|([+-])\d)?$/;
+const rareType = /^([A-Z][a-z])\d*$/;
 const groupType =
   /^(?!CH)(?:H[2-4]?)?((?:S|Se|Te|P|As|Sb|B|Si|Ge|Cl|Br|I|V|Cr|Mn|Mo|W|U|Al|Be|Ti|C)\d?)(?:O|F|S|Cl|H)(?:[2-9]|1[0-2])(?:\d?[+-]|[+-]\d)?$/;
 
@@ -42,6 +43,12 @@ export function groupReading(
   const [, pair = '', digit = '', ...signs] = pairType.exec(text) ?? [];
   if (pairs.has(pair)) {
     return known.size > 0 ? null : pairReading(pair, digit, signs.join(''), label, style);
+  }
+  const rare = rareType.exec(text)?.[1];
+  const symbol = rare && elementOf(rare);
+  if (symbol && symbol.atomicNumber >= 100 && !known.has(symbol.symbol)) {
+    const element = [label.charAt(0), rare.charAt(0)].find((letter) => elementOf(letter) !== null);
+    if (element) return { element, reason: `${symbol.symbol} is no likely atom; ${element} was taken` };
   }
   const central = groupType.exec(text)?.[1]?.replace(/\d/, '');
   if (central === undefined || (known.size > 0 && !known.has(central))) return null;

@@ -71,7 +71,7 @@ function readOperations(view: BlockView, source: ItemSource, log: ProblemLog): L
   const first = values.find((value) => textOf(value) !== null);
   if (!first) return null;
   const parts = values.flatMap((value) => (value.kind === 'text' ? textParts(value) : []));
-  const broken = parts.every(({ text }) => understand(text) === null);
+  const broken = parts.some(({ text }) => understand(text) === null);
   const pieces = (broken ? rejoined(source) : null) ?? parts;
   const operations: SymmetryOperation[] = [];
   let magnetic = false;

@@ -69,7 +69,8 @@ export function speciesOfSite(
     const group = partly ? `${typeText}: only a part of the type could be read` : null;
     return { ...ofElement(typeReading.element, 'type', typeReading.certain), group };
   }
-  const mixture = /[,/]/.test(label) ? parseMixture(label) : null;
+  const listed = /\(([^()]*[,/][^()]*)\)/.exec(label)?.[1] ?? label;
+  const mixture = /[,/]/.test(listed) ? parseMixture(listed) : null;
   if (mixture) return fromMixture(mixture, 'label');
   const reading = elementFromLabel(label, known);
   if (known.size === 0 && /^[HD][23]O$/i.test(label)) return ofElement('O', 'label', false);
@@ -98,9 +99,9 @@ function rivalOf(label: string, taken: string, known: ReadonlySet<string>): stri
   return readings.find((symbol) => symbol !== taken) ?? null;
 }
 
-/** `MgFe1` or, without a formula, `H2O1`: two elements in one label. */
+/** `MgFe1` or, without a formula, `H2O1` and `UO1`: two elements in one label. */
 function namesTwo(label: string, known: ReadonlySet<string>): boolean {
-  if (known.size === 0 && /^[HD][23]O/.test(label)) return true;
+  if (known.size === 0 && /^(?:[HD][23]|[BISUV])O/.test(label)) return true;
   const [, one = '', two = ''] = /^([A-Z][a-z])([A-Z][a-z])(?![a-z])/.exec(label) ?? [];
   return elementOf(one) !== null && elementOf(two) !== null;
 }

@@ -52,6 +52,7 @@ describe('labels without a type', () => {
     ['H3O', 'O'],
     ['H2O1', 'H'],
     ['MgFe1', 'Mg'],
+    ['UO1', 'U'],
   ])('%s is a guess', (label, element) => {
     const reading = block(box, inversion, atomText(plainColumns, `${label} .1 .2 .3`));
     expect(only(reading).sites[0]!.element).toBe(element);
@@ -59,7 +60,34 @@ describe('labels without a type', () => {
   });
 });
 
+describe('types of elements that no crystal holds', () => {
+  it.each([
+    ['N1', 'No', 'N'],
+    ['C1', 'Cn', 'C'],
+    ['O2', 'Og', 'O'],
+  ])('%s of type %s is %s, and told', (label, type, element) => {
+    const reading = block(box, inversion, atomText(typed, `${label} ${type} .1 .2 .3`));
+    expect(only(reading).sites[0]!.element).toBe(element);
+    expect(codes(reading)).toEqual(['cif-type-names-group']);
+  });
+});
+
+it('a mixture in brackets behind the name of a position', () => {
+  const reading = block(box, inversion, atomText(plainColumns, '"T1(Si,Al)" .1 .2 .3'));
+  expect(only(reading).sites[0]!.species).toEqual([
+    { element: 'Si', occupancy: 0.5 },
+    { element: 'Al', occupancy: 0.5 },
+  ]);
+  expect(codes(reading)).toEqual(['cif-mixture-shares']);
+});
+
 describe('numbers and operations', () => {
+  it('operations of which some stand without quotes and with blanks', () => {
+    const list = 'loop_\n_symmetry_equiv_pos_as_xyz\nx,y,z\n-x, -y, -z\n';
+    const reading = block(box, list, atomText(typed, 'C1 C .1 .2 .3'));
+    expect(operationsOf(reading)).toEqual(['x,y,z', '-x,-y,-z']);
+  });
+
   it('a unit behind a cell edge is told and left out', () => {
     const reading = block(box.replace('8', "'8.00 A'"), inversion, atomText(typed, 'C1 C .1 .2 .3'));
     expect(only(reading).lattice!.cell.a).toBe(8);
