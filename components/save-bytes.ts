@@ -1,0 +1,16 @@
+/** Hands bytes to the browser to be saved under a name. */
+export function saveBytes(bytes: Uint8Array<ArrayBuffer>, name: string, type: string): void {
+  const url = URL.createObjectURL(new Blob([bytes], { type }));
+  const link = document.createElement('a');
+  link.href = url;
+  link.download = name;
+  link.click();
+  // The browser needs the address until it has begun to save.
+  setTimeout(() => URL.revokeObjectURL(url), 10_000);
+}
+
+/** A title as the name of a file: letters, digits, dots and dashes. */
+export function fileNameOf(title: string, ending: string): string {
+  const plain = title.replace(/\.(cif|xyz|extxyz|gz|json|png)$/gi, '').replaceAll(/[^\p{L}\p{N}._-]+/gu, '-');
+  return `${plain.replace(/^[-.]+|[-.]+$/g, '') || 'crystal'}.${ending}`;
+}
