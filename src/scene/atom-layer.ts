@@ -7,6 +7,7 @@ import type { OccupancyLook } from './occupancy.ts';
 import type { PickEntry, QuadricBatch } from './scene.ts';
 import type { Bead, TensorDrawing } from './tensor-drawing.ts';
 import { centreRadius } from './tensor-drawing.ts';
+import type { PrincipalForm, TensorShape } from './tensor-shape.ts';
 import { tensorShape } from './tensor-shape.ts';
 
 type Rgb = readonly [number, number, number];
@@ -110,7 +111,7 @@ function lookOf(drawn: DrawnAtom, index: number, look: AtomsLook): QuadricLook {
     const colour = look.tensors.centreColourOf(site.index);
     const radius = centreRadius(look.tensors);
     if (radius !== null) return { ...divided, shape: sphere(radius, divided, look), circles: 0, colour };
-    return { ...divided, ...tensorShape(form, atom.rotation, look.tensors.scale), colour };
+    return { ...divided, ...ellipsoidOf(site.index, form, atom.rotation, look.tensors), colour };
   }
   const colour = look.isSiteColoured ? siteColourBytes(site.index) : atomColour(site.element);
   const displaced = look.displacement?.shapes.get(site.index);
@@ -119,6 +120,22 @@ function lookOf(drawn: DrawnAtom, index: number, look: AtomsLook): QuadricLook {
     return { ...divided, shape: multiply(atom.rotation, displaced), circles, colour };
   }
   return { ...divided, shape: sphere(atomRadius(site.element), divided, look), circles: 0, colour };
+}
+
+const ownShapes = new WeakMap<TensorDrawing, Map<number, TensorShape>>();
+
+/** The ellipsoid of a site, made once and turned for each of its atoms. */
+function ellipsoidOf(
+  siteIndex: number,
+  form: PrincipalForm,
+  rotation: Mat3,
+  tensors: TensorDrawing,
+): TensorShape {
+  const shapes = ownShapes.get(tensors) ?? new Map<number, TensorShape>();
+  ownShapes.set(tensors, shapes);
+  const own = shapes.get(siteIndex) ?? tensorShape(form, identity3, tensors.scale);
+  shapes.set(siteIndex, own);
+  return { shape: multiply(rotation, own.shape), circles: own.circles };
 }
 
 /** Spheres whose surface is marked turn with the crystal: the marks stand in the frame of its cell. */

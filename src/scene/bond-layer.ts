@@ -3,7 +3,7 @@ import type { BondRecord, CrystalDossier } from '#src/dossier/dossier.ts';
 import type { Cylinder } from './cylinder-list.ts';
 import { dashesBetween } from './cylinder-list.ts';
 import type { DrawnAtom } from './drawn-atoms.ts';
-import { atomsById, copiesById, shiftKey } from './drawn-atoms.ts';
+import { atomsById, copiesById } from './drawn-atoms.ts';
 import type { PickEntry } from './scene.ts';
 import type { NearPair } from './tensor-scale.ts';
 import {
@@ -31,8 +31,8 @@ export function bondCylinders(
     if (!(bond.kind === 'bond' ? shown.bonds : shown.hydrogenBonds)) continue;
     const pickId = picksBefore + picks.length + 1;
     const before = cylinders.length;
-    for (const from of copies.get(bond.from)?.values() ?? []) {
-      const to = copies.get(bond.to)?.get(shiftKey(add(from.cellShift, bond.shift)));
+    for (const from of copies.of(bond.from)) {
+      const to = copies.at(bond.to, add(from.cellShift, bond.shift));
       if (to && !(from.context && to.context))
         cylinders.push(...cylindersBetween(bond.kind, from, to, pickId, shown.neutral));
     }
@@ -72,11 +72,12 @@ const sampledAtoms = 300;
 /** Bonded pairs of sites; without any bond, nearest neighbours among the first drawn atoms. */
 export function nearPairs(dossier: CrystalDossier, drawn: readonly DrawnAtom[]): NearPair[] {
   const atoms = atomsById(dossier);
-  const bonded = dossier.bonds.flatMap((bond) => {
-    const first = atoms.get(bond.from)?.site;
-    const second = atoms.get(bond.to)?.site;
-    return first && second ? [{ first, second, distanceAngstrom: bond.lengthAngstrom }] : [];
-  });
+  const bonded: NearPair[] = [];
+  for (const { from, to, lengthAngstrom } of dossier.bonds) {
+    const first = atoms.get(from)?.site;
+    const second = atoms.get(to)?.site;
+    if (first && second) bonded.push({ first, second, distanceAngstrom: lengthAngstrom });
+  }
   if (bonded.length > 0) return bonded;
   const sample = drawn.slice(0, sampledAtoms);
   return sample.flatMap((one, i) => {

@@ -1,7 +1,7 @@
 import type { Vec3 } from '#src/base/matrix3.ts';
 import { add, subtract } from '#src/base/vector3.ts';
 import { electronegativity, elementClass } from '#src/data/radii.ts';
-import type { Copies, DrawnAtom, ExtentInput } from './drawn-atoms.ts';
+import type { DrawnAtom, ExtentInput } from './drawn-atoms.ts';
 import { atomsById, copiesById, copyOf, shiftKey } from './drawn-atoms.ts';
 
 /**
@@ -32,22 +32,21 @@ function missingPartners(
   isWanted: (inside: DrawnAtom, outside: string) => boolean,
 ): DrawnAtom[] {
   const atoms = atomsById(dossier);
-  const copies: Copies = copiesById(drawn);
+  const copies = copiesById(drawn);
   const added = new Map<string, DrawnAtom>();
   const addMissing = (inside: DrawnAtom, id: string, cellShift: Vec3) => {
-    const key = shiftKey(cellShift);
-    if (copies.get(id)?.has(key)) return;
+    if (copies.at(id, cellShift)) return;
     const known = atoms.get(id);
     if (!known || hidden.has(known.site.index) || !isWanted(inside, known.site.element)) return;
-    const name = `${id} ${key}`;
+    const name = `${id} ${shiftKey(cellShift)}`;
     if (!added.has(name)) added.set(name, copyOf(dossier, known.atom, known.site, cellShift, true));
   };
   for (const bond of dossier.bonds) {
     if (bond.kind !== 'bond') continue;
-    for (const from of copies.get(bond.from)?.values() ?? []) {
+    for (const from of copies.of(bond.from)) {
       addMissing(from, bond.to, add(from.cellShift, bond.shift));
     }
-    for (const to of copies.get(bond.to)?.values() ?? []) {
+    for (const to of copies.of(bond.to)) {
       addMissing(to, bond.from, subtract(to.cellShift, bond.shift));
     }
   }

@@ -23,13 +23,32 @@ const nothing: ConvexHull = { faces: [], edges: [] };
 
 /**
  * Convex hull of 3 to 24 points by trying the plane of every three: points all on one side of it make it a face, and those
- * in it are its corners. Coplanar points give polygons, points on edges or inside faces are no corners, flat sets one polygon.
+ * in it are its corners. Coplanar points give polygons; points on edges or inside faces are no corners, flat sets one polygon.
  * Nothing for fewer than three points or points on one line.
  */
-export function convexHull(points: readonly Vec3[]): ConvexHull {
-  const count = points.length;
-  if (count < 3 || count > mostHullPoints) return nothing;
-  const centre = scale(1 / count, points.reduce(add));
+export function convexHull(given: readonly Vec3[]): ConvexHull {
+  if (given.length < 3 || given.length > mostHullPoints) return nothing;
+  const kept = distinctPoints(given);
+  const found = hullOf(kept.map((index) => given[index]!));
+  if (kept.length === given.length) return found;
+  const named = (corners: readonly number[]): number[] => corners.map((corner) => kept[corner]!);
+  return {
+    faces: found.faces.map(named),
+    edges: found.edges.map(([from, to]) => [kept[from]!, kept[to]!] as const),
+  };
+}
+
+/** Indices of the points without those that coincide with an earlier one. */
+function distinctPoints(points: readonly Vec3[]): number[] {
+  const spread = points.reduce((most, point) => Math.max(most, length(subtract(point, points[0]!))), 0);
+  const isNew = (point: Vec3, k: number): boolean =>
+    !points.slice(0, k).some((earlier) => length(subtract(point, earlier)) <= flatShare * spread);
+  return [...points.keys()].filter((k) => isNew(points[k]!, k));
+}
+
+function hullOf(points: readonly Vec3[]): ConvexHull {
+  if (points.length < 3) return nothing;
+  const centre = scale(1 / points.length, points.reduce(add));
   const size = points.reduce((most, point) => Math.max(most, length(subtract(point, centre))), 0);
   const flat = flatNormal(points, size);
   if (flat === null) return nothing;
@@ -40,46 +59,69 @@ export function convexHull(points: readonly Vec3[]): ConvexHull {
   return solidHull(points, centre, size);
 }
 
+interface Face {
+  readonly corners: readonly number[];
+  readonly normal: Vec3;
+}
+
 function solidHull(points: readonly Vec3[], centre: Vec3, size: number): ConvexHull {
-  const tolerance = flatShare * size;
-  const faces = new Map<string, { readonly corners: readonly number[]; readonly normal: Vec3 }>();
-  for (let i = 0; i < points.length; i++) {
-    for (let j = i + 1; j < points.length; j++) {
-      for (let k = j + 1; k < points.length; k++) {
-        const turned = cross(subtract(points[j]!, points[i]!), subtract(points[k]!, points[i]!));
-        if (length(turned) <= tolerance * size) continue;
+  const faces = new Map<number, Face>();
+  const count = points.length;
+  for (let i = 0; i < count; i++) {
+    for (let j = i + 1; j < count; j++) {
+      const side = subtract(points[j]!, points[i]!);
+      for (let k = j + 1; k < count; k++) {
+        const turned = cross(side, subtract(points[k]!, points[i]!));
+        if (length(turned) <= flatShare * size * size) continue;
         const upward = normalize(turned);
-        const height = dot(upward, points[i]!);
-        const normal = dot(upward, centre) < height ? upward : scale(-1, upward);
-        const level = dot(normal, points[i]!);
-        if (points.some((point) => dot(normal, point) > level + tolerance)) continue;
-        const members = [...points.keys()].filter((p) => dot(normal, points[p]!) > level - tolerance);
-        const key = members.join();
-        if (!faces.has(key)) faces.set(key, { corners: polygonOf(points, members, normal), normal });
+        const normal = dot(upward, centre) < dot(upward, points[i]!) ? upward : scale(-1, upward);
+        const members = membersOf(points, normal, dot(normal, points[i]!), flatShare * size);
+        if (members === 0 || faces.has(members)) continue;
+        const indices = [...points.keys()].filter((p) => members & (1 << p));
+        const corners =
+          indices.length === 3 ? triangleOf(points, indices, normal) : polygonOf(points, indices, normal);
+        faces.set(members, { corners, normal });
       }
     }
   }
   const found = [...faces.values()].filter(({ corners }) => corners.length >= 3);
-  return { faces: found.map(({ corners }) => corners), edges: edgesOf(found) };
+  return { faces: found.map(({ corners }) => corners), edges: edgesOf(found, count) };
+}
+
+/** Bits of the points in a plane; 0 where some point lies above it. */
+function membersOf(points: readonly Vec3[], normal: Vec3, level: number, tolerance: number): number {
+  let members = 0;
+  for (let p = 0; p < points.length; p++) {
+    const height = dot(normal, points[p]!) - level;
+    if (height > tolerance) return 0;
+    if (height > -tolerance) members |= 1 << p;
+  }
+  return members;
+}
+
+/** Three points anticlockwise about a normal. */
+function triangleOf(points: readonly Vec3[], [a, b, c]: readonly number[], normal: Vec3): number[] {
+  const turned = cross(subtract(points[b!]!, points[a!]!), subtract(points[c!]!, points[a!]!));
+  return dot(turned, normal) > 0 ? [a!, b!, c!] : [a!, c!, b!];
 }
 
 /** Each edge of the faces whose two faces meet at an angle that shows. */
-function edgesOf(
-  faces: readonly { readonly corners: readonly number[]; readonly normal: Vec3 }[],
-): [number, number][] {
-  const normals = new Map<string, Vec3[]>();
+function edgesOf(faces: readonly Face[], count: number): [number, number][] {
+  const meeting = new Map<number, { readonly first: Vec3; other?: Vec3 }>();
   for (const { corners, normal } of faces) {
     corners.forEach((corner, k) => {
       const next = corners[(k + 1) % corners.length]!;
-      const key = corner < next ? `${corner},${next}` : `${next},${corner}`;
-      normals.set(key, [...(normals.get(key) ?? []), normal]);
+      const key = Math.min(corner, next) * count + Math.max(corner, next);
+      const known = meeting.get(key);
+      if (known) known.other = normal;
+      else meeting.set(key, { first: normal });
     });
   }
-  return [...normals].flatMap(([key, [one, other]]): [number, number][] => {
-    if (one && other && dot(one, other) > smoothCosine) return [];
-    const [from, to] = key.split(',').map(Number);
-    return [[from!, to!]];
-  });
+  const edges: [number, number][] = [];
+  for (const [key, { first, other }] of meeting) {
+    if (!other || dot(first, other) <= smoothCosine) edges.push([Math.floor(key / count), key % count]);
+  }
+  return edges;
 }
 
 /** Direction in which a set of points is thinnest, among the normals of its triples; null for points on one line. */

@@ -37,15 +37,20 @@ export function packedCylinders(cylinders: readonly Cylinder[]): CylinderBatch {
   return batch;
 }
 
-/** Dashes of one period (dash and gap, half each) along a line, symmetric about its middle, which is always a dash. */
+/**
+ * Dashes of one period (dash and gap, half each) along a line, symmetric about its middle, which is always a dash; of at most
+ * `mostDashes` the period is longer.
+ */
 export function dashesBetween(
   start: Vec3,
   end: Vec3,
-  periodAngstrom: number,
+  usualPeriodAngstrom: number,
   look: Pick<Cylinder, 'radius' | 'startColour' | 'endColour' | 'pickId'>,
+  mostDashes = Infinity,
 ): Cylinder[] {
   const size = distance(start, end);
   if (!(size > 0)) return [];
+  const periodAngstrom = Math.max(usualPeriodAngstrom, size / (mostDashes + 0.01));
   const along = scale(1 / size, subtract(end, start));
   const middle = scale(0.5, add(start, end));
   const steps = Math.max(0, Math.floor((size - periodAngstrom) / 2 / periodAngstrom));

@@ -138,27 +138,55 @@ export function shiftKey([i, j, k]: Vec3): number {
   return ((i + keyReach) * 2 * keyReach + j + keyReach) * 2 * keyReach + k + keyReach;
 }
 
-/** Drawn copies of each atom id, by the key of their cell shift. */
-export type Copies = ReadonlyMap<string, ReadonlyMap<number, DrawnAtom>>;
+/** The drawn copies of each atom id. */
+export interface Copies {
+  readonly of: (id: string) => readonly DrawnAtom[];
+  /** The copy a number of cells away from the atom's own position. */
+  readonly at: (id: string, cellShift: Vec3) => DrawnAtom | undefined;
+}
+
+/** Lists longer than this are looked up by key, shorter ones from front to back. */
+const shortList = 6;
 
 export function copiesById(drawn: readonly DrawnAtom[]): Copies {
-  const copies = new Map<string, Map<number, DrawnAtom>>();
+  const lists = new Map<string, DrawnAtom[]>();
   for (const one of drawn) {
-    const known = copies.get(one.atom.id);
-    if (known) known.set(shiftKey(one.cellShift), one);
-    else copies.set(one.atom.id, new Map([[shiftKey(one.cellShift), one]]));
+    const known = lists.get(one.atom.id);
+    if (known) known.push(one);
+    else lists.set(one.atom.id, [one]);
   }
-  return copies;
+  const keyed = new Map<string, Map<number, DrawnAtom>>();
+  const keyedList = (id: string, list: readonly DrawnAtom[]): Map<number, DrawnAtom> => {
+    const made = new Map(list.map((one) => [shiftKey(one.cellShift), one]));
+    keyed.set(id, made);
+    return made;
+  };
+  return {
+    of: (id) => lists.get(id) ?? none,
+    at: (id, [i, j, k]) => {
+      const list = lists.get(id);
+      if (!list) return undefined;
+      if (list.length > shortList) return (keyed.get(id) ?? keyedList(id, list)).get(shiftKey([i, j, k]));
+      return list.find(({ cellShift: [p, q, r] }) => p === i && q === j && r === k);
+    },
+  };
 }
+
+const none: readonly DrawnAtom[] = [];
 
 export interface KnownAtom {
   readonly atom: EquivalentAtom;
   readonly site: SiteDossier;
 }
 
+const knownAtoms = new WeakMap<CrystalDossier, ReadonlyMap<string, KnownAtom>>();
+
 /** Every atom of the dossier by its id. */
 export function atomsById(dossier: CrystalDossier): ReadonlyMap<string, KnownAtom> {
+  const known = knownAtoms.get(dossier);
+  if (known) return known;
   const atoms = new Map<string, KnownAtom>();
   for (const site of dossier.sites) for (const atom of site.equivalents) atoms.set(atom.id, { atom, site });
+  knownAtoms.set(dossier, atoms);
   return atoms;
 }

@@ -4,7 +4,7 @@ import type { CrystalDossier } from '#src/dossier/dossier.ts';
 import { convexHull } from './convex-hull.ts';
 import type { Cylinder } from './cylinder-list.ts';
 import type { DrawnAtom } from './drawn-atoms.ts';
-import { copiesById, shiftKey } from './drawn-atoms.ts';
+import { copiesById } from './drawn-atoms.ts';
 import type { FacetBatch } from './scene.ts';
 
 type Rgb = readonly [number, number, number];
@@ -75,13 +75,13 @@ function ligandsOf({ dossier, atoms, elements }: PolyhedraInput): Map<number, Ve
   const copies = copiesById(atoms);
   const join = (centre: DrawnAtom, id: string, cellShift: Vec3): void => {
     const place = places.get(centre);
-    const ligand = place === undefined ? undefined : copies.get(id)?.get(shiftKey(cellShift));
+    const ligand = place === undefined ? undefined : copies.at(id, cellShift);
     if (ligand && ligand.site.element !== centre.site.element) ligands.get(place!)!.push(ligand.position);
   };
   for (const { from, to, shift, kind } of dossier.bonds) {
     if (kind !== 'bond') continue;
-    for (const one of copies.get(from)?.values() ?? []) join(one, to, add(one.cellShift, shift));
-    for (const one of copies.get(to)?.values() ?? []) join(one, from, subtract(one.cellShift, shift));
+    for (const one of copies.of(from)) join(one, to, add(one.cellShift, shift));
+    for (const one of copies.of(to)) join(one, from, subtract(one.cellShift, shift));
   }
   return ligands;
 }

@@ -101,6 +101,8 @@ const rodRadii: Vec3 = [0.026, 0.038, 0.052];
 const rodShades: Vec3 = [0.45, 0, -0.4];
 /** Å; dash and gap of rods of negative values. */
 const rodDashAngstrom = 0.15;
+/** Dashes of one rod, at most: each is a cylinder, and there are three rods on every atom. Of many atoms the eye sees fewer. */
+const mostDashes = (carrying: number): number => (carrying > 3000 ? 3 : 7);
 /** Å; shorter rods and vectors are not drawn. */
 const leastLengthAngstrom = 1e-3;
 
@@ -108,6 +110,7 @@ const leastLengthAngstrom = 1e-3;
 export function axisRods(atoms: readonly DrawnAtom[], drawing: TensorDrawing): Cylinder[] {
   const rods: Cylinder[] = [];
   const { kind, unitsPerAngstrom } = drawing.scale;
+  const dashes = mostDashes(drawing.carries.reduce((sum, one) => sum + one, 0));
   atoms.forEach(({ atom, site, position }, i) => {
     const form = drawing.carries[i] ? drawing.forms.get(site.index) : undefined;
     if (!form) return;
@@ -120,7 +123,7 @@ export function axisRods(atoms: readonly DrawnAtom[], drawing: TensorDrawing): C
       const colour = shaded(own, rodShades[k]);
       const look = { radius: rodRadii[k], startColour: colour, endColour: colour, pickId: i + 1 };
       const [start, end] = [subtract(position, half), add(position, half)];
-      if (value < 0) rods.push(...dashesBetween(start, end, rodDashAngstrom, look));
+      if (value < 0) rods.push(...dashesBetween(start, end, rodDashAngstrom, look, dashes));
       else rods.push({ ...look, start, end });
     }
   });

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { batlowStops, vikStops } from '#src/data/colour-maps.data.ts';
-import { colouredValue, usualValue } from '#src/scene/colour-meaning.ts';
+import { usualValue } from '#src/scene/colour-meaning.ts';
 import { legendColour, legendFor, mapColour } from '#src/scene/colour-scale.ts';
 
 /** CIE L* of sRGB bytes (IEC 61966-2-1, CIE 15). */
