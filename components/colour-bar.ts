@@ -1,6 +1,6 @@
 import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import type { ElementKey, Legend } from '#src/scene/scene.ts';
+import type { ElementKey, Legend, Scene } from '#src/scene/scene.ts';
 import { formatNumber } from '#src/table/number-format.ts';
 
 export const colourBarStyles = css`
@@ -23,6 +23,19 @@ export const colourBarStyles = css`
     width: 150px;
     height: 10px;
     forced-color-adjust: none;
+  }
+  .legend .bar.diverging {
+    border-image: linear-gradient(
+        to right,
+        transparent calc(50% - 0.5px),
+        var(--ink) calc(50% - 0.5px) calc(50% + 0.5px),
+        transparent calc(50% + 0.5px)
+      )
+      1;
+    border-style: solid;
+    border-width: 3px 0 0;
+    height: 13px;
+    background-clip: padding-box !important;
   }
   .legend ul {
     display: flex;
@@ -47,32 +60,53 @@ export const colourBarStyles = css`
   }
 `;
 
-/** What colour and size in the picture mean: quantity with unit, colour bar with its limits, scale; then the elements' colours. */
-export function colourBar(
-  legend: Legend | null,
-  scaleStatement: string | null,
-  elements: readonly ElementKey[] = [],
-): TemplateResult | typeof nothing {
-  if (!legend && elements.length === 0) return nothing;
+/** What colour and size in the picture mean: quantity with unit, colour bar with its limits, scale; then signs and elements. */
+export function colourBar(scene: Scene | null): TemplateResult | typeof nothing {
+  if (!scene) return nothing;
+  const { legend, scaleStatement, elements, lobeColours } = scene;
+  if (!legend && !scaleStatement && elements.length === 0) return nothing;
   return html`<div class="legend">
-    ${legend ? barOf(legend) : nothing}
-    ${legend && scaleStatement ? html`<span class="soft">radius: ${scaleStatement}</span>` : nothing}
+    ${legend ? barOf(legend) : nothing} ${lobeColours ? lobeKey(lobeColours) : nothing}
+    ${scaleStatement ? html`<span class="soft">${lengthWord(scene)}: ${scaleStatement}</span>` : nothing}
     ${elements.length > 0 ? elementKey(elements, legend !== null) : nothing}
   </div>`;
 }
 
-function barOf({ stops, low, high, digits, title, unit }: Legend): TemplateResult {
+/** What of a glyph is as long as the scale says. */
+function lengthWord({ scale }: Scene): string {
+  if (scale?.part === 'antisymmetric') return 'length';
+  return scale?.glyph === 'axes' ? 'half length' : 'radius';
+}
+
+function barOf({ stops, low, high, digits, title, unit, diverging }: Legend): TemplateResult {
   const colours = stops.map(([r, g, b]) => `rgb(${r} ${g} ${b})`).join(', ');
-  return html`<span>${title}/${unit}</span>
+  return html`<span>${title}${unit ? `/${unit}` : ''}</span>
     <span class="scale"
       ><span>${formatNumber(low, digits)}</span>
       <span
-        class="bar"
+        class="bar ${diverging ? 'diverging' : ''}"
         aria-hidden="true"
         .style=${`background: linear-gradient(to right, ${colours})`}
       ></span>
       <span>${formatNumber(high, digits)}</span></span
     >`;
+}
+
+/** Signs of the lobes of polar surfaces: by hue, and the negative ones are striped. */
+function lobeKey({ positive, negative }: NonNullable<Scene['lobeColours']>): TemplateResult {
+  const rgb = ([r, g, b]: readonly [number, number, number]): string => `rgb(${r} ${g} ${b})`;
+  const dark = `rgb(${negative.map((value) => Math.round(0.62 * value)).join(' ')})`;
+  return html`<ul aria-label="Signs">
+    <li><span class="ball" aria-hidden="true" .style=${`background: ${rgb(positive)}`}></span>positive</li>
+    <li>
+      <span
+        class="ball"
+        aria-hidden="true"
+        .style=${`background: repeating-linear-gradient(to bottom, ${rgb(negative)} 0 2px, ${dark} 2px 4px)`}
+      ></span
+      >negative, striped
+    </li>
+  </ul>`;
 }
 
 /** A ball of its colour for each element whose atoms are drawn in it. */

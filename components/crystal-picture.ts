@@ -2,17 +2,30 @@ import { chooseRenderer } from '#src/render/choose-renderer.ts';
 import type { WebGLProbe } from '#src/render/probe-webgl.ts';
 import type { CrystalRenderer, DrawnBy } from '#src/render/renderer.ts';
 import { darkTheme, lightTheme } from '#src/render/theme.ts';
-import type { RenderTheme } from '#src/render/theme.ts';
+import type { Vec3 } from '#src/store/dossier-types.ts';
 import type { Camera, Viewport } from '#src/scene/camera.ts';
-import { zoom } from '#src/scene/camera.ts';
+import { pan, turnAbout, zoom } from '#src/scene/camera.ts';
+import { turnedRound } from '#src/scene/camera-path.ts';
 import { firstCamera, fit, lookAlong } from '#src/scene/framing.ts';
-import type { PickEntry, Scene } from '#src/scene/scene.ts';
-import type { PlacedLabel } from '#src/scene/place-labels.ts';
+import type { LookDirection } from '#src/scene/framing.ts';
+import { parseLookAlong } from '#src/scene/look-along.ts';
+import type { Look } from '#src/scene/look.ts';
+import { defaultLook } from '#src/scene/look.ts';
+import type { MeasureDrawing } from '#src/scene/measure-drawing.ts';
+import type { MeasuredAtom } from '#src/scene/measurement.ts';
+import type { MeasureText, PlacedLabel } from '#src/scene/place-labels.ts';
 import { placeLabels } from '#src/scene/place-labels.ts';
-import type { ProjectedAtom } from '#src/scene/project.ts';
-import { projectAtoms, projectAxes } from '#src/scene/project.ts';
+import type { ProjectedAtom, Projection } from '#src/scene/project.ts';
+import { projectAtoms, projectAxes, projection, projectPoint } from '#src/scene/project.ts';
+import type { PickEntry, Scene } from '#src/scene/scene.ts';
+import { atomsInReadingOrder } from '#src/scene/screen-atoms.ts';
+import { zoomTo } from '#src/scene/zoom-to.ts';
+import { labelMeasure } from './label-measure.ts';
+import type { PicturePoint } from './picture-controls.ts';
 import { attachControls } from './picture-controls.ts';
-import { cameraAfterKey } from './picture-keys.ts';
+import type { PictureCommand } from './picture-keys.ts';
+import { isSameAtom } from './picture-marks.ts';
+import { PictureMotion } from './picture-motion.ts';
 
 /** What stands over the canvas for the present camera. */
 export interface PictureOverlay {
@@ -25,8 +38,14 @@ export interface PictureOverlay {
 export interface PictureEvents {
   /** Something over the canvas moved or changed. */
   readonly moved: () => void;
-  readonly clicked: (entry: PickEntry | null) => void;
-  readonly pointed: (entry: PickEntry | null) => void;
+  /** The user moved the camera; the words name what was done, for the list of steps. */
+  readonly steered: (camera: Camera, words: string) => void;
+  /** The picture itself took another camera: a fit to another extent. */
+  readonly fitted: (camera: Camera | null) => void;
+  readonly clicked: (entry: PickEntry | null, adds: boolean) => void;
+  /** A double click on an atom, which the first of the two clicks selected. */
+  readonly activated: () => void;
+  readonly pointed: (entry: PickEntry | null, at: PicturePoint | null) => void;
   /** The graphics context was lost (true) or came back (false). */
   readonly lost: (isLost: boolean) => void;
 }
@@ -35,6 +54,11 @@ export interface PictureEvents {
 const axesPx = 34;
 /** Rings drawn at most round the atoms of a hovered site. */
 const ringsShown = 400;
+/** Width of outlines where they are asked for, CSS pixels. */
+const outlinePx = 1.2;
+/** Labels beyond which they wait until the picture rests. */
+const labelsWhileMoving = 2000;
+const restMs = 160;
 
 /** The drawn crystal: scene, camera and renderer of one canvas. Loaded only where something can be drawn. */
 export class CrystalPicture {
@@ -42,11 +66,17 @@ export class CrystalPicture {
   readonly #events: PictureEvents;
   readonly #renderer: CrystalRenderer;
   readonly #detach: () => void;
+  readonly #motion = new PictureMotion((camera) => this.#set(camera));
   #scene: Scene | null = null;
   #camera: Camera | null = null;
+  #look: Look = defaultLook;
+  #theme: 'light' | 'dark' = 'light';
+  #pivot: Vec3 | null = null;
   #viewport: Viewport = { widthPx: 0, heightPx: 0 };
   #ringed: ReadonlySet<string> = new Set();
-  #measuring: CanvasRenderingContext2D | null = null;
+  #labels: readonly PlacedLabel[] = [];
+  #movedAt = 0;
+  #measure: MeasureText | null = null;
 
   /** With the renderer that suits the browser; rejects with a sentence where none does. */
   static async create(
@@ -72,14 +102,16 @@ export class CrystalPicture {
     this.#canvas = canvas;
     this.#events = events;
     this.#renderer = renderer;
+    const at = ({ xPx, yPx }: PicturePoint): PickEntry | null => renderer.pick(xPx, yPx)?.entry ?? null;
     this.#detach = attachControls(surface, {
-      camera: () => this.#camera,
+      camera: () => this.#motion.goal ?? this.#camera,
       viewport: () => this.#viewport,
-      move: (camera) => this.#move(camera),
-      click: (xPx, yPx) => events.clicked(this.#renderer.pick(xPx, yPx)?.entry ?? null),
-      hover: (point) => {
-        events.pointed(point && (this.#renderer.pick(point.xPx, point.yPx)?.entry ?? null));
+      move: (camera, how) => this.#steer(camera, how === 'turned' ? 'turn the crystal' : 'move the picture'),
+      click: (point, adds) => events.clicked(at(point), adds),
+      doubleClick: (point) => {
+        if (at(point)?.kind === 'atom') events.activated();
       },
+      hover: (point) => events.pointed(point && at(point), point),
     });
   }
 
@@ -91,16 +123,39 @@ export class CrystalPicture {
     return this.#scene;
   }
 
-  /** Draws a crystal. A new crystal gets a first view; the same one with other numbers or options keeps its view. */
+  /** Where a move under way ends, else the present one. */
+  get camera(): Camera | null {
+    return this.#motion.goal ?? this.#camera;
+  }
+
+  get viewport(): Viewport {
+    return this.#viewport;
+  }
+
+  /** Draws a scene; the same crystal with other numbers or options keeps its view, unless another part of it is drawn. */
   show(scene: Scene, isNewCrystal: boolean): void {
     const before = this.#scene;
     if (scene === before) return;
     this.#scene = scene;
+    this.#labels = [];
     this.#renderer.setScene(scene);
     if (isNewCrystal) this.#camera = null;
     const isReframed = this.#camera !== null && before?.extent !== scene.extent;
-    if (isReframed && this.#camera) this.#move(fit(scene, this.#camera.orientation, this.#viewport));
-    else this.#frame();
+    if (!isReframed || !this.#camera || this.#viewport.widthPx === 0) return this.#frame();
+    const camera = this.#fitted(this.#camera);
+    this.#motion.jump(camera);
+    this.#events.fitted(camera);
+  }
+
+  /** Takes a camera from outside, gliding there; null is the first view. */
+  follow(camera: Camera | null): void {
+    if (!this.#scene || this.#viewport.widthPx === 0) {
+      this.#camera = camera;
+      return;
+    }
+    const goal = this.#seen(camera ?? this.#first());
+    if (this.#camera) this.#motion.glide(this.#camera, goal);
+    else this.#motion.jump(goal);
   }
 
   resize(widthPx: number, heightPx: number): void {
@@ -111,12 +166,23 @@ export class CrystalPicture {
   }
 
   setTheme(theme: 'light' | 'dark'): void {
-    const renderTheme: RenderTheme = theme === 'dark' ? darkTheme : lightTheme;
-    this.#renderer.setTheme(renderTheme);
+    this.#theme = theme;
+    this.#dress();
+  }
+
+  setLook(look: Look): void {
+    this.#look = look;
+    this.#dress();
+    if (this.#camera) this.#set(this.#seen(this.#camera));
   }
 
   select(atomIds: readonly string[]): void {
     this.#renderer.setSelection(atomIds);
+  }
+
+  /** The point about which the crystal turns; null for the middle of the picture. */
+  setPivot(pivot: Vec3 | null): void {
+    this.#pivot = pivot;
   }
 
   /** Rings round the atoms under the pointer, wherever the pointer is. */
@@ -125,56 +191,170 @@ export class CrystalPicture {
     this.#events.moved();
   }
 
-  lookAlong(axis: 'a' | 'b' | 'c'): void {
-    if (this.#camera && this.#scene) this.#move(lookAlong(this.#camera, this.#scene, axis));
+  /** Looks along a direction, with a name for the step. */
+  lookAlong(direction: LookDirection, words: string): void {
+    const camera = this.camera;
+    if (camera && this.#scene)
+      this.#glide(this.#about(camera, lookAlong(camera, this.#scene, direction)), `look along ${words}`);
   }
 
-  zoomBy(factor: number): void {
-    if (this.#camera) this.#move(zoom(this.#camera, factor, this.#viewport));
+  /** The same for a direction as it is typed; false where it is none of this crystal. */
+  lookAlongText(text: string): boolean {
+    const found = parseLookAlong(text, this.#scene?.axes ?? []);
+    if ('fault' in found) return false;
+    this.lookAlong(found.towards, found.words);
+    return true;
   }
 
-  showAll(): void {
-    if (this.#scene) this.#move(firstCamera(this.#scene, this.#viewport));
+  /** Goes smoothly to a camera the user typed. */
+  goTo(camera: Camera, words: string): void {
+    this.#glide(camera, words);
   }
 
-  /** True where the key turned, moved or zoomed the picture. */
-  key(event: KeyboardEvent): boolean {
-    if (!this.#camera || !this.#scene) return false;
-    const camera = cameraAfterKey(event, this.#camera, this.#scene, this.#viewport);
-    if (camera) this.#move(camera);
-    return camera !== null;
+  /** Does what a key or a button asks for, as far as it is about the camera; `points` are those of the selection. */
+  run(command: PictureCommand, points: readonly Vec3[] = []): boolean {
+    const camera = this.camera;
+    if (!camera || !this.#scene) return false;
+    switch (command.do) {
+      case 'turn':
+        this.#steer(turnAbout(camera, command.axis, command.angleRad), 'turn the crystal');
+        return true;
+      case 'pan':
+        this.#steer(pan(camera, command.dxPx, command.dyPx, this.#viewport), 'move the picture');
+        return true;
+      case 'zoom':
+        this.#steer(zoom(camera, command.factor, this.#viewport), 'move the picture');
+        return true;
+      case 'first':
+        this.#glide(this.#first(), 'first view');
+        return true;
+      case 'fit':
+        this.#glide(this.#fitted(camera), 'fit all into the picture');
+        return true;
+      case 'toSelection':
+        this.#glide(zoomTo(camera, points, this.#viewport), 'zoom to the selection');
+        return points.length > 0;
+      default:
+        return false;
+    }
+  }
+
+  /** The atom after (or before) another one in reading order, among those whose middle is seen. */
+  stepFrom(entry: PickEntry | null, by: 1 | -1): PickEntry | null {
+    if (!this.#scene || !this.#camera) return null;
+    const order = atomsInReadingOrder(this.#scene, this.#camera, this.#viewport);
+    const at = entry ? order.findIndex((pickId) => this.#scene!.picks[pickId - 1] === entry) : -1;
+    const next = at < 0 ? (by > 0 ? 0 : order.length - 1) : (at + by + order.length) % order.length;
+    return this.#scene.picks[(order[next] ?? 0) - 1] ?? null;
+  }
+
+  /** Where an entry's drawn copy is on screen. */
+  whereIs(entry: PickEntry): PicturePoint | null {
+    if (entry.kind !== 'atom' || !this.#scene || !this.#camera) return null;
+    const atoms = projectAtoms(this.#scene, this.#camera, this.#viewport, new Set([entry.atomId]));
+    return atoms.find(({ pickId }) => this.#scene!.picks[pickId - 1] === entry) ?? null;
+  }
+
+  /** Where a copy of an atom is on screen; null where it isn't drawn. */
+  whereIsAtom(atom: MeasuredAtom): PicturePoint | null {
+    const entry = this.#scene?.picks.find((pick) => pick.kind === 'atom' && isSameAtom(pick, atom));
+    return entry ? this.whereIs(entry) : null;
   }
 
   overlay(): PictureOverlay {
     if (!this.#scene || !this.#camera) return { axes: [], labels: [], rings: [] };
     const [scene, camera, viewport] = [this.#scene, this.#camera, this.#viewport];
+    const waits = scene.labels.length > labelsWhileMoving && performance.now() - this.#movedAt < restMs;
+    this.#labels = waits
+      ? []
+      : placeLabels(scene, camera, viewport, (this.#measure ??= labelMeasure(this.#canvas)), this.#labels);
     return {
       axes: projectAxes(scene, camera, axesPx),
-      labels: placeLabels(scene, camera, viewport, (text) => this.#measure(text)),
+      labels: this.#labels,
       rings: this.#ringed.size > 0 ? projectAtoms(scene, camera, viewport, this.#ringed) : [],
     };
   }
 
+  /** A drawing in space as it stands on screen: lines as point lists, the place of its text; null parts behind the eye. */
+  project({ lines, arc, textAt }: MeasureDrawing): {
+    readonly lines: readonly string[];
+    readonly textAt: PicturePoint | null;
+  } {
+    if (!this.#camera) return { lines: [], textAt: null };
+    const p: Projection = projection(this.#camera, this.#viewport);
+    const flat = (points: readonly Vec3[]): string | null => {
+      const seen = points.map((point) => projectPoint(p, point));
+      return seen.some(({ xPx }) => Number.isNaN(xPx))
+        ? null
+        : seen.map(({ xPx, yPx }) => `${xPx.toFixed(1)},${yPx.toFixed(1)}`).join(' ');
+    };
+    const all = [...lines, ...(arc ? [arc] : [])].flatMap((points) => flat(points) ?? []);
+    const at = textAt && projectPoint(p, textAt);
+    return { lines: all, textAt: at && !Number.isNaN(at.xPx) ? at : null };
+  }
+
   dispose(): void {
+    this.#motion.stop();
     this.#detach();
     this.#renderer.dispose();
   }
 
+  #first(): Camera {
+    return firstCamera(this.#scene!, this.#viewport, this.#look.perspectiveDegrees);
+  }
+
+  #fitted({ orientation }: Camera): Camera {
+    return fit(this.#scene!, orientation, this.#viewport, undefined, this.#look.perspectiveDegrees);
+  }
+
   #frame(): void {
     if (!this.#scene || this.#viewport.widthPx === 0) return;
-    this.#move(this.#camera ?? firstCamera(this.#scene, this.#viewport));
+    this.#set(this.#camera ? this.#seen(this.#camera) : this.#first());
   }
 
-  #move(camera: Camera): void {
+  /** The camera with the perspective of the present look. */
+  #seen(camera: Camera): Camera {
+    const { perspectiveDegrees } = this.#look;
+    return (camera.perspectiveDegrees ?? 0) === perspectiveDegrees
+      ? camera
+      : { ...camera, perspectiveDegrees };
+  }
+
+  #steer(camera: Camera, words: string): void {
+    const before = this.camera;
+    const isTurn =
+      before !== null && before.orientation !== camera.orientation && before.zoom === camera.zoom;
+    const moved = before && isTurn ? this.#about(before, camera) : camera;
+    this.#motion.jump(moved);
+    this.#events.steered(moved, words);
+  }
+
+  #glide(camera: Camera, words: string): void {
+    if (this.#camera) this.#motion.glide(this.#camera, camera);
+    this.#events.steered(camera, words);
+  }
+
+  #about(before: Camera, turned: Camera): Camera {
+    return this.#pivot ? turnedRound(before, turned, this.#pivot) : turned;
+  }
+
+  #set(camera: Camera): void {
     this.#camera = camera;
+    this.#movedAt = performance.now();
     this.#renderer.setCamera(camera);
     this.#events.moved();
+    if ((this.#scene?.labels.length ?? 0) > labelsWhileMoving)
+      setTimeout(() => this.#events.moved(), restMs + 20);
   }
 
-  #measure(text: string): { readonly widthPx: number; readonly heightPx: number } {
-    this.#measuring ??= document.createElement('canvas').getContext('2d');
-    if (!this.#measuring) return { widthPx: 7 * text.length, heightPx: 15 };
-    this.#measuring.font = `12px ${getComputedStyle(this.#canvas).fontFamily}`;
-    return { widthPx: Math.ceil(this.#measuring.measureText(text).width) + 1, heightPx: 15 };
+  #dress(): void {
+    const theme = this.#theme === 'dark' ? darkTheme : lightTheme;
+    const { depthCue, circles, outlines } = this.#look;
+    this.#renderer.setTheme({
+      ...theme,
+      depthCue: depthCue ? theme.depthCue : 0,
+      circleWidthPx: circles ? theme.circleWidthPx : 0,
+      outlineWidthPx: outlines ? outlinePx : 0,
+    });
   }
 }

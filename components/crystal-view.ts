@@ -1,35 +1,52 @@
-import { html, nothing, svg } from 'lit';
+import { html, nothing } from 'lit';
 import type { PropertyValues, TemplateResult } from 'lit';
 import type { WebGLProbe } from '#src/render/probe-webgl.ts';
 import { probeWebGL } from '#src/render/probe-webgl.ts';
-import type { PickEntry, Scene } from '#src/scene/scene.ts';
+import type { PickEntry } from '#src/scene/scene.ts';
 import { siteColour } from '#src/store/site-colour.ts';
-import type { Selection, WorkbenchState } from '#src/store/state.ts';
+import type { WorkbenchState } from '#src/store/state.ts';
 import { colourBar, colourBarStyles } from './colour-bar.ts';
-import type { CrystalPicture, PictureOverlay } from './crystal-picture.ts';
+import type { CrystalPicture, PictureEvents } from './crystal-picture.ts';
+import { keysInWords } from './keys-help.ts';
+import { MeasurementBoard } from './measurement-board.ts';
+import type { PicturePoint } from './picture-controls.ts';
+import type { PictureCommand } from './picture-keys.ts';
+import { commandOfKey } from './picture-keys.ts';
+import { PictureMarker } from './picture-marker.ts';
+import { atomIds, drawnPositions, isSameAtom, selectionOf } from './picture-marks.ts';
+import {
+  annotations,
+  axesDrawing,
+  labelsDrawing,
+  marksDrawing,
+  overPicture,
+  pointedDrawing,
+  ringsDrawing,
+  sampleLine,
+} from './picture-overlay.ts';
+import type { PicturePanel, ToolsHost } from './picture-tools.ts';
+import { pictureTools } from './picture-tools.ts';
 import { pointedSentence } from './pointed-sentence.ts';
-import { sampleOf } from './sample-cases.ts';
-import './show-panel.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
+import type { ViewPanel } from './view-panel.ts';
 import { viewStyles } from './view-styles.ts';
-
-const keysInWords =
-  'Arrow keys turn, with Shift they move. Plus and minus zoom, comma and full stop roll, a, b and c look along a cell axis, 0 shows all. The site table holds the same atoms as text.';
 
 /** All there is to say where nothing can be drawn. */
 const nothingDraws =
   'This browser offers neither WebGL 2 nor a canvas to paint on, so the crystal is not drawn; the site table, the site card and all numbers work without it.';
+const completeWithout = 'The site table, the site card and all numbers are complete without it.';
 
-/** The crystal on a canvas with what belongs to it: axes, labels, colour bar, caption, ways to turn it. */
+/** The crystal on a canvas with what belongs to it: axes, labels, annotations, colour bar, caption, ways to turn it. */
 export class CrystalView extends StoreElement {
   static override properties = {
     theme: { attribute: false },
     probe: { state: true },
     fault: { state: true },
     isLost: { state: true },
-    isShowing: { state: true },
+    open: { state: true },
     pointed: { state: true },
+    pivots: { state: true },
   };
 
   static override styles = [shared, colourBarStyles, viewStyles];
@@ -39,8 +56,11 @@ export class CrystalView extends StoreElement {
   declare probe: WebGLProbe | null;
   declare fault: string | null;
   declare isLost: boolean;
-  declare isShowing: boolean;
-  declare pointed: PickEntry | null;
+  /** The panel that is open. */
+  declare open: PicturePanel | null;
+  declare pointed: { readonly entry: PickEntry; readonly at: PicturePoint } | null;
+  /** The crystal turns about the selection. */
+  declare pivots: boolean;
 
   protected override readonly watches = [
     'derived',
@@ -51,7 +71,12 @@ export class CrystalView extends StoreElement {
     'sceneFault',
     'isDrawing',
     'sitesRead',
+    'camera',
+    'look',
+    'measurements',
   ] as const;
+  readonly #marker = new PictureMarker(() => this.#marked());
+  readonly #board = new MeasurementBoard();
   #picture: CrystalPicture | null = null;
   #resize: ResizeObserver | null = null;
   #crystalKey: string | null = null;
@@ -62,8 +87,9 @@ export class CrystalView extends StoreElement {
     this.probe = null;
     this.fault = null;
     this.isLost = false;
-    this.isShowing = false;
+    this.open = null;
     this.pointed = null;
+    this.pivots = false;
   }
 
   override disconnectedCallback(): void {
@@ -79,24 +105,20 @@ export class CrystalView extends StoreElement {
   }
 
   override render(): TemplateResult {
-    const { probe, fault } = this;
-    const name = this.store?.state.derived?.crystal?.name ?? '';
-    if (probe && !draws(probe)) {
-      return html`<h2>Crystal${name ? ` · ${name}` : ''}</h2>
+    const { probe, fault, store } = this;
+    const name = store?.state.derived?.crystal?.name ?? '';
+    const heading = html`<h2>Crystal${name ? ` · ${name}` : ''}</h2>`;
+    if (probe && !draws(probe))
+      return html`${heading}
         <p class="none" role="note">${nothingDraws}</p>`;
-    }
     if (fault)
-      return html`<h2>Crystal</h2>
+      return html`${heading}
         <p class="none" role="alert">${fault}</p>`;
     const scene = this.#picture?.scene ?? null;
-    const overlay = this.#picture?.overlay() ?? { axes: [], labels: [], rings: [] };
     return html`
-      <div class="line">
-        <h2>Crystal${name ? ` · ${name}` : ''}</h2>
-        ${this.#tools(overlay.axes.length === 3)}
-      </div>
+      <div class="line">${heading} ${pictureTools(this.#toolsHost())}</div>
       <div
-        class="stage"
+        class="stage ${this.#marker.kind ? 'picking' : ''}"
         role="application"
         tabindex="0"
         aria-label="Picture of the crystal"
@@ -104,19 +126,13 @@ export class CrystalView extends StoreElement {
         @keydown=${this.#keydown}
       >
         <canvas></canvas>
-        ${this.#rings(overlay)} ${axesDrawing(overlay)}
-        ${overlay.labels.map(
-          ({ text, leftPx, topPx }) =>
-            html`<span class="label" .style=${`left: ${leftPx}px; top: ${topPx}px`}>${text}</span>`,
-        )}
-        ${this.#pointedLine()} ${this.#waiting()}
-        ${this.isLost ? html`<p class="lost">The graphics chip took the picture away; until it comes back the CPU draws.</p>` : nothing}
+        ${this.#overlay()} ${store ? overPicture(store.state, this.isLost) : nothing}
       </div>
-      ${colourBar(scene?.legend ?? null, scene?.scaleStatement ?? null, scene?.elements)}
+      ${colourBar(scene)}
       <p class="caption" id="caption">
         ${scene?.caption ?? ''}${scene ? html` <span class="soft">Drawn by ${this.#picture?.drawnBy}.</span>` : nothing}
       </p>
-      ${this.#sampleLine()}
+      ${sampleLine(store?.state.decisions ?? null)}
       <p class="hidden-but-spoken" id="keys">${keysInWords}</p>
     `;
   }
@@ -130,7 +146,7 @@ export class CrystalView extends StoreElement {
     try {
       this.#draw(this.#picture, state, before);
     } catch (error) {
-      this.fault = `The picture could not be drawn: ${error instanceof Error ? error.message : String(error)}. The site table, the site card and all numbers are complete without it.`;
+      this.fault = `The picture could not be drawn: ${wordsOf(error)}. ${completeWithout}`;
     }
   }
 
@@ -140,12 +156,7 @@ export class CrystalView extends StoreElement {
       const canvas = this.renderRoot.querySelector('canvas');
       const stage = this.renderRoot.querySelector<HTMLElement>('.stage');
       if (!canvas || !stage || !this.isConnected) return;
-      const picture = await Picture.create(canvas, stage, probe, {
-        moved: () => this.requestUpdate(),
-        clicked: (entry) => this.store?.select(entry?.kind === 'atom' ? selectionOf(entry) : null),
-        pointed: (entry) => this.#point(entry),
-        lost: (isLost) => (this.isLost = isLost),
-      });
+      const picture = await Picture.create(canvas, stage, probe, this.#events());
       if (!this.isConnected) {
         picture.dispose();
         return;
@@ -158,141 +169,183 @@ export class CrystalView extends StoreElement {
       if (this.store) this.stateChanged(this.store.state, null);
       this.requestUpdate();
     } catch (error) {
-      this.fault = `The picture could not be started: ${error instanceof Error ? error.message : String(error)}. The site table, the site card and all numbers are complete without it.`;
+      this.fault = `The picture could not be started: ${wordsOf(error)}. ${completeWithout}`;
     }
   }
 
+  #events(): PictureEvents {
+    return {
+      moved: () => this.requestUpdate(),
+      steered: (camera, words) => this.store?.setCamera(camera, words, { coalesce: true }),
+      fitted: (camera) => this.store?.adjustCamera(camera),
+      clicked: (entry, adds) => this.store && this.#marker.press(entry, adds, this.store),
+      activated: () => this.#run({ do: 'toSelection' }),
+      pointed: (entry, at) => this.#point(entry, at),
+      lost: (isLost) => (this.isLost = isLost),
+    };
+  }
+
   #draw(picture: CrystalPicture, state: WorkbenchState, before: WorkbenchState | null): void {
-    const { derived, decisions, scene, selection, hover } = state;
+    const { derived, decisions, scene, selection, hover, camera, look } = state;
     if (!derived || !scene) return;
     const key = `${derived.chosen?.sourceId} ${derived.chosen?.index} ${decisions?.settings.symmetry}`;
-    picture.show(scene, key !== this.#crystalKey);
+    const isOther = key !== this.#crystalKey;
     this.#crystalKey = key;
+    if (isOther) this.#marker.clear();
+    if (look !== before?.look) picture.setLook(look);
+    picture.show(scene, isOther);
+    const isSteered = camera !== before?.camera && camera !== picture.camera;
+    if (isSteered || (isOther && camera)) picture.follow(camera);
     const isNew = scene !== before?.scene;
-    if (isNew || selection !== before?.selection) picture.select(atomIds(scene, selection));
+    if (isNew || selection !== before?.selection) {
+      this.#marker.forgetUnless(selection?.atomId ?? null, selection?.siteIndex ?? null);
+      this.#marked();
+    }
     if (isNew || hover !== before?.hover) picture.hover(atomIds(scene, hover));
   }
 
-  #tools(hasAxes: boolean): TemplateResult {
-    const axis = (letter: 'a' | 'b' | 'c'): TemplateResult =>
-      html`<button aria-label="Look along ${letter}" @click=${() => this.#picture?.lookAlong(letter)}>
-        <i>${letter}</i>
-      </button>`;
-    return html`<div class="tools" role="toolbar" aria-label="View">
-      ${hasAxes ? html`along ${axis('a')}${axis('b')}${axis('c')}` : nothing}
-      <button title="the first view" @click=${() => this.#picture?.showAll()}>all</button>
-      <button aria-label="Smaller" @click=${() => this.#picture?.zoomBy(1 / 1.25)}>−</button>
-      <button aria-label="Larger" @click=${() => this.#picture?.zoomBy(1.25)}>+</button>
-      <div class="show">
-        <button
-          aria-expanded=${this.isShowing ? 'true' : 'false'}
-          @click=${() => (this.isShowing = !this.isShowing)}
-        >
-          Show
-        </button>
-        ${
-          this.isShowing
-            ? html`<ellipsite-show-panel
-                .store=${this.store}
-                @keydown=${this.#closeShow}
-              ></ellipsite-show-panel>`
-            : nothing
-        }
-      </div>
-    </div>`;
+  /** Rings, pivot and numbers follow what is picked. */
+  #marked(): void {
+    const { store } = this;
+    const scene = this.#picture?.scene;
+    if (store && scene) {
+      const picked = this.#marker.marks.map(({ atomId }) => atomId);
+      this.#picture?.select([...new Set([...atomIds(scene, store.state.selection), ...picked])]);
+      const points = this.pivots ? this.#selected() : [];
+      const sum = points.reduce(([x, y, z], p) => [x + p[0], y + p[1], z + p[2]], [0, 0, 0]);
+      const n = points.length;
+      this.#picture?.setPivot(n > 0 ? [sum[0]! / n, sum[1]! / n, sum[2]! / n] : null);
+    }
+    this.requestUpdate();
   }
 
-  #rings({ rings }: PictureOverlay): TemplateResult | typeof nothing {
-    const siteIndex = this.store?.state.hover?.siteIndex;
-    if (rings.length === 0 || siteIndex === undefined) return nothing;
-    const colour = siteColour(siteIndex);
-    return html`<svg class="rings" aria-hidden="true">
-      ${rings.map(
-        (ring) =>
-          svg`<ellipse cx=${ring.xPx} cy=${ring.yPx} rx=${ring.halfWidthPx + 4} ry=${ring.halfHeightPx + 4} stroke=${colour}></ellipse>`,
-      )}
-    </svg>`;
+  /** Where the picked atoms stand, or all drawn atoms of the selected site. */
+  #selected(): ReturnType<typeof drawnPositions> {
+    const scene = this.#picture?.scene;
+    if (!scene) return [];
+    const { marks } = this.#marker;
+    const ids = new Set(atomIds(scene, this.store?.state.selection ?? null));
+    return drawnPositions(scene, (entry) => {
+      if (entry.kind !== 'atom') return false;
+      if (marks.length > 0) return marks.some((mark) => isSameAtom(mark, entry));
+      return ids.has(entry.atomId);
+    });
   }
 
-  /** A sample says that its tensors are invented. */
-  #sampleLine(): TemplateResult | typeof nothing {
-    const decisions = this.store?.state.decisions;
-    const sample =
-      decisions &&
-      sampleOf(
-        decisions.title,
-        decisions.sources.map(({ name }) => name),
-      );
-    return sample ? html`<p class="caption sample">Sample case. ${sample.sentence}</p>` : nothing;
+  #overlay(): TemplateResult {
+    const { store } = this;
+    const picture = this.#picture;
+    if (!picture || !store) return html``;
+    const overlay = picture.overlay();
+    const hovered = store.state.hover?.siteIndex;
+    const marks = this.#marker.isNumbered ? this.#marker.marks.map((mark) => picture.whereIsAtom(mark)) : [];
+    return html`${ringsDrawing(overlay, hovered === undefined ? null : siteColour(hovered))}
+    ${annotations(this.#board.entries(store), picture)} ${labelsDrawing(overlay)} ${marksDrawing(marks)}
+    ${axesDrawing(overlay)} ${this.#pointedLine()}`;
+  }
+
+  #toolsHost(): ToolsHost {
+    const { store } = this;
+    return {
+      store,
+      picture: this.#picture,
+      marker: this.#marker,
+      entries: store && this.open === 'measure' ? this.#board.entries(store) : [],
+      open: this.open,
+      pivots: this.pivots,
+      hasSelection: this.#marker.marks.length > 0 || (store?.state.selection ?? null) !== null,
+      theme: this.theme,
+      setOpen: (open) => (this.open = open),
+      setPivots: (pivots) => this.#setPivots(pivots),
+      run: (command) => this.#run(command),
+      close: () => this.#closePanel(),
+    };
   }
 
   #pointedLine(): TemplateResult | typeof nothing {
     const { store, pointed } = this;
     const scene = this.#picture?.scene;
-    if (!pointed || !scene || !store) return nothing;
-    const sentence = pointedSentence(pointed, scene, (index) => store.site(index));
-    return sentence ? html`<div class="pointed">${sentence}</div>` : nothing;
+    if (!pointed || !scene || !store || !this.#picture) return nothing;
+    const sentence = pointedSentence(pointed.entry, scene, (index) => store.site(index));
+    return pointedDrawing(sentence, pointed.at, this.#picture.viewport);
   }
 
-  /** What there is to say while a picture is made, or when it could not be. */
-  #waiting(): TemplateResult | typeof nothing {
-    const { sceneFault, isDrawing } = this.store?.state ?? {};
-    if (isDrawing) return html`<p class="lost" role="status">The new picture is being made.</p>`;
-    return sceneFault
-      ? html`<p class="lost" role="alert">
-          The picture could not be made: ${sceneFault}. What is shown is the one before.
-        </p>`
-      : nothing;
-  }
-
-  #point(entry: PickEntry | null): void {
-    this.pointed = entry;
+  #point(entry: PickEntry | null, at: PicturePoint | null): void {
+    this.pointed = entry && at ? { entry, at } : null;
     this.store?.hover(entry?.kind === 'atom' ? selectionOf(entry) : null);
   }
 
+  #setPivots(pivots: boolean): void {
+    this.pivots = pivots;
+    this.#marked();
+  }
+
+  #run(command: PictureCommand): boolean {
+    const { store } = this;
+    const picture = this.#picture;
+    if (!picture || !store) return false;
+    switch (command.do) {
+      case 'help':
+      case 'measure':
+        this.open = this.open === command.do ? null : command.do;
+        return true;
+      case 'type':
+        this.open = 'view';
+        void this.updateComplete.then(() => this.#focusDirection());
+        return true;
+      case 'pivot':
+        this.#setPivots(!this.pivots);
+        return true;
+      case 'clear':
+        return this.#clear();
+      case 'look':
+        return picture.lookAlongText(command.along);
+      case 'step': {
+        const entry = picture.stepFrom(this.pointed?.entry ?? null, command.by);
+        if (entry) this.#point(entry, picture.whereIs(entry));
+        return entry !== null;
+      }
+      case 'choose':
+        if (this.pointed) this.#marker.press(this.pointed.entry, command.adds, store);
+        return this.pointed !== null;
+      default:
+        return picture.run(command, this.#selected());
+    }
+  }
+
+  /** Ends what is under way: measuring first, then the selection. */
+  #clear(): boolean {
+    const { store } = this;
+    if (!store || (this.#marker.kind === null && this.#marker.marks.length === 0 && !store.state.selection))
+      return false;
+    if (this.#marker.kind === null) store.select(null);
+    this.#marker.clear();
+    return true;
+  }
+
+  #focusDirection(): void {
+    const panel = this.renderRoot.querySelector<ViewPanel>('ellipsite-view-panel');
+    void panel?.updateComplete.then(() => panel.focusDirection());
+  }
+
   readonly #keydown = (event: KeyboardEvent): void => {
-    if (event.key === 'Escape' && this.store?.state.selection) {
-      event.preventDefault();
-      this.store.select(null);
-    } else if (this.#picture?.key(event)) event.preventDefault();
+    const command = commandOfKey(event);
+    if (command && this.#run(command)) event.preventDefault();
   };
 
-  readonly #closeShow = (event: KeyboardEvent): void => {
-    if (event.key !== 'Escape') return;
-    event.preventDefault();
-    this.isShowing = false;
-    this.renderRoot.querySelector<HTMLElement>('.show button')?.focus();
-  };
+  #closePanel(): void {
+    const opener = this.renderRoot.querySelector<HTMLElement>(`.tools [aria-expanded='true']`);
+    this.open = null;
+    (opener ?? this.renderRoot.querySelector<HTMLElement>('.stage'))?.focus();
+  }
 }
 
 function draws(probe: WebGLProbe): boolean {
   return probe.available || probe.canPaint;
 }
 
-function selectionOf({ siteIndex, atomId }: Extract<PickEntry, { kind: 'atom' }>): Selection {
-  return { siteIndex, atomId };
-}
-
-/** The atoms a selection means: the one, or all of the site; of a site that is not drawn, those on its position. */
-function atomIds({ picks, drawnInstead }: Scene, selection: Selection | null): string[] {
-  if (!selection) return [];
-  const instead = drawnInstead?.get(selection.siteIndex);
-  if (selection.atomId !== null && instead === undefined) return [selection.atomId];
-  const wanted = instead ?? selection.siteIndex;
-  const ids = picks.flatMap((pick) => (pick.kind === 'atom' && pick.siteIndex === wanted ? pick.atomId : []));
-  return [...new Set(ids)];
-}
-
-/** Cell axes in the corner: lines with letters, the farther ones drawn first. */
-function axesDrawing({ axes }: PictureOverlay): TemplateResult | typeof nothing {
-  if (axes.length === 0) return nothing;
-  const ordered = [...axes].sort((a, b) => a.depthPx - b.depthPx);
-  return html`<svg class="axes" viewBox="-50 -50 100 100" aria-hidden="true">
-    ${ordered.map(({ letter, xPx, yPx }) => {
-      const beyond = 1 + 11 / Math.max(12, Math.hypot(xPx, yPx));
-      return svg`<line x1="0" y1="0" x2=${xPx} y2=${yPx}></line><text x=${xPx * beyond} y=${yPx * beyond}>${letter}</text>`;
-    })}
-  </svg>`;
+function wordsOf(error: unknown): string {
+  return error instanceof Error ? error.message : String(error);
 }
 
 customElements.define('ellipsite-crystal-view', CrystalView);

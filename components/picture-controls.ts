@@ -1,33 +1,50 @@
 import type { Camera, Viewport } from '#src/scene/camera.ts';
-import { pan, turn, zoom } from '#src/scene/camera.ts';
+import { pan, turn, turnAbout, zoom } from '#src/scene/camera.ts';
+
+/** A point of the picture, CSS pixels from the upper left corner. */
+export interface PicturePoint {
+  readonly xPx: number;
+  readonly yPx: number;
+}
 
 /** What the gestures act on. */
 export interface ControlTarget {
   readonly camera: () => Camera | null;
   readonly viewport: () => Viewport;
-  readonly move: (camera: Camera) => void;
-  /** A press that did not become a drag; CSS pixels from the upper left corner. */
-  readonly click: (xPx: number, yPx: number) => void;
+  /** `turned`: about whatever the picture turns about. */
+  readonly move: (camera: Camera, how: 'turned' | 'moved') => void;
+  /** A press that did not become a drag; `adds` with Shift, Ctrl or ⌘, and after a long press. */
+  readonly click: (point: PicturePoint, adds: boolean) => void;
+  readonly doubleClick: (point: PicturePoint) => void;
   /** Null when the pointer left or drags. */
-  readonly hover: (point: { readonly xPx: number; readonly yPx: number } | null) => void;
+  readonly hover: (point: PicturePoint | null) => void;
 }
+
+type Drag = 'turn' | 'pan' | 'roll';
 
 interface Held {
   readonly startX: number;
   readonly startY: number;
   x: number;
   y: number;
-  readonly pans: boolean;
+  readonly drag: Drag;
+  readonly adds: boolean;
+  /** Has become a drag, or was answered as a long press. */
+  isSpent: boolean;
+  longPress: ReturnType<typeof setTimeout> | null;
 }
 
-/** Pixels a pointer may wander before a press becomes a drag. */
-const clickSlackPx = 4;
+/** Pixels a pointer may wander before a press becomes a drag; a finger is less steady. */
+const clickSlackPx = { mouse: 4, touch: 9 } as const;
+/** Milliseconds after which a resting finger adds to the selection. */
+const longPressMs = 500;
 /** Factor of one wheel unit (a notch is about 100). */
 const zoomPerWheelPixel = 1.0016;
 
 /**
- * Mouse and touch on the picture: drag turns, with Shift or the right button it pans, wheel and pinch zoom about the
- * pointer, two fingers pan. Returns how to detach.
+ * Mouse, pen and touch on the picture. One pointer: drag turns, with Shift or another button it moves, with Alt it rolls;
+ * a press selects, with Shift, Ctrl or ⌘ or held long it adds. Two fingers move, zoom and roll. The wheel zooms about the
+ * pointer. Returns how to detach.
  */
 export function attachControls(element: HTMLElement, target: ControlTarget): () => void {
   const held = new Map<number, Held>();
@@ -36,31 +53,55 @@ export function attachControls(element: HTMLElement, target: ControlTarget): () 
     kind: Kind,
     handle: (event: HTMLElementEventMap[Kind]) => void,
   ): void => element.addEventListener(kind, handle, { signal: abort.signal, passive: false });
+  const spend = (pointer: Held): void => {
+    pointer.isSpent = true;
+    if (pointer.longPress) clearTimeout(pointer.longPress);
+  };
 
   listen('pointerdown', (event) => {
     element.setPointerCapture(event.pointerId);
-    const { offsetX: x, offsetY: y } = event;
-    held.set(event.pointerId, { startX: x, startY: y, x, y, pans: event.button === 2 || event.shiftKey });
+    const pointer = heldBy(event);
+    if (event.pointerType === 'touch') {
+      pointer.longPress = setTimeout(() => {
+        if (pointer.isSpent || held.size !== 1) return;
+        spend(pointer);
+        target.click({ xPx: pointer.x, yPx: pointer.y }, true);
+      }, longPressMs);
+    }
+    held.set(event.pointerId, pointer);
+    if (held.size > 1) for (const each of held.values()) spend(each);
   });
   listen('pointermove', (event) => {
     const pointer = held.get(event.pointerId);
+    const { offsetX: x, offsetY: y } = event;
     if (!pointer) {
-      target.hover({ xPx: event.offsetX, yPx: event.offsetY });
+      if (event.pointerType !== 'touch') target.hover({ xPx: x, yPx: y });
       return;
     }
     const other = [...held].find(([id]) => id !== event.pointerId)?.[1] ?? null;
-    drag(target, pointer, other, event.offsetX, event.offsetY);
-    pointer.x = event.offsetX;
-    pointer.y = event.offsetY;
+    const slack = event.pointerType === 'touch' ? clickSlackPx.touch : clickSlackPx.mouse;
+    if (other) pinch(target, pointer, other, x, y);
+    else if (pointer.isSpent || Math.hypot(x - pointer.startX, y - pointer.startY) > slack) {
+      spend(pointer);
+      drag(target, pointer, x, y);
+    } else return;
+    pointer.x = x;
+    pointer.y = y;
   });
   listen('pointerup', (event) => {
     const pointer = held.get(event.pointerId);
-    const wasAlone = held.size === 1;
     held.delete(event.pointerId);
-    if (pointer && wasAlone && !pointer.pans && isStill(pointer)) target.click(pointer.x, pointer.y);
+    if (!pointer || pointer.isSpent) return;
+    spend(pointer);
+    if (event.button !== 2) target.click({ xPx: pointer.x, yPx: pointer.y }, pointer.adds);
   });
-  listen('pointercancel', (event) => held.delete(event.pointerId));
+  listen('pointercancel', (event) => {
+    const pointer = held.get(event.pointerId);
+    if (pointer) spend(pointer);
+    held.delete(event.pointerId);
+  });
   listen('pointerleave', () => target.hover(null));
+  listen('dblclick', (event) => target.doubleClick({ xPx: event.offsetX, yPx: event.offsetY }));
   listen('contextmenu', (event) => event.preventDefault());
   listen('wheel', (event) => {
     event.preventDefault();
@@ -68,30 +109,61 @@ export function attachControls(element: HTMLElement, target: ControlTarget): () 
     if (!camera) return;
     const pixels = event.deltaMode === WheelEvent.DOM_DELTA_PIXEL ? event.deltaY : event.deltaY * 33;
     const at = { xPx: event.offsetX, yPx: event.offsetY };
-    target.move(zoom(camera, zoomPerWheelPixel ** -pixels, target.viewport(), at));
+    target.move(zoom(camera, zoomPerWheelPixel ** -pixels, target.viewport(), at), 'moved');
   });
   return () => abort.abort();
 }
 
-function isStill({ startX, startY, x, y }: Held): boolean {
-  return Math.hypot(x - startX, y - startY) <= clickSlackPx;
+function heldBy(event: PointerEvent): Held {
+  const { offsetX: x, offsetY: y } = event;
+  const isOther = event.button === 1 || event.button === 2;
+  return {
+    startX: x,
+    startY: y,
+    x,
+    y,
+    drag: event.altKey ? 'roll' : isOther || event.shiftKey ? 'pan' : 'turn',
+    adds: event.shiftKey || event.ctrlKey || event.metaKey,
+    isSpent: false,
+    longPress: null,
+  };
 }
 
-function drag(target: ControlTarget, pointer: Held, other: Held | null, x: number, y: number): void {
+function drag(target: ControlTarget, pointer: Held, x: number, y: number): void {
   const camera = target.camera();
   if (!camera) return;
   target.hover(null);
   const viewport = target.viewport();
   const [dx, dy] = [x - pointer.x, y - pointer.y];
-  if (!other) {
-    const isWandering = Math.hypot(x - pointer.startX, y - pointer.startY) > clickSlackPx;
-    if (isWandering)
-      target.move(pointer.pans ? pan(camera, dx, dy, viewport) : turn(camera, dx, dy, viewport));
+  if (pointer.drag === 'pan') target.move(pan(camera, dx, dy, viewport), 'moved');
+  else if (pointer.drag === 'turn') target.move(turn(camera, dx, dy, viewport), 'turned');
+  else {
+    const [middleX, middleY] = [viewport.widthPx / 2, viewport.heightPx / 2];
+    const angle = turnBetween(pointer.x - middleX, pointer.y - middleY, x - middleX, y - middleY);
+    target.move(turnAbout(camera, [0, 0, 1], -angle), 'turned');
+  }
+}
+
+/** Two fingers: the line between them moves, stretches and turns, and the crystal with it. */
+function pinch(target: ControlTarget, pointer: Held, other: Held, x: number, y: number): void {
+  const camera = target.camera();
+  if (!camera) return;
+  target.hover(null);
+  const viewport = target.viewport();
+  const [fromX, fromY] = [pointer.x - other.x, pointer.y - other.y];
+  const [toX, toY] = [x - other.x, y - other.y];
+  const before = Math.hypot(fromX, fromY);
+  const panned = pan(camera, (x - pointer.x) / 2, (y - pointer.y) / 2, viewport);
+  if (before === 0) {
+    target.move(panned, 'moved');
     return;
   }
-  const before = Math.hypot(pointer.x - other.x, pointer.y - other.y);
-  const after = Math.hypot(x - other.x, y - other.y);
   const middle = { xPx: (x + other.x) / 2, yPx: (y + other.y) / 2 };
-  const panned = pan(camera, dx / 2, dy / 2, viewport);
-  target.move(before > 0 ? zoom(panned, after / before, viewport, middle) : panned);
+  const zoomed = zoom(panned, Math.hypot(toX, toY) / before, viewport, middle);
+  target.move(turnAbout(zoomed, [0, 0, 1], -turnBetween(fromX, fromY, toX, toY)), 'moved');
+}
+
+/** Radians from one direction on screen to another, clockwise (y runs downwards). */
+function turnBetween(fromX: number, fromY: number, toX: number, toY: number): number {
+  return Math.atan2(fromX * toY - fromY * toX, fromX * toX + fromY * toY);
 }

@@ -1,59 +1,104 @@
-import type { Camera, Viewport } from '#src/scene/camera.ts';
-import { pan, turnAbout, zoom } from '#src/scene/camera.ts';
-import { firstCamera, lookAlong } from '#src/scene/framing.ts';
-import type { Scene } from '#src/scene/scene.ts';
+/** What a key does in the picture. Angles in radians about view axes, lengths in CSS pixels. */
+export type PictureCommand =
+  | { readonly do: 'turn'; readonly axis: readonly [number, number, number]; readonly angleRad: number }
+  | { readonly do: 'pan'; readonly dxPx: number; readonly dyPx: number }
+  | { readonly do: 'zoom'; readonly factor: number }
+  /** A direction as it is typed: `a`, `-a`, `a*`. */
+  | { readonly do: 'look'; readonly along: string }
+  | { readonly do: 'first' | 'fit' | 'toSelection' | 'pivot' | 'help' | 'measure' | 'type' | 'clear' }
+  /** To the next or previous atom in reading order. */
+  | { readonly do: 'step'; readonly by: 1 | -1 }
+  | { readonly do: 'choose'; readonly adds: boolean };
 
 const stepRad = (5 * Math.PI) / 180;
 const stepPx = 24;
 const zoomStep = 1.2;
 
-/** The camera after a key; null for keys that do nothing here. */
-export function cameraAfterKey(
-  { key, shiftKey, ctrlKey, metaKey, altKey }: KeyboardEvent,
-  camera: Camera,
-  scene: Scene,
-  viewport: Viewport,
-): Camera | null {
-  if (ctrlKey || metaKey || altKey) return null;
-  if (shiftKey && key.startsWith('Arrow')) return moved(key, camera, viewport);
-  switch (key) {
-    case 'ArrowLeft':
-      return turnAbout(camera, [0, 1, 0], -stepRad);
-    case 'ArrowRight':
-      return turnAbout(camera, [0, 1, 0], stepRad);
-    case 'ArrowUp':
-      return turnAbout(camera, [1, 0, 0], -stepRad);
-    case 'ArrowDown':
-      return turnAbout(camera, [1, 0, 0], stepRad);
-    case ',':
-      return turnAbout(camera, [0, 0, 1], stepRad);
-    case '.':
-      return turnAbout(camera, [0, 0, 1], -stepRad);
-    case '+':
-    case '=':
-      return zoom(camera, zoomStep, viewport);
-    case '-':
-    case '−':
-      return zoom(camera, 1 / zoomStep, viewport);
-    case 'a':
-    case 'b':
-    case 'c':
-      return scene.axes.length === 3 ? lookAlong(camera, scene, key) : null;
-    case '0':
-    case 'Home':
-      return firstCamera(scene, viewport);
-    default:
-      return null;
-  }
+interface KeyRow {
+  /** As they are shown. */
+  readonly shown: string;
+  readonly words: string;
 }
 
-function moved(key: string, camera: Camera, viewport: Viewport): Camera | null {
-  const steps: Readonly<Record<string, readonly [number, number]>> = {
-    ArrowLeft: [-stepPx, 0],
-    ArrowRight: [stepPx, 0],
-    ArrowUp: [0, -stepPx],
-    ArrowDown: [0, stepPx],
-  };
-  const step = steps[key];
-  return step ? pan(camera, step[0], step[1], viewport) : null;
+/** Every key of the picture, for the list of keys and for the description of the picture. */
+export const keyRows: readonly KeyRow[] = [
+  { shown: '← → ↑ ↓', words: 'turn by 5°' },
+  { shown: 'Shift with arrows', words: 'move' },
+  { shown: '+ −', words: 'zoom' },
+  { shown: ', .', words: 'roll by 5°' },
+  { shown: 'a b c', words: 'look along a cell axis; with Shift from behind' },
+  { shown: 'l', words: 'type a direction to look along' },
+  { shown: '0', words: 'first view' },
+  { shown: 'f', words: 'fit all into the picture' },
+  { shown: 's', words: 'zoom to the selection' },
+  { shown: 'o', words: 'turn about the selection, or about the middle' },
+  { shown: 'n p', words: 'next and previous atom in reading order' },
+  { shown: 'Enter', words: 'select that atom' },
+  { shown: 'Space', words: 'add it to the selection, or take it away' },
+  { shown: 'm', words: 'measure' },
+  { shown: 'Esc', words: 'end measuring, clear the selection' },
+  { shown: '?', words: 'this list' },
+];
+
+/** Mouse and touch, for the list of keys. */
+export const gestureRows: readonly KeyRow[] = [
+  { shown: 'drag', words: 'turn' },
+  { shown: 'drag with Shift or right button', words: 'move' },
+  { shown: 'drag with Alt', words: 'roll' },
+  { shown: 'wheel', words: 'zoom about the pointer' },
+  { shown: 'click, tap', words: 'select' },
+  { shown: 'click with Shift or Ctrl, long press', words: 'add to the selection, or take away' },
+  { shown: 'double click', words: 'zoom to the atom' },
+  { shown: 'two fingers', words: 'move, zoom, roll' },
+];
+
+const plainKeys: Readonly<Record<string, PictureCommand>> = {
+  ArrowLeft: { do: 'turn', axis: [0, 1, 0], angleRad: -stepRad },
+  ArrowRight: { do: 'turn', axis: [0, 1, 0], angleRad: stepRad },
+  ArrowUp: { do: 'turn', axis: [1, 0, 0], angleRad: -stepRad },
+  ArrowDown: { do: 'turn', axis: [1, 0, 0], angleRad: stepRad },
+  ',': { do: 'turn', axis: [0, 0, 1], angleRad: stepRad },
+  '.': { do: 'turn', axis: [0, 0, 1], angleRad: -stepRad },
+  '+': { do: 'zoom', factor: zoomStep },
+  '=': { do: 'zoom', factor: zoomStep },
+  '-': { do: 'zoom', factor: 1 / zoomStep },
+  '−': { do: 'zoom', factor: 1 / zoomStep },
+  a: { do: 'look', along: 'a' },
+  b: { do: 'look', along: 'b' },
+  c: { do: 'look', along: 'c' },
+  A: { do: 'look', along: '-a' },
+  B: { do: 'look', along: '-b' },
+  C: { do: 'look', along: '-c' },
+  l: { do: 'type' },
+  0: { do: 'first' },
+  Home: { do: 'first' },
+  f: { do: 'fit' },
+  s: { do: 'toSelection' },
+  o: { do: 'pivot' },
+  n: { do: 'step', by: 1 },
+  p: { do: 'step', by: -1 },
+  Enter: { do: 'choose', adds: false },
+  ' ': { do: 'choose', adds: true },
+  m: { do: 'measure' },
+  Escape: { do: 'clear' },
+  '?': { do: 'help' },
+};
+
+const shiftedKeys: Readonly<Record<string, PictureCommand>> = {
+  ArrowLeft: { do: 'pan', dxPx: -stepPx, dyPx: 0 },
+  ArrowRight: { do: 'pan', dxPx: stepPx, dyPx: 0 },
+  ArrowUp: { do: 'pan', dxPx: 0, dyPx: -stepPx },
+  ArrowDown: { do: 'pan', dxPx: 0, dyPx: stepPx },
+};
+
+/** What a key asks for; null for keys that do nothing here. */
+export function commandOfKey({
+  key,
+  shiftKey,
+  ctrlKey,
+  metaKey,
+  altKey,
+}: KeyboardEvent): PictureCommand | null {
+  if (ctrlKey || metaKey || altKey) return null;
+  return (shiftKey ? shiftedKeys[key] : undefined) ?? plainKeys[key] ?? null;
 }

@@ -21,14 +21,28 @@ export const viewStyles = css`
   }
   .tools {
     display: flex;
+    flex-wrap: wrap;
     align-items: center;
-    gap: 2px;
+    gap: 2px 8px;
     color: var(--soft);
     font-size: 12.5px;
+  }
+  .tools .group {
+    display: inline-flex;
+    align-items: center;
+    gap: 1px;
+  }
+  .tools .group span {
+    margin-right: 2px;
   }
   .tools button {
     color: var(--ink);
     font-size: 13px;
+    padding: 2px 7px;
+  }
+  .tools button[aria-expanded='true'] {
+    background: var(--raised);
+    border-color: var(--line);
   }
   .stage {
     position: relative;
@@ -51,11 +65,15 @@ export const viewStyles = css`
   }
   svg,
   .label,
+  .value,
+  .mark,
   .pointed,
-  .lost {
+  .said {
     position: absolute;
     pointer-events: none;
   }
+  svg.leaders,
+  svg.annotations,
   svg.rings {
     inset: 0;
     width: 100%;
@@ -65,6 +83,22 @@ export const viewStyles = css`
   svg.rings ellipse {
     fill: none;
     stroke-width: 1.8;
+  }
+  svg.leaders line {
+    stroke: var(--soft);
+    stroke-width: 1;
+  }
+  svg.annotations polyline {
+    fill: none;
+    stroke: var(--ink);
+    stroke-width: 1.3;
+    stroke-dasharray: 5 3;
+  }
+  svg.annotations .under {
+    stroke: var(--paper);
+    stroke-width: 3.4;
+    stroke-dasharray: none;
+    opacity: 0.75;
   }
   svg.axes {
     left: 4px;
@@ -92,24 +126,59 @@ export const viewStyles = css`
     stroke: var(--paper);
     stroke-width: 3px;
   }
-  .label {
+  .label,
+  .value,
+  .mark {
+    left: 0;
+    top: 0;
     font-size: 12px;
     line-height: 15px;
     white-space: nowrap;
+  }
+  .label {
     text-shadow:
       0 0 2px var(--paper),
       0 0 2px var(--paper),
       0 0 3px var(--paper);
   }
-  .pointed {
-    left: 0;
-    top: 2px;
-    font-size: 12.5px;
-    max-width: 100%;
-    background: color-mix(in srgb, var(--paper) 80%, transparent);
-    padding: 1px 6px 1px 0;
+  .value {
+    padding: 0 4px;
+    border-radius: 3px;
+    background: color-mix(in srgb, var(--paper) 86%, transparent);
+    font-variant-numeric: tabular-nums lining-nums;
   }
-  .lost,
+  .mark {
+    min-width: 16px;
+    border-radius: 8px;
+    text-align: center;
+    color: var(--on-accent);
+    background: var(--accent);
+    font-size: 11px;
+    line-height: 16px;
+  }
+  .picking {
+    cursor: crosshair;
+  }
+  .pointed {
+    font-size: 12.5px;
+    width: max-content;
+    background: color-mix(in srgb, var(--paper) 92%, transparent);
+    border: 1px solid var(--hairline);
+    border-radius: 4px;
+    padding: 2px 7px;
+    z-index: 1;
+  }
+  .said {
+    inset: auto 0 4px;
+    width: fit-content;
+    max-width: min(60ch, 100% - 120px);
+    margin: 0 8px 0 auto;
+    padding: 3px 9px;
+    border: 1px solid var(--line);
+    border-radius: 4px;
+    background: var(--raised);
+    font-size: 12.5px;
+  }
   .none {
     align-self: center;
     max-width: 44ch;
@@ -118,28 +187,55 @@ export const viewStyles = css`
     text-align: center;
     padding: 20px;
   }
-  .lost {
-    inset: 0;
-    display: grid;
-    place-content: center;
-    background: var(--paper);
-    max-width: none;
-  }
   .caption {
     color: var(--soft);
     font-size: 12.5px;
     padding: 2px 16px 0 0;
     max-width: 110ch;
   }
-  ellipsite-show-panel {
+  .panel {
     position: absolute;
     z-index: 3;
     right: 12px;
     top: 100%;
     width: max-content;
-    max-width: min(320px, 100% - 12px);
+    max-width: min(420px, 100% - 12px);
+    max-height: min(70dvh, 620px);
+    overflow: auto;
+    overscroll-behavior: contain;
     border: 1px solid var(--line);
     border-radius: 4px;
+    background: var(--raised);
     color: var(--ink);
+  }
+  .panel .close {
+    position: sticky;
+    top: 0;
+    float: right;
+    z-index: 1;
+    background: var(--raised);
+    font-size: 16px;
+    line-height: 1;
+  }
+  .keys {
+    padding: 8px 14px 12px;
+    font-size: 13px;
+  }
+  .keys table {
+    border-collapse: collapse;
+    margin-bottom: 8px;
+  }
+  .keys caption {
+    text-align: left;
+    color: var(--soft);
+  }
+  .keys th {
+    text-align: left;
+    font-weight: 600;
+    padding: 2px 14px 2px 0;
+    vertical-align: top;
+  }
+  .keys td {
+    padding: 2px 0;
   }
 `;

@@ -76,6 +76,38 @@ function alongLetter(
 }
 
 function alongIndices(list: string, isNormal: boolean, axes: readonly CellAxis[]): LookAlong | LookFault {
+  const read = indicesOf(list, isNormal);
+  return 'fault' in read ? read : combined(read.indices, isNormal, axes, read.words);
+}
+
+/** A line of the lattice: along ua + vb + wc, or along the normal of planes. */
+export interface LatticeLine {
+  readonly kind: 'direction' | 'normal';
+  readonly indices: Vec3;
+}
+
+/** Reads `a`, `a*`, `[u v w]` or `(h k l)` as a line without sense; a minus before it says nothing. */
+export function parseLatticeLine(text: string): LatticeLine | LookFault {
+  const plain = text.trim().replaceAll(/[−–]/g, '-').replace(/^-\s*/, '');
+  const letter = /^([abc])(\*?)$/i.exec(plain);
+  if (letter) {
+    const indices = unit('abc'.indexOf(letter[1]!.toLowerCase()));
+    return { kind: letter[2] ? 'normal' : 'direction', indices };
+  }
+  const bracket = /^(?:\[([^[\]]*)\]|\(([^()]*)\))$/.exec(plain);
+  if (!bracket)
+    return {
+      fault: `“${text.trim()}” is no line of the lattice. Allowed: a, b, c, a*, b*, c*, [1 1 0], (1 0 −1).`,
+    };
+  const isNormal = bracket[2] !== undefined;
+  const read = indicesOf(bracket[1] ?? bracket[2] ?? '', isNormal);
+  return 'fault' in read ? read : { kind: isNormal ? 'normal' : 'direction', indices: read.indices };
+}
+
+function indicesOf(
+  list: string,
+  isNormal: boolean,
+): { readonly indices: Vec3; readonly words: string } | LookFault {
   const indices = readIndices(list);
   const kind = isNormal ? 'plane (h k l)' : 'direction [u v w]';
   if (!indices)
@@ -85,11 +117,10 @@ function alongIndices(list: string, isNormal: boolean, axes: readonly CellAxis[]
     return { fault: `A ${kind} has three numbers; “${list.trim()}” has ${indices.length}.` };
   if (isFour && Math.abs(indices[0]! + indices[1]! + indices[2]!) > 1e-9)
     return { fault: `In (h k i l) the index i is −(h + k); (${shown(indices)}) has another.` };
-  const three: Vec3 = [indices[0]!, indices[1]!, indices.at(-1)!];
   const words = isNormal ? `(${shown(indices)})` : `[${shown(indices)}]`;
-  if (three.every((index) => index === 0))
+  if (indices.every((index) => index === 0))
     return { fault: `${words} is no direction: one index must differ from 0.` };
-  return combined(three, isNormal, axes, words);
+  return { indices: [indices[0]!, indices[1]!, indices.at(-1)!], words };
 }
 
 function combined(

@@ -6,7 +6,7 @@ import type { Projection } from './project.ts';
 import { enlargement, projection, projectPoint, viewShape } from './project.ts';
 import type { LabelAnchor, Scene } from './scene.ts';
 import type { ScreenAtoms } from './screen-atoms.ts';
-import { polarTensor, screenAtoms } from './screen-atoms.ts';
+import { isCovered, polarTensor, screenAtoms } from './screen-atoms.ts';
 
 /** An atom's label on screen before it is placed; CSS pixels from the upper left corner. */
 export interface ProjectedAnchor {
@@ -101,22 +101,6 @@ function turnedOutline(
     const direction: Vec3 = [dx, -dy, 0];
     return Math.max(ellipse, grown * p.scale * Math.abs(dot(direction, apply(lobes, direction))));
   };
-}
-
-function isCovered(
-  at: { readonly xPx: number; readonly yPx: number; readonly depthPx: number },
-  ownId: number,
-  atoms: ScreenAtoms,
-): boolean {
-  let covered = false;
-  atoms.within(at.xPx, at.yPx, at.xPx, at.yPx, (i) => {
-    if (atoms.pickIds[i] === ownId || atoms.depthPx[i]! <= at.depthPx) return false;
-    const x = (at.xPx - atoms.xPx[i]!) / atoms.halfWidthPx[i]!;
-    const y = (at.yPx - atoms.yPx[i]!) / atoms.halfHeightPx[i]!;
-    covered = x * x + y * y < 1;
-    return covered;
-  });
-  return covered;
 }
 
 /** A place about an atom where its label may stand: a direction on screen (y downwards), and the gap to the outline. */

@@ -1,9 +1,9 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { apply } from '#src/base/matrix3.ts';
 import { length } from '#src/base/vector3.ts';
-import type { Viewport } from './camera.ts';
+import type { Camera, Viewport } from './camera.ts';
 import type { Projection } from './project.ts';
-import { enlargement } from './project.ts';
+import { enlargement, projection } from './project.ts';
 import type { Scene } from './scene.ts';
 
 /** Side of a cell of the grid in which atoms are found by their place on screen, CSS pixels. */
@@ -70,6 +70,45 @@ export function screenAtoms(scene: Scene, p: Projection, viewport: Viewport): Sc
     put(quadrics.count + k, polars.centres, k, wide, high, polars.pickIds[k]!);
   }
   return { ...boxes, within: gridOver(boxes, viewport) };
+}
+
+/** Whether something nearer to the viewer covers a point of the atom with a pick id. */
+export function isCovered(
+  at: { readonly xPx: number; readonly yPx: number; readonly depthPx: number },
+  ownId: number,
+  atoms: ScreenAtoms,
+): boolean {
+  let covered = false;
+  atoms.within(at.xPx, at.yPx, at.xPx, at.yPx, (i) => {
+    if (atoms.pickIds[i] === ownId || atoms.depthPx[i]! <= at.depthPx) return false;
+    const x = (at.xPx - atoms.xPx[i]!) / atoms.halfWidthPx[i]!;
+    const y = (at.yPx - atoms.yPx[i]!) / atoms.halfHeightPx[i]!;
+    covered = x * x + y * y < 1;
+    return covered;
+  });
+  return covered;
+}
+
+/** Height of a line in which atoms are read from left to right, CSS pixels. */
+const readingLinePx = 36;
+
+/**
+ * Pick ids of the atoms whose middle is seen, in reading order: lines from the top, each from the left. The way through the
+ * picture by keyboard.
+ */
+export function atomsInReadingOrder(scene: Scene, camera: Camera, viewport: Viewport): number[] {
+  const atoms = screenAtoms(scene, projection(camera, viewport), viewport);
+  const seen: number[] = [];
+  for (let i = 0; i < scene.quadrics.count; i++) {
+    const [xPx, yPx] = [atoms.xPx[i]!, atoms.yPx[i]!];
+    if (!(xPx >= 0 && yPx >= 0 && xPx <= viewport.widthPx && yPx <= viewport.heightPx)) continue;
+    const at = { xPx, yPx, depthPx: atoms.depthPx[i]! };
+    if (scene.picks[atoms.pickIds[i]! - 1]?.kind === 'atom' && !isCovered(at, atoms.pickIds[i]!, atoms))
+      seen.push(i);
+  }
+  const line = (i: number): number => Math.floor(atoms.yPx[i]! / readingLinePx);
+  seen.sort((one, other) => line(one) - line(other) || atoms.xPx[one]! - atoms.xPx[other]!);
+  return [...new Set(seen.map((i) => atoms.pickIds[i]!))];
 }
 
 /** The tensor of polar surface k, row-major. */

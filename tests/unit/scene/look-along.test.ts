@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { Vec3 } from '#src/base/matrix3.ts';
 import { dot, normalize } from '#src/base/vector3.ts';
 import type { LookAlong } from '#src/scene/look-along.ts';
-import { parseLookAlong } from '#src/scene/look-along.ts';
+import { parseLatticeLine, parseLookAlong } from '#src/scene/look-along.ts';
 import type { CellAxis } from '#src/scene/scene.ts';
 
 /** A monoclinic cell, 5 × 6 × 7 Å, β = 120°: a along x, b along y. */
@@ -99,5 +99,13 @@ describe('look along', () => {
 
   it('says that lattice directions need a cell', () => {
     expect(parseLookAlong('[1 0 0]', [])).toEqual({ fault: expect.stringContaining('no cell') });
+  });
+
+  it('reads lines of the lattice by their indices', () => {
+    expect(parseLatticeLine('c')).toEqual({ kind: 'direction', indices: [0, 0, 1] });
+    expect(parseLatticeLine('-b*')).toEqual({ kind: 'normal', indices: [0, 1, 0] });
+    expect(parseLatticeLine('[1 -1 0]')).toEqual({ kind: 'direction', indices: [1, -1, 0] });
+    expect(parseLatticeLine('(1 0 -1 2)')).toEqual({ kind: 'normal', indices: [1, 0, 2] });
+    expect(parseLatticeLine('x')).toEqual({ fault: expect.stringContaining('no line of the lattice') });
   });
 });

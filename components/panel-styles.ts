@@ -1,0 +1,70 @@
+import { css } from 'lit';
+
+/** The small panels that open from the picture's tools. */
+export const panelStyles = css`
+  :host {
+    display: block;
+    background: var(--raised);
+    padding: 10px 14px 12px;
+    font-size: 13px;
+  }
+  fieldset {
+    border: none;
+    margin: 0 0 8px;
+    padding: 0;
+    min-width: 0;
+  }
+  legend,
+  h3 {
+    color: var(--soft);
+    font-size: 13px;
+    font-weight: 400;
+    padding: 0;
+    margin: 0;
+  }
+  .row {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: center;
+    gap: 2px 10px;
+    min-height: 28px;
+  }
+  label {
+    display: inline-flex;
+    align-items: center;
+    gap: 5px;
+    min-height: 26px;
+  }
+  input[type='text'] {
+    width: 8ch;
+    text-align: right;
+  }
+  input[type='text'].words {
+    width: 15ch;
+    text-align: left;
+  }
+  select {
+    font-size: 13px;
+    max-width: 100%;
+  }
+  button:hover:not(:disabled) {
+    background: var(--paper);
+  }
+  button {
+    font-size: 13px;
+  }
+  ol,
+  ul {
+    list-style: none;
+    margin: 0;
+    padding: 0;
+  }
+  .note {
+    color: var(--soft);
+    max-width: 46ch;
+  }
+  .fault {
+    color: var(--error);
+    max-width: 46ch;
+  }
+`;

@@ -1,0 +1,164 @@
+import { html, nothing, svg } from 'lit';
+import type { TemplateResult } from 'lit';
+import type { WorkbenchState } from '#src/store/state.ts';
+import type { CrystalPicture, PictureOverlay } from './crystal-picture.ts';
+import { valueText } from './measure-words.ts';
+import type { BoardEntry } from './measurement-board.ts';
+import type { PicturePoint } from './picture-controls.ts';
+import { sampleOf } from './sample-cases.ts';
+
+/** Rings round the atoms of the hovered site, in its colour. */
+export function ringsDrawing(
+  { rings }: PictureOverlay,
+  colour: string | null,
+): TemplateResult | typeof nothing {
+  if (rings.length === 0 || colour === null) return nothing;
+  return html`<svg class="rings" aria-hidden="true">
+    ${rings.map(
+      (ring) =>
+        svg`<ellipse cx=${ring.xPx} cy=${ring.yPx} rx=${ring.halfWidthPx + 4} ry=${ring.halfHeightPx + 4} stroke=${colour}></ellipse>`,
+    )}
+  </svg>`;
+}
+
+/** Labels beside their atoms, and the leader lines of those that had to move away. */
+export function labelsDrawing({ labels }: PictureOverlay): TemplateResult | typeof nothing {
+  if (labels.length === 0) return nothing;
+  const leaders = labels.flatMap(({ leader }) => (leader ? [leader] : []));
+  return html`${
+    leaders.length > 0
+      ? html`<svg class="leaders" aria-hidden="true">
+          ${leaders.map(([x1, y1, x2, y2]) => svg`<line x1=${x1} y1=${y1} x2=${x2} y2=${y2}></line>`)}
+        </svg>`
+      : nothing
+  }${labels.map(
+    ({ text, leftPx, topPx }) =>
+      html`<span
+        class="label"
+        aria-hidden="true"
+        .style=${`transform: translate(${leftPx.toFixed(1)}px, ${topPx.toFixed(1)}px)`}
+        >${text}</span
+      >`,
+  )}`;
+}
+
+/** Cell axes in the corner: lines with letters, the farther ones drawn first. */
+export function axesDrawing({ axes }: PictureOverlay): TemplateResult | typeof nothing {
+  if (axes.length === 0) return nothing;
+  const ordered = [...axes].sort((a, b) => a.depthPx - b.depthPx);
+  const places = letterPlaces(ordered);
+  return html`<svg class="axes" viewBox="-50 -50 100 100" aria-hidden="true">
+    ${ordered.map(({ xPx, yPx }) => svg`<line x1="0" y1="0" x2=${xPx} y2=${yPx}></line>`)}
+    ${ordered.map(({ letter }, i) => svg`<text x=${places[i]!.xPx} y=${places[i]!.yPx}>${letter}</text>`)}
+  </svg>`;
+}
+
+/** Distance letters of the axes keep from each other, in the unit of the drawing. */
+const letterApart = 11;
+
+/** Letters beyond the ends of their axes; one that would stand on a nearer axis' letter moves aside. */
+function letterPlaces(axes: PictureOverlay['axes']): PicturePoint[] {
+  const places: PicturePoint[] = [];
+  // the nearest axis has the first choice
+  for (const { xPx, yPx } of [...axes].reverse()) {
+    const size = Math.hypot(xPx, yPx);
+    const angle = size < 4 ? -Math.PI / 4 : Math.atan2(yPx, xPx);
+    const tries = [0, 0.7, -0.7, 1.4, -1.4, 2.4, -2.4].map((aside) => ({
+      xPx: (size < 4 ? 0 : xPx) + 10 * Math.cos(angle + aside),
+      yPx: (size < 4 ? 0 : yPx) + 10 * Math.sin(angle + aside),
+    }));
+    const isFree = (at: PicturePoint): boolean =>
+      places.every((other) => Math.hypot(at.xPx - other.xPx, at.yPx - other.yPx) >= letterApart);
+    places.push(tries.find(isFree) ?? tries[0]!);
+  }
+  return places.reverse();
+}
+
+/** Kept measurements: thin lines and arcs with their values. */
+export function annotations(
+  entries: readonly BoardEntry[],
+  picture: CrystalPicture,
+): TemplateResult | typeof nothing {
+  const drawn = entries.flatMap(({ measured, drawing }) =>
+    measured && drawing ? [{ measured, ...picture.project(drawing) }] : [],
+  );
+  if (drawn.length === 0) return nothing;
+  return html`<svg class="annotations" aria-hidden="true">
+      ${drawn.flatMap(({ lines }) =>
+        lines.map(
+          (points) =>
+            svg`<polyline class="under" points=${points}></polyline><polyline points=${points}></polyline>`,
+        ),
+      )}
+    </svg>
+    ${drawn.map(({ measured, textAt }) =>
+      textAt
+        ? html`<span
+            class="value"
+            aria-hidden="true"
+            .style=${`transform: translate(${textAt.xPx.toFixed(1)}px, ${textAt.yPx.toFixed(1)}px) translate(-50%, -50%)`}
+            >${valueText(measured)}</span
+          >`
+        : nothing,
+    )}`;
+}
+
+/** Atoms that were picked one after another, numbered. */
+export function marksDrawing(marks: readonly (PicturePoint | null)[]): TemplateResult | typeof nothing {
+  return marks.length === 0
+    ? nothing
+    : html`${marks.map((at, i) =>
+        at
+          ? html`<span
+              class="mark"
+              aria-hidden="true"
+              .style=${`transform: translate(${at.xPx.toFixed(1)}px, ${at.yPx.toFixed(1)}px) translate(-50%, -50%)`}
+              >${i + 1}</span
+            >`
+          : nothing,
+      )}`;
+}
+
+/** Pixels between the pointer and the sentence about what is under it. */
+const besidePx = 16;
+
+/** The sentence about what is under the pointer, beside it on the side that has room. */
+export function pointedDrawing(
+  content: TemplateResult | string | null,
+  at: PicturePoint | null,
+  { widthPx, heightPx }: { readonly widthPx: number; readonly heightPx: number },
+): TemplateResult | typeof nothing {
+  if (!content || !at) return nothing;
+  const across =
+    at.xPx > widthPx / 2 ? `right: ${widthPx - at.xPx + besidePx}px` : `left: ${at.xPx + besidePx}px`;
+  const down =
+    at.yPx > heightPx / 2 ? `bottom: ${heightPx - at.yPx + besidePx}px` : `top: ${at.yPx + besidePx}px`;
+  const room = Math.max(150, (at.xPx > widthPx / 2 ? at.xPx : widthPx - at.xPx) - besidePx - 4);
+  return html`<div class="pointed" .style=${`${across}; ${down}; max-width: ${Math.min(room, 420)}px`}>
+    ${content}
+  </div>`;
+}
+
+/** What there is to say over the picture: it could not be made, is being made, or the graphics chip took it away. */
+export function overPicture(
+  { sceneFault, isDrawing }: WorkbenchState,
+  isLost: boolean,
+): TemplateResult | typeof nothing {
+  if (sceneFault)
+    return html`<p class="said" role="alert">
+      The picture could not be made: ${sceneFault}. What is shown is the one before.
+    </p>`;
+  if (isDrawing) return html`<p class="said" role="status">The new picture is being made.</p>`;
+  return isLost
+    ? html`<p class="said" role="status">
+        The graphics chip took the picture away; until it comes back the CPU draws.
+      </p>`
+    : nothing;
+}
+
+/** A sample says that its tensors are invented. */
+export function sampleLine(decisions: WorkbenchState['decisions']): TemplateResult | typeof nothing {
+  const names = decisions?.sources.map(({ name }) => name) ?? [];
+  const sample = decisions && sampleOf(decisions.title, names);
+  return sample ? html`<p class="caption sample">Sample case. ${sample.sentence}</p>` : nothing;
+}

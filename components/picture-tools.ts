@@ -1,0 +1,113 @@
+import { html, nothing } from 'lit';
+import type { TemplateResult } from 'lit';
+import type { Measurement } from '#src/scene/measurement.ts';
+import type { Store } from '#src/store/store.ts';
+import type { CrystalPicture } from './crystal-picture.ts';
+import { keysHelp } from './keys-help.ts';
+import './measure-panel.ts';
+import type { PickedKind } from './measure-words.ts';
+import type { BoardEntry } from './measurement-board.ts';
+import type { PictureCommand } from './picture-keys.ts';
+import type { PictureMarker } from './picture-marker.ts';
+import './show-panel.ts';
+import './view-panel.ts';
+
+/** The panels that open from the picture's tools; one at a time. */
+export type PicturePanel = 'view' | 'measure' | 'show' | 'help';
+
+/** What the tools need of the element they stand in. */
+export interface ToolsHost {
+  readonly store: Store | null;
+  readonly picture: CrystalPicture | null;
+  readonly marker: PictureMarker;
+  readonly entries: readonly BoardEntry[];
+  readonly open: PicturePanel | null;
+  readonly pivots: boolean;
+  readonly hasSelection: boolean;
+  readonly theme: 'light' | 'dark';
+  readonly setOpen: (open: PicturePanel | null) => void;
+  readonly setPivots: (pivots: boolean) => void;
+  readonly run: (command: PictureCommand) => boolean;
+  /** Closes the panel and gives the focus back. */
+  readonly close: () => void;
+}
+
+const panelNames: Readonly<Record<PicturePanel, string>> = {
+  view: 'View',
+  measure: 'Measure',
+  show: 'Show',
+  help: '?',
+};
+
+/** Buttons above the picture and the panel that is open. */
+export function pictureTools(host: ToolsHost): TemplateResult {
+  const { run, picture } = host;
+  const hasAxes = picture?.scene?.axes.length === 3;
+  const axis = (letter: 'a' | 'b' | 'c'): TemplateResult =>
+    html`<button aria-label="Look along ${letter}" @click=${() => run({ do: 'look', along: letter })}>
+      <i>${letter}</i>
+    </button>`;
+  const panel = (name: PicturePanel, label?: string): TemplateResult =>
+    html`<button
+      aria-label=${label ?? panelNames[name]}
+      aria-expanded=${host.open === name ? 'true' : 'false'}
+      @click=${() => host.setOpen(host.open === name ? null : name)}
+    >
+      ${panelNames[name]}
+    </button>`;
+  return html`<div class="tools" role="toolbar" aria-label="View">
+      <span class="group">
+        ${hasAxes ? html`<span>along</span> ${axis('a')}${axis('b')}${axis('c')}` : nothing}
+        <button title="the first view" @click=${() => run({ do: 'first' })}>all</button>
+        <button aria-label="Smaller" @click=${() => run({ do: 'zoom', factor: 1 / 1.25 })}>−</button>
+        <button aria-label="Larger" @click=${() => run({ do: 'zoom', factor: 1.25 })}>+</button>
+      </span>
+      <span class="group">
+        ${panel('view')}${panel('measure')}${panel('show')} ${panel('help', 'Keys and gestures')}
+      </span>
+    </div>
+    ${host.open ? openPanel(host, host.open) : nothing}`;
+}
+
+function openPanel(host: ToolsHost, open: PicturePanel): TemplateResult {
+  const closeByKey = (event: KeyboardEvent): void => {
+    if (event.key !== 'Escape' || event.defaultPrevented) return;
+    event.preventDefault();
+    host.close();
+  };
+  const name = open === 'help' ? 'Keys and gestures' : panelNames[open];
+  return html`<div class="panel" role="dialog" aria-label=${name} @keydown=${closeByKey}>
+    <button class="close" aria-label="Close" @click=${() => host.close()}>×</button>
+    ${panelContent(host, open)}
+  </div>`;
+}
+
+function panelContent(host: ToolsHost, open: PicturePanel): TemplateResult {
+  const { store, picture, marker } = host;
+  switch (open) {
+    case 'help':
+      return keysHelp();
+    case 'show':
+      return html`<ellipsite-show-panel .store=${store}></ellipsite-show-panel>`;
+    case 'view':
+      return html`<ellipsite-view-panel
+        .store=${store}
+        .picture=${picture}
+        .camera=${picture?.camera ?? null}
+        .pivots=${host.pivots}
+        .hasSelection=${host.hasSelection}
+        @to-selection=${() => host.run({ do: 'toSelection' })}
+        @pivots=${({ detail }: CustomEvent<boolean>) => host.setPivots(detail)}
+      ></ellipsite-view-panel>`;
+    case 'measure':
+      return html`<ellipsite-measure-panel
+        .store=${store}
+        .kind=${marker.kind}
+        .marks=${marker.marks}
+        .entries=${host.entries}
+        @measure-kind=${({ detail }: CustomEvent<PickedKind | null>) => store && marker.measure(detail, store)}
+        @measure-axes=${({ detail }: CustomEvent<NonNullable<Measurement['axes']>>) =>
+          store && marker.measureAxes(detail, store)}
+      ></ellipsite-measure-panel>`;
+  }
+}
