@@ -34,9 +34,11 @@ const placesOf = new WeakMap<Int32Array, Int32Array>();
 function places(order: Int32Array): Int32Array {
   const known = placesOf.get(order);
   if (known) return known;
-  const size = order.reduce((most, index) => Math.max(most, index + 1), 0);
+  // plain loops: an order may have hundreds of thousands of rows, and the page waits
+  let size = 0;
+  for (const index of order) if (index >= size) size = index + 1;
   const made = new Int32Array(size).fill(-1);
-  order.forEach((index, place) => (made[index] = place));
+  for (let place = 0; place < order.length; place++) made[order[place]!] = place;
   placesOf.set(order, made);
   return made;
 }

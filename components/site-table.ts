@@ -1,33 +1,25 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import { atomAxes } from '#src/store/axes.ts';
 import type { CrystalSummary } from '#src/store/crystal-summary.ts';
-import { Cancelled } from '#src/store/engine-client.ts';
-import type { EquivalentAtom } from '#src/store/dossier-types.ts';
-import { NewestOnly } from '#src/store/newest-only.ts';
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { quantityToShow } from '#src/store/state.ts';
-import {
-  counted,
-  formatOperation,
-  formatPosition,
-  formatTriple,
-  raiseIsotopes,
-} from '#src/table/number-format.ts';
-import type { SiteColumn } from '#src/table/site-column.ts';
-import { columnsOf, defaultColumns, headingWords } from '#src/table/site-columns.ts';
-import type { TablePage, TableRequest, TableRow } from '#src/table/table-settings.ts';
-import { axisNames } from './axis-names.ts';
+import { counted, formatCount } from '#src/table/number-format.ts';
+import type { TableSort } from '#src/table/table-settings.ts';
+import { isFiltering, noFilter } from '#src/table/table-settings.ts';
 import { gridOf } from './column-widths.ts';
-import { headingOf } from './convention-symbol.ts';
-import { RowPages, pageRows } from './row-pages.ts';
-import { siteChip, valueSwatch } from './site-chip.ts';
+import type { CopyKind } from './copy-table.ts';
+import { copyTable } from './copy-table.ts';
 import type { RowList, SiteRow } from './site-rows.ts';
 import { indexOfRow, listRows, rowAt, rowOf, siteRowHeight, topOf, visibleRows } from './site-rows.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
+import { sortSentence, tableHead } from './table-head.ts';
 import { tableKeys } from './table-keys.ts';
+import { atomCells, siteCells } from './table-row.ts';
+import { TableSource, tableQuestion } from './table-source.ts';
 import { tableStyles } from './table-styles.ts';
+import type { TablePanel } from './table-tools.ts';
+import { tablePanel, tableTools } from './table-tools.ts';
 
 const empty: RowList = listRows(new Int32Array(0), new Map());
 
@@ -37,7 +29,14 @@ const empty: RowList = listRows(new Int32Array(0), new Map());
  * Moving the active row moves the selection.
  */
 export class SiteTable extends StoreElement {
+  static override properties = { panel: { state: true }, said: { state: true } };
+
   static override styles = [shared, tableStyles];
+
+  /** Which of the panels above the rows is open. */
+  declare panel: TablePanel;
+  /** What the live region of the table says: order, count, copying. */
+  declare said: string;
 
   protected override readonly watches = [
     'derived',
@@ -50,15 +49,23 @@ export class SiteTable extends StoreElement {
   ] as const;
 
   #crystal: CrystalSummary | null = null;
-  #columns: readonly SiteColumn[] = [];
   /** Opened sites with the number of their atoms. */
   #opened: ReadonlyMap<number, number> = new Map();
   #list: RowList = empty;
-  #pages: RowPages | null = null;
-  #fault: string | null = null;
   #active = 0;
+  /** The selected atom's site is on its way: its row is found once it has come. */
+  #isFollowing = false;
   #resize: ResizeObserver | null = null;
-  readonly #loads = new NewestOnly((request: TableRequest) => this.#ask(request));
+  readonly #source = new TableSource(
+    (request) => this.store?.ask('table', request) ?? Promise.reject(new Error('no store')),
+    (order) => this.#rowsCame(order),
+  );
+
+  constructor() {
+    super();
+    this.panel = null;
+    this.said = '';
+  }
 
   override connectedCallback(): void {
     super.connectedCallback();
@@ -79,83 +86,77 @@ export class SiteTable extends StoreElement {
       this.#crystal = crystal;
       this.#opened = new Map();
     }
-    if (isNew || state.table !== before?.table) void this.#load(state);
-    if (state.selection !== before?.selection) this.#follow(state.selection);
+    if (crystal && (isNew || state.table !== before?.table))
+      void this.#source.load(crystal, state.table, this.#firstPlace());
+    if (state.selection !== before?.selection || this.#isFollowing) this.#follow(state.selection);
   }
 
-  /** Fetches the order and the rows in view; what is shown stays until they have come. */
-  async #load({ derived, table }: WorkbenchState): Promise<void> {
-    const crystal = derived?.crystal;
-    if (!crystal) return;
-    const { sort, filter } = table;
-    const columns = columnsOf(table.columns ?? defaultColumns(crystal));
-    const keys = columns.map(({ key }) => key);
-    const first = pageRows * Math.floor(this.#firstPlace() / pageRows);
-    const request = { columns: keys, sort, filter };
-    try {
-      const page = await this.#loads.ask({ ...request, first, count: pageRows, withOrder: true });
-      if (this.#crystal !== crystal || !page.order) return;
-      this.#fault = null;
-      this.#columns = columns;
-      this.#pages = new RowPages(
-        (start, count) => this.#ask({ ...request, first: start, count, withOrder: false }),
-        () => this.requestUpdate(),
-      );
-      this.#pages.take(page);
-      this.#relist(page.order);
-    } catch (error) {
-      if (error instanceof Cancelled) return;
-      this.#fault = error instanceof Error ? error.message : String(error);
-    }
+  #rowsCame(order: Int32Array | null): void {
+    if (order) this.#relist(order);
     this.requestUpdate();
-  }
-
-  #ask(request: TableRequest): Promise<TablePage> {
-    return this.store ? this.store.ask('table', request) : Promise.reject(new Cancelled('no store'));
   }
 
   override render(): TemplateResult {
     const crystal = this.#crystal;
-    if (!crystal) return html`<h2>Sites</h2>`;
+    if (!crystal || !this.store) return html`<h2>Sites</h2>`;
+    const { columns, fault } = this.#source;
     const list = this.#list;
-    const { tracks, leastPx } = gridOf(this.#columns, crystal.hasForeignCouplings);
+    const { tracks, leastPx } = gridOf(columns, crystal.hasForeignCouplings);
+    const { sort } = this.store.state.table;
     const scroller = this.#scroller;
     const [first, last] = visibleRows(list, scroller?.scrollTop ?? 0, scroller?.clientHeight ?? 600);
-    const active = list.rowCount > 0 ? `row-${this.#active}` : nothing;
     return html`
-      <h2 id="title">${headline(crystal)}</h2>
-      ${this.#fault === null ? nothing : html`<p role="alert">The rows could not be read: ${this.#fault}</p>`}
+      <div class="line">
+        <h2 id="title">${this.#headline(crystal)}</h2>
+        ${tableTools(
+          this.panel,
+          (panel) => (this.panel = panel),
+          (kind) => this.#copy(kind),
+        )}
+      </div>
+      ${tablePanel(this.panel, this.store, this.#closeOnEscape)}
+      ${fault === null ? nothing : html`<p role="alert">The rows could not be read: ${fault}</p>`}
       <div
         class="scroller"
         role="treegrid"
         tabindex="0"
         aria-labelledby="title"
         aria-rowcount=${list.rowCount + 1}
-        aria-colcount=${this.#columns.length}
-        aria-activedescendant=${active}
+        aria-colcount=${columns.length}
+        aria-activedescendant=${list.rowCount > 0 ? `row-${this.#active}` : nothing}
         .style=${`--columns: ${tracks}; --least: ${leastPx}px`}
         @scroll=${() => this.requestUpdate()}
         @keydown=${this.#keydown}
         @pointerleave=${() => this.store?.hover(null)}
       >
-        <div class="row head" role="row" aria-rowindex="1">
-          ${this.#columns.map((column) => {
-            const words = headingWords(column);
-            return html`<div
-              role="columnheader"
-              class=${column.numeric ? 'number' : ''}
-              title=${words}
-              aria-label=${words}
-            >
-              ${headingOf(column)}
-            </div>`;
-          })}
-        </div>
+        ${tableHead(columns, sort, (next) => this.#sort(next))}
         <div class="body" role="rowgroup" .style=${`height: ${list.heightPx}px`}>
           ${Array.from({ length: last - first }, (_, i) => this.#row(first + i))}
         </div>
+        ${this.#nothingLeft()}
       </div>
+      <div class="hidden-but-spoken" role="status">${this.said}</div>
     `;
+  }
+
+  /** `12 of 36 sites` where a filter is on. */
+  #headline(crystal: CrystalSummary): string {
+    const { filter } = this.store!.state.table;
+    const sites = counted(crystal.siteCount, 'site');
+    const shown = isFiltering(filter) ? `${formatCount(this.#list.order.length)} of ${sites}` : sites;
+    const atoms = `${counted(crystal.atomsInCell, 'atom')}${crystal.lattice ? ' in the cell' : ''}`;
+    return `Sites · ${[shown, atoms, crystal.spaceGroup].filter(Boolean).join(' · ')}`;
+  }
+
+  #nothingLeft(): TemplateResult | typeof nothing {
+    const isEmpty = this.#list.rowCount === 0 && isFiltering(this.store!.state.table.filter);
+    if (!isEmpty || this.#source.columns.length === 0) return nothing;
+    return html`<p class="empty">
+      No site passes the filter.
+      <button class="link" @click=${() => this.store?.setTable({ filter: noFilter }, 'all rows are shown')}>
+        Show all
+      </button>
+    </p>`;
   }
 
   get #scroller(): HTMLElement | null {
@@ -170,12 +171,15 @@ export class SiteTable extends StoreElement {
   #row(index: number): TemplateResult | typeof nothing {
     const row = rowOf(this.#list, index);
     if (!row) return nothing;
-    const { selection, hover } = this.store!.state;
+    const { selection, hover, scene, picture, derived } = this.store!.state;
+    const { siteIndex, place, atom } = row;
     const target = this.#selectionOf(row);
     const isSelected = target !== null && matches(selection, target);
+    const isOpen = this.#opened.has(siteIndex);
+    const toggle = (): void => this.#toggle(row, !isOpen);
     const classes = [
       'row',
-      row.atom === null ? 'site' : 'atom',
+      atom === null ? 'site' : 'atom',
       isSelected ? 'selected' : '',
       target && matches(hover, target) ? 'hovered' : '',
       index === this.#active ? 'active' : '',
@@ -185,15 +189,24 @@ export class SiteTable extends StoreElement {
       class=${classes.join(' ')}
       role="row"
       aria-rowindex=${index + 2}
-      aria-level=${row.atom === null ? 1 : 2}
+      aria-level=${atom === null ? 1 : 2}
       aria-selected=${isSelected ? 'true' : 'false'}
-      aria-expanded=${row.atom === null ? String(this.#opened.has(row.siteIndex)) : nothing}
+      aria-expanded=${atom === null ? String(isOpen) : nothing}
       .style=${`top: ${topOf(this.#list, index)}px`}
       @click=${() => this.#choose(index)}
-      @dblclick=${() => this.#toggle(row.siteIndex, row.place, !this.#opened.has(row.siteIndex))}
+      @dblclick=${toggle}
       @pointerenter=${() => target && this.store?.hover(target)}
     >
-      ${row.atom === null ? this.#siteCells(row) : this.#atomCells(row.siteIndex, row.atom)}
+      ${
+        atom === null
+          ? siteCells({ row: this.#source.row(place), columns: this.#source.columns, scene, isOpen, toggle })
+          : atomCells(
+              this.store!.site(siteIndex),
+              atom,
+              quantityToShow(picture.quantity, derived),
+              this.#source.columns.length,
+            )
+      }
     </div>`;
   }
 
@@ -204,95 +217,47 @@ export class SiteTable extends StoreElement {
     return atomId === undefined ? null : { siteIndex, atomId };
   }
 
-  #siteCells({ siteIndex, place }: SiteRow): TemplateResult {
-    const row = this.#pages?.row(place) ?? null;
-    if (!row) return html`<div role="gridcell" class="name soft">…</div>`;
-    const isOpen = this.#opened.has(siteIndex);
-    const toggle = (event: Event): void => {
-      event.stopPropagation();
-      this.#toggle(siteIndex, place, !isOpen);
-    };
-    return html`${this.#columns.map((column, i) => {
-      if (i > 0) return this.#cell(row, column, i);
-      return html`<div role="gridcell" class="name">
-        <button class="opener" tabindex="-1" aria-hidden="true" @click=${toggle}>
-          ${isOpen ? '▾' : '▸'}
-        </button>
-        ${siteChip(siteIndex)}<span class="label" title=${row.cells[0] ?? ''}>${row.cells[0]}</span>
-      </div>`;
-    })}`;
-  }
-
-  #cell(row: TableRow, column: SiteColumn, place: number): TemplateResult {
-    const text = row.cells[place] ?? '';
-    const reason = row.because[place];
-    const because = reason === undefined ? undefined : raiseIsotopes(reason);
-    const isMissing = text === 'undefined' || text === '–';
-    const colour = this.#colourOf(row.siteIndex, column);
-    return html`<div
-      role="gridcell"
-      class="${column.numeric ? 'number' : 'text'} ${isMissing ? 'undefined' : ''}"
-      title=${because ?? nothing}
-    >
-      ${colour ? valueSwatch(colour) : nothing}${text}${because ? html`<span class="hidden-but-spoken">: ${because}</span>` : nothing}
-    </div>`;
-  }
-
-  /** The colour of the site's tensors in the picture, beside the number that colour says. */
-  #colourOf(siteIndex: number, { key }: SiteColumn): readonly [number, number, number] | null {
-    const scene = this.store?.state.scene;
-    const quantity = scene?.scale?.quantity;
-    if (!quantity || !scene.siteColours) return null;
-    if (key !== (quantity === 'efg' ? 'efg-couplingMHz' : `${quantity}-isotropic`)) return null;
-    const [r = 0, g = 0, b = 0, isColoured = 0] = scene.siteColours.subarray(
-      4 * siteIndex,
-      4 * siteIndex + 4,
-    );
-    return isColoured ? [r, g, b] : null;
-  }
-
-  #atomCells(siteIndex: number, place: number): TemplateResult {
-    const site = this.store!.site(siteIndex);
-    const atom = site?.equivalents[place];
-    if (!site || !atom) return html`<div role="gridcell" class="atom-cell soft">…</div>`;
-    const { derived, picture } = this.store!.state;
-    const quantity = quantityToShow(picture.quantity, derived);
-    const axes = quantity && atomAxes(site, atom, quantity);
-    const names = quantity ? axisNames(quantity) : [];
-    return html`<div role="gridcell" class="atom-cell" aria-colspan=${this.#columns.length}>
-      <div>
-        <span class="operation">${formatOperation(atom.operation)}</span> <span>at ${positionOf(atom)}</span>
-      </div>
-      <div class="axes">
-        ${axes?.map(
-          (axis, i) =>
-            html`<span
-              >${names[i]} ${axis ? html`(${formatTriple(axis, 3)})` : html`<i>undefined</i>`}</span
-            >`,
-        )}
-      </div>
-    </div>`;
-  }
-
+  /** The rows in a new order, or with other sites opened; the active row stays the active one. */
   #relist(order: Int32Array): void {
     const active = rowOf(this.#list, this.#active);
     this.#list = listRows(order, this.#opened);
-    const kept = active ? indexOfRow(this.#list, active.siteIndex, active.atom) : -1;
+    if (!active) return;
+    const own = indexOfRow(this.#list, active.siteIndex, active.atom);
+    const kept = own >= 0 ? own : indexOfRow(this.#list, active.siteIndex, null);
     this.#active = Math.max(0, Math.min(kept >= 0 ? kept : this.#active, this.#list.rowCount - 1));
   }
 
-  #toggle(siteIndex: number, place: number, open: boolean): void {
+  #toggle({ siteIndex, place }: SiteRow, open: boolean): void {
     const opened = new Map(this.#opened);
-    const atomCount = this.#pages?.row(place)?.atomCount;
+    const atomCount = this.#source.row(place)?.atomCount;
     if (open && atomCount !== undefined) opened.set(siteIndex, atomCount);
     else opened.delete(siteIndex);
     this.#opened = opened;
-    const row = rowOf(this.#list, this.#active);
     this.#relist(this.#list.order);
-    const kept = row ? indexOfRow(this.#list, row.siteIndex, row.atom) : -1;
-    this.#active = kept >= 0 ? kept : Math.max(0, indexOfRow(this.#list, siteIndex, null));
     this.requestUpdate();
   }
+
+  #sort(sort: TableSort | null): void {
+    const sentence = sortSentence(sort, this.#source.columns);
+    this.store?.setTable({ sort }, `the table is ${sentence}`);
+    this.said = `Sites ${sentence}.`;
+  }
+
+  async #copy(kind: CopyKind): Promise<void> {
+    const { store } = this;
+    const crystal = this.#crystal;
+    if (!store || !crystal) return;
+    const question = tableQuestion(crystal, store.state.table);
+    this.said = await copyTable(question, kind, (request) => store.ask('tableText', request));
+  }
+
+  readonly #closeOnEscape = (event: KeyboardEvent): void => {
+    if (event.key !== 'Escape') return;
+    event.preventDefault();
+    const opener = this.renderRoot.querySelector<HTMLElement>(`.tools .${this.panel}`);
+    this.panel = null;
+    opener?.focus();
+  };
 
   #choose(index: number): void {
     const row = rowOf(this.#list, index);
@@ -305,12 +270,22 @@ export class SiteTable extends StoreElement {
   }
 
   readonly #keydown = (event: KeyboardEvent): void => {
+    const isCopying = (event.ctrlKey || event.metaKey) && event.key.toLowerCase() === 'c';
+    // a text that is marked is copied as ever
+    if (isCopying && document.getSelection()?.isCollapsed !== false) {
+      event.preventDefault();
+      void this.#copy('rich');
+      return;
+    }
     const action = tableKeys(event, this.#list, this.#active, this.#opened, this.#pageRows);
     if (!action) return;
     event.preventDefault();
     if (action.kind === 'go') this.#choose(action.index);
     else if (action.kind === 'clear') this.store?.select(null);
-    else this.#toggle(action.siteIndex, rowOf(this.#list, this.#active)?.place ?? 0, action.open);
+    else {
+      const row = rowOf(this.#list, this.#active);
+      if (row) this.#toggle(row, action.open);
+    }
   };
 
   get #pageRows(): number {
@@ -319,10 +294,13 @@ export class SiteTable extends StoreElement {
 
   /** Brings the selected row to the active one when the selection came from elsewhere. */
   #follow(selection: Selection | null): void {
+    this.#isFollowing = false;
     if (!selection) return;
     const { siteIndex, atomId } = selection;
-    const atoms = this.#opened.has(siteIndex) ? (this.store?.site(siteIndex)?.equivalents ?? []) : [];
-    const atom = atoms.findIndex(({ id }) => id === atomId);
+    const isAtom = atomId !== null && this.#opened.has(siteIndex);
+    const site = isAtom ? (this.store?.site(siteIndex) ?? null) : null;
+    this.#isFollowing = isAtom && !site;
+    const atom = site?.equivalents.findIndex(({ id }) => id === atomId) ?? -1;
     const ofAtom = atom >= 0 ? indexOfRow(this.#list, siteIndex, atom) : -1;
     const index = ofAtom >= 0 ? ofAtom : indexOfRow(this.#list, siteIndex, null);
     if (index < 0 || index === this.#active) return;
@@ -351,16 +329,6 @@ export class SiteTable extends StoreElement {
 function matches(selection: Selection | null, row: Selection): boolean {
   if (selection?.siteIndex !== row.siteIndex) return false;
   return row.atomId === null || selection.atomId === row.atomId;
-}
-
-function positionOf({ fractional, cartesian }: EquivalentAtom): string {
-  return fractional ? formatPosition(fractional, 5) : `${formatPosition(cartesian, 5)} Å`;
-}
-
-function headline(crystal: CrystalSummary): string {
-  const sites = counted(crystal.siteCount, 'site');
-  const atoms = `${counted(crystal.atomsInCell, 'atom')}${crystal.lattice ? ' in the cell' : ''}`;
-  return `Sites · ${[sites, atoms, crystal.spaceGroup].filter(Boolean).join(' · ')}`;
 }
 
 customElements.define('ellipsite-site-table', SiteTable);

@@ -8,8 +8,42 @@ export const tableStyles = css`
     min-height: 0;
     min-width: 0;
   }
-  h2 {
-    padding: 0 0 6px;
+  .line {
+    display: flex;
+    flex-wrap: wrap;
+    align-items: center;
+    justify-content: space-between;
+    gap: 0 10px;
+    padding: 0 12px 2px 0;
+  }
+  .tools {
+    display: flex;
+    gap: 2px;
+    color: var(--soft);
+  }
+  .tools button {
+    font-size: 13px;
+    color: var(--ink);
+  }
+  .tools button[aria-expanded='true'] {
+    background: var(--raised);
+  }
+  .overlay {
+    position: relative;
+    z-index: 4;
+    height: 0;
+  }
+  ellipsite-column-chooser {
+    position: absolute;
+    right: 12px;
+    width: min(560px, 100% - 12px);
+    max-height: min(60vh, 520px);
+    border: 1px solid var(--line);
+    border-radius: 4px;
+  }
+  .empty {
+    padding: 14px 8px;
+    color: var(--soft);
   }
   .scroller {
     overflow: auto;
@@ -45,6 +79,28 @@ export const tableStyles = css`
     color: var(--soft);
     font-size: 12.5px;
     white-space: nowrap;
+  }
+  .head button {
+    font-size: 12.5px;
+    color: var(--soft);
+    padding: 0;
+    margin: 0;
+    max-width: 100%;
+    text-align: inherit;
+    border: none;
+    white-space: nowrap;
+  }
+  .head .number button {
+    width: 100%;
+  }
+  .head [aria-sort='ascending'] button,
+  .head [aria-sort='descending'] button {
+    color: var(--ink);
+  }
+  .mark {
+    font-size: 8px;
+    margin-left: 3px;
+    vertical-align: 1px;
   }
   .body {
     position: relative;
@@ -102,6 +158,8 @@ export const tableStyles = css`
   }
   .text {
     white-space: nowrap;
+    overflow: hidden;
+    text-overflow: ellipsis;
   }
   .opener {
     min-width: 24px;

@@ -6,7 +6,7 @@ import { sharedPositions } from '#src/scene/shared-positions.ts';
 import { columnsOf } from '#src/table/site-columns.ts';
 import { orderSites } from '#src/table/table-order.ts';
 import { tableRow } from '#src/table/table-rows.ts';
-import type { TablePage, TableRequest } from '#src/table/table-settings.ts';
+import type { TablePage, TableRequest, TableTextRequest } from '#src/table/table-settings.ts';
 import { tableHtml, tableText } from '#src/table/table-text.ts';
 
 /** Another site on the same position. */
@@ -20,11 +20,6 @@ export interface SharingSite {
 export interface KnownSite extends SiteDossier {
   /** Sites that share its position, such as two elements that mix on it. */
   readonly sharing: readonly SharingSite[];
-}
-
-/** The table to take away: all rows in their order. */
-export interface TableTextRequest extends Omit<TableRequest, 'first' | 'count' | 'withOrder'> {
-  readonly format: 'text' | 'html';
 }
 
 /** Everything that can be asked of a crystal that was derived: question and answer by kind. */

@@ -1,23 +1,34 @@
 import type { SiteDossier } from '#src/dossier/dossier.ts';
 import { naturalKey } from './natural-order.ts';
 import type { SiteColumn } from './site-column.ts';
-import { siteColumn, siteColumns } from './site-columns.ts';
+import { columnsOf, siteColumn } from './site-columns.ts';
+import { limits } from './table-settings.ts';
 import type { TableFilter, TableSort } from './table-settings.ts';
 
-const texts = siteColumns.filter(({ numeric }) => !numeric);
+/** Where a text is sought: in names and symbols, not in sentences and file names, which hold any two letters. */
+const texts = columnsOf([
+  'label',
+  'nuclide',
+  'element',
+  'species',
+  'wyckoff',
+  'siteSymmetry',
+  'assembly',
+  'group',
+]);
 
 /** Whether a site has a row. An undefined value is outside every range. */
 function passes({ elements, text, ranges }: TableFilter): (site: SiteDossier) => boolean {
   const wanted = elements && new Set(elements);
   const sought = text.trim().toLowerCase();
-  const limits = ranges.flatMap(({ key, low, high }) => {
+  const wantedRanges = ranges.filter(limits).flatMap(({ key, low, high }) => {
     const column = siteColumn(key);
     return column?.numeric ? [{ column, low: low ?? -Infinity, high: high ?? Infinity }] : [];
   });
   return (site) => {
     if (wanted && !wanted.has(site.element)) return false;
     if (sought && !holdsText(site, sought)) return false;
-    return limits.every(({ column, low, high }) => {
+    return wantedRanges.every(({ column, low, high }) => {
       const value = column.value(site);
       return typeof value === 'number' && value >= low && value <= high;
     });

@@ -11,7 +11,7 @@ export interface ColumnRange {
 export interface TableFilter {
   /** null for all. */
   readonly elements: readonly string[] | null;
-  /** Sought in label, nuclide, symmetry and the other texts of a site, in any case; empty for all. */
+  /** Sought in label, nuclide, elements, symmetry and disorder of a site, in any case; empty for all. */
   readonly text: string;
   readonly ranges: readonly ColumnRange[];
 }
@@ -37,7 +37,12 @@ export const defaultTable: TableSettings = { columns: null, sort: null, filter: 
 
 /** True where the filter may leave out a site. */
 export function isFiltering({ elements, text, ranges }: TableFilter): boolean {
-  return elements !== null || text.trim() !== '' || ranges.length > 0;
+  return elements !== null || text.trim() !== '' || ranges.some(limits);
+}
+
+/** A range without ends limits nothing: it waits for its numbers. */
+export function limits({ low, high }: ColumnRange): boolean {
+  return low !== null || high !== null;
 }
 
 /** Some rows of the table, and the order of all where it is asked for. */
@@ -50,6 +55,11 @@ export interface TableRequest {
   readonly count: number;
   /** False where the order is known from an earlier request of the same sort and filter. */
   readonly withOrder: boolean;
+}
+
+/** The table to take away: all rows in their order. */
+export interface TableTextRequest extends Omit<TableRequest, 'first' | 'count' | 'withOrder'> {
+  readonly format: 'text' | 'html';
 }
 
 /** One site's row. */
