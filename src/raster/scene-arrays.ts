@@ -18,6 +18,7 @@ export function sceneArrays({ quadrics, cylinders, lines, polars }: RasterScene)
     [S.bytesTableAt, bytes],
     [S.centresAt, quadrics.centres],
     [S.shapesAt, quadrics.shapes],
+    [S.reachesAt, reachesOf(quadrics.shapes)],
     [S.circlesAt, quadrics.circles],
     [S.quadricTintsAt, tintsOf(quadrics.colours)],
     [S.startsAt, cylinders.starts],
@@ -62,6 +63,13 @@ function tintsOf(colours: Uint8Array): Float32Array {
   const tints = new Float32Array((colours.length / 3) * S.tintSize);
   fillTints(colours, tints);
   return tints;
+}
+
+/** Frobenius norms of A: no semi-axis is longer. */
+function reachesOf(shapes: Float32Array): Float32Array {
+  const reaches = new Float32Array(shapes.length / 9);
+  for (let k = 0; k < shapes.length; k++) reaches[Math.floor(k / 9)]! += shapes[k]! ** 2;
+  return reaches.map((square) => 1.0001 * Math.sqrt(square));
 }
 
 /** Cosine and sine of 2π·k/255. */

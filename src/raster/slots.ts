@@ -77,6 +77,8 @@ export const circleTableAt = 56;
 export const polarScratchAt = 57;
 /** Object whose vertices stand there. */
 export const polarInScratch = 58;
+/** One a quadric: largest distance of its surface from the centre at most, Å. */
+export const reachesAt = 59;
 
 // floats
 /** Nine: crystal to view axes, row-major, times samples per Å. */
@@ -117,14 +119,15 @@ export const leastNearness = 98;
 
 // sizes of what the addresses lead to, in units of four bytes
 export const recordSize = 48;
-export const tintSize = 9;
+/** Nine numbers, and 1 where lines on the colour are drawn in light. */
+export const tintSize = 10;
 /** Of a polar surface's vertices: column, row, depth, signed radius. */
 export const vertexSize = 4;
 /** Of facets: column, row and depth of three corners, sRGB from 0 to 255, opacity. */
 export const facetSize = 13;
 export const meshSize = 4;
-/** Of candidates and sorted objects: object, first row, last row. */
-export const entrySize = 3;
+/** Of candidates and sorted objects: object, first and last row, first and last column, nearest depth (a float). */
+export const entrySize = 6;
 export const binCount = 4096;
 /** Rows of a strip at most, and sides of the tiles that skip what is hidden. */
 export const stripRows = 32;

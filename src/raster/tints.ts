@@ -31,7 +31,7 @@ function tintChannel(byte: number, tints: Float32Array, at: number): void {
   tints[at + 2] = c;
 }
 
-/** Tints of sRGB bytes, three a colour, into `tints` (nine a colour). */
+/** Tints of sRGB bytes, three a colour, into `tints` (ten a colour, the last 1 where lines on it are drawn in light). */
 export function fillTints(colours: Uint8Array, tints: Float32Array): void {
   const known = new Map<number, number>();
   for (let i = 0; 3 * i < colours.length; i++) {
@@ -44,7 +44,13 @@ export function fillTints(colours: Uint8Array, tints: Float32Array): void {
     }
     known.set(key, at);
     for (let k = 0; k < 3; k++) tintChannel(colours[3 * i + k]!, tints, at + 3 * k);
+    tints[at + 9] = luminance(colours.subarray(3 * i, 3 * i + 3)) > 0.14 ? 0 : 1;
   }
+}
+
+/** Relative luminance of sRGB bytes (Rec. 709 primaries). */
+function luminance([red, green, blue]: Uint8Array): number {
+  return 0.2126 * linearLight(red!) + 0.7152 * linearLight(green!) + 0.0722 * linearLight(blue!);
 }
 
 /** Colour as the four bytes of a pixel, little-endian, opaque. */

@@ -7,12 +7,10 @@ import { drawPolar } from './polar.ts';
 export function depthPass(first: i32, count: i32): void {
   clear(count);
   const records: i32 = whole(S.recordsAt);
-  const quadrics = whole(S.quadricCount);
   const last = first + count - 1;
   const step: i32 = S.entrySize << 2;
   const start: i32 = whole(S.sortedAt);
   const end: i32 = start + step * whole(S.visibleCount);
-  const lastColumn = whole(S.columns) - 1;
   for (let entry = start; entry < end; entry += step) {
     const entryLow = load<i32>(entry + 4);
     const entryHigh = load<i32>(entry + 8);
@@ -21,14 +19,13 @@ export function depthPass(first: i32, count: i32): void {
     const r: i32 = records + ((S.recordSize * object) << 2);
     const low = max<i32>(entryLow, first) - first;
     const high = min<i32>(entryHigh, last) - first;
-    const middle = part(r, 0) + (object < quadrics ? 0 : part(r, S.cMiddle));
-    const reach = part(r, S.oReach);
-    const left = max<i32>(0, <i32>ceil<f32>(middle - reach));
-    const right = min<i32>(lastColumn, <i32>floor<f32>(middle + reach));
+    const left = load<i32>(entry + 12);
+    const right = load<i32>(entry + 16);
     if (left > right) continue;
+    const nearest = load<f32>(entry + 20);
     for (let top = low; top <= high; top = (top & ~(S.tileSide - 1)) + S.tileSide) {
       const bottom = min<i32>(high, top | (S.tileSide - 1));
-      drawBetween(object, r, first, top, bottom, left, right);
+      drawBetween(object, r, nearest, first, top, bottom, left, right);
     }
   }
 }
@@ -56,8 +53,16 @@ function clear(count: i32): void {
   }
 }
 
-function drawBetween(object: i32, r: i32, first: i32, top: i32, bottom: i32, left: i32, right: i32): void {
-  const nearest = part(r, S.oNearest);
+function drawBetween(
+  object: i32,
+  r: i32,
+  nearest: f32,
+  first: i32,
+  top: i32,
+  bottom: i32,
+  left: i32,
+  right: i32,
+): void {
   const tileRow = top / S.tileSide;
   const perRow = whole(S.stride) / S.tileSide;
   const tiles: i32 = whole(S.tilesAt) + 8 * tileRow * perRow;

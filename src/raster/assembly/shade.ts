@@ -193,26 +193,35 @@ function quadricRun(object: i32, row: i32, start: i32, end: i32, colours: i32, d
     const isRim = f32x4.lt(rest, rimRest);
     if (v128.any_true(isRim)) ink = rimInk(r, rest, ex, ey, isRim);
     const z = v128.load(depth + (x << 2));
-    let line = bits === 0 ? zero : circleInk(r, bits, dx, dy, unit, ex, ey);
-    if (pattern > 0) line = f32x4.pmax(line, patternInk(r, pattern, dx, dy, unit));
-    let colour = markedColour(tint, isDark, light, ink, line, z);
+    const line = bits === 0 ? zero : circleInk(r, bits, dx, dy, unit, ex, ey);
+    const mark = pattern === 0 ? zero : patternInk(r, pattern, dx, dy, unit);
+    let colour = markedColour(tint, isDark, light, ink, line, mark, z);
     if (!isWhole) {
       const own = ownShare(r, dx, dy, unit);
       if (!i32x4.all_true(own)) {
-        colour = v128.bitselect(colour, markedColour(restTint, isRestDark, light, ink, line, z), own);
+        colour = v128.bitselect(colour, markedColour(restTint, isRestDark, light, ink, line, mark, z), own);
       }
     }
     v128.store(colours + (x << 2), colour);
   }
 }
 
-/** Under the line of a circle or pattern: darker, or lighter on a dark colour. */
-function markedColour(tint: i32, isDark: bool, light: v128, ink: v128, line: v128, z: v128): v128 {
-  if (isDark && v128.any_true(line)) {
-    return inkedColour(tint, light, ink, f32x4.mul(line, f32x4.splat(0.55)), z);
-  }
-  const left = f32x4.sub(f32x4.splat(1), f32x4.mul(line, f32x4.splat(0.88)));
-  return colourOf(tint, light, f32x4.mul(ink, left), z);
+/** Under the line of a circle and the mark of a pattern: darker, or lighter on a dark colour. */
+function markedColour(
+  tint: i32,
+  isDark: bool,
+  light: v128,
+  ink: v128,
+  line: v128,
+  mark: v128,
+  z: v128,
+): v128 {
+  const one = f32x4.splat(1);
+  const share = f32x4.splat(isDark ? 0.55 : 0.88);
+  const left = f32x4.mul(f32x4.sub(one, f32x4.mul(line, share)), f32x4.sub(one, f32x4.mul(mark, share)));
+  if (isDark && v128.any_true(v128.or(line, mark)))
+    return inkedColour(tint, light, ink, f32x4.sub(one, left), z);
+  return colourOf(tint, light, isDark ? ink : f32x4.mul(ink, left), z);
 }
 
 /** Coordinate k on the own unit sphere, up to a factor. */
@@ -274,7 +283,6 @@ function rimInk(r: i32, rest: v128, ex: v128, ey: v128, isRim: v128): v128 {
   return v128.bitselect(ink, one, isRim);
 }
 
-/** Squared distance to one circle. */
 function circleSquare(r: i32, k: i32, dx: v128, dy: v128, unit: v128, per: v128, ex: v128, ey: v128): v128 {
   const at = r + ((S.qCircles + 3 * k) << 2);
   const x = lanes(at, 0);

@@ -57,12 +57,9 @@ export function shaded(tint: i32, x: f32, y: f32, z: f32, ink: f32, white: f32, 
   return colourOf(tint, softLight(x * per, y * per, z * per), ink, white, depth);
 }
 
-/** Whether lines on a tint are drawn in light: 1 where its luminance is low, else 0. */
+/** Whether lines on a tint are drawn in light: 1 or 0. */
 export function isDark(tint: i32): f32 {
-  const red = power24(part(tint, 0) / inkScale);
-  const green = power24(part(tint, 3) / inkScale);
-  const blue = power24(part(tint, 6) / inkScale);
-  return red * 0.2126 + green * 0.7152 + blue * 0.0722 > 0.14 ? 0 : 1;
+  return part(tint, 9);
 }
 
 /** A colour (sRGB from 0 to 255) laid over a pixel with a share of cover; transparent pixels have straight alpha. */

@@ -29,7 +29,12 @@ export function prepareObjects(): void {
   const polars = whole(S.polarCount);
   const isFlat = real(S.perEye) === 0;
   let kept = 0;
-  for (let k = 0; k < quadrics; k++) if (quadric(k)) kept += keep(k, kept);
+  for (let k = 0; k < quadrics; k++) {
+    if ((!isFlat || isNearBand(k)) && quadric(k)) kept += keep(k, kept);
+  }
+  const marks = whole(S.markedCount);
+  // rings reach farther than what they are about
+  for (let k = 0; k < marks; k++) quadric(wordPart(whole(S.markedAt), k));
   for (let k = 0; k < cylinders; k++) {
     const object = quadrics + k;
     if (isFlat ? cylinder(k, object) : perspectiveCylinder(k, object)) kept += keep(object, kept);
@@ -40,6 +45,16 @@ export function prepareObjects(): void {
   }
   setWhole(S.visibleCount, kept);
   sort(kept);
+}
+
+/** False for most of the quadrics outside the rows and columns, without turning their shapes; without perspective only. */
+function isNearBand(index: i32): boolean {
+  const centre: i32 = whole(S.centresAt) + 12 * index;
+  const reach = part(whole(S.reachesAt), index) * real(S.samplesPerAngstrom);
+  const row = real(S.middleRow) - turnedPoint(centre, 3);
+  if (row + reach < asReal(whole(S.firstRow)) || row - reach > asReal(whole(S.endRow))) return false;
+  const column = real(S.middleColumn) + turnedPoint(centre, 0);
+  return column + reach >= 0 && column - reach <= asReal(whole(S.columns));
 }
 
 /** Entry of an object whose box reaches into the rows; returns 1 where it does. */
@@ -58,6 +73,9 @@ function keep(object: i32, at: i32): i32 {
   setWordPart(entry, 0, object);
   setWordPart(entry, 1, low);
   setWordPart(entry, 2, high);
+  setWordPart(entry, 3, mostWhole(0, up(middle - reach)));
+  setWordPart(entry, 4, leastWhole(whole(S.columns) - 1, down(middle + reach)));
+  setPart(entry, 5, part(r, S.oNearest));
   return 1;
 }
 
@@ -144,7 +162,7 @@ function triangle(r: i32, xx: f32, xy: f32, yy: f32, xz: f32, yz: f32, zz: f32):
 }
 
 function nearestOf(entry: i32): f32 {
-  return part(whole(S.recordsAt) + ((S.recordSize * wordPart(entry, 0)) << 2), S.oNearest);
+  return part(entry, 5);
 }
 
 /** Counting sort by the nearest depth, nearest first. */

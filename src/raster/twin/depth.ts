@@ -6,7 +6,7 @@ import * as S from '../slots.ts';
 
 /** Depth and object (number + 1) of every sample of a strip, nothing shaded yet. */
 export function depthPass(m: KernelViews, first: number, count: number): void {
-  const { f, i } = m;
+  const { i } = m;
   clear(m, count);
   const sorted = wordAt(m, S.sortedAt);
   const records = wordAt(m, S.recordsAt);
@@ -18,10 +18,8 @@ export function depthPass(m: KernelViews, first: number, count: number): void {
     const record = records + S.recordSize * object;
     const low = Math.max(i[entry + 1]!, first) - first;
     const high = Math.min(i[entry + 2]!, last) - first;
-    const middle = f[record]! + (object < i[S.quadricCount]! ? 0 : f[record + S.cMiddle]!);
-    const reach = f[record + S.oReach]!;
-    const left = Math.max(0, Math.ceil(middle - reach));
-    const right = Math.min(i[S.columns]! - 1, Math.floor(middle + reach));
+    const left = i[entry + 3]!;
+    const right = i[entry + 4]!;
     if (left > right) continue;
     for (let top = low; top <= high; top = (top & ~(S.tileSide - 1)) + S.tileSide) {
       const bottom = Math.min(high, top | (S.tileSide - 1));

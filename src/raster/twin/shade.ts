@@ -69,14 +69,15 @@ function quadricRun(
     const light = softLight(nx * per, ny * per, nz * per);
     if (!isPlain) setLook(m, object, r, dx, dy, unit, look);
     const circle = i[r + S.qBits] === 0 ? 0 : circleInk(m, r, dx, dy, unit, ex, ey);
-    const line = Math.max(circle, look.mark);
-    let ink = look.isDark ? 1 : 1 - 0.88 * line;
+    const share = look.isDark ? 0.55 : 0.88;
+    const left = (1 - share * circle) * (1 - share * look.mark);
+    let ink = look.isDark ? 1 : left;
     if (rest < f[r + S.qRimRest]!) {
       const radius = Math.sqrt(1 - rest);
       const rim = ((1 - radius) * radius) / Math.sqrt(ex * ex + ey * ey) / f[S.pixelScale]!;
       ink *= 1 - f[r + S.qRimInk]! * (1 - smooth(rim, f[S.rimWidth]! - 0.4, 1 / 0.8));
     }
-    i[colours + x] = colourOf(look.tint, light, ink, look.isDark ? 0.55 * line : 0, f[depth + x]!);
+    i[colours + x] = colourOf(look.tint, light, ink, look.isDark ? 1 - left : 0, f[depth + x]!);
   }
 }
 
