@@ -107,5 +107,7 @@ function instancesOf(batch: PolarBatch, members: readonly number[], level: numbe
   put('aPositive', batch.positiveColours, 3, 0);
   put('aNegative', batch.negativeColours, 3, 0);
   geometry.instanceCount = members.length;
+  // three counts vertices by an attribute `position`, which there is none of
+  geometry.setDrawRange(0, triangles.length);
   return geometry;
 }

@@ -24,6 +24,34 @@ const scenes: readonly (readonly [name: string, scene: Scene, theme: RenderTheme
   ['urea without tensors', buildScene(madeUrea(), { showTensors: false }), lightTheme],
 ];
 
+/** Scenes with everything that can be drawn beside plain ellipsoids, and ways of looking. */
+const furtherScenes: readonly (readonly [
+  name: string,
+  scene: Scene,
+  theme: RenderTheme,
+  perspectiveDegrees: number,
+])[] = [
+  ['polar surfaces', buildScene(madeUrea(), { quantity: 'shielding', glyph: 'polar' }), lightTheme, 0],
+  ['polar surfaces in perspective', buildScene(madeQuartz(), { glyph: 'polar' }), darkTheme, 50],
+  ['polyhedra', buildScene(madeQuartz(), { polyhedra: ['Si'] }), lightTheme, 0],
+  ['polyhedra in perspective', buildScene(madeQuartz(), { polyhedra: ['Si'] }), darkTheme, 50],
+  ['axes only', buildScene(madeUrea(), { glyph: 'axes' }), lightTheme, 0],
+  ['ellipsoids in perspective', buildScene(madeUrea()), lightTheme, 60],
+  ['parts and patterns', withPartsAndPatterns(buildScene(madeQuartz())), lightTheme, 0],
+  ['parts and patterns in perspective', withPartsAndPatterns(buildScene(madeQuartz())), lightTheme, 40],
+  ['outlines', buildScene(madeQuartz()), { ...lightTheme, outlineWidthPx: 1.6 }, 0],
+  ['no depth cue', buildScene(madeUrea()), { ...darkTheme, depthCue: 0 }, 0],
+];
+
+/** Every object partly in another colour and with a pattern, in turn. */
+function withPartsAndPatterns(scene: Scene): Scene {
+  const { count } = scene.quadrics;
+  const shares = Uint8Array.from({ length: count }, (_none, i) => [255, 180, 90, 30][i % 4]!);
+  const patterns = Uint8Array.from({ length: count }, (_none, i) => i % 3);
+  const restColours = Uint8Array.from({ length: 3 * count }, (_none, i) => [235, 120, 40][i % 3]!);
+  return { ...scene, quadrics: { ...scene.quadrics, shares, patterns, restColours } };
+}
+
 interface Compared {
   /** Share of pixels that differ by more than 16 of 255 in a channel. */
   readonly share: number;
@@ -87,6 +115,17 @@ describe.each(kernels)('the CPU renderer (%s) against WebGL', (_name, makeKernel
         expect(drawnShare(raster, theme)).toBeGreaterThan(0.02);
         expect(share).toBeLessThan(0.005);
       }
+    }
+  });
+
+  it.each(furtherScenes)('%s: the same picture but for rims', (_scene, scene, theme, perspectiveDegrees) => {
+    const viewport = { widthPx: 400, heightPx: 300 };
+    const first = { ...firstCamera(scene, viewport), perspectiveDegrees };
+    for (const camera of [first, zoom(turn(first, -60, 40, viewport), 2, viewport)]) {
+      const { share, webgl, raster } = compare(makeKernel, scene, camera, theme, 2);
+      expect(drawnShare(webgl, theme)).toBeGreaterThan(0.02);
+      expect(drawnShare(raster, theme)).toBeGreaterThan(0.02);
+      expect(share).toBeLessThan(0.005);
     }
   });
 });
