@@ -3,6 +3,7 @@ import type { TemplateResult } from 'lit';
 import type { DerivedCase, ProposalSummary, SourceSummary } from '#src/store/engine-protocol.ts';
 import { drawerStyles } from './drawer-styles.ts';
 import { counted, formatCount } from '#src/table/number-format.ts';
+import { addFiles, openFiles } from './open-files.ts';
 import { askForPanel } from './panel.ts';
 import { acceptedWords, pickFiles } from './pick-files.ts';
 import { proposalButtons, quantityWords } from './proposal-buttons.ts';
@@ -73,6 +74,7 @@ export class CasePanel extends StoreElement {
       <div class="commands">
         <button class="line" @click=${this.#open}>Open files …</button>
         <button class="line" ?disabled=${!derived} @click=${this.#add}>Add tensors to this crystal …</button>
+        <button class="line" ?disabled=${!derived} @click=${() => store.clear()}>Clear the page</button>
       </div>
       <p class="soft">
         Or drop files anywhere on the page. Read are ${acceptedWords}. Nothing leaves this machine.
@@ -125,12 +127,12 @@ export class CasePanel extends StoreElement {
 
   async #open(): Promise<void> {
     const files = await pickFiles();
-    if (files.length > 0) void this.store?.open(files);
+    if (files.length > 0 && this.store) void openFiles(this.store, files);
   }
 
   async #add(): Promise<void> {
     const files = await pickFiles();
-    if (files.length > 0) void this.store?.add(files);
+    if (files.length > 0 && this.store) void addFiles(this.store, files);
   }
 }
 

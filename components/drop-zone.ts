@@ -1,5 +1,6 @@
 import { css, html } from 'lit';
 import type { TemplateResult } from 'lit';
+import { addFiles, openFiles } from './open-files.ts';
 import { acceptedWords, filesOf } from './pick-files.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
@@ -116,8 +117,7 @@ export class DropZone extends StoreElement {
     const files = filesOf(event.dataTransfer.files);
     this.over = null;
     if (files.length === 0) return;
-    if (kind === 'add') void this.store?.add(files);
-    else void this.store?.open(files);
+    if (this.store) void (kind === 'add' ? addFiles : openFiles)(this.store, files);
   };
 }
 

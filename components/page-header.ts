@@ -2,10 +2,12 @@ import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import { countProblems } from '#src/store/state.ts';
 import type { ThemeChoice } from '#src/store/state.ts';
+import { openFiles } from './open-files.ts';
 import type { Panel } from './panel.ts';
 import { askForPanel } from './panel.ts';
 import { pickFiles } from './pick-files.ts';
 import { problemSummary } from './problem-summary.ts';
+import { saveCase } from './save-case.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
 
@@ -57,6 +59,28 @@ export class PageHeader extends StoreElement {
       .note {
         color: var(--soft);
       }
+      .kept {
+        color: var(--soft);
+        font-size: 13px;
+        white-space: nowrap;
+      }
+      .kept.failed {
+        color: var(--warning);
+      }
+      .step span {
+        display: inline-block;
+        max-width: 15ch;
+        overflow: hidden;
+        text-overflow: ellipsis;
+        white-space: pre;
+        vertical-align: bottom;
+        color: var(--soft);
+      }
+      @media (max-width: 1100px) {
+        .step span {
+          display: none;
+        }
+      }
       button[aria-expanded='true'] {
         background: var(--raised);
       }
@@ -72,6 +96,7 @@ export class PageHeader extends StoreElement {
     'past',
     'future',
     'theme',
+    'keeping',
   ] as const;
 
   constructor() {
@@ -83,33 +108,49 @@ export class PageHeader extends StoreElement {
     const { store } = this;
     if (!store) return html``;
     const { decisions, past, future } = store.state;
-    const undo = past.at(-1)?.name;
-    const redo = future.at(-1)?.name;
     return html`
       <h1>Ellipsite</h1>
       <span class="case" title=${decisions?.title ?? ''}>${decisions?.title ?? ''}</span>
-      ${this.#structures()}
+      ${this.#kept()} ${this.#structures()}
       <nav aria-label="Commands">
         ${this.#problems()}
         <button @click=${this.#open}>Open</button>
+        <button
+          ?disabled=${!decisions}
+          title="save the case to a file (Ctrl+S)"
+          @click=${() => saveCase(store)}
+        >
+          Save
+        </button>
         ${this.#panelButton('case', 'Case')}
-        <button
-          ?disabled=${!undo}
-          title=${undo ? `undo: ${undo}` : 'nothing to undo'}
-          @click=${() => store.undo()}
-        >
-          Undo
-        </button>
-        <button
-          ?disabled=${!redo}
-          title=${redo ? `redo: ${redo}` : 'nothing to redo'}
-          @click=${() => store.redo()}
-        >
-          Redo
-        </button>
+        ${this.#stepButton('Undo', past.at(-1)?.name, 'Ctrl+Z', () => store.undo())}
+        ${this.#stepButton('Redo', future.at(-1)?.name, 'Shift+Ctrl+Z', () => store.redo())}
         ${this.#panelButton('settings', 'Settings')} ${this.#theme()}
       </nav>
     `;
+  }
+
+  /** Undo or redo with the name of its step; narrow screens keep the name in its title. */
+  #stepButton(verb: string, step: string | undefined, keys: string, act: () => unknown): TemplateResult {
+    const words = step ? `${verb} ${step}` : `nothing to ${verb.toLowerCase()}`;
+    return html`<button
+      class="step"
+      ?disabled=${!step}
+      aria-label=${step ? words : verb}
+      title="${words} (${keys})"
+      @click=${act}
+    >
+      ${verb}<span>${step ? ` ${step}` : ''}</span>
+    </button>`;
+  }
+
+  /** Whether the work comes back by itself. */
+  #kept(): TemplateResult {
+    const { status, reason } = this.store!.state.keeping;
+    const words = { off: '', kept: 'saved in this browser', failed: 'not saved in this browser' }[status];
+    const more =
+      reason ?? (status === 'kept' ? 'It is here again after a reload; Save makes a file of it.' : '');
+    return html`<span class="kept ${status}" aria-live="polite" title=${more}>${words}</span>`;
   }
 
   #problems(): TemplateResult {
@@ -175,7 +216,7 @@ export class PageHeader extends StoreElement {
 
   async #open(): Promise<void> {
     const files = await pickFiles();
-    if (files.length > 0) void this.store?.open(files);
+    if (files.length > 0 && this.store) void openFiles(this.store, files);
   }
 
   #toggle(panel: Panel): void {

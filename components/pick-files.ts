@@ -2,7 +2,7 @@ import type { FileInput } from '#src/store/store.ts';
 
 /** What the page reads, in words. The file dialog hides nothing: files are known by content, not by name. */
 export const acceptedWords =
-  'CIF 1.1 and 2.0, XYZ and extended XYZ with tensors, plain or gzipped, up to 200 MB';
+  'CIF 1.1 and 2.0, XYZ and extended XYZ with tensors, plain or gzipped, case files and pictures saved here, up to 200 MB';
 
 /** Files of a list as the store takes them. */
 export function filesOf(list: FileList | readonly File[] | null): FileInput[] {

@@ -3,6 +3,7 @@ import type { PropertyValues, TemplateResult } from 'lit';
 import type { WebGLProbe } from '#src/render/probe-webgl.ts';
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { announcement, selectionSentence } from './announcement.ts';
+import { caseKey } from './case-keys.ts';
 import './crystal-view.ts';
 import './drop-zone.ts';
 import './page-header.ts';
@@ -155,12 +156,7 @@ export class Workbench extends StoreElement {
   }
 
   readonly #shortcuts = (event: KeyboardEvent): void => {
-    const isTyping = event.composedPath()[0] instanceof HTMLInputElement;
-    const key = event.key.toLowerCase();
-    if ((event.ctrlKey || event.metaKey) && key === 'z' && !isTyping) {
-      event.preventDefault();
-      void (event.shiftKey ? this.store?.redo() : this.store?.undo());
-    }
+    if (caseKey(event, this.store)) return;
     if (event.key !== 'Escape' || event.defaultPrevented) return;
     if (this.store?.state.shownPlace) this.store.showPlace(null);
     else if (this.panel) this.#close();

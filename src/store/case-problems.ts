@@ -1,0 +1,20 @@
+import type { Problem } from '#src/base/problem.ts';
+import { problem } from '#src/base/problem.ts';
+import type { FileInput } from './file-input.ts';
+
+/** Said where a case file comes with another one, or is to be added to a crystal. */
+export function oneCaseOnly(cases: readonly FileInput[]): Problem {
+  return problem('error', 'case-not-alone', 'A case file is opened on its own; nothing was opened.', {
+    got: cases.map(({ name }) => name).join(', '),
+    allowed: 'one case file by Open, further files of tensors beside it',
+    hint: 'Open it by itself, or take the structure and tensor files instead.',
+  });
+}
+
+/** Said where the case could not be written into a file. */
+export function notSaved(error: unknown): Problem {
+  const message = error instanceof Error ? error.message : String(error);
+  return problem('error', 'case-not-saved', `The case could not be saved: ${message}`, {
+    hint: 'A file of it may have been moved or changed since it was opened; open it again.',
+  });
+}
