@@ -103,13 +103,29 @@ export async function createPngWriter(facts: PngFacts): Promise<PngWriter> {
   };
 }
 
+/** Bytes of a chunk of pixels: always the same cuts, however the stream hands out its pieces. */
+const chunkBytes = 1 << 18;
+
 async function collect(packed: ReadableStream<Uint8Array>, parts: Uint8Array[]): Promise<void> {
   const reader = packed.getReader();
+  let waiting = new Uint8Array(chunkBytes);
+  let filled = 0;
   for (;;) {
     const { done, value } = await reader.read();
-    if (done) return;
-    if (value.length > 0) parts.push(chunk('IDAT', value));
+    if (done) break;
+    for (let at = 0; at < value.length;) {
+      const taken = Math.min(value.length - at, chunkBytes - filled);
+      waiting.set(value.subarray(at, at + taken), filled);
+      filled += taken;
+      at += taken;
+      if (filled === chunkBytes) {
+        parts.push(chunk('IDAT', waiting));
+        waiting = new Uint8Array(chunkBytes);
+        filled = 0;
+      }
+    }
   }
+  if (filled > 0) parts.push(chunk('IDAT', waiting.subarray(0, filled)));
 }
 
 function joined(parts: readonly Uint8Array[]): Uint8Array<ArrayBuffer> {

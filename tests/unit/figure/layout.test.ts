@@ -1,0 +1,166 @@
+import { describe, expect, it } from 'vitest';
+import { defaultContents } from '#src/figure/figure-request.ts';
+import type { FigureRequest } from '#src/figure/figure-request.ts';
+import { setText } from '#src/figure/font/set-text.ts';
+import { layoutFigure } from '#src/figure/layout.ts';
+import type { Sheet, SheetItem, TextItem } from '#src/figure/sheet.ts';
+import { buildScene } from '#src/scene/build-scene.ts';
+import { pixelsPerAngstrom } from '#src/scene/camera.ts';
+import { defaultLook } from '#src/scene/look.ts';
+import type { Scene } from '#src/scene/scene.ts';
+import { madeQuartz } from '#tests/support/made-quartz.ts';
+
+const labelled = buildScene(madeQuartz(), { labels: true });
+const plain = buildScene(madeQuartz());
+
+const request: FigureRequest = {
+  widthPt: 235,
+  heightPt: null,
+  textPt: 7,
+  theme: 'light',
+  transparent: false,
+  view: { kind: 'direction', towards: [0, 0, 1], words: 'viewed along c' },
+  contents: defaultContents,
+  look: defaultLook,
+  title: '',
+};
+
+interface Box {
+  readonly left: number;
+  readonly right: number;
+  readonly top: number;
+  readonly bottom: number;
+}
+
+/** Rectangle of a text from its baseline to the height of its capitals. */
+function boxOf({ runs, xPt, yPt, sizePt }: TextItem): Box {
+  return { left: xPt, right: xPt + setText(runs, sizePt).widthPt, top: yPt - 0.71 * sizePt, bottom: yPt };
+}
+
+function meets(one: Box, other: Box): boolean {
+  return (
+    one.left < other.right - 0.01 &&
+    other.left < one.right - 0.01 &&
+    one.top < other.bottom - 0.01 &&
+    other.top < one.bottom - 0.01
+  );
+}
+
+const textsOf = ({ items }: Sheet): TextItem[] => items.filter((item: SheetItem) => item.kind === 'text');
+const wordsOf = (sheet: Sheet): string[] =>
+  textsOf(sheet).map(({ runs }) => runs.map(({ text }) => text).join(''));
+
+const requests: [string, Scene, FigureRequest][] = [
+  ['a column', plain, request],
+  ['a column with labels', labelled, request],
+  ['a slide', labelled, { ...request, widthPt: 960, heightPt: 540, textPt: 18 }],
+  ['a low strip', plain, { ...request, widthPt: 500, heightPt: 160 }],
+  [
+    'title and caption',
+    plain,
+    { ...request, title: 'Quartz', contents: { ...defaultContents, caption: true } },
+  ],
+];
+
+describe('a figure laid out', () => {
+  it.each(requests)('keeps all texts of %s inside and apart', (_name, scene, asked) => {
+    const sheet = layoutFigure(scene, asked);
+    const boxes = textsOf(sheet).map(boxOf);
+    expect(boxes.length).toBeGreaterThan(4);
+    for (const box of boxes) {
+      expect(box.left).toBeGreaterThanOrEqual(0);
+      expect(box.top).toBeGreaterThanOrEqual(0);
+      expect(box.right).toBeLessThanOrEqual(sheet.widthPt);
+      expect(box.bottom).toBeLessThanOrEqual(sheet.heightPt);
+    }
+    boxes.forEach((one, k) => boxes.slice(k + 1).forEach((other) => expect(meets(one, other)).toBe(false)));
+  });
+
+  it.each(requests)('keeps what belongs to the crystal of %s off it', (_name, scene, asked) => {
+    const sheet = layoutFigure(scene, asked);
+    const { xPt, yPt, widthPt, heightPt } = sheet.crystal;
+    const place = { left: xPt, right: xPt + widthPt, top: yPt, bottom: yPt + heightPt };
+    const others = textsOf(sheet).filter(({ halo }) => halo === null);
+    for (const text of others) expect(meets(boxOf(text), place)).toBe(false);
+  });
+
+  it('states quantity, unit, limits, scale, axes and view', () => {
+    const words = wordsOf(layoutFigure(plain, request));
+    const { legend, scale } = plain;
+    expect(words.join(' ')).toContain('shielding');
+    expect(words.join(' ')).toContain('/ppm');
+    expect(words).toContain(legend!.low.toFixed(legend!.digits));
+    expect(words).toContain(legend!.high.toFixed(legend!.digits));
+    expect(words).toEqual(expect.arrayContaining(['a', 'b', 'c', 'viewed along c']));
+    const statement = words.find((text) => / Å = /.test(text) && text.endsWith('ppm'))!;
+    const [, length, worth] = /^([\d.]+) Å = ([\d.]+) ppm$/.exec(statement)!;
+    expect(Number(worth) / Number(length)).toBeCloseTo(scale!.unitsPerAngstrom, 6);
+  });
+
+  it('draws the ruler as long as it says, at the scale of the crystal', () => {
+    const sheet = layoutFigure(plain, request);
+    const { camera, viewport, pointsPerCssPx } = sheet.crystal;
+    const perAngstrom = pixelsPerAngstrom(camera, viewport) * pointsPerCssPx;
+    const said = Number(/([\d.]+) Å = /.exec(wordsOf(sheet).find((text) => / Å = .*ppm/.test(text))!)![1]);
+    const lengths = sheet.items.flatMap((item) =>
+      item.kind === 'line' && item.ends === 'flat' && item.y1Pt === item.y2Pt ? [item.x2Pt - item.x1Pt] : [],
+    );
+    expect(lengths.some((length) => Math.abs(length - said * perAngstrom) < 1e-6)).toBe(true);
+  });
+
+  it('has no ruler in perspective, where no length holds everywhere', () => {
+    const look = { ...defaultLook, perspectiveDegrees: 30 };
+    const sheet = layoutFigure(plain, { ...request, look });
+    expect(sheet.items.filter((item) => item.kind === 'line' && item.ends === 'flat')).toEqual([]);
+    expect(wordsOf(sheet)).toContain(plain.scaleStatement);
+  });
+
+  it('leaves out what is not wanted, and gives the crystal its room', () => {
+    const contents = {
+      axes: false,
+      legend: false,
+      scale: false,
+      elementKey: false,
+      viewDirection: false,
+      caption: false,
+    };
+    const bare = layoutFigure(plain, { ...request, heightPt: 200, contents });
+    expect(bare.items).toEqual([]);
+    expect(bare.crystal.heightPt).toBe(200);
+    expect(bare.crystal.widthPt).toBe(235);
+  });
+
+  it('has letters of the size asked for and no line thinner than print bears', () => {
+    const sheet = layoutFigure(labelled, { ...request, textPt: 5 });
+    for (const { sizePt } of textsOf(sheet)) expect(sizePt).toBe(5);
+    // 0.35 pt: least line weight of journals
+    for (const item of sheet.items)
+      if (item.kind === 'line') expect(item.widthPt).toBeGreaterThanOrEqual(0.35);
+  });
+
+  it('puts its texts beside a crystal on a wide sheet, below it on a high one', () => {
+    const wide = layoutFigure(plain, { ...request, widthPt: 960, heightPt: 400, textPt: 12 });
+    const high = layoutFigure(plain, { ...request, widthPt: 400, heightPt: 600, textPt: 12 });
+    const { crystal } = wide;
+    for (const { xPt } of textsOf(wide)) expect(xPt).toBeGreaterThan(crystal.xPt + crystal.widthPt - 0.01);
+    for (const { yPt } of textsOf(high))
+      expect(yPt).toBeGreaterThan(high.crystal.yPt + high.crystal.heightPt);
+  });
+
+  it('is the same each time', () => {
+    expect(layoutFigure(labelled, request)).toEqual(layoutFigure(labelled, request));
+  });
+
+  it('shows all that the screen showed where it is asked to', () => {
+    const camera = { ...layoutFigure(plain, request).crystal.camera, zoom: 0.2 };
+    const viewport = { widthPx: 800, heightPx: 500 };
+    const view = { kind: 'camera', camera, viewport, wholeCrystal: false, words: null } as const;
+    const { crystal } = layoutFigure(plain, { ...request, heightPt: 260, view });
+    const perAngstrom = pixelsPerAngstrom(crystal.camera, crystal.viewport);
+    const onScreen = pixelsPerAngstrom(camera, viewport);
+    const [across, down] = [crystal.viewport.widthPx / perAngstrom, crystal.viewport.heightPx / perAngstrom];
+    expect(across).toBeGreaterThanOrEqual(800 / onScreen - 1e-9);
+    expect(down).toBeGreaterThanOrEqual(500 / onScreen - 1e-9);
+    expect(Math.min(across - 800 / onScreen, down - 500 / onScreen)).toBeCloseTo(0, 9);
+  });
+});
