@@ -1,5 +1,5 @@
 import type { Vec3 } from '#src/base/matrix3.ts';
-import { add, distance, scale, subtract } from '#src/base/vector3.ts';
+import { add, distance, normalize, scale, subtract } from '#src/base/vector3.ts';
 import type { CylinderBatch } from './scene.ts';
 
 type Rgb = readonly [number, number, number];
@@ -37,28 +37,41 @@ export function packedCylinders(cylinders: readonly Cylinder[]): CylinderBatch {
   return batch;
 }
 
-/**
- * Dashes of one period (dash and gap, half each) along a line, symmetric about its middle, which is always a dash; of at most
- * `mostDashes` the period is longer.
- */
-export function dashesBetween(
+/** What the dashes of one line have in common. */
+type DashLook = Pick<Cylinder, 'radius' | 'startColour' | 'endColour' | 'pickId'>;
+
+/** Dashes of one period (dash and gap, half each) along a line, symmetric about its middle, which is always a dash. */
+export function dashesBetween(start: Vec3, end: Vec3, periodAngstrom: number, look: DashLook): Cylinder[] {
+  const size = distance(start, end);
+  const steps = Math.max(0, Math.floor((size - periodAngstrom) / 2 / periodAngstrom));
+  const [dash, count] = [Math.min(periodAngstrom / 2, size), 2 * steps + 1];
+  return dashesAbout(start, end, { count, dash, step: periodAngstrom }, look);
+}
+
+/** An odd number of dashes with gaps as long as they are, from one end of a line exactly to the other: at least 3. */
+export function dashesToTheEnds(
   start: Vec3,
   end: Vec3,
-  usualPeriodAngstrom: number,
-  look: Pick<Cylinder, 'radius' | 'startColour' | 'endColour' | 'pickId'>,
-  mostDashes = Infinity,
+  wanted: { readonly periodAngstrom: number; readonly mostDashes: number },
+  look: DashLook,
 ): Cylinder[] {
   const size = distance(start, end);
-  if (!(size > 0)) return [];
-  const periodAngstrom = Math.max(usualPeriodAngstrom, size / (mostDashes + 0.01));
-  const along = scale(1 / size, subtract(end, start));
+  const fitting = 2 * Math.round(size / wanted.periodAngstrom / 2) + 1;
+  const count = Math.min(Math.max(3, fitting), wanted.mostDashes);
+  const dash = size / (2 * count - 1);
+  return dashesAbout(start, end, { count, dash, step: 2 * dash }, look);
+}
+
+function dashesAbout(
+  start: Vec3,
+  end: Vec3,
+  { count, dash, step }: { readonly count: number; readonly dash: number; readonly step: number },
+  look: DashLook,
+): Cylinder[] {
+  const along = normalize(subtract(end, start));
   const middle = scale(0.5, add(start, end));
-  const steps = Math.max(0, Math.floor((size - periodAngstrom) / 2 / periodAngstrom));
-  const half = Math.min(periodAngstrom / 4, size / 2);
-  const made: Cylinder[] = [];
-  for (let k = -steps; k <= steps; k++) {
-    const at = (offset: number) => add(middle, scale(k * periodAngstrom + offset, along));
-    made.push({ ...look, start: at(-half), end: at(half) });
-  }
-  return made;
+  return Array.from({ length: count }, (_, k) => {
+    const at = (offset: number) => add(middle, scale((k - (count - 1) / 2) * step + offset, along));
+    return { ...look, start: at(-dash / 2), end: at(dash / 2) };
+  });
 }

@@ -4,7 +4,7 @@ import { add, cross, length, normalize, scale, subtract } from '#src/base/vector
 import { anyPerpendicular } from './camera.ts';
 import { legendColour } from './colour-scale.ts';
 import type { Cylinder } from './cylinder-list.ts';
-import { dashesBetween } from './cylinder-list.ts';
+import { dashesToTheEnds } from './cylinder-list.ts';
 import type { DrawnAtom } from './drawn-atoms.ts';
 import type { PolarBatch, TensorScale } from './scene.ts';
 import type { ChosenTensors } from './tensor-choice.ts';
@@ -110,7 +110,8 @@ const leastLengthAngstrom = 1e-3;
 export function axisRods(atoms: readonly DrawnAtom[], drawing: TensorDrawing): Cylinder[] {
   const rods: Cylinder[] = [];
   const { kind, unitsPerAngstrom } = drawing.scale;
-  const dashes = mostDashes(drawing.carries.reduce((sum, one) => sum + one, 0));
+  const carrying = drawing.carries.reduce((sum, one) => sum + one, 0);
+  const dashes = { periodAngstrom: rodDashAngstrom, mostDashes: mostDashes(carrying) };
   atoms.forEach(({ atom, site, position }, i) => {
     const form = drawing.carries[i] ? drawing.forms.get(site.index) : undefined;
     if (!form) return;
@@ -123,7 +124,7 @@ export function axisRods(atoms: readonly DrawnAtom[], drawing: TensorDrawing): C
       const colour = shaded(own, rodShades[k]);
       const look = { radius: rodRadii[k], startColour: colour, endColour: colour, pickId: i + 1 };
       const [start, end] = [subtract(position, half), add(position, half)];
-      if (value < 0) rods.push(...dashesBetween(start, end, rodDashAngstrom, look, dashes));
+      if (value < 0) rods.push(...dashesToTheEnds(start, end, dashes, look));
       else rods.push({ ...look, start, end });
     }
   });
