@@ -1,9 +1,10 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
-import { apply, matrixFromRows, multiply } from '#src/base/matrix3.ts';
-import { cross, length, normalize, subtract } from '#src/base/vector3.ts';
+import { apply, matrixFromRows, multiply, transpose } from '#src/base/matrix3.ts';
+import { add, cross, length, normalize, subtract } from '#src/base/vector3.ts';
 import type { Camera, Viewport } from './camera.ts';
 import { anyPerpendicular } from './camera.ts';
 import { leastNearness } from './perspective.ts';
+import { pickIndex, walkIndex } from './pick-index.ts';
 import { polarSurface } from './pick-polar.ts';
 import type { Projection } from './project.ts';
 import { centreOf, projection, viewPoint, viewShape } from './project.ts';
@@ -20,8 +21,8 @@ export interface PickHit {
 
 /**
  * Front-most atom, bond or polar surface under a point (CSS pixels from the upper left corner), by intersecting the line of
- * sight with every one of them; null over the paper. Exactly what the shaders draw there. What reaches to the eye of a
- * true perspective is not met.
+ * sight with those it may meet (pick-index.ts); null over the paper. Exactly what the shaders draw there. What reaches to the
+ * eye of a true perspective is not met.
  */
 export function pick(
   scene: Scene,
@@ -31,22 +32,36 @@ export function pick(
   viewport: Viewport,
 ): PickHit | null {
   const p = projection(camera, viewport);
-  const ray = sightThrough(p, xPx - p.centreXPx, p.centreYPx - yPx);
+  const offset = [xPx - p.centreXPx, p.centreYPx - yPx] as const;
+  const ray = sightThrough(p, ...offset);
   const front = { pickId: 0, height: -Infinity };
-  const meet = (count: number, pickIds: Uint32Array, heightOf: (i: number) => number | null): void => {
-    for (let i = 0; i < count; i++) {
-      const height = heightOf(i);
-      if (height === null || height <= front.height || height >= ray.eye) continue;
-      front.height = height;
-      front.pickId = pickIds[i]!;
-    }
-  };
   const { quadrics, cylinders, polars } = scene;
-  meet(quadrics.count, quadrics.pickIds, (i) => quadricHeight(quadrics, p, ray, i));
-  meet(cylinders.count, cylinders.pickIds, (i) => cylinderHeight(cylinders, p, ray, i));
-  if (polars) meet(polars.count, polars.pickIds, (i) => polarHeight(polars, p, ray, i));
+  const meet = (pickIds: Uint32Array, i: number, height: number | null): void => {
+    if (height === null || height <= front.height || height >= ray.eye) return;
+    front.height = height;
+    front.pickId = pickIds[i]!;
+  };
+  const meetThing = (thing: number): void => {
+    const cylinder = thing - quadrics.count;
+    const polar = cylinder - cylinders.count;
+    if (cylinder < 0) meet(quadrics.pickIds, thing, quadricHeight(quadrics, p, ray, thing));
+    else if (polar < 0) meet(cylinders.pickIds, cylinder, cylinderHeight(cylinders, p, ray, cylinder));
+    else if (polars) meet(polars.pickIds, polar, polarHeight(polars, p, ray, polar));
+  };
+  const { origin, direction, from } = lineOfSight(p, ...offset);
+  walkIndex(pickIndex(scene), origin, direction, from, meetThing, (t) => -t * p.scale <= front.height);
   const entry = scene.picks[front.pickId - 1];
   return entry ? { pickId: front.pickId, entry, depthPx: depthAt(p, ray, front.height) } : null;
+}
+
+/** The line of sight in the crystal's frame, Å: a height h along it, in pixels, is at t = −h / scale. */
+function lineOfSight(p: Projection, x: number, y: number): { origin: Vec3; direction: Vec3; from: number } {
+  const back = transpose(p.rotation);
+  const isFlat = p.eyePx === Infinity;
+  const start: Vec3 = isFlat ? [x / p.scale, y / p.scale, 0] : [0, 0, p.eyePx / p.scale];
+  const towards: Vec3 = isFlat ? [0, 0, -1] : normalize([x, y, -p.eyePx]);
+  const origin = add(p.target, apply(back, start));
+  return { origin, direction: apply(back, towards), from: isFlat ? -Infinity : 0 };
 }
 
 /**
@@ -103,8 +118,11 @@ function quadricHeight(quadrics: QuadricBatch, p: Projection, ray: Sight, i: num
 
 /** Whether an ellipsoid reaches so near to the eye that it isn't drawn. */
 function isTooNear(p: Projection, centre: Vec3, shape: Mat3): boolean {
-  const reach = length([shape[6], shape[7], shape[8]]);
-  return p.eyePx - viewPoint(p, centre)[2] - reach < leastNearness * p.eyePx;
+  return isBallTooNear(p, viewPoint(p, centre)[2], length([shape[6], shape[7], shape[8]]));
+}
+
+function isBallTooNear({ eyePx }: Projection, heightPx: number, radiusPx: number): boolean {
+  return eyePx - heightPx - radiusPx < leastNearness * eyePx;
 }
 
 function cylinderHeight(
@@ -113,8 +131,12 @@ function cylinderHeight(
   ray: Sight,
   i: number,
 ): number | null {
-  const end = (points: Float32Array): Vec3 =>
-    alongSight(p, ray, [points[3 * i]!, points[3 * i + 1]!, points[3 * i + 2]!]);
+  const at = (points: Float32Array): Vec3 => [points[3 * i]!, points[3 * i + 1]!, points[3 * i + 2]!];
+  if (ray.turn) {
+    const nearest = Math.max(viewPoint(p, at(starts))[2], viewPoint(p, at(ends))[2]);
+    if (isBallTooNear(p, nearest, radii[i]! * p.scale)) return null;
+  }
+  const end = (points: Float32Array): Vec3 => alongSight(p, ray, at(points));
   return cylinderSurface(end(starts), end(ends), radii[i]! * p.scale, ray.offset[0], ray.offset[1]);
 }
 
@@ -123,6 +145,8 @@ function polarHeight(polars: PolarBatch, p: Projection, ray: Sight, i: number): 
   const centre: Vec3 = [centres[3 * i]!, centres[3 * i + 1]!, centres[3 * i + 2]!];
   const [x, y, z] = alongSight(p, ray, centre);
   const t = tensors.subarray(6 * i, 6 * i + 6);
+  const norm = Math.hypot(t[0]!, t[1]!, t[2]!, Math.SQRT2 * Math.hypot(t[3]!, t[4]!, t[5]!));
+  if (ray.turn && isBallTooNear(p, viewPoint(p, centre)[2], norm * p.scale)) return null;
   const tensor: Mat3 = [t[0]!, t[3]!, t[4]!, t[3]!, t[1]!, t[5]!, t[4]!, t[5]!, t[2]!];
   const turn = ray.turn ? multiply(ray.turn, p.rotation) : p.rotation;
   const height = polarSurface(tensor, turn, (ray.offset[0] - x) / p.scale, (ray.offset[1] - y) / p.scale);
