@@ -13,10 +13,11 @@ import type { PicturePoint } from './picture-controls.ts';
 import type { PictureCommand } from './picture-keys.ts';
 import { commandOfKey } from './picture-keys.ts';
 import { PictureMarker } from './picture-marker.ts';
-import { atomIds, drawnPositions, isSameAtom, selectionOf } from './picture-marks.ts';
+import { atomIds, drawnPositions, isSameAtom, middleOf, selectionOf } from './picture-marks.ts';
 import {
   annotations,
   axesDrawing,
+  faultWords,
   labelsDrawing,
   marksDrawing,
   overPicture,
@@ -146,7 +147,7 @@ export class CrystalView extends StoreElement {
     try {
       this.#draw(this.#picture, state, before);
     } catch (error) {
-      this.fault = `The picture could not be drawn: ${wordsOf(error)}. ${completeWithout}`;
+      this.fault = `The picture could not be drawn: ${faultWords(error)}. ${completeWithout}`;
     }
   }
 
@@ -169,7 +170,7 @@ export class CrystalView extends StoreElement {
       if (this.store) this.stateChanged(this.store.state, null);
       this.requestUpdate();
     } catch (error) {
-      this.fault = `The picture could not be started: ${wordsOf(error)}. ${completeWithout}`;
+      this.fault = `The picture could not be started: ${faultWords(error)}. ${completeWithout}`;
     }
   }
 
@@ -211,10 +212,7 @@ export class CrystalView extends StoreElement {
     if (store && scene) {
       const picked = this.#marker.marks.map(({ atomId }) => atomId);
       this.#picture?.select([...new Set([...atomIds(scene, store.state.selection), ...picked])]);
-      const points = this.pivots ? this.#selected() : [];
-      const sum = points.reduce(([x, y, z], p) => [x + p[0], y + p[1], z + p[2]], [0, 0, 0]);
-      const n = points.length;
-      this.#picture?.setPivot(n > 0 ? [sum[0]! / n, sum[1]! / n, sum[2]! / n] : null);
+      this.#picture?.setPivot(this.pivots ? middleOf(this.#selected()) : null);
     }
     this.requestUpdate();
   }
@@ -257,6 +255,7 @@ export class CrystalView extends StoreElement {
       theme: this.theme,
       setOpen: (open) => (this.open = open),
       setPivots: (pivots) => this.#setPivots(pivots),
+      openFigure: () => void this.#openFigure(),
       run: (command) => this.#run(command),
       close: () => this.#closePanel(),
     };
@@ -323,6 +322,12 @@ export class CrystalView extends StoreElement {
     return true;
   }
 
+  async #openFigure(): Promise<void> {
+    if (!this.store || !this.#picture) return;
+    const { openFigure } = await import('./open-figure.ts');
+    await openFigure(this.renderRoot, this.store, this.#picture, this.theme);
+  }
+
   #focusDirection(): void {
     const panel = this.renderRoot.querySelector<ViewPanel>('ellipsite-view-panel');
     void panel?.updateComplete.then(() => panel.focusDirection());
@@ -342,10 +347,6 @@ export class CrystalView extends StoreElement {
 
 function draws(probe: WebGLProbe): boolean {
   return probe.available || probe.canPaint;
-}
-
-function wordsOf(error: unknown): string {
-  return error instanceof Error ? error.message : String(error);
 }
 
 customElements.define('ellipsite-crystal-view', CrystalView);

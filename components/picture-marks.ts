@@ -52,3 +52,11 @@ export function atomIds({ picks, drawnInstead }: Scene, selection: Selection | n
   const ids = picks.flatMap((pick) => (pick.kind === 'atom' && pick.siteIndex === wanted ? pick.atomId : []));
   return [...new Set(ids)];
 }
+
+/** Middle of some points; null of none. */
+export function middleOf(points: readonly Vec3[]): Vec3 | null {
+  const n = points.length;
+  if (n === 0) return null;
+  const [x, y, z] = points.reduce<Vec3>((sum, p) => [sum[0] + p[0], sum[1] + p[1], sum[2] + p[2]], [0, 0, 0]);
+  return [x / n, y / n, z / n];
+}

@@ -162,3 +162,7 @@ export function sampleLine(decisions: WorkbenchState['decisions']): TemplateResu
   const sample = decisions && sampleOf(decisions.title, names);
   return sample ? html`<p class="caption sample">Sample case. ${sample.sentence}</p>` : nothing;
 }
+
+export function faultWords(error: unknown): string {
+  return error instanceof Error ? error.message : String(error);
+}

@@ -27,6 +27,7 @@ export interface ToolsHost {
   readonly theme: 'light' | 'dark';
   readonly setOpen: (open: PicturePanel | null) => void;
   readonly setPivots: (pivots: boolean) => void;
+  readonly openFigure: () => void;
   readonly run: (command: PictureCommand) => boolean;
   /** Closes the panel and gives the focus back. */
   readonly close: () => void;
@@ -63,7 +64,9 @@ export function pictureTools(host: ToolsHost): TemplateResult {
         <button aria-label="Larger" @click=${() => run({ do: 'zoom', factor: 1.25 })}>+</button>
       </span>
       <span class="group">
-        ${panel('view')}${panel('measure')}${panel('show')} ${panel('help', 'Keys and gestures')}
+        ${panel('view')}${panel('measure')}${panel('show')}
+        <button title="a picture to take away" @click=${() => host.openFigure()}>Picture</button>
+        ${panel('help', 'Keys and gestures')}
       </span>
     </div>
     ${host.open ? openPanel(host, host.open) : nothing}`;
