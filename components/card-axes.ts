@@ -1,6 +1,6 @@
 import { html } from 'lit';
 import type { TemplateResult } from 'lit';
-import { anglesToCell, atomAxes } from '#src/store/axes.ts';
+import { anglesToCell, atomAxes, axisInCrystal } from '#src/store/axes.ts';
 import type { TensorQuantity } from '#src/store/axes.ts';
 import type { EquivalentAtom, Lattice, SiteDossier } from '#src/store/dossier-types.ts';
 import { axisNames } from './axis-names.ts';
@@ -22,7 +22,8 @@ export function axesTable(
     <table class="axes">
       <caption>
         Principal axes of ${atom ? html`the atom ${formatOperation(atom.operation)}` : html`${site.label}`},
-        without sense; Cartesian in the frame ${frame}${lattice ? ', angles in degrees to the cell axes' : ''}
+        without sense; Cartesian in the frame
+        ${frame}${lattice ? ', angles to the cell axes, and the nearest direction [uvw] with indices up to 3' : ''}
       </caption>
       <thead>
         <tr>
@@ -30,22 +31,35 @@ export function axesTable(
           <th scope="col" class="number">x</th>
           <th scope="col" class="number">y</th>
           <th scope="col" class="number">z</th>
-          ${lattice ? ['a', 'b', 'c'].map((letter) => html`<th scope="col" class="number">to ${letter}/°</th>`) : ''}
+          ${
+            lattice
+              ? html`${['a', 'b', 'c'].map((letter) => html`<th scope="col" class="number">to <i>${letter}</i>/°</th>`)}
+                  <th scope="col" class="number">near [<i>uvw</i>]</th>
+                  <th scope="col" class="number">off by/°</th>`
+              : ''
+          }
         </tr>
       </thead>
       <tbody>
         ${axes.map((axis, i) => {
           const angles = anglesToCell(axis, lattice);
+          const nearest = axisInCrystal(axis, lattice);
           return html`<tr>
             <th scope="row">${names[i]}</th>
             ${
               axis
                 ? axis.map((value) => html`<td class="number">${formatNumber(value, 4)}</td>`)
-                : html`<td class="undefined" colspan=${lattice ? 6 : 3}>
+                : html`<td class="undefined" colspan=${lattice ? 8 : 3}>
                     undefined: its principal value is degenerate
                   </td>`
             }
             ${angles?.map((angle) => html`<td class="number">${formatNumber(angle, 1)}</td>`)}
+            ${
+              nearest
+                ? html`<td class="number">${nearest.label}</td>
+                    <td class="number">${formatNumber(nearest.degrees, 1)}</td>`
+                : ''
+            }
           </tr>`;
         })}
       </tbody>

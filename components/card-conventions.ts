@@ -73,7 +73,13 @@ function row(leading: ConventionEntry, columns: readonly ValueColumn[]): Templat
       const entry = entries[i];
       return html`<td class="number">${entry ? cell(entry) : nothing}</td>`;
     })}
-    <td class="definition" title=${leading.definition}>${firstClause(leading.definition)}</td>
+    <td class="definition">
+      <details>
+        <summary>${firstClause(leading.definition)}</summary>
+        ${symbols.map((entry) => html`<p>${entry.definition}.</p>`)}
+        <p>${leading.convention}: ${leading.reference}</p>
+      </details>
+    </td>
   </tr>`;
 }
 
@@ -82,7 +88,7 @@ function plainName({ name }: ConventionEntry): string {
   return name.replace(/ on the \w+ scale$/, '').replace(/ principal component( by magnitude)?$/, '');
 }
 
-/** What comes before the first semicolon; the rest is in the tooltip. */
+/** What comes before the first semicolon; the rest is below it on demand. */
 function firstClause(definition: string): string {
   return definition.split(';')[0] ?? definition;
 }

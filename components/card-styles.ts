@@ -97,6 +97,18 @@ export const cardStyles = css`
     padding-left: 18px;
     min-width: 17ch;
   }
+  summary {
+    cursor: pointer;
+    min-height: 24px;
+  }
+  summary::marker {
+    color: var(--line);
+  }
+  details p {
+    padding: 0 0 3px 14px;
+    max-width: 52ch;
+    color: var(--ink);
+  }
   caption {
     text-align: left;
     color: var(--soft);

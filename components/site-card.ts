@@ -12,6 +12,7 @@ import {
   formatNumber,
   formatOperation,
   formatPosition,
+  formatTriple,
   isotopeSymbol,
   symmetrySymbol,
 } from '#src/table/number-format.ts';
@@ -140,6 +141,7 @@ function facts(site: KnownSite, atom: EquivalentAtom | null): TemplateResult {
   const isMixed = species.length > 1;
   const rows: readonly (readonly [string, string | null])[] = [
     [atom ? `position of ${formatOperation(atom.operation)}` : 'position', positionOf(atom ?? site)],
+    ['Cartesian', site.fractional ? `${formatPosition((atom ?? site).cartesian, 4)} Å` : null],
     ['symmetry forces', site.forced],
     [
       'occupancy',
@@ -154,7 +156,11 @@ function facts(site: KnownSite, atom: EquivalentAtom | null): TemplateResult {
       'displacement',
       displacement?.uEquivalent === null || displacement?.uEquivalent === undefined
         ? null
-        : `U = ${formatNumber(displacement.uEquivalent, 4)} Å²`,
+        : `U = ${formatNumber(displacement.uEquivalent, 4)} Å²${displacement.uAniso ? ' equivalent' : ''}, given as ${displacement.given === 'beta' ? 'β' : displacement.given}`,
+    ],
+    [
+      'U11, U22, U33, U12, U13, U23',
+      displacement?.uAniso ? `${formatTriple(displacement.uAniso, 4)} Å²` : null,
     ],
     ['hydrogens without sites', site.attachedHydrogens > 0 ? String(site.attachedHydrogens) : null],
   ];

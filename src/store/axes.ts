@@ -2,7 +2,9 @@ import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { apply, rowsOf } from '#src/base/matrix3.ts';
 import { dot, length } from '#src/base/vector3.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
+import { nearestDirection } from '#src/crystal/nearest-direction.ts';
 import type { Axis, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
+import { directionLabel } from '#src/tensor/forced.ts';
 import { rotateTensor } from '#src/tensor/projection.ts';
 
 /** A quantity that has principal axes. */
@@ -19,6 +21,15 @@ export function anglesToCell(axis: Axis, lattice: Lattice | null): Vec3 | null {
   if (!axis || !lattice) return null;
   const [a, b, c] = rowsOf(lattice.rows);
   return [foldedAngleDegrees(axis, a), foldedAngleDegrees(axis, b), foldedAngleDegrees(axis, c)];
+}
+
+/** The lattice direction nearest to an axis, as `[1 0 −1]`, and the angle to it; null for an undefined axis or without a cell. */
+export function axisInCrystal(
+  axis: Axis,
+  lattice: Lattice | null,
+): { readonly label: string; readonly degrees: number } | null {
+  const nearest = axis && lattice && nearestDirection(axis, lattice);
+  return nearest && { label: directionLabel(nearest.uvw), degrees: nearest.degrees };
 }
 
 /**

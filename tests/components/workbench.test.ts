@@ -157,6 +157,9 @@ describe('the page', () => {
       '53.1',
       '36.9',
       '90.0',
+      // [230] of a square lies atan 3/2 = 56.31° from a, so 3.18° off
+      '[230]',
+      '3.2',
     ]);
   });
 
