@@ -43,8 +43,9 @@ function makeIndex(scene: PickableScene): PickIndex {
   const high: [number, number, number] = [-Infinity, -Infinity, -Infinity];
   for (let at = 0; at < boxes.length; at++) {
     const k = at % 3;
-    if (at % 6 < 3) low[k] = Math.min(low[k]!, boxes[at]!);
-    else high[k] = Math.max(high[k]!, boxes[at]!);
+    if (at % 6 < 3) {
+      if (boxes[at]! < low[k]!) low[k] = boxes[at]!;
+    } else if (boxes[at]! > high[k]!) high[k] = boxes[at]!;
   }
   if (total === 0) {
     low.fill(0);
@@ -56,20 +57,25 @@ function makeIndex(scene: PickableScene): PickIndex {
   const edge = Math.max(wanted, Math.max(...sides) / mostCells);
   const counts = sides.map((side) => Math.max(1, Math.ceil(side / edge))) as [number, number, number];
   const starts = new Int32Array(counts[0] * counts[1] * counts[2] + 1);
-  const eachCell = (thing: number, visit: (cell: number) => void): void => {
-    const from = [0, 1, 2].map((k) => cellAt(boxes[6 * thing + k]!, low[k]!, edge, counts[k]!));
-    const to = [0, 1, 2].map((k) => cellAt(boxes[6 * thing + 3 + k]!, low[k]!, edge, counts[k]!));
-    for (let z = from[2]!; z <= to[2]!; z++) {
-      for (let y = from[1]!; y <= to[1]!; y++) {
-        for (let x = from[0]!; x <= to[0]!; x++) visit((z * counts[1] + y) * counts[0] + x);
+  const ranges = new Int32Array(boxes.length);
+  for (let at = 0; at < boxes.length; at++) {
+    ranges[at] = cellAt(boxes[at]!, low[at % 3]!, edge, counts[at % 3]!);
+  }
+  const eachCell = (visit: (cell: number, thing: number) => void): void => {
+    for (let r = 0; r < ranges.length; r += 6) {
+      for (let z = ranges[r + 2]!; z <= ranges[r + 5]!; z++) {
+        for (let y = ranges[r + 1]!; y <= ranges[r + 4]!; y++) {
+          const row = (z * counts[1] + y) * counts[0];
+          for (let x = ranges[r]!; x <= ranges[r + 3]!; x++) visit(row + x, r / 6);
+        }
       }
     }
   };
-  for (let thing = 0; thing < total; thing++) eachCell(thing, (cell) => (starts[cell + 1]! += 1));
+  eachCell((cell) => (starts[cell + 1]! += 1));
   for (let cell = 1; cell < starts.length; cell++) starts[cell]! += starts[cell - 1]!;
   const things = new Int32Array(starts[starts.length - 1]!);
   const next = starts.slice();
-  for (let thing = 0; thing < total; thing++) eachCell(thing, (cell) => (things[next[cell]!++] = thing));
+  eachCell((cell, thing) => (things[next[cell]!++] = thing));
   return { low, edge, counts, starts, things, met: new Int32Array(total), walks: 0 };
 }
 
@@ -86,11 +92,11 @@ function boxesOf({ quadrics, cylinders, polars }: PickableScene): Float64Array {
     boxes[6 * thing + k] = low - slack;
     boxes[6 * thing + 3 + k] = high + slack;
   };
+  const { shapes, centres } = quadrics;
   for (let i = 0; i < quadrics.count; i++, thing++) {
     for (let k = 0; k < 3; k++) {
       const a = 9 * i + 3 * k;
-      const { shapes, centres } = quadrics;
-      const half = Math.hypot(shapes[a]!, shapes[a + 1]!, shapes[a + 2]!);
+      const half = Math.sqrt(shapes[a]! ** 2 + shapes[a + 1]! ** 2 + shapes[a + 2]! ** 2);
       put(k, centres[3 * i + k]! - half, centres[3 * i + k]! + half);
     }
   }

@@ -219,9 +219,11 @@ function markedColour(
   const one = f32x4.splat(1);
   const share = f32x4.splat(isDark ? 0.55 : 0.88);
   const left = f32x4.mul(f32x4.sub(one, f32x4.mul(line, share)), f32x4.sub(one, f32x4.mul(mark, share)));
-  if (isDark && v128.any_true(v128.or(line, mark)))
-    return inkedColour(tint, light, ink, f32x4.sub(one, left), z);
-  return colourOf(tint, light, isDark ? ink : f32x4.mul(ink, left), z);
+  if (!isDark) return colourOf(tint, light, f32x4.mul(ink, left), z);
+  const plain = colourOf(tint, light, ink, z);
+  const isInked = f32x4.lt(left, one);
+  if (!v128.any_true(isInked)) return plain;
+  return v128.bitselect(inkedColour(tint, light, ink, f32x4.sub(one, left), z), plain, isInked);
 }
 
 /** Coordinate k on the own unit sphere, up to a factor. */
