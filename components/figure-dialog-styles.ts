@@ -47,7 +47,6 @@ export const figureDialogStyles = css`
     max-width: 100%;
     max-height: 66vh;
     border: 1px solid var(--hairline);
-    image-rendering: auto;
   }
   canvas.clear {
     background: repeating-conic-gradient(#bdb8ad 0% 25%, #d9d5cb 0% 50%) 0 0 / 16px 16px;
@@ -78,13 +77,16 @@ export const figureDialogStyles = css`
     max-width: 100%;
   }
   .row input[type='text'] {
-    width: 66px;
+    width: 62px;
     text-align: right;
   }
   .checks {
     display: grid;
     grid-template-columns: 1fr 1fr;
     gap: 0 8px;
+  }
+  .checks .wide {
+    grid-column: 1 / -1;
   }
   label.check {
     display: flex;

@@ -102,11 +102,14 @@ export class FigureDialog extends LitElement {
       </div>
       <div class="columns">
         <div class="preview">
-          <canvas role="img" aria-label="Preview of the picture" class=${clear}></canvas>
+          <canvas role="img" aria-label="Preview of the picture" class=${clear} ?hidden=${!drawn}></canvas>
           <p class="soft" id="size">${drawn ? this.#sizeInWords(drawn) : 'Drawing the preview …'}</p>
         </div>
         <div>
-          ${figureForm(choices, (change) => this.#change(change), this.camera !== null)}
+          ${figureForm(choices, (change) => this.#change(change), {
+            framing: this.camera !== null,
+            viewDirection: this.viewWords !== null,
+          })}
           <div class="end">${this.#buttons()}</div>
           <p class="said" role="status">${this.said}</p>
           <p class="said fault" role="alert">${this.fault ?? ''}</p>
@@ -178,7 +181,6 @@ export class FigureDialog extends LitElement {
     if (!canvas) return;
     canvas.width = widthPx;
     canvas.height = heightPx;
-    canvas.style.width = `${widthPx / Math.min(2, devicePixelRatio)}px`;
     canvas.getContext('2d')?.putImageData(new ImageData(pixels, widthPx, heightPx), 0, 0);
   }
 

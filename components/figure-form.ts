@@ -19,26 +19,42 @@ const contents: readonly (readonly [keyof FigureContents, string])[] = [
   ['axes', 'cell axes'],
   ['legend', 'colour bar'],
   ['scale', 'scale'],
-  ['elementKey', 'colours of elements'],
+  ['elementKey', 'element colours'],
   ['viewDirection', 'direction of view'],
   ['caption', 'caption'],
 ];
 
+/** Choices that stand only where there is something to choose. */
+export interface FigureOffers {
+  readonly framing: boolean;
+  readonly viewDirection: boolean;
+}
+
 /** The choices of the picture dialog as a form. */
-export function figureForm(choices: FigureChoices, change: ChangeChoices, canFrame: boolean): TemplateResult {
+export function figureForm(
+  choices: FigureChoices,
+  change: ChangeChoices,
+  offers: FigureOffers,
+): TemplateResult {
   return html`${sizeFields(choices, change)} ${groundFields(choices, change)}
     <fieldset>
       <legend>Inside</legend>
       <div class="checks">
-        ${contents.map(([key, words]) =>
-          check(words, choices.contents[key], (value) =>
-            change({ contents: { ...choices.contents, [key]: value } }),
-          ),
-        )}
-        ${check('the case, so that it opens again', choices.withCase, (withCase) => change({ withCase }))}
+        ${contents
+          .filter(([key]) => key !== 'viewDirection' || offers.viewDirection)
+          .map(([key, words]) =>
+            check(words, choices.contents[key], (value) =>
+              change({ contents: { ...choices.contents, [key]: value } }),
+            ),
+          )}
+        <div class="wide">
+          ${check('the case, so that the picture opens again', choices.withCase, (withCase) =>
+            change({ withCase }),
+          )}
+        </div>
       </div>
     </fieldset>
-    ${canFrame ? framingFields(choices, change) : nothing}`;
+    ${offers.framing ? framingFields(choices, change) : nothing}`;
 }
 
 function sizeFields(choices: FigureChoices, change: ChangeChoices): TemplateResult {
@@ -51,6 +67,7 @@ function sizeFields(choices: FigureChoices, change: ChangeChoices): TemplateResu
     <div class="row">
       <select
         id="preset"
+        autofocus
         aria-label="Size"
         .value=${live(String(chosen))}
         @change=${(event: Event) => {
@@ -81,7 +98,7 @@ function sizeFields(choices: FigureChoices, change: ChangeChoices): TemplateResu
     <div class="row">
       ${
         unit === 'mm'
-          ? html`<label for="dpi">dots per inch</label> ${numberInput(
+          ? html`<label for="dpi">dpi</label> ${numberInput(
                 'dpi',
                 dpi,
                 { low: sizeLimits.lowestDpi, high: sizeLimits.highestDpi },
@@ -89,7 +106,7 @@ function sizeFields(choices: FigureChoices, change: ChangeChoices): TemplateResu
               )}`
           : nothing
       }
-      <label for="letters">letters, pt</label> ${numberInput(
+      <label for="letters">letters/pt</label> ${numberInput(
         'letters',
         textPt,
         { low: sizeLimits.smallestTextPt, high: sizeLimits.largestTextPt },
