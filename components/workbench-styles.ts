@@ -14,6 +14,17 @@ export const workbenchStyles = css`
     grid-template-columns: minmax(0, 1fr) clamp(440px, 49%, 980px);
     min-height: 0;
   }
+  main.cleared > :not(.start) {
+    visibility: hidden;
+  }
+  .start {
+    position: absolute;
+    inset: 30% 20px auto;
+    margin: 0 auto;
+    max-width: 44ch;
+    text-align: center;
+    color: var(--soft);
+  }
   ellipsite-crystal-view {
     min-width: 0;
     min-height: 0;

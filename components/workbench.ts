@@ -35,6 +35,7 @@ export class Workbench extends StoreElement {
     'derived',
     'refused',
     'sitesRead',
+    'decisions',
   ] as const;
   #unwatchTheme: (() => void) | null = null;
   #spoken = '';
@@ -90,6 +91,7 @@ export class Workbench extends StoreElement {
     if (!store) return html``;
     const theme = effectiveTheme(store.state.theme);
     this.setAttribute('theme', theme);
+    const isCleared = store.state.decisions === null && store.state.past.length > 0;
     return html`
       <ellipsite-page-header
         .store=${store}
@@ -99,7 +101,8 @@ export class Workbench extends StoreElement {
       ></ellipsite-page-header>
       <ellipsite-progress-bar .store=${store}></ellipsite-progress-bar>
       <div class="body ${panel ? 'with-drawer' : ''}" @ask-panel=${this.#askPanel}>
-        <main>
+        <main class=${isCleared ? 'cleared' : ''}>
+          ${isCleared ? html`<p class="start">${emptyWords}</p>` : nothing}
           <ellipsite-crystal-view
             .store=${store}
             .theme=${theme}
@@ -162,6 +165,10 @@ export class Workbench extends StoreElement {
     else if (this.panel) this.#close();
   };
 }
+
+/** All there is on a page that was cleared. */
+const emptyWords =
+  'Nothing is open. Open or drop a structure or a case file; Case holds the samples, Undo brings the last case back.';
 
 /** The focused element, through shadow roots. */
 function deepestFocus(): HTMLElement | null {

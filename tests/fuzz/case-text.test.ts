@@ -4,7 +4,7 @@ import { jsonFault } from '#src/case/json-text.ts';
 import { newCase } from '#src/case/new-case.ts';
 import { parseCase } from '#src/case/parse-case.ts';
 import { serialiseCase } from '#src/case/serialise-case.ts';
-import { changedText, everyDecision } from '#tests/support/arbitrary-case.ts';
+import { changedText, everyDecision } from '#tests/support/every-decision.ts';
 
 const text = serialiseCase(await newCase(everyDecision));
 

@@ -5,7 +5,7 @@ import { mostCaseCharacters, parseCase } from '#src/case/parse-case.ts';
 import { serialiseCase } from '#src/case/serialise-case.ts';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
 import { defaultSceneOptions } from '#src/scene/scene-options.ts';
-import { changedText, everyDecision } from '#tests/support/arbitrary-case.ts';
+import { changedText, everyDecision } from '#tests/support/every-decision.ts';
 
 const text = serialiseCase(await newCase(everyDecision));
 

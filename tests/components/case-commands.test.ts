@@ -1,0 +1,121 @@
+import { beforeEach, describe, expect, it } from 'vitest';
+import { newCase } from '#src/case/new-case.ts';
+import { serialiseCase } from '#src/case/serialise-case.ts';
+import { addFiles, openFiles } from '#components/open-files.ts';
+import { everyDecision } from '#tests/support/every-decision.ts';
+import type { Mounted } from './mount.ts';
+import { mountWorkbench, press, settle, textOf } from './mount.ts';
+
+let page: Mounted;
+
+const header = (): ShadowRoot => page.part('ellipsite-page-header').shadowRoot;
+const button = (name: RegExp): HTMLButtonElement =>
+  [...header().querySelectorAll('button')].find((one) => name.test(textOf(one)))!;
+const ctrl = (key: string, target: Element = page.workbench, shiftKey = false): void =>
+  press(target, key, { ctrlKey: true, shiftKey });
+
+beforeEach(async () => {
+  page = await mountWorkbench();
+});
+
+describe('undo and redo', () => {
+  it('are named by their step in the header', async () => {
+    expect(button(/^Undo/).disabled).toBe(true);
+    page.store.setPicture({ colourBy: 'span' }, 'colour by span');
+    await settle();
+    expect(button(/^Undo/).getAttribute('aria-label')).toBe('Undo colour by span');
+    button(/^Undo/).click();
+    await settle();
+    expect(page.store.state.picture.colourBy).toBe('isotropic');
+    expect(button(/^Undo/).disabled).toBe(true);
+    expect(textOf(button(/^Redo/))).toBe('Redo colour by span');
+  });
+
+  it('answer to their keys everywhere but where text is typed', async () => {
+    page.store.setLook({ outlines: true }, 'show outlines');
+    const { look } = page.store.state;
+    const text = document.createElement('input');
+    const area = document.createElement('textarea');
+    const tick = Object.assign(document.createElement('input'), { type: 'checkbox' });
+    page.workbench.renderRoot.append(text, area, tick);
+    ctrl('z', text);
+    ctrl('z', area);
+    expect(page.store.state.look).toBe(look);
+    ctrl('z', tick);
+    await settle();
+    expect(page.store.state.look.outlines).toBe(false);
+    ctrl('y');
+    await settle();
+    expect(page.store.state.look.outlines).toBe(true);
+    press(page.workbench, 'z', { metaKey: true });
+    await settle();
+    expect(page.store.state.look.outlines).toBe(false);
+    ctrl('Z', page.workbench, true);
+    await settle();
+    expect(page.store.state.look.outlines).toBe(true);
+  });
+});
+
+describe('case files', () => {
+  const blobOf = (text: string) => new Blob([text]);
+
+  it('are opened by content, whatever their name, with every decision', async () => {
+    const text = serialiseCase(await newCase(everyDecision));
+    expect(await openFiles(page.store, [{ name: 'x.cif', blob: blobOf(text) }])).toBe(true);
+    const { decisions } = page.store.state;
+    expect(decisions?.title).toBe('every decision');
+    expect(decisions?.sources.map(({ name }) => name)).toEqual(['a.cif', 'b.xyz']);
+    expect(decisions?.settings).toEqual(everyDecision.decisions?.settings);
+    expect(decisions?.structure).toEqual({ sourceId: decisions?.sources[1]?.id, index: 2 });
+    expect(await page.store.caseText()).toBe(text);
+  });
+
+  it('packed by gzip are opened too', async () => {
+    const text = serialiseCase(await newCase(everyDecision));
+    const packed = blobOf(text).stream().pipeThrough(new CompressionStream('gzip'));
+    const blob = await new Response(packed).blob();
+    expect(await openFiles(page.store, [{ name: 'case.gz', blob }])).toBe(true);
+    expect(page.store.state.decisions?.title).toBe('every decision');
+  });
+
+  it('take further files beside them, but no second case', async () => {
+    const text = serialiseCase(await newCase(everyDecision));
+    const one = { name: 'one', blob: blobOf(text) };
+    const tensors = { name: 't.xyz', blob: blobOf('1\n\nH 0 0 0\n') };
+    expect(await openFiles(page.store, [tensors, one])).toBe(true);
+    expect(page.store.state.decisions?.sources.map(({ name }) => name)).toEqual(['a.cif', 'b.xyz', 't.xyz']);
+    expect(await openFiles(page.store, [one, { ...one, name: 'two' }])).toBe(false);
+    expect(page.store.state.refused?.problems[0]).toMatchObject({ code: 'case-not-alone', got: 'one, two' });
+    expect(await addFiles(page.store, [one])).toBe(false);
+    expect(page.store.state.decisions?.sources).toHaveLength(3);
+  });
+
+  it('that are newer are refused, and what is on screen stays', async () => {
+    const before = page.store.state.decisions;
+    const text = serialiseCase(await newCase(everyDecision)).replace('"version": 1', '"version": 2');
+    expect(await openFiles(page.store, [{ name: 'new.json', blob: blobOf(text) }])).toBe(false);
+    expect(page.store.state.refused?.problems[0]?.code).toBe('case-newer');
+    expect(page.store.state.decisions).toBe(before);
+  });
+});
+
+describe('the page when cleared', () => {
+  it('says what can be done, and has nothing to save', async () => {
+    await page.store.clear();
+    await settle();
+    expect(textOf(page.workbench.renderRoot.querySelector('.start'))).toContain('Nothing is open');
+    expect(button(/^Save/).disabled).toBe(true);
+    button(/^Undo/).click();
+    await settle();
+    expect(page.workbench.renderRoot.querySelector('.start')).toBeNull();
+    expect(page.store.state.derived?.crystal?.name).toBe('invented aluminate');
+  });
+
+  it('tells whether the work is kept, and why not', async () => {
+    page.store.setKeeping({ status: 'failed', reason: 'The storage is full.' });
+    await settle();
+    const kept = header().querySelector('.kept');
+    expect(textOf(kept)).toBe('not saved in this browser');
+    expect(kept?.getAttribute('title')).toBe('The storage is full.');
+  });
+});
