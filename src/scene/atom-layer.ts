@@ -72,7 +72,7 @@ export function atomQuadrics(
   beads.forEach((bead, k) => {
     const i = atoms.length + k;
     centres.set(bead.centre, 3 * i);
-    shapes.set(scaleMatrix(bead.radiusAngstrom, identity3), 9 * i);
+    shapes.set(bead.shape, 9 * i);
     colours.set(bead.colour, 3 * i);
     pickIds[i] = bead.pickId;
   });

@@ -115,7 +115,7 @@ function glyphWords({ scale, glyph }: TensorCaption, of: string): string {
   const isDeviation = scale.kind === 'deviation' && scale.quantity !== 'efg';
   const statement = scaleStatement(scale);
   if (scale.part === 'antisymmetric') {
-    return `tensors${of}, antisymmetric part: rods along the axial vector, half as long as its size to either side, ${statement}; beads grow in the sense in which it turns the field`;
+    return `tensors${of}, antisymmetric part: rods along the axial vector, half as long as its size to either side, ${statement}; the ring grows thicker in the sense in which it turns the field`;
   }
   if (glyph === 'polar') {
     const from = isDeviation
@@ -138,7 +138,7 @@ function glyphWords({ scale, glyph }: TensorCaption, of: string): string {
 
 function colourWords({ colourBy, legend, glyph, scale }: TensorCaption): string {
   const isLobes = glyph === 'polar' && scale.part !== 'antisymmetric';
-  if (colourBy === 'sign') return 'positive lobes brown, negative lobes blue and striped';
+  if (colourBy === 'sign') return 'positive lobes orange, negative lobes blue and striped';
   if (legend && isLobes && legend.map === 'vik')
     return `colour = size of ${legend.title}, with the sign of the lobe; negative lobes are striped too`;
   const colour = legend ? `colour = ${legend.title}` : `coloured by ${colourBy}`;

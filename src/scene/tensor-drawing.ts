@@ -1,5 +1,5 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
-import { apply, determinant, multiply, transpose } from '#src/base/matrix3.ts';
+import { apply, determinant, matrixFromColumns, multiply, transpose } from '#src/base/matrix3.ts';
 import { add, cross, length, normalize, scale, subtract } from '#src/base/vector3.ts';
 import { anyPerpendicular } from './camera.ts';
 import { legendColour } from './colour-scale.ts';
@@ -13,10 +13,11 @@ import type { PrincipalForm } from './tensor-shape.ts';
 
 type Rgb = readonly [number, number, number];
 
-/** A further sphere that belongs to a drawn atom. */
+/** A further ellipsoid that belongs to a drawn atom. */
 export interface Bead {
-  readonly centre: readonly [number, number, number];
-  readonly radiusAngstrom: number;
+  readonly centre: Vec3;
+  /** Columns = semi-axis vectors, Å. */
+  readonly shape: Mat3;
   readonly colour: Rgb;
   readonly pickId: number;
 }
@@ -95,8 +96,8 @@ function lobesOf(
   return { positive: colours.get(siteIndex)!, negative: darkLobe };
 }
 
-/** Å; rods of the first, second and third principal axis. */
-const rodRadii: Vec3 = [0.026, 0.038, 0.052];
+/** Å; rods of the first, second and third principal axis, the last one thicker than a bond that it may lie in. */
+const rodRadii: Vec3 = [0.034, 0.052, 0.075];
 /** How far their colours are moved: towards white, not at all, towards black. */
 const rodShades: Vec3 = [0.45, 0, -0.4];
 /** Å; dash and gap of rods of negative values. */
@@ -137,17 +138,18 @@ function shaded(colour: Rgb, share: number): Rgb {
   return colour.map((c) => Math.round(c + Math.abs(share) * (end - c))) as unknown as Rgb;
 }
 
-/** Å */
-const axialRodRadius = 0.045;
-const beadRingRadius = 0.27;
-/** Å; the first and the last bead. */
-const beadRadii = [0.022, 0.07] as const;
-const beadCount = 6;
+/** Å; thicker than a bond. */
+const axialRodRadius = 0.07;
+const beadRingRadius = 0.3;
+/** Å; across the first and the last bead, and half their length along the ring, by which they overlap. */
+const beadRadii = [0.018, 0.08] as const;
+const beadHalfLength = 0.12;
+const beadCount = 8;
 /** Radians from the first bead to the last. */
 const beadArc = (290 / 180) * Math.PI;
 
 /**
- * Axial vectors as rods of half the length |a| to either side, with a ring of beads that grow right-handed about a: the sense in
+ * Axial vectors as rods of half the length |a| to either side, with a ring of overlapping beads that grow thicker right-handed about a: the sense in
  * which the antisymmetric part turns the field. Copies are det(R)·R·a, as a rotation or a reflection takes a sense of turning along.
  */
 export function axialVectors(
@@ -174,8 +176,14 @@ export function axialVectors(
       const share = k / (beadCount - 1);
       const [x, y] = [Math.cos(share * beadArc), Math.sin(share * beadArc)];
       const out = add(scale(beadRingRadius * x, first), scale(beadRingRadius * y, second));
-      const radiusAngstrom = beadRadii[0] + share * (beadRadii[1] - beadRadii[0]);
-      beads.push({ centre: add(position, out), radiusAngstrom, colour, pickId: i + 1 });
+      const across = beadRadii[0] + share * (beadRadii[1] - beadRadii[0]);
+      const outward = normalize(out);
+      const shape = matrixFromColumns(
+        scale(beadHalfLength, cross(axis, outward)),
+        scale(across, outward),
+        scale(across, axis),
+      );
+      beads.push({ centre: add(position, out), shape, colour, pickId: i + 1 });
     }
   });
   return { rods, beads };
