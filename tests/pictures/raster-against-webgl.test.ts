@@ -11,6 +11,8 @@ import type { RenderTheme } from '#src/scene/theme.ts';
 import { darkTheme, lightTheme } from '#src/scene/theme.ts';
 import { madeQuartz } from '#tests/support/made-quartz.ts';
 import { madeUrea } from '#tests/support/made-urea.ts';
+import { fullScene } from '#tests/support/full-scene.ts';
+import { askew } from '#tests/support/raster-scene.ts';
 import { readBack, stage } from './picture-harness.ts';
 
 const kernels = [
@@ -126,6 +128,25 @@ describe.each(kernels)('the CPU renderer (%s) against WebGL', (_name, makeKernel
       expect(drawnShare(webgl, theme)).toBeGreaterThan(0.02);
       expect(drawnShare(raster, theme)).toBeGreaterThan(0.02);
       expect(share).toBeLessThan(0.005);
+    }
+  });
+});
+
+describe('every kind of object by the CPU renderer and by WebGL', () => {
+  const scene = fullScene(60, 7);
+  const flat = { ...askew, zoom: 1.2 * askew.zoom };
+  it.each([
+    ['without perspective', flat, lightTheme],
+    ['in perspective', { ...flat, perspectiveDegrees: 30 }, lightTheme],
+    ['in strong perspective, on dark paper', { ...flat, perspectiveDegrees: 80 }, darkTheme],
+    ['with the eye inside', { ...flat, perspectiveDegrees: 90, zoom: 2.5 * flat.zoom }, lightTheme],
+    ['outlined, without depth cue', flat, { ...lightTheme, outlineWidthPx: 2, depthCue: 0 }],
+  ] as const)('the same picture but for rims: %s', (_view, camera, theme) => {
+    for (const samplesAcross of [1, 2]) {
+      const { share, raster } = compare(bestKernel, scene, camera, theme, samplesAcross);
+      expect(drawnShare(raster, theme)).toBeGreaterThan(0.2);
+      // edges of stripes and dots are rims too
+      expect(share).toBeLessThan(0.01);
     }
   });
 });
