@@ -1,4 +1,5 @@
 import { findWork, keepWork } from './keep-work.ts';
+import { workLeftAside } from '#src/store/case-problems.ts';
 import { createEngineClient } from '#src/store/engine-client.ts';
 import { createStore } from '#src/store/store.ts';
 import { openSample, sampleCases } from './sample-cases.ts';
@@ -20,5 +21,6 @@ async function begin(): Promise<void> {
   const isBack = keeper?.found && isFree() ? await store.restore(keeper.found) : false;
   const [first] = sampleCases();
   if (first && !isBack && isFree()) await openSample(store, first);
+  if (keeper?.isLeftAside) store.refuse('bring back the last work', [], [workLeftAside()]);
   if (keeper) keepWork(keeper, store, isBack);
 }

@@ -11,6 +11,18 @@ export function oneCaseOnly(cases: readonly FileInput[]): Problem {
   });
 }
 
+/** Said where kept work ended the page each time it was brought back. */
+export function workLeftAside(): Problem {
+  return problem(
+    'warning',
+    'work-left-aside',
+    'The work kept in this browser could not be brought back, twice; it is left aside.',
+    {
+      hint: 'Open its files, or the case you saved. It stays in the browser until newer work needs its place.',
+    },
+  );
+}
+
 /** Said where the case could not be written into a file. */
 export function notSaved(error: unknown): Problem {
   const message = error instanceof Error ? error.message : String(error);

@@ -18,6 +18,8 @@ const mostAttempts = 2;
 export interface Keeper {
   /** The work of this tab before it was reloaded or killed; null where there is none. */
   readonly found: Work | null;
+  /** There is work, but it ended the page each time it was brought back: it is left where it is. */
+  readonly isLeftAside: boolean;
   /** Writes every change of the store from now on. Work that could not be brought back is left as it is. */
   watch(store: Store, isBack: boolean): Promise<void>;
   /** Writes now what isn't written yet: the page may be about to go. */
@@ -45,6 +47,7 @@ class TabKeeper implements Keeper {
   #timer: ReturnType<typeof setTimeout> | null = null;
   #lastStart = 0;
   found: Work | null = null;
+  isLeftAside = false;
 
   constructor(database: WorkDatabase, claim: Claim, hashOf: (blob: Blob) => Promise<string>) {
     this.#database = database;
@@ -59,6 +62,7 @@ class TabKeeper implements Keeper {
     const { work, files } = held;
     if (work.attempts >= mostAttempts) {
       this.#claim = await fresh(null, idle);
+      this.isLeftAside = true;
       return;
     }
     this.found = restoredWork(work, (key) => files.get(key));

@@ -12,9 +12,12 @@ import type { Decisions, Step, Views } from './state.ts';
 
 /** How a change of the picture or the table becomes a step. */
 export interface ViewStepOptions {
-  /** Goes on with the step before where that has the same name: a drag or a burst of keys is one step. */
+  /** Goes on with the step of the same name that last changed at most a second ago: a drag or a burst of keys is one step. */
   readonly coalesce?: boolean;
 }
+
+/** Milliseconds of rest after which a new drag or key begins a step of its own. */
+const burstMs = 1000;
 
 /** One step forth from any moment. */
 type Recipe = (moment: Moment) => Moment;
@@ -37,6 +40,8 @@ export class Timeline {
   #run = 0;
   /** The view step that may still grow. */
   #growing: Step | null = null;
+  /** When it changed last, milliseconds. */
+  #grownAt = 0;
 
   constructor(holder: StateHolder, engine: EngineClient, pictures: PictureMaker, sites: SiteCache) {
     this.#holder = holder;
@@ -70,7 +75,8 @@ export class Timeline {
   ): void {
     const { state } = this.#holder;
     const present = momentOf(state);
-    const grows = coalesce && this.#growing?.name === name && present.past.at(-1) === this.#growing;
+    const isBurst = coalesce && Date.now() - this.#grownAt <= burstMs;
+    const grows = isBurst && this.#growing?.name === name && present.past.at(-1) === this.#growing;
     const after: Recipe = (moment) => {
       const changed = withViews(moment, change(moment.views));
       return grows && moment.past.at(-1)?.name === name
@@ -84,6 +90,7 @@ export class Timeline {
         : after(this.#underway);
     const { views, past, future } = next;
     this.#growing = past.at(-1) ?? null;
+    this.#grownAt = Date.now();
     this.#holder.change({ ...views, past, future }, name);
     if (views.picture !== state.picture) void this.#pictures.redraw();
   }

@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { cameraTurnedBy } from '#tests/support/views.ts';
 import { momentOf } from '#src/store/moment.ts';
 import type { Moment } from '#src/store/moment.ts';
@@ -202,6 +202,22 @@ describe('a view step', () => {
     expect(store.state.camera).toEqual(cameraTurnedBy(3));
     await store.undo();
     expect(store.state.camera).toBeNull();
+  });
+
+  it('after a rest of more than a second is a step of its own', async () => {
+    vi.useFakeTimers({ toFake: ['Date'] });
+    const store = await opened();
+    for (const [angle, restMs] of [
+      [1, 0],
+      [2, 900],
+      [3, 900],
+      [4, 1100],
+    ] as const) {
+      vi.setSystemTime(Date.now() + restMs);
+      store.setCamera(cameraTurnedBy(angle), 'turn', { coalesce: true });
+    }
+    vi.useRealTimers();
+    expect(store.state.past.map(({ views }) => views.camera)).toEqual([null, cameraTurnedBy(3)]);
   });
 
   it('goes on beside another name as a step of its own', async () => {
