@@ -48,7 +48,7 @@ export function efgSection(
     <div class="matrices">
       ${matrixTable('V/a.u. as given', atomTensor(efg.tensor, atom), 4)}
       ${matrixTable('symmetric, traceless', atomTensor(efg.symmetric, atom), 4)}
-      ${matrixTable('symmetrised: mean over the site symmetry', atomTensor(efg.projected, atom), 4)}
+      ${matrixTable('symmetrised by the site', atomTensor(efg.projected, atom), 4)}
     </div>
     ${noiseList('efg', efg, site)}
   </section>`;

@@ -40,7 +40,7 @@ export function shieldingSection(
             <div class="matrices">
               ${matrixTable('σ/ppm as given', atomTensor(shielding.tensor, atom), 2)}
               ${matrixTable('symmetric part', atomTensor(shielding.symmetric, atom), 2)}
-              ${matrixTable('symmetrised: mean over the site symmetry', atomTensor(shielding.projected, atom), 2)}
+              ${matrixTable('symmetrised by the site', atomTensor(shielding.projected, atom), 2)}
             </div>
             ${noiseList('shielding', shielding, site)}`
         : nothing

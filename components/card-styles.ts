@@ -73,6 +73,10 @@ export const cardStyles = css`
   .axes td {
     padding: 2px 0 2px 14px;
   }
+  .conventions td,
+  .conventions tbody th {
+    vertical-align: baseline;
+  }
   .conventions tbody th,
   .axes tbody th {
     padding: 2px 4px 2px 0;
@@ -99,7 +103,7 @@ export const cardStyles = css`
   }
   summary {
     cursor: pointer;
-    min-height: 24px;
+    line-height: 24px;
   }
   summary::marker {
     color: var(--line);

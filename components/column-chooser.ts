@@ -82,10 +82,7 @@ export class ColumnChooser extends StoreElement {
         <ol aria-labelledby="shown">
           ${shown.map((column, place) => this.#line(column, place, shown))}
         </ol>
-        <button
-          ?disabled=${state.table.columns === null}
-          @click=${() => this.#set(null, 'the usual columns')}
-        >
+        <button ?disabled=${state.table.columns === null} @click=${() => this.#set(null, 'usual columns')}>
           As usual for this crystal
         </button>
       </section>
@@ -132,7 +129,7 @@ export class ColumnChooser extends StoreElement {
   #toggle(column: SiteColumn, shown: readonly SiteColumn[]): void {
     const isShown = shown.includes(column);
     const next = isShown ? shown.filter((one) => one !== column) : [...shown, column];
-    this.#set(next, isShown ? `column ${column.words} hidden` : `column ${column.words} shown`);
+    this.#set(next, `${isShown ? 'hide' : 'show'} column ${column.words}`);
   }
 
   async #move(column: SiteColumn, step: 1 | -1, shown: readonly SiteColumn[]): Promise<void> {
@@ -140,7 +137,7 @@ export class ColumnChooser extends StoreElement {
     const next = [...shown];
     next.splice(place, 1);
     next.splice(place + step, 0, column);
-    this.#set(next, `column ${column.words} moved`);
+    this.#set(next, `move column ${column.words}`);
     await this.updateComplete;
     // the focus goes along with the column, to the other button where the end is reached
     const buttons = this.renderRoot.querySelectorAll('ol li')[place + step]?.querySelectorAll('button');
@@ -148,8 +145,8 @@ export class ColumnChooser extends StoreElement {
     (wanted?.disabled ? buttons?.[step === -1 ? 1 : 0] : wanted)?.focus();
   }
 
-  #set(columns: readonly SiteColumn[] | null, reason: string): void {
-    this.store?.setTable({ columns: columns && columns.map(({ key }) => key) }, reason);
+  #set(columns: readonly SiteColumn[] | null, name: string): void {
+    this.store?.setTable({ columns: columns && columns.map(({ key }) => key) }, name);
   }
 }
 

@@ -1,3 +1,5 @@
+import type { TableOrder } from '#src/table/table-settings.ts';
+
 /** A line of the site table: a site, or one of its atoms below it. */
 export interface SiteRow {
   readonly siteIndex: number;
@@ -17,8 +19,7 @@ interface OpenedSite {
 
 /** All lines of the table, told by the order of the sites and the opened ones: nothing here grows with a row. */
 export interface RowList {
-  /** Site indices in the order of their rows. */
-  readonly order: Int32Array;
+  readonly order: TableOrder;
   /** Opened sites by their place. */
   readonly opened: readonly OpenedSite[];
   readonly rowCount: number;
@@ -28,25 +29,10 @@ export interface RowList {
 export const siteRowHeight = 32;
 export const atomRowHeight = 50;
 
-const placesOf = new WeakMap<Int32Array, Int32Array>();
-
-/** Places by site index, −1 for a site without a row; made once for each order. */
-function places(order: Int32Array): Int32Array {
-  const known = placesOf.get(order);
-  if (known) return known;
-  // plain loops: an order may have hundreds of thousands of rows, and the page waits
-  let size = 0;
-  for (const index of order) if (index >= size) size = index + 1;
-  const made = new Int32Array(size).fill(-1);
-  for (let place = 0; place < order.length; place++) made[order[place]!] = place;
-  placesOf.set(order, made);
-  return made;
-}
-
 /** Lines of the table with some sites opened, each by its index with the number of its atoms. */
-export function listRows(order: Int32Array, opened: ReadonlyMap<number, number>): RowList {
+export function listRows(order: TableOrder, opened: ReadonlyMap<number, number>): RowList {
   const byPlace = [...opened]
-    .map(([siteIndex, atomCount]) => ({ place: places(order)[siteIndex] ?? -1, atomCount }))
+    .map(([siteIndex, atomCount]) => ({ place: order.places[siteIndex] ?? -1, atomCount }))
     .filter(({ place }) => place >= 0)
     .sort((a, b) => a.place - b.place);
   let atoms = 0;
@@ -58,8 +44,8 @@ export function listRows(order: Int32Array, opened: ReadonlyMap<number, number>)
   return {
     order,
     opened: list,
-    rowCount: order.length + atoms,
-    heightPx: siteRowHeight * order.length + atomRowHeight * atoms,
+    rowCount: order.sites.length + atoms,
+    heightPx: siteRowHeight * order.sites.length + atomRowHeight * atoms,
   };
 }
 
@@ -81,9 +67,9 @@ export function rowOf(list: RowList, index: number): SiteRow | null {
   const above = lastOpened(list, ({ place, atomsBefore }) => place + atomsBefore < index);
   const after = above ? index - (above.place + above.atomsBefore) : 0;
   if (above && after <= above.atomCount)
-    return { siteIndex: list.order[above.place]!, place: above.place, atom: after - 1 };
+    return { siteIndex: list.order.sites[above.place]!, place: above.place, atom: after - 1 };
   const place = above ? above.place + after - above.atomCount : index;
-  return { siteIndex: list.order[place]!, place, atom: null };
+  return { siteIndex: list.order.sites[place]!, place, atom: null };
 }
 
 /** Height at which a line starts, px. */
@@ -122,7 +108,7 @@ export function visibleRows(list: RowList, scrollTop: number, height: number): r
 
 /** Index of the line of a site or of one of its atoms; −1 when the site is closed or not there. */
 export function indexOfRow(list: RowList, siteIndex: number, atom: number | null): number {
-  const place = places(list.order)[siteIndex] ?? -1;
+  const place = list.order.places[siteIndex] ?? -1;
   if (place < 0) return -1;
   const above = lastOpened(list, (site) => site.place <= place);
   const isOpen = above?.place === place;

@@ -4,7 +4,7 @@ import type { CrystalSummary } from '#src/store/crystal-summary.ts';
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { quantityToShow } from '#src/store/state.ts';
 import { counted, formatCount } from '#src/table/number-format.ts';
-import type { TableSort } from '#src/table/table-settings.ts';
+import type { TableOrder, TableSort } from '#src/table/table-settings.ts';
 import { isFiltering, noFilter } from '#src/table/table-settings.ts';
 import { gridOf } from './column-widths.ts';
 import type { CopyKind } from './copy-table.ts';
@@ -21,7 +21,7 @@ import { tableStyles } from './table-styles.ts';
 import type { TablePanel } from './table-tools.ts';
 import { tablePanel, tableTools } from './table-tools.ts';
 
-const empty: RowList = listRows(new Int32Array(0), new Map());
+const empty: RowList = listRows({ sites: new Int32Array(0), places: new Int32Array(0) }, new Map());
 
 /**
  * One row a site, opening to its equivalent atoms: a tree grid with one focus stop, whose active row is named by
@@ -91,7 +91,7 @@ export class SiteTable extends StoreElement {
     if (state.selection !== before?.selection || this.#isFollowing) this.#follow(state.selection);
   }
 
-  #rowsCame(order: Int32Array | null): void {
+  #rowsCame(order: TableOrder | null): void {
     if (order) this.#relist(order);
     this.requestUpdate();
   }
@@ -143,7 +143,7 @@ export class SiteTable extends StoreElement {
   #headline(crystal: CrystalSummary): string {
     const { filter } = this.store!.state.table;
     const sites = counted(crystal.siteCount, 'site');
-    const shown = isFiltering(filter) ? `${formatCount(this.#list.order.length)} of ${sites}` : sites;
+    const shown = isFiltering(filter) ? `${formatCount(this.#list.order.sites.length)} of ${sites}` : sites;
     const atoms = `${counted(crystal.atomsInCell, 'atom')}${crystal.lattice ? ' in the cell' : ''}`;
     return `Sites · ${[shown, atoms, crystal.spaceGroup].filter(Boolean).join(' · ')}`;
   }
@@ -153,7 +153,7 @@ export class SiteTable extends StoreElement {
     if (!isEmpty || this.#source.columns.length === 0) return nothing;
     return html`<p class="empty">
       No site passes the filter.
-      <button class="link" @click=${() => this.store?.setTable({ filter: noFilter }, 'all rows are shown')}>
+      <button class="link" @click=${() => this.store?.setTable({ filter: noFilter }, 'clear the filter')}>
         Show all
       </button>
     </p>`;
@@ -218,7 +218,7 @@ export class SiteTable extends StoreElement {
   }
 
   /** The rows in a new order, or with other sites opened; the active row stays the active one. */
-  #relist(order: Int32Array): void {
+  #relist(order: TableOrder): void {
     const active = rowOf(this.#list, this.#active);
     this.#list = listRows(order, this.#opened);
     if (!active) return;
@@ -239,7 +239,7 @@ export class SiteTable extends StoreElement {
 
   #sort(sort: TableSort | null): void {
     const sentence = sortSentence(sort, this.#source.columns);
-    this.store?.setTable({ sort }, `the table is ${sentence}`);
+    this.store?.setTable({ sort }, `table ${sentence}`);
     this.said = `Sites ${sentence}.`;
   }
 

@@ -6,6 +6,7 @@ import type { SiteColumn } from '#src/table/site-column.ts';
 import { headingText, siteColumn, siteColumns } from '#src/table/site-columns.ts';
 import type { ColumnRange, TableFilter as Filter } from '#src/table/table-settings.ts';
 import { isFiltering, noFilter } from '#src/table/table-settings.ts';
+import type { ViewStepOptions } from '#src/store/timeline.ts';
 import { headingOf } from './convention-symbol.ts';
 import { numberInput } from './number-input.ts';
 import { StoreElement } from './store-element.ts';
@@ -67,7 +68,7 @@ export class TableFilter extends StoreElement {
     if (!state || !crystal) return html``;
     const { filter } = state.table;
     const typed = (event: Event): void =>
-      this.#set({ text: (event.target as HTMLInputElement).value }, 'rows are sought by text');
+      this.#set({ text: (event.target as HTMLInputElement).value }, 'filter by text', { coalesce: true });
     return html`<div class="line">
         <label
           ><span class="soft">text</span
@@ -77,7 +78,7 @@ export class TableFilter extends StoreElement {
         ${this.#newRange(crystal, filter)}
         <button
           ?disabled=${!isFiltering(filter) && filter.ranges.length === 0}
-          @click=${() => this.#set(noFilter, 'all rows are shown')}
+          @click=${() => this.#set(noFilter, 'clear the filter')}
         >
           Clear
         </button>
@@ -90,10 +91,7 @@ export class TableFilter extends StoreElement {
     const wanted = filter.elements ?? all;
     const change = (element: string): void => {
       const next = all.filter((one) => (one === element) !== wanted.includes(one));
-      this.#set(
-        { elements: next.length === all.length ? null : next },
-        `rows of ${next.join(', ') || 'no element'}`,
-      );
+      this.#set({ elements: next.length === all.length ? null : next }, 'filter by element');
     };
     return html`<fieldset>
       <legend>of</legend>
@@ -120,7 +118,7 @@ export class TableFilter extends StoreElement {
       select.selectedIndex = 0;
       if (!column) return;
       const next = [...ranges, { key: column.key, low: null, high: null }];
-      this.#set({ ranges: next }, `a range of ${column.words}`);
+      this.#set({ ranges: next }, `range of ${column.words}`);
     };
     return html`<select aria-label="Add a range of a number" @change=${add}>
       <option selected>add a range …</option>
@@ -146,16 +144,16 @@ export class TableFilter extends StoreElement {
       <span class="soft">${column?.unit}</span>
       <button
         aria-label="Remove the range of ${words}"
-        @click=${() => this.#set({ ranges: ranges.filter((_, i) => i !== place) }, `no range of ${words}`)}
+        @click=${() => this.#set({ ranges: ranges.filter((_, i) => i !== place) }, `take off the range of ${words}`)}
       >
         ×
       </button>
     </div>`;
   }
 
-  #set(change: Partial<Filter>, reason: string): void {
+  #set(change: Partial<Filter>, name: string, options?: ViewStepOptions): void {
     const { filter } = this.store!.state.table;
-    this.store?.setTable({ filter: { ...filter, ...change } }, reason);
+    this.store?.setTable({ filter: { ...filter, ...change } }, name, options);
   }
 }
 

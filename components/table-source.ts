@@ -4,6 +4,7 @@ import { NewestOnly } from '#src/store/newest-only.ts';
 import type { SiteColumn } from '#src/table/site-column.ts';
 import { columnsOf, defaultColumns } from '#src/table/site-columns.ts';
 import type {
+  TableOrder,
   TablePage,
   TableRequest,
   TableRow,
@@ -33,7 +34,7 @@ export function tableQuestion(
  */
 export class TableSource {
   readonly #ask: (request: TableRequest) => Promise<TablePage>;
-  readonly #changed: (order: Int32Array | null) => void;
+  readonly #changed: (order: TableOrder | null) => void;
   readonly #newest: NewestOnly<TableRequest, TablePage>;
   #pages: RowPages | null = null;
   #columns: readonly SiteColumn[] = [];
@@ -42,7 +43,7 @@ export class TableSource {
   /** `changed` is called with a new order, or with null when rows of the same order have come or could not be read. */
   constructor(
     ask: (request: TableRequest) => Promise<TablePage>,
-    changed: (order: Int32Array | null) => void,
+    changed: (order: TableOrder | null) => void,
   ) {
     this.#ask = ask;
     this.#changed = changed;

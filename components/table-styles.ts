@@ -3,6 +3,7 @@ import { css } from 'lit';
 /** Look of the site table: hairlines between rows, no boxes. */
 export const tableStyles = css`
   :host {
+    position: relative;
     display: flex;
     flex-direction: column;
     min-height: 0;
@@ -28,16 +29,14 @@ export const tableStyles = css`
   .tools button[aria-expanded='true'] {
     background: var(--raised);
   }
-  .overlay {
-    position: relative;
-    z-index: 4;
-    height: 0;
-  }
+  /* below the table, over the card: the columns stay in view while they are chosen */
   ellipsite-column-chooser {
     position: absolute;
+    z-index: 4;
+    top: 100%;
     right: 12px;
-    width: min(560px, 100% - 12px);
-    max-height: min(60vh, 520px);
+    width: min(600px, 100% - 24px);
+    max-height: min(52vh, 520px);
     border: 1px solid var(--line);
     border-radius: 4px;
   }

@@ -49,7 +49,5 @@ export function tablePanel(
   }
   if (panel !== 'columns') return nothing;
   void import('./column-chooser.ts');
-  return html`<div class="overlay">
-    <ellipsite-column-chooser .store=${store} @keydown=${keydown}></ellipsite-column-chooser>
-  </div>`;
+  return html`<ellipsite-column-chooser .store=${store} @keydown=${keydown}></ellipsite-column-chooser>`;
 }

@@ -6,7 +6,7 @@ import { sharedPositions } from '#src/scene/shared-positions.ts';
 import { columnsOf } from '#src/table/site-columns.ts';
 import { orderSites } from '#src/table/table-order.ts';
 import { tableRow } from '#src/table/table-rows.ts';
-import type { TablePage, TableRequest, TableTextRequest } from '#src/table/table-settings.ts';
+import type { TableOrder, TablePage, TableRequest, TableTextRequest } from '#src/table/table-settings.ts';
 import { tableHtml, tableText } from '#src/table/table-text.ts';
 
 /** Another site on the same position. */
@@ -43,7 +43,7 @@ export type QueryAnswer = Queries[QueryKind]['answer'];
 /** Answers questions about one crystal; keeps the order of the table, of which many windows are asked for. */
 export class CrystalDesk {
   readonly #dossier: CrystalDossier;
-  #order: { readonly key: string; readonly sites: Int32Array } | null = null;
+  #order: (TableOrder & { readonly key: string }) | null = null;
 
   constructor(dossier: CrystalDossier) {
     this.#dossier = dossier;
@@ -79,26 +79,28 @@ export class CrystalDesk {
   #page(request: TableRequest): TablePage {
     const order = this.#ordered(request);
     const columns = columnsOf(request.columns);
-    const window = order.subarray(request.first, request.first + request.count);
+    const window = order.sites.subarray(request.first, request.first + request.count);
     return {
-      // a copy: what is sent is given away
-      order: request.withOrder ? order.slice() : null,
-      total: order.length,
+      // copies: what is sent is given away
+      order: request.withOrder ? { sites: order.sites.slice(), places: order.places.slice() } : null,
+      total: order.sites.length,
       first: request.first,
       rows: Array.from(window, (index) => tableRow(this.#dossier.sites[index]!, columns)),
     };
   }
 
   #text(request: TableTextRequest): string {
-    const sites = Array.from(this.#ordered(request), (index) => this.#dossier.sites[index]!);
+    const sites = Array.from(this.#ordered(request).sites, (index) => this.#dossier.sites[index]!);
     const columns = columnsOf(request.columns);
     return request.format === 'html' ? tableHtml(sites, columns) : tableText(sites, columns);
   }
 
-  #ordered({ filter, sort }: Pick<TableRequest, 'filter' | 'sort'>): Int32Array {
+  #ordered({ filter, sort }: Pick<TableRequest, 'filter' | 'sort'>): TableOrder {
     const key = JSON.stringify([filter, sort]);
-    if (this.#order?.key !== key) this.#order = { key, sites: orderSites(this.#dossier.sites, filter, sort) };
-    return this.#order.sites;
+    let order = this.#order;
+    if (order?.key !== key) order = { key, ...orderSites(this.#dossier.sites, filter, sort) };
+    this.#order = order;
+    return order;
   }
 }
 

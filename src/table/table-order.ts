@@ -3,7 +3,7 @@ import { naturalKey } from './natural-order.ts';
 import type { SiteColumn } from './site-column.ts';
 import { columnsOf, siteColumn } from './site-columns.ts';
 import { limits } from './table-settings.ts';
-import type { TableFilter, TableSort } from './table-settings.ts';
+import type { TableFilter, TableOrder, TableSort } from './table-settings.ts';
 
 /** Where a text is sought: in names and symbols, not in sentences and file names, which hold any two letters. */
 const texts = columnsOf([
@@ -85,9 +85,19 @@ export function orderSites(
   sites: readonly SiteDossier[],
   filter: TableFilter,
   sort: TableSort | null,
-): Int32Array {
+): TableOrder {
   const isShown = passes(filter);
   const shown = Int32Array.from(sites.flatMap((site, index) => (isShown(site) ? [index] : [])));
   const column = sort && siteColumn(sort.key);
-  return sort && column ? shown.sort(comparison(column, sites, sort.descending)) : shown;
+  return orderOf(
+    sort && column ? shown.sort(comparison(column, sites, sort.descending)) : shown,
+    sites.length,
+  );
+}
+
+/** An order from the sites of its rows. */
+export function orderOf(rows: Int32Array, siteCount: number): TableOrder {
+  const places = new Int32Array(siteCount).fill(-1);
+  rows.forEach((index, place) => (places[index] = place));
+  return { sites: rows, places };
 }

@@ -45,6 +45,14 @@ export function limits({ low, high }: ColumnRange): boolean {
   return low !== null || high !== null;
 }
 
+/** The rows there are: both ways between a row and its site, so that the page never runs through all of them. */
+export interface TableOrder {
+  /** Site index of each row. */
+  readonly sites: Int32Array;
+  /** Row of each site; −1 for a site without one. */
+  readonly places: Int32Array;
+}
+
 /** Some rows of the table, and the order of all where it is asked for. */
 export interface TableRequest {
   readonly columns: readonly string[];
@@ -75,8 +83,8 @@ export interface TableRow {
 }
 
 export interface TablePage {
-  /** Site indices of all rows in order; null where it was not asked for. */
-  readonly order: Int32Array | null;
+  /** null where it was not asked for. */
+  readonly order: TableOrder | null;
   /** Rows after filtering. */
   readonly total: number;
   readonly first: number;

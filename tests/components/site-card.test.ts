@@ -32,7 +32,7 @@ describe('the site card', () => {
     expect(heads).toEqual(['', 'shielding', 'shift', 'definition']);
     const captions = [...card().querySelectorAll('.matrix caption')].map(textOf);
     expect(captions).toContain('σ/ppm as given');
-    expect(captions).toContain('symmetrised: mean over the site symmetry');
+    expect(captions).toContain('symmetrised by the site');
   });
 
   it('says where the site is in both frames and what its symmetry forces', () => {

@@ -10,10 +10,11 @@ import {
   topOf,
   visibleRows,
 } from '#components/site-rows.ts';
+import { orderOf } from '#src/table/table-order.ts';
 import { tableKeys } from '#components/table-keys.ts';
 
 /** Three sites in the order of the file. */
-const three = Int32Array.of(0, 1, 2);
+const three = orderOf(Int32Array.of(0, 1, 2), 3);
 const key = (name: string) => ({ key: name, ctrlKey: false, metaKey: false, altKey: false });
 
 describe('lines of the site table', () => {
@@ -36,7 +37,7 @@ describe('lines of the site table', () => {
 
   it('follow the order they are given, and sites without a row have none', () => {
     const list = listRows(
-      Int32Array.of(7, 2),
+      orderOf(Int32Array.of(7, 2), 8),
       new Map([
         [2, 3],
         [5, 1],
@@ -59,7 +60,7 @@ describe('lines of the site table', () => {
       const order = Int32Array.from({ length: count }, (_, i) => (i * 7 + 3) % count);
       const distinct = [...new Set(order)];
       const opened = new Map(seed.filter((site) => site < count).map((site, i) => [site, 1 + (i % 4)]));
-      return { list: listRows(Int32Array.from(distinct), opened), distinct, opened };
+      return { list: listRows(orderOf(Int32Array.from(distinct), count), opened), distinct, opened };
     });
 
   it('are as if each had been written down', () => {
@@ -87,7 +88,10 @@ describe('lines of the site table', () => {
   });
 
   it('are found by height, and every visible one is drawn', () => {
-    const order = Int32Array.from({ length: 3000 }, (_, i) => i);
+    const order = orderOf(
+      Int32Array.from({ length: 3000 }, (_, i) => i),
+      3000,
+    );
     const list = listRows(
       order,
       new Map([
@@ -107,7 +111,7 @@ describe('lines of the site table', () => {
       { numRuns: 100 },
     );
     expect(rowAt(list, 1e9)).toBe(list.rowCount - 1);
-    expect(visibleRows(listRows(new Int32Array(0), new Map()), 0, 500)).toEqual([0, 0]);
+    expect(visibleRows(listRows(orderOf(new Int32Array(0), 0), new Map()), 0, 500)).toEqual([0, 0]);
   });
 });
 
@@ -142,6 +146,6 @@ describe('keys of the site table', () => {
   it('leave other keys and shortcuts to the page', () => {
     expect(tableKeys(key('x'), closed, 0, none, 5)).toBeNull();
     expect(tableKeys({ ...key('ArrowDown'), ctrlKey: true }, closed, 0, none, 5)).toBeNull();
-    expect(tableKeys(key('ArrowDown'), listRows(new Int32Array(0), none), 0, none, 5)).toBeNull();
+    expect(tableKeys(key('ArrowDown'), listRows(orderOf(new Int32Array(0), 0), none), 0, none, 5)).toBeNull();
   });
 });

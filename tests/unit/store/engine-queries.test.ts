@@ -50,7 +50,7 @@ describe('questions about a crystal', () => {
   it('answer windows of the table, with the order only when asked', () => {
     const desk = new CrystalDesk(manySites(500));
     const first = desk.answer({ kind: 'table', ask: request }) as TablePage;
-    expect(first.order).toHaveLength(500);
+    expect(first.order?.sites).toHaveLength(500);
     expect(first.rows.map(({ label }) => label)).toEqual(['O1', 'O2']);
     // what is sent is given away: the next window must not depend on it
     structuredClone(first, { transfer: transferablesOf(first) });

@@ -22,7 +22,11 @@ const order = (
   of: readonly SiteDossier[],
   sort: TableSort | null,
   filter: Partial<TableFilter> = {},
-): number[] => [...orderSites(of, { ...noFilter, ...filter }, sort)];
+): number[] => {
+  const { sites: rows, places } = orderSites(of, { ...noFilter, ...filter }, sort);
+  of.forEach((_, index) => expect(places[index]).toBe(rows.indexOf(index)));
+  return [...rows];
+};
 
 describe('the order of the rows', () => {
   it('is that of the file unasked, and for a column nobody knows', () => {
