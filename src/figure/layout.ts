@@ -160,10 +160,9 @@ function blocksFor(
   const key = contents.elementKey ? keyBlock(scene, notes, style) : null;
   const words = contents.viewDirection ? request.view.words : null;
   const view = words === null ? null : textBlock(viewLines(words, textPt, notes), textPt, style.theme.soft);
-  const last = [key, view].filter((block) => block !== null);
-  return [axes, legend, scale, last.length > 0 ? stacked(last, 0.15 * textPt) : null].filter(
-    (block) => block !== null,
-  );
+  const orientated = [axes, view].filter((block) => block !== null);
+  const first = orientated.length > 0 ? stacked(orientated, 0.4 * textPt) : null;
+  return [first, legend, scale, key].filter((block) => block !== null);
 }
 
 /** Letters of axes are italic. */
