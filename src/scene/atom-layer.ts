@@ -95,7 +95,11 @@ const undivided = { share: 255, rest: [0, 0, 0], circles: 0, pattern: 0 } as con
 function lookOf(drawn: DrawnAtom, index: number, look: AtomsLook): QuadricLook {
   const { site, atom, context } = drawn;
   if (context) {
-    const shape = scaleMatrix(atomRadius(site.element) * contextShare, identity3);
+    // beside displacement ellipsoids a sphere of the usual size would stand in front of what it completes
+    const own = look.displacement?.circles ? look.displacement.shapes.get(site.index) : undefined;
+    const shape = own
+      ? multiply(atom.rotation, own)
+      : scaleMatrix(atomRadius(site.element) * contextShare, identity3);
     const colour = look.isSiteColoured
       ? siteColourBytes(site.index)
       : bondColour(site.element, look.isNeutral);

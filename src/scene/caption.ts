@@ -184,11 +184,11 @@ function extentSentences(parts: CaptionParts): string[] {
   return sentences;
 }
 
-function extentSentence({ chosen, hasCell, polyhedra }: CaptionParts): string {
+function extentSentence({ chosen, hasCell, polyhedra, displacement }: CaptionParts): string {
   const { extent, range, middle } = chosen;
   const hasOutside = chosen.atoms.length > chosen.ownCount;
   const outside = hasOutside
-    ? `; small plain spheres outside complete the ${polyhedra.length > 0 ? 'polyhedra' : 'coordination'}`
+    ? `; ${displacement?.mode === 'instead' ? 'paler atoms without circles' : 'small plain spheres'} outside complete the ${polyhedra.length > 0 ? 'polyhedra' : 'coordination'}`
     : '';
   if (extent === 'shell') return `The surroundings of ${listed(middle)}${outside}.`;
   if (!hasCell) return 'Molecule without a cell.';
