@@ -7,13 +7,12 @@ import { siteColour } from '#src/store/site-colour.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
 import { colourBar, colourBarStyles } from './colour-bar.ts';
 import type { CrystalPicture, PictureEvents } from './crystal-picture.ts';
-import { keysInWords } from './keys-help.ts';
-import { MeasurementBoard } from './measurement-board.ts';
+import { MeasurementBoard, newestWords } from './measurement-board.ts';
 import type { PicturePoint } from './picture-controls.ts';
 import type { PictureCommand } from './picture-keys.ts';
-import { commandOfKey } from './picture-keys.ts';
+import { commandOfKey, keysInWords } from './picture-keys.ts';
 import { PictureMarker } from './picture-marker.ts';
-import { atomIds, drawnPositions, isSameAtom, middleOf, selectionOf } from './picture-marks.ts';
+import { atomIds, middleOf, selectedPositions, selectionOf } from './picture-marks.ts';
 import {
   annotations,
   axesDrawing,
@@ -21,15 +20,16 @@ import {
   labelsDrawing,
   marksDrawing,
   overPicture,
+  pointedWords,
   pointedDrawing,
   ringsDrawing,
   sampleLine,
 } from './picture-overlay.ts';
 import type { PicturePanel, ToolsHost } from './picture-tools.ts';
-import { pictureTools } from './picture-tools.ts';
-import { pointedSentence } from './pointed-sentence.ts';
+import { loadPanel, openPanel, pictureTools } from './picture-tools.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
+import './spoken-line.ts';
 import type { ViewPanel } from './view-panel.ts';
 import { viewStyles } from './view-styles.ts';
 
@@ -57,10 +57,8 @@ export class CrystalView extends StoreElement {
   declare probe: WebGLProbe | null;
   declare fault: string | null;
   declare isLost: boolean;
-  /** The panel that is open. */
   declare open: PicturePanel | null;
   declare pointed: { readonly entry: PickEntry; readonly at: PicturePoint } | null;
-  /** The crystal turns about the selection. */
   declare pivots: boolean;
 
   protected override readonly watches = [
@@ -81,16 +79,19 @@ export class CrystalView extends StoreElement {
   #picture: CrystalPicture | null = null;
   #resize: ResizeObserver | null = null;
   #crystalKey: string | null = null;
+  /** What the live region says of atoms stepped to and of measurements. */
+  #spoken = '';
 
   constructor() {
     super();
     this.theme = 'light';
-    this.probe = null;
-    this.fault = null;
-    this.isLost = false;
-    this.open = null;
-    this.pointed = null;
-    this.pivots = false;
+    this.probe = this.fault = this.open = this.pointed = null;
+    this.isLost = this.pivots = false;
+  }
+
+  /** What is on screen, for a picture to take away. */
+  get picture(): CrystalPicture | null {
+    return this.#picture;
   }
 
   override disconnectedCallback(): void {
@@ -116,18 +117,23 @@ export class CrystalView extends StoreElement {
       return html`${heading}
         <p class="none" role="alert">${fault}</p>`;
     const scene = this.#picture?.scene ?? null;
+    const host = this.#toolsHost();
     return html`
-      <div class="line">${heading} ${pictureTools(this.#toolsHost())}</div>
-      <div
-        class="stage ${this.#marker.kind ? 'picking' : ''}"
-        role="application"
-        tabindex="0"
-        aria-label="Picture of the crystal"
-        aria-describedby="caption keys"
-        @keydown=${this.#keydown}
-      >
-        <canvas></canvas>
-        ${this.#overlay()} ${store ? overPicture(store.state, this.isLost) : nothing}
+      <div class="line">${heading} ${pictureTools(host)}</div>
+      <div class="middle">
+        <div
+          class="stage ${this.#marker.kind ? 'picking' : ''}"
+          role="application"
+          tabindex="0"
+          aria-label="Picture of the crystal"
+          aria-describedby="caption keys"
+          @keydown=${this.#keydown}
+          @blur=${() => this.#point(null, null)}
+        >
+          <canvas></canvas>
+          ${this.#overlay()} ${store ? overPicture(store.state, this.isLost) : nothing}
+        </div>
+        ${openPanel(host)}
       </div>
       ${colourBar(scene)}
       <p class="caption" id="caption">
@@ -135,6 +141,7 @@ export class CrystalView extends StoreElement {
       </p>
       ${sampleLine(store?.state.decisions ?? null)}
       <p class="hidden-but-spoken" id="keys">${keysInWords}</p>
+      <ellipsite-spoken-line .text=${this.#spoken}></ellipsite-spoken-line>
     `;
   }
 
@@ -177,7 +184,10 @@ export class CrystalView extends StoreElement {
   #events(): PictureEvents {
     return {
       moved: () => this.requestUpdate(),
-      steered: (camera, words) => this.store?.setCamera(camera, words, { coalesce: true }),
+      steered: (camera, words) => {
+        this.pointed = null;
+        this.store?.setCamera(camera, words, { coalesce: true });
+      },
       fitted: (camera) => this.store?.adjustCamera(camera),
       clicked: (entry, adds) => this.store && this.#marker.press(entry, adds, this.store),
       activated: () => this.#run({ do: 'toSelection' }),
@@ -191,6 +201,8 @@ export class CrystalView extends StoreElement {
     if (!derived || !scene) return;
     const key = `${derived.chosen?.sourceId} ${derived.chosen?.index} ${decisions?.settings.symmetry}`;
     const isOther = key !== this.#crystalKey;
+    if (before && this.store && state.measurements.length > before.measurements.length && !isOther)
+      this.#spoken = newestWords(this.#board.entries(this.store), this.store);
     this.#crystalKey = key;
     if (isOther) this.#marker.clear();
     if (look !== before?.look) picture.setLook(look);
@@ -199,7 +211,7 @@ export class CrystalView extends StoreElement {
     if (isSteered || (isOther && camera)) picture.follow(camera);
     const isNew = scene !== before?.scene;
     if (isNew || selection !== before?.selection) {
-      this.#marker.forgetUnless(selection?.atomId ?? null, selection?.siteIndex ?? null);
+      this.#marker.forgetUnless(selection);
       this.#marked();
     }
     if (isNew || hover !== before?.hover) picture.hover(atomIds(scene, hover));
@@ -217,17 +229,9 @@ export class CrystalView extends StoreElement {
     this.requestUpdate();
   }
 
-  /** Where the picked atoms stand, or all drawn atoms of the selected site. */
-  #selected(): ReturnType<typeof drawnPositions> {
+  #selected(): ReturnType<typeof selectedPositions> {
     const scene = this.#picture?.scene;
-    if (!scene) return [];
-    const { marks } = this.#marker;
-    const ids = new Set(atomIds(scene, this.store?.state.selection ?? null));
-    return drawnPositions(scene, (entry) => {
-      if (entry.kind !== 'atom') return false;
-      if (marks.length > 0) return marks.some((mark) => isSameAtom(mark, entry));
-      return ids.has(entry.atomId);
-    });
+    return scene ? selectedPositions(scene, this.#marker.marks, this.store?.state.selection ?? null) : [];
   }
 
   #overlay(): TemplateResult {
@@ -239,7 +243,7 @@ export class CrystalView extends StoreElement {
     const marks = this.#marker.isNumbered ? this.#marker.marks.map((mark) => picture.whereIsAtom(mark)) : [];
     return html`${ringsDrawing(overlay, hovered === undefined ? null : siteColour(hovered))}
     ${annotations(this.#board.entries(store), picture)} ${labelsDrawing(overlay)} ${marksDrawing(marks)}
-    ${axesDrawing(overlay)} ${this.#pointedLine()}`;
+    ${axesDrawing(overlay)} ${pointedDrawing(this.pointed, picture, store)}`;
   }
 
   #toolsHost(): ToolsHost {
@@ -253,20 +257,12 @@ export class CrystalView extends StoreElement {
       pivots: this.pivots,
       hasSelection: this.#marker.marks.length > 0 || (store?.state.selection ?? null) !== null,
       theme: this.theme,
-      setOpen: (open) => (this.open = open),
+      setOpen: (open) => this.#show(open),
       setPivots: (pivots) => this.#setPivots(pivots),
-      openFigure: () => void this.#openFigure(),
+      openFigure: () => void import('./open-figure.ts').then(({ openFigure }) => openFigure(this)),
       run: (command) => this.#run(command),
       close: () => this.#closePanel(),
     };
-  }
-
-  #pointedLine(): TemplateResult | typeof nothing {
-    const { store, pointed } = this;
-    const scene = this.#picture?.scene;
-    if (!pointed || !scene || !store || !this.#picture) return nothing;
-    const sentence = pointedSentence(pointed.entry, scene, (index) => store.site(index));
-    return pointedDrawing(sentence, pointed.at, this.#picture.viewport);
   }
 
   #point(entry: PickEntry | null, at: PicturePoint | null): void {
@@ -286,11 +282,10 @@ export class CrystalView extends StoreElement {
     switch (command.do) {
       case 'help':
       case 'measure':
-        this.open = this.open === command.do ? null : command.do;
+        this.#show(this.open === command.do ? null : command.do);
         return true;
       case 'type':
-        this.open = 'view';
-        void this.updateComplete.then(() => this.#focusDirection());
+        void this.#typeDirection();
         return true;
       case 'pivot':
         this.#setPivots(!this.pivots);
@@ -302,6 +297,7 @@ export class CrystalView extends StoreElement {
       case 'step': {
         const entry = picture.stepFrom(this.pointed?.entry ?? null, command.by);
         if (entry) this.#point(entry, picture.whereIs(entry));
+        this.#spoken = entry ? pointedWords(entry, picture, store) : '';
         return entry !== null;
       }
       case 'choose':
@@ -322,15 +318,18 @@ export class CrystalView extends StoreElement {
     return true;
   }
 
-  async #openFigure(): Promise<void> {
-    if (!this.store || !this.#picture) return;
-    const { openFigure } = await import('./open-figure.ts');
-    await openFigure(this.renderRoot, this.store, this.#picture, this.theme);
+  #show(open: PicturePanel | null): void {
+    if (!open) this.#closePanel();
+    else void loadPanel((this.open = open)).then(() => this.requestUpdate());
   }
 
-  #focusDirection(): void {
+  async #typeDirection(): Promise<void> {
+    this.open = 'view';
+    await loadPanel('view');
+    await this.updateComplete;
     const panel = this.renderRoot.querySelector<ViewPanel>('ellipsite-view-panel');
-    void panel?.updateComplete.then(() => panel.focusDirection());
+    await panel?.updateComplete;
+    panel?.focusDirection();
   }
 
   readonly #keydown = (event: KeyboardEvent): void => {

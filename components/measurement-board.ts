@@ -5,6 +5,7 @@ import { measure } from '#src/scene/measure.ts';
 import type { Measurement } from '#src/scene/measurement.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
 import type { Store } from '#src/store/store.ts';
+import { kindWords, measuredName, valueText } from './measure-words.ts';
 
 /** A measurement with its value for the crystal on screen; null where that lacks an atom, or it is on its way. */
 export interface BoardEntry {
@@ -50,4 +51,13 @@ export function freeMeasurementId(measurements: readonly Measurement[]): string 
   let number = measurements.length + 1;
   while (taken.has(`m${number}`)) number += 1;
   return `m${number}`;
+}
+
+/** The newest measurement in words: `distance Si1–O1: 1.609 Å`; empty where its value isn't known. */
+export function newestWords(entries: readonly BoardEntry[], store: Store): string {
+  const newest = entries.at(-1);
+  const crystal = measuredCrystal(store);
+  if (!newest?.measured || !crystal) return '';
+  const { measurement, measured } = newest;
+  return `${kindWords[measurement.kind]} ${measuredName(measurement, crystal)}: ${valueText(measured)}`;
 }

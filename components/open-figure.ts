@@ -1,15 +1,10 @@
-import type { Store } from '#src/store/store.ts';
-import type { CrystalPicture } from './crystal-picture.ts';
+import type { CrystalView } from './crystal-view.ts';
 import { FigureDialog } from './figure-dialog.ts';
 
 /** Opens the dialog for a picture to take away, with the scene, camera and look as they are on screen now. */
-export async function openFigure(
-  root: HTMLElement | DocumentFragment,
-  store: Store,
-  picture: CrystalPicture,
-  theme: 'light' | 'dark',
-): Promise<void> {
-  const known = root.querySelector('ellipsite-figure-dialog');
+export async function openFigure({ renderRoot, store, picture, theme }: CrystalView): Promise<void> {
+  if (!store || !picture) return;
+  const known = renderRoot.querySelector('ellipsite-figure-dialog');
   const dialog = known instanceof FigureDialog ? known : new FigureDialog();
   const { decisions, derived, look, camera } = store.state;
   dialog.scene = picture.scene;
@@ -19,7 +14,7 @@ export async function openFigure(
   dialog.theme = theme;
   dialog.caseTitle = decisions?.title ?? derived?.crystal?.name ?? '';
   dialog.caseText = () => store.caseText();
-  if (dialog !== known) root.append(dialog);
+  if (dialog !== known) renderRoot.append(dialog);
   await dialog.updateComplete;
   dialog.open();
 }

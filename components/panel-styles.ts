@@ -22,6 +22,14 @@ export const panelStyles = css`
     padding: 0;
     margin: 0;
   }
+  .choice {
+    display: grid;
+    grid-template-columns: 84px minmax(0, 1fr);
+    margin-bottom: 2px;
+  }
+  .choice select {
+    width: 100%;
+  }
   .row {
     display: flex;
     flex-wrap: wrap;

@@ -59,7 +59,7 @@ export function attachControls(element: HTMLElement, target: ControlTarget): () 
   };
 
   listen('pointerdown', (event) => {
-    element.setPointerCapture(event.pointerId);
+    capture(element, event.pointerId);
     const pointer = heldBy(event);
     if (event.pointerType === 'touch') {
       pointer.longPress = setTimeout(() => {
@@ -112,6 +112,15 @@ export function attachControls(element: HTMLElement, target: ControlTarget): () 
     target.move(zoom(camera, zoomPerWheelPixel ** -pixels, target.viewport(), at), 'moved');
   });
   return () => abort.abort();
+}
+
+/** Keeps getting a pointer's events beyond the element's edge. One that has gone meanwhile can't be held: no harm. */
+function capture(element: HTMLElement, pointerId: number): void {
+  try {
+    element.setPointerCapture(pointerId);
+  } catch (error) {
+    if (!(error instanceof DOMException && error.name === 'NotFoundError')) throw error;
+  }
 }
 
 function heldBy(event: PointerEvent): Held {

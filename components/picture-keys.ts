@@ -102,3 +102,6 @@ export function commandOfKey({
   if (ctrlKey || metaKey || altKey) return null;
   return (shiftKey ? shiftedKeys[key] : undefined) ?? plainKeys[key] ?? null;
 }
+
+/** All keys in one breath, as a description of the picture. */
+export const keysInWords = `${keyRows.map(({ shown, words }) => `${shown}: ${words}`).join('. ')}. The site table holds the same atoms as text.`;

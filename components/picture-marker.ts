@@ -1,5 +1,6 @@
 import type { Measurement } from '#src/scene/measurement.ts';
 import type { PickEntry } from '#src/scene/scene.ts';
+import type { Selection } from '#src/store/state.ts';
 import type { Store } from '#src/store/store.ts';
 import { atomsNeeded } from './measure-words.ts';
 import type { PickedKind } from './measure-words.ts';
@@ -57,11 +58,12 @@ export class PictureMarker {
   }
 
   /** The selection came from elsewhere: marks that don't belong to it go. */
-  forgetUnless(atomId: string | null, siteIndex: number | null): void {
+  forgetUnless(selection: Selection | null): void {
     const last = this.#marks.at(-1);
     if (this.#kind !== null || !last) return;
-    if (siteIndex === last.siteIndex && (atomId === null || atomId === last.atomId)) return;
-    this.#marks = [];
+    const isSame =
+      selection?.siteIndex === last.siteIndex && (selection.atomId ?? last.atomId) === last.atomId;
+    if (!isSame) this.#marks = [];
   }
 
   clear(): void {

@@ -25,7 +25,7 @@ export function toggled(atoms: readonly PickedAtom[], atom: PickedAtom): PickedA
 }
 
 /** Where the drawn copies of atoms stand, Å; of those that are drawn. */
-export function drawnPositions(scene: Scene, wanted: (entry: PickEntry) => boolean): Vec3[] {
+function drawnPositions(scene: Scene, wanted: (entry: PickEntry) => boolean): Vec3[] {
   const found: Vec3[] = [];
   const { centres, pickIds, count } = scene.quadrics;
   let last = 0;
@@ -59,4 +59,17 @@ export function middleOf(points: readonly Vec3[]): Vec3 | null {
   if (n === 0) return null;
   const [x, y, z] = points.reduce<Vec3>((sum, p) => [sum[0] + p[0], sum[1] + p[1], sum[2] + p[2]], [0, 0, 0]);
   return [x / n, y / n, z / n];
+}
+
+/** Where the picked atoms stand, or all drawn atoms of the selected site. */
+export function selectedPositions(
+  scene: Scene,
+  marks: readonly PickedAtom[],
+  selection: Selection | null,
+): Vec3[] {
+  const ids = new Set(atomIds(scene, selection));
+  return drawnPositions(scene, (entry) => {
+    if (entry.kind !== 'atom') return false;
+    return marks.length > 0 ? marks.some((mark) => isSameAtom(mark, entry)) : ids.has(entry.atomId);
+  });
 }

@@ -1,10 +1,13 @@
 import { html, nothing, svg } from 'lit';
 import type { TemplateResult } from 'lit';
+import type { PickEntry } from '#src/scene/scene.ts';
+import type { Store } from '#src/store/store.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
 import type { CrystalPicture, PictureOverlay } from './crystal-picture.ts';
 import { valueText } from './measure-words.ts';
 import type { BoardEntry } from './measurement-board.ts';
 import type { PicturePoint } from './picture-controls.ts';
+import { pointedSentence } from './pointed-sentence.ts';
 import { sampleOf } from './sample-cases.ts';
 
 /** Rings round the atoms of the hovered site, in its colour. */
@@ -124,19 +127,27 @@ const besidePx = 16;
 
 /** The sentence about what is under the pointer, beside it on the side that has room. */
 export function pointedDrawing(
-  content: TemplateResult | string | null,
-  at: PicturePoint | null,
-  { widthPx, heightPx }: { readonly widthPx: number; readonly heightPx: number },
+  pointed: { readonly entry: PickEntry; readonly at: PicturePoint } | null,
+  { scene, viewport }: CrystalPicture,
+  store: Store,
 ): TemplateResult | typeof nothing {
-  if (!content || !at) return nothing;
-  const across =
-    at.xPx > widthPx / 2 ? `right: ${widthPx - at.xPx + besidePx}px` : `left: ${at.xPx + besidePx}px`;
-  const down =
-    at.yPx > heightPx / 2 ? `bottom: ${heightPx - at.yPx + besidePx}px` : `top: ${at.yPx + besidePx}px`;
-  const room = Math.max(150, (at.xPx > widthPx / 2 ? at.xPx : widthPx - at.xPx) - besidePx - 4);
+  const sentence =
+    pointed && scene ? pointedSentence(pointed.entry, scene, (index) => store.site(index)) : '';
+  if (!pointed || !sentence) return nothing;
+  const { xPx, yPx } = pointed.at;
+  const isRight = xPx > viewport.widthPx / 2;
+  const isLow = yPx > viewport.heightPx / 2;
+  const across = isRight ? `right: ${viewport.widthPx - xPx + besidePx}px` : `left: ${xPx + besidePx}px`;
+  const down = isLow ? `bottom: ${viewport.heightPx - yPx + besidePx}px` : `top: ${yPx + besidePx}px`;
+  const room = Math.max(150, (isRight ? xPx : viewport.widthPx - xPx) - besidePx - 4);
   return html`<div class="pointed" .style=${`${across}; ${down}; max-width: ${Math.min(room, 420)}px`}>
-    ${content}
+    ${sentence}
   </div>`;
+}
+
+/** The same sentence, to be spoken. */
+export function pointedWords(entry: PickEntry, { scene }: CrystalPicture, store: Store): string {
+  return scene ? pointedSentence(entry, scene, (index) => store.site(index)) : '';
 }
 
 /** What there is to say over the picture: it could not be made, is being made, or the graphics chip took it away. */

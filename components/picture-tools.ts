@@ -3,14 +3,10 @@ import type { TemplateResult } from 'lit';
 import type { Measurement } from '#src/scene/measurement.ts';
 import type { Store } from '#src/store/store.ts';
 import type { CrystalPicture } from './crystal-picture.ts';
-import { keysHelp } from './keys-help.ts';
-import './measure-panel.ts';
 import type { PickedKind } from './measure-words.ts';
 import type { BoardEntry } from './measurement-board.ts';
 import type { PictureCommand } from './picture-keys.ts';
 import type { PictureMarker } from './picture-marker.ts';
-import './show-panel.ts';
-import './view-panel.ts';
 
 /** The panels that open from the picture's tools; one at a time. */
 export type PicturePanel = 'view' | 'measure' | 'show' | 'help';
@@ -25,7 +21,7 @@ export interface ToolsHost {
   readonly pivots: boolean;
   readonly hasSelection: boolean;
   readonly theme: 'light' | 'dark';
-  readonly setOpen: (open: PicturePanel | null) => void;
+  readonly setOpen: (open: PicturePanel) => void;
   readonly setPivots: (pivots: boolean) => void;
   readonly openFigure: () => void;
   readonly run: (command: PictureCommand) => boolean;
@@ -52,27 +48,43 @@ export function pictureTools(host: ToolsHost): TemplateResult {
     html`<button
       aria-label=${label ?? panelNames[name]}
       aria-expanded=${host.open === name ? 'true' : 'false'}
-      @click=${() => host.setOpen(host.open === name ? null : name)}
+      @click=${() => (host.open === name ? host.close() : host.setOpen(name))}
     >
       ${panelNames[name]}
     </button>`;
   return html`<div class="tools" role="toolbar" aria-label="View">
-      <span class="group">
-        ${hasAxes ? html`<span>along</span> ${axis('a')}${axis('b')}${axis('c')}` : nothing}
-        <button title="the first view" @click=${() => run({ do: 'first' })}>all</button>
-        <button aria-label="Smaller" @click=${() => run({ do: 'zoom', factor: 1 / 1.25 })}>−</button>
-        <button aria-label="Larger" @click=${() => run({ do: 'zoom', factor: 1.25 })}>+</button>
-      </span>
-      <span class="group">
-        ${panel('view')}${panel('measure')}${panel('show')}
-        <button title="a picture to take away" @click=${() => host.openFigure()}>Picture</button>
-        ${panel('help', 'Keys and gestures')}
-      </span>
-    </div>
-    ${host.open ? openPanel(host, host.open) : nothing}`;
+    <span class="group">
+      ${hasAxes ? html`<span>along</span> ${axis('a')}${axis('b')}${axis('c')}` : nothing}
+      <button title="the first view" @click=${() => run({ do: 'first' })}>all</button>
+      <button aria-label="Smaller" @click=${() => run({ do: 'zoom', factor: 1 / 1.25 })}>−</button>
+      <button aria-label="Larger" @click=${() => run({ do: 'zoom', factor: 1.25 })}>+</button>
+    </span>
+    <span class="group">
+      ${panel('view')}${panel('measure')}${panel('show')}
+      <button title="a picture to take away" @click=${() => host.openFigure()}>Picture</button>
+      ${panel('help', 'Keys and gestures')}
+    </span>
+  </div>`;
 }
 
-function openPanel(host: ToolsHost, open: PicturePanel): TemplateResult {
+/** What a panel needs is loaded when it is opened first. */
+export function loadPanel(open: PicturePanel): Promise<unknown> {
+  switch (open) {
+    case 'help':
+      return import('./keys-help.ts');
+    case 'show':
+      return import('./show-panel.ts');
+    case 'view':
+      return import('./view-panel.ts');
+    case 'measure':
+      return import('./measure-panel.ts');
+  }
+}
+
+/** The panel that is open, beside the picture or over it. */
+export function openPanel(host: ToolsHost): TemplateResult | typeof nothing {
+  const { open } = host;
+  if (!open) return nothing;
   const closeByKey = (event: KeyboardEvent): void => {
     if (event.key !== 'Escape' || event.defaultPrevented) return;
     event.preventDefault();
@@ -89,7 +101,7 @@ function panelContent(host: ToolsHost, open: PicturePanel): TemplateResult {
   const { store, picture, marker } = host;
   switch (open) {
     case 'help':
-      return keysHelp();
+      return html`<ellipsite-keys-help></ellipsite-keys-help>`;
     case 'show':
       return html`<ellipsite-show-panel .store=${store}></ellipsite-show-panel>`;
     case 'view':

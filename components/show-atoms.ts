@@ -170,10 +170,10 @@ function displacementFields({ picture, crystal, set }: ShowContext): TemplateRes
   const reason = crystal.hasDisplacements ? null : 'the file has none';
   return html`${choice(
     'displacement',
-    'displacement ellipsoids',
+    'displacement',
     picture.displacement,
     [
-      { value: 'none', words: 'none' },
+      { value: 'none', words: 'no ellipsoids' },
       { value: 'beside', words: 'on atoms without a tensor', reason },
       { value: 'instead', words: 'instead of tensors', reason },
     ],

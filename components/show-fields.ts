@@ -58,19 +58,17 @@ export function choice<Value extends string>(
     const option = options[(event.target as HTMLSelectElement).selectedIndex];
     if (option) change(option.value, option.words);
   };
-  return html`<div>
-    <label
-      >${words}
-      <select id=${id} @change=${changed}>
-        ${options.map(
-          (option) =>
-            html`<option .selected=${option.value === value} ?disabled=${Boolean(option.reason)}>
-              ${option.words}${option.reason ? ` (${option.reason})` : ''}
-            </option>`,
-        )}
-      </select></label
-    >
-  </div>`;
+  return html`<label class="choice"
+    >${words}
+    <select id=${id} @change=${changed}>
+      ${options.map(
+        (option) =>
+          html`<option .selected=${option.value === value} ?disabled=${Boolean(option.reason)}>
+            ${option.words}${option.reason ? ` (${option.reason})` : ''}
+          </option>`,
+      )}
+    </select></label
+  >`;
 }
 
 /** A typed number with its unit. */

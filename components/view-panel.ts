@@ -91,9 +91,9 @@ export class ViewPanel extends StoreElement {
             type="checkbox"
             .checked=${this.pivots}
             @change=${(event: Event) => this.#tell('pivots', (event.target as HTMLInputElement).checked)}
-          />turn about the selection</label
+          />turn about the
+          selection${this.hasSelection ? nothing : html` <span class="soft">(nothing is selected)</span>`}</label
         >
-        ${this.hasSelection ? nothing : html`<span class="note">nothing is selected</span>`}
       </fieldset>
       <ellipsite-saved-views .store=${store}></ellipsite-saved-views>
     `;
@@ -171,8 +171,7 @@ export class ViewPanel extends StoreElement {
     return html`${names.map(
       (name, k) =>
         html`<label for=${`middle-${k}`}
-          ><i>${name[0]}</i>${name.slice(1)}
-          ${numberInput(
+          ><span><i>${name[0]}</i>${name.slice(1)}</span>${numberInput(
             `middle-${k}`,
             rounded(shown[k]!, lattice ? 4 : 3),
             { low: -1e5, high: 1e5 },

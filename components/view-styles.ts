@@ -6,6 +6,13 @@ export const viewStyles = css`
     display: flex;
     flex-direction: column;
     padding: 12px 0 10px 18px;
+    container-type: inline-size;
+  }
+  .middle {
+    position: relative;
+    flex: 1;
+    display: flex;
+    min-height: 160px;
   }
   .line {
     display: flex;
@@ -193,20 +200,27 @@ export const viewStyles = css`
     padding: 2px 16px 0 0;
     max-width: 110ch;
   }
+  /* beside the picture where there is room, so that one sees what one changes; else over it */
   .panel {
-    position: absolute;
-    z-index: 3;
-    right: 12px;
-    top: 100%;
-    width: max-content;
-    max-width: min(420px, 100% - 12px);
-    max-height: min(70dvh, 620px);
+    flex: none;
+    width: 304px;
+    margin-right: 8px;
     overflow: auto;
     overscroll-behavior: contain;
     border: 1px solid var(--line);
     border-radius: 4px;
     background: var(--raised);
     color: var(--ink);
+  }
+  @container (max-width: 619px) {
+    .panel {
+      position: absolute;
+      z-index: 3;
+      right: 4px;
+      top: 0;
+      width: min(320px, 100% - 12px);
+      max-height: 100%;
+    }
   }
   .panel .close {
     position: sticky;
@@ -216,26 +230,5 @@ export const viewStyles = css`
     background: var(--raised);
     font-size: 16px;
     line-height: 1;
-  }
-  .keys {
-    padding: 8px 14px 12px;
-    font-size: 13px;
-  }
-  .keys table {
-    border-collapse: collapse;
-    margin-bottom: 8px;
-  }
-  .keys caption {
-    text-align: left;
-    color: var(--soft);
-  }
-  .keys th {
-    text-align: left;
-    font-weight: 600;
-    padding: 2px 14px 2px 0;
-    vertical-align: top;
-  }
-  .keys td {
-    padding: 2px 0;
   }
 `;

@@ -23,6 +23,17 @@ async function drawnPage(): Promise<ShadowRoot> {
 
 const stageOf = (root: ShadowRoot): HTMLElement => root.querySelector<HTMLElement>('.stage')!;
 
+/** Waits until a smooth move has ended: two looks at the axes, a while apart, are alike. */
+async function rest(root: ShadowRoot): Promise<void> {
+  for (let i = 0; i < 60; i++) {
+    const before = axesOf(root);
+    await new Promise((resolve) => setTimeout(resolve, 120));
+    await settle();
+    if (axesOf(root) === before) return;
+  }
+  throw new Error('the picture never rested');
+}
+
 /** Ends of the drawn cell axes: they tell how the crystal is turned. */
 const axesOf = (root: ShadowRoot): string =>
   [...root.querySelectorAll('svg.axes line')]
@@ -55,7 +66,7 @@ describe('the crystal on screen', () => {
     await settle();
     expect(axesOf(root)).not.toBe(first);
     press(stage, 'c');
-    await settle();
+    await rest(root);
     // along c of a tetragonal cell: a to the right, b upwards, c towards the viewer, so a point in the drawing
     const ends = axesOf(root)
       .split(' ')
@@ -69,18 +80,18 @@ describe('the crystal on screen', () => {
       expect(ends.some(([x, y]) => Math.abs(x! - end[0]!) === 0 && Math.abs(y! - end[1]!) === 0)).toBe(true);
     }
     press(stage, '0');
-    await settle();
+    await rest(root);
     expect(axesOf(root)).toBe(first);
   });
 
   it('has the same by buttons', async () => {
     const root = await drawnPage();
     press(stageOf(root), 'a');
-    await settle();
+    await rest(root);
     const byKey = axesOf(root);
     press(stageOf(root), '0');
     root.querySelector<HTMLElement>('[aria-label="Look along a"]')!.click();
-    await settle();
+    await rest(root);
     expect(axesOf(root)).toBe(byKey);
     for (const button of root.querySelectorAll('button')) {
       const box = button.getBoundingClientRect();
@@ -92,7 +103,7 @@ describe('the crystal on screen', () => {
     const root = await drawnPage();
     const stage = stageOf(root);
     press(stage, 'c');
-    await settle();
+    await rest(root);
     // a grid of presses finds the atoms wherever the fit put them
     const found = new Set<number>();
     for (let x = 20; x < stage.clientWidth; x += 12) {
