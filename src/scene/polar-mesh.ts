@@ -15,7 +15,7 @@ export const polarFrequencies = [4, 6, 8, 12, 16, 24, 32, 48, 64] as const;
 
 /**
  * Level for a surface whose largest radius is `radiusPx` on screen (in the pixels or samples that are drawn): a chord of
- * angle δ cuts at most 3 R δ²/8 off the tip of a lobe, R cos² θ, which is kept below 0.2 of a pixel until the levels end.
+ * angle δ cuts 3 R δ²/8 off the tip of a lobe, R cos² θ: about 0.2 of a pixel, 0.4 at most, until the levels end.
  */
 export function polarLevel(radiusPx: number): number {
   const wanted = 1.71 * Math.sqrt(Math.max(0, radiusPx));
