@@ -1,5 +1,5 @@
 import { mkdtemp, rm } from 'node:fs/promises';
-import { tmpdir } from 'node:os';
+import { loadavg, tmpdir } from 'node:os';
 import { join } from 'node:path';
 import type { Browser, Page } from 'playwright';
 import { chromium } from 'playwright';
@@ -63,6 +63,7 @@ it('rows 1 to 4 and 6: frames by the CPU renderer, by WebGL in software, by an i
   console.log(times);
   recordResult('raster-frames', {
     sizes,
+    loadWhenMeasured: loadavg()[0]!,
     meshTimesOfCpuFrame: times.slice(0, 3).map(({ mesh, raster }) => mesh / raster),
     webglTimesOfCpuFrame: times.map(({ webgl, raster }) => webgl / raster),
     growthFrom2000To50000: times[3]!.raster / times[1]!.raster,
@@ -75,6 +76,9 @@ it('rows 1 to 4 and 6: frames by the CPU renderer, by WebGL in software, by an i
 it('row 5: a still of 4096 × 4096 with 2 × 2 samples by the CPU against WebGL without', async () => {
   const { raster, webgl } = await page.evaluate(() => window.stillTimes(4096));
   console.log({ raster, webgl });
-  recordResult('raster-still', { cpuSmoothedAgainstWebglUnsmoothed: raster / webgl });
+  recordResult('raster-still', {
+    loadWhenMeasured: loadavg()[0]!,
+    cpuSmoothedAgainstWebglUnsmoothed: raster / webgl,
+  });
   expect(raster).toBeGreaterThan(0);
 });
