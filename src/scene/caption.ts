@@ -211,7 +211,8 @@ function markSentences({ polyhedra, occupancy, hasDisorderPatterns, labels }: Ca
   if (occupancy.hasPartial)
     sentences.push('Pale parts of spheres: the share of cells in which no atom is there.');
   if (hasDisorderPatterns) sentences.push('Stripes and dots mark further alternatives of disorder.');
-  if (labels) sentences.push(`Labels: ${labels}.`);
+  // "a.u." brings its own full stop
+  if (labels) sentences.push(`Labels: ${labels}`.replace(/\.?$/, '.'));
   return sentences;
 }
 
