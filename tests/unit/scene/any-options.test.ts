@@ -119,7 +119,7 @@ function expectSound(scene: Scene): void {
   }
   expect(Number.isFinite(bounds.radiusAngstrom) && bounds.radiusAngstrom > 0).toBe(true);
   expect(scene.caption).toMatch(/^[A-Z].*\.$/);
-  expect(scene.caption).not.toMatch(/undefined|null|NaN|\.\.|  /);
+  expect(scene.caption).not.toMatch(/undefined|null|NaN|\.\.|\s{2}/);
   for (const { pickId, quadric } of scene.labels) expect(quadrics.pickIds[quadric]).toBe(pickId);
   expect(scene.scaleStatement === null).toBe(scene.scale === null);
   expect(structuredClone(scene)).toEqual(scene);
