@@ -39,18 +39,18 @@ export function planPolars(
     const radius =
       p.scale * Math.sqrt(xx! * xx! + yy! * yy! + zz! * zz! + 2 * (xy! * xy! + xz! * xz! + yz! * yz!));
     const least = nearness(z + radius, p.eyePx);
-    // a ball nearer than its centre, put anywhere within the radius, is seen at most so large
-    const reach = radius / least;
-    const column = columns / 2 + x / nearness(z, p.eyePx);
-    const row = rows / 2 - y / nearness(z, p.eyePx);
-    const slack = reach * (1 + Math.hypot(x, y) / p.eyePx);
+    const own = nearness(z, p.eyePx);
+    const column = columns / 2 + x / own;
+    const row = rows / 2 - y / own;
+    // no point of the ball is seen farther from the image of its centre
+    const slack = (radius / least) * (1 + Math.hypot(x, y) / (p.eyePx * own));
     const isSeen =
       least >= leastNearness &&
       column + slack > 0 &&
       column - slack < columns &&
       row + slack > firstRow &&
       row - slack < endRow;
-    levels[k] = isSeen ? polarLevel(radius / nearness(z, p.eyePx)) : -1;
+    levels[k] = isSeen ? polarLevel(radius / own) : -1;
   }
   const finestLevel = levels.reduce((most, level) => Math.max(most, level), -1);
   const sizeOf = (level: number): number => vertexBytes * (10 * polarFrequencies[level]! ** 2 + 2);

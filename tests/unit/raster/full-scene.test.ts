@@ -61,6 +61,21 @@ describe.each(views)('all kinds of objects (%s)', (_name, chosen, polars) => {
     expect(apart / (plain!.length / 4)).toBeLessThan(2e-3);
   });
 
+  it.each(kernels)('a band is exactly the rows of the whole picture (%s)', (_kernel, makeKernel) => {
+    const rasterizer = createRasterizer(makeKernel());
+    rasterizer.setScene(scene);
+    const smooth = { ...chosen, samplesAcross: 2 };
+    const whole = rasterizer.draw(smooth).pixels;
+    for (const [first, count] of [
+      [0, 20],
+      [61, 70],
+      [150, 23],
+    ] as const) {
+      const band = rasterizer.draw(smooth, first, count);
+      expect(band.pixels).toEqual(whole.slice(4 * 211 * first, 4 * 211 * (first + count)));
+    }
+  });
+
   it.each(kernels)('what is in front in every pixel is what is picked there (%s)', (_kernel, makeKernel) => {
     const rasterizer = createRasterizer(makeKernel());
     rasterizer.setScene(scene);
