@@ -10,7 +10,8 @@ import { madeDossier } from '#tests/support/made-dossier.ts';
 type Displacement = NonNullable<SiteDossier['displacement']>;
 
 describe('probability level', () => {
-  // quantiles of χ² with 3 degrees of freedom (Abramowitz & Stegun, Handbook of Mathematical Functions, table 26.8)
+  // quantiles of χ² with 3 degrees of freedom: values from memory of the usual tables, solved again outside the project from the closed
+  // form P = erf(k/√2) − √(2/π) k exp(−k²/2) by bisection
   it.each([
     [0.005, 0.0717],
     [0.05, 0.351846],
