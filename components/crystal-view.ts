@@ -79,8 +79,8 @@ export class CrystalView extends StoreElement {
   #picture: CrystalPicture | null = null;
   #resize: ResizeObserver | null = null;
   #crystalKey: string | null = null;
-  /** What the live region says of atoms stepped to and of measurements. */
-  #spoken = '';
+  /** What the live region says: atoms stepped to, measurements. */
+  #spoken: () => string = () => '';
 
   constructor() {
     super();
@@ -141,7 +141,7 @@ export class CrystalView extends StoreElement {
       </p>
       ${sampleLine(store?.state.decisions ?? null)}
       <p class="hidden-but-spoken" id="keys">${keysInWords}</p>
-      <ellipsite-spoken-line .text=${this.#spoken}></ellipsite-spoken-line>
+      <ellipsite-spoken-line .text=${this.#spoken()}></ellipsite-spoken-line>
     `;
   }
 
@@ -201,8 +201,8 @@ export class CrystalView extends StoreElement {
     if (!derived || !scene) return;
     const key = `${derived.chosen?.sourceId} ${derived.chosen?.index} ${decisions?.settings.symmetry}`;
     const isOther = key !== this.#crystalKey;
-    if (before && this.store && state.measurements.length > before.measurements.length && !isOther)
-      this.#spoken = newestWords(this.#board.entries(this.store), this.store);
+    if (before && state.measurements.length > before.measurements.length)
+      this.#spoken = () => newestWords(this.#board, this.store);
     this.#crystalKey = key;
     if (isOther) this.#marker.clear();
     if (look !== before?.look) picture.setLook(look);
@@ -229,8 +229,7 @@ export class CrystalView extends StoreElement {
     this.requestUpdate();
   }
 
-  #selected(): ReturnType<typeof selectedPositions> {
-    const scene = this.#picture?.scene;
+  #selected(scene = this.#picture?.scene): ReturnType<typeof selectedPositions> {
     return scene ? selectedPositions(scene, this.#marker.marks, this.store?.state.selection ?? null) : [];
   }
 
@@ -297,7 +296,7 @@ export class CrystalView extends StoreElement {
       case 'step': {
         const entry = picture.stepFrom(this.pointed?.entry ?? null, command.by);
         if (entry) this.#point(entry, picture.whereIs(entry));
-        this.#spoken = entry ? pointedWords(entry, picture, store) : '';
+        this.#spoken = () => (entry ? pointedWords(entry, picture, store) : '');
         return entry !== null;
       }
       case 'choose':

@@ -54,9 +54,9 @@ export function freeMeasurementId(measurements: readonly Measurement[]): string 
 }
 
 /** The newest measurement in words: `distance Si1–O1: 1.609 Å`; empty where its value isn't known. */
-export function newestWords(entries: readonly BoardEntry[], store: Store): string {
-  const newest = entries.at(-1);
-  const crystal = measuredCrystal(store);
+export function newestWords(board: MeasurementBoard, store: Store | null): string {
+  const newest = store && board.entries(store).at(-1);
+  const crystal = store && measuredCrystal(store);
   if (!newest?.measured || !crystal) return '';
   const { measurement, measured } = newest;
   return `${kindWords[measurement.kind]} ${measuredName(measurement, crystal)}: ${valueText(measured)}`;

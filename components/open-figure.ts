@@ -1,8 +1,17 @@
-import type { CrystalView } from './crystal-view.ts';
+import type { Store } from '#src/store/store.ts';
+import type { CrystalPicture } from './crystal-picture.ts';
 import { FigureDialog } from './figure-dialog.ts';
 
+/** The element a picture is taken from. */
+interface Shown {
+  readonly renderRoot: HTMLElement | DocumentFragment;
+  readonly store: Store | null;
+  readonly picture: CrystalPicture | null;
+  readonly theme: 'light' | 'dark';
+}
+
 /** Opens the dialog for a picture to take away, with the scene, camera and look as they are on screen now. */
-export async function openFigure({ renderRoot, store, picture, theme }: CrystalView): Promise<void> {
+export async function openFigure({ renderRoot, store, picture, theme }: Shown): Promise<void> {
   if (!store || !picture) return;
   const known = renderRoot.querySelector('ellipsite-figure-dialog');
   const dialog = known instanceof FigureDialog ? known : new FigureDialog();

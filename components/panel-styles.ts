@@ -5,7 +5,7 @@ export const panelStyles = css`
   :host {
     display: block;
     background: var(--raised);
-    padding: 10px 14px 12px;
+    padding: 4px 14px 12px;
     font-size: 13px;
   }
   fieldset {

@@ -51,6 +51,7 @@ export function axesDrawing({ axes }: PictureOverlay): TemplateResult | typeof n
   const ordered = [...axes].sort((a, b) => a.depthPx - b.depthPx);
   const places = letterPlaces(ordered);
   return html`<svg class="axes" viewBox="-50 -50 100 100" aria-hidden="true">
+    ${ordered.map(({ xPx, yPx }) => svg`<line class="under" x1="0" y1="0" x2=${xPx} y2=${yPx}></line>`)}
     ${ordered.map(({ xPx, yPx }) => svg`<line x1="0" y1="0" x2=${xPx} y2=${yPx}></line>`)}
     ${ordered.map(({ letter }, i) => svg`<text x=${places[i]!.xPx} y=${places[i]!.yPx}>${letter}</text>`)}
   </svg>`;

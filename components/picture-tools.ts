@@ -92,7 +92,7 @@ export function openPanel(host: ToolsHost): TemplateResult | typeof nothing {
   };
   const name = open === 'help' ? 'Keys and gestures' : panelNames[open];
   return html`<div class="panel" role="dialog" aria-label=${name} @keydown=${closeByKey}>
-    <button class="close" aria-label="Close" @click=${() => host.close()}>×</button>
+    <div class="panel-head">${name}<button aria-label="Close" @click=${() => host.close()}>×</button></div>
     ${panelContent(host, open)}
   </div>`;
 }

@@ -113,15 +113,15 @@ export const viewStyles = css`
     width: 100px;
     height: 100px;
     overflow: visible;
-    background: radial-gradient(
-      closest-side,
-      color-mix(in srgb, var(--paper) 88%, transparent) 80%,
-      transparent
-    );
   }
   svg.axes line {
     stroke: var(--ink);
     stroke-width: 1.2;
+  }
+  svg.axes .under {
+    stroke: var(--paper);
+    stroke-width: 5;
+    opacity: 0.8;
   }
   svg.axes text {
     fill: var(--ink);
@@ -222,12 +222,18 @@ export const viewStyles = css`
       max-height: 100%;
     }
   }
-  .panel .close {
+  .panel-head {
     position: sticky;
     top: 0;
-    float: right;
     z-index: 1;
+    display: flex;
+    align-items: center;
+    justify-content: space-between;
+    padding: 4px 6px 0 14px;
     background: var(--raised);
+    font-weight: 600;
+  }
+  .panel-head button {
     font-size: 16px;
     line-height: 1;
   }

@@ -36,7 +36,7 @@ async function rest(root: ShadowRoot): Promise<void> {
 
 /** Ends of the drawn cell axes: they tell how the crystal is turned. */
 const axesOf = (root: ShadowRoot): string =>
-  [...root.querySelectorAll('svg.axes line')]
+  [...root.querySelectorAll('svg.axes line:not(.under)')]
     .map((line) => `${line.getAttribute('x2')},${line.getAttribute('y2')}`)
     .join(' ');
 
