@@ -15,11 +15,13 @@ import type { MeasureDrawing } from '#src/scene/measure-drawing.ts';
 import type { MeasuredAtom } from '#src/scene/measurement.ts';
 import type { MeasureText, PlacedLabel } from '#src/scene/place-labels.ts';
 import { placeLabels } from '#src/scene/place-labels.ts';
-import type { ProjectedAtom, Projection } from '#src/scene/project.ts';
-import { projectAtoms, projectAxes, projection, projectPoint } from '#src/scene/project.ts';
+import type { ProjectedAtom } from '#src/scene/project.ts';
+import { projectAtoms, projectAxes } from '#src/scene/project.ts';
 import type { PickEntry, Scene } from '#src/scene/scene.ts';
 import { atomsInReadingOrder } from '#src/scene/screen-atoms.ts';
 import { zoomTo } from '#src/scene/zoom-to.ts';
+import type { FlatDrawing } from './flat-drawing.ts';
+import { flattened } from './flat-drawing.ts';
 import { labelMeasure } from './label-measure.ts';
 import type { PicturePoint } from './picture-controls.ts';
 import { attachControls } from './picture-controls.ts';
@@ -275,22 +277,9 @@ export class CrystalPicture {
     };
   }
 
-  /** A drawing in space as it stands on screen: lines as point lists, the place of its text; null parts behind the eye. */
-  project({ lines, arc, textAt }: MeasureDrawing): {
-    readonly lines: readonly string[];
-    readonly textAt: PicturePoint | null;
-  } {
-    if (!this.#camera) return { lines: [], textAt: null };
-    const p: Projection = projection(this.#camera, this.#viewport);
-    const flat = (points: readonly Vec3[]): string | null => {
-      const seen = points.map((point) => projectPoint(p, point));
-      return seen.some(({ xPx }) => Number.isNaN(xPx))
-        ? null
-        : seen.map(({ xPx, yPx }) => `${xPx.toFixed(1)},${yPx.toFixed(1)}`).join(' ');
-    };
-    const all = [...lines, ...(arc ? [arc] : [])].flatMap((points) => flat(points) ?? []);
-    const at = textAt && projectPoint(p, textAt);
-    return { lines: all, textAt: at && !Number.isNaN(at.xPx) ? at : null };
+  /** A drawing in space as it stands on screen. */
+  project(drawing: MeasureDrawing): FlatDrawing {
+    return this.#camera ? flattened(drawing, this.#camera, this.#viewport) : { lines: [], textAt: null };
   }
 
   dispose(): void {
