@@ -24,7 +24,7 @@ export const panelStyles = css`
   }
   .choice {
     display: grid;
-    grid-template-columns: 84px minmax(0, 1fr);
+    grid-template-columns: 92px minmax(0, 1fr);
     margin-bottom: 2px;
   }
   .choice select {
