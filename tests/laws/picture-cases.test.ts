@@ -19,3 +19,14 @@ describe.each(kernels)('pictures by the CPU renderer, %s', (_kernel, kernel) => 
     expect(failures(picture, prepared, drawnByRaster(rasterizer, picture, prepared))).toEqual([]);
   });
 });
+
+describe('words of every picture', () => {
+  it.each(pictureCases)(
+    '%s: the caption states the scale, and a colour bar its quantity',
+    (_name, picture) => {
+      const { caption, scaleStatement, legend } = preparePicture(picture).scene;
+      expect(caption).toContain(scaleStatement ?? '');
+      expect(caption).toContain(legend?.title ?? '');
+    },
+  );
+});
