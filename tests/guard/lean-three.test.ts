@@ -1,7 +1,7 @@
 import { existsSync, readFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
-import { standIns } from '#src/render/lean-three.ts';
+import { leftOut, standIns } from '#src/render/lean-three.ts';
 import { projectRoot } from './project-files.ts';
 
 const source = join(projectRoot, 'node_modules/three/src');
@@ -15,6 +15,12 @@ describe('three.js without what is not used', () => {
   it.each(Object.keys(standIns))('%s is part of three.js, with the exports its stand-in has', (name) => {
     expect(existsSync(join(source, name))).toBe(true);
     expect(exported(standIns[name]!)).toEqual(exported(readFileSync(join(source, name), 'utf8')));
+  });
+
+  it.each(Object.entries(leftOut))('%s still has what is left out of it', (name, names) => {
+    const text = readFileSync(join(source, name), 'utf8');
+    const missing = names.split(' ').filter((one) => !new RegExp(`\\b${one}(?: =|\\()`).test(text));
+    expect(missing).toEqual([]);
   });
 
   it('is replaced part by part only where src/render draws with raw shader materials', () => {
