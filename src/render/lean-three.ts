@@ -73,23 +73,20 @@ export const standIns: Readonly<Record<string, string>> = {
   'geometries/PlaneGeometry.js': 'export class PlaneGeometry {}',
 };
 
-/** Functions and methods that nothing here calls, by module: they throw where somebody does. */
+/** Functions and methods that nothing here calls, by module: methods are gone, functions throw where somebody calls them. */
 export const leftOut: Readonly<Record<string, string>> = {
-  'core/BufferAttribute.js': 'toJSON copy applyMatrix3',
+  'core/BufferAttribute.js':
+    'toJSON copy applyMatrix3 transformDirection applyNormalMatrix applyMatrix4 copyAt',
   'core/BufferGeometry.js':
-    'computeTangents computeVertexNormals toJSON toNonIndexed copy computeBoundingBox setFromPoints applyMatrix4',
-  'core/Object3D.js': 'toJSON copy attach lookAt applyMatrix4',
+    'computeTangents computeVertexNormals toJSON toNonIndexed copy computeBoundingBox setFromPoints applyMatrix4 normalizeNormals center lookAt scale translate rotateX rotateY rotateZ applyQuaternion',
+  'core/Object3D.js':
+    'toJSON copy attach lookAt applyMatrix4 clone traverseAncestors traverseVisible getWorldDirection getWorldScale getWorldQuaternion getWorldPosition getObjectsByProperty getObjectByProperty worldToLocal localToWorld translateOnAxis rotateOnAxis rotateOnWorldAxis setRotationFromMatrix setRotationFromAxisAngle',
   'core/RenderTarget.js': 'copy',
   'extras/ImageUtils.js': 'sRGBToLinear getDataURL',
   'extras/TextureUtils.js': 'getByteLength contain cover',
   'materials/Material.js': 'toJSON fromJSON copy',
   'materials/ShaderMaterial.js': 'toJSON fromJSON copy',
-  'math/Box3.js': 'expandByObject intersectsTriangle intersectsPlane applyMatrix4 satForAxes',
-  'math/Color.js': 'setStyle getStyle setColorName getHSL setHSL',
-  'math/Frustum.js': 'intersectsObject intersectsSprite',
-  'math/Matrix4.js': 'makePerspective makeOrthographic lookAt extractRotation makeRotationAxis',
-  'math/Quaternion.js': 'slerpFlat slerp setFromUnitVectors multiplyQuaternionsFlat random',
-  'math/Vector4.js': 'setAxisAngleFromRotationMatrix setAxisAngleFromQuaternion',
+  'math/Box3.js': 'satForAxes',
   'objects/Mesh.js':
     '_computeIntersections raycast checkGeometryIntersection checkIntersection getVertexPosition copy',
   'renderers/WebGLRenderer.js':
@@ -98,12 +95,37 @@ export const leftOut: Readonly<Record<string, string>> = {
   'renderers/webgl/WebGLClipping.js': 'setState projectPlanes',
   'renderers/webgl/WebGLGeometries.js': 'updateWireframeAttribute getWireframeAttribute',
   'renderers/webgl/WebGLPrograms.js': 'getProgramCacheKeyBooleans getProgramCacheKeyParameters',
-  'renderers/webgl/WebGLState.js': 'reset updateUBOMapping uniformBlockBinding',
+  'renderers/webgl/WebGLState.js':
+    'reset updateUBOMapping uniformBlockBinding texImage3D texStorage3D texSubImage3D compressedTexImage2D compressedTexImage3D compressedTexSubImage2D compressedTexSubImage3D',
   'renderers/webgl/WebGLTextures.js':
     'uploadTexture uploadCubeTexture updateTexture setupDepthTexture initTexture resizeImage verifyColorSpace getDimensions getTextureCacheKey getMipLevels setTexture2DArray setTexture3D setTextureCube',
+  'renderers/webgl/WebGLUniforms.js':
+    'setValueT6Array setValueT3DArray setValueT2DArrayArray setValueT6 setValueT3D1 setValueT2DArray1 setValueV1ui setValueV2ui setValueV3ui setValueV4ui setValueM2 setValueM2Array setValueM3Array setValueM4Array',
   'scenes/Scene.js': 'toJSON copy',
   'textures/Texture.js': 'toJSON copy transformUv',
   'textures/TextureSource.js': 'toJSON serializeImage',
+};
+
+/** All methods that are called of some classes of numbers, where these are few. */
+export const kept: Readonly<Record<string, string>> = {
+  'math/Box3.js': 'constructor expandByPoint getCenter isEmpty makeEmpty setFromBufferAttribute copy clone',
+  'math/Color.js': 'constructor copy clone getRGB set setHex setRGB setScalar',
+  'math/Euler.js':
+    'constructor _onChange _onChangeCallback copy clone set setFromQuaternion setFromRotationMatrix',
+  'math/Frustum.js': 'constructor setFromProjectionMatrix copy clone',
+  'math/Matrix3.js':
+    'constructor copy getNormalMatrix identity invert set setFromMatrix4 setUvTransform transpose',
+  'math/Matrix4.js':
+    'constructor compose copy decompose determinant determinantAffine fromArray identity invert makeRotationFromQuaternion multiply multiplyMatrices premultiply set setPosition toArray',
+  'math/Plane.js': 'constructor copy clone normalize set setComponents',
+  'math/Quaternion.js':
+    'constructor _onChange _onChangeCallback copy clone identity set setFromEuler setFromRotationMatrix',
+  'math/Sphere.js': 'constructor copy clone set applyMatrix4 isEmpty makeEmpty',
+  'math/Vector2.js': 'constructor copy clone equals floor multiplyScalar set',
+  'math/Vector3.js':
+    'constructor addVectors applyMatrix4 clone copy crossVectors distanceToSquared dot fromArray fromBufferAttribute length lengthSq max min multiplyScalar set setFromMatrixPosition sub subVectors',
+  'math/Vector4.js':
+    'constructor applyMatrix4 clone copy equals floor fromArray multiplyScalar round set toArray',
 };
 
 /** Kinds of things that are in no scene of ours; `thing.isSprite` and the like are false. */
@@ -130,6 +152,7 @@ const isNode = (value: unknown): value is SyntaxNode =>
 
 /** Name of what a node defines: a declared function, a method, or a function that is assigned to a property. */
 function definedName(node: SyntaxNode): unknown {
+  if (node.kind === 'get' || node.kind === 'set') return undefined;
   const assigned = isNode(node.left) ? node.left.property : undefined;
   const holder = { FunctionDeclaration: node.id, MethodDefinition: node.key, AssignmentExpression: assigned }[
     node.type
@@ -137,23 +160,29 @@ function definedName(node: SyntaxNode): unknown {
   return isNode(holder) ? holder.name : undefined;
 }
 
-/** Bodies of the named functions, none inside another. */
-function bodiesOf(names: ReadonlySet<unknown>, node: SyntaxNode, found: SyntaxNode[] = []): SyntaxNode[] {
-  if (names.has(definedName(node))) {
-    const whole = [node, node.value, node.right].find((part) => isNode(part) && isNode(part.body));
-    if (isNode(whole) && isNode(whole.body)) return [...found, whole.body];
+/** Parts of a module to cut: whole methods, and the bodies of functions; none inside another. */
+function partsToCut(isCut: (name: unknown, isMethod: boolean) => boolean, node: SyntaxNode): SyntaxNode[] {
+  const isMethod = node.type === 'MethodDefinition';
+  if (isCut(definedName(node), isMethod)) {
+    const whole = [node, node.right].find((part) => isNode(part) && isNode(part.body));
+    if (isMethod) return [node];
+    if (isNode(whole) && isNode(whole.body)) return [whole.body];
   }
   const children = Object.values(node).flat().filter(isNode);
-  return children.reduce((sum, child) => bodiesOf(names, child, sum), found);
+  return children.flatMap((child) => partsToCut(isCut, child));
 }
 
-/** The module with the bodies of these functions replaced by a throw. */
-function withoutBodies(code: string, tree: SyntaxNode, names: readonly string[]): string {
-  const bodies = bodiesOf(new Set(names), tree).sort((a, b) => b.start - a.start);
-  return bodies.reduce(
-    (text, { start, end }) => `${text.slice(0, start)}{ throw new Error('left out') }${text.slice(end)}`,
-    code,
-  );
+/** The module without the methods and functions that the tables leave out. */
+function shortened(code: string, tree: SyntaxNode, module: string): string {
+  const cut = new Set<unknown>(leftOut[module]?.split(' '));
+  const methods = module in kept ? new Set<unknown>(kept[module]?.split(' ')) : null;
+  const isCut = (name: unknown, isMethod: boolean): boolean =>
+    cut.has(name) || (isMethod && methods !== null && name !== undefined && !methods.has(name));
+  const parts = partsToCut(isCut, tree).sort((a, b) => b.start - a.start);
+  return parts.reduce((text, { type, start, end }) => {
+    const instead = type === 'MethodDefinition' ? '' : "{ throw new Error('left out of three.js') }";
+    return text.slice(0, start) + instead + text.slice(end);
+  }, code);
 }
 
 const sources = /[\\/]three[\\/]src[\\/](.+)$/;
@@ -170,12 +199,11 @@ export function leanThree(): Plugin {
     transform(code, id) {
       const module = moduleOf(id);
       if (module === undefined || module in standIns) return null;
-      const names = leftOut[module]?.split(' ') ?? [];
-      const shorter =
-        names.length > 0 ? withoutBodies(code, this.parse(code) as unknown as SyntaxNode, names) : code;
+      const isTabled = module in leftOut || module in kept;
+      const shorter = isTabled ? shortened(code, this.parse(code) as unknown as SyntaxNode, module) : code;
       const plain = module.startsWith('renderers/')
         ? shorter.replace(absent, 'false').replace(/\b(parameters|material)\.isRawShaderMaterial\b/g, 'true')
-        : shorter;
+        : shorter.replace('Color.NAMES = _colorKeywords;', '');
       return { code: plain, map: null };
     },
   };
