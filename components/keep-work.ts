@@ -7,13 +7,11 @@ const patienceMs = 3000;
 /** What keeps this tab's work; null, said once, where the browser has no storage for it. */
 export async function findWork(store: Store): Promise<Keeper | null> {
   try {
-    const [{ openKeeper }, { sha256OfBytes }] = await Promise.all([
+    const [{ openKeeper }, { createHasher }] = await Promise.all([
       import('#src/store/keeper.ts'),
       import('#src/store/hash.ts'),
     ]);
-    const hashOf = async (blob: Blob): Promise<string> =>
-      sha256OfBytes(new Uint8Array(await blob.arrayBuffer()));
-    return await Promise.race([openKeeper(hashOf), tooLate()]);
+    return await Promise.race([openKeeper(createHasher()), tooLate()]);
   } catch (error) {
     const { reasonInWords } = await import('#src/store/keeper.ts');
     store.setKeeping({ status: 'failed', reason: reasonInWords(error) });
