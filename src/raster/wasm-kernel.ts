@@ -3,6 +3,8 @@ import { javaScriptKernel } from './kernel.ts';
 import { kernelText } from './kernel-text.generated.ts';
 
 const pageBytes = 65_536;
+/** The letter that stands for byte 0 in the text of the kernel. */
+const firstLetter = 0x100;
 
 interface KernelExports {
   readonly prepare: () => void;
@@ -10,7 +12,7 @@ interface KernelExports {
 }
 
 function kernelBytes(): Uint8Array<ArrayBuffer> {
-  return Uint8Array.from(atob(kernelText), (letter) => letter.charCodeAt(0));
+  return Uint8Array.from(kernelText, (letter) => letter.charCodeAt(0) - firstLetter);
 }
 
 /** The kernel in WebAssembly with SIMD; null where the engine has no such thing or its policy forbids it. */
