@@ -37,8 +37,8 @@ export interface PlacedAtoms {
 type Score = readonly [formula: number, multiplicities: number, density: number, clashes: number];
 
 /**
- * Where a name leaves origin or setting open, or only a number stands for its standard setting, the operations that fit what the file says beside it: formula × Z, then stated
- * multiplicities, then the density, then no atoms on top of each other. Where that does not decide, the first in the tables,
+ * Where a name leaves origin or setting open, or only a number stands for its standard setting, the operations that fit what the
+ * file says beside it: formula × Z, then stated multiplicities, then the density, then no atoms on top of each other. Where that does not decide, the first in the tables,
  * and `cif-origin-open` warns. The choice is told in any case (`cif-origin-chosen`).
  */
 export function chooseOrigin(
@@ -56,8 +56,13 @@ export function chooseOrigin(
   const candidates = [choice.symmetry, ...alternatives];
   const scores = candidates.map(score);
   if (atoms.sites.length <= mostSitesTried && isRuledOut(scores[0]!, formula)) {
-    candidates.push(...otherSettings);
-    scores.push(...otherSettings.map(score));
+    // one that is ruled out itself is no better ground for leaving the standard
+    for (const other of otherSettings) {
+      const otherScore = score(other);
+      if (isRuledOut(otherScore, formula)) continue;
+      candidates.push(other);
+      scores.push(otherScore);
+    }
   }
   let best = 0;
   scores.forEach((score, i) => {
