@@ -8,11 +8,9 @@ import './crystal-view.ts';
 import './drop-zone.ts';
 import './page-header.ts';
 import type { Panel } from './panel.ts';
-import './problems-drawer.ts';
 import './progress-bar.ts';
 import './site-card.ts';
 import './site-table.ts';
-import './source-view.ts';
 import { StoreElement } from './store-element.ts';
 import { shared, themes } from './styles.ts';
 import { effectiveTheme, keepTheme, watchTheme } from './theme.ts';
@@ -72,6 +70,7 @@ export class Workbench extends StoreElement {
     }
     if (!state.refused && before?.refused && this.#isOwnOpening && this.panel === 'problems')
       this.panel = null;
+    if (state.shownPlace) void import('./source-view.ts');
     this.#speak(state, before);
   }
 
@@ -147,6 +146,7 @@ export class Workbench extends StoreElement {
 
   #show(panel: NonNullable<Panel>): void {
     if (this.panel === null) this.#opener = deepestFocus();
+    if (panel === 'problems') void import('./problems-drawer.ts');
     if (panel === 'settings') void import('./settings-panel.ts');
     if (panel === 'case') void import('./case-panel.ts');
     this.panel = panel;

@@ -198,6 +198,7 @@ describe('the page', () => {
     expect(textOf(button)).toBe('1 warning, 1 note');
     button.focus();
     button.click();
+    await customElements.whenDefined('ellipsite-problems-drawer');
     await settle();
     const drawer = page.part('ellipsite-problems-drawer').shadowRoot;
     const first = textOf(drawer.querySelector('li'));

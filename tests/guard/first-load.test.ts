@@ -81,7 +81,7 @@ describe('workers', () => {
   });
 
   it('load nothing that needs a document', () => {
-    expect(workers()).toHaveLength(3);
+    expect(workers().length).toBeGreaterThanOrEqual(3);
     for (const name of withImports(workers().map((worker) => `assets/${worker}`))) {
       expect(textOf(name), name).not.toMatch(
         /\bcustomElements\.define\b|\bdocument\.(?:body|createElement|head)\b/,
