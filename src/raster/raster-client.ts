@@ -1,3 +1,4 @@
+import { ownScene } from './own-scene.ts';
 import type { RasterReply, RasterRequest } from './raster-protocol.ts';
 import type { RasterBand, Rasterizer, RasterScene } from './rasterizer.ts';
 import { createRasterizer } from './rasterizer.ts';
@@ -27,7 +28,7 @@ export interface RasterClient {
 
 /** The part of a Worker that is used, so that tests can stand in for it. */
 export interface RasterWorker {
-  postMessage(message: RasterRequest): void;
+  postMessage(message: RasterRequest, transfer?: Transferable[]): void;
   terminate(): void;
   onmessage: ((event: { data: RasterReply }) => void) | null;
   onerror: ((event: { message?: string }) => void) | null;
@@ -105,7 +106,7 @@ class WorkerRasterClient implements RasterClient {
     };
     this.#states = null;
     this.#local?.setScene(this.#scene);
-    this.#tell({ kind: 'scene', scene: this.#scene });
+    for (const worker of this.#workers ?? []) giveScene(worker, this.#scene);
   }
 
   setStates(states: Uint8Array): void {
@@ -168,7 +169,7 @@ class WorkerRasterClient implements RasterClient {
     const worker = this.#start();
     worker.onmessage = ({ data }) => this.#receive(worker, data);
     worker.onerror = () => this.#giveUp();
-    if (this.#scene) worker.postMessage({ kind: 'scene', scene: this.#scene });
+    if (this.#scene) giveScene(worker, this.#scene);
     if (this.#states) worker.postMessage({ kind: 'states', states: this.#states });
     return worker;
   }
@@ -242,6 +243,12 @@ class WorkerRasterClient implements RasterClient {
     this.#job = null;
     job?.settle(this.#drawHere(job.view));
   }
+}
+
+/** Gives a worker the scene as its own. */
+function giveScene(worker: RasterWorker, scene: RasterScene): void {
+  const own = ownScene(scene);
+  worker.postMessage({ kind: 'scene', scene: own.scene }, own.buffers);
 }
 
 /** Row counts of as many bands that would have taken equally long, from the times of these. */

@@ -1,4 +1,5 @@
 import type { ReportProgress } from '#src/base/progress.ts';
+import { unpackPicks } from '#src/scene/packed-picks.ts';
 import type {
   CaseInput,
   DerivedCase,
@@ -82,8 +83,7 @@ class WorkerEngineClient implements EngineClient {
       input,
       query,
     } as const;
-    const take = (reply: EngineReply): QueryAnswer | null => (reply.kind === 'answer' ? reply.answer : null);
-    return this.#request(request, () => undefined, take) as Promise<Queries[Kind]['answer']>;
+    return this.#request(request, () => undefined, answerIn) as Promise<Queries[Kind]['answer']>;
   }
 
   lines(source: SourceFile, first: number, count: number): Promise<LinePage> {
@@ -151,6 +151,11 @@ class WorkerEngineClient implements EngineClient {
     this.#pending.clear();
     for (const { reject } of waiting) reject(new Error(message));
   }
+}
+
+function answerIn(reply: EngineReply): QueryAnswer | null {
+  if (reply.kind === 'scene') return { ...reply.scene, picks: unpackPicks(reply.scene.picks) };
+  return reply.kind === 'answer' ? reply.answer : null;
 }
 
 export function createEngineClient(

@@ -1,4 +1,6 @@
 import type { Problem } from '#src/base/problem.ts';
+import type { PackedPicks } from '#src/scene/packed-picks.ts';
+import type { Scene } from '#src/scene/scene.ts';
 import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
@@ -108,9 +110,13 @@ export type EngineRequest =
       readonly count: number;
     };
 
+/** A picture on its way: typed arrays, which are given over, and little else. */
+export type SentScene = Omit<Scene, 'picks'> & { readonly picks: PackedPicks };
+
 export type EngineReply =
   | { readonly id: number; readonly kind: 'progress'; readonly share: number; readonly stage: string }
   | { readonly id: number; readonly kind: 'derived'; readonly result: DerivedCase }
   | { readonly id: number; readonly kind: 'answer'; readonly answer: QueryAnswer }
+  | { readonly id: number; readonly kind: 'scene'; readonly scene: SentScene }
   | { readonly id: number; readonly kind: 'lines'; readonly page: LinePage }
   | { readonly id: number; readonly kind: 'failed'; readonly message: string };

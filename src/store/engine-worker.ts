@@ -1,5 +1,7 @@
 import moyoUrl from '@spglib/moyo-wasm/moyo_wasm_bg.wasm?url';
 import { loadSymmetryTables } from '#src/crystal/symmetry-tables.ts';
+import { packPicks } from '#src/scene/packed-picks.ts';
+import type { Scene } from '#src/scene/scene.ts';
 import type { EngineReply, EngineRequest } from './engine-protocol.ts';
 import { transferablesOf } from './engine-queries.ts';
 import { createEngine } from './engine.ts';
@@ -14,6 +16,11 @@ const engine = createEngine(async () => {
 const reply = (message: EngineReply, transfer: Transferable[] = []): void =>
   self.postMessage(message, { transfer });
 
+function sendScene(id: number, scene: Scene): void {
+  const sent = { ...scene, picks: packPicks(scene.picks) };
+  reply({ id, kind: 'scene', scene: sent }, transferablesOf(sent));
+}
+
 self.onmessage = async ({ data: request }: MessageEvent<EngineRequest>): Promise<void> => {
   const { id } = request;
   try {
@@ -23,7 +30,8 @@ self.onmessage = async ({ data: request }: MessageEvent<EngineRequest>): Promise
     }
     if (request.kind === 'query') {
       const answer = await engine.answer(request.derivation, request.input, request.query);
-      reply({ id, kind: 'answer', answer }, transferablesOf(answer));
+      if (request.query.kind === 'scene') sendScene(id, answer as Scene);
+      else reply({ id, kind: 'answer', answer }, transferablesOf(answer));
       return;
     }
     const report = (share: number, stage: string): void => reply({ id, kind: 'progress', share, stage });

@@ -1,8 +1,11 @@
 import { describe, expect, it } from 'vitest';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
+import { buildScene } from '#src/scene/build-scene.ts';
+import { packPicks } from '#src/scene/packed-picks.ts';
 import { Cancelled, createEngineClient } from '#src/store/engine-client.ts';
 import type { WorkerLike } from '#src/store/engine-client.ts';
 import type { CaseInput, EngineReply, EngineRequest } from '#src/store/engine-protocol.ts';
+import { dossierOfText } from '#tests/support/derive.ts';
 import { fixtureCase } from '#tests/support/dossier-fixture.ts';
 
 class FakeWorker implements WorkerLike {
@@ -31,6 +34,7 @@ function clientWithWorkers() {
 }
 
 const input: CaseInput = { sources: [], structure: null, settings: defaultSettings };
+const twoAtoms = '2\nLattice="4 0 0 0 4 0 0 0 4"\nNa 0 0 0\nCl 2 2 2\n';
 const source = { id: 's', name: 'a.cif', blob: new Blob([]) };
 
 describe('the engine client', () => {
@@ -44,6 +48,19 @@ describe('the engine client', () => {
     workers[0]!.onmessage?.({ data: { id, kind: 'derived', result: fixtureCase() } });
     expect((await derived).crystal?.name).toBe('invented aluminate');
     expect(seen).toEqual([[0.25, 'reading']]);
+  });
+
+  it('gives a picture out with its picks, which travel packed', async () => {
+    const { client, workers } = clientWithWorkers();
+    const deriving = client.derive(input, () => undefined);
+    const answer = (data: EngineReply): void => workers[0]!.onmessage?.({ data });
+    answer({ id: workers[0]!.received[0]!.id, kind: 'derived', result: fixtureCase() });
+    const asked = client.ask(await deriving, 'scene', {});
+    const scene = buildScene(dossierOfText('two.xyz', twoAtoms));
+    const sent = { ...scene, picks: packPicks(scene.picks) };
+    answer({ id: workers[0]!.received[1]!.id, kind: 'scene', scene: sent });
+    expect(scene.picks.length).toBeGreaterThan(1);
+    expect((await asked).picks).toEqual(scene.picks);
   });
 
   it('ends the worker on cancel and asks the next one for what else was wanted', async () => {
