@@ -151,7 +151,7 @@ class MemoryRasterizer implements Rasterizer {
       [S.sortedAt, 4 * S.entrySize * objects],
       [S.binsAt, 4 * (S.binCount + 2)],
       [S.meshTableAt, 8 * meshes.length],
-      [S.polarMeshesAt, 8 * (polars?.count ?? 0)],
+      [S.polarMeshesAt, 4 * (polars?.count ?? 0)],
     ];
     const reserved = empty.map(([slot, size]) => ({ slot, at: places.take(size) }));
     this.#sceneEnd = places.end;
@@ -195,6 +195,7 @@ class MemoryRasterizer implements Rasterizer {
       height * across,
       firstRow,
       endRow,
+      view.isMoving,
     );
     if (plan.finestLevel > this.#finestLevel) {
       this.#finestLevel = plan.finestLevel;
@@ -224,6 +225,7 @@ class MemoryRasterizer implements Rasterizer {
       [S.outDepthAt, places.take(wantsIds ? picture : 0)],
       [S.facetsAt, places.take(facets.byteLength)],
     ];
+    const pool = places.take(polars?.poolBytes ?? 0);
     const vertices = places.take(polars?.vertexBytes ?? 0);
     const buffer = this.#kernel.reserve(places.end);
     const i = new Int32Array(buffer);
@@ -231,10 +233,13 @@ class MemoryRasterizer implements Rasterizer {
     i[S.stride] = stride;
     i[S.colourStride] = across > 1 ? stride : columns;
     i[S.facetCount] = facets.length / S.facetSize;
-    i[S.polarScratchAt] = vertices;
+    i[S.polarPoolAt] = pool;
+    i[S.polarFree] = pool;
+    i[S.polarVerticesAt] = vertices;
+    i[S.polarPoolEnd] = pool + (polars?.poolBytes ?? 0);
+    i[S.polarEpoch] = 0;
     new Float32Array(buffer).set(facets, i[S.facetsAt]! >> 2);
-    const meshes = polars?.meshes.map((word, k) => (k % 2 === 1 ? vertices + word : word));
-    if (meshes) i.set(meshes, i[S.polarMeshesAt]! >> 2);
+    if (polars) i.set(polars.levels, i[S.polarMeshesAt]! >> 2);
     return buffer;
   }
 

@@ -1,5 +1,6 @@
 import type { Scene } from '#src/scene/scene.ts';
-import { polarMesh } from '#src/scene/polar-mesh.ts';
+import type { PolarMesh } from '#src/scene/polar-mesh.ts';
+import { polarMesh, polarReach } from '#src/scene/polar-mesh.ts';
 import * as S from './slots.ts';
 import { byteSteps, fillTables, fillTints } from './tints.ts';
 
@@ -42,6 +43,7 @@ export function sceneArrays({ quadrics, cylinders, lines, polars }: RasterScene)
     arrays.push(
       [S.polarCentresAt, polars.centres],
       [S.polarTensorsAt, polars.tensors],
+      [S.polarReachesAt, polarReaches(polars.tensors)],
       [S.positiveTintsAt, tintsOf(polars.positiveColours)],
       [S.negativeTintsAt, tintsOf(polars.negativeColours)],
     );
@@ -49,11 +51,45 @@ export function sceneArrays({ quadrics, cylinders, lines, polars }: RasterScene)
   return arrays;
 }
 
-/** Directions and triangles of the meshes up to a level, in turn. */
+function polarReaches(tensors: Float32Array): Float32Array {
+  return Float32Array.from(
+    { length: tensors.length / 6 },
+    (_none, k) => 1.0001 * polarReach(tensors.subarray(6 * k, 6 * k + 6)),
+  );
+}
+
+const halves = new Map<number, PolarMesh>();
+
+/** A mesh whose directions k and k + half of their number are opposite; only the first half of them is listed. */
+function halfMesh(level: number): PolarMesh {
+  const known = halves.get(level);
+  if (known) return known;
+  const { directions, triangles } = polarMesh(level);
+  const count = directions.length / 3;
+  const keyOf = (k: number, sign: 1 | -1): string =>
+    [0, 1, 2].map((axis) => Math.round(sign * 1e5 * directions[3 * k + axis]!) + 0).join();
+  const places = new Map<string, number>();
+  for (let k = 0; k < count; k++) places.set(keyOf(k, 1), k);
+  const moved = new Int32Array(count).fill(-1);
+  const half = new Float32Array(directions.length / 2);
+  let at = 0;
+  for (let k = 0; k < count; k++) {
+    if (moved[k]! >= 0) continue;
+    half.set(directions.subarray(3 * k, 3 * k + 3), 3 * at);
+    moved[k] = at;
+    moved[places.get(keyOf(k, -1))!] = at + count / 2;
+    at += 1;
+  }
+  const mesh = { directions: half, triangles: triangles.map((k) => moved[k]!) };
+  halves.set(level, mesh);
+  return mesh;
+}
+
+/** Directions (half of them) and triangles of the meshes up to a level, in turn. */
 export function meshArrays(finestLevel: number): (Float32Array | Uint32Array)[] {
   const arrays: (Float32Array | Uint32Array)[] = [];
   for (let level = 0; level <= finestLevel; level++) {
-    const { directions, triangles } = polarMesh(level);
+    const { directions, triangles } = halfMesh(level);
     arrays.push(directions, triangles);
   }
   return arrays;

@@ -29,6 +29,10 @@ export const hoveredPixel = 14;
 export const colourStride = 15;
 export const polarCount = 16;
 export const facetCount = 17;
+/** Of what is in the pool: polar surfaces with another number in their record have no patch there. */
+export const polarEpoch = 18;
+/** Address of what is free in the pool. */
+export const polarFree = 19;
 
 // addresses
 export const centresAt = 20;
@@ -65,18 +69,17 @@ export const polarCentresAt = 49;
 export const polarTensorsAt = 50;
 export const positiveTintsAt = 51;
 export const negativeTintsAt = 52;
-/** Two words a polar surface: level of its mesh, -1 where it isn't drawn, and address of its vertices. */
+/** One word a polar surface: level of its mesh, -1 where it isn't drawn. */
 export const polarMeshesAt = 53;
-/** Four words a level: address and count of directions, address and count of triangles. */
+/** Four words a level: address and count of directions (half of them, without the opposite ones), address and count of triangles. */
 export const meshTableAt = 54;
 /** Facets from back to front, `facetSize` floats each. */
 export const facetsAt = 55;
 /** Cosine and sine of 2π·k/255 for k from 0 to 255. */
 export const circleTableAt = 56;
-/** Vertices of one polar surface at a time: of those whose own address it is. */
-export const polarScratchAt = 57;
-/** Object whose vertices stand there. */
-export const polarInScratch = 58;
+/** Room for the patches of polar surfaces, and its end. */
+export const polarPoolAt = 57;
+export const polarPoolEnd = 58;
 /** One a quadric: largest distance of its surface from the centre at most, Å. */
 export const reachesAt = 59;
 
@@ -116,6 +119,10 @@ export const cylinderRimPer = 96;
 export const cylinderRimWidth = 97;
 /** As leastNearness of src/scene/perspective.ts. */
 export const leastNearness = 98;
+/** An address: one a polar surface, its largest radius, Å. */
+export const polarReachesAt = 99;
+/** An address: projected vertices of one polar surface. */
+export const polarVerticesAt = 100;
 
 // sizes of what the addresses lead to, in units of four bytes
 export const recordSize = 48;
@@ -123,6 +130,8 @@ export const recordSize = 48;
 export const tintSize = 10;
 /** Of a polar surface's vertices: column, row, depth, signed radius. */
 export const vertexSize = 4;
+/** Samples of a polar surface's patch, unless sixteen rows have more. */
+export const mostPatchSamples = 1_048_576;
 /** Of facets: column, row and depth of three corners, sRGB from 0 to 255, opacity. */
 export const facetSize = 13;
 export const meshSize = 4;
@@ -247,3 +256,11 @@ export const sBandInk = 16;
 export const sRimInk = 17;
 export const sIsDark = 18;
 export const sNegativeIsDark = 19;
+/** Words: address of its patch in the pool and the pool's epoch then; columns and rows of the patch; last row that needs no other. */
+export const sPatch = 21;
+export const sEpoch = 22;
+export const sLeft = 23;
+export const sTop = 24;
+export const sRight = 25;
+export const sBottom = 26;
+export const sUntil = 27;

@@ -20,6 +20,8 @@ export interface RasterView {
   readonly pixelRatio: number;
   /** Samples across a pixel: 1 is fast, 2 or 3 smooth. */
   readonly samplesAcross: number;
+  /** The picture is soon replaced: meshes of polar surfaces are half as fine. */
+  readonly isMoving?: boolean;
 }
 
 /** Size of the picture, pixels. */

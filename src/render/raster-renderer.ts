@@ -148,6 +148,8 @@ class RasterRenderer implements CrystalRenderer {
       theme: this.#theme,
       pixelRatio: this.#deviceRatio * (this.#isCoarse && !isSmooth ? coarseRatio : 1),
       samplesAcross: isSmooth ? this.#samples() : 1,
+      // only where a smooth picture follows
+      isMoving: !isSmooth && this.#samples() > 1,
     };
   }
 

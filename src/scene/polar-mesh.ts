@@ -11,7 +11,7 @@ export interface PolarMesh {
 }
 
 /** Edges of the icosahedron are cut into so many parts, by level: 10 f² + 2 vertices, 20 f² triangles. */
-export const polarFrequencies = [4, 6, 8, 12, 16, 24, 32, 48, 64] as const;
+export const polarFrequencies = [2, 4, 6, 8, 12, 16, 24, 32, 48, 64] as const;
 
 /**
  * Level for a surface whose largest radius is `radiusPx` on screen (in the pixels or samples that are drawn): a chord of
@@ -48,6 +48,19 @@ export function cornerAtCentre(a: number, b: number, c: number): number {
 /** r = n·T·n of a unit direction, signed, in the unit of T; T as xx, yy, zz, xy, xz, yz. */
 export function polarRadius(t: ArrayLike<number>, x: number, y: number, z: number): number {
   return t[0]! * x * x + t[1]! * y * y + t[2]! * z * z + 2 * (t[3]! * x * y + t[4]! * x * z + t[5]! * y * z);
+}
+
+/** Largest radius of the surface, the largest |eigenvalue| of T (its six numbers as above), by the cosines of a third of an angle. */
+export function polarReach(t: ArrayLike<number>): number {
+  const mean = (t[0]! + t[1]! + t[2]!) / 3;
+  const [x, y, z] = [t[0]! - mean, t[1]! - mean, t[2]! - mean];
+  const [xy, xz, yz] = [t[3]!, t[4]!, t[5]!];
+  const size = Math.sqrt((x * x + y * y + z * z + 2 * (xy * xy + xz * xz + yz * yz)) / 6);
+  if (size === 0) return Math.abs(mean);
+  const determinant = x * (y * z - yz * yz) - xy * (xy * z - yz * xz) + xz * (xy * yz - y * xz);
+  const third = Math.acos(Math.max(-1, Math.min(1, determinant / (2 * size ** 3)))) / 3;
+  const [highest, lowest] = [Math.cos(third), Math.cos(third + (2 * Math.PI) / 3)];
+  return Math.max(Math.abs(mean + 2 * size * highest), Math.abs(mean + 2 * size * lowest));
 }
 
 /** What a point p of a signed polar surface, from its centre, tells about it. Everything follows from p and T, in one frame. */

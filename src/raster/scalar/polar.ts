@@ -1,10 +1,11 @@
 import * as S from '../slots.ts';
-import { isDark, shaded } from './colour.ts';
 import {
-  asReal,
+  divided,
   down,
   least,
+  leastWhole,
   most,
+  mostWhole,
   part,
   real,
   root,
@@ -13,30 +14,39 @@ import {
   setWordPart,
   size,
   smooth,
+  up,
   whole,
   wordPart,
 } from './memory.ts';
+import { layPatch, openPatch, patchBytes, patchTriangle } from './patch.ts';
 import { nearness, setImage, turnedPoint } from './place.ts';
-import { clockwiseArea, drawTriangle, setTriangle } from './triangle.ts';
 
-// Signed polar surfaces, as src/scene/polar-mesh.ts describes them.
+// Signed polar surfaces, as src/scene/polar-mesh.ts describes them. When a surface is first met and not hidden its mesh is projected
+// and drawn, once, into a patch of depths of its own; strips take their rows of it from there.
 
 const bandsPerNorm: f32 = 10;
 
-/** Projects the mesh of a surface and fills its record; false where it isn't drawn. */
+/** Record of a surface, with the box of the ball round it; false where it isn't drawn. */
 export function polar(index: i32, object: i32): boolean {
-  const meshes: i32 = whole(S.polarMeshesAt) + 8 * index;
-  const level = wordPart(meshes, 0);
-  if (level < 0) return false;
+  if (wordPart(whole(S.polarMeshesAt), index) < 0) return false;
   const r: i32 = whole(S.recordsAt) + ((S.recordSize * object) << 2);
   const centre: i32 = whole(S.polarCentresAt) + 12 * index;
-  const tensor: i32 = whole(S.polarTensorsAt) + 24 * index;
   for (let k = 0; k < 3; k++) setPart(r, S.sCentre + k, turnedPoint(centre, 3 * k));
-  setImage(r, 0, part(r, S.sCentre), part(r, S.sCentre + 1), part(r, S.sCentre + 2));
-  setTensor(r, tensor);
-  const table: i32 = whole(S.meshTableAt) + ((S.meshSize * level) << 2);
-  setVertices(r, tensor, wordPart(table, 0), wordPart(table, 1), wordPart(meshes, 1));
-  setWhole(S.polarInScratch, -1);
+  const x = part(r, S.sCentre);
+  const y = part(r, S.sCentre + 1);
+  const z = part(r, S.sCentre + 2);
+  setImage(r, 0, x, y, z);
+  setTensor(r, whole(S.polarTensorsAt) + 24 * index);
+  const reach = part(whole(S.polarReachesAt), index) * real(S.samplesPerAngstrom);
+  const front = nearness(z + reach);
+  // no point of the ball is seen farther from the image of its centre
+  const half = (reach / front) * ((root(x * x + y * y) * real(S.perEye)) / nearness(z) + 1);
+  setPart(r, S.cMiddle, 0);
+  setPart(r, S.oReach, half);
+  setPart(r, S.oBoxRow, part(r, S.sRow));
+  setPart(r, S.oBoxHalf, half);
+  setPart(r, S.oNearest, (z + reach) / front);
+  setWordPart(r, S.sEpoch, -1);
   return true;
 }
 
@@ -68,18 +78,24 @@ function setTensor(r: i32, t: i32): void {
   setPart(r, S.oShaded, 0);
 }
 
-function setVertices(r: i32, t: i32, directions: i32, count: i32, vertices: i32): void {
-  const per = real(S.perEye);
+// Box of the image of a mesh: columns and rows.
+let boxLeft: f32 = 0;
+let boxRight: f32 = 0;
+let boxTop: f32 = 0;
+let boxBottom: f32 = 0;
+
+/** Vertices of opposite directions stand opposite: the second half is the first, mirrored in the centre. */
+function setVertices(r: i32, t: i32, directions: i32, half: i32): void {
+  const vertices = whole(S.polarVerticesAt);
   const cx = part(r, S.sCentre);
   const cy = part(r, S.sCentre + 1);
   const cz = part(r, S.sCentre + 2);
   const turn: i32 = S.turn << 2;
-  let left: f32 = part(r, 0);
-  let right: f32 = left;
-  let top: f32 = part(r, 1);
-  let bottom: f32 = top;
-  let nearest: f32 = part(r, 2);
-  for (let k = 0; k < count; k++) {
+  boxLeft = part(r, S.sColumn);
+  boxRight = boxLeft;
+  boxTop = part(r, S.sRow);
+  boxBottom = boxTop;
+  for (let k = 0; k < half; k++) {
     const n: i32 = directions + 12 * k;
     const x = part(n, 0);
     const y = part(n, 1);
@@ -87,141 +103,76 @@ function setVertices(r: i32, t: i32, directions: i32, count: i32, vertices: i32)
     const own = part(t, 0) * x * x + part(t, 1) * y * y + part(t, 2) * z * z;
     const radius = own + (part(t, 3) * x * y + part(t, 4) * x * z + part(t, 5) * y * z) * 2;
     const length = size(radius);
-    const vx = cx + (part(turn, 0) * x + part(turn, 1) * y + part(turn, 2) * z) * length;
-    const vy = cy + (part(turn, 3) * x + part(turn, 4) * y + part(turn, 5) * z) * length;
-    const vz = cz + (part(turn, 6) * x + part(turn, 7) * y + part(turn, 8) * z) * length;
-    const w: f32 = 1 / -(vz * per - 1);
-    const column = real(S.middleColumn) + vx * w;
-    const row = real(S.middleRow) - vy * w;
-    const v: i32 = vertices + 16 * k;
-    setPart(v, 0, column);
-    setPart(v, 1, row);
-    setPart(v, 2, vz * w);
+    const dx = (part(turn, 0) * x + part(turn, 1) * y + part(turn, 2) * z) * length;
+    const dy = (part(turn, 3) * x + part(turn, 4) * y + part(turn, 5) * z) * length;
+    const dz = (part(turn, 6) * x + part(turn, 7) * y + part(turn, 8) * z) * length;
+    const v: i32 = vertices + (k << 4);
+    const opposite: i32 = v + (half << 4);
+    setImage(v, 0, cx + dx, cy + dy, cz + dz);
+    setImage(opposite, 0, cx - dx, cy - dy, cz - dz);
     setPart(v, 3, radius);
-    left = least(left, column);
-    right = most(right, column);
-    top = least(top, row);
-    bottom = most(bottom, row);
-    nearest = most(nearest, vz * w);
+    setPart(opposite, 3, radius);
+    boxLeft = least(boxLeft, least(part(v, 0), part(opposite, 0)));
+    boxRight = most(boxRight, most(part(v, 0), part(opposite, 0)));
+    boxTop = least(boxTop, least(part(v, 1), part(opposite, 1)));
+    boxBottom = most(boxBottom, most(part(v, 1), part(opposite, 1)));
   }
-  setPart(r, S.cMiddle, (left + right) * 0.5 - part(r, 0));
-  setPart(r, S.oReach, (right - left) * 0.5);
-  setPart(r, S.oBoxRow, (top + bottom) * 0.5);
-  setPart(r, S.oBoxHalf, (bottom - top) * 0.5);
-  setPart(r, S.oNearest, nearest);
+}
+
+/** Draws a surface into a patch of its rows from `row` on. */
+function setPatch(index: i32, r: i32, row: i32): void {
+  const table: i32 = whole(S.meshTableAt) + ((S.meshSize * wordPart(whole(S.polarMeshesAt), index)) << 2);
+  setVertices(r, whole(S.polarTensorsAt) + 24 * index, wordPart(table, 0), wordPart(table, 1));
+  const left = mostWhole(0, up(boxLeft));
+  const right = leastWhole(whole(S.columns) - 1, down(boxRight));
+  const top = mostWhole(row, up(boxTop));
+  const last = leastWhole(whole(S.endRow) - 1, down(boxBottom));
+  const rowBytes = patchBytes(left, right);
+  const most = mostWhole(16, divided(S.mostPatchSamples << 2, mostWhole(rowBytes, 16)));
+  const bottom = leastWhole(last, top + most - 1);
+  setWordPart(r, S.sLeft, left);
+  setWordPart(r, S.sRight, right);
+  setWordPart(r, S.sTop, top);
+  setWordPart(r, S.sBottom, left > right ? top - 1 : bottom);
+  setWordPart(r, S.sUntil, bottom < last ? bottom : whole(S.endRow));
+  setWordPart(r, S.sEpoch, whole(S.polarEpoch));
+  if (left > right || top > bottom) return;
+  const bytes = rowBytes * (bottom - top + 1);
+  if (whole(S.polarFree) + bytes > whole(S.polarPoolEnd)) {
+    setWhole(S.polarEpoch, whole(S.polarEpoch) + 1);
+    setWhole(S.polarFree, whole(S.polarPoolAt));
+    setWordPart(r, S.sEpoch, whole(S.polarEpoch));
+  }
+  const patch = whole(S.polarFree);
+  setWhole(S.polarFree, patch + bytes);
+  setWordPart(r, S.sPatch, patch);
+  openPatch(patch, left, right, top, bottom);
+  const triangles = wordPart(table, 2);
+  const end: i32 = triangles + 12 * wordPart(table, 3);
+  for (let t = triangles; t < end; t += 12) drawMeshTriangle(r, t);
+}
+
+function drawMeshTriangle(r: i32, t: i32): void {
+  const vertices = whole(S.polarVerticesAt);
+  const a: i32 = vertices + (wordPart(t, 0) << 4);
+  const b: i32 = vertices + (wordPart(t, 1) << 4);
+  const c: i32 = vertices + (wordPart(t, 2) << 4);
+  const isA = part(a, 3) < 0;
+  const isB = part(b, 3) < 0;
+  const isC = part(c, 3) < 0;
+  // a triangle across a nodal cone keeps its two corners of one sign and the centre
+  if (isA === isB && isB === isC) patchTriangle(a, b, c);
+  else if (isA === isB) patchTriangle(a, b, r);
+  else if (isA === isC) patchTriangle(a, r, c);
+  else patchTriangle(r, b, c);
 }
 
 /** Depth and object of a surface's samples in rows `top` to `bottom` of the strip that starts at `first`. */
 export function drawPolar(object: i32, r: i32, first: i32, top: i32, bottom: i32): void {
-  const index = object - whole(S.quadricCount) - whole(S.cylinderCount);
-  const meshes: i32 = whole(S.polarMeshesAt) + 8 * index;
-  const vertices = wordPart(meshes, 1);
-  const table: i32 = whole(S.meshTableAt) + ((S.meshSize * wordPart(meshes, 0)) << 2);
-  const triangles = wordPart(table, 2);
-  const triangleCount = wordPart(table, 3);
-  if (vertices === whole(S.polarScratchAt) && whole(S.polarInScratch) !== object) {
-    const tensor: i32 = whole(S.polarTensorsAt) + 24 * index;
-    setVertices(r, tensor, wordPart(table, 0), wordPart(table, 1), vertices);
-    setWhole(S.polarInScratch, object);
+  if (wordPart(r, S.sEpoch) !== whole(S.polarEpoch) || first + bottom > wordPart(r, S.sUntil)) {
+    setPatch(object - whole(S.quadricCount) - whole(S.cylinderCount), r, first + top);
   }
-  const highest = asReal(first + top);
-  const lowest = asReal(first + bottom);
-  for (let k = 0; k < triangleCount; k++) {
-    const t: i32 = triangles + 12 * k;
-    let a: i32 = vertices + (wordPart(t, 0) << 4);
-    let b: i32 = vertices + (wordPart(t, 1) << 4);
-    let c: i32 = vertices + (wordPart(t, 2) << 4);
-    const isA = part(a, 3) < 0;
-    const isB = part(b, 3) < 0;
-    const isC = part(c, 3) < 0;
-    // a triangle across a nodal cone keeps its two corners of one sign and the centre
-    if (isA !== isB || isB !== isC) {
-      if (isA === isB) c = r;
-      else if (isA === isC) b = r;
-      else a = r;
-    }
-    if (part(a, 1) < highest && part(b, 1) < highest && part(c, 1) < highest) continue;
-    if (part(a, 1) > lowest && part(b, 1) > lowest && part(c, 1) > lowest) continue;
-    setTriangle(a, b, c);
-    if (clockwiseArea() < 0) drawTriangle(object, 0, first, top, bottom);
-  }
-}
-
-/** Colours of a run of samples that show a polar surface: all follows from the place of each. */
-export function polarRun(object: i32, row: i32, start: i32, end: i32, colours: i32, depth: i32): void {
-  const r: i32 = whole(S.recordsAt) + ((S.recordSize * object) << 2);
-  const offset: i32 = (S.tintSize * (object - whole(S.quadricCount) - whole(S.cylinderCount))) << 2;
-  const positive: i32 = whole(S.positiveTintsAt) + offset;
-  const negative: i32 = whole(S.negativeTintsAt) + offset;
-  if (part(r, S.oShaded) === 0) {
-    setPart(r, S.sIsDark, isDark(positive));
-    setPart(r, S.sNegativeIsDark, isDark(negative));
-    setPart(r, S.oShaded, 1);
-  }
-  const per = real(S.perEye);
-  const t: i32 = r + (S.sTensor << 2);
-  const rowOff = real(S.middleRow) - asReal(row);
-  for (let x = start; x < end; x++) {
-    const imageDepth = part(depth, x);
-    const w: f32 = 1 / (imageDepth * per + 1);
-    const columnOff = asReal(x) - real(S.middleColumn);
-    const px = columnOff * w - part(r, S.sCentre);
-    const py = rowOff * w - part(r, S.sCentre + 1);
-    const pz = imageDepth * w - part(r, S.sCentre + 2);
-    const length = root(px * px + py * py + pz * pz);
-    const tx = part(t, 0) * px + part(t, 3) * py + part(t, 4) * pz;
-    const ty = part(t, 3) * px + part(t, 1) * py + part(t, 5) * pz;
-    const tz = part(t, 4) * px + part(t, 5) * py + part(t, 2) * pz;
-    const isNegative = px * tx + py * ty + pz * tz < 0;
-    const s: f32 = isNegative ? 2 : -2;
-    const gx = px * length * 3 + tx * s;
-    const gy = py * length * 3 + ty * s;
-    const gz = pz * length * 3 + tz * s;
-    let ink: f32 = 1;
-    let white: f32 = 0;
-    if (part(r, S.sRimInk) > 0) {
-      const rim = rimDistance(r, columnOff * per, rowOff * per, px, py, pz, gx, gy, gz, s);
-      const away = smooth(rim / (w * real(S.pixelScale)), real(S.rimWidth) - 0.4, 1 / 0.8);
-      ink = 1 - part(r, S.sRimInk) * (1 - away);
-    }
-    if (isNegative) {
-      const bands = length * part(r, S.sBands);
-      const strength = bands - asReal(down(bands)) < 0.4 ? part(r, S.sBandInk) : 0;
-      if (part(r, S.sNegativeIsDark) === 1) white = strength * 0.55;
-      else ink *= 1 - strength * 0.88;
-    }
-    setWordPart(colours, x, shaded(isNegative ? negative : positive, gx, gy, gz, ink, white, imageDepth));
-  }
-}
-
-/** As polarRimDistance of src/scene/polar-mesh.ts, the viewer in the direction (−vx, −vy, 1). */
-function rimDistance(
-  r: i32,
-  vx: f32,
-  vy: f32,
-  px: f32,
-  py: f32,
-  pz: f32,
-  gx: f32,
-  gy: f32,
-  gz: f32,
-  s: f32,
-): f32 {
-  const t: i32 = r + (S.sTensor << 2);
-  const per: f32 = 1 / root(vx * vx + vy * vy + 1);
-  const x = -vx * per;
-  const y = -vy * per;
-  const length = most(root(px * px + py * py + pz * pz), 1e-6);
-  const along = ((px * x + py * y + pz * per) * 3) / length;
-  const hx = x * length * 3 + px * along + (part(t, 0) * x + part(t, 3) * y + part(t, 4) * per) * s;
-  const hy = y * length * 3 + py * along + (part(t, 3) * x + part(t, 1) * y + part(t, 5) * per) * s;
-  const hz = per * length * 3 + pz * along + (part(t, 4) * x + part(t, 5) * y + part(t, 2) * per) * s;
-  const facing = gx * x + gy * y + gz * per;
-  const steep = hx * x + hy * y + hz * per;
-  const qx = facing * hx - steep * gx;
-  const qy = facing * hy - steep * gy;
-  const qz = facing * hz - steep * gz;
-  const qv = qx * x + qy * y + qz * per;
-  const across = root(most(qx * qx + qy * qy + qz * qz - qv * qv, 0));
-  return (facing * facing) / most(across * 2, 1e-9);
+  const from = mostWhole(first + top, wordPart(r, S.sTop));
+  const to = leastWhole(first + bottom, wordPart(r, S.sBottom));
+  if (from <= to) layPatch(object, r, first, from, to);
 }

@@ -1,21 +1,8 @@
 import * as S from '../slots.ts';
 import { layFaded } from './colour.ts';
-import {
-  asReal,
-  down,
-  least,
-  leastWhole,
-  most,
-  mostWhole,
-  part,
-  setPart,
-  setWordPart,
-  size,
-  up,
-  whole,
-} from './memory.ts';
+import { asReal, down, least, leastWhole, most, mostWhole, part, size, up, whole } from './memory.ts';
 
-// One triangle at a time: corners (column, row, depth), the first row of the strip and its rows, what it is drawn as.
+// One triangle at a time: corners (column, row, depth).
 let ax: f32 = 0;
 let ay: f32 = 0;
 let az: f32 = 0;
@@ -27,7 +14,7 @@ let cy: f32 = 0;
 let cz: f32 = 0;
 
 /** Corners by addresses of three floats each. */
-export function setTriangle(a: i32, b: i32, c: i32): void {
+function setTriangle(a: i32, b: i32, c: i32): void {
   ax = part(a, 0);
   ay = part(a, 1);
   az = part(a, 2);
@@ -40,7 +27,7 @@ export function setTriangle(a: i32, b: i32, c: i32): void {
 }
 
 /** Twice the area, positive where the corners run clockwise in the picture. */
-export function clockwiseArea(): f32 {
+function clockwiseArea(): f32 {
   return (bx - ax) * (cy - ay) - (by - ay) * (cx - ax);
 }
 
@@ -60,20 +47,18 @@ function widen(x0: f32, y0: f32, x1: f32, y1: f32, row: f32): void {
   spanHigh = most(spanHigh, x);
 }
 
-/**
- * Draws the set triangle's samples in rows `top` to `bottom` of the strip that starts at `first`: depth and object for `object`
- * from 0 on, else the colour of `facet` over what is behind it.
- */
-export function drawTriangle(object: i32, facet: i32, first: i32, top: i32, bottom: i32): void {
+/** Lays the colour of the set triangle over what is behind it, in `count` rows of the strip that starts at `first`. */
+function layTriangle(facet: i32, first: i32, count: i32): void {
   const area = clockwiseArea();
   if (size(area) < 1e-9) return;
-  const low = mostWhole(first + top, up(least(ay, least(by, cy))));
-  const high = leastWhole(first + bottom, down(most(ay, most(by, cy))));
+  const low = mostWhole(first, up(least(ay, least(by, cy))));
+  const high = leastWhole(first + count - 1, down(most(ay, most(by, cy))));
   const slopeX = ((bz - az) * (cy - ay) - (cz - az) * (by - ay)) / area;
   const slopeY = ((cz - az) * (bx - ax) - (bz - az) * (cx - ax)) / area;
   const farthest = least(az, least(bz, cz));
   const nearest = most(az, most(bz, cz));
   const last = whole(S.columns) - 1;
+  const own: i32 = facet + 36;
   for (let y = low; y <= high; y++) {
     const row = asReal(y);
     spanLow = 1e9;
@@ -86,19 +71,12 @@ export function drawTriangle(object: i32, facet: i32, first: i32, top: i32, bott
     if (start > end) continue;
     const rowAt = y - first;
     const depth: i32 = whole(S.depthAt) + ((rowAt * whole(S.stride)) << 2);
-    const ids: i32 = whole(S.idsAt) + ((rowAt * whole(S.stride)) << 2);
     const colours: i32 = whole(S.coloursAt) + ((rowAt * whole(S.colourStride)) << 2);
     const base = az + slopeY * (row - ay);
     for (let x = start; x <= end; x++) {
       const z = least(nearest, most(farthest, base + slopeX * (asReal(x) - ax)));
       if (z <= part(depth, x)) continue;
-      if (object < 0) {
-        const own: i32 = facet + 36;
-        layFaded(colours + (x << 2), part(own, 0), part(own, 1), part(own, 2), part(own, 3), z);
-        continue;
-      }
-      setPart(depth, x, z);
-      setWordPart(ids, x, object + 1);
+      layFaded(colours + (x << 2), part(own, 0), part(own, 1), part(own, 2), part(own, 3), z);
     }
   }
 }
@@ -112,6 +90,6 @@ export function facetPass(first: i32, count: i32): void {
     const facet: i32 = whole(S.facetsAt) + ((S.facetSize * k) << 2);
     setTriangle(facet, facet + 12, facet + 24);
     if (most(ay, most(by, cy)) < top || least(ay, least(by, cy)) > bottom) continue;
-    drawTriangle(-1, facet, first, 0, count - 1);
+    layTriangle(facet, first, count);
   }
 }

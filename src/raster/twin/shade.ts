@@ -3,7 +3,7 @@ import { fillQuadric, isMarked, isOwn } from '../scalar/fill-quadric.ts';
 import type { KernelViews } from '../scalar/memory.ts';
 import { smooth, wordAt } from '../scalar/memory.ts';
 import { perspectiveCylinderRun } from '../scalar/perspective-cylinder.ts';
-import { polarRun } from '../scalar/polar.ts';
+import { polarRun } from '../scalar/polar-run.ts';
 import * as S from '../slots.ts';
 
 /** Colours of a strip from its depths and objects: every visible sample once, run by run. */

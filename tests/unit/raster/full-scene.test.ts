@@ -96,3 +96,47 @@ describe.each(views)('all kinds of objects (%s)', (_name, chosen, polars) => {
     expect(seen.deep / ids.length).toBeLessThan(2e-3);
   });
 });
+
+describe('a polar surface larger than the picture', () => {
+  const scene = fullScene(60, 7);
+  const polars = { ...scene.polars!, tensors: scene.polars!.tensors.map((value) => 3 * value) };
+  const large = { ...scene, polars };
+  const close: RasterView = {
+    ...view,
+    camera: { ...view.camera, zoom: 6 * view.camera.zoom },
+    viewport: { widthPx: 1203, heightPx: 1001 },
+  };
+
+  it.each(kernels)('is drawn in pieces, each band exactly its rows (%s)', (_kernel, makeKernel) => {
+    const rasterizer = createRasterizer(makeKernel());
+    rasterizer.setScene(large);
+    const whole = rasterizer.draw(close).pixels;
+    const band = rasterizer.draw(close, 437, 300);
+    expect(band.pixels).toEqual(whole.slice(4 * 1203 * 437, 4 * 1203 * 737));
+    const { ids } = rasterizer.hits(close);
+    for (let y = 0; y < 1001; y += 43) {
+      let wrong = 0;
+      for (let x = 0; x < 1203; x += 41) {
+        const hit = pick(large, close.camera, x + 0.5, y + 0.5, close.viewport);
+        if ((hit?.pickId ?? 0) !== ids[1203 * y + x]) wrong += 1;
+      }
+      expect(wrong).toBeLessThan(2);
+    }
+  });
+
+  it.each(kernels)('is off by a sample at most while the picture moves (%s)', (_kernel, makeKernel) => {
+    const rasterizer = createRasterizer(makeKernel());
+    rasterizer.setScene(scene);
+    const exact = rasterizer.hits(view).ids;
+    const moving = rasterizer.hits({ ...view, isMoving: true }).ids;
+    let apart = 0;
+    for (let y = 1; y < 172; y++) {
+      for (let x = 1; x < 210; x++) {
+        const beside = [-212, -211, -210, -1, 0, 1, 210, 211, 212].map((off) => exact[211 * y + x + off]);
+        if (!beside.includes(moving[211 * y + x])) apart += 1;
+      }
+    }
+    expect(apart / exact.length).toBeLessThan(1e-3);
+    expect(moving).not.toEqual(exact);
+  });
+});

@@ -8,6 +8,7 @@ import {
   polarMesh,
   polarPoint,
   polarRadius,
+  polarReach,
   polarRimDistance,
 } from '#src/scene/polar-mesh.ts';
 
@@ -51,6 +52,24 @@ describe('meshes of polar surfaces', () => {
         reach = Math.max(reach, radiusPx * dot(at(places, k), tip) ** 3);
       expect(radiusPx - reach).toBeLessThan(0.4);
     }
+  });
+
+  it.each([
+    [six],
+    [[3, 3, 3, 0, 0, 0]],
+    [[-4, 1, 2, 0, 0, 0]],
+    [[5, 5, -2, 0, 0, 0]],
+    [[0, 0, 0, 0, 0, 0]],
+    [[120, 140, 133, 12, -31, 8]],
+  ])('no radius of %j is larger than its reach, and one is as large', (t) => {
+    const { directions: places } = polarMesh(8);
+    let largest = 0;
+    for (let k = 0; k < places.length / 3; k++) {
+      largest = Math.max(largest, Math.abs(polarRadius(t, ...at(places, k))));
+    }
+    const reach = polarReach(t);
+    expect(largest).toBeLessThanOrEqual(reach * (1 + 1e-6));
+    expect(largest).toBeGreaterThanOrEqual(reach * (1 - 1e-3));
   });
 
   it('the odd corner of a triangle across a node goes to the centre', () => {
