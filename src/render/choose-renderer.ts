@@ -5,8 +5,8 @@ import { withStandIn } from './stand-in.ts';
 
 /**
  * The renderer that suits this browser: WebGL 2 on a graphics chip, where the CPU renderer stands in while the context is
- * lost; the CPU renderer everywhere else. Each is loaded only where it is used. Rejects with a plain sentence where the
- * canvas gives neither.
+ * lost, or for good where WebGL fails; the CPU renderer everywhere else. Each is loaded only where it is used. Rejects with a
+ * plain sentence where the canvas gives neither.
  */
 export async function chooseRenderer(
   canvas: HTMLCanvasElement,
@@ -14,9 +14,29 @@ export async function chooseRenderer(
   options: RendererOptions = {},
 ): Promise<CrystalRenderer> {
   if (hasHardware(probe) || !probe.canPaint) {
-    const { createCrystalRenderer } = await import('./create-renderer.ts');
-    return withStandIn(canvas, options, (heard) => createCrystalRenderer(canvas, heard));
+    try {
+      const { createCrystalRenderer } = await import('./create-renderer.ts');
+      return withStandIn(canvas, options, (heard) => createCrystalRenderer(canvas, heard));
+    } catch (error) {
+      if (!probe.canPaint) throw error;
+      return onCover(canvas, options);
+    }
   }
   const { createRasterRenderer } = await import('./raster-renderer.ts');
   return createRasterRenderer(canvas, options);
+}
+
+/** The CPU renderer on a canvas of its own above one that WebGL has spoilt. */
+async function onCover(canvas: HTMLCanvasElement, options: RendererOptions): Promise<CrystalRenderer> {
+  const { createRasterRenderer } = await import('./raster-renderer.ts');
+  const cover = canvas.cloneNode(false) as HTMLCanvasElement;
+  canvas.after(cover);
+  const renderer = createRasterRenderer(cover, options);
+  const dispose = renderer.dispose.bind(renderer);
+  return Object.assign(renderer, {
+    dispose: () => {
+      dispose();
+      cover.remove();
+    },
+  });
 }

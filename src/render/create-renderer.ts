@@ -71,6 +71,7 @@ class Renderer implements CrystalRenderer {
   #frames = 0;
   #smoothFrames = 0;
   #losses = 0;
+  #shaderFault = false;
   #lastReason = 'made';
 
   constructor(canvas: HTMLCanvasElement, options: RendererOptions) {
@@ -87,6 +88,7 @@ class Renderer implements CrystalRenderer {
     this.#software = isSoftwareRenderer(rendererName(context));
     this.#gl.outputColorSpace = LinearSRGBColorSpace;
     this.#gl.setPixelRatio(1);
+    this.#gl.debug.onShaderError = () => (this.#shaderFault = true);
     this.#smoothing = createSupersampling(this.#gl.capabilities.maxTextureSize);
     this.#quadrics = this.#mesh('quadric', 0);
     this.#cylinders = this.#mesh('cylinder', 1);
@@ -239,7 +241,17 @@ class Renderer implements CrystalRenderer {
     return Math.max(1, Math.floor(this.#options.samplesAcross ?? usual));
   }
 
+  /** A graphics driver that fails counts as a context that was lost for good: the CPU renderer steps in. */
   #draw(smooth: boolean): void {
+    try {
+      this.#paint(smooth);
+      if (this.#shaderFault) throw new Error('a shader was refused');
+    } catch (error) {
+      this.#loseContext(`WebGL failed: ${error instanceof Error ? error.message : String(error)}`);
+    }
+  }
+
+  #paint(smooth: boolean): void {
     if (this.#lost || !this.#scene || !this.#camera) return;
     const { width, height } = this.#deviceSize();
     const samples = smooth ? this.#samples() : 1;
@@ -264,12 +276,17 @@ class Renderer implements CrystalRenderer {
     else this.#facets.visible = false;
   }
 
-  readonly #onLost = (event: Event): void => {
-    event.preventDefault();
+  #loseContext(reason: string): void {
     this.#lost = true;
     this.#losses += 1;
+    this.#lastReason = reason;
     this.#cancel();
     this.#options.onContextLost?.();
+  }
+
+  readonly #onLost = (event: Event): void => {
+    event.preventDefault();
+    this.#loseContext('the graphics context was lost');
   };
 
   readonly #onRestored = (): void => {

@@ -19,6 +19,9 @@ export interface ViewStepOptions {
 /** Milliseconds of rest after which a new drag or key begins a step of its own. */
 const burstMs = 1000;
 
+/** Sites that are read without being asked for; the cache holds more. */
+const sitesAhead = 200;
+
 /** One step forth from any moment. */
 type Recipe = (moment: Moment) => Moment;
 
@@ -204,6 +207,14 @@ export class Timeline {
       shownPlace: sameCrystal ? state.shownPlace : null,
     };
     this.#holder.change(change, `${reason} is on screen`);
+    this.#readAhead(derived);
+  }
+
+  /** The first sites, so that they can be shown at once also while the engine is busy with another file. */
+  #readAhead(derived: DerivedCase): void {
+    const count = Math.min(sitesAhead, derived.crystal?.siteCount ?? 0);
+    const indices = Array.from({ length: count }, (_none, index) => index);
+    if (count > 0) void this.#sites.read(derived, indices).catch(() => []);
   }
 
   #refuse(what: string, sources: readonly SourceFile[], problems: readonly Problem[]): false {

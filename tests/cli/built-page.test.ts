@@ -131,7 +131,10 @@ describe('the built page in a browser with WebGL', () => {
     await page.keyboard.press('ArrowRight');
     await page.keyboard.press('ArrowRight');
     expect(await page.locator('[role=treegrid] [aria-level="2"]').count()).toBe(3);
-    expect(await page.locator('[role=status]').textContent()).toMatch(/^Si1, ²⁹Si selected, atom/);
+    await page
+      .getByRole('status')
+      .filter({ hasText: /^\s*Si1, ²⁹Si selected, atom/ })
+      .waitFor({ state: 'attached' });
     await page.keyboard.press('Escape');
     expect(await page.getByRole('article', { name: 'Crystal' }).isVisible()).toBe(true);
   });

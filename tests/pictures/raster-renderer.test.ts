@@ -139,6 +139,49 @@ describe('the choice', () => {
     expect(await by({ software: true, canPaint: false })).toBe('WebGL 2');
   });
 
+  it('is the CPU, on a canvas above, where WebGL cannot be started after all', async () => {
+    const canvas = newCanvas();
+    canvas.getContext('webgl2');
+    const getContext = canvas.getContext.bind(canvas);
+    canvas.getContext = ((kind: string) =>
+      kind === 'webgl2' ? null : getContext(kind)) as typeof canvas.getContext;
+    const renderer = show(await chooseRenderer(canvas, { ...probe, software: false }));
+    expect(renderer.counters().drawnBy).toBe('the CPU');
+    renderer.render();
+    const cover = canvas.nextElementSibling as HTMLCanvasElement;
+    const { canvas: alone, renderer: raster } = started();
+    raster.render();
+    expect(bytesOf(cover)).toEqual(bytesOf(alone));
+    renderer.dispose();
+    expect(cover.isConnected).toBe(false);
+  });
+
+  it('is the CPU from the moment on that the graphics driver fails while drawing', async () => {
+    const canvas = newCanvas();
+    const events: string[] = [];
+    const renderer = show(
+      await chooseRenderer(
+        canvas,
+        { ...probe, software: false },
+        { onStandIn: () => events.push('stand-in') },
+      ),
+    );
+    const gl = canvas.getContext('webgl2')!;
+    gl.drawElements = () => {
+      throw new Error('the driver fell over');
+    };
+    renderer.render();
+    await until(() => events.includes('stand-in'));
+    expect(renderer.counters()).toMatchObject({
+      drawnBy: 'the CPU',
+      lastReason: 'WebGL failed: the driver fell over',
+    });
+    renderer.render();
+    const { canvas: alone, renderer: raster } = started();
+    raster.render();
+    expect(bytesOf(canvas.nextElementSibling as HTMLCanvasElement)).toEqual(bytesOf(alone));
+  });
+
   it('lets the CPU renderer step in while the context is lost, and takes it away again', async () => {
     const events: string[] = [];
     const canvas = newCanvas();
