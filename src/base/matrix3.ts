@@ -101,7 +101,7 @@ export function trace(m: Mat3): number {
 
 /** √Σ mᵢⱼ² */
 export function frobeniusNorm(m: Mat3): number {
-  return Math.hypot(...m);
+  return Math.hypot(m[0], m[1], m[2], m[3], m[4], m[5], m[6], m[7], m[8]);
 }
 
 /** Rows of a matrix as three vectors. */

@@ -44,10 +44,28 @@ export function symmetricEigen(m: Mat3): EigenSystem {
   const exponent = Math.floor(Math.log2(largest));
   const half = 2 ** Math.trunc(-exponent / 2);
   const rest = 2 ** (-exponent - Math.trunc(-exponent / 2));
-  const { diagonal, columns } = diagonalise(m.map((element) => element * half * rest));
-  const order = [0, 1, 2].sort((a, b) => diagonal[a]! - diagonal[b]!);
-  const values = order.map((column) => diagonal[column]! / half / rest) as unknown as Vec3;
-  return { values, vectors: rightHanded(columns[order[0]!]!, columns[order[1]!]!) };
+  diagonalise(m, half, rest);
+  let [low, middle, high] = [0, 1, 2];
+  if (diagonalOf(middle) < diagonalOf(low)) [low, middle] = [middle, low];
+  if (diagonalOf(high) < diagonalOf(middle)) [middle, high] = [high, middle];
+  if (diagonalOf(middle) < diagonalOf(low)) [low, middle] = [middle, low];
+  const value = (column: number): number => diagonalOf(column) / half / rest;
+  return {
+    values: [value(low), value(middle), value(high)],
+    vectors: rightHanded(columnOf(low), columnOf(middle)),
+  };
+}
+
+/** The matrix under work and the rotation gathered so far, row-major: used anew by every call, for a crystal has many tensors. */
+const a = new Float64Array(9);
+const v = new Float64Array(9);
+
+function diagonalOf(column: number): number {
+  return a[4 * column]!;
+}
+
+function columnOf(column: number): Vec3 {
+  return [v[column]!, v[column + 3]!, v[column + 6]!];
 }
 
 /** Direction with its largest component positive; of several equally large ones the first decides. */
@@ -71,58 +89,59 @@ export function rightHanded(first: Vec3, second: Vec3): [Vec3, Vec3, Vec3] {
 
 function largestMagnitude(m: Mat3): number {
   let largest = 0;
-  m.forEach((element, index) => {
+  for (let index = 0; index < 9; index += 1) {
+    const element = m[index]!;
     if (!Number.isFinite(element)) {
       const place = `row ${Math.floor(index / 3) + 1}, column ${(index % 3) + 1}`;
       throw new RangeError(`a tensor needs nine finite numbers; ${place} is ${element}`);
     }
     largest = Math.max(largest, Math.abs(element));
-  });
+  }
   return largest;
 }
 
-/** Jacobi on the symmetric part; eigenvectors are the columns of the accumulated rotation. */
-function diagonalise(m: readonly number[]): { diagonal: number[]; columns: Vec3[] } {
-  const a = [0, 1, 2].map((i) => [0, 1, 2].map((j) => mean(m[3 * i + j]!, m[3 * j + i]!)));
-  const v = [
-    [1, 0, 0],
-    [0, 1, 0],
-    [0, 0, 1],
-  ];
-  for (let sweep = 0; sweep < maxSweeps; sweep += 1) {
-    if (a[0]![1] === 0 && a[0]![2] === 0 && a[1]![2] === 0) break;
-    rotate(a, v, 0, 1, 2);
-    rotate(a, v, 0, 2, 1);
-    rotate(a, v, 1, 2, 0);
+/** Jacobi on the symmetric part of m × half × rest, left diagonal in `a`; eigenvectors are the columns of `v`. */
+function diagonalise(m: Mat3, half: number, rest: number): void {
+  for (let i = 0; i < 3; i += 1) {
+    for (let j = 0; j < 3; j += 1) {
+      a[3 * i + j] = mean(m[3 * i + j]! * half * rest, m[3 * j + i]! * half * rest);
+      v[3 * i + j] = i === j ? 1 : 0;
+    }
   }
-  const columns = [0, 1, 2].map((j): Vec3 => [v[0]![j]!, v[1]![j]!, v[2]![j]!]);
-  return { diagonal: [a[0]![0]!, a[1]![1]!, a[2]![2]!], columns };
+  for (let sweep = 0; sweep < maxSweeps; sweep += 1) {
+    if (a[1] === 0 && a[2] === 0 && a[5] === 0) break;
+    rotate(0, 1, 2);
+    rotate(0, 2, 1);
+    rotate(1, 2, 0);
+  }
 }
 
 /** Exact where both are equal. */
-function mean(a: number, b: number): number {
-  return a === b ? a : a / 2 + b / 2;
+function mean(x: number, y: number): number {
+  return x === y ? x : x / 2 + y / 2;
 }
 
 /** One rotation in the plane of axes p < q that makes a[p][q] zero; r is the third axis. */
-function rotate(a: number[][], v: number[][], p: number, q: number, r: number): void {
-  const apq = a[p]![q]!;
+function rotate(p: number, q: number, r: number): void {
+  const [pp, pq, qp, qq] = [4 * p, 3 * p + q, 3 * q + p, 4 * q];
+  const [rp, rq] = [3 * r + p, 3 * r + q];
+  const apq = a[pq]!;
   if (apq === 0) return;
-  const theta = (a[q]![q]! - a[p]![p]!) / (2 * apq);
+  const theta = (a[qq]! - a[pp]!) / (2 * apq);
   const t = (theta < 0 ? -1 : 1) / (Math.abs(theta) + Math.hypot(theta, 1));
   const c = 1 / Math.hypot(t, 1);
   const s = t * c;
-  a[p]![p]! -= t * apq;
-  a[q]![q]! += t * apq;
-  a[p]![q] = a[q]![p] = 0;
-  const arp = a[r]![p]!;
-  const arq = a[r]![q]!;
-  a[r]![p] = a[p]![r] = c * arp - s * arq;
-  a[r]![q] = a[q]![r] = s * arp + c * arq;
-  for (const row of v) {
-    const vp = row[p]!;
-    const vq = row[q]!;
-    row[p] = c * vp - s * vq;
-    row[q] = s * vp + c * vq;
+  a[pp]! -= t * apq;
+  a[qq]! += t * apq;
+  a[pq] = a[qp] = 0;
+  const arp = a[rp]!;
+  const arq = a[rq]!;
+  a[rp] = a[3 * p + r] = c * arp - s * arq;
+  a[rq] = a[3 * q + r] = s * arp + c * arq;
+  for (let row = 0; row < 9; row += 3) {
+    const vp = v[row + p]!;
+    const vq = v[row + q]!;
+    v[row + p] = c * vp - s * vq;
+    v[row + q] = s * vp + c * vq;
   }
 }

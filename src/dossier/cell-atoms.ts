@@ -1,13 +1,14 @@
 import { apply, identity3, inverse } from '#src/base/matrix3.ts';
 import type { Mat3, Vec3, VecFrac } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
+import { add } from '#src/base/vector3.ts';
 import type { Crystal, Site } from '#src/crystal/crystal.ts';
 import type { DistinctOrientations } from '#src/crystal/distinct-orientations.ts';
 import { distinctOrientations } from '#src/crystal/distinct-orientations.ts';
 import { toCartesian } from '#src/crystal/lattice.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import { orbitOf } from '#src/crystal/orbit.ts';
-import type { Orbit } from '#src/crystal/orbit.ts';
+import type { Orbit, OrbitImage } from '#src/crystal/orbit.ts';
 import type { SmallCell } from '#src/crystal/small-cell.ts';
 import { orbitInSmallCell, smallOperationIndex } from '#src/crystal/small-cell.ts';
 import type { SymmetryOperation } from '#src/crystal/symmetry-operation.ts';
@@ -58,23 +59,31 @@ function orientationsOf(
   return { count, orientationOf: (operationIndex) => orientationOf(inSmall(operationIndex)) };
 }
 
+/** An operation with the lattice translation added, in words. Those without one are written once. */
+function operationWords(operations: readonly SymmetryOperation[]): (image: OrbitImage) => string {
+  const plain = operations.map(formatOperation);
+  return ({ operationIndex, cellShift }) => {
+    const [i, j, k] = cellShift;
+    if (i === 0 && j === 0 && k === 0) return plain[operationIndex]!;
+    const { rotation, translation } = operations[operationIndex]!;
+    return formatOperation({ rotation, translation: add(translation, cellShift) });
+  };
+}
+
 function atomsOfOrbit(
   site: Site,
   orbit: Orbit,
   orientations: DistinctOrientations,
-  crystal: Crystal,
+  inWords: (image: OrbitImage) => string,
   lattice: Lattice,
   rotations: Mat3[],
 ): SiteAtoms {
-  const { operations } = crystal.symmetry;
   const atoms = orbit.images.map((image, index): EquivalentAtom => {
-    const operation = operations[image.operationIndex]!;
-    const translation = operation.translation.map((t, axis) => t + image.cellShift[axis]!) as unknown as Vec3;
     return {
       id: `${site.index}.${index}`,
       siteIndex: site.index,
       operationIndex: image.operationIndex,
-      operation: formatOperation({ rotation: operation.rotation, translation }),
+      operation: inWords(image),
       fractional: image.fractional,
       cartesian: toCartesian(lattice, image.fractional),
       rotation: rotations[image.operationIndex]!,
@@ -100,6 +109,7 @@ export function cellAtoms(
   if (!lattice) return crystal.sites.map(loneAtom);
   const { operations } = crystal.symmetry;
   const rotations = cartesianOperations(crystal);
+  const inWords = operationWords(operations);
   return crystal.sites.map((site) => {
     const fractional: VecFrac = site.fractional ?? apply(inverse(lattice.toCartesian), site.cartesian);
     const orbit = small
@@ -118,6 +128,6 @@ export function cellAtoms(
       );
     }
     const orientations = orientationsOf(orbit, operations, small);
-    return atomsOfOrbit(site, orbit, orientations, crystal, lattice, rotations);
+    return atomsOfOrbit(site, orbit, orientations, inWords, lattice, rotations);
   });
 }

@@ -160,6 +160,20 @@ function fractionalStabiliser({ stabiliser }: SiteAtoms, { crystal }: ChosenCrys
   return stabiliser.map((operation) => crystal.symmetry.operations[operation]?.rotation ?? identity3);
 }
 
+/** What its symmetry forces on the tensors of a site, in words; worked out once for each stabiliser. */
+function forcedSentences(chosen: ChosenCrystal): (site: SiteAtoms) => string {
+  const known = new Map<string, string>();
+  return (site) => {
+    const key = site.stabiliser.join();
+    let sentence = known.get(key);
+    if (sentence === undefined) {
+      ({ sentence } = forcedBySiteSymmetry(fractionalStabiliser(site, chosen), chosen.crystal.lattice));
+      known.set(key, sentence);
+    }
+    return sentence;
+  };
+}
+
 /**
  * Derives every number of a crystal once: symmetry as the settings ask, atoms of the cell, tensors bound to sites and
  * turned along their equivalents, conventions, noise, bonds. Never throws for content; problems carry what was doubtful.
@@ -177,6 +191,7 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
   progress(0.4, 'tensors');
   const bound = attachAll(crystal, sets, chosen, log);
   const rotations = cartesianOperations(chosen.crystal);
+  const forced = forcedSentences(chosen);
   const sites = chosen.sites.map((siteAtoms, index): SiteDossier => {
     const { site } = siteAtoms;
     const stabiliser = siteAtoms.stabiliser.map((operation) => rotations[operation] ?? identity3);
@@ -193,7 +208,7 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
       wyckoff: symmetry.wyckoff[index] ?? null,
       siteSymmetry: symmetry.siteSymmetry[index] ?? null,
       distinctOrientations: siteAtoms.distinctOrientations,
-      forced: forcedBySiteSymmetry(fractionalStabiliser(siteAtoms, chosen), chosen.crystal.lattice).sentence,
+      forced: forced(siteAtoms),
       equivalents: siteAtoms.atoms,
       displacement: site.displacement,
       disorder: site.disorder,

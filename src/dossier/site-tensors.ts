@@ -60,21 +60,27 @@ function weigh(
   if (!first) return null;
   const back = found.map(({ tensor, rotation }) => turnBack(rotation, tensor));
   const tensor = back[0]!;
-  const { residual, anisotropicNorm } = projectOnSiteSymmetry(tensor, stabiliser);
-  const { projected } = projectOnSiteSymmetry(meanTensor(back), stabiliser);
+  const own = projectOnSiteSymmetry(tensor, stabiliser);
+  const { residual, anisotropicNorm } = own;
+  const { projected } = back.length === 1 ? own : projectOnSiteSymmetry(meanTensor(back), stabiliser);
   const printed = printedNoise(first.entry.tensor, quantity, unitFactor(quantity, unitGiven));
   return {
     tensor,
     projected,
     symmetryResidual: residual,
-    equivalentSpread: equivalentSpread(
-      found.map((one) => one.tensor),
-      found.map((one) => one.rotation),
-    ),
+    equivalentSpread: spreadOf(found),
     anisotropicNorm,
     noise: tensorNoise(printed, residual, Math.max(anisotropicNorm, leastScale[quantity])),
     source: first.entry.place,
   };
+}
+
+function spreadOf(found: readonly SiteTensor[]): number | null {
+  if (found.length < 2) return null;
+  return equivalentSpread(
+    found.map(({ tensor }) => tensor),
+    found.map(({ rotation }) => rotation),
+  );
 }
 
 /** The user's isotope, else the usual one for what the site has. */
@@ -82,27 +88,66 @@ function isotopeOf(element: string, settings: DossierSettings, use: Quantity): s
   return settings.isotopes[element] ?? usualIsotope(element, use)?.symbol ?? null;
 }
 
+/* Dossiers are written field by field: spreading a description costs as much as making it, and a large crystal has many. */
+
 function shieldingDossier(evidence: Evidence): ShieldingDossier {
-  const { projected, symmetryResidual, source, noise } = evidence;
-  const described = describeShielding(evidence.tensor, noise);
-  return { ...described, projected, symmetryResidual, equivalentSpread: evidence.equivalentSpread, source };
+  const described = describeShielding(evidence.tensor, evidence.noise);
+  return {
+    tensor: described.tensor,
+    symmetric: described.symmetric,
+    isotropic: described.isotropic,
+    components: described.components,
+    axes: described.axes,
+    span: described.span,
+    skew: described.skew,
+    reducedAnisotropy: described.reducedAnisotropy,
+    anisotropy: described.anisotropy,
+    asymmetry: described.asymmetry,
+    antisymmetricNorm: described.antisymmetricNorm,
+    axialVector: described.axialVector,
+    noise: described.noise,
+    undefinedBecause: described.undefinedBecause,
+    projected: evidence.projected,
+    symmetryResidual: evidence.symmetryResidual,
+    equivalentSpread: evidence.equivalentSpread,
+    source: evidence.source,
+  };
 }
 
 function efgDossier(evidence: Evidence, isotope: string | null, settings: DossierSettings): EfgDossier {
-  const { projected, symmetryResidual, source, noise } = evidence;
   const own = isotope === null ? null : (settings.quadrupoleMomentsBarn[isotope] ?? null);
-  const described = describeEfg(evidence.tensor, isotope === null ? null : nuclide(isotope), own, noise);
+  const described = describeEfg(
+    evidence.tensor,
+    isotope === null ? null : nuclide(isotope),
+    own,
+    evidence.noise,
+  );
   const undefinedBecause =
     described.signDetermined || described.components[2] === 0
       ? described.undefinedBecause
       : { ...described.undefinedBecause, sign: signReason };
   return {
-    ...described,
+    tensor: described.tensor,
+    symmetric: described.symmetric,
+    components: described.components,
+    axes: described.axes,
+    asymmetry: described.asymmetry,
+    isotope: described.isotope,
+    quadrupoleMomentBarn: described.quadrupoleMomentBarn,
+    quadrupoleMomentSource: described.quadrupoleMomentSource,
+    couplingMHz: described.couplingMHz,
+    productMHz: described.productMHz,
+    quadrupoleFrequencyMHz: described.quadrupoleFrequencyMHz,
+    quadrupoleAngularFrequency: described.quadrupoleAngularFrequency,
+    trace: described.trace,
+    signDetermined: described.signDetermined,
+    antisymmetricNorm: described.antisymmetricNorm,
+    noise: described.noise,
     undefinedBecause,
-    projected,
-    symmetryResidual,
+    projected: evidence.projected,
+    symmetryResidual: evidence.symmetryResidual,
     equivalentSpread: evidence.equivalentSpread,
-    source,
+    source: evidence.source,
   };
 }
 
@@ -141,8 +186,10 @@ function reportUndefined(
   reasons: Readonly<Record<string, string>>,
   log: ProblemLog,
 ): void {
+  const all = Object.entries(reasons);
+  if (all.length === 0) return;
   const fieldsOf = new Map<string, string[]>();
-  for (const [field, reason] of Object.entries(reasons)) {
+  for (const [field, reason] of all) {
     fieldsOf.set(reason, [...(fieldsOf.get(reason) ?? []), field]);
   }
   for (const [reason, fields] of fieldsOf) {

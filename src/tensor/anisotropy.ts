@@ -50,12 +50,23 @@ export function anisotropyMeasures(components: Vec3, scale: Scale, limits: Noise
     return { span, skew, reducedAnisotropy: null, anisotropy: null, asymmetry, undefinedBecause };
   }
   const anisotropy = anisotropyFromReduced(reducedAnisotropy);
-  return { span, skew, reducedAnisotropy, anisotropy, asymmetry, undefinedBecause: {} };
+  return { span, skew, reducedAnisotropy, anisotropy, asymmetry, undefinedBecause: nothingUndefined };
 }
 
 function middleOf(components: Vec3): number {
   const [a, b, c] = components;
   return Math.max(Math.min(a, b), Math.min(Math.max(a, b), c));
+}
+
+/** The reasons of a tensor of which everything is defined; one for all. */
+const nothingUndefined: Readonly<Record<string, string>> = Object.freeze({});
+
+/** Reasons with that of the axes, where there is one. */
+export function withAxisReason(
+  reasons: Readonly<Record<string, string>>,
+  axes: string | null,
+): Readonly<Record<string, string>> {
+  return axes === null ? reasons : { ...reasons, axes };
 }
 
 /** A number for a sentence: three significant digits with its unit. */

@@ -34,8 +34,11 @@ function between(low: number, value: number, high: number): number {
 
 /** Three principal values in the order of the scale: σ11 ≤ σ22 ≤ σ33, δ11 ≥ δ22 ≥ δ33. */
 export function standardOrder(components: Vec3, scale: Scale): Vec3 {
-  const ascending = [...components].sort((a, b) => a - b) as unknown as Vec3;
-  return scale === 'shielding' ? ascending : [ascending[2], ascending[1], ascending[0]];
+  let [low, middle, high] = components;
+  if (middle < low) [low, middle] = [middle, low];
+  if (high < middle) [middle, high] = [high, middle];
+  if (middle < low) [low, middle] = [middle, low];
+  return scale === 'shielding' ? [low, middle, high] : [high, middle, low];
 }
 
 /**

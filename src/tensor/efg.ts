@@ -186,7 +186,7 @@ export function describeEfg(
   nuclide: Nuclide | null,
   ownMomentBarn: number | null = null,
   noise = 0,
-): EfgDescription {
+): EfgDescription & Required<Pick<EfgDescription, 'noise' | 'quadrupoleAngularFrequency'>> {
   const symmetric = withoutIsotropic(symmetricPart(tensor));
   const { components, vectors } = byMagnitude(symmetric);
   const limits = noiseLimits(tensor, 'efg', noise);
@@ -194,7 +194,7 @@ export function describeEfg(
   const { asymmetry, reason } = asymmetryOf(components, limits);
   const coupling = couplingOf(components, nuclide, ownMomentBarn);
   const undefinedBecause: Record<string, string> = {};
-  const axisReason = degeneracyReason(axes, ['Vxx', 'Vyy', 'Vzz'], inAtomicUnits(limits.gap));
+  const axisReason = degeneracyReason(axes, ['Vxx', 'Vyy', 'Vzz'], limits.gap, inAtomicUnits);
   if (axisReason) undefinedBecause.axes = axisReason;
   if (reason) undefinedBecause.asymmetry = reason;
   const missing = couplingReason(nuclide, coupling.quadrupoleMomentBarn);

@@ -52,16 +52,20 @@ const mostDecimals = 10;
  * @example printedNoise(T, 'shielding') → 1.5e-4 for elements such as 12.3456
  */
 export function printedNoise(tensor: Mat3, quantity: Quantity, unitFactor = 1): number {
-  const printed = tensor.map((element) => Math.abs(element / unitFactor));
   for (let decimals = fewestDecimals[quantity]; decimals <= mostDecimals; decimals += 1) {
     const shift = 10 ** decimals;
-    const fits = printed.every((element) => {
-      const scaled = element * shift;
-      return Math.abs(scaled - Math.round(scaled)) <= 1e-15 * scaled * 4;
-    });
-    if (fits) return (1.5 / shift) * Math.abs(unitFactor);
+    if (areWhole(tensor, unitFactor, shift)) return (1.5 / shift) * Math.abs(unitFactor);
   }
   return 0;
+}
+
+/** Whether all elements, as printed and times `shift`, are whole to the rounding of their last digits. */
+function areWhole(tensor: Mat3, unitFactor: number, shift: number): boolean {
+  for (let index = 0; index < 9; index += 1) {
+    const scaled = Math.abs(tensor[index]! / unitFactor) * shift;
+    if (!(Math.abs(scaled - Math.round(scaled)) <= 1e-15 * scaled * 4)) return false;
+  }
+  return true;
 }
 
 /** A residual above this share of the anisotropy is a contradiction (wrong frame, wrong atom), not noise. */

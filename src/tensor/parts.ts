@@ -31,8 +31,16 @@ export function withoutIsotropic(tensor: Mat3): Mat3 {
   const [xx, xy, xz, yx, yy, yz, zx, zy, zz] = tensor;
   // What rounding of the mean leaves of an isotropic tensor is zero.
   const dust = 2 * Number.EPSILON * Math.max(Math.abs(xx), Math.abs(yy), Math.abs(zz));
-  const rest = (element: number) => (Math.abs(element - isotropic) <= dust ? 0 : element - isotropic);
-  return [rest(xx), xy, xz, yx, rest(yy), yz, zx, zy, rest(zz)];
+  const [x, y, z] = [
+    withoutDust(xx - isotropic, dust),
+    withoutDust(yy - isotropic, dust),
+    withoutDust(zz - isotropic, dust),
+  ];
+  return [x, xy, xz, yx, y, yz, zx, zy, z];
+}
+
+function withoutDust(value: number, dust: number): number {
+  return Math.abs(value) <= dust ? 0 : value;
 }
 
 /** Frobenius norm of the traceless part of T, antisymmetric part included; the scale relative residuals refer to. */

@@ -19,22 +19,26 @@ export function principalAxes(
   vectors: readonly [Vec3, Vec3, Vec3],
   gap: number,
 ): PrincipalAxes {
-  const defined = values.map((value, i) =>
-    values.every((other, j) => i === j || !(Math.abs(value - other) <= gap)),
-  );
-  if (defined.every(Boolean)) return rightHanded(vectors[0], vectors[1]);
-  return vectors.map((vector, i) => (defined[i] ? withFixedSign(vector) : null)) as unknown as PrincipalAxes;
+  const isClose = (i: 0 | 1 | 2, j: 0 | 1 | 2): boolean => Math.abs(values[i] - values[j]) <= gap;
+  const [xy, yz, zx] = [isClose(0, 1), isClose(1, 2), isClose(2, 0)];
+  if (!xy && !yz && !zx) return rightHanded(vectors[0], vectors[1]);
+  return [
+    xy || zx ? null : withFixedSign(vectors[0]),
+    xy || yz ? null : withFixedSign(vectors[1]),
+    yz || zx ? null : withFixedSign(vectors[2]),
+  ];
 }
 
-/** Which of three components are degenerate, in words, or null when all axes are defined. */
+/** Which of three components lie within `limit` of each other, in words, or null when all axes are defined. */
 export function degeneracyReason(
   axes: PrincipalAxes,
   names: readonly string[],
-  limit: string,
+  limit: number,
+  inWords: (limit: number) => string,
 ): string | null {
+  if (!axes.includes(null)) return null;
   const missing = names.filter((_, i) => axes[i] === null);
-  if (missing.length === 0) return null;
   const what = missing.length === 3 ? 'all three principal values' : missing.join(' and ');
   const verb = missing.length === 3 ? 'have no axes' : 'have no axes of their own, only the third has one';
-  return `${what} lie within ${limit} of each other: they ${verb}`;
+  return `${what} lie within ${inWords(limit)} of each other: they ${verb}`;
 }

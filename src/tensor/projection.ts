@@ -2,6 +2,7 @@ import type { Mat3 } from '#src/base/matrix3.ts';
 import {
   addMatrices,
   frobeniusNorm,
+  identity3,
   multiply,
   scaleMatrix,
   subtractMatrices,
@@ -31,12 +32,14 @@ export function rotateTensor(rotation: Mat3, tensor: Mat3): Mat3 {
 
 /** T turned back, Rᵀ T R: the inverse of `rotateTensor`. */
 export function turnBack(rotation: Mat3, tensor: Mat3): Mat3 {
+  if (rotation === identity3) return tensor;
   return multiply(multiply(transpose(rotation), tensor), rotation);
 }
 
 /** Element-wise mean; none at all is a caller's mistake and throws. */
 export function meanTensor(tensors: readonly Mat3[]): Mat3 {
   const [first, ...others] = tensors;
+  if (first && others.length === 0) return first;
   if (!first) throw new RangeError('the mean of no tensor is not defined');
   return scaleMatrix(1 / tensors.length, others.reduce(addMatrices, first));
 }
@@ -47,10 +50,12 @@ export function meanTensor(tensors: readonly Mat3[]): Mat3 {
  * unchanged. Nye, Physical Properties of Crystals (1957).
  */
 export function projectOnSiteSymmetry(tensor: Mat3, rotations: readonly Mat3[]): Projection {
-  const projected =
-    rotations.length <= 1 ? tensor : meanTensor(rotations.map((r) => rotateTensor(r, tensor)));
-  const residual = frobeniusNorm(subtractMatrices(tensor, projected));
   const scale = anisotropicNorm(tensor);
+  if (rotations.length <= 1) {
+    return { projected: tensor, residual: 0, anisotropicNorm: scale, relativeResidual: scale > 0 ? 0 : null };
+  }
+  const projected = meanTensor(rotations.map((r) => rotateTensor(r, tensor)));
+  const residual = frobeniusNorm(subtractMatrices(tensor, projected));
   return {
     projected,
     residual,

@@ -2,7 +2,7 @@ import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { frobeniusNorm } from '#src/base/matrix3.ts';
 import { symmetricEigen } from '#src/base/symmetric-eigen.ts';
 import type { AnisotropyMeasures } from './anisotropy.ts';
-import { anisotropyMeasures, inPpm } from './anisotropy.ts';
+import { anisotropyMeasures, inPpm, withAxisReason } from './anisotropy.ts';
 import { noiseLimits } from './noise.ts';
 import { antisymmetricPart, axialVector, isotropicValue, symmetricPart } from './parts.ts';
 import type { PrincipalAxes } from './principal-axes.ts';
@@ -27,6 +27,8 @@ export interface ShieldingDescription extends AnisotropyMeasures {
   readonly noise?: number;
 }
 
+const componentNames = ['σ11', 'σ22', 'σ33'] as const;
+
 /**
  * Everything that follows from one shielding tensor alone (ppm, row-major, not symmetrised, any frame).
  *
@@ -36,23 +38,30 @@ export interface ShieldingDescription extends AnisotropyMeasures {
  *
  * @throws RangeError when an element is not finite.
  */
-export function describeShielding(tensor: Mat3, noisePpm = 0): ShieldingDescription {
+export function describeShielding(
+  tensor: Mat3,
+  noisePpm = 0,
+): ShieldingDescription & { readonly noise: number } {
   const symmetric = symmetricPart(tensor);
   const { values, vectors } = symmetricEigen(symmetric);
   const limits = noiseLimits(symmetric, 'shielding', noisePpm);
   const axes = principalAxes(values, vectors, limits.gap);
   const measures = anisotropyMeasures(values, 'shielding', limits);
-  const axisReason = degeneracyReason(axes, ['σ11', 'σ22', 'σ33'], inPpm(limits.gap));
+  const axisReason = degeneracyReason(axes, componentNames, limits.gap, inPpm);
   return {
     tensor,
     symmetric,
     isotropic: isotropicValue(tensor),
     components: values,
     axes,
-    ...measures,
+    span: measures.span,
+    skew: measures.skew,
+    reducedAnisotropy: measures.reducedAnisotropy,
+    anisotropy: measures.anisotropy,
+    asymmetry: measures.asymmetry,
     antisymmetricNorm: frobeniusNorm(antisymmetricPart(tensor)),
     axialVector: axialVector(tensor),
     noise: limits.noise,
-    undefinedBecause: { ...measures.undefinedBecause, ...(axisReason ? { axes: axisReason } : {}) },
+    undefinedBecause: withAxisReason(measures.undefinedBecause, axisReason),
   };
 }

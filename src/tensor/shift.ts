@@ -2,7 +2,7 @@ import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { combine, identity3 } from '#src/base/matrix3.ts';
 import { symmetricEigen } from '#src/base/symmetric-eigen.ts';
 import type { AnisotropyMeasures } from './anisotropy.ts';
-import { anisotropyMeasures, inPpm } from './anisotropy.ts';
+import { anisotropyMeasures, inPpm, withAxisReason } from './anisotropy.ts';
 import type { NoiseLimits } from './noise.ts';
 import { noiseLimits } from './noise.ts';
 import { isotropicValue, symmetricPart } from './parts.ts';
@@ -131,6 +131,8 @@ function scaled(limits: NoiseLimits, factor: number): NoiseLimits {
   };
 }
 
+const componentNames = ['δ11', 'δ22', 'δ33'] as const;
+
 function assemble(
   tensor: Mat3,
   isotropic: number,
@@ -140,16 +142,19 @@ function assemble(
   limits: NoiseLimits,
 ): ShiftDescription {
   const measures = anisotropyMeasures(components, 'shift', limits);
-  const axisReason = degeneracyReason(axes, ['δ11', 'δ22', 'δ33'], inPpm(limits.gap));
-  const undefinedBecause = { ...measures.undefinedBecause, ...(axisReason ? { axes: axisReason } : {}) };
+  const axisReason = degeneracyReason(axes, componentNames, limits.gap, inPpm);
   return {
     tensor,
     isotropic,
     components,
     axes,
     reference,
-    ...measures,
+    span: measures.span,
+    skew: measures.skew,
+    reducedAnisotropy: measures.reducedAnisotropy,
+    anisotropy: measures.anisotropy,
+    asymmetry: measures.asymmetry,
     noise: limits.noise,
-    undefinedBecause,
+    undefinedBecause: withAxisReason(measures.undefinedBecause, axisReason),
   };
 }
