@@ -20,6 +20,7 @@ flat in vec3 vColour;
 flat in vec3 vRestColour;
 flat in vec3 vCentre;
 flat in vec4 vMarks;
+flat in vec3 vRing;
 
 uniform vec3 uAccent;
 uniform vec3 uHoverColour;
@@ -30,8 +31,9 @@ uniform vec2 uRingPx; // inner and outer distance of the ring from the outline, 
 out vec4 fragColour;
 
 void ring(ViewQuadric q, vec2 e) {
-  float d = outlineDistance(q, e) / uPixelScale;
-  if (vMarks.y < 0.5 || d > uRingPx.y + 1.0) discard;
+  float outside = vRing.z > 0.0 ? length(viewPixel() - vRing.xy) - vRing.z : outlineDistance(q, e);
+  float d = outside / uPixelScale;
+  if (vMarks.y < 0.5 || d < 0.0 || d > uRingPx.y + 1.0) discard;
   bool onRing = d >= uRingPx.x && d <= uRingPx.y;
   vec3 colour = vMarks.y > 1.5 ? uAccent : uHoverColour;
   fragColour = vec4(onRing ? srgbFromLinear(colour) : uPaper, 1.0);

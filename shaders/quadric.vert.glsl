@@ -17,6 +17,7 @@ in float aState; // 0 plain, 1 hovered, 2 selected, 3 both
 in float aShare; // 1 whole
 in vec3 aRestColour;
 in float aPattern; // 0 plain, 1 striped, 2 dotted
+in float aRingRadius; // Å, of the circle that the ring goes round; below 0 the outline
 
 uniform float uRingReachPx; // CSS pixels
 
@@ -30,6 +31,7 @@ flat out vec3 vColour;
 flat out vec3 vRestColour;
 flat out vec3 vCentre; // image axes, pixels
 flat out vec4 vMarks; // circle bits, state, share, pattern
+flat out vec3 vRing; // middle and radius of the circle that the ring goes round, pixels; radius 0: the outline
 
 void main() {
   vec3 centre = viewPoint(aCentre);
@@ -40,7 +42,10 @@ void main() {
   mat3 body = bodyOfImage(inverseShape, q, centre, uPerEyePx);
   // how far its sides lie from the centre: l11, and l11 l22 / |(l11, l21)|
   vec2 sides = vec2(q.outline.x, q.outline.x * q.outline.z / length(q.outline.xy));
-  vec2 reach = 1.0 + (1.0 + (aState > 0.5 ? uRingReachPx * uPixelScale : 0.0)) / sides;
+  float margin = 1.0 + (aState > 0.5 ? uRingReachPx * uPixelScale : 0.0);
+  vec2 reach = 1.0 + margin / sides;
+  bool hasCircle = aState > 0.5 && aRingRadius > 0.0;
+  vRing = hasCircle ? vec3(imagePoint(centre).xy, uPixelsPerAngstrom * aRingRadius / nearness(centre.z)) : vec3(0.0);
   vec2 corner = vec2((gl_VertexID & 1) == 0 ? -1.0 : 1.0, (gl_VertexID & 2) == 0 ? -1.0 : 1.0);
   vOutline = q.outline;
   vDepth = q.depth;
@@ -52,5 +57,6 @@ void main() {
   vRestColour = linearFromSrgb(aRestColour);
   vCentre = image.centre;
   vMarks = vec4(aCircles, aState, aShare, aPattern);
-  gl_Position = image.seen ? clipPoint(image.centre + vec3(outlinePoint(q, reach * corner), 0.0)) : nowhere;
+  vec2 place = hasCircle ? vRing.xy + (vRing.z + margin) * corner : image.centre.xy + outlinePoint(q, reach * corner);
+  gl_Position = image.seen ? clipPoint(vec3(place, image.centre.z)) : nowhere;
 }

@@ -38,6 +38,7 @@ export function sceneArrays({ quadrics, cylinders, lines, polars }: RasterScene)
       [S.circleTableAt, circleTable()],
     );
   }
+  if (quadrics.ringRadii) arrays.push([S.ringRadiiAt, quadrics.ringRadii]);
   if (quadrics.patterns) arrays.push([S.patternsAt, quadrics.patterns]);
   if (polars) {
     arrays.push(

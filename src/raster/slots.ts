@@ -123,6 +123,8 @@ export const leastNearness = 98;
 export const polarReachesAt = 99;
 /** An address: projected vertices of one polar surface. */
 export const polarVerticesAt = 100;
+/** An address: as QuadricBatch.ringRadii; 0 where all are -1. */
+export const ringRadiiAt = 101;
 
 // sizes of what the addresses lead to, in units of four bytes
 export const recordSize = 48;

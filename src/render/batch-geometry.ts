@@ -26,6 +26,7 @@ export function quadricGeometry(batch: QuadricBatch): BufferGeometry {
   put(geometry, 'aState', new Uint8Array(batch.count), 1);
   put(geometry, 'aShare', batch.shares ?? new Uint8Array(batch.count).fill(255), 1, true);
   put(geometry, 'aRestColour', batch.restColours ?? batch.colours, 3, true);
+  put(geometry, 'aRingRadius', batch.ringRadii ?? new Float32Array(batch.count).fill(-1), 1);
   put(geometry, 'aPattern', batch.patterns ?? new Uint8Array(batch.count), 1);
   return geometry;
 }

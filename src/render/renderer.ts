@@ -63,7 +63,7 @@ export function ringStates(scene: Scene, selected: ReadonlySet<string>, hovered:
   const states = new Uint8Array(scene.quadrics.count);
   for (let i = 0; i < states.length; i++) {
     const entry = scene.picks[scene.quadrics.pickIds[i]! - 1];
-    if (entry?.kind !== 'atom' || entry.context) continue;
+    if (scene.quadrics.ringRadii?.[i] === 0 || entry?.kind !== 'atom' || entry.context) continue;
     states[i] = (entry.atomId === hovered ? 1 : 0) + (selected.has(entry.atomId) ? 2 : 0);
   }
   return states;

@@ -6,7 +6,7 @@ import type { DrawnAtom } from './drawn-atoms.ts';
 import type { OccupancyLook } from './occupancy.ts';
 import type { PickEntry, QuadricBatch } from './scene.ts';
 import type { Bead, TensorDrawing } from './tensor-drawing.ts';
-import { centreRadius } from './tensor-drawing.ts';
+import { centreRadius, glyphReach } from './tensor-drawing.ts';
 import type { PrincipalForm, TensorShape } from './tensor-shape.ts';
 import { tensorShape } from './tensor-shape.ts';
 
@@ -39,6 +39,8 @@ export interface QuadricLook {
   readonly share: number;
   readonly rest: Rgb;
   readonly pattern: number;
+  /** As QuadricBatch.ringRadii. */
+  readonly ringRadius: number;
 }
 
 /** Quadrics of all drawn atoms in their order, then beads; picks of the atoms. */
@@ -56,6 +58,7 @@ export function atomQuadrics(
   const shares = new Uint8Array(count).fill(255);
   const restColours = new Uint8Array(3 * count);
   const patterns = new Uint8Array(count);
+  const ringRadii = new Float32Array(count).fill(ownOutline);
   const picks = atoms.map((drawn, i): PickEntry => {
     const one = lookOf(drawn, i, look);
     centres.set(drawn.position, 3 * i);
@@ -66,6 +69,7 @@ export function atomQuadrics(
     shares[i] = one.share;
     restColours.set(one.rest, 3 * i);
     patterns[i] = one.pattern;
+    ringRadii[i] = one.ringRadius;
     const { atom, site, cellShift, context } = drawn;
     return { kind: 'atom', atomId: atom.id, siteIndex: site.index, cellShift, context };
   });
@@ -75,6 +79,7 @@ export function atomQuadrics(
     shapes.set(bead.shape, 9 * i);
     colours.set(bead.colour, 3 * i);
     pickIds[i] = bead.pickId;
+    ringRadii[i] = 0;
   });
   const isDivided = shares.some((share) => share < 255);
   return {
@@ -82,6 +87,7 @@ export function atomQuadrics(
       ...{ count, centres, shapes, colours, circles, pickIds },
       ...(isDivided ? { shares, restColours } : {}),
       ...(patterns.some((pattern) => pattern > 0) ? { patterns } : {}),
+      ...(ringRadii.some((radius) => radius !== ownOutline) ? { ringRadii } : {}),
     },
     picks,
   };
@@ -90,7 +96,8 @@ export function atomQuadrics(
 /** Neighbours outside are this much smaller, so that they stand back. */
 const contextShare = 0.58;
 
-const undivided = { share: 255, rest: [0, 0, 0], circles: 0, pattern: 0 } as const;
+const ownOutline = -1;
+const undivided = { share: 255, rest: [0, 0, 0], circles: 0, pattern: 0, ringRadius: ownOutline } as const;
 
 function lookOf(drawn: DrawnAtom, index: number, look: AtomsLook): QuadricLook {
   const { site, atom, context } = drawn;
@@ -109,12 +116,15 @@ function lookOf(drawn: DrawnAtom, index: number, look: AtomsLook): QuadricLook {
   const share = occupancy?.share ?? 255;
   const rest = occupancy?.rest ?? undivided.rest;
   const pattern = look.patterns.get(site.index) ?? 0;
-  const divided = { share, rest, pattern };
+  const divided = { share, rest, pattern, ringRadius: ownOutline };
   const form = look.tensors?.carries[index] ? look.tensors.forms.get(site.index) : undefined;
   if (form && look.tensors) {
     const colour = look.tensors.centreColourOf(site.index);
     const radius = centreRadius(look.tensors);
-    if (radius !== null) return { ...divided, shape: sphere(radius, divided, look), circles: 0, colour };
+    if (radius !== null) {
+      const ringRadius = glyphReach(site.index, form, look.tensors);
+      return { ...divided, ringRadius, shape: sphere(radius, divided, look), circles: 0, colour };
+    }
     return { ...divided, ...ellipsoidOf(site.index, form, atom.rotation, look.tensors), colour };
   }
   const colour = look.isSiteColoured ? siteColourBytes(site.index) : atomColour(site.element);

@@ -80,7 +80,7 @@ export function centreOf(quadrics: QuadricBatch, i: number): Vec3 {
   return [c[3 * i]!, c[3 * i + 1]!, c[3 * i + 2]!];
 }
 
-/** One drawn copy of an atom on screen: middle and half widths of its outline's box in pixels, depth of its centre. */
+/** One drawn copy of an atom on screen: middle and half widths in pixels of its outline's box or the circle its ring goes round, depth of its centre. */
 export interface ProjectedAtom extends ScreenPoint {
   readonly pickId: number;
   readonly halfWidthPx: number;
@@ -99,11 +99,24 @@ export function projectAtoms(
   for (let i = 0; i < scene.quadrics.count; i++) {
     const pickId = scene.quadrics.pickIds[i]!;
     const entry = scene.picks[pickId - 1];
-    if (entry?.kind !== 'atom' || !atomIds.has(entry.atomId)) continue;
+    const ring = scene.quadrics.ringRadii?.[i] ?? -1;
+    if (ring === 0 || entry?.kind !== 'atom' || !atomIds.has(entry.atomId)) continue;
     const atom = projectQuadric(p, scene.quadrics, i);
-    if (atom) found.push(atom);
+    if (!atom) continue;
+    found.push(ring > 0 ? { ...atom, ...ringCircle(p, scene.quadrics, i) } : atom);
   }
   return found;
+}
+
+/** The circle of `ringRadii` on screen, as both renderers draw it. */
+export function ringCircle(
+  p: Projection,
+  quadrics: QuadricBatch,
+  i: number,
+): Pick<ProjectedAtom, 'xPx' | 'yPx' | 'halfWidthPx' | 'halfHeightPx'> {
+  const { xPx, yPx, depthPx } = projectPoint(p, centreOf(quadrics, i));
+  const radius = (quadrics.ringRadii?.[i] ?? 0) * p.scale * enlargement(p, depthPx);
+  return { xPx, yPx, halfWidthPx: radius, halfHeightPx: radius };
 }
 
 /** The outline's box of quadric i, exact in perspective too; null where the quadric is too near to the eye to be drawn. */

@@ -25,6 +25,11 @@ export interface QuadricBatch {
   readonly restColours?: Uint8Array;
   /** One a quadric: 0 plain, 1 striped, 2 dotted (in the own frame of A): disorder alternatives. Absent: all plain. */
   readonly patterns?: Uint8Array;
+  /**
+   * One a quadric, Å: a ring goes round a circle of this radius about the centre, which holds what else is drawn of the atom (polar
+   * surface, rods); -1: round the quadric's own outline; 0: no ring, as the atom has it elsewhere. Absent: all -1.
+   */
+  readonly ringRadii?: Float32Array;
 }
 
 /**

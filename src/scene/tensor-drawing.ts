@@ -10,6 +10,7 @@ import type { PolarBatch, TensorScale } from './scene.ts';
 import type { ChosenTensors } from './tensor-choice.ts';
 import { lobeColours } from './tensor-choice.ts';
 import type { PrincipalForm } from './tensor-shape.ts';
+import { largestReach } from './tensor-shape.ts';
 
 type Rgb = readonly [number, number, number];
 
@@ -46,6 +47,15 @@ const darkLobe: Rgb = [84, 80, 74];
 export function centreRadius({ scale: { glyph, part } }: TensorDrawing): number | null {
   if (part === 'antisymmetric') return centreRadii.axial;
   return glyph === 'polar' || glyph === 'axes' ? centreRadii[glyph] : null;
+}
+
+/** Å; how far the polar surface, rods or axial vector of a site reach from the atom, the sphere in the middle at least. */
+export function glyphReach(siteIndex: number, form: PrincipalForm, drawing: TensorDrawing): number {
+  const { kind, part, unitsPerAngstrom } = drawing.scale;
+  const centre = centreRadius(drawing) ?? 0;
+  if (part !== 'antisymmetric') return Math.max(centre, largestReach(form, kind) / unitsPerAngstrom);
+  const size = length(drawing.axial.get(siteIndex) ?? [0, 0, 0]) / unitsPerAngstrom;
+  return size < leastLengthAngstrom ? centre : Math.max(size, beadRingRadius + beadRadii[1]);
 }
 
 /** R M Rᵀ */

@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { javaScriptKernel } from '#src/raster/kernel.ts';
 import { bestKernel } from '#src/raster/wasm-kernel.ts';
 import { createRasterizer } from '#src/raster/rasterizer.ts';
+import { ringStates } from '#src/render/renderer.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
 import type { Camera } from '#src/scene/camera.ts';
 import { turn, zoom } from '#src/scene/camera.ts';
@@ -37,6 +38,7 @@ const furtherScenes: readonly (readonly [
   ['polar surfaces in perspective', buildScene(madeQuartz(), { glyph: 'polar' }), darkTheme, 50],
   ['polyhedra', buildScene(madeQuartz(), { polyhedra: ['Si'] }), lightTheme, 0],
   ['polyhedra in perspective', buildScene(madeQuartz(), { polyhedra: ['Si'] }), darkTheme, 50],
+  ['axes in perspective', buildScene(madeUrea(), { glyph: 'axes' }), darkTheme, 50],
   ['axes only', buildScene(madeUrea(), { glyph: 'axes' }), lightTheme, 0],
   ['ellipsoids in perspective', buildScene(madeUrea()), lightTheme, 60],
   ['parts and patterns', withPartsAndPatterns(buildScene(madeQuartz())), lightTheme, 0],
@@ -78,12 +80,7 @@ function compare(
   s.end();
   const rasterizer = createRasterizer(makeKernel());
   rasterizer.setScene(scene);
-  const states = Uint8Array.from(scene.quadrics.pickIds, (pickId) => {
-    const entry = scene.picks[pickId - 1];
-    if (entry?.kind !== 'atom' || entry.context) return 0;
-    return entry.atomId === '0:0' ? 2 : entry.atomId === '1:0' ? 1 : 0;
-  });
-  rasterizer.setStates(states);
+  rasterizer.setStates(ringStates(scene, new Set(['0:0']), '1:0'));
   const view = { camera, viewport: { widthPx: 400, heightPx: 300 }, theme, pixelRatio: 1, samplesAcross };
   const { pixels } = rasterizer.draw(view);
   let differing = 0;

@@ -128,16 +128,40 @@ export function ringPass(first: i32, count: i32): void {
 function oneRing(object: i32, first: i32, count: i32): void {
   const r: i32 = whole(S.recordsAt) + ((S.recordSize * object) << 2);
   if (part(r, S.oBoxHalf) < 0) return;
+  const radii = whole(S.ringRadiiAt);
+  const own: f32 = radii === 0 ? -1 : part(radii, object);
+  if (own === 0) return;
+  if (own < 0) {
+    const height: f32 = 1 / root(part(r, S.qPerYy));
+    ringRows(object, r, 0, first, count, part(r, S.qColumn), part(r, S.qRow), part(r, S.oReach), height);
+    return;
+  }
+  const centre: i32 = whole(S.centresAt) + 12 * object;
+  const per: f32 = 1 / nearness(turnedPoint(centre, 6));
+  const radius = own * real(S.samplesPerAngstrom) * per;
+  const column = real(S.middleColumn) + turnedPoint(centre, 0) * per;
+  const row = real(S.middleRow) - turnedPoint(centre, 3) * per;
+  ringRows(object, r, radius, first, count, column, row, radius, radius);
+}
+
+/** A ring about a place: round a circle of a radius, or round the record's outline where that is 0. */
+function ringRows(
+  object: i32,
+  r: i32,
+  radius: f32,
+  first: i32,
+  count: i32,
+  column: f32,
+  middle: f32,
+  width: f32,
+  height: f32,
+): void {
   const scale = real(S.pixelScale);
   const inner = real(S.ringInner);
   const outer = real(S.ringOuter);
   const reach = (outer + 1) * scale;
   const isSelected = byteAt(whole(S.statesAt) + object) > 1;
   const ink = whole(isSelected ? S.selectedPixel : S.hoveredPixel);
-  const height: f32 = 1 / root(part(r, S.qPerYy));
-  const column = part(r, S.qColumn);
-  const middle = part(r, S.qRow);
-  const width = part(r, S.oReach);
   const low = mostWhole(0, up(middle - height - reach) - first);
   const high = leastWhole(count - 1, down(middle + height + reach) - first);
   const left = mostWhole(0, up(column - width - reach));
@@ -147,15 +171,21 @@ function oneRing(object: i32, first: i32, count: i32): void {
     const dy = middle - asReal(first + row);
     for (let x = left; x <= right; x++) {
       const dx = asReal(x) - column;
-      const ex = part(r, S.qKxx) * dx + part(r, S.qKxy) * dy;
-      const ey = part(r, S.qKxy) * dx + part(r, S.qKyy) * dy;
-      const square = dx * ex + dy * ey;
-      if (square < 1) continue;
-      const radius = root(square);
-      const distance = ((radius - 1) * radius) / root(ex * ex + ey * ey) / scale;
-      if (distance > outer + 1) continue;
+      const outside: f32 = radius > 0 ? root(dx * dx + dy * dy) - radius : outlineDistance(r, dx, dy);
+      const distance = outside / scale;
+      if (distance < 0 || distance > outer + 1) continue;
       const isOn = distance >= inner && distance <= outer;
       setWordPart(colours, x, isOn ? ink : whole(S.paperPixel));
     }
   }
+}
+
+/** Samples from the outline of a quadric to a place outside, to first order; below 0 inside. */
+function outlineDistance(r: i32, dx: f32, dy: f32): f32 {
+  const ex = part(r, S.qKxx) * dx + part(r, S.qKxy) * dy;
+  const ey = part(r, S.qKxy) * dx + part(r, S.qKyy) * dy;
+  const square = dx * ex + dy * ey;
+  if (square < 1) return -1;
+  const radius = root(square);
+  return ((radius - 1) * radius) / root(ex * ex + ey * ey);
 }

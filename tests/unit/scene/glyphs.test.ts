@@ -222,6 +222,8 @@ describe('antisymmetric part', () => {
         expect(volume(bead)).toBeGreaterThan(volume(beads[k]!));
       });
     }
+    // the ring round the atom holds the rods; its beads have none
+    scene.quadrics.ringRadii!.forEach((radius, q) => expect(radius).toBeCloseTo(q < 4 ? 13 / 20 : 0, 6));
     expect(scene.scaleStatement).toBe('1 Å = 20 ppm of the axial vector');
     expect(scene.caption).toContain('antisymmetric part');
   });
