@@ -1,7 +1,6 @@
 import { leastNearness, nearness } from '#src/scene/perspective.ts';
 import { polarFrequencies, polarLevel } from '#src/scene/polar-mesh.ts';
 import type { Projection } from '#src/scene/project.ts';
-import { viewPoint } from '#src/scene/project.ts';
 import type { PolarBatch } from '#src/scene/scene.ts';
 
 /** Bytes at most of patches: beyond it surfaces are drawn again where they are met again. */
@@ -32,9 +31,16 @@ export function planPolars(
 ): PolarPlan {
   const levels = new Int32Array(polars.count).fill(-1);
   const { centres, tensors: t } = polars;
+  const m = p.rotation;
   let [finestLevel, poolBytes] = [-1, 0];
   for (let k = 0; k < polars.count; k++) {
-    const [x, y, z] = viewPoint(p, [centres[3 * k]!, centres[3 * k + 1]!, centres[3 * k + 2]!]);
+    // viewPoint, without an array for each
+    const a = centres[3 * k]! - p.target[0];
+    const b = centres[3 * k + 1]! - p.target[1];
+    const c = centres[3 * k + 2]! - p.target[2];
+    const x = p.scale * (m[0] * a + m[1] * b + m[2] * c);
+    const y = p.scale * (m[3] * a + m[4] * b + m[5] * c);
+    const z = p.scale * (m[6] * a + m[7] * b + m[8] * c);
     const at = 6 * k;
     const own = t[at]! ** 2 + t[at + 1]! ** 2 + t[at + 2]! ** 2;
     const mixed = t[at + 3]! ** 2 + t[at + 4]! ** 2 + t[at + 5]! ** 2;
