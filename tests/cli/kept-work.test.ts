@@ -228,6 +228,23 @@ describe('work kept in the browser', () => {
     await page.getByRole('button', { name: 'Undo clear the page' }).click();
     await isBack(page, { ...before, selection: null, future: ['clear the page'] });
   });
+
+  it('that ended the page twice is left aside, which is said', async () => {
+    await page.waitForTimeout(600);
+    await page.evaluate(async () => {
+      const done = <Result>(request: IDBRequest<Result>): Promise<Result> =>
+        new Promise((resolve) => (request.onsuccess = () => resolve(request.result)));
+      const database = await done(indexedDB.open('ellipsite'));
+      const works = database.transaction('work', 'readwrite').objectStore('work');
+      for (const key of await done(works.getAllKeys())) {
+        await done(works.put({ ...(await done(works.get(key))), attempts: 2 }, key));
+      }
+      database.close();
+    });
+    await page.reload();
+    await page.getByText('work-left-aside').waitFor();
+    await page.getByRole('row', { name: /Si1/ }).waitFor();
+  });
 });
 
 describe('a case file', () => {
