@@ -90,15 +90,13 @@ vec2 pixelGradient(ViewQuadric q, vec2 g) {
 
 const float rimFloor = 0.02;
 
-// First-order distances on screen, pixels, to the three great circles u_k = 0; u = body (e, s) + shift at this point.
+// First-order distances on screen, pixels, to the three great circles u_k = 0; u = body (e, s) + shift at this point. All three at
+// once: indexing by a variable is slow where the processor stands in for a graphics chip.
 vec3 circleDistances(ViewQuadric q, mat3 body, vec3 u, vec3 unit) {
   vec3 steep = body[2] / max(unit.z, rimFloor);
-  vec3 d;
-  for (int k = 0; k < 3; k++) {
-    vec2 g = vec2(body[0][k], body[1][k]) - steep[k] * unit.xy;
-    d[k] = abs(u[k]) / length(pixelGradient(q, g));
-  }
-  return d;
+  vec3 gy = (body[1] - steep * unit.y) / q.outline.z;
+  vec3 gx = (body[0] - steep * unit.x - q.outline.y * gy) / q.outline.x;
+  return abs(u) * inversesqrt(gx * gx + gy * gy);
 }
 
 // First-order distance from the outline, pixels; positive outside.
