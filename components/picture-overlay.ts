@@ -24,14 +24,14 @@ export function ringsDrawing(
   </svg>`;
 }
 
-/** Labels beside their atoms, and the leader lines of those that had to move away. */
+/** Labels beside their atoms, and the leader lines of those that stand away: a dot says on which atom a line ends. */
 export function labelsDrawing({ labels }: PictureOverlay): TemplateResult | typeof nothing {
   if (labels.length === 0) return nothing;
   const leaders = labels.flatMap(({ leader }) => (leader ? [leader] : []));
   return html`${
     leaders.length > 0
       ? html`<svg class="leaders" aria-hidden="true">
-          ${leaders.map(([x1, y1, x2, y2]) => svg`<line x1=${x1} y1=${y1} x2=${x2} y2=${y2}></line>`)}
+          ${leaders.map(([x1, y1, x2, y2]) => svg`<line x1=${x1} y1=${y1} x2=${x2} y2=${y2}></line><circle cx=${x1} cy=${y1} r="2.4"></circle>`)}
         </svg>`
       : nothing
   }${labels.map(

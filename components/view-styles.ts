@@ -92,8 +92,13 @@ export const viewStyles = css`
     stroke-width: 1.8;
   }
   svg.leaders line {
-    stroke: var(--soft);
+    stroke: var(--ink);
     stroke-width: 1;
+  }
+  svg.leaders circle {
+    fill: var(--ink);
+    stroke: var(--paper);
+    stroke-width: 1.2;
   }
   svg.annotations polyline {
     fill: none;

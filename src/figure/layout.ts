@@ -264,7 +264,7 @@ function labelItems(
   crystal: CrystalPlace,
 ): { readonly items: SheetItem[]; readonly leftOut: number } {
   const { textPt, theme } = request;
-  const { ink, soft, render } = figureThemes[theme];
+  const { ink, render } = figureThemes[theme];
   const { pointsPerCssPx } = crystal;
   const measure = (text: string): { widthPx: number; heightPx: number } => ({
     widthPx: setText(runsOf(text), textPt).widthPt / pointsPerCssPx,
@@ -280,7 +280,13 @@ function labelItems(
     const [from, to] = [onSheet(leader[0], leader[1]), onSheet(leader[2], leader[3])];
     const widthPt = Math.max(thinnestLinePt, 0.06 * textPt);
     const ends = { x1Pt: from.xPt, y1Pt: from.yPt, x2Pt: to.xPt, y2Pt: to.yPt };
-    return [{ kind: 'line', ...ends, widthPt, colour: soft, ends: 'flat' }];
+    const dot = { kind: 'disc', xPt: from.xPt, yPt: from.yPt } as const;
+    return [
+      { kind: 'line', ...ends, widthPt, colour: ink, ends: 'flat' },
+      // on a rim of paper the dot shows over every colour
+      { ...dot, radiusPt: 2.6 * widthPt, colour: render.paper },
+      { ...dot, radiusPt: 1.8 * widthPt, colour: ink },
+    ];
   });
   const texts = placed.map(({ text, leftPx, topPx }): SheetItem => {
     const { xPt, yPt } = onSheet(leftPx, topPx);

@@ -2,35 +2,39 @@ import type { Vec3 } from '#src/base/matrix3.ts';
 import { apply, multiply, transpose } from '#src/base/matrix3.ts';
 import { dot } from '#src/base/vector3.ts';
 import type { Camera, Viewport } from './camera.ts';
+import type { Clearness } from './label-clearness.ts';
+import { clearness, isPlain, obstacles, seenPoints } from './label-clearness.ts';
+import type { LabelRoom, LedBox, ScreenBox, ScreenLine } from './label-room.ts';
+import { labelRoom } from './label-room.ts';
 import type { Projection } from './project.ts';
 import { enlargement, projection, projectPoint, viewShape } from './project.ts';
 import type { LabelAnchor, Scene } from './scene.ts';
 import type { ScreenAtoms } from './screen-atoms.ts';
-import { isCovered, polarTensor, screenAtoms } from './screen-atoms.ts';
+import { outlineShare, polarTensor, screenAtoms } from './screen-atoms.ts';
 
 /** An atom's label on screen before it is placed; CSS pixels from the upper left corner. */
 export interface ProjectedAnchor {
   readonly text: string;
   readonly pickId: number;
+  /** Index of the atom's ellipsoid. */
+  readonly quadric: number;
   readonly xPx: number;
   readonly yPx: number;
   readonly depthPx: number;
   /** Distance from the centre to the atom's outline in a direction on screen (unit vector, y downwards). */
   readonly outlinePx: (dx: number, dy: number) => number;
-  /** Whether another atom covers this one's centre. */
+  /** Points of the atom that nothing covers: its centre alone where that is seen, else some of those round it. */
+  readonly seen: () => readonly { readonly xPx: number; readonly yPx: number }[];
+  /** Whether other atoms cover this one. */
   readonly isHidden: () => boolean;
 }
 
-/** A label that found room: its box's left upper corner. */
-export interface PlacedLabel {
+/** A label that found room. */
+export interface PlacedLabel extends LedBox {
   readonly text: string;
   readonly pickId: number;
-  readonly leftPx: number;
-  readonly topPx: number;
-  readonly widthPx: number;
-  readonly heightPx: number;
-  /** Line from the atom's outline to the box, where the label had to move away from its atom: x1, y1, x2, y2. */
-  readonly leader: readonly [number, number, number, number] | null;
+  /** Line from a seen point of the atom, the centre if it can be, to the box, where the label stands away or could be another atom's. */
+  readonly leader: ScreenLine | null;
   /** Which of the possible spots about its atom it took. */
   readonly spot: number;
 }
@@ -55,12 +59,16 @@ function anchorsOf(scene: Scene, p: Projection, viewport: Viewport, atoms: Scree
     const at = projectPoint(p, label.position);
     const isInside = at.xPx >= 0 && at.yPx >= 0 && at.xPx <= viewport.widthPx && at.yPx <= viewport.heightPx;
     if (!isInside) continue;
+    let known: ReturnType<typeof seenPoints> | null = null;
+    const seen = () => (known ??= seenPoints(atoms, label.quadric));
     anchors.push({
       text: label.text,
       pickId: label.pickId,
+      quadric: label.quadric,
       ...at,
       outlinePx: outlineOf(scene, p, label, enlargement(p, at.depthPx), polarOf.get(label.pickId)),
-      isHidden: () => isCovered(at, label.pickId, atoms),
+      seen,
+      isHidden: () => seen().length === 0,
     });
   }
   return anchors.sort((one, other) => other.depthPx - one.depthPx || one.pickId - other.pickId);
@@ -112,35 +120,39 @@ interface Spot {
   readonly price: number;
 }
 
-/** CSS pixels between an atom's outline and its label, and farther away, with a leader line. */
-const gapsPx = [3, 18, 36] as const;
-const gapPrices = [0, 0.6, 1] as const;
-/** Best direction first: upper right, right, lower right, upper left, left, lower left, above, below. */
+/** CSS pixels between an atom's outline and its label beside it, and farther away, with a leader line. */
+const nearPx = 3;
+const farPx = [14, 26, 40, 58] as const;
+/** Best direction first: upper right, right, lower right, upper left, left, lower left, above, below; then those between. */
 const directions: readonly (readonly [number, number])[] = [
-  [Math.SQRT1_2, -Math.SQRT1_2],
-  [1, 0],
-  [Math.SQRT1_2, Math.SQRT1_2],
-  [-Math.SQRT1_2, -Math.SQRT1_2],
-  [-1, 0],
-  [-Math.SQRT1_2, Math.SQRT1_2],
-  [0, -1],
-  [0, 1],
-];
+  ...[-45, 0, 45, -135, 180, 135, -90, 90],
+  ...[-22.5, 22.5, -67.5, 67.5, -157.5, 157.5, -112.5, 112.5],
+].map((degrees) => [Math.cos((degrees * Math.PI) / 180), Math.sin((degrees * Math.PI) / 180)] as const);
 
-/** All spots, cheapest first. */
-const spots: readonly Spot[] = gapsPx.flatMap((gapPx, ring) =>
-  directions.map(([dx, dy], i) => ({ dx, dy, gapPx, price: gapPrices[ring]! + 0.04 * i })),
-);
+const nearSpots: readonly Spot[] = directions.map(([dx, dy], i) => ({
+  ...{ dx, dy, gapPx: nearPx, price: 0.04 * i },
+}));
+/** On the atom itself, where it is large enough. */
+const onAtom: Spot = { dx: 0, dy: 0, gapPx: 0, price: 1.3 };
+const awaySpots: readonly Spot[] = [
+  onAtom,
+  ...farPx.flatMap((gapPx, ring) =>
+    directions.map(([dx, dy], i) => ({ dx, dy, gapPx, price: 0.9 + 0.5 * ring + 0.03 * i })),
+  ),
+].sort((one, other) => one.price - other.price);
+/** All spots; those beside the atom come first. */
+const spots: readonly Spot[] = [...nearSpots, ...awaySpots];
 
-/** Price of standing wholly on other atoms, and what the spot of the picture before is worth. */
-const coverPrice = 1.2;
+/** Price of each outline that a label with a leader touches, and what the spot of the picture before is worth. */
+const touchPrice = 0.4;
 const loyalty = 0.45;
 
 /**
- * Labels that have room, front atoms first: each takes the cheapest spot about its atom whose box neither leaves the
- * viewport nor meets a label placed before. Standing on other atoms costs, so does distance; a label that stands away gets a
- * leader line. A label without room, or of a covered atom, is left out. With the labels of the picture before, each
- * prefers the spot it had, so that labels don't jump while the crystal turns; the same input gives the same labels.
+ * Labels that have room, front atoms first. A label stands beside its atom where nobody can take it for another one's; then,
+ * where no such place is left, farther away with a leader line that ends on its atom, off other atoms; or on the atom itself.
+ * Without room, or on a covered atom, it is left out. Labels keep within the viewport, off each other and each other's leaders
+ * and off the boxes `keptOff`. With the labels of the picture before, each prefers the spot it had, so that labels don't jump
+ * while the crystal turns; the same input gives the same labels.
  */
 export function placeLabels(
   scene: Scene,
@@ -148,125 +160,128 @@ export function placeLabels(
   viewport: Viewport,
   measure: MeasureText,
   before: readonly PlacedLabel[] = [],
+  keptOff: readonly ScreenBox[] = [],
 ): PlacedLabel[] {
   if (scene.labels.length === 0) return [];
   const p = projection(camera, viewport);
   const atoms = screenAtoms(scene, p, viewport);
   const previous = new Map(before.map(({ pickId, spot }) => [pickId, spot]));
-  const room = freeRoom(viewport);
+  const place: Place = { room: labelRoom(viewport, keptOff), clear: clearness(atoms) };
+  const placed: PlacedLabel[] = [];
+  const take = (label: PlacedLabel | null): boolean => {
+    if (!label) return false;
+    place.room.take(label);
+    placed.push(label);
+    return true;
+  };
+  const crowded: ProjectedAnchor[] = [];
   let looked = 0;
   for (const anchor of anchorsOf(scene, p, viewport, atoms)) {
     if (anchor.isHidden()) continue;
     if (looked++ >= mostLabels) break;
-    const best = cheapest(anchor, measure(anchor.text), previous.get(anchor.pickId), room, atoms);
-    if (best) room.take(best);
+    if (!take(beside(anchor, measure(anchor.text), previous.get(anchor.pickId), place))) crowded.push(anchor);
   }
-  return room.taken;
+  for (const anchor of crowded) take(away(anchor, measure(anchor.text), previous.get(anchor.pickId), place));
+  return placed;
 }
 
-function cheapest(
+interface Place {
+  readonly room: LabelRoom;
+  readonly clear: Clearness;
+}
+
+/** The first spot beside the atom that is free and clear; the one before if it is not much worse. */
+function beside(
   anchor: ProjectedAnchor,
   size: ReturnType<MeasureText>,
   before: number | undefined,
-  room: FreeRoom,
-  atoms: ScreenAtoms,
+  { room, clear }: Place,
+): PlacedLabel | null {
+  const fits = (index: number): PlacedLabel | null => {
+    const label = labelAt(anchor, size, index, false);
+    if (!room.isFree(label) || !isPlain(label, anchor.pickId, clear)) return null;
+    return standsAtSeenPart(anchor, spots[index]!) ? label : null;
+  };
+  const known = before !== undefined && before < nearSpots.length ? fits(before) : null;
+  const limit = before === undefined ? Infinity : spots[before]!.price - loyalty;
+  for (const [index, { price }] of nearSpots.entries()) {
+    if (known && price >= limit) break;
+    // a label that stood away comes back only to a much better place
+    if (!known && before !== undefined && before >= nearSpots.length && price >= limit) break;
+    const label = fits(index);
+    if (label) return label;
+  }
+  return known;
+}
+
+/** A partly covered atom has its label on the side that is seen. */
+function standsAtSeenPart({ xPx, yPx, seen }: ProjectedAnchor, { dx, dy }: Spot): boolean {
+  return seen().some((at) => {
+    const [x, y] = [at.xPx - xPx, at.yPx - yPx];
+    return x * dx + y * dy >= 0.7 * Math.hypot(x, y);
+  });
+}
+
+/** The cheapest free spot away from the atom, or on it. */
+function away(
+  anchor: ProjectedAnchor,
+  size: ReturnType<MeasureText>,
+  before: number | undefined,
+  { room, clear }: Place,
 ): PlacedLabel | null {
   let best: PlacedLabel | null = null;
   let bestPrice = Infinity;
   const look = (index: number, rebate: number): void => {
-    const price = spots[index]!.price - rebate;
+    const spot = spots[index]!;
+    const price = spot.price - rebate;
     if (price >= bestPrice) return;
-    const label = labelAt(anchor, size, index);
+    const label = labelAt(anchor, size, index, spot !== onAtom);
     if (!room.isFree(label)) return;
-    const full = price + coverPrice * coveredShare(label, atoms, (bestPrice - price) / coverPrice);
+    if (spot === onAtom && !(isInside(label, anchor, clear) && isPlain(label, anchor.pickId, clear))) return;
+    const full = price + touchPrice * obstacles(label, anchor.pickId, clear);
     if (full >= bestPrice) return;
     best = label;
     bestPrice = full;
   };
-  if (before !== undefined) look(before, loyalty);
-  for (let index = 0; index < spots.length; index++) look(index, 0);
+  if (before !== undefined && before >= nearSpots.length) look(before, loyalty);
+  for (let index = nearSpots.length; index < spots.length; index++) {
+    if (spots[index]!.price >= bestPrice) break;
+    look(index, 0);
+  }
   return best;
 }
 
+/** Whether an atom's own outline holds all of a box. */
+function isInside(
+  { leftPx, topPx, widthPx, heightPx }: ScreenBox,
+  { quadric }: ProjectedAnchor,
+  { atoms }: Clearness,
+) {
+  return [leftPx, leftPx + widthPx].every((x) =>
+    [topPx, topPx + heightPx].every((y) => outlineShare(atoms, quadric, x, y) < 1),
+  );
+}
+
 function labelAt(
-  { text, pickId, xPx, yPx, outlinePx }: ProjectedAnchor,
+  { text, pickId, xPx, yPx, outlinePx, seen }: ProjectedAnchor,
   { widthPx, heightPx }: ReturnType<MeasureText>,
   spot: number,
+  isLed: boolean,
 ): PlacedLabel {
   const { dx, dy, gapPx } = spots[spot]!;
-  const outline = outlinePx(dx, dy);
+  const outline = gapPx > 0 ? outlinePx(dx, dy) : 0;
   const x = xPx + dx * (outline + gapPx);
   const y = yPx + dy * (outline + gapPx);
-  const leftPx = x + (dx > 0 ? 0 : dx < 0 ? -widthPx : -widthPx / 2);
+  const across = Math.abs(dx) < 1e-9 ? 0.5 : dx > 0 ? 0 : 1;
+  const leftPx = x - across * widthPx;
   const topPx = y - heightPx / 2 + (dy * heightPx) / 2;
-  const isAway = gapPx > gapsPx[0];
-  const leader = isAway ? ([xPx + dx * outline, yPx + dy * outline, x - dx, y - dy] as const) : null;
+  const leader = isLed ? leaderTo(x - dx, y - dy, seen()) : null;
   return { text, pickId, leftPx, topPx, widthPx, heightPx, leader, spot };
 }
 
-/** Share of a label's box that lies on other atoms' boxes, at most 1; not counted on where it reaches `enough`. */
-function coveredShare(
-  { leftPx, topPx, widthPx, heightPx, pickId }: PlacedLabel,
-  atoms: ScreenAtoms,
-  enough: number,
-): number {
-  const [right, bottom, whole] = [leftPx + widthPx, topPx + heightPx, widthPx * heightPx];
-  let area = 0;
-  atoms.within(leftPx, topPx, right, bottom, (i) => {
-    if (atoms.pickIds[i] === pickId) return false;
-    const [x, y] = [atoms.xPx[i]!, atoms.yPx[i]!];
-    const [w, h] = [atoms.halfWidthPx[i]!, atoms.halfHeightPx[i]!];
-    const wide = Math.min(right, x + w) - Math.max(leftPx, x - w);
-    const high = Math.min(bottom, y + h) - Math.max(topPx, y - h);
-    if (wide > 0 && high > 0) area += wide * high;
-    return area >= Math.min(1, enough) * whole;
-  });
-  return Math.min(1, area / whole);
-}
-
-interface FreeRoom {
-  readonly taken: PlacedLabel[];
-  readonly isFree: (label: PlacedLabel) => boolean;
-  readonly take: (label: PlacedLabel) => void;
-}
-
-/** Side of a cell of the grid that finds labels placed before, CSS pixels. */
-const roomPx = 64;
-
-function freeRoom({ widthPx, heightPx }: Viewport): FreeRoom {
-  const taken: PlacedLabel[] = [];
-  const columns = Math.ceil(widthPx / roomPx) + 1;
-  const grid = new Map<number, PlacedLabel[]>();
-  const some = (label: PlacedLabel, test: (cell: number) => boolean): boolean => {
-    const [c0, c1] = [Math.floor(label.leftPx / roomPx), Math.floor((label.leftPx + label.widthPx) / roomPx)];
-    const [r0, r1] = [Math.floor(label.topPx / roomPx), Math.floor((label.topPx + label.heightPx) / roomPx)];
-    for (let r = r0; r <= r1; r++) for (let c = c0; c <= c1; c++) if (test(r * columns + c)) return true;
-    return false;
-  };
-  const isInside = ({ leftPx, topPx, widthPx: w, heightPx: h }: PlacedLabel): boolean =>
-    leftPx >= 0 && topPx >= 0 && leftPx + w <= widthPx && topPx + h <= heightPx;
-  return {
-    taken,
-    isFree: (label) =>
-      isInside(label) &&
-      !some(label, (cell) => (grid.get(cell) ?? []).some((other) => overlaps(label, other))),
-    take: (label) => {
-      taken.push(label);
-      some(label, (cell) => {
-        const known = grid.get(cell);
-        if (known) known.push(label);
-        else grid.set(cell, [label]);
-        return false;
-      });
-    },
-  };
-}
-
-function overlaps(one: PlacedLabel, other: PlacedLabel): boolean {
-  return (
-    one.leftPx < other.leftPx + other.widthPx &&
-    other.leftPx < one.leftPx + one.widthPx &&
-    one.topPx < other.topPx + other.heightPx &&
-    other.topPx < one.topPx + one.heightPx
-  );
+/** From the nearest point of the atom that is seen. */
+function leaderTo(x: number, y: number, seen: ReturnType<ProjectedAnchor['seen']>): ScreenLine {
+  const far = (at: { readonly xPx: number; readonly yPx: number }) => Math.hypot(at.xPx - x, at.yPx - y);
+  const end = seen.reduce((best, at) => (far(at) < far(best) ? at : best));
+  return [end.xPx, end.yPx, x, y];
 }

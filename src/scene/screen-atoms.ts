@@ -1,6 +1,6 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { apply } from '#src/base/matrix3.ts';
-import { length } from '#src/base/vector3.ts';
+import { dot, length } from '#src/base/vector3.ts';
 import type { Camera, Viewport } from './camera.ts';
 import type { Projection } from './project.ts';
 import { enlargement, projection } from './project.ts';
@@ -11,7 +11,7 @@ const gridPx = 24;
 
 /**
  * Where everything drawn stands on screen, as flat arrays: centre, half widths of its box (CSS pixels, exact but for a few
- * per cent in perspective), depth and pick id; with a grid over the viewport to find what lies somewhere.
+ * per cent in perspective), how it is tilted, depth and pick id; with a grid over the viewport to find what lies somewhere.
  */
 export interface ScreenAtoms {
   readonly count: number;
@@ -19,6 +19,8 @@ export interface ScreenAtoms {
   readonly yPx: Float64Array;
   readonly halfWidthPx: Float64Array;
   readonly halfHeightPx: Float64Array;
+  /** Off-diagonal element of Σ, with outline xᵀ Σ⁻¹ x = 1 and the squares of the half widths as diagonal (y downwards), px². */
+  readonly tiltPx2: Float64Array;
   readonly depthPx: Float64Array;
   readonly pickIds: Uint32Array;
   /** Calls back once with the index of everything whose box meets a box in the viewport, until the callback says true. */
@@ -41,12 +43,13 @@ export function screenAtoms(scene: Scene, p: Projection, viewport: Viewport): Sc
     yPx: new Float64Array(count),
     halfWidthPx: new Float64Array(count),
     halfHeightPx: new Float64Array(count),
+    tiltPx2: new Float64Array(count),
     depthPx: new Float64Array(count),
     pickIds: new Uint32Array(count),
   };
   const right: Vec3 = [p.rotation[0], p.rotation[1], p.rotation[2]];
   const up: Vec3 = [p.rotation[3], p.rotation[4], p.rotation[5]];
-  const put = (i: number, centres: Float32Array, k: number, wide: number, high: number, pickId: number) => {
+  const put = (i: number, centres: Float32Array, k: number, across: Vec3, upwards: Vec3, pickId: number) => {
     const x = centres[3 * k]! - p.target[0];
     const y = centres[3 * k + 1]! - p.target[1];
     const z = centres[3 * k + 2]! - p.target[2];
@@ -56,20 +59,29 @@ export function screenAtoms(scene: Scene, p: Projection, viewport: Viewport): Sc
     boxes.xPx[i] = p.centreXPx + scale * (r[0] * x + r[1] * y + r[2] * z);
     boxes.yPx[i] = p.centreYPx - scale * (r[3] * x + r[4] * y + r[5] * z);
     boxes.depthPx[i] = depthPx;
-    boxes.halfWidthPx[i] = wide * scale;
-    boxes.halfHeightPx[i] = high * scale;
+    boxes.halfWidthPx[i] = length(across) * scale;
+    boxes.halfHeightPx[i] = length(upwards) * scale;
+    boxes.tiltPx2[i] = -dot(across, upwards) * scale * scale;
     boxes.pickIds[i] = pickId;
   };
   for (let i = 0; i < quadrics.count; i++) {
-    const wide = reachAlong(quadrics.shapes, 9 * i, right);
-    put(i, quadrics.centres, i, wide, reachAlong(quadrics.shapes, 9 * i, up), quadrics.pickIds[i]!);
+    const across = rowAlong(quadrics.shapes, 9 * i, right);
+    put(i, quadrics.centres, i, across, rowAlong(quadrics.shapes, 9 * i, up), quadrics.pickIds[i]!);
   }
   for (let k = 0; polars && k < polars.count; k++) {
     const t = polarTensor(polars.tensors, k);
-    const [wide, high] = [length(apply(t, right)), length(apply(t, up))];
-    put(quadrics.count + k, polars.centres, k, wide, high, polars.pickIds[k]!);
+    // the ellipsoid round the lobes: |dᵀTd| ≤ |Td|
+    put(quadrics.count + k, polars.centres, k, apply(t, right), apply(t, up), polars.pickIds[k]!);
   }
   return { ...boxes, within: gridOver(boxes, viewport) };
+}
+
+/** How far out a point lies in what is drawn as i: 0 at its centre, 1 on its outline; Infinity where it is seen edge on. */
+export function outlineShare(atoms: ScreenAtoms, i: number, xPx: number, yPx: number): number {
+  const [x, y] = [xPx - atoms.xPx[i]!, yPx - atoms.yPx[i]!];
+  const [xx, yy, xy] = [atoms.halfWidthPx[i]! ** 2, atoms.halfHeightPx[i]! ** 2, atoms.tiltPx2[i]!];
+  const area2 = xx * yy - xy * xy;
+  return area2 > 1e-6 ? Math.sqrt(Math.max(0, yy * x * x - 2 * xy * x * y + xx * y * y) / area2) : Infinity;
 }
 
 /** Whether something nearer to the viewer covers a point of the atom with a pick id. */
@@ -81,9 +93,7 @@ export function isCovered(
   let covered = false;
   atoms.within(at.xPx, at.yPx, at.xPx, at.yPx, (i) => {
     if (atoms.pickIds[i] === ownId || atoms.depthPx[i]! <= at.depthPx) return false;
-    const x = (at.xPx - atoms.xPx[i]!) / atoms.halfWidthPx[i]!;
-    const y = (at.yPx - atoms.yPx[i]!) / atoms.halfHeightPx[i]!;
-    covered = x * x + y * y < 1;
+    covered = outlineShare(atoms, i, at.xPx, at.yPx) < 1;
     return covered;
   });
   return covered;
@@ -117,12 +127,13 @@ export function polarTensor(tensors: Float32Array, k: number): Mat3 {
   return [at(0), at(3), at(4), at(3), at(1), at(5), at(4), at(5), at(2)];
 }
 
-/** How far an ellipsoid reaches along a unit vector: |Aᵀ d|. */
-function reachAlong(shapes: Float32Array, o: number, [x, y, z]: Vec3): number {
-  const a = shapes[o]! * x + shapes[o + 3]! * y + shapes[o + 6]! * z;
-  const b = shapes[o + 1]! * x + shapes[o + 4]! * y + shapes[o + 7]! * z;
-  const c = shapes[o + 2]! * x + shapes[o + 5]! * y + shapes[o + 8]! * z;
-  return Math.sqrt(a * a + b * b + c * c);
+/** Aᵀ d: its length is how far an ellipsoid reaches along the unit vector d. */
+function rowAlong(shapes: Float32Array, o: number, [x, y, z]: Vec3): Vec3 {
+  return [
+    shapes[o]! * x + shapes[o + 3]! * y + shapes[o + 6]! * z,
+    shapes[o + 1]! * x + shapes[o + 4]! * y + shapes[o + 7]! * z,
+    shapes[o + 2]! * x + shapes[o + 5]! * y + shapes[o + 8]! * z,
+  ];
 }
 
 type Boxes = Pick<ScreenAtoms, 'count' | 'xPx' | 'yPx' | 'halfWidthPx' | 'halfHeightPx'>;

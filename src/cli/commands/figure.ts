@@ -145,9 +145,12 @@ function figureProblems(own: OwnValues, scene: Scene, { labelsLeftOut }: Sheet):
     );
   }
   if (labelsLeftOut > 0) {
-    const count = labelsLeftOut === 1 ? '1 label' : `${labelsLeftOut} labels`;
+    const words =
+      labelsLeftOut === 1
+        ? '1 label found no room or belongs to a hidden atom.'
+        : `${labelsLeftOut} labels found no room or belong to hidden atoms.`;
     found.push(
-      problem('note', 'figure-labels-left-out', `${count} found no room or belong to hidden atoms.`, {
+      problem('note', 'figure-labels-left-out', words, {
         hint: 'A larger picture, smaller --text-pt or another --view makes room.',
       }),
     );

@@ -65,19 +65,30 @@ describe('a label', () => {
     expect(isClear).toBe(true);
   });
 
-  it('moves away with a leader line from its outline to its box where it is crowded in', () => {
+  it('stands on its atom where it is crowded in', () => {
+    const ring = Array.from({ length: 10 }, (_, k) => {
+      const angle = (2 * Math.PI * k) / 10;
+      return [1.05 * Math.cos(angle), 1.05 * Math.sin(angle)] as const;
+    });
+    const scene = spheres([[0, 0], ...ring]);
+    const alone = { ...scene, labels: scene.labels.slice(0, 1) };
+    const [label] = placeLabels(alone, camera, viewport, measure);
+    expect([label!.leftPx, label!.topPx, label!.leader]).toEqual([200 - 10.5, 200 - 6.5, null]);
+  });
+
+  it('moves away with a leader line from its middle to its box where it is crowded in and too long to stand on its atom', () => {
     const ring = Array.from({ length: 10 }, (_, k) => {
       const angle = (2 * Math.PI * k) / 10;
       return [0.95 * Math.cos(angle), 0.95 * Math.sin(angle)] as const;
     });
     const scene = spheres([[0, 0], ...ring]);
     const alone = { ...scene, labels: scene.labels.slice(0, 1) };
-    const [label] = placeLabels(alone, camera, viewport, measure);
+    const [label] = placeLabels(alone, camera, viewport, () => ({ widthPx: 45, heightPx: 13 }));
     expect(label!.leader).not.toBeNull();
     const [x1, y1, x2, y2] = label!.leader!;
-    expect(Math.hypot(x1 - 200, y1 - 200)).toBeCloseTo(20, 0);
-    const gap = Math.hypot(x2 - x1, y2 - y1);
-    expect(gap).toBeGreaterThan(14);
+    expect([x1, y1]).toEqual([200, 200]);
+    // beyond the ring, whose outer edge is 58 pixels away
+    expect(Math.hypot(x2 - x1, y2 - y1)).toBeGreaterThan(50);
     const inX = x2 >= label!.leftPx - 2 && x2 <= label!.leftPx + label!.widthPx + 2;
     const inY = y2 >= label!.topPx - 2 && y2 <= label!.topPx + label!.heightPx + 2;
     expect(inX && inY).toBe(true);
