@@ -1,6 +1,6 @@
 import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
-import type { ElementKey, Legend, Scene } from '#src/scene/scene.ts';
+import type { ElementKey, Legend, PictureKey, Scene } from '#src/scene/scene.ts';
 import { formatNumber } from '#src/table/number-format.ts';
 
 export const colourBarStyles = css`
@@ -60,22 +60,21 @@ export const colourBarStyles = css`
   }
 `;
 
-/** What colour and size in the picture mean: quantity with unit, colour bar with its limits, scale; then signs and elements. */
+/** What colour and size in the picture mean: quantity with unit, colour bar with its limits, scale; then signs, sites, elements, marks. */
 export function colourBar(scene: Scene | null): TemplateResult | typeof nothing {
   if (!scene) return nothing;
-  const { legend, scaleStatement, elements, lobeColours } = scene;
-  if (!legend && !scaleStatement && elements.length === 0) return nothing;
+  const { legend, scaleStatement, elements, key } = scene;
+  const hasKey = key && (key.sites.length > 0 || key.marks.length > 0);
+  if (!legend && !scaleStatement && elements.length === 0 && !hasKey) return nothing;
+  const lengths = key?.lengths ? `${key.lengths}, ` : '';
   return html`<div class="legend">
-    ${legend ? barOf(legend) : nothing} ${lobeColours ? lobeKey(lobeColours) : nothing}
-    ${scaleStatement ? html`<span class="soft">${lengthWord(scene)}: ${scaleStatement}</span>` : nothing}
+    ${key?.subject ? html`<span>${key.subject}</span>` : nothing} ${legend ? barOf(legend) : nothing}
+    ${key?.lobes ? lobeKey(key.lobes) : nothing}
+    ${scaleStatement ? html`<span class="soft">${lengths}${scaleStatement}</span>` : nothing}
+    ${key && key.sites.length > 0 ? siteKey(key) : nothing}
     ${elements.length > 0 ? elementKey(elements, legend !== null) : nothing}
+    ${(key?.marks ?? []).map((words) => html`<span class="soft">${words}</span>`)}
   </div>`;
-}
-
-/** What of a glyph is as long as the scale says. */
-function lengthWord({ scale }: Scene): string {
-  if (scale?.part === 'antisymmetric') return 'length';
-  return scale?.glyph === 'axes' ? 'half length' : 'radius';
 }
 
 function barOf({ stops, low, high, digits, title, unit, diverging }: Legend): TemplateResult {
@@ -92,20 +91,35 @@ function barOf({ stops, low, high, digits, title, unit, diverging }: Legend): Te
     >`;
 }
 
-/** Signs of the lobes of polar surfaces: by hue, and the negative ones are striped. */
-function lobeKey({ positive, negative }: NonNullable<Scene['lobeColours']>): TemplateResult {
-  const rgb = ([r, g, b]: readonly [number, number, number]): string => `rgb(${r} ${g} ${b})`;
+type Rgb = readonly [number, number, number];
+
+const cssOf = ([r, g, b]: Rgb): string => `rgb(${r} ${g} ${b})`;
+
+/** Signs of the lobes: by hue where colour says nothing else, and the negative ones are striped. */
+function lobeKey({ positive, negative }: NonNullable<PictureKey['lobes']>): TemplateResult {
   const dark = `rgb(${negative.map((value) => Math.round(0.62 * value)).join(' ')})`;
+  const stripes = `background: repeating-linear-gradient(to bottom, ${cssOf(negative)} 0 2px, ${dark} 2px 4px)`;
   return html`<ul aria-label="Signs">
-    <li><span class="ball" aria-hidden="true" .style=${`background: ${rgb(positive)}`}></span>positive</li>
+    ${positive ? keyRow(positive, 'positive') : nothing}
     <li>
-      <span
-        class="ball"
-        aria-hidden="true"
-        .style=${`background: repeating-linear-gradient(to bottom, ${rgb(negative)} 0 2px, ${dark} 2px 4px)`}
-      ></span
-      >negative, striped
+      <span class="ball" aria-hidden="true" .style=${stripes}></span>${
+        positive ? 'negative (striped)' : 'striped = negative'
+      }
     </li>
+  </ul>`;
+}
+
+function keyRow(colour: Rgb, words: string): TemplateResult {
+  return html`<li>
+    <span class="ball" aria-hidden="true" .style=${`background: ${cssOf(colour)}`}></span>${words}
+  </li>`;
+}
+
+/** A ball for each site that is drawn in its own colour. */
+function siteKey({ sites, moreSites }: PictureKey): TemplateResult {
+  return html`<ul aria-label="Colours of the sites">
+    ${sites.map(({ label, colour }) => keyRow(colour, label))}
+    ${moreSites > 0 ? html`<li class="soft">and ${moreSites} more</li>` : nothing}
   </ul>`;
 }
 
@@ -113,11 +127,6 @@ function lobeKey({ positive, negative }: NonNullable<Scene['lobeColours']>): Tem
 function elementKey(elements: readonly ElementKey[], besideTensors: boolean): TemplateResult {
   return html`<ul aria-label="Colours of the elements">
     ${besideTensors ? html`<li class="soft">without a tensor:</li>` : nothing}
-    ${elements.map(
-      ({ element, colour: [r, g, b] }) =>
-        html`<li>
-          <span class="ball" aria-hidden="true" .style=${`background: rgb(${r} ${g} ${b})`}></span>${element}
-        </li>`,
-    )}
+    ${elements.map(({ element, colour }) => keyRow(colour, element))}
   </ul>`;
 }

@@ -1,7 +1,7 @@
-import { printed } from '#src/scene/caption.ts';
+import { printed } from '#src/scene/printed.ts';
 import type { Camera } from '#src/scene/camera.ts';
 import { projectAxes } from '#src/scene/project.ts';
-import type { Legend, Scene } from '#src/scene/scene.ts';
+import type { Legend, PictureKey, Scene } from '#src/scene/scene.ts';
 import type { Rgb } from '#src/scene/theme.ts';
 import type { FigureTheme } from './figure-theme.ts';
 import { thinnestLinePt } from './figure-theme.ts';
@@ -109,6 +109,12 @@ function limitTexts(
   });
 }
 
+/** What the glyphs are, in the place of a colour bar or above one of another quantity. */
+export function subjectBlock(scene: Scene, maxWidthPt: number, { textPt, theme }: BlockStyle): Block | null {
+  const subject = scene.key?.subject ?? null;
+  return subject === null ? null : textBlock(breakLines(subject, textPt, maxWidthPt), textPt, theme.ink);
+}
+
 /** Lengths a ruler may have, Å. */
 const rulerLengths = [100, 50, 20, 10, 5, 2, 1, 0.5, 0.2, 0.1];
 
@@ -123,7 +129,7 @@ export function scaleBlock(
   style: BlockStyle,
 ): Block | null {
   const { textPt, theme } = style;
-  const words = tensorWords(scene);
+  const words = scene.key?.lengths ?? null;
   const note = words === null ? [] : [textBlock(breakLines(words, textPt, maxWidthPt), textPt, theme.soft)];
   if (pointsPerAngstrom === null) {
     if (scene.scaleStatement === null) return null;
@@ -166,29 +172,34 @@ function rulerBlock(lengthPt: number, { textPt, theme }: BlockStyle): Block {
   };
 }
 
-/** How principal values became lengths, in few words. */
-function tensorWords({ scale }: Scene): string | null {
-  if (!scale) return null;
-  if (scale.part === 'antisymmetric') return 'rods along the axial vectors';
-  if (scale.glyph === 'polar') return 'radius = |n·T·n|';
-  if (scale.glyph === 'axes') return 'rods = principal values';
-  if (scale.kind === 'total') return 'semi-axes = principal values';
-  const what = scale.quantity === 'efg' ? 'principal value' : 'deviation from isotropic';
-  return `semi-axes = ${printed(scale.baseRadiusAngstrom)} Å + ${what}`;
+/** What the plain colours and marks mean: signs of polar surfaces, sites, elements, then marks in words. */
+export function keyBlock(scene: Scene, maxWidthPt: number, style: BlockStyle): Block | null {
+  const { elements, key } = scene;
+  const sites = (key?.sites ?? []).map(({ label, colour }) => ({ text: label, colour, isStriped: false }));
+  const names = elements.map(({ element, colour }) => ({ text: element, colour, isStriped: false }));
+  const more = key && key.moreSites > 0 ? [`and ${key.moreSites} more`] : [];
+  const words = (texts: readonly string[]): Block[] =>
+    texts.map((text) =>
+      textBlock(breakLines(text, style.textPt, maxWidthPt), style.textPt, style.theme.soft),
+    );
+  const rows = [
+    keyRows(signEntries(key?.lobes ?? null), maxWidthPt, style),
+    keyRows(sites, maxWidthPt, style),
+    ...words(more),
+    keyRows(names, maxWidthPt, style),
+    ...words(key?.marks ?? []),
+  ].filter((row) => row !== null);
+  return rows.length === 0 ? null : stacked(rows, 0);
 }
 
-/** What the plain colours mean: signs of polar surfaces, then elements. */
-export function keyBlock(scene: Scene, maxWidthPt: number, style: BlockStyle): Block | null {
-  const { elements, lobeColours } = scene;
-  const signs = lobeColours
-    ? [
-        { text: 'positive', colour: lobeColours.positive, isStriped: false },
-        { text: 'negative', colour: lobeColours.negative, isStriped: true },
-      ]
-    : [];
-  const names = elements.map(({ element, colour }) => ({ text: element, colour, isStriped: false }));
-  const rows = [signs, names].flatMap((entries) => keyRows(entries, maxWidthPt, style) ?? []);
-  return rows.length === 0 ? null : stacked(rows, 0);
+function signEntries(lobes: PictureKey['lobes']): KeyEntry[] {
+  if (!lobes) return [];
+  const { positive, negative } = lobes;
+  if (!positive) return [{ text: 'striped = negative', colour: negative, isStriped: true }];
+  return [
+    { text: 'positive', colour: positive, isStriped: false },
+    { text: 'negative (striped)', colour: negative, isStriped: true },
+  ];
 }
 
 interface KeyEntry {

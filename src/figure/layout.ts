@@ -4,7 +4,7 @@ import { firstCamera, fit, lookAlong } from '#src/scene/framing.ts';
 import { placeLabels } from '#src/scene/place-labels.ts';
 import type { Scene } from '#src/scene/scene.ts';
 import type { Block, BlockStyle } from './blocks.ts';
-import { axesBlock, keyBlock, legendBlock, scaleBlock, stacked, textBlock } from './blocks.ts';
+import { axesBlock, keyBlock, legendBlock, scaleBlock, stacked, subjectBlock, textBlock } from './blocks.ts';
 import type { FigureRequest } from './figure-request.ts';
 import { figureThemes, thinnestLinePt } from './figure-theme.ts';
 import type { TextRun } from './font/set-text.ts';
@@ -152,7 +152,7 @@ function blocksFor(
   const notes = kind === 'below' ? noteEm * textPt : most;
   const orientation = cameraFor(scene, request, { widthPx: 400, heightPx: 400 });
   const axes = contents.axes ? axesBlock(scene, orientation, style) : null;
-  const legend = contents.legend && scene.legend ? legendBlock(scene.legend, most, style) : null;
+  const legend = contents.legend ? meaningBlock(scene, most, style) : null;
   const isFlat = request.look.perspectiveDegrees === 0 && !(orientation.perspectiveDegrees ?? 0);
   const scale = contents.scale
     ? scaleBlock(scene, isFlat ? (pointsPerAngstrom ?? (6.4 * textPt) / 10) : null, notes, style)
@@ -163,6 +163,13 @@ function blocksFor(
   const orientated = [axes, view].filter((block) => block !== null);
   const first = orientated.length > 0 ? stacked(orientated, 0.4 * textPt) : null;
   return [first, legend, scale, key].filter((block) => block !== null);
+}
+
+/** What the glyphs are and what their colours say. */
+function meaningBlock(scene: Scene, maxWidthPt: number, style: BlockStyle): Block | null {
+  const bar = scene.legend && legendBlock(scene.legend, maxWidthPt, style);
+  const parts = [subjectBlock(scene, maxWidthPt, style), bar].filter((block) => block !== null);
+  return parts.length === 0 ? null : stacked(parts, 0.3 * style.textPt);
 }
 
 /** Letters of axes are italic. */

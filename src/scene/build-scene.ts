@@ -7,6 +7,7 @@ import { bondCylinders } from './bond-layer.ts';
 import { caption, scaleStatement } from './caption.ts';
 import type { CaptionParts, TensorCaption } from './caption.ts';
 import { cellAxes, cellEdges, cellFrame } from './cell-layer.ts';
+import type { Cylinder } from './cylinder-list.ts';
 import { packedCylinders } from './cylinder-list.ts';
 import { displacementShapes } from './displacement.ts';
 import type { DisplacementShapes } from './displacement.ts';
@@ -19,12 +20,15 @@ import { coordinationPolyhedra } from './polyhedra-layer.ts';
 import { sceneBounds } from './scene-bounds.ts';
 import type { ElementKey, PolarBatch, Scene } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
+import type { KeyParts } from './picture-key.ts';
+import { pictureKey } from './picture-key.ts';
 import { defaultSceneOptions } from './scene-options.ts';
 import { sharedPositions } from './shared-positions.ts';
-import { chooseTensors, lobeColours, siteColours } from './tensor-choice.ts';
+import { chooseTensors, elementsWithTensors, lobeColours, siteColours } from './tensor-choice.ts';
 import type { ChosenTensors } from './tensor-choice.ts';
-import { axialVectors, axisRods, polarSurfaces } from './tensor-drawing.ts';
+import { axialArrows, axisRods, polarSurfaces } from './tensor-drawing.ts';
 import type { TensorDrawing } from './tensor-drawing.ts';
+import { unfollowedWishes } from './unfollowed.ts';
 import { disorderPatterns, visibleSites } from './visible-sites.ts';
 import type { VisibleSites } from './visible-sites.ts';
 
@@ -45,8 +49,8 @@ export function buildScene(whole: CrystalDossier, options: Partial<SceneOptions>
   const drawing = tensors?.drawing ?? null;
   const look = looksOf(dossier, visible, drawing, displacement, chosen);
   const glyphs = glyphsOf(atoms, drawing);
-  const { quadrics, picks } = atomQuadrics(atoms, look, glyphs.beads);
-  const shown = { ...chosen, neutral: look.isNeutral };
+  const { quadrics, picks } = atomQuadrics(atoms, look);
+  const shown = { ...chosen, neutral: look.isNeutral, thin: glyphs.rods.length > 0 };
   const bonds = bondCylinders(dossier, atoms, shown, picks.length);
   const polyhedra = polyhedraOf(dossier, atoms, drawing, look, chosen);
   const cylinders = packedCylinders([...bonds.cylinders, ...glyphs.rods, ...polyhedra.edges]);
@@ -89,6 +93,13 @@ export function buildScene(whole: CrystalDossier, options: Partial<SceneOptions>
     extent: drawn.extent,
     siteColours: siteColours(whole, choice),
     ...(choice?.colourBy === 'sign' ? { lobeColours } : {}),
+    key: pictureKey(keyParts(atoms, drawing, look, displacement && chosen.displacementProbability)),
+    unfollowed: unfollowedWishes(asked, {
+      choice,
+      scale,
+      hasDisplacement: displacement !== null,
+      polyhedra: polyhedra.count,
+    }),
     drawnInstead: sharedPositions(dossier).drawnInstead,
     tensorElements: choice?.elements ?? null,
   };
@@ -131,25 +142,31 @@ function looksOf(
   };
 }
 
-/** Striped: sites with a negative value where the colour bar runs through zero. Lobes have stripes of their own. */
+/** As QuadricBatch.patterns. */
+const dotted = 2;
+
+/** Dotted (stripes would pass for principal circles): sites with a negative value where the colour bar runs through zero. Lobes have stripes. */
 function negativeSites(tensors: TensorDrawing | null): Map<number, number> {
-  const stripes = new Map<number, number>();
-  if (tensors?.choice.legend?.map !== 'vik' || isLobes(tensors)) return stripes;
-  for (const [index, value] of tensors.choice.values) if (value < 0) stripes.set(index, 1);
-  return stripes;
+  const dots = new Map<number, number>();
+  if (tensors?.choice.legend?.map !== 'vik' || isLobes(tensors)) return dots;
+  for (const [index, value] of tensors.choice.values) if (value < 0) dots.set(index, dotted);
+  return dots;
 }
 
 function isLobes({ scale }: TensorDrawing): boolean {
   return scale.glyph === 'polar' && scale.part !== 'antisymmetric';
 }
 
-type Glyphs = ReturnType<typeof axialVectors> & { readonly polars: PolarBatch | null };
+interface Glyphs {
+  readonly rods: readonly Cylinder[];
+  readonly polars: PolarBatch | null;
+}
 
 /** What stands for tensors besides the quadrics of the atoms. */
 function glyphsOf(atoms: readonly DrawnAtom[], tensors: TensorDrawing | null): Glyphs {
-  if (tensors?.scale.part === 'antisymmetric') return { ...axialVectors(atoms, tensors), polars: null };
-  if (tensors?.scale.glyph === 'axes') return { rods: axisRods(atoms, tensors), beads: [], polars: null };
-  return { rods: [], beads: [], polars: tensors && isLobes(tensors) ? polarSurfaces(atoms, tensors) : null };
+  if (tensors?.scale.part === 'antisymmetric') return { rods: axialArrows(atoms, tensors), polars: null };
+  if (tensors?.scale.glyph === 'axes') return { rods: axisRods(atoms, tensors), polars: null };
+  return { rods: [], polars: tensors && isLobes(tensors) ? polarSurfaces(atoms, tensors) : null };
 }
 
 /** Polyhedra have the colour of the value of the atom in them, or grey beside such colours, else the element's. */
@@ -181,10 +198,31 @@ function tensorCaption(
   return {
     ...{ scale, glyph, legend, colourBy, elements },
     sites: isPart ? [...forms.keys()].map((index) => dossier.sites[index]!.label) : null,
-    elementsUnasked: isOwnChoice && !isPart,
+    leftOut:
+      isOwnChoice && !isPart
+        ? elementsWithTensors(dossier, choice.quantity).filter((element) => !elements?.includes(element))
+        : [],
     copies: options.tensorCopies,
     hasUndefinedAxes: [...forms.values()].some(({ axes }) => axes.includes(null)),
-    isStriped: !look.hasDisorderPatterns && look.patterns.size > 0,
+    isDotted: !look.hasDisorderPatterns && look.patterns.size > 0,
+  };
+}
+
+function keyParts(
+  atoms: readonly DrawnAtom[],
+  drawing: TensorDrawing | null,
+  look: AtomsLook,
+  probability: number | null,
+): KeyParts {
+  const { occupancy, hasDisorderPatterns } = marksOf(atoms, look);
+  const own = look.isSiteColoured ? atoms.filter(({ context }) => !context) : [];
+  return {
+    drawing,
+    colouredSites: [...new Set(own.map(({ site }) => site))],
+    probability,
+    ...occupancy,
+    hasDisorderPatterns,
+    isDotted: !look.hasDisorderPatterns && look.patterns.size > 0,
   };
 }
 
@@ -210,7 +248,7 @@ function labelWords({ coloured }: ChosenTensors): string {
   return coloured.title + (coloured.unit ? ` in ${coloured.unit}` : '');
 }
 
-/** Elements of which some atom is drawn in its element's colour. */
+/** Elements of which some atom, or a share of one, is drawn in its element's colour. */
 function elementKeys(
   atoms: readonly DrawnAtom[],
   tensors: TensorDrawing | null,
@@ -219,6 +257,10 @@ function elementKeys(
   if (look.isSiteColoured) return [];
   const isOwnColour = ({ context }: DrawnAtom, i: number): boolean =>
     !context && !(tensors?.carries[i] && tensors.choice.colourBy !== 'element');
-  const elements = [...new Set(atoms.filter(isOwnColour).map(({ site }) => site.element))];
-  return elements.map((element) => ({ element, colour: atomColour(element) }));
+  const elements = new Set(atoms.filter(isOwnColour).map(({ site }) => site.element));
+  for (const { site, context } of atoms) {
+    const rest = context ? null : look.occupancy.get(site.index)?.restElement;
+    if (rest) elements.add(rest);
+  }
+  return [...elements].map((element) => ({ element, colour: atomColour(element) }));
 }

@@ -1,4 +1,6 @@
 import type { ChosenAtoms } from './extent.ts';
+import { lengthWords } from './picture-key.ts';
+import { printed } from './printed.ts';
 import type { GlyphKind, Legend, SceneQuantity, TensorScale } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
 
@@ -17,13 +19,13 @@ export interface TensorCaption {
   /** Elements and labels of sites whose tensors are drawn, where only some are. */
   readonly elements: readonly string[] | null;
   readonly sites: readonly string[] | null;
-  /** Nobody asked for these elements: the scale did. */
-  readonly elementsUnasked: boolean;
+  /** Elements that nobody asked to leave out: the scale did. */
+  readonly leftOut: readonly string[];
   readonly copies: SceneOptions['tensorCopies'];
   /** Some principal axis drawn from is undefined. */
   readonly hasUndefinedAxes: boolean;
-  /** Stripes mean a negative value. */
-  readonly isStriped: boolean;
+  /** Dots mean a negative value. */
+  readonly isDotted: boolean;
 }
 
 /** What the caption is made from. */
@@ -55,11 +57,6 @@ export interface DisplacementCaption {
   readonly impossible: readonly string[];
 }
 
-/** A number for people: − as minus sign, no trailing zeros, at most four significant digits. */
-export function printed(value: number): string {
-  return String(Number(value.toPrecision(4))).replace('-', '−');
-}
-
 /** 30000 → 30,000 */
 function grouped(count: number): string {
   return String(count).replace(/\B(?=(\d{3})+$)/g, ',');
@@ -81,10 +78,7 @@ export function caption(parts: CaptionParts): string {
       `There are no ${asked === 'EFG' ? asked : asked.toLowerCase()} tensors here, so this is shown instead.`,
     );
   }
-  if (tensors?.elementsUnasked)
-    sentences.push(
-      'At the one scale of the picture, large and small tensors of the other elements would drown one another; they are drawn too when ticked under Show.',
-    );
+  if (tensors && tensors.leftOut.length > 0) sentences.push(leftOutSentence(tensors));
   if (tensors) sentences.push(...tensorAsides(tensors));
   sentences.push(
     ...parts.notes,
@@ -93,6 +87,12 @@ export function caption(parts: CaptionParts): string {
     ...markSentences(parts),
   );
   return sentences.join(' ');
+}
+
+function leftOutSentence({ scale, leftOut }: TensorCaption): string {
+  if (scale.quantity === 'efg')
+    return 'At the one scale of the picture, large and small tensors of the other elements would drown one another; they are drawn too when ticked under Show.';
+  return `Those of ${listed(leftOut)} would look like plain spheres at the one scale of the picture; they are drawn too when ticked under Show.`;
 }
 
 function plainSentence({ isSiteColoured, displacement }: CaptionParts): string {
@@ -112,28 +112,16 @@ function tensorSentence(tensors: TensorCaption): string {
 
 function glyphWords({ scale, glyph }: TensorCaption, of: string): string {
   const letter = { shielding: 'σ', shift: 'δ', efg: 'V' }[scale.quantity];
-  const isDeviation = scale.kind === 'deviation' && scale.quantity !== 'efg';
-  const statement = scaleStatement(scale);
+  const lengths = `${lengthWords(scale)}, ${scaleStatement(scale)}`;
   if (scale.part === 'antisymmetric') {
-    return `tensors${of}, antisymmetric part: rods along the axial vector, half as long as its size to either side, ${statement}; the ring grows thicker in the sense in which it turns the field`;
+    return `tensors${of}, antisymmetric part: arrows along the axial vector, ${lengths}; it turns the field right-handed about the arrow`;
   }
-  if (glyph === 'polar') {
-    const from = isDeviation
-      ? `without the isotropic value, r(n) = |n·${letter}·n − ${letter}(iso)|`
-      : `r(n) = |n·${letter}·n|`;
-    return `polar surfaces${of} of the symmetric part, ${from}, ${statement}`;
-  }
+  if (glyph === 'polar') return `polar surfaces${of} of the symmetric part, ${lengths}`;
   if (glyph === 'axes') {
-    const lengths = isDeviation ? 'deviations from the isotropic value' : 'principal values';
     const names = scale.quantity === 'efg' ? ['Vxx', 'Vzz'] : [`${letter}11`, `${letter}33`];
-    return `principal axes${of} of the symmetric part: half lengths = sizes of the ${lengths}, ${statement}; thin and pale ${names[0]} to thick and dark ${names[1]}, dashed where negative`;
+    return `principal axes${of} of the symmetric part: ${lengths}; thin and pale ${names[0]} to thick and dark ${names[1]}, dashed where negative`;
   }
-  const middle = scale.quantity === 'efg' ? 'principal value' : 'deviation from the isotropic value';
-  const axes =
-    scale.kind === 'total'
-      ? 'semi-axes = principal values of the symmetric part'
-      : `semi-axes = ${printed(scale.baseRadiusAngstrom)} Å + ${middle}`;
-  return `ellipsoids${of}: ${axes}, ${statement}; great circles lie perpendicular to the principal axes that are defined`;
+  return `ellipsoids${of}: ${lengths}; great circles lie perpendicular to the principal axes that are defined`;
 }
 
 function colourWords({ colourBy, legend, glyph, scale }: TensorCaption): string {
@@ -145,9 +133,9 @@ function colourWords({ colourBy, legend, glyph, scale }: TensorCaption): string 
   return isLobes ? `${colour}; negative lobes dark grey and striped` : colour;
 }
 
-function tensorAsides({ copies, glyph, scale, hasUndefinedAxes, isStriped }: TensorCaption): string[] {
+function tensorAsides({ copies, glyph, scale, hasUndefinedAxes, isDotted }: TensorCaption): string[] {
   const sentences: string[] = [];
-  if (isStriped) sentences.push('Stripes mark negative values.');
+  if (isDotted) sentences.push('Dots on an ellipsoid mark a negative value.');
   if (copies === 'first') sentences.push('Tensors stand on one atom of each site.');
   if (copies === 'orientations')
     sentences.push('Of each site one tensor is drawn for every orientation it has in the crystal.');

@@ -139,6 +139,30 @@ export interface ElementKey {
   readonly colour: readonly [number, number, number];
 }
 
+/** One site that is drawn in its own colour. */
+export interface SiteKey {
+  readonly label: string;
+  readonly colour: readonly [number, number, number];
+}
+
+/** What a key beside the picture says besides colour bar, scale and elements: the same words on the page and in files. */
+export interface PictureKey {
+  /** What the glyphs are, such as "shielding tensors σ/ppm", where no colour bar of the same quantity says it. */
+  readonly subject: string | null;
+  /** How tensors became lengths, such as "radius = |n·σ·n − σ(iso)|"; null without tensors. */
+  readonly lengths: string | null;
+  /** Where negative lobes are drawn: they are striped. `positive` is null where colours say something else than the sign. */
+  readonly lobes: {
+    readonly positive: readonly [number, number, number] | null;
+    readonly negative: readonly [number, number, number];
+  } | null;
+  /** Sites in their own colours, the first dozen of them. */
+  readonly sites: readonly SiteKey[];
+  readonly moreSites: number;
+  /** Such as "displacement ellipsoids at 50 %" or "pale part: unoccupied share". */
+  readonly marks: readonly string[];
+}
+
 export interface CellAxis {
   readonly letter: 'a' | 'b' | 'c';
   /** The cell vector, Å. */
@@ -199,6 +223,10 @@ export interface Scene {
   readonly extent: SceneExtent;
   /** Four bytes a site of the dossier: the sRGB colour its tensor has by the legend, and 255, or 0 where it has none. */
   readonly siteColours?: Uint8Array;
+  /** Absent in scenes made by hand: nothing. */
+  readonly key?: PictureKey;
+  /** Sentences on wishes of the options that could not be followed, with what is drawn instead. Absent: none. */
+  readonly unfollowed?: readonly string[];
   /** Colours of positive and negative lobes where all polar surfaces have the same two, for a key beside the picture. */
   readonly lobeColours?: {
     readonly positive: readonly [number, number, number];

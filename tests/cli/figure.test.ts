@@ -124,7 +124,7 @@ describe('ellipsite figure', () => {
   it('warns where the quantity asked for is not there', async () => {
     const { status, error } = await figure('quartz.xyz', '-o', 'q.png', '--quantity', 'shift', ...small);
     expect(status).toBe(0);
-    expect(error).toMatch(/warning figure-quantity-missing There are no shift tensors/);
+    expect(error).toMatch(/warning figure-wish-unfollowed There are no shift tensors/);
   });
 
   it.each([

@@ -89,7 +89,7 @@ export async function figureCommand(argv: readonly string[], io: CommandIo): Pro
     labelsLeftOut: sheet.labelsLeftOut,
     holdsCase: caseText !== null,
   };
-  return report([...loaded.problems, ...figureProblems(own, scene, sheet)], facts, common.json, io);
+  return report([...loaded.problems, ...figureProblems(scene, sheet)], facts, common.json, io);
 }
 
 async function keep(path: string, bytes: Uint8Array, io: CommandIo): Promise<void> {
@@ -133,16 +133,10 @@ async function caseTextOf(
 }
 
 /** What the picture could not do as asked. */
-function figureProblems(own: OwnValues, scene: Scene, { labelsLeftOut }: Sheet): Problem[] {
+function figureProblems(scene: Scene, { labelsLeftOut }: Sheet): Problem[] {
   const found: Problem[] = [];
-  const asked = textOf(own, 'quantity');
-  if (asked !== undefined && scene.scale?.quantity !== asked) {
-    const drawn = scene.scale === null ? 'No tensors are drawn' : `${scene.scale.quantity} is drawn instead`;
-    found.push(
-      problem('warning', 'figure-quantity-missing', `There are no ${asked} tensors here. ${drawn}.`, {
-        got: asked,
-      }),
-    );
+  for (const sentence of scene.unfollowed ?? []) {
+    found.push(problem('warning', 'figure-wish-unfollowed', sentence));
   }
   if (labelsLeftOut > 0) {
     const words =
