@@ -23,6 +23,8 @@ const periodTones: readonly (readonly [lightness: number, chroma: number])[] = [
 const mainGroups: readonly number[] = [1, 2, 13, 14, 15, 16, 17, 18];
 const firstHueDeg = 131;
 const turnDeg = 135;
+/** Of group 3; puts iron and its neighbours far in hue from carbon and silicon, with which they share sites. */
+const firstTransitionHueDeg = 192;
 
 const unknownColour: SrgbBytes = [128, 124, 116];
 
@@ -55,5 +57,5 @@ function toneOf(element: ChemicalElement): Lch {
   }
   const main = mainGroups.indexOf(group);
   if (main >= 0) return { lightness, chroma, hueDeg: firstHueDeg + turnDeg * main };
-  return { lightness, chroma: 0.1, hueDeg: 12 + 108 * (group - 3) };
+  return { lightness, chroma: 0.1, hueDeg: firstTransitionHueDeg + 108 * (group - 3) };
 }

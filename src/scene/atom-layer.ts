@@ -5,7 +5,7 @@ import { atomColour, atomRadius, bondColour } from './atom-style.ts';
 import type { DrawnAtom } from './drawn-atoms.ts';
 import type { OccupancyLook } from './occupancy.ts';
 import type { PickEntry, QuadricBatch } from './scene.ts';
-import type { Bead, TensorDrawing } from './tensor-drawing.ts';
+import type { TensorDrawing } from './tensor-drawing.ts';
 import { centreRadius, glyphReach } from './tensor-drawing.ts';
 import type { PrincipalForm, TensorShape } from './tensor-shape.ts';
 import { tensorShape } from './tensor-shape.ts';
@@ -43,13 +43,12 @@ export interface QuadricLook {
   readonly ringRadius: number;
 }
 
-/** Quadrics of all drawn atoms in their order, then beads; picks of the atoms. */
+/** Quadrics and picks of all drawn atoms in their order. */
 export function atomQuadrics(
   atoms: readonly DrawnAtom[],
   look: AtomsLook,
-  beads: readonly Bead[] = [],
 ): { readonly quadrics: QuadricBatch; readonly picks: readonly PickEntry[] } {
-  const count = atoms.length + beads.length;
+  const count = atoms.length;
   const centres = new Float32Array(3 * count);
   const shapes = new Float32Array(9 * count);
   const colours = new Uint8Array(3 * count);
@@ -72,14 +71,6 @@ export function atomQuadrics(
     ringRadii[i] = one.ringRadius;
     const { atom, site, cellShift, context } = drawn;
     return { kind: 'atom', atomId: atom.id, siteIndex: site.index, cellShift, context };
-  });
-  beads.forEach((bead, k) => {
-    const i = atoms.length + k;
-    centres.set(bead.centre, 3 * i);
-    shapes.set(bead.shape, 9 * i);
-    colours.set(bead.colour, 3 * i);
-    pickIds[i] = bead.pickId;
-    ringRadii[i] = 0;
   });
   const isDivided = shares.some((share) => share < 255);
   return {

@@ -19,6 +19,8 @@ export function atomColour(element: string): Rgb {
 /** Å */
 export const bondRadiusAngstrom = 0.062;
 export const hydrogenBondRadiusAngstrom = 0.028;
+/** Beside rods: half as thick as the thinnest of them, so that a rod along a bond is seen round it. */
+export const thinBondRadiusAngstrom = 0.017;
 /** Å; a dash and the gap after it together. */
 export const dashAngstrom = 0.2;
 

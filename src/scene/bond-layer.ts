@@ -12,16 +12,25 @@ import {
   dashAngstrom,
   hydrogenBondColour,
   hydrogenBondRadiusAngstrom,
+  thinBondRadiusAngstrom,
 } from './atom-style.ts';
 
+/** Which bonds are drawn, and how. */
+interface ShownBonds {
+  readonly bonds: boolean;
+  readonly hydrogenBonds: boolean;
+  readonly neutral: boolean;
+  readonly thin: boolean;
+}
+
 /**
- * Bonds between drawn atoms as cylinders, half in the colour of either end (`neutral`: grey); hydrogen bonds as rows of thin dashes. Bonds
+ * Bonds between drawn atoms as cylinders, half in the colour of either end (`neutral`: grey; `thin`: beside rods); hydrogen bonds as rows of thin dashes. Bonds
  * between two atoms that only complete others' bonds are left out. Pick entries continue after `picksBefore`.
  */
 export function bondCylinders(
   dossier: CrystalDossier,
   drawn: readonly DrawnAtom[],
-  shown: { readonly bonds: boolean; readonly hydrogenBonds: boolean; readonly neutral: boolean },
+  shown: ShownBonds,
   picksBefore: number,
 ): { readonly cylinders: readonly Cylinder[]; readonly picks: readonly PickEntry[] } {
   const copies = copiesById(drawn);
@@ -34,7 +43,7 @@ export function bondCylinders(
     for (const from of copies.of(bond.from)) {
       const to = copies.at(bond.to, add(from.cellShift, bond.shift));
       if (to && !(from.context && to.context))
-        cylinders.push(...cylindersBetween(bond.kind, from, to, pickId, shown.neutral));
+        cylinders.push(...cylindersBetween(bond.kind, from, to, pickId, shown));
     }
     if (cylinders.length === before) continue;
     picks.push({
@@ -53,17 +62,23 @@ function cylindersBetween(
   from: DrawnAtom,
   to: DrawnAtom,
   pickId: number,
-  neutral: boolean,
+  { neutral, thin }: ShownBonds,
 ): Cylinder[] {
   const [start, end] = [from.position, to.position];
   if (kind === 'hydrogen') {
     const [startColour, endColour] = [hydrogenBondColour, hydrogenBondColour];
-    const look = { radius: hydrogenBondRadiusAngstrom, startColour, endColour, pickId };
+    const look = {
+      radius: thin ? thinBondRadiusAngstrom : hydrogenBondRadiusAngstrom,
+      startColour,
+      endColour,
+      pickId,
+    };
     return dashesBetween(start, end, dashAngstrom, look);
   }
   const startColour = bondColour(from.site.element, neutral);
   const endColour = bondColour(to.site.element, neutral);
-  return [{ start, end, radius: bondRadiusAngstrom, startColour, endColour, pickId }];
+  const radius = thin ? thinBondRadiusAngstrom : bondRadiusAngstrom;
+  return [{ start, end, radius, startColour, endColour, pickId }];
 }
 
 /** Atoms looked at for the nearest neighbour where a crystal has no bonds; a sample is enough for a size. */

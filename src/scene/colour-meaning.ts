@@ -1,3 +1,4 @@
+import { convention, digitsOf } from '#src/dossier/conventions.ts';
 import type { SiteDossier } from '#src/dossier/dossier.ts';
 import type { Legend, SceneQuantity } from './scene.ts';
 import type { ColourMeaning } from './scene-options.ts';
@@ -95,6 +96,20 @@ export function colouredValue(meaning: NumberMeaning, quantity: SceneQuantity): 
 /** η ≈ 1: Vyy and Vzz tie in size. */
 function isSignOpen(site: SiteDossier): boolean {
   return site.efg?.signDetermined === false;
+}
+
+/** Decimals with which the number of a site is printed everywhere. */
+export function printedDigits(site: SiteDossier, { convention: { quantity, key } }: ColouredValue): number {
+  const entry = convention(quantity, key);
+  const isotope = quantity === 'efg' ? (site.efg?.isotope ?? site.isotope) : site.isotope;
+  return entry ? digitsOf(entry, isotope) : 2;
+}
+
+/** The number that the colour of a site says: what is printed as zero is zero. Null where there is none. */
+export function shownValue(site: SiteDossier, coloured: ColouredValue): number | null {
+  const value = coloured.valueOf(site);
+  if (value === null || !Number.isFinite(value)) return null;
+  return Math.abs(value) < 0.5 * 10 ** -printedDigits(site, coloured) ? 0 : value;
 }
 
 /** What colours say where nothing else is asked for or possible. */

@@ -38,20 +38,21 @@ export function legendColour(legend: Legend, value: number): readonly [number, n
 /**
  * Colour bar for the values drawn: sequential (dark = low), or diverging with the palest colour at zero where the sign matters.
  * Automatic limits are the natural ones, or the extreme values moved outwards to a power of ten between a twentieth and a
- * two-hundredth of their distance. Typed limits are kept; zero stays palest on a diverging bar, which then shows one side of its map shorter.
+ * two-hundredth of their distance; they are at least ten of the finest printed steps apart, so that rounding never fills the bar. Typed limits are kept; zero stays palest on a diverging bar, which then shows one side of its map shorter.
  */
 export function legendFor(
   coloured: Pick<ColouredValue, 'title' | 'unit' | 'isSigned' | 'naturalLimits'>,
   values: readonly number[],
   limits: readonly [number, number] | null,
   asked: ColourMapName | null = null,
+  printedDigits: number | null = null,
 ): Legend {
   const map = asked ?? (coloured.isSigned ? 'vik' : 'batlow');
   const isAboutZero = map === 'vik';
   const given = limits ? ([Math.min(...limits), Math.max(...limits)] as const) : null;
   const natural = isAboutZero ? null : coloured.naturalLimits;
   const exact = given && given[0] < given[1] ? given : natural;
-  const { low, high, digits } = exact ? exactLimits(exact) : automatic(values, isAboutZero);
+  const { low, high, digits } = exact ? exactLimits(exact) : automatic(values, isAboutZero, printedDigits);
   return {
     title: coloured.title,
     unit: coloured.unit,
@@ -74,6 +75,9 @@ function stopsAboutZero(map: ColourMapName, low: number, high: number): ColourSt
   });
 }
 
+/** Limits are at least this many steps of the last printed digit apart. Our own choice. */
+const stepsAtLeast = 10;
+
 function exactLimits(limits: readonly [number, number]): { low: number; high: number; digits: number } {
   const digits = (value: number) => Math.min(4, (String(value).split('.')[1] ?? '').length);
   return { low: limits[0], high: limits[1], digits: Math.max(digits(limits[0]), digits(limits[1])) };
@@ -82,6 +86,7 @@ function exactLimits(limits: readonly [number, number]): { low: number; high: nu
 function automatic(
   values: readonly number[],
   diverging: boolean,
+  printedDigits: number | null,
 ): { low: number; high: number; digits: number } {
   let low = Infinity;
   let high = -Infinity;
@@ -95,9 +100,20 @@ function automatic(
     low = -high;
   }
   // equal values still get a bar of some width, which puts them in its middle
-  const width = high - low || Math.max(1e-3, 0.01 * Math.abs(high));
-  if (high === low) [low, high] = [low - width / 2, high + width / 2];
-  const exponent = Math.floor(Math.log10(width / 20));
+  const printedStep = printedDigits === null ? 0 : 10 ** -printedDigits;
+  const least = Math.max(
+    stepsAtLeast * printedStep,
+    high === low ? Math.max(1e-3, 0.01 * Math.abs(high)) : 0,
+  );
+  const width = Math.max(high - low, least);
+  if (high - low < width) {
+    const middle = (low + high) / 2;
+    // what is never negative keeps its zero
+    const start = low === 0 ? 0 : middle - width / 2;
+    [low, high] = [start, start + width];
+  }
+  const finest = printedDigits === null ? -Infinity : -printedDigits;
+  const exponent = Math.max(finest, Math.floor(Math.log10(width / 20)));
   const step = 10 ** exponent;
   return {
     low: Number((Math.floor(low / step + 1e-9) * step).toPrecision(12)),

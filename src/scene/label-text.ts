@@ -1,6 +1,6 @@
-import { convention, digitsOf } from '#src/dossier/conventions.ts';
 import type { SiteDossier } from '#src/dossier/dossier.ts';
 import type { ColouredValue } from './colour-meaning.ts';
+import { printedDigits } from './colour-meaning.ts';
 import type { DrawnAtom } from './drawn-atoms.ts';
 import type { LabelAnchor } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
@@ -34,10 +34,7 @@ function labelText(
 export function valueText(site: SiteDossier, coloured: ColouredValue): string | null {
   const value = coloured.valueOf(site);
   if (value === null || !Number.isFinite(value)) return null;
-  const { quantity, key } = coloured.convention;
-  const entry = convention(quantity, key);
-  const isotope = quantity === 'efg' ? (site.efg?.isotope ?? site.isotope) : site.isotope;
-  const text = value.toFixed(entry ? digitsOf(entry, isotope) : 2);
+  const text = value.toFixed(printedDigits(site, coloured));
   const isZero = Number(text) === 0;
   const isOpen = coloured.isSignOpen?.(site) ?? false;
   if (isZero || isOpen) return (isZero ? '' : '±') + text.replace('-', '');

@@ -8,6 +8,8 @@ type Rgb = readonly [number, number, number];
 export interface OccupancyLook {
   readonly share: number;
   readonly rest: Rgb;
+  /** The element that has the rest; null where nothing is there. */
+  readonly restElement: string | null;
   readonly kind: 'partial' | 'mixed';
 }
 
@@ -47,8 +49,15 @@ function lookOf(site: SiteDossier, beside: readonly SiteDossier[]): OccupancyLoo
   const [second] = [...amounts].sort((p, q) => q[1] - p[1]);
   if (second && second[1] > 0) {
     const share = Math.round((255 * main) / (main + second[1]));
-    return share >= 255 ? null : { share, rest: elementColour(second[0]), kind: 'mixed' };
+    return share >= 255
+      ? null
+      : { share, rest: elementColour(second[0]), restElement: second[0], kind: 'mixed' };
   }
   if (main >= fullOccupancy) return null;
-  return { share: Math.round(255 * Math.max(0, main)), rest: vacancyColour, kind: 'partial' };
+  return {
+    share: Math.round(255 * Math.max(0, main)),
+    rest: vacancyColour,
+    restElement: null,
+    kind: 'partial',
+  };
 }

@@ -21,7 +21,8 @@ export interface SceneOptions {
   readonly showTensors: boolean;
   /**
    * Elements whose tensors are drawn; null for all. The other atoms stay small spheres. `auto` is all, but where one scale
-   * would drown small field gradients beside large ones, those of quadrupolar nuclei other than hydrogen and oxygen.
+   * would drown small field gradients beside large ones, those of quadrupolar nuclei other than hydrogen and oxygen; and where
+   * ellipsoids of deviations are drawn, without elements that would look like spheres beside the largest deviation.
    */
   readonly tensorElements: readonly string[] | 'auto' | null;
   /** `cell`: atoms of one unit cell, those on its faces and edges repeated; `molecules`: each molecule whole. */

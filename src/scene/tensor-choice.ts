@@ -2,12 +2,13 @@ import { elementColour } from '#src/data/element-colour.ts';
 import { siteColourBytes } from '#src/data/site-colour.ts';
 import type { CrystalDossier, SiteDossier } from '#src/dossier/dossier.ts';
 import type { ColouredValue } from './colour-meaning.ts';
-import { colouredValue, usualValue } from './colour-meaning.ts';
+import { colouredValue, printedDigits, shownValue, usualValue } from './colour-meaning.ts';
 import { legendColour, legendFor, mapColour } from './colour-scale.ts';
 import type { GlyphKind, Legend, SceneQuantity } from './scene.ts';
 import type { ColourMeaning, SceneOptions } from './scene-options.ts';
+import { needDeviations } from './tensor-scale.ts';
 import type { PrincipalForm } from './tensor-shape.ts';
-import { principalForm } from './tensor-shape.ts';
+import { largestReach, principalForm } from './tensor-shape.ts';
 
 type Rgb = readonly [number, number, number];
 
@@ -37,7 +38,7 @@ export interface ChosenTensors {
 
 /** What goes into the choice of tensors. */
 type ChoiceOptions = Pick<SceneOptions, 'quantity' | 'showTensors' | 'tensorElements' | 'colourLimits'> &
-  Partial<Pick<SceneOptions, 'colourBy' | 'colourMap' | 'tensorSites' | 'glyph' | 'part'>>;
+  Partial<Pick<SceneOptions, 'colourBy' | 'colourMap' | 'tensorSites' | 'glyph' | 'part' | 'ellipsoid'>>;
 
 /** Tensors whose number is undefined have this colour. */
 const undefinedColour: Rgb = [150, 147, 141];
@@ -48,7 +49,9 @@ export function chooseTensors(dossier: CrystalDossier, options: ChoiceOptions): 
   if (!quantity) return null;
   const all = formsOf(dossier, quantity);
   const elements =
-    options.tensorElements === 'auto' ? mainElements(dossier, quantity, all) : options.tensorElements;
+    options.tensorElements === 'auto'
+      ? mainElements(dossier, quantity, all, options)
+      : options.tensorElements;
   const sites = options.tensorSites ? new Set(options.tensorSites) : null;
   const kept = [...all].filter(
     ([index]) => (elements?.includes(dossier.sites[index]!.element) ?? true) && (sites?.has(index) ?? true),
@@ -108,18 +111,37 @@ function chooseColours(
     notes.push(`${missing[colourBy]} here, so colours say something else.`);
   }
   const values = new Map<number, number>();
+  let digits = 0;
   for (const site of sites) {
-    const value = coloured.valueOf(site);
-    if (isDefined(value)) values.set(site.index, value);
+    const value = shownValue(site, coloured);
+    if (value === null) continue;
+    values.set(site.index, value);
+    digits = Math.max(digits, printedDigits(site, coloured));
   }
-  const legend = legendFor(coloured, [...values.values()], options.colourLimits, options.colourMap ?? null);
+  const map = options.colourMap ?? null;
+  const legend = legendFor(coloured, [...values.values()], options.colourLimits, map, digits);
+  // an isotropic value or a bar with limits of its own may well be zero
+  const isFree = coloured.naturalLimits === null && colourBy !== 'isotropic' && options.colourLimits === null;
+  const isNothing = isFree && values.size > 0 && isWithinRounding(values);
   const colours = new Map<number, Rgb>();
   for (const { index } of sites) {
-    const value = values.get(index);
+    const value = isNothing ? undefined : values.get(index);
     colours.set(index, value === undefined ? undefinedColour : legendColour(legend, value));
   }
+  if (isNothing) notes.push(nothingButRounding(coloured, digits));
   if (values.size < sites.length) notes.push('Grey tensors have no such number.');
   return { legend, colours, values, colourBy: isKnown ? colourBy : 'isotropic', coloured, notes };
+}
+
+function isWithinRounding(values: ReadonlyMap<number, number>): boolean {
+  for (const value of values.values()) if (value !== 0) return false;
+  return true;
+}
+
+/** Zero at every site, so far as numbers are printed: colours would say nothing, and are those of no number. */
+function nothingButRounding({ unit }: ColouredValue, digits: number): string {
+  const half = `${(0.5 * 10 ** -digits).toFixed(digits + 1)}${unit ? ` ${unit}` : ''}`;
+  return `All of these numbers are zero within rounding, below ${half}: the tensors are grey.`;
 }
 
 function isDefined(value: number | null): value is number {
@@ -156,13 +178,22 @@ const drowningRatio = 6;
 /** Their field gradients are large for want of a surrounding, and seldom what the picture is looked at for. */
 const lightElements = new Set(['H', 'D', 'T', 'O']);
 
+/** Elements of which no deviation is more than this share of the picture's largest would be spheres. Our own choice. */
+const invisibleShare = 1 / 12;
+
 /** Elements to draw unasked: null for all. */
 function mainElements(
   dossier: CrystalDossier,
   quantity: SceneQuantity,
   forms: ReadonlyMap<number, PrincipalForm>,
+  options: ChoiceOptions,
 ): readonly string[] | null {
-  if (quantity !== 'efg') return null;
+  if (quantity !== 'efg') {
+    const isEllipsoid = (options.glyph ?? 'auto') !== 'polar' && options.glyph !== 'axes';
+    return isEllipsoid && options.part !== 'antisymmetric'
+      ? deviatingElements(dossier, forms, options.ellipsoid ?? 'auto')
+      : null;
+  }
   const largest = new Map<string, number>();
   const main = new Set<string>();
   for (const [index, { values }] of forms) {
@@ -174,6 +205,23 @@ function mainElements(
   const sizes = [...largest.values()];
   const isDrowning = Math.max(...sizes) > drowningRatio * Math.min(...sizes);
   return isDrowning && main.size > 0 && main.size < largest.size ? [...main] : null;
+}
+
+/** Where deviations are drawn: elements of which some would be seen, beside the largest one; null for all. */
+function deviatingElements(
+  dossier: CrystalDossier,
+  forms: ReadonlyMap<number, PrincipalForm>,
+  asked: SceneOptions['ellipsoid'],
+): readonly string[] | null {
+  if (asked === 'total' || (asked === 'auto' && !needDeviations([...forms.values()]))) return null;
+  const largest = new Map<string, number>();
+  for (const [index, form] of forms) {
+    const { element } = dossier.sites[index]!;
+    largest.set(element, Math.max(largestReach(form, 'deviation'), largest.get(element) ?? 0));
+  }
+  const least = invisibleShare * Math.max(...largest.values());
+  const seen = [...largest.keys()].filter((element) => largest.get(element)! >= least);
+  return seen.length < largest.size ? seen : null;
 }
 
 /** Colour of a site's tensors by the colour bar of these options, sRGB bytes; null where it has none. */

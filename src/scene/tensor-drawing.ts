@@ -1,7 +1,6 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
-import { apply, determinant, matrixFromColumns, multiply, transpose } from '#src/base/matrix3.ts';
-import { add, cross, length, normalize, scale, subtract } from '#src/base/vector3.ts';
-import { anyPerpendicular } from './camera.ts';
+import { apply, determinant, multiply, transpose } from '#src/base/matrix3.ts';
+import { add, length, normalize, scale, subtract } from '#src/base/vector3.ts';
 import { legendColour } from './colour-scale.ts';
 import type { Cylinder } from './cylinder-list.ts';
 import { dashesToTheEnds } from './cylinder-list.ts';
@@ -13,15 +12,6 @@ import type { PrincipalForm } from './tensor-shape.ts';
 import { largestReach } from './tensor-shape.ts';
 
 type Rgb = readonly [number, number, number];
-
-/** A further ellipsoid that belongs to a drawn atom. */
-export interface Bead {
-  readonly centre: Vec3;
-  /** Columns = semi-axis vectors, Å. */
-  readonly shape: Mat3;
-  readonly colour: Rgb;
-  readonly pickId: number;
-}
 
 /** What the atoms' tensors are drawn with. */
 export interface TensorDrawing {
@@ -38,7 +28,7 @@ export interface TensorDrawing {
 }
 
 /** Å; spheres that mark the atom inside a polar surface, rods or an axial vector. */
-const centreRadii = { polar: 0.07, axes: 0.1, axial: 0.14 } as const;
+const centreRadii = { polar: 0.07, axes: 0.1, axial: 0.1 } as const;
 /** The mark inside a polar surface, and negative lobes where colour says a value without sign. */
 export const lobeCentreColour: Rgb = [96, 92, 86];
 const darkLobe: Rgb = [84, 80, 74];
@@ -55,7 +45,7 @@ export function glyphReach(siteIndex: number, form: PrincipalForm, drawing: Tens
   const centre = centreRadius(drawing) ?? 0;
   if (part !== 'antisymmetric') return Math.max(centre, largestReach(form, kind) / unitsPerAngstrom);
   const size = length(drawing.axial.get(siteIndex) ?? [0, 0, 0]) / unitsPerAngstrom;
-  return size < leastLengthAngstrom ? centre : Math.max(size, beadRingRadius + beadRadii[1]);
+  return Math.max(centre, size);
 }
 
 /** R M Rᵀ */
@@ -148,26 +138,17 @@ function shaded(colour: Rgb, share: number): Rgb {
   return colour.map((c) => Math.round(c + Math.abs(share) * (end - c))) as unknown as Rgb;
 }
 
-/** Å; thicker than a bond. */
-const axialRodRadius = 0.07;
-const beadRingRadius = 0.3;
-/** Å; across the first and the last bead, and half their length along the ring, by which they overlap. */
-const beadRadii = [0.018, 0.08] as const;
-const beadHalfLength = 0.12;
-const beadCount = 8;
-/** Radians from the first bead to the last. */
-const beadArc = (290 / 180) * Math.PI;
+/** Å; shaft and head of the arrow along an axial vector. The head takes at most the given share of a short one. */
+const arrow = { shaftRadius: 0.05, headRadius: 0.13, headLength: 0.32, largestHeadShare: 0.4 } as const;
+/** A cone is drawn as so many discs, the last of a fifth of the first one's radius at least. */
+const headDiscs = 8;
 
 /**
- * Axial vectors as rods of half the length |a| to either side, with a ring of overlapping beads that grow thicker right-handed about a: the sense in
- * which the antisymmetric part turns the field. Copies are det(R)·R·a, as a rotation or a reflection takes a sense of turning along.
+ * Axial vectors as arrows of half the length |a| to either side of the atom: the antisymmetric part turns the field right-handed about
+ * the arrow. Copies are det(R)·R·a, as a rotation or a reflection takes a sense of turning along.
  */
-export function axialVectors(
-  atoms: readonly DrawnAtom[],
-  drawing: TensorDrawing,
-): { readonly rods: Cylinder[]; readonly beads: Bead[] } {
-  const rods: Cylinder[] = [];
-  const beads: Bead[] = [];
+export function axialArrows(atoms: readonly DrawnAtom[], drawing: TensorDrawing): Cylinder[] {
+  const pieces: Cylinder[] = [];
   atoms.forEach(({ atom, site, position }, i) => {
     const own = drawing.carries[i] ? drawing.axial.get(site.index) : undefined;
     if (!own) return;
@@ -177,24 +158,24 @@ export function axialVectors(
     );
     if (length(along) < leastLengthAngstrom) return;
     const colour = shaded(drawing.centreColourOf(site.index), rodShades[2]);
-    const look = { radius: axialRodRadius, startColour: colour, endColour: colour, pickId: i + 1 };
-    rods.push({ ...look, start: subtract(position, along), end: add(position, along) });
-    const axis = normalize(along);
-    const first = anyPerpendicular(axis);
-    const second = cross(axis, first);
-    for (let k = 0; k < beadCount; k++) {
-      const share = k / (beadCount - 1);
-      const [x, y] = [Math.cos(share * beadArc), Math.sin(share * beadArc)];
-      const out = add(scale(beadRingRadius * x, first), scale(beadRingRadius * y, second));
-      const across = beadRadii[0] + share * (beadRadii[1] - beadRadii[0]);
-      const outward = normalize(out);
-      const shape = matrixFromColumns(
-        scale(beadHalfLength, cross(axis, outward)),
-        scale(across, outward),
-        scale(across, axis),
-      );
-      beads.push({ centre: add(position, out), shape, colour, pickId: i + 1 });
-    }
+    const look = { startColour: colour, endColour: colour, pickId: i + 1 };
+    pieces.push(...arrowBetween(subtract(position, along), add(position, along), look));
   });
-  return { rods, beads };
+  return pieces;
+}
+
+/** A shaft and a head of discs that narrow towards the end; short arrows are as slender as long ones. */
+function arrowBetween(start: Vec3, end: Vec3, look: Omit<Cylinder, 'start' | 'end' | 'radius'>): Cylinder[] {
+  const whole = subtract(end, start);
+  const size = length(whole);
+  const head = Math.min(arrow.headLength, arrow.largestHeadShare * size);
+  const shrunk = head / arrow.headLength;
+  const at = (fromEnd: number) => subtract(end, scale(fromEnd / size, whole));
+  const pieces: Cylinder[] = [{ ...look, start, end: at(head), radius: shrunk * arrow.shaftRadius }];
+  for (let k = 0; k < headDiscs; k++) {
+    const radius = shrunk * arrow.headRadius * (1 - (0.8 * k) / (headDiscs - 1));
+    const [from, to] = [k, k + 1].map((step) => at(head * (1 - step / headDiscs))) as [Vec3, Vec3];
+    pieces.push({ ...look, start: from, end: to, radius });
+  }
+  return pieces;
 }

@@ -11,11 +11,14 @@ export interface NearPair {
 }
 
 /** Semi-axes of two neighbours together take at most this share of their distance, so that the bond stays visible. */
-const filledShare = { total: 0.74, deviation: 0.8 } as const;
+const filledShare = { total: 0.74, deviation: 0.92 } as const;
 /** Å; no semi-axis is longer, however far the neighbours are. */
 const longestAngstrom = 1.1;
-/** A deviation bulges a sphere by at most this share of its radius, either way. */
-const largestBulge = 0.65;
+/**
+ * Deviations draw a sphere in by at most this share of its radius; those of an upper quarter of the sites at least by the other one, so
+ * that a single giant doesn't make spheres of all the rest.
+ */
+const deepest = { of: 0.8, usual: 0.5 } as const;
 /** The same for a scale that was asked for: beyond 1 the ellipsoid would turn inside out. */
 const deepestBulge = 0.95;
 /** Å; a base radius never exceeds this. */
@@ -63,15 +66,14 @@ function chooseKind(
   asked: SceneOptions['ellipsoid'],
 ): { kind: EllipsoidKind; because: string | null } {
   if (asked === 'deviation') return { kind: 'deviation', because: null };
-  const lowest = extremeValue(forms, Math.min);
-  if (!(lowest > 0)) {
+  if (!areAllPositive(forms)) {
     return {
       kind: 'deviation',
       because: 'some principal values are not positive, so their totals have no ellipsoid',
     };
   }
-  const highest = extremeValue(forms, Math.max);
-  const vanishing = lowest / total.unitsPerAngstrom < thinnestAngstrom || highest > largestRatio * lowest;
+  const lowest = extremeValue(forms, Math.min);
+  const vanishing = lowest / total.unitsPerAngstrom < thinnestAngstrom || areTooUnequal(forms);
   if (asked === 'auto' && vanishing) {
     return {
       kind: 'deviation',
@@ -80,6 +82,16 @@ function chooseKind(
   }
   return { kind: 'total', because: null };
 }
+
+/** Whether ellipsoids of these tensors have to be those of deviations, whatever the neighbours. */
+export function needDeviations(forms: readonly PrincipalForm[]): boolean {
+  return !areAllPositive(forms) || areTooUnequal(forms);
+}
+
+const areAllPositive = (forms: readonly PrincipalForm[]): boolean => extremeValue(forms, Math.min) > 0;
+
+const areTooUnequal = (forms: readonly PrincipalForm[]): boolean =>
+  extremeValue(forms, Math.max) > largestRatio * extremeValue(forms, Math.min);
 
 function extremeValue(forms: readonly PrincipalForm[], choose: typeof Math.min): number {
   return forms.reduce((found, { values }) => choose(found, ...values), choose());
@@ -147,14 +159,14 @@ function deviationScale(
   asked: number | null,
   otherRadius: (site: SiteDossier) => number,
 ): TensorScale {
-  const outward = new Map<number, number>();
-  let largest = 0;
-  for (const [index, { values, isotropic }] of forms) {
-    outward.set(index, Math.max(...values) - isotropic);
-    largest = Math.max(largest, ...values.map((value) => Math.abs(value - isotropic)));
-  }
-  const bulge = (index: number) => (largest > 0 ? (largestBulge * (outward.get(index) ?? 0)) / largest : 0);
-  let base = largestBaseAngstrom;
+  const inward = [...forms.values()].map(({ values, isotropic }) => isotropic - Math.min(...values));
+  const perUnit = bulgePerUnit(inward);
+  const bulges = new Map(
+    [...forms].map(([index, { values, isotropic }]) => [index, perUnit * (Math.max(...values) - isotropic)]),
+  );
+  const bulge = (index: number) => bulges.get(index) ?? 0;
+  const largest = [...bulges.values()].reduce((most, one) => Math.max(most, one), 0);
+  let base = Math.min(largestBaseAngstrom, longestAngstrom / (1 + largest));
   for (const { first, second, distanceAngstrom } of pairs) {
     const drawn = [first, second].filter((site) => forms.has(site.index));
     if (drawn.length === 0) continue;
@@ -165,14 +177,23 @@ function deviationScale(
     if (room > 0.2) base = Math.min(base, room / radii);
   }
   const baseRadiusAngstrom = Math.max(0.1, Math.floor(100 * base) / 100);
-  const needed = largest / (largestBulge * baseRadiusAngstrom);
-  const least = largest / (deepestBulge * baseRadiusAngstrom);
+  const needed = perUnit > 0 ? 1 / (perUnit * baseRadiusAngstrom) : 0;
+  const least = inward.reduce((most, one) => Math.max(most, one), 0) / (deepestBulge * baseRadiusAngstrom);
   const unitsPerAngstrom =
     asked === null ? (needed > 0 ? readableAtLeast(needed) : 1) : Math.max(asked, least);
   return { quantity, kind: 'deviation', unitsPerAngstrom, baseRadiusAngstrom };
 }
 
-const readableDigits = [1, 1.2, 1.5, 2, 2.5, 3, 3.5, 4, 5, 6, 7, 8, 10];
+/** Share of the base radius for one ppm or a.u.; 0 where nothing deviates. `inward`: how far each tensor falls below its isotropic value. */
+function bulgePerUnit(inward: readonly number[]): number {
+  const sorted = [...inward].sort((p, q) => p - q);
+  const largest = sorted.at(-1) ?? 0;
+  if (!(largest > 0)) return 0;
+  const usual = sorted[Math.floor(0.75 * (sorted.length - 1))]!;
+  return Math.min(deepest.of / largest, usual > 0 ? deepest.usual / usual : Infinity);
+}
+
+const readableDigits = [1, 1.2, 1.5, 2, 2.5, 3, 3.5, 4, 5, 6, 7, 8, 9, 10];
 
 /** The smallest number not below `value` whose leading digits are easy to read: 237 → 250. */
 export function readableAtLeast(value: number): number {

@@ -50,12 +50,16 @@ describe('element colours', () => {
 
   /** 2.3 is the usual just noticeable difference of CIE 1976 (Mahy, Van Eycken & Oosterlinck 1994). */
   it('differ by five just noticeable steps among elements that often meet', () => {
-    const common = 'H C N O F Na Mg Al Si P S Cl K Ca Ti Fe'.split(' ');
+    const common = 'H C N O F Na Mg Al Si P S Cl K Ca Ti V Mn Fe Cu Zn'.split(' ');
     for (const p of common) {
       for (const q of common) {
         if (p !== q) expect(difference(p, q), `${p} ${q}`).toBeGreaterThan(5 * 2.3);
       }
     }
+  });
+
+  it('iron is as unlike carbon, silicon, magnesium and calcium as their elements beside it on a site ask for', () => {
+    for (const q of ['C', 'Si', 'Mg', 'Ca']) expect(difference('Fe', q), q).toBeGreaterThan(10 * 2.3);
   });
 
   it('tell the elements of one group apart', () => {

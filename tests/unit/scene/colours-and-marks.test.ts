@@ -110,10 +110,10 @@ describe('what colours say', () => {
       expect(value).toBeGreaterThanOrEqual(legend.low);
       expect(value).toBeLessThanOrEqual(legend.high);
       expect(colourAt(scene, k)).toEqual([...legendColour(legend, value)]);
-      // signs have stripes as their second cue
-      expect(scene.quadrics.patterns?.[k] ?? 0).toBe(isSigned && value < 0 ? 1 : 0);
+      // signs have dots as their second cue
+      expect(scene.quadrics.patterns?.[k] ?? 0).toBe(isSigned && value < 0 ? 2 : 0);
     });
-    expect(scene.caption.includes('Stripes mark negative values.')).toBe(isSigned);
+    expect(scene.caption.includes('Dots on an ellipsoid mark a negative value.')).toBe(isSigned);
     expect([...scene.siteColours!]).toEqual([
       ...colourAt(scene, 0),
       255,
@@ -126,6 +126,32 @@ describe('what colours say', () => {
     ]);
     expect(legend.title.length).toBeGreaterThan(3);
   });
+
+  it.each([
+    ['residual', [4e-13, 0]],
+    ['residual', [0.004, 0.0049]],
+    ['difference', [2.3e-13, -2.3e-13]],
+  ] as const)(
+    '%s of %j ppm is nothing but rounding: grey, on a bar of at least 0.1 ppm, and said',
+    (colourBy, sizes) => {
+      const made = ([a, b]: readonly [number, number]) =>
+        colourBy === 'residual'
+          ? three([
+              withNumbers(first!, { symmetryResidual: a }),
+              withNumbers(second!, { symmetryResidual: b }),
+            ])
+          : three([other(1580 / 3 + a), other(1555 / 3 + b)]);
+      const scene = buildScene(made(sizes), { quantity: 'shielding', colourBy });
+      const [r, g, b] = colourAt(scene, 0);
+      expect(Math.max(r!, g!, b!) - Math.min(r!, g!, b!)).toBeLessThan(16);
+      expect(colourAt(scene, 1)).toEqual([r, g, b]);
+      expect(scene.quadrics.patterns).toBeUndefined();
+      // 0.01 ppm is the last printed digit
+      expect(scene.legend!.high - scene.legend!.low).toBeGreaterThanOrEqual(0.1);
+      expect(scene.legend!.digits).toBeLessThanOrEqual(2);
+      expect(scene.caption).toContain('zero within rounding, below 0.005 ppm');
+    },
+  );
 
   it('an undefined number leaves a grey tensor and no colour for the site', () => {
     const dossier = three([
@@ -191,7 +217,9 @@ describe('occupancy', () => {
       species(['Al', 0.5], ['Fe', 0.3], ['Mg', 0.2]),
       species(['Na', 1]),
     ]);
-    const { quadrics, caption } = buildScene(dossier, { showTensors: false });
+    const { quadrics, caption, elements } = buildScene(dossier, { showTensors: false });
+    // the second element of the mixed site has its place in the key
+    expect(elements.map(({ element }) => element)).toEqual(['Al', 'Na', 'Fe']);
     const rest = (i: number) => [...quadrics.restColours!.subarray(3 * i, 3 * i + 3)];
     expect([...quadrics.shares!]).toEqual([Math.round(0.4 * 255), Math.round((0.5 / 0.8) * 255), 255]);
     expect(rest(0)).toEqual([...vacancyColour]);

@@ -141,6 +141,16 @@ describe('principal axes', () => {
     expect(scene.caption).toContain('deviations from the isotropic value, 1 Å = 100 ppm');
   });
 
+  it('are at least twice as thick as the bonds and hydrogen bonds beside them', () => {
+    const scene = buildScene(madeQuartz(), { glyph: 'axes' });
+    const radii = (kind: 'atom' | 'bond') =>
+      [...scene.cylinders.pickIds.keys()]
+        .filter((i) => scene.picks[scene.cylinders.pickIds[i]! - 1]!.kind === kind)
+        .map((i) => scene.cylinders.radii[i]!);
+    expect(radii('bond').length).toBeGreaterThan(0);
+    expect(Math.min(...radii('atom'))).toBeGreaterThanOrEqual(2 * Math.max(...radii('bond')));
+  });
+
   it('of totals are as long as the principal values', () => {
     const options = { glyph: 'axes', ellipsoid: 'total', unitsPerAngstrom: 200 } as const;
     const rods = rodsOf(buildScene(single([120, 0, 0, 0, 150, 0, 0, 0, 240]), options));
@@ -194,38 +204,35 @@ describe('antisymmetric part', () => {
     return made;
   }
 
-  it('is a rod of half length |a| with beads that grow right-handed about A’s own axial vector', () => {
+  it('is one arrow of half length |a| along A’s own axial vector, which narrows to its end', () => {
     const dossier = crystal();
     const scene = buildScene(dossier, { part: 'antisymmetric', unitsPerAngstrom: 20, bonds: false });
-    const volume = (q: number) =>
-      Math.abs(determinant(asMat3(scene.quadrics.shapes.subarray(9 * q, 9 * q + 9))));
+    const { cylinders } = scene;
     expect(scene.polars).toBeUndefined();
-    expect(scene.cylinders.count).toBe(4);
-    for (let i = 0; i < scene.cylinders.count; i++) {
-      const pickId = scene.cylinders.pickIds[i]!;
-      const pick = atomOf(scene, pickId);
+    expect(scene.quadrics.count).toBe(4);
+    for (const pickId of [1, 2, 3, 4]) {
       // the axial vector of the turned tensor itself, not of a formula for axial vectors
-      const t = tensorAt(dossier, pick, skew);
-      const own: Vec3 = [(t[5] - t[7]) / 2, (t[6] - t[2]) / 2, (t[1] - t[3]) / 2];
-      const way = subtract(three(scene.cylinders.ends, i), three(scene.cylinders.starts, i));
-      expect(length(way)).toBeCloseTo((2 * 13) / 20, 5);
-      expect(length(cross(normalize(way), normalize(own)))).toBeLessThan(1e-5);
-      const beads = [...scene.quadrics.pickIds.keys()].filter(
-        (q) => q >= 4 && scene.quadrics.pickIds[q] === pickId,
-      );
+      const t = tensorAt(dossier, atomOf(scene, pickId), skew);
+      const own = normalize([(t[5] - t[7]) / 2, (t[6] - t[2]) / 2, (t[1] - t[3]) / 2]);
+      const pieces = [...cylinders.pickIds.keys()].filter((i) => cylinders.pickIds[i] === pickId);
       const centre = three(scene.quadrics.centres, pickId - 1);
-      beads.slice(1).forEach((bead, k) => {
-        const [before, after] = [beads[k]!, bead].map((q) =>
-          subtract(three(scene.quadrics.centres, q), centre),
-        );
-        expect(dot(cross(before!, after!), own)).toBeGreaterThan(0);
-        expect(volume(bead)).toBeGreaterThan(volume(beads[k]!));
-      });
+      const ends = pieces.map((i) => subtract(three(cylinders.ends, i), centre));
+      const starts = pieces.map((i) => subtract(three(cylinders.starts, i), centre));
+      for (const p of [...starts, ...ends]) expect(length(cross(p, own))).toBeLessThan(1e-5);
+      const places = (list: readonly Vec3[]) => list.map((p) => dot(p, own));
+      expect(Math.min(...places(starts))).toBeCloseTo(-13 / 20, 5);
+      expect(Math.max(...places(ends))).toBeCloseTo(13 / 20, 5);
+      // pieces follow one another without gaps; the widest is where the head begins, the narrowest at its end
+      const order = pieces.map((_, k) => k).sort((p, q) => places(ends)[p]! - places(ends)[q]!);
+      order.slice(1).forEach((k, n) => expect(places(starts)[k]).toBeCloseTo(places(ends)[order[n]!]!, 5));
+      const radii = order.map((k) => cylinders.radii[pieces[k]!]!);
+      expect(radii[1]).toBeGreaterThan(2 * radii[0]!);
+      radii.slice(2).forEach((radius, k) => expect(radius).toBeLessThan(radii[k + 1]!));
     }
-    // the ring round the atom holds the rods; its beads have none
-    scene.quadrics.ringRadii!.forEach((radius, q) => expect(radius).toBeCloseTo(q < 4 ? 13 / 20 : 0, 6));
+    scene.quadrics.ringRadii!.forEach((radius) => expect(radius).toBeCloseTo(13 / 20, 6));
     expect(scene.scaleStatement).toBe('1 Å = 20 ppm of the axial vector');
     expect(scene.caption).toContain('antisymmetric part');
+    expect(scene.caption).toContain('right-handed about the arrow');
   });
 
   it('turns the field in the drawn sense: −A·B is a × B', () => {

@@ -44,7 +44,7 @@ describe('sites that share a position', () => {
     const sites = new Set(scene.picks.flatMap((pick) => (pick.kind === 'atom' ? [pick.siteIndex] : [])));
     expect(sites).toEqual(new Set([1, 2, 3]));
     expect(scene.caption).toContain('share a position');
-    expect(scene.elements.map(({ element }) => element)).toEqual(['Al', 'O']);
+    expect(scene.elements.map(({ element }) => element)).toEqual(['Al', 'O', 'Nb']);
   });
 
   it('are both named under the pointer, and a column of occupancies appears', () => {
