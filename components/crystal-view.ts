@@ -7,6 +7,7 @@ import { siteColour } from '#src/store/site-colour.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
 import { colourBar, colourBarStyles } from './colour-bar.ts';
 import type { CrystalPicture, PictureEvents } from './crystal-picture.ts';
+import { completeWithout, draws, nothingDraws } from './drawing-words.ts';
 import { MeasurementBoard, newestWords } from './measurement-board.ts';
 import type { PicturePoint } from './picture-controls.ts';
 import type { PictureCommand } from './picture-keys.ts';
@@ -32,11 +33,6 @@ import { shared } from './styles.ts';
 import './spoken-line.ts';
 import type { ViewPanel } from './view-panel.ts';
 import { viewStyles } from './view-styles.ts';
-
-/** All there is to say where nothing can be drawn. */
-const nothingDraws =
-  'This browser offers neither WebGL 2 nor a canvas to paint on, so the crystal is not drawn; the site table, the site card and all numbers work without it.';
-const completeWithout = 'The site table, the site card and all numbers are complete without it.';
 
 /** The crystal on a canvas with what belongs to it: axes, labels, annotations, colour bar, caption, ways to turn it. */
 export class CrystalView extends StoreElement {
@@ -205,6 +201,7 @@ export class CrystalView extends StoreElement {
       this.#spoken = () => newestWords(this.#board, this.store);
     this.#crystalKey = key;
     if (isOther) this.#marker.clear();
+    if (before && decisions?.sources[0] !== before.decisions?.sources[0]) this.open = null;
     if (look !== before?.look) picture.setLook(look);
     picture.show(scene, isOther);
     const isSteered = camera !== before?.camera && camera !== picture.camera;
@@ -319,13 +316,19 @@ export class CrystalView extends StoreElement {
 
   #show(open: PicturePanel | null): void {
     if (!open) this.#closePanel();
-    else void loadPanel((this.open = open)).then(() => this.requestUpdate());
+    else void this.#openPanel(open);
+  }
+
+  /** The focus goes into the panel, so that keys act there. */
+  async #openPanel(open: PicturePanel): Promise<void> {
+    await loadPanel((this.open = open));
+    this.requestUpdate();
+    await this.updateComplete;
+    if (this.open === open) this.renderRoot.querySelector<HTMLElement>('.panel')?.focus();
   }
 
   async #typeDirection(): Promise<void> {
-    this.open = 'view';
-    await loadPanel('view');
-    await this.updateComplete;
+    await this.#openPanel('view');
     const panel = this.renderRoot.querySelector<ViewPanel>('ellipsite-view-panel');
     await panel?.updateComplete;
     panel?.focusDirection();
@@ -341,10 +344,6 @@ export class CrystalView extends StoreElement {
     this.open = null;
     (opener ?? this.renderRoot.querySelector<HTMLElement>('.stage'))?.focus();
   }
-}
-
-function draws(probe: WebGLProbe): boolean {
-  return probe.available || probe.canPaint;
 }
 
 customElements.define('ellipsite-crystal-view', CrystalView);

@@ -69,7 +69,7 @@ export class PageHeader extends StoreElement {
       }
       .step span {
         display: inline-block;
-        max-width: 15ch;
+        max-width: 26ch;
         overflow: hidden;
         text-overflow: ellipsis;
         white-space: pre;

@@ -7,12 +7,19 @@ export interface PicturePoint {
   readonly yPx: number;
 }
 
+/** Ways to steer the picture, as they are named behind "Undo". */
+export const steeringWords = {
+  turned: 'turn the crystal',
+  moved: 'move the picture',
+  zoomed: 'zoom',
+} as const;
+
 /** What the gestures act on. */
 export interface ControlTarget {
   readonly camera: () => Camera | null;
   readonly viewport: () => Viewport;
   /** `turned`: about whatever the picture turns about. */
-  readonly move: (camera: Camera, how: 'turned' | 'moved') => void;
+  readonly move: (camera: Camera, how: keyof typeof steeringWords) => void;
   /** A press that did not become a drag; `adds` with Shift, Ctrl or ⌘, and after a long press. */
   readonly click: (point: PicturePoint, adds: boolean) => void;
   readonly doubleClick: (point: PicturePoint) => void;
@@ -109,7 +116,7 @@ export function attachControls(element: HTMLElement, target: ControlTarget): () 
     if (!camera) return;
     const pixels = event.deltaMode === WheelEvent.DOM_DELTA_PIXEL ? event.deltaY : event.deltaY * 33;
     const at = { xPx: event.offsetX, yPx: event.offsetY };
-    target.move(zoom(camera, zoomPerWheelPixel ** -pixels, target.viewport(), at), 'moved');
+    target.move(zoom(camera, zoomPerWheelPixel ** -pixels, target.viewport(), at), 'zoomed');
   });
   return () => abort.abort();
 }
@@ -164,12 +171,12 @@ function pinch(target: ControlTarget, pointer: Held, other: Held, x: number, y: 
   const before = Math.hypot(fromX, fromY);
   const panned = pan(camera, (x - pointer.x) / 2, (y - pointer.y) / 2, viewport);
   if (before === 0) {
-    target.move(panned, 'moved');
+    target.move(panned, 'zoomed');
     return;
   }
   const middle = { xPx: (x + other.x) / 2, yPx: (y + other.y) / 2 };
   const zoomed = zoom(panned, Math.hypot(toX, toY) / before, viewport, middle);
-  target.move(turnAbout(zoomed, [0, 0, 1], -turnBetween(fromX, fromY, toX, toY)), 'moved');
+  target.move(turnAbout(zoomed, [0, 0, 1], -turnBetween(fromX, fromY, toX, toY)), 'zoomed');
 }
 
 /** Radians from one direction on screen to another, clockwise (y runs downwards). */

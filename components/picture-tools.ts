@@ -52,7 +52,7 @@ export function pictureTools(host: ToolsHost): TemplateResult {
     >
       ${panelNames[name]}
     </button>`;
-  return html`<div class="tools" role="toolbar" aria-label="View">
+  return html`<div class="tools" role="toolbar" aria-label="View" @keydown=${closesByKey(host)}>
     <span class="group">
       ${hasAxes ? html`<span>along</span> ${axis('a')}${axis('b')}${axis('c')}` : nothing}
       <button title="the first view" @click=${() => run({ do: 'first' })}>all</button>
@@ -81,17 +81,21 @@ export function loadPanel(open: PicturePanel): Promise<unknown> {
   }
 }
 
+/** Escape closes the panel from inside it and from the buttons. */
+function closesByKey(host: ToolsHost): (event: KeyboardEvent) => void {
+  return (event) => {
+    if (event.key !== 'Escape' || event.defaultPrevented || !host.open) return;
+    event.preventDefault();
+    host.close();
+  };
+}
+
 /** The panel that is open, beside the picture or over it. */
 export function openPanel(host: ToolsHost): TemplateResult | typeof nothing {
   const { open } = host;
   if (!open) return nothing;
-  const closeByKey = (event: KeyboardEvent): void => {
-    if (event.key !== 'Escape' || event.defaultPrevented) return;
-    event.preventDefault();
-    host.close();
-  };
   const name = open === 'help' ? 'Keys and gestures' : panelNames[open];
-  return html`<div class="panel" role="dialog" aria-label=${name} @keydown=${closeByKey}>
+  return html`<div class="panel" role="dialog" tabindex="-1" aria-label=${name} @keydown=${closesByKey(host)}>
     <div class="panel-head">${name}<button aria-label="Close" @click=${() => host.close()}>×</button></div>
     ${panelContent(host, open)}
   </div>`;

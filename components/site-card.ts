@@ -1,5 +1,7 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
+import { forcedOn } from '#src/store/axes.ts';
+import type { CrystalSummary } from '#src/store/crystal-summary.ts';
 import type { EquivalentAtom, Place } from '#src/store/dossier-types.ts';
 import type { KnownSite } from '#src/store/engine-queries.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
@@ -71,7 +73,7 @@ export class SiteCard extends StoreElement {
               </p>`
             : nothing
         }
-        ${facts(site, atom)}
+        ${facts(site, atom, crystal)}
         ${
           !site.shielding && !site.shift && !site.efg
             ? html`<p class="soft">The files hold no tensor for this site.</p>`
@@ -133,16 +135,16 @@ function summary(site: KnownSite): string {
 }
 
 function positionOf({ fractional, cartesian }: Pick<EquivalentAtom, 'fractional' | 'cartesian'>): string {
-  return fractional ? formatPosition(fractional, 5) : `${formatPosition(cartesian, 5)} Å`;
+  return fractional ? formatPosition(fractional, 4) : `${formatPosition(cartesian, 4)} Å`;
 }
 
-function facts(site: KnownSite, atom: EquivalentAtom | null): TemplateResult {
+function facts(site: KnownSite, atom: EquivalentAtom | null, crystal: CrystalSummary): TemplateResult {
   const { species, occupancy, disorder, displacement } = site;
   const isMixed = species.length > 1;
   const rows: readonly (readonly [string, string | null])[] = [
     [atom ? `position of ${formatOperation(atom.operation)}` : 'position', positionOf(atom ?? site)],
     ['Cartesian', site.fractional ? `${formatPosition((atom ?? site).cartesian, 4)} Å` : null],
-    ['symmetry forces', site.forced],
+    ['symmetry forces', forcedOn(site, atom, crystal.symmetry)],
     [
       'occupancy',
       occupancy === 1 && !isMixed

@@ -3,8 +3,8 @@ import { apply, rowsOf } from '#src/base/matrix3.ts';
 import { dot, length } from '#src/base/vector3.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import { nearestDirection } from '#src/crystal/nearest-direction.ts';
-import type { Axis, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
-import { directionLabel } from '#src/tensor/forced.ts';
+import type { Axis, CrystalDossier, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
+import { directionLabel, turnedSentence } from '#src/tensor/forced.ts';
 import { rotateTensor } from '#src/tensor/projection.ts';
 
 /** A quantity that has principal axes. */
@@ -58,6 +58,16 @@ export function atomAxes(
   if (!axes) return null;
   const turned = (axis: Axis): Axis => axis && withReadableSign(apply(atom.rotation, axis));
   return [turned(axes[0]), turned(axes[1]), turned(axes[2])];
+}
+
+/** What site symmetry forces on the tensors of one atom: directions in the sentence of its site are turned along with it. */
+export function forcedOn(
+  site: Pick<SiteDossier, 'forced'>,
+  atom: EquivalentAtom | null,
+  { operations }: Pick<CrystalDossier['symmetry'], 'operations'>,
+): string {
+  const operation = atom && operations[atom.operationIndex];
+  return operation ? turnedSentence(site.forced, operation.rotation) : site.forced;
 }
 
 /** A tensor of a site turned along with an equivalent atom: R T Rᵀ, R its Cartesian rotation. */

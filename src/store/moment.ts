@@ -1,4 +1,5 @@
 import type { Decisions, Step, Views, WorkbenchState } from './state.ts';
+import { defaultViews } from './state.ts';
 
 /** Steps kept for undo; they are small, for they share what didn't change. */
 export const keptSteps = 200;
@@ -89,7 +90,7 @@ export function viewsForNewCrystal(views: Views): Views {
   };
 }
 
-/** Views for another case: the saved ones belong to the case before. */
-export function viewsForNewCase(views: Views): Views {
-  return { ...viewsForNewCrystal(views), savedViews: [] };
+/** Views for another case: it starts with what suits it; of the case before only the look and labels stay. */
+export function viewsForNewCase({ look, picture: { labels, labelContent } }: Views): Views {
+  return { ...defaultViews, look, picture: { ...defaultViews.picture, labels, labelContent } };
 }

@@ -161,6 +161,18 @@ export function directionLabel(indices: Vec3): string {
   return `[${indices.map((index) => String(index).replace('-', '−')).join(plain ? '' : ' ')}]`;
 }
 
+/**
+ * The sentence of a site, for the equivalent atom that an operation with this fractional matrix W makes of it: each
+ * direction [uvw] that it names becomes W[uvw], in lowest indices, the first that is not zero positive.
+ */
+export function turnedSentence(sentence: string, rotation: Mat3): string {
+  return sentence.replaceAll(/\[([\d− ]+)\]/g, (_label, inside: string) => {
+    const parts = inside.includes(' ') ? inside.split(' ') : [...inside];
+    const indices = parts.map((part) => Number(part.replace('−', '-'))) as unknown as Vec3;
+    return directionLabel(lowestIndices(apply(rotation, indices)));
+  });
+}
+
 function sentenceOf(kind: ForcedShape['kind'], directions: readonly ForcedDirection[]): string {
   const [first] = directions;
   if (kind === 'isotropic') {

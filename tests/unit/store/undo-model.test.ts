@@ -4,6 +4,7 @@ import { cameraTurnedBy } from '#tests/support/views.ts';
 import { momentOf } from '#src/store/moment.ts';
 import type { Moment } from '#src/store/moment.ts';
 import type { Store } from '#src/store/store.ts';
+import { defaultViews } from '#src/store/state.ts';
 import { createStore } from '#src/store/store.ts';
 import { fixtureEngine } from '#tests/support/dossier-fixture.ts';
 
@@ -257,15 +258,19 @@ describe('a view step', () => {
     expect(store.state.savedViews).toHaveLength(1);
   });
 
-  it('of another crystal does not carry over what names sites', async () => {
+  it('of another case begins with what suits it: look and labels stay, nothing else', async () => {
     const store = await opened();
-    store.setPicture({ tensorSites: [7], colourBy: 'span', unitsPerAngstrom: 30 }, 'pick');
+    store.setPicture({ tensorSites: [7], glyph: 'axes', unitsPerAngstrom: 30, labels: true }, 'pick');
+    store.setLook({ depthCue: false }, 'no depth cue');
+    store.setTable({ sort: { key: 'label', descending: true } }, 'sort');
     store.setCamera(cameraTurnedBy(1), 'turn');
     store.addMeasurement({ id: 'm', kind: 'distance', atoms: [] });
     store.saveView('front');
     await store.open([file('other.cif')]);
-    const { picture, camera, measurements, savedViews } = store.state;
-    expect(picture).toMatchObject({ tensorSites: null, unitsPerAngstrom: null, colourBy: 'span' });
+    const { picture, camera, measurements, savedViews, look, table } = store.state;
+    expect(picture).toEqual({ ...defaultViews.picture, labels: true });
+    expect(look.depthCue).toBe(false);
+    expect(table).toEqual(defaultViews.table);
     expect([camera, measurements, savedViews]).toEqual([null, [], []]);
     await store.undo();
     expect(store.state.measurements).toHaveLength(1);

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import type { Mat3 } from '#src/base/matrix3.ts';
 import { identity3 } from '#src/base/matrix3.ts';
 import { latticeFromRows } from '#src/crystal/lattice.ts';
-import { directionLabel, forcedBySiteSymmetry } from '#src/tensor/forced.ts';
+import { directionLabel, forcedBySiteSymmetry, turnedSentence } from '#src/tensor/forced.ts';
 import { closure, pointGroup } from '#tests/support/point-groups.ts';
 
 const beta = (105.63 * Math.PI) / 180;
@@ -19,6 +19,22 @@ const mirrorAcrossB: Mat3 = [1, 0, 0, 0, -1, 0, 0, 0, 1];
 const twoAlongA: Mat3 = [1, -1, 0, 0, -1, 0, 0, 0, -1];
 const twoAlong110: Mat3 = [0, 1, 0, 1, 0, 0, 0, 0, -1];
 const threeAlongC: Mat3 = [0, -1, 0, 1, -1, 0, 0, 0, 1];
+
+describe('turnedSentence', () => {
+  // the three-fold axis along c takes the hexagonal [100] to [010] and on to [−1 −1 0], which is the line [110]
+  it('names the directions of the equivalent atom', () => {
+    const { sentence } = forcedBySiteSymmetry([identity3, [1, -1, 0, 0, -1, 0, 0, 0, -1]], hexagonal);
+    expect(sentence).toContain('axis [100];');
+    const once = turnedSentence(sentence, threeAlongC);
+    expect(once).toContain('axis [010];');
+    expect(turnedSentence(once, threeAlongC)).toContain('axis [110];');
+  });
+
+  it('reads directions with negative indices, and leaves a sentence without any', () => {
+    expect(turnedSentence('along [1 −1 0] and [001]', twoAlongB)).toBe('along [110] and [001]');
+    expect(turnedSentence('Nothing is forced.', twoAlongB)).toBe('Nothing is forced.');
+  });
+});
 
 describe('forcedBySiteSymmetry', () => {
   it.each([[[identity3]], [[identity3, inversion]], [[]]])('forces nothing without rotation: %#', (group) => {
