@@ -20,12 +20,15 @@ import { coordinationPolyhedra } from './polyhedra-layer.ts';
 import { sceneBounds } from './scene-bounds.ts';
 import type { ElementKey, PolarBatch, Scene } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
+import type { KeyParts } from './picture-key.ts';
+import { pictureKey } from './picture-key.ts';
 import { defaultSceneOptions } from './scene-options.ts';
 import { sharedPositions } from './shared-positions.ts';
 import { chooseTensors, elementsWithTensors, lobeColours, siteColours } from './tensor-choice.ts';
 import type { ChosenTensors } from './tensor-choice.ts';
 import { axialArrows, axisRods, polarSurfaces } from './tensor-drawing.ts';
 import type { TensorDrawing } from './tensor-drawing.ts';
+import { unfollowedWishes } from './unfollowed.ts';
 import { disorderPatterns, visibleSites } from './visible-sites.ts';
 import type { VisibleSites } from './visible-sites.ts';
 
@@ -90,6 +93,13 @@ export function buildScene(whole: CrystalDossier, options: Partial<SceneOptions>
     extent: drawn.extent,
     siteColours: siteColours(whole, choice),
     ...(choice?.colourBy === 'sign' ? { lobeColours } : {}),
+    key: pictureKey(keyParts(atoms, drawing, look, displacement && chosen.displacementProbability)),
+    unfollowed: unfollowedWishes(asked, {
+      choice,
+      scale,
+      hasDisplacement: displacement !== null,
+      polyhedra: polyhedra.count,
+    }),
     drawnInstead: sharedPositions(dossier).drawnInstead,
     tensorElements: choice?.elements ?? null,
   };
@@ -194,6 +204,24 @@ function tensorCaption(
         : [],
     copies: options.tensorCopies,
     hasUndefinedAxes: [...forms.values()].some(({ axes }) => axes.includes(null)),
+    isDotted: !look.hasDisorderPatterns && look.patterns.size > 0,
+  };
+}
+
+function keyParts(
+  atoms: readonly DrawnAtom[],
+  drawing: TensorDrawing | null,
+  look: AtomsLook,
+  probability: number | null,
+): KeyParts {
+  const { occupancy, hasDisorderPatterns } = marksOf(atoms, look);
+  const own = look.isSiteColoured ? atoms.filter(({ context }) => !context) : [];
+  return {
+    drawing,
+    colouredSites: [...new Set(own.map(({ site }) => site))],
+    probability,
+    ...occupancy,
+    hasDisorderPatterns,
     isDotted: !look.hasDisorderPatterns && look.patterns.size > 0,
   };
 }

@@ -1,4 +1,6 @@
 import type { ChosenAtoms } from './extent.ts';
+import { lengthWords } from './picture-key.ts';
+import { printed } from './printed.ts';
 import type { GlyphKind, Legend, SceneQuantity, TensorScale } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
 
@@ -53,11 +55,6 @@ export interface DisplacementCaption {
   readonly probability: number;
   /** Labels of drawn sites without a possible ellipsoid. */
   readonly impossible: readonly string[];
-}
-
-/** A number for people: − as minus sign, no trailing zeros, at most four significant digits. */
-export function printed(value: number): string {
-  return String(Number(value.toPrecision(4))).replace('-', '−');
 }
 
 /** 30000 → 30,000 */
@@ -115,28 +112,16 @@ function tensorSentence(tensors: TensorCaption): string {
 
 function glyphWords({ scale, glyph }: TensorCaption, of: string): string {
   const letter = { shielding: 'σ', shift: 'δ', efg: 'V' }[scale.quantity];
-  const isDeviation = scale.kind === 'deviation' && scale.quantity !== 'efg';
-  const statement = scaleStatement(scale);
+  const lengths = `${lengthWords(scale)}, ${scaleStatement(scale)}`;
   if (scale.part === 'antisymmetric') {
-    return `tensors${of}, antisymmetric part: arrows along the axial vector, half as long as its size to either side, ${statement}; it turns the field right-handed about the arrow`;
+    return `tensors${of}, antisymmetric part: arrows along the axial vector, ${lengths}; it turns the field right-handed about the arrow`;
   }
-  if (glyph === 'polar') {
-    const from = isDeviation
-      ? `without the isotropic value, r(n) = |n·${letter}·n − ${letter}(iso)|`
-      : `r(n) = |n·${letter}·n|`;
-    return `polar surfaces${of} of the symmetric part, ${from}, ${statement}`;
-  }
+  if (glyph === 'polar') return `polar surfaces${of} of the symmetric part, ${lengths}`;
   if (glyph === 'axes') {
-    const lengths = isDeviation ? 'deviations from the isotropic value' : 'principal values';
     const names = scale.quantity === 'efg' ? ['Vxx', 'Vzz'] : [`${letter}11`, `${letter}33`];
-    return `principal axes${of} of the symmetric part: half lengths = sizes of the ${lengths}, ${statement}; thin and pale ${names[0]} to thick and dark ${names[1]}, dashed where negative`;
+    return `principal axes${of} of the symmetric part: ${lengths}; thin and pale ${names[0]} to thick and dark ${names[1]}, dashed where negative`;
   }
-  const middle = scale.quantity === 'efg' ? 'principal value' : 'deviation from the isotropic value';
-  const axes =
-    scale.kind === 'total'
-      ? 'semi-axes = principal values of the symmetric part'
-      : `semi-axes = ${printed(scale.baseRadiusAngstrom)} Å + ${middle}`;
-  return `ellipsoids${of}: ${axes}, ${statement}; great circles lie perpendicular to the principal axes that are defined`;
+  return `ellipsoids${of}: ${lengths}; great circles lie perpendicular to the principal axes that are defined`;
 }
 
 function colourWords({ colourBy, legend, glyph, scale }: TensorCaption): string {
