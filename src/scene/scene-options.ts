@@ -33,7 +33,7 @@ export interface SceneOptions {
   readonly shell: { readonly siteIndices: readonly number[]; readonly radiusAngstrom: number } | null;
   /** `auto`: polar surfaces for field gradients, ellipsoids else. */
   readonly glyph: 'auto' | GlyphKind;
-  /** `antisymmetric`: the axial vector of (T − Tᵀ)/2 as a rod with a sense of turning. */
+  /** `antisymmetric`: the axial vector of (T − Tᵀ)/2 as an arrow, right-handed. */
   readonly part: 'symmetric' | 'antisymmetric';
   /** Indices of the only sites whose tensors are drawn; null for all. */
   readonly tensorSites: readonly number[] | null;

@@ -272,6 +272,36 @@ describe('what was chosen is said', () => {
     expect(scene.caption).toContain('ellipsoids of O:');
   });
 
+  it('leaves out of deviations what would be spheres beside one giant, unless asked for, and lets the rest be seen', () => {
+    const at = (x: number): [number, number, number] => [x, 0.5, 0.5];
+    const dossier = madeDossier({
+      rows: [10, 0, 0, 0, 8, 0, 0, 0, 8],
+      sites: [
+        { label: 'O1', element: 'O', position: at(0.1), shieldingPpm: [-280, 0, 0, 0, -215, 0, 0, 0, 277] },
+        { label: 'C1', element: 'C', position: at(0.225), shieldingPpm: [-70, 0, 0, 0, -25, 0, 0, 0, 83] },
+        { label: 'C2', element: 'C', position: at(0.375), shieldingPpm: [-40, 0, 0, 0, 10, 0, 0, 0, 140] },
+        { label: 'H1', element: 'H', position: at(0.485), shieldingPpm: [22, 0, 0, 0, 25, 0, 0, 0, 33] },
+      ],
+      bondLimits: { 'C-O': 1.3, 'C-C': 1.6, 'C-H': 1.2 },
+    });
+    const scene = buildScene(dossier);
+    expect(scene.tensorElements).toEqual(['O', 'C']);
+    expect(scene.caption).toContain('Those of H would look like plain spheres');
+    expect(scene.elements.map(({ element }) => element)).toEqual(['H']);
+    const axes = (i: number) => {
+      const shape = asMat3(scene.quadrics.shapes.subarray(9 * i, 9 * i + 9));
+      return [0, 1, 2].map((k) => Math.hypot(shape[k]!, shape[3 + k]!, shape[6 + k]!)).sort((p, q) => p - q);
+    };
+    const siteAt = (i: number) => (scene.picks[i] as { siteIndex: number }).siteIndex;
+    for (let i = 0; i < scene.quadrics.count; i++) {
+      const [short, , long] = axes(i) as [number, number, number];
+      if (siteAt(i) !== 3) expect(long / short, `site ${siteAt(i)}`).toBeGreaterThan(1.5);
+    }
+    const all = buildScene(dossier, { tensorElements: null });
+    expect(all.tensorElements).toBeNull();
+    expect(all.caption).not.toContain('plain spheres at');
+  });
+
   it('draws of field gradients the heavier quadrupolar nuclei where the others would drown them', () => {
     const gradient = (vzz: number): Mat3 => [-vzz / 2, 0, 0, 0, -vzz / 2, 0, 0, 0, vzz];
     const crystal = (ofHydrogen: number) => {
