@@ -1,9 +1,9 @@
 import type { MeasuredCopies, ShorterImage } from '#src/scene/measure-copies.ts';
 import type { MeasuredCrystal, MeasuredValue } from '#src/scene/measure.ts';
 import { placeOf } from '#src/scene/measure.ts';
-import type { MeasuredAxis, Measurement, MeasurementKind } from '#src/scene/measurement.ts';
+import type { MeasuredAtom, MeasuredAxis, Measurement, MeasurementKind } from '#src/scene/measurement.ts';
 import { convention } from '#src/store/conventions.ts';
-import { counted, formatNumber } from '#src/table/number-format.ts';
+import { counted, formatNumber, formatOperation } from '#src/table/number-format.ts';
 
 /** Kinds that are measured by picking atoms, and how many they take. */
 export const atomsNeeded = { distance: 2, angle: 3, dihedral: 4 } as const;
@@ -23,11 +23,21 @@ export function valueText({ value, unit, digits }: MeasuredValue): string {
   return unit === '°' ? `${formatNumber(value, digits)}°` : `${formatNumber(value, digits)} ${unit}`;
 }
 
-/** What was measured: `Si1–O1`, `O1–Si1–O2`, `V33 of Al1 to c`. */
+/** What was measured: `Si1–O1 (−y, x−y, z+1/3)`, `O1–Si1–O2`, `V33 of Al1 to c`. */
 export function measuredName(measurement: Measurement, crystal: MeasuredCrystal): string {
-  const labels = measurement.atoms.map((atom) => placeOf(atom, crystal)?.site.label ?? '?');
+  const labels = measurement.atoms.map((atom) => atomName(atom, crystal));
   if (measurement.kind !== 'axes') return labels.join('–');
   return (measurement.axes ?? []).map((axis) => axisName(axis, labels)).join(' to ');
+}
+
+/** `O1`, the site's own atom; else with its operation and the cell its copy stands in: `O1 (−y, x−y, z) in cell [1 0 0]`. */
+function atomName(atom: MeasuredAtom, crystal: MeasuredCrystal): string {
+  const place = placeOf(atom, crystal);
+  if (!place) return '?';
+  const { operation } = place.atom;
+  const isOwn = operation.replaceAll(' ', '') === 'x,y,z';
+  const cell = atom.cellShift.some((n) => n !== 0) ? ` in cell [${indices(atom.cellShift)}]` : '';
+  return `${place.site.label}${isOwn ? '' : ` (${formatOperation(operation)})`}${cell}`;
 }
 
 export function axisName(axis: MeasuredAxis, labels: readonly string[]): string {

@@ -7,6 +7,8 @@ import { parseLookAlong } from '#src/scene/look-along.ts';
 import { viewAngles, withViewAngles } from '#src/scene/view-angles.ts';
 import type { ViewAngles } from '#src/scene/view-angles.ts';
 import { atomAxes } from '#src/store/axes.ts';
+import type { TensorQuantity } from '#src/store/axes.ts';
+import type { KnownSite } from '#src/store/engine-queries.ts';
 import type { Vec3 } from '#src/store/dossier-types.ts';
 import { inCell, toCell } from '#src/store/cell-position.ts';
 import type { CrystalPicture } from './crystal-picture.ts';
@@ -17,6 +19,11 @@ import './saved-views.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
 
+const quantities = ['shielding', 'shift', 'efg'] as const;
+/** Sites among which a typed label is looked for. */
+const typedSites = 256;
+const axisSpelling =
+  'A principal axis is typed by the label of its site and the component: Al1 Vzz, Al1 σ33, Al1 33.';
 const letters = ['a', 'b', 'c', 'a*', 'b*', 'c*'] as const;
 
 /** From where the crystal is seen, in numbers: direction, angles, middle, enlargement; and the views kept by name. */
@@ -112,7 +119,7 @@ export class ViewPanel extends StoreElement {
             type="text"
             autocomplete="off"
             spellcheck="false"
-            placeholder=${hasCell ? '[1 1 0], (1 0 −1), −c' : 'x, −z'}
+            placeholder=${hasCell ? '[1 1 0], −c, Al1 Vzz' : 'x, −z'}
             aria-invalid=${this.fault ? 'true' : 'false'}
             aria-describedby="along-fault"
         /></label>
@@ -205,16 +212,27 @@ export class ViewPanel extends StoreElement {
     const { store } = this;
     const selection = store?.state.selection;
     const site = selection && store.site(selection.siteIndex);
-    if (!site) return [];
-    const atom = site.equivalents.find(({ id }) => id === selection.atomId) ?? site.equivalents[0];
-    if (!atom) return [];
-    return (['shielding', 'shift', 'efg'] as const).flatMap((quantity) =>
-      (atomAxes(site, atom, quantity) ?? []).map((axis, k) => ({
-        name: axisSymbol(quantity, k as 0 | 1 | 2),
-        of: site.label,
-        axis,
-      })),
-    );
+    return site ? principalAxes(site, selection.atomId, this.#shownFirst()) : [];
+  }
+
+  /** Those of every site that is here as well: the selected atom comes first, then the sites' first atoms. */
+  #typedAxes(): NamedAxis[] {
+    const { store } = this;
+    const siteCount = store?.state.derived?.crystal?.siteCount ?? 0;
+    const own = this.#namedAxes();
+    const typed = this.renderRoot.querySelector<HTMLInputElement>('#along')?.value.toLowerCase() ?? '';
+    for (let index = 0; store && index < Math.min(siteCount, typedSites); index++) {
+      const site = store.site(index);
+      if (site && typed.includes(site.label.toLowerCase()))
+        own.push(...principalAxes(site, null, this.#shownFirst()));
+    }
+    return own;
+  }
+
+  /** Quantities with the one that is drawn first: `Al1 33` means its axis. */
+  #shownFirst(): readonly TensorQuantity[] {
+    const drawn = this.picture?.scene?.scale?.quantity;
+    return [...new Set([...(drawn ? [drawn] : []), ...quantities])];
   }
 
   readonly #typed = (event: Event): void => {
@@ -224,8 +242,11 @@ export class ViewPanel extends StoreElement {
 
   #look(text: string): void {
     const axes = this.picture?.scene?.axes ?? [];
-    const found = parseLookAlong(text, axes, this.#namedAxes());
-    this.fault = 'fault' in found ? found.fault : null;
+    const named = this.#typedAxes();
+    const found = parseLookAlong(text, axes, named);
+    const hasTensors = (this.store?.state.derived?.crystal?.quantities.length ?? 0) > 0;
+    const spelling = hasTensors && named.length === 0 ? ` ${axisSpelling}` : '';
+    this.fault = 'fault' in found ? found.fault + spelling : null;
     if (!('fault' in found)) this.picture?.lookAlong(found.towards, found.words);
   }
 
@@ -240,6 +261,24 @@ export class ViewPanel extends StoreElement {
   #tell(name: 'to-selection' | 'pivots', detail?: boolean): void {
     this.dispatchEvent(new CustomEvent(name, { detail }));
   }
+}
+
+/** Principal axes of one atom of a site, its first without an id. */
+function principalAxes(
+  site: KnownSite,
+  atomId: string | null,
+  wanted: readonly TensorQuantity[],
+): NamedAxis[] {
+  const atom = site.equivalents.find(({ id }) => id === atomId) ?? site.equivalents[0];
+  if (!atom) return [];
+  return wanted.flatMap((quantity) =>
+    (atomAxes(site, atom, quantity) ?? []).map((axis, k) => ({
+      name: axisSymbol(quantity, k as 0 | 1 | 2),
+      others: [`${k + 1}${k + 1}`, ...(quantity === 'efg' ? [`V${k + 1}${k + 1}`] : [])],
+      of: site.label,
+      axis,
+    })),
+  );
 }
 
 function rounded(value: number, digits: number): number {

@@ -89,9 +89,10 @@ export const workbenchStyles = css`
     .numbers {
       display: block;
     }
+    /* grows where its lines of text leave too little for the picture */
     ellipsite-crystal-view {
-      height: 72vh;
-      height: 72svh;
+      min-height: 72vh;
+      min-height: 72svh;
     }
     .numbers {
       border-left: none;

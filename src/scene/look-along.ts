@@ -15,6 +15,8 @@ export interface NamedAxis {
   readonly name: string;
   /** Such as `Al1`. */
   readonly of: string;
+  /** Other spellings of the name, such as `33`. */
+  readonly others?: readonly string[];
   readonly axis: Vec3 | null;
 }
 
@@ -29,7 +31,7 @@ const forms = 'Allowed: a, b, c, a*, b*, c*, x, y, z, [1 1 0], (1 0 −1), each 
  * Reads a direction to look along. `a` is the cell vector, `a*` the reciprocal one, `[u v w]` the lattice direction ua + vb + wc,
  * `(h k l)` the normal ha* + kb* + lc* of the planes (with four indices (h k i l) where h + k + i = 0), `x` a Cartesian axis;
  * a minus before any of them turns it round. Indices are numbers parted by blanks or commas, or run together where each is
- * one digit: `[110]`, `[1-10]`. A principal axis is typed by its name where `namedAxes` has it.
+ * one digit: `[110]`, `[1-10]`. A principal axis is typed by site and component where `namedAxes` has it: `Al1 Vzz`.
  */
 export function parseLookAlong(
   text: string,
@@ -59,11 +61,31 @@ function directionOf(
     const isNormal = bracket[2] !== undefined;
     return alongIndices(bracket[1] ?? bracket[2] ?? '', isNormal, axes);
   }
-  const named = namedAxes.find(({ name }) => plainName(name) === plainName(text));
+  const named = axisNamed(text, namedAxes);
   if (named?.axis) return { towards: normalize(named.axis), words: `${named.name} of ${named.of}` };
   if (named) return { fault: `${named.name} of ${named.of} has no axis: its principal value is degenerate.` };
-  const names = namedAxes.map(({ name }) => name).join(', ');
-  return { fault: `“${text}” is no direction. ${forms}${names ? `; of the selected atom ${names}` : ''}.` };
+  const [first] = namedAxes;
+  const own = first ? `; principal axes: ${first.of} ${namedAxes.map(({ name }) => name).join(', ')}` : '';
+  return { fault: `“${text}” is no direction. ${forms}${own}.` };
+}
+
+/**
+ * The axis a text names: `σ11`, `Al1 V_zz`, `V33 of Al1`, `Al1 33`, in any case. A site without a component, or a component
+ * without a site, is that of the first axis that fits: the selected atom, the quantity that is shown.
+ */
+function axisNamed(text: string, namedAxes: readonly NamedAxis[]): NamedAxis | null {
+  const typed = plainName(text);
+  return (
+    namedAxes.find(({ name, of, others = [] }) =>
+      [name, ...others].some((one) => {
+        const component = plainName(one);
+        const site = plainName(of);
+        return [component, `${site}${component}`, `${component}of${site}`, `${component}${site}`].includes(
+          typed,
+        );
+      }),
+    ) ?? null
+  );
 }
 
 function alongLetter(

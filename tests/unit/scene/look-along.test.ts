@@ -85,6 +85,17 @@ describe('look along', () => {
     expect(parseLookAlong('V99', axes, named)).toEqual({ fault: expect.stringContaining('σ33, Vxx') });
   });
 
+  it.each(['Al1 V_zz', 'al1 vzz', 'Vzz of Al1', 'Vzz Al1', 'Al1 33', 'Al1 V33', 'V33'])(
+    'a principal axis by its site and component: %s',
+    (text) => {
+      const named = [
+        { name: 'Vzz', of: 'Al1', others: ['33', 'V33'], axis: [0, 0, 1] as Vec3 },
+        { name: 'Vzz', of: 'Al2', others: ['33', 'V33'], axis: [1, 0, 0] as Vec3 },
+      ];
+      expect(parseLookAlong(text, axes, named)).toEqual({ towards: [0, 0, 1], words: 'Vzz of Al1' });
+    },
+  );
+
   it.each([
     ['', 'No direction'],
     ['d', '“d” is no direction'],
