@@ -24,7 +24,7 @@ import type { FlatDrawing } from './flat-drawing.ts';
 import { flattened } from './flat-drawing.ts';
 import { labelMeasure } from './label-measure.ts';
 import type { PicturePoint } from './picture-controls.ts';
-import { attachControls } from './picture-controls.ts';
+import { attachControls, steeringWords } from './picture-controls.ts';
 import type { PictureCommand } from './picture-keys.ts';
 import { isSameAtom } from './picture-marks.ts';
 import { PictureMotion } from './picture-motion.ts';
@@ -108,7 +108,7 @@ export class CrystalPicture {
     this.#detach = attachControls(surface, {
       camera: () => this.#motion.goal ?? this.#camera,
       viewport: () => this.#viewport,
-      move: (camera, how) => this.#steer(camera, how === 'turned' ? 'turn the crystal' : 'move the picture'),
+      move: (camera, how) => this.#steer(camera, steeringWords[how]),
       click: (point, adds) => events.clicked(at(point), adds),
       doubleClick: (point) => {
         if (at(point)?.kind === 'atom') events.activated();
@@ -219,13 +219,13 @@ export class CrystalPicture {
     if (!camera || !this.#scene) return false;
     switch (command.do) {
       case 'turn':
-        this.#steer(turnAbout(camera, command.axis, command.angleRad), 'turn the crystal');
+        this.#steer(turnAbout(camera, command.axis, command.angleRad), steeringWords.turned);
         return true;
       case 'pan':
-        this.#steer(pan(camera, command.dxPx, command.dyPx, this.#viewport), 'move the picture');
+        this.#steer(pan(camera, command.dxPx, command.dyPx, this.#viewport), steeringWords.moved);
         return true;
       case 'zoom':
-        this.#steer(zoom(camera, command.factor, this.#viewport), 'move the picture');
+        this.#steer(zoom(camera, command.factor, this.#viewport), steeringWords.zoomed);
         return true;
       case 'first':
         this.#glide(this.#first(), 'first view');

@@ -172,12 +172,12 @@ export const viewStyles = css`
     cursor: crosshair;
   }
   .pointed {
-    font-size: 12.5px;
+    font-size: 12px;
     width: max-content;
     background: color-mix(in srgb, var(--paper) 92%, transparent);
     border: 1px solid var(--hairline);
     border-radius: 4px;
-    padding: 2px 7px;
+    padding: 1px 6px;
     z-index: 1;
   }
   .said {
@@ -217,14 +217,21 @@ export const viewStyles = css`
     background: var(--raised);
     color: var(--ink);
   }
-  @container (max-width: 619px) {
+  @media (max-width: 899px) {
     .panel {
-      position: absolute;
-      z-index: 3;
-      right: 4px;
-      top: 0;
-      width: min(320px, 100% - 12px);
-      max-height: 100%;
+      max-height: 64vh;
+      max-height: 64svh;
+    }
+  }
+  /* a sheet below the picture, which stays in view */
+  @container (max-width: 619px) {
+    .middle {
+      flex-direction: column;
+    }
+    .panel {
+      width: auto;
+      max-height: 38vh;
+      max-height: 38svh;
     }
   }
   .panel-head {
