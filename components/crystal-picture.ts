@@ -14,9 +14,11 @@ import { defaultLook } from '#src/scene/look.ts';
 import type { MeasureDrawing } from '#src/scene/measure-drawing.ts';
 import type { MeasuredAtom } from '#src/scene/measurement.ts';
 import type { MeasureText, PlacedLabel } from '#src/scene/place-labels.ts';
+import type { CornerAxes } from '#src/scene/axes-corner.ts';
+import { cornerAxes } from '#src/scene/axes-corner.ts';
 import { placeLabels } from '#src/scene/place-labels.ts';
 import type { ProjectedAtom } from '#src/scene/project.ts';
-import { projectAtoms, projectAxes } from '#src/scene/project.ts';
+import { projectAtoms } from '#src/scene/project.ts';
 import type { PickEntry, Scene } from '#src/scene/scene.ts';
 import { atomsInReadingOrder } from '#src/scene/screen-atoms.ts';
 import { zoomTo } from '#src/scene/zoom-to.ts';
@@ -31,7 +33,7 @@ import { PictureMotion } from './picture-motion.ts';
 
 /** What stands over the canvas for the present camera. */
 export interface PictureOverlay {
-  readonly axes: ReturnType<typeof projectAxes>;
+  readonly axes: CornerAxes | null;
   readonly labels: readonly PlacedLabel[];
   readonly rings: readonly ProjectedAtom[];
 }
@@ -52,8 +54,6 @@ export interface PictureEvents {
   readonly lost: (isLost: boolean) => void;
 }
 
-/** Length of the axes drawing, CSS pixels. */
-const axesPx = 34;
 /** Rings drawn at most round the atoms of a hovered site. */
 const ringsShown = 400;
 /** Width of outlines where they are asked for, CSS pixels. */
@@ -77,6 +77,7 @@ export class CrystalPicture {
   #viewport: Viewport = { widthPx: 0, heightPx: 0 };
   #ringed: ReadonlySet<string> = new Set();
   #labels: readonly PlacedLabel[] = [];
+  #axes: CornerAxes | null = null;
   #movedAt = 0;
   #measure: MeasureText | null = null;
 
@@ -264,14 +265,14 @@ export class CrystalPicture {
   }
 
   overlay(): PictureOverlay {
-    if (!this.#scene || !this.#camera) return { axes: [], labels: [], rings: [] };
+    if (!this.#scene || !this.#camera) return { axes: null, labels: [], rings: [] };
     const [scene, camera, viewport] = [this.#scene, this.#camera, this.#viewport];
     const waits = scene.labels.length > labelsWhileMoving && performance.now() - this.#movedAt < restMs;
-    this.#labels = waits
-      ? []
-      : placeLabels(scene, camera, viewport, (this.#measure ??= labelMeasure(this.#canvas)), this.#labels);
+    const axes = (this.#axes = cornerAxes(scene, camera, viewport, this.#axes?.corner));
+    const measure = (this.#measure ??= labelMeasure(this.#canvas));
+    this.#labels = waits ? [] : placeLabels(scene, camera, viewport, measure, this.#labels, axes?.keptOff);
     return {
-      axes: projectAxes(scene, camera, axesPx),
+      axes,
       labels: this.#labels,
       rings: this.#ringed.size > 0 ? projectAtoms(scene, camera, viewport, this.#ringed) : [],
     };

@@ -1,5 +1,6 @@
 import { html, nothing, svg } from 'lit';
 import type { TemplateResult } from 'lit';
+import { axesEdgePx, axesSquarePx } from '#src/scene/axes-corner.ts';
 import type { PickEntry } from '#src/scene/scene.ts';
 import type { Store } from '#src/store/store.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
@@ -45,37 +46,21 @@ export function labelsDrawing({ labels }: PictureOverlay): TemplateResult | type
   )}`;
 }
 
-/** Cell axes in the corner: lines with letters, the farther ones drawn first. */
+/** Cell axes in a corner on a plate of paper: lines with letters, the farther ones drawn first. */
 export function axesDrawing({ axes }: PictureOverlay): TemplateResult | typeof nothing {
-  if (axes.length === 0) return nothing;
-  const ordered = [...axes].sort((a, b) => a.depthPx - b.depthPx);
-  const places = letterPlaces(ordered);
-  return html`<svg class="axes" viewBox="-50 -50 100 100" aria-hidden="true">
-    ${ordered.map(({ xPx, yPx }) => svg`<line class="under" x1="0" y1="0" x2=${xPx} y2=${yPx}></line>`)}
-    ${ordered.map(({ xPx, yPx }) => svg`<line x1="0" y1="0" x2=${xPx} y2=${yPx}></line>`)}
-    ${ordered.map(({ letter }, i) => svg`<text x=${places[i]!.xPx} y=${places[i]!.yPx}>${letter}</text>`)}
+  if (!axes) return nothing;
+  const { leftPx, topPx, widthPx, heightPx } = axes.plate;
+  const half = axesSquarePx / 2;
+  return html`<svg
+    class="axes"
+    viewBox="${-half} ${-half} ${axesSquarePx} ${axesSquarePx}"
+    aria-hidden="true"
+    .style=${`width: ${axesSquarePx}px; left: ${axesEdgePx}px; ${axes.corner === 'upper left' ? 'top' : 'bottom'}: ${axesEdgePx}px`}
+  >
+    <rect x=${leftPx} y=${topPx} width=${widthPx} height=${heightPx} rx="6"></rect>
+    ${axes.axes.map(({ xPx, yPx }) => svg`<line x1="0" y1="0" x2=${xPx} y2=${yPx}></line>`)}
+    ${axes.letters.map(({ letter, xPx, yPx }) => svg`<text x=${xPx} y=${yPx}>${letter}</text>`)}
   </svg>`;
-}
-
-/** Distance letters of the axes keep from each other, in the unit of the drawing. */
-const letterApart = 11;
-
-/** Letters beyond the ends of their axes; one that would stand on a nearer axis' letter moves aside. */
-function letterPlaces(axes: PictureOverlay['axes']): PicturePoint[] {
-  const places: PicturePoint[] = [];
-  // the nearest axis has the first choice
-  for (const { xPx, yPx } of [...axes].reverse()) {
-    const size = Math.hypot(xPx, yPx);
-    const angle = size < 4 ? -Math.PI / 4 : Math.atan2(yPx, xPx);
-    const tries = [0, 0.7, -0.7, 1.4, -1.4, 2.4, -2.4].map((aside) => ({
-      xPx: (size < 4 ? 0 : xPx) + 10 * Math.cos(angle + aside),
-      yPx: (size < 4 ? 0 : yPx) + 10 * Math.sin(angle + aside),
-    }));
-    const isFree = (at: PicturePoint): boolean =>
-      places.every((other) => Math.hypot(at.xPx - other.xPx, at.yPx - other.yPx) >= letterApart);
-    places.push(tries.find(isFree) ?? tries[0]!);
-  }
-  return places.reverse();
 }
 
 /** Kept measurements: thin lines and arcs with their values. */

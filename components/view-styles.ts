@@ -113,20 +113,17 @@ export const viewStyles = css`
     opacity: 0.75;
   }
   svg.axes {
-    left: 4px;
-    bottom: 4px;
-    width: 100px;
-    height: 100px;
+    aspect-ratio: 1;
     overflow: visible;
+  }
+  svg.axes rect {
+    fill: var(--paper);
+    opacity: 0.85;
   }
   svg.axes line {
     stroke: var(--ink);
     stroke-width: 1.2;
-  }
-  svg.axes .under {
-    stroke: var(--paper);
-    stroke-width: 5;
-    opacity: 0.8;
+    stroke-linecap: round;
   }
   svg.axes text {
     fill: var(--ink);
@@ -134,9 +131,6 @@ export const viewStyles = css`
     font-style: italic;
     text-anchor: middle;
     dominant-baseline: central;
-    paint-order: stroke;
-    stroke: var(--paper);
-    stroke-width: 3px;
   }
   .label,
   .value,
