@@ -29,6 +29,9 @@ const gapEm = 1.1;
 const noteEm = 9.2;
 const columnEm = 15.5;
 
+/** A crystal lower than this is a smear. Our own choice. */
+const leastCrystalEm = 3;
+
 /** Height over width that a figure takes by itself. */
 const heightShare = { least: 0.35, most: 1.25 } as const;
 
@@ -41,12 +44,13 @@ export function layoutFigure(scene: Scene, request: FigureRequest): Sheet {
   const heightPt = request.heightPt ?? naturalHeight(scene, request, orientation);
   const below = arranged(scene, request, heightPt, 'below');
   const beside = request.heightPt === null ? below : arranged(scene, request, heightPt, 'beside');
-  const chosen = scaleOf(beside) > scaleOf(below) ? beside : below;
+  const chosen = betterOf(beside, below, heightPt);
   const labels = labelItems(scene, request, chosen.crystal);
   return {
     widthPt: request.widthPt,
     heightPt,
     crystal: chosen.crystal,
+    leastHeightPt: Math.min(below.leastHeightPt, beside.leastHeightPt),
     items: [...labels.items, ...chosen.items],
     labelsLeftOut: labels.leftOut,
   };
@@ -54,11 +58,20 @@ export function layoutFigure(scene: Scene, request: FigureRequest): Sheet {
 
 interface Arrangement {
   readonly crystal: CrystalPlace;
+  /** Of a sheet that holds all of it. */
+  readonly leastHeightPt: number;
   readonly items: readonly SheetItem[];
 }
 
+/** The one that holds everything; of two such the one with the larger crystal. */
+function betterOf(beside: Arrangement, below: Arrangement, heightPt: number): Arrangement {
+  const [hasBeside, hasBelow] = [beside, below].map(({ leastHeightPt }) => leastHeightPt <= heightPt);
+  if (hasBeside !== hasBelow) return hasBeside ? beside : below;
+  return scaleOf(beside) > scaleOf(below) ? beside : below;
+}
+
 /** Points for one Å. */
-function scaleOf({ crystal }: Arrangement): number {
+function scaleOf({ crystal }: Pick<Arrangement, 'crystal'>): number {
   return pixelsPerAngstrom(crystal.camera, crystal.viewport) * crystal.pointsPerCssPx;
 }
 
@@ -91,13 +104,18 @@ function arranged(
   };
   const crystal = crystalIn(scene, request, kind === 'beside' ? centred(scene, request, place) : place);
   // The ruler's length is known only now; the room for it was reserved.
-  const final = blocksFor(scene, request, kind, scaleOf({ crystal, items: [] }));
+  const final = blocksFor(scene, request, kind, scaleOf({ crystal }));
   const items =
     kind === 'below'
       ? flowed(final, widthPt - 2 * margin, textPt).itemsAt(margin, crystal.yPt + crystal.heightPt)
       : beside(final, textPt, crystal, bottom);
+  const rest = top + heightPt - bottom;
   return {
     crystal,
+    leastHeightPt:
+      kind === 'below'
+        ? rest + taken + leastCrystalEm * textPt
+        : rest + Math.max(leastCrystalEm * textPt, strip.heightPt + 2 * margin),
     items: [...(head?.itemsAt(margin, margin) ?? []), ...items, ...(foot?.itemsAt(margin, bottom) ?? [])],
   };
 }

@@ -67,6 +67,8 @@ export interface Sheet {
   readonly heightPt: number;
   readonly crystal: CrystalPlace;
   readonly items: readonly SheetItem[];
+  /** The least height at which everything beside the crystal is inside the sheet, and the crystal can be made out. */
+  readonly leastHeightPt: number;
   /** Labels of the crystal that found no room. */
   readonly labelsLeftOut: number;
 }

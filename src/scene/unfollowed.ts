@@ -57,11 +57,10 @@ function tensorWishes(asked: SceneOptions, { choice, scale }: DrawnInstead): str
 function sizeMissed({ quantity, glyph, kind }: TensorScale): string {
   if (quantity === 'efg' && kind === 'total')
     return 'A field gradient has no isotropic value to take off: principal values are drawn as they are.';
-  const what =
-    glyph === undefined || glyph === 'ellipsoid'
-      ? 'totals that are not positive have no ellipsoid'
-      : 'these glyphs show';
-  return `Sizes are ${kindNames[kind]}: ${what}.`;
+  if (quantity === 'efg')
+    return 'Sizes are principal values about a base radius: totals that are not positive have no ellipsoid.';
+  const isEllipsoid = glyph === undefined || glyph === 'ellipsoid';
+  return `Sizes are ${kindNames[kind]}${isEllipsoid ? ': totals that are not positive have no ellipsoid' : ''}.`;
 }
 
 /** Nothing is drawn of tensors that were asked for. */

@@ -29,15 +29,15 @@ describe('ellipsite figure', () => {
       '--width-mm',
       '40',
       '--height-mm',
-      '30',
+      '60',
       '--dpi',
       '150',
     );
     expect(status).toBe(0);
     expect(out).toBe('');
     const png = decodePng(written['q.png']!);
-    // 40 / 25.4 × 150 = 236.2; 30 / 25.4 × 150 = 177.2
-    expect([png.width, png.height]).toEqual([236, 177]);
+    // 40 / 25.4 × 150 = 236.2; 60 / 25.4 × 150 = 354.3
+    expect([png.width, png.height]).toEqual([236, 354]);
     const physical = png.chunks.find(({ type }) => type === 'pHYs')!.data;
     // 150 / 0.0254 = 5905.5
     expect(new DataView(physical.buffer, physical.byteOffset).getUint32(0)).toBe(5906);
@@ -49,6 +49,24 @@ describe('ellipsite figure', () => {
     expect(paper.chunks.some(({ type }) => type === 'pHYs')).toBe(false);
     const clear = await figure('quartz.xyz', '-o', 'q.png', '--transparent', ...small);
     expect(decodePng(clear.written['q.png']!).colourType).toBe(6);
+  });
+
+  it('refuses a height that would cut the legend off, with the least one', async () => {
+    const low = await figure('quartz.xyz', '-o', 'q.png', '--width-mm', '83', '--height-mm', '20');
+    expect(low.status).toBe(2);
+    expect(low.written).toEqual({});
+    const least = /the least is --height-mm (\d+)/.exec(low.error)![1]!;
+    const high = await figure('quartz.xyz', '-o', 'q.png', '--width-mm', '83', '--height-mm', least);
+    expect(high.status).toBe(0);
+  });
+
+  it('says wishes that it could not follow, with what is drawn instead', async () => {
+    const { status, error } = await figure(
+      ...['quartz.xyz', '-o', 'q.png', '--colour-by', 'difference', '--displacement', 'instead'],
+    );
+    expect(status).toBe(0);
+    expect(error).toMatch(/warning figure-wish-unfollowed There is no difference/);
+    expect(error).toMatch(/warning figure-wish-unfollowed The file gives no displacements/);
   });
 
   it('writes to standard output with -o -', async () => {

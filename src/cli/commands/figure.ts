@@ -5,7 +5,7 @@ import { serialiseCase } from '#src/case/serialise-case.ts';
 import { figurePng } from '#src/figure/figure-png.ts';
 import type { FigureRequest, FigureView } from '#src/figure/figure-request.ts';
 import type { FigureSize } from '#src/figure/figure-size.ts';
-import { pixelSize, settleSize, sizeFault } from '#src/figure/figure-size.ts';
+import { pixelSize, pointsPerMm, settleSize, sizeFault } from '#src/figure/figure-size.ts';
 import { layoutFigure } from '#src/figure/layout.ts';
 import type { Sheet } from '#src/figure/sheet.ts';
 import { createRasterizer } from '#src/raster/rasterizer.ts';
@@ -72,6 +72,7 @@ export async function figureCommand(argv: readonly string[], io: CommandIo): Pro
   };
   const sheet = layoutFigure(scene, request);
   const pixels = sizeWithin(sheet, size);
+  if (size.heightPt !== null) demandHeight(sheet, size, textOf(own, 'height-mm') !== undefined);
   const caseText = own['no-case'] === true ? null : await caseTextOf(loaded, options, request, sheet);
   const png = await figurePng(
     { scene, request, sheet, pxPerPt: size.pxPerPt },
@@ -105,6 +106,18 @@ function sizeWithin(sheet: Sheet, { pxPerPt }: FigureSize): { widthPx: number; h
   const fault = sizeFault(pixels.widthPx, pixels.heightPx);
   if (fault !== null) throw new UsageError(fault);
   return pixels;
+}
+
+/** A picture that would cut its legend off is not written. */
+function demandHeight({ heightPt, leastHeightPt }: Sheet, { pxPerPt }: FigureSize, isMm: boolean): void {
+  // half a pixel is lost in rounding
+  if (leastHeightPt <= heightPt + 0.5 / pxPerPt) return;
+  const least = isMm
+    ? `--height-mm ${Math.ceil(leastHeightPt / pointsPerMm)}`
+    : `--height-px ${Math.ceil(leastHeightPt * pxPerPt)}`;
+  throw new UsageError(
+    `The picture is too low for what stands beside the crystal; the least is ${least}, less with a smaller --text-pt or without parts (--no-legend, --no-scale, --no-key, --no-axes).`,
+  );
 }
 
 /** The direction asked for; else the camera of the case file, all of the crystal; else the first view. */

@@ -147,6 +147,18 @@ describe('a figure laid out', () => {
       expect(yPt).toBeGreaterThan(high.crystal.yPt + high.crystal.heightPt);
   });
 
+  it('says the least height, at which all texts are inside, and puts them inside from there on', () => {
+    const { leastHeightPt } = layoutFigure(plain, { ...request, heightPt: 57 });
+    // 20 mm are 57 pt: bar, limits and scale would be cut off
+    expect(leastHeightPt).toBeGreaterThan(57);
+    const sheet = layoutFigure(plain, { ...request, heightPt: leastHeightPt });
+    for (const { top, bottom } of textsOf(sheet).map(boxOf)) {
+      expect(top).toBeGreaterThanOrEqual(0);
+      expect(bottom).toBeLessThanOrEqual(leastHeightPt);
+    }
+    expect(sheet.leastHeightPt).toBeCloseTo(leastHeightPt, 9);
+  });
+
   it('is the same each time', () => {
     expect(layoutFigure(labelled, request)).toEqual(layoutFigure(labelled, request));
   });
