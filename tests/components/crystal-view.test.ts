@@ -54,7 +54,7 @@ describe('the crystal on screen', () => {
   it('says what it shows: caption, colour bar with quantity, unit and limits, scale, axes', async () => {
     const root = await drawnPage();
     expect(textOf(root.querySelector('#caption'))).toMatch(/shielding/i);
-    expect(textOf(root.querySelector('.legend'))).toMatch(/shielding.*ppm.*radius: 1 Å = /);
+    expect(textOf(root.querySelector('.legend'))).toMatch(/shielding.*ppm.*semi-axes = .*1 Å = /);
     expect([...root.querySelectorAll('svg.axes text')].map(textOf).sort()).toEqual(['a', 'b', 'c']);
   });
 
