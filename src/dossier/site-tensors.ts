@@ -204,25 +204,31 @@ function reportUndefined(
   }
 }
 
-/** A residual above this share of the anisotropy speaks of a wrong frame or a wrong atom rather than of noise. */
+/** A residual or spread above this share of the anisotropy speaks of a wrong frame or a wrong atom rather than of noise. */
 const doubtfulShare = 0.1;
 
 function reportResidual(site: Site, quantity: Quantity, evidence: Evidence, log: ProblemLog): void {
   const scale = Math.max(evidence.anisotropicNorm, leastScale[quantity]);
-  const largest = Math.max(evidence.symmetryResidual, evidence.equivalentSpread ?? 0);
-  if (largest <= doubtfulShare * scale) return;
+  const spread = evidence.equivalentSpread ?? 0;
   const name = quantity === 'efg' ? 'EFG' : quantity;
-  const share = `${Math.round((100 * largest) / scale)} % of its anisotropy`;
-  log.add(
-    'warning',
-    'symmetry-broken',
-    `The ${name} tensor of ${site.label} breaks the site's symmetry by ${share}.`,
-    {
-      place: evidence.source,
-      allowed: `at most ${doubtfulShare * 100} %`,
-      hint: 'A wrong Cartesian frame or a wrong atom does this; a calculation alone rarely does.',
-    },
-  );
+  const share = (size: number): string => `${Math.round((100 * size) / scale)} % of its anisotropy`;
+  const findings: string[] = [];
+  if (evidence.symmetryResidual > doubtfulShare * scale) {
+    findings.push(
+      `The ${name} tensor of ${site.label} breaks the site's symmetry by ${share(evidence.symmetryResidual)}.`,
+    );
+  }
+  if (spread > doubtfulShare * scale) {
+    findings.push(
+      `The ${name} tensors of the atoms equivalent to ${site.label}, turned onto it, differ from their mean by ${share(spread)}.`,
+    );
+  }
+  if (findings.length === 0) return;
+  log.add('warning', 'symmetry-broken', findings.join(' '), {
+    place: evidence.source,
+    allowed: `at most ${doubtfulShare * 100} %`,
+    hint: 'A wrong Cartesian frame or a wrong atom does this; a calculation alone rarely does.',
+  });
 }
 
 /**

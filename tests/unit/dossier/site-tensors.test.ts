@@ -26,8 +26,21 @@ describe('tensors of a site', () => {
   it('says so when a tensor breaks its site symmetry grossly', () => {
     const dossier = dossierOfText('salt.xyz', rockSalt(20));
     expect(dossier.problems.filter(({ code }) => code === 'symmetry-broken')).toMatchObject([
-      { severity: 'warning', line: 3 },
+      { severity: 'warning', line: 3, message: expect.stringContaining("breaks the site's symmetry") },
     ]);
+  });
+
+  it('names the equivalents where they disagree and each tensor obeys its site', () => {
+    const isotropic = (size: number): string => `${size} 0 0 0 ${size} 0 0 0 ${size}`;
+    const text = rockSalt(0).replace(`Na 0 0 0 ${isotropic(500)}`, `Na 0 0 0 ${isotropic(560)}`);
+    const { sites, problems } = dossierOfText('salt.xyz', text);
+    expect(sites[0]!.shielding!.symmetryResidual).toBeCloseTo(0, 9);
+    const [found, ...more] = problems.filter(({ code }) => code === 'symmetry-broken');
+    expect(more).toEqual([]);
+    expect(found!.message).toMatch(
+      /^The shielding tensors of the atoms equivalent to \S+, turned onto it, differ from their mean by/,
+    );
+    expect(found!.hint).toContain('wrong Cartesian frame');
   });
 
   it('gives one note a reason, naming the fields', () => {
