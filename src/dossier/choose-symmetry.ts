@@ -54,6 +54,21 @@ const noSymmetry: CrystalSymmetry = {
   stated: true,
 };
 
+/**
+ * True where the file names a group that could not be understood. The rows are then the part of the cell that this group
+ * repeats, and a search over them would find the symmetry of a crystal that does not exist.
+ */
+function namesUnknownGroup({ stated, hermannMauguin, hall }: CrystalSymmetry): boolean {
+  return !stated && (hermannMauguin !== null || hall !== null);
+}
+
+/** The rows as they stand; under a group that could not be understood, as sites of P 1. */
+function unsearched(crystal: Crystal, settings: DossierSettings, log: ProblemLog): ChosenCrystal {
+  const { symmetry } = crystal;
+  if (!namesUnknownGroup(symmetry)) return asListed(crystal, settings, log);
+  return asListed({ ...crystal, symmetry: { ...noSymmetry, reason: symmetry.reason } }, settings, log);
+}
+
 /** Every atom of the cell as a site of its own; labels of images get the running number of the image. */
 function expanded(listed: ChosenCrystal, lattice: Lattice): Site[] {
   return listed.sites
@@ -201,7 +216,7 @@ function searched(
 
 /**
  * Puts a crystal under the symmetry the settings ask for: the file's, the one found from its atoms, or none.
- * `auto` takes the file's where it states one. Raises `symmetry-found`, `symmetry-not-found`, `symmetry-search-too-large`,
+ * `auto` takes the file's where it states one, P 1 where it names one that is not known, else searches. Raises `symmetry-found`, `symmetry-not-found`, `symmetry-search-too-large`,
  * `supercell-breaks-symmetry`.
  */
 export function chooseSymmetry(
@@ -214,8 +229,9 @@ export function chooseSymmetry(
   const wish = settings.symmetry;
   if (!lattice) return asListed(crystal, settings, log);
   if (wish === 'none') return withoutSymmetry(crystal, lattice, settings, log);
-  const search = wish === 'find' || (wish === 'auto' && !crystal.symmetry.stated);
-  if (!search) return asListed(crystal, settings, log);
+  const { symmetry } = crystal;
+  const search = wish === 'find' || (wish === 'auto' && !symmetry.stated && !namesUnknownGroup(symmetry));
+  if (!search) return unsearched(crystal, settings, log);
   const kinds = speciesNumbers(crystal.sites);
   if (isTooLargeToSearch(crystal, lattice, settings, kinds, log)) return asListed(crystal, settings, log);
   const result = tables && searched(crystal, lattice, tables, settings, log);

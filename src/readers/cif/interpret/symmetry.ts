@@ -239,18 +239,18 @@ function none(view: BlockView, names: GroupNames, log: ProblemLog): CrystalSymme
       {
         place: placeOfBlock(view),
         allowed: '_space_group_symop_operation_xyz, or a Hall or Hermann–Mauguin symbol',
-        hint: 'Let the symmetry be searched, or add the operations to the file.',
+        hint: 'Add the operations to the file.',
       },
     );
   } else {
     log.add(
       'error',
       'cif-symmetry-not-understood',
-      `No operations are listed and the space group “${named}” is not known; only the listed atoms are.`,
+      `No operations are listed and the space group “${named}” is not known: the listed atoms are kept as sites of their own (P 1).`,
       {
         place: placeOfBlock(view),
         got: named,
-        hint: 'Add the operations to the file, or let the symmetry be searched.',
+        hint: 'Add the operations to the file; let the symmetry be searched only if all atoms of the cell are listed.',
       },
     );
   }
