@@ -39,8 +39,8 @@ const largestCoordinate = 1e6;
 /**
  * Rows of the atom list. Left out, each with a problem: rows with a coordinate `?` or `.` (`cif-missing-coordinates`) or one
  * that is no number (`cif-bad-number`), points that are no atoms (`cif-dummy-atoms`), further models (`cif-several-models`).
- * Numbers with a repair are reported (`cif-odd-number`); a missing occupancy is 1, one outside 0 to 1 is taken as given
- * (`cif-occupancy`). null where the block has no atom list.
+ * Numbers with a repair are reported (`cif-odd-number`); a missing occupancy is 1; one above 1 is taken as given with a
+ * warning, a negative one as 1 with an error (`cif-occupancy`). null where the block has no atom list.
  */
 export function readSiteRows(view: BlockView, known: ReadonlySet<string>, log: ProblemLog): SiteRows | null {
   const table = atomTable(view, log);
@@ -206,6 +206,9 @@ function position(
   return numbers;
 }
 
+/** Occupancies are printed to three digits: so far outside 0 to 1 is rounding. */
+const occupancyRounding = 0.0005;
+
 function readOccupancy(
   view: BlockView,
   column: CategoryColumn | null,
@@ -232,14 +235,19 @@ function readOccupancy(
     );
     return 1;
   }
-  if (read.value < 0 || read.value > 1.0005) {
+  if (read.value < -occupancyRounding) {
+    const message = `The occupancy of ${label} is ${text}, below nothing; taken as 1.`;
+    log.add('error', 'cif-occupancy', message, { place, got: text, allowed });
+    return 1;
+  }
+  if (read.value > 1 + occupancyRounding) {
     log.add('warning', 'cif-occupancy', `The occupancy of ${label} is ${text}; taken as given.`, {
       place,
       got: text,
       allowed,
     });
   }
-  return read.value;
+  return Math.max(0, read.value);
 }
 
 function placeOfRow(view: BlockView, table: CategoryTable, row: number): Place {

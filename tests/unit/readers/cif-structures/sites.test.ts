@@ -211,7 +211,7 @@ describe('rows', () => {
     expect(codes(reading, true)).toContain('cif-repeated-labels');
   });
 
-  it('take a missing occupancy as 1 and an impossible one as given', () => {
+  it('take a missing occupancy as 1, one above 1 as given, and a negative one as 1 with an error', () => {
     const reading = block(
       box,
       inversion,
@@ -223,10 +223,12 @@ describe('rows', () => {
         'C4 .1 .2 .4 1.2',
         'C5 .1 .2 .45 -.1',
         'C6 .1 .3 .2 x',
+        'C7 .3 .3 .2 -.0003',
       ),
     );
-    expect(only(reading).sites.map(({ occupancy }) => occupancy)).toEqual([1, 1, 0.5, 1.2, -0.1, 1]);
+    expect(only(reading).sites.map(({ occupancy }) => occupancy)).toEqual([1, 1, 0.5, 1.2, 1, 1, 0]);
     expect(codes(reading)).toEqual(['cif-occupancy', 'cif-occupancy', 'cif-occupancy']);
+    expect(reading.problems.filter(({ severity }) => severity === 'error')).toMatchObject([{ got: '-.1' }]);
   });
 
   it('keep disorder, flags and attached hydrogens', () => {
