@@ -55,10 +55,16 @@ function parseReference(text: string): Reference {
   return { kind: 'regression', interceptPpm, slope, isotope };
 }
 
+/** No ground state of a nuclide in the tables has a larger quadrupole moment, barn: more is a slip of the unit. */
+const largestMomentBarn = 10;
+
 function parseMoment(text: string): [string, number] {
   const [isotope = '', barn = ''] = text.split('=');
   knownNuclide(isotope, 'moment');
-  return [isotope, finite(barn, 'moment')];
+  const value = finite(barn, 'moment');
+  if (Math.abs(value) > largestMomentBarn)
+    throw new UsageError(`--moment ${text}: allowed are −${largestMomentBarn} to ${largestMomentBarn} barn.`);
+  return [isotope, value];
 }
 
 function parseSymmetry(text: string): DossierSettings['symmetry'] {

@@ -146,6 +146,8 @@ describe('ellipsite sites', () => {
     [['sites', 'q.cif', '--frame', 'sideways']],
     [['sites', 'q.cif', '--block', 'other']],
     [['sites', 'q.cif', '--colour']],
+    [['sites', 'q.cif', '--moment', '17O=1e9']],
+    [['sites', 'q.cif', '--moment', '17O=-10.1']],
     [['sites', '/no/such/file.cif']],
   ])('answers wrong usage %j with status 2 and a sentence', async (argv) => {
     const { status, out, error } = await runCommand(argv, { 'q.cif': quartzCif });
