@@ -279,8 +279,8 @@ function reportWhole(
         allowed: 'shielding:R:9, shift:R:9, efg:R:9',
         hint:
           proposal.quantity === 'unknown'
-            ? null
-            : `It may be ${proposal.quantity}; take it as such if it is.`,
+            ? 'If it is a tensor, rename the column in Properties to shielding:R:9, shift:R:9 or efg:R:9.'
+            : `It may be ${proposal.quantity}: if so, take it as such or rename it in Properties to ${proposal.quantity}:R:9.`,
       },
     );
   }

@@ -180,6 +180,9 @@ describe('proposals', () => {
     expect(tensorSets).toEqual([]);
     expect(proposals).toMatchObject([{ name, quantity, line: 2, structureIndex: 0 }]);
     expect(problems.map(({ code }) => code)).toEqual(['xyz-column-proposed']);
+    expect(problems[0]?.hint).toMatch(
+      quantity === 'unknown' ? /efg:R:9/ : new RegExp(`rename.*${quantity}:R:9`),
+    );
   });
 
   it('is taken by name, quantity and unit on request', () => {
