@@ -164,6 +164,15 @@ describe('ellipsite sites', () => {
     expect(error).not.toContain('whole cell');
   });
 
+  it('counts one atom and one operation as one', async () => {
+    const bare = await runCommand(['sites', 'o.xyz'], { 'o.xyz': '1\nan atom\nO 0 0 0\n' });
+    expect(bare.out).toContain('1 operation,');
+    expect(bare.out).toContain('\n1 atom in the molecule: O1\n');
+    const listed = quartzCif.replace("'P 32 2 1'", "'P 1'");
+    const { out } = await runCommand(['sites', 'p.cif'], { 'p.cif': listed });
+    expect(out).toMatch(/; 1 operation derived from/);
+  });
+
   it('prints the nuclide of a coupling that is not the row’s', async () => {
     const text =
       '1\nProperties=species:S:1:pos:R:3:shielding:R:9:efg:R:9\nN 0 0 0 1 0 0 0 2 0 0 0 6 -.1 0 0 0 -.2 0 0 0 .3\n';

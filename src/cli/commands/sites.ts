@@ -68,7 +68,8 @@ function efgColumns(): Column[] {
 }
 
 function operationsSentence({ symmetry }: CrystalDossier): string {
-  const count = `${symmetry.operations.length} operations`;
+  const { length } = symmetry.operations;
+  const count = length === 1 ? '1 operation' : `${length} operations`;
   return symmetry.reason.startsWith(count) ? symmetry.reason : `${count}, ${symmetry.reason}`;
 }
 
@@ -87,7 +88,7 @@ function heading(dossier: CrystalDossier): string {
     dossier.name,
     cell,
     `${dossier.spaceGroup}; ${operationsSentence(dossier)}`,
-    `${dossier.atomsInCell} atoms in the cell: ${composition}`,
+    `${dossier.atomsInCell} ${dossier.atomsInCell === 1 ? 'atom' : 'atoms'} in the ${lattice ? 'cell' : 'molecule'}: ${composition}`,
   ].join('\n');
 }
 

@@ -114,7 +114,10 @@ function checkWidth(context: RowContext, line: number, plan: ColumnPlan): void {
     allowed: `${plan.fields} fields`,
   };
   if (count < plan.fields) {
-    const message = `The row has ${count} of ${plan.fields} fields; what stands there was kept.`;
+    const fate = lacksCoordinates(plan, count)
+      ? 'without three coordinates it was left out'
+      : 'what stands there was kept';
+    const message = `The row has ${count} of ${plan.fields} fields; ${fate}.`;
     context.log.add('error', 'xyz-short-row', message, details);
     return;
   }
@@ -126,10 +129,17 @@ function checkWidth(context: RowContext, line: number, plan: ColumnPlan): void {
   );
 }
 
+/** True where a row of so many fields ends before its last coordinate. */
+function lacksCoordinates({ position }: ColumnPlan, count: number): boolean {
+  return position !== null && count < position.first + 3;
+}
+
 function readPosition(context: RowContext, line: number, column: Column): VecCart | null {
   const { source, fields, log } = context;
   const values: number[] = [];
   for (let i = 0; i < 3; i++) {
+    // The row has been reported as short.
+    if (column.first + i >= fields.count) return null;
     const text = fieldText(source.text, fields, column.first + i);
     const value = readReal(text);
     if (value === null) {

@@ -65,7 +65,7 @@ function fromLists(
     hermannMauguin: names.hermannMauguin ?? identified?.hermannMauguinShort ?? null,
     hall: names.hall ?? identified?.hall ?? null,
     source: 'file',
-    reason: `${operations.length} operations listed in ${chosen.name} from line ${chosen.place.line}`,
+    reason: `${countOfOperations(operations)} listed in ${chosen.name} from line ${chosen.place.line}`,
     stated: true,
   };
 }
@@ -90,7 +90,7 @@ function chooseList(
       `${lists[other]!.name} and ${chosen.name} list different operations; ${why}.`,
       {
         place: lists[other]!.place,
-        got: `${lists[other]!.operations.length} operations`,
+        got: countOfOperations(lists[other]!.operations),
         allowed: `the ${chosen.operations.length} operations of ${chosen.name}`,
       },
     );
@@ -145,7 +145,7 @@ function reportFlaws(
     `The operations of ${name} are no group: ${check.unbounded ? 'their products never end' : `${missing.length} of their products are not listed`}. The listed ones were kept.`,
     {
       place,
-      got: `${operations.length} operations`,
+      got: countOfOperations(operations),
       allowed: check.unbounded
         ? 'a list that holds all products of its members'
         : `also ${named}${missing.length > 8 ? ' …' : ''}`,
@@ -224,7 +224,7 @@ function symmetryOf(group: NamedGroup, names: GroupNames, other: SymbolReading |
     hermannMauguin: names.hermannMauguin ?? setting?.hermannMauguinShort ?? null,
     hall: names.hall ?? setting?.hall ?? null,
     source: 'symbol',
-    reason: `${operations.length} operations derived from ${how}`,
+    reason: `${countOfOperations(operations)} derived from ${how}`,
     stated: true,
   };
 }
@@ -289,6 +289,10 @@ function reportMetric(
       hint: 'A cell constant is mistyped, or the operations belong to another setting.',
     },
   );
+}
+
+function countOfOperations({ length }: readonly unknown[]): string {
+  return length === 1 ? '1 operation' : `${length} operations`;
 }
 
 function capital(text: string): string {

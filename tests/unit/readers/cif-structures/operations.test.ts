@@ -82,7 +82,7 @@ describe('operations listed in a loop', () => {
 
   it('names the item and line they came from', () => {
     expect(only(block(box, list(['x,y,z']), atom)).symmetry.reason).toBe(
-      '1 operations listed in _symmetry_equiv_pos_as_xyz from line 10',
+      '1 operation listed in _symmetry_equiv_pos_as_xyz from line 10',
     );
   });
 });

@@ -113,7 +113,11 @@ describe('rows', () => {
   });
 
   it('says that a plain row is short, and that unnamed columns were not read', () => {
-    expect(read('1\n\nO 0 0\n').problems[0]).toMatchObject({ code: 'xyz-short-row', got: '3 fields' });
+    const short = read('2\n\nO 0 0\nO 0 0 0\n');
+    expect(short.problems).toMatchObject([
+      { code: 'xyz-short-row', got: '3 fields', message: expect.stringContaining('left out') as string },
+    ]);
+    expect(short.structures[0]?.sites).toHaveLength(1);
     expect(read('1\n\nO 0 0 0 0.5 7\n').problems).toMatchObject([
       { code: 'xyz-extra-columns', severity: 'note', message: expect.stringContaining('2 fields') as string },
     ]);
