@@ -1,5 +1,5 @@
-import { apply } from '#src/base/matrix3.ts';
-import type { VecFrac } from '#src/base/matrix3.ts';
+import { apply, identity3 } from '#src/base/matrix3.ts';
+import type { Mat3, VecFrac } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { CrystalSymmetry } from '#src/crystal/crystal.ts';
 import { identifySettingIn, settingFromHermannMauguin } from '#src/crystal/space-group.ts';
@@ -14,6 +14,13 @@ export interface SymmetryDescription {
   readonly spaceGroup: string;
   readonly wyckoff: readonly (string | null)[];
   readonly siteSymmetry: readonly (string | null)[];
+}
+
+/** Translations of a cell with which letters are looked for at most: the time of it grows with their cube. */
+const describedRepetitionsLimit = 128;
+
+function sameRotation(a: Mat3, b: Mat3): boolean {
+  return a.every((value, k) => value === b[k]);
 }
 
 /**
@@ -51,8 +58,17 @@ export function describeSymmetry(
   const [cell, operations, positions] = smallCell
     ? [smallCell.lattice, smallCell.operations, given.map((at): VecFrac => apply(smallCell.repeat, at))]
     : [lattice, symmetry.operations, given];
-  const told = tables?.describeSites(cell, operations, positions, settings.mergeDistanceAngstrom) ?? null;
-  if (tables && !told && !found) {
+  const repeats = operations.filter(({ rotation }) => sameRotation(rotation, identity3)).length;
+  const isTooMuch = repeats > describedRepetitionsLimit;
+  if (isTooMuch) {
+    const message = `The operations repeat a smaller cell ${repeats} times: no Wyckoff letters were looked for.`;
+    const details = { got: `${repeats} translations`, allowed: `at most ${describedRepetitionsLimit}` };
+    log.add('warning', 'wyckoff-unknown', message, { ...details, place: crystal.place });
+  }
+  const told = isTooMuch
+    ? null
+    : (tables?.describeSites(cell, operations, positions, settings.mergeDistanceAngstrom) ?? null);
+  if (tables && !told && !found && !isTooMuch) {
     log.add(
       'note',
       'wyckoff-unknown',

@@ -15,6 +15,7 @@ import { checkComposition, readFormula } from './formula-check.ts';
 import { settleByElimination } from './element-by-elimination.ts';
 import { readGroupNames } from './group-names.ts';
 import { knownElements } from './known-elements.ts';
+import { withinCellLimit } from './cell-limit.ts';
 import { countAllImages } from './multiplicity.ts';
 import type { ListedOperations } from './operation-list.ts';
 import { listedOperations } from './operation-list.ts';
@@ -62,7 +63,8 @@ export function interpretBlock(
   checkVolume(view, frame.lattice.volume, log);
   const names = readGroupNames(view, cell, lists.length > 0 ? 'note' : 'warning', log);
   const choice = decideSymmetry(view, lists, names, cell, log);
-  const symmetry = chooseOrigin(view, choice, { sites, rows }, frame.lattice, formula, log);
+  const settledOrigin = chooseOrigin(view, choice, { sites, rows }, frame.lattice, formula, log);
+  const symmetry = withinCellLimit(view, settledOrigin, sites.length, log);
   const counts = countAllImages(sites, symmetry.operations, frame.lattice, progress);
   reportMultiplicities(rows, sites, counts, symmetry.operations.length, log);
   const multiplicities = counts.map(({ merged }) => merged);

@@ -36,8 +36,8 @@ export const operationListItems: readonly string[] = operationItems.flatMap(({ l
   centring === null ? [list] : [list, centring],
 );
 
-/** No group of a lattice in a conventional cell has more than 192 operations; supercells of it may list more. */
-const mostOperations = 20_000;
+/** No group of a conventional cell has more than 192 operations; this many are those of eight such cells. */
+const mostOperations = 1536;
 
 /**
  * All operation lists of a block that hold at least one operation, in order of preference. A string that is no operation
