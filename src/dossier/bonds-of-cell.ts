@@ -1,4 +1,4 @@
-import type { Vec3 } from '#src/base/matrix3.ts';
+import type { Vec3, VecCart } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import { findBonds } from '#src/crystal/bonds.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
@@ -11,6 +11,9 @@ import type { BondRecord } from './dossier.ts';
  * 0.02 to 0.3 atoms per Å³, so that 200,000 atoms of one stay below; a cell in the wrong unit does not.
  */
 const crowdingLimit = 60_000;
+
+/** Edge in Å of the cubes in which the atoms of a molecule are counted: some twenty atoms of a dense solid each. */
+const countingEdgeAngstrom = 4;
 
 /**
  * Bonds among all atoms of the cell by atom id, and the cell shifts that make finite molecules whole. None, with
@@ -26,7 +29,8 @@ export function bondsOf(
   const atoms = sites.flatMap(({ site, atoms: images, cellShifts }) =>
     images.map((atom, image) => ({ site, atom, cellShift: cellShifts[image] ?? ([0, 0, 0] as const) })),
   );
-  if (isTooCrowded(crystal, atoms.length, log)) return { bonds: [], wholeMolecules: {} };
+  const cartesians = atoms.map(({ atom }) => atom.cartesian);
+  if (isTooCrowded(crystal, cartesians, log)) return { bonds: [], wholeMolecules: {} };
   const found = findBonds(
     atoms.map(({ site, atom, cellShift }) => ({
       element: site.element,
@@ -56,18 +60,38 @@ export function bondsOf(
   return { bonds, wholeMolecules: Object.fromEntries(moved) };
 }
 
-function isTooCrowded({ lattice, place }: Crystal, atoms: number, log: ProblemLog): boolean {
-  if (!lattice || (atoms * atoms) / lattice.volume <= crowdingLimit) return false;
-  const density = Number((atoms / lattice.volume).toPrecision(3));
+/**
+ * Atoms per Å³ that an atom of a molecule has around it, on average: molecules have no volume, and that of the box around
+ * them would be made by a single atom far away.
+ */
+function densityAround(positions: readonly VecCart[]): number {
+  const counts = new Map<string, number>();
+  for (const position of positions) {
+    if (!position.every(Number.isFinite)) continue;
+    const key = position.map((x) => Math.floor(x / countingEdgeAngstrom)).join();
+    counts.set(key, (counts.get(key) ?? 0) + 1);
+  }
+  let squares = 0;
+  for (const count of counts.values()) squares += count * count;
+  return squares / Math.max(1, positions.length) / countingEdgeAngstrom ** 3;
+}
+
+function isTooCrowded({ lattice, place }: Crystal, positions: readonly VecCart[], log: ProblemLog): boolean {
+  const atoms = positions.length;
+  const perVolume = lattice ? atoms / lattice.volume : densityAround(positions);
+  if (atoms * perVolume <= crowdingLimit) return false;
+  const density = Number(perVolume.toPrecision(3));
   log.add(
     'warning',
     'cell-too-crowded',
-    `The cell holds ${atoms} atoms, ${density} per Å³: bonds were not looked for.`,
+    `The ${lattice ? 'cell holds' : 'molecule has'} ${atoms} atoms, ${density} per Å³: bonds were not looked for.`,
     {
       place,
       got: `${density} atoms per Å³`,
-      allowed: 'about 0.02 to 0.3 atoms per Å³ in crystals',
-      hint: 'The cell may be in another unit than Å, or operations or coordinates may be wrong.',
+      allowed: 'about 0.02 to 0.3 atoms per Å³ in crystals and molecules',
+      hint: lattice
+        ? 'The cell may be in another unit than Å, or operations or coordinates may be wrong.'
+        : 'The coordinates may be in another unit than Å, or be fractions of a cell that is missing.',
     },
   );
   return true;
