@@ -214,10 +214,21 @@ function searched(
   };
 }
 
+/** Says along which directions a cell does not repeat, and what that changes; nothing for a crystal. */
+function reportNotPeriodic({ periodic, place }: Crystal, log: ProblemLog): void {
+  const open = ['a', 'b', 'c'].filter((_, axis) => !periodic[axis]).join(', ');
+  log.add(
+    'warning',
+    'cell-not-periodic',
+    `The cell does not repeat along ${open}: its symmetry is not searched, and no bonds are made across it there. Atoms outside the cell are still moved into it, and pictures still repeat it.`,
+    { place, got: `not periodic along ${open}`, allowed: 'space groups need all three directions' },
+  );
+}
+
 /**
  * Puts a crystal under the symmetry the settings ask for: the file's, the one found from its atoms, or none.
  * `auto` takes the file's where it states one, P 1 where it names one that is not known, else searches. Raises `symmetry-found`, `symmetry-not-found`, `symmetry-search-too-large`,
- * `supercell-breaks-symmetry`.
+ * `supercell-breaks-symmetry`, `cell-not-periodic`.
  */
 export function chooseSymmetry(
   crystal: Crystal,
@@ -228,9 +239,12 @@ export function chooseSymmetry(
   const { lattice } = crystal;
   const wish = settings.symmetry;
   if (!lattice) return asListed(crystal, settings, log);
+  const isCrystal = crystal.periodic.every(Boolean);
+  if (!isCrystal) reportNotPeriodic(crystal, log);
   if (wish === 'none') return withoutSymmetry(crystal, lattice, settings, log);
   const { symmetry } = crystal;
   const search = wish === 'find' || (wish === 'auto' && !symmetry.stated && !namesUnknownGroup(symmetry));
+  if (!isCrystal) return asListed(crystal, settings, log);
   if (!search) return unsearched(crystal, settings, log);
   const kinds = speciesNumbers(crystal.sites);
   if (isTooLargeToSearch(crystal, lattice, settings, kinds, log)) return asListed(crystal, settings, log);
