@@ -1,3 +1,4 @@
+import { lettersOfAxes } from '#src/scene/axes-letters.ts';
 import { printed } from '#src/scene/printed.ts';
 import type { Camera } from '#src/scene/camera.ts';
 import { projectAxes } from '#src/scene/project.ts';
@@ -262,10 +263,18 @@ export function axesBlock(scene: Scene, camera: Camera, { textPt, theme }: Block
   const lengthPt = 2.6 * textPt;
   const axes = projectAxes(scene, camera, lengthPt).sort((one, other) => one.depthPx - other.depthPx);
   if (axes.length === 0) return null;
-  const letters = letterPlaces(axes, textPt);
+  const letters = lettersOfAxes(axes, textPt);
   const half = { x: 0.36 * textPt, y: 0.5 * textPt };
-  const xs = [0, ...axes.map(({ xPx }) => xPx), ...letters.flatMap(({ x }) => [x - half.x, x + half.x])];
-  const ys = [0, ...axes.map(({ yPx }) => yPx), ...letters.flatMap(({ y }) => [y - half.y, y + half.y])];
+  const xs = [
+    0,
+    ...axes.map(({ xPx }) => xPx),
+    ...letters.flatMap(({ xPx }) => [xPx - half.x, xPx + half.x]),
+  ];
+  const ys = [
+    0,
+    ...axes.map(({ yPx }) => yPx),
+    ...letters.flatMap(({ yPx }) => [yPx - half.y, yPx + half.y]),
+  ];
   const [left, top] = [Math.min(...xs), Math.min(...ys)];
   const widthPt = strokePt(textPt, 0.12);
   return {
@@ -282,30 +291,11 @@ export function axesBlock(scene: Scene, camera: Camera, { textPt, theme }: Block
         colour: theme.ink,
         ends: 'round',
       })),
-      ...letters.map(({ letter, x, y }): SheetItem => {
+      ...letters.map(({ letter, xPx: x, yPx: y }): SheetItem => {
         const runs: TextRun[] = [{ text: letter, style: 'italic' }];
         const own = setText(runs, textPt).widthPt;
         return textItem(runs, xPt - left + x - own / 2, yPt - top + y + 0.27 * textPt, textPt, theme.ink);
       }),
     ],
   };
-}
-
-/** Middles of the letters: beyond the ends of the axes; a foreshortened one's opposite to where the others go. */
-function letterPlaces(
-  axes: readonly { readonly letter: string; readonly xPx: number; readonly yPx: number }[],
-  textPt: number,
-): { letter: string; x: number; y: number }[] {
-  const gap = 0.75 * textPt;
-  return axes.map(({ letter, xPx, yPx }) => {
-    const size = Math.hypot(xPx, yPx);
-    if (size > 0.5 * textPt) return { letter, x: xPx * (1 + gap / size), y: yPx * (1 + gap / size) };
-    const others = axes.filter((other) => other.letter !== letter);
-    const away = [
-      -others.reduce((sum, other) => sum + other.xPx, 0),
-      -others.reduce((sum, other) => sum + other.yPx, 0),
-    ] as const;
-    const far = Math.hypot(...away) || 1;
-    return { letter, x: xPx + (gap * away[0]) / far, y: yPx + (gap * away[1]) / far };
-  });
 }
