@@ -1,6 +1,8 @@
 import { problem } from '#src/base/problem.ts';
 import type { Problem } from '#src/base/problem.ts';
 import type { Vec3 } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
+import { repeatsThroughout } from '#src/base/periodicity.ts';
 import type { Bond, BondAtom } from './bond-atom.ts';
 import { canMeet } from './bond-atom.ts';
 import type { BondingElement } from './bonding-rules.ts';
@@ -25,7 +27,7 @@ export type { Bond, BondAtom } from './bond-atom.ts';
 
 export interface BondOptions {
   /** Directions along which the lattice repeats; all three unless given. */
-  readonly periodic?: readonly [boolean, boolean, boolean];
+  readonly periodic?: Periodicity;
   /** Told when the search had to stop: code `bonds-incomplete`. */
   readonly report?: (found: Problem) => void;
 }
@@ -59,7 +61,7 @@ export function findBonds(
   lattice: Lattice | null,
   options: BondOptions = {},
 ): Bond[] {
-  const { periodic = [true, true, true], report = () => undefined } = options;
+  const { periodic = repeatsThroughout, report = () => undefined } = options;
   const known = new Map<string, BondingElement>();
   const elements = atoms.map(({ element }) => {
     const found = known.get(element) ?? bondingElement(element);
@@ -208,7 +210,7 @@ function firstShells(
   atoms: readonly BondAtom[],
   elements: readonly BondingElement[],
   lattice: Lattice | null,
-  periodic: readonly [boolean, boolean, boolean],
+  periodic: Periodicity,
 ): Contact[] {
   if (bare.length === 0) return [];
   const largest = bare.reduce((radius, { atom }) => Math.max(radius, elements[atom]!.radius), 0);

@@ -1,4 +1,5 @@
 import type { Mat3, VecCart, VecFrac } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
 import type { Place } from '#src/base/problem.ts';
 import type { Lattice } from './lattice.ts';
 import type { SymmetryOperation } from './symmetry-operation.ts';
@@ -68,7 +69,8 @@ export interface CrystalSymmetry {
 export interface Crystal {
   readonly name: string;
   readonly lattice: Lattice | null;
-  readonly periodic: readonly [boolean, boolean, boolean];
+  /** Along a, b, c; without a lattice none. */
+  readonly periodic: Periodicity;
   readonly symmetry: CrystalSymmetry;
   readonly sites: readonly Site[];
   /** Formula as given and the number of formula units in the cell. */

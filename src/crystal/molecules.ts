@@ -1,4 +1,6 @@
 import type { Vec3, VecFrac } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
+import { repeatsThroughout } from '#src/base/periodicity.ts';
 import type { Bond } from './bond-atom.ts';
 
 /** Which atoms hang together by bonds, and how to move them so that each molecule is in one piece. */
@@ -13,7 +15,7 @@ export interface Molecules {
 
 /**
  * Multiples of a, b, c to add to each atom so that every finite molecule is whole across the faces of the cell, its
- * first atom unmoved, or, where fractional positions are given, its centre in the cell. Chains, layers and frameworks
+ * first atom unmoved, or, where fractional positions are given, its centre in the cell along axes that repeat. Chains, layers and frameworks
  * (a closed walk along bonds ends in another cell) stay where they are. Hydrogen bonds do not count. Linear in atoms and bonds.
  *
  * `wholeMolecules(2, [{from: 0, to: 1, shift: [1, 0, 0], …}])` → [[0, 0, 0], [1, 0, 0]]
@@ -22,8 +24,9 @@ export function wholeMolecules(
   atomCount: number,
   bonds: readonly Bond[],
   positions?: readonly VecFrac[],
+  periodic: Periodicity = repeatsThroughout,
 ): Vec3[] {
-  return [...findMolecules(atomCount, bonds, positions).shifts];
+  return [...findMolecules(atomCount, bonds, positions, periodic).shifts];
 }
 
 /** Molecules with their members and shifts; see `wholeMolecules`. */
@@ -31,6 +34,7 @@ export function findMolecules(
   atomCount: number,
   bonds: readonly Bond[],
   positions?: readonly VecFrac[],
+  periodic: Periodicity = repeatsThroughout,
 ): Molecules {
   const links = linksOf(
     atomCount,
@@ -45,7 +49,7 @@ export function findMolecules(
     const isEndless = !closes(members, links, moved);
     endless.push(isEndless);
     if (isEndless) members.forEach((atom) => moved.fill(0, 3 * atom, 3 * atom + 3));
-    else if (positions) centre(members, positions, moved);
+    else if (positions) centre(members, positions, moved, periodic);
   }
   const shifts = Array.from({ length: atomCount }, (_, i): Vec3 => [
     moved[3 * i]!,
@@ -121,9 +125,15 @@ function closes(members: readonly number[], { starts, partner, shift }: Links, m
   return true;
 }
 
-/** Moves a whole molecule by lattice translations so that the mean of its positions is in [0, 1). */
-function centre(members: readonly number[], positions: readonly VecFrac[], moved: Int32Array): void {
+/** Moves a whole molecule by lattice translations so that the mean of its positions is in [0, 1) where the cell repeats. */
+function centre(
+  members: readonly number[],
+  positions: readonly VecFrac[],
+  moved: Int32Array,
+  periodic: Periodicity,
+): void {
   for (const axis of [0, 1, 2] as const) {
+    if (!periodic[axis]) continue;
     const sum = members.reduce((s, atom) => s + positions[atom]![axis] + moved[3 * atom + axis]!, 0);
     const turns = Math.floor(sum / members.length + 1e-9);
     for (const atom of members) moved[3 * atom + axis]! -= turns;

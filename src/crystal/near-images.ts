@@ -1,5 +1,7 @@
 import type { Vec3, VecFrac } from '#src/base/matrix3.ts';
 import { apply } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
+import { repeatsThroughout } from '#src/base/periodicity.ts';
 import { length } from '#src/base/vector3.ts';
 import type { Lattice } from './lattice.ts';
 
@@ -33,21 +35,25 @@ function shortestWithin(near: Vec3, reach: Vec3, lattice: Lattice, limitAngstrom
 /**
  * Makes a function that takes a fractional difference vector and gives its shortest lattice equivalent, or null where
  * none is within the limit (Å). Exact for cells of any skewness: a vector of length d passes at most d/spacing planes
- * along each axis, so all translations that can matter are looked at; mostly the first comparison answers.
+ * along each axis, so all translations that can matter are looked at; mostly the first comparison answers. Along axes that
+ * do not repeat nothing is translated.
  */
 export function nearOffsetFinder(
   lattice: Lattice,
   limitAngstrom: number,
+  periodic: Periodicity = repeatsThroughout,
 ): (difference: Vec3) => NearOffset | null {
-  const [sx, sy, sz] = planeSpacings(lattice);
-  const reachOf = (spacing: number): number => Math.floor(limitAngstrom / spacing + 0.5);
-  const reach: Vec3 = [reachOf(sx), reachOf(sy), reachOf(sz)];
+  const spacings = planeSpacings(lattice);
+  const [sx, sy, sz] = spacings;
+  const reachOf = (axis: 0 | 1 | 2): number =>
+    periodic[axis] ? Math.floor(limitAngstrom / spacings[axis] + 0.5) : 0;
+  const reach: Vec3 = [reachOf(0), reachOf(1), reachOf(2)];
   return ([dx, dy, dz]) => {
-    const x = dx - Math.round(dx);
+    const x = periodic[0] ? dx - Math.round(dx) : dx;
     if (Math.abs(x) * sx > limitAngstrom) return null;
-    const y = dy - Math.round(dy);
+    const y = periodic[1] ? dy - Math.round(dy) : dy;
     if (Math.abs(y) * sy > limitAngstrom) return null;
-    const z = dz - Math.round(dz);
+    const z = periodic[2] ? dz - Math.round(dz) : dz;
     if (Math.abs(z) * sz > limitAngstrom) return null;
     return shortestWithin([x, y, z], reach, lattice, limitAngstrom);
   };

@@ -1,5 +1,7 @@
 import type { Vec3, VecCart } from '#src/base/matrix3.ts';
 import { apply } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
+import { repeatsThroughout } from '#src/base/periodicity.ts';
 import type { BinGrid } from './bin-grid.ts';
 import { binAt, sortIntoBins } from './bin-grid.ts';
 import type { Lattice } from './lattice.ts';
@@ -24,7 +26,7 @@ export interface NeighbourPairs {
 
 export interface NeighbourOptions {
   /** Directions along which the lattice repeats; all three unless given. */
-  readonly periodic?: readonly [boolean, boolean, boolean];
+  readonly periodic?: Periodicity;
   /** The search stops after so many pairs (20 million unless given), which only heaps of atoms on one spot reach. */
   readonly maximumPairs?: number;
 }
@@ -44,7 +46,7 @@ export function findNeighbours(
   cutoffAngstrom: number,
   options: NeighbourOptions = {},
 ): NeighbourPairs {
-  const { periodic = [true, true, true], maximumPairs = 20_000_000 } = options;
+  const { periodic = repeatsThroughout, maximumPairs = 20_000_000 } = options;
   const basis = periodicBasis(lattice, periodic);
   const found = new PairCollector(maximumPairs, basis);
   if (!(cutoffAngstrom > 0 && cutoffAngstrom < Infinity)) return found.result(0);

@@ -1,4 +1,6 @@
 import type { Vec3, VecFrac } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
+import { repeatsThroughout } from '#src/base/periodicity.ts';
 import { add, scale, subtract } from '#src/base/vector3.ts';
 import type { GroupTable } from './group-table.ts';
 import { groupTable } from './group-table.ts';
@@ -10,11 +12,11 @@ import { applyOperation } from './symmetry-operation.ts';
 
 /** One atom of the cell made from a site. */
 export interface OrbitImage {
-  /** In [0, 1): the operation applied to the position as given, plus `cellShift`. */
+  /** The operation applied to the position as given, plus `cellShift`: in [0, 1) along axes that repeat. */
   readonly fractional: VecFrac;
   /** The first operation of the list that makes this atom. */
   readonly operationIndex: number;
-  /** Whole numbers. */
+  /** Whole numbers; 0 along axes that do not repeat. */
   readonly cellShift: Vec3;
 }
 
@@ -47,20 +49,22 @@ function cellShiftOf(component: number): number {
   return -Math.floor(component + edge) + 0;
 }
 
-function intoCell(position: VecFrac): { fractional: VecFrac; cellShift: Vec3 } {
-  const [x, y, z] = position;
-  const cellShift: Vec3 = [cellShiftOf(x), cellShiftOf(y), cellShiftOf(z)];
-  const [i, j, k] = cellShift;
-  return { fractional: [Math.max(0, x + i), Math.max(0, y + j), Math.max(0, z + k)], cellShift };
+function intoCell(position: VecFrac, periodic: Periodicity): { fractional: VecFrac; cellShift: Vec3 } {
+  const shift = (axis: 0 | 1 | 2): number => (periodic[axis] ? cellShiftOf(position[axis]) : 0);
+  const cellShift: Vec3 = [shift(0), shift(1), shift(2)];
+  const moved = (axis: 0 | 1 | 2): number =>
+    periodic[axis] ? Math.max(0, position[axis] + cellShift[axis]) : position[axis];
+  return { fractional: [moved(0), moved(1), moved(2)], cellShift };
 }
 
-/** The image of a position under one operation, brought into the cell. */
+/** The image of a position under one operation, brought into the cell along axes that repeat. */
 export function imageOf(
   position: VecFrac,
   operations: readonly SymmetryOperation[],
   operationIndex: number,
+  periodic: Periodicity = repeatsThroughout,
 ): OrbitImage {
-  return { ...intoCell(applyOperation(operations[operationIndex]!, position)), operationIndex };
+  return { ...intoCell(applyOperation(operations[operationIndex]!, position), periodic), operationIndex };
 }
 
 /** By operation: the way from the position to its nearest image, null where that is further than the lookout. */
@@ -112,14 +116,16 @@ function repairedStabiliser(
 /** Without a group: images that lie within the distance of the first of their cluster are one. */
 function clustered(
   moved: readonly VecFrac[],
-  lattice: Lattice,
+  nearOffset: (difference: Vec3) => NearOffset | null,
   mergeDistance: number,
 ): { representatives: number[]; even: boolean } {
-  const nearOffset = nearOffsetFinder(lattice, mergeDistance);
   const representatives: number[] = [];
   const sizes: number[] = [];
   for (const [index, image] of moved.entries()) {
-    const cluster = representatives.findIndex((first) => nearOffset(subtract(image, moved[first]!)));
+    const cluster = representatives.findIndex((first) => {
+      const offset = nearOffset(subtract(image, moved[first]!));
+      return offset !== null && offset.distanceAngstrom <= mergeDistance;
+    });
     if (cluster >= 0) sizes[cluster]! += 1;
     if (cluster >= 0) continue;
     representatives.push(index);
@@ -140,25 +146,27 @@ function averagedPosition(position: VecFrac, stabiliser: readonly number[], offs
  * so the multiplicity always divides the number of operations, and a general position costs one pass over the
  * operations. If the near images are no group, the nearest group is taken and `uneven` says so. A list that is no
  * group is clustered image by image. The identity must be the first operation.
+ * Along axes that do not repeat atoms stay where they are, and nothing merges across the faces of the cell.
  */
 export function orbitOf(
   position: VecFrac,
   operations: readonly SymmetryOperation[],
   lattice: Lattice,
   mergeDistanceAngstrom: number = defaultMergeDistanceAngstrom,
+  periodic: Periodicity = repeatsThroughout,
 ): Orbit {
   const moved = operations.map((operation) => applyOperation(operation, position));
   const lookout = Math.max(lookoutAngstrom, 2 * mergeDistanceAngstrom);
-  const nearOffset = nearOffsetFinder(lattice, lookout);
+  const nearOffset = nearOffsetFinder(lattice, lookout, periodic);
   const offsets = moved.map((image) => nearOffset(subtract(image, position)));
   const { stabiliser, representatives, uneven } = partition(
     moved,
     offsets,
     operations,
-    lattice,
+    nearOffset,
     mergeDistanceAngstrom,
   );
-  const images = representatives.map((operationIndex) => imageOf(position, operations, operationIndex));
+  const images = representatives.map((index) => imageOf(position, operations, index, periodic));
   const averaged = averagedPosition(position, stabiliser, offsets);
   return { images, stabiliser, averaged, uneven, ...margins(stabiliser, offsets) };
 }
@@ -188,13 +196,13 @@ function partition(
   moved: readonly VecFrac[],
   offsets: Offsets,
   operations: readonly SymmetryOperation[],
-  lattice: Lattice,
+  nearOffset: (difference: Vec3) => NearOffset | null,
   mergeDistance: number,
 ): Partition {
   const near = within(offsets, mergeDistance);
   const table = groupTable(operations);
   if (!table.isGroup) {
-    const { representatives, even } = clustered(moved, lattice, mergeDistance);
+    const { representatives, even } = clustered(moved, nearOffset, mergeDistance);
     return { stabiliser: near, representatives, uneven: !even };
   }
   if (near.length === 1)

@@ -1,5 +1,7 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { inverse, matrixFromRows, rowsOf, transpose } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
+import { repeatsThroughout } from '#src/base/periodicity.ts';
 import { add, cross, dot, length, normalize, scale, subtract } from '#src/base/vector3.ts';
 import type { Lattice } from './lattice.ts';
 
@@ -13,7 +15,7 @@ export interface PeriodicBasis {
   /** Takes Cartesian columns (Å) to coordinates along `rows`. */
   readonly toBasis: Mat3;
   /** Which rows are lattice translations. */
-  readonly periodic: readonly [boolean, boolean, boolean];
+  readonly periodic: Periodicity;
   /** Each periodic row as whole multiples of a, b, c; zero for the others. */
   readonly translations: readonly [Vec3, Vec3, Vec3];
   /** Å between the two faces that each row joins. */
@@ -28,7 +30,7 @@ interface Translation {
 /** The basis of a lattice that repeats along the directions marked `periodic`; without a lattice, x, y, z of 1 Å. */
 export function periodicBasis(
   lattice: Lattice | null,
-  periodic: readonly [boolean, boolean, boolean] = [true, true, true],
+  periodic: Periodicity = repeatsThroughout,
 ): PeriodicBasis {
   const unit: readonly [Vec3, Vec3, Vec3] = [
     [1, 0, 0],

@@ -19,7 +19,7 @@ import type { EquivalentAtom } from './dossier.ts';
 export interface SiteAtoms {
   readonly site: Site;
   readonly atoms: readonly EquivalentAtom[];
-  /** Lattice translation that brought each atom into the cell after its operation. */
+  /** Lattice translation that brought each atom into the cell after its operation; 0 along axes that do not repeat. */
   readonly cellShifts: readonly Vec3[];
   /** Indices into symmetry.operations. */
   readonly stabiliser: readonly number[];
@@ -114,7 +114,7 @@ export function cellAtoms(
     const fractional: VecFrac = site.fractional ?? apply(inverse(lattice.toCartesian), site.cartesian);
     const orbit = small
       ? orbitInSmallCell(fractional, small, operations, mergeDistanceAngstrom)
-      : orbitOf(fractional, operations, lattice, mergeDistanceAngstrom);
+      : orbitOf(fractional, operations, lattice, mergeDistanceAngstrom, crystal.periodic);
     if (orbit.uneven) {
       log.add(
         'warning',

@@ -225,6 +225,7 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
   return {
     name: crystal.name,
     lattice: chosen.crystal.lattice,
+    ...(chosen.crystal.lattice && !crystal.periodic.every(Boolean) ? { periodic: crystal.periodic } : {}),
     symmetry: symmetry.symmetry,
     spaceGroup: symmetry.spaceGroup,
     atomsInCell: sites.reduce((sum, { multiplicity }) => sum + multiplicity, 0),

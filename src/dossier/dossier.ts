@@ -1,4 +1,5 @@
 import type { Mat3, Vec3, VecCart, VecFrac } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
 import type { Place, Problem } from '#src/base/problem.ts';
 import type { CrystalSymmetry, Displacement, Species } from '#src/crystal/crystal.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
@@ -75,7 +76,7 @@ export interface EquivalentAtom {
   readonly operationIndex: number;
   /** As `x,y,z` with the lattice translation that brings it to `fractional`. */
   readonly operation: string;
-  /** Brought into [0, 1); null without a cell. */
+  /** Brought into [0, 1) along axes that repeat; null without a cell. */
   readonly fractional: VecFrac | null;
   readonly cartesian: VecCart;
   /** Cartesian orthogonal matrix of the operation, row-major. */
@@ -135,6 +136,8 @@ export interface BondRecord {
 export interface CrystalDossier {
   readonly name: string;
   readonly lattice: Lattice | null;
+  /** Along a, b, c, where the cell does not repeat along all three; absent for crystals and molecules without a cell. */
+  readonly periodic?: Periodicity;
   readonly symmetry: CrystalSymmetry;
   /** Space-group symbol and number in one line, for headings. */
   readonly spaceGroup: string;

@@ -1,5 +1,6 @@
 import { rowsOf } from '#src/base/matrix3.ts';
 import type { Mat3 } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
 import type { Place, ProblemLog } from '#src/base/problem.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import { latticeFromRows, rowsProblem } from '#src/crystal/lattice.ts';
@@ -8,7 +9,7 @@ import { parseLattice, parsePeriodicity } from './lattice-value.ts';
 
 export interface FrameCell {
   readonly lattice: Lattice | null;
-  readonly periodic: readonly [boolean, boolean, boolean];
+  readonly periodic: Periodicity;
 }
 
 /**

@@ -1,5 +1,6 @@
 import type { Mat3 } from '#src/base/matrix3.ts';
 import { diagonalMatrix } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
 import { readReal } from './real-number.ts';
 
 /** What a `Lattice` value says, or why it says nothing. */
@@ -38,7 +39,7 @@ export function parseLattice(text: string): LatticeValue {
  * `pbc` along a, b, c: `T T F`, `1 1 0`, `[true, true, false]`, `TTF`, or one value for all three. null where it
  * cannot be read.
  */
-export function parsePeriodicity(text: string): readonly [boolean, boolean, boolean] | null {
+export function parsePeriodicity(text: string): Periodicity | null {
   const joined = text.trim();
   const fields = /^[tf]{3}$/i.test(joined) ? [...joined] : listFields(joined);
   const flags = fields.map(readFlag);
