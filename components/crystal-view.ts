@@ -61,6 +61,7 @@ export class CrystalView extends StoreElement {
     'derived',
     'decisions',
     'selection',
+    'picked',
     'hover',
     'scene',
     'sceneFault',
@@ -70,7 +71,10 @@ export class CrystalView extends StoreElement {
     'look',
     'measurements',
   ] as const;
-  readonly #marker = new PictureMarker(() => this.#marked());
+  readonly #marker = new PictureMarker(
+    () => this.store,
+    () => this.#marked(),
+  );
   readonly #board = new MeasurementBoard();
   #picture: CrystalPicture | null = null;
   #resize: ResizeObserver | null = null;
@@ -193,24 +197,21 @@ export class CrystalView extends StoreElement {
   }
 
   #draw(picture: CrystalPicture, state: WorkbenchState, before: WorkbenchState | null): void {
-    const { derived, decisions, scene, selection, hover, camera, look } = state;
+    const { derived, decisions, scene, selection, picked, hover, camera, look } = state;
     if (!derived || !scene) return;
     const key = `${derived.chosen?.sourceId} ${derived.chosen?.index} ${decisions?.settings.symmetry}`;
     const isOther = key !== this.#crystalKey;
     if (before && state.measurements.length > before.measurements.length)
       this.#spoken = () => newestWords(this.#board, this.store);
     this.#crystalKey = key;
-    if (isOther) this.#marker.clear();
+    if (isOther) this.#marker.end();
     if (before && decisions?.sources[0] !== before.decisions?.sources[0]) this.open = null;
     if (look !== before?.look) picture.setLook(look);
     picture.show(scene, isOther);
     const isSteered = camera !== before?.camera && camera !== picture.camera;
     if (isSteered || (isOther && camera)) picture.follow(camera);
     const isNew = scene !== before?.scene;
-    if (isNew || selection !== before?.selection) {
-      this.#marker.forgetUnless(selection);
-      this.#marked();
-    }
+    if (isNew || selection !== before?.selection || picked !== before?.picked) this.#marked();
     if (isNew || hover !== before?.hover) picture.hover(atomIds(scene, hover));
   }
 

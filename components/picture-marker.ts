@@ -1,6 +1,5 @@
 import type { Measurement } from '#src/scene/measurement.ts';
 import type { PickEntry } from '#src/scene/scene.ts';
-import type { Selection } from '#src/store/state.ts';
 import type { Store } from '#src/store/store.ts';
 import { atomsNeeded } from './measure-words.ts';
 import type { PickedKind } from './measure-words.ts';
@@ -8,18 +7,22 @@ import { freeMeasurementId } from './measurement-board.ts';
 import type { PickedAtom } from './picture-marks.ts';
 import { isSameAtom, pickedAtom, toggled } from './picture-marks.ts';
 
-/** Atoms picked in the picture, one after another, and what they are picked for. The store's selection follows the last one. */
+/**
+ * Picks atoms in the picture, one after another, and knows what they are picked for. The store holds which they are, so that
+ * picking can be undone; its selection is the last of them.
+ */
 export class PictureMarker {
+  readonly #storeOf: () => Store | null;
   readonly #changed: () => void;
-  #marks: readonly PickedAtom[] = [];
   #kind: PickedKind | null = null;
 
-  constructor(changed: () => void) {
+  constructor(storeOf: () => Store | null, changed: () => void) {
+    this.#storeOf = storeOf;
     this.#changed = changed;
   }
 
   get marks(): readonly PickedAtom[] {
-    return this.#marks;
+    return this.#storeOf()?.state.picked ?? [];
   }
 
   /** What is being measured; null while picking only selects. */
@@ -29,7 +32,7 @@ export class PictureMarker {
 
   /** Numbers stand at the atoms where their order means something. */
   get isNumbered(): boolean {
-    return this.#kind !== null || this.#marks.length > 1;
+    return this.#kind !== null || this.marks.length > 1;
   }
 
   /** A press on an atom, or beside all of them. */
@@ -39,35 +42,32 @@ export class PictureMarker {
       if (atom) this.#take(atom, this.#kind, store);
       return;
     }
-    if (!atom) this.#marks = [];
-    else this.#marks = adds ? toggled(this.#seeded(store), atom) : [atom];
-    this.#follow(store);
+    if (!atom) this.#pick([], store);
+    else this.#pick(adds ? toggled(this.#seeded(store), atom) : [atom], store);
   }
 
   /** Begins measuring, or ends it; atoms picked already are taken where they are as many as it takes. */
   measure(kind: PickedKind | null, store: Store): void {
     this.#kind = kind;
-    if (kind && this.#marks.length === atomsNeeded[kind]) this.#finish(kind, store);
-    else if (kind && this.#marks.length > atomsNeeded[kind]) this.#marks = [];
+    if (kind && this.marks.length === atomsNeeded[kind]) this.#finish(kind, this.marks, store);
+    else if (kind && this.marks.length > atomsNeeded[kind]) this.#forget(store);
     this.#changed();
   }
 
   measureAxes(axes: NonNullable<Measurement['axes']>, store: Store): void {
-    this.#keep({ kind: 'axes', axes, atoms: this.#marks }, store);
+    this.#keep({ kind: 'axes', axes, atoms: this.marks }, store);
     this.#changed();
   }
 
-  /** The selection came from elsewhere: marks that don't belong to it go. */
-  forgetUnless(selection: Selection | null): void {
-    const last = this.#marks.at(-1);
-    if (this.#kind !== null || !last) return;
-    const isSame =
-      selection?.siteIndex === last.siteIndex && (selection.atomId ?? last.atomId) === last.atomId;
-    if (!isSame) this.#marks = [];
+  /** Another crystal: nothing is picked any more, and nothing measured. */
+  end(): void {
+    this.#kind = null;
   }
 
+  /** Ends measuring, and with it what was picked for it. */
   clear(): void {
-    this.#marks = [];
+    const store = this.#storeOf();
+    if (this.#kind !== null && store) this.#forget(store);
     this.#kind = null;
     this.#changed();
   }
@@ -75,21 +75,22 @@ export class PictureMarker {
   /** The picked atoms, or the one atom that is selected elsewhere, at its own place. */
   #seeded(store: Store): readonly PickedAtom[] {
     const { selection } = store.state;
-    if (this.#marks.length > 0 || !selection || selection.atomId === null) return this.#marks;
+    if (this.marks.length > 0 || !selection || selection.atomId === null) return this.marks;
     return [{ siteIndex: selection.siteIndex, atomId: selection.atomId, cellShift: [0, 0, 0] }];
   }
 
   #take(atom: PickedAtom, kind: PickedKind, store: Store): void {
-    const last = this.#marks.at(-1);
-    this.#marks = last && isSameAtom(last, atom) ? this.#marks.slice(0, -1) : [...this.#marks, atom];
-    if (this.#marks.length === atomsNeeded[kind]) this.#finish(kind, store);
-    this.#follow(store);
+    const { marks } = this;
+    const last = marks.at(-1);
+    const next = last && isSameAtom(last, atom) ? marks.slice(0, -1) : [...marks, atom];
+    if (next.length === atomsNeeded[kind]) this.#finish(kind, next, store);
+    else this.#pick(next, store);
   }
 
-  /** Keeps what was measured; measuring goes on with the next atoms. */
-  #finish(kind: PickedKind, store: Store): void {
-    this.#keep({ kind, atoms: this.#marks }, store);
-    this.#marks = [];
+  /** Keeps what was measured; measuring goes on with the next atoms. What was picked goes first: undo takes back the measurement. */
+  #finish(kind: PickedKind, atoms: readonly PickedAtom[], store: Store): void {
+    this.#forget(store);
+    this.#keep({ kind, atoms }, store);
   }
 
   #keep(measured: Omit<Measurement, 'id'>, store: Store): void {
@@ -97,10 +98,15 @@ export class PictureMarker {
     store.addMeasurement({ ...measured, atoms, id: freeMeasurementId(store.state.measurements) });
   }
 
-  #follow(store: Store): void {
-    const last = this.#marks.at(-1);
-    if (this.#kind === null || last)
-      store.select(last ? { siteIndex: last.siteIndex, atomId: last.atomId } : null);
+  #pick(atoms: readonly PickedAtom[], store: Store): void {
+    const last = atoms.at(-1);
+    store.select(last ? { siteIndex: last.siteIndex, atomId: last.atomId } : null, atoms);
+    this.#changed();
+  }
+
+  /** No atom is picked any more; what is selected stays. */
+  #forget(store: Store): void {
+    store.select(store.state.selection, []);
     this.#changed();
   }
 }

@@ -1,12 +1,9 @@
 import type { Vec3 } from '#src/store/dossier-types.ts';
 import type { MeasuredAtom } from '#src/scene/measurement.ts';
 import type { PickEntry, Scene } from '#src/scene/scene.ts';
-import type { Selection } from '#src/store/state.ts';
+import type { PickedAtom, Selection } from '#src/store/state.ts';
 
-/** An atom that was picked in the picture. */
-export interface PickedAtom extends MeasuredAtom {
-  readonly siteIndex: number;
-}
+export type { PickedAtom } from '#src/store/state.ts';
 
 export function pickedAtom(entry: PickEntry | null): PickedAtom | null {
   if (entry?.kind !== 'atom') return null;

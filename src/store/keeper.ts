@@ -101,11 +101,13 @@ class TabKeeper implements Keeper {
       'savedViews',
       'measurements',
       'table',
+      'selection',
+      'picked',
     ] as const;
     // a sample that was only looked at is not worth keeping: the work of another tab may be
-    if (state.keeping.status === 'off' && state.past.length === 0 && state.future.length === 0)
-      return !isSame('decisions');
-    return !work.every(isSame) || !isSame('selection');
+    const isUntouched = [...state.past, ...state.future].every((step) => step.isSelection);
+    if (state.keeping.status === 'off' && isUntouched) return !isSame('decisions');
+    return !work.every(isSame);
   }
 
   #schedule(): void {
@@ -134,7 +136,7 @@ class TabKeeper implements Keeper {
         blobs.set(key, blob);
       }
       const keyOf = ({ blob }: SourceFile): string => this.#keys.get(blob) ?? '';
-      const work = storedWork({ moment, selection: state.selection }, keyOf, Date.now());
+      const work = storedWork({ moment }, keyOf, Date.now());
       await this.#database.save(this.#claim.id, work, (key) => blobs.get(key));
       store.setKeeping({ status: 'kept', reason: null });
     } catch (error) {

@@ -6,7 +6,6 @@ import { defaultViews } from './state.ts';
 /** Everything that comes back after a reload. */
 export interface Work {
   readonly moment: Moment;
-  readonly selection: Selection | null;
 }
 
 /** A file whose bytes are kept apart under a key, so that they are written once. */
@@ -33,7 +32,8 @@ export interface StoredWork {
   /** Times it was begun to bring back without success: work that ends the tab must not do so for ever. */
   readonly attempts: number;
   readonly moment: StoredMoment;
-  readonly selection: Selection | null;
+  /** Written by older pages, whose moments held no selection. */
+  readonly selection?: Selection | null;
 }
 
 /** All files of a moment and its history, each once. */
@@ -44,7 +44,7 @@ export function filesOf({ decisions, past, future }: Moment): SourceFile[] {
 
 /** Work with keys instead of bytes. Parts that were shared stay shared, so the history costs what changed in it. */
 export function storedWork(work: Work, keyOf: (file: SourceFile) => string, savedAt: number): StoredWork {
-  const { decisions, views, past, future } = work.moment;
+  const { decisions, past, future } = work.moment;
   const files = new Map<SourceFile, StoredSource>();
   const known = new Map<Decisions, StoredDecisions>();
   const source = (file: SourceFile): StoredSource =>
@@ -56,14 +56,18 @@ export function storedWork(work: Work, keyOf: (file: SourceFile) => string, save
     format: 1,
     savedAt,
     attempts: 0,
-    moment: { decisions: decided(decisions), views, past: past.map(step), future: future.map(step) },
-    selection: work.selection,
+    moment: {
+      ...work.moment,
+      decisions: decided(decisions),
+      past: past.map(step),
+      future: future.map(step),
+    },
   };
 }
 
 /** The way back. Steps whose files are gone are left out; null where those of the present are. */
 export function restoredWork(
-  { moment, selection }: StoredWork,
+  { moment, selection: older }: StoredWork,
   blobOf: (key: string) => Blob | undefined,
 ): Work | null {
   const files = new Map<string, SourceFile | null>();
@@ -87,7 +91,8 @@ export function restoredWork(
   if (moment.decisions && !decisions) return null;
   const past = moment.past.flatMap(step);
   const future = moment.future.flatMap(step);
-  return { moment: { decisions, views: whole(moment.views), past, future }, selection };
+  const { selection = older ?? null, picked = [] } = moment as Partial<StoredMoment>;
+  return { moment: { decisions, views: whole(moment.views), selection, picked, past, future } };
 }
 
 /** Views kept by an older page may lack what came later. */

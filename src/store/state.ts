@@ -4,7 +4,7 @@ import type { DossierSettings } from '#src/dossier/dossier.ts';
 import type { Camera } from '#src/scene/camera.ts';
 import { defaultLook } from '#src/scene/look.ts';
 import type { Look } from '#src/scene/look.ts';
-import type { Measurement } from '#src/scene/measurement.ts';
+import type { MeasuredAtom, Measurement } from '#src/scene/measurement.ts';
 import type { SavedView } from '#src/scene/saved-view.ts';
 import { defaultSceneOptions } from '#src/scene/scene-options.ts';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
@@ -39,12 +39,14 @@ export interface Views {
 }
 
 /** A decision that can be undone, with its name: "undo *open quartz.cif*". */
-export interface Step {
+export interface Step extends Partial<Marks> {
   /** A few words that go behind "Undo": `colour by span`. */
   readonly name: string;
   /** What held before the step (in the past) or after it (in the future); null on an empty page. */
   readonly decisions: Decisions | null;
   readonly views: Views;
+  /** Nothing but the selection changed: further selections are part of this step until something else is done. */
+  readonly isSelection?: true;
 }
 
 /** Whether the work is kept in the browser's database, so that it comes back after a reload. */
@@ -60,6 +62,18 @@ export interface Selection {
   readonly siteIndex: number;
   /** null selects the site with all its atoms. */
   readonly atomId: string | null;
+}
+
+/** An atom that was picked in the picture: one copy of it. */
+export interface PickedAtom extends MeasuredAtom {
+  readonly siteIndex: number;
+}
+
+/** What is selected. */
+export interface Marks {
+  readonly selection: Selection | null;
+  /** Atoms picked in the picture one after another; the selection is the last of them. Empty where it came from elsewhere. */
+  readonly picked: readonly PickedAtom[];
 }
 
 /** Files that could not be opened; the case on screen stayed. */
@@ -88,11 +102,10 @@ export interface ShownPlace {
 }
 
 /** Everything on screen. Immutable: a change makes a new state that shares what stayed. */
-export interface WorkbenchState extends Views {
+export interface WorkbenchState extends Views, Marks {
   readonly decisions: Decisions | null;
   readonly derived: DerivedCase | null;
   readonly refused: Refusal | null;
-  readonly selection: Selection | null;
   readonly hover: Selection | null;
   readonly theme: ThemeChoice;
   /** The picture of the crystal on screen, as the engine described it last; null before the first. */
@@ -119,12 +132,14 @@ export const defaultViews: Views = {
   table: defaultTable,
 };
 
+export const noMarks: Marks = { selection: null, picked: [] };
+
 export const emptyState: WorkbenchState = {
   ...defaultViews,
+  ...noMarks,
   decisions: null,
   derived: null,
   refused: null,
-  selection: null,
   hover: null,
   theme: 'auto',
   scene: null,

@@ -20,7 +20,7 @@ import { PictureMaker } from './picture-maker.ts';
 import { SiteCache } from './site-cache.ts';
 import type { Listener } from './state-holder.ts';
 import { StateHolder } from './state-holder.ts';
-import type { Keeping, Selection, ShownPlace, ThemeChoice, WorkbenchState } from './state.ts';
+import type { Keeping, PickedAtom, Selection, ShownPlace, ThemeChoice, WorkbenchState } from './state.ts';
 import { emptyState } from './state.ts';
 import type { ViewStepOptions } from './timeline.ts';
 import { Timeline } from './timeline.ts';
@@ -141,14 +141,10 @@ export class Store {
   }
 
   /** Brings back work that was kept, with its history. */
-  async restore({ moment, selection }: Work): Promise<boolean> {
+  async restore({ moment }: Work): Promise<boolean> {
     const numbers = filesOf(moment).map(({ id }) => Number(/\d+$/.exec(id)?.[0] ?? 0));
     this.#nextSource = Math.max(this.#nextSource, ...numbers.map((number) => number + 1));
-    if (!(await this.#timeline.go(moment, `bring back ${moment.decisions?.title ?? 'the empty page'}`)))
-      return false;
-    const siteCount = this.state.derived?.crystal?.siteCount ?? 0;
-    if (selection && selection.siteIndex < siteCount) this.select(selection);
-    return true;
+    return this.#timeline.go(moment, `bring back ${moment.decisions?.title ?? 'the empty page'}`);
   }
 
   /** The case on screen as the text of a case file. Rejects with a sentence where there is none, or a file is gone. */
@@ -170,6 +166,12 @@ export class Store {
     return derived?.crystal ? this.#sites.get(derived, index) : null;
   }
 
+  /** Whole sites of the crystal on screen, waited for; those that could not be read are left out. */
+  readSites(indices: readonly number[]): Promise<readonly KnownSite[]> {
+    const { derived } = this.state;
+    return derived?.crystal ? this.#sites.read(derived, indices).catch(() => []) : Promise.resolve([]);
+  }
+
   /** Asks about the crystal on screen; rejects without one, and where the engine could not answer. */
   ask<Kind extends QueryKind>(kind: Kind, ask: Queries[Kind]['ask']): Promise<Queries[Kind]['answer']> {
     const { derived } = this.state;
@@ -177,9 +179,18 @@ export class Store {
     return this.#engine.ask(derived, kind, ask);
   }
 
-  select(selection: Selection | null): void {
-    if (same(selection, this.state.selection)) return;
-    this.#holder.change({ selection }, selection ? 'a site was selected' : 'the selection was cleared');
+  /** Selects a site or atom; `given`: the atoms picked in the picture one after another, it is the last of them. */
+  select(selection: Selection | null, given: readonly PickedAtom[] | null = null): void {
+    if (given === null && same(selection, this.state.selection)) return;
+    const picked = given ?? [];
+    const reason = selection ? 'a site was selected' : 'the selection was cleared';
+    const label = selection && (this.site(selection.siteIndex)?.label ?? null);
+    const name = selectionName(selection, picked, label);
+    this.#timeline.select(name, { selection, picked }, reason);
+    if (!selection || label !== null) return;
+    void this.readSites([selection.siteIndex]).then(([site]) => {
+      if (site) this.#timeline.nameSelection(name, selectionName(selection, picked, site.label));
+    });
   }
 
   hover(hover: Selection | null): void {
@@ -309,6 +320,16 @@ function titleOf(files: readonly FileInput[]): string {
   const [first, ...rest] = files;
   if (!first) return 'nothing';
   return rest.length === 0 ? first.name : `${first.name} and ${rest.length} more`;
+}
+
+/** Behind "Undo": `select Al2`. */
+function selectionName(
+  selection: Selection | null,
+  picked: readonly PickedAtom[],
+  label: string | null,
+): string {
+  if (!selection) return 'clear the selection';
+  return picked.length > 1 ? `select ${picked.length} atoms` : `select ${label ?? 'a site'}`;
 }
 
 function same(a: Selection | null, b: Selection | null): boolean {

@@ -4,11 +4,12 @@ import { Cancelled } from './engine-client.ts';
 import type { EngineClient } from './engine-client.ts';
 import type { DerivedCase, SourceFile } from './engine-protocol.ts';
 import type { Moment } from './moment.ts';
-import { afterStep, momentOf, redone, undone, withViews } from './moment.ts';
+import { afterSelection, afterStep, isSameMarks, momentOf, redone, undone, withViews } from './moment.ts';
 import type { Drawn, PictureMaker } from './picture-maker.ts';
 import type { SiteCache } from './site-cache.ts';
 import type { StateHolder } from './state-holder.ts';
-import type { Decisions, Step, Views } from './state.ts';
+import type { Decisions, Marks, Step, Views } from './state.ts';
+import { noMarks } from './state.ts';
 
 /** How a change of the picture or the table becomes a step. */
 export interface ViewStepOptions {
@@ -86,16 +87,37 @@ export class Timeline {
         ? changed
         : afterStep(moment, name, { views: changed.views });
     };
-    const next = after(present);
-    if (this.#underway)
-      this.#underway = this.#recipes
-        ? this.#recipes.reduce((moment, recipe) => recipe(moment), next)
-        : after(this.#underway);
-    const { views, past, future } = next;
+    const { views, past, future } = this.#before(after);
     this.#growing = past.at(-1) ?? null;
     this.#grownAt = Date.now();
     this.#holder.change({ ...views, past, future }, name);
     if (views.picture !== state.picture) void this.#pictures.redraw();
+  }
+
+  /** Selects something else: a step of its own kind, see `afterSelection`. */
+  select(name: string, marks: Marks, reason: string): void {
+    const { state } = this.#holder;
+    if (isSameMarks(state, marks)) return;
+    const { past, future } = this.#before((moment) => afterSelection(moment, name, marks));
+    this.#holder.change({ ...marks, past, future }, reason);
+  }
+
+  /** Gives the last step its name where it wasn't known yet. */
+  nameSelection(before: string, name: string): void {
+    const { past } = this.#holder.state;
+    const last = past.at(-1);
+    if (last?.isSelection !== true || last.name !== before) return;
+    this.#holder.change({ past: [...past.slice(0, -1), { ...last, name }] }, `the step is to ${name}`);
+  }
+
+  /** A step on what is on screen: it comes before the decisions underway, and after an undo that is. */
+  #before(after: Recipe): Moment {
+    const next = after(momentOf(this.#holder.state));
+    if (this.#underway)
+      this.#underway = this.#recipes
+        ? this.#recipes.reduce((moment, recipe) => recipe(moment), next)
+        : after(this.#underway);
+    return next;
   }
 
   /** Changes views as a part of the last step. */
@@ -158,12 +180,12 @@ export class Timeline {
   }
 
   /** The way of every step that needs no engine. */
-  #goAtOnce({ decisions, views, past, future }: Moment, reason: string): boolean {
+  #goAtOnce({ decisions, views, selection, picked, past, future }: Moment, reason: string): boolean {
     if (this.#underway) this.#engine.cancel();
     this.#underway = null;
     const { state } = this.#holder;
-    const empty = { derived: null, scene: null, sceneFault: null, selection: null, hover: null };
-    const cleared = decisions ? {} : { ...empty, shownPlace: null, refused: null };
+    const empty = { derived: null, scene: null, sceneFault: null, ...noMarks, hover: null };
+    const cleared = decisions ? { selection, picked } : { ...empty, shownPlace: null, refused: null };
     this.#holder.change({ ...views, ...cleared, decisions, past, future, progress: null }, reason);
     if (views.picture !== state.picture) void this.#pictures.redraw();
     return true;
@@ -171,7 +193,7 @@ export class Timeline {
 
   /** Picture and selected site of a crystal that is about to come on screen, so that all of it comes at once. */
   async #firstPicture(derived: DerivedCase, reason: string): Promise<Drawn> {
-    const { selection } = this.#holder.state;
+    const { selection } = this.newest;
     this.#holder.change(
       { progress: { what: reason, share: 1, stage: 'making the picture' } },
       'the picture is made',
@@ -181,7 +203,7 @@ export class Timeline {
   }
 
   #accept(
-    { decisions, views, past, future }: Moment,
+    { decisions, views, selection, picked, past, future }: Moment,
     derived: DerivedCase,
     drawn: Drawn,
     reason: string,
@@ -189,9 +211,8 @@ export class Timeline {
     this.#underway = null;
     const { state } = this.#holder;
     const sameCrystal = decisions?.sources[0]?.id === state.decisions?.sources[0]?.id;
-    const { selection } = state;
     const siteCount = derived.crystal?.siteCount ?? 0;
-    const keeps = sameCrystal && selection !== null && selection.siteIndex < siteCount;
+    const isThere = selection !== null && selection.siteIndex < siteCount;
     const change = {
       ...views,
       ...drawn,
@@ -203,7 +224,7 @@ export class Timeline {
       refused: null,
       progress: null,
       hover: null,
-      selection: keeps ? selection : null,
+      ...(isThere ? { selection, picked } : noMarks),
       shownPlace: sameCrystal ? state.shownPlace : null,
     };
     this.#holder.change(change, `${reason} is on screen`);

@@ -24,7 +24,7 @@ describe('work as it is kept', () => {
     const { state } = await worked();
     const moment = momentOf(state);
     expect(filesOf(moment).map(({ name }) => name)).toEqual(['a.cif', 'b.xyz']);
-    const stored = storedWork({ moment, selection: null }, keyOf, 5);
+    const stored = storedWork({ moment }, keyOf, 5);
     const seen: unknown[] = [];
     JSON.stringify(stored, (_, value: unknown) => {
       if (value instanceof Blob) seen.push(value);
@@ -38,7 +38,7 @@ describe('work as it is kept', () => {
 
   it('comes back as it was, and can be undone and redone', async () => {
     const { state } = await worked();
-    const work = { moment: momentOf(state), selection: { siteIndex: 1, atomId: null } };
+    const work = { moment: { ...momentOf(state), selection: { siteIndex: 1, atomId: null } } };
     const stored = structuredClone(storedWork(work, keyOf, 5));
     const blobs = new Map([...filesOf(work.moment)].map((file) => [keyOf(file), file.blob]));
     const back = restoredWork(stored, (key) => blobs.get(key))!;
@@ -60,11 +60,11 @@ describe('work as it is kept', () => {
   it('leaves out steps whose files are gone, and is nothing without its own', async () => {
     const { state } = await worked();
     const blob = new Blob(['a']);
-    const stored = storedWork({ moment: momentOf(state), selection: null }, keyOf, 5);
+    const stored = storedWork({ moment: momentOf(state) }, keyOf, 5);
     expect(restoredWork(stored, (key) => (key.endsWith('a.cif') ? blob : undefined))).toBeNull();
     const store = await worked();
     await store.redo();
-    const without = storedWork({ moment: momentOf(store.state), selection: null }, keyOf, 5);
+    const without = storedWork({ moment: momentOf(store.state) }, keyOf, 5);
     const back = restoredWork(without, (key) => (key.endsWith('a.cif') ? blob : undefined));
     expect(back?.moment.decisions?.sources.map(({ name }) => name)).toEqual(['a.cif']);
     expect(back?.moment.past.map(({ name }) => name)).toEqual(['colour by span', 'add b.xyz']);
@@ -72,7 +72,7 @@ describe('work as it is kept', () => {
 
   it('of an older page gets the choices that came since', async () => {
     const { state } = await worked();
-    const stored = storedWork({ moment: momentOf(state), selection: null }, keyOf, 5);
+    const stored = storedWork({ moment: momentOf(state) }, keyOf, 5);
     const { views } = stored.moment;
     const old = {
       ...stored,
