@@ -2,6 +2,7 @@ import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { ElementKey, Legend, PictureKey, Scene } from '#src/scene/scene.ts';
 import { formatNumber } from '#src/table/number-format.ts';
+import { withSubscripts } from './symbol-text.ts';
 
 export const colourBarStyles = css`
   .legend {
@@ -68,18 +69,18 @@ export function colourBar(scene: Scene | null): TemplateResult | typeof nothing 
   if (!legend && !scaleStatement && elements.length === 0 && !hasKey) return nothing;
   const lengths = key?.lengths ? `${key.lengths}, ` : '';
   return html`<div class="legend">
-    ${key?.subject ? html`<span>${key.subject}</span>` : nothing} ${legend ? barOf(legend) : nothing}
+    ${key?.subject ? html`<span>${withSubscripts(key.subject)}</span>` : nothing} ${legend ? barOf(legend) : nothing}
     ${key?.lobes ? lobeKey(key.lobes) : nothing}
-    ${scaleStatement ? html`<span class="soft">${lengths}${scaleStatement}</span>` : nothing}
+    ${scaleStatement ? html`<span class="soft">${withSubscripts(lengths + scaleStatement)}</span>` : nothing}
     ${key && key.sites.length > 0 ? siteKey(key) : nothing}
-    ${elements.length > 0 ? elementKey(elements, legend !== null) : nothing}
+    ${elements.length > 0 ? elementKey(elements, key?.elementsWords ?? null) : nothing}
     ${(key?.marks ?? []).map((words) => html`<span class="soft">${words}</span>`)}
   </div>`;
 }
 
 function barOf({ stops, low, high, digits, title, unit, diverging }: Legend): TemplateResult {
   const colours = stops.map(([r, g, b]) => `rgb(${r} ${g} ${b})`).join(', ');
-  return html`<span>${title}${unit ? `/${unit}` : ''}</span>
+  return html`<span>${withSubscripts(title)}${unit ? `/${unit}` : ''}</span>
     <span class="scale"
       ><span>${formatNumber(low, digits)}</span>
       <span
@@ -96,16 +97,12 @@ type Rgb = readonly [number, number, number];
 const cssOf = ([r, g, b]: Rgb): string => `rgb(${r} ${g} ${b})`;
 
 /** Signs of the lobes: by hue where colour says nothing else, and the negative ones are striped. */
-function lobeKey({ positive, negative }: NonNullable<PictureKey['lobes']>): TemplateResult {
+function lobeKey({ positive, negative, negativeWords }: NonNullable<PictureKey['lobes']>): TemplateResult {
   const dark = `rgb(${negative.map((value) => Math.round(0.62 * value)).join(' ')})`;
   const stripes = `background: repeating-linear-gradient(to bottom, ${cssOf(negative)} 0 2px, ${dark} 2px 4px)`;
   return html`<ul aria-label="Signs">
     ${positive ? keyRow(positive, 'positive') : nothing}
-    <li>
-      <span class="ball" aria-hidden="true" .style=${stripes}></span>${
-        positive ? 'negative (striped)' : 'striped = negative'
-      }
-    </li>
+    <li><span class="ball" aria-hidden="true" .style=${stripes}></span>${negativeWords}</li>
   </ul>`;
 }
 
@@ -124,9 +121,9 @@ function siteKey({ sites, moreSites }: PictureKey): TemplateResult {
 }
 
 /** A ball of its colour for each element whose atoms are drawn in it. */
-function elementKey(elements: readonly ElementKey[], besideTensors: boolean): TemplateResult {
+function elementKey(elements: readonly ElementKey[], heading: string | null): TemplateResult {
   return html`<ul aria-label="Colours of the elements">
-    ${besideTensors ? html`<li class="soft">without a tensor:</li>` : nothing}
+    ${heading ? html`<li class="soft">${heading}:</li>` : nothing}
     ${elements.map(({ element, colour }) => keyRow(colour, element))}
   </ul>`;
 }

@@ -16,6 +16,7 @@ Size
 View
   --view DIRECTION           towards the viewer: a, b, c, a*, b*, c*, x, y, z, uvw:1,1,0, hkl:1,0,0,
                              each with a minus to turn it round
+  --upright                  c stays up (b along c), also where the crystal would fill the sheet better on its side
   --perspective DEGREES      0 (default) to 90
   --extent cell|molecules|asymmetric; --range 0:2,0:1,0:1; --shell SITE --radius Å
 Tensors

@@ -11,6 +11,7 @@ import { UsageError } from './io.ts';
 export const figureOptions = {
   output: { type: 'string', short: 'o' },
   view: { type: 'string' },
+  upright: { type: 'boolean' },
   'width-mm': { type: 'string' },
   'height-mm': { type: 'string' },
   'width-px': { type: 'string' },

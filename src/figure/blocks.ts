@@ -139,7 +139,7 @@ export function scaleBlock(
   const room = 6.5 * textPt;
   const length = rulerLengths.find((each) => each * pointsPerAngstrom <= room) ?? 0.1;
   const worth = scene.scale
-    ? ` = ${printed(length * scene.scale.unitsPerAngstrom)} ${scene.scale.quantity === 'efg' ? 'a.u.' : 'ppm'}`
+    ? ` = ${printed(length * scene.scale.unitsPerAngstrom, 6)} ${scene.scale.quantity === 'efg' ? 'a.u.' : 'ppm'}`
     : '';
   const statement = textBlock([runsOf(`${printed(length)} Å${worth}`)], textPt, theme.ink);
   return stacked([rulerBlock(length * pointsPerAngstrom, style), statement, ...note], 0);
@@ -187,6 +187,7 @@ export function keyBlock(scene: Scene, maxWidthPt: number, style: BlockStyle): B
     keyRows(signEntries(key?.lobes ?? null), maxWidthPt, style),
     keyRows(sites, maxWidthPt, style),
     ...words(more),
+    ...words(names.length > 0 && key?.elementsWords ? [`${key.elementsWords}:`] : []),
     keyRows(names, maxWidthPt, style),
     ...words(key?.marks ?? []),
   ].filter((row) => row !== null);
@@ -195,12 +196,9 @@ export function keyBlock(scene: Scene, maxWidthPt: number, style: BlockStyle): B
 
 function signEntries(lobes: PictureKey['lobes']): KeyEntry[] {
   if (!lobes) return [];
-  const { positive, negative } = lobes;
-  if (!positive) return [{ text: 'striped = negative', colour: negative, isStriped: true }];
-  return [
-    { text: 'positive', colour: positive, isStriped: false },
-    { text: 'negative (striped)', colour: negative, isStriped: true },
-  ];
+  const { positive, negative, negativeWords } = lobes;
+  const striped: KeyEntry = { text: negativeWords, colour: negative, isStriped: true };
+  return positive ? [{ text: 'positive', colour: positive, isStriped: false }, striped] : [striped];
 }
 
 interface KeyEntry {

@@ -7,8 +7,16 @@ export type FigureThemeName = 'light' | 'paper' | 'dark';
 
 /** From where the crystal is seen, and how much of it. */
 export type FigureView =
-  /** All of it, along a direction towards the viewer; null is the first view. `words` such as "viewed along [001]". */
-  | { readonly kind: 'direction'; readonly towards: LookDirection | null; readonly words: string | null }
+  /**
+   * All of it, along a direction towards the viewer; null is the first view. `words` such as "viewed along [001]". Unless
+   * `isUpright`, a long crystal is laid on its side where it fills the sheet better.
+   */
+  | {
+      readonly kind: 'direction';
+      readonly towards: LookDirection | null;
+      readonly words: string | null;
+      readonly isUpright?: boolean;
+    }
   /** As on screen: what the viewport showed is in the figure; `wholeCrystal` keeps the orientation only. */
   | {
       readonly kind: 'camera';

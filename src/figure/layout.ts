@@ -1,5 +1,5 @@
 import type { Camera, Viewport } from '#src/scene/camera.ts';
-import { pixelsPerAngstrom } from '#src/scene/camera.ts';
+import { pixelsPerAngstrom, turnAbout } from '#src/scene/camera.ts';
 import { firstCamera, fit, lookAlong } from '#src/scene/framing.ts';
 import { placeLabels } from '#src/scene/place-labels.ts';
 import type { Scene } from '#src/scene/scene.ts';
@@ -35,25 +35,77 @@ const leastCrystalEm = 3;
 /** Height over width that a figure takes by itself. */
 const heightShare = { least: 0.35, most: 1.25 } as const;
 
+/** A crystal that would be larger by this factor, lying on its side, is turned. Our own choice. */
+const turningGain = 1.35;
+/** A column beside a crystal on a sheet of free height may cost it this share of its size, for it saves the strip below. */
+const columnCost = 0.02;
+
 /**
  * Lays out a figure: the crystal as large as it can be, what belongs to it in a strip below or in a column beside it, whichever
- * leaves the crystal larger. Pure: the same scene and request give the same sheet.
+ * leaves the crystal larger. A long crystal that stands across a sheet of fixed size is laid on its side, unless it is to stay
+ * upright. Pure: the same scene and request give the same sheet.
  */
 export function layoutFigure(scene: Scene, request: FigureRequest): Sheet {
-  const orientation = cameraFor(scene, request, { widthPx: 400, heightPx: 400 });
-  const heightPt = request.heightPt ?? naturalHeight(scene, request, orientation);
-  const below = arranged(scene, request, heightPt, 'below');
-  const beside = request.heightPt === null ? below : arranged(scene, request, heightPt, 'beside');
-  const chosen = betterOf(beside, below, heightPt);
+  const upright = laidOut(scene, request);
+  const turned = turnedRequest(scene, request);
+  if (!turned) return upright;
+  const lying = { ...laidOut(scene, turned), isTurned: true };
+  const leastHeightPt = Math.min(upright.leastHeightPt, lying.leastHeightPt);
+  const [isWholeUpright, isWholeLying] = [upright, lying].map(
+    (sheet) => sheet.leastHeightPt <= sheet.heightPt,
+  );
+  const isBetter = scaleOf(lying) > turningGain * scaleOf(upright);
+  const chosen = (isWholeLying === isWholeUpright ? isBetter : isWholeLying) ? lying : upright;
+  return { ...chosen, leastHeightPt };
+}
+
+/** The same view turned by a quarter, so that what was up is at the right; null where size or view leave no choice. */
+function turnedRequest(scene: Scene, request: FigureRequest): FigureRequest | null {
+  const { view, heightPt } = request;
+  if (heightPt === null || view.kind !== 'direction' || view.isUpright) return null;
+  const viewport: Viewport = { widthPx: 400, heightPx: 400 };
+  const camera = turnAbout(cameraFor(scene, request, viewport), [0, 0, 1], -Math.PI / 2);
+  return { ...request, view: { kind: 'camera', camera, viewport, wholeCrystal: true, words: view.words } };
+}
+
+function laidOut(scene: Scene, request: FigureRequest): Sheet {
+  const { heightPt, chosen } =
+    request.heightPt === null ? ofFreeHeight(scene, request) : ofHeight(scene, request, request.heightPt);
   const labels = labelItems(scene, request, chosen.crystal);
   return {
     widthPt: request.widthPt,
     heightPt,
     crystal: chosen.crystal,
-    leastHeightPt: Math.min(below.leastHeightPt, beside.leastHeightPt),
+    leastHeightPt: chosen.leastHeightPt,
     items: [...labels.items, ...chosen.items],
     labelsLeftOut: labels.leftOut,
+    isTurned: false,
   };
+}
+
+interface Choice {
+  readonly heightPt: number;
+  readonly chosen: Arrangement;
+}
+
+function ofHeight(scene: Scene, request: FigureRequest, heightPt: number): Choice {
+  const below = arranged(scene, request, heightPt, 'below');
+  const beside = arranged(scene, request, heightPt, 'beside');
+  const leastHeightPt = Math.min(below.leastHeightPt, beside.leastHeightPt);
+  return { heightPt, chosen: { ...betterOf(beside, below, heightPt), leastHeightPt } };
+}
+
+/** With a strip below; or lower, with a column, where a narrow crystal leaves the room for it at its side. */
+function ofFreeHeight(scene: Scene, request: FigureRequest): Choice {
+  const camera = cameraFor(scene, request, { widthPx: 400, heightPx: 400 });
+  const { heightPt, stripPt } = naturalHeight(scene, request, camera);
+  const below = arranged(scene, request, heightPt, 'below');
+  const lowPt = heightPt - stripPt;
+  const beside = arranged(scene, request, lowPt, 'beside');
+  const isAsLarge = scaleOf(beside) >= (1 - columnCost) * scaleOf(below);
+  return stripPt > 0 && isAsLarge && beside.leastHeightPt <= lowPt
+    ? { heightPt: lowPt, chosen: beside }
+    : { heightPt, chosen: below };
 }
 
 interface Arrangement {
@@ -264,8 +316,12 @@ function cameraFor(scene: Scene, { view, look }: FigureRequest, viewport: Viewpo
   return { ...view.camera, zoom: perAngstrom / Math.max(1, Math.min(viewport.widthPx, viewport.heightPx)) };
 }
 
-/** The height at which the crystal fills the width, within bounds; with room for what stands below. */
-function naturalHeight(scene: Scene, request: FigureRequest, camera: Camera): number {
+/** The height at which the crystal fills the width, within bounds; with room for what stands below, which takes `stripPt` of it. */
+function naturalHeight(
+  scene: Scene,
+  request: FigureRequest,
+  camera: Camera,
+): { readonly heightPt: number; readonly stripPt: number } {
   const { widthPt, textPt } = request;
   const box = viewBox(scene, camera);
   const wanted = box.heightAngstrom / box.widthAngstrom;
@@ -274,12 +330,9 @@ function naturalHeight(scene: Scene, request: FigureRequest, camera: Camera): nu
   const strip = flowed(blocksFor(scene, request, 'below', null), widthPt - 2 * margin, textPt);
   const head = headBlock(request);
   const foot = captionBlock(scene, request);
-  return (
-    share * widthPt +
-    (strip.heightPt > 0 ? strip.heightPt + margin : 0) +
-    (head ? head.heightPt + margin : 0) +
-    (foot ? foot.heightPt + margin : 0)
-  );
+  const stripPt = strip.heightPt > 0 ? strip.heightPt + margin : 0;
+  const others = (head ? head.heightPt + margin : 0) + (foot ? foot.heightPt + margin : 0);
+  return { heightPt: share * widthPt + stripPt + others, stripPt };
 }
 
 /** Labels beside their atoms, by the same placement as on screen, measured in the letters they are drawn with. */

@@ -71,4 +71,6 @@ export interface Sheet {
   readonly leastHeightPt: number;
   /** Labels of the crystal that found no room. */
   readonly labelsLeftOut: number;
+  /** The crystal was laid on its side to fill the sheet. */
+  readonly isTurned: boolean;
 }

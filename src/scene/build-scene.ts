@@ -28,6 +28,8 @@ import { chooseTensors, elementsWithTensors, lobeColours, siteColours } from './
 import type { ChosenTensors } from './tensor-choice.ts';
 import { axialArrows, axisRods, polarSurfaces } from './tensor-drawing.ts';
 import type { TensorDrawing } from './tensor-drawing.ts';
+import type { TensorSizes } from './tensor-sizes.ts';
+import { sizeSentences, tensorSizes } from './tensor-sizes.ts';
 import { unfollowedWishes } from './unfollowed.ts';
 import { disorderPatterns, visibleSites } from './visible-sites.ts';
 import type { VisibleSites } from './visible-sites.ts';
@@ -56,6 +58,7 @@ export function buildScene(whole: CrystalDossier, options: Partial<SceneOptions>
   const cylinders = packedCylinders([...bonds.cylinders, ...glyphs.rods, ...polyhedra.edges]);
   const lines = cellEdges(dossier, chosen.cellEdges, drawn.range);
   const scale = drawing?.scale ?? null;
+  const sizes = drawing && sizesOf(dossier, drawing, chosen);
   const polars = glyphs.polars ? { polars: glyphs.polars } : {};
   return {
     quadrics,
@@ -72,7 +75,7 @@ export function buildScene(whole: CrystalDossier, options: Partial<SceneOptions>
     scale,
     scaleStatement: scale && scaleStatement(scale),
     caption: caption({
-      tensors: drawing && tensorCaption(dossier, drawing, chosen, look),
+      tensors: drawing && sizes && tensorCaption(dossier, drawing, sizes, chosen, look),
       askedFor: chosen.quantity !== 'auto' && chosen.quantity !== choice?.quantity ? chosen.quantity : null,
       isSiteColoured: look.isSiteColoured,
       displacement: displacement && { ...displacement, probability: chosen.displacementProbability },
@@ -93,13 +96,19 @@ export function buildScene(whole: CrystalDossier, options: Partial<SceneOptions>
     extent: drawn.extent,
     siteColours: siteColours(whole, choice),
     ...(choice?.colourBy === 'sign' ? { lobeColours } : {}),
-    key: pictureKey(keyParts(atoms, drawing, look, displacement && chosen.displacementProbability)),
+    key: pictureKey({
+      ...keyParts(atoms, drawing, look, displacement && chosen.displacementProbability),
+      ...(drawing && sizes ? sizeKey(dossier, atoms, drawing, sizes) : { tiny: [], elementsWords: null }),
+    }),
     unfollowed: unfollowedWishes(asked, {
       choice,
       scale,
       hasDisplacement: displacement !== null,
       polyhedra: polyhedra.count,
+      atoms: drawn,
+      hasCell: dossier.lattice !== null,
     }),
+    sizeNotes: sizes && scale ? sizeSentences(sizes, scale.quantity) : [],
     drawnInstead: sharedPositions(dossier).drawnInstead,
     tensorElements: choice?.elements ?? null,
   };
@@ -187,21 +196,57 @@ function polyhedraOf(
   return coordinationPolyhedra({ dossier, atoms, elements: options.polyhedra, colourOf });
 }
 
-function tensorCaption(
+/** What one scale hides: an axial vector has a scale of its own, and is as small as it is. */
+function sizesOf(
   dossier: CrystalDossier,
   { choice, scale }: TensorDrawing,
   options: SceneOptions,
+): TensorSizes {
+  const { quantity, elements, isOwnChoice, forms } = choice;
+  if (scale.part === 'antisymmetric') return { largest: null, tiny: [], leftOut: [] };
+  const leftOut =
+    isOwnChoice && options.tensorSites === null
+      ? elementsWithTensors(dossier, quantity).filter((element) => !elements?.includes(element))
+      : [];
+  return tensorSizes(dossier, forms, scale, leftOut);
+}
+
+/** What the key says of sizes: elements too small to be seen, and why others have no tensor in the picture. */
+function sizeKey(
+  dossier: CrystalDossier,
+  atoms: readonly DrawnAtom[],
+  { choice }: TensorDrawing,
+  { tiny, leftOut }: TensorSizes,
+): Pick<KeyParts, 'tiny' | 'elementsWords'> {
+  const names = (list: TensorSizes['tiny']): string[] => list.map(({ element }) => element);
+  const own = new Set(atoms.filter(({ context }) => !context).map(({ site }) => site.element));
+  const shown = new Set([...choice.forms.keys()].map((index) => dossier.sites[index]!.element));
+  const plain = [...own].filter((element) => !shown.has(element));
+  const having = new Set(elementsWithTensors(dossier, choice.quantity));
+  const tooSmall = choice.quantity === 'efg' ? [] : names(leftOut);
+  const isSmall = plain.length > 0 && plain.every((element) => tooSmall.includes(element));
+  const isBare = plain.length > 0 && !plain.some((element) => having.has(element));
+  const words = isSmall
+    ? 'tensors too small to be seen at this scale'
+    : isBare
+      ? 'without a tensor'
+      : 'tensors not drawn';
+  return { tiny: names(tiny), elementsWords: choice.colourBy === 'element' ? null : words };
+}
+
+function tensorCaption(
+  dossier: CrystalDossier,
+  { choice, scale }: TensorDrawing,
+  sizes: TensorSizes,
+  options: SceneOptions,
   look: AtomsLook,
 ): TensorCaption {
-  const { glyph, legend, colourBy, elements, isOwnChoice, forms } = choice;
+  const { glyph, legend, colourBy, elements, forms } = choice;
   const isPart = options.tensorSites !== null;
   return {
     ...{ scale, glyph, legend, colourBy, elements },
     sites: isPart ? [...forms.keys()].map((index) => dossier.sites[index]!.label) : null,
-    leftOut:
-      isOwnChoice && !isPart
-        ? elementsWithTensors(dossier, choice.quantity).filter((element) => !elements?.includes(element))
-        : [],
+    sizes,
     copies: options.tensorCopies,
     hasUndefinedAxes: [...forms.values()].some(({ axes }) => axes.includes(null)),
     isDotted: !look.hasDisorderPatterns && look.patterns.size > 0,
@@ -213,7 +258,7 @@ function keyParts(
   drawing: TensorDrawing | null,
   look: AtomsLook,
   probability: number | null,
-): KeyParts {
+): Omit<KeyParts, 'tiny' | 'elementsWords'> {
   const { occupancy, hasDisorderPatterns } = marksOf(atoms, look);
   const own = look.isSiteColoured ? atoms.filter(({ context }) => !context) : [];
   return {

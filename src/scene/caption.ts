@@ -1,8 +1,12 @@
+import type { CellRange } from './drawn-atoms.ts';
+import { mostAtoms } from './drawn-atoms.ts';
 import type { ChosenAtoms } from './extent.ts';
 import { lengthWords } from './picture-key.ts';
 import { printed } from './printed.ts';
 import type { GlyphKind, Legend, SceneQuantity, TensorScale } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
+import type { TensorSizes } from './tensor-sizes.ts';
+import { sizeSentences } from './tensor-sizes.ts';
 
 const quantityWords: Readonly<Record<SceneQuantity, string>> = {
   shielding: 'Shielding',
@@ -19,8 +23,8 @@ export interface TensorCaption {
   /** Elements and labels of sites whose tensors are drawn, where only some are. */
   readonly elements: readonly string[] | null;
   readonly sites: readonly string[] | null;
-  /** Elements that nobody asked to leave out: the scale did. */
-  readonly leftOut: readonly string[];
+  /** How unequal they are: what one scale hides. */
+  readonly sizes: TensorSizes;
   readonly copies: SceneOptions['tensorCopies'];
   /** Some principal axis drawn from is undefined. */
   readonly hasUndefinedAxes: boolean;
@@ -58,14 +62,16 @@ export interface DisplacementCaption {
 }
 
 /** 30000 → 30,000 */
-function grouped(count: number): string {
+export function grouped(count: number): string {
   return String(count).replace(/\B(?=(\d{3})+$)/g, ',');
 }
 
 /** The scale of the tensors in words, such as "1 Å = 250 ppm". */
 export function scaleStatement({ unitsPerAngstrom, quantity, part }: TensorScale): string {
   const of = part === 'antisymmetric' ? ' of the axial vector' : '';
-  return `1 Å = ${printed(unitsPerAngstrom)} ${quantity === 'efg' ? 'a.u.' : 'ppm'}${of}`;
+  // six digits: a scale that was typed is stated as typed
+  const units = printed(unitsPerAngstrom, 6);
+  return `1 Å = ${units} ${quantity === 'efg' ? 'a.u.' : 'ppm'}${of}`;
 }
 
 /** A few sentences that say in words what is drawn and in which convention. */
@@ -78,8 +84,12 @@ export function caption(parts: CaptionParts): string {
       `There are no ${asked === 'EFG' ? asked : asked.toLowerCase()} tensors here, so this is shown instead.`,
     );
   }
-  if (tensors && tensors.leftOut.length > 0) sentences.push(leftOutSentence(tensors));
-  if (tensors) sentences.push(...tensorAsides(tensors));
+  if (tensors) {
+    const { sizes, scale } = tensors;
+    const hidden = sizeSentences(sizes, scale.quantity);
+    if (hidden.length > 0) hidden.push('Ticked alone under Show, they are drawn at a scale of their own.');
+    sentences.push(...hidden, ...tensorAsides(tensors));
+  }
   sentences.push(
     ...parts.notes,
     ...displacementSentences(parts),
@@ -87,12 +97,6 @@ export function caption(parts: CaptionParts): string {
     ...markSentences(parts),
   );
   return sentences.join(' ');
-}
-
-function leftOutSentence({ scale, leftOut }: TensorCaption): string {
-  if (scale.quantity === 'efg')
-    return 'At the one scale of the picture, large and small tensors of the other elements would drown one another; they are drawn too when ticked under Show.';
-  return `Those of ${listed(leftOut)} would look like plain spheres at the one scale of the picture; they are drawn too when ticked under Show.`;
 }
 
 function plainSentence({ isSiteColoured, displacement }: CaptionParts): string {
@@ -127,10 +131,8 @@ function glyphWords({ scale, glyph }: TensorCaption, of: string): string {
 function colourWords({ colourBy, legend, glyph, scale }: TensorCaption): string {
   const isLobes = glyph === 'polar' && scale.part !== 'antisymmetric';
   if (colourBy === 'sign') return 'positive lobes orange, negative lobes blue and striped';
-  if (legend && isLobes && legend.map === 'vik')
-    return `colour = size of ${legend.title}, with the sign of the lobe; negative lobes are striped too`;
   const colour = legend ? `colour = ${legend.title}` : `coloured by ${colourBy}`;
-  return isLobes ? `${colour}; negative lobes dark grey and striped` : colour;
+  return isLobes ? `${colour}; negative lobes darker and striped` : colour;
 }
 
 function tensorAsides({ copies, glyph, scale, hasUndefinedAxes, isDotted }: TensorCaption): string[] {
@@ -160,8 +162,14 @@ function displacementSentences({ displacement, tensors }: CaptionParts): string[
 function extentSentences(parts: CaptionParts): string[] {
   const { chosen, atomsInCell, isShared } = parts;
   const sentences = [extentSentence(parts)];
+  if (chosen.openAxes.length > 0)
+    sentences.push(
+      `The cell does not repeat along ${chosen.openAxes.join(', ')}: atoms stand there as the file has them.`,
+    );
   if (chosen.isNarrowed)
-    sentences.push('The range asked for holds more atoms than can be drawn: its middle is shown.');
+    sentences.push(
+      `The range asked for holds more than the ${grouped(mostAtoms)} atoms that can be drawn: its middle is shown.`,
+    );
   if (chosen.isCut) {
     const all = chosen.range ? '' : `; there are ${grouped(atomsInCell)}, all of them in the table`;
     sentences.push(
@@ -183,12 +191,18 @@ function extentSentence({ chosen, hasCell, polyhedra, displacement }: CaptionPar
   if (extent === 'asymmetric') return `The first atom of each site${outside}.`;
   if (extent === 'molecules') return `One unit cell, its molecules drawn whole${outside}.`;
   if (range) {
-    const [low, high] = range;
-    const along = ['a', 'b', 'c'].map((axis, k) => `${axis} ${printed(low[k]!)} to ${printed(high[k]!)}`);
     const whole = chosen.isCompleted ? ', molecules that reach into it drawn whole' : '';
-    return `Cells ${along.join(', ')}${whole}${outside}.`;
+    return `Cells ${rangeWords(range)}${whole}${outside}.`;
   }
-  return `One unit cell; atoms on its faces are repeated${outside}.`;
+  if (chosen.openAxes.length === 3) return `All atoms${outside}.`;
+  const faces = chosen.openAxes.length > 0 ? 'the faces it repeats across' : 'its faces';
+  return `One unit cell; atoms on ${faces} are repeated${outside}.`;
+}
+
+/** Such as "a 0 to 2, b 0 to 1, c −0.5 to 1". */
+export function rangeWords([low, high]: CellRange): string {
+  const along = ['a', 'b', 'c'].map((axis, k) => `${axis} ${printed(low[k]!)} to ${printed(high[k]!)}`);
+  return along.join(', ');
 }
 
 function markSentences({ polyhedra, occupancy, hasDisorderPatterns, labels }: CaptionParts): string[] {

@@ -3,6 +3,7 @@ import { apply, transpose } from '#src/base/matrix3.ts';
 import { add, cross, dot, length, scale } from '#src/base/vector3.ts';
 import type { Camera, Quaternion, Viewport } from './camera.ts';
 import { orientationFrom, perspectiveLimits, turnAbout, viewRotation } from './camera.ts';
+import { polarReach } from './polar-mesh.ts';
 import { centreOf } from './project.ts';
 import type { Scene } from './scene.ts';
 
@@ -63,15 +64,20 @@ function reaches(
   const include = (centre: Vec3, halfWidth: (direction: Vec3) => number): void => {
     directions.forEach((d, k) => (far[k] = Math.max(far[k]!, dot(centre, d) + halfWidth(d))));
   };
-  const { quadrics, polars, lines } = scene;
+  const { quadrics, polars, cylinders, lines } = scene;
   for (let i = 0; i < quadrics.count; i++) {
     const a = quadrics.shapes.subarray(9 * i, 9 * i + 9);
     include(centreOf(quadrics, i), (d) => length(applyTransposed(a, d)));
   }
   for (let i = 0; i < (polars?.count ?? 0); i++) {
-    const [xx, yy, zz, xy, xz, yz] = polars!.tensors.subarray(6 * i, 6 * i + 6);
-    const norm = Math.hypot(xx!, yy!, zz!, Math.SQRT2 * Math.hypot(xy!, xz!, yz!));
-    include(threeOf(polars!.centres, i), (d) => norm * length(d));
+    const radius = polarReach(polars!.tensors.subarray(6 * i, 6 * i + 6));
+    include(threeOf(polars!.centres, i), (d) => radius * length(d));
+  }
+  // rods and arrows of tensors reach beyond their atoms
+  for (let i = 0; i < cylinders.count; i++) {
+    const radius = cylinders.radii[i]!;
+    for (const ends of [cylinders.starts, cylinders.ends])
+      include(threeOf(ends, i), (d) => radius * length(d));
   }
   for (const ends of [lines.starts, lines.ends]) {
     for (let i = 0; i < ends.length / 3; i++) include(threeOf(ends, i), () => 0);

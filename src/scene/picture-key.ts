@@ -40,10 +40,10 @@ function subjectOf({ quantity, legend, colourBy, coloured }: ChosenTensors): str
 /** Share of the largest value below which a lobe is rounding. */
 const dustShare = 1e-6;
 
-/** Signs of lobes: both colours where colour says nothing else; else that stripes are negative, so far as some are. */
+/** Signs of lobes: both colours where colour says nothing else; else that darker, striped ones are negative, so far as some are. */
 function lobeKeyOf({ choice, forms, scale }: TensorDrawing): PictureKey['lobes'] {
   if (scale.glyph !== 'polar' || scale.part === 'antisymmetric') return null;
-  if (choice.colourBy === 'sign') return lobeColours;
+  if (choice.colourBy === 'sign') return { ...lobeColours, negativeWords: 'negative (striped)' };
   let [lowest, size] = [0, 0];
   for (const { values, isotropic } of forms.values()) {
     for (const value of values) {
@@ -52,11 +52,14 @@ function lobeKeyOf({ choice, forms, scale }: TensorDrawing): PictureKey['lobes']
       size = Math.max(size, Math.abs(drawn));
     }
   }
-  return lowest < -dustShare * size ? { positive: null, negative: stripedBall } : null;
+  return lowest < -dustShare * size ? darkerLobes : null;
 }
 
-/** Of the ball beside "striped = negative". */
-const stripedBall = [128, 124, 116] as const;
+const darkerLobes: PictureKey['lobes'] = {
+  positive: null,
+  negative: [112, 108, 101],
+  negativeWords: 'darker, striped = negative',
+};
 
 /** Sites named in a key, at most. */
 const mostSites = 12;
@@ -71,6 +74,10 @@ export interface KeyParts {
   readonly hasMixed: boolean;
   readonly hasDisorderPatterns: boolean;
   readonly isDotted: boolean;
+  /** Elements whose tensors are drawn, but too small beside others to be seen. */
+  readonly tiny: readonly string[];
+  /** What the elements of the key have in common beside the tensors drawn; null where all that is drawn has its element's colour. */
+  readonly elementsWords: string | null;
 }
 
 /** What a key beside the picture has to say, apart from colour bar, scale and elements. */
@@ -85,6 +92,7 @@ export function pictureKey(parts: KeyParts): PictureKey {
     lobes: drawing && lobeKeyOf(drawing),
     sites,
     moreSites: colouredSites.length - sites.length,
+    elementsWords: parts.elementsWords,
     marks: markWords(parts),
   };
 }
@@ -97,5 +105,6 @@ function markWords(parts: KeyParts): string[] {
   if (parts.hasPartial) words.push('pale part: unoccupied share');
   if (parts.hasDisorderPatterns) words.push('stripes, dots: further alternatives of disorder');
   if (parts.isDotted) words.push('dots: negative value');
+  if (parts.tiny.length > 0) words.push(`${parts.tiny.join(', ')}: too small to be seen at this scale`);
   return words;
 }

@@ -1,4 +1,4 @@
-/** A number for people: − as minus sign, no trailing zeros, at most four significant digits. */
-export function printed(value: number): string {
-  return String(Number(value.toPrecision(4))).replace('-', '−');
+/** A number for people: − as minus sign, no trailing zeros, at most so many significant digits. */
+export function printed(value: number, digits = 4): string {
+  return String(Number(value.toPrecision(digits))).replace('-', '−');
 }

@@ -34,7 +34,7 @@ export interface QuadricBatch {
 
 /**
  * Signed polar surfaces of symmetric tensors: the points centre + |n·T·n| n for all unit vectors n. Drawn as meshes whose
- * fineness follows their size on screen; positive and negative lobes differ in colour, and negative ones are striped too.
+ * fineness follows their size on screen; negative lobes have another colour or a darker one, and are striped too.
  */
 export interface PolarBatch {
   readonly count: number;
@@ -151,14 +151,18 @@ export interface PictureKey {
   readonly subject: string | null;
   /** How tensors became lengths, such as "radius = |n·σ·n − σ(iso)|"; null without tensors. */
   readonly lengths: string | null;
-  /** Where negative lobes are drawn: they are striped. `positive` is null where colours say something else than the sign. */
+  /** Where negative lobes are drawn: they are striped, and darker where `positive` is null as colours say something else than the sign. */
   readonly lobes: {
     readonly positive: readonly [number, number, number] | null;
     readonly negative: readonly [number, number, number];
+    /** Such as "negative (striped)". */
+    readonly negativeWords: string;
   } | null;
   /** Sites in their own colours, the first dozen of them. */
   readonly sites: readonly SiteKey[];
   readonly moreSites: number;
+  /** Why the key's elements have their own colours beside tensors that have others, such as "without a tensor"; null where all do. */
+  readonly elementsWords: string | null;
   /** Such as "displacement ellipsoids at 50 %" or "pale part: unoccupied share". */
   readonly marks: readonly string[];
 }
@@ -190,6 +194,8 @@ export interface TensorScale {
   readonly baseRadiusAngstrom: number;
   /** Absent: ellipsoids. */
   readonly glyph?: GlyphKind;
+  /** Why these tensors have no ellipsoids of their total values, in words behind "because"; absent where they have. */
+  readonly totalFault?: string;
   /** `antisymmetric`: the scale is that of axial vectors. Absent: the symmetric part is drawn. */
   readonly part?: 'symmetric' | 'antisymmetric';
 }
@@ -227,6 +233,8 @@ export interface Scene {
   readonly key?: PictureKey;
   /** Sentences on wishes of the options that could not be followed, with what is drawn instead. Absent: none. */
   readonly unfollowed?: readonly string[];
+  /** Sentences on tensors that the one scale of the picture hides, with their sizes. Absent: none. */
+  readonly sizeNotes?: readonly string[];
   /** Colours of positive and negative lobes where all polar surfaces have the same two, for a key beside the picture. */
   readonly lobeColours?: {
     readonly positive: readonly [number, number, number];

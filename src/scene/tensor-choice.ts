@@ -7,6 +7,7 @@ import { legendColour, legendFor, mapColour } from './colour-scale.ts';
 import type { GlyphKind, Legend, SceneQuantity } from './scene.ts';
 import type { ColourMeaning, SceneOptions } from './scene-options.ts';
 import { needDeviations } from './tensor-scale.ts';
+import { invisibleShare } from './tensor-sizes.ts';
 import type { PrincipalForm } from './tensor-shape.ts';
 import { largestReach, principalForm } from './tensor-shape.ts';
 
@@ -177,9 +178,6 @@ export function elementsWithTensors(dossier: CrystalDossier, quantity: SceneQuan
 const drowningRatio = 6;
 /** Their field gradients are large for want of a surrounding, and seldom what the picture is looked at for. */
 const lightElements = new Set(['H', 'D', 'T', 'O']);
-
-/** Elements of which no deviation is more than this share of the picture's largest would be spheres. Our own choice. */
-const invisibleShare = 1 / 12;
 
 /** Elements to draw unasked: null for all. */
 function mainElements(

@@ -1,7 +1,6 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { apply, determinant, multiply, transpose } from '#src/base/matrix3.ts';
 import { add, length, normalize, scale, subtract } from '#src/base/vector3.ts';
-import { legendColour } from './colour-scale.ts';
 import type { Cylinder } from './cylinder-list.ts';
 import { dashesToTheEnds } from './cylinder-list.ts';
 import type { DrawnAtom } from './drawn-atoms.ts';
@@ -29,9 +28,10 @@ export interface TensorDrawing {
 
 /** Å; spheres that mark the atom inside a polar surface, rods or an axial vector. */
 const centreRadii = { polar: 0.07, axes: 0.1, axial: 0.1 } as const;
-/** The mark inside a polar surface, and negative lobes where colour says a value without sign. */
+/** The mark inside a polar surface. */
 export const lobeCentreColour: Rgb = [96, 92, 86];
-const darkLobe: Rgb = [84, 80, 74];
+/** How far negative lobes are darker where colour says a value: seen beside the positive ones, with the hue still plain. */
+export const negativeLobeShade = -0.4;
 
 /** Radius of the sphere in the middle of a glyph, Å; null where the tensor is an ellipsoid itself. */
 export function centreRadius({ scale: { glyph, part } }: TensorDrawing): number | null {
@@ -82,18 +82,14 @@ export function polarSurfaces(atoms: readonly DrawnAtom[], drawing: TensorDrawin
   return batch;
 }
 
-/** Colours of a site's lobes: of the sign alone, of plus and minus the value's size on a diverging map, else the value's and dark grey. */
+/** Colours of a site's lobes: of the sign alone; else all of its value, the negative ones darker (and striped, as always). */
 function lobesOf(
   siteIndex: number,
-  { colourBy, legend, values, colours }: ChosenTensors,
-): { positive: Rgb; negative: Rgb } {
+  { colourBy, colours }: ChosenTensors,
+): { readonly positive: Rgb; readonly negative: Rgb } {
   if (colourBy === 'sign') return lobeColours;
-  const value = values.get(siteIndex);
-  if (legend?.map === 'vik' && value !== undefined) {
-    const size = Math.abs(value);
-    return { positive: legendColour(legend, size), negative: legendColour(legend, -size) };
-  }
-  return { positive: colours.get(siteIndex)!, negative: darkLobe };
+  const positive = colours.get(siteIndex)!;
+  return { positive, negative: shaded(positive, negativeLobeShade) };
 }
 
 /** Å; rods of the first, second and third principal axis, the last one thicker than a bond that it may lie in. */
@@ -133,7 +129,7 @@ export function axisRods(atoms: readonly DrawnAtom[], drawing: TensorDrawing): C
 }
 
 /** A colour moved towards white (share above 0) or black (below). */
-function shaded(colour: Rgb, share: number): Rgb {
+export function shaded(colour: Rgb, share: number): Rgb {
   const end = share > 0 ? 255 : 0;
   return colour.map((c) => Math.round(c + Math.abs(share) * (end - c))) as unknown as Rgb;
 }

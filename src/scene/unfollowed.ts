@@ -1,3 +1,6 @@
+import { grouped, rangeWords } from './caption.ts';
+import { mostAtoms } from './drawn-atoms.ts';
+import type { ChosenAtoms } from './extent.ts';
 import type { SceneOptions } from './scene-options.ts';
 import { defaultSceneOptions } from './scene-options.ts';
 import type { ChosenTensors } from './tensor-choice.ts';
@@ -9,6 +12,8 @@ export interface DrawnInstead {
   readonly scale: TensorScale | null;
   readonly hasDisplacement: boolean;
   readonly polyhedra: number;
+  readonly atoms: ChosenAtoms;
+  readonly hasCell: boolean;
 }
 
 const quantityNames = { shielding: 'shielding', shift: 'shift', efg: 'EFG' } as const;
@@ -19,7 +24,7 @@ const kindNames = { total: 'totals', deviation: 'deviations from the isotropic v
  * the usual ones; the scene never fails for one.
  */
 export function unfollowedWishes(asked: SceneOptions, drawn: DrawnInstead): string[] {
-  const found: string[] = [];
+  const found: string[] = extentWishes(asked, drawn);
   if (asked.displacement !== 'none' && !drawn.hasDisplacement) {
     const instead = drawn.scale ? 'tensors are drawn' : 'plain spheres are drawn';
     found.push(
@@ -31,6 +36,26 @@ export function unfollowedWishes(asked: SceneOptions, drawn: DrawnInstead): stri
   // displacement ellipsoids instead of tensors leave no tensor to ask about
   if (!asked.showTensors || (asked.displacement === 'instead' && drawn.hasDisplacement)) return found;
   return [...found, ...tensorWishes(asked, drawn)];
+}
+
+/** Which atoms are drawn: a range without a cell, one cut down to its middle or to one cell, a shell round nothing, too many atoms. */
+function extentWishes({ extent: asked }: SceneOptions, { atoms, hasCell }: DrawnInstead): string[] {
+  const { extent, range, isNarrowed, isCut, ownCount, unrepeated } = atoms;
+  if (asked === 'range' && !hasCell)
+    return ['The file gives no cell, so there is no range of cells: the atoms are drawn as given.'];
+  const found: string[] = [];
+  if (asked === 'shell' && extent !== 'shell')
+    found.push('No site is chosen for the middle of the shell: the usual picture is drawn.');
+  if (unrepeated.length > 0)
+    found.push(
+      `The cell does not repeat along ${unrepeated.join(', ')}: one cell is drawn there instead of the range asked for.`,
+    );
+  if (isNarrowed && range)
+    found.push(
+      `The range asked for holds more than the ${grouped(mostAtoms)} atoms that can be drawn: its middle is drawn, ${rangeWords(range)}.`,
+    );
+  if (isCut) found.push(`Only the first ${grouped(ownCount)} atoms are drawn, the limit of the picture.`);
+  return found;
 }
 
 function tensorWishes(asked: SceneOptions, { choice, scale }: DrawnInstead): string[] {

@@ -123,14 +123,15 @@ function demandHeight({ heightPt, leastHeightPt }: Sheet, { pxPerPt }: FigureSiz
 /** The direction asked for; else the camera of the case file, all of the crystal; else the first view. */
 function viewOf(own: OwnValues, scene: Scene, { views }: LoadedCase): FigureView {
   const asked = textOf(own, 'view');
+  const isUpright = own['upright'] === true;
   if (asked === undefined) {
     const camera = views?.camera;
-    if (!camera) return { kind: 'direction', towards: null, words: null };
+    if (!camera) return { kind: 'direction', towards: null, words: null, isUpright };
     return { kind: 'camera', camera, viewport: { widthPx: 1, heightPx: 1 }, wholeCrystal: true, words: null };
   }
   const found = parseLookAlong(directionWords(asked), scene.axes);
   if ('fault' in found) throw new UsageError(`--view ${asked}: ${found.fault} Also uvw:1,1,0 and hkl:1,0,0.`);
-  return { kind: 'direction', towards: found.towards, words: `viewed along ${found.words}` };
+  return { kind: 'direction', towards: found.towards, words: `viewed along ${found.words}`, isUpright };
 }
 
 /** The case as it would be saved now: texts, decisions, and this picture as its view. */
@@ -146,10 +147,19 @@ async function caseTextOf(
 }
 
 /** What the picture could not do as asked. */
-function figureProblems(scene: Scene, { labelsLeftOut }: Sheet): Problem[] {
+function figureProblems(scene: Scene, { labelsLeftOut, isTurned }: Sheet): Problem[] {
   const found: Problem[] = [];
+  if (isTurned) {
+    const words =
+      'The crystal lies on its side, a quarter turned in the picture, as it fills the sheet better so.';
+    found.push(problem('note', 'figure-turned', words, { hint: '--upright keeps it upright.' }));
+  }
   for (const sentence of scene.unfollowed ?? []) {
     found.push(problem('warning', 'figure-wish-unfollowed', sentence));
+  }
+  for (const sentence of scene.sizeNotes ?? []) {
+    const hint = 'Drawn alone, with --elements, they have a scale of their own.';
+    found.push(problem('note', 'figure-tensors-hidden', sentence, { hint }));
   }
   if (labelsLeftOut > 0) {
     const words =

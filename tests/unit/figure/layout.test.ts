@@ -1,13 +1,15 @@
 import { describe, expect, it } from 'vitest';
+import { apply } from '#src/base/matrix3.ts';
 import { defaultContents } from '#src/figure/figure-request.ts';
 import type { FigureRequest } from '#src/figure/figure-request.ts';
 import { setText } from '#src/figure/font/set-text.ts';
 import { layoutFigure } from '#src/figure/layout.ts';
 import type { Sheet, SheetItem, TextItem } from '#src/figure/sheet.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
-import { pixelsPerAngstrom } from '#src/scene/camera.ts';
+import { pixelsPerAngstrom, viewRotation } from '#src/scene/camera.ts';
 import { defaultLook } from '#src/scene/look.ts';
 import type { Scene } from '#src/scene/scene.ts';
+import { madeDossier } from '#tests/support/made-dossier.ts';
 import { madeQuartz } from '#tests/support/made-quartz.ts';
 
 const labelled = buildScene(madeQuartz(), { labels: true });
@@ -145,6 +147,62 @@ describe('a figure laid out', () => {
     for (const { xPt } of textsOf(wide)) expect(xPt).toBeGreaterThan(crystal.xPt + crystal.widthPt - 0.01);
     for (const { yPt } of textsOf(high))
       expect(yPt).toBeGreaterThan(high.crystal.yPt + high.crystal.heightPt);
+  });
+
+  describe('of a crystal twelve times as long as wide', () => {
+    const long = buildScene(
+      madeDossier({
+        rows: [3, 0, 0, 0, 3, 0, 0, 0, 36],
+        sites: [{ label: 'P1', element: 'P', position: [0.5, 0.5, 0.5] }],
+      }),
+    );
+    const slide: FigureRequest = { ...request, widthPt: 960, heightPt: 540, textPt: 18 };
+    const along = (isUpright: boolean): FigureRequest => ({
+      ...slide,
+      view: { kind: 'direction', towards: 'a', words: 'viewed along a', isUpright },
+    });
+    const perAngstrom = ({ crystal }: Sheet) =>
+      pixelsPerAngstrom(crystal.camera, crystal.viewport) * crystal.pointsPerCssPx;
+    /** Of the cell edges, points. */
+    const spanOf = ({ crystal }: Sheet): [number, number] => {
+      const rotation = viewRotation(crystal.camera.orientation);
+      const ends = [0, 1].map((k) => apply(rotation, [0, 0, 36 * k]));
+      return [0, 1].map((k) => Math.abs(ends[1]![k]! - ends[0]![k]!) * perAngstrom({ crystal } as Sheet)) as [
+        number,
+        number,
+      ];
+    };
+
+    it('lies on its side on a wide sheet, c to the right, and fills it', () => {
+      const sheet = layoutFigure(long, along(false));
+      expect(sheet.isTurned).toBe(true);
+      const [across, up] = spanOf(sheet);
+      expect(across).toBeGreaterThan(0.85 * slide.widthPt);
+      expect(across).toBeLessThan(slide.widthPt);
+      expect(up).toBeLessThan(1e-6 * across);
+      const c = apply(viewRotation(sheet.crystal.camera.orientation), [0, 0, 1]);
+      expect(c[0]).toBeCloseTo(1, 9);
+    });
+
+    it('stays upright where that is asked for, on a high sheet, and as a camera has it', () => {
+      const upright = layoutFigure(long, along(true));
+      expect(upright.isTurned).toBe(false);
+      const [across, up] = spanOf(upright);
+      expect(across).toBeLessThan(1e-6 * up);
+      expect(up).toBeGreaterThan(0.85 * 540);
+      expect(layoutFigure(long, { ...along(false), widthPt: 400, heightPt: 900 }).isTurned).toBe(false);
+      const { camera, viewport } = upright.crystal;
+      const view = { kind: 'camera', camera, viewport, wholeCrystal: true, words: null } as const;
+      expect(layoutFigure(long, { ...slide, view }).isTurned).toBe(false);
+    });
+
+    it('has its texts at its side where the height is free, not below', () => {
+      const sheet = layoutFigure(long, { ...along(false), widthPt: 235, heightPt: null, textPt: 7 });
+      expect(sheet.isTurned).toBe(false);
+      const { xPt, widthPt, yPt, heightPt } = sheet.crystal;
+      for (const text of textsOf(sheet)) expect(text.xPt).toBeGreaterThan(xPt + widthPt - 0.01);
+      expect(yPt + heightPt).toBeCloseTo(sheet.heightPt, 6);
+    });
   });
 
   it('says the least height, at which all texts are inside, and puts them inside from there on', () => {

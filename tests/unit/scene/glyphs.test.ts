@@ -71,17 +71,43 @@ describe('polar surfaces', () => {
     expect(scene.caption).toContain('positive lobes orange, negative lobes blue and striped');
   });
 
-  it('coloured by V(zz) have the colours of plus and minus its size', () => {
-    const scene = buildScene(madeQuartz(), { quantity: 'efg', colourBy: 'vzz' });
-    const { stops } = scene.legend!;
-    const ends = new Set([stops[0]!, stops.at(-1)!].map(String));
-    const largest = [scene.polars!.positiveColours, scene.polars!.negativeColours].map((c) =>
-      String([...c.subarray(0, 3)]),
-    );
-    // one site only, so that its size is nearly the end of the bar
-    expect(scene.legend!.diverging).toBe(true);
-    expect(ends.size).toBe(2);
-    expect(largest[0]).not.toBe(largest[1]);
+  /** An axial tensor (−v/2, −v/2, v) of the EFG, a.u., on each of two sites with the given v. */
+  const twoGradients = (v: readonly [number, number]): CrystalDossier =>
+    madeDossier({
+      rows: [9, 0, 0, 0, 9, 0, 0, 0, 9],
+      sites: v.map((vzz, k) => ({
+        label: `Al${k + 1}`,
+        element: 'Al',
+        position: [0.25 + 0.5 * k, 0.5, 0.5] as const,
+        efg: [-vzz / 2, 0, 0, 0, -vzz / 2, 0, 0, 0, vzz] as const,
+      })),
+    });
+
+  it.each(['vzz', 'asymmetry', 'site'] as const)(
+    'coloured by %s have just the colour of their value, the negative lobe darker in every channel',
+    (colourBy) => {
+      const dossier = twoGradients([0.4, -0.4]);
+      const lobes = buildScene(dossier, { quantity: 'efg', colourBy });
+      // ellipsoids of the same tensors say what colour the value has
+      const solid = buildScene(dossier, { quantity: 'efg', colourBy, glyph: 'ellipsoid' });
+      expect(lobes.polars!.count).toBe(2);
+      for (const i of [0, 1]) {
+        const place = lobes.polars!.pickIds[i]! - 1;
+        const own = [...solid.quadrics.colours.subarray(3 * place, 3 * place + 3)];
+        const positive = [...lobes.polars!.positiveColours.subarray(3 * i, 3 * i + 3)];
+        const negative = [...lobes.polars!.negativeColours.subarray(3 * i, 3 * i + 3)];
+        expect(positive).toEqual(own);
+        negative.forEach((value, k) => expect(value).toBeLessThan(own[k]! * 0.75 + 1));
+      }
+      expect(lobes.caption).toContain('negative lobes darker and striped');
+    },
+  );
+
+  it('coloured by V(zz) tell its sign by warm and cool, whichever lobe', () => {
+    const { polars } = buildScene(twoGradients([0.4, -0.4]), { quantity: 'efg', colourBy: 'vzz' });
+    const isWarm = (colours: Uint8Array, i: number) => colours[3 * i]! > colours[3 * i + 2]!;
+    expect([0, 1].map((i) => isWarm(polars!.positiveColours, i))).toEqual([true, false]);
+    expect([0, 1].map((i) => isWarm(polars!.negativeColours, i))).toEqual([true, false]);
   });
 
   it('are pickable as their atoms and stay within the bounds of the scene', () => {

@@ -2,8 +2,10 @@ import { describe, expect, it } from 'vitest';
 import { symmetricEigen } from '#src/base/symmetric-eigen.ts';
 import { length, subtract } from '#src/base/vector3.ts';
 import type { Vec3 } from '#src/base/matrix3.ts';
+import type { CrystalDossier } from '#src/dossier/dossier.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
 import type { PolarBatch, Scene } from '#src/scene/scene.ts';
+import { madeDossier } from '#tests/support/made-dossier.ts';
 import { madeQuartz } from '#tests/support/made-quartz.ts';
 
 const three = (points: Float32Array, i: number): Vec3 =>
@@ -106,6 +108,65 @@ describe('the key', () => {
   });
 });
 
+/** Isotropic 100 ppm and the given largest deviation, on one atom of each element, side by side. */
+function unequal(deviations: Readonly<Record<string, number>>): CrystalDossier {
+  return madeDossier({
+    rows: [12, 0, 0, 0, 12, 0, 0, 0, 12],
+    sites: Object.entries(deviations).map(([element, d], k) => ({
+      label: `${element}1`,
+      element,
+      position: [0.2 + 0.3 * k, 0.5, 0.5] as const,
+      shieldingPpm: [100 - d / 2, 0, 0, 0, 100 - d / 2, 0, 0, 0, 100 + d] as const,
+    })),
+  });
+}
+
+describe('what one scale hides', () => {
+  it('is named with its size, beside the largest, and with what to do', () => {
+    const scene = buildScene(unequal({ O: 350, N: 9.64 }));
+    expect(scene.tensorElements).toEqual(['O']);
+    const [sentence, ...more] = scene.sizeNotes!;
+    expect(more).toEqual([]);
+    expect(sentence).toContain('N (up to 9.6 ppm)');
+    expect(sentence).toContain('O (up to 350 ppm)');
+    expect(scene.caption).toContain(`${sentence} Ticked alone under Show`);
+    expect(scene.key!.elementsWords).toBe('tensors too small to be seen at this scale');
+    expect(scene.elements.map(({ element }) => element)).toEqual(['N']);
+  });
+
+  it('is said too where the small ones are drawn because someone asked for them', () => {
+    const scene = buildScene(unequal({ O: 350, N: 9.64 }), { tensorElements: null });
+    expect(scene.sizeNotes!.join()).toMatch(/N \(up to 9.6 ppm\) are hardly seen/);
+    expect(scene.key!.marks).toContain('N: too small to be seen at this scale');
+  });
+
+  it('is nothing where all are seen, or drawn alone', () => {
+    for (const [deviations, options] of [
+      [{ O: 350, N: 90 }, {}],
+      [{ O: 350, N: 9.64 }, { tensorElements: ['N'] }],
+    ] as const) {
+      const scene = buildScene(unequal(deviations), options);
+      expect(scene.sizeNotes).toEqual([]);
+      expect(scene.caption).not.toContain('under Show');
+    }
+  });
+
+  it('tells elements without any tensor from those whose tensors are not drawn', () => {
+    const words = (options: Parameters<typeof buildScene>[1]) =>
+      buildScene(madeQuartz(), options).key!.elementsWords;
+    expect(words({ tensorElements: ['O'] })).toBe('tensors not drawn');
+    expect(words({ showTensors: false })).toBeNull();
+    const bare = madeDossier({
+      rows: [8, 0, 0, 0, 8, 0, 0, 0, 8],
+      sites: [
+        { label: 'O1', element: 'O', position: [0.2, 0.5, 0.5], shieldingPpm: [1, 0, 0, 0, 2, 0, 0, 0, 3] },
+        { label: 'H1', element: 'H', position: [0.7, 0.5, 0.5] },
+      ],
+    });
+    expect(buildScene(bare).key!.elementsWords).toBe('without a tensor');
+  });
+});
+
 describe('wishes that cannot be followed', () => {
   const unfollowed = (options: Parameters<typeof buildScene>[1]) =>
     buildScene(madeQuartz(), options).unfollowed!.join(' ');
@@ -118,8 +179,40 @@ describe('wishes that cannot be followed', () => {
     expect(unfollowed({ quantity: 'shift' })).toMatch(/no shift tensors here: shielding/);
   });
 
+  it('include a range cut down to what can be drawn, with the limit and the range that is left', () => {
+    // 9 atoms a cell: 40³ cells hold 576,000
+    const range = [
+      [0, 0, 0],
+      [40, 40, 40],
+    ] as const;
+    const scene = buildScene(madeQuartz(), { extent: 'range', range, bonds: false, showTensors: false });
+    const [sentence] = scene.unfollowed!;
+    const [, low, high] = /more than the 60,000 atoms .* a ([\d.]+) to ([\d.]+), b/.exec(sentence!)!;
+    expect(Number(low) + Number(high)).toBeCloseTo(40, 1);
+    const cells = (Number(high) - Number(low)) ** 3;
+    expect(9 * cells).toBeLessThan(60_100);
+    expect(9 * cells).toBeGreaterThan(50_000);
+    expect(scene.caption).toContain('more than the 60,000 atoms');
+    // and what was drawn is what is said, but for atoms on the borders and the limit itself
+    expect(scene.quadrics.count).toBeLessThanOrEqual(60_000);
+    expect(scene.quadrics.count).toBeGreaterThan(50_000);
+  });
+
+  it('include a shell round nothing and a range of cells without a cell', () => {
+    expect(unfollowed({ extent: 'shell' })).toMatch(/No site is chosen/);
+    const molecule = madeDossier({
+      rows: null,
+      sites: [{ label: 'C1', element: 'C', position: [0, 0, 0] }],
+    });
+    expect(buildScene(molecule, { extent: 'range' }).unfollowed).toEqual([
+      expect.stringContaining('gives no cell'),
+    ]);
+    expect(buildScene(molecule).unfollowed).toEqual([]);
+  });
+
   it('are none where all is drawn as asked', () => {
     expect(unfollowed({})).toBe('');
+    expect(unfollowed({ extent: 'range' })).toBe('');
     expect(unfollowed({ quantity: 'efg', colourBy: 'element' })).toBe('');
     expect(unfollowed({ glyph: 'axes', ellipsoid: 'total', colourBy: 'span' })).toBe('');
     expect(unfollowed({ showTensors: false, colourBy: 'difference' })).toBe('');
