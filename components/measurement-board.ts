@@ -18,7 +18,12 @@ export interface BoardEntry {
 export function measuredCrystal(store: Store): MeasuredCrystal | null {
   const crystal = store.state.derived?.crystal;
   return crystal
-    ? { lattice: crystal.lattice, symmetry: crystal.symmetry, site: (i) => store.site(i) }
+    ? {
+        lattice: crystal.lattice,
+        periodic: crystal.periodic,
+        symmetry: crystal.symmetry,
+        site: (i) => store.site(i),
+      }
     : null;
 }
 

@@ -2,6 +2,7 @@ import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { SceneExtent } from '#src/scene/scene.ts';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
+import { openAxes, repeatsThroughout } from '#src/store/periodicity.ts';
 import type { ShowContext } from './show-fields.ts';
 import { choice, group, numberField, tick } from './show-fields.ts';
 
@@ -44,9 +45,10 @@ function extentChoice(
     range: 'a range of cells',
     shell: 'round the selected site',
   };
+  const isRepeated = (crystal.periodic ?? repeatsThroughout).some(Boolean);
   const reasons: Partial<Record<'auto' | SceneExtent, string | null>> = {
     cell: noCell,
-    range: noCell,
+    range: noCell ?? (isRepeated ? null : 'the cell does not repeat'),
     asymmetric: noCell,
     molecules: crystal.hasBonds ? null : 'no bonds found',
     shell: selection || picture.shell ? null : 'select a site first',
@@ -73,7 +75,11 @@ function extentChoice(
   );
 }
 
-function rangeFields({ picture, set }: ShowContext): TemplateResult {
+/** Along axes that do not repeat there is one cell, and nothing to type. */
+function rangeFields({ picture, crystal, set }: ShowContext): TemplateResult {
+  const periodic = crystal.periodic ?? repeatsThroughout;
+  const open = openAxes(periodic);
+  const axes = [0, 1, 2].filter((k) => periodic[k]);
   const field = (corner: 0 | 1, k: number): TemplateResult => {
     const letter = 'abc'[k]!;
     return numberField(
@@ -91,9 +97,10 @@ function rangeFields({ picture, set }: ShowContext): TemplateResult {
       },
     );
   };
-  const isEmpty = [0, 1, 2].some((k) => picture.range[0][k]! > picture.range[1][k]!);
-  return html`<div class="range">${[0, 1, 2].map((k) => html`${field(0, k)}${field(1, k)}`)}</div>
-    <p class="note">In cells; fractions are allowed.</p>
+  const isEmpty = axes.some((k) => picture.range[0][k]! > picture.range[1][k]!);
+  return html`<div class="range">${axes.map((k) => html`${field(0, k)}${field(1, k)}`)}</div>
+    ${axes.length > 0 ? html`<p class="note">In cells; fractions are allowed.</p>` : nothing}
+    ${open.length > 0 ? html`<p class="note">The cell does not repeat along ${open.join(', ')}: one cell is drawn there.</p>` : nothing}
     ${isEmpty ? html`<p class="fault" role="alert">A range ends before it begins: nothing is in it.</p>` : nothing}`;
 }
 

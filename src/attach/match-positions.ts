@@ -1,6 +1,8 @@
 import { apply, rowsOf } from '#src/base/matrix3.ts';
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
-import { cross, length } from '#src/base/vector3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
+import { nearestCells, repeatsThroughout } from '#src/base/periodicity.ts';
+import { cross, length, subtract } from '#src/base/vector3.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import type { AtomImage } from './attachment.ts';
 
@@ -14,15 +16,16 @@ function planeSpacings(lattice: Lattice): Vec3 {
   return [spacing(b, c), spacing(c, a), spacing(a, b)];
 }
 
-/** The shortest of x's lattice images for a difference already within half a cell of each axis: tries the 27 neighbours. */
-function shortestLength(toCartesian: Mat3, difference: Vec3): number {
-  const wrapped = difference.map((x) => x - Math.round(x)) as unknown as Vec3;
+/** The shortest of a difference's lattice images: tries the 27 about the middle, of axes that do not repeat only itself. */
+function shortestLength(toCartesian: Mat3, difference: Vec3, periodic: Periodicity): number {
+  const wrapped = subtract(difference, nearestCells(difference, periodic));
+  const [u, v, w] = periodic.map(Number) as [number, number, number];
   let best = Infinity;
-  for (let i = -1; i <= 1; i += 1) {
-    for (let j = -1; j <= 1; j += 1) {
-      for (let k = -1; k <= 1; k += 1) {
-        const v = apply(toCartesian, [wrapped[0] + i, wrapped[1] + j, wrapped[2] + k]);
-        best = Math.min(best, length(v));
+  for (let i = -u; i <= u; i += 1) {
+    for (let j = -v; j <= v; j += 1) {
+      for (let k = -w; k <= w; k += 1) {
+        const image = apply(toCartesian, [wrapped[0] + i, wrapped[1] + j, wrapped[2] + k]);
+        best = Math.min(best, length(image));
       }
     }
   }
@@ -32,15 +35,19 @@ function shortestLength(toCartesian: Mat3, difference: Vec3): number {
 export interface PositionMatch {
   readonly imageIndex: number;
   readonly distanceAngstrom: number;
+  /** The two lie whole cells apart along an axis that does not repeat. */
+  readonly isCellsAway: boolean;
 }
 
 /**
  * Finder of the nearest atom of one element to a fractional position, within 0.5 Å, periodic. Bins of at least that
- * width make each question independent of the number of atoms.
+ * width make each question independent of the number of atoms. Whole cells along axes that do not repeat count only where no
+ * atom is found without: slabs and molecules are often calculated in a crystal's cell and come back moved into it.
  */
 export function positionFinder(
   lattice: Lattice,
   images: readonly AtomImage[],
+  periodic: Periodicity = repeatsThroughout,
 ): (fractional: Vec3, element: string) => PositionMatch | null {
   const spacings = planeSpacings(lattice);
   const counts = spacings.map((s) => Math.max(1, Math.min(512, Math.floor(s / matchDistanceAngstrom)))) as [
@@ -62,6 +69,13 @@ export function positionFinder(
     if (bin) bin.push(index);
     else bins.set(key(i, j, k), [index]);
   });
+  const matchOf = (difference: Vec3, imageIndex: number): PositionMatch | null => {
+    const direct = shortestLength(lattice.toCartesian, difference, periodic);
+    if (direct <= matchDistanceAngstrom) return { imageIndex, distanceAngstrom: direct, isCellsAway: false };
+    if (periodic.every(Boolean)) return null;
+    const moved = shortestLength(lattice.toCartesian, difference, repeatsThroughout);
+    return moved <= matchDistanceAngstrom ? { imageIndex, distanceAngstrom: moved, isCellsAway: true } : null;
+  };
   const around = (count: number) => (count < 3 ? [...Array(count).keys()] : [-1, 0, 1]);
   const steps = counts.map(around) as [number[], number[], number[]];
 
@@ -77,19 +91,19 @@ export function positionFinder(
           for (const imageIndex of bin ?? []) {
             const image = images[imageIndex]!;
             if (image.element !== element || !image.fractional) continue;
-            const distanceAngstrom = shortestLength(lattice.toCartesian, [
-              image.fractional[0] - fractional[0],
-              image.fractional[1] - fractional[1],
-              image.fractional[2] - fractional[2],
-            ]);
-            if (distanceAngstrom > matchDistanceAngstrom) continue;
-            if (!best || distanceAngstrom < best.distanceAngstrom) best = { imageIndex, distanceAngstrom };
+            const found = matchOf(subtract(image.fractional, fractional), imageIndex);
+            if (found && (!best || isNearer(found, best))) best = found;
           }
         }
       }
     }
     return best;
   };
+}
+
+function isNearer(one: PositionMatch, other: PositionMatch): boolean {
+  if (one.isCellsAway !== other.isCellsAway) return other.isCellsAway;
+  return one.distanceAngstrom < other.distanceAngstrom;
 }
 
 /** Root mean square of distances, Å; null of none. */

@@ -1,5 +1,6 @@
 import type { Vec3 } from '#src/base/matrix3.ts';
 import { apply } from '#src/base/matrix3.ts';
+import { repeatsThroughout } from '#src/base/periodicity.ts';
 import { add } from '#src/base/vector3.ts';
 import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
 
@@ -35,7 +36,7 @@ export interface ExtentInput {
   readonly hidden: ReadonlySet<number>;
 }
 
-/** Atoms of one unit cell, those on faces, edges and corners repeated; without a cell the atoms as given. */
+/** Atoms of one unit cell, those on faces it repeats across, edges and corners repeated; without a cell the atoms as given. */
 export function atomsOfCell(input: ExtentInput): DrawnAtom[] {
   return atomsInRange(input, oneCell);
 }
@@ -72,6 +73,16 @@ export function atomsOfMolecules({ dossier, hidden }: ExtentInput): DrawnAtom[] 
 /** No shift. */
 export const nowhere: Vec3 = [0, 0, 0];
 
+/** The part of a range in which there can be copies: along axes that do not repeat there is one cell only. */
+export function repeatedRange(
+  { periodic = repeatsThroughout }: CrystalDossier,
+  [low, high]: CellRange,
+): CellRange {
+  const corner = (ends: Vec3, cell: Vec3): Vec3 =>
+    ends.map((end, axis) => (periodic[axis] ? end : cell[axis]!)) as unknown as Vec3;
+  return [corner(low, oneCell[0]), corner(high, oneCell[1])];
+}
+
 /** A range that holds about as many atoms as can be drawn, about the same middle; the same range where it holds fewer. */
 export function drawableRange(dossier: CrystalDossier, asked: CellRange): CellRange {
   const low = asked[0].map((x, k) => Math.min(x, asked[1][k]!)) as unknown as Vec3;
@@ -90,9 +101,9 @@ export function drawableRange(dossier: CrystalDossier, asked: CellRange): CellRa
   ];
 }
 
-/** Cell shifts of an atom that bring it between the corners of a range, borders included. */
+/** Cell shifts of an atom that bring it between the corners of a range, borders included; 0 along axes that do not repeat. */
 function* shiftsInto(dossier: CrystalDossier, atom: EquivalentAtom, [low, high]: CellRange): Generator<Vec3> {
-  const { lattice } = dossier;
+  const { lattice, periodic = repeatsThroughout } = dossier;
   const { fractional } = atom;
   if (!lattice || !fractional) {
     yield nowhere;
@@ -100,11 +111,11 @@ function* shiftsInto(dossier: CrystalDossier, atom: EquivalentAtom, [low, high]:
   }
   const edges = [lattice.cell.a, lattice.cell.b, lattice.cell.c];
   // + 0 turns −0 into 0
-  const first = [0, 1, 2].map(
-    (k) => Math.ceil(low[k]! - borderToleranceAngstrom / edges[k]! - fractional[k]!) + 0,
+  const first = [0, 1, 2].map((k) =>
+    periodic[k] ? Math.ceil(low[k]! - borderToleranceAngstrom / edges[k]! - fractional[k]!) + 0 : 0,
   );
   const last = [0, 1, 2].map((k) =>
-    Math.floor(high[k]! + borderToleranceAngstrom / edges[k]! - fractional[k]!),
+    periodic[k] ? Math.floor(high[k]! + borderToleranceAngstrom / edges[k]! - fractional[k]!) : 0,
   );
   if (first.some((from, k) => from > last[k]!)) return;
   for (let i = first[0]!; i <= last[0]!; i++) {

@@ -1,8 +1,16 @@
+import { openAxes, repeatsThroughout } from '#src/base/periodicity.ts';
 import type { CrystalDossier } from '#src/dossier/dossier.ts';
 import { asymmetricAtoms } from './asymmetric-atoms.ts';
 import { bondedNeighbours, missingLigands } from './context-atoms.ts';
 import type { CellRange, DrawnAtom, ExtentInput } from './drawn-atoms.ts';
-import { atomsInRange, atomsOfCell, atomsOfMolecules, drawableRange, mostAtoms } from './drawn-atoms.ts';
+import {
+  atomsInRange,
+  atomsOfCell,
+  atomsOfMolecules,
+  drawableRange,
+  mostAtoms,
+  repeatedRange,
+} from './drawn-atoms.ts';
 import type { SceneExtent } from './scene.ts';
 import type { SceneOptions } from './scene-options.ts';
 import { shellAtoms } from './shell-atoms.ts';
@@ -22,6 +30,10 @@ export interface ChosenAtoms {
   readonly isNarrowed: boolean;
   /** Molecules that reach into the range are drawn whole. */
   readonly isCompleted: boolean;
+  /** Axes along which the cell does not repeat. */
+  readonly openAxes: readonly string[];
+  /** Those of them along which the range asked for is not the one cell there is. */
+  readonly unrepeated: readonly string[];
   /** Sites of the shell's middle. */
   readonly middle: readonly string[];
 }
@@ -35,7 +47,9 @@ type ExtentOptions = Pick<
 export function chooseAtoms(input: ExtentInput, options: ExtentOptions): ChosenAtoms {
   const { dossier } = input;
   const extent = chooseExtent(dossier, options);
-  const range = extent === 'range' ? drawableRange(dossier, options.range) : null;
+  const open = dossier.lattice ? openAxes(dossier.periodic ?? repeatsThroughout) : [];
+  const asked = repeatedRange(dossier, options.range);
+  const range = extent === 'range' ? drawableRange(dossier, asked) : null;
   const first = firstAtoms(input, extent, range, options);
   const completing = options.bonds && options.bondedNeighbours && first.length < mostAtoms;
   const rest = completing && range ? missingMoleculeAtoms(input, first) : [];
@@ -51,8 +65,10 @@ export function chooseAtoms(input: ExtentInput, options: ExtentOptions): ChosenA
     ownCount: own.length,
     range,
     isCut,
-    isNarrowed: range !== null && spread(range) < spread(options.range),
+    isNarrowed: range !== null && spread(range) < spread(asked),
     isCompleted: rest.length > 0,
+    openAxes: open,
+    unrepeated: range ? open.filter((letter) => !isOneCell(options.range, 'abc'.indexOf(letter))) : [],
     middle:
       extent === 'shell'
         ? dossier.sites.flatMap(({ index, label }) =>
@@ -78,6 +94,10 @@ function chooseExtent(dossier: CrystalDossier, { extent, shell }: ExtentOptions)
   const isEmptyShell = !shell?.siteIndices.some((index) => dossier.sites[index] !== undefined);
   if (extent !== 'auto' && !(extent === 'shell' && isEmptyShell)) return extent;
   return Object.keys(dossier.wholeMolecules).length > 0 ? 'molecules' : 'cell';
+}
+
+function isOneCell([low, high]: CellRange, axis: number): boolean {
+  return low[axis] === 0 && high[axis] === 1;
 }
 
 /** Sum of the three edges, in cells. */

@@ -1,5 +1,6 @@
 import type { Vec3 } from '#src/base/matrix3.ts';
 import { apply, determinant } from '#src/base/matrix3.ts';
+import { nearestCells, repeatsThroughout } from '#src/base/periodicity.ts';
 import { add, length, subtract } from '#src/base/vector3.ts';
 import type { EquivalentAtom } from '#src/dossier/dossier.ts';
 import type { MeasuredCrystal } from './measure.ts';
@@ -50,18 +51,14 @@ const missAngstrom = 0.1;
 function imageAt(
   fractional: Vec3,
   equivalents: readonly EquivalentAtom[],
-  { lattice }: MeasuredCrystal,
+  { lattice, periodic }: MeasuredCrystal,
 ): Image | null {
   let best: Image | null = null;
   let least = missAngstrom;
   for (const { id, fractional: own } of equivalents) {
     if (!own) continue;
     const difference = subtract(fractional, own);
-    const cell: Vec3 = [
-      Math.round(difference[0]) || 0,
-      Math.round(difference[1]) || 0,
-      Math.round(difference[2]) || 0,
-    ];
+    const cell = nearestCells(difference, periodic);
     const miss = length(apply(lattice!.toCartesian, subtract(difference, cell)));
     if (miss >= least) continue;
     least = miss;
@@ -100,10 +97,10 @@ const mostTranslations = 200_000;
 /**
  * The shortest distance between the first atom of a distance and any lattice translate of the second, where it is not the one
  * chosen; null where it is, without a cell, or for an atom and its own translate. Exact for cells of any skewness: a
- * translate nearer than d is at most d/spacing lattice planes away along each axis.
+ * translate nearer than d is at most d/spacing lattice planes away along each axis, and none along axes that do not repeat.
  */
 export function shorterImage(measurement: Measurement, crystal: MeasuredCrystal): ShorterImage | null {
-  const { lattice } = crystal;
+  const { lattice, periodic = repeatsThroughout } = crystal;
   const [first, second] = measurement.atoms;
   if (measurement.kind !== 'distance' || !lattice || !first || !second) return null;
   const [from, to] = [placeOf(first, crystal), placeOf(second, crystal)];
@@ -111,7 +108,7 @@ export function shorterImage(measurement: Measurement, crystal: MeasuredCrystal)
   const chosen = length(subtract(to.position, from.position));
   const apart = subtract(to.atom.fractional, add(from.atom.fractional, first.cellShift));
   const distanceOf = (cell: Vec3): number => length(apply(lattice.toCartesian, add(apart, cell)));
-  const nearest: Vec3 = [0 - Math.round(apart[0]), 0 - Math.round(apart[1]), 0 - Math.round(apart[2])];
+  const nearest = nearestCells(subtract([0, 0, 0], apart), periodic);
   let best: ShorterImage = {
     distanceAngstrom: distanceOf(nearest),
     second: { ...second, cellShift: nearest },
@@ -120,8 +117,10 @@ export function shorterImage(measurement: Measurement, crystal: MeasuredCrystal)
   const spans = [0, 1, 2].map(
     (k) => best.distanceAngstrom * length([m[3 * k]!, m[3 * k + 1]!, m[3 * k + 2]!]),
   );
-  const ranges = spans.map(
-    (span, k) => [Math.ceil(-apart[k]! - span), Math.floor(-apart[k]! + span)] as const,
+  const ranges = spans.map((span, k) =>
+    periodic[k]
+      ? ([Math.ceil(-apart[k]! - span), Math.floor(-apart[k]! + span)] as const)
+      : ([0, 0] as const),
   );
   if (ranges.reduce((product, [low, high]) => product * (high - low + 1), 1) > mostTranslations) return null;
   for (let i = ranges[0]![0]; i <= ranges[0]![1]; i++) {

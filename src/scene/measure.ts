@@ -1,5 +1,7 @@
 import type { Vec3 } from '#src/base/matrix3.ts';
 import { apply, transpose } from '#src/base/matrix3.ts';
+import { repeatsThroughout } from '#src/base/periodicity.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
 import { add, cross, dot, length, normalize, subtract } from '#src/base/vector3.ts';
 import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
 import type { MeasuredAtom, MeasuredAxis, Measurement } from './measurement.ts';
@@ -7,6 +9,8 @@ import type { MeasuredAtom, MeasuredAxis, Measurement } from './measurement.ts';
 /** What measuring needs to know of a crystal. */
 export interface MeasuredCrystal {
   readonly lattice: CrystalDossier['lattice'];
+  /** As in the dossier: absent where the lattice repeats along all three. */
+  readonly periodic?: Periodicity | undefined;
   readonly symmetry: Pick<CrystalDossier['symmetry'], 'operations'>;
   /** Site of an index; null where the crystal has none, or it isn't known yet. */
   readonly site: (index: number) => SiteDossier | null;
@@ -70,14 +74,15 @@ export function measure(measurement: Measurement, crystal: MeasuredCrystal): Mea
   }
 }
 
-/** An atom of a measurement where it stands; null where the crystal has none such. */
+/** An atom of a measurement where it stands; null where the crystal has none such, as beside a cell that does not repeat. */
 export function placeOf(
   { atomId, cellShift }: MeasuredAtom,
-  { lattice, site }: MeasuredCrystal,
+  { lattice, periodic = repeatsThroughout, site }: MeasuredCrystal,
 ): { readonly site: SiteDossier; readonly atom: EquivalentAtom; readonly position: Vec3 } | null {
   const found = site(siteIndexOf(atomId));
   const atom = found?.equivalents.find(({ id }) => id === atomId);
   if (!found || !atom) return null;
+  if (lattice && cellShift.some((cells, axis) => cells !== 0 && !periodic[axis])) return null;
   const shift = lattice ? apply(lattice.toCartesian, cellShift) : ([0, 0, 0] as const);
   return { site: found, atom, position: add(atom.cartesian, shift) };
 }

@@ -1,5 +1,6 @@
 import type { Vec3 } from '#src/base/matrix3.ts';
 import { apply } from '#src/base/matrix3.ts';
+import { nearestCells } from '#src/base/periodicity.ts';
 import { length, subtract } from '#src/base/vector3.ts';
 import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
 
@@ -94,9 +95,9 @@ function modulo(value: number, period: number): number {
 }
 
 /** Å, between nearest images. */
-function apart({ lattice }: CrystalDossier, one: EquivalentAtom, other: EquivalentAtom): number {
+function apart({ lattice, periodic }: CrystalDossier, one: EquivalentAtom, other: EquivalentAtom): number {
   if (!lattice || !one.fractional || !other.fractional)
     return length(subtract(one.cartesian, other.cartesian));
-  const [x, y, z] = subtract(one.fractional, other.fractional);
-  return length(apply(lattice.toCartesian, [x - Math.round(x), y - Math.round(y), z - Math.round(z)]));
+  const difference = subtract(one.fractional, other.fractional);
+  return length(apply(lattice.toCartesian, subtract(difference, nearestCells(difference, periodic))));
 }

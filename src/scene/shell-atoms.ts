@@ -1,5 +1,6 @@
 import type { Vec3 } from '#src/base/matrix3.ts';
 import { rowsOf } from '#src/base/matrix3.ts';
+import { repeatsThroughout } from '#src/base/periodicity.ts';
 import { add, distance, length, subtract } from '#src/base/vector3.ts';
 import type { CrystalDossier, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
 import type { DrawnAtom, ExtentInput } from './drawn-atoms.ts';
@@ -35,7 +36,7 @@ export function shellAtoms(
 type Put = (atom: EquivalentAtom, site: SiteDossier, shift: Vec3) => void;
 
 function putWithin(dossier: CrystalDossier, centre: EquivalentAtom, radius: number, put: Put): void {
-  const { lattice } = dossier;
+  const { lattice, periodic = repeatsThroughout } = dossier;
   // a sphere reaches as far along a cell axis as the reciprocal vector is long
   const reach = lattice ? rowsOf(lattice.toFractional).map((row) => radius * length(row)) : [];
   for (const site of dossier.sites) {
@@ -46,7 +47,10 @@ function putWithin(dossier: CrystalDossier, centre: EquivalentAtom, radius: numb
       }
       const away = subtract(centre.fractional, atom.fractional);
       const [from, to] = [-1, 1].map((side) =>
-        away.map((x, k) => (side < 0 ? Math.ceil(x - reach[k]!) : Math.floor(x + reach[k]!)) + 0),
+        away.map((x, k) => {
+          if (!periodic[k]) return 0;
+          return (side < 0 ? Math.ceil(x - reach[k]!) : Math.floor(x + reach[k]!)) + 0;
+        }),
       );
       for (let i = from![0]!; i <= to![0]!; i++) {
         for (let j = from![1]!; j <= to![1]!; j++) {

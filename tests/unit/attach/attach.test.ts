@@ -111,6 +111,19 @@ describe('matching by position', () => {
     );
   });
 
+  it('takes whole cells along axes that do not repeat only where nothing lies nearer', () => {
+    const slab = [true, true, false] as const;
+    const find = positionFinder(
+      lattice,
+      [image(0, 'O', [0.1, 0.2, 1.3]), image(1, 'O', [0.1, 0.2, 0.31])],
+      slab,
+    );
+    expect(find([1.1, 0.2, 1.31], 'O')).toMatchObject({ imageIndex: 0, isCellsAway: false });
+    expect(find([0.1, 0.2, 0.3], 'O')).toMatchObject({ imageIndex: 1, isCellsAway: false });
+    expect(find([0.1, 0.2, -0.7], 'O')).toMatchObject({ imageIndex: 0, isCellsAway: true });
+    expect(find([0.1, 0.2, 0.7], 'O')).toBeNull();
+  });
+
   it('never takes another element', () => {
     expect(positionFinder(lattice, images)([0.1, 0.2, 0.3], 'Si')).toBeNull();
   });
@@ -129,6 +142,19 @@ describe('attaching a set', () => {
     attached.bySite[1]![0]!.tensor.forEach((value, i) => expect(value).toBeCloseTo(expected[i]!, 10));
     expect(attached.rmsDisplacementAngstrom).toBeCloseTo(0, 9);
     expect(log.list()).toEqual([]);
+  });
+
+  it('says where atoms were found whole cells away along an axis that does not repeat', () => {
+    const position = apply(lattice.toCartesian, [0.1, 0.2, 2.3]);
+    const log = new ProblemLog();
+    const attach = (periodic: readonly [boolean, boolean, boolean]) =>
+      attachTensors(set([entry('Al', position, tensor)]), { ...target, periodic }, log);
+    expect(attach([true, true, false])?.bySite[0]).toHaveLength(1);
+    expect(log.list()).toMatchObject([
+      { code: 'attach-cells-away', severity: 'note', got: '1 of 1 so far away' },
+    ]);
+    expect(attach([false, false, true])?.bySite[0]).toHaveLength(1);
+    expect(log.list()).toHaveLength(1);
   });
 
   it('leaves out what belongs to no atom, and what comes twice, and says so', () => {
