@@ -1,3 +1,4 @@
+import { countOf, wordFor } from '#src/base/count-of.ts';
 import { problem } from '#src/base/problem.ts';
 import type { Place, Problem } from '#src/base/problem.ts';
 import { binaryKindOf } from './binary-kinds.ts';
@@ -146,7 +147,7 @@ function unpackProblem(
       'error',
       'bytes-gzip-broken',
       kept
-        ? `The gzip file is damaged or cut off; the first ${unpacked.bytes.length} bytes of its text were kept.`
+        ? `The gzip file is damaged or cut off; the first ${countOf(unpacked.bytes.length, 'byte')} of its text ${wordFor(unpacked.bytes.length, 'was', 'were')} kept.`
         : 'The gzip file is damaged or cut off; nothing could be unpacked.',
       { place, hint: 'Fetch or pack the file again.' },
     );

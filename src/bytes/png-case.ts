@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import { caseKeyword } from '#src/base/case-keyword.ts';
 import { crc32 } from '#src/base/crc32.ts';
 import type { UnpackLimits } from './gunzip.ts';
@@ -26,13 +27,17 @@ export async function pngCase(bytes: Uint8Array, limits: UnpackLimits): Promise<
   if (![0x49, 0x48, 0x44, 0x52].every((letter, k) => bytes[12 + k] === letter)) return { kind: 'none' };
   const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
   for (let at = signature.length; ;) {
-    if (at + 12 > bytes.length) return { kind: 'broken', reason: `it ends after ${bytes.length} bytes` };
+    if (at + 12 > bytes.length)
+      return { kind: 'broken', reason: `it ends after ${countOf(bytes.length, 'byte')}` };
     const length = view.getUint32(at);
     const type = String.fromCharCode(...bytes.subarray(at + 4, at + 8));
     const end = at + 12 + length;
     if (type === 'IEND') return { kind: 'none' };
     if (end > bytes.length) {
-      return { kind: 'broken', reason: `it ends after ${bytes.length} bytes, within a piece of ${length}` };
+      return {
+        kind: 'broken',
+        reason: `it ends after ${countOf(bytes.length, 'byte')}, within a piece of ${length}`,
+      };
     }
     const data = bytes.subarray(at + 8, end - 4);
     if (type === 'iTXt' && startsWith(data, caseKeyword)) {

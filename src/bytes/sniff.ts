@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import { lineCount, lineText } from './source-from-text.ts';
 import type { SourceText } from './source-text.ts';
 
@@ -75,7 +76,7 @@ export function sniffText(source: SourceText): Sniffed {
   }
   const foreign = foreignBeginnings.find(({ pattern }) => pattern.test(beginning));
   if (foreign !== undefined) return { format: 'unknown', reason: foreign.reason, hint: foreign.hint };
-  return sniffXyz(source) ?? sniffCif(source) ?? unknownText(source);
+  return sniffXyz(source) ?? sniffCif(source) ?? sniffMiscounted(source) ?? unknownText(source);
 }
 
 function sniffXyz(source: SourceText): Sniffed | null {
@@ -85,16 +86,41 @@ function sniffXyz(source: SourceText): Sniffed | null {
   if (count === null || ((count[2] ?? '').trim() !== '' && looksLikeAtom(line))) return null;
   const atoms = count[1] ?? '0';
   const comment = lineText(source, first + 1);
-  if (/(?:^|\s)"?(?:lattice|properties)"?\s*=/i.test(comment)) {
-    return xyz(`line ${first + 1} counts ${atoms} atoms and the next line carries Lattice or Properties`);
+  if (extendedKey.test(comment)) {
+    return xyz(
+      `line ${first + 1} counts ${countOf(Number(atoms), 'atom')} and the next line carries Lattice or Properties`,
+    );
   }
   if (looksLikeAtom(lineText(source, first + 2))) {
-    return xyz(`line ${first + 1} counts ${atoms} atoms and rows of a symbol and coordinates follow`);
+    return xyz(
+      `line ${first + 1} counts ${countOf(Number(atoms), 'atom')} and rows of a symbol and coordinates follow`,
+    );
   }
   const alone = (count[2] ?? '').trim() === '';
   const rest = source.text.slice(source.lineStarts[first + 2] ?? source.text.length);
   return alone && rest.trim() === ''
-    ? xyz(`line ${first + 1} counts ${atoms} atoms, but no rows follow`)
+    ? xyz(`line ${first + 1} counts ${countOf(Number(atoms), 'atom')}, but no rows follow`)
+    : null;
+}
+
+const extendedKey = /(?:^|\s)"?(?:lattice|properties)"?\s*=/i;
+
+/**
+ * True where rows like atoms stand as in an XYZ file, while the line that should count them holds another number, or anything
+ * before a comment line with Lattice or Properties.
+ */
+export function isMiscounted(source: SourceText, first: number): boolean {
+  if (!looksLikeAtom(lineText(source, first + 2))) return false;
+  const comment = lineText(source, first + 1).slice(0, 10_000);
+  return numberPattern.test(lineText(source, first).trim().slice(0, 100)) || extendedKey.test(comment);
+}
+
+function sniffMiscounted(source: SourceText): Sniffed | null {
+  const first = firstFilledLine(source);
+  return isMiscounted(source, first)
+    ? xyz(
+        `line ${first + 1} is no count of atoms, but rows of a symbol and coordinates follow from line ${first + 3}`,
+      )
     : null;
 }
 
@@ -140,10 +166,17 @@ function onlyCommentsBefore(text: string, offset: number): boolean {
 
 function unknownText(source: SourceText): Sniffed {
   const first = firstFilledLine(source);
-  const shown = lineText(source, first).trim().slice(0, 60);
+  const row = [first, first + 1, first + 2].find((line) => looksLikeAtom(lineText(source, line)));
+  if (row !== undefined) {
+    return {
+      format: 'unknown',
+      reason: `line ${first + 1} is no number of atoms, while rows like atoms start in line ${row + 1}`,
+      hint: 'If it is an XYZ file, the number of atoms stands alone in its first line, a comment in its second; the atoms follow.',
+    };
+  }
   return {
     format: 'unknown',
-    reason: `line ${first + 1} reads "${shown}", and neither a data block nor an atom count was found`,
+    reason: 'neither a data block nor a number of atoms was found',
     hint: 'A CIF starts with data_NAME; an XYZ file with the number of atoms, a comment line and one row an atom.',
   };
 }

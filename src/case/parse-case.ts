@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { Problem, ProblemDetails, Severity } from '#src/base/problem.ts';
 import { ProblemLog } from '#src/base/problem.ts';
 import type { CaseDocument } from './case-document.ts';
@@ -172,7 +173,7 @@ class CaseReading {
     ];
     const beyond = stated.filter(([, source]) => source >= count);
     if (beyond.length === 0) return document;
-    const allowed = `0 to ${count - 1}, there being ${count} sources`;
+    const allowed = `0 to ${count - 1}, there being ${countOf(count, 'source')}`;
     return this.#invalid(beyond.map(([path, got]) => ({ path, kind: 'invalid', got: String(got), allowed })));
   }
 

@@ -8,7 +8,7 @@ import {
   rowsOf,
   transpose,
 } from '#src/base/matrix3.ts';
-import { dot, length, scale, subtract } from '#src/base/vector3.ts';
+import { cross, dot, length, scale, subtract } from '#src/base/vector3.ts';
 import { cosDegrees, degreesFromCosine, sinDegrees } from './exact-angles.ts';
 import type { LatticeSetting, LatticeSettingName } from './settings.ts';
 import { defaultLatticeSetting, latticeSetting, latticeSettings } from './settings.ts';
@@ -125,7 +125,7 @@ export function cellProblem(cell: CellConstants): string | null {
   }
   const flatness = volumeShare(cell);
   if (flatness > flattest) return null;
-  return `The cell vectors lie almost in one plane (volume ${flatness} of a·b·c); the volume is more than ${flattest} of a·b·c.`;
+  return `The cell is flat: its vectors lie ${isFlat(flatness)} in one plane. Its volume is ${shown(flatness * a * b * c)} Å³; with these lengths it is more than ${shown(flattest * a * b * c)} Å³.`;
 }
 
 /** The same for three vectors as rows (Å): finite, of sensible length and not in one plane; null where they span a cell. */
@@ -137,9 +137,35 @@ export function rowsProblem(rows: Mat3): string | null {
       return `Lattice vector ${index + 1} is ${size} Å long; a length is between ${shortestVector} and ${longestVector} Å.`;
     }
   }
-  const flatness = Math.abs(determinant(rows)) / lengths.reduce((product, size) => product * size, 1);
+  const product = lengths.reduce((all, size) => all * size, 1);
+  const flatness = Math.abs(determinant(rows)) / product;
   if (flatness > flattest) return null;
-  return `The lattice vectors lie almost in one plane (volume ${flatness} of the product of their lengths); it is more than ${flattest} of it.`;
+  const where = parallelVectors(rows) ?? `the three vectors lie ${isFlat(flatness)} in one plane`;
+  return `The cell is flat: ${where}. Its volume is ${shown(flatness * product)} Å³; vectors of ${lengths.map(shown).join(', ')} Å span more than ${shown(flattest * product)} Å³.`;
+}
+
+/** “vectors 1 and 2 are parallel”, where two are (within 0.006°). */
+function parallelVectors(rows: Mat3): string | null {
+  const vectors = rowsOf(rows);
+  const pair = (
+    [
+      [0, 1],
+      [0, 2],
+      [1, 2],
+    ] as const
+  ).find(([i, j]) => {
+    const [p, q] = [vectors[i], vectors[j]];
+    return length(cross(p, q)) <= flattest * length(p) * length(q);
+  });
+  return pair ? `vectors ${pair[0] + 1} and ${pair[1] + 1} are parallel` : null;
+}
+
+function isFlat(flatness: number): string {
+  return flatness < 1e-9 ? 'exactly' : 'almost';
+}
+
+function shown(value: number): string {
+  return String(Number(value.toPrecision(3)));
 }
 
 /**

@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import { apply, identity3 } from '#src/base/matrix3.ts';
 import type { Mat3, VecFrac } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
@@ -30,7 +31,7 @@ function sameRotation(a: Mat3, b: Mat3): boolean {
 function heading(symmetry: CrystalSymmetry, tabulated: SpaceGroupSetting | null): string {
   const { hermannMauguin, number, operations, stated } = symmetry;
   if (!stated) return 'no symmetry stated';
-  const name = hermannMauguin ?? `group of ${operations.length} operations`;
+  const name = hermannMauguin ?? `group of ${countOf(operations.length, 'operation')}`;
   if (number === null) return name;
   const meant = hermannMauguin === null ? null : settingFromHermannMauguin(hermannMauguin);
   if (tabulated && meant && meant.number !== null && meant.number !== number) {

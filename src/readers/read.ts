@@ -28,12 +28,14 @@ export function readText(source: SourceText, options: ReadOptions = {}): Reading
   if (sniffed.format === 'xyz') {
     return readXyz(source, { ...(accept && { accept }), ...(progress && { progress }) });
   }
-  const place = { file: source.name, line: firstFilledLine(source) + 1, column: 1 };
+  const first = firstFilledLine(source);
+  const place = { file: source.name, line: first + 1, column: 1 };
+  const got = lineText(source, first).trim().slice(0, 60) || null;
   const unknown = problem(
     'error',
     'format-unknown',
     `The format of this text is not known: ${sniffed.reason}. Nothing was read.`,
-    { place, got: sniffed.reason, allowed: acceptedFormats, hint: sniffed.hint },
+    { place, got, allowed: acceptedFormats, hint: sniffed.hint },
   );
   return {
     format: 'unknown',

@@ -83,15 +83,17 @@ function unreadable(file: string): Reading {
   return { format: 'unknown', file, structures: [], tensorSets: [], proposals: [], problems: [] };
 }
 
-function noStructure(read: readonly ReadSource[]): Problem[] {
+/** Files without a structure; nothing where an error of the reading says so already. */
+function noStructure(read: readonly ReadSource[], problems: readonly Problem[]): Problem[] {
   const held = read.some(({ reading }) => reading.tensorSets.length > 0);
+  if (!held && problems.some(({ severity }) => severity === 'error')) return [];
   const names = read.map(({ file }) => file.name).join(', ');
   const message = held
     ? `${names} holds tensors but no structure to put them on.`
     : `${names} holds no structure that could be read.`;
   const hint = held
     ? 'Open a structure first, then add this file to it.'
-    : 'A CIF, an XYZ or an extended XYZ with a Lattice is expected; the problems above say what stood in the way.';
+    : 'A CIF, an XYZ or an extended XYZ with a Lattice is expected.';
   return [problem('error', 'no-structure', message, { hint, allowed: 'CIF, XYZ, extended XYZ' })];
 }
 
@@ -161,7 +163,7 @@ class ReadingEngine implements Engine {
       ...read.flatMap(({ reading }) => reading.problems),
     ];
     if (!chosen) {
-      const problems = [...readingProblems, ...noStructure(read)];
+      const problems = [...readingProblems, ...noStructure(read, readingProblems)];
       return { derived: { ...base, chosen: null, crystal: null, problems }, dossier: null };
     }
     watched(readingShare, 'loading the symmetry tables');

@@ -1,3 +1,5 @@
+import { wordFor } from '#src/base/count-of.ts';
+
 /** A number with a fixed count of decimals and a true minus; −0.00 reads 0.00; null and non-finite numbers read "undefined". */
 export function formatNumber(value: number | null | undefined, decimals: number): string {
   if (value === null || value === undefined || !Number.isFinite(value)) return 'undefined';
@@ -59,7 +61,7 @@ export function formatPosition(values: readonly number[], decimals: number): str
 
 /** `1 atom`, `2 atoms`. */
 export function counted(count: number, word: string): string {
-  return `${formatCount(count)} ${word}${count === 1 ? '' : 's'}`;
+  return `${formatCount(count)} ${wordFor(count, word)}`;
 }
 
 /** A symmetry operation with true minus signs. */

@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { CifLoop, CifValue } from './cif-document.ts';
 import type { CifLexer, TokenKind } from './lexer.ts';
 import { cifLimits } from './limits.ts';
@@ -78,7 +79,7 @@ function reportMissingLoop(names: readonly NameAt[], count: number, report: CifR
     'warning',
     'cif-missing-loop',
     names[0]!.offset,
-    `${names.length === 1 ? 'A name is' : `${names.length} names are`} followed by ${count} values without a loop_ before; they were read as a loop.`,
+    `${names.length === 1 ? 'A name is' : `${names.length} names are`} followed by ${countOf(count, 'value')} without a loop_ before; they were read as a loop.`,
     {
       got: names[0]!.name.slice(0, 80),
       allowed: 'loop_ before names that share rows of values',

@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { CifValue } from './cif-document.ts';
 import type { CifReport } from './report.ts';
 
@@ -77,10 +78,10 @@ function reportBroken(first: CifValue, count: number, width: number, report: Cif
     'error',
     'cif-loop-row-broken',
     first.offset,
-    `This row holds ${count} values for the ${width} names of its loop; it was left out and the other rows kept.`,
+    `This row holds ${countOf(count, 'value')} for the ${countOf(width, 'name')} of its loop; it was left out and the other rows kept.`,
     {
-      got: `${count} values`,
-      allowed: `${width} values`,
+      got: countOf(count, 'value'),
+      allowed: countOf(width, 'value'),
       hint: 'Look for a missing value or a missing quote.',
     },
   );

@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { CifLoop, CifValue } from './cif-document.ts';
 import { rowsByLine } from './loop-rows.ts';
 import type { CifReport } from './report.ts';
@@ -34,9 +35,9 @@ export function completeLoop(
     'error',
     'cif-loop-row-cut',
     cut.offset,
-    `This loop of ${width} names holds ${values.length} values, which is no whole number of rows; the last ${excess} were left out.`,
+    `This loop of ${countOf(width, 'name')} holds ${countOf(values.length, 'value')}, which is no whole number of rows; the last ${countOf(excess, 'was', 'were')} left out.`,
     {
-      got: `${values.length} values`,
+      got: countOf(values.length, 'value'),
       allowed: `a multiple of ${width}`,
       hint: 'Look for a missing value or a missing quote.',
     },
@@ -50,7 +51,7 @@ export function reportEmptyLoop(names: readonly NameAt[], offset: number, report
     'warning',
     'cif-empty-loop',
     offset,
-    `This loop has ${names.length === 1 ? 'a name' : `${names.length} names`} and no values.`,
+    `This loop has ${countOf(names.length, 'name')} and no values.`,
     {
       got: names[0]!.name,
       allowed: 'at least one row of values',

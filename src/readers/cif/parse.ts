@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { ReportProgress } from '#src/base/progress.ts';
 import { unwatched } from '#src/base/progress.ts';
@@ -149,7 +150,7 @@ class Parser {
       start,
       'A loop_ has no names after it; its values were left out.',
       {
-        got: count === 0 ? 'no values' : `${count} values`,
+        got: count === 0 ? 'no values' : countOf(count, 'value'),
         allowed: 'names that start with _, then values',
       },
     );

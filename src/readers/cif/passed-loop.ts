@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { CifLoop } from './cif-document.ts';
 import { CifLexer } from './lexer.ts';
 import type { NameAt } from './loop.ts';
@@ -30,9 +31,9 @@ export function passedLoop(
       'warning',
       'cif-loop-row-broken',
       brokenRow(passed, width, lexer),
-      `A row is incomplete or too long: this loop of ${width} names holds ${count} values, which is no whole number of rows. Nothing of it is used here.`,
+      `A row is incomplete or too long: this loop of ${countOf(width, 'name')} holds ${countOf(count, 'value')}, which is no whole number of rows. Nothing of it is used here.`,
       {
-        got: `${count} values`,
+        got: countOf(count, 'value'),
         allowed: `a multiple of ${width}`,
         hint: 'The file may be cut short, or a value or a quote is missing.',
       },

@@ -71,8 +71,8 @@ function blockProgress(progress: ReportProgress, count: number): (block: number)
   };
 }
 
-/** Syntax says “no data block” of the same text of which we say more plainly what it is. */
+/** Syntax says “no data block” or “stray values” of the same text of which we say more plainly what it is. */
 function withoutTwins(problems: readonly Problem[]): readonly Problem[] {
   if (!problems.some(({ code }) => code === 'cif-not-a-cif')) return problems;
-  return problems.filter(({ code }) => code !== 'cif-no-data-block');
+  return problems.filter(({ code }) => code !== 'cif-no-data-block' && code !== 'cif-stray-value');
 }

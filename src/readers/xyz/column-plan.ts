@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
 import type { CommentLine } from './comment-line.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
@@ -119,7 +120,7 @@ function reportShape(column: Column, place: Place, log: ProblemLog): void {
   log.add(
     'error',
     'xyz-tensor-shape',
-    `The column ${column.name} has ${column.count} fields of type ${column.type}; a tensor has nine real ones. It was not read.`,
+    `The column ${column.name} has ${countOf(column.count, 'field')} of type ${column.type}; a tensor has nine real ones. It was not read.`,
     {
       place,
       got: `${column.name}:${column.type}:${column.count}`,

@@ -79,7 +79,8 @@ function readLattice(entry: CommentEntry, place: Place, log: ProblemLog): Lattic
     log.add('error', 'xyz-bad-lattice', `${fault} The atoms are taken as a molecule.`, {
       place,
       got,
-      allowed,
+      allowed: 'three vectors of 0.01 to 1000000 Å that do not lie in one plane: a, b, c one after the other',
+      hint: 'Compare the nine numbers with the source: one vector may stand twice or be cut off. A layer or chain still needs three vectors: give it one across the empty space, and pbc="T T F". A molecule needs no Lattice.',
     });
     return null;
   }

@@ -1,4 +1,5 @@
 import type { Mat3, Vec3, VecCart } from '#src/base/matrix3.ts';
+import { countOf } from '#src/base/count-of.ts';
 import { scaleMatrix } from '#src/base/matrix3.ts';
 import type { Place, ProblemLog } from '#src/base/problem.ts';
 import { lineEnd } from '#src/bytes/source-from-text.ts';
@@ -12,6 +13,8 @@ import type { RowFields } from './row-fields.ts';
 import { fieldText, splitRow } from './row-fields.ts';
 import type { SpeciesField } from './species-field.ts';
 import { readSpeciesField } from './species-field.ts';
+import { addGap } from './tensor-gaps.ts';
+import type { TensorGaps } from './tensor-gaps.ts';
 
 /** A row that became an atom; without a `pos` column `cartesian` is null. */
 export interface RowAtom {
@@ -35,8 +38,8 @@ export interface FrameRows {
   readonly atoms: readonly RowAtom[];
   /** One list a tensor column of the plan. */
   readonly tensors: readonly (readonly RowTensor[])[];
-  /** For each tensor column, the atoms with a mark such as `nan` in all nine places. */
-  readonly absent: readonly number[];
+  /** For each tensor column, the atoms without a tensor. */
+  readonly gaps: readonly TensorGaps[];
   /** One list a candidate column: what a guess needs. */
   readonly candidates: readonly (readonly Mat3[])[];
   /** Fields of the widest row. */
@@ -61,14 +64,13 @@ const candidateSample = 2000;
 /**
  * Reads the rows of one frame after a plan. A row without usable coordinates is left out (`xyz-bad-coordinate`); of a
  * row shorter than the plan what stands there is kept (`xyz-short-row`), a longer one keeps its first fields
- * (`xyz-long-row`); a tensor with a missing or unreadable component is left out (`xyz-missing-tensor`, `xyz-bad-tensor`),
- * one that is missing as a whole is counted.
+ * (`xyz-long-row`); of a tensor with a missing or unreadable component only that atom's is left out, and counted in `gaps`.
  */
 export function readRows(context: RowContext, frame: Frame, plan: ColumnPlan, plain: boolean): FrameRows {
   const { source, fields } = context;
   const atoms: RowAtom[] = [];
   const tensors: RowTensor[][] = plan.tensors.map(() => []);
-  const absent = plan.tensors.map(() => 0);
+  const gaps = plan.tensors.map((): TensorGaps => new Map());
   const candidates: Mat3[][] = plan.candidates.map(() => []);
   let widest = 0;
   for (let line = frame.firstRow; line < frame.endLine; line++) {
@@ -81,9 +83,11 @@ export function readRows(context: RowContext, frame: Frame, plan: ColumnPlan, pl
     if (plan.position !== null && cartesian === null) continue;
     atoms.push(readAtom(context, line, plan, cartesian));
     plan.tensors.forEach(({ column, toCanonical }, index) => {
-      const tensor = readTensor(context, line, column);
-      if (tensor === 'absent') absent[index] = (absent[index] ?? 0) + 1;
-      if (tensor === null || tensor === 'absent') return;
+      const tensor = nineNumbers(context, column);
+      if (tensor === null) {
+        noteGap(context, line, column, gaps[index]!);
+        return;
+      }
       tensors[index]?.push({
         atom: atoms.length - 1,
         tensor: toCanonical === 1 ? tensor : scaleMatrix(toCanonical, tensor),
@@ -96,7 +100,7 @@ export function readRows(context: RowContext, frame: Frame, plan: ColumnPlan, pl
       if (tensor !== null) candidates[index]?.push(tensor);
     });
   }
-  return { atoms, tensors, absent, candidates, widest };
+  return { atoms, tensors, gaps, candidates, widest };
 }
 
 function placeOfField({ source, fields }: RowContext, line: number, field: number): Place {
@@ -110,21 +114,21 @@ function checkWidth(context: RowContext, line: number, plan: ColumnPlan): void {
   if (count === plan.fields) return;
   const details = {
     place: placeOfField(context, line, 0),
-    got: `${count} fields`,
-    allowed: `${plan.fields} fields`,
+    got: countOf(count, 'field'),
+    allowed: countOf(plan.fields, 'field'),
   };
   if (count < plan.fields) {
     const fate = lacksCoordinates(plan, count)
       ? 'without three coordinates it was left out'
       : 'what stands there was kept';
-    const message = `The row has ${count} of ${plan.fields} fields; ${fate}.`;
+    const message = `The row has ${count} of ${countOf(plan.fields, 'field')}; ${fate}.`;
     context.log.add('error', 'xyz-short-row', message, details);
     return;
   }
   context.log.add(
     'warning',
     'xyz-long-row',
-    `The row has more than the ${plan.fields} fields of Properties; the rest was not read.`,
+    `The row has more than the ${countOf(plan.fields, 'field')} of Properties; the rest was not read.`,
     { ...details, hint: 'A blank inside a label moves all later fields: put such a label in quotes.' },
   );
 }
@@ -185,29 +189,20 @@ function speciesOf(context: RowContext, text: string, line: number, field: numbe
   return read;
 }
 
-function readTensor(context: RowContext, line: number, column: Column): Mat3 | 'absent' | null {
-  const tensor = nineNumbers(context, column);
-  if (tensor !== null) return tensor;
-  if (isAbsent(context, column)) return 'absent';
-  const { source, fields, log } = context;
-  // A short row has been reported; only what stands there and is no number needs words.
+/** Why a row has no tensor in this column. A short row has been reported; only what stands there and is no number needs words. */
+function noteGap(context: RowContext, line: number, column: Column, gaps: TensorGaps): void {
+  const { source, fields } = context;
+  if (isAbsent(context, column)) {
+    const got = fieldText(source.text, fields, column.first);
+    addGap(gaps, 'absent', placeOfField(context, line, column.first), got);
+    return;
+  }
   for (let field = column.first; field < Math.min(column.first + 9, fields.count); field++) {
     const text = fieldText(source.text, fields, field);
     if (readReal(text) !== null) continue;
-    const missing = isMissingMark(text);
-    log.add(
-      missing ? 'warning' : 'error',
-      missing ? 'xyz-missing-tensor' : 'xyz-bad-tensor',
-      `A component of ${column.name} is ${missing ? 'missing' : 'not a number'}; this atom has no ${column.name}.`,
-      {
-        place: placeOfField(context, line, field),
-        got: text.slice(0, 60),
-        allowed: 'nine numbers, row by row',
-      },
-    );
-    return null;
+    addGap(gaps, isMissingMark(text) ? 'missing' : 'unreadable', placeOfField(context, line, field), text);
+    return;
   }
-  return null;
 }
 
 function isAbsent({ source, fields }: RowContext, column: Column): boolean {

@@ -1,5 +1,6 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
-import { looksLikeAtom } from '#src/bytes/sniff.ts';
+import { isMiscounted, looksLikeAtom } from '#src/bytes/sniff.ts';
 import { lineCount, lineText } from '#src/bytes/source-from-text.ts';
 import type { SourceText } from '#src/bytes/source-text.ts';
 import type { XyzLimits } from './limits.ts';
@@ -26,14 +27,16 @@ interface Header {
 /**
  * The frames of an XYZ text in one pass over its lines. Blank lines between frames are skipped, other lines too with
  * `xyz-other-text` (`xyz-rows-beyond-count` where they look like atoms); a frame that ends early is reported as
- * `xyz-truncated` and keeps its rows; limits are `xyz-too-many-atoms` and `xyz-too-many-frames`.
+ * `xyz-truncated` and keeps its rows; a first line that is no count though rows like atoms follow is `xyz-bad-count`; limits are `xyz-too-many-atoms` and `xyz-too-many-frames`.
  */
 export function findFrames(source: SourceText, limits: XyzLimits, log: ProblemLog): Frame[] {
   const frames: Frame[] = [];
   const total = lineCount(source);
   const firstFilled = nextFilled(source, 0);
-  let atoms = 0;
-  let line = 0;
+  const miscounted = miscountedFrame(source, firstFilled, limits, log);
+  if (miscounted) frames.push(miscounted);
+  let atoms = miscounted?.rows ?? 0;
+  let line = miscounted?.endLine ?? 0;
   while (line < total) {
     const start = nextHeader(source, line, frames.at(-1)?.promised ?? null, firstFilled);
     reportSkipped(source, line, start ?? total, frames, log);
@@ -53,6 +56,42 @@ export function findFrames(source: SourceText, limits: XyzLimits, log: ProblemLo
     if (frame.rows < frame.promised) reportTruncated(source, frame, log);
   }
   return frames;
+}
+
+/** The first frame where its count is no whole number but rows like atoms follow: these rows, with `xyz-bad-count`. */
+function miscountedFrame(
+  source: SourceText,
+  first: number | null,
+  { maxAtoms }: XyzLimits,
+  log: ProblemLog,
+): Frame | null {
+  if (first === null || headerAt(source, first, null) || !isMiscounted(source, first)) return null;
+  const firstRow = first + 2;
+  const rows = atomRows(source, firstRow, Math.min(lineCount(source), firstRow + maxAtoms));
+  const text = lineText(source, first);
+  const place = { file: source.name, line: first + 1, column: text.search(/\S/) + 1 };
+  const message = `Line ${first + 1} should be the number of atoms; the rows like atoms that follow were read.`;
+  log.add('error', 'xyz-bad-count', message, {
+    place,
+    got: text.trim().slice(0, 60),
+    allowed: 'a whole number: how many rows follow after the comment line',
+    hint: `${countOf(rows, 'row')} like atoms ${rows === 1 ? 'follows' : 'follow'}: write ${rows} into this line if that is all of them.`,
+  });
+  return {
+    countLine: first,
+    commentLine: first + 1,
+    promised: rows,
+    firstRow,
+    endLine: firstRow + rows,
+    rows,
+  };
+}
+
+/** Lines like atoms, one after the other, from one line on and before another. */
+function atomRows(source: SourceText, from: number, to: number): number {
+  let line = from;
+  while (line < to && looksLikeAtom(lineText(source, line))) line++;
+  return line - from;
 }
 
 /** Line of the next frame's count from `from` on; null where none follows. */
@@ -129,6 +168,8 @@ function reportSkipped(
 ): void {
   const line = nextFilled(source, from);
   if (line === null || line >= to) return;
+  // Then there is no frame at all, which is said once for the file.
+  if (frames.length === 0 && to === lineCount(source)) return;
   const shown = lineText(source, line).trim().slice(0, 60);
   const place = { file: source.name, line: line + 1, column: 1 };
   const before = frames.at(-1);
@@ -139,9 +180,9 @@ function reportSkipped(
       `The count in line ${before.countLine + 1} is ${before.promised}, but more rows like atoms follow; they were not read.`,
       {
         place,
-        got: shown,
-        allowed: `${before.promised} rows`,
-        hint: `Correct the count in line ${before.countLine + 1}.`,
+        got: `${countOf(before.promised + atomRows(source, line, to), 'row')}, here ${shown}`,
+        allowed: countOf(before.promised, 'row'),
+        hint: `Correct the count in line ${before.countLine + 1}, or remove the rows beyond it.`,
       },
     );
     return;
@@ -158,12 +199,14 @@ function reportTruncated(source: SourceText, frame: Frame, log: ProblemLog): voi
   log.add(
     'error',
     'xyz-truncated',
-    `The count in line ${frame.countLine + 1} is ${frame.promised}, but fewer rows follow (${frame.rows}); these were read.`,
+    `The count in line ${frame.countLine + 1} is ${frame.promised}, but ${frame.rows === 0 ? 'no rows follow.' : `only ${countOf(frame.rows, 'row follows; it was', 'rows follow; these were')} read.`}`,
     {
       place: { file: source.name, line: frame.countLine + 1, column: 1 },
-      got: `${frame.rows} rows`,
-      allowed: `${frame.promised} rows`,
-      hint: 'The file may be cut off; fetch it again or correct the count.',
+      got: countOf(frame.rows, 'row'),
+      allowed: countOf(frame.promised, 'row'),
+      hint: looksLikeAtom(lineText(source, frame.commentLine))
+        ? 'The line after the count looks like an atom: put the comment line, which may be empty, between them.'
+        : 'The file may be cut off; fetch it again or correct the count.',
     },
   );
 }

@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import { ProblemLog } from '#src/base/problem.ts';
 import type { Place } from '#src/base/problem.ts';
 import type { ReportProgress } from '#src/base/progress.ts';
@@ -24,6 +25,7 @@ import type { XyzLimits } from './limits.ts';
 import { parseProperties, plainProperties } from './properties.ts';
 import type { Properties } from './properties.ts';
 import { emptyRowFields } from './row-fields.ts';
+import { reportGaps } from './tensor-gaps.ts';
 
 export interface XyzOptions {
   /** Proposed columns that the user takes, by name. */
@@ -149,14 +151,12 @@ function readOneFrame(
   const rows = readRows(context, frame, plan, plain);
   if (head.properties === plainProperties) noteExtraColumns(rows.widest, place, collected, log);
   if (rows.atoms.length === 0) {
-    log.add('error', 'xyz-no-atoms', 'The frame holds no atoms that could be read.', {
-      place: { file: source.name, line: frame.countLine + 1, column: 1 },
-      got: `${frame.promised} promised, ${frame.rows} rows`,
-      allowed: 'one row an atom: a symbol and three coordinates',
-    });
+    reportNoAtoms(source, frame, log);
     return;
   }
-  plan.tensors.forEach(({ column }, index) => noteAbsent(column.name, rows, index, place, log));
+  plan.tensors.forEach(({ column }, index) =>
+    reportGaps(column.name, rows.gaps[index]!, rows.atoms.length, log),
+  );
   const labels = labelsOf(rows.atoms);
   const made = plan.position !== null;
   const structureIndex = made ? collected.structures.length : null;
@@ -170,18 +170,22 @@ function readOneFrame(
   propose(plan, rows, structureIndex, place.line, collected);
 }
 
-function noteAbsent(name: string, rows: FrameRows, index: number, place: Place, log: ProblemLog): void {
-  const absent = rows.absent[index] ?? 0;
-  if (absent === 0) return;
-  const message = `${absent} of ${rows.atoms.length} atoms have no ${name}: all nine components are marked as missing.`;
-  log.add('note', 'xyz-tensor-absent', message, { place });
+/** Rows that were left out, or are fewer or more than promised, have been reported; an empty frame has not. */
+function reportNoAtoms(source: SourceText, frame: Frame, log: ProblemLog): void {
+  if (frame.promised > 0 || log.list().some(({ code }) => code === 'xyz-rows-beyond-count')) return;
+  log.add('error', 'xyz-no-atoms', 'The frame holds no atoms: its count is 0.', {
+    place: { file: source.name, line: frame.countLine + 1, column: 1 },
+    got: '0',
+    allowed: 'the number of atoms, a comment line, then one row an atom',
+    hint: 'Write the number of atoms into this line, and the atoms below the comment line.',
+  });
 }
 
 function noteExtraColumns(widest: number, place: Place, collected: Collected, log: ProblemLog): void {
   const extra = widest - plainProperties.fields;
   if (extra <= 0 || collected.extraColumnsNoted) return;
   collected.extraColumnsNoted = true;
-  const message = `Rows have ${extra} fields after the coordinates that nothing names; they were not read.`;
+  const message = `Rows have ${countOf(extra, 'field')} after the coordinates that nothing names; not read.`;
   log.add('note', 'xyz-extra-columns', message, {
     place,
     hint: 'Name them in the comment line: Properties=species:S:1:pos:R:3:shielding:R:9',

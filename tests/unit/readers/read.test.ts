@@ -28,7 +28,8 @@ describe('readText', () => {
       file: 'a.cif',
       line: 2,
     });
-    expect(reading.problems[0]?.got).toContain('HTML');
+    expect(reading.problems[0]?.message).toContain('HTML');
+    expect(reading.problems[0]?.got).toBe('<html><body>Not found</body></html>');
     expect(reading.problems[0]?.allowed).toMatch(/CIF.*XYZ/);
     expect(reading.problems[0]?.hint).toMatch(/save/);
   });

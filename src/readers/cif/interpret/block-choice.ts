@@ -21,15 +21,20 @@ const contents: readonly { readonly start: RegExp; readonly what: string }[] = [
 export function reportNoStructure(source: SourceText, document: CifDocument, log: ProblemLog): void {
   const place = placeOf(source, 0);
   const what = otherKind(source.text);
-  if (document.blocks.length === 0 || what !== null) {
-    const message =
-      what === 'empty'
-        ? 'The file is empty.'
-        : `The file is ${what ?? 'no CIF'}: it has no line that starts with data_.`;
+  const isNameless = document.blocks.every(
+    ({ items, loops, frames }) => items.size + loops.length + frames.length === 0,
+  );
+  if (isNameless || what !== null) {
+    const lack =
+      document.blocks.length === 0
+        ? 'it has no line that starts with data_'
+        : 'after its data_ line comes no name that starts with _';
+    const message = what === 'empty' ? 'The file is empty.' : `The file is ${what ?? 'no CIF'}: ${lack}.`;
     log.add('error', 'cif-not-a-cif', message, {
       place,
       got: source.text.slice(0, 60).trim() || null,
       allowed: 'a text with a data_ line, names that start with _ and values',
+      hint: 'Open the CIF itself; this may be a page, a letter or a list saved under its name.',
     });
     return;
   }

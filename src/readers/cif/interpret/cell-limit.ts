@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { CrystalSymmetry } from '#src/crystal/crystal.ts';
 import { identityOperation } from '#src/crystal/symmetry-operation.ts';
@@ -22,7 +23,7 @@ export function withinCellLimit(
   log.add(
     'error',
     'cif-too-many-images',
-    `${rowCount} rows under ${symmetry.operations.length} operations would be ${images} atoms; only the listed atoms are shown.`,
+    `${countOf(rowCount, 'row')} under ${countOf(symmetry.operations.length, 'operation')} would be ${countOf(images, 'atom')}; only the listed atoms are shown.`,
     {
       place: placeOfBlock(view),
       got: `${images} images`,

@@ -46,7 +46,12 @@ export function readCell(
   const cell = Object.fromEntries(found) as unknown as CellConstants;
   const impossible = cellProblem(cell);
   if (impossible !== null) {
-    log.add('error', 'cif-cell-impossible', impossible, { place: placeOfCell(view) });
+    const { a, b, c, alpha, beta, gamma } = cell;
+    log.add('error', 'cif-cell-impossible', impossible, {
+      place: placeOfCell(view),
+      got: `${a} ${b} ${c} Å, ${alpha} ${beta} ${gamma}°`,
+      hint: 'Compare the cell constants with the publication: one is mistyped or missing.',
+    });
     return null;
   }
   return cell;

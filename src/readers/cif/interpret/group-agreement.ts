@@ -1,3 +1,4 @@
+import { countOf, wordFor } from '#src/base/count-of.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import { distinctRotations, operationSetKey } from '#src/crystal/group.ts';
 import type { SpaceGroupSetting } from '#src/crystal/space-group.ts';
@@ -95,15 +96,15 @@ function reportOtherGroup(
 ): void {
   const listed = identified
     ? `${identified.hermannMauguinShort} (${identified.number})`
-    : `a group of ${operations.length} operations outside the tables`;
+    : `a group of ${countOf(operations.length, 'operation')} outside the tables`;
   const fewer =
     operations.length < named.length
-      ? ` ${named.length} operations belong to the name: if some were not listed, atoms are missing.`
+      ? ` ${countOf(named.length, 'operation belongs', 'operations belong')} to the name: if some were not listed, atoms are missing.`
       : '';
   log.add(
     'warning',
     'cif-group-disagrees',
-    `The ${operations.length} listed operations are ${listed}, not ${reading}. The listed ones were kept.${fewer}`,
+    `The ${countOf(operations.length, 'listed operation is', 'listed operations are')} ${listed}, not ${reading}. The listed ${wordFor(operations.length, 'one was', 'ones were')} kept.${fewer}`,
     {
       place: placeOfValue(view, item.value),
       got: item.text,

@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { Place, ProblemLog } from '#src/base/problem.ts';
 import type { SymmetryOperation } from '#src/crystal/symmetry-operation.ts';
 import { composeOperations, readOperation } from '#src/crystal/symmetry-operation.ts';
@@ -90,7 +91,7 @@ function readOperations(view: BlockView, source: ItemSource, log: ProblemLog): L
     log.add(
       'error',
       'cif-too-many-operations',
-      `${pieces.length} operations are listed; only the first ${mostOperations} were read.`,
+      `${countOf(pieces.length, 'operation is', 'operations are')} listed; only the first ${mostOperations} were read.`,
       { place: placeOfValue(view, first), allowed: `at most ${mostOperations}` },
     );
   }

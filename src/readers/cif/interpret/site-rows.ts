@@ -1,3 +1,4 @@
+import { countOf, wordFor } from '#src/base/count-of.ts';
 import type { Vec3 } from '#src/base/matrix3.ts';
 import type { Place, ProblemLog } from '#src/base/problem.ts';
 import type { BlockView } from './block-view.ts';
@@ -285,7 +286,7 @@ function reportFarOut(rows: readonly SiteRow[], log: ProblemLog): void {
   log.add(
     'warning',
     'cif-coordinates-far-out',
-    `${far.length} of ${rows.length} atoms lie more than ${farOut} cells from the origin: their coordinates may be per cent, ten-thousandths or Å and not fractions. They were read as fractions.`,
+    `${far.length} of ${countOf(rows.length, 'atom')} ${wordFor(far.length, 'lies', 'lie')} more than ${farOut} cells from the origin: the coordinates may be per cent, ten-thousandths or Å and not fractions. They were read as fractions.`,
     {
       place: first.place,
       got: first.fractional!.join(' '),
@@ -298,7 +299,7 @@ function reportModels(first: string | null, others: number, place: Place, log: P
   log.add(
     'warning',
     'cif-several-models',
-    `The atom list holds several models; model ${first ?? '1'} was read, ${others} rows of others were left out.`,
+    `The atom list holds several models; model ${first ?? '1'} was read, ${countOf(others, 'row of others was', 'rows of others were')} left out.`,
     {
       place,
     },
@@ -307,7 +308,12 @@ function reportModels(first: string | null, others: number, place: Place, log: P
 
 function reportDummies(labels: readonly string[], place: Place, log: ProblemLog): void {
   const named = labels.slice(0, 10).join(', ') + (labels.length > 10 ? ', …' : '');
-  log.add('note', 'cif-dummy-atoms', `${labels.length} rows stand for no atom and were left out: ${named}.`, {
-    place,
-  });
+  log.add(
+    'note',
+    'cif-dummy-atoms',
+    `${countOf(labels.length, 'row stands for no atom and was', 'rows stand for no atom and were')} left out: ${named}.`,
+    {
+      place,
+    },
+  );
 }

@@ -1,3 +1,4 @@
+import { countOf, wordFor } from '#src/base/count-of.ts';
 import type { VecCart, VecFrac } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { Site } from '#src/crystal/crystal.ts';
@@ -111,7 +112,7 @@ function reportNoCell(rows: readonly SiteRow[], placed: readonly SiteRow[], log:
   log.add(
     'error',
     'cif-no-cell',
-    `${lost.length} atoms have fractional coordinates, but the file gives no usable cell; they were left out.`,
+    `${countOf(lost.length, 'atom has', 'atoms have')} fractional coordinates, but the file gives no usable cell; ${wordFor(lost.length, 'it was', 'they were')} left out.`,
     {
       place: lost[0]!.place,
       allowed: '_cell_length_a, _b, _c and _cell_angle_alpha, _beta, _gamma',
@@ -142,7 +143,7 @@ function reportLabels(rows: readonly SiteRow[], log: ProblemLog): void {
   log.add(
     'note',
     'cif-repeated-labels',
-    `${names.length} labels stand on more than one row: ${names.slice(0, 8).join(', ')}${names.length > 8 ? ', …' : ''}. Each row is a site of its own.`,
+    `${countOf(names.length, 'label stands', 'labels stand')} on more than one row: ${names.slice(0, 8).join(', ')}${names.length > 8 ? ', …' : ''}. Each row is a site of its own.`,
     {
       place: repeated[0]!.place,
     },

@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { Site } from '#src/crystal/crystal.ts';
 import type { ImageCounts } from './multiplicity.ts';
@@ -68,7 +69,7 @@ function reportStated(
   log.add(
     'note',
     'cif-multiplicity-disagrees',
-    `${differing.length} stated multiplicities differ from those of the operations: ${shown}${differing.length > 6 ? ', …' : ''}. The operations count.`,
+    `${countOf(differing.length, 'stated multiplicity differs', 'stated multiplicities differ')} from those of the operations: ${shown}${differing.length > 6 ? ', …' : ''}. The operations count.`,
     {
       place: first.site.place,
     },

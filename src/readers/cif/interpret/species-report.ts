@@ -1,3 +1,4 @@
+import { countOf, wordFor } from '#src/base/count-of.ts';
 import type { ProblemLog, Severity } from '#src/base/problem.ts';
 import type { Site } from '#src/crystal/crystal.ts';
 import type { SiteSpecies } from './site-species.ts';
@@ -18,33 +19,33 @@ const remarks: readonly Remark[] = [
     severity: 'warning',
     holds: ({ from }) => from === 'nothing',
     sentence: (count, list) =>
-      `${count} atoms have no element that could be told from type or label: ${list}.`,
+      `${countOf(count, 'atom has', 'atoms have')} no element that could be told from type or label: ${list}.`,
   },
   {
     code: 'cif-element-guessed',
     severity: 'warning',
     holds: ({ from, certain }) => from !== 'nothing' && !certain,
-    sentence: (count, list) => `The element of ${count} atoms is a guess from the label: ${list}.`,
+    sentence: (count, list) => `The element of ${countOf(count, 'atom')} is a guess from the label: ${list}.`,
   },
   {
     code: 'cif-element-from-label',
     severity: 'note',
     holds: ({ from, certain }) => from === 'label' && certain,
-    sentence: (count, list) => `The element of ${count} atoms was read from the label: ${list}.`,
+    sentence: (count, list) => `The element of ${countOf(count, 'atom')} was read from the label: ${list}.`,
   },
   {
     code: 'cif-type-names-group',
     severity: 'warning',
     holds: ({ group }) => group !== null,
     sentence: (count, list, reasons) =>
-      `The types of ${count} atoms are no plain elements: ${list}. ${reasons}.`,
+      `The ${wordFor(count, 'type')} of ${countOf(count, 'atom is no plain element', 'atoms are no plain elements')}: ${list}. ${reasons}.`,
   },
   {
     code: 'cif-mixture-shares',
     severity: 'warning',
     holds: ({ sharesGiven }) => !sharesGiven,
     sentence: (count, list) =>
-      `${count} positions hold several elements without their shares; equal shares were taken: ${list}.`,
+      `${countOf(count, 'position holds', 'positions hold')} several elements without their shares; equal shares were taken: ${list}.`,
   },
 ];
 

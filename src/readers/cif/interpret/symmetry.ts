@@ -1,3 +1,4 @@
+import { countOf, wordFor } from '#src/base/count-of.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { CrystalSymmetry } from '#src/crystal/crystal.ts';
 import { isClosed, operationSetKey, uniqueOperations } from '#src/crystal/group.ts';
@@ -65,7 +66,7 @@ function fromLists(
     hermannMauguin: names.hermannMauguin ?? identified?.hermannMauguinShort ?? null,
     hall: names.hall ?? identified?.hall ?? null,
     source: 'file',
-    reason: `${countOfOperations(operations)} listed in ${chosen.name} from line ${chosen.place.line}`,
+    reason: `${countOf(operations.length, 'operation')} listed in ${chosen.name} from line ${chosen.place.line}`,
     stated: true,
   };
 }
@@ -90,8 +91,8 @@ function chooseList(
       `${lists[other]!.name} and ${chosen.name} list different operations; ${why}.`,
       {
         place: lists[other]!.place,
-        got: countOfOperations(lists[other]!.operations),
-        allowed: `the ${chosen.operations.length} operations of ${chosen.name}`,
+        got: countOf(lists[other]!.operations.length, 'operation'),
+        allowed: `the ${countOf(chosen.operations.length, 'operation')} of ${chosen.name}`,
       },
     );
   }
@@ -130,7 +131,7 @@ function reportFlaws(
     log.add(
       'note',
       'cif-repeated-operation',
-      `${check.duplicates.length} operations in ${name} repeat others; each counts once.`,
+      `${countOf(check.duplicates.length, 'operation')} in ${name} ${wordFor(check.duplicates.length, 'repeats another', 'repeat others')}; each counts once.`,
       { place },
     );
   }
@@ -142,10 +143,10 @@ function reportFlaws(
   log.add(
     'warning',
     'cif-operations-not-closed',
-    `The operations of ${name} are no group: ${check.unbounded ? 'their products never end' : `${missing.length} of their products are not listed`}. The listed ones were kept.`,
+    `The operations of ${name} are no group: ${check.unbounded ? 'their products never end' : `${missing.length} of their products ${wordFor(missing.length, 'is', 'are')} not listed`}. The listed ones were kept.`,
     {
       place,
-      got: countOfOperations(operations),
+      got: countOf(operations.length, 'operation'),
       allowed: check.unbounded
         ? 'a list that holds all products of its members'
         : `also ${named}${missing.length > 8 ? ' …' : ''}`,
@@ -224,7 +225,7 @@ function symmetryOf(group: NamedGroup, names: GroupNames, other: SymbolReading |
     hermannMauguin: names.hermannMauguin ?? setting?.hermannMauguinShort ?? null,
     hall: names.hall ?? setting?.hall ?? null,
     source: 'symbol',
-    reason: `${countOfOperations(operations)} derived from ${how}`,
+    reason: `${countOf(operations.length, 'operation')} derived from ${how}`,
     stated: true,
   };
 }
@@ -289,10 +290,6 @@ function reportMetric(
       hint: 'A cell constant is mistyped, or the operations belong to another setting.',
     },
   );
-}
-
-function countOfOperations({ length }: readonly unknown[]): string {
-  return length === 1 ? '1 operation' : `${length} operations`;
 }
 
 function capital(text: string): string {

@@ -1,3 +1,4 @@
+import { countOf, wordFor } from '#src/base/count-of.ts';
 import type { Mat3 } from '#src/base/matrix3.ts';
 import { asMat3 } from '#src/base/matrix3.ts';
 import type { Place, ProblemLog } from '#src/base/problem.ts';
@@ -11,6 +12,7 @@ import { placeOfValue, textOf } from './block-view.ts';
 import type { CategoryTable } from './category-table.ts';
 import { categoryTable } from './category-table.ts';
 import { readNumber } from './tolerant-number.ts';
+import { isMissingMark } from '../../xyz/real-number.ts';
 
 /** Our own loop for tensors in a CIF: label of the site, quantity, unit, nine components row by row. */
 const prefix = '_ellipsite_tensor_';
@@ -29,8 +31,8 @@ export interface TensorGround {
 /**
  * Tensor sets of a block, one a quantity, from the loop `_ellipsite_tensor_…`: shielding and shift in ppm, EFG in
  * `a.u.` (also without a unit), `1e21V/m2` or `V/A2`, converted to atomic units; frame = that of the Cartesian transform of the
- * file, else the default frame (`cif-tensor-frame-assumed`). Rows with a faulty quantity, unit or component are left out
- * (`cif-bad-tensor`); a label that no site has, or several have, or that came before is reported (`cif-tensor-label`).
+ * file, else the default frame (`cif-tensor-frame-assumed`). Rows with a faulty quantity, unit or component are left out,
+ * and only these (`cif-bad-tensor`, one for all faulty components); a label that no site has, or several have, or that came before is reported (`cif-tensor-label`).
  */
 export function readTensorSets(view: BlockView, ground: TensorGround, log: ProblemLog): TensorSet[] {
   const table = categoryTable(view, [`${prefix}site_label`, ...componentNames, `${prefix}quantity`]);
@@ -38,8 +40,9 @@ export function readTensorSets(view: BlockView, ground: TensorGround, log: Probl
   const sites = sitesByLabel(ground.sites);
   const sets = new Map<Quantity, { quantity: Quantity; unitGiven: string; entries: TensorEntry[] }>();
   const seen = new Set<string>();
+  const broken: BrokenRow[] = [];
   for (let row = 0; row < table.rows; row++) {
-    const read = readRow(view, table, row, log);
+    const read = readRow(view, table, row, broken, log);
     if (!read) continue;
     const index = siteOf(read, sites, seen, log);
     if (index === 'repeated') continue;
@@ -59,6 +62,7 @@ export function readTensorSets(view: BlockView, ground: TensorGround, log: Probl
       place: read.place,
     });
   }
+  reportBroken(broken, table.rows, log);
   if (sets.size > 0 && ground.lattice && !ground.frameGiven) reportFrame(view, table, ground.lattice, log);
   return [...sets.values()].map(({ quantity, unitGiven, entries }) => ({
     name: `${view.block.name}, ${quantity}`,
@@ -79,7 +83,21 @@ interface TensorRow {
   readonly place: Place;
 }
 
-function readRow(view: BlockView, table: CategoryTable, row: number, log: ProblemLog): TensorRow | null {
+/** A row with a component that is missing or no number. */
+interface BrokenRow {
+  readonly label: string;
+  /** The texts that are no numbers. */
+  readonly got: readonly string[];
+  readonly place: Place;
+}
+
+function readRow(
+  view: BlockView,
+  table: CategoryTable,
+  row: number,
+  broken: BrokenRow[],
+  log: ProblemLog,
+): TensorRow | null {
   const cell = (name: string): CifValue | undefined => table.column(prefix + name)?.at(row);
   const label = textOf(cell('site_label'));
   const place = placeOfTensor(view, table, row);
@@ -104,11 +122,9 @@ function readRow(view: BlockView, table: CategoryTable, row: number, log: Proble
   const components = componentNames.map((name) => textOf(table.column(name)?.at(row)));
   const numbers = components.map((text) => (text === null ? null : (readNumber(text)?.value ?? null)));
   if (!numbers.every((number) => number !== null && Number.isFinite(number))) {
-    return bad(
-      'a component is missing or no number',
-      components.map((text) => text ?? '?').join(' '),
-      'nine numbers',
-    );
+    const got = components.map((text) => text ?? '?').filter((_, k) => !Number.isFinite(numbers[k]));
+    broken.push({ label, got, place });
+    return null;
   }
   const given = asMat3(numbers as number[]);
   if (quantity !== 'efg') {
@@ -125,6 +141,22 @@ function readRow(view: BlockView, table: CategoryTable, row: number, log: Proble
     tensor: efgTensorToAtomicUnits(given, unit),
     place,
   };
+}
+
+const namedRows = 5;
+
+function reportBroken(broken: readonly BrokenRow[], rows: number, log: ProblemLog): void {
+  const [first] = broken;
+  if (!first) return;
+  const marked = broken.every(({ got }) => got.every(isMissingMark));
+  const named = broken.slice(0, namedRows).map(({ label, place }) => `${label} in line ${place.line}`);
+  const more = broken.length > namedRows ? ', …' : '';
+  log.add(
+    marked ? 'warning' : 'error',
+    'cif-bad-tensor',
+    `${broken.length} of ${countOf(rows, 'tensor row')} ${wordFor(broken.length, 'has', 'have')} a component that is missing or no number (${named.join(', ')}${more}); ${wordFor(broken.length, 'it was', 'they were')} left out, the other rows were kept.`,
+    { place: first.place, got: first.got.join(' ').slice(0, 60), allowed: 'nine numbers' },
+  );
 }
 
 function sitesByLabel(sites: readonly Site[]): Map<string, number[]> {

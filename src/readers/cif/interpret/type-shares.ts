@@ -1,3 +1,4 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { SiteRow } from './site-rows.ts';
 import type { SiteSpecies } from './site-species.ts';
@@ -46,7 +47,7 @@ export function reportShares(
   log.add(
     'warning',
     'cif-type-share',
-    `${found.length} atom types hold a share, which was taken as occupancy: ${shown.join(', ')}${found.length > 8 ? ', …' : ''}. Where the occupancy of the row says the same, it counts once; else both are multiplied.`,
+    `${countOf(found.length, 'atom type holds', 'atom types hold')} a share, which was taken as occupancy: ${shown.join(', ')}${found.length > 8 ? ', …' : ''}. Where the occupancy of the row says the same, it counts once; else both are multiplied.`,
     {
       place: first.row.place,
       got: first.row.typeText,

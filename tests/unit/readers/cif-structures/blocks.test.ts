@@ -91,6 +91,8 @@ describe('no structure', () => {
     ['a PDF', '%PDF-1.4\n%âãÏÓ\n1 0 obj', 'cif-not-a-cif', 'PDF'],
     ['JSON', '{"cell": [1, 2, 3]}', 'cif-not-a-cif', 'JSON'],
     ['any other text', 'Dear all,\nthe file is attached.\n', 'cif-not-a-cif', 'no CIF'],
+    ['prose below a header', 'data_x\nthis is prose\nof no names\n', 'cif-not-a-cif', 'no name that starts'],
+    ['prose below the magic code', '#\\#CIF_1.1\nand then prose\n', 'cif-not-a-cif', 'no line that starts'],
     ['reflections', 'data_x\nloop_\n_refln_index_h\n_refln_F_meas\n1 2\n', 'cif-no-atoms', 'reflection data'],
     [
       'a powder pattern',

@@ -88,11 +88,24 @@ describe('tensors in a CIF', () => {
     ['an unknown quantity', `Na1 magic ppm ${nine}`, 'cif-bad-tensor', 'magic'],
     ['a unit that is none of it', `Na1 shielding Hz ${nine}`, 'cif-bad-tensor', 'Hz'],
     ['an EFG unit nobody knows', `Na1 efg furlong ${nine}`, 'cif-bad-tensor', 'furlong'],
-    ['a missing component', `Na1 shielding ppm 1 2 3 4 ? 6 7 8 9`, 'cif-bad-tensor', '1 2 3 4 ? 6 7 8 9'],
+    ['a component in words', `Na1 shielding ppm 1 2 3 4 five 6 7 8 9`, 'cif-bad-tensor', 'five'],
   ])('%s leaves the row out', (_, row, code, got) => {
     const reading = block(cell, frame, inversion, atoms, tensors(row));
     expect(reading.tensorSets).toEqual([]);
     expect(problemOf(reading, code)).toMatchObject({ severity: 'error', got, line: 43 });
+  });
+
+  it('rows with components that were not computed are left out alone, and told in one warning', () => {
+    const rows = [
+      'Na1 shielding ppm 1 2 3 4 ? 6 7 8 9',
+      `Cl1 shielding ppm ${nine}`,
+      'Na1 efg a.u. nan nan nan 4 5 6 7 8 9',
+    ];
+    const reading = block(cell, frame, inversion, atoms, tensors(...rows));
+    expect(reading.tensorSets).toMatchObject([{ quantity: 'shielding', entries: [{ label: 'Cl1' }] }]);
+    const told = reading.problems.filter(({ code }) => code === 'cif-bad-tensor');
+    expect(told).toMatchObject([{ severity: 'warning', line: 43, got: '?' }]);
+    expect(told[0]?.message).toMatch(/^2 of 3 tensor rows have .*Na1 in line 43, Na1 in line 45/);
   });
 
   it('labels of no site, of several sites, and repeated ones are told', () => {

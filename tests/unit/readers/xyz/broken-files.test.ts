@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { sourceFromText } from '#src/bytes/source-from-text.ts';
+import { readText } from '#src/readers/read.ts';
 import { readXyz } from '#src/readers/xyz/read-xyz.ts';
 import type { XyzOptions } from '#src/readers/xyz/read-xyz.ts';
 
@@ -57,10 +58,10 @@ describe('counts', () => {
 
   it.each([
     ['an empty frame', '0\n\n', ['xyz-no-atoms']],
-    ['a count without rows', '9\n', ['xyz-truncated', 'xyz-no-atoms']],
+    ['a count without rows', '9\n', ['xyz-truncated']],
     ['an enormous count', '999999999999\n\nO 0 0 0\n', ['xyz-truncated']],
-    ['a negative count', '-3\n\nO 0 0 0\n', ['xyz-other-text', 'xyz-no-frame']],
-    ['no count', 'O 0 0 0\nH 0 0 1\n', ['xyz-other-text', 'xyz-no-frame']],
+    ['a negative count', '-3\n\nO 0 0 0\n', ['xyz-bad-count']],
+    ['no count', 'O 0 0 0\nH 0 0 1\n', ['xyz-no-frame']],
     ['nothing', '', ['xyz-no-frame']],
   ])('%s', (_name, text, expected) => {
     expect(read(text).problems.map(({ code }) => code)).toEqual(expected);
@@ -176,5 +177,66 @@ describe('the comment line', () => {
 
   it('leaves the quotes of a plain comment alone', () => {
     expect(read('1\n"quartz", it\'s cold\nO 0 0 0\n').problems).toEqual([]);
+  });
+});
+
+describe('a wrong count line', () => {
+  const rows = 'O 0 0 0\nH 0 0 1\nH 0 1 0\n';
+
+  it.each([
+    ['a decimal number', '3.0\n\n', '3.0'],
+    ['a negative number', '  -3\n\n', '-3'],
+    ['too many digits', '99999999999999999999\n\n', '99999999999999999999'],
+    ['words before Properties', 'three\nProperties=species:S:1:pos:R:3\n', 'three'],
+  ])('%s is one error, and the rows are read', (_, head, got) => {
+    const { structures, problems } = readText(sourceFromText('a.xyz', head + rows));
+    expect(structures.map(({ sites }) => sites.length)).toEqual([3]);
+    expect(problems).toHaveLength(1);
+    expect(problems[0]).toMatchObject({ code: 'xyz-bad-count', severity: 'error', line: 1, got });
+    expect(problems[0]?.column).toBe(head.search(/\S/) + 1);
+    expect(problems[0]?.allowed).toMatch(/whole number/);
+    expect(problems[0]?.hint).toMatch(/^3 rows like atoms follow: write 3/);
+  });
+
+  it.each([
+    ['5\n\n', 'xyz-truncated', '3 rows', '5 rows'],
+    ['1\n\n', 'xyz-rows-beyond-count', '3 rows, here H 0 0 1', '1 row'],
+    ['0\n\n', 'xyz-rows-beyond-count', '3 rows, here O 0 0 0', '0 rows'],
+    ['3\n', 'xyz-truncated', '2 rows', '3 rows'],
+    ['three\n', 'format-unknown', 'three', 'CIF 1.1 or 2.0, XYZ, extended XYZ'],
+  ])('%j before three rows is one error with both counts', (head, code, got, allowed) => {
+    const { problems } = readText(sourceFromText('a.xyz', head + rows));
+    expect(problems).toHaveLength(1);
+    expect(problems[0]).toMatchObject({ code, got, allowed, severity: 'error' });
+    expect(problems[0]?.hint).toBeTruthy();
+  });
+
+  it('names the missing comment line', () => {
+    const { problems } = readText(sourceFromText('a.xyz', `3\n${rows}`));
+    expect(problems[0]?.hint).toMatch(/comment line/);
+  });
+});
+
+describe('a flat cell', () => {
+  const header = 'Properties=species:S:1:pos:R:3';
+
+  it.each([
+    [
+      '5 0 0 10 0 0 0 0 3',
+      /vectors 1 and 2 are parallel.*0 Å³; vectors of 5, 10, 3 Å span more than 0.015 Å³/,
+    ],
+    ['5 0 0 0 5 0 5 5 0', /three vectors lie exactly in one plane.*0 Å³/],
+    ['5 0 0 0 5 0 5 5 0.0001', /three vectors lie almost in one plane.*0.0025 Å³/],
+    ['5 0 0 0 5 0 0 0 0', /vector 3 is 0 Å long/],
+  ])('%s is told with its volume and vectors, and what to do', (rows, words) => {
+    const { structures, problems } = readText(
+      sourceFromText('a.xyz', `1\nLattice="${rows}" ${header}\nO 0 0 0\n`),
+    );
+    expect(structures).toMatchObject([{ lattice: null }]);
+    expect(problems).toMatchObject([
+      { code: 'xyz-bad-lattice', severity: 'error', line: 2, column: 9, got: rows },
+    ]);
+    expect(problems[0]?.message).toMatch(words);
+    expect(problems[0]?.hint).toMatch(/A molecule needs no Lattice/);
   });
 });
