@@ -1,6 +1,7 @@
 import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { CrystalSummary } from '#src/store/crystal-summary.ts';
+import { openAxes, repeatsThroughout } from '#src/store/periodicity.ts';
 import { counted, formatCount, formatNumber } from '#src/table/number-format.ts';
 
 /** How many operations and where they are from: the reason alone where it says the number itself. */
@@ -36,12 +37,14 @@ export function crystalOverview(crystal: CrystalSummary): TemplateResult {
   </article>`;
 }
 
-function cellText({ lattice }: CrystalSummary): TemplateResult {
+function cellText({ lattice, periodic = repeatsThroughout }: CrystalSummary): TemplateResult {
   if (!lattice) return html``;
   const { a, b, c, alpha, beta, gamma } = lattice.cell;
   const lengths = [a, b, c].map((value) => formatNumber(value, 4)).join(', ');
   const angles = [alpha, beta, gamma].map((value) => formatNumber(value, 2)).join(', ');
-  return html`<i>a</i>, <i>b</i>, <i>c</i> = ${lengths} Å; α, β, γ = ${angles}°`;
+  const open = openAxes(periodic).join(', ');
+  return html`<i>a</i>, <i>b</i>, <i>c</i> = ${lengths} Å; α, β, γ =
+    ${angles}°${open ? `; it does not repeat along ${open}` : ''}`;
 }
 
 function compositionOf({ composition, lattice }: CrystalSummary): TemplateResult {

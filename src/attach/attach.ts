@@ -1,15 +1,20 @@
 import { apply, identity3, multiply, transpose } from '#src/base/matrix3.ts';
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
+import type { Periodicity } from '#src/base/periodicity.ts';
+import { openAxes, repeatsThroughout } from '#src/base/periodicity.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import type { TensorEntry, TensorSet } from '#src/tensor/tensor-set.ts';
 import type { AtomImage, Attachment, AttachMethod, SiteTensor } from './attachment.ts';
 import { frameRotation, latticeAgreement, sameCell } from './frame-rotation.ts';
+import type { PositionMatch } from './match-positions.ts';
 import { matchDistanceAngstrom, positionFinder, rootMeanSquare } from './match-positions.ts';
 
 /** What a set is bound to: the crystal's lattice, its atoms in the cell, and how many sites they belong to. */
 export interface AttachTarget {
   readonly lattice: Lattice | null;
+  /** Along a, b, c; absent: all three. */
+  readonly periodic?: Periodicity;
   readonly images: readonly AtomImage[];
   readonly siteCount: number;
   /** Rows of the crystal's own file → image index of that row's atom; null where the set comes from another file. */
@@ -26,26 +31,27 @@ interface Binding {
   readonly rotation: Mat3;
   /** Image index of an entry, or null where it has none. */
   readonly imageOf: (entry: TensorEntry) => number | null;
-  readonly distances: number[];
+  /** Of the atoms found by position. */
+  readonly matches: PositionMatch[];
 }
 
 function bindByRows(rows: readonly number[]): Binding {
   const imageOf = (entry: TensorEntry) => (entry.atomIndex === null ? null : (rows[entry.atomIndex] ?? null));
-  return { method: 'same-file', rotation: identity3, imageOf, distances: [] };
+  return { method: 'same-file', rotation: identity3, imageOf, matches: [] };
 }
 
-function bindByGeometry(setLattice: Lattice, lattice: Lattice, images: readonly AtomImage[]): Binding {
-  const find = positionFinder(lattice, images);
-  const distances: number[] = [];
+function bindByGeometry(setLattice: Lattice, lattice: Lattice, target: AttachTarget): Binding {
+  const find = positionFinder(lattice, target.images, target.periodic);
+  const matches: PositionMatch[] = [];
   const imageOf = (entry: TensorEntry) => {
     if (!entry.cartesian) return null;
     const fractional = apply(setLattice.toFractional, entry.cartesian);
     const match = find(fractional, entry.element);
     if (!match) return null;
-    distances.push(match.distanceAngstrom);
+    matches.push(match);
     return match.imageIndex;
   };
-  return { method: 'geometry', rotation: frameRotation(setLattice, lattice), imageOf, distances };
+  return { method: 'geometry', rotation: frameRotation(setLattice, lattice), imageOf, matches };
 }
 
 /** By label, only where a label names one site; an element in the set must agree with the site's. */
@@ -62,7 +68,7 @@ function bindByLabels(set: TensorSet, target: AttachTarget): Binding {
     const index = entry.label === null ? null : (byLabel.get(entry.label) ?? null);
     return index !== null && target.images[index]?.element === entry.element ? index : null;
   };
-  return { method: 'labels', rotation, imageOf, distances: [] };
+  return { method: 'labels', rotation, imageOf, matches: [] };
 }
 
 /** Chooses the strongest binding the evidence allows; null with a problem when there is none. */
@@ -72,7 +78,7 @@ function chooseBinding(set: TensorSet, target: AttachTarget, log: ProblemLog): B
   const hasPositions = set.lattice !== null && set.entries.some(({ cartesian }) => cartesian !== null);
   if (hasPositions && set.lattice && target.lattice) {
     if (sameCell(set.lattice.cell, target.lattice.cell)) {
-      return bindByGeometry(set.lattice, target.lattice, target.images);
+      return bindByGeometry(set.lattice, target.lattice, target);
     }
     log.add(
       'error',
@@ -119,7 +125,8 @@ function describeCell({ cell }: Lattice): string {
 
 /**
  * Binds a tensor set to the atoms of a crystal and turns its tensors into the crystal's frame.
- * Raises `attach-other-cell`, `attach-no-evidence`, `attach-refused`, `attach-by-label`, `attach-unmatched`, `attach-twice`, `attach-moved`.
+ * Raises `attach-other-cell`, `attach-no-evidence`, `attach-refused`, `attach-by-label`, `attach-unmatched`, `attach-twice`, `attach-moved`,
+ * `attach-cells-away`.
  */
 export function attachTensors(set: TensorSet, target: AttachTarget, log: ProblemLog): Attachment | null {
   const binding = chooseBinding(set, target, log);
@@ -152,8 +159,10 @@ export function attachTensors(set: TensorSet, target: AttachTarget, log: Problem
     const list = image.own ? own : others;
     list[image.siteIndex]?.push({ tensor, rotation: image.rotation, entry });
   }
-  const rmsDisplacementAngstrom = rootMeanSquare(binding.distances);
-  reportDisplacement(set, binding.distances, rmsDisplacementAngstrom, log);
+  const distances = binding.matches.map(({ distanceAngstrom }) => distanceAngstrom);
+  const rmsDisplacementAngstrom = rootMeanSquare(distances);
+  reportDisplacement(set, distances, rmsDisplacementAngstrom, log);
+  reportCellsAway(set, binding.matches, target, log);
   return {
     name: set.name,
     file: set.file,
@@ -227,5 +236,25 @@ function reportDisplacement(
     'attach-moved',
     `Atoms of ${set.name} lie off the crystal's by ${rms.toFixed(3)} Å rms, ${largest.toFixed(3)} Å at most.`,
     { place: { file: set.file, line: set.entries[0]?.place.line ?? 1 } },
+  );
+}
+
+function reportCellsAway(
+  set: TensorSet,
+  matches: readonly PositionMatch[],
+  { periodic = repeatsThroughout }: AttachTarget,
+  log: ProblemLog,
+): void {
+  const count = matches.filter(({ isCellsAway }) => isCellsAway).length;
+  if (count === 0) return;
+  const open = openAxes(periodic).join(', ');
+  log.add(
+    'note',
+    'attach-cells-away',
+    `Atoms of ${set.name} lie whole cells away from the crystal's, which does not repeat along ${open}: they were taken for the same ones.`,
+    {
+      place: { file: set.file, line: set.entries[0]?.place.line ?? 1 },
+      got: `${count} of ${matches.length} so far away`,
+    },
   );
 }

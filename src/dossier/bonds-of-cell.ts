@@ -1,8 +1,10 @@
+import { apply, determinant } from '#src/base/matrix3.ts';
 import type { Vec3, VecCart } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import { findBonds } from '#src/crystal/bonds.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
 import { wholeMolecules } from '#src/crystal/molecules.ts';
+import { periodicBasis } from '#src/crystal/periodic-basis.ts';
 import type { ChosenCrystal } from './choose-symmetry.ts';
 import type { BondRecord } from './dossier.ts';
 
@@ -12,7 +14,7 @@ import type { BondRecord } from './dossier.ts';
  */
 const crowdingLimit = 60_000;
 
-/** Edge in Å of the cubes in which the atoms of a molecule are counted: some twenty atoms of a dense solid each. */
+/** Å; in steps of this atoms are counted along directions that do not repeat: some twenty atoms of a dense solid a cube. */
 const countingEdgeAngstrom = 4;
 
 /**
@@ -53,7 +55,7 @@ export function bondsOf(
   }));
   const positions = atoms.flatMap(({ atom }) => (atom.fractional ? [atom.fractional] : []));
   const inCell = positions.length === atoms.length ? positions : undefined;
-  const shifts = wholeMolecules(atoms.length, found, inCell);
+  const shifts = wholeMolecules(atoms.length, found, inCell, crystal.periodic);
   const moved = shifts.flatMap((shift, index): [string, Vec3][] =>
     shift.some((x) => x !== 0) ? [[atoms[index]!.atom.id, shift]] : [],
   );
@@ -61,24 +63,29 @@ export function bondsOf(
 }
 
 /**
- * Atoms per Å³ that an atom of a molecule has around it, on average: molecules have no volume, and that of the box around
- * them would be made by a single atom far away.
+ * Atoms per Å³ that an atom has around it, on average: in a crystal those of the cell by its volume. Across directions that do
+ * not repeat they are counted in steps, because a box around them all would be made by a single atom far away.
  */
-function densityAround(positions: readonly VecCart[]): number {
+function densityAround({ lattice, periodic }: Crystal, positions: readonly VecCart[]): number {
+  const basis = periodicBasis(lattice, lattice ? periodic : [false, false, false]);
   const counts = new Map<string, number>();
   for (const position of positions) {
     if (!position.every(Number.isFinite)) continue;
-    const key = position.map((x) => Math.floor(x / countingEdgeAngstrom)).join();
-    counts.set(key, (counts.get(key) ?? 0) + 1);
+    const along = apply(basis.toBasis, position);
+    const key = along.map((x, axis) => (basis.periodic[axis] ? 0 : Math.floor(x / countingEdgeAngstrom)));
+    counts.set(key.join(), (counts.get(key.join()) ?? 0) + 1);
   }
   let squares = 0;
   for (const count of counts.values()) squares += count * count;
-  return squares / Math.max(1, positions.length) / countingEdgeAngstrom ** 3;
+  const steps = basis.periodic.filter((repeats) => !repeats).length;
+  const volume = Math.abs(determinant(basis.rows)) * countingEdgeAngstrom ** steps;
+  return squares / Math.max(1, positions.length) / volume;
 }
 
-function isTooCrowded({ lattice, place }: Crystal, positions: readonly VecCart[], log: ProblemLog): boolean {
+function isTooCrowded(crystal: Crystal, positions: readonly VecCart[], log: ProblemLog): boolean {
+  const { lattice, place } = crystal;
   const atoms = positions.length;
-  const perVolume = lattice ? atoms / lattice.volume : densityAround(positions);
+  const perVolume = densityAround(crystal, positions);
   if (atoms * perVolume <= crowdingLimit) return false;
   const density = Number(perVolume.toPrecision(3));
   log.add(

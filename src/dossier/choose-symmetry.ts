@@ -1,5 +1,6 @@
 import type { Vec3, VecFrac } from '#src/base/matrix3.ts';
 import { length, subtract } from '#src/base/vector3.ts';
+import { openAxes } from '#src/base/periodicity.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { Crystal, CrystalSymmetry, Site } from '#src/crystal/crystal.ts';
 import { atomFinder } from '#src/crystal/atom-finder.ts';
@@ -216,11 +217,11 @@ function searched(
 
 /** Says along which directions a cell does not repeat, and what that changes; nothing for a crystal. */
 function reportNotPeriodic({ periodic, place }: Crystal, log: ProblemLog): void {
-  const open = ['a', 'b', 'c'].filter((_, axis) => !periodic[axis]).join(', ');
+  const open = openAxes(periodic).join(', ');
   log.add(
     'warning',
     'cell-not-periodic',
-    `The cell does not repeat along ${open}: its symmetry is not searched, and no bonds are made across it there. Atoms outside the cell are still moved into it, and pictures still repeat it.`,
+    `The cell does not repeat along ${open}: atoms stand there as the file has them, nothing is bonded or drawn across the faces of the cell there, and no symmetry is searched.`,
     { place, got: `not periodic along ${open}`, allowed: 'space groups need all three directions' },
   );
 }

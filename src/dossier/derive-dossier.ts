@@ -75,6 +75,7 @@ function attachAll(
     const sameFile = set.file === crystal.place.file && set.structureIndex !== null;
     const target = {
       lattice: chosen.crystal.lattice,
+      periodic: crystal.periodic,
       images,
       siteCount: chosen.sites.length,
       rows: sameFile ? chosen.rowAtoms : null,
