@@ -15,7 +15,10 @@ export function announcement(state: WorkbenchState, before: WorkbenchState | nul
     const { name, siteCount, atomsInCell } = state.derived.crystal;
     return `${name} is on screen: ${counted(siteCount, 'site')}, ${counted(atomsInCell, 'atom')}, ${problemSummary(countProblems(state))}.`;
   }
-  return !state.selection && before?.selection ? 'Nothing is selected.' : null;
+  if (!state.decisions && before?.decisions) return 'The page is cleared.';
+  if (!state.selection && before?.selection) return 'Nothing is selected.';
+  // what could not be opened is not spoken of any more
+  return before?.refused && !state.refused ? '' : null;
 }
 
 /** What the live region says of a selected site. */

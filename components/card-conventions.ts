@@ -2,6 +2,7 @@ import { html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import { symbolOf } from './convention-symbol.ts';
+import { withSubscripts } from './symbol-text.ts';
 
 /** One column of values beside the names: shielding, shift, or the field gradient in another unit. */
 export interface ValueColumn {
@@ -75,8 +76,8 @@ function row(leading: ConventionEntry, columns: readonly ValueColumn[]): Templat
     })}
     <td class="definition">
       <details>
-        <summary>${firstClause(leading.definition)}</summary>
-        ${symbols.map((entry) => html`<p>${entry.definition}.</p>`)}
+        <summary>${withSubscripts(firstClause(leading.definition))}</summary>
+        ${symbols.map((entry) => html`<p>${withSubscripts(entry.definition)}.</p>`)}
         <p>${leading.convention}: ${leading.reference}</p>
       </details>
     </td>

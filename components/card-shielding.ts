@@ -11,6 +11,7 @@ import { conventionTable } from './card-conventions.ts';
 import { noiseList } from './card-noise.ts';
 import { reasons, valueOrReason } from './card-value.ts';
 import { matrixTable, turnedSentence } from './matrix-table.ts';
+import { withSubscripts } from './symbol-text.ts';
 
 /** Shielding and shift of a site in every convention, their axes, matrices and noise. */
 export function shieldingSection(
@@ -29,7 +30,9 @@ export function shieldingSection(
     ${conventionTable(entries, columns)}
     ${
       shift
-        ? html`<p class="soft">Shift: ${shift.reference}${shift.reference.includes('σ') ? ' (ppm)' : ''}</p>`
+        ? html`<p class="soft">
+            Shift: ${withSubscripts(shift.reference)}${shift.reference.includes('σ') ? ' (ppm)' : ''}
+          </p>`
         : nothing
     }
     ${reasons(leading, (shielding ?? shift)?.undefinedBecause ?? {})}

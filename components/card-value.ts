@@ -4,6 +4,7 @@ import { convention } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import { symbolOf } from './convention-symbol.ts';
 import { raiseIsotopes } from '#src/table/number-format.ts';
+import { withSubscripts } from './symbol-text.ts';
 
 /** A printed number, or what stands for none with the reason as its tooltip; the reasons also stand below the table. */
 export function valueOrReason(text: string, because: string | undefined): TemplateResult {
@@ -24,7 +25,7 @@ export function reasons(
     ([reason, fields]) =>
       html`<p class="reason">
         ${fields.map((field, i) => html`${i > 0 ? ', ' : nothing}${nameOf(quantity, field)}`)} undefined:
-        ${raiseIsotopes(reason)}
+        ${withSubscripts(raiseIsotopes(reason))}
       </p>`,
   )}`;
 }

@@ -2,21 +2,21 @@ import type { SiteColumn } from '#src/table/site-column.ts';
 
 /** Least width, px, and share of the room left over, of columns whose headings or texts say too little about it. */
 const known: Readonly<Record<string, readonly [number, number]>> = {
-  label: [88, 1.4],
+  label: [76, 1.4],
   nuclide: [44, 0.6],
-  multiplicity: [34, 0.2],
-  symmetry: [56, 1],
+  multiplicity: [32, 0.2],
+  symmetry: [50, 1],
   occupancy: [40, 0.3],
   forced: [220, 2],
   species: [120, 1],
   file: [120, 1],
-  'shielding-isotropic': [74, 0.8],
-  'shift-isotropic': [74, 0.8],
+  'shielding-isotropic': [68, 0.8],
+  'shift-isotropic': [62, 0.8],
   'shielding-span': [50, 0.8],
   'shift-span': [50, 0.8],
-  'shielding-skew': [42, 0.7],
-  'shift-skew': [42, 0.7],
-  'efg-couplingMHz': [66, 0.8],
+  'shielding-skew': [46, 0.7],
+  'shift-skew': [46, 0.7],
+  'efg-couplingMHz': [60, 0.8],
   'efg-asymmetry': [40, 0.7],
 };
 
@@ -37,7 +37,7 @@ function widthOf(column: SiteColumn): readonly [number, number] {
 const foreignPx = 38;
 
 /** Space between columns, px. */
-export const columnGap = 10;
+export const columnGap = 8;
 
 /** Tracks of the table's grid, and the width below which it scrolls sideways. */
 export function gridOf(

@@ -30,6 +30,7 @@ import type { PicturePanel, ToolsHost } from './picture-tools.ts';
 import { loadPanel, openPanel, pictureTools } from './picture-tools.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
+import { withSubscripts } from './symbol-text.ts';
 import './spoken-line.ts';
 import type { ViewPanel } from './view-panel.ts';
 import { viewStyles } from './view-styles.ts';
@@ -71,10 +72,7 @@ export class CrystalView extends StoreElement {
     'look',
     'measurements',
   ] as const;
-  readonly #marker = new PictureMarker(
-    () => this.store,
-    () => this.#marked(),
-  );
+  readonly #marker = new PictureMarker(this, () => this.#marked());
   readonly #board = new MeasurementBoard();
   #picture: CrystalPicture | null = null;
   #resize: ResizeObserver | null = null;
@@ -137,7 +135,7 @@ export class CrystalView extends StoreElement {
       </div>
       ${colourBar(scene)}
       <p class="caption" id="caption">
-        ${scene?.caption ?? ''}${scene ? html` <span class="soft">Drawn by ${this.#picture?.drawnBy}.</span>` : nothing}
+        ${withSubscripts(scene?.caption ?? '')}${scene ? html` <span class="soft">Drawn by ${this.#picture?.drawnBy}.</span>` : nothing}
       </p>
       ${sampleLine(store?.state.decisions ?? null)}
       <p class="hidden-but-spoken" id="keys">${keysInWords}</p>

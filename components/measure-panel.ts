@@ -19,6 +19,7 @@ import { panelStyles } from './panel-styles.ts';
 import type { PickedAtom } from './picture-marks.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
+import { withSubscripts } from './symbol-text.ts';
 
 const kinds = Object.keys(atomsNeeded) as PickedKind[];
 
@@ -114,7 +115,7 @@ export class MeasurePanel extends StoreElement {
               ? copiesText(copiesOf(measurement, crystal), shorterImage(measurement, crystal))
               : '';
           return html`<li>
-            <span>${kindWords[measurement.kind]} ${name}</span>
+            <span>${kindWords[measurement.kind]} ${withSubscripts(name)}</span>
             <span class="number">${measured ? valueText(measured) : 'not in this crystal'}</span>
             <button
               aria-label="Remove ${kindWords[measurement.kind]} ${name}"

@@ -2,9 +2,16 @@ import { holdsCase } from '#src/store/holds-case.ts';
 import type { FileInput, Store } from '#src/store/store.ts';
 import { oneCaseOnly } from '#src/store/case-problems.ts';
 
+/** Counts what was begun to open, store by store: a case file that is read late says nothing about what came after it. */
+const openings = new WeakMap<Store, number>();
+
 /** Opens what was chosen or dropped: files as a new case, or a case file (or a picture with one inside) as it was saved. */
 export async function openFiles(store: Store, files: readonly FileInput[]): Promise<boolean> {
+  const opening = (openings.get(store) ?? 0) + 1;
+  openings.set(store, opening);
+  const isOvertaken = (): boolean => openings.get(store) !== opening;
   const { cases, others } = await sorted(files);
+  if (isOvertaken()) return false;
   const [first, second] = cases;
   if (!first) return store.open(files);
   if (second) {
@@ -13,6 +20,7 @@ export async function openFiles(store: Store, files: readonly FileInput[]): Prom
   }
   const { readCaseFile } = await import('#src/store/case-exchange.ts');
   const { opened, problems } = await readCaseFile(first);
+  if (isOvertaken()) return false;
   if (!opened) {
     store.refuse(`open ${first.name}`, [first], problems);
     return false;

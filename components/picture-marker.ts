@@ -12,17 +12,17 @@ import { isSameAtom, pickedAtom, toggled } from './picture-marks.ts';
  * picking can be undone; its selection is the last of them.
  */
 export class PictureMarker {
-  readonly #storeOf: () => Store | null;
+  readonly #host: { readonly store: Store | null };
   readonly #changed: () => void;
   #kind: PickedKind | null = null;
 
-  constructor(storeOf: () => Store | null, changed: () => void) {
-    this.#storeOf = storeOf;
+  constructor(host: { readonly store: Store | null }, changed: () => void) {
+    this.#host = host;
     this.#changed = changed;
   }
 
   get marks(): readonly PickedAtom[] {
-    return this.#storeOf()?.state.picked ?? [];
+    return this.#host.store?.state.picked ?? [];
   }
 
   /** What is being measured; null while picking only selects. */
@@ -66,7 +66,7 @@ export class PictureMarker {
 
   /** Ends measuring, and with it what was picked for it. */
   clear(): void {
-    const store = this.#storeOf();
+    const { store } = this.#host;
     if (this.#kind !== null && store) this.#forget(store);
     this.#kind = null;
     this.#changed();

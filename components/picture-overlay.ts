@@ -10,6 +10,7 @@ import type { BoardEntry } from './measurement-board.ts';
 import type { PicturePoint } from './picture-controls.ts';
 import { pointedSentence } from './pointed-sentence.ts';
 import { sampleOf } from './sample-cases.ts';
+import { withSubscripts } from './symbol-text.ts';
 
 /** Rings round the atoms of the hovered site, in its colour. */
 export function ringsDrawing(
@@ -127,7 +128,7 @@ export function pointedDrawing(
   const down = isLow ? `bottom: ${viewport.heightPx - yPx + besidePx}px` : `top: ${yPx + besidePx}px`;
   const room = Math.max(150, (isRight ? xPx : viewport.widthPx - xPx) - besidePx - 4);
   return html`<div class="pointed" .style=${`${across}; ${down}; max-width: ${Math.min(room, 420)}px`}>
-    ${sentence}
+    ${withSubscripts(sentence)}
   </div>`;
 }
 

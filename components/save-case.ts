@@ -9,11 +9,13 @@ const ending = 'ellipsite.json';
 export async function saveCase(store: Store): Promise<void> {
   const { decisions } = store.state;
   if (!decisions) return;
+  const what = `save ${decisions.title}`;
   try {
     const text = await store.caseText();
     const title = decisions.title.replace(/\.ellipsite\.json$/i, '');
     saveBytes(new TextEncoder().encode(text), fileNameOf(title, ending), 'application/json');
+    if (store.state.refused?.what === what) store.dismissRefusal();
   } catch (error) {
-    store.refuse(`save ${decisions.title}`, [], [notSaved(error)]);
+    store.refuse(what, [], [notSaved(error)]);
   }
 }

@@ -63,7 +63,11 @@ export function choice<Value extends string>(
     <select id=${id} @change=${changed}>
       ${options.map(
         (option) =>
-          html`<option .selected=${option.value === value} ?disabled=${Boolean(option.reason)}>
+          html`<option
+            .selected=${option.value === value}
+            ?disabled=${Boolean(option.reason)}
+            title=${option.reason ?? nothing}
+          >
             ${option.words}${option.reason ? ` (${option.reason})` : ''}
           </option>`,
       )}

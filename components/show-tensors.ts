@@ -102,6 +102,8 @@ function tensorFields(context: ShowContext, quantity: SceneQuantity): TemplateRe
 }
 
 function semiAxes({ picture, scene, set }: ShowContext, quantity: SceneQuantity): TemplateResult {
+  const fault = scene?.scale?.totalFault ?? null;
+  const isEfg = quantity === 'efg';
   const isRefused = picture.ellipsoid === 'total' && scene?.scale?.kind === 'deviation';
   return html`${choice(
     'ellipsoid',
@@ -112,16 +114,18 @@ function semiAxes({ picture, scene, set }: ShowContext, quantity: SceneQuantity)
       {
         value: 'total',
         words: 'principal values',
-        reason: quantity === 'efg' ? 'they add up to zero, so not all are positive' : null,
+        reason: isEfg
+          ? 'they add up to zero, so not all are positive'
+          : fault && 'not all of them are positive',
       },
       { value: 'deviation', words: 'deviation from isotropic' },
     ],
     (ellipsoid, words) => set({ ellipsoid }, `semi-axes: ${words}`),
   )}
   ${
-    isRefused
-      ? html`<p class="note" role="status">
-          Some principal values are not positive, so their totals have no ellipsoid: deviations are drawn.
+    fault && (!isEfg || isRefused)
+      ? html`<p class="note" role=${isRefused ? 'status' : nothing}>
+          Principal values as semi-axes are not offered: ${fault}.${isRefused ? ' Deviations are drawn.' : ''}
         </p>`
       : nothing
   }`;

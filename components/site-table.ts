@@ -19,7 +19,7 @@ import { atomCells, siteCells } from './table-row.ts';
 import { TableSource, tableQuestion } from './table-source.ts';
 import { tableStyles } from './table-styles.ts';
 import type { TablePanel } from './table-tools.ts';
-import { tablePanel, tableTools } from './table-tools.ts';
+import { enterPanel, tablePanel, tableTools } from './table-tools.ts';
 
 const empty: RowList = listRows({ sites: new Int32Array(0), places: new Int32Array(0) }, new Map());
 
@@ -110,8 +110,9 @@ export class SiteTable extends StoreElement {
         <h2 id="title">${this.#headline(crystal)}</h2>
         ${tableTools(
           this.panel,
-          (panel) => (this.panel = panel),
+          (panel) => this.#show(panel),
           (kind) => this.#copy(kind),
+          this.#closeOnEscape,
         )}
       </div>
       ${tablePanel(this.panel, this.store, this.#closeOnEscape)}
@@ -251,8 +252,16 @@ export class SiteTable extends StoreElement {
     this.said = await copyTable(question, kind, (request) => store.ask('tableText', request));
   }
 
+  /** The focus goes into a panel that opens. */
+  async #show(panel: TablePanel): Promise<void> {
+    this.panel = panel;
+    await this.updateComplete;
+    if (panel) await enterPanel(panel, this.renderRoot);
+  }
+
+  /** From inside a panel or from its button; the button gets the focus back. */
   readonly #closeOnEscape = (event: KeyboardEvent): void => {
-    if (event.key !== 'Escape') return;
+    if (event.key !== 'Escape' || !this.panel) return;
     event.preventDefault();
     const opener = this.renderRoot.querySelector<HTMLElement>(`.tools .${this.panel}`);
     this.panel = null;

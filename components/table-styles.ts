@@ -62,7 +62,7 @@ export const tableStyles = css`
   .row {
     display: grid;
     grid-template-columns: var(--columns);
-    column-gap: 10px;
+    column-gap: 8px;
     align-items: center;
     padding: 0 8px 0 0;
     border-bottom: 1px solid var(--hairline);
@@ -100,6 +100,26 @@ export const tableStyles = css`
     font-size: 8px;
     margin-left: 3px;
     vertical-align: 1px;
+  }
+  /* the site stays in view while the other columns are scrolled past it */
+  .head [role='columnheader']:first-child,
+  .site .name {
+    position: sticky;
+    left: 0;
+    z-index: 1;
+    align-self: stretch;
+    background: var(--paper);
+  }
+  .site.hovered .name {
+    background: linear-gradient(var(--hovered), var(--hovered)), var(--paper);
+  }
+  .site.selected .name {
+    background: linear-gradient(var(--lit), var(--lit)), var(--paper);
+  }
+  .scroller:focus-visible .active .name {
+    box-shadow:
+      inset 2px 2px var(--accent),
+      inset 0 -2px var(--accent);
   }
   .body {
     position: relative;

@@ -1,5 +1,5 @@
 import { html, nothing } from 'lit';
-import type { TemplateResult } from 'lit';
+import type { LitElement, TemplateResult } from 'lit';
 import type { Store } from '#src/store/store.ts';
 import type { CopyKind } from './copy-table.ts';
 
@@ -11,6 +11,7 @@ export function tableTools(
   panel: TablePanel,
   show: (panel: TablePanel) => void,
   copy: (kind: CopyKind) => void,
+  keydown: (event: KeyboardEvent) => void,
 ): TemplateResult {
   const opens = (one: NonNullable<TablePanel>, words: string): TemplateResult =>
     html`<button
@@ -20,7 +21,7 @@ export function tableTools(
     >
       ${words}
     </button>`;
-  return html`<div class="tools" role="toolbar" aria-label="Site table">
+  return html`<div class="tools" role="toolbar" aria-label="Site table" @keydown=${keydown}>
     ${opens('filter', 'Filter')}${opens('columns', 'Columns')}
     <button
       title="all rows as a formatted table, for documents (Ctrl+C in the table)"
@@ -37,17 +38,34 @@ export function tableTools(
   </div>`;
 }
 
-/** The open panel, loaded when it is first opened. */
+/** The open panel. */
 export function tablePanel(
   panel: TablePanel,
   store: Store,
   keydown: (event: KeyboardEvent) => void,
 ): TemplateResult | typeof nothing {
-  if (panel === 'filter') {
-    void import('./table-filter.ts');
-    return html`<ellipsite-table-filter .store=${store} @keydown=${keydown}></ellipsite-table-filter>`;
-  }
+  if (panel === 'filter')
+    return html`<ellipsite-table-filter
+      class="panel"
+      role="group"
+      aria-label="Filter"
+      .store=${store}
+      @keydown=${keydown}
+    ></ellipsite-table-filter>`;
   if (panel !== 'columns') return nothing;
-  void import('./column-chooser.ts');
-  return html`<ellipsite-column-chooser .store=${store} @keydown=${keydown}></ellipsite-column-chooser>`;
+  return html`<ellipsite-column-chooser
+    class="panel"
+    role="group"
+    aria-label="Columns"
+    .store=${store}
+    @keydown=${keydown}
+  ></ellipsite-column-chooser>`;
+}
+
+/** Loads what a panel needs and, once it is drawn, puts the focus on its first control. */
+export async function enterPanel(panel: NonNullable<TablePanel>, root: ParentNode): Promise<void> {
+  await (panel === 'filter' ? import('./table-filter.ts') : import('./column-chooser.ts'));
+  const element = root.querySelector<LitElement>('.panel');
+  await element?.updateComplete;
+  element?.renderRoot.querySelector<HTMLElement>('input, select, button:not(:disabled)')?.focus();
 }

@@ -18,10 +18,9 @@ import { panelStyles } from './panel-styles.ts';
 import './saved-views.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
+import { withSubscripts } from './symbol-text.ts';
 
 const quantities = ['shielding', 'shift', 'efg'] as const;
-/** Sites among which a typed label is looked for. */
-const typedSites = 256;
 const axisSpelling =
   'A principal axis is typed by the label of its site and the component: Al1 Vzz, Al1 σ33, Al1 33.';
 const letters = ['a', 'b', 'c', 'a*', 'b*', 'c*'] as const;
@@ -147,7 +146,7 @@ export class ViewPanel extends StoreElement {
                     title=${axis ? '' : 'undefined: its principal value is degenerate'}
                     @click=${() => this.#look(name)}
                   >
-                    ${name} of ${of}
+                    ${withSubscripts(name)} of ${of}
                   </button>`,
               )}
             </div>`
@@ -215,18 +214,14 @@ export class ViewPanel extends StoreElement {
     return site ? principalAxes(site, selection.atomId, this.#shownFirst()) : [];
   }
 
-  /** Those of every site that is here as well: the selected atom comes first, then the sites' first atoms. */
-  #typedAxes(): NamedAxis[] {
+  /** Those of the sites a text names as well: the selected atom comes first, then the sites' first atoms. */
+  async #typedAxes(text: string): Promise<NamedAxis[]> {
     const { store } = this;
-    const siteCount = store?.state.derived?.crystal?.siteCount ?? 0;
-    const own = this.#namedAxes();
-    const typed = this.renderRoot.querySelector<HTMLInputElement>('#along')?.value.toLowerCase() ?? '';
-    for (let index = 0; store && index < Math.min(siteCount, typedSites); index++) {
-      const site = store.site(index);
-      if (site && typed.includes(site.label.toLowerCase()))
-        own.push(...principalAxes(site, null, this.#shownFirst()));
-    }
-    return own;
+    const selected = store?.state.selection;
+    // the selected site may be on its way
+    if (store && selected) await store.readSites([selected.siteIndex]);
+    const sites = (await store?.sitesNamed(text)) ?? [];
+    return [...this.#namedAxes(), ...sites.flatMap((site) => principalAxes(site, null, this.#shownFirst()))];
   }
 
   /** Quantities with the one that is drawn first: `Al1 33` means its axis. */
@@ -237,12 +232,13 @@ export class ViewPanel extends StoreElement {
 
   readonly #typed = (event: Event): void => {
     event.preventDefault();
-    this.#look(this.renderRoot.querySelector<HTMLInputElement>('#along')?.value ?? '');
+    void this.#look(this.renderRoot.querySelector<HTMLInputElement>('#along')?.value ?? '');
   };
 
-  #look(text: string): void {
+  async #look(text: string): Promise<void> {
     const axes = this.picture?.scene?.axes ?? [];
-    const named = this.#typedAxes();
+    const plain = parseLookAlong(text, axes);
+    const named = 'fault' in plain ? await this.#typedAxes(text) : [];
     const found = parseLookAlong(text, axes, named);
     const hasTensors = (this.store?.state.derived?.crystal?.quantities.length ?? 0) > 0;
     const spelling = hasTensors && named.length === 0 ? ` ${axisSpelling}` : '';

@@ -11,7 +11,7 @@ export const workbenchStyles = css`
   }
   main {
     display: grid;
-    grid-template-columns: minmax(0, 1fr) clamp(440px, 49%, 980px);
+    grid-template-columns: minmax(0, 1fr) clamp(440px, 50%, 980px);
     min-height: 0;
   }
   main.cleared > :not(.start) {

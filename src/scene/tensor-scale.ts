@@ -28,6 +28,9 @@ const thinnestAngstrom = 0.14;
 /** Values more unequal than this make a picture of a few giants. */
 const largestRatio = 4;
 
+/** Why ellipsoids of total values are not possible. */
+const totalFault = 'some principal values are not positive, so their totals have no ellipsoid';
+
 export interface ScaleChoice {
   readonly scale: TensorScale;
   /** Sentences: why another kind of ellipsoid or another scale was taken than asked for or usual. */
@@ -53,7 +56,8 @@ export function chooseScale(
   const expected = quantity === 'efg' && options.ellipsoid === 'auto';
   const notes = because && !expected ? [`Deviations are drawn because ${because}.`] : [];
   if (kind === 'total') return { scale: total, notes };
-  const scale = deviationScale(forms, pairs, quantity, options.unitsPerAngstrom, otherRadius);
+  const deviation = deviationScale(forms, pairs, quantity, options.unitsPerAngstrom, otherRadius);
+  const scale = areAllPositive(all) ? deviation : { ...deviation, totalFault };
   if (options.unitsPerAngstrom !== null && options.unitsPerAngstrom < scale.unitsPerAngstrom) {
     notes.push('The scale asked for would turn an ellipsoid inside out; the nearest possible one is taken.');
   }
@@ -69,7 +73,7 @@ function chooseKind(
   if (!areAllPositive(forms)) {
     return {
       kind: 'deviation',
-      because: 'some principal values are not positive, so their totals have no ellipsoid',
+      because: totalFault,
     };
   }
   const lowest = extremeValue(forms, Math.min);

@@ -27,6 +27,8 @@ export interface Queries {
   readonly scene: { readonly ask: Partial<SceneOptions>; readonly answer: Scene };
   /** Sites of these indices; those that do not exist are passed over. */
   readonly sites: { readonly ask: readonly number[]; readonly answer: readonly KnownSite[] };
+  /** Sites whose label stands in a text, the longest labels first, at most a handful. */
+  readonly sitesNamed: { readonly ask: string; readonly answer: readonly KnownSite[] };
   readonly table: { readonly ask: TableRequest; readonly answer: TablePage };
   readonly tableText: { readonly ask: TableTextRequest; readonly answer: string };
 }
@@ -39,6 +41,9 @@ export type Query = {
 }[QueryKind];
 
 export type QueryAnswer = Queries[QueryKind]['answer'];
+
+/** Sites named in one text, at most: a text names one or two, the others only have parts of its words as labels. */
+const namedSites = 12;
 
 /** Answers questions about one crystal; keeps the order of the table, of which many windows are asked for. */
 export class CrystalDesk {
@@ -55,6 +60,8 @@ export class CrystalDesk {
         return buildScene(this.#dossier, query.ask);
       case 'sites':
         return this.#sites(query.ask);
+      case 'sitesNamed':
+        return this.#sites(this.#named(query.ask));
       case 'table':
         return this.#page(query.ask);
       case 'tableText':
@@ -74,6 +81,15 @@ export class CrystalDesk {
       }));
       return [{ ...site, sharing }];
     });
+  }
+
+  #named(text: string): number[] {
+    const typed = text.toLowerCase();
+    return this.#dossier.sites
+      .filter(({ label }) => typed.includes(label.toLowerCase()))
+      .sort((one, other) => other.label.length - one.label.length || one.index - other.index)
+      .slice(0, namedSites)
+      .map(({ index }) => index);
   }
 
   #page(request: TableRequest): TablePage {

@@ -172,6 +172,11 @@ export class Store {
     return derived?.crystal ? this.#sites.read(derived, indices).catch(() => []) : Promise.resolve([]);
   }
 
+  /** Sites whose label stands in a text, whether they were read before or not. */
+  sitesNamed(text: string): Promise<readonly KnownSite[]> {
+    return this.ask('sitesNamed', text).catch(() => []);
+  }
+
   /** Asks about the crystal on screen; rejects without one, and where the engine could not answer. */
   ask<Kind extends QueryKind>(kind: Kind, ask: Queries[Kind]['ask']): Promise<Queries[Kind]['answer']> {
     const { derived } = this.state;

@@ -3,9 +3,11 @@ import { problem } from '#src/base/problem.ts';
 import { Cancelled } from './engine-client.ts';
 import type { EngineClient } from './engine-client.ts';
 import type { DerivedCase, SourceFile } from './engine-protocol.ts';
+import { fittingViews } from './fitting-views.ts';
 import type { Moment } from './moment.ts';
 import { afterSelection, afterStep, isSameMarks, momentOf, redone, undone, withViews } from './moment.ts';
 import type { Drawn, PictureMaker } from './picture-maker.ts';
+import type { SceneOptions } from '#src/scene/scene-options.ts';
 import type { SiteCache } from './site-cache.ts';
 import type { StateHolder } from './state-holder.ts';
 import type { Decisions, Marks, Step, Views } from './state.ts';
@@ -40,6 +42,8 @@ export class Timeline {
   #underway: Moment | null = null;
   /** How the screen's moment becomes the one underway; null where it is gone back to. */
   #recipes: readonly Recipe[] | null = null;
+  /** Another structure is underway: of the views stays what fits it. */
+  #isOtherStructure = false;
   /** Counts derivations: only the latest may come on screen. */
   #run = 0;
   /** The view step that may still grow. */
@@ -155,6 +159,9 @@ export class Timeline {
     this.#growing = null;
     const { decisions } = next;
     if (!decisions || decisions === this.#holder.state.decisions) return this.#goAtOnce(next, reason);
+    const goesOn = this.#underway !== null && this.#recipes !== null;
+    this.#isOtherStructure =
+      recipes !== null && (this.#choosesStructure(next) || (goesOn && this.#isOtherStructure));
     this.#underway = next;
     this.#recipes = recipes;
     this.#holder.change({ progress: { what: reason, share: 0, stage: 'starting' } }, `${reason} began`);
@@ -164,10 +171,10 @@ export class Timeline {
       });
       if (!isLatest()) return false;
       if (!derived.crystal) return this.#refuse(reason, decisions.sources, derived.problems);
-      const { picture } = this.newest.views;
-      const drawn = await this.#firstPicture(derived, reason);
+      const { picture } = this.#fitting(derived).views;
+      const drawn = await this.#firstPicture(derived, picture, reason);
       if (!isLatest()) return false;
-      this.#accept(this.newest, derived, drawn, reason);
+      this.#accept(this.#fitting(derived), derived, drawn, reason);
       if (this.#holder.state.picture !== picture) void this.#pictures.redraw();
       return true;
     } catch (error) {
@@ -192,14 +199,32 @@ export class Timeline {
   }
 
   /** Picture and selected site of a crystal that is about to come on screen, so that all of it comes at once. */
-  async #firstPicture(derived: DerivedCase, reason: string): Promise<Drawn> {
+  async #firstPicture(derived: DerivedCase, picture: SceneOptions, reason: string): Promise<Drawn> {
     const { selection } = this.newest;
     this.#holder.change(
       { progress: { what: reason, share: 1, stage: 'making the picture' } },
       'the picture is made',
     );
     if (selection) await this.#sites.read(derived, [selection.siteIndex]).catch(() => []);
-    return this.#pictures.first(derived, this.newest.views.picture);
+    return this.#pictures.first(derived, picture);
+  }
+
+  /** Another structure of the files on screen, as against other files, whose views come with them. */
+  #choosesStructure({ decisions }: Moment): boolean {
+    const before = this.#holder.state.decisions;
+    return (
+      before !== null &&
+      decisions?.sources[0]?.id === before.sources[0]?.id &&
+      decisions?.structure !== before.structure
+    );
+  }
+
+  /** The moment underway with what is known of its crystal now. */
+  #fitting({ crystal }: DerivedCase): Moment {
+    const { newest } = this;
+    return this.#isOtherStructure && crystal
+      ? { ...newest, views: fittingViews(newest.views, crystal) }
+      : newest;
   }
 
   #accept(

@@ -99,6 +99,46 @@ describe('case files', () => {
   });
 });
 
+describe('what could not be opened', () => {
+  const spoken = (): string => textOf(page.workbench.renderRoot.querySelector('[role=status]'));
+  const broken = { name: 'broken.json', blob: new Blob(['{"schema": "ellipsite/case", "version": ']) };
+  const good = { name: 'good.cif', blob: new Blob(['x']) };
+
+  it('is forgotten once something else is open, or the page is cleared', async () => {
+    expect(await openFiles(page.store, [broken])).toBe(false);
+    await settle();
+    expect(spoken()).toContain('Could not open broken.json');
+    expect(await openFiles(page.store, [good])).toBe(true);
+    await settle();
+    expect(page.store.state.refused).toBeNull();
+    expect(spoken()).not.toContain('Could not');
+    await openFiles(page.store, [broken]);
+    await page.store.clear();
+    await settle();
+    expect(spoken()).toBe('The page is cleared.');
+    await page.store.undo();
+    await openFiles(page.store, [broken]);
+    page.store.dismissRefusal();
+    await settle();
+    expect(spoken()).toBe('');
+  });
+
+  it('says nothing where a later file was opened before it was read', async () => {
+    // bytes that come late, as those of a large file do
+    const blob = new Blob([broken.blob]);
+    let come: (bytes: ArrayBuffer) => void = () => undefined;
+    const late = new Promise<ArrayBuffer>((resolve) => (come = resolve));
+    blob.arrayBuffer = () => late;
+    const opening = openFiles(page.store, [{ name: 'late.json', blob }]);
+    await settle();
+    expect(await openFiles(page.store, [good])).toBe(true);
+    come(await broken.blob.arrayBuffer());
+    expect(await opening).toBe(false);
+    expect(page.store.state.refused).toBeNull();
+    expect(page.store.state.decisions?.title).toBe('good.cif');
+  });
+});
+
 describe('the page when cleared', () => {
   it('says what can be done, and has nothing to save', async () => {
     await page.store.clear();

@@ -1,5 +1,7 @@
 import { beforeEach, describe, expect, it, vi } from 'vitest';
+import { gridOf } from '#components/column-widths.ts';
 import type { SiteDossier } from '#src/dossier/dossier.ts';
+import { columnsOf, defaultColumns } from '#src/table/site-columns.ts';
 import { fixtureCase, fixtureDossier } from '#tests/support/dossier-fixture.ts';
 import type { Mounted } from './mount.ts';
 import { mountWorkbench, press, settle, textOf } from './mount.ts';
@@ -225,5 +227,56 @@ describe('a file with other sites', () => {
     press(grid(), 'Enter');
     await settle();
     expect([...grid().querySelectorAll('.atom')].map(textOf)[0]).toContain('x, y, z at 0.1, 0.2, 0.3');
+  });
+});
+
+describe('the panels of the table', () => {
+  beforeEach(async () => {
+    page = await mountWorkbench();
+  });
+
+  it.each([
+    ['Filter', 'ellipsite-table-filter'],
+    ['Columns', 'ellipsite-column-chooser'],
+  ])('%s takes the focus in and gives it back on Escape', async (words, tag) => {
+    button(words).focus();
+    const panel = await openPanel(words, tag);
+    await vi.waitFor(() => expect(panel.activeElement).not.toBeNull());
+    press(panel.activeElement!, 'Escape');
+    await settle();
+    expect(root().querySelector(tag)).toBeNull();
+    expect(root().activeElement).toBe(button(words));
+  });
+
+  it('close on Escape from their button too', async () => {
+    await openPanel('Filter', 'ellipsite-table-filter');
+    button('Filter').focus();
+    press(button('Filter'), 'Escape');
+    await settle();
+    expect(root().querySelector('ellipsite-table-filter')).toBeNull();
+  });
+});
+
+describe('the width of the table', () => {
+  it('holds all usual columns on a page 1280 px wide', () => {
+    const traits = { quantities: ['shielding', 'shift', 'efg'], isPartlyOccupied: false } as const;
+    const { leastPx } = gridOf(columnsOf(defaultColumns(traits)), false);
+    // half the page, less a hairline, the padding on the left and a scroll bar
+    expect(leastPx).toBeLessThanOrEqual(1280 / 2 - 1 - 16 - 15);
+  });
+
+  it('scrolls sideways where it is wider, past the site, which stays', async () => {
+    page = await mountWorkbench();
+    const many = ['label', 'nuclide', 'forced', 'species', 'file', 'shielding-span', 'efg-asymmetry'];
+    page.store.setTable({ columns: many }, 'columns');
+    page.part('ellipsite-site-table').setAttribute('style', 'width: 420px');
+    await settle();
+    await settle();
+    const left = (selector: string): number =>
+      grid().querySelector(selector)!.getBoundingClientRect().left - grid().getBoundingClientRect().left;
+    grid().scrollLeft = 200;
+    expect(grid().scrollLeft).toBe(200);
+    for (const site of ['.head [role=columnheader]', '.site .name']) expect(left(site)).toBeCloseTo(0, 0);
+    expect(left('.head [role=columnheader]:nth-child(2)')).toBeLessThan(0);
   });
 });
