@@ -1,3 +1,4 @@
+import { countOf, wordFor } from '#src/base/count-of.ts';
 import { apply, identity3, multiply, transpose } from '#src/base/matrix3.ts';
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import type { Periodicity } from '#src/base/periodicity.ts';
@@ -123,6 +124,18 @@ function describeCell({ cell }: Lattice): string {
   return `${lengths} Å; ${angles}°`;
 }
 
+/** Shared by all sites without a tensor; a list of their own comes with the first. */
+const noTensors: SiteTensor[] = [];
+
+/** The tensor of a site's own atom goes before those of its images. */
+function addTensor(bySite: SiteTensor[][], { siteIndex, own }: AtomImage, found: SiteTensor): void {
+  const list = bySite[siteIndex];
+  if (list === undefined) return;
+  if (list.length === 0) bySite[siteIndex] = [found];
+  else if (own) list.unshift(found);
+  else list.push(found);
+}
+
 /**
  * Binds a tensor set to the atoms of a crystal and turns its tensors into the crystal's frame.
  * Raises `attach-other-cell`, `attach-no-evidence`, `attach-refused`, `attach-by-label`, `attach-unmatched`, `attach-twice`, `attach-moved`,
@@ -131,8 +144,7 @@ function describeCell({ cell }: Lattice): string {
 export function attachTensors(set: TensorSet, target: AttachTarget, log: ProblemLog): Attachment | null {
   const binding = chooseBinding(set, target, log);
   if (!binding) return null;
-  const own: SiteTensor[][] = Array.from({ length: target.siteCount }, () => []);
-  const others: SiteTensor[][] = Array.from({ length: target.siteCount }, () => []);
+  const bySite: SiteTensor[][] = Array.from({ length: target.siteCount }, () => noTensors);
   const indices = set.entries.map(binding.imageOf);
   if (refused(set, binding.method, indices, log)) return null;
   const taken = new Set<number>();
@@ -156,8 +168,7 @@ export function attachTensors(set: TensorSet, target: AttachTarget, log: Problem
     }
     taken.add(index);
     const tensor = turned(binding.rotation, entry.tensor);
-    const list = image.own ? own : others;
-    list[image.siteIndex]?.push({ tensor, rotation: image.rotation, entry });
+    addTensor(bySite, image, { tensor, rotation: image.rotation, entry });
   }
   const distances = binding.matches.map(({ distanceAngstrom }) => distanceAngstrom);
   const rmsDisplacementAngstrom = rootMeanSquare(distances);
@@ -170,7 +181,7 @@ export function attachTensors(set: TensorSet, target: AttachTarget, log: Problem
     unitGiven: set.unitGiven,
     method: binding.method,
     rotation: binding.rotation,
-    bySite: own.map((list, site) => [...list, ...(others[site] ?? [])]),
+    bySite,
     rmsDisplacementAngstrom,
   };
 }
@@ -190,7 +201,7 @@ function refused(
   log.add(
     'error',
     'attach-refused',
-    `Only ${found} of the ${indices.length} atoms of ${set.name} are found in the crystal: its tensors were left out.`,
+    `Only ${found} of the ${countOf(indices.length, 'atom')} of ${set.name} ${wordFor(found, 'is', 'are')} found in the crystal: its tensors were left out.`,
     {
       place: { file: set.file, line: set.entries[0]?.place.line ?? 1 },
       allowed: `at least ${leastMatchedShare * 100} % of them within ${matchDistanceAngstrom} Å of an atom of the same element`,

@@ -4,6 +4,7 @@ import type { CaseDecisions, CaseSource, CaseViews } from '#src/case/case-docume
 import type { Crystal } from '#src/crystal/crystal.ts';
 import { symmetryTablesFromBytes } from '#src/crystal/symmetry-tables.ts';
 import { deriveDossier } from '#src/dossier/derive-dossier.ts';
+import type { DossierInput } from '#src/dossier/derive-dossier.ts';
 import type { CrystalDossier } from '#src/dossier/dossier.ts';
 import type { Reading } from '#src/readers/reading.ts';
 import type { CommonArguments } from './arguments.ts';
@@ -22,6 +23,11 @@ export interface LoadedCase {
   readonly decisions: CaseDecisions;
   /** Those of the case file; null without one. */
   readonly views: CaseViews | null;
+}
+
+/** The same before the dossier is derived: what it is to be derived from; null when no file holds a structure. */
+export interface ChosenCase extends Omit<LoadedCase, 'dossier'> {
+  readonly input: DossierInput | null;
 }
 
 interface ChosenStructure {
@@ -76,11 +82,19 @@ function chooseStructure(
   return named ?? null;
 }
 
-/**
- * Reads the files, takes the first structure (or `--block`, or the one a case file names) as the crystal, attaches the
- * tensors of that structure and of the other files, and derives the dossier. Options go before what a case file says.
- */
+/** As `chooseCase` does, and derives the dossier. */
 export async function loadCase(common: CommonArguments, io: CommandIo): Promise<LoadedCase> {
+  const { input, problems, ...about } = await chooseCase(common, io);
+  if (!input) return { dossier: null, problems, ...about };
+  const dossier = deriveDossier(input);
+  return { dossier, problems: dossier.problems, ...about };
+}
+
+/**
+ * Reads the files and takes the first structure (or `--block`, or the one a case file names) as the crystal, with the
+ * tensors of that structure and of the other files. Options go before what a case file says.
+ */
+export async function chooseCase(common: CommonArguments, io: CommandIo): Promise<ChosenCase> {
   const log = new ProblemLog();
   const read = await readFiles(common.files, io);
   read.problems.forEach((found) => log.push(found));
@@ -89,24 +103,20 @@ export async function loadCase(common: CommonArguments, io: CommandIo): Promise<
   const decided = opened?.decisions.structure ?? null;
   const chosen = chooseStructure(readings, common.block, decided, log);
   const structure = chosen && { source: readings.indexOf(chosen.reading), index: chosen.index };
+  const problems = log.list();
   const about = {
+    problems,
     title: opened?.title ?? read.sources[0]?.name ?? '',
     sources: read.sources,
     decisions: { structure, settings, accepted: opened?.decisions.accepted ?? [] },
     views: opened?.views ?? null,
   };
-  if (!chosen) return { dossier: null, problems: log.list(), ...about };
+  if (!chosen) return { input: null, ...about };
   const tensorSets = readings.flatMap((reading) => {
     if (reading === chosen.reading)
       return reading.tensorSets.filter((set) => set.structureIndex === chosen.index);
     return reading.tensorSets.filter((set) => set.structureIndex === null || set.structureIndex === 0);
   });
-  const dossier = deriveDossier({
-    crystal: chosen.crystal,
-    tensorSets,
-    tables: symmetryTablesFromBytes(io.symmetryModule()),
-    settings,
-    problems: log.list(),
-  });
-  return { dossier, problems: dossier.problems, ...about };
+  const tables = symmetryTablesFromBytes(io.symmetryModule());
+  return { input: { crystal: chosen.crystal, tensorSets, tables, settings, problems }, ...about };
 }

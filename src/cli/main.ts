@@ -2,6 +2,7 @@
 import { readFileSync } from 'node:fs';
 import { readFile, writeFile } from 'node:fs/promises';
 import { createRequire } from 'node:module';
+import { gatheredOutput } from './gathered-output.ts';
 import type { CommandIo } from './io.ts';
 import { main } from './run.ts';
 
@@ -43,11 +44,13 @@ async function keepBytes(path: string, bytes: Uint8Array): Promise<void> {
   }
 }
 
+const output = gatheredOutput((bytes) => void process.stdout.write(bytes));
+
 const io: CommandIo = {
   readFile: bytesOf,
   readStandardInput: standardInput,
-  writeOut: (text) => void process.stdout.write(text),
-  writeOutBytes: (bytes) => void process.stdout.write(bytes),
+  writeOut: output.text,
+  writeOutBytes: output.bytes,
   writeFile: keepBytes,
   writeError: (text) => void process.stderr.write(text),
   symmetryModule: () => readFileSync(require.resolve('@spglib/moyo-wasm/moyo_wasm_bg.wasm')),
@@ -56,4 +59,8 @@ const io: CommandIo = {
 process.stdout.on('error', (error: NodeJS.ErrnoException) => {
   if (error.code !== 'EPIPE') throw error;
 });
-process.exitCode = await main(process.argv.slice(2), io, packageVersion());
+try {
+  process.exitCode = await main(process.argv.slice(2), io, packageVersion());
+} finally {
+  output.flush();
+}

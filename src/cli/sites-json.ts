@@ -1,13 +1,8 @@
 import { nested } from '#src/base/matrix3.ts';
 import type { Vec3 } from '#src/base/matrix3.ts';
 import type { Problem } from '#src/base/problem.ts';
-import type {
-  CrystalDossier,
-  EfgDossier,
-  ShieldingDossier,
-  ShiftDossier,
-  SiteDossier,
-} from '#src/dossier/dossier.ts';
+import type { BegunDossier, CrystalHead } from '#src/dossier/derive-dossier.ts';
+import type { EfgDossier, ShieldingDossier, ShiftDossier, SiteDossier } from '#src/dossier/dossier.ts';
 
 const list = (v: Vec3 | null): number[] | null => (v ? [...v] : null);
 
@@ -97,7 +92,7 @@ function siteJson(site: SiteDossier) {
   };
 }
 
-function crystalJson(dossier: CrystalDossier) {
+function crystalJson(dossier: CrystalHead) {
   const { lattice, symmetry } = dossier;
   return {
     name: dossier.name,
@@ -118,16 +113,19 @@ function crystalJson(dossier: CrystalDossier) {
 }
 
 /**
- * The document of `ellipsite sites --json`, schema `ellipsite/sites/1`, in pieces of one site each, so that a crystal of
- * any size can be written. `crystal` is null where no structure was read.
+ * The document of `ellipsite sites --json`, schema `ellipsite/sites/1`, in pieces of one site each, which are made one after
+ * the other, so that a crystal of any size can be written. Without a crystal, where no structure was read, it tells the
+ * problems of reading.
  */
-export function* sitesJson(dossier: CrystalDossier | null, problems: readonly Problem[]): Generator<string> {
-  const crystal = dossier ? crystalJson(dossier) : null;
+export function* sitesJson(begun: BegunDossier | null, ofReading: readonly Problem[]): Generator<string> {
+  const crystal = begun ? crystalJson(begun.head) : null;
   yield `{\n "schema": "ellipsite/sites/1",\n "crystal": ${JSON.stringify(crystal, null, 1)},\n "sites": [`;
   let separator = '\n';
-  for (const site of dossier?.sites ?? []) {
-    yield separator + JSON.stringify(siteJson(site), null, 1);
+  for (let index = 0; begun && index < begun.siteCount; index += 1) {
+    yield separator + JSON.stringify(siteJson(begun.site(index)), null, 1);
     separator = ',\n';
   }
+  begun?.reportBonds();
+  const problems = begun?.problems() ?? ofReading;
   yield `],\n "problems": ${JSON.stringify(problems, null, 1)}\n}\n`;
 }

@@ -1,5 +1,7 @@
 import { problem } from '#src/base/problem.ts';
 import type { Problem } from '#src/base/problem.ts';
+import type { ReportProgress } from '#src/base/progress.ts';
+import { unwatched } from '#src/base/progress.ts';
 import type { Vec3 } from '#src/base/matrix3.ts';
 import type { Periodicity } from '#src/base/periodicity.ts';
 import { repeatsThroughout } from '#src/base/periodicity.ts';
@@ -21,7 +23,7 @@ import { ligandCounts } from './ligand-counts.ts';
 import type { Lattice } from './lattice.ts';
 import { withoutUntaggedAlternatives } from './untagged-disorder.ts';
 import type { NeighbourPairs } from './neighbours.ts';
-import { findNeighbours } from './neighbours.ts';
+import { findNeighbours, mostNeighbourPairs } from './neighbours.ts';
 
 export type { Bond, BondAtom } from './bond-atom.ts';
 
@@ -30,6 +32,7 @@ export interface BondOptions {
   readonly periodic?: Periodicity;
   /** Told when the search had to stop: code `bonds-incomplete`. */
   readonly report?: (found: Problem) => void;
+  readonly progress?: ReportProgress;
 }
 
 /** Pairs within bonding reach that are looked at per atom before the arrangement counts as a heap on one spot. */
@@ -61,7 +64,41 @@ export function findBonds(
   lattice: Lattice | null,
   options: BondOptions = {},
 ): Bond[] {
-  const { periodic = repeatsThroughout, report = () => undefined } = options;
+  const { periodic = repeatsThroughout, report = () => undefined, progress = unwatched } = options;
+  const { elements, reach } = bondingElements(atoms);
+  const positions = atoms.map(({ cartesian }) => cartesian);
+  const maximumPairs = pairsPerAtom * atoms.length;
+  const pairs = findNeighbours(lattice, positions, reach, {
+    periodic,
+    maximumPairs,
+    reached: (share) => progress(0.4 * share, 'bonds'),
+  });
+  progress(0.4, 'bonds');
+  if (!pairs.complete) report(tooCrowded(maximumPairs));
+  const contacts = contactsOf(
+    atoms,
+    elements,
+    pairs,
+    (a, b, distance) => distance <= Math.max(longestBond(a, b), longestHydrogenBond(a, b)),
+  );
+  progress(0.6, 'bonds');
+  const covalent = withoutUntaggedAlternatives(atoms, elements, nonmetalBonds(elements, contacts));
+  const ionic = metalLigandBonds(atoms, elements, contacts, covalent);
+  progress(0.7, 'bonds');
+  const metallic = [
+    ...ligatedMetalBonds(elements, contacts, ionic),
+    ...firstShells(bareMetals(elements, ionic, pairs), atoms, elements, lattice, periodic),
+  ];
+  const bonds = [...covalent, ...ionic, ...metallic].map(asBond);
+  progress(0.85, 'bonds');
+  return sortBonds([...bonds, ...hydrogenBonds(atoms, elements, lattice, contacts, bonds)]);
+}
+
+/** By atom what bonds go by, and how far (Å) the longest bond of any kind among them may reach. */
+function bondingElements(atoms: readonly Pick<BondAtom, 'element'>[]): {
+  elements: BondingElement[];
+  reach: number;
+} {
   const known = new Map<string, BondingElement>();
   const elements = atoms.map(({ element }) => {
     const found = known.get(element) ?? bondingElement(element);
@@ -70,27 +107,18 @@ export function findBonds(
   });
   const kinds = [...known.values()];
   const longest = Math.max(0, ...kinds.flatMap((a) => kinds.map((b) => longestBond(a, b))));
+  return { elements, reach: Math.max(longest, hydrogenBondReach(kinds)) };
+}
+
+/** False where `findBonds` surely finds all bonds of these atoms and reports nothing; told without looking for them. */
+export function mayStopShort(
+  atoms: readonly Pick<BondAtom, 'element' | 'cartesian'>[],
+  lattice: Lattice | null,
+  periodic: Periodicity,
+): boolean {
+  const { reach } = bondingElements(atoms);
   const positions = atoms.map(({ cartesian }) => cartesian);
-  const maximumPairs = pairsPerAtom * atoms.length;
-  const pairs = findNeighbours(lattice, positions, Math.max(longest, hydrogenBondReach(kinds)), {
-    periodic,
-    maximumPairs,
-  });
-  if (!pairs.complete) report(tooCrowded(maximumPairs));
-  const contacts = contactsOf(
-    atoms,
-    elements,
-    pairs,
-    (a, b, distance) => distance <= Math.max(longestBond(a, b), longestHydrogenBond(a, b)),
-  );
-  const covalent = withoutUntaggedAlternatives(atoms, elements, nonmetalBonds(elements, contacts));
-  const ionic = metalLigandBonds(atoms, elements, contacts, covalent);
-  const metallic = [
-    ...ligatedMetalBonds(elements, contacts, ionic),
-    ...firstShells(bareMetals(elements, ionic, pairs), atoms, elements, lattice, periodic),
-  ];
-  const bonds = [...covalent, ...ionic, ...metallic].map(asBond);
-  return sortBonds([...bonds, ...hydrogenBonds(atoms, elements, lattice, contacts, bonds)]);
+  return mostNeighbourPairs(lattice, positions, reach, periodic) > pairsPerAtom * atoms.length;
 }
 
 /** Pairs within reach that are not alternatives of each other and do not overlap. */

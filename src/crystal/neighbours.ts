@@ -29,6 +29,8 @@ export interface NeighbourOptions {
   readonly periodic?: Periodicity;
   /** The search stops after so many pairs (20 million unless given), which only heaps of atoms on one spot reach. */
   readonly maximumPairs?: number;
+  /** Told the share of the work that is done, some 20 times. */
+  readonly reached?: (share: number) => void;
 }
 
 /**
@@ -46,20 +48,46 @@ export function findNeighbours(
   cutoffAngstrom: number,
   options: NeighbourOptions = {},
 ): NeighbourPairs {
-  const { periodic = repeatsThroughout, maximumPairs = 20_000_000 } = options;
+  const { periodic = repeatsThroughout, maximumPairs = 20_000_000, reached } = options;
   const basis = periodicBasis(lattice, periodic);
   const found = new PairCollector(maximumPairs, basis);
   if (!(cutoffAngstrom > 0 && cutoffAngstrom < Infinity)) return found.result(0);
   const grid = sortIntoBins(basis, flatten(positions), cutoffAngstrom);
   const steps = halfStencil(grid.reach);
+  const reportEvery = Math.ceil(grid.binCount / 20);
   let tested = 0;
   for (let bin = 0; bin < grid.binCount; bin++) {
+    if (bin % reportEvery === 0) reached?.(bin / grid.binCount);
     for (const step of steps) {
       tested += searchBinPair(grid, basis, bin, step, cutoffAngstrom, found);
       if (found.full) return found.result(tested);
     }
   }
   return found.result(tested);
+}
+
+/**
+ * Upper bound of the pairs that `findNeighbours` finds for the same arguments, without a single distance: the pairs of atoms
+ * that share a bin or stand in bins within reach of each other.
+ */
+export function mostNeighbourPairs(
+  lattice: Lattice | null,
+  positions: Float64Array | readonly VecCart[],
+  cutoffAngstrom: number,
+  periodic: readonly [boolean, boolean, boolean],
+): number {
+  if (!(cutoffAngstrom > 0 && cutoffAngstrom < Infinity)) return 0;
+  const grid = sortIntoBins(periodicBasis(lattice, periodic), flatten(positions), cutoffAngstrom);
+  const steps = halfStencil(grid.reach);
+  const held = (bin: number): number => grid.starts[bin + 1]! - grid.starts[bin]!;
+  let most = 0;
+  for (let bin = 0; bin < grid.binCount; bin++) {
+    for (const step of steps) {
+      const other = binAt(grid, bin, step);
+      if (other) most += held(bin) * held(other.bin);
+    }
+  }
+  return most;
 }
 
 /** Distances between the atoms of a bin and those of the bin one step away; returns how many were computed. */

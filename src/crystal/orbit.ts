@@ -49,12 +49,29 @@ function cellShiftOf(component: number): number {
   return -Math.floor(component + edge) + 0;
 }
 
-function intoCell(position: VecFrac, periodic: Periodicity): { fractional: VecFrac; cellShift: Vec3 } {
-  const shift = (axis: 0 | 1 | 2): number => (periodic[axis] ? cellShiftOf(position[axis]) : 0);
-  const cellShift: Vec3 = [shift(0), shift(1), shift(2)];
-  const moved = (axis: 0 | 1 | 2): number =>
-    periodic[axis] ? Math.max(0, position[axis] + cellShift[axis]) : position[axis];
-  return { fractional: [moved(0), moved(1), moved(2)], cellShift };
+/* Shared by all images that need no shift and all sites without symmetry: a large cell has many. */
+const noShift: Vec3 = [0, 0, 0];
+const identityAlone: readonly number[] = [0];
+
+function shiftAlong(position: VecFrac, periodic: Periodicity, axis: 0 | 1 | 2): number {
+  return periodic[axis] ? cellShiftOf(position[axis]) : 0;
+}
+
+function movedAlong(position: VecFrac, shift: number, periodic: Periodicity, axis: 0 | 1 | 2): number {
+  return periodic[axis] ? Math.max(0, position[axis] + shift) : position[axis];
+}
+
+function intoCell(position: VecFrac, periodic: Periodicity, operationIndex: number): OrbitImage {
+  const a = shiftAlong(position, periodic, 0);
+  const b = shiftAlong(position, periodic, 1);
+  const c = shiftAlong(position, periodic, 2);
+  const fractional: VecFrac = [
+    movedAlong(position, a, periodic, 0),
+    movedAlong(position, b, periodic, 1),
+    movedAlong(position, c, periodic, 2),
+  ];
+  const cellShift: Vec3 = a === 0 && b === 0 && c === 0 ? noShift : [a, b, c];
+  return { fractional, cellShift, operationIndex };
 }
 
 /** The image of a position under one operation, brought into the cell along axes that repeat. */
@@ -64,7 +81,7 @@ export function imageOf(
   operationIndex: number,
   periodic: Periodicity = repeatsThroughout,
 ): OrbitImage {
-  return { ...intoCell(applyOperation(operations[operationIndex]!, position), periodic), operationIndex };
+  return intoCell(applyOperation(operations[operationIndex]!, position), periodic, operationIndex);
 }
 
 /** By operation: the way from the position to its nearest image, null where that is further than the lookout. */
@@ -155,6 +172,9 @@ export function orbitOf(
   mergeDistanceAngstrom: number = defaultMergeDistanceAngstrom,
   periodic: Periodicity = repeatsThroughout,
 ): Orbit {
+  if (operations.length === 1 && groupTable(operations).isGroup && position.every(Number.isFinite)) {
+    return orbitOfIdentity(position, operations, periodic);
+  }
   const moved = operations.map((operation) => applyOperation(operation, position));
   const lookout = Math.max(lookoutAngstrom, 2 * mergeDistanceAngstrom);
   const nearOffset = nearOffsetFinder(lattice, lookout, periodic);
@@ -169,6 +189,22 @@ export function orbitOf(
   const images = representatives.map((index) => imageOf(position, operations, index, periodic));
   const averaged = averagedPosition(position, stabiliser, offsets);
   return { images, stabiliser, averaged, uneven, ...margins(stabiliser, offsets) };
+}
+
+/** Without symmetry a site is its own orbit. */
+function orbitOfIdentity(
+  position: VecFrac,
+  operations: readonly SymmetryOperation[],
+  periodic: Periodicity,
+): Orbit {
+  return {
+    images: [imageOf(position, operations, 0, periodic)],
+    stabiliser: identityAlone,
+    averaged: position,
+    uneven: false,
+    mergedWithinAngstrom: 0,
+    nextAngstrom: null,
+  };
 }
 
 function margins(

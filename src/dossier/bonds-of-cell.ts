@@ -1,10 +1,15 @@
-import { apply, determinant } from '#src/base/matrix3.ts';
+import { countOf } from '#src/base/count-of.ts';
 import type { Vec3, VecCart } from '#src/base/matrix3.ts';
+import { apply, determinant } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
-import { findBonds } from '#src/crystal/bonds.ts';
+import type { ReportProgress } from '#src/base/progress.ts';
+import { partOf, unwatched } from '#src/base/progress.ts';
+import type { BondAtom } from '#src/crystal/bond-atom.ts';
+import { findBonds, mayStopShort } from '#src/crystal/bonds.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
 import { wholeMolecules } from '#src/crystal/molecules.ts';
 import { periodicBasis } from '#src/crystal/periodic-basis.ts';
+import type { SiteAtoms } from './cell-atoms.ts';
 import type { ChosenCrystal } from './choose-symmetry.ts';
 import type { BondRecord } from './dossier.ts';
 
@@ -17,6 +22,25 @@ const crowdingLimit = 60_000;
 /** Å; in steps of this atoms are counted along directions that do not repeat: some twenty atoms of a dense solid a cube. */
 const countingEdgeAngstrom = 4;
 
+/** Every atom of the cell as bonds are made from, site after site. */
+function bondAtoms(sites: readonly SiteAtoms[]): BondAtom[] {
+  const atoms: BondAtom[] = [];
+  for (const { site, atoms: images, cellShifts } of sites) {
+    for (const [image, { cartesian, operationIndex }] of images.entries()) {
+      atoms.push({
+        element: site.element,
+        cartesian,
+        occupancy: site.occupancy,
+        disorder: site.disorder,
+        siteIndex: site.index,
+        operationIndex,
+        cellShift: cellShifts[image] ?? [0, 0, 0],
+      });
+    }
+  }
+  return atoms;
+}
+
 /**
  * Bonds among all atoms of the cell by atom id, and the cell shifts that make finite molecules whole. None, with
  * `cell-too-crowded`, where atoms are packed far denser than in any crystal.
@@ -24,42 +48,47 @@ const countingEdgeAngstrom = 4;
 export function bondsOf(
   { crystal, sites }: ChosenCrystal,
   log: ProblemLog,
+  progress: ReportProgress = unwatched,
 ): {
   bonds: BondRecord[];
   wholeMolecules: Record<string, Vec3>;
 } {
-  const atoms = sites.flatMap(({ site, atoms: images, cellShifts }) =>
-    images.map((atom, image) => ({ site, atom, cellShift: cellShifts[image] ?? ([0, 0, 0] as const) })),
-  );
-  const cartesians = atoms.map(({ atom }) => atom.cartesian);
+  progress(0, 'bonds');
+  const atoms = bondAtoms(sites);
+  const cartesians = atoms.map(({ cartesian }) => cartesian);
   if (isTooCrowded(crystal, cartesians, log)) return { bonds: [], wholeMolecules: {} };
-  const found = findBonds(
-    atoms.map(({ site, atom, cellShift }) => ({
-      element: site.element,
-      cartesian: atom.cartesian,
-      occupancy: site.occupancy,
-      disorder: site.disorder,
-      siteIndex: site.index,
-      operationIndex: atom.operationIndex,
-      cellShift,
-    })),
-    crystal.lattice,
-    { periodic: crystal.periodic, report: (found) => log.push(found) },
-  );
+  const found = findBonds(atoms, crystal.lattice, {
+    periodic: crystal.periodic,
+    report: (found) => log.push(found),
+    progress: partOf(progress, 0.1, 0.8),
+  });
+  progress(0.8, 'molecules');
+  const images = sites.flatMap(({ atoms: ofSite }) => ofSite);
   const bonds = found.map((bond): BondRecord => ({
-    from: atoms[bond.from]!.atom.id,
-    to: atoms[bond.to]!.atom.id,
+    from: images[bond.from]!.id,
+    to: images[bond.to]!.id,
     shift: bond.shift,
     lengthAngstrom: bond.lengthAngstrom,
     kind: bond.kind,
   }));
-  const positions = atoms.flatMap(({ atom }) => (atom.fractional ? [atom.fractional] : []));
+  const positions = images.flatMap(({ fractional }) => (fractional ? [fractional] : []));
   const inCell = positions.length === atoms.length ? positions : undefined;
+  progress(0.9, 'molecules');
   const shifts = wholeMolecules(atoms.length, found, inCell, crystal.periodic);
   const moved = shifts.flatMap((shift, index): [string, Vec3][] =>
-    shift.some((x) => x !== 0) ? [[atoms[index]!.atom.id, shift]] : [],
+    shift.some((x) => x !== 0) ? [[images[index]!.id, shift]] : [],
   );
   return { bonds, wholeMolecules: Object.fromEntries(moved) };
+}
+
+/** The problems that `bondsOf` raises, without the bonds: they are looked for only where the search may have to stop. */
+export function reportBonds(chosen: ChosenCrystal, log: ProblemLog): void {
+  const { crystal, sites } = chosen;
+  const atoms = bondAtoms(sites);
+  const cartesians = atoms.map(({ cartesian }) => cartesian);
+  if (isTooCrowded(crystal, cartesians, log)) return;
+  if (!mayStopShort(atoms, crystal.lattice, crystal.periodic)) return;
+  findBonds(atoms, crystal.lattice, { periodic: crystal.periodic, report: (found) => log.push(found) });
 }
 
 /**
@@ -91,7 +120,7 @@ function isTooCrowded(crystal: Crystal, positions: readonly VecCart[], log: Prob
   log.add(
     'warning',
     'cell-too-crowded',
-    `The ${lattice ? 'cell holds' : 'molecule has'} ${atoms} atoms, ${density} per Å³: bonds were not looked for.`,
+    `The ${lattice ? 'cell holds' : 'molecule has'} ${countOf(atoms, 'atom')}, ${density} per Å³: bonds were not looked for.`,
     {
       place,
       got: `${density} atoms per Å³`,

@@ -1,6 +1,8 @@
 import { apply, identity3, inverse } from '#src/base/matrix3.ts';
 import type { Mat3, Vec3, VecFrac } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
+import type { ReportProgress } from '#src/base/progress.ts';
+import { countWatch, unwatched } from '#src/base/progress.ts';
 import { add } from '#src/base/vector3.ts';
 import type { Crystal, Site } from '#src/crystal/crystal.ts';
 import type { DistinctOrientations } from '#src/crystal/distinct-orientations.ts';
@@ -45,6 +47,20 @@ export function cartesianOperations(crystal: Crystal): Mat3[] {
   const { lattice, symmetry } = crystal;
   if (!lattice) return [identity3];
   return symmetry.operations.map((operation) => cartesianRotation(operation, lattice));
+}
+
+/** `orientationsOf`, worked out once for each stabiliser. */
+function orientationsByStabiliser(
+  operations: readonly SymmetryOperation[],
+  small: SmallCell | null,
+): (orbit: Orbit) => DistinctOrientations {
+  const known = new Map<string, DistinctOrientations>();
+  return (orbit) => {
+    const key = orbit.stabiliser.join();
+    const found = known.get(key) ?? orientationsOf(orbit, operations, small);
+    known.set(key, found);
+    return found;
+  };
 }
 
 /** Which operations turn the site's tensor alike, in the cell in which rotation parts are whole-numbered. */
@@ -104,13 +120,17 @@ export function cellAtoms(
   mergeDistanceAngstrom: number,
   log: ProblemLog,
   small: SmallCell | null = null,
+  progress: ReportProgress = unwatched,
 ): SiteAtoms[] {
   const { lattice } = crystal;
   if (!lattice) return crystal.sites.map(loneAtom);
   const { operations } = crystal.symmetry;
   const rotations = cartesianOperations(crystal);
   const inWords = operationWords(operations);
-  return crystal.sites.map((site) => {
+  const orientationsOf = orientationsByStabiliser(operations, small);
+  const reached = countWatch(crystal.sites.length, 'atoms of the cell', progress);
+  return crystal.sites.map((site, index) => {
+    reached(index);
     const fractional: VecFrac = site.fractional ?? apply(inverse(lattice.toCartesian), site.cartesian);
     const orbit = small
       ? orbitInSmallCell(fractional, small, operations, mergeDistanceAngstrom)
@@ -127,7 +147,6 @@ export function cellAtoms(
         },
       );
     }
-    const orientations = orientationsOf(orbit, operations, small);
-    return atomsOfOrbit(site, orbit, orientations, inWords, lattice, rotations);
+    return atomsOfOrbit(site, orbit, orientationsOf(orbit), inWords, lattice, rotations);
   });
 }

@@ -1,7 +1,10 @@
+import { countOf } from '#src/base/count-of.ts';
 import type { Vec3, VecFrac } from '#src/base/matrix3.ts';
 import { length, subtract } from '#src/base/vector3.ts';
 import { openAxes } from '#src/base/periodicity.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
+import type { ReportProgress } from '#src/base/progress.ts';
+import { unwatched } from '#src/base/progress.ts';
 import type { Crystal, CrystalSymmetry, Site } from '#src/crystal/crystal.ts';
 import { atomFinder } from '#src/crystal/atom-finder.ts';
 import { toCartesian } from '#src/crystal/lattice.ts';
@@ -40,8 +43,13 @@ export function firstAtoms(sites: readonly SiteAtoms[]): number[] {
   });
 }
 
-function asListed(crystal: Crystal, settings: DossierSettings, log: ProblemLog): ChosenCrystal {
-  const sites = cellAtoms(crystal, settings.mergeDistanceAngstrom, log);
+function asListed(
+  crystal: Crystal,
+  settings: DossierSettings,
+  log: ProblemLog,
+  progress: ReportProgress = unwatched,
+): ChosenCrystal {
+  const sites = cellAtoms(crystal, settings.mergeDistanceAngstrom, log, null, progress);
   return { crystal, sites, rowAtoms: firstAtoms(sites), smallCell: null, found: null };
 }
 
@@ -64,10 +72,16 @@ function namesUnknownGroup({ stated, hermannMauguin, hall }: CrystalSymmetry): b
 }
 
 /** The rows as they stand; under a group that could not be understood, as sites of P 1. */
-function unsearched(crystal: Crystal, settings: DossierSettings, log: ProblemLog): ChosenCrystal {
+function unsearched(
+  crystal: Crystal,
+  settings: DossierSettings,
+  log: ProblemLog,
+  progress: ReportProgress,
+): ChosenCrystal {
   const { symmetry } = crystal;
-  if (!namesUnknownGroup(symmetry)) return asListed(crystal, settings, log);
-  return asListed({ ...crystal, symmetry: { ...noSymmetry, reason: symmetry.reason } }, settings, log);
+  if (!namesUnknownGroup(symmetry)) return asListed(crystal, settings, log, progress);
+  const plain = { ...crystal, symmetry: { ...noSymmetry, reason: symmetry.reason } };
+  return asListed(plain, settings, log, progress);
 }
 
 /** Every atom of the cell as a site of its own; labels of images get the running number of the image. */
@@ -153,7 +167,7 @@ function nearestAtoms(
 function reportShapeLoss(loss: ShapeLoss, mended: boolean, crystal: Crystal, log: ProblemLog): void {
   const { hermannMauguin, number, primitiveCells, operations, lostOperations } = loss;
   const held = operations - lostOperations;
-  const cell = `The cell is ${primitiveCells} × the primitive cell of ${hermannMauguin} (No. ${number}); its shape holds only ${held} of ${operations} operations itself`;
+  const cell = `The cell is ${primitiveCells} × the primitive cell of ${hermannMauguin} (No. ${number}); its shape holds only ${held} of ${countOf(operations, 'operation')} itself`;
   if (mended) {
     log.add('note', 'supercell-breaks-symmetry', `${cell}; the sites are grouped by all of them.`, {
       place: crystal.place,
@@ -163,8 +177,8 @@ function reportShapeLoss(loss: ShapeLoss, mended: boolean, crystal: Crystal, log
   }
   log.add('warning', 'supercell-breaks-symmetry', `${cell}, and the sites are grouped by these.`, {
     place: crystal.place,
-    got: `${held} operations`,
-    allowed: `${operations} operations`,
+    got: countOf(held, 'operation'),
+    allowed: countOf(operations, 'operation'),
     hint: 'Give the primitive or the conventional cell to have all symmetry of the crystal.',
   });
 }
@@ -236,19 +250,22 @@ export function chooseSymmetry(
   settings: DossierSettings,
   tables: SymmetryTables | null,
   log: ProblemLog,
+  progress: ReportProgress = unwatched,
 ): ChosenCrystal {
   const { lattice } = crystal;
   const wish = settings.symmetry;
-  if (!lattice) return asListed(crystal, settings, log);
+  if (!lattice) return asListed(crystal, settings, log, progress);
   const isCrystal = crystal.periodic.every(Boolean);
   if (!isCrystal) reportNotPeriodic(crystal, log);
   if (wish === 'none') return withoutSymmetry(crystal, lattice, settings, log);
   const { symmetry } = crystal;
   const search = wish === 'find' || (wish === 'auto' && !symmetry.stated && !namesUnknownGroup(symmetry));
-  if (!isCrystal) return asListed(crystal, settings, log);
-  if (!search) return unsearched(crystal, settings, log);
+  if (!isCrystal) return asListed(crystal, settings, log, progress);
+  if (!search) return unsearched(crystal, settings, log, progress);
   const kinds = speciesNumbers(crystal.sites);
-  if (isTooLargeToSearch(crystal, lattice, settings, kinds, log)) return asListed(crystal, settings, log);
+  if (isTooLargeToSearch(crystal, lattice, settings, kinds, log)) {
+    return asListed(crystal, settings, log, progress);
+  }
   const result = tables && searched(crystal, lattice, tables, settings, log);
   if (!result) {
     log.add(
@@ -263,10 +280,13 @@ export function chooseSymmetry(
     return asListed(crystal, settings, log);
   }
   const { number, hermannMauguin, reason } = result.crystal.symmetry;
+  const instead = namesUnknownGroup(symmetry)
+    ? `, as asked, in place of “${symmetry.hermannMauguin ?? symmetry.hall}” of the file, which is not known; it holds only if all atoms of the cell are listed`
+    : '';
   log.add(
     'note',
     'symmetry-found',
-    `Space group ${hermannMauguin ?? '?'} (No. ${number ?? '?'}) ${reason}.`,
+    `Space group ${hermannMauguin ?? '?'} (No. ${number ?? '?'}) ${reason}${instead}.`,
     {
       place: crystal.place,
       hint: 'State the symmetry in the file, or change the tolerance.',

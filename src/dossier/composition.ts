@@ -1,12 +1,12 @@
-import type { SiteDossier } from './dossier.ts';
+import type { SiteAtoms } from './cell-atoms.ts';
 
 /** Occupancy-weighted count of each element in the cell, hydrogens counted on their carriers included; symbols in order of the alphabet, C and H first (Hill). */
-export function compositionOf(
-  sites: readonly Pick<SiteDossier, 'species' | 'multiplicity' | 'attachedHydrogens' | 'occupancy'>[],
-): Record<string, number> {
+export function compositionOf(sites: readonly Pick<SiteAtoms, 'site' | 'atoms'>[]): Record<string, number> {
   const counts = new Map<string, number>();
   const count = (element: string, amount: number) => counts.set(element, (counts.get(element) ?? 0) + amount);
-  for (const { species, multiplicity, attachedHydrogens, occupancy } of sites) {
+  for (const { site, atoms } of sites) {
+    const { species, attachedHydrogens, occupancy } = site;
+    const multiplicity = atoms.length;
     for (const { element, occupancy: share } of species) count(element, share * multiplicity);
     if (attachedHydrogens > 0) count('H', attachedHydrogens * occupancy * multiplicity);
   }

@@ -4,14 +4,14 @@ import { identity3 } from '#src/base/matrix3.ts';
 import type { Mat3 } from '#src/base/matrix3.ts';
 import { ProblemLog } from '#src/base/problem.ts';
 import type { Place, Problem } from '#src/base/problem.ts';
-import { unwatched } from '#src/base/progress.ts';
+import { countWatch, partOf, unwatched } from '#src/base/progress.ts';
 import type { ReportProgress } from '#src/base/progress.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import { nuclide } from '#src/data/nuclides.ts';
 import { forcedBySiteSymmetry } from '#src/tensor/forced.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
-import { bondsOf } from './bonds-of-cell.ts';
+import { bondsOf, reportBonds } from './bonds-of-cell.ts';
 import type { SiteAtoms } from './cell-atoms.ts';
 import { cartesianOperations } from './cell-atoms.ts';
 import { chooseSymmetry } from './choose-symmetry.ts';
@@ -19,6 +19,7 @@ import type { ChosenCrystal } from './choose-symmetry.ts';
 import { compositionOf } from './composition.ts';
 import type { CrystalDossier, DossierSettings, SiteDossier } from './dossier.ts';
 import { describeSymmetry } from './describe-symmetry.ts';
+import type { SymmetryDescription } from './describe-symmetry.ts';
 import { inNamedFrame } from './named-frame.ts';
 import { otherTensors, siteTensors } from './site-tensors.ts';
 
@@ -175,11 +176,26 @@ function forcedSentences(chosen: ChosenCrystal): (site: SiteAtoms) => string {
   };
 }
 
+/** The part of a dossier that needs no site's numbers. */
+export type CrystalHead = Omit<CrystalDossier, 'sites' | 'bonds' | 'wholeMolecules' | 'problems'>;
+
 /**
- * Derives every number of a crystal once: symmetry as the settings ask, atoms of the cell, tensors bound to sites and
- * turned along their equivalents, conventions, noise, bonds. Never throws for content; problems carry what was doubtful.
+ * A dossier of which symmetry and atoms are there, and every site is made when asked for, so that a crystal of any size can
+ * be written site by site without being held. Each site is to be asked for once and in order, and then one of
+ * `bonds` and `reportBonds`: then `problems` lists what a whole dossier lists.
  */
-export function deriveDossier(input: DossierInput, progress: ReportProgress = unwatched): CrystalDossier {
+export interface BegunDossier {
+  readonly head: CrystalHead;
+  readonly siteCount: number;
+  readonly site: (index: number) => SiteDossier;
+  readonly bonds: (progress: ReportProgress) => Pick<CrystalDossier, 'bonds' | 'wholeMolecules'>;
+  /** The problems of `bonds` alone, mostly far quicker. */
+  readonly reportBonds: () => void;
+  readonly problems: () => Problem[];
+}
+
+/** Puts a crystal under the symmetry that the settings ask for and binds the tensors to its sites. Never throws for content. */
+export function beginDossier(input: DossierInput, progress: ReportProgress = unwatched): BegunDossier {
   const { settings, tables } = input;
   const log = new ProblemLog();
   input.problems.forEach((found) => log.push(found));
@@ -187,13 +203,44 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
   const { crystal, sets } = inNamedFrame(given, settings.frame, log);
   reportUnusedWishes(crystal, settings, log);
   progress(0, 'symmetry');
-  const chosen = chooseSymmetry(crystal, settings, tables, log);
+  const chosen = chooseSymmetry(crystal, settings, tables, log, partOf(progress, 0, 0.5));
+  progress(0.5, 'Wyckoff letters');
   const symmetry = describeSymmetry(chosen, tables, settings, log);
-  progress(0.4, 'tensors');
+  progress(0.7, 'attaching the tensors');
   const bound = attachAll(crystal, sets, chosen, log);
+  const head: CrystalHead = {
+    name: crystal.name,
+    lattice: chosen.crystal.lattice,
+    ...(chosen.crystal.lattice && !crystal.periodic.every(Boolean) ? { periodic: crystal.periodic } : {}),
+    symmetry: symmetry.symmetry,
+    spaceGroup: symmetry.spaceGroup,
+    atomsInCell: chosen.sites.reduce((sum, { atoms }) => sum + atoms.length, 0),
+    composition: compositionOf(chosen.sites),
+    temperatureK: crystal.temperatureK,
+    settings,
+  };
+  return {
+    head,
+    siteCount: chosen.sites.length,
+    site: siteMaker(chosen, symmetry, bound, settings, log),
+    bonds: (watch) => bondsOf(chosen, log, watch),
+    reportBonds: () => reportBonds(chosen, log),
+    problems: () => log.list(),
+  };
+}
+
+/** By index: the dossier of a site. */
+function siteMaker(
+  chosen: ChosenCrystal,
+  symmetry: SymmetryDescription,
+  bound: BoundSets,
+  settings: DossierSettings,
+  log: ProblemLog,
+): (index: number) => SiteDossier {
   const rotations = cartesianOperations(chosen.crystal);
   const forced = forcedSentences(chosen);
-  const sites = chosen.sites.map((siteAtoms, index): SiteDossier => {
+  return (index) => {
+    const siteAtoms = chosen.sites[index]!;
     const { site } = siteAtoms;
     const stabiliser = siteAtoms.stabiliser.map((operation) => rotations[operation] ?? identity3);
     return {
@@ -219,23 +266,26 @@ export function deriveDossier(input: DossierInput, progress: ReportProgress = un
       ...siteTensors({ site, stabiliser, attachments: bound.main, settings }, log),
       ...otherTensors({ site, stabiliser, attachments: bound.other, settings }, log),
     };
-  });
-  progress(0.7, 'bonds');
-  const { bonds, wholeMolecules } = bondsOf(chosen, log);
-  progress(1, 'done');
-  return {
-    name: crystal.name,
-    lattice: chosen.crystal.lattice,
-    ...(chosen.crystal.lattice && !crystal.periodic.every(Boolean) ? { periodic: crystal.periodic } : {}),
-    symmetry: symmetry.symmetry,
-    spaceGroup: symmetry.spaceGroup,
-    atomsInCell: sites.reduce((sum, { multiplicity }) => sum + multiplicity, 0),
-    composition: compositionOf(sites),
-    sites,
-    bonds,
-    wholeMolecules,
-    temperatureK: crystal.temperatureK,
-    settings,
-    problems: log.list(),
   };
+}
+
+/** Shares of the work: symmetry and attaching up to the first, then sites up to the second, then bonds. */
+const begunShare = 0.35;
+const sitesShare = 0.7;
+
+/**
+ * Derives every number of a crystal once: symmetry as the settings ask, atoms of the cell, tensors bound to sites and
+ * turned along their equivalents, conventions, noise, bonds. Never throws for content; problems carry what was doubtful.
+ */
+export function deriveDossier(input: DossierInput, progress: ReportProgress = unwatched): CrystalDossier {
+  const begun = beginDossier(input, partOf(progress, 0, begunShare));
+  const { siteCount } = begun;
+  const reached = countWatch(siteCount, 'sites', partOf(progress, begunShare, sitesShare));
+  const sites = Array.from({ length: siteCount }, (_none, index) => {
+    reached(index);
+    return begun.site(index);
+  });
+  const { bonds, wholeMolecules } = begun.bonds(partOf(progress, sitesShare, 1));
+  progress(1, 'done');
+  return { ...begun.head, sites, bonds, wholeMolecules, problems: begun.problems() };
 }

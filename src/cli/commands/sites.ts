@@ -1,7 +1,10 @@
+import { countOf } from '#src/base/count-of.ts';
+import { beginDossier } from '#src/dossier/derive-dossier.ts';
 import type { CrystalDossier, SiteDossier } from '#src/dossier/dossier.ts';
 import { parseCommonArguments } from '../arguments.ts';
 import type { CommandIo } from '../io.ts';
-import { loadCase } from '../load-case.ts';
+import { chooseCase, loadCase } from '../load-case.ts';
+import type { ChosenCase } from '../load-case.ts';
 import { problemLine, statusOf } from '../print-problems.ts';
 import { sitesJson } from '../sites-json.ts';
 import { fixed, textTable } from '../text-table.ts';
@@ -69,7 +72,7 @@ function efgColumns(): Column[] {
 
 function operationsSentence({ symmetry }: CrystalDossier): string {
   const { length } = symmetry.operations;
-  const count = length === 1 ? '1 operation' : `${length} operations`;
+  const count = countOf(length, 'operation');
   return symmetry.reason.startsWith(count) ? symmetry.reason : `${count}, ${symmetry.reason}`;
 }
 
@@ -88,7 +91,7 @@ function heading(dossier: CrystalDossier): string {
     dossier.name,
     cell,
     `${dossier.spaceGroup}; ${operationsSentence(dossier)}`,
-    `${dossier.atomsInCell} ${dossier.atomsInCell === 1 ? 'atom' : 'atoms'} in the ${lattice ? 'cell' : 'molecule'}: ${composition}`,
+    `${countOf(dossier.atomsInCell, 'atom')} in the ${lattice ? 'cell' : 'molecule'}: ${composition}`,
   ].join('\n');
 }
 
@@ -99,15 +102,19 @@ function readable(dossier: CrystalDossier): string {
   return `${heading(dossier)}\n\n${textTable(header, rows)}\n`;
 }
 
+/** Every site is written as it is made, so that a large crystal is never held whole. */
+function writeJson({ input, problems }: ChosenCase, io: CommandIo): number {
+  const begun = input && beginDossier(input);
+  for (const piece of sitesJson(begun, problems)) io.writeOut(piece);
+  return statusOf(begun?.problems() ?? problems);
+}
+
 /** `ellipsite sites FILE… [options]`: one dossier a site, as a readable table or as JSON. */
 export async function sitesCommand(argv: readonly string[], io: CommandIo): Promise<number> {
   const common = parseCommonArguments(argv);
+  if (common.json) return writeJson(await chooseCase(common, io), io);
   const { dossier, problems } = await loadCase(common, io);
-  if (common.json) {
-    for (const piece of sitesJson(dossier, problems)) io.writeOut(piece);
-  } else {
-    problems.forEach((found) => io.writeError(`${problemLine(found)}\n`));
-    if (dossier) io.writeOut(readable(dossier));
-  }
+  problems.forEach((found) => io.writeError(`${problemLine(found)}\n`));
+  if (dossier) io.writeOut(readable(dossier));
   return statusOf(problems);
 }

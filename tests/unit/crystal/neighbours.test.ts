@@ -7,7 +7,7 @@ import { add, distance, length, scale } from '#src/base/vector3.ts';
 import { latticeFromCell, latticeFromRows, reciprocalRows } from '#src/crystal/lattice.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import type { NeighbourPairs } from '#src/crystal/neighbours.ts';
-import { findNeighbours } from '#src/crystal/neighbours.ts';
+import { findNeighbours, mostNeighbourPairs } from '#src/crystal/neighbours.ts';
 import { periodicBasis } from '#src/crystal/periodic-basis.ts';
 
 type Periodic = readonly [boolean, boolean, boolean];
@@ -80,6 +80,8 @@ describe('neighbours', () => {
           const found = findNeighbours(lattice, positions, cutoff, { periodic });
           expect(written(found)).toEqual(bruteForce(lattice, positions, cutoff, periodic));
           expect(found.complete).toBe(true);
+          const most = mostNeighbourPairs(lattice, positions, cutoff, periodic);
+          expect(most).toBeGreaterThanOrEqual(found.tested);
         },
       ),
       { numRuns: 300 },
