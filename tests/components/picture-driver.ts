@@ -1,3 +1,4 @@
+import type { DerivedCase } from '#src/store/engine-protocol.ts';
 import type { Mounted } from './mount.ts';
 import { mountWorkbench, settle, textOf } from './mount.ts';
 
@@ -17,8 +18,8 @@ export interface DrawnPage extends Mounted {
 }
 
 /** The page with its picture drawn. */
-export async function drawnPage(): Promise<DrawnPage> {
-  const page = await mountWorkbench(undefined, true);
+export async function drawnPage(answer?: DerivedCase): Promise<DrawnPage> {
+  const page = await mountWorkbench(answer, true);
   const root = page.part('ellipsite-crystal-view').shadowRoot;
   await eventually(() => textOf(root.querySelector('#caption')) !== '');
   const stage = root.querySelector<HTMLElement>('.stage')!;
