@@ -24,6 +24,8 @@ export interface Displacement {
 export interface Site {
   readonly index: number;
   readonly label: string;
+  /** True where the file gives no label and `label` is the element with a running number. */
+  readonly isNumbered?: true;
   /** Main element's symbol: the species with the largest share; `D` for deuterium; `X` where unknown. */
   readonly element: string;
   /** All elements on the site with their occupancies, which sum to `occupancy`. */

@@ -183,6 +183,22 @@ function reportShapeLoss(loss: ShapeLoss, mended: boolean, crystal: Crystal, log
   });
 }
 
+/**
+ * Labels that the reader made by counting rows are counted anew, site by site: Al1, Al2 rather than Al1 and Al3 of four atoms
+ * in two sites. Labels of the file stay, and their numbers are left out.
+ */
+function numberedAnew(sites: readonly Site[]): Site[] {
+  const taken = new Set(sites.filter(({ isNumbered }) => !isNumbered).map(({ label }) => label));
+  const running = new Map<string, number>();
+  return sites.map((site) => {
+    if (!site.isNumbered) return site;
+    let number = (running.get(site.element) ?? 0) + 1;
+    while (taken.has(`${site.element}${number}`)) number++;
+    running.set(site.element, number);
+    return { ...site, label: `${site.element}${number}` };
+  });
+}
+
 function searched(
   crystal: Crystal,
   lattice: Lattice,
@@ -212,7 +228,7 @@ function searched(
       reason: `found from the atoms within ${tolerance} Å`,
       stated: true,
     },
-    sites: leaders.map((leader, index) => ({ ...whole[leader]!, index })),
+    sites: numberedAnew(leaders.map((leader, index) => ({ ...whole[leader]!, index }))),
   };
   const sites = cellAtoms(reduced, settings.mergeDistanceAngstrom, log, result.smallCell);
   const siteOf = result.orbits.map((leader) => siteOfLeader.get(leader) ?? 0);

@@ -1,7 +1,7 @@
 import { countOf } from '#src/base/count-of.ts';
 import { apply, identity3 } from '#src/base/matrix3.ts';
 import type { Mat3, VecFrac } from '#src/base/matrix3.ts';
-import type { ProblemLog } from '#src/base/problem.ts';
+import type { Place, ProblemLog } from '#src/base/problem.ts';
 import type { CrystalSymmetry } from '#src/crystal/crystal.ts';
 import { identifySettingIn, settingFromHermannMauguin } from '#src/crystal/space-group.ts';
 import type { SpaceGroupSetting } from '#src/crystal/space-group.ts';
@@ -40,9 +40,29 @@ function heading(symmetry: CrystalSymmetry, tabulated: SpaceGroupSetting | null)
   return `${name} (No. ${number})`;
 }
 
+/** Says once, here or when the file was read, that the axes are those of no tabulated setting. */
+function reportUntabulated(
+  { hermannMauguin, number }: { readonly hermannMauguin: string; readonly number: number },
+  place: Place,
+  log: ProblemLog,
+): void {
+  if (log.list().some(({ code }) => code === 'cif-other-setting')) return;
+  log.add(
+    'note',
+    'setting-not-tabulated',
+    `The operations are those of space group ${hermannMauguin} (No. ${number}) on axes of no tabulated setting, such as those of a primitive cell: there is no Hall symbol. Positions and operations are on the axes of the file; Wyckoff letters and site symmetries are those of the standard setting.`,
+    {
+      place,
+      got: `${hermannMauguin} (No. ${number}), Hall symbol unknown`,
+      allowed: 'one of the 530 tabulated settings',
+      hint: 'The conventional cell has a Hall symbol; numbers of the tensors are the same in both.',
+    },
+  );
+}
+
 /**
  * Names the group of the operations in use (number, Hall symbol where tabulated) and gives Wyckoff letters and oriented
- * site-symmetry symbols for that very group. Raises `wyckoff-unknown`.
+ * site-symmetry symbols for that very group. Raises `wyckoff-unknown`, `setting-not-tabulated`.
  */
 export function describeSymmetry(
   chosen: ChosenCrystal,
@@ -79,6 +99,7 @@ export function describeSymmetry(
       },
     );
   }
+  if (told && !setting && !smallCell && symmetry.hall === null) reportUntabulated(told, crystal.place, log);
   const named: CrystalSymmetry = {
     ...symmetry,
     number: setting?.number ?? told?.number ?? symmetry.number,

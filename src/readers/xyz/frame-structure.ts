@@ -53,6 +53,7 @@ export function frameStructure(
     return {
       index,
       label: labels[index] ?? element,
+      ...(isNumbered(atom, labels[index]) && { isNumbered: true as const }),
       element,
       species: sharedSpecies(fullSites, element),
       occupancy: 1,
@@ -77,6 +78,11 @@ export function frameStructure(
     temperatureK: null,
     place,
   };
+}
+
+/** True where a label is neither that of the `site` column nor the species field as it stands. */
+function isNumbered({ site, species, speciesText }: RowAtom, label: string | undefined): boolean {
+  return site === null && !(species.labelled && label === speciesText);
 }
 
 /** One list an element, shared by its sites: a file of a million atoms keeps a handful. */

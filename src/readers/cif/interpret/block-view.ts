@@ -10,7 +10,7 @@ export type ItemSource =
 
 /**
  * One data block with the dialects levelled: `_cell.length_a` and `_cell_length_a`, `…matrix[1][2]` and `…matrix_12`
- * are one item. `name` of an entry is the spelling of the file.
+ * are one item. `name` of an entry is the spelling of the file in lower case.
  */
 export interface BlockView {
   readonly block: CifBlock;
@@ -77,11 +77,29 @@ export function knownItem(view: BlockView, ...names: readonly string[]): KnownIt
     for (const found of view.items.get(name) ?? []) {
       for (const value of valuesOf(found)) {
         const text = textOf(value);
-        if (text !== null) return { text, value, name: found.name };
+        if (text !== null) return { text, value, name: spelledName(view, found) };
       }
     }
   }
   return null;
+}
+
+/** Characters before a value, or after `loop_`, in which its name is looked for. */
+const nameReach = 8000;
+
+/** The name of an item as the file spells it, capitals included, for messages. */
+export function spelledName({ source: { text } }: BlockView, found: ItemSource): string {
+  const { name } = found;
+  const end = found.kind === 'single' ? found.value.offset : found.loop.offset + nameReach;
+  const start = found.kind === 'single' ? Math.max(0, end - nameReach) : found.loop.offset;
+  const near = text.slice(start, end);
+  const folded = near.toLowerCase();
+  const at = found.kind === 'single' ? folded.lastIndexOf(name) : folded.search(wholeWord(name));
+  return at < 0 || folded.length !== near.length ? name : near.slice(at, at + name.length);
+}
+
+function wholeWord(name: string): RegExp {
+  return new RegExp(`(?<!\\S)${name.replace(/[.*+?^${}()|[\]\\]/g, '\\$&')}(?!\\S)`);
 }
 
 /** All values of one item source, in order. */

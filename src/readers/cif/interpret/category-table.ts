@@ -1,5 +1,6 @@
 import type { CifLoop, CifValue } from '../cif-document.ts';
 import type { BlockView, ItemSource } from './block-view.ts';
+import { spelledName } from './block-view.ts';
 
 /**
  * Rows of one category, such as all `_atom_site_…` items: the loop that holds the key columns or, where the items
@@ -44,7 +45,7 @@ function loopTable(view: BlockView, found: readonly CifLoop[]): CategoryTable {
   const column = (...names: readonly string[]): CategoryColumn | null => {
     for (const name of names) {
       const sources = view.items.get(name);
-      const found = sources && loopColumn(sources, loops, starts);
+      const found = sources && loopColumn(view, sources, loops, starts);
       if (found) return found;
     }
     return null;
@@ -53,6 +54,7 @@ function loopTable(view: BlockView, found: readonly CifLoop[]): CategoryTable {
 }
 
 function loopColumn(
+  view: BlockView,
   sources: readonly ItemSource[],
   loops: readonly CifLoop[],
   starts: readonly number[],
@@ -70,7 +72,17 @@ function loopColumn(
     if (found?.kind !== 'column' || !loop) return undefined;
     return loop.values[(row - starts[part]!) * loop.names.length + found.column];
   };
-  return { name: first.name, at };
+  return columnOf(view, first, at);
+}
+
+/** Its name is looked up only for messages: columns are asked for row by row. */
+function columnOf(view: BlockView, source: ItemSource, at: CategoryColumn['at']): CategoryColumn {
+  return {
+    get name() {
+      return spelledName(view, source);
+    },
+    at,
+  };
 }
 
 function singleRow(view: BlockView): CategoryTable {
@@ -78,7 +90,7 @@ function singleRow(view: BlockView): CategoryTable {
     for (const name of names) {
       const single = view.items.get(name)?.find((found) => found.kind === 'single');
       if (single?.kind === 'single')
-        return { name: single.name, at: (row) => (row === 0 ? single.value : undefined) };
+        return columnOf(view, single, (row) => (row === 0 ? single.value : undefined));
     }
     return null;
   };

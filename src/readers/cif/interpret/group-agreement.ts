@@ -2,6 +2,7 @@ import { countOf, wordFor } from '#src/base/count-of.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import { distinctRotations, operationSetKey } from '#src/crystal/group.ts';
 import type { SpaceGroupSetting } from '#src/crystal/space-group.ts';
+import { settingName } from '#src/crystal/space-group.ts';
 import type { SymmetryOperation } from '#src/crystal/symmetry-operation.ts';
 import type { BlockView } from './block-view.ts';
 import { placeOfValue } from './block-view.ts';
@@ -67,7 +68,7 @@ function reportOtherSetting(
   log.add(
     'note',
     'cif-other-setting',
-    `The listed operations are another setting or origin of group ${identified.number} than ${reading}: they are ${identified.hermannMauguinShort} [${identified.hall}]. The listed ones were kept.`,
+    `The listed operations are another setting or origin of group ${identified.number} than ${reading}: they are ${settingName(identified)} (Hall symbol ${identified.hall}). The listed ones were kept.`,
     {
       place: placeOfValue(view, item.value),
       got: item.text,
@@ -79,7 +80,7 @@ function reportUnlistedSetting(view: BlockView, { item, reading }: NamedGroup, l
   log.add(
     'note',
     'cif-other-setting',
-    `The listed operations are no tabulated setting; they have the point group of ${reading}. The listed ones were kept.`,
+    `The listed operations are no tabulated setting, so that they have no Hall symbol here; they have the point group of ${reading}. The listed ones were kept; Wyckoff letters and site symmetries are those of the standard setting.`,
     {
       place: placeOfValue(view, item.value),
       got: item.text,
@@ -95,7 +96,7 @@ function reportOtherGroup(
   log: ProblemLog,
 ): void {
   const listed = identified
-    ? `${identified.hermannMauguinShort} (${identified.number})`
+    ? `${settingName(identified)} (No. ${identified.number})`
     : `a group of ${countOf(operations.length, 'operation')} outside the tables`;
   const fewer =
     operations.length < named.length

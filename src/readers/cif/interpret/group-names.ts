@@ -148,5 +148,13 @@ function fromNumber(item: KnownItem, number: number, cell: CellConstants | null)
 
 function matched(kind: NamedGroup['kind'], item: KnownItem, name: string, found: SymbolMatch): NamedGroup {
   const { reason, ...rest } = found;
-  return { ...rest, kind, item, reading: `${name} (${item.name}: ${reason})` };
+  return { ...rest, kind, item, reading: `${name} (${item.name}: ${withoutRepetition(reason, item.text)})` };
+}
+
+/** “P 1 21/c 1 is tabulated as P 1 21/c 1 (Hall symbol -P 2ybc)” after the symbol itself says only the last of it anew. */
+function withoutRepetition(reason: string, symbol: string): string {
+  const said = [`${symbol} is `, `No. ${symbol} is `].find((start) => reason.startsWith(start)) ?? '';
+  const rest = reason.slice(said.length);
+  const same = `tabulated as ${symbol} (`;
+  return rest.startsWith(same) ? rest.slice(same.length).replace(')', '') : rest;
 }

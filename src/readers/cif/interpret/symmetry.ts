@@ -247,7 +247,7 @@ function none(view: BlockView, names: GroupNames, log: ProblemLog): CrystalSymme
     log.add(
       'error',
       'cif-symmetry-not-understood',
-      `No operations are listed and the space group “${named}” is not known: the listed atoms are kept as sites of their own (P 1).`,
+      `No operations are listed and the space group “${named}” is not known: unless a search is asked for, each listed atom is kept as a site of its own (P 1).`,
       {
         place: placeOfBlock(view),
         got: named,
