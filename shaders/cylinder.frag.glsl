@@ -32,6 +32,6 @@ void main() {
   float radius = vSize.y / nearness(vStart.z + 0.5 * vSize.x * vAxis.z) / uPixelScale;
   float rimInk = 1.0 - smoothstep(uCylinderRim.x - 0.4, uCylinderRim.x + 0.4, edge);
   colour *= 1.0 - uCylinderRim.y * rimInk * smoothstep(uCylinderRim.z, uCylinderRim.w, radius);
-  fragColour = vec4(srgbWithDepthCue(colour, hit.z), 1.0);
+  fragColour = vec4(withDepthCue(srgbFromLinear(colour), hit.z), 1.0);
   gl_FragDepth = fragmentDepth(hit.z / near);
 }

@@ -13,5 +13,5 @@ out vec4 fragColour;
 
 void main() {
   float z = pointOfImage(vec3(0.0, 0.0, vImageZ)).z;
-  fragColour = vec4(srgbWithDepthCue(linearFromSrgb(vTint.rgb), z), vTint.a);
+  fragColour = vec4(withDepthCue(vTint.rgb, z), vTint.a);
 }

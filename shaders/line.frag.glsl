@@ -18,5 +18,5 @@ void main() {
   float halfWidth = 0.5 * uLineWidthPx * uPixelScale;
   float cover = clamp(halfWidth + 0.5 - abs(vAcross), 0.0, 1.0) * min(1.0, 2.0 * halfWidth);
   if (cover <= 0.0) discard;
-  fragColour = vec4(srgbWithDepthCue(uLineColour, pointOfImage(vec3(0.0, 0.0, vImageZ)).z), cover);
+  fragColour = vec4(withDepthCue(srgbFromLinear(uLineColour), pointOfImage(vec3(0.0, 0.0, vImageZ)).z), cover);
 }

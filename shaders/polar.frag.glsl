@@ -40,6 +40,6 @@ void main() {
   float rim = polarRimDistance(t, p, point, normalize(vec3(-uPerEyePx * image.xy, 1.0)));
   float rimInk = 1.0 - smoothstep(uRim.x - 0.4, uRim.x + 0.4, rim / nearness(place.z) / uPixelScale);
   colour *= 1.0 - uRim.y * rimInk * smoothstep(2.0 * uRim.z, 2.0 * uRim.w, vSize.y);
-  fragColour = vec4(srgbWithDepthCue(colour, place.z), 1.0);
+  fragColour = vec4(withDepthCue(srgbFromLinear(colour), place.z), 1.0);
   gl_FragDepth = fragmentDepth(vImageZ);
 }

@@ -6,6 +6,8 @@ import pattern from './chunks/_pattern.glsl?raw';
 import pixel from './chunks/_pixel.glsl?raw';
 import polarChunk from './chunks/_polar.glsl?raw';
 import quadricChunk from './chunks/_quadric.glsl?raw';
+import quadricFace from './chunks/_quadric-face.glsl?raw';
+import quadricImage from './chunks/_quadric-image.glsl?raw';
 import view from './chunks/_view.glsl?raw';
 import cylinderFragment from './cylinder.frag.glsl?raw';
 import cylinderVertex from './cylinder.vert.glsl?raw';
@@ -17,8 +19,12 @@ import polarFragment from './polar.frag.glsl?raw';
 import polarVertex from './polar.vert.glsl?raw';
 import quadricFragment from './quadric.frag.glsl?raw';
 import quadricVertex from './quadric.vert.glsl?raw';
+import markedFragment from './quadric-marked.frag.glsl?raw';
+import markedVertex from './quadric-marked.vert.glsl?raw';
 import resolveFragment from './resolve.frag.glsl?raw';
 import resolveVertex from './resolve.vert.glsl?raw';
+import ringFragment from './ring.frag.glsl?raw';
+import ringVertex from './ring.vert.glsl?raw';
 
 /** Shared parts by the name they are included with; each lives in chunks/NAME.glsl. */
 export const chunks = {
@@ -30,6 +36,8 @@ export const chunks = {
   _pixel: pixel,
   _polar: polarChunk,
   _quadric: quadricChunk,
+  '_quadric-face': quadricFace,
+  '_quadric-image': quadricImage,
   _view: view,
 } as const;
 
@@ -40,7 +48,9 @@ export const programs = {
   line: { vertex: lineVertex, fragment: lineFragment },
   polar: { vertex: polarVertex, fragment: polarFragment },
   quadric: { vertex: quadricVertex, fragment: quadricFragment },
+  'quadric-marked': { vertex: markedVertex, fragment: markedFragment },
   resolve: { vertex: resolveVertex, fragment: resolveFragment },
+  ring: { vertex: ringVertex, fragment: ringFragment },
 } as const;
 
 export type ProgramName = keyof typeof programs;

@@ -1,10 +1,7 @@
-// Distance fades towards the paper; uDepthCue is the share at the far end, 0 turns it off. Mixed in sRGB, where equal
-// shares look equal on dark and on light colours: takes linear light, gives sRGB.
+// Distance fades towards the paper. Mixed in sRGB, where equal shares look equal on dark and on light colours.
 uniform vec3 uPaper; // sRGB
-uniform float uDepthCue;
-uniform vec2 uSceneDepthPx; // nearest and farthest z of the scene
+uniform vec3 uFade; // nearest z of the scene, share of paper a pixel behind it, largest share: 0 turns it off
 
-vec3 srgbWithDepthCue(vec3 colour, float zPx) {
-  float far = clamp((uSceneDepthPx.x - zPx) / max(uSceneDepthPx.x - uSceneDepthPx.y, 1.0), 0.0, 1.0);
-  return mix(srgbFromLinear(colour), uPaper, uDepthCue * far);
+vec3 withDepthCue(vec3 srgb, float zPx) {
+  return mix(srgb, uPaper, clamp((uFade.x - zPx) * uFade.y, 0.0, uFade.z));
 }

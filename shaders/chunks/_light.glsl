@@ -1,6 +1,7 @@
 // Soft light fixed to the viewer: a wide source from the upper left, paper light from below, no gloss. A surface that
 // faces the viewer keeps its own colour exactly, so that colours can be read against the colour bar.
 const vec3 keyDirection = vec3(-0.42, 0.60, 0.68);
+const float mostLight = 1.3286; // of softLight: 1 / mix(0.16, 1.0, 0.84²)
 
 float softLight(vec3 normal) {
   float key = dot(normal, keyDirection);
@@ -11,8 +12,16 @@ float softLight(vec3 normal) {
   return form * (1.0 - 0.25 * turnedAway * turnedAway);
 }
 
-// Brighter than its own colour a surface nears white without reaching it, and a dark colour stays saturated.
+// Brighter than its own colour a surface nears white without reaching it, and a dark colour stays saturated. `darkness` is
+// darknessOf(colour), the same all over an object.
+vec3 darknessOf(vec3 colour) {
+  return log2(1.0 - min(colour, 0.999));
+}
+
+vec3 litBy(float light, vec3 colour, vec3 darkness) {
+  return mix(colour * light, 1.0 - exp2(light * darkness), step(1.0, light));
+}
+
 vec3 lit(vec3 colour, vec3 normal) {
-  float light = softLight(normal);
-  return light <= 1.0 ? colour * light : 1.0 - pow(1.0 - min(colour, 0.999), vec3(light));
+  return litBy(softLight(normal), colour, darknessOf(colour));
 }

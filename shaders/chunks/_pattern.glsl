@@ -4,10 +4,11 @@ const float stripesPerUnit = 3.5;
 const float dotsPerHalfSide = 2.0;
 const float dotRadius = 0.3;
 const float patternInk = 0.5;
+const float darkInk = 0.88; // what dark ink takes of the light
 
 // Ink that stands out from a colour in grey, too: darker on light colours, lighter on dark ones.
 vec3 inkOn(vec3 own, vec3 shaded) {
-  return luminance(own) > 0.14 ? shaded * 0.12 : mix(shaded, vec3(1.0), 0.55);
+  return luminance(own) > 0.14 ? shaded * (1.0 - darkInk) : mix(shaded, vec3(1.0), 0.55);
 }
 
 // Whether the azimuth from axis 0 towards axis 1 lies below 2π·share.

@@ -45,12 +45,6 @@ vec2 outlinePoint(ViewQuadric q, vec2 e) {
   return vec2(q.outline.x * e.x, q.outline.y * e.x + q.outline.z * e.y);
 }
 
-// And back: the point of the disc's plane under an offset on screen.
-vec2 discPoint(ViewQuadric q, vec2 d) {
-  float x = d.x / q.outline.x;
-  return vec2(x, (d.y - q.outline.y * x) / q.outline.z);
-}
-
 mat3 triangleOf(ViewQuadric q) {
   return mat3(
     q.outline.x, q.outline.y, q.depth.x,
@@ -59,48 +53,62 @@ mat3 triangleOf(ViewQuadric q) {
   );
 }
 
-// (e, s) to coordinates along the quadric's own axes, on the unit sphere. Orthogonal.
-mat3 bodyRotation(mat3 m, ViewQuadric q) {
-  return inverse(m) * triangleOf(q);
-}
-
-// The same in perspective, up to a positive factor and a shift, inverse(m) * image.shift: bodyPointInImage of perspective.ts.
+// (e, s) to coordinates along the quadric's own axes, on the unit sphere; orthogonal. In perspective up to a positive factor and a
+// shift, inverse(m) * image.shift: bodyPointInImage of perspective.ts.
 mat3 bodyOfImage(mat3 inverseShape, ViewQuadric q, vec3 centre, float perEye) {
   mat3 back = mat3(1.0);
   back[2] -= centre * perEye;
   return inverseShape * back * triangleOf(q);
 }
 
-float surfaceDepth(ViewQuadric q, vec3 unit) {
-  return dot(q.depth, unit);
+// What is the same all over a quadric and takes a pixel to the unit disc and to the surface's normal without a division.
+struct QuadricFace {
+  vec3 toDisc; // 1 / l11, 1 / l22, l21 / (l11 l22)
+  vec2 slope; // of the normal, by s
+  vec3 facing; // height of the normal, by (e, s)
+};
+
+// `centre` of the image. In perspective the normal gains perEye (normal · place) of height, and normal · (place - centre) is 1.
+QuadricFace faceOf(ViewQuadric q, vec3 centre, float perEye) {
+  float byWidth = 1.0 / q.outline.x;
+  float byHeight = 1.0 / q.outline.z;
+  float byDepth = 1.0 / q.depth.z;
+  float skew = q.outline.y * byWidth * byHeight;
+  vec2 slope = vec2((q.outline.y * q.depth.y * byHeight - q.depth.x) * byWidth, -q.depth.y * byHeight) * byDepth;
+  vec3 c = perEye * centre;
+  vec3 facing = vec3(c.x * byWidth, c.y * byHeight - c.x * skew, byDepth + dot(c, vec3(slope, byDepth)));
+  return QuadricFace(vec3(byWidth, byHeight, skew), slope, facing);
 }
 
-vec3 surfaceNormal(ViewQuadric q, vec3 unit) {
-  float z = unit.z / q.depth.z;
-  float y = (unit.y - q.depth.y * z) / q.outline.z;
-  float x = (unit.x - q.outline.y * y - q.depth.x * z) / q.outline.x;
-  return vec3(x, y, z);
+// The point of the unit disc under an offset on screen.
+vec2 discPoint(vec3 toDisc, vec2 off) {
+  return vec2(off.x * toDisc.x, off.y * toDisc.y - off.x * toDisc.z);
 }
 
 // A gradient in e as a gradient in pixels.
-vec2 pixelGradient(ViewQuadric q, vec2 g) {
-  float y = g.y / q.outline.z;
-  return vec2((g.x - q.outline.y * y) / q.outline.x, y);
+vec2 pixelGradient(vec3 toDisc, vec2 g) {
+  return vec2(g.x * toDisc.x - g.y * toDisc.z, g.y * toDisc.y);
+}
+
+// `across` is pixelGradient(toDisc, e).
+vec3 surfaceNormal(QuadricFace face, vec2 across, vec3 unit, float perEye) {
+  return vec3(across + unit.z * face.slope, perEye + dot(face.facing, unit));
 }
 
 const float rimFloor = 0.02;
 
-// First-order distances on screen, pixels, to the three great circles u_k = 0; u = body (e, s) + shift at this point. All three at
-// once: indexing by a variable is slow where the processor stands in for a graphics chip.
-vec3 circleDistances(ViewQuadric q, mat3 body, vec3 u, vec3 unit) {
-  vec3 steep = body[2] / max(unit.z, rimFloor);
-  vec3 gy = (body[1] - steep * unit.y) / q.outline.z;
-  vec3 gx = (body[0] - steep * unit.x - q.outline.y * gy) / q.outline.x;
-  return abs(u) * inversesqrt(gx * gx + gy * gy);
+// First-order distance on screen, pixels, to the nearest of the great circles u_k = 0; u = body (e, s) + shift at this point, `undrawn`
+// a large number for each circle that is left out.
+float nearestCircle(vec3 toDisc, mat3 body, vec3 u, vec3 unit, vec3 undrawn) {
+  vec3 steep = body[2] * (1.0 / max(unit.z, rimFloor));
+  vec3 byY = body[1] - steep * unit.y;
+  vec3 gx = (body[0] - steep * unit.x) * toDisc.x - byY * toDisc.z;
+  vec3 gy = byY * toDisc.y;
+  vec3 squares = undrawn + u * u / (gx * gx + gy * gy);
+  return sqrt(min(squares.x, min(squares.y, squares.z)));
 }
 
-// First-order distance from the outline, pixels; positive outside.
-float outlineDistance(ViewQuadric q, vec2 e) {
-  float radius = length(e);
-  return (radius - 1.0) / length(pixelGradient(q, e / radius));
+// First-order distance from the outline inwards, pixels, where |e| is `radius`.
+float rimDistance(float radius, vec2 across) {
+  return (1.0 - radius) * radius * inversesqrt(max(dot(across, across), 1e-20));
 }

@@ -4,7 +4,7 @@ uniform vec3 uTarget;
 uniform vec4 uOrientation;
 uniform float uPixelsPerAngstrom;
 uniform vec2 uHalfViewportPx;
-uniform float uDepthRangePx;
+uniform float uHalfPerDepthPx; // half of 1 / the largest height, device pixels
 // Device pixels of one CSS pixel.
 uniform float uPixelScale;
 // 1 / distance of the eye before the target, per device pixel; 0 without perspective.
@@ -42,9 +42,9 @@ vec3 pointOfImage(vec3 image) {
 
 // Of an image point. Depth is linear in its height, and gl_FragDepth agrees with it.
 vec4 clipPoint(vec3 image) {
-  return vec4(image.xy / uHalfViewportPx, -image.z / uDepthRangePx, 1.0);
+  return vec4(image.xy / uHalfViewportPx, -2.0 * image.z * uHalfPerDepthPx, 1.0);
 }
 
 float fragmentDepth(float imageZ) {
-  return 0.5 - 0.5 * imageZ / uDepthRangePx;
+  return 0.5 - imageZ * uHalfPerDepthPx;
 }

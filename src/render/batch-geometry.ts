@@ -1,5 +1,6 @@
 import { BufferAttribute, BufferGeometry } from 'three';
 import type { FacetView } from '#src/scene/facet-view.ts';
+import { linearLight } from '#src/scene/light.ts';
 import type { CylinderBatch, LineBatch, QuadricBatch } from '#src/scene/scene.ts';
 
 /**
@@ -8,27 +9,81 @@ import type { CylinderBatch, LineBatch, QuadricBatch } from '#src/scene/scene.ts
  */
 const corners = 4;
 
-export function quadricGeometry(batch: QuadricBatch): BufferGeometry {
-  const geometry = quadGeometry(batch.count);
+/** Which quadrics the plain program draws: of one colour, light enough for dark ink. The others take the `quadric-marked` one. */
+export interface QuadricSplit {
+  readonly plain: readonly number[];
+  readonly marked: readonly number[];
+}
+
+/** Relative luminance (Rec. 709 primaries) up to which ink on a colour is light; as `inkOn` of shaders/chunks/_pattern.glsl. */
+const lightInkLuminance = 0.14;
+
+export function splitQuadrics({ count, colours, shares, patterns }: QuadricBatch): QuadricSplit {
+  const [plain, marked]: [number[], number[]] = [[], []];
+  for (let i = 0; i < count; i++) {
+    const [red, green, blue] = [0, 1, 2].map((k) => linearLight(colours[3 * i + k]!));
+    // a little more, so that rounding doesn't decide differently here and there
+    const isDark = 0.2126 * red! + 0.7152 * green! + 0.0722 * blue! < 1.01 * lightInkLuminance;
+    const isMarked = isDark || (shares?.[i] ?? 255) < 255 || (patterns?.[i] ?? 0) > 0;
+    (isMarked ? marked : plain).push(i);
+  }
+  return { plain, marked };
+}
+
+export function quadricGeometry(batch: QuadricBatch, chosen: readonly number[]): BufferGeometry {
+  const geometry = shapeGeometry(batch, chosen);
+  put(geometry, 'aColour', rows(batch.colours, 3, chosen), 3, true);
+  put(geometry, 'aCircles', rows(batch.circles, 1, chosen), 1);
+  return geometry;
+}
+
+export function markedQuadricGeometry(batch: QuadricBatch, chosen: readonly number[]): BufferGeometry {
+  const geometry = quadricGeometry(batch, chosen);
+  const { shares, patterns } = batch;
+  const count = chosen.length;
+  put(geometry, 'aShare', shares ? rows(shares, 1, chosen) : new Uint8Array(count).fill(255), 1, true);
+  put(geometry, 'aRestColour', rows(batch.restColours ?? batch.colours, 3, chosen), 3, true);
+  put(geometry, 'aPattern', patterns ? rows(patterns, 1, chosen) : new Uint8Array(count), 1);
+  return geometry;
+}
+
+/** Rings round those quadrics whose state is not 0: 1 hovered, 2 selected, 3 both. */
+export function ringGeometry(batch: QuadricBatch, states: Uint8Array): BufferGeometry {
+  const chosen = Array.from(states.keys()).filter((i) => states[i]! > 0);
+  const geometry = shapeGeometry(batch, chosen);
+  const radii = batch.ringRadii ? rows(batch.ringRadii, 1, chosen) : new Float32Array(chosen.length).fill(-1);
+  put(geometry, 'aState', rows(states, 1, chosen), 1);
+  put(geometry, 'aRingRadius', radii, 1);
+  return geometry;
+}
+
+function shapeGeometry(batch: QuadricBatch, chosen: readonly number[]): BufferGeometry {
+  const geometry = quadGeometry(chosen.length);
   const column = (k: number) => {
-    const axis = new Float32Array(3 * batch.count);
-    for (let i = 0; i < batch.count; i++) {
-      for (let row = 0; row < 3; row++) axis[3 * i + row] = batch.shapes[9 * i + 3 * row + k]!;
+    const axis = new Float32Array(3 * chosen.length);
+    for (let j = 0; j < chosen.length; j++) {
+      for (let row = 0; row < 3; row++) axis[3 * j + row] = batch.shapes[9 * chosen[j]! + 3 * row + k]!;
     }
     return axis;
   };
-  put(geometry, 'aCentre', batch.centres, 3);
+  put(geometry, 'aCentre', rows(batch.centres, 3, chosen), 3);
   put(geometry, 'aAxis1', column(0), 3);
   put(geometry, 'aAxis2', column(1), 3);
   put(geometry, 'aAxis3', column(2), 3);
-  put(geometry, 'aColour', batch.colours, 3, true);
-  put(geometry, 'aCircles', batch.circles, 1);
-  put(geometry, 'aState', new Uint8Array(batch.count), 1);
-  put(geometry, 'aShare', batch.shares ?? new Uint8Array(batch.count).fill(255), 1, true);
-  put(geometry, 'aRestColour', batch.restColours ?? batch.colours, 3, true);
-  put(geometry, 'aRingRadius', batch.ringRadii ?? new Float32Array(batch.count).fill(-1), 1);
-  put(geometry, 'aPattern', batch.patterns ?? new Uint8Array(batch.count), 1);
   return geometry;
+}
+
+/** The values of some objects, `size` each. */
+function rows<Values extends Float32Array | Uint8Array>(
+  values: Values,
+  size: number,
+  chosen: readonly number[],
+): Values {
+  const found = values.slice(0, size * chosen.length) as Values;
+  for (let j = 0; j < chosen.length; j++) {
+    for (let k = 0; k < size; k++) found[size * j + k] = values[size * chosen[j]! + k]!;
+  }
+  return found;
 }
 
 export function cylinderGeometry(batch: CylinderBatch): BufferGeometry {
@@ -60,14 +115,6 @@ export function facetGeometry({ count, corners: places, colours }: FacetView): B
   geometry.setAttribute('aTint', new BufferAttribute(tints, 4));
   geometry.setDrawRange(0, 3 * count);
   return geometry;
-}
-
-/** Rings: 0 plain, 1 hovered, 2 selected, 3 both, one a quadric. */
-export function setQuadricStates(geometry: BufferGeometry, states: Uint8Array): void {
-  const attribute = geometry.getAttribute('aState') as BufferAttribute;
-  const target = attribute.array as Uint8Array;
-  for (let i = 0; i < states.length; i++) target.fill(states[i]!, corners * i, corners * (i + 1));
-  attribute.needsUpdate = true;
 }
 
 function quadGeometry(count: number): BufferGeometry {

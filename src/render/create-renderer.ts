@@ -1,5 +1,6 @@
-import type { BufferGeometry, RawShaderMaterial } from 'three';
+import type { RawShaderMaterial } from 'three';
 import {
+  BufferGeometry,
   Camera as StillCamera,
   Color,
   LinearSRGBColorSpace,
@@ -7,6 +8,7 @@ import {
   Scene as Group,
   WebGLRenderer,
 } from 'three';
+import type { ProgramName } from '#shaders/registry.ts';
 import type { Camera, Viewport } from '#src/scene/camera.ts';
 import { facetView } from '#src/scene/facet-view.ts';
 import type { PickHit } from '#src/scene/pick.ts';
@@ -17,8 +19,10 @@ import {
   cylinderGeometry,
   facetGeometry,
   lineGeometry,
+  markedQuadricGeometry,
   quadricGeometry,
-  setQuadricStates,
+  ringGeometry,
+  splitQuadrics,
 } from './batch-geometry.ts';
 import { applyTheme, applyView, programMaterial, sharedUniforms } from './materials.ts';
 import { PolarMeshes } from './polar-meshes.ts';
@@ -54,6 +58,8 @@ class Renderer implements CrystalRenderer {
   readonly #still = new StillCamera();
   readonly #smoothing: Supersampling;
   readonly #quadrics: QuadMesh;
+  readonly #marked: QuadMesh;
+  readonly #rings: QuadMesh;
   readonly #cylinders: QuadMesh;
   readonly #polars: PolarMeshes;
   readonly #lines: QuadMesh;
@@ -91,6 +97,8 @@ class Renderer implements CrystalRenderer {
     this.#gl.debug.onShaderError = () => (this.#shaderFault = true);
     this.#smoothing = createSupersampling(this.#gl.capabilities.maxTextureSize);
     this.#quadrics = this.#mesh('quadric', 0);
+    this.#marked = this.#mesh('quadric-marked', 0);
+    this.#rings = this.#mesh('ring', 0);
     this.#cylinders = this.#mesh('cylinder', 1);
     this.#polars = new PolarMeshes(this.#group, programMaterial('polar', this.#uniforms), 2);
     this.#lines = this.#mesh('line', 3);
@@ -103,7 +111,9 @@ class Renderer implements CrystalRenderer {
 
   setScene(scene: Scene): void {
     this.#scene = scene;
-    this.#replace(this.#quadrics, quadricGeometry(scene.quadrics));
+    const { plain, marked } = splitQuadrics(scene.quadrics);
+    this.#replace(this.#quadrics, quadricGeometry(scene.quadrics, plain));
+    this.#replace(this.#marked, markedQuadricGeometry(scene.quadrics, marked));
     this.#replace(this.#cylinders, cylinderGeometry(scene.cylinders));
     this.#replace(this.#lines, lineGeometry(scene.lines));
     this.#polars.setBatch(scene.polars ?? null);
@@ -186,11 +196,11 @@ class Renderer implements CrystalRenderer {
   }
 
   #meshes(): readonly QuadMesh[] {
-    return [this.#quadrics, this.#cylinders, this.#lines, this.#facets];
+    return [this.#quadrics, this.#marked, this.#rings, this.#cylinders, this.#lines, this.#facets];
   }
 
-  #mesh(name: 'quadric' | 'cylinder' | 'line' | 'facet', order: number): QuadMesh {
-    const mesh = new Mesh(quadricGeometry(emptyQuadrics), programMaterial(name, this.#uniforms));
+  #mesh(name: Exclude<ProgramName, 'polar' | 'resolve'>, order: number): QuadMesh {
+    const mesh = new Mesh(new BufferGeometry(), programMaterial(name, this.#uniforms));
     mesh.frustumCulled = false;
     mesh.visible = false;
     mesh.renderOrder = order;
@@ -207,7 +217,8 @@ class Renderer implements CrystalRenderer {
   #markStates(): void {
     const scene = this.#scene;
     if (!scene) return;
-    setQuadricStates(this.#quadrics.geometry, ringStates(scene, this.#selected, this.#hovered));
+    const states = ringStates(scene, this.#selected, this.#hovered);
+    this.#replace(this.#rings, ringGeometry(scene.quadrics, states));
   }
 
   #deviceSize(): { width: number; height: number } {
@@ -298,12 +309,3 @@ class Renderer implements CrystalRenderer {
     this.#options.onContextRestored?.();
   };
 }
-
-const emptyQuadrics = {
-  count: 0,
-  centres: new Float32Array(),
-  shapes: new Float32Array(),
-  colours: new Uint8Array(),
-  circles: new Uint8Array(),
-  pickIds: new Uint32Array(),
-};

@@ -29,12 +29,11 @@ export function sharedUniforms() {
     uOrientation: { value: new Vector4(0, 0, 0, 1) },
     uPixelsPerAngstrom: { value: 1 },
     uHalfViewportPx: { value: new Vector2(1, 1) },
-    uDepthRangePx: { value: 1 },
+    uHalfPerDepthPx: { value: 1 },
     uPixelScale: { value: 1 },
     uPerEyePx: { value: 0 },
     uPaper: { value: new Vector3() },
-    uDepthCue: { value: 0 },
-    uSceneDepthPx: { value: new Vector2() },
+    uFade: { value: new Vector3() },
     uAccent: { value: new Vector3() },
     uHoverColour: { value: new Vector3() },
     uLineColour: { value: new Vector3() },
@@ -78,7 +77,7 @@ export function applyTheme(uniforms: SharedUniforms, theme: RenderTheme): void {
   uniforms.uLineColour.value.set(...inLinearLight(theme.line));
   uniforms.uAccent.value.set(...inLinearLight(theme.selected));
   uniforms.uHoverColour.value.set(...inLinearLight(theme.hovered));
-  uniforms.uDepthCue.value = theme.depthCue;
+  uniforms.uFade.value.z = theme.depthCue;
   uniforms.uCircleWidthPx.value = theme.circleWidthPx;
   const rim = rimLine(theme);
   uniforms.uRim.value.set(rim.widthPx, rim.ink, rim.from, rim.full);
@@ -105,9 +104,10 @@ export function applyView(
     (viewport.widthPx * pixelScale) / 2,
     (viewport.heightPx * pixelScale) / 2,
   );
-  uniforms.uDepthRangePx.value = 1.05 * farthestImage(middle, reach, eye) + 1;
+  uniforms.uHalfPerDepthPx.value = 0.5 / (1.05 * farthestImage(middle, reach, eye) + 1);
   uniforms.uPerEyePx.value = 1 / eye;
-  uniforms.uSceneDepthPx.value.set(middle + reach, middle - reach);
+  const fade = uniforms.uFade.value;
+  fade.set(middle + reach, fade.z / Math.max(2 * reach, 1), fade.z);
   uniforms.uPixelScale.value = pixelScale;
   uniforms.uLineWidthPx.value = scene.lines.widthPx;
 }

@@ -71,7 +71,8 @@ describe('_quadric against src/scene/view-quadric.ts', () => {
   });
 
   it('surface and normal', () => {
-    const body = `${unpack} result = vec4(surfaceNormal(q, unit), surfaceDepth(q, unit));`;
+    const body = `${unpack} QuadricFace face = faceOf(q, vec3(0.0), 0.0);
+      result = vec4(surfaceNormal(face, pixelGradient(face.toDisc, e), unit, 0.0), dot(q.depth, unit));`;
     const found = gpu.run(['_quadric'], body, quadricCases);
     shapes.forEach(({ m, e }, i) => {
       const q = viewQuadric(m);
@@ -80,13 +81,25 @@ describe('_quadric against src/scene/view-quadric.ts', () => {
   });
 
   it('distances to the principal circles and to the outline', () => {
-    const body = `${unpack} result = vec4(circleDistances(q, bodyRotation(m, q), bodyRotation(m, q) * unit, unit), outlineDistance(q, e));`;
-    const found = gpu.run(['_quadric'], body, quadricCases);
+    const body = `${unpack} QuadricFace face = faceOf(q, vec3(0.0), 0.0);
+      mat3 body = bodyOfImage(inverse(m), q, vec3(0.0), 0.0);
+      vec3 undrawn = vec3(0.0, inputs[2].w, inputs[2].w);
+      float circle = nearestCircle(face.toDisc, body, body * unit, unit, undrawn);
+      vec2 back = discPoint(face.toDisc, outlinePoint(q, e));
+      result = vec4(circle, rimDistance(length(e), pixelGradient(face.toDisc, e)), back);`;
+    const all = gpu.run(['_quadric'], body, quadricCases);
+    const first = gpu.run(
+      ['_quadric'],
+      body,
+      quadricCases.map((values) => [...values.slice(0, 11), 1e12]),
+    );
     shapes.forEach(({ m, e }, i) => {
       const q = viewQuadric(m);
       const turned = bodyRotation(m, q);
       const circles = ([0, 1, 2] as const).map((k) => circleDistance(turned, q, unitOf(e), k));
-      expectClose(found[i]!, [...circles, outlineDistance(q, e[0], e[1])], 2e-3);
+      const rim = -outlineDistance(q, e[0], e[1]);
+      expectClose(all[i]!, [Math.min(...circles), rim, ...e], 2e-3);
+      expectClose(first[i]!, [circles[0]!, rim, ...e], 2e-3);
     });
   });
 });
@@ -198,10 +211,37 @@ describe('_quadric in perspective against src/scene/perspective.ts', () => {
     });
   });
 
+  it('the normal is that of the place itself, before perspective', () => {
+    const found = gpu.run(
+      ['_quadric'],
+      `${unpackImage} QuadricFace face = faceOf(q, image.centre, perEye);
+       result = vec4(normalize(surfaceNormal(face, pixelGradient(face.toDisc, e), unit, perEye)), 0.0);`,
+      inputs,
+    );
+    const places = gpu.run(
+      ['_quadric'],
+      `${unpackImage} vec3 p = image.centre + vec3(outlinePoint(q, e), dot(q.depth, unit));
+       result = vec4(p / (1.0 + p.z * perEye), 0.0);`,
+      inputs,
+    );
+    cases.forEach(({ m, centre }, i) => {
+      const back = inverse(m);
+      const u = apply(back, places[i]!.slice(0, 3).map((value, k) => value - centre[k]!) as unknown as Vec3);
+      // gradient of |M⁻¹ (x - c)|²: M⁻ᵀ u
+      const normal = [0, 1, 2].map((k) => back[k]! * u[0] + back[3 + k]! * u[1] + back[6 + k]! * u[2]);
+      const size = Math.hypot(...normal);
+      expectClose(
+        found[i]!.slice(0, 3),
+        normal.map((value) => value / size),
+        5e-2,
+      );
+    });
+  });
+
   it('a point of the image lies on the quadric when taken back, at the direction that the body matrix tells', () => {
     const places = gpu.run(
       ['_quadric'],
-      `${unpackImage} vec3 p = image.centre + vec3(outlinePoint(q, e), surfaceDepth(q, unit));
+      `${unpackImage} vec3 p = image.centre + vec3(outlinePoint(q, e), dot(q.depth, unit));
        result = vec4(p / (1.0 + p.z * perEye), 0.0);`,
       inputs,
     );
@@ -340,7 +380,7 @@ describe('_view', () => {
       ['_view'],
       'vec4 c = clipPoint(vec3(0.0, 0.0, inputs[0].x)); result = vec4(0.5 + 0.5 * c.z / c.w, fragmentDepth(inputs[0].x), 0.0, 0.0);',
       zs,
-      { uHalfViewportPx: [50, 50], uDepthRangePx: [100], uPerEyePx: [0] },
+      { uHalfViewportPx: [50, 50], uHalfPerDepthPx: [0.005], uPerEyePx: [0] },
     );
     found.forEach(([fromClip, written], i) => {
       expect(written).toBeCloseTo(fromClip!, 6);
@@ -373,6 +413,22 @@ describe('_light', () => {
     expectClose(found!, colour, 1e-3);
   });
 
+  it('the most light that there is', () => {
+    const directions = Array.from({ length: 4000 }, (_none, k) => {
+      const [z, angle] = [(k % 40) / 40, (2 * Math.PI * k) / 4000];
+      const across = Math.sqrt(1 - z * z);
+      return [across * Math.cos(angle), across * Math.sin(angle), z, 0];
+    });
+    const lights = gpu.run(
+      ['_light'],
+      'result = vec4(softLight(inputs[0].xyz), mostLight, 0.0, 0.0);',
+      directions,
+    );
+    const most = Math.max(...lights.map(([light]) => light!));
+    expect(most).toBeLessThanOrEqual(lights[0]![1]!);
+    expect(most).toBeGreaterThan(lights[0]![1]! - 0.06);
+  });
+
   it('stays within the range of colours and falls off to the lower right', () => {
     const normals = Array.from({ length: 100 }, () => {
       const [x, y] = [between(-0.7, 0.7), between(-0.7, 0.7)];
@@ -401,16 +457,17 @@ describe('_light', () => {
 
 describe('_depth-cue', () => {
   it('is nothing at the near end, its share at the far end, and can be turned off', () => {
-    const body = 'result = vec4(srgbWithDepthCue(vec3(0.0), inputs[0].x), 0.0);';
+    const body = 'result = vec4(withDepthCue(vec3(0.0), inputs[0].x), 0.0);';
     const zs = [
+      [12, 0, 0, 0],
       [10, 0, 0, 0],
       [-10, 0, 0, 0],
+      [-15, 0, 0, 0],
     ];
-    const uniforms = { uPaper: [1, 1, 1], uSceneDepthPx: [10, -10] };
-    const cued = gpu.run(['_colour', '_depth-cue'], body, zs, { ...uniforms, uDepthCue: [0.3] });
-    expect(cued[0]![0]).toBeCloseTo(0, 5);
-    expect(cued[1]![0]).toBeCloseTo(0.3, 5);
-    const off = gpu.run(['_colour', '_depth-cue'], body, zs, { ...uniforms, uDepthCue: [0] });
-    expect(off[1]![0]).toBeCloseTo(0, 5);
+    const uPaper = [1, 1, 1];
+    const cued = gpu.run(['_depth-cue'], body, zs, { uPaper, uFade: [10, 0.3 / 20, 0.3] });
+    [0, 0, 0.3, 0.3].forEach((share, i) => expect(cued[i]![0]).toBeCloseTo(share, 5));
+    const off = gpu.run(['_depth-cue'], body, zs, { uPaper, uFade: [10, 0, 0] });
+    expect(off[2]![0]).toBeCloseTo(0, 5);
   });
 });

@@ -23,7 +23,7 @@ function shareDiffering(one: Picture, other: Picture, by = 24): number {
 }
 
 describe('renderer', () => {
-  it('draws a scene in three calls, on demand, and only when something changed', async () => {
+  it('draws a scene in a call for each kind, light and dark ellipsoids apart, on demand, and only when something changed', async () => {
     const s = stage(300, 200);
     const scene = buildScene(madeQuartz());
     s.renderer.setScene(scene);
@@ -34,7 +34,7 @@ describe('renderer', () => {
     const { frames, drawCalls, quadrics } = s.renderer.counters();
     expect({ frames, drawCalls, quadrics }).toEqual({
       frames: 1,
-      drawCalls: 3,
+      drawCalls: 4,
       quadrics: scene.quadrics.count,
     });
     await frame();
