@@ -9,7 +9,7 @@ export const colourBarStyles = css`
     display: flex;
     flex-wrap: wrap;
     align-items: center;
-    gap: 2px 9px;
+    gap: 2px 12px;
     font-size: 12.5px;
     font-variant-numeric: tabular-nums lining-nums;
     padding: 6px 12px 2px 0;
@@ -56,8 +56,8 @@ export const colourBarStyles = css`
     border-radius: 50%;
     forced-color-adjust: none;
   }
-  .legend .soft {
-    margin-left: 6px;
+  .legend .whole {
+    white-space: nowrap;
   }
 `;
 
@@ -69,9 +69,9 @@ export function colourBar(scene: Scene | null): TemplateResult | typeof nothing 
   if (!legend && !scaleStatement && elements.length === 0 && !hasKey) return nothing;
   const lengths = key?.lengths ? `${key.lengths}, ` : '';
   return html`<div class="legend">
-    ${key?.subject ? html`<span>${withSubscripts(key.subject)}</span>` : nothing} ${legend ? barOf(legend) : nothing}
-    ${key?.lobes ? lobeKey(key.lobes) : nothing}
-    ${scaleStatement ? html`<span class="soft">${withSubscripts(lengths + scaleStatement)}</span>` : nothing}
+    ${key?.subject ? html`<span>${withSubscripts(key.subject)}</span>` : nothing}
+    ${legend ? barOf(legend) : nothing} ${key?.lobes ? lobeKey(key.lobes) : nothing}
+    ${scaleStatement ? html`<span class="soft">${withSubscripts(lengths)}<span class="whole">${scaleStatement}</span></span>` : nothing}
     ${key && key.sites.length > 0 ? siteKey(key) : nothing}
     ${elements.length > 0 ? elementKey(elements, key?.elementsWords ?? null) : nothing}
     ${(key?.marks ?? []).map((words) => html`<span class="soft">${words}</span>`)}

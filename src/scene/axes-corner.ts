@@ -22,7 +22,9 @@ export type AxesCorner = 'lower left' | 'upper left';
 /** Side of the square in which the drawing stands in every direction, and its distance from the edges, CSS pixels. */
 export const axesSquarePx = 108;
 export const axesEdgePx = 4;
-const axisPx = 34;
+/** Length of an axis in the picture's plane, as a share of the smaller side within bounds: small pictures have a small drawing. */
+const axisShare = 0.08;
+const axisPx = { least: 24, most: 34 } as const;
 const letterPx = 12;
 const marginPx = 3;
 
@@ -32,7 +34,9 @@ export function cornerAxes(
   viewport: Viewport,
   before: AxesCorner = 'lower left',
 ): CornerAxes | null {
-  const axes = projectAxes(scene, camera, axisPx).sort((one, other) => one.depthPx - other.depthPx);
+  const side = Math.min(viewport.widthPx, viewport.heightPx);
+  const lengthPx = Math.min(axisPx.most, Math.max(axisPx.least, axisShare * side));
+  const axes = projectAxes(scene, camera, lengthPx).sort((one, other) => one.depthPx - other.depthPx);
   if (axes.length === 0) return null;
   const letters = lettersOfAxes(axes, letterPx);
   const half = letterPx / 2;

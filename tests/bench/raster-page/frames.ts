@@ -3,6 +3,9 @@ import { createCrystalRenderer } from '#src/render/create-renderer.ts';
 import type { Camera } from '#src/scene/camera.ts';
 import { turn } from '#src/scene/camera.ts';
 import { pick } from '#src/scene/pick.ts';
+import type { MeasureText } from '#src/scene/place-labels.ts';
+import { placeLabels } from '#src/scene/place-labels.ts';
+import type { Scene } from '#src/scene/scene.ts';
 import { lightTheme } from '#src/scene/theme.ts';
 import { askew, randomScene } from '#tests/support/raster-scene.ts';
 import { instancedMesh } from './instanced-mesh.ts';
@@ -15,8 +18,16 @@ export interface FrameTimes {
   readonly pick: number;
 }
 
+/** Milliseconds, the least of the rounds. */
+export interface GlyphTimes {
+  readonly ellipsoids: number;
+  readonly polars: number;
+  readonly labels: number;
+}
+
 const viewport = { widthPx: 1600, heightPx: 900 };
-const close: Camera = { ...askew, zoom: 1.3 * askew.zoom };
+/** Nearer than a picture is first shown: more of it is covered, which costs the ways by pixels, and not the mesh. */
+const nearer = 1.3;
 
 function newCanvas(width: number, height: number): HTMLCanvasElement {
   const canvas = document.createElement('canvas');
@@ -38,7 +49,13 @@ async function timed(work: () => void | Promise<void>): Promise<number> {
 }
 
 /** The ways take turns, so that what else the machine does meets all of them alike. */
-async function frameTimes(count: number, rounds: number, withMesh: boolean): Promise<FrameTimes> {
+async function frameTimes(
+  count: number,
+  rounds: number,
+  withMesh: boolean,
+  isClose: boolean,
+): Promise<FrameTimes> {
+  const close: Camera = { ...askew, zoom: (isClose ? nearer : 1) * askew.zoom };
   const scene = randomScene(count, 1, 0);
   const [meshCanvas, glCanvas] = [newCanvas(1600, 900), newCanvas(1600, 900)];
   const drawMesh = withMesh ? instancedMesh(meshCanvas, scene) : null;
@@ -108,12 +125,66 @@ async function stillTimes(side: number): Promise<{ readonly raster: number; read
   return best;
 }
 
+/** The same tensors as polar surfaces: T = A/2 as far as it is symmetric, without its mean, so that both signs show. */
+function asPolars(scene: ReturnType<typeof randomScene>): Scene {
+  const { count, centres, shapes, colours, pickIds } = scene.quadrics;
+  const tensors = new Float32Array(6 * count);
+  for (let k = 0; k < count; k++) {
+    const at = (row: number, column: number): number =>
+      (shapes[9 * k + 3 * row + column]! + shapes[9 * k + 3 * column + row]!) / 2;
+    const mean = (at(0, 0) + at(1, 1) + at(2, 2)) / 3;
+    tensors.set([at(0, 0) - mean, at(1, 1) - mean, at(2, 2) - mean, at(0, 1), at(0, 2), at(1, 2)], 6 * k);
+  }
+  const polars = {
+    ...{ count, centres, tensors, pickIds },
+    positiveColours: colours,
+    negativeColours: colours.map((value) => 0.6 * value),
+  };
+  return { ...scene, quadrics: randomScene(0).quadrics, polars };
+}
+
+/** Milliseconds of a CPU frame of ellipsoids and of as many polar surfaces, and of placing labels beside atoms; least of the rounds. */
+async function glyphTimes(count: number, labelCount: number, rounds: number): Promise<GlyphTimes> {
+  const solid = randomScene(count, 1, 0);
+  const labelled: Scene = {
+    ...solid,
+    labels: Array.from({ length: labelCount }, (_none, k) => ({
+      text: `Si${k + 1}`,
+      position: [0, 1, 2].map((axis) => solid.quadrics.centres[3 * k + axis]!) as [number, number, number],
+      pickId: k + 1,
+      quadric: k,
+    })),
+  };
+  const [solidClient, polarClient] = [createRasterClient(), createRasterClient()];
+  solidClient.setScene(solid);
+  polarClient.setScene(asPolars(solid));
+  const view = { viewport, theme: lightTheme, pixelRatio: 1, samplesAcross: 1 };
+  const measure: MeasureText = (text) => ({ widthPx: 7 * text.length, heightPx: 15 });
+  const best = { ellipsoids: Infinity, polars: Infinity, labels: Infinity };
+  const keep = (way: keyof GlyphTimes, ms: number): void => void (best[way] = Math.min(best[way], ms));
+  for (let step = 0; step <= rounds; step++) {
+    const camera = turn(close, 10 * step, 5, viewport);
+    const ellipsoids = await timed(async () => void (await solidClient.draw({ ...view, camera })));
+    const polars = await timed(async () => void (await polarClient.draw({ ...view, camera })));
+    const labels = await timed(() => void placeLabels(labelled, camera, viewport, measure));
+    if (step === 0) continue;
+    keep('ellipsoids', ellipsoids);
+    keep('polars', polars);
+    keep('labels', labels);
+  }
+  solidClient.dispose();
+  polarClient.dispose();
+  return best;
+}
+
 declare global {
   interface Window {
     frameTimes: typeof frameTimes;
     stillTimes: typeof stillTimes;
+    glyphTimes: typeof glyphTimes;
   }
 }
 
 window.frameTimes = frameTimes;
 window.stillTimes = stillTimes;
+window.glyphTimes = glyphTimes;
