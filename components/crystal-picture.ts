@@ -8,6 +8,7 @@ import { pan, turnAbout, zoom } from '#src/scene/camera.ts';
 import { turnedRound } from '#src/scene/camera-path.ts';
 import { firstCamera, fit, lookAlong } from '#src/scene/framing.ts';
 import type { LookDirection } from '#src/scene/framing.ts';
+import type { ScreenBox } from '#src/scene/label-room.ts';
 import { parseLookAlong } from '#src/scene/look-along.ts';
 import type { Look } from '#src/scene/look.ts';
 import { defaultLook } from '#src/scene/look.ts';
@@ -25,8 +26,11 @@ import { zoomTo } from '#src/scene/zoom-to.ts';
 import type { FlatDrawing } from './flat-drawing.ts';
 import { flattened } from './flat-drawing.ts';
 import { labelMeasure } from './label-measure.ts';
+import type { Badge } from './picture-badges.ts';
+import { badgeBoxes, markBoxes } from './picture-badges.ts';
 import type { PicturePoint } from './picture-controls.ts';
 import { attachControls, steeringWords } from './picture-controls.ts';
+import type { PictureEvents } from './picture-events.ts';
 import type { PictureCommand } from './picture-keys.ts';
 import { isSameAtom } from './picture-marks.ts';
 import { PictureMotion } from './picture-motion.ts';
@@ -35,23 +39,9 @@ import { PictureMotion } from './picture-motion.ts';
 export interface PictureOverlay {
   readonly axes: CornerAxes | null;
   readonly labels: readonly PlacedLabel[];
+  /** Of the values that were handed in, in their order. */
+  readonly badges: readonly ScreenBox[];
   readonly rings: readonly ProjectedAtom[];
-}
-
-/** What the picture tells its element. */
-export interface PictureEvents {
-  /** Something over the canvas moved or changed. */
-  readonly moved: () => void;
-  /** The user moved the camera; the words name what was done, for the list of steps. */
-  readonly steered: (camera: Camera, words: string) => void;
-  /** The picture itself took another camera: a fit to another extent. */
-  readonly fitted: (camera: Camera | null) => void;
-  readonly clicked: (entry: PickEntry | null, adds: boolean) => void;
-  /** A double click on an atom, which the first of the two clicks selected. */
-  readonly activated: () => void;
-  readonly pointed: (entry: PickEntry | null, at: PicturePoint | null) => void;
-  /** The graphics context was lost (true) or came back (false). */
-  readonly lost: (isLost: boolean) => void;
 }
 
 /** Rings drawn at most round the atoms of a hovered site. */
@@ -264,15 +254,20 @@ export class CrystalPicture {
     return entry ? this.whereIs(entry) : null;
   }
 
-  overlay(): PictureOverlay {
-    if (!this.#scene || !this.#camera) return { axes: null, labels: [], rings: [] };
+  /** Values of measurements and numbers at picked atoms have their places first; labels keep off them. */
+  overlay(values: readonly Badge[] = [], marks: readonly (PicturePoint | null)[] = []): PictureOverlay {
+    if (!this.#scene || !this.#camera) return { axes: null, labels: [], badges: [], rings: [] };
     const [scene, camera, viewport] = [this.#scene, this.#camera, this.#viewport];
     const waits = scene.labels.length > labelsWhileMoving && performance.now() - this.#movedAt < restMs;
     const axes = (this.#axes = cornerAxes(scene, camera, viewport, this.#axes?.corner));
     const measure = (this.#measure ??= labelMeasure(this.#canvas));
-    this.#labels = waits ? [] : placeLabels(scene, camera, viewport, measure, this.#labels, axes?.keptOff);
+    const taken = [...(axes?.keptOff ?? []), ...markBoxes(marks)];
+    const badges = badgeBoxes(values, measure, viewport, taken);
+    taken.push(...badges);
+    this.#labels = waits ? [] : placeLabels(scene, camera, viewport, measure, this.#labels, taken);
     return {
       axes,
+      badges,
       labels: this.#labels,
       rings: this.#ringed.size > 0 ? projectAtoms(scene, camera, viewport, this.#ringed) : [],
     };

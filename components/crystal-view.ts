@@ -3,13 +3,13 @@ import type { PropertyValues, TemplateResult } from 'lit';
 import type { WebGLProbe } from '#src/render/probe-webgl.ts';
 import { probeWebGL } from '#src/render/probe-webgl.ts';
 import type { PickEntry } from '#src/scene/scene.ts';
-import { siteColour } from '#src/store/site-colour.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
 import { colourBar, colourBarStyles } from './colour-bar.ts';
-import type { CrystalPicture, PictureEvents } from './crystal-picture.ts';
+import type { CrystalPicture } from './crystal-picture.ts';
 import { completeWithout, draws, nothingDraws } from './drawing-words.ts';
 import { MeasurementBoard, newestWords } from './measurement-board.ts';
 import type { PicturePoint } from './picture-controls.ts';
+import type { PictureEvents } from './picture-events.ts';
 import type { PictureCommand } from './picture-keys.ts';
 import { commandOfKey, keysInWords } from './picture-keys.ts';
 import { PictureMarker } from './picture-marker.ts';
@@ -18,6 +18,7 @@ import {
   annotations,
   axesDrawing,
   faultWords,
+  flatMeasurements,
   labelsDrawing,
   marksDrawing,
   overPicture,
@@ -233,12 +234,12 @@ export class CrystalView extends StoreElement {
     const { store } = this;
     const picture = this.#picture;
     if (!picture || !store) return html``;
-    const overlay = picture.overlay();
-    const hovered = store.state.hover?.siteIndex;
     const marks = this.#marker.isNumbered ? this.#marker.marks.map((mark) => picture.whereIsAtom(mark)) : [];
-    return html`${ringsDrawing(overlay, hovered === undefined ? null : siteColour(hovered))}
-    ${annotations(this.#board.entries(store), picture)} ${labelsDrawing(overlay)} ${marksDrawing(marks)}
-    ${axesDrawing(overlay)} ${pointedDrawing(this.pointed, picture, store)}`;
+    const measured = flatMeasurements(this.#board.entries(store), picture);
+    const overlay = picture.overlay(measured.values, marks);
+    return html`${ringsDrawing(overlay, store.state.hover)} ${annotations(measured, overlay)}
+    ${labelsDrawing(overlay)} ${marksDrawing(marks)} ${axesDrawing(overlay)}
+    ${pointedDrawing(this.pointed, picture, store)}`;
   }
 
   #toolsHost(): ToolsHost {

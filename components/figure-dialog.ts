@@ -3,7 +3,8 @@ import type { PropertyValues, TemplateResult } from 'lit';
 import type { FigureClient } from '#src/figure/figure-client.ts';
 import type { FigurePreview } from '#src/figure/figure-protocol.ts';
 import type { FigureRequest, FigureView } from '#src/figure/figure-request.ts';
-import { pixelSize, sizeFault } from '#src/figure/figure-size.ts';
+import { missingHeight, pixelSize, pointsPerMm, sizeFault } from '#src/figure/figure-size.ts';
+import { keptView, shownView } from '#src/figure/figure-view.ts';
 import type { Camera, Viewport } from '#src/scene/camera.ts';
 import type { Look } from '#src/scene/look.ts';
 import { defaultLook } from '#src/scene/look.ts';
@@ -26,11 +27,11 @@ export class FigureDialog extends LitElement {
   static override properties = {
     scene: { attribute: false },
     camera: { attribute: false },
+    shown: { attribute: false },
     viewport: { attribute: false },
     look: { attribute: false },
     theme: { attribute: false },
     caseTitle: { attribute: false },
-    viewWords: { attribute: false },
     caseText: { attribute: false },
     choices: { state: true },
     drawn: { state: true },
@@ -42,14 +43,14 @@ export class FigureDialog extends LitElement {
   static override styles = [shared, figureDialogStyles];
 
   declare scene: Scene | null;
-  /** As on screen; null is the first view of the whole crystal. */
+  /** As the case keeps it; null is the first view of the whole crystal. */
   declare camera: Camera | null;
+  /** As on screen, for a picture of what the screen shows; null leaves that choice out. */
+  declare shown: Camera | null;
   declare viewport: Viewport;
   declare look: Look;
   declare theme: 'light' | 'dark';
   declare caseTitle: string;
-  /** Such as "viewed along [1 1 0]"; null where the view has no name. */
-  declare viewWords: string | null;
   /** Text of the case file, asked for when a picture is saved; null leaves the case out. */
   declare caseText: (() => string | null | Promise<string | null>) | null;
   declare choices: FigureChoices;
@@ -64,12 +65,11 @@ export class FigureDialog extends LitElement {
   constructor() {
     super();
     this.scene = null;
-    this.camera = null;
+    this.camera = this.shown = null;
     this.viewport = { widthPx: 1, heightPx: 1 };
     this.look = defaultLook;
     this.theme = 'light';
     this.caseTitle = '';
-    this.viewWords = null;
     this.caseText = null;
     this.choices = firstChoices;
     this.drawn = null;
@@ -107,8 +107,8 @@ export class FigureDialog extends LitElement {
         </div>
         <div>
           ${figureForm(choices, (change) => this.#change(change), {
-            framing: this.camera !== null,
-            viewDirection: this.viewWords !== null,
+            framing: this.shown !== null,
+            viewDirection: (this.#view()?.words ?? null) !== null,
           })}
           <div class="end">${this.#buttons()}</div>
           <p class="said" role="status">${this.said}</p>
@@ -129,7 +129,7 @@ export class FigureDialog extends LitElement {
         <button class="line" @click=${() => this.#client?.cancel()}>Cancel</button>`;
     }
     const canCopy = typeof ClipboardItem !== 'undefined';
-    const isOff = this.#tooLarge() !== null;
+    const isOff = this.#sizeFault() !== null;
     return html`<button class="main" ?disabled=${isOff} @click=${() => void this.#save()}>Save PNG</button> ${
         canCopy
           ? html`<button class="line" ?disabled=${isOff} @click=${() => void this.#copy()}>Copy</button>`
@@ -138,13 +138,15 @@ export class FigureDialog extends LitElement {
   }
 
   #request(): FigureRequest {
-    return figureRequest(this.choices, this.#view(), this.look);
+    return figureRequest(this.choices, this.#view()!, this.look);
   }
 
-  #view(): FigureView {
-    const { camera, viewport, viewWords: words } = this;
-    if (!camera) return { kind: 'direction', towards: null, words: null };
-    return { kind: 'camera', camera, viewport, wholeCrystal: this.choices.framing === 'whole', words };
+  /** null without a crystal. */
+  #view(): FigureView | null {
+    const { camera, shown, viewport, scene } = this;
+    if (!scene) return null;
+    const isCut = this.choices.framing === 'screen' && shown !== null;
+    return isCut ? shownView(shown, viewport, scene) : keptView(camera, scene);
   }
 
   #change(change: Partial<FigureChoices>): void {
@@ -170,7 +172,7 @@ export class FigureDialog extends LitElement {
       const drawn = await client.preview(request, pxPerPt);
       if (!drawn) return;
       this.drawn = drawn;
-      this.fault = this.#tooLarge();
+      this.fault = this.#sizeFault();
     } catch (error) {
       this.#fail(error);
     }
@@ -188,9 +190,15 @@ export class FigureDialog extends LitElement {
     return this.drawn && pixelSize(this.drawn, figureSize(this.choices).pxPerPt);
   }
 
-  #tooLarge(): string | null {
+  #sizeFault(): string | null {
     const pixels = this.#pixels();
-    return pixels && sizeFault(pixels.widthPx, pixels.heightPx);
+    if (!this.drawn || !pixels) return null;
+    const { pxPerPt, heightPt } = figureSize(this.choices);
+    const least = heightPt === null ? null : missingHeight(this.drawn, pxPerPt);
+    if (least === null) return sizeFault(pixels.widthPx, pixels.heightPx);
+    const isMm = this.choices.unit === 'mm';
+    const height = Math.ceil(isMm ? least / pointsPerMm : least * pxPerPt);
+    return `The picture is too low for what stands beside the crystal; the least height is ${height} ${isMm ? 'mm' : 'pixels'}, less with smaller letters or with less inside.`;
   }
 
   #sizeInWords(drawn: FigurePreview): string {

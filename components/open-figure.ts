@@ -22,7 +22,8 @@ export async function openFigure(shown: Shown): Promise<void> {
   const dialog = known instanceof FigureDialog ? known : new FigureDialog();
   const { decisions, derived, look, camera } = store.state;
   dialog.scene = picture.scene;
-  dialog.camera = picture.camera ?? camera;
+  dialog.camera = camera;
+  dialog.shown = picture.camera;
   dialog.viewport = picture.viewport;
   dialog.look = look;
   dialog.theme = theme;

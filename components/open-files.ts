@@ -1,6 +1,8 @@
+import type { Problem } from '#src/store/dossier-types.ts';
 import { holdsCase } from '#src/store/holds-case.ts';
 import type { FileInput, Store } from '#src/store/store.ts';
-import { oneCaseOnly } from '#src/store/case-problems.ts';
+import { caseUnreadable, oneCaseOnly } from '#src/store/case-problems.ts';
+import { Cancelled } from '#src/store/engine-client.ts';
 
 /** Counts what was begun to open, store by store: a case file that is read late says nothing about what came after it. */
 const openings = new WeakMap<Store, number>();
@@ -18,15 +20,20 @@ export async function openFiles(store: Store, files: readonly FileInput[]): Prom
     store.refuse(`open ${first.name}`, files, [oneCaseOnly(cases)]);
     return false;
   }
-  const { readCaseFile } = await import('#src/store/case-exchange.ts');
-  const { opened, problems } = await readCaseFile(first);
-  if (isOvertaken()) return false;
+  const read = await store.readCase(first).catch((error: unknown) => notRead(first, error));
+  if (isOvertaken() || !read) return false;
+  const { opened, problems } = read;
   if (!opened) {
     store.refuse(`open ${first.name}`, [first], problems);
     return false;
   }
   const isOpen = await store.openCase(opened);
   return isOpen && others.length > 0 ? store.add(others) : isOpen;
+}
+
+/** Why a case file was not read; null where that was cancelled. */
+function notRead({ name }: FileInput, error: unknown): { opened: null; problems: Problem[] } | null {
+  return error instanceof Cancelled ? null : { opened: null, problems: [caseUnreadable(name, error)] };
 }
 
 /** Adds files to the crystal on screen; a case file stands for a crystal of its own and is refused. */

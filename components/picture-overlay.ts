@@ -3,10 +3,12 @@ import type { TemplateResult } from 'lit';
 import { axesEdgePx, axesSquarePx } from '#src/scene/axes-corner.ts';
 import type { PickEntry } from '#src/scene/scene.ts';
 import type { Store } from '#src/store/store.ts';
-import type { WorkbenchState } from '#src/store/state.ts';
+import { siteColour } from '#src/store/site-colour.ts';
+import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import type { CrystalPicture, PictureOverlay } from './crystal-picture.ts';
 import { valueText } from './measure-words.ts';
 import type { BoardEntry } from './measurement-board.ts';
+import type { Badge } from './picture-badges.ts';
 import type { PicturePoint } from './picture-controls.ts';
 import { pointedSentence } from './pointed-sentence.ts';
 import { sampleOf } from './sample-cases.ts';
@@ -15,9 +17,10 @@ import { withSubscripts } from './symbol-text.ts';
 /** Rings round the atoms of the hovered site, in its colour. */
 export function ringsDrawing(
   { rings }: PictureOverlay,
-  colour: string | null,
+  hover: Selection | null,
 ): TemplateResult | typeof nothing {
-  if (rings.length === 0 || colour === null) return nothing;
+  if (rings.length === 0 || !hover) return nothing;
+  const colour = siteColour(hover.siteIndex);
   return html`<svg class="rings" aria-hidden="true">
     ${rings.map(
       (ring) =>
@@ -64,32 +67,44 @@ export function axesDrawing({ axes }: PictureOverlay): TemplateResult | typeof n
   </svg>`;
 }
 
-/** Kept measurements: thin lines and arcs with their values. */
-export function annotations(
-  entries: readonly BoardEntry[],
-  picture: CrystalPicture,
-): TemplateResult | typeof nothing {
+/** Kept measurements as they stand on screen: their lines, and their values that are to stand on them. */
+export interface FlatMeasurements {
+  readonly lines: readonly string[];
+  readonly values: readonly Badge[];
+}
+
+export function flatMeasurements(entries: readonly BoardEntry[], picture: CrystalPicture): FlatMeasurements {
   const drawn = entries.flatMap(({ measured, drawing }) =>
     measured && drawing ? [{ measured, ...picture.project(drawing) }] : [],
   );
-  if (drawn.length === 0) return nothing;
+  return {
+    lines: drawn.flatMap(({ lines }) => lines),
+    values: drawn.flatMap(({ measured, textAt }) =>
+      textAt ? [{ text: valueText(measured), at: textAt }] : [],
+    ),
+  };
+}
+
+/** Kept measurements: thin lines and arcs with their values. */
+export function annotations(
+  { lines, values }: FlatMeasurements,
+  { badges }: PictureOverlay,
+): TemplateResult | typeof nothing {
+  if (lines.length === 0 && values.length === 0) return nothing;
   return html`<svg class="annotations" aria-hidden="true">
-      ${drawn.flatMap(({ lines }) =>
-        lines.map(
-          (points) =>
-            svg`<polyline class="under" points=${points}></polyline><polyline points=${points}></polyline>`,
-        ),
+      ${lines.map(
+        (points) =>
+          svg`<polyline class="under" points=${points}></polyline><polyline points=${points}></polyline>`,
       )}
     </svg>
-    ${drawn.map(({ measured, textAt }) =>
-      textAt
-        ? html`<span
-            class="value"
-            aria-hidden="true"
-            .style=${`transform: translate(${textAt.xPx.toFixed(1)}px, ${textAt.yPx.toFixed(1)}px) translate(-50%, -50%)`}
-            >${valueText(measured)}</span
-          >`
-        : nothing,
+    ${badges.map(
+      ({ leftPx, topPx }, i) =>
+        html`<span
+          class="value"
+          aria-hidden="true"
+          .style=${`transform: translate(${leftPx.toFixed(1)}px, ${topPx.toFixed(1)}px)`}
+          >${values[i]?.text}</span
+        >`,
     )}`;
 }
 

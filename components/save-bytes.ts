@@ -1,6 +1,11 @@
 /** Hands bytes to the browser to be saved under a name. */
 export function saveBytes(bytes: Uint8Array<ArrayBuffer>, name: string, type: string): void {
-  const url = URL.createObjectURL(new Blob([bytes], { type }));
+  saveBlob(new Blob([bytes], { type }), name);
+}
+
+/** The same for bytes that need not be in memory. */
+export function saveBlob(blob: Blob, name: string): void {
+  const url = URL.createObjectURL(blob);
   const link = document.createElement('a');
   link.href = url;
   link.download = name;

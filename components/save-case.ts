@@ -1,6 +1,7 @@
 import { notSaved } from '#src/store/case-problems.ts';
+import { Cancelled } from '#src/store/engine-client.ts';
 import type { Store } from '#src/store/store.ts';
-import { fileNameOf, saveBytes } from './save-bytes.ts';
+import { fileNameOf, saveBlob } from './save-bytes.ts';
 
 /** Ending by which people know a case file; the page knows it by content. */
 const ending = 'ellipsite.json';
@@ -11,11 +12,12 @@ export async function saveCase(store: Store): Promise<void> {
   if (!decisions) return;
   const what = `save ${decisions.title}`;
   try {
-    const text = await store.caseText();
+    const blob = await store.caseBlob();
     const title = decisions.title.replace(/\.ellipsite\.json$/i, '');
-    saveBytes(new TextEncoder().encode(text), fileNameOf(title, ending), 'application/json');
+    saveBlob(blob, fileNameOf(title, ending));
     if (store.state.refused?.what === what) store.dismissRefusal();
   } catch (error) {
+    if (error instanceof Cancelled) return;
     store.refuse(what, [], [notSaved(error)]);
   }
 }

@@ -27,6 +27,8 @@ export interface FigurePreview {
   readonly pixels: Uint8ClampedArray<ArrayBuffer>;
   readonly widthPt: number;
   readonly heightPt: number;
+  /** Below this height what stands beside the crystal is cut off. */
+  readonly leastHeightPt: number;
   readonly labelsLeftOut: number;
 }
 

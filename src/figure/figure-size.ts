@@ -68,6 +68,15 @@ export function pixelSize(
   return { widthPx: rounded(sheet.widthPt), heightPx: rounded(sheet.heightPt) };
 }
 
+/** The least height in points where what stands beside the crystal would be cut off at the height asked for; else null. */
+export function missingHeight(
+  sheet: { readonly heightPt: number; readonly leastHeightPt: number },
+  pxPerPt: number,
+): number | null {
+  // half a pixel is lost in rounding
+  return sheet.leastHeightPt <= sheet.heightPt + 0.5 / pxPerPt ? null : sheet.leastHeightPt;
+}
+
 /** Why a picture of this size is not drawn, in a sentence with the limits; null where it is. */
 export function sizeFault(widthPx: number, heightPx: number): string | null {
   const { smallestPx, largestPx, mostPixels } = sizeLimits;

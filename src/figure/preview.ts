@@ -10,6 +10,6 @@ export function previewOf(drawing: FigureDrawing, rasterizer: Rasterizer): Figur
   const { widthPx, heightPx } = pixelSize(sheet, pxPerPt);
   const pixels = new Uint8ClampedArray(4 * widthPx * heightPx);
   for (const band of drawFigure(drawing, rasterizer)) pixels.set(band.pixels, 4 * widthPx * band.firstRow);
-  const { widthPt, heightPt, labelsLeftOut } = sheet;
-  return { widthPx, heightPx, pixels, widthPt, heightPt, labelsLeftOut };
+  const { widthPt, heightPt, leastHeightPt, labelsLeftOut } = sheet;
+  return { widthPx, heightPx, pixels, widthPt, heightPt, leastHeightPt, labelsLeftOut };
 }

@@ -39,6 +39,25 @@ async function textOf({ name, blob }: SourceFile): Promise<string> {
   return source.text;
 }
 
+/** What a case file says, as plain data that crosses worker borders: its texts as files. */
+export interface KeptCase {
+  /** null where the file can't be read; the problems say why. */
+  readonly said:
+    (Pick<CaseDocument, 'title' | 'decisions' | 'views'> & { readonly files: FileInput[] }) | null;
+  readonly problems: readonly Problem[];
+}
+
+/** Reads a case file. */
+export async function keptCase({ name, blob }: FileInput): Promise<KeptCase> {
+  const { source, problems: unreadable } = await decodeBytes(name, new Uint8Array(await blob.arrayBuffer()));
+  if (!source) return { said: null, problems: unreadable };
+  const { case: document, problems } = await parseCase(source.text, { name });
+  if (!document) return { said: null, problems };
+  const { title, decisions, views, sources } = document;
+  const files = sources.map((one) => ({ name: one.name, blob: new Blob([one.text]) }));
+  return { said: { title, decisions, views, files }, problems };
+}
+
 /** What a case file says, ready to be decided: its files get the ids that are handed in. */
 export interface OpenedCase {
   readonly decisions: (identify: (files: readonly FileInput[]) => readonly SourceFile[]) => Decisions;
@@ -46,22 +65,21 @@ export interface OpenedCase {
 }
 
 /** Reads a case file. `opened` is null where it can't be; the problems say why. */
-export async function readCaseFile({
-  name,
-  blob,
-}: FileInput): Promise<{ readonly opened: OpenedCase | null; readonly problems: readonly Problem[] }> {
-  const { source, problems: unreadable } = await decodeBytes(name, new Uint8Array(await blob.arrayBuffer()));
-  if (!source) return { opened: null, problems: unreadable };
-  const { case: document, problems } = await parseCase(source.text, { name });
-  return { opened: document && openedCase(document, problems), problems };
+export async function readCaseFile(
+  file: FileInput,
+): Promise<{ readonly opened: OpenedCase | null; readonly problems: readonly Problem[] }> {
+  const kept = await keptCase(file);
+  return { opened: openedCase(kept), problems: kept.problems };
 }
 
-function openedCase(document: CaseDocument, problems: readonly Problem[]): OpenedCase {
-  const { title, decisions, views, sources } = document;
+/** Null where nothing could be read. */
+export function openedCase({ said, problems }: KeptCase): OpenedCase | null {
+  if (!said) return null;
+  const { title, decisions, views } = said;
   const { picture, camera, look, saved, measurements, table } = views;
   return {
     decisions: (identify) => {
-      const files = identify(sources.map(({ name, text }) => ({ name, blob: new Blob([text]) })));
+      const files = identify(said.files);
       const { structure, settings, accepted } = decisions;
       return {
         title,

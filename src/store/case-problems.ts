@@ -23,6 +23,15 @@ export function workLeftAside(): Problem {
   );
 }
 
+/** Said where a case file could not be read from the disk, or took more memory than there is. */
+export function caseUnreadable(name: string, error: unknown): Problem {
+  const got = error instanceof Error ? error.message : String(error);
+  return problem('error', 'file-unreadable', `${name} could not be read.`, {
+    got,
+    hint: 'It may have been moved or changed since, or be too large for this machine. Choose it again.',
+  });
+}
+
 /** Said where the case could not be written into a file. */
 export function notSaved(error: unknown): Problem {
   const message = error instanceof Error ? error.message : String(error);

@@ -7,6 +7,7 @@ import type { Quantity } from '#src/tensor/tensor-set.ts';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
 import type { TableSettings } from '#src/table/table-settings.ts';
+import { CaseClient } from './case-client.ts';
 import type { OpenedCase } from './case-exchange.ts';
 import { Cancelled } from './engine-client.ts';
 import type { EngineClient } from './engine-client.ts';
@@ -36,6 +37,7 @@ export class Store {
   readonly #holder: StateHolder;
   readonly #timeline: Timeline;
   readonly #sites: SiteCache;
+  readonly #cases = new CaseClient();
   #nextSource = 1;
 
   constructor(engine: EngineClient, initial: Partial<WorkbenchState>) {
@@ -147,16 +149,42 @@ export class Store {
     return this.#timeline.go(moment, `bring back ${moment.decisions?.title ?? 'the empty page'}`);
   }
 
-  /** The case on screen as the text of a case file. Rejects with a sentence where there is none, or a file is gone. */
-  async caseText(): Promise<string> {
+  /** The case on screen as a case file. Rejects with a sentence where there is none, or a file is gone. */
+  async caseBlob(): Promise<Blob> {
     const { decisions } = this.state;
     if (!decisions) throw new Error('There is nothing on screen to save.');
-    const { caseTextOf } = await import('./case-exchange.ts');
-    return caseTextOf(decisions, viewsOf(this.state));
+    const written = this.#cases.write(decisions, viewsOf(this.state));
+    return this.#shown(`save ${decisions.title}`, 'writing the case', written);
+  }
+
+  /** The same as text. */
+  async caseText(): Promise<string> {
+    return (await this.caseBlob()).text();
+  }
+
+  /** Reads a case file, to be opened then; `opened` is null where it can't be, and the problems say why. */
+  async readCase(
+    file: FileInput,
+  ): Promise<{ readonly opened: OpenedCase | null; readonly problems: readonly Problem[] }> {
+    const { openedCase } = await import('./case-exchange.ts');
+    const kept = await this.#shown(`open ${file.name}`, 'reading the case', this.#cases.read(file));
+    return { opened: openedCase(kept), problems: kept.problems };
+  }
+
+  /** Says what is waited for, unless the engine has something to say. */
+  async #shown<Result>(what: string, stage: string, work: Promise<Result>): Promise<Result> {
+    const progress = { what, share: 0, stage };
+    if (!this.state.progress) this.#holder.change({ progress }, `${what} began`);
+    try {
+      return await work;
+    } finally {
+      if (this.state.progress === progress) this.#holder.change({ progress: null }, `${stage} ended`);
+    }
   }
 
   /** Gives up what the engine is doing; the screen stays as it is. */
   cancel(): void {
+    this.#cases.cancel();
     this.#timeline.cancel();
   }
 

@@ -1,6 +1,7 @@
 import { beforeEach, describe, expect, it } from 'vitest';
 import { newCase } from '#src/case/new-case.ts';
 import { serialiseCase } from '#src/case/serialise-case.ts';
+import { viewsOf } from '#src/store/moment.ts';
 import { addFiles, openFiles } from '#components/open-files.ts';
 import { everyDecision } from '#tests/support/every-decision.ts';
 import type { Mounted } from './mount.ts';
@@ -56,9 +57,9 @@ describe('undo and redo', () => {
   });
 });
 
-describe('case files', () => {
-  const blobOf = (text: string) => new Blob([text]);
+const blobOf = (text: string): Blob => new Blob([text]);
 
+describe('case files', () => {
   it('are opened by content, whatever their name, with every decision', async () => {
     const text = serialiseCase(await newCase(everyDecision));
     expect(await openFiles(page.store, [{ name: 'x.cif', blob: blobOf(text) }])).toBe(true);
@@ -157,5 +158,48 @@ describe('the page when cleared', () => {
     const kept = header().querySelector('.kept');
     expect(textOf(kept)).toBe('not saved in this browser');
     expect(kept?.getAttribute('title')).toBe('The storage is full.');
+  });
+});
+
+describe('a large case', () => {
+  const line = 'H 0 0 0\n';
+  const count = 200_000;
+  const big = { name: 'big.xyz', blob: new Blob([`${count}\n\n${line.repeat(count)}`]) };
+
+  it('is written and read in a Worker, says so, and is the same', async () => {
+    const started: string[] = [];
+    const Original = globalThis.Worker;
+    globalThis.Worker = class extends Original {
+      constructor(url: string | URL, options?: WorkerOptions) {
+        super(url, options);
+        started.push(options?.name ?? '');
+      }
+    };
+    try {
+      await page.store.open([big]);
+      const { decisions } = page.store.state;
+      const said: (string | undefined)[] = [];
+      const leave = page.store.subscribe(({ progress }) => said.push(progress?.stage));
+      const text = await page.store.caseText();
+      const { caseTextOf } = await import('#src/store/case-exchange.ts');
+      expect(text === (await caseTextOf(decisions!, viewsOf(page.store.state)))).toBe(true);
+      expect(await openFiles(page.store, [{ name: 'big.json', blob: blobOf(text) }])).toBe(true);
+      leave();
+      expect(page.store.state.decisions?.sources[0]?.blob.size).toBe(big.blob.size);
+      expect(started).toEqual(['ellipsite case', 'ellipsite case']);
+      expect(said).toContain('writing the case');
+      expect(said).toContain('reading the case');
+      expect(page.store.state.progress).toBeNull();
+    } finally {
+      globalThis.Worker = Original;
+    }
+  });
+
+  it('can be given up while it is written', async () => {
+    await page.store.open([big]);
+    const writing = page.store.caseBlob();
+    page.store.cancel();
+    await expect(writing).rejects.toThrow('cancelled');
+    expect(page.store.state.progress).toBeNull();
   });
 });

@@ -4,6 +4,7 @@ import { layoutFigure } from '#src/figure/layout.ts';
 import { createRasterizer } from '#src/raster/rasterizer.ts';
 import { bestKernel } from '#src/raster/wasm-kernel.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
+import { firstCamera, lookAlong } from '#src/scene/framing.ts';
 import { defaultLook } from '#src/scene/look.ts';
 import {
   figureRequest,
@@ -156,6 +157,27 @@ describe('the picture dialog', () => {
     choose(root, '#dpi', '300');
     await eventually(() => textOf(root.querySelector('[role=alert]')) === '');
     expect(buttonOf(root, 'Save PNG').disabled).toBe(false);
+  });
+
+  it('refuses a height that would cut the legend off, with the least one, as the command does', async () => {
+    const { root } = await opened();
+    choose(root, '#height', '20');
+    const alert = await eventually(() =>
+      /least height is (\d+) mm/.exec(textOf(root.querySelector('.fault'))),
+    );
+    expect(buttonOf(root, 'Save PNG').disabled).toBe(true);
+    choose(root, '#height', alert[1]!);
+    await eventually(() => textOf(root.querySelector('.fault')) === '');
+    expect(buttonOf(root, 'Save PNG').disabled).toBe(false);
+  });
+
+  it('says along what it is seen, where the view has a name', async () => {
+    const first = firstCamera(scene, { widthPx: 300, heightPx: 200 });
+    const { root } = await opened({ camera: first });
+    const words = (): string => textOf(root.querySelector('.checks'));
+    expect(words()).not.toContain('direction of view');
+    const along = await opened({ camera: lookAlong(first, scene, 'c') });
+    expect(textOf(along.root.querySelector('.checks'))).toContain('direction of view');
   });
 
   it('says so where there is nothing to draw', async () => {

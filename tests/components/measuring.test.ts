@@ -42,6 +42,41 @@ describe('measuring in the picture', () => {
     expect(store.state.measurements).toEqual([]);
   });
 
+  it('puts values where they cover neither each other nor a label', async () => {
+    const page = await drawnPage();
+    const { root, store } = page;
+    const [one, other] = await atomPoints(page);
+    const atoms = [one!, other!].map(({ atomId }) => ({ atomId, cellShift: [0, 0, 0] as const }));
+    store.setPicture({ labels: true }, 'labels');
+    for (const id of ['m1', 'm2', 'm3']) store.addMeasurement({ id, kind: 'distance', atoms });
+    await eventually(() => root.querySelectorAll('.value').length === 3 && root.querySelector('.label'));
+    await settle();
+    const boxes = [...root.querySelectorAll('.value, .label')].map((text) => text.getBoundingClientRect());
+    boxes.forEach((box, i) =>
+      boxes.slice(0, i).forEach((before) => {
+        const across = Math.min(box.right, before.right) - Math.max(box.left, before.left);
+        const down = Math.min(box.bottom, before.bottom) - Math.max(box.top, before.top);
+        expect(Math.min(across, down)).toBeLessThanOrEqual(1);
+      }),
+    );
+  });
+
+  it('gives the atoms back that were picked, by undo', async () => {
+    const page = await drawnPage();
+    const { root, stage, store } = page;
+    const points = await atomPoints(page);
+    click(stage, points[0]!.x, points[0]!.y);
+    click(stage, points[1]!.x, points[1]!.y, { shiftKey: true });
+    store.setLook({ outlines: true }, 'show outlines');
+    click(stage, points[2]!.x, points[2]!.y);
+    await settle();
+    expect(root.querySelectorAll('.mark')).toHaveLength(0);
+    await store.undo();
+    await settle();
+    expect([...root.querySelectorAll('.mark')].map(textOf)).toEqual(['1', '2']);
+    expect(store.state.selection?.atomId).toBe(points[1]!.atomId);
+  });
+
   it('takes atoms that were selected one after another', async () => {
     const page = await drawnPage();
     const { root, stage, store } = page;
