@@ -5,7 +5,8 @@ import { serialiseCase } from '#src/case/serialise-case.ts';
 import { figurePng } from '#src/figure/figure-png.ts';
 import type { FigureRequest, FigureView } from '#src/figure/figure-request.ts';
 import type { FigureSize } from '#src/figure/figure-size.ts';
-import { pixelSize, pointsPerMm, settleSize, sizeFault } from '#src/figure/figure-size.ts';
+import { missingHeight, pixelSize, pointsPerMm, settleSize, sizeFault } from '#src/figure/figure-size.ts';
+import { keptView } from '#src/figure/figure-view.ts';
 import { layoutFigure } from '#src/figure/layout.ts';
 import type { Sheet } from '#src/figure/sheet.ts';
 import { createRasterizer } from '#src/raster/rasterizer.ts';
@@ -109,12 +110,12 @@ function sizeWithin(sheet: Sheet, { pxPerPt }: FigureSize): { widthPx: number; h
 }
 
 /** A picture that would cut its legend off is not written. */
-function demandHeight({ heightPt, leastHeightPt }: Sheet, { pxPerPt }: FigureSize, isMm: boolean): void {
-  // half a pixel is lost in rounding
-  if (leastHeightPt <= heightPt + 0.5 / pxPerPt) return;
+function demandHeight(sheet: Sheet, { pxPerPt }: FigureSize, isMm: boolean): void {
+  const leastPt = missingHeight(sheet, pxPerPt);
+  if (leastPt === null) return;
   const least = isMm
-    ? `--height-mm ${Math.ceil(leastHeightPt / pointsPerMm)}`
-    : `--height-px ${Math.ceil(leastHeightPt * pxPerPt)}`;
+    ? `--height-mm ${Math.ceil(leastPt / pointsPerMm)}`
+    : `--height-px ${Math.ceil(leastPt * pxPerPt)}`;
   throw new UsageError(
     `The picture is too low for what stands beside the crystal; the least is ${least}, less with a smaller --text-pt or without parts (--no-legend, --no-scale, --no-key, --no-axes).`,
   );
@@ -125,9 +126,8 @@ function viewOf(own: OwnValues, scene: Scene, { views }: LoadedCase): FigureView
   const asked = textOf(own, 'view');
   const isUpright = own['upright'] === true;
   if (asked === undefined) {
-    const camera = views?.camera;
-    if (!camera) return { kind: 'direction', towards: null, words: null, isUpright };
-    return { kind: 'camera', camera, viewport: { widthPx: 1, heightPx: 1 }, wholeCrystal: true, words: null };
+    const kept = keptView(views?.camera ?? null, scene);
+    return kept.kind === 'direction' ? { ...kept, isUpright } : kept;
   }
   const found = parseLookAlong(directionWords(asked), scene.axes);
   if ('fault' in found) throw new UsageError(`--view ${asked}: ${found.fault} Also uvw:1,1,0 and hkl:1,0,0.`);
