@@ -163,7 +163,7 @@ async function glyphTimes(count: number, labelCount: number, rounds: number): Pr
   const best = { ellipsoids: Infinity, polars: Infinity, labels: Infinity };
   const keep = (way: keyof GlyphTimes, ms: number): void => void (best[way] = Math.min(best[way], ms));
   for (let step = 0; step <= rounds; step++) {
-    const camera = turn(close, 10 * step, 5, viewport);
+    const camera = turn(askew, 10 * step, 5, viewport);
     const ellipsoids = await timed(async () => void (await solidClient.draw({ ...view, camera })));
     const polars = await timed(async () => void (await polarClient.draw({ ...view, camera })));
     const labels = await timed(() => void placeLabels(labelled, camera, viewport, measure));
