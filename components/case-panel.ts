@@ -1,7 +1,9 @@
 import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import type { DerivedCase, ProposalSummary, SourceSummary } from '#src/store/engine-protocol.ts';
+import type { Keeper } from '#src/store/keeper.ts';
 import { drawerStyles } from './drawer-styles.ts';
+import './earlier-work.ts';
 import { counted, formatCount } from '#src/table/number-format.ts';
 import { addFiles, openFiles } from './open-files.ts';
 import { askForPanel } from './panel.ts';
@@ -16,6 +18,8 @@ const kinds = { cif: 'CIF', xyz: 'XYZ', unknown: 'not recognised' } as const;
 
 /** The files of the case, how to open others, and the sample cases. */
 export class CasePanel extends StoreElement {
+  static override properties = { keeper: { attribute: false } };
+
   static override styles = [
     shared,
     drawerStyles,
@@ -58,7 +62,15 @@ export class CasePanel extends StoreElement {
     `,
   ];
 
+  /** What keeps the work in this browser; null where nothing does. */
+  declare keeper: Keeper | null;
+
   protected override readonly watches = ['derived', 'decisions'] as const;
+
+  constructor() {
+    super();
+    this.keeper = null;
+  }
 
   override render(): TemplateResult {
     const { store } = this;
@@ -79,6 +91,11 @@ export class CasePanel extends StoreElement {
       <p class="soft">
         Or drop files anywhere on the page. Read are ${acceptedWords}. Nothing leaves this machine.
       </p>
+      ${
+        this.keeper
+          ? html`<ellipsite-earlier-work .store=${store} .keeper=${this.keeper}></ellipsite-earlier-work>`
+          : nothing
+      }
       <h3>Sample cases</h3>
       ${sampleCases().map((sample) => this.#sample(sample))}
     `;

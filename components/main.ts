@@ -17,6 +17,7 @@ void begin();
 /** Brings back the work of this tab, or shows a sample, unless the user was quicker; from then on work is kept. */
 async function begin(): Promise<void> {
   const keeper = await findWork(store);
+  workbench.keeper = keeper;
   const isFree = (): boolean => store.state.decisions === null && store.state.progress === null;
   const isBack = keeper?.found && isFree() ? await store.restore(keeper.found) : false;
   const [first] = sampleCases();

@@ -1,6 +1,7 @@
 import { html, nothing } from 'lit';
 import type { PropertyValues, TemplateResult } from 'lit';
 import type { WebGLProbe } from '#src/render/probe-webgl.ts';
+import type { Keeper } from '#src/store/keeper.ts';
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { announcement, selectionSentence } from './announcement.ts';
 import { caseKey } from './case-keys.ts';
@@ -18,13 +19,19 @@ import { workbenchStyles } from './workbench-styles.ts';
 
 /** The whole page: header, crystal, sites, site card, drawers; owns the theme, the shortcuts and the live region. */
 export class Workbench extends StoreElement {
-  static override properties = { panel: { state: true }, probe: { attribute: false } };
+  static override properties = {
+    panel: { state: true },
+    probe: { attribute: false },
+    keeper: { attribute: false },
+  };
 
   static override styles = [themes, shared, workbenchStyles];
 
   declare panel: Panel;
   /** How the browser can draw; null lets the crystal view find out. */
   declare probe: WebGLProbe | null;
+  /** What keeps the work in this browser; null where nothing does. */
+  declare keeper: Keeper | null;
 
   protected override readonly watches = [
     'theme',
@@ -48,6 +55,7 @@ export class Workbench extends StoreElement {
     super();
     this.panel = null;
     this.probe = null;
+    this.keeper = null;
   }
 
   override connectedCallback(): void {
@@ -134,7 +142,7 @@ export class Workbench extends StoreElement {
     return html`<aside class="drawer" tabindex="-1" role="dialog" aria-label=${names[panel]}>
       ${panel === 'problems' ? html`<ellipsite-problems-drawer .store=${store}></ellipsite-problems-drawer>` : nothing}
       ${panel === 'settings' ? html`<ellipsite-settings-panel .store=${store}></ellipsite-settings-panel>` : nothing}
-      ${panel === 'case' ? html`<ellipsite-case-panel .store=${store}></ellipsite-case-panel>` : nothing}
+      ${panel === 'case' ? html`<ellipsite-case-panel .store=${store} .keeper=${this.keeper}></ellipsite-case-panel>` : nothing}
     </aside>`;
   }
 

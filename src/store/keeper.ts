@@ -1,11 +1,12 @@
+import type { OpenedCase } from './case-exchange.ts';
 import type { SourceFile } from './engine-protocol.ts';
 import type { StoredWork, Work } from './kept-work.ts';
-import { filesOf, restoredWork, storedWork } from './kept-work.ts';
+import { filesOf, openedWork, restoredWork, storedWork } from './kept-work.ts';
 import { momentOf } from './moment.ts';
 import type { WorkbenchState } from './state.ts';
 import type { Store } from './store.ts';
 import type { Claim } from './tab-claim.ts';
-import { claimWork, fresh } from './tab-claim.ts';
+import { claimWork, fresh, idleOf } from './tab-claim.ts';
 import { keptWorks, WorkDatabase } from './work-database.ts';
 
 /** Least time between two writes, milliseconds; the first change is written at once. */
@@ -24,6 +25,21 @@ export interface Keeper {
   watch(store: Store, isBack: boolean): Promise<void>;
   /** Writes now what isn't written yet: the page may be about to go. */
   flush(): void;
+  /** Works of closed tabs, the newest first. */
+  earlier(): Promise<readonly EarlierWork[]>;
+  /** One of them, to be opened in this tab; null where it or a file of it is gone. */
+  load(id: string): Promise<OpenedCase | null>;
+  forget(id: string): Promise<void>;
+}
+
+/** A line in the list of earlier work. */
+export interface EarlierWork {
+  readonly id: string;
+  readonly title: string;
+  /** Milliseconds since 1970. */
+  readonly savedAt: number;
+  /** In the cell; null where that was not written. */
+  readonly atomCount: number | null;
 }
 
 /** Opens the database and claims this tab's work. Rejects with the browser's reason where storage is blocked. */
@@ -85,6 +101,25 @@ class TabKeeper implements Keeper {
     if (this.#isStale()) void this.#write();
   }
 
+  async earlier(): Promise<readonly EarlierWork[]> {
+    const works = await this.#database.works();
+    const ids = works.map(({ id }) => id);
+    const idle = new Set(await idleOf(ids, this.#claim.id));
+    return works.flatMap(({ id, work: { moment, savedAt, atomCount = null } }) =>
+      idle.has(id) && moment.decisions ? [{ id, title: moment.decisions.title, savedAt, atomCount }] : [],
+    );
+  }
+
+  async load(id: string): Promise<OpenedCase | null> {
+    const held = await this.#database.load(id);
+    const work = held && restoredWork(held.work, (key) => held.files.get(key));
+    return work && openedWork(work);
+  }
+
+  forget(id: string): Promise<void> {
+    return this.#database.tidy([id]);
+  }
+
   #isStale(): boolean {
     const { state } = this.#store ?? {};
     if (!state) return false;
@@ -135,8 +170,9 @@ class TabKeeper implements Keeper {
         this.#keys.set(blob, key);
         blobs.set(key, blob);
       }
+      const atomCount = state.derived?.crystal?.atomsInCell ?? null;
       const keyOf = ({ blob }: SourceFile): string => this.#keys.get(blob) ?? '';
-      const work = storedWork({ moment }, keyOf, Date.now());
+      const work = storedWork({ moment }, keyOf, Date.now(), atomCount);
       await this.#database.save(this.#claim.id, work, (key) => blobs.get(key));
       store.setKeeping({ status: 'kept', reason: null });
     } catch (error) {

@@ -1,3 +1,4 @@
+import type { OpenedCase } from './case-exchange.ts';
 import type { Moment } from './moment.ts';
 import type { SourceFile } from './engine-protocol.ts';
 import type { Decisions, Selection, Step, Views } from './state.ts';
@@ -32,6 +33,8 @@ export interface StoredWork {
   /** Times it was begun to bring back without success: work that ends the tab must not do so for ever. */
   readonly attempts: number;
   readonly moment: StoredMoment;
+  /** Atoms in the cell, for the list of earlier work; absent from works of older pages. */
+  readonly atomCount?: number | null;
   /** Written by older pages, whose moments held no selection. */
   readonly selection?: Selection | null;
 }
@@ -43,7 +46,12 @@ export function filesOf({ decisions, past, future }: Moment): SourceFile[] {
 }
 
 /** Work with keys instead of bytes. Parts that were shared stay shared, so the history costs what changed in it. */
-export function storedWork(work: Work, keyOf: (file: SourceFile) => string, savedAt: number): StoredWork {
+export function storedWork(
+  work: Work,
+  keyOf: (file: SourceFile) => string,
+  savedAt: number,
+  atomCount: number | null = null,
+): StoredWork {
   const { decisions, past, future } = work.moment;
   const files = new Map<SourceFile, StoredSource>();
   const known = new Map<Decisions, StoredDecisions>();
@@ -56,6 +64,7 @@ export function storedWork(work: Work, keyOf: (file: SourceFile) => string, save
     format: 1,
     savedAt,
     attempts: 0,
+    atomCount,
     moment: {
       ...work.moment,
       decisions: decided(decisions),
@@ -93,6 +102,26 @@ export function restoredWork(
   const future = moment.future.flatMap(step);
   const { selection = older ?? null, picked = [] } = moment as Partial<StoredMoment>;
   return { moment: { decisions, views: whole(moment.views), selection, picked, past, future } };
+}
+
+/** What a work holds now, without its history, ready to be opened as a case. */
+export function openedWork({ moment: { decisions, views } }: Work): OpenedCase | null {
+  if (!decisions) return null;
+  return {
+    decisions: (identify) => {
+      const sources = identify(decisions.sources);
+      const idOf = (id: string): string =>
+        sources[decisions.sources.findIndex((source) => source.id === id)]?.id ?? id;
+      const { structure, accepted } = decisions;
+      return {
+        ...decisions,
+        sources,
+        structure: structure && { ...structure, sourceId: idOf(structure.sourceId) },
+        accepted: Object.fromEntries(Object.entries(accepted).map(([id, columns]) => [idOf(id), columns])),
+      };
+    },
+    views,
+  };
 }
 
 /** Views kept by an older page may lack what came later. */

@@ -81,7 +81,7 @@ function hold(id: string, waitMs: number): Promise<boolean> {
 }
 
 /** Works without a lock on them. */
-async function idleOf(ids: readonly string[], own: string | null): Promise<string[]> {
+export async function idleOf(ids: readonly string[], own: string | null): Promise<string[]> {
   const locks = (navigator as Partial<Navigator>).locks;
   const held = new Set((await locks?.query())?.held?.map(({ name }) => name) ?? []);
   return ids.filter((id) => id !== own && !held.has(lockName(id)));

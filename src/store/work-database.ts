@@ -33,14 +33,19 @@ export class WorkDatabase {
     });
   }
 
-  /** Ids of all works, the newest first. */
-  async ids(): Promise<string[]> {
+  /** All works without the bytes of their files, the newest first. */
+  async works(): Promise<{ readonly id: string; readonly work: StoredWork }[]> {
     const [keys, works] = await this.#read(
       workStore,
-      (store) => [store.getAllKeys(), store.getAll()] as const,
+      (store) => [store.getAllKeys(), store.getAll() as IDBRequest<StoredWork[]>] as const,
     );
-    const dated = keys.map((key, i) => ({ id: String(key), savedAt: (works[i] as StoredWork).savedAt }));
-    return dated.sort((a, b) => b.savedAt - a.savedAt).map(({ id }) => id);
+    const all = keys.map((key, i) => ({ id: String(key), work: works[i]! }));
+    return all.sort((a, b) => b.work.savedAt - a.work.savedAt);
+  }
+
+  /** Ids of all works, the newest first. */
+  async ids(): Promise<string[]> {
+    return (await this.works()).map(({ id }) => id);
   }
 
   /** One tab's work with the bytes it names; null where there is none of a form that is known. */
