@@ -58,7 +58,7 @@ function compositionOf({ composition, lattice }: CrystalSummary): TemplateResult
 function tensorsOf({ quantities, tensorCounts, siteCount }: CrystalSummary): string {
   const words = { shielding: 'shielding', shift: 'shift', efg: 'field gradient' } as const;
   const parts = quantities.map(
-    (part) => `${words[part]} on ${formatCount(tensorCounts[part])} of ${formatCount(siteCount)} sites`,
+    (part) => `${words[part]} on ${formatCount(tensorCounts[part])} of ${counted(siteCount, 'site')}`,
   );
   return parts.join(', ') || 'none in these files';
 }

@@ -4,7 +4,7 @@ import { conventionCatalogue, entryValue } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import type { EfgDossier, EquivalentAtom, Lattice, SiteDossier } from '#src/store/dossier-types.ts';
 import { atomTensor } from '#src/store/axes.ts';
-import { efgFromAtomicUnits } from '#src/store/efg-units.ts';
+import { efgFromAtomicUnits, efgUnitLabel, efgUnitOf } from '#src/store/efg-units.ts';
 import { formatNumber, isotopeSymbol } from '#src/table/number-format.ts';
 import { foreignIsotope, isDiagnostic, printedValue } from '#src/table/printed-value.ts';
 import { axesTable } from './card-axes.ts';
@@ -46,12 +46,18 @@ export function efgSection(
     }
     ${axesTable(site, atom, 'efg', lattice)} ${turnedSentence(atom)}
     <div class="matrices">
-      ${matrixTable('V/a.u. as given', atomTensor(efg.tensor, atom), 4)}
+      ${matrixTable(`V/a.u. ${origin(efg)}`, atomTensor(efg.tensor, atom), 4)}
       ${matrixTable('symmetric, traceless', atomTensor(efg.symmetric, atom), 4)}
       ${matrixTable('symmetrised by the site', atomTensor(efg.projected, atom), 4)}
     </div>
     ${noiseList('efg', efg, site)}
   </section>`;
+}
+
+/** What the numbers of the matrix are: the file's, or made from those in another unit. */
+function origin({ unitGiven = 'a.u.' }: EfgDossier): string {
+  const unit = efgUnitOf(unitGiven);
+  return unit === null || unit === 'au' ? 'as given' : `converted from ${efgUnitLabel[unit]}`;
 }
 
 function ownColumn(site: SiteDossier, efg: EfgDossier): ValueColumn {

@@ -33,3 +33,14 @@ export function normalize(v: Vec3): Vec3 {
 export function distance(a: Vec3, b: Vec3): number {
   return length(subtract(a, b));
 }
+
+/**
+ * An axis with the sign that reads best: its largest component is positive. The sign of a principal axis means
+ * nothing, a fixed choice keeps equal axes looking equal.
+ */
+export function withReadableSign(axis: Vec3): Vec3 {
+  const largest = [0, 1, 2].reduce((best, i) =>
+    Math.abs(axis[i]!) > Math.abs(axis[best]!) + 1e-9 ? i : best,
+  );
+  return axis[largest]! < 0 ? [-axis[0], -axis[1], -axis[2]] : axis;
+}

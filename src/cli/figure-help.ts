@@ -15,7 +15,9 @@ Size
   --text-pt                  letters at final size (default 7 on paper, 18 on a slide)
 View
   --view DIRECTION           towards the viewer: a, b, c, a*, b*, c*, x, y, z, uvw:1,1,0, hkl:1,0,0,
-                             each with a minus to turn it round
+                             each with a minus to turn it round; or a principal axis of a
+                             site: "Al1 Vzz", "σ33 of Si1", "p33(Si1)", "s11 of Si1", "Si1 33"
+                             (33 is of the quantity that is drawn)
   --upright                  c stays up (b along c), also where the crystal would fill the sheet better on its side
   --perspective DEGREES      0 (default) to 90
   --extent cell|molecules|asymmetric; --range 0:2,0:1,0:1; --shell SITE --radius Å

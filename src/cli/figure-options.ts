@@ -3,7 +3,12 @@ import { defaultContents } from '#src/figure/figure-request.ts';
 import type { AskedSize } from '#src/figure/figure-size.ts';
 import { sizeLimits } from '#src/figure/figure-size.ts';
 import { perspectiveLimits } from '#src/scene/camera.ts';
+import type { SiteDossier } from '#src/dossier/dossier.ts';
+import type { LookAlong } from '#src/scene/look-along.ts';
+import { parseLookAlong } from '#src/scene/look-along.ts';
 import type { Look } from '#src/scene/look.ts';
+import { axesNamedIn } from '#src/scene/named-axes.ts';
+import type { Scene } from '#src/scene/scene.ts';
 import type { OwnOptions, OwnValues } from './arguments.ts';
 import { UsageError } from './io.ts';
 
@@ -142,6 +147,18 @@ export function directionWords(text: string): string {
   const match = /^([-−]?)(uvw|hkl):(.*)$/.exec(text.trim());
   if (!match) return text;
   return match[2] === 'uvw' ? `${match[1]}[${match[3]}]` : `${match[1]}(${match[3]})`;
+}
+
+/** The direction that `--view` names: of the cell, Cartesian, or the principal axis of a site. Raises `UsageError`. */
+export function directionAsked(
+  asked: string,
+  { axes, scale }: Scene,
+  sites: readonly SiteDossier[],
+): LookAlong {
+  const text = directionWords(asked);
+  const found = parseLookAlong(text, axes, axesNamedIn(text, sites, scale?.quantity ?? null));
+  if ('fault' in found) throw new UsageError(`--view ${asked}: ${found.fault} Also uvw:1,1,0 and hkl:1,0,0.`);
+  return found;
 }
 
 /** `--view -a`: a value that starts with a minus is a value, not an option. */

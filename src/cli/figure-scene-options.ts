@@ -96,6 +96,10 @@ function extentOf(values: OwnValues): SceneOptions['extent'] | undefined {
       : textOf(values, 'shell') !== undefined
         ? 'shell'
         : undefined;
+  if (textOf(values, 'range') !== undefined && textOf(values, 'shell') !== undefined)
+    throw new UsageError('--range and --shell exclude each other: give one of them.');
+  if (extent !== undefined && implied !== undefined && extent !== implied)
+    throw new UsageError(`--extent ${extent} leaves no room for --${implied}: give one of them.`);
   if (extent === 'range' && implied !== 'range')
     throw new UsageError('--extent range needs --range, such as --range 0:2,0:1,0:1.5.');
   if (extent === 'shell' && implied !== 'shell')
@@ -162,7 +166,7 @@ function sitesOf(
       .map(({ label }) => label)
       .join(', ');
     throw new UsageError(
-      `--${option} ${word}: no such site; there are ${some}${sites.length > 20 ? ' …' : ''}.`,
+      `--${option} ${word}: no such site; there are ${some}${sites.length > 20 ? ' …' : ''}.${option === 'shell' ? ' The distance is an option of its own: --shell SITE --radius 3.' : ''}`,
     );
   });
 }

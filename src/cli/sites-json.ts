@@ -47,6 +47,7 @@ function efgJson(efg: EfgDossier | null) {
   if (!efg) return null;
   return {
     tensor: nested(efg.tensor),
+    unitGiven: efg.unitGiven ?? null,
     components: list(efg.components),
     axes: efg.axes.map(list),
     asymmetry: efg.asymmetry,

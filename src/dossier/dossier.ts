@@ -65,7 +65,10 @@ export interface ShieldingDossier extends ShieldingDescription, OnSite {}
 export type ShiftDossier = ShiftDescription;
 
 /** EFG of one site, atomic units; |Vzz| ≥ |Vyy| ≥ |Vxx| listed as [Vxx, Vyy, Vzz]. */
-export interface EfgDossier extends EfgDescription, OnSite {}
+export interface EfgDossier extends EfgDescription, OnSite {
+  /** Unit of the file, such as `V/A2`; `tensor` was converted from it to atomic units. */
+  readonly unitGiven?: string;
+}
 
 /** One atom of the cell: an image of a site under an operation, with the tensors turned along (R T Rᵀ). */
 export interface EquivalentAtom {

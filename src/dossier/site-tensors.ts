@@ -4,6 +4,7 @@ import type { Place } from '#src/base/problem.ts';
 import { ProblemLog } from '#src/base/problem.ts';
 import type { Site } from '#src/crystal/crystal.ts';
 import { nuclide, usualIsotope } from '#src/data/nuclides.ts';
+import type { EfgDescription } from '#src/tensor/efg.ts';
 import { describeEfg } from '#src/tensor/efg.ts';
 import { printedNoise, tensorNoise } from '#src/tensor/noise.ts';
 import { equivalentSpread, meanTensor, projectOnSiteSymmetry, turnBack } from '#src/tensor/projection.ts';
@@ -38,6 +39,7 @@ interface Evidence {
   readonly equivalentSpread: number | null;
   readonly anisotropicNorm: number;
   readonly noise: number;
+  readonly unitGiven: string;
   readonly source: Place;
 }
 
@@ -71,6 +73,7 @@ function weigh(
     equivalentSpread: spreadOf(found),
     anisotropicNorm,
     noise: tensorNoise(printed, residual, Math.max(anisotropicNorm, leastScale[quantity])),
+    unitGiven,
     source: first.entry.place,
   };
 }
@@ -114,6 +117,13 @@ function shieldingDossier(evidence: Evidence): ShieldingDossier {
   };
 }
 
+/** A trace larger than the field gradient itself: no rounding does that, and the tensor is something else. */
+function noGradientReason({ trace, components }: EfgDescription): string | null {
+  const largest = Math.max(Math.abs(components[2]), leastScale.efg);
+  if (Math.abs(trace) <= impossibleTraceShare * largest) return null;
+  return `the trace of ${Number(trace.toPrecision(4))} a.u. is larger than Vzz, so that the tensor is no field gradient`;
+}
+
 function efgDossier(evidence: Evidence, isotope: string | null, settings: DossierSettings): EfgDossier {
   const own = isotope === null ? null : (settings.quadrupoleMomentsBarn[isotope] ?? null);
   const described = describeEfg(
@@ -122,23 +132,28 @@ function efgDossier(evidence: Evidence, isotope: string | null, settings: Dossie
     own,
     evidence.noise,
   );
-  const undefinedBecause =
+  const because =
     described.signDetermined || described.components[2] === 0
       ? described.undefinedBecause
       : { ...described.undefinedBecause, sign: signReason };
+  const reason = noGradientReason(described);
+  const undefinedBecause = reason
+    ? { ...because, ...Object.fromEntries(withheldFields.map((field) => [field, reason])) }
+    : because;
+  const told = <T>(value: T): T | null => (reason ? null : value);
   return {
     tensor: described.tensor,
     symmetric: described.symmetric,
     components: described.components,
     axes: described.axes,
-    asymmetry: described.asymmetry,
+    asymmetry: told(described.asymmetry),
     isotope: described.isotope,
     quadrupoleMomentBarn: described.quadrupoleMomentBarn,
     quadrupoleMomentSource: described.quadrupoleMomentSource,
-    couplingMHz: described.couplingMHz,
-    productMHz: described.productMHz,
-    quadrupoleFrequencyMHz: described.quadrupoleFrequencyMHz,
-    quadrupoleAngularFrequency: described.quadrupoleAngularFrequency,
+    couplingMHz: told(described.couplingMHz),
+    productMHz: told(described.productMHz),
+    quadrupoleFrequencyMHz: told(described.quadrupoleFrequencyMHz),
+    quadrupoleAngularFrequency: told(described.quadrupoleAngularFrequency),
     trace: described.trace,
     signDetermined: described.signDetermined,
     antisymmetricNorm: described.antisymmetricNorm,
@@ -147,6 +162,7 @@ function efgDossier(evidence: Evidence, isotope: string | null, settings: Dossie
     projected: evidence.projected,
     symmetryResidual: evidence.symmetryResidual,
     equivalentSpread: evidence.equivalentSpread,
+    unitGiven: evidence.unitGiven,
     source: evidence.source,
   };
 }
@@ -156,18 +172,30 @@ const signReason =
 
 /** A trace above this share of the largest component is no rounding: the tensor may be something else. */
 const largestTraceShare = 0.1;
+/** Beyond this share of it asymmetry and couplings are withheld. */
+const impossibleTraceShare = 1;
+const withheldFields = [
+  'asymmetry',
+  'couplingMHz',
+  'productMHz',
+  'quadrupoleFrequencyMHz',
+  'quadrupoleAngularFrequency',
+] as const;
 
 function reportTrace(site: Site, efg: EfgDossier, log: ProblemLog): void {
   const largest = Math.max(Math.abs(efg.components[2]), leastScale.efg);
   if (Math.abs(efg.trace) <= largestTraceShare * largest) return;
+  const fate = noGradientReason(efg)
+    ? 'it is larger than Vzz, so that asymmetry and couplings are withheld'
+    : 'it was taken off';
   log.add(
     'warning',
     'efg-trace',
-    `The EFG of ${site.label} has a trace, which no field gradient has; it was taken off.`,
+    `The EFG of ${site.label} has a trace, which no field gradient has; ${fate}.`,
     {
       place: efg.source,
       got: `tr V = ${Number(efg.trace.toPrecision(4))} a.u. beside Vzz = ${Number(efg.components[2].toPrecision(4))} a.u.`,
-      allowed: 'tr V = 0',
+      allowed: `tr V = 0; a warning above ${largestTraceShare * 100} % of Vzz, no couplings above ${impossibleTraceShare * 100} %`,
       hint: 'The column may hold a shielding or stand in another unit.',
     },
   );

@@ -65,21 +65,35 @@ function directionOf(
   if (named?.axis) return { towards: normalize(named.axis), words: `${named.name} of ${named.of}` };
   if (named) return { fault: `${named.name} of ${named.of} has no axis: its principal value is degenerate.` };
   const [first] = namedAxes;
-  const own = first ? `; principal axes: ${first.of} ${namedAxes.map(({ name }) => name).join(', ')}` : '';
+  const own = first ? `; principal axes: ${namesOf(namedAxes, first)}` : '';
   return { fault: `“${text}” is no direction. ${forms}${own}.` };
 }
 
+/** Names of the first site's axes, and the other ways to write one of them. */
+function namesOf(namedAxes: readonly NamedAxis[], { of }: NamedAxis): string {
+  const names = namedAxes.filter((one) => one.of === of).map(({ name }) => name);
+  const last = names.at(-1)!;
+  return `${of} ${names.join(', ')}, also written ${last}(${of}), ${last} of ${of}, p33 of ${of}, ${of} 33`;
+}
+
+/** Ways to type a component: its name, `s33` and `sigma33` for σ33, `d33` and `delta33` for δ33, `p33` for any 33. */
+function spellingsOf({ name, others = [] }: NamedAxis): string[] {
+  const greek = { σ: ['s', 'sigma'], δ: ['d', 'delta'] }[name[0] ?? ''] ?? [];
+  const all = [name, ...others, ...greek.map((letter) => letter + name.slice(1))];
+  return [...all, ...others.filter((other) => /^\d\d$/.test(other)).map((digits) => `p${digits}`)];
+}
+
 /**
- * The axis a text names: `σ11`, `Al1 V_zz`, `V33 of Al1`, `Al1 33`, in any case. A site without a component, or a component
+ * The axis a text names: `σ11`, `Al1 V_zz`, `V33 of Al1`, `p33(Al1)`, `Al1 33`, in any case. A site without a component, or a component
  * without a site, is that of the first axis that fits: the selected atom, the quantity that is shown.
  */
 function axisNamed(text: string, namedAxes: readonly NamedAxis[]): NamedAxis | null {
   const typed = plainName(text);
   return (
-    namedAxes.find(({ name, of, others = [] }) =>
-      [name, ...others].some((one) => {
+    namedAxes.find((named) =>
+      spellingsOf(named).some((one) => {
         const component = plainName(one);
-        const site = plainName(of);
+        const site = plainName(named.of);
         return [component, `${site}${component}`, `${component}of${site}`, `${component}${site}`].includes(
           typed,
         );
@@ -181,8 +195,8 @@ function unit(at: number): Vec3 {
   return [Number(at === 0), Number(at === 1), Number(at === 2)];
 }
 
-/** Names compare without case, blanks, underscores and digits set low. */
+/** Names compare without case, blanks, underscores, brackets and digits set low. */
 function plainName(name: string): string {
   const digits = name.replaceAll(/[₀-₉]/g, (digit) => String(digit.charCodeAt(0) - 0x2080));
-  return digits.toLowerCase().replaceAll(/[\s_]/g, '');
+  return digits.toLowerCase().replaceAll(/[\s_()]/g, '');
 }

@@ -1,11 +1,13 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { apply, rowsOf } from '#src/base/matrix3.ts';
-import { dot, length } from '#src/base/vector3.ts';
+import { dot, length, withReadableSign } from '#src/base/vector3.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import { nearestDirection } from '#src/crystal/nearest-direction.ts';
 import type { Axis, CrystalDossier, EquivalentAtom, SiteDossier } from '#src/dossier/dossier.ts';
 import { directionLabel, turnedSentence } from '#src/tensor/forced.ts';
 import { rotateTensor } from '#src/tensor/projection.ts';
+
+export { withReadableSign };
 
 /** A quantity that has principal axes. */
 export type TensorQuantity = 'shielding' | 'shift' | 'efg';
@@ -30,17 +32,6 @@ export function axisInCrystal(
 ): { readonly label: string; readonly degrees: number } | null {
   const nearest = axis && lattice && nearestDirection(axis, lattice);
   return nearest && { label: directionLabel(nearest.uvw), degrees: nearest.degrees };
-}
-
-/**
- * An axis with the sign that reads best: its largest component is positive. The sign of a principal axis means
- * nothing, a fixed choice keeps equal axes looking equal.
- */
-export function withReadableSign(axis: Vec3): Vec3 {
-  const largest = [0, 1, 2].reduce((best, i) =>
-    Math.abs(axis[i]!) > Math.abs(axis[best]!) + 1e-9 ? i : best,
-  );
-  return axis[largest]! < 0 ? [-axis[0], -axis[1], -axis[2]] : axis;
 }
 
 /** Principal axes of a site in the order of its components; null where the site has no such tensor. */

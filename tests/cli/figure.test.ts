@@ -133,6 +133,39 @@ describe('ellipsite figure', () => {
     expect(Buffer.compare(alongC, back)).not.toBe(0);
   });
 
+  it('looks along a principal axis of a site, in several spellings', async () => {
+    const views = ['Si1 33', 'σ33 of Si1', 'p33(Si1)', 's33 of si1'];
+    const pictures: string[] = [];
+    for (const view of views) {
+      const { status, written, error } = await figure(
+        'quartz.xyz',
+        '-o',
+        'q.png',
+        '--view',
+        view,
+        '--no-case',
+        ...small,
+      );
+      expect([status, error]).toEqual([0, expect.not.stringContaining('--view')]);
+      pictures.push(decodePng(written['q.png']!).pixels.join());
+    }
+    expect(new Set(pictures).size).toBe(1);
+    const refused = await figure('quartz.xyz', '-o', 'q.png', '--view', 'p44 of Si1', ...small);
+    expect(refused.status).toBe(2);
+    expect(refused.error).toContain('p33 of Si1, Si1 33');
+  });
+
+  it.each([
+    [['--shell', 'Si1:3'], '--shell SITE --radius 3'],
+    [['--shell', 'Si1', '--radius', 'far'], '--radius far: allowed are 0.5 to 50'],
+    [['--shell', 'Si1', '--range', '0:1,0:1,0:1'], 'exclude each other'],
+    [['--shell', 'Si1', '--extent', 'cell'], 'leaves no room for --shell'],
+  ])('refuses a shell that would be passed over: %j', async (words, message) => {
+    const { status, error } = await figure('quartz.xyz', '-o', 'q.png', ...words, ...small);
+    expect(status).toBe(2);
+    expect(error).toContain(message);
+  });
+
   it('draws a molecule without a cell', async () => {
     const { status, written } = await figure('water.xyz', '-o', 'w.png', ...small);
     expect(status).toBe(0);

@@ -12,14 +12,13 @@ import type { Sheet } from '#src/figure/sheet.ts';
 import { createRasterizer } from '#src/raster/rasterizer.ts';
 import { bestKernel } from '#src/raster/wasm-kernel.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
-import { parseLookAlong } from '#src/scene/look-along.ts';
 import type { Scene } from '#src/scene/scene.ts';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
 import type { OwnValues } from '../arguments.ts';
 import { parseArguments } from '../arguments.ts';
 import {
   contentsOf,
-  directionWords,
+  directionAsked,
   figureOptions,
   lookOf,
   outputOf,
@@ -122,15 +121,14 @@ function demandHeight(sheet: Sheet, { pxPerPt }: FigureSize, isMm: boolean): voi
 }
 
 /** The direction asked for; else the camera of the case file, all of the crystal; else the first view. */
-function viewOf(own: OwnValues, scene: Scene, { views }: LoadedCase): FigureView {
+function viewOf(own: OwnValues, scene: Scene, { views, dossier }: LoadedCase): FigureView {
   const asked = textOf(own, 'view');
   const isUpright = own['upright'] === true;
   if (asked === undefined) {
     const kept = keptView(views?.camera ?? null, scene);
     return kept.kind === 'direction' ? { ...kept, isUpright } : kept;
   }
-  const found = parseLookAlong(directionWords(asked), scene.axes);
-  if ('fault' in found) throw new UsageError(`--view ${asked}: ${found.fault} Also uvw:1,1,0 and hkl:1,0,0.`);
+  const found = directionAsked(asked, scene, dossier?.sites ?? []);
   return { kind: 'direction', towards: found.towards, words: `viewed along ${found.words}`, isUpright };
 }
 

@@ -80,10 +80,31 @@ describe('tensors of a site', () => {
     expect(clean.problems.some(({ code }) => code === 'efg-trace')).toBe(false);
   });
 
+  it.each([
+    ['as large as a shielding', '430 0 0 0 431 0 0 0 440', true],
+    ['a little above Vzz', '-.1 0 0 0 .2 0 0 0 .7', true],
+    ['a fifth of Vzz', '-.1 0 0 0 -.2 0 0 0 .36', false],
+  ])('withholds couplings for a trace larger than Vzz only: %s', (_, nine, withheld) => {
+    const head = '1\nProperties=species:S:1:pos:R:3:efg:R:9\n';
+    const { sites, problems } = dossierOfText('tr.xyz', `${head}Al 0 0 0 ${nine}\n`);
+    const { couplingMHz, productMHz, asymmetry, undefinedBecause } = sites[0]!.efg!;
+    expect([couplingMHz, productMHz, asymmetry].map((value) => value === null)).toEqual(
+      Array(3).fill(withheld),
+    );
+    expect(undefinedBecause['couplingMHz'] ?? '').toMatch(withheld ? /trace .* larger than Vzz/ : /^$/);
+    expect(problems.filter(({ code }) => code === 'efg-trace')).toHaveLength(1);
+  });
+
+  it('keeps the unit of the file beside the converted tensor', () => {
+    const head = '1\nProperties=species:S:1:pos:R:3:efg:R:9 efg_unit=V/A2\n';
+    const { sites } = dossierOfText('u.xyz', `${head}Al 0 0 0 -1 0 0 0 -2 0 0 0 3\n`);
+    expect(sites[0]!.efg?.unitGiven).toBe('V/A2');
+  });
+
   it('leaves no dust of an isotropic tensor', () => {
     const head = '1\nProperties=species:S:1:pos:R:3:efg:R:9\n';
     const { efg } = dossierOfText('iso.xyz', `${head}Al 0 0 0 0.1 0 0 0 0.1 0 0 0 0.1\n`).sites[0]!;
-    expect(efg).toMatchObject({ components: [0, 0, 0], couplingMHz: 0 });
+    expect(efg).toMatchObject({ components: [0, 0, 0], couplingMHz: null });
   });
 
   it('says that the sign of C_Q is an accident at η = 1', () => {

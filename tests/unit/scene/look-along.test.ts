@@ -85,16 +85,34 @@ describe('look along', () => {
     expect(parseLookAlong('V99', axes, named)).toEqual({ fault: expect.stringContaining('σ33, Vxx') });
   });
 
-  it.each(['Al1 V_zz', 'al1 vzz', 'Vzz of Al1', 'Vzz Al1', 'Al1 33', 'Al1 V33', 'V33'])(
-    'a principal axis by its site and component: %s',
-    (text) => {
-      const named = [
-        { name: 'Vzz', of: 'Al1', others: ['33', 'V33'], axis: [0, 0, 1] as Vec3 },
-        { name: 'Vzz', of: 'Al2', others: ['33', 'V33'], axis: [1, 0, 0] as Vec3 },
-      ];
-      expect(parseLookAlong(text, axes, named)).toEqual({ towards: [0, 0, 1], words: 'Vzz of Al1' });
-    },
-  );
+  it.each([
+    'p33 of Al1',
+    'P33(Al1)',
+    'p₃₃ Al1',
+    'V₃₃ of al1',
+    'Vzz(Al1)',
+    'Al1 V_zz',
+    'al1 vzz',
+    'Vzz of Al1',
+    'Vzz Al1',
+    'Al1 33',
+    'Al1 V33',
+    'V33',
+  ])('a principal axis by its site and component: %s', (text) => {
+    const named = [
+      { name: 'Vzz', of: 'Al1', others: ['33', 'V33'], axis: [0, 0, 1] as Vec3 },
+      { name: 'Vzz', of: 'Al2', others: ['33', 'V33'], axis: [1, 0, 0] as Vec3 },
+    ];
+    expect(parseLookAlong(text, axes, named)).toEqual({ towards: [0, 0, 1], words: 'Vzz of Al1' });
+  });
+
+  it('lists the ways to write a principal axis where one is not understood', () => {
+    const named = [{ name: 'σ33', of: 'Si1', others: ['33'], axis: [0, 0, 1] as Vec3 }];
+    expect(parseLookAlong('s33 of Si1', axes, named)).toMatchObject({ words: 'σ33 of Si1' });
+    expect(parseLookAlong('sigma33(Si1)', axes, named)).toMatchObject({ words: 'σ33 of Si1' });
+    const fault = parseLookAlong('p44 of Si1', axes, named);
+    expect(fault).toEqual({ fault: expect.stringContaining('σ33(Si1), σ33 of Si1, p33 of Si1, Si1 33') });
+  });
 
   it.each([
     ['', 'No direction'],
