@@ -35,6 +35,7 @@ export class EarlierWorkList extends StoreElement {
         overflow-wrap: anywhere;
       }
       .soft {
+        display: block;
         font-size: 13px;
       }
     `,

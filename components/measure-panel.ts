@@ -116,7 +116,7 @@ export class MeasurePanel extends StoreElement {
               : '';
           return html`<li>
             <span>${kindWords[measurement.kind]} ${withSubscripts(name)}</span>
-            <span class="number">${measured ? valueText(measured) : 'not in this crystal'}</span>
+            <span class="number">${measured ? valueText(measured) : this.#missing(measurement)}</span>
             <button
               aria-label="Remove ${kindWords[measurement.kind]} ${name}"
               @click=${() => this.store?.removeMeasurement(measurement.id)}
@@ -132,6 +132,17 @@ export class MeasurePanel extends StoreElement {
         })}
       </ul>
     </fieldset>`;
+  }
+
+  /** Why there is no value: an atom's site is still on its way, or the crystal has no such atom. */
+  #missing({ atoms }: Measurement): string {
+    const { store } = this;
+    const siteCount = store?.state.derived?.crystal?.siteCount ?? 0;
+    const isComing = atoms.some(({ atomId }) => {
+      const siteIndex = Number.parseInt(atomId, 10);
+      return siteIndex < siteCount && !store?.site(siteIndex);
+    });
+    return isComing ? '…' : 'not in this crystal';
   }
 
   #axesForm(): TemplateResult {

@@ -176,6 +176,7 @@ describe('the page', () => {
     expect(card()).toContain('line 3 of invented.xyz');
     const link = [...page.part('ellipsite-site-card').shadowRoot.querySelectorAll<HTMLElement>('.link')];
     link[0]!.click();
+    await customElements.whenDefined('ellipsite-source-view');
     await settle();
     const marked = page.part('ellipsite-source-view').shadowRoot.querySelector('[aria-current=true]');
     expect(textOf(marked)).toBe('3line 3 of invented.xyz');
