@@ -6,7 +6,7 @@ import type { Vec3 } from '#src/store/dossier-types.ts';
 import type { Camera, Viewport } from '#src/scene/camera.ts';
 import { pan, turnAbout, zoom } from '#src/scene/camera.ts';
 import { turnedRound } from '#src/scene/camera-path.ts';
-import { firstCamera, fit, lookAlong } from '#src/scene/framing.ts';
+import { firstCamera, fit, isFitted, lookAlong } from '#src/scene/framing.ts';
 import type { LookDirection } from '#src/scene/framing.ts';
 import type { ScreenBox } from '#src/scene/label-room.ts';
 import { parseLookAlong } from '#src/scene/look-along.ts';
@@ -153,7 +153,10 @@ export class CrystalPicture {
 
   resize(widthPx: number, heightPx: number): void {
     if (widthPx === 0 || heightPx === 0) return;
+    const [camera, scene] = [this.#camera, this.#scene];
+    const isWhole = camera !== null && scene !== null && isFitted(scene, camera, this.#viewport);
     this.#viewport = { widthPx, heightPx };
+    if (isWhole) this.#camera = this.#fitted(camera);
     this.#renderer.resize(widthPx, heightPx, devicePixelRatio);
     this.#frame();
   }

@@ -42,6 +42,15 @@ export function fit(
   return perspectiveDegrees > 0 ? { ...camera, perspectiveDegrees } : camera;
 }
 
+/** Whether a camera just fits the whole scene into the viewport: in one of another shape it is to do so, too. */
+export function isFitted(scene: Scene, camera: Camera, viewport: Viewport): boolean {
+  if (viewport.widthPx === 0 || viewport.heightPx === 0) return false;
+  const { orientation, perspectiveDegrees } = camera;
+  const { zoom, target } = fit(scene, orientation, viewport, defaultMargin, perspectiveDegrees);
+  const off = target.map((x, k) => x - camera.target[k]!) as unknown as Vec3;
+  return length(off) < 1e-3 * scene.bounds.radiusAngstrom && Math.abs(zoom - camera.zoom) < 1e-3 * zoom;
+}
+
 /** Å; a single atom is not blown up beyond this. */
 const smallestBox = 2;
 

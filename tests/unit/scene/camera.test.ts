@@ -14,7 +14,8 @@ import {
   viewRotation,
   zoom,
 } from '#src/scene/camera.ts';
-import { firstCamera, fit, lookAlong } from '#src/scene/framing.ts';
+import { firstCamera, fit, isFitted, lookAlong } from '#src/scene/framing.ts';
+import { polarRadius } from '#src/scene/polar-mesh.ts';
 import { projectAxes, projection, projectPoint, projectQuadric } from '#src/scene/project.ts';
 import { madeQuartz } from '#tests/support/made-quartz.ts';
 import { madeUrea } from '#tests/support/made-urea.ts';
@@ -139,6 +140,48 @@ describe('fit', () => {
     expect(bottom).toBeLessThanOrEqual(0.93 * h + 1e-3);
     expect(Math.max((right - left) / w, (bottom - top) / h)).toBeCloseTo(0.86, 4);
     expect((left + right) / 2).toBeCloseTo(w / 2, 2);
+  });
+
+  it('holds the ends of rods and the lobes of polar surfaces, too', () => {
+    for (const options of [
+      { glyph: 'axes', ellipsoid: 'total', unitsPerAngstrom: 60 },
+      { quantity: 'efg', glyph: 'polar', unitsPerAngstrom: 0.05 },
+    ] as const) {
+      const scene = buildScene(madeQuartz(), { ...options, extent: 'asymmetric', cellEdges: false });
+      const view = { widthPx: 300, heightPx: 900 };
+      const p = projection(firstCamera(scene, view), view);
+      const inside = (at: readonly number[]): void => {
+        const { xPx, yPx } = projectPoint(p, [at[0]!, at[1]!, at[2]!]);
+        expect(Math.min(xPx, view.widthPx - xPx)).toBeGreaterThan(0.06 * view.widthPx);
+        expect(Math.min(yPx, view.heightPx - yPx)).toBeGreaterThan(0.06 * view.heightPx);
+      };
+      const { cylinders, polars } = scene;
+      for (let i = 0; i < 3 * cylinders.count; i += 3) {
+        inside([...cylinders.starts.subarray(i, i + 3)]);
+        inside([...cylinders.ends.subarray(i, i + 3)]);
+      }
+      for (let i = 0; i < (polars?.count ?? 0); i++) {
+        const t = polars!.tensors.subarray(6 * i, 6 * i + 6);
+        for (let k = 0; k < 500; k++) {
+          const [u, v] = [Math.acos(1 - (2 * (k + 0.5)) / 500), 2.399963 * k];
+          const n = [Math.sin(u) * Math.cos(v), Math.sin(u) * Math.sin(v), Math.cos(u)];
+          const r = Math.abs(polarRadius(t, n[0]!, n[1]!, n[2]!));
+          inside(n.map((x, axis) => polars!.centres[3 * i + axis]! + r * x));
+        }
+      }
+    }
+  });
+
+  it('knows its own cameras, and no others', () => {
+    const scene = buildScene(madeQuartz());
+    for (const perspective of [0, 40]) {
+      const own = firstCamera(scene, viewport, perspective);
+      expect(isFitted(scene, own, viewport)).toBe(true);
+      expect(isFitted(scene, own, { widthPx: 200, heightPx: 900 })).toBe(false);
+      expect(isFitted(scene, zoom(own, 1.05, viewport), viewport)).toBe(false);
+      expect(isFitted(scene, pan(own, 9, 0, viewport), viewport)).toBe(false);
+      expect(isFitted(scene, own, { widthPx: 0, heightPx: 0 })).toBe(false);
+    }
   });
 
   it('an empty scene still has a camera', () => {
