@@ -34,7 +34,8 @@ export function noiseLimits(tensor: Mat3, quantity: Quantity, noise = 0): NoiseL
   return {
     noise: used,
     floor,
-    gap: Math.SQRT2 * used,
+    // a little more: two values as far apart as the noise can bring them are not told apart by the last bit
+    gap: Math.SQRT2 * used * (1 + 1e-9),
     tie: Math.sqrt(2 / 3) * used,
     zero: Math.SQRT2 * floor,
   };
