@@ -95,6 +95,20 @@ export function withRareKind(
   return species.map((kind, atom) => (best.has(atom) ? further : kind));
 }
 
+/** Indices of the atoms of the kind that has fewest. */
+export function membersOfRarest(kinds: readonly number[]): readonly number[] {
+  const byKind = new Map<number, number[]>();
+  for (const [atom, kind] of kinds.entries()) {
+    const listed = byKind.get(kind);
+    if (listed) listed.push(atom);
+    else byKind.set(kind, [atom]);
+  }
+  return [...byKind.values()].reduce<readonly number[]>(
+    (best, one) => (best.length === 0 || one.length < best.length ? one : best),
+    [],
+  );
+}
+
 /** How many atoms the rarest kind has; 0 where there are none. */
 export function rarest(kinds: readonly number[]): number {
   const counts = new Map<number, number>();

@@ -219,7 +219,7 @@ function fractionText(value: number): string {
   return smallFractionText(value) ?? String(Number(value.toFixed(6)));
 }
 
-/** Denominators go this far: cells that repeat a smaller one hold 128 of it at most where their symmetry is searched. */
+/** Denominators go this far; finer steps, as in a cell that repeats a smaller one more often along an axis, are decimals. */
 const largestDenominator = 128;
 
 /** `3/14` where a value is such a fraction to the last digits of its double; null where it is none. */

@@ -1,5 +1,5 @@
 import type { Mat3, Vec3, VecFrac } from '#src/base/matrix3.ts';
-import { apply, inverse, multiply } from '#src/base/matrix3.ts';
+import { apply, determinant, inverse, multiply } from '#src/base/matrix3.ts';
 import { add, scale, subtract } from '#src/base/vector3.ts';
 import { atomFinder } from './atom-finder.ts';
 import { atomPartners } from './atom-partners.ts';
@@ -13,6 +13,8 @@ import {
 } from './handedness.ts';
 import type { Lattice } from './lattice.ts';
 import { nearOffsetFinder } from './near-images.ts';
+import type { PrimitiveAtoms } from './primitive-atoms.ts';
+import { primitiveAtoms } from './primitive-atoms.ts';
 import { withRareKind } from './rare-surroundings.ts';
 import type { ShapeLoss } from './shape-loss.ts';
 import { shapeLoss } from './shape-loss.ts';
@@ -224,20 +226,24 @@ function searchInSmallCell(
  * the input cell, and every one is checked to take every atom onto one of its kind. A supercell whose shape breaks
  * rotations of its crystal is searched in the primitive cell: it has all operations of the crystal, and `loss` tells
  * how many of them its shape cannot hold. Left-handed axes are searched on −a, −b, −c. Null where the search fails or
- * a check does.
+ * a check does. A cell that repeats a smaller one is given to the library as the smaller one, unless `reduces` is false.
  */
 export function searchSymmetry(
   lattice: Lattice,
   positions: readonly VecFrac[],
   species: readonly number[],
   toleranceAngstrom: number,
+  reduces = true,
 ): FoundSymmetry | null {
   if (positions.length === 0) return null;
-  if (!isLeftHanded(lattice)) return searchRightHanded({ lattice, positions, species }, toleranceAngstrom);
+  if (!isLeftHanded(lattice)) {
+    return searchRightHanded({ lattice, positions, species }, toleranceAngstrom, reduces);
+  }
   const inverted = onInvertedAxes(lattice);
   const found = searchRightHanded(
     { lattice: inverted, positions: positions.map(positionOnInvertedAxes), species },
     toleranceAngstrom,
+    reduces,
   );
   if (!found) return null;
   const small = found.small && smallCellOnInvertedAxes(found.small);
@@ -250,19 +256,87 @@ export function searchSymmetry(
   return frame && { ...found, operations, frame, placed, small };
 }
 
-function searchRightHanded(atoms: Atoms, toleranceAngstrom: number): FoundSymmetry | null {
+/** What the library found in a cell or in the primitive one that it repeats, told in terms of the cell. */
+interface Analysis {
+  readonly frame: StandardFrame;
+  /** The library's primitive axes as columns, in fractions of the cell's own. */
+  readonly primitive: Mat3;
+  /** By atom of the cell that was searched. */
+  readonly orbits: readonly number[];
+  /** Operations as the library lists them. */
+  readonly listed: () => readonly SymmetryOperation[];
+  /** Primitive cells in the given one, as far as they were found before the search. */
+  readonly repetitions: number;
+}
+
+function analyse(atoms: Atoms, kinds: readonly number[], toleranceAngstrom: number): Analysis | null {
+  const { lattice, positions } = atoms;
+  const result = analyseAtoms({ cell: lattice.cell, positions, species: kinds }, toleranceAngstrom);
+  const frame = result && frameOfResult(result);
+  if (!result || !frame) return null;
+  const { orbits } = result;
+  const primitive = matrixOfResult(result.prim_std_linear);
+  return { frame, primitive, orbits, listed: () => listedOperations(result), repetitions: 1 };
+}
+
+/**
+ * The search in the primitive cell, with x_small = Q x: x(tabulated) = P⁻¹(Q x − p) = (Q⁻¹P)⁻¹(x − Q⁻¹p). The library
+ * compares all pairs of atoms, so that the copies in a large cell would cost the square of their number.
+ */
+function analysePrimitive(small: PrimitiveAtoms, toleranceAngstrom: number): Analysis | null {
+  const found = analyse(small, small.species, toleranceAngstrom);
+  if (!found) return null;
+  const back = inverse(small.repeat);
+  const { setting, basis, origin } = found.frame;
+  const frame = { setting, basis: multiply(back, basis), origin: apply(back, origin), tabulated: false };
+  const primitive = multiply(back, found.primitive);
+  return { ...found, frame, primitive, repetitions: small.count };
+}
+
+/** Repetitions up to which the group is listed in the given cell where that can hold it: the time grows with their square. */
+const listedRepetitionsLimit = 128;
+
+function searchRightHanded(atoms: Atoms, toleranceAngstrom: number, reduces: boolean): FoundSymmetry | null {
   const { lattice, positions, species } = atoms;
   const kinds = withRareKind(lattice, positions, species, toleranceAngstrom);
-  const result = analyseAtoms({ cell: lattice.cell, positions, species: kinds }, toleranceAngstrom);
-  const found = result && frameOfResult(result);
-  if (!result || !found) return null;
+  const small = reduces ? primitiveAtoms(lattice, positions, kinds, toleranceAngstrom) : null;
+  const inSmall = small && analysePrimitive(small, toleranceAngstrom);
+  const found = inSmall && foundFrom(inSmall, atoms, toleranceAngstrom);
+  if (found) return found;
+  const analysis = analyse(atoms, kinds, toleranceAngstrom);
+  return analysis && foundFrom(analysis, atoms, toleranceAngstrom);
+}
+
+/** What an analysis says of the cell, checked on its atoms; null where a check fails. */
+function foundFrom(analysis: Analysis, atoms: Atoms, toleranceAngstrom: number): FoundSymmetry | null {
+  const { frame, primitive, orbits, listed, repetitions } = analysis;
+  if (repetitions > listedRepetitionsLimit) {
+    const whole = searchInSmallCell(frame, primitive, atoms, toleranceAngstrom);
+    return whole && { ...whole, loss: lossInSmallCell(frame, whole.small!, orbits) };
+  }
+  const carried = carriedOperations(frame);
+  if (!carried && repetitions > 1) return null;
   // The library's own list may hold matrices rounded to whole numbers that are no operations of a skew supercell.
-  const operations = carriedOperations(found) ?? listedOperations(result);
-  const loss = shapeLoss(found.setting, operations, result.orbits);
-  const whole =
-    loss && searchInSmallCell(found, matrixOfResult(result.prim_std_linear), atoms, toleranceAngstrom);
+  const operations = carried ?? listed();
+  const loss = shapeLoss(frame.setting, operations, orbits);
+  const whole = loss && searchInSmallCell(frame, primitive, atoms, toleranceAngstrom);
   if (whole) return { ...whole, loss };
-  const snapped = snappedOperations(operations, lattice, toleranceAngstrom);
+  const snapped = snappedOperations(operations, atoms.lattice, toleranceAngstrom);
   const group = groupOnAtoms(snapped, atoms, toleranceAngstrom);
   return group && { ...group, loss, small: null };
+}
+
+/** As `shapeLoss`, by the operations of the small cell that the given axes hold. */
+function lossInSmallCell(
+  { setting }: StandardFrame,
+  { repeat, operations }: SmallCell,
+  orbits: readonly number[],
+): ShapeLoss | null {
+  const back = inverse(repeat);
+  const held = operations.filter(({ rotation }) =>
+    multiply(multiply(back, rotation), repeat).every((x) => Math.abs(x - Math.round(x)) < 1e-6),
+  );
+  const cells = Math.abs(Math.round(determinant(repeat)));
+  const inGiven = held.flatMap((operation) => Array.from({ length: cells }, () => operation));
+  return shapeLoss(setting, inGiven, orbits);
 }

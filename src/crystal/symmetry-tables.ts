@@ -107,9 +107,16 @@ function nameOf({ setting, tabulated }: StandardFrame): NamedGroup {
 function lettersOf(frame: StandardFrame, sites: readonly PlacedSite[]): SiteLetters {
   const operations = operationsOfSetting(frame.setting);
   const positions = positionsOf(frame.setting.hallNumber);
-  const found = sites.map(({ averaged, order }) =>
-    wyckoffPositionOf(inStandardFrame(averaged, frame), order, operations, positions),
-  );
+  // Copies of one atom in a supercell are one and the same placed site.
+  const known = new Map<PlacedSite, WyckoffPosition | null>();
+  const found = sites.map((site) => {
+    const made = known.get(site);
+    if (made !== undefined) return made;
+    const position = inStandardFrame(site.averaged, frame);
+    const looked = wyckoffPositionOf(position, site.order, operations, positions);
+    known.set(site, looked);
+    return looked;
+  });
   return {
     wyckoff: found.map((entry) => entry?.letter ?? null),
     siteSymmetry: found.map((entry) => entry?.siteSymmetry ?? null),

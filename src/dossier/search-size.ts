@@ -2,19 +2,20 @@ import type { VecFrac } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
-import { countPureTranslations } from '#src/crystal/pure-translations.ts';
+import { primitiveAtoms } from '#src/crystal/primitive-atoms.ts';
 import { rarest, withRareKind } from '#src/crystal/rare-surroundings.ts';
 import type { DossierSettings } from './dossier.ts';
 
 /** Atoms searched for symmetry at most; beyond this the search is left to the user's explicit wish. */
 const searchedAtomsLimit = 20_000;
 /**
- * Atoms times those of the rarest kind: pairs that a search compares. So many take some 3 s; 4,472 atoms that are all
- * alike make 20 million, and 20,000 do not where a few have surroundings of their own.
+ * Atoms of one repetition of the crystal times those of its rarest kind: pairs that a search compares. So many take some
+ * 3 s; 4,472 atoms that are all alike and no copies of each other make 20 million, and 20,000 do not where a few have
+ * surroundings of their own.
  */
 const comparedPairsLimit = 20_000_000;
-/** Repetitions of a smaller cell; the time of a search grows with their square, and so many operations say nothing. */
-const searchedRepetitionsLimit = 128;
+/** Repetitions of a smaller cell: the crystal's operations are listed for each, which takes some seconds for so many. */
+const searchedRepetitionsLimit = 10_000;
 
 /** What passes a limit, and the limit; null where nothing does. */
 function whyTooMuch(
@@ -27,8 +28,11 @@ function whyTooMuch(
   if (atoms > searchedAtomsLimit)
     return { got: `${atoms} atoms`, allowed: `at most ${searchedAtomsLimit} atoms` };
   if (atoms * rarest(kinds) <= comparedPairsLimit) return null;
-  const alike = rarest(withRareKind(lattice, positions, kinds, toleranceAngstrom));
+  const finer = withRareKind(lattice, positions, kinds, toleranceAngstrom);
+  const alike = rarest(finer);
   if (atoms * alike <= comparedPairsLimit) return null;
+  const small = primitiveAtoms(lattice, positions, finer, toleranceAngstrom);
+  if (small && small.positions.length * rarest(small.species) <= comparedPairsLimit) return null;
   return {
     got: `${atoms} atoms, of which at least ${alike} have the same surroundings`,
     allowed: `at most ${comparedPairsLimit} for the product of the two`,
@@ -37,7 +41,7 @@ function whyTooMuch(
 
 /**
  * True, with `symmetry-search-too-large`, where a search of symmetry would not end in reasonable time: more than 20,000
- * atoms or 20 million pairs to compare (unless asked for expressly), or a cell that repeats a smaller one more than 128
+ * atoms or 20 million pairs to compare (unless asked for expressly), or a cell that repeats a smaller one more than 10,000
  * times.
  */
 export function isTooLargeToSearch(
@@ -59,7 +63,8 @@ export function isTooLargeToSearch(
     });
     return true;
   }
-  const repetitions = countPureTranslations(lattice, positions, kinds, tolerance, searchedRepetitionsLimit);
+  if (rarest(kinds) <= searchedRepetitionsLimit) return false;
+  const repetitions = primitiveAtoms(lattice, positions, kinds, tolerance)?.count ?? 1;
   if (repetitions <= searchedRepetitionsLimit) return false;
   log.add(
     'warning',

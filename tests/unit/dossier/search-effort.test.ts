@@ -29,11 +29,15 @@ function refused(atoms: number, movedAngstrom: number, symmetry: 'auto' | 'find'
   return { refusal, message: log.list()[0]?.message ?? '' };
 }
 
-it('refuses many atoms that all look alike, unless asked', () => {
-  const { refusal, message } = refused(17 ** 3, 0.005, 'auto');
+it('refuses many atoms that all look alike and are no copies of each other, unless asked', () => {
+  const { refusal, message } = refused(17 ** 3, 0.03, 'auto');
   expect(refusal).toBe(true);
   expect(message).toContain('4913 atoms, of which at least 4913 have the same surroundings');
-  expect(refused(17 ** 3, 0.005, 'find').refusal).toBe(false);
+  expect(refused(17 ** 3, 0.03, 'find').refusal).toBe(false);
+});
+
+it('searches as many atoms that are copies of each other', () => {
+  expect(refused(17 ** 3, 0.002, 'auto').refusal).toBe(false);
 });
 
 it('searches as many atoms where some differ from all others', () => {

@@ -14,10 +14,19 @@ loop_\n_atom_site_label\n_atom_site_fract_x\n_atom_site_fract_y\n_atom_site_frac
 
 const codesOf = (problems: readonly { code: string }[]) => problems.map(({ code }) => code);
 
-it('does not search a cell that repeats a smaller one 216 times; every atom stays a site', () => {
-  const { symmetry, sites, atomsInCell, problems } = dossierOfText('t.cif', lattice(6));
+it('does not search a cell that repeats a smaller one 10,648 times; every atom stays a site', () => {
+  const { symmetry, sites, atomsInCell, problems } = dossierOfText('t.cif', lattice(22));
   expect(codesOf(problems)).toContain('symmetry-search-too-large');
-  expect([symmetry.operations.length, sites.length, atomsInCell]).toEqual([1, 216, 216]);
+  expect([symmetry.operations.length, sites.length, atomsInCell]).toEqual([1, 10_648, 10_648]);
+});
+
+it('searches a cell that repeats a smaller one 216 times, and gives its sites letters', () => {
+  const { symmetry, sites, atomsInCell, problems } = dossierOfText('t.cif', lattice(6));
+  expect(codesOf(problems)).toContain('symmetry-found');
+  expect(codesOf(problems)).not.toContain('supercell-breaks-symmetry');
+  expect([symmetry.operations.length, sites.length, atomsInCell]).toEqual([48 * 216, 1, 216]);
+  expect(sites[0]).toMatchObject({ wyckoff: 'a', siteSymmetry: 'm-3m', siteSymmetryOrder: 48 });
+  expect(sites[0]!.equivalents.every(({ orientation }) => orientation === 0)).toBe(true);
 });
 
 it('searches a cell that repeats a smaller one 8 times', () => {
