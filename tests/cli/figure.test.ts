@@ -76,28 +76,33 @@ describe('ellipsite figure', () => {
     expect(written).toEqual({});
   });
 
-  it('puts the case inside, from which the command line reads the same sites and draws the same picture', async () => {
-    const first = await figure(
-      'quartz.xyz',
-      '-o',
-      'q.png',
-      '--view',
-      'c',
-      '--quantity',
-      'efg',
-      '--no-direction',
-      ...small,
-    );
-    const picture = first.written['q.png']!;
+  it('puts the case inside, from which the command line reads the same sites', async () => {
+    const { written } = await figure('quartz.xyz', '-o', 'q.png', ...small);
+    const picture = written['q.png']!;
     expect(textChunk(decodePng(picture), 'ellipsite-case')).toContain('0.02 0.2 0 0 0 -0.3');
-    const withPicture = { ...files, 'q.png': picture };
-    const sites = await runCommand(['sites', 'q.png'], withPicture);
+    const sites = await runCommand(['sites', 'q.png'], { ...files, 'q.png': picture });
     expect(sites.status).toBe(0);
     expect(sites.out.split('\n').slice(1)).toEqual(
       (await runCommand(['sites', 'quartz.xyz'], files)).out.split('\n').slice(1),
     );
-    const again = await runCommand(['figure', 'q.png', '-o', 'again.png', ...small], withPicture);
-    expect(decodePng(again.written['again.png']!).pixels).toEqual(decodePng(picture).pixels);
+  });
+
+  // Size and parts of the sheet are choices of each run, not of the case: the second run repeats them, as it does the size.
+  it.each([
+    { view: 'c', parts: ['--no-direction'] },
+    { view: 'c', parts: [] },
+    { view: '-a*', parts: [] },
+    { view: 'uvw:1,1,0', parts: ['--caption'] },
+  ])('draws the same bytes again from the case inside, seen along $view $parts', async ({ view, parts }) => {
+    const sheet = [...small, ...parts];
+    const asked = ['--view', view, '--quantity', 'efg'];
+    const first = await figure('quartz.xyz', '-o', 'q.png', ...asked, ...sheet);
+    const picture = first.written['q.png']!;
+    const withPicture = { ...files, 'q.png': picture };
+    const again = await runCommand(['figure', 'q.png', '-o', 'again.png', ...sheet], withPicture);
+    expect(again.status).toBe(0);
+    const pixels = (bytes: Uint8Array): Buffer => Buffer.from(decodePng(bytes).pixels);
+    expect(Buffer.compare(pixels(again.written['again.png']!), pixels(picture))).toBe(0);
   });
 
   it('leaves the case out with --no-case', async () => {
