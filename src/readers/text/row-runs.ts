@@ -1,0 +1,137 @@
+import { elementWord } from './element-words.ts';
+import type { NumericRow } from './numeric-row.ts';
+import type { TextLine } from './text-line.ts';
+
+/** Rows of one shape that belong together, with the lines that stand above the first. */
+export interface RowRun {
+  readonly rows: NumericRow[];
+  /** Element named by a line between the rows, for rows after it; same length as `rows`. */
+  readonly headElements: (string | null)[];
+  /** Lines above the first row, nearest first; rows of other tables among them. */
+  readonly heading: readonly string[];
+}
+
+interface OpenRun extends RowRun {
+  readonly key: string;
+  /** True where words in the rows tie them together over other lines. */
+  readonly worded: boolean;
+  readonly identities: Set<string>;
+  headElement: string | null;
+}
+
+/** Lines above a table that are remembered. */
+const headingLines = 8;
+/** Lines that may stand between rows that carry their own words. */
+const widestGap = 400;
+const mostOpenRuns = 24;
+
+/** Gathers rows into runs: neighbouring lines of one shape, and lines far apart where the same words stand in each. */
+export class RowRuns {
+  readonly #close: (run: RowRun) => void;
+  readonly #open = new Map<string, OpenRun>();
+  #heading: { text: string; line: number }[] = [];
+  #lastBare: OpenRun | null = null;
+
+  constructor(close: (run: RowRun) => void) {
+    this.#close = close;
+  }
+
+  /** A line that is no row of numbers. */
+  passText(line: TextLine): void {
+    if (line.text.trim() === '') return;
+    this.#heading.push({ text: line.text, line: line.number });
+    if (this.#heading.length > headingLines) this.#heading.shift();
+  }
+
+  passRow(row: NumericRow): void {
+    const run = this.#runFor(row);
+    run.rows.push(row);
+    run.headElements.push(run.headElement);
+    run.identities.add(identity(row));
+    if (!run.worded) this.#heading = [];
+    else this.#remember(row);
+  }
+
+  finish(): void {
+    for (const run of this.#open.values()) this.#close(run);
+    this.#open.clear();
+  }
+
+  #remember(row: NumericRow): void {
+    this.#heading.push({ text: row.text, line: row.line });
+    if (this.#heading.length > headingLines) this.#heading.shift();
+  }
+
+  #runFor(row: NumericRow): OpenRun {
+    const open = this.#open.get(row.key);
+    if (open && this.#goesOn(open, row)) return open;
+    if (open) this.#end(open);
+    for (const other of [...this.#open.values()]) {
+      if (!other.worded || this.#open.size >= mostOpenRuns) this.#end(other);
+    }
+    const run = this.#start(row);
+    this.#open.set(row.key, run);
+    if (!run.worded) this.#lastBare = run;
+    return run;
+  }
+
+  #goesOn(open: OpenRun, row: NumericRow): boolean {
+    const last = open.rows.at(-1)!.line;
+    const gap = row.line - last;
+    const id = identity(row);
+    if (open.worded) return gap <= widestGap && (id === '' ? gap <= 2 : !open.identities.has(id));
+    const between = this.#heading.filter(({ line }) => line > last);
+    if (gap <= 2 && between.length === 0) return true;
+    if (gap > 5 || open !== this.#lastBare || row.columns.some(({ kind }) => kind === 'element'))
+      return false;
+    const element = soleElement(between.map(({ text }) => text));
+    if (element === null) return false;
+    open.headElement = element;
+    return true;
+  }
+
+  #start(row: NumericRow): OpenRun {
+    const heading = this.#heading
+      .filter(({ line }) => row.line - line <= headingLines + 4)
+      .map(({ text }) => text)
+      .reverse();
+    const bare = !row.columns.some(({ kind }) => kind === 'element');
+    return {
+      rows: [],
+      headElements: [],
+      heading,
+      key: row.key,
+      worded: row.words.some((word) => word.length > 1),
+      identities: new Set(),
+      headElement: bare ? soleElement(heading.slice(0, 2)) : null,
+    };
+  }
+
+  #end(run: OpenRun): void {
+    this.#open.delete(run.key);
+    this.#close(run);
+  }
+}
+
+/** What names the atom of a row: its element and the whole numbers before the coordinates. */
+function identity({ columns }: NumericRow): string {
+  const parts: string[] = [];
+  for (const { kind, text, isInteger } of columns) {
+    if (kind === 'number' && !isInteger) break;
+    if (kind !== 'word') parts.push(text);
+  }
+  return parts.join(' ');
+}
+
+/** The one element that short lines name as a word of its own, such as `species 2: O`. */
+function soleElement(lines: readonly string[]): string | null {
+  const found = new Set<string>();
+  for (const line of lines) {
+    if (line.length > 60) continue;
+    for (const word of line.match(/[A-Za-z]+/g) ?? []) {
+      const element = elementWord(word)?.element;
+      if (element !== undefined && /^[A-Z]/.test(word)) found.add(element);
+    }
+  }
+  return found.size === 1 ? [...found][0]! : null;
+}
