@@ -38,7 +38,7 @@ export function coordinateEvidence(row: string, heading: readonly string[]): Coo
     const says = coordinatesOf(line);
     if (frame === null && saysFrame) frame = saysFrame;
     if (units.length === 0) units = saysUnits;
-    if (areCoordinates === null && says) areCoordinates = says;
+    if (areCoordinates === null) areCoordinates = says ?? (saysFrame ? 'yes' : null);
     if (line !== row && (saysFrame ?? saysUnits[0] ?? says)) words.push(line.trim().replace(/\s+/g, ' '));
     if (areCoordinates === 'no') break;
   }

@@ -22,7 +22,7 @@ export interface LatticeFinding {
 }
 
 const latticeWords =
-  /lattice|\bcell\b|(?<!\w)vectors?\b|\baxes\b|\bbasis\b|translation|\bprim|_vectors?\b|\bh-?matrix/i;
+  /lattice|\bcell\b|(?<!eigen)vectors?\b|\baxes\b|\bbasis\b|translation|\bprim|\bh-?matrix/i;
 const otherWords =
   /recip|stress|strain|forc|shield|tensor|rotation|symm|inertia|eigen|principal|hessian|polari|momen|dipol|atom|posit|k-?points?|\bgrid\b|\bmesh\b|gradient|sigma|propagation/i;
 
@@ -41,7 +41,8 @@ export class LatticeLines {
   take(line: TextLine, row: NumericRow | null): void {
     const blank = line.tokens.length === 0;
     const follows = this.#group.length > 0 && line.number - this.#group.at(-1)!.line <= 1;
-    if (this.#group.length > 0 && !(row && follows)) this.#endGroup();
+    const other = this.#group.length === 3 && this.#group.every(({ key }) => key !== row?.key);
+    if (this.#group.length > 0 && !(row && follows && !other)) this.#endGroup();
     this.#assignments(line);
     if (row) {
       this.#rowOfNine(row);

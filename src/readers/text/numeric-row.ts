@@ -25,7 +25,7 @@ export interface NumericRow {
   readonly words: readonly string[];
 }
 
-/** The columns of a line; null for a line with fewer than three numbers. */
+/** The columns of a line, letters of axes between the numbers left out; null for a line with fewer than three numbers. */
 export function numericRow(line: TextLine): NumericRow | null {
   let numbers = 0;
   for (const token of line.tokens) if (token.kind === 'number') numbers++;
@@ -33,8 +33,8 @@ export function numericRow(line: TextLine): NumericRow | null {
   const columns: RowColumn[] = [];
   const axes = /\bx\b/i.test(line.text) && /\bz\b/i.test(line.text);
   for (const token of line.tokens) {
-    if (token.kind === 'mark') continue;
-    columns.push(token.kind === 'number' ? numberColumn(token) : wordColumn(token, axes));
+    if (token.kind === 'mark' || (axes && /^[xyz]$/i.test(token.text))) continue;
+    columns.push(token.kind === 'number' ? numberColumn(token) : wordColumn(token));
   }
   const words = columns.filter(({ kind }) => kind === 'word').map(({ text }) => text.toLowerCase());
   return { line: line.number, text: line.text, columns, key: columns.map(keyOf).join(' '), words };
@@ -52,8 +52,8 @@ function numberColumn({ text, value, start }: TextLine['tokens'][number]): RowCo
   };
 }
 
-function wordColumn({ text, start }: TextLine['tokens'][number], axes: boolean): RowColumn {
-  const found = axes && /^[xyz]$/i.test(text) ? null : elementWord(text);
+function wordColumn({ text, start }: TextLine['tokens'][number]): RowColumn {
+  const found = elementWord(text);
   return {
     kind: found ? 'element' : 'word',
     text,
@@ -92,8 +92,6 @@ function segments(row: NumericRow, width: number, wanted: (column: number) => bo
   let from = -1;
   for (let i = 0; i <= width; i++) {
     const number = i < width && row.columns[i]!.kind === 'number' && wanted(i);
-    const axisWord = i < width && from >= 0 && /^[xyz]$/i.test(row.columns[i]!.text);
-    if (axisWord) continue;
     if (number && from < 0) from = i;
     if (!number && from >= 0) {
       found.push([from, i]);

@@ -79,10 +79,16 @@ export class RowRuns {
     const last = open.rows.at(-1)!.line;
     const gap = row.line - last;
     const id = identity(row);
-    if (open.worded) return gap <= widestGap && (id === '' ? gap <= 2 : !open.identities.has(id));
+    if (open.worded && !/\d/.test(id) && gap <= 2) return true;
+    if (open.worded) return gap <= widestGap && id !== '' && !open.identities.has(id);
     const between = this.#heading.filter(({ line }) => line > last);
     if (gap <= 2 && between.length === 0) return true;
-    if (gap > 5 || open !== this.#lastBare || row.columns.some(({ kind }) => kind === 'element'))
+    if (
+      gap > 5 ||
+      open !== this.#lastBare ||
+      open.headElement === null ||
+      row.columns.some(({ kind }) => kind === 'element')
+    )
       return false;
     const element = soleElement(between.map(({ text }) => text));
     if (element === null) return false;

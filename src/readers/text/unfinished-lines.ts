@@ -14,7 +14,7 @@ const unfinished = [
 ];
 /** Questions, settings and answers in the negative that hold the same words. */
 const harmless =
-  /\bif\b[^.]*\bnot\s+converg|not\s+converged?\s*[:=]\s*(?:no|none|f(?:alse)?|0)\b|\bno\s+unconverged\b|\bnumber of unconverged\D+0\s*$/i;
+  /\bif\b[^.]*\bnot\s+converg|not\s+converged?\s*[:=]\s*(?:no|none|f(?:alse)?|0)\b|[:=]\s*(?:none|no|0|false)\s*$|\bno\s+unconverged\b|\bnumber of unconverged\D+0\s*$/i;
 
 /** Lines that say that a run did not end well, as warnings with their place. */
 export function unfinishedFinder(file: string): LineFinder<Problem[]> {
