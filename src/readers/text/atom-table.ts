@@ -35,8 +35,7 @@ export function atomTable(run: RowRun): AtomTable | null {
   const evidence = coordinateEvidence(wordsBefore(first, offsets[0]!), run.heading);
   const hasElement = first.columns.some(({ kind }) => kind === 'element');
   if (evidence.areCoordinates === 'no') return null;
-  const bare = !hasElement && run.headElements.every((element) => element === null);
-  if (bare && (evidence.areCoordinates === null || run.rows.length < 2)) return null;
+  if (!hasElement && (evidence.areCoordinates === null || run.rows.length < 2)) return null;
   const name = nameColumns(run.rows, offsets, run.heading);
   const rows = run.rows.map((row, i) => atomRow(row, name, offsets, run.headElements[i] ?? null));
   return { line: first.line, rows, evidence, decimals: offsets.map((at) => decimalsAt(run.rows, at)) };

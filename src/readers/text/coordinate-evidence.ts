@@ -13,7 +13,9 @@ export interface CoordinateEvidence {
 }
 
 const coordinates =
-  /co-?ord|posit|\bpos\b|geometr|\bcartes|fract|\bxyz\b|x\s*\/\s*a\b|\bx\b.{0,24}\by\b.{0,24}\bz\b|\bstructure\b|crystallographic|\btau\b|\batoms?\b|\bsites?\b|\bnucle(?:us|i)\b/i;
+  /co-?ord|posit|\bpos\b|geometr|\bcartes|fract|\bxyz\b|x\s*\/\s*a\b|crystallographic|\btau\b/i;
+/** Names of the three axes: with a length unit beside them the numbers are positions, without one they may be anything. */
+const axes = /\bx\b.{0,24}\by\b.{0,24}\bz\b/i;
 const others =
   /forc|gradient|shield|tensor|eigen|sigma|\bprincipal|shift|\bppm\b|veloc|displac|momen|magnet|spin|coupl|\bc_?q\b|polari[sz]|mulliken|hirshfeld|frequen|\bmodes?\b|hyperfine|\befg\b|\bv_?[xyz]{2}\b|\bborn\b|aniso|\beta\b|isotrop|axis|susceptib|stress|dipol|k-?points?|weight|\bMHz\b|reciprocal|\beV\b|charges? *tensor/i;
 const fractional =
@@ -35,7 +37,7 @@ export function coordinateEvidence(row: string, heading: readonly string[]): Coo
     if (line !== row && isData.test(line)) break;
     const saysFrame = frameOf(line);
     const saysUnits = lengthUnits(line);
-    const says = coordinatesOf(line);
+    const says = coordinatesOf(line, saysUnits.length > 0);
     if (frame === null && saysFrame) frame = saysFrame;
     if (units.length === 0) units = saysUnits;
     if (areCoordinates === null) areCoordinates = says ?? (saysFrame ? 'yes' : null);
@@ -53,8 +55,8 @@ function frameOf(line: string): CoordinateEvidence['frame'] {
   return f >= 0 && (c < 0 || f < c) ? 'fractional' : 'cartesian';
 }
 
-function coordinatesOf(line: string): 'yes' | 'no' | null {
-  const p = line.search(coordinates);
+function coordinatesOf(line: string, hasUnit: boolean): 'yes' | 'no' | null {
+  const p = line.search(hasUnit && axes.test(line) ? axes : coordinates);
   const n = line.search(others);
   if (p < 0 && n < 0) return null;
   return p >= 0 && (n < 0 || p < n) ? 'yes' : 'no';
