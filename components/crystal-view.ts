@@ -31,7 +31,7 @@ import type { PicturePanel, ToolsHost } from './picture-tools.ts';
 import { loadPanel, openPanel, pictureTools } from './picture-tools.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
-import { withSubscripts } from './symbol-text.ts';
+import './picture-caption.ts';
 import './spoken-line.ts';
 import type { ViewPanel } from './view-panel.ts';
 import { viewStyles } from './view-styles.ts';
@@ -135,9 +135,10 @@ export class CrystalView extends StoreElement {
         ${openPanel(host)}
       </div>
       ${colourBar(scene)}
-      <p class="caption" id="caption">
-        ${withSubscripts(scene?.caption ?? '')}${scene ? html` <span class="soft">Drawn by ${this.#picture?.drawnBy}.</span>` : nothing}
-      </p>
+      <ellipsite-picture-caption
+        .text=${scene?.caption ?? ''}
+        .drawnBy=${(scene && this.#picture?.drawnBy) ?? null}
+      ></ellipsite-picture-caption>
       ${sampleLine(store?.state.decisions ?? null)}
       <p class="hidden-but-spoken" id="keys">${keysInWords}</p>
       <ellipsite-spoken-line .text=${this.#spoken()}></ellipsite-spoken-line>

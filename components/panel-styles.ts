@@ -34,8 +34,11 @@ export const panelStyles = css`
     display: flex;
     flex-wrap: wrap;
     align-items: center;
-    gap: 2px 10px;
+    gap: 4px 10px;
     min-height: 28px;
+  }
+  .row + .row {
+    margin-top: 4px;
   }
   label {
     display: inline-flex;
@@ -50,6 +53,15 @@ export const panelStyles = css`
   input[type='text'].words {
     width: 15ch;
     text-align: left;
+  }
+  /* a field for words takes what its button leaves */
+  form.row label:has(.words) {
+    flex: 1 1 0;
+    min-width: 0;
+  }
+  form.row label .words {
+    flex: 1 1 0;
+    min-width: 8ch;
   }
   select {
     font-size: 13px;

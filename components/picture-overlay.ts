@@ -1,6 +1,5 @@
 import { html, nothing, svg } from 'lit';
 import type { TemplateResult } from 'lit';
-import { axesEdgePx, axesSquarePx } from '#src/scene/axes-corner.ts';
 import type { PickEntry } from '#src/scene/scene.ts';
 import type { Store } from '#src/store/store.ts';
 import { siteColour } from '#src/store/site-colour.ts';
@@ -50,19 +49,20 @@ export function labelsDrawing({ labels }: PictureOverlay): TemplateResult | type
   )}`;
 }
 
-/** Cell axes in a corner on a plate of paper: lines with letters, the farther ones drawn first. */
+/** Cell axes in a corner: lines with letters, the farther ones drawn first, each with a rim of paper that sets it off from what is behind. */
 export function axesDrawing({ axes }: PictureOverlay): TemplateResult | typeof nothing {
   if (!axes) return nothing;
-  const { leftPx, topPx, widthPx, heightPx } = axes.plate;
-  const half = axesSquarePx / 2;
+  const [x, y] = axes.originPx;
+  const line = ({ xPx, yPx }: { xPx: number; yPx: number }, kind: string): TemplateResult =>
+    svg`<line class=${kind} x1="0" y1="0" x2=${xPx} y2=${yPx}></line>`;
   return html`<svg
     class="axes"
-    viewBox="${-half} ${-half} ${axesSquarePx} ${axesSquarePx}"
+    width="1"
+    height="1"
     aria-hidden="true"
-    .style=${`width: ${axesSquarePx}px; left: ${axesEdgePx}px; ${axes.corner === 'upper left' ? 'top' : 'bottom'}: ${axesEdgePx}px`}
+    .style=${`transform: translate(${x.toFixed(1)}px, ${y.toFixed(1)}px)`}
   >
-    <rect x=${leftPx} y=${topPx} width=${widthPx} height=${heightPx} rx="6"></rect>
-    ${axes.axes.map(({ xPx, yPx }) => svg`<line x1="0" y1="0" x2=${xPx} y2=${yPx}></line>`)}
+    ${axes.axes.map((axis) => line(axis, 'under'))} ${axes.axes.map((axis) => line(axis, ''))}
     ${axes.letters.map(({ letter, xPx, yPx }) => svg`<text x=${xPx} y=${yPx}>${letter}</text>`)}
   </svg>`;
 }

@@ -113,6 +113,11 @@ export const shared = css`
     min-height: 24px;
     min-width: 18px;
   }
+  /* browsers give them uneven margins, which leaves them below their words */
+  input[type='checkbox'],
+  input[type='radio'] {
+    margin: 0 2px;
+  }
   :focus-visible {
     outline: 2px solid var(--accent);
     outline-offset: 1px;

@@ -64,7 +64,8 @@ export const tableStyles = css`
     grid-template-columns: var(--columns);
     column-gap: 8px;
     align-items: center;
-    padding: 0 8px 0 0;
+    /* where the columns leave room for more */
+    padding: 0 clamp(8px, 100% - var(--least), 14px) 0 0;
     border-bottom: 1px solid var(--hairline);
     min-width: var(--least);
     width: 100%;
@@ -109,6 +110,10 @@ export const tableStyles = css`
     z-index: 1;
     align-self: stretch;
     background: var(--paper);
+  }
+  .head [role='columnheader']:first-child {
+    display: flex;
+    align-items: center;
   }
   .site.hovered .name {
     background: linear-gradient(var(--hovered), var(--hovered)), var(--paper);

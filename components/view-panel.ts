@@ -97,8 +97,10 @@ export class ViewPanel extends StoreElement {
             type="checkbox"
             .checked=${this.pivots}
             @change=${(event: Event) => this.#tell('pivots', (event.target as HTMLInputElement).checked)}
-          />turn about the
-          selection${this.hasSelection ? nothing : html` <span class="soft">(nothing is selected)</span>`}</label
+          /><span
+            >turn about the
+            selection${this.hasSelection ? nothing : html` <span class="soft">(nothing is selected)</span>`}</span
+          ></label
         >
       </fieldset>
       <ellipsite-saved-views .store=${store}></ellipsite-saved-views>

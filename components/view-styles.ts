@@ -113,20 +113,26 @@ export const viewStyles = css`
     opacity: 0.75;
   }
   svg.axes {
-    aspect-ratio: 1;
+    left: 0;
+    top: 0;
     overflow: visible;
-  }
-  svg.axes rect {
-    fill: var(--paper);
-    opacity: 0.85;
   }
   svg.axes line {
     stroke: var(--ink);
-    stroke-width: 1.2;
+    stroke-width: 1.3;
     stroke-linecap: round;
+  }
+  svg.axes .under {
+    stroke: var(--paper);
+    stroke-width: 4.5;
+    opacity: 0.85;
   }
   svg.axes text {
     fill: var(--ink);
+    stroke: var(--paper);
+    stroke-width: 3.5;
+    stroke-linejoin: round;
+    paint-order: stroke;
     font-size: 12px;
     font-style: italic;
     text-anchor: middle;
@@ -198,6 +204,27 @@ export const viewStyles = css`
     font-size: 12.5px;
     padding: 2px 16px 0 0;
     max-width: 110ch;
+  }
+  ellipsite-picture-caption {
+    display: flex;
+    align-items: start;
+    margin-right: 8px;
+  }
+  ellipsite-picture-caption .caption {
+    padding-right: 8px;
+    min-width: 0;
+  }
+  ellipsite-picture-caption .folded {
+    overflow: hidden;
+    text-overflow: ellipsis;
+    white-space: nowrap;
+  }
+  ellipsite-picture-caption button {
+    flex: none;
+    min-height: 24px;
+    padding: 0 7px;
+    color: var(--accent);
+    font-size: 12.5px;
   }
   /* beside the picture where there is room, so that one sees what one changes; else over it */
   .panel {

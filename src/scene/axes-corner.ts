@@ -1,13 +1,17 @@
 import type { Camera, Viewport } from './camera.ts';
 import type { FlatAxis } from './axes-letters.ts';
 import { lettersOfAxes } from './axes-letters.ts';
+import type { PictureCorner } from './free-corner.ts';
+import { freeCorner } from './free-corner.ts';
 import type { ScreenBox } from './label-room.ts';
-import { projectAxes, projection, projectPoint } from './project.ts';
+import { projectAxes } from './project.ts';
 import type { Scene } from './scene.ts';
 
 /** The small drawing of the cell axes over the picture, CSS pixels about its origin. */
 export interface CornerAxes {
-  readonly corner: AxesCorner;
+  readonly corner: PictureCorner;
+  /** Where the origin stands in the picture. */
+  readonly originPx: readonly [x: number, y: number];
   readonly axes: readonly (FlatAxis & { readonly depthPx: number })[];
   readonly letters: readonly FlatAxis[];
   /** What lines and letters take, with a margin. */
@@ -16,23 +20,21 @@ export interface CornerAxes {
   readonly keptOff: readonly ScreenBox[];
 }
 
-/** Panels open at the right. */
-export type AxesCorner = 'lower left' | 'upper left';
-
-/** Side of the square in which the drawing stands in every direction, and its distance from the edges, CSS pixels. */
-export const axesSquarePx = 108;
-export const axesEdgePx = 4;
+/** Distance from the picture's edges of the square in which the drawing stands however it is turned, CSS pixels. */
+const edgePx = 4;
 /** Length of an axis in the picture's plane, as a share of the smaller side within bounds: small pictures have a small drawing. */
 const axisShare = 0.08;
 const axisPx = { least: 24, most: 34 } as const;
 const letterPx = 12;
+/** From the end of an axis to the middle of its letter where nothing is in the way, of a letter's size. */
+const letterGapEm = 0.85;
 const marginPx = 3;
 
 export function cornerAxes(
   scene: Scene,
   camera: Camera,
   viewport: Viewport,
-  before: AxesCorner = 'lower left',
+  before: PictureCorner | null = null,
 ): CornerAxes | null {
   const side = Math.min(viewport.widthPx, viewport.heightPx);
   const lengthPx = Math.min(axisPx.most, Math.max(axisPx.least, axisShare * side));
@@ -49,43 +51,32 @@ export function cornerAxes(
     widthPx: Math.max(...xs) + marginPx - left,
     heightPx: Math.max(...ys) + marginPx - top,
   };
-  const corner = emptierCorner(scene, camera, viewport, before);
-  const [x, y] = originOf(corner, viewport);
-  return { corner, axes, letters, plate, keptOff: [{ ...plate, leftPx: left + x, topPx: top + y }] };
-}
-
-function originOf(corner: AxesCorner, { heightPx }: Viewport): readonly [number, number] {
-  const off = axesEdgePx + axesSquarePx / 2;
-  return [off, corner === 'upper left' ? off : heightPx - off];
-}
-
-/** Atoms beyond which the drawing stays where it is, and how many more things must lie in a corner for it to leave. */
-const mostLooked = 5000;
-const worthMoving = 2;
-
-/** Corner with fewer atoms and pieces of cell edges; the one before where it makes little difference, so that it doesn't jump. */
-function emptierCorner(scene: Scene, camera: Camera, viewport: Viewport, before: AxesCorner): AxesCorner {
-  const isLow = viewport.heightPx < 2 * (axesSquarePx + axesEdgePx);
-  const { quadrics, lines } = scene;
-  if (isLow || quadrics.count > mostLooked) return 'lower left';
-  const p = projection(camera, viewport);
-  const far = axesSquarePx + axesEdgePx;
-  const found = { 'lower left': 0, 'upper left': 0 };
-  const look = (x: number, y: number, z: number, weight: number): void => {
-    const { xPx, yPx } = projectPoint(p, [x, y, z]);
-    if (!(xPx >= 0 && xPx <= far && yPx >= 0 && yPx <= viewport.heightPx)) return;
-    if (yPx <= far) found['upper left'] += weight;
-    else if (yPx >= viewport.heightPx - far) found['lower left'] += weight;
+  const stands = ([x, y]: readonly [number, number]): ScreenBox => ({
+    ...plate,
+    leftPx: left + x,
+    topPx: top + y,
+  });
+  const origins = originsIn(viewport, edgePx + lengthPx + letterGapEm * letterPx + half + marginPx);
+  const boxes = {
+    'lower left': stands(origins['lower left']),
+    'upper left': stands(origins['upper left']),
+    'lower right': stands(origins['lower right']),
+    'upper right': stands(origins['upper right']),
   };
-  const c = quadrics.centres;
-  for (let i = 0; i < quadrics.count; i++) look(c[3 * i]!, c[3 * i + 1]!, c[3 * i + 2]!, 1);
-  const { starts, ends } = lines;
-  for (let o = 0; o < 3 * Math.min(lines.count, 200); o += 3) {
-    for (let t = 0; t <= 1; t += 0.05) {
-      const at = (k: number): number => (1 - t) * starts[o + k]! + t * ends[o + k]!;
-      look(at(0), at(1), at(2), 0.3);
-    }
-  }
-  const other = before === 'lower left' ? 'upper left' : 'lower left';
-  return found[before] - found[other] >= worthMoving ? other : before;
+  const corner = freeCorner(scene, camera, viewport, boxes, before);
+  return { corner, originPx: origins[corner], axes, letters, plate, keptOff: [boxes[corner]] };
+}
+
+/** Origins that stand so far off two edges. */
+function originsIn(
+  { widthPx, heightPx }: Viewport,
+  offPx: number,
+): Readonly<Record<PictureCorner, readonly [x: number, y: number]>> {
+  const [right, low] = [widthPx - offPx, heightPx - offPx];
+  return {
+    'lower left': [offPx, low],
+    'upper left': [offPx, offPx],
+    'lower right': [right, low],
+    'upper right': [right, offPx],
+  };
 }

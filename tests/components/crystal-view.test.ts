@@ -65,6 +65,24 @@ describe('the crystal on screen', () => {
     expect([...root.querySelectorAll('svg.axes text')].map(textOf).sort()).toEqual(['a', 'b', 'c']);
   });
 
+  it('folds its caption to one line until more is asked for; all of it describes the picture', async () => {
+    const root = await drawnPage();
+    const words = root.querySelector<HTMLElement>('#caption')!;
+    const folded = textOf(words);
+    const low = words.getBoundingClientRect().height;
+    const more = root.querySelector<HTMLButtonElement>('ellipsite-picture-caption button')!;
+    expect(more.getAttribute('aria-expanded')).toBe('false');
+    more.click();
+    await settle();
+    expect(words.getBoundingClientRect().height).toBeGreaterThan(1.8 * low);
+    expect(textOf(words)).toBe(folded);
+    expect(textOf(more)).toBe('less');
+    more.click();
+    await settle();
+    expect(words.getBoundingClientRect().height).toBe(low);
+    expect(stageOf(root).getAttribute('aria-describedby')).toContain('caption');
+  });
+
   it('turns by arrow keys, looks along an axis by its letter and shows all again', async () => {
     const root = await drawnPage();
     const stage = stageOf(root);
@@ -79,9 +97,12 @@ describe('the crystal on screen', () => {
       .split(' ')
       .map((end) => end.split(',').map((x) => Math.round(Number(x))));
     expect(ends).toHaveLength(3);
+    // small pictures have a small drawing
+    const length = Math.max(...ends.flat());
+    expect(length >= 24 && length <= 34).toBe(true);
     for (const end of [
-      [34, 0],
-      [0, -34],
+      [length, 0],
+      [0, -length],
       [0, 0],
     ]) {
       expect(ends.some(([x, y]) => Math.abs(x! - end[0]!) === 0 && Math.abs(y! - end[1]!) === 0)).toBe(true);
