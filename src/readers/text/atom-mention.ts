@@ -1,0 +1,245 @@
+import { elementOf, elements, symbolOfAtomicNumber } from '#src/data/elements.ts';
+import { componentOf } from './component-name.ts';
+import type { TextLine, TextToken } from './text-line.ts';
+
+/** An atom named by a line of a text. */
+export interface AtomMention {
+  /** As one word stands in the text (`Si1`, `O2a`); null where element and number stand apart. */
+  readonly label: string | null;
+  readonly element: string | null;
+  /** Number as printed: from 0 or 1, within the element or over all atoms. */
+  readonly index: number | null;
+  /** True for a point without a nucleus. */
+  readonly isGhost: boolean;
+  /** Index past the last token that belongs to the name. */
+  readonly end: number;
+  /** True where the line says that it is an atom, rather than only a symbol and a number. */
+  readonly isSure: boolean;
+}
+
+const byName: ReadonlyMap<string, string> = new Map(elements.map(({ name, symbol }) => [name, symbol]));
+const keywords =
+  /^(?:atom|atoms|ion|site|nucleus|nuc|nuclear|center|centre|position|at|species|label|id|element|kind|symbol|type)s?$|^(?:no|nr|n|index|number|num)$/i;
+const strongKeywords = /^(?:atom|ion|site|nucleus|center|centre)$/i;
+const gluedLabel = /^([A-Z][a-z]?|[a-z]{1,2})_?(\d{1,5})([A-Za-z'_]{0,3})$/;
+const countedSymbol = /^(\d{1,5})([A-Z][a-z]?)$/;
+const keywordGlued = /^(?:atom|ion|site|nucleus|center|centre)_?(\d{1,5})$/i;
+const ghosts = /^(?:bq|gh|ghost|xx|x|dummy)_?(\d*)$/i;
+/** Symbols that are also words or letters of formulas: they need an atom's number beside them. */
+const unlikely = new Set([
+  'T',
+  'No',
+  'In',
+  'As',
+  'At',
+  'Be',
+  'He',
+  'I',
+  'Os',
+  'Am',
+  'Pa',
+  'Pm',
+  'Es',
+  'Ra',
+  'Re',
+  'Se',
+  'Th',
+  'La',
+  'Ne',
+  'Mo',
+]);
+
+/** Tokens of a line that are looked at for a name. */
+const searched = 24;
+
+/** Symbol that a word spells exactly: `Si`, `SI` (two capitals), or the element's name. */
+export function symbolOf(text: string): string | null {
+  if (text.length <= 2) {
+    if (!/^[A-Z][a-z]?$|^[A-Z]{2}$/.test(text)) return null;
+    return elementOf(text)?.symbol ?? null;
+  }
+  return byName.get(text.toLowerCase()) ?? null;
+}
+
+/** True for a word that is an element's symbol or an atom's label. */
+export function isAtomWord(text: string): boolean {
+  const glued = gluedLabel.exec(text)?.[1] ?? countedSymbol.exec(text)?.[2];
+  return (
+    symbolOf(text) !== null || (glued !== undefined && /^[A-Z]/.test(glued) && elementOf(glued) !== null)
+  );
+}
+
+export function isWholeNumber(token: TextToken | undefined): boolean {
+  return token?.kind === 'number' && /^\d{1,6}$/.test(token.text);
+}
+
+const between = /^[#:,.\-="'([<>{|/]$/;
+
+/** Next token that is no mark, at most three marks on; its index or −1. */
+function beyondMarks(tokens: readonly TextToken[], from: number, step: 1 | -1): number {
+  for (let at = from, seen = 0; at >= 0 && at < tokens.length && seen < 4; at += step, seen++) {
+    const token = tokens[at]!;
+    if (token.kind !== 'mark') return at;
+    if (!between.test(token.text) && !(step === -1 && /^[)\]]$/.test(token.text))) return -1;
+  }
+  return -1;
+}
+
+/** The number of an atom at or next to token `at`, in the given direction; null where none stands there. */
+function numberBeside(
+  tokens: readonly TextToken[],
+  at: number,
+  step: 1 | -1,
+): { value: number; at: number } | null {
+  const found = beyondMarks(tokens, at, step);
+  const token = tokens[found];
+  if (found < 0 || !isWholeNumber(token)) return null;
+  return { value: token!.value, at: found };
+}
+
+/** The atom a line names, or null. `data` is true for a row of numbers, where a symbol alone counts at its beginning. */
+export function atomMention(line: TextLine): AtomMention | null {
+  const { tokens } = line;
+  const limit = Math.min(tokens.length, searched);
+  let words = 0;
+  for (const token of tokens) if (token.kind === 'word') words++;
+  const keyword = tokens.findIndex(({ kind, text }) => kind === 'word' && strongKeywords.test(text));
+  if (words > 14 && keyword !== 0) return null;
+  let seen = 0;
+  for (let at = 0; at < limit; at++) {
+    const token = tokens[at]!;
+    if (token.kind !== 'word') continue;
+    const found = mentionAt(tokens, at, seen, words, keyword >= 0 && keyword <= at);
+    if (found) return withCharge(tokens, found);
+    seen++;
+  }
+  return alone(tokens, words);
+}
+
+/** `1.234 …` rows that begin with a symbol only: `Si 432.5 0.58 …`, or a line that is nothing but a symbol. */
+function alone(tokens: readonly TextToken[], words: number): AtomMention | null {
+  const first = tokens.findIndex(({ kind }) => kind !== 'mark');
+  const element = first >= 0 && tokens[first]!.kind === 'word' ? symbolOf(tokens[first]!.text) : null;
+  if (element === null || words > 2) return null;
+  const label = tokens[first]!.text;
+  return { label, element, index: null, isGhost: false, end: first + 1, isSure: false };
+}
+
+function mentionAt(
+  tokens: readonly TextToken[],
+  at: number,
+  seen: number,
+  words: number,
+  named: boolean,
+): AtomMention | null {
+  const { text } = tokens[at]!;
+  const isEarly = seen < 4 || named || /["'=>]/.test(tokens[at - 1]?.text ?? '');
+  if (componentOf(text) && !elementOf(text.replace(/\d+$/, ''))) return null;
+  const numbered = keywordGlued.exec(text);
+  if (numbered) return { ...blank, index: Number(numbered[1]), end: at + 1, isSure: true };
+  const ghost = ghosts.exec(text);
+  if (ghost && (text.length > 1 || named) && isEarly) {
+    const index = ghost[1]
+      ? Number(ghost[1])
+      : (numberBeside(tokens, at + 1, 1) ?? numberBeside(tokens, at - 1, -1))?.value;
+    if (index !== undefined || /^(?:bq|gh|ghost)/i.test(text)) {
+      return { ...blank, label: text, index: index ?? null, isGhost: true, end: at + 1, isSure: named };
+    }
+  }
+  if (isEarly) {
+    const found = gluedName(text, at, words) ?? countedName(tokens, at);
+    if (found) return { ...found, isSure: named };
+    const element = symbolOf(text);
+    if (element !== null) return beside(tokens, at, element, named, words);
+  }
+  if (strongKeywords.test(text)) return afterKeyword(tokens, at);
+  return null;
+}
+
+const blank: AtomMention = { label: null, element: null, index: null, isGhost: false, end: 0, isSure: false };
+
+function gluedName(text: string, at: number, words: number): AtomMention | null {
+  const parts = gluedLabel.exec(text);
+  if (!parts || words > 10) return null;
+  if (/^[a-z]/.test(text) && /^(?:a|b|c|v|s|p|d|f|k|n|h|i|u|w|y)\d/.test(text)) return null;
+  const symbol = parts[1] ?? '';
+  if (/^[VST][123][123]$|^V2[012]$/.test(text) || symbol === 'T') return null;
+  const found = elementOf(symbol)?.symbol;
+  if (!found) return null;
+  return { ...blank, label: text, element: found, index: Number(parts[2]), end: at + 1 };
+}
+
+/** `3Si`, and `27Al 3` where the number in front is the nuclide's. */
+function countedName(tokens: readonly TextToken[], at: number): AtomMention | null {
+  const parts = countedSymbol.exec(tokens[at]!.text);
+  const element = parts && elementOf(parts[2] ?? '')?.symbol;
+  if (!element) return null;
+  const after = numberBeside(tokens, at + 1, 1);
+  if (after && Number(parts[1]) > 0) return { ...blank, element, index: after.value, end: after.at + 1 };
+  return { ...blank, label: tokens[at]!.text, element, index: Number(parts[1]), end: at + 1 };
+}
+
+function beside(
+  tokens: readonly TextToken[],
+  at: number,
+  element: string,
+  named: boolean,
+  words: number,
+): AtomMention | null {
+  const after = numberBeside(tokens, at + 1, 1);
+  const before = numberBeside(tokens, at - 1, -1);
+  if (words > 8 && !named) return null;
+  if (before && (at - 1 === before.at || named || !after)) {
+    return { ...blank, element, index: before.value, end: at + 1, isSure: named };
+  }
+  if (after) {
+    if (unlikely.has(element) && words > 3 && !named) return null;
+    return { ...blank, element, index: after.value, end: after.at + 1, isSure: named };
+  }
+  // "Atom H   H   1": the symbol stands twice.
+  const twice = tokens[at + 1];
+  if (twice?.kind === 'word' && twice.text === tokens[at]!.text) return null;
+  return named && !unlikely.has(element)
+    ? { ...blank, label: tokens[at]!.text, element, end: at + 1, isSure: true }
+    : null;
+}
+
+/** `atom 3`, `nucleus no. 3 (Si)`, `site: 2`. */
+function afterKeyword(tokens: readonly TextToken[], at: number): AtomMention | null {
+  let next = beyondMarks(tokens, at + 1, 1);
+  if (next < 0) return null;
+  if (tokens[next]!.kind === 'word' && keywords.test(tokens[next]!.text))
+    next = beyondMarks(tokens, next + 1, 1);
+  const token = tokens[next];
+  if (!isWholeNumber(token)) return null;
+  for (let i = next + 1; i < Math.min(tokens.length, next + 4); i++) {
+    const text = tokens[i]!.text;
+    if (tokens[i]!.kind !== 'word') continue;
+    const glued = gluedName(text, i, 1);
+    if (glued) return { ...glued, index: glued.index, isSure: true };
+    const element = symbolOf(text);
+    if (element !== null) return { ...blank, element, index: token!.value, end: i + 1, isSure: true };
+    if (/^(?:bq|gh|ghost|dummy)$/i.test(text)) {
+      return { ...blank, label: text, index: token!.value, isGhost: true, end: i + 1, isSure: true };
+    }
+    break;
+  }
+  return { ...blank, index: token!.value, end: next + 1, isSure: true };
+}
+
+/** Element by a nuclear charge on the same line, where no symbol gives it. */
+function withCharge(tokens: readonly TextToken[], found: AtomMention): AtomMention {
+  if (found.element !== null || found.isGhost) return found;
+  const at = tokens.findIndex(({ text }) => /^(?:charge|z|zatom|znuc)$/i.test(text));
+  if (at < found.end - 1 || at < 0) return found;
+  const value = tokens.slice(at + 1, at + 4).find(({ kind }) => kind === 'number')?.value;
+  if (value === undefined || !Number.isInteger(value)) return found;
+  if (value === 0) return { ...found, isGhost: true };
+  return { ...found, element: symbolOfAtomicNumber(value) };
+}
+
+/** A key that is the same for the same atom as the text names it. */
+export function atomKey({ label, element, index, isGhost }: AtomMention): string {
+  if (label !== null && index === null) return `${label}`;
+  return `${isGhost ? 'ghost' : (element ?? '')}:${index ?? ''}:${label?.replace(/^[^A-Za-z]*[A-Za-z_]+\d*/, '') ?? ''}`;
+}

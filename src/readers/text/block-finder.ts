@@ -1,0 +1,135 @@
+import type { AtomMention } from './atom-mention.ts';
+import { atomKey } from './atom-mention.ts';
+import type { DataRow } from './data-row.ts';
+import type { Surroundings } from './text-context.ts';
+import type { TensorSeed } from './tensor-seed.ts';
+
+interface BlockRow {
+  readonly row: DataRow;
+  readonly values: readonly number[];
+  /** Number printed before the three, such as the row's or the atom's. */
+  readonly index: number | null;
+}
+
+/** Rows of one run that are kept: a list that is longer is no tensor unless its rows are marked. */
+const longestRun = 4;
+
+/** Width of a block beside which others may stand: three, six or nine numbers on each of three lines. */
+function asBlockRow(row: DataRow): BlockRow | null {
+  const { values, wholes } = row;
+  if (row.words > 6) return null;
+  const spare = values.length % 3;
+  if (values.length < 3 || values.length > 10 || spare === 2) return null;
+  if (spare === 1) {
+    if (wholes < 1) return null;
+    return { row, values: values.slice(1), index: values[0] ?? null };
+  }
+  return { row, values, index: null };
+}
+
+/** Finds three neighbouring rows of three numbers (or of six or nine: blocks side by side). */
+export class BlockFinder {
+  readonly #emit: (seed: TensorSeed) => void;
+  readonly #surroundings: (line: number) => Surroundings;
+  #rows: BlockRow[] = [];
+  #length = 0;
+  #start: Surroundings | null = null;
+
+  constructor(emit: (seed: TensorSeed) => void, surroundings: (line: number) => Surroundings) {
+    this.#emit = emit;
+    this.#surroundings = surroundings;
+  }
+
+  /** True where the line is a row that continues or begins a run. */
+  take(row: DataRow | null): boolean {
+    const next = row && asBlockRow(row);
+    if (!next) {
+      this.close();
+      return false;
+    }
+    if (this.#rows.length > 0 && this.#beginsAnew(next)) this.close();
+    if (this.#length === 0) this.#start = this.#surroundings(next.row.line);
+    this.#length++;
+    if (this.#rows.length < longestRun) this.#rows.push(next);
+    return true;
+  }
+
+  /** A row that names an atom of its own, or the axis x again, or has another width, begins another block. */
+  #beginsAnew(next: BlockRow): boolean {
+    const last = this.#rows[this.#rows.length - 1]!;
+    if (last.values.length !== next.values.length) return true;
+    const [first] = this.#rows;
+    if (next.row.axis === 0 && last.row.axis !== 0) return true;
+    const [own, before] = [next.row.atom, first!.row.atom];
+    if (own !== null && before !== null) return next.row.axis === null && atomKey(own) !== atomKey(before);
+    return own !== null && this.#length >= 3;
+  }
+
+  close(): void {
+    const [rows, length, start] = [this.#rows, this.#length, this.#start];
+    this.#rows = [];
+    this.#length = 0;
+    this.#start = null;
+    if (length !== 3 || rows.length !== 3 || start === null || !areAlike(rows)) return;
+    const atom = atomOf(rows) ?? start.atom;
+    const width = rows[0]!.values.length / 3;
+    for (let part = 0; part < width; part++) {
+      const values = rows.flatMap(({ values: all }) => all.slice(part * 3, part * 3 + 3));
+      this.#emit({
+        shape: 'block',
+        line: rows[0]!.row.line,
+        lastLine: rows[2]!.row.line,
+        values,
+        sixes: null,
+        atom,
+        lead: leadOf(rows),
+        texts: rows.map(({ row }) => row.text),
+        isWhole: rows.every(({ row }) => row.isWhole),
+        beside: width > 1 ? { part, of: width } : null,
+        surroundings: start,
+      });
+    }
+  }
+}
+
+function leadOf(rows: readonly BlockRow[]): string {
+  return rows[1]!.row.words === 0 ? rows[0]!.row.lead : rows[1]!.row.lead;
+}
+
+/** Rows two and three must look like one another, and the first too, but for the atom's name before it. */
+function areAlike(rows: readonly BlockRow[]): boolean {
+  const [first, second, third] = rows as [BlockRow, BlockRow, BlockRow];
+  const axes = rows.map(({ row }) => row.axis);
+  if (axes[1] !== null || axes[2] !== null)
+    return axes[1] === 1 && axes[2] === 2 && (axes[0] === 0 || axes[0] === null);
+  if (second.row.lead !== third.row.lead) return false;
+  const sameLead = first.row.lead === second.row.lead;
+  const atoms = rows.map(({ row }) => row.atom);
+  const distinct = new Set(atoms.filter((atom) => atom !== null).map((atom) => atomKey(atom)));
+  if (distinct.size > 1) return false;
+  if (!sameLead && first.row.words === 0) return false;
+  if (second.row.words > 0 && !sameLead) return false;
+  const numbers = rows.map(({ index }) => index);
+  if (numbers.every((n) => n !== null)) {
+    const counted = numbers[0] === 1 && numbers[1] === 2 && numbers[2] === 3;
+    return counted || (numbers[0] === numbers[1] && numbers[1] === numbers[2]);
+  }
+  return numbers[1] === null && numbers[2] === null;
+}
+
+function atomOf(rows: readonly BlockRow[]): AtomMention | null {
+  const named = rows.find(
+    ({ row }) => row.atom !== null && (row.atom.index !== null || row.atom.isSure || row.atom.label !== null),
+  );
+  const atom = named?.row.atom ?? null;
+  const [first, second] = rows as [BlockRow, BlockRow];
+  if (first.index !== null && second.index === null) {
+    return atom
+      ? { ...atom, index: atom.index ?? first.index }
+      : { label: null, element: null, index: first.index, isGhost: false, end: 0, isSure: true };
+  }
+  if (first.index !== null && first.index === second.index && atom === null) {
+    return { label: null, element: null, index: first.index, isGhost: false, end: 0, isSure: true };
+  }
+  return atom;
+}

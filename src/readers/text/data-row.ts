@@ -1,0 +1,78 @@
+import type { AtomMention } from './atom-mention.ts';
+import { atomMention, isAtomWord, isWholeNumber } from './atom-mention.ts';
+import { axisOf } from './component-name.ts';
+import type { TextLine, TextToken } from './text-line.ts';
+
+/** The run of numbers a line ends with, and what stands before it. */
+export interface DataRow {
+  readonly line: number;
+  readonly values: readonly number[];
+  /** Column at which each number ends, for alignment with a header. */
+  readonly ends: readonly number[];
+  /** Number of leading values that are whole numbers without a sign, such as an atom's number. */
+  readonly wholes: number;
+  readonly atom: AtomMention | null;
+  /** Axis the row is named by, from 0. */
+  readonly axis: number | null;
+  /** Words before the numbers, in lower case without digits: the same for rows of one kind. */
+  readonly lead: string;
+  readonly words: number;
+  /** True where every number is a whole one. */
+  readonly isWhole: boolean;
+  /** Columns of all tokens of the line that carry content, for tables with a header. */
+  readonly text: string;
+}
+
+const insideRun = /^[,;|()[\]{}"'&<>/]$/;
+const unitWord =
+  /^(?:ppm|au|a|mhz|khz|ev|deg|angstrom|ang|bohr|v|m|units?|row|v|tr|td|r|tensor|value|item|comp|matrix|line|real|float|double|p|li|cell|c)$/i;
+
+function isTail(token: TextToken): boolean {
+  if (token.kind === 'mark') return true;
+  return token.kind === 'word' && unitWord.test(token.text);
+}
+
+/** Splits a line into what names it and the numbers it ends with; null where it ends with none. */
+export function dataRow(line: TextLine): DataRow | null {
+  const { tokens } = line;
+  let end = tokens.length - 1;
+  while (end >= 0 && isTail(tokens[end]!)) end--;
+  if (end < 0 || tokens[end]!.kind !== 'number') return null;
+  let start = end;
+  const run: TextToken[] = [];
+  for (let at = end; at >= 0; at--) {
+    const token = tokens[at]!;
+    if (token.kind === 'number') {
+      run.unshift(token);
+      start = at;
+    } else if (token.kind !== 'mark' || !insideRun.test(token.text)) break;
+  }
+  const prefix = tokens.slice(0, start);
+  const firstTag = prefix.filter(({ kind }) => kind === 'word');
+  const words = firstTag.length;
+  let wholes = 0;
+  while (wholes < run.length && isWholeNumber(run[wholes])) wholes++;
+  return {
+    line: line.number,
+    values: run.map(({ value }) => value),
+    ends: run.map((token) => token.start + token.text.length),
+    wholes,
+    isWhole: run.every(({ text }) => !/[.eEdD*nN]/.test(text)),
+    atom: words === 0 ? null : atomMention({ ...line, tokens: tokens.slice(0, start + Math.min(wholes, 1)) }),
+    axis: rowAxis(firstTag),
+    lead: firstTag
+      .flatMap(({ text }) => (isAtomWord(text) ? [] : [text.toLowerCase().replace(/\d+/g, '#')]))
+      .join(' '),
+    words,
+    text: line.text,
+  };
+}
+
+function rowAxis(words: readonly TextToken[]): number | null {
+  const last = words[words.length - 1];
+  if (!last) return null;
+  const own = axisOf(last.text);
+  if (own !== null) return own;
+  const glued = /^[A-Z][a-z]?\d+_?([xyz])$/.exec(last.text);
+  return glued ? 'xyz'.indexOf(glued[1] ?? '') : null;
+}

@@ -1,0 +1,191 @@
+import { atomKey, atomMention } from './atom-mention.ts';
+import type { AtomMention } from './atom-mention.ts';
+import { BlockFinder } from './block-finder.ts';
+import type { DataRow } from './data-row.ts';
+import { dataRow } from './data-row.ts';
+import type { LineMeaning } from './line-meaning.ts';
+import { NamedFinder } from './named-finder.ts';
+import { PrincipalFinder } from './principal-finder.ts';
+import { areOrthonormal } from './principal-tensor.ts';
+import { digitsOf, printedIn } from './printed-values.ts';
+import type { NearLine, PrintedValue, RawTensor } from './raw-tensor.ts';
+import { rowTensor } from './row-finder.ts';
+import type { TablePrinted } from './table-finder.ts';
+import { TableFinder } from './table-finder.ts';
+import type { TensorSeed } from './tensor-seed.ts';
+import { TextContext } from './text-context.ts';
+import type { LineFinder, TextLine } from './text-line.ts';
+import { tokenise } from './tokenise.ts';
+
+/** Tensors of one text that are kept; of more, only the number is told. */
+export const mostTensors = 400_000;
+/** Values printed between two tensors that are kept. */
+const keptPrinted = 20;
+
+/** `units efg au`: the unit of everything that a keyword names. */
+export interface UnitLine {
+  readonly words: readonly string[];
+  readonly unit: NonNullable<LineMeaning['unit']>;
+  readonly line: number;
+  readonly text: string;
+}
+
+/** All that looks like a tensor in a text, undecided. */
+export interface TensorSightings {
+  readonly tensors: readonly RawTensor[];
+  readonly tablePrinted: readonly TablePrinted[];
+  readonly unitLines: readonly UnitLine[];
+  /** Sightings that were not kept. */
+  readonly leftOut: number;
+}
+
+/** Finds whatever stands in a tensor's pattern, by shape only. */
+export function tensorFinder(): LineFinder<TensorSightings> {
+  return new TensorFinder();
+}
+
+class TensorFinder implements LineFinder<TensorSightings> {
+  readonly #context = new TextContext();
+  readonly #tensors: RawTensor[] = [];
+  readonly #tablePrinted: TablePrinted[] = [];
+  readonly #unitLines: UnitLine[] = [];
+  #pending: { key: string | null; value: PrintedValue }[] = [];
+  #leftOut = 0;
+  readonly #blocks = new BlockFinder(
+    (seed) => this.#emit(seed),
+    (line) => this.#context.surroundings(line),
+  );
+  readonly #named = new NamedFinder((seed) => this.#emit(seed), this.#context);
+  readonly #principal = new PrincipalFinder((seed) => this.#emit(seed), this.#context);
+  readonly #table = new TableFinder(
+    (seed) => this.#emit(seed),
+    (found) => {
+      if (this.#tablePrinted.length < mostTensors) this.#tablePrinted.push(found);
+    },
+    this.#context,
+  );
+
+  take(line: TextLine): void {
+    const row = line.tokens.length === 0 ? null : dataRow(line);
+    const inTable = this.#table.take(line, row);
+    const isNamed = !inTable && this.#named.take(line);
+    const isRow = !inTable && !isNamed && row !== null && this.#takeRow(row);
+    this.#blocks.take(inTable || isNamed || isRow ? null : row);
+    if (inTable || isNamed) return;
+    this.#principal.take(line, row);
+    this.#context.note(line, row);
+    this.#keepUnit(line, this.#context.lastMeaning);
+    this.#keepPrinted(line);
+  }
+
+  #takeRow(row: DataRow): boolean {
+    const seed = rowTensor(row, this.#context);
+    if (seed) this.#emit(seed);
+    return seed !== null;
+  }
+
+  #keepPrinted(line: TextLine): void {
+    const atom = this.#context.atomAt(line.number);
+    for (const value of printedIn(line.text, line.number)) {
+      this.#pending.push({ key: atom && atomKey(atom), value });
+      if (this.#pending.length > keptPrinted) this.#pending.shift();
+    }
+  }
+
+  #keepUnit(line: TextLine, meaning: LineMeaning | null): void {
+    if (meaning === null || meaning.unit === null || this.#unitLines.length > 200) return;
+    const words = line.tokens.filter(({ kind }) => kind === 'word').map(({ text }) => text.toLowerCase());
+    if (words.length > 6 || !words.some((word) => /^units?$/.test(word))) return;
+    this.#unitLines.push({
+      words,
+      unit: meaning.unit,
+      line: line.number,
+      text: line.text.trim().slice(0, 120),
+    });
+  }
+
+  #emit(seed: TensorSeed): void {
+    const raw = rawOf(seed);
+    const last = this.#tensors[this.#tensors.length - 1];
+    const [own, before] = [raw.atom && atomKey(raw.atom), last?.atom ? atomKey(last.atom) : undefined];
+    for (const { key, value } of this.#pending) {
+      if (key === own || key === null) raw.printed.push(value);
+      if (last && key === before && value.line > last.line) last.printed.push(value);
+    }
+    this.#pending = [];
+    this.#context.passTensor();
+    if (this.#tensors.length < mostTensors) this.#tensors.push(raw);
+    else this.#leftOut++;
+  }
+
+  finish(): TensorSightings {
+    this.#blocks.close();
+    this.#named.close();
+    this.#table.close();
+    const last = this.#tensors[this.#tensors.length - 1];
+    if (last)
+      last.printed.push(
+        ...this.#pending.filter(({ value }) => value.line > last.line).map(({ value }) => value),
+      );
+    return {
+      tensors: this.#tensors,
+      tablePrinted: this.#tablePrinted,
+      unitLines: this.#unitLines,
+      leftOut: this.#leftOut,
+    };
+  }
+}
+
+function rawOf(seed: TensorSeed): RawTensor {
+  const { near, atom, lead } = seed.beside
+    ? ofPart(seed, seed.beside)
+    : { near: seed.surroundings.near, atom: seed.atom, lead: seed.lead };
+  const isDirections =
+    seed.values.every(Number.isFinite) && seed.shape === 'block' && areOrthonormal(seed.values);
+  return {
+    shape: seed.shape,
+    line: seed.line,
+    lastLine: seed.lastLine,
+    values: seed.values,
+    sixes: seed.sixes,
+    atom,
+    lead,
+    near,
+    far: seed.surroundings.far,
+    printed: [],
+    digits: mostDigits(seed.texts),
+    looks: isDirections ? 'directions' : seed.isWhole ? 'whole numbers' : 'tensor',
+  };
+}
+
+/** Of blocks side by side each has its own piece of the line above, which may name its atom or its kind. */
+function ofPart(
+  { surroundings, atom, lead }: TensorSeed,
+  { part, of }: NonNullable<TensorSeed['beside']>,
+): { near: readonly NearLine[]; atom: AtomMention | null; lead: string } {
+  for (let at = surroundings.near.length - 1; at >= Math.max(0, surroundings.near.length - 3); at--) {
+    const line = surroundings.near[at]!;
+    const pieces = line.text
+      .trim()
+      .split(/\s{3,}|\t+|\s*\|\s*/)
+      .filter((piece) => piece !== '');
+    if (pieces.length !== of) continue;
+    const text = pieces[part]!;
+    const own = atomMention(tokenise(text, line.number));
+    const near = [
+      ...surroundings.near,
+      { number: line.number, text, meaning: new TextContext().meaningOf(text) },
+    ];
+    return { near, atom: own ?? atom, lead: own ? lead : `${lead} part ${part + 1}` };
+  }
+  return { near: surroundings.near, atom, lead: `${lead} part ${part + 1}` };
+}
+
+function mostDigits(texts: readonly string[]): number {
+  let most = 0;
+  for (const text of texts) {
+    for (const match of text.matchAll(/\d*\.\d*(?:[eEdD][+-]?\d+)?/g))
+      most = Math.max(most, digitsOf(match[0]));
+  }
+  return most;
+}

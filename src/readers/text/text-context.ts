@@ -1,0 +1,140 @@
+import type { AtomMention } from './atom-mention.ts';
+import { atomMention } from './atom-mention.ts';
+import type { DataRow } from './data-row.ts';
+import type { LineMeaning } from './line-meaning.ts';
+import { isTelling, lineMeaning } from './line-meaning.ts';
+import type { NearLine } from './raw-tensor.ts';
+import type { TextLine } from './text-line.ts';
+
+/** Lines with words that are kept between two tensors. */
+const keptNear = 14;
+/** Telling lines kept from further up. */
+const keptFar = 12;
+/** Lines after which an atom that was named is no longer meant. */
+const atomHolds = 60;
+
+/** What stands above numbers when they come. */
+export interface Surroundings {
+  readonly atom: AtomMention | null;
+  readonly near: readonly NearLine[];
+  readonly far: readonly NearLine[];
+}
+
+function isSame(a: AtomMention, b: AtomMention): boolean {
+  const elements = a.element === null || b.element === null || a.element === b.element;
+  const numbers = a.index === null || b.index === null || a.index === b.index;
+  return elements && numbers;
+}
+
+/**
+ * Remembers the last lines with words and the atom that was named last. Rows of a list of atoms introduce nothing: two
+ * neighbouring lines that name different atoms name none for what follows.
+ */
+export class TextContext {
+  #near: NearLine[] = [];
+  #far: NearLine[] = [];
+  #atom: AtomMention | null = null;
+  #atomLine = 0;
+  #lastMention: AtomMention | null = null;
+  #mentionLine = 0;
+  #farShared: readonly NearLine[] = [];
+
+  /** Meaning of the last line that was noted. */
+  lastMeaning: LineMeaning | null = null;
+
+  /** Takes note of a line that holds no part of a tensor. */
+  note(line: TextLine, row: DataRow | null): void {
+    this.lastMeaning = null;
+    if (line.tokens.length === 0) return;
+    this.#noteAtom(line);
+    if (row !== null && row.values.length >= 3 && row.words <= 2) return;
+    const hasWords = line.tokens.some(({ kind }) => kind === 'word');
+    if (!hasWords) return;
+    const text = line.text.length > 300 ? line.text.slice(0, 300) : line.text;
+    const meaning = lineMeaning(text);
+    this.lastMeaning = meaning;
+    this.#near.push({ number: line.number, text: text.trim(), meaning });
+    if (this.#near.length > keptNear) this.#toFar(this.#near.shift()!);
+  }
+
+  #noteAtom(line: TextLine): void {
+    const mention = atomMention(line);
+    if (mention === null) return;
+    const neighbours = this.#mentionLine === line.number - 1;
+    const isList = neighbours && this.#lastMention !== null && !isSame(mention, this.#lastMention);
+    this.#lastMention = mention;
+    this.#mentionLine = line.number;
+    if (
+      !isList &&
+      this.#atom !== null &&
+      line.number - this.#atomLine <= atomHolds &&
+      isSame(mention, this.#atom)
+    ) {
+      this.#atom = merged(this.#atom, mention);
+    } else this.#atom = isList ? null : mention;
+    this.#atomLine = line.number;
+  }
+
+  #toFar(line: NearLine): void {
+    if (!isTelling(line.meaning)) return;
+    this.#far = [...this.#far.slice(-(keptFar - 1)), line];
+    this.#farShared = this.#far;
+  }
+
+  /** The atom that numbers in this line would belong to. */
+  atomAt(line: number): AtomMention | null {
+    return line - this.#atomLine <= atomHolds ? this.#atom : null;
+  }
+
+  /** The atom that was named at most so many lines above. */
+  atomWithin(line: number, lines: number): AtomMention | null {
+    return line - this.#atomLine <= lines ? this.#atom : null;
+  }
+
+  /** A row of a tensor names its own atom: nothing further up is meant any more. */
+  forgetAtom(): void {
+    this.#atom = null;
+  }
+
+  surroundings(line: number): Surroundings {
+    return {
+      atom: this.atomAt(line),
+      near: this.#near.length === 0 ? none : [...this.#near],
+      far: this.#farShared,
+    };
+  }
+
+  meaningOf(text: string): LineMeaning {
+    return lineMeaning(text);
+  }
+
+  /** After a tensor: what stood above it is further up now. */
+  passTensor(): void {
+    for (const line of this.#near) this.#toFar(line);
+    this.#near = [];
+  }
+
+  /** Nearest line that names a quantity or a decoy. */
+  nearestTopic(): NearLine | null {
+    for (const list of [this.#near, this.#far]) {
+      for (let at = list.length - 1; at >= 0; at--) {
+        const { meaning } = list[at]!;
+        if (meaning.quantity !== null || meaning.decoy !== null) return list[at]!;
+      }
+    }
+    return null;
+  }
+}
+
+const none: readonly NearLine[] = [];
+
+function merged(a: AtomMention, b: AtomMention): AtomMention {
+  return {
+    ...a,
+    label: a.label ?? b.label,
+    element: a.element ?? b.element,
+    index: a.index ?? b.index,
+    isGhost: a.isGhost || b.isGhost,
+    isSure: a.isSure || b.isSure,
+  };
+}
