@@ -82,6 +82,17 @@ it('rows 1 to 4 and 6: frames by the CPU renderer, by WebGL in software, by an i
   for (const { webgl, raster } of asFirstShown) expect(webgl).toBeGreaterThan(raster);
 });
 
+it('row 4: our WebGL frame against an instanced version of itself', async () => {
+  const { merged, instanced } = await page.evaluate(() => window.instancingTimes(10_000, 5));
+  console.log({ merged, instanced });
+  recordResult('webgl-instancing', {
+    ellipsoids: 10_000,
+    loadWhenMeasured: loadavg()[0]!,
+    instancedTimesOfMerged: instanced / merged,
+  });
+  expect(instanced).toBeGreaterThan(merged);
+});
+
 it('row 5: a still of 4096 × 4096 with 2 × 2 samples by the CPU against WebGL without', async () => {
   const { raster, webgl } = await page.evaluate(() => window.stillTimes(4096));
   console.log({ raster, webgl });

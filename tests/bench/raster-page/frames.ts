@@ -9,6 +9,7 @@ import type { Scene } from '#src/scene/scene.ts';
 import { lightTheme } from '#src/scene/theme.ts';
 import { askew, randomScene } from '#tests/support/raster-scene.ts';
 import { instancedMesh } from './instanced-mesh.ts';
+import { instancedQuadrics } from './instanced-quadrics.ts';
 
 /** Milliseconds of a frame by each way, the least of the rounds; NaN where a way was left out. */
 export interface FrameTimes {
@@ -177,14 +178,42 @@ async function glyphTimes(count: number, labelCount: number, rounds: number): Pr
   return best;
 }
 
+/** Milliseconds of a WebGL frame as we draw it and with instances, the least of the rounds, in turn. */
+async function instancingTimes(
+  count: number,
+  rounds: number,
+): Promise<{ readonly merged: number; readonly instanced: number }> {
+  const scene = randomScene(count, 1, 0);
+  const [mergedCanvas, instancedCanvas] = [newCanvas(1600, 900), newCanvas(1600, 900)];
+  const webgl = createCrystalRenderer(mergedCanvas, { samplesAcross: 1 });
+  webgl.resize(1600, 900, 1);
+  webgl.setScene(scene);
+  const drawInstanced = instancedQuadrics(instancedCanvas, scene);
+  const best = { merged: Infinity, instanced: Infinity };
+  for (let round = 0; round <= rounds; round++) {
+    const camera = turn(askew, 10 * round, 5, viewport);
+    webgl.setCamera(camera);
+    const merged = await timed(() => (webgl.render(), finish(mergedCanvas)));
+    const instanced = await timed(() => (drawInstanced(camera), finish(instancedCanvas)));
+    if (round === 0) continue;
+    best.merged = Math.min(best.merged, merged);
+    best.instanced = Math.min(best.instanced, instanced);
+  }
+  webgl.dispose();
+  instancedCanvas.getContext('webgl2')?.getExtension('WEBGL_lose_context')?.loseContext();
+  return best;
+}
+
 declare global {
   interface Window {
     frameTimes: typeof frameTimes;
     stillTimes: typeof stillTimes;
     glyphTimes: typeof glyphTimes;
+    instancingTimes: typeof instancingTimes;
   }
 }
 
 window.frameTimes = frameTimes;
 window.stillTimes = stillTimes;
 window.glyphTimes = glyphTimes;
+window.instancingTimes = instancingTimes;
