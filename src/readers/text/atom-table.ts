@@ -35,10 +35,20 @@ export function atomTable(run: RowRun): AtomTable | null {
   const evidence = coordinateEvidence(wordsBefore(first, offsets[0]!), run.heading);
   const hasElement = first.columns.some(({ kind }) => kind === 'element');
   if (evidence.areCoordinates === 'no') return null;
-  if (!hasElement && (evidence.areCoordinates === null || run.rows.length < 2)) return null;
+  if (!hasElement && evidence.areCoordinates === null && !mayBeBareList(run, offsets)) return null;
+  if (!hasElement && run.rows.length < 2) return null;
   const name = nameColumns(run.rows, offsets, run.heading);
   const rows = run.rows.map((row, i) => atomRow(row, name, offsets, run.headElements[i] ?? null));
   return { line: first.line, rows, evidence, decimals: offsets.map((at) => decimalsAt(run.rows, at)) };
+}
+
+/**
+ * Rows of three numbers and nothing else may be fractional coordinates without a word about it, if a list of species fits
+ * their number; three rows are a tensor.
+ */
+function mayBeBareList({ rows }: RowRun, offsets: readonly number[]): boolean {
+  const sizes = rows.every(({ columns }) => columns.every(({ value }) => Math.abs(value) <= 1.5));
+  return sizes && rows.length > 3 && rows[0]!.columns.length === 3 && offsets[0] === 0;
 }
 
 /** The row's words up to its first coordinate, and what follows the last number (a unit). */

@@ -14,10 +14,10 @@ const prose: ReadonlySet<string> = new Set('in as at no he be i y k s pa pm am o
 /** Words for a point that carries basis functions but no nucleus. */
 const ghosts = /^(?:bq|gh|ghost|xx|dummy|du)[_:-]?([A-Za-z]{1,2})?\d*$/i;
 
-const glued = /^(?:\d{1,3})?([A-Za-z]{1,2})(?:[_.:-]?(\d{1,5})[A-Za-z']?)?$/;
+const glued = /^(\d{1,5})?([A-Za-z]{1,2})(?:[_.:-]?(\d{1,5})[A-Za-z']?)?$/;
 
 /**
- * Element of a word such as `Si`, `SI`, `Si1`, `O_12`, `2H`, `silicon`; null for words that are none. A letter after
+ * Element of a word such as `Si`, `SI`, `Si1`, `O_12`, `3Si`, `silicon`; null for words that are none. A letter after
  * the number (`C1A`) is allowed, a text such as `Species` is not: in a log most words are prose.
  */
 export function elementWord(text: string): ElementWord | null {
@@ -28,7 +28,8 @@ export function elementWord(text: string): ElementWord | null {
   if (prose.has(text)) return null;
   const parts = glued.exec(text);
   if (!parts) return null;
-  const found = elementOf(parts[1] ?? '');
+  const found = elementOf(parts[2] ?? '');
   if (!found) return null;
-  return { element: found.symbol, number: parts[2] === undefined ? null : Number(parts[2]) };
+  const number = parts[3] ?? parts[1];
+  return { element: found.symbol, number: number === undefined ? null : Number(number) };
 }

@@ -3,7 +3,7 @@ import type { AtomTable } from './atom-table.ts';
 import { atomTable } from './atom-table.ts';
 import type { FoundAtom, FoundStructure } from './found-structure.ts';
 import type { LatticeChoice } from './lattice-choices.ts';
-import { latticeChoices, latticesFor } from './lattice-choices.ts';
+import { latticeChoices, latticeFor } from './lattice-choices.ts';
 import { LatticeLines } from './lattice-lines.ts';
 import { numericRow } from './numeric-row.ts';
 import type { RowRun } from './row-runs.ts';
@@ -89,8 +89,9 @@ interface Draft {
 function draftOf(table: AtomTable, species: SpeciesLists, choices: readonly LatticeChoice[]): Draft | null {
   const named = elementsOf(table, species);
   if (!named || named.elements.every((element) => element === 'X')) return null;
-  if (table.rows.length < 3 && table.evidence.areCoordinates !== 'yes') return null;
-  const choice = latticesFor(choices, table.line);
+  const rows = table.rows;
+  if (rows.length < 3 && table.evidence.areCoordinates !== 'yes') return null;
+  const choice = latticeFor(choices, table.line, rows.at(-1)!.line);
   const reading = positionReading(table, named.elements, choice);
   if (!reading) return null;
   const words = [table.evidence.words, reading.words, named.words].filter((w) => w !== '').join('; ');
@@ -101,6 +102,12 @@ function elementsOf(
   { rows, line }: AtomTable,
   species: SpeciesLists,
 ): { elements: readonly string[]; words: string } | null {
+  const first = rows[0]!.element;
+  const isByHeading = rows.every(
+    ({ label, element }) => label === null && element === first && first !== null,
+  );
+  const listed = isByHeading ? species.resolve(rows.length, line) : null;
+  if (listed && new Set(listed.elements).size > 1) return listed;
   if (rows.every(({ element }) => element !== null)) {
     return { elements: rows.map(({ element }) => element!), words: '' };
   }

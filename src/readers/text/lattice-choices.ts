@@ -1,5 +1,5 @@
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
-import { matrixFromRows, rowsOf, scaleMatrix } from '#src/base/matrix3.ts';
+import { matrixFromRows, rowsOf, scaleMatrix, transpose } from '#src/base/matrix3.ts';
 import { length, scale } from '#src/base/vector3.ts';
 import type { CellConstants } from '#src/crystal/lattice.ts';
 import { cellFromRows, rowsProblem } from '#src/crystal/lattice.ts';
@@ -30,8 +30,12 @@ export function latticeChoices(
   scales: readonly ScaleFinding[],
 ): LatticeChoice[] {
   const named = findings.some(({ kind }) => kind !== 'bare');
+  const constants = findings
+    .filter(({ kind }) => kind === 'constants')
+    .map((finding) => ({ line: finding.line, cell: cellFromRows(finding.rows) }));
   const choices = findings
     .filter(({ kind }) => kind !== 'bare' || !named)
+    .map((finding) => upright(finding, constants))
     .map((finding) => ({ line: finding.line, kind: finding.kind, readings: readingsOf(finding, scales) }))
     .filter(({ readings }) => readings.length > 0);
   const cells = choices
@@ -43,9 +47,39 @@ export function latticeChoices(
   );
 }
 
-/** The lattices a list of atoms may stand in: the nearest before it, or the nearest after it where none is before. */
-export function latticesFor(choices: readonly LatticeChoice[], line: number): LatticeChoice | null {
-  return choices.filter((choice) => choice.line <= line).at(-1) ?? choices[0] ?? null;
+/**
+ * The lattice of a list of atoms between two lines: the nearer one of the last before and the first after it, since some
+ * texts print the cell of a step above its atoms and some below.
+ */
+export function latticeFor(
+  choices: readonly LatticeChoice[],
+  first: number,
+  last: number,
+): LatticeChoice | null {
+  const before = choices.filter(({ line }) => line <= first).at(-1);
+  const after = choices.find(({ line }) => line > last);
+  if (!before || !after) return before ?? after ?? null;
+  return after.line - last < first - before.line ? after : before;
+}
+
+/** Lines within which lengths and angles speak of the same vectors. */
+const sameCellLines = 60;
+
+/** Vectors printed as columns: turned, where lengths and angles close by fit the columns and not the rows. */
+function upright(
+  finding: LatticeFinding,
+  constants: readonly { line: number; cell: CellConstants }[],
+): LatticeFinding {
+  if (finding.kind !== 'vectors') return finding;
+  const near = constants.find(({ line }) => Math.abs(line - finding.line) <= sameCellLines);
+  const columns = transpose(finding.rows);
+  if (!near || sameShape(near.cell, cellFromRows(finding.rows))) return finding;
+  if (!sameShape(near.cell, cellFromRows(columns))) return finding;
+  return {
+    ...finding,
+    rows: columns,
+    words: `${finding.words}, as columns by the lengths and angles in line ${near.line}`,
+  };
 }
 
 function readingsOf(finding: LatticeFinding, scales: readonly ScaleFinding[]): LatticeReading[] {

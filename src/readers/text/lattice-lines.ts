@@ -66,10 +66,11 @@ export class LatticeLines {
     const overflow = this.#overflow;
     this.#overflow = false;
     if (!overflow && (group.length === 3 || isDoubled(group))) this.#threeRows(group.slice(0, 3));
-    if (group.length > 3) this.#heading = [];
+    if (group.length >= 3) this.#heading = [];
   }
 
   #threeRows(rows: readonly NumericRow[]): void {
+    if (rows.every(({ columns }) => columns.some(({ kind }) => kind === 'element'))) return;
     const sameShape = rows.every(({ columns }) => columns.length === rows[0]!.columns.length);
     const vectors = rows.map((row) => vectorsOf(row, sameShape ? tripleOffsets(rows) : tripleOffsets([row])));
     const count = Math.min(...vectors.map((v) => v.length));
@@ -199,7 +200,11 @@ function constantName(text: string): keyof CellConstants | null {
   return /^(?:a|b|c|alpha|beta|gamma)$/.test(name) ? (name as keyof CellConstants) : null;
 }
 
+/** Matrices of a cell that are not its vectors. */
+const cellMatrices = /tensor|metric|stress|strain|velocit|inverse/i;
+
 function startsOther(text: string): boolean {
+  if (cellMatrices.test(text) && !/vector/i.test(text)) return true;
   const other = text.search(otherWords);
   return (
     other >= 0 && other < text.search(/alpha|angles?\b|α|lattice|cell|vector|axes|basis|translation|prim/i)

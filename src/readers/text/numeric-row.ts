@@ -1,3 +1,4 @@
+import { elementOf } from '#src/data/elements.ts';
 import { elementWord } from './element-words.ts';
 import type { TextLine } from './text-line.ts';
 
@@ -78,13 +79,28 @@ export function tripleOffsets(rows: readonly NumericRow[]): number[] {
   const first = rows[0];
   if (!first) return [];
   const width = first.columns.length;
-  const whole = first.columns.map((_, i) => rows.every((row) => row.columns[i]?.isInteger ?? false));
+  const whole = first.columns.map(
+    (_, i) => rows.every((row) => row.columns[i]?.isInteger ?? false) || isOfElement(rows, i),
+  );
   const offsets = segments(first, width, (i) => !whole[i]).flatMap((segment) => triplesOf(segment, rows));
   if (offsets.length > 0) return offsets;
   // a flat list: one coordinate is the same whole number everywhere
   const loose = segments(first, width, () => true).filter(([from, to]) => to - from >= 3);
   const real = loose.filter(([from, to]) => whole.slice(from, to).some((w) => !w));
   return real.map(([, to]) => to - 3);
+}
+
+/** True for a column of nuclear charges or atomic masses, by the elements in the rows. */
+function isOfElement(rows: readonly NumericRow[], column: number): boolean {
+  const at = rows[0]!.columns.findIndex(({ kind }) => kind === 'element');
+  if (at < 0) return false;
+  return rows.every(({ columns }) => {
+    const symbol = columns[at]?.element;
+    const found = symbol === 'X' ? null : elementOf(symbol ?? '');
+    const value = columns[column]?.value ?? Number.NaN;
+    if (!found) return symbol === 'X' && value === 0;
+    return value === found.atomicNumber || Math.abs(value - found.massU) < 0.015 * found.massU;
+  });
 }
 
 function segments(row: NumericRow, width: number, wanted: (column: number) => boolean): [number, number][] {

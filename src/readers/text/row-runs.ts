@@ -63,7 +63,7 @@ export class RowRuns {
   }
 
   #runFor(row: NumericRow): OpenRun {
-    const open = this.#open.get(row.key);
+    const open = this.#open.get(row.key) ?? this.#belowKeyword(row);
     if (open && this.#goesOn(open, row)) return open;
     if (open) this.#end(open);
     for (const other of [...this.#open.values()]) {
@@ -75,6 +75,29 @@ export class RowRuns {
     return run;
   }
 
+  /** A list whose first row alone carries its keyword: the row loses the word, and the run goes on without it. */
+  #belowKeyword(row: NumericRow): OpenRun | undefined {
+    if (!/^n n n(?: n)*$/.test(row.key)) return undefined;
+    const keyed = [...this.#open.values()].find(
+      ({ rows, key }) =>
+        rows.length === 1 && row.line - rows[0]!.line === 1 && key.replace(/^\S+ /, '') === row.key,
+    );
+    if (!keyed) return undefined;
+    this.#open.delete(keyed.key);
+    const first = keyed.rows[0]!;
+    const plain = { ...first, columns: first.columns.slice(1), key: row.key, words: [] };
+    const run: OpenRun = {
+      ...keyed,
+      rows: [plain],
+      heading: [first.columns[0]!.text, ...keyed.heading],
+      key: row.key,
+      worded: false,
+    };
+    this.#open.set(row.key, run);
+    this.#lastBare = run;
+    return run;
+  }
+
   #goesOn(open: OpenRun, row: NumericRow): boolean {
     const last = open.rows.at(-1)!.line;
     const gap = row.line - last;
@@ -83,6 +106,8 @@ export class RowRuns {
     if (open.worded) return gap <= widestGap && id !== '' && !open.identities.has(id);
     const between = this.#heading.filter(({ line }) => line > last);
     if (gap <= 2 && between.length === 0) return true;
+    if (gap <= headingLines && counter(row) !== null && counter(row) === counter(open.rows.at(-1)!)! + 1)
+      return true;
     if (
       gap > 5 ||
       open !== this.#lastBare ||
@@ -127,6 +152,11 @@ function identity({ columns }: NumericRow): string {
     if (kind !== 'word') parts.push(text);
   }
   return parts.join(' ');
+}
+
+/** The whole number a row begins with. */
+function counter({ columns }: NumericRow): number | null {
+  return columns[0]?.isInteger ? columns[0].value : null;
 }
 
 /** The one element that short lines name as a word of its own, such as `species 2: O`. */

@@ -49,7 +49,12 @@ export class SpeciesLists {
 
   /** Elements of a list of atoms without names, in its order, from the nearest list that fits; null where none does. */
   resolve(count: number, line: number): { elements: string[]; words: string } | null {
-    return this.#fromCounted(count, line) ?? this.#fromCounts(count, line) ?? this.#fromTypes(count, line);
+    return (
+      this.#fromCounted(count, line) ??
+      this.#fromCounts(count, line) ??
+      this.#fromTypes(count, line) ??
+      this.#fromNames(count, line)
+    );
   }
 
   /** Element of a numbered species, from the nearest list before the line that has so many. */
@@ -154,6 +159,12 @@ export class SpeciesLists {
       }
     }
     return null;
+  }
+
+  /** One symbol an atom, all on one line or one a line. */
+  #fromNames(count: number, line: number): { elements: string[]; words: string } | null {
+    const list = nearestFirst(this.#sequences, line).find(({ elements }) => elements.length === count);
+    return list ? { elements: list.elements, words: `symbols in line ${list.line}` } : null;
   }
 
   #fromTypes(count: number, line: number): { elements: string[]; words: string } | null {
