@@ -16,7 +16,7 @@ import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import type { SiteAtoms } from './cell-atoms.ts';
 import { cellAtoms } from './cell-atoms.ts';
 import type { DossierSettings } from './dossier.ts';
-import { isTooLargeToSearch } from './search-size.ts';
+import { kindsToSearch } from './search-size.ts';
 
 /** A crystal under the symmetry the settings ask for, and where each row of the file went. */
 export interface ChosenCrystal {
@@ -202,6 +202,7 @@ function numberedAnew(sites: readonly Site[]): Site[] {
 function searched(
   crystal: Crystal,
   lattice: Lattice,
+  kindsOfRows: readonly number[],
   tables: SymmetryTables,
   settings: DossierSettings,
   log: ProblemLog,
@@ -210,7 +211,9 @@ function searched(
   const whole = expanded(listed, lattice);
   const positions = whole.map(({ fractional }): VecFrac => fractional ?? [0, 0, 0]);
   const tolerance = settings.symmetryToleranceAngstrom;
-  const result = tables.search(lattice, positions, speciesNumbers(whole), tolerance);
+  const oneEach = listed.sites.every(({ atoms }) => atoms.length === 1);
+  const kinds = oneEach ? kindsOfRows : speciesNumbers(whole);
+  const result = tables.search(lattice, positions, kinds, tolerance);
   if (!result) return null;
   const leaders = result.orbits
     .map((leader, atom) => (leader === atom ? atom : -1))
@@ -279,10 +282,9 @@ export function chooseSymmetry(
   if (!isCrystal) return asListed(crystal, settings, log, progress);
   if (!search) return unsearched(crystal, settings, log, progress);
   const kinds = speciesNumbers(crystal.sites);
-  if (isTooLargeToSearch(crystal, lattice, settings, kinds, log)) {
-    return asListed(crystal, settings, log, progress);
-  }
-  const result = tables && searched(crystal, lattice, tables, settings, log);
+  const searchable = kindsToSearch(crystal, lattice, settings, kinds, log);
+  if (!searchable) return asListed(crystal, settings, log, progress);
+  const result = tables && searched(crystal, lattice, searchable, tables, settings, log);
   if (!result) {
     log.add(
       'warning',

@@ -17,22 +17,28 @@ const comparedPairsLimit = 20_000_000;
 /** Repetitions of a smaller cell: the crystal's operations are listed for each, which takes some seconds for so many. */
 const searchedRepetitionsLimit = 10_000;
 
-/** What passes a limit, and the limit; null where nothing does. */
-function whyTooMuch(
+/** What passes a limit, and the limit. */
+interface Excess {
+  readonly got: string;
+  readonly allowed: string;
+}
+
+/** Why a search would take too long, or the kinds by which it is quick enough. */
+function kindsOrExcess(
   lattice: Lattice,
   positions: readonly VecFrac[],
   kinds: readonly number[],
   toleranceAngstrom: number,
-): { got: string; allowed: string } | null {
+): Excess | readonly number[] {
   const atoms = positions.length;
   if (atoms > searchedAtomsLimit)
     return { got: `${atoms} atoms`, allowed: `at most ${searchedAtomsLimit} atoms` };
-  if (atoms * rarest(kinds) <= comparedPairsLimit) return null;
+  if (atoms * rarest(kinds) <= comparedPairsLimit) return kinds;
   const finer = withRareKind(lattice, positions, kinds, toleranceAngstrom);
   const alike = rarest(finer);
-  if (atoms * alike <= comparedPairsLimit) return null;
+  if (atoms * alike <= comparedPairsLimit) return finer;
   const small = primitiveAtoms(lattice, positions, finer, toleranceAngstrom);
-  if (small && small.positions.length * rarest(small.species) <= comparedPairsLimit) return null;
+  if (small && small.positions.length * rarest(small.species) <= comparedPairsLimit) return finer;
   return {
     got: `${atoms} atoms, of which at least ${alike} have the same surroundings`,
     allowed: `at most ${comparedPairsLimit} for the product of the two`,
@@ -40,32 +46,32 @@ function whyTooMuch(
 }
 
 /**
- * True, with `symmetry-search-too-large`, where a search of symmetry would not end in reasonable time: more than 20,000
- * atoms or 20 million pairs to compare (unless asked for expressly), or a cell that repeats a smaller one more than 10,000
- * times.
+ * By row the kinds of atoms to search by: the given ones, or finer ones that part no equivalent atoms. Null, with
+ * `symmetry-search-too-large`, where a search of symmetry would not end in reasonable time: more than 20,000 atoms or 20
+ * million pairs to compare (unless asked for expressly), or a cell that repeats a smaller one more than 10,000 times.
  */
-export function isTooLargeToSearch(
+export function kindsToSearch(
   crystal: Crystal,
   lattice: Lattice,
   settings: DossierSettings,
   kinds: readonly number[],
   log: ProblemLog,
-): boolean {
+): readonly number[] | null {
   const { sites, place } = crystal;
   const tolerance = settings.symmetryToleranceAngstrom;
   const positions = sites.map(({ fractional }): VecFrac => fractional ?? ([0, 0, 0] as unknown as VecFrac));
-  const tooMuch = settings.symmetry === 'auto' && whyTooMuch(lattice, positions, kinds, tolerance);
-  if (tooMuch) {
-    log.add('warning', 'symmetry-search-too-large', `No symmetry stated and ${tooMuch.got}: not searched.`, {
-      ...tooMuch,
+  const told = settings.symmetry === 'auto' ? kindsOrExcess(lattice, positions, kinds, tolerance) : kinds;
+  if ('got' in told) {
+    log.add('warning', 'symmetry-search-too-large', `No symmetry stated and ${told.got}: not searched.`, {
+      ...told,
       hint: 'Ask for the search expressly, or give the operations.',
       place,
     });
-    return true;
+    return null;
   }
-  if (rarest(kinds) <= searchedRepetitionsLimit) return false;
+  if (rarest(kinds) <= searchedRepetitionsLimit) return told;
   const repetitions = primitiveAtoms(lattice, positions, kinds, tolerance)?.count ?? 1;
-  if (repetitions <= searchedRepetitionsLimit) return false;
+  if (repetitions <= searchedRepetitionsLimit) return told;
   log.add(
     'warning',
     'symmetry-search-too-large',
@@ -76,5 +82,5 @@ export function isTooLargeToSearch(
       place,
     },
   );
-  return true;
+  return null;
 }

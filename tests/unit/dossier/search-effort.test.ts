@@ -2,7 +2,7 @@ import { expect, it } from 'vitest';
 import { ProblemLog } from '#src/base/problem.ts';
 import { seededRandom } from '#src/base/seeded-random.ts';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
-import { isTooLargeToSearch } from '#src/dossier/search-size.ts';
+import { kindsToSearch } from '#src/dossier/search-size.ts';
 import { sourceFromText } from '#src/bytes/source-from-text.ts';
 import { readText } from '#src/readers/read.ts';
 
@@ -24,7 +24,7 @@ function refused(atoms: number, movedAngstrom: number, symmetry: 'auto' | 'find'
   const log = new ProblemLog();
   const settings = { ...defaultSettings, symmetry };
   const kinds = crystal.sites.map(() => 1);
-  const refusal = isTooLargeToSearch(crystal, crystal.lattice!, settings, kinds, log);
+  const refusal = kindsToSearch(crystal, crystal.lattice!, settings, kinds, log) === null;
   expect(refusal).toBe(log.list().some(({ code }) => code === 'symmetry-search-too-large'));
   return { refusal, message: log.list()[0]?.message ?? '' };
 }
