@@ -70,7 +70,7 @@ export class LatticeLines {
   }
 
   #threeRows(rows: readonly NumericRow[]): void {
-    if (rows.every(({ columns }) => columns.some(({ kind }) => kind === 'element'))) return;
+    if (areAtoms(rows)) return;
     const sameShape = rows.every(({ columns }) => columns.length === rows[0]!.columns.length);
     const vectors = rows.map((row) => vectorsOf(row, sameShape ? tripleOffsets(rows) : tripleOffsets([row])));
     const count = Math.min(...vectors.map((v) => v.length));
@@ -209,6 +209,13 @@ function startsOther(text: string): boolean {
   return (
     other >= 0 && other < text.search(/alpha|angles?\b|α|lattice|cell|vector|axes|basis|translation|prim/i)
   );
+}
+
+/** True for rows that name elements, unless it is one letter three times, as in `t1`, `t2`, `t3`. */
+function areAtoms(rows: readonly NumericRow[]): boolean {
+  const named = rows.map(({ columns }) => columns.find(({ kind }) => kind === 'element'));
+  if (named.some((column) => column === undefined)) return false;
+  return new Set(named.map((column) => column!.element)).size > 1 || named[0]!.text.length > 2;
 }
 
 /** Six rows: three vectors, then three of another kind, told apart by a word. */
