@@ -14,7 +14,7 @@ import { openSample, sampleCases } from './sample-cases.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
 
-const kinds = { cif: 'CIF', xyz: 'XYZ', unknown: 'not recognised' } as const;
+const kinds = { cif: 'CIF', xyz: 'XYZ', text: 'text', unknown: 'not recognised' } as const;
 
 /** The files of the case, how to open others, and the sample cases. */
 export class CasePanel extends StoreElement {

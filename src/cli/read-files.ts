@@ -7,7 +7,7 @@ import type { CaseDocument } from '#src/case/case-document.ts';
 import { looksLikeCase } from '#src/case/case-document.ts';
 import { parseCase } from '#src/case/parse-case.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
-import { readText } from '#src/readers/read.ts';
+import { readAnyText } from '#src/readers/read-any-text.ts';
 import type { Reading } from '#src/readers/reading.ts';
 import type { CommandIo } from './io.ts';
 import { UsageError } from './io.ts';
@@ -22,7 +22,8 @@ export interface ReadFiles {
   readonly problems: readonly Problem[];
 }
 
-async function sourceOf(
+/** A file as a text; raises `UsageError` where it cannot be read. */
+export async function sourceOf(
   path: string,
   io: CommandIo,
 ): Promise<{ source: SourceText | null; problems: Problem[] }> {
@@ -58,16 +59,17 @@ export async function readFiles(paths: readonly string[], io: CommandIo): Promis
   }
   const own = opened?.sources.map(({ name, text }) => sourceFromText(name, text)) ?? [];
   const sources = [...own, ...others];
-  const readings = sources.map((source, index) => {
+  const readings: Reading[] = [];
+  for (const [index, source] of sources.entries()) {
     const columns = opened?.decisions.accepted.filter((one) => one.source === index) ?? [];
     const accept = Object.assign(
       {},
       ...columns.map((one) => one.columns),
     ) as (typeof columns)[number]['columns'];
-    const reading = readText(source, { accept });
+    const reading = await readAnyText(source, { accept });
     reading.problems.forEach((found) => log.push(found));
-    return reading;
-  });
+    readings.push(reading);
+  }
   return { readings, sources, case: opened, problems: log.list() };
 }
 

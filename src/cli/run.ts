@@ -17,6 +17,11 @@ const commands: Readonly<Record<string, Command>> = {
     summary: 'one row a site: symmetry, tensors in every convention, equivalent atoms',
     run: sitesCommand,
   },
+  find: {
+    summary:
+      'the tensors and structures that stand in any text, with the reasons: ellipsite find log.txt --json',
+    run: async (argv, io) => (await import('./commands/find.ts')).findCommand(argv, io),
+  },
   figure: {
     summary: 'a picture to take away: ellipsite figure crystal.cif tensors.xyz --view c -o crystal.png',
     help: figureHelp,

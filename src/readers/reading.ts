@@ -14,7 +14,7 @@ export interface ColumnProposal {
 
 /** What one text held. Plain data; an empty reading with errors is a valid answer. */
 export interface Reading {
-  readonly format: 'cif' | 'xyz' | 'unknown';
+  readonly format: 'cif' | 'xyz' | 'text' | 'unknown';
   readonly file: string;
   readonly structures: readonly Crystal[];
   readonly tensorSets: readonly TensorSet[];

@@ -36,7 +36,7 @@ export interface CaseInput {
 export interface SourceSummary {
   readonly id: string;
   readonly name: string;
-  readonly format: 'cif' | 'xyz' | 'unknown';
+  readonly format: 'cif' | 'xyz' | 'text' | 'unknown';
   readonly bytes: number;
   readonly lines: number;
 }

@@ -7,7 +7,7 @@ import type { SourceText } from '#src/bytes/source-text.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import { deriveDossier } from '#src/dossier/derive-dossier.ts';
 import type { CrystalDossier } from '#src/dossier/dossier.ts';
-import { readText } from '#src/readers/read.ts';
+import { readAnyText } from '#src/readers/read-any-text.ts';
 import type { Reading } from '#src/readers/reading.ts';
 import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
 import { summaryOf } from './crystal-summary.ts';
@@ -75,7 +75,7 @@ async function readSource(
   report(0, `reading ${file.name}`);
   const { source, problems } = await decodeFile(file);
   if (!source) return { file, source, reading: { ...unreadable(file.name), problems } };
-  const reading = readText(source, { accept, progress: report });
+  const reading = await readAnyText(source, { accept, progress: report });
   return { file, source, reading: { ...reading, problems: [...problems, ...reading.problems] } };
 }
 

@@ -1,0 +1,91 @@
+import type { Mat3 } from '#src/base/matrix3.ts';
+import type { ReportProgress } from '#src/base/progress.ts';
+import type { SourceText } from '#src/bytes/source-text.ts';
+import type { TensorSet } from '#src/tensor/tensor-set.ts';
+import { efgTensorToAtomicUnits, efgUnitLabel } from '#src/tensor/units.ts';
+import type { Reading } from '../reading.ts';
+import { findInText } from './find-in-text.ts';
+import { foundCrystal } from './found-crystal.ts';
+import type { FoundGroup, FoundText } from './found-text.ts';
+
+/**
+ * A text of no format of its own as a reading: the structures that were found, and the tensors that are proposed, in
+ * canonical units. null where it holds neither.
+ */
+export function readFoundText(source: SourceText, progress?: ReportProgress): Reading | null {
+  return readingOf(findInText(source, progress));
+}
+
+/** Proposed groups of one quantity become one set for each structure they belong to; the structure with tensors comes first. */
+export function readingOf(found: FoundText): Reading | null {
+  const usable = found.groups.filter(isUsable);
+  if (usable.length === 0 && found.structures.length === 0) return null;
+  const order = structureOrder(found, usable);
+  return {
+    format: 'text',
+    file: found.file,
+    structures: order.map((at) => foundCrystal(found.structures[at]!, found.file)),
+    tensorSets: setsOf(found, usable, order),
+    proposals: [],
+    problems: found.problems.filter(({ code }) => code !== 'find-none'),
+  };
+}
+
+/** Taken without asking: proposed, with quantity and unit known. */
+function isUsable({ proposed, quantity, unit }: FoundGroup): boolean {
+  return proposed && quantity !== 'unknown' && unit !== 'unknown';
+}
+
+/** Structures that tensors belong to come first, the last one ahead; else the last of the text. */
+function structureOrder({ structures }: FoundText, usable: readonly FoundGroup[]): number[] {
+  const used = new Set(
+    usable.flatMap(({ structureIndex }) => (structureIndex === null ? [] : [structureIndex])),
+  );
+  const all = structures.map((_, at) => at).reverse();
+  return [...all.filter((at) => used.has(at)), ...all.filter((at) => !used.has(at))];
+}
+
+function setsOf(
+  { file, structures }: FoundText,
+  usable: readonly FoundGroup[],
+  order: readonly number[],
+): TensorSet[] {
+  const kinds = new Map<string, FoundGroup[]>();
+  for (const group of usable) {
+    const key = `${group.quantity}|${group.unit}|${group.structureIndex ?? ''}`;
+    kinds.set(key, [...(kinds.get(key) ?? []), group]);
+  }
+  return [...kinds.values()].flatMap((groups): TensorSet[] => {
+    const [{ quantity, unit, structureIndex, line }] = groups as [FoundGroup];
+    if (quantity === 'unknown') return [];
+    const structure = structureIndex === null ? null : (structures[structureIndex] ?? null);
+    const entries = groups.flatMap((group) =>
+      group.entries
+        .filter(({ isComplete }) => isComplete)
+        .map(({ label, element, atomIndex, tensor, line: at }) => ({
+          label,
+          element: element ?? 'X',
+          atomIndex,
+          cartesian: atomIndex === null ? null : (structure?.atoms[atomIndex]?.cartesian ?? null),
+          tensor: inCanonicalUnit(tensor, unit),
+          place: { file, line: at },
+        })),
+    );
+    if (entries.length === 0) return [];
+    return [
+      {
+        name: `${quantity} of ${file}, line ${line}`,
+        quantity,
+        unitGiven: unit === 'ppm' || unit === 'unknown' ? unit : efgUnitLabel[unit],
+        lattice: structure?.lattice ?? null,
+        structureIndex: structureIndex === null ? null : order.indexOf(structureIndex),
+        entries,
+        file,
+      },
+    ];
+  });
+}
+
+function inCanonicalUnit(tensor: Mat3, unit: FoundGroup['unit']): Mat3 {
+  return unit === 'ppm' || unit === 'unknown' ? tensor : efgTensorToAtomicUnits(tensor, unit);
+}
