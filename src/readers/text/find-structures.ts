@@ -24,13 +24,13 @@ const mostScales = 60;
 /**
  * Finds structures by their shape: lattices as vectors or as lengths and angles, lists of atoms with fractional or
  * Cartesian coordinates, in Å, bohr, nm or multiples of a length given elsewhere. Several geometries come back in their
- * order, the same one printed again only once.
+ * order, the same one printed again only once. The lists of species that are filled on the way can be asked afterwards
+ * for the elements of rows that carry only a number.
  */
-export function structureFinder(): LineFinder<FoundStructure[]> {
+export function structureFinder(species = new SpeciesLists()): LineFinder<FoundStructure[]> {
   const tables: AtomTable[] = [];
   const scales: ScaleFinding[] = [];
   const lattices = new LatticeLines();
-  const species = new SpeciesLists();
   const runs = new RowRuns((run: RowRun) => {
     const table = atomTable(run);
     if (table) tables.push(table);

@@ -132,7 +132,7 @@ const cyclesBeforeTheLast: LogLayout = (system) => {
     for (const atom of system.atoms) {
       const tensor = rounded(atom.shielding.map((v) => v * (1 + (3 - cycle) * 0.01)));
       log.add(`  ${atom.element}  ${atom.overall}`, ...blockLines(tensor));
-      log.expect(atom, 'shielding', 'ppm', tensor, { onlyAllowed: cycle < 3 });
+      if (cycle === 3) log.expect(atom, 'shielding', 'ppm', tensor);
     }
     log.add(...noise(system));
   }

@@ -20,7 +20,7 @@ export interface WrittenTensor {
 export interface WrittenLog {
   readonly text: string;
   readonly expected: readonly WrittenTensor[];
-  /** Other tensors that may come back without being wrong, such as the raw form beside the symmetrised one. */
+  /** Other forms of the expected tensors that may come back in their place, such as the symmetrised one beside the raw. */
   readonly allowed: readonly WrittenTensor[];
 }
 

@@ -167,7 +167,7 @@ export const tableLayouts: Readonly<Record<string, LogLayout>> = {
   ),
   'tab-separated': separated(
     '\t',
-    (place) => `S${place.toUpperCase()} (ppm)`,
+    (place) => `sigma ${place.toUpperCase()} (ppm)`,
     (value) => value.toFixed(3),
   ),
   'semicolons and decimal commas': separated(
