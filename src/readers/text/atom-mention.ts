@@ -100,6 +100,8 @@ function numberBeside(
 /** The atom a line names, or null. `data` is true for a row of numbers, where a symbol alone counts at its beginning. */
 export function atomMention(line: TextLine): AtomMention | null {
   const { tokens } = line;
+  const marked = markedMention(line);
+  if (marked !== null) return marked;
   const limit = Math.min(tokens.length, searched);
   let words = 0;
   for (const token of tokens) if (token.kind === 'word') words++;
@@ -114,6 +116,35 @@ export function atomMention(line: TextLine): AtomMention | null {
     seen++;
   }
   return alone(tokens, words);
+}
+
+const attribute =
+  /["']?([A-Za-z_]{1,20})["']?\s*[=:]\s*(?:"([^"]{1,24})"|'([^']{1,24})'|(\d{1,6})(?![\d.]))/g;
+const elementKey = /^(?:element|symbol|species|type|elem|el|kind|atom_?type)$/i;
+const numberKey = /^(?:index|number|no|num|nr|n|id|atom|site|serial|atom_?(?:index|number|id|no))$/i;
+const labelKey = /^(?:label|name|id|atom|site|atom_?(?:label|name|id))$/i;
+
+/** The atom of attributes in markup: `element="Si" number="3"`, `"label": "Si3"`; null where the line has none. */
+function markedMention({ text, tokens }: TextLine): AtomMention | null {
+  if (!/[A-Za-z]["']?\s*[=:]\s*["'\d]/.test(text) || !/["'<]/.test(text)) return null;
+  let [label, element, index]: [string | null, string | null, number | null] = [null, null, null];
+  for (const [, key = '', double, single, digits] of text.slice(0, 300).matchAll(attribute)) {
+    const value = (double ?? single ?? digits ?? '').trim();
+    if (elementKey.test(key)) element ??= symbolOf(value);
+    if (numberKey.test(key) && /^\d{1,6}$/.test(value)) index ??= Number(value);
+    else if (labelKey.test(key) && gluedLabel.test(value)) label ??= value;
+    else if (labelKey.test(key)) element ??= symbolOf(value);
+  }
+  const named = label === null ? null : gluedName(label, 0, 1);
+  if (element === null && index === null && named === null) return null;
+  return {
+    label: named?.label ?? null,
+    element: element ?? named?.element ?? null,
+    index: index ?? named?.index ?? null,
+    isGhost: false,
+    end: tokens.length,
+    isSure: true,
+  };
 }
 
 /** `1.234 …` rows that begin with a symbol only: `Si 432.5 0.58 …`, or a line that is nothing but a symbol. */
@@ -208,9 +239,15 @@ function beside(
 function afterKeyword(tokens: readonly TextToken[], at: number): AtomMention | null {
   let next = beyondMarks(tokens, at + 1, 1);
   if (next < 0) return null;
-  if (tokens[next]!.kind === 'word' && keywords.test(tokens[next]!.text))
-    next = beyondMarks(tokens, next + 1, 1);
+  const word = tokens[next]!;
+  const isSymbol = symbolOf(word.text) !== null && word.text !== 'No';
+  if (word.kind === 'word' && !isSymbol && keywords.test(word.text)) next = beyondMarks(tokens, next + 1, 1);
   const token = tokens[next];
+  if (token?.kind === 'word' && isSymbol) {
+    const after = numberBeside(tokens, next + 1, 1);
+    if (after)
+      return { ...blank, element: symbolOf(token.text), index: after.value, end: after.at + 1, isSure: true };
+  }
   if (!isWholeNumber(token)) return null;
   for (let i = next + 1; i < Math.min(tokens.length, next + 4); i++) {
     const text = tokens[i]!.text;

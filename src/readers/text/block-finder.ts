@@ -83,6 +83,7 @@ export class BlockFinder {
         sixes: null,
         atom,
         lead: leadOf(rows),
+        prefix: '',
         texts: rows.map(({ row }) => row.text),
         isWhole: rows.every(({ row }) => row.isWhole),
         beside: width > 1 ? { part, of: width } : null,

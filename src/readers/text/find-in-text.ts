@@ -13,6 +13,7 @@ import type { FoundGroup, FoundText } from './found-text.ts';
 import type { FoundStructure } from './found-structure.ts';
 import { judgeGroup } from './judge-group.ts';
 import type { PrintedValue, RawTensor } from './raw-tensor.ts';
+import { SpeciesLists } from './species-lists.ts';
 import type { TablePrinted } from './table-finder.ts';
 import { tensorGroups } from './tensor-groups.ts';
 import type { LineFinder } from './text-line.ts';
@@ -26,12 +27,14 @@ export interface Sightings {
   readonly structures: readonly FoundStructure[];
   readonly unfinished: readonly Problem[];
   readonly longLines: number;
+  readonly speciesOf: (count: number, line: number) => readonly string[] | null;
 }
 
 /** Feeds every line once to all finders; lines are not kept. May be fed in chunks. */
 export function textPass(file: string): { take(text: string): void; finish(): Sightings } {
   const tensors = tensorFinder();
   const structures: LineFinder<FoundStructure[]> = structureFinder();
+  const species = new SpeciesLists();
   const unfinished: LineFinder<Problem[]> = unfinishedFinder(file);
   let number = 0;
   let longLines = 0;
@@ -43,12 +46,14 @@ export function textPass(file: string): { take(text: string): void; finish(): Si
       tensors.take(line);
       structures.take(line);
       unfinished.take(line);
+      species.take(line);
     },
     finish: () => ({
       tensors: tensors.finish(),
       structures: structures.finish(),
       unfinished: unfinished.finish(),
       longLines,
+      speciesOf: (count, line) => species.resolve(count, line)?.elements ?? null,
     }),
   };
 }
@@ -72,12 +77,13 @@ export function findInText(source: SourceText, progress: ReportProgress = unwatc
 /** Decides about everything that one pass saw. */
 export function foundText(
   file: string,
-  { tensors, structures, unfinished, longLines }: Sightings,
+  { tensors, structures, unfinished, longLines, speciesOf }: Sightings,
 ): FoundText {
   const log = new ProblemLog();
   const evidence = {
     structures,
     unitLines: tensors.unitLines,
+    speciesOf,
     printedOf: printedByAtom(tensors.tablePrinted),
   };
   const judged = tensorGroups(tensors.tensors).map((group) => judgeGroup(group, evidence));

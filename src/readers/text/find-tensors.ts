@@ -68,11 +68,11 @@ class TensorFinder implements LineFinder<TensorSightings> {
   take(line: TextLine): void {
     const row = line.tokens.length === 0 ? null : dataRow(line);
     const inTable = this.#table.take(line, row);
-    const isNamed = !inTable && this.#named.take(line);
+    const isDirection = !inTable && this.#principal.take(line, row);
+    const isNamed = !inTable && !isDirection && this.#named.take(line);
     const isRow = !inTable && !isNamed && row !== null && this.#takeRow(row);
     this.#blocks.take(inTable || isNamed || isRow ? null : row);
     if (inTable || isNamed) return;
-    this.#principal.take(line, row);
     this.#context.note(line, row);
     this.#keepUnit(line, this.#context.lastMeaning);
     this.#keepPrinted(line);
@@ -150,6 +150,7 @@ function rawOf(seed: TensorSeed): RawTensor {
     sixes: seed.sixes,
     atom,
     lead,
+    prefix: seed.prefix,
     near,
     far: seed.surroundings.far,
     printed: [],

@@ -36,6 +36,8 @@ export interface JudgedGroup {
 export interface TextEvidence {
   readonly structures: readonly FoundStructure[];
   readonly unitLines: readonly UnitLine[];
+  /** Elements of so many atoms without names, from a list of species and their counts above the line. */
+  readonly speciesOf: (count: number, line: number) => readonly string[] | null;
   /** Values of tables, by number of the atom. */
   readonly printedOf: (raw: RawTensor) => readonly PrintedValue[];
 }
@@ -53,7 +55,7 @@ export function judgeGroup(whole: TensorGroup, text: TextEvidence): JudgedGroup 
   const tensors = whole.tensors.filter(({ atom }) => atom !== null && !atom.isGhost);
   const group = { ...whole, tensors };
   const sixes = tensors[0]?.sixes ? sixOrder(tensors, topic) : null;
-  const { names, structureIndex } = nameAtoms(tensors, text.structures);
+  const { names, structureIndex } = nameAtoms(tensors, text.structures, text.speciesOf);
   const facts = tensors.map((raw, at): Facts => ({
     raw,
     values: raw.sixes && sixes ? fromSix(raw.sixes, sixes.order) : raw.values,
@@ -140,17 +142,14 @@ function quantityOf(
   if (said) evidence.push(`“${said.words}” in line ${said.line}`);
   const traceless = isTraceless(facts);
   const couplings = facts.some(({ printed }) => printed.some(({ kind }) => kind === 'coupling'));
-  const lead = tensors[0]?.lead ?? '';
+  const prefix = tensors[0]?.prefix ?? '';
+  const named = quantityOfPrefix(prefix);
   if (traceless) {
     if (said?.value === 'efg') {
       evidence.push('zero trace');
       return 'efg';
     }
-    const words = couplings
-      ? 'coupling constants'
-      : /(?:^|\s)v(?:_?\w\w)?(?:\s|$)/.test(lead)
-        ? 'components named V'
-        : null;
+    const words = couplings ? 'coupling constants' : named === 'efg' ? 'components named V' : null;
     if (words !== null || (topic.isMixed && said !== null) || (said === null && topic.efgUnit !== null)) {
       evidence.push(`zero trace${words ? ` and ${words}` : ''}`);
       return 'efg';
@@ -164,13 +163,31 @@ function quantityOf(
     return topic.isPpm ? shieldingOrShift('shielding', facts, evidence) : 'unknown';
   }
   if (said && topic.role?.value.kind === 'contribution') return said.value;
-  if (said) return shieldingOrShift(said.value === 'shift' ? 'shift' : 'shielding', facts, evidence);
+  if (said) {
+    const differs = named !== null && named !== 'efg' && named !== said.value;
+    if (differs) evidence.push(`components named ${prefix}`);
+    return shieldingOrShift(
+      differs ? named : said.value === 'shift' ? 'shift' : 'shielding',
+      facts,
+      evidence,
+    );
+  }
+  if (named === 'shielding' || named === 'shift') {
+    evidence.push(`components named ${prefix}`);
+    return shieldingOrShift(named, facts, evidence);
+  }
   if (topic.isPpm) {
     evidence.push(`“ppm” in line ${topic.isPpm.line}`);
     return shieldingOrShift(null, facts, evidence);
   }
-  if (/^component names (?:sigma|σ|sig)/.test(lead)) return shieldingOrShift('shielding', facts, evidence);
   return 'unknown';
+}
+
+/** Letters that the trade names components by: σ and s for shielding, δ for shift, V for the field gradient. */
+function quantityOfPrefix(prefix: string): 'shielding' | 'shift' | 'efg' | null {
+  if (/^(?:s|σ|sig|sigma|shield|shielding|ms)$/.test(prefix)) return 'shielding';
+  if (/^(?:δ|delta|cs|shift)$/.test(prefix)) return 'shift';
+  return /^(?:v|vv|efg)$/.test(prefix) ? 'efg' : null;
 }
 
 /** Words against what values of these elements can be. */

@@ -185,10 +185,15 @@ function orderIn(text: string): readonly number[] | null {
   return new Set(places).size === 6 ? places : null;
 }
 
+/** Names of fields as words: `electric_field_gradient`, `shieldingTensors`. */
+function plainWords(text: string): string {
+  return text.replace(/(\p{Ll})(?=\p{Lu}\p{Ll}{2})/gu, '$1 ').replace(/_(?=\p{Ll}{3})/gu, ' ');
+}
+
 /** What the words of a line say about the numbers under it. Words alone: no number is looked at. */
 export function lineMeaning(text: string): LineMeaning {
   if (!anything.test(text)) return nothing;
-  const plain = text.length > 400 ? text.slice(0, 400) : text;
+  const plain = plainWords(text.length > 400 ? text.slice(0, 400) : text);
   const efgWords = firstMatch(gradient, plain);
   const shieldingWords = firstMatch(shielding, plain);
   const shiftWords = firstMatch(shift, plain);

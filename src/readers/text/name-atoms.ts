@@ -20,7 +20,11 @@ type Finder = (tensor: RawTensor, index: number | null) => number;
  * Names of the atoms of a group, elements and rows taken from the text's own structure: the last one before the group that
  * holds all its atoms, else the first after it. Numbers that start from 0 are counted from 1.
  */
-export function nameAtoms(tensors: readonly RawTensor[], structures: readonly FoundStructure[]): NamedAtoms {
+export function nameAtoms(
+  tensors: readonly RawTensor[],
+  structures: readonly FoundStructure[],
+  speciesOf: (count: number, line: number) => readonly string[] | null,
+): NamedAtoms {
   const first = tensors[0]?.line ?? 0;
   const fromZero = tensors.some(({ atom }) => atom?.index === 0);
   const shift = fromZero ? 1 : 0;
@@ -42,7 +46,18 @@ export function nameAtoms(tensors: readonly RawTensor[], structures: readonly Fo
         names: tensors.map((raw, i) => nameOf(raw, indices[i]!, rows[i]!, structure)),
       };
   }
-  return { structureIndex: null, names: tensors.map((raw, i) => nameOf(raw, indices[i]!, null, null)) };
+  const bare = tensors.every(({ atom }) => atom?.element === null && atom.label === null);
+  const most = Math.max(0, ...indices.map((index) => index ?? 0));
+  const elements = bare && most > 0 ? speciesOf(most, first) : null;
+  return {
+    structureIndex: null,
+    names: tensors.map((raw, i) => {
+      const element = elements?.[(indices[i] ?? 0) - 1];
+      const named =
+        element === undefined || raw.atom === null ? raw : { ...raw, atom: { ...raw.atom, element } };
+      return nameOf(named, indices[i]!, null, null);
+    }),
+  };
 }
 
 /** Structures before the group come first, the nearest of them ahead. */

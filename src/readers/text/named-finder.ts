@@ -148,6 +148,7 @@ export class NamedFinder {
       sixes: null,
       atom: this.#atom,
       lead: `component names ${this.#prefix}`,
+      prefix: this.#prefix,
       texts,
       isWhole: texts.every((text) => !/[.eE*nN]/.test(text)),
       beside: null,

@@ -87,6 +87,7 @@ export class PrincipalFinder {
       sixes: null,
       atom,
       lead: 'principal',
+      prefix: '',
       texts: found.map(({ text }) => text),
       isWhole: false,
       beside: null,

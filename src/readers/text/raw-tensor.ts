@@ -33,6 +33,8 @@ export interface RawTensor {
   readonly atom: AtomMention | null;
   /** Words that stand in the same way with every tensor of a group. */
   readonly lead: string;
+  /** Letter or word that components are named by, lower case; empty where they have no names. */
+  readonly prefix: string;
   /** Lines since the tensor before, farthest first. */
   readonly near: readonly NearLine[];
   /** Telling lines further up, farthest first. */

@@ -54,6 +54,7 @@ export function rowTensor(row: DataRow, context: TextContext): TensorSeed | null
     sixes: count === 9 ? null : values,
     atom,
     lead: row.lead,
+    prefix: '',
     texts: [row.text],
     isWhole: row.isWhole,
     beside: null,

@@ -142,6 +142,7 @@ export class TableFinder {
       sixes: null,
       atom: partial.atom,
       lead,
+      prefix: prefixOf(this.#header),
       texts: partial.texts,
       isWhole: partial.texts.every((text) => !/[.eE*nN]/.test(text)),
       beside: null,
@@ -205,6 +206,11 @@ export class TableFinder {
     this.#header = null;
     this.#empty();
   }
+}
+
+function prefixOf(header: TableHeader | null): string {
+  const first = header?.columns.find(({ kind }) => kind.is === 'component')?.kind;
+  return first?.is === 'component' ? first.prefix : '';
 }
 
 function delimitedCells(header: TableHeader, line: TextLine): ReturnType<typeof rowCells> {

@@ -11,6 +11,8 @@ export interface TensorSeed {
   readonly sixes: readonly number[] | null;
   readonly atom: AtomMention | null;
   readonly lead: string;
+  /** Letter or word that components are named by, lower case; empty where they have no names. */
+  readonly prefix: string;
   /** Lines the numbers stand in, for their digits. */
   readonly texts: readonly string[];
   readonly isWhole: boolean;

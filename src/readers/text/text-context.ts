@@ -35,6 +35,8 @@ export class TextContext {
   #far: NearLine[] = [];
   #atom: AtomMention | null = null;
   #atomLine = 0;
+  /** True once a tensor came for the atom: a line that names only its element then begins another. */
+  #atomHasTensor = false;
   #lastMention: AtomMention | null = null;
   #mentionLine = 0;
   #farShared: readonly NearLine[] = [];
@@ -64,14 +66,19 @@ export class TextContext {
     const isList = neighbours && this.#lastMention !== null && !isSame(mention, this.#lastMention);
     this.#lastMention = mention;
     this.#mentionLine = line.number;
+    const goesOn = !this.#atomHasTensor || (mention.index !== null && mention.index === this.#atom?.index);
     if (
       !isList &&
+      goesOn &&
       this.#atom !== null &&
       line.number - this.#atomLine <= atomHolds &&
       isSame(mention, this.#atom)
     ) {
       this.#atom = merged(this.#atom, mention);
-    } else this.#atom = isList ? null : mention;
+    } else {
+      this.#atom = isList ? null : mention;
+      this.#atomHasTensor = false;
+    }
     this.#atomLine = line.number;
   }
 
@@ -110,6 +117,7 @@ export class TextContext {
 
   /** After a tensor: what stood above it is further up now. */
   passTensor(): void {
+    this.#atomHasTensor = true;
     for (const line of this.#near) this.#toFar(line);
     this.#near = [];
   }
