@@ -17,6 +17,7 @@ import { atomIds, middleOf, selectedPositions, selectionOf } from './picture-mar
 import {
   annotations,
   axesDrawing,
+  captionWords,
   faultWords,
   flatMeasurements,
   labelsDrawing,
@@ -136,7 +137,7 @@ export class CrystalView extends StoreElement {
       </div>
       ${colourBar(scene)}
       <ellipsite-picture-caption
-        .text=${scene?.caption ?? ''}
+        .text=${captionWords(scene)}
         .drawnBy=${(scene && this.#picture?.drawnBy) ?? null}
       ></ellipsite-picture-caption>
       ${sampleLine(store?.state.decisions ?? null)}

@@ -2,8 +2,11 @@ import { LitElement, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import { withSubscripts } from './symbol-text.ts';
 
+/** Two lines, less what their ends leave free. */
+const mostLines = 1.85;
+
 /**
- * What the picture shows, in words. Folded to one line, which leaves the room to the crystal, until all of it is asked for. It
+ * What the picture shows, in words. Of more than two lines it is folded to one, which leaves the room to the crystal, until all of it is asked for. It
  * stands in the tree of the crystal view, so that the picture can be described by it.
  */
 export class PictureCaption extends LitElement {
@@ -18,7 +21,7 @@ export class PictureCaption extends LitElement {
   /** Who drew the picture; null before there is one. */
   declare drawnBy: string | null;
   declare isOpen: boolean;
-  /** Whether one line is too short for it. */
+  /** Whether two lines are too short for it. */
   declare isLong: boolean;
 
   #resize: ResizeObserver | null = null;
@@ -41,12 +44,12 @@ export class PictureCaption extends LitElement {
   }
 
   override render(): TemplateResult {
-    const { text, drawnBy, isOpen } = this;
-    return html`<p class="caption ${isOpen ? '' : 'folded'}" id="caption">
+    const { text, drawnBy, isOpen, isLong } = this;
+    return html`<p class="caption ${isLong && !isOpen ? 'folded' : ''}" id="caption">
         ${withSubscripts(text)}${drawnBy ? html` <span class="soft">Drawn by ${drawnBy}.</span>` : nothing}
       </p>
       ${
-        this.isLong
+        isLong
           ? html`<button
               aria-expanded=${isOpen ? 'true' : 'false'}
               aria-label="${isOpen ? 'Less' : 'More'} about the picture"
@@ -66,10 +69,14 @@ export class PictureCaption extends LitElement {
     this.#look();
   }
 
-  /** Open, it is as long as it was when it was folded. */
+  /** Measured on one line, whatever it stands on now. */
   #look(): void {
     const words = this.querySelector('p');
-    if (words && !this.isOpen) this.isLong = words.scrollWidth > words.clientWidth;
+    if (!words || this.isOpen) return;
+    words.classList.add('folded');
+    const lines = words.scrollWidth / Math.max(1, words.clientWidth);
+    words.classList.toggle('folded', this.isLong);
+    this.isLong = lines > mostLines;
   }
 }
 

@@ -1,6 +1,7 @@
 import { html, nothing, svg } from 'lit';
 import type { TemplateResult } from 'lit';
-import type { PickEntry } from '#src/scene/scene.ts';
+import { unbroken } from '#src/scene/printed.ts';
+import type { PickEntry, Scene } from '#src/scene/scene.ts';
 import type { Store } from '#src/store/store.ts';
 import { siteColour } from '#src/store/site-colour.ts';
 import type { Selection, WorkbenchState } from '#src/store/state.ts';
@@ -167,6 +168,13 @@ export function overPicture(
         The graphics chip took the picture away; until it comes back the CPU draws.
       </p>`
     : nothing;
+}
+
+/** What the picture shows, in words; with what to do about tensors that it hides. */
+export function captionWords(scene: Scene | null): string {
+  const hasHidden = (scene?.sizeNotes ?? []).length > 0;
+  const advice = hasHidden ? ' Ticked alone under Show, they are drawn at a scale of their own.' : '';
+  return unbroken(`${scene?.caption ?? ''}${advice}`);
 }
 
 /** A sample says that its tensors are invented. */

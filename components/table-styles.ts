@@ -124,7 +124,7 @@ export const tableStyles = css`
   .scroller:focus-visible .active .name {
     box-shadow:
       inset 2px 2px var(--accent),
-      inset 0 -2px var(--accent);
+      inset 0 -1px var(--accent);
   }
   .body {
     position: relative;

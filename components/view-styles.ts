@@ -229,7 +229,9 @@ export const viewStyles = css`
   /* beside the picture where there is room, so that one sees what one changes; else over it */
   .panel {
     flex: none;
+    align-self: flex-start;
     width: 304px;
+    max-height: 100%;
     margin-right: 8px;
     overflow: auto;
     overscroll-behavior: contain;
@@ -249,7 +251,12 @@ export const viewStyles = css`
     .middle {
       flex-direction: column;
     }
+    .stage {
+      min-height: 160px;
+      min-height: max(160px, 30svh);
+    }
     .panel {
+      align-self: stretch;
       width: auto;
       max-height: 38vh;
       max-height: 38svh;

@@ -4,18 +4,13 @@ import type { Camera } from '#src/scene/camera.ts';
 import { projectAxes } from '#src/scene/project.ts';
 import type { Legend, PictureKey, Scene } from '#src/scene/scene.ts';
 import type { Rgb } from '#src/scene/theme.ts';
+import type { Block } from './block.ts';
+import { inLines, stacked } from './block.ts';
 import type { FigureTheme } from './figure-theme.ts';
 import { thinnestLinePt } from './figure-theme.ts';
 import type { TextRun } from './font/set-text.ts';
 import { baselineOf, breakLines, lineHeight, runsOf, setText } from './font/set-text.ts';
 import type { LineItem, SheetItem, TextItem } from './sheet.ts';
-
-/** A piece of what stands beside the crystal, placed by its upper left corner. */
-export interface Block {
-  readonly widthPt: number;
-  readonly heightPt: number;
-  readonly itemsAt: (xPt: number, yPt: number) => SheetItem[];
-}
 
 /** What all blocks of a figure share. */
 export interface BlockStyle {
@@ -47,19 +42,6 @@ export function textBlock(lines: readonly (readonly TextRun[])[], sizePt: number
       lines.map((runs, k) =>
         textItem(runs, xPt, yPt + k * lineHeight(sizePt) + baselineOf(sizePt), sizePt, colour),
       ),
-  };
-}
-
-/** Blocks one below the other, left sides in line. */
-export function stacked(blocks: readonly Block[], gapPt: number): Block {
-  const tops = blocks.map((_, k) =>
-    blocks.slice(0, k).reduce((sum, { heightPt }) => sum + heightPt + gapPt, 0),
-  );
-  return {
-    widthPt: Math.max(0, ...blocks.map(({ widthPt }) => widthPt)),
-    heightPt:
-      blocks.reduce((sum, { heightPt }) => sum + heightPt, 0) + gapPt * Math.max(0, blocks.length - 1),
-    itemsAt: (xPt, yPt) => blocks.flatMap((block, k) => block.itemsAt(xPt, yPt + tops[k]!)),
   };
 }
 
@@ -121,16 +103,17 @@ const rulerLengths = [100, 50, 20, 10, 5, 2, 1, 0.5, 0.2, 0.1];
 
 /**
  * What lengths mean: a ruler with the tensor unit it stands for ("2 Å = 500 ppm"), without one in perspective, where no length
- * holds for the whole picture; then how tensors became lengths.
+ * holds for the whole picture; then how tensors became lengths, unless that is said elsewhere.
  */
 export function scaleBlock(
   scene: Scene,
   pointsPerAngstrom: number | null,
   maxWidthPt: number,
   style: BlockStyle,
+  hasNote = true,
 ): Block | null {
   const { textPt, theme } = style;
-  const words = scene.key?.lengths ?? null;
+  const words = hasNote ? (scene.key?.lengths ?? null) : null;
   const note = words === null ? [] : [textBlock(breakLines(words, textPt, maxWidthPt), textPt, theme.soft)];
   if (pointsPerAngstrom === null) {
     if (scene.scaleStatement === null) return null;
@@ -173,7 +156,12 @@ function rulerBlock(lengthPt: number, { textPt, theme }: BlockStyle): Block {
   };
 }
 
-/** What the plain colours and marks mean: signs of polar surfaces, sites, elements, then marks in words. */
+/** Signs of polar surfaces. */
+export function signsBlock(scene: Scene, maxWidthPt: number, style: BlockStyle): Block | null {
+  return keyRows(signEntries(scene.key?.lobes ?? null), maxWidthPt, style);
+}
+
+/** What the plain colours and marks mean: sites, elements, then marks in words; side by side where the width holds them. */
 export function keyBlock(scene: Scene, maxWidthPt: number, style: BlockStyle): Block | null {
   const { elements, key } = scene;
   const sites = (key?.sites ?? []).map(({ label, colour }) => ({ text: label, colour, isStriped: false }));
@@ -184,14 +172,13 @@ export function keyBlock(scene: Scene, maxWidthPt: number, style: BlockStyle): B
       textBlock(breakLines(text, style.textPt, maxWidthPt), style.textPt, style.theme.soft),
     );
   const rows = [
-    keyRows(signEntries(key?.lobes ?? null), maxWidthPt, style),
     keyRows(sites, maxWidthPt, style),
     ...words(more),
     ...words(names.length > 0 && key?.elementsWords ? [`${key.elementsWords}:`] : []),
     keyRows(names, maxWidthPt, style),
     ...words(key?.marks ?? []),
   ].filter((row) => row !== null);
-  return rows.length === 0 ? null : stacked(rows, 0);
+  return rows.length === 0 ? null : inLines(rows, maxWidthPt, style.textPt);
 }
 
 function signEntries(lobes: PictureKey['lobes']): KeyEntry[] {

@@ -3,8 +3,18 @@ import { pixelsPerAngstrom, turnAbout } from '#src/scene/camera.ts';
 import { firstCamera, fit, lookAlong } from '#src/scene/framing.ts';
 import { placeLabels } from '#src/scene/place-labels.ts';
 import type { Scene } from '#src/scene/scene.ts';
-import type { Block, BlockStyle } from './blocks.ts';
-import { axesBlock, keyBlock, legendBlock, scaleBlock, stacked, subjectBlock, textBlock } from './blocks.ts';
+import type { Block } from './block.ts';
+import { column, flowed, stacked } from './block.ts';
+import type { BlockStyle } from './blocks.ts';
+import {
+  axesBlock,
+  keyBlock,
+  legendBlock,
+  scaleBlock,
+  signsBlock,
+  subjectBlock,
+  textBlock,
+} from './blocks.ts';
 import type { FigureRequest } from './figure-request.ts';
 import { figureThemes, thinnestLinePt } from './figure-theme.ts';
 import type { TextRun } from './font/set-text.ts';
@@ -22,12 +32,13 @@ interface Place {
 /** Share of the crystal's place left free on each side; more where labels stand round the atoms. */
 const crystalMargin = { plain: 0.02, labelled: 0.055 } as const;
 
-/** Of the text size: margin of the sheet, and gaps between blocks. */
+/** Margin of the sheet, of the text size. */
 const marginEm = 0.9;
-const gapEm = 1.1;
-/** Widest notes beside a colour bar below the crystal, and widest column beside it. */
-const noteEm = 9.2;
+/** Widths that notes beside a colour bar below the crystal may have: the first that makes the strip lowest. Widest column beside it. */
+const noteEms = [9.2, 12, 15.5] as const;
 const columnEm = 15.5;
+/** A caption is set smaller than the letters in the picture, but not below what print takes. */
+const captionSize = { share: 0.85, leastPt: 6 } as const;
 
 /** A crystal lower than this is a smear. Our own choice. */
 const leastCrystalEm = 3;
@@ -144,8 +155,9 @@ function arranged(
   const foot = captionBlock(scene, request);
   const top = head ? margin + head.heightPt : 0;
   const bottom = heightPt - (foot ? foot.heightPt + margin : 0);
-  const blocks = blocksFor(scene, request, kind, null);
-  const strip = kind === 'below' ? flowed(blocks, widthPt - 2 * margin, textPt) : column(blocks, textPt);
+  const widths = noteWidths(scene, request, kind);
+  const blocks = blocksFor(scene, request, widths, null);
+  const strip = kind === 'below' ? flowed(blocks, widthPt - 2 * margin, textPt) : column(blocks, textPt, 0);
   const isEmpty = blocks.length === 0;
   const taken = isEmpty ? 0 : (kind === 'below' ? strip.heightPt : strip.widthPt) + margin;
   const place: Place = {
@@ -156,7 +168,7 @@ function arranged(
   };
   const crystal = crystalIn(scene, request, kind === 'beside' ? centred(scene, request, place) : place);
   // The ruler's length is known only now; the room for it was reserved.
-  const final = blocksFor(scene, request, kind, scaleOf({ crystal }));
+  const final = blocksFor(scene, request, widths, scaleOf({ crystal }));
   const items =
     kind === 'below'
       ? flowed(final, widthPt - 2 * margin, textPt).itemsAt(margin, crystal.yPt + crystal.heightPt)
@@ -173,7 +185,7 @@ function arranged(
 }
 
 function beside(blocks: readonly Block[], textPt: number, place: Place, bottom: number): SheetItem[] {
-  const stack = column(blocks, textPt);
+  const stack = column(blocks, textPt, bottom - place.yPt - 2 * marginEm * textPt);
   const yPt = Math.max(place.yPt, bottom - stack.heightPt - 1.2 * marginEm * textPt);
   return stack.itemsAt(place.xPt + place.widthPt, yPt);
 }
@@ -204,32 +216,62 @@ function headBlock({ title, widthPt, textPt, theme }: FigureRequest): Block | nu
 
 function captionBlock(scene: Scene, { contents, widthPt, textPt, theme }: FigureRequest): Block | null {
   if (!contents.caption) return null;
-  const lines = breakLines(scene.caption, textPt, widthPt - 2 * marginEm * textPt);
-  return textBlock(lines, textPt, figureThemes[theme].soft);
+  const sizePt = Math.max(Math.min(captionSize.leastPt, textPt), captionSize.share * textPt);
+  const lines = breakLines(scene.caption, sizePt, widthPt - 2 * marginEm * textPt);
+  return textBlock(lines, sizePt, figureThemes[theme].soft);
+}
+
+/** Greatest widths of what stands beside the crystal, points. */
+interface NoteWidths {
+  readonly bar: number;
+  readonly scale: number;
+  readonly key: number;
+}
+
+/** In a column all of it; in a strip those that leave the strip lowest, then those with the fewest lines, then the narrowest. */
+function noteWidths(scene: Scene, request: FigureRequest, kind: 'below' | 'beside'): NoteWidths {
+  const { widthPt, textPt } = request;
+  const column = columnEm * textPt;
+  if (kind === 'beside') return { bar: column, scale: column, key: column };
+  const bar = widthPt - 2 * marginEm * textPt;
+  const notes = noteEms.map((em) => Math.min(bar, em * textPt));
+  const choices = [...notes, bar].flatMap((key) => notes.map((scale) => ({ bar, scale, key })));
+  const costs = choices.map((choice) => {
+    const blocks = blocksFor(scene, request, choice, null);
+    const lines = blocks.reduce((sum, { heightPt }) => sum + heightPt, 0);
+    return flowed(blocks, bar, textPt).heightPt + 0.01 * lines;
+  });
+  // heights that differ by rounding are the same
+  const low = Math.min(...costs) + 0.001 * textPt;
+  return choices[costs.findIndex((cost) => cost <= low)]!;
 }
 
 /** What stands beside the crystal, in order. Before the scale is known, the ruler takes as much room as it may. */
 function blocksFor(
   scene: Scene,
   request: FigureRequest,
-  kind: 'below' | 'beside',
+  widths: NoteWidths,
   pointsPerAngstrom: number | null,
 ): Block[] {
-  const { contents, textPt, theme, widthPt } = request;
+  const { contents, textPt, theme } = request;
   const style: BlockStyle = { textPt, theme: figureThemes[theme] };
-  const room = widthPt - 2 * marginEm * textPt;
-  const most = kind === 'below' ? room : columnEm * textPt;
-  const notes = kind === 'below' ? noteEm * textPt : most;
   const orientation = cameraFor(scene, request, { widthPx: 400, heightPx: 400 });
   const axes = contents.axes ? axesBlock(scene, orientation, style) : null;
-  const legend = contents.legend ? meaningBlock(scene, most, style) : null;
+  const legend = contents.legend ? meaningBlock(scene, widths.bar, style) : null;
   const isFlat = request.look.perspectiveDegrees === 0 && !(orientation.perspectiveDegrees ?? 0);
   const scale = contents.scale
-    ? scaleBlock(scene, isFlat ? (pointsPerAngstrom ?? (6.4 * textPt) / 10) : null, notes, style)
+    ? scaleBlock(
+        scene,
+        isFlat ? (pointsPerAngstrom ?? (6.4 * textPt) / 10) : null,
+        widths.scale,
+        style,
+        !contents.caption,
+      )
     : null;
-  const key = contents.elementKey ? keyBlock(scene, notes, style) : null;
+  const key = contents.elementKey ? keyBlock(scene, widths.key, style) : null;
   const words = contents.viewDirection ? request.view.words : null;
-  const view = words === null ? null : textBlock(viewLines(words, textPt, notes), textPt, style.theme.soft);
+  const view =
+    words === null ? null : textBlock(viewLines(words, textPt, widths.scale), textPt, style.theme.soft);
   const orientated = [axes, view].filter((block) => block !== null);
   const first = orientated.length > 0 ? stacked(orientated, 0.4 * textPt) : null;
   return [first, legend, scale, key].filter((block) => block !== null);
@@ -238,7 +280,10 @@ function blocksFor(
 /** What the glyphs are and what their colours say. */
 function meaningBlock(scene: Scene, maxWidthPt: number, style: BlockStyle): Block | null {
   const bar = scene.legend && legendBlock(scene.legend, maxWidthPt, style);
-  const parts = [subjectBlock(scene, maxWidthPt, style), bar].filter((block) => block !== null);
+  const most = Math.min(maxWidthPt, columnEm * style.textPt);
+  const parts = [subjectBlock(scene, maxWidthPt, style), signsBlock(scene, most, style), bar].filter(
+    (block) => block !== null,
+  );
   return parts.length === 0 ? null : stacked(parts, 0.3 * style.textPt);
 }
 
@@ -247,44 +292,6 @@ function viewLines(words: string, textPt: number, widthPt: number): (readonly Te
   const match = /^(viewed along −?)([abcxyz])(\*?)$/.exec(words);
   if (!match) return breakLines(words, textPt, widthPt);
   return [[{ text: match[1]! }, { text: match[2]!, style: 'italic' }, { text: match[3]! }]];
-}
-
-/** Blocks side by side, in as many rows as they need, spread over the width; tops in line. */
-function flowed(blocks: readonly Block[], widthPt: number, textPt: number): Block {
-  const gap = gapEm * textPt;
-  const rows: Block[][] = [];
-  let x = 0;
-  for (const block of blocks) {
-    if (rows.length === 0 || x + block.widthPt > widthPt) {
-      rows.push([block]);
-      x = block.widthPt + gap;
-    } else {
-      rows.at(-1)!.push(block);
-      x += block.widthPt + gap;
-    }
-  }
-  const rowBlocks = rows.map((row) => spread(row, widthPt, textPt));
-  return rowBlocks.length === 0 ? emptyBlock : stacked(rowBlocks, 0.5 * textPt);
-}
-
-const emptyBlock: Block = { widthPt: 0, heightPt: 0, itemsAt: () => [] };
-
-/** A row whose gaps grow with the room there is, the middles of the blocks on one line. */
-function spread(row: readonly Block[], widthPt: number, textPt: number): Block {
-  const used = row.reduce((sum, block) => sum + block.widthPt, 0);
-  const gap = row.length > 1 ? Math.min(3.4 * textPt, Math.max(0, (widthPt - used) / (row.length - 1))) : 0;
-  const heightPt = Math.max(...row.map((block) => block.heightPt));
-  const lefts = row.map((_, k) => row.slice(0, k).reduce((sum, block) => sum + block.widthPt + gap, 0));
-  return {
-    widthPt: used + gap * (row.length - 1),
-    heightPt,
-    itemsAt: (xPt, yPt) =>
-      row.flatMap((block, k) => block.itemsAt(xPt + lefts[k]!, yPt + (heightPt - block.heightPt) / 2)),
-  };
-}
-
-function column(blocks: readonly Block[], textPt: number): Block {
-  return blocks.length === 0 ? emptyBlock : stacked(blocks, 1.3 * textPt);
 }
 
 /** The crystal in its place: all of it, or what the screen showed. */
@@ -327,7 +334,8 @@ function naturalHeight(
   const wanted = box.heightAngstrom / box.widthAngstrom;
   const share = Math.min(heightShare.most, Math.max(heightShare.least, wanted));
   const margin = marginEm * textPt;
-  const strip = flowed(blocksFor(scene, request, 'below', null), widthPt - 2 * margin, textPt);
+  const widths = noteWidths(scene, request, 'below');
+  const strip = flowed(blocksFor(scene, request, widths, null), widthPt - 2 * margin, textPt);
   const head = headBlock(request);
   const foot = captionBlock(scene, request);
   const stripPt = strip.heightPt > 0 ? strip.heightPt + margin : 0;

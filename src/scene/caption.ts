@@ -86,9 +86,7 @@ export function caption(parts: CaptionParts): string {
   }
   if (tensors) {
     const { sizes, scale } = tensors;
-    const hidden = sizeSentences(sizes, scale.quantity);
-    if (hidden.length > 0) hidden.push('Ticked alone under Show, they are drawn at a scale of their own.');
-    sentences.push(...hidden, ...tensorAsides(tensors));
+    sentences.push(...sizeSentences(sizes, scale.quantity), ...tensorAsides(tensors));
   }
   sentences.push(
     ...parts.notes,

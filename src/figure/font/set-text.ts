@@ -1,3 +1,4 @@
+import { unbroken } from '#src/scene/printed.ts';
 import type { FontStyle } from './glyphs.ts';
 import { fontHeights, glyphOf } from './glyphs.ts';
 
@@ -80,10 +81,11 @@ export function setText(runs: readonly TextRun[], sizePt: number): SetText {
   return { glyphs, widthPt: xPt };
 }
 
-/** Breaks a sentence into lines of at most a width; a longer word stands alone. */
+/** Breaks a sentence into lines of at most a width, never between a number and its unit; a longer word stands alone. */
 export function breakLines(sentence: string, sizePt: number, widthPt: number): TextRun[][] {
   const lines: string[] = [];
-  for (const word of sentence.split(' ').filter((part) => part !== '')) {
+  const words = unbroken(sentence).split(' ');
+  for (const word of words.filter((part) => part !== '').map((part) => part.replaceAll('\u00a0', ' '))) {
     const longer = lines.length > 0 ? `${lines.at(-1)} ${word}` : word;
     const fits = lines.length > 0 && setText(runsOf(longer), sizePt).widthPt <= widthPt;
     if (fits) lines[lines.length - 1] = longer;

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { apply } from '#src/base/matrix3.ts';
 import { defaultContents } from '#src/figure/figure-request.ts';
 import type { FigureRequest } from '#src/figure/figure-request.ts';
-import { setText } from '#src/figure/font/set-text.ts';
+import { breakLines, lineHeight, setText } from '#src/figure/font/set-text.ts';
 import { layoutFigure } from '#src/figure/layout.ts';
 import type { Sheet, SheetItem, TextItem } from '#src/figure/sheet.ts';
 import { buildScene } from '#src/scene/build-scene.ts';
@@ -130,6 +130,47 @@ describe('a figure laid out', () => {
     expect(bare.items).toEqual([]);
     expect(bare.crystal.heightPt).toBe(200);
     expect(bare.crystal.widthPt).toBe(235);
+  });
+
+  it('sets a caption smaller, at the foot, and leaves the crystal of a slide most of its size', () => {
+    const slide = { ...request, widthPt: 960, heightPt: 540, textPt: 18 };
+    const withCaption = { ...slide, contents: { ...defaultContents, caption: true } };
+    for (const scene of [plain, buildScene(madeQuartz(), { quantity: 'efg' })]) {
+      const [bare, told] = [layoutFigure(scene, slide), layoutFigure(scene, withCaption)];
+      const perAngstrom = ({ crystal }: Sheet): number =>
+        pixelsPerAngstrom(crystal.camera, crystal.viewport) * crystal.pointsPerCssPx;
+      expect(perAngstrom(told)).toBeGreaterThan(0.7 * perAngstrom(bare));
+      const caption = textsOf(told).filter(({ sizePt }) => sizePt < 18);
+      expect(caption.map(({ runs }) => runs.map(({ text }) => text).join('')).join(' ')).toBe(
+        breakLines(scene.caption, 18, Infinity)
+          .map((runs) => runs.map(({ text }) => text).join(''))
+          .join(' '),
+      );
+      // what the caption says isn't said twice
+      expect(wordsOf(bare).join(' ')).toMatch(/semi-axes|radius/);
+      const beside = textsOf(told).filter(({ sizePt }) => sizePt === 18);
+      expect(beside.flatMap(({ runs }) => runs.map(({ text }) => text)).join(' ')).not.toMatch(
+        /radius|semi-axes/,
+      );
+    }
+  });
+
+  it('has elements of a key on one line where the sheet has room, and signs with what they are signs of', () => {
+    const lines = (sheet: Sheet, words: readonly string[]): number[] =>
+      words.map((word) => textsOf(sheet).find(({ runs }) => runs[0]?.text === word)!.yPt);
+    const names = ['Na', 'Ca', 'Al', 'Si', 'O'];
+    const elements = names.map((element) => ({ element, colour: [90, 90, 90] as const }));
+    const scene: Scene = { ...plain, elements, legend: null, scale: null, scaleStatement: null };
+    expect(new Set(lines(layoutFigure(scene, request), names)).size).toBe(1);
+    const efg = buildScene(madeQuartz(), { quantity: 'efg' });
+    const [subject, positive, negative] = lines(layoutFigure(efg, request), [
+      'electric field gradients V/a.u.',
+      'positive',
+      'negative (striped)',
+    ]);
+    expect(positive).toBe(negative);
+    expect(positive! - subject!).toBeGreaterThan(0);
+    expect(positive! - subject!).toBeLessThan(2 * lineHeight(7));
   });
 
   it('has letters of the size asked for and no line thinner than print bears', () => {

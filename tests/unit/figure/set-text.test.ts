@@ -78,4 +78,18 @@ describe('a line of text', () => {
         .join(' '),
     ).toBe('semi-axes = 0.45 Å + deviation from isotropic');
   });
+
+  it('breaks between words, never between a number and its unit', () => {
+    const sentence = 'value, 1 Å = 900 ppm; great circles of 5 ppmv';
+    for (let widthPt = 10; widthPt < 200; widthPt += 3) {
+      const lines = breakLines(sentence, 7, widthPt).map((runs) => runs.map(({ text }) => text).join(''));
+      expect(lines.join(' ')).toBe(sentence);
+      for (const line of lines) {
+        expect(line).not.toMatch(/\b(?:1|900)$/);
+        expect(line).not.toContain('\u00a0');
+      }
+    }
+    // what only begins like a unit may stand on the next line
+    expect(breakLines('of 5 ppmv', 7, 20).length).toBe(2);
+  });
 });
