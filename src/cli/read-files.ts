@@ -66,7 +66,10 @@ export async function readFiles(paths: readonly string[], io: CommandIo): Promis
       {},
       ...columns.map((one) => one.columns),
     ) as (typeof columns)[number]['columns'];
-    const reading = await readAnyText(source, { accept });
+    const reading = await readAnyText(source, {
+      accept,
+      choices: opened?.decisions.textChoices ?? [],
+    });
     reading.problems.forEach((found) => log.push(found));
     readings.push(reading);
   }

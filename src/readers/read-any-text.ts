@@ -11,5 +11,5 @@ export async function readAnyText(source: SourceText, options: ReadOptions = {})
   const reading = readText(source, options);
   if (reading.format !== 'unknown' || source.text.trim() === '') return reading;
   const { readFoundText } = await import('./text/read-found-text.ts');
-  return readFoundText(source, options.progress) ?? reading;
+  return readFoundText(source, options.progress, options.choices) ?? reading;
 }

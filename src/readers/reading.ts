@@ -1,5 +1,6 @@
 import type { Problem } from '#src/base/problem.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
+import type { FoundText } from './text/found-text.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
 
 /** A nine-component column that is not one of ours: named, never taken unasked. */
@@ -20,4 +21,6 @@ export interface Reading {
   readonly tensorSets: readonly TensorSet[];
   readonly proposals: readonly ColumnProposal[];
   readonly problems: readonly Problem[];
+  /** Of a text that was searched: its groups as they were found, and as the user's choices make them. */
+  readonly found?: { readonly asFound: FoundText; readonly asChosen: FoundText };
 }

@@ -3,6 +3,7 @@ import type { PackedPicks } from '#src/scene/packed-picks.ts';
 import type { Scene } from '#src/scene/scene.ts';
 import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
+import type { TextChoice } from '#src/tensor/text-choice.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
 import type { CrystalSummary } from './crystal-summary.ts';
 import type { Query, QueryAnswer } from './engine-queries.ts';
@@ -29,6 +30,8 @@ export interface CaseInput {
   readonly settings: DossierSettings;
   /** Proposed columns the user took, by source id. */
   readonly accepted?: Readonly<Record<string, AcceptedColumns>>;
+  /** How tensors found in texts are read. */
+  readonly textChoices?: readonly TextChoice[];
   /** What was found amiss in the case file these come from; listed first. */
   readonly openingProblems?: readonly Problem[];
 }
@@ -70,6 +73,17 @@ export interface ProposalSummary {
   readonly reason: string;
 }
 
+/** What was found in one text of no format of its own. */
+export interface FoundSummary {
+  readonly sourceId: string;
+  readonly file: string;
+  readonly groupCount: number;
+  /** Of the groups that are taken. */
+  readonly tensorCount: number;
+  /** What the text leaves open and the user should answer. */
+  readonly questionCount: number;
+}
+
 /** What the engine makes of a case. `crystal` is null when the files hold no structure. */
 export interface DerivedCase {
   /** Under this number the crystal's sites, rows and pictures are asked for. */
@@ -78,6 +92,8 @@ export interface DerivedCase {
   readonly structures: readonly StructureSummary[];
   readonly tensors: readonly TensorSummary[];
   readonly proposals: readonly ProposalSummary[];
+  /** Absent where no text was searched. */
+  readonly found?: readonly FoundSummary[];
   readonly chosen: StructureChoice | null;
   readonly crystal: CrystalSummary | null;
   readonly problems: readonly Problem[];

@@ -1,4 +1,5 @@
 import { elementOf, elements, symbolOfAtomicNumber } from '#src/data/elements.ts';
+import { nuclide } from '#src/data/nuclides.ts';
 import { componentOf } from './component-name.ts';
 import type { TextLine, TextToken } from './text-line.ts';
 
@@ -126,6 +127,8 @@ const labelKey = /^(?:label|name|id|atom|site|atom_?(?:label|name|id))$/i;
 
 /** The atom of attributes in markup: `element="Si" number="3"`, `"label": "Si3"`; null where the line has none. */
 function markedMention({ text, tokens }: TextLine): AtomMention | null {
+  const pair = /^\s*(?:-\s+)?([A-Za-z_]{1,20})\s*[:=]\s*([A-Za-z]{1,2}\d{0,5}|\d{1,6})\s*,?\s*$/.exec(text);
+  if (pair !== null) return ofPair(pair[1] ?? '', pair[2] ?? '', tokens.length);
   if (!/[A-Za-z]["']?\s*[=:]\s*["'\d]/.test(text) || !/["'<]/.test(text)) return null;
   let [label, element, index]: [string | null, string | null, number | null] = [null, null, null];
   for (const [, key = '', double, single, digits] of text.slice(0, 300).matchAll(attribute)) {
@@ -145,6 +148,18 @@ function markedMention({ text, tokens }: TextLine): AtomMention | null {
     end: tokens.length,
     isSure: true,
   };
+}
+
+/** A line that is one key with its value: `element: Si`, `number: 3`. */
+function ofPair(key: string, value: string, end: number): AtomMention | null {
+  if (elementKey.test(key) && symbolOf(value) !== null)
+    return { ...blank, element: symbolOf(value), end, isSure: true };
+  if (labelKey.test(key) && /^[A-Z]/.test(value)) {
+    const named = gluedName(value, 0, 1);
+    return named && { ...named, end, isSure: true };
+  }
+  const isNumber = numberKey.test(key) && /^\d+$/.test(value);
+  return isNumber ? { ...blank, index: Number(value), end, isSure: strongKeywords.test(key) } : null;
 }
 
 /** `1.234 …` rows that begin with a symbol only: `Si 432.5 0.58 …`, or a line that is nothing but a symbol. */
@@ -205,9 +220,19 @@ function countedName(tokens: readonly TextToken[], at: number): AtomMention | nu
   const parts = countedSymbol.exec(tokens[at]!.text);
   const element = parts && elementOf(parts[2] ?? '')?.symbol;
   if (!element) return null;
-  const after = numberBeside(tokens, at + 1, 1);
+  const after =
+    numberBeside(tokens, at + 1, 1) ?? (nuclide(tokens[at]!.text) ? numberOfSite(tokens, at + 1) : null);
   if (after && Number(parts[1]) > 0) return { ...blank, element, index: after.value, end: after.at + 1 };
   return { ...blank, label: tokens[at]!.text, element, index: Number(parts[1]), end: at + 1 };
+}
+
+/** The number after a word such as `site`, further on in the line. */
+function numberOfSite(tokens: readonly TextToken[], from: number): { value: number; at: number } | null {
+  for (let at = from; at < Math.min(tokens.length, from + 6); at++) {
+    if (tokens[at]!.kind !== 'word' || !strongKeywords.test(tokens[at]!.text)) continue;
+    return numberBeside(tokens, at + 1, 1);
+  }
+  return null;
 }
 
 function beside(
@@ -254,7 +279,7 @@ function afterKeyword(tokens: readonly TextToken[], at: number): AtomMention | n
     if (tokens[i]!.kind !== 'word') continue;
     const glued = gluedName(text, i, 1);
     if (glued) return { ...glued, index: glued.index, isSure: true };
-    const element = symbolOf(text);
+    const element = symbolOf(text) ?? symbolOf(countedSymbol.exec(text)?.[2] ?? '');
     if (element !== null) return { ...blank, element, index: token!.value, end: i + 1, isSure: true };
     if (/^(?:bq|gh|ghost|dummy)$/i.test(text)) {
       return { ...blank, label: text, index: token!.value, isGhost: true, end: i + 1, isSure: true };

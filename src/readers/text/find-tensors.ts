@@ -25,6 +25,8 @@ const keptPrinted = 20;
 /** `units efg au`: the unit of everything that a keyword names. */
 export interface UnitLine {
   readonly words: readonly string[];
+  /** True where the line names field gradients. */
+  readonly ofGradients: boolean;
   readonly unit: NonNullable<LineMeaning['unit']>;
   readonly line: number;
   readonly text: string;
@@ -51,6 +53,9 @@ class TensorFinder implements LineFinder<TensorSightings> {
   readonly #unitLines: UnitLine[] = [];
   #pending: { key: string | null; value: PrintedValue }[] = [];
   #leftOut = 0;
+  #held: { readonly seed: TensorSeed; readonly width: number } | null = null;
+  /** Width of rows that follow each other without a name; 0 outside of such a run. */
+  #besideWidth = 0;
   readonly #blocks = new BlockFinder(
     (seed) => this.#emit(seed),
     (line) => this.#context.surroundings(line),
@@ -67,11 +72,13 @@ class TensorFinder implements LineFinder<TensorSightings> {
 
   take(line: TextLine): void {
     const row = line.tokens.length === 0 ? null : dataRow(line);
+    this.#release(row);
     const inTable = this.#table.take(line, row);
     const isDirection = !inTable && this.#principal.take(line, row);
     const isNamed = !inTable && !isDirection && this.#named.take(line);
     const isRow = !inTable && !isNamed && row !== null && this.#takeRow(row);
-    this.#blocks.take(inTable || isNamed || isRow ? null : row);
+    // A row that names no atom may be the first of blocks side by side: the next line tells.
+    this.#blocks.take(inTable || isNamed || (isRow && this.#held === null) ? null : row);
     if (inTable || isNamed) return;
     this.#context.note(line, row);
     this.#keepUnit(line, this.#context.lastMeaning);
@@ -80,8 +87,24 @@ class TensorFinder implements LineFinder<TensorSightings> {
 
   #takeRow(row: DataRow): boolean {
     const seed = rowTensor(row, this.#context);
-    if (seed) this.#emit(seed);
-    return seed !== null;
+    if (seed === null) return false;
+    if (row.atom !== null || row.values.length % 3 === 1) this.#emit(seed);
+    else this.#held = { seed, width: row.values.length };
+    return true;
+  }
+
+  /** The row held from the line before is a tensor of its own unless another row of its width follows. */
+  #release(row: DataRow | null): void {
+    const held = this.#held;
+    if (held === null) {
+      if (row === null || row.values.length !== this.#besideWidth) this.#besideWidth = 0;
+      return;
+    }
+    this.#held = null;
+    const follows = row !== null && row.values.length === held.width && row.atom === null;
+    if (follows) this.#besideWidth = held.width;
+    else if (this.#besideWidth !== held.width) this.#emit(held.seed);
+    else this.#besideWidth = 0;
   }
 
   #keepPrinted(line: TextLine): void {
@@ -95,8 +118,11 @@ class TensorFinder implements LineFinder<TensorSightings> {
   #keepUnit(line: TextLine, meaning: LineMeaning | null): void {
     if (meaning === null || meaning.unit === null || this.#unitLines.length > 200) return;
     const words = line.tokens.filter(({ kind }) => kind === 'word').map(({ text }) => text.toLowerCase());
-    if (words.length > 6 || !words.some((word) => /^units?$/.test(word))) return;
+    const isUnitRow = words.length <= 6 && words.some((word) => /^units?$/.test(word));
+    const ofGradients = meaning.quantity === 'efg' && meaning.unit !== 'ppm';
+    if (!isUnitRow && !ofGradients) return;
     this.#unitLines.push({
+      ofGradients,
       words,
       unit: meaning.unit,
       line: line.number,
@@ -119,6 +145,7 @@ class TensorFinder implements LineFinder<TensorSightings> {
   }
 
   finish(): TensorSightings {
+    this.#release(null);
     this.#blocks.close();
     this.#named.close();
     this.#table.close();

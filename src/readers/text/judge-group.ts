@@ -28,6 +28,8 @@ export interface JudgedGroup {
   readonly digits: number;
   /** Entries with a printed value that agrees. */
   readonly proved: number;
+  /** Places of six components; null where nine stand there. */
+  readonly sixOrder: readonly number[] | null;
   readonly isOrderProved: boolean;
   readonly ghosts: number;
 }
@@ -93,6 +95,7 @@ export function judgeGroup(whole: TensorGroup, text: TextEvidence): JudgedGroup 
     entries,
     digits: tensors[0]?.digits ?? 0,
     proved,
+    sixOrder: sixes?.order ?? null,
     isOrderProved: sixes?.isProved ?? true,
     ghosts: whole.tensors.length - tensors.length,
   };
@@ -248,7 +251,7 @@ function unitOf(
   );
   const said = ofKeyword
     ? { value: ofKeyword.unit as EfgUnit, words: ofKeyword.text, line: ofKeyword.line }
-    : (topic.efgUnit ?? null);
+    : (topic.efgUnit ?? unitElsewhere(unitLines, facts));
   if (proved !== null) {
     const agrees = said === null || said.value === proved.unit;
     evidence.push(
@@ -263,6 +266,17 @@ function unitOf(
   }
   evidence.push('no unit is named');
   return 'unknown';
+}
+
+/** Unit of field gradients that a line after the group names, else one before it. */
+function unitElsewhere(
+  lines: readonly UnitLine[],
+  facts: readonly Facts[],
+): { value: EfgUnit; words: string; line: number } | null {
+  const last = facts[facts.length - 1]?.raw.line ?? 0;
+  const fitting = lines.filter(({ ofGradients, unit }) => ofGradients && unit !== 'ppm');
+  const found = fitting.find(({ line }) => line > last) ?? fitting[fitting.length - 1];
+  return found ? { value: found.unit as EfgUnit, words: found.text, line: found.line } : null;
 }
 
 /** Unit in which most of the printed couplings agree with the tensors. */

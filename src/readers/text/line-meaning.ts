@@ -187,7 +187,8 @@ function orderIn(text: string): readonly number[] | null {
 
 /** Names of fields as words: `electric_field_gradient`, `shieldingTensors`. */
 function plainWords(text: string): string {
-  return text.replace(/(\p{Ll})(?=\p{Lu}\p{Ll}{2})/gu, '$1 ').replace(/_(?=\p{Ll}{3})/gu, ' ');
+  const plain = text.includes('$') ? text.replace(/[${}\\]/g, '') : text;
+  return plain.replace(/(\p{Ll})(?=\p{Lu}\p{Ll}{2})/gu, '$1 ').replace(/_(?=\p{Ll}{3})/gu, ' ');
 }
 
 /** What the words of a line say about the numbers under it. Words alone: no number is looked at. */

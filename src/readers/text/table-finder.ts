@@ -5,7 +5,7 @@ import type { DataRow } from './data-row.ts';
 import type { PrintedValue } from './raw-tensor.ts';
 import { digitsOf } from './printed-values.ts';
 import type { TableHeader } from './table-header.ts';
-import { cellsOf, tableHeader } from './table-header.ts';
+import { cellsOf, tableHeader, withoutTypesetting } from './table-header.ts';
 import { rowCells } from './table-rows.ts';
 import type { TensorSeed } from './tensor-seed.ts';
 import type { Surroundings, TextContext } from './text-context.ts';
@@ -215,7 +215,7 @@ function prefixOf(header: TableHeader | null): string {
 
 function delimitedCells(header: TableHeader, line: TextLine): ReturnType<typeof rowCells> {
   const mark = header.delimiter!;
-  const cells = cellsOf(line.text, mark);
+  const cells = cellsOf(mark === '&' ? withoutTypesetting(line.text) : line.text, mark);
   if (cells.length < header.columns.length - 1 || cells.length > header.columns.length + 1) return null;
   const numbers = new Map<number, { value: number; text: string }>();
   const columns = new Map<string, string>();

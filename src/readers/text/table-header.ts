@@ -77,8 +77,15 @@ export function cellsOf(text: string, delimiter: string): string[] {
   );
 }
 
+/** `$V_{xx}$` as `V_xx`: marks of typesetting dropped. */
+export function withoutTypesetting(text: string): string {
+  return text.replace(/\\(?:mathrm|text|rm|sigma|delta)?|[${}]/g, (mark) =>
+    /sigma|delta/.test(mark) ? mark.slice(1) : '',
+  );
+}
+
 function delimiterOf(text: string): string | null {
-  for (const mark of [';', '\t', '|', ',']) {
+  for (const mark of ['&', ';', '\t', '|', ',']) {
     const count = text.split(mark).length - 1;
     if (count >= (mark === ',' || mark === '|' ? 3 : 2)) return mark;
   }
@@ -87,7 +94,8 @@ function delimiterOf(text: string): string | null {
 
 /** The header that a line is; null where it names fewer than three components or printed values, or holds numbers of its own. */
 export function tableHeader(line: TextLine): TableHeader | null {
-  const { tokens, text } = line;
+  const { tokens } = line;
+  const text = line.text.includes('$') ? withoutTypesetting(line.text) : line.text;
   let named = 0;
   let decimals = 0;
   for (const { kind, text: piece } of tokens) {

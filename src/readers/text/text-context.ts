@@ -13,6 +13,9 @@ const keptFar = 12;
 /** Lines after which an atom that was named is no longer meant. */
 const atomHolds = 60;
 
+/** Lines between an element and its number, where each has a line of its own. */
+const numberHolds = 2;
+
 /** What stands above numbers when they come. */
 export interface Surroundings {
   readonly atom: AtomMention | null;
@@ -38,6 +41,7 @@ export class TextContext {
   /** True once a tensor came for the atom: a line that names only its element then begins another. */
   #atomHasTensor = false;
   #lastMention: AtomMention | null = null;
+  #number: { index: number | null; line: number } = { index: null, line: -10 };
   #mentionLine = 0;
   #farShared: readonly NearLine[] = [];
 
@@ -62,6 +66,10 @@ export class TextContext {
   #noteAtom(line: TextLine): void {
     const mention = atomMention(line);
     if (mention === null) return;
+    if (mention.element === null && mention.label === null && !mention.isSure) {
+      this.#noteNumber(mention.index, line.number);
+      return;
+    }
     const neighbours = this.#mentionLine === line.number - 1;
     const isList = neighbours && this.#lastMention !== null && !isSame(mention, this.#lastMention);
     this.#lastMention = mention;
@@ -76,10 +84,20 @@ export class TextContext {
     ) {
       this.#atom = merged(this.#atom, mention);
     } else {
-      this.#atom = isList ? null : mention;
+      const { index, line: at } = this.#number;
+      const numbered = mention.index === null && mention.label === null && line.number - at <= numberHolds;
+      this.#atom = isList ? null : numbered ? { ...mention, index } : mention;
       this.#atomHasTensor = false;
     }
     this.#atomLine = line.number;
+  }
+
+  /** A number on a line of its own is the atom's where the element stands beside it. */
+  #noteNumber(index: number | null, line: number): void {
+    if (this.#atom?.index === null && line - this.#atomLine <= numberHolds) {
+      this.#atom = { ...this.#atom, index };
+      this.#lastMention = this.#atom;
+    } else this.#number = { index, line };
   }
 
   #toFar(line: NearLine): void {

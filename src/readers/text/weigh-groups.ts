@@ -1,4 +1,5 @@
 import type { FoundEntry, FoundGroup, GroupRole } from './found-text.ts';
+import { groupSignatures } from './group-signature.ts';
 import type { JudgedGroup } from './judge-group.ts';
 
 interface Weighed {
@@ -59,7 +60,11 @@ export function weighGroups(judged: readonly JudgedGroup[]): FoundGroup[] {
     markRepeated(ours);
     propose(ours);
   }
-  return all.filter(({ judged: one }) => one.entries.length > 0).map(foundGroup);
+  const standing = all.filter(({ judged: one }) => one.entries.length > 0);
+  const signatures = groupSignatures(
+    standing.map(({ judged: { group, roleWord } }) => ({ ...group, roleWord })),
+  );
+  return standing.map((one, at) => foundGroup(one, signatures[at]!));
 }
 
 /** Parts of a whole that stand before it: at most so many are added up. */
@@ -189,7 +194,7 @@ const roleSentences: Readonly<Record<GroupRole, string | null>> = {
   unknown: 'quantity not settled by the text: choose it',
 };
 
-function foundGroup({ judged, role, roleWord, proposed, evidence }: Weighed): FoundGroup {
+function foundGroup({ judged, role, roleWord, proposed, evidence }: Weighed, signature: string): FoundGroup {
   const word = roleWord === null ? '' : ` (${roleWord})`;
   const sentence = roleSentences[role];
   const all = [...evidence, ...(sentence === null ? [] : [`${sentence}${word}`])];
@@ -205,5 +210,8 @@ function foundGroup({ judged, role, roleWord, proposed, evidence }: Weighed): Fo
     proposed,
     structureIndex: judged.structureIndex,
     entries: judged.entries,
+    signature,
+    sixOrder: judged.sixOrder,
+    isOrderProved: judged.isOrderProved,
   };
 }
