@@ -78,7 +78,7 @@ export class LatticeLines {
     const matrices = [...Array(Math.min(count, 2)).keys()].map((i) =>
       asMat3(vectors.flatMap((v) => [...v[i]!])),
     );
-    const lines = [...rows.map(({ text }) => text.replace(/[-+]?\d[\d.eEdD+-]*/g, ' ')), ...this.#heading];
+    const lines = [...rows.map(wordsOf), ...this.#heading];
     const deciding = lines.find((text) => latticeWords.test(text) || otherWords.test(text));
     if (deciding === undefined) return this.#bareRows(rows, matrices);
     const direct = directOne(deciding, matrices);
@@ -209,6 +209,12 @@ function startsOther(text: string): boolean {
   return (
     other >= 0 && other < text.search(/alpha|angles?\b|α|lattice|cell|vector|axes|basis|translation|prim/i)
   );
+}
+
+/** The line without its numbers. */
+function wordsOf({ words, columns, text }: NumericRow): string {
+  const plain = words.length === 0 && columns.every(({ kind }) => kind === 'number');
+  return plain ? '' : text.replace(/[-+]?\d[\d.eEdD+-]*/g, ' ');
 }
 
 /** True for rows that name elements, unless it is one letter three times, as in `t1`, `t2`, `t3`. */

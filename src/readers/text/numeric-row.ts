@@ -29,16 +29,24 @@ export interface NumericRow {
 /** The columns of a line, letters of axes between the numbers left out; null for a line with fewer than three numbers. */
 export function numericRow(line: TextLine): NumericRow | null {
   let numbers = 0;
-  for (const token of line.tokens) if (token.kind === 'number') numbers++;
+  let letters = 0;
+  for (const { kind } of line.tokens) {
+    if (kind === 'number') numbers++;
+    else if (kind === 'word') letters++;
+  }
   if (numbers < 3) return null;
   const columns: RowColumn[] = [];
-  const axes = /\bx\b/i.test(line.text) && /\bz\b/i.test(line.text);
+  const words: string[] = [];
+  let key = '';
+  const axes = letters > 2 && /\bx\b/i.test(line.text) && /\bz\b/i.test(line.text);
   for (const token of line.tokens) {
     if (token.kind === 'mark' || (axes && /^[xyz]$/i.test(token.text))) continue;
-    columns.push(token.kind === 'number' ? numberColumn(token) : wordColumn(token));
+    const column = token.kind === 'number' ? numberColumn(token) : wordColumn(token);
+    columns.push(column);
+    if (column.kind === 'word') words.push(column.text.toLowerCase());
+    key += key === '' ? keyOf(column) : ` ${keyOf(column)}`;
   }
-  const words = columns.filter(({ kind }) => kind === 'word').map(({ text }) => text.toLowerCase());
-  return { line: line.number, text: line.text, columns, key: columns.map(keyOf).join(' '), words };
+  return { line: line.number, text: line.text, columns, key, words };
 }
 
 function numberColumn({ text, value, start }: TextLine['tokens'][number]): RowColumn {
@@ -46,7 +54,7 @@ function numberColumn({ text, value, start }: TextLine['tokens'][number]): RowCo
     kind: 'number',
     text,
     value,
-    isInteger: /^[+-]?\d+$/.test(text),
+    isInteger: Number.isInteger(value) && /^[+-]?\d+$/.test(text),
     element: null,
     glued: null,
     start,
