@@ -44,14 +44,21 @@ export class MeasurePanel extends StoreElement {
     css`
       li {
         display: grid;
-        grid-template-columns: minmax(0, 1fr) auto auto;
+        grid-template-columns: auto minmax(0, 1fr) auto;
         align-items: center;
         gap: 0 10px;
-        padding: 1px 0;
+        padding: 3px 0 1px;
         border-top: 1px solid var(--hairline);
       }
-      li .note {
+      /* names of atoms are long where symmetry made them: a line of their own above value, copies and button */
+      li > :first-child {
         grid-column: 1 / -1;
+      }
+      li button {
+        grid-area: 2 / 3;
+      }
+      li .note {
+        grid-area: 2 / 2;
         font-size: 12px;
       }
       li .number {

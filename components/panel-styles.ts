@@ -37,7 +37,8 @@ export const panelStyles = css`
     gap: 4px 10px;
     min-height: 28px;
   }
-  .row + .row {
+  fieldset > * + .row,
+  .row + .note {
     margin-top: 4px;
   }
   label {
@@ -57,7 +58,7 @@ export const panelStyles = css`
   /* a field for words takes what its button leaves */
   form.row label:has(.words) {
     flex: 1 1 0;
-    min-width: 0;
+    min-width: min-content;
   }
   form.row label .words {
     flex: 1 1 0;
