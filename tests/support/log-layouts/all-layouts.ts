@@ -1,4 +1,5 @@
 import { blockLayouts } from './block-layouts.ts';
+import { rareLayouts } from './rare-layouts.ts';
 import { rowLayouts } from './row-layouts.ts';
 import { tableLayouts } from './table-layouts.ts';
 import type { LogLayout } from './log-writer.ts';
@@ -8,4 +9,5 @@ export const logLayouts: readonly (readonly [string, LogLayout])[] = Object.entr
   ...blockLayouts,
   ...rowLayouts,
   ...tableLayouts,
+  ...rareLayouts,
 });
