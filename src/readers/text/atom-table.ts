@@ -33,11 +33,11 @@ export function atomTable(run: RowRun): AtomTable | null {
   const offsets = tripleOffsets(run.rows);
   if (offsets.length === 0) return null;
   const evidence = coordinateEvidence(wordsBefore(first, offsets[0]!), run.heading);
-  const hasElement = first.columns.some(({ kind }) => kind === 'element');
+  const name = nameColumns(run.rows, offsets, run.heading);
+  const hasElement = name.element !== null;
   if (evidence.areCoordinates === 'no') return null;
   if (!hasElement && evidence.areCoordinates === null && !mayBeBareList(run, offsets)) return null;
   if (!hasElement && run.rows.length < 2) return null;
-  const name = nameColumns(run.rows, offsets, run.heading);
   const rows = run.rows.map((row, i) => atomRow(row, name, offsets, run.headElements[i] ?? null));
   return { line: first.line, rows, evidence, decimals: offsets.map((at) => decimalsAt(run.rows, at)) };
 }
@@ -74,7 +74,7 @@ function nameColumns(
   const first = rows[0]!;
   const inTriple = new Set(offsets.flatMap((at) => [at, at + 1, at + 2]));
   const free = first.columns.map((_, i) => i).filter((i) => !inTriple.has(i));
-  const element = free.find((i) => first.columns[i]!.kind === 'element') ?? null;
+  const element = elementColumn(rows, free, offsets[0]!);
   const values = (i: number): number[] => rows.map(({ columns }) => columns[i]!.value);
   const whole = free.filter(
     (i) => first.columns[i]!.kind === 'number' && values(i).every((v) => Number.isInteger(v) && v >= 0),
@@ -102,6 +102,14 @@ function nameColumns(
     number: counter ?? restarting ?? null,
     species: element === null && charge === null ? (rest[0] ?? null) : null,
   };
+}
+
+/** The column of symbols; columns of `T` and `F` are more often answers, such as whether an atom may move. */
+function elementColumn(rows: readonly NumericRow[], free: readonly number[], offset: number): number | null {
+  const named = free.filter((i) => rows[0]!.columns[i]!.kind === 'element');
+  const isFlags = (i: number): boolean => rows.every(({ columns }) => /^[TF]$/i.test(columns[i]!.text));
+  const sure = named.find((i) => !isFlags(i));
+  return sure ?? (named.length === 1 && named[0]! < offset ? named[0]! : null);
 }
 
 /** A column that says the nuclear charge gives each element of the rows one value. */

@@ -191,5 +191,8 @@ function indicesOf(
     return next;
   });
   const overall = indices.every((n, i) => n === order[i]);
+  if (new Set(indices.map((n, i) => `${elements[i]} ${n}`)).size < indices.length) {
+    return { indices: order, withinElement: false };
+  }
   return { indices, withinElement: !overall && indices.every((n, i) => n === running[i]) };
 }

@@ -108,6 +108,41 @@ const layouts: Record<string, string[]> = {
         `${symbol}${perElement[i]} ${symbol} ${fractional[i]!.map((v) => `${v!.toFixed(4)}(2)`).join(' ')} 1.0`,
     ),
   ],
+  'answers whether an atom may move': [
+    ...inAngstrom,
+    'Ti Sr O',
+    '1 1 3',
+    'fractional coordinates, free to move',
+    ...fractional.map((f, i) => `${vector(f)} T ${i % 2 ? 'F' : 'T'} T`),
+  ],
+  'answers before the symbol': [
+    ...inAngstrom,
+    'atom  unique  charge  symbol   x/a   y/b   z/c',
+    ...atoms.map(
+      ([symbol, z], i) =>
+        `${i + 1} ${i < 4 ? 'T' : 'F'} ${z} ${symbol.toUpperCase()} ${vector(fractional[i]!)}`,
+    ),
+  ],
+  'a box of letters around the list': [
+    ...inAngstrom,
+    'x  Element   Atom     Fractional coordinates   x',
+    'x            Number     u        v        w    x',
+    'x'.repeat(50),
+    ...atoms.map(([symbol], i) => `x  ${symbol}  ${perElement[i]}  ${vector(fractional[i]!)}  x`),
+  ],
+  'nuclides in place of symbols': [
+    ...inAngstrom,
+    'fractional coordinates',
+    ...atoms.map((_, i) => `${['47Ti', '87Sr', '17O', '17O', '17O'][i]} ${vector(fractional[i]!)}`),
+  ],
+  'real and reciprocal vectors named on the line': [
+    'Primitive vectors R (bohr) and reciprocal G (1/bohr)',
+    ...reciprocalBeside(1 / bohr).map((row, i) =>
+      row.replace('#', `R(${i + 1})=`).replace('#', `G(${i + 1})=`),
+    ),
+    'reduced coordinates',
+    ...listed,
+  ],
   'a matrix that is no cell in the same words': [
     'Cell, direct vectors (Å)',
     ...latticeRows(),
@@ -117,6 +152,17 @@ const layouts: Record<string, string[]> = {
     ...listed,
   ],
 };
+
+function reciprocalBeside(factor: number): string[] {
+  const cross = (p: number[], q: number[]): number[] => [
+    p[1]! * q[2]! - p[2]! * q[1]!,
+    p[2]! * q[0]! - p[0]! * q[2]!,
+    p[0]! * q[1]! - p[1]! * q[0]!,
+  ];
+  const volume = cross(vb, vc).reduce((sum, v, i) => sum + v * va[i]!, 0);
+  const stars = [cross(vb, vc), cross(vc, va), cross(va, vb)];
+  return [va, vb, vc].map((v, i) => `# ${vector(v, factor)}  # ${vector(stars[i]!, 1 / volume / factor)}`);
+}
 
 describe('rarer structures in a text', () => {
   it.each(Object.entries(layouts))('%s', (_, lines) => {
