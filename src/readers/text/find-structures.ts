@@ -87,7 +87,7 @@ interface Draft {
 }
 
 function draftOf(table: AtomTable, species: SpeciesLists, choices: readonly LatticeChoice[]): Draft | null {
-  const named = elementsOf(table, species);
+  const named = withoutOverflow(table, elementsOf(table, species));
   if (!named || named.elements.every((element) => element === 'X')) return null;
   const rows = table.rows;
   if (rows.length < 3 && table.evidence.areCoordinates !== 'yes') return null;
@@ -98,10 +98,27 @@ function draftOf(table: AtomTable, species: SpeciesLists, choices: readonly Latt
   return { table, elements: named.elements, reading, latticeLine: choice?.line ?? null, words };
 }
 
-function elementsOf(
-  { rows, line }: AtomTable,
-  species: SpeciesLists,
-): { elements: readonly string[]; words: string } | null {
+interface NamedRows {
+  /** `X` where a row is left out. */
+  readonly elements: readonly string[];
+  readonly words: string;
+}
+
+/** Longest coordinate that is believed, as printed. */
+const longestCoordinate = 1e6;
+
+/** Rows with a coordinate that did not fit its field are left out, and counted. */
+function withoutOverflow({ rows }: AtomTable, named: NamedRows | null): NamedRows | null {
+  if (!named) return null;
+  const bad = rows.map(({ triples }) => triples.flat().some((v) => !(Math.abs(v) < longestCoordinate)));
+  const count = bad.filter(Boolean).length;
+  if (count === 0) return named;
+  const elements = named.elements.map((element, i) => (bad[i] ? 'X' : element));
+  const words = [named.words, `${count} rows without a readable coordinate left out`];
+  return { elements, words: words.filter((w) => w !== '').join('; ') };
+}
+
+function elementsOf({ rows, line }: AtomTable, species: SpeciesLists): NamedRows | null {
   const first = rows[0]!.element;
   const isByHeading = rows.every(
     ({ label, element }) => label === null && element === first && first !== null,
