@@ -6,6 +6,7 @@ import type { DossierSettings } from '#src/dossier/dossier.ts';
 import type { TextChoice } from '#src/tensor/text-choice.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
 import type { CrystalSummary } from './crystal-summary.ts';
+import type { FoundSummary } from './found-protocol.ts';
 import type { Query, QueryAnswer } from './engine-queries.ts';
 
 /** One file the user gave. The blob holds the bytes as they were; it crosses to the worker without a copy. */
@@ -71,17 +72,6 @@ export interface ProposalSummary {
   readonly line: number;
   readonly quantity: Quantity | 'unknown';
   readonly reason: string;
-}
-
-/** What was found in one text of no format of its own. */
-export interface FoundSummary {
-  readonly sourceId: string;
-  readonly file: string;
-  readonly groupCount: number;
-  /** Of the groups that are taken. */
-  readonly tensorCount: number;
-  /** What the text leaves open and the user should answer. */
-  readonly questionCount: number;
 }
 
 /** What the engine makes of a case. `crystal` is null when the files hold no structure. */

@@ -9,12 +9,15 @@ import { deriveDossier } from '#src/dossier/derive-dossier.ts';
 import type { CrystalDossier } from '#src/dossier/dossier.ts';
 import { readAnyText } from '#src/readers/read-any-text.ts';
 import type { Reading } from '#src/readers/reading.ts';
+import type { TextChoice } from '#src/tensor/text-choice.ts';
 import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
 import { summaryOf } from './crystal-summary.ts';
 import type { CaseInput, DerivedCase, LinePage, SourceFile } from './engine-protocol.ts';
 import { CrystalDesk } from './engine-queries.ts';
 import type { Query, QueryAnswer } from './engine-queries.ts';
 import { chooseStructure, proposalsOf, structuresOf, tensorsFor } from './choose-structure.ts';
+import { foundSummary } from './found-desk.ts';
+import type { SearchedText } from './found-desk.ts';
 import { linePage } from './line-page.ts';
 
 /** One file after reading. */
@@ -24,6 +27,8 @@ export interface ReadSource {
   readonly file: SourceFile;
   readonly source: SourceText | null;
   readonly reading: Reading;
+  /** Of turning bytes into text; `reading` holds them, too. */
+  readonly decoding: readonly Problem[];
 }
 
 export interface Engine {
@@ -74,9 +79,30 @@ async function readSource(
 ): Promise<Omit<ReadSource, 'key'>> {
   report(0, `reading ${file.name}`);
   const { source, problems } = await decodeFile(file);
-  if (!source) return { file, source, reading: { ...unreadable(file.name), problems } };
+  if (!source) return { file, source, decoding: problems, reading: { ...unreadable(file.name), problems } };
   const reading = await readAnyText(source, { accept, progress: report });
-  return { file, source, reading: { ...reading, problems: [...problems, ...reading.problems] } };
+  return {
+    file,
+    source,
+    decoding: problems,
+    reading: { ...reading, problems: [...problems, ...reading.problems] },
+  };
+}
+
+/** The same text read as the user's choices say: nothing is searched again. */
+async function rechosen(read: ReadSource, choices: readonly TextChoice[]): Promise<ReadSource> {
+  const { found } = read.reading;
+  if (!found || choices.length === 0) return read;
+  const { readingOf } = await import('#src/readers/text/read-found-text.ts');
+  const reading = readingOf(found.asFound, choices);
+  if (!reading) return read;
+  return { ...read, reading: { ...reading, problems: [...read.decoding, ...reading.problems] } };
+}
+
+function searchedTexts(read: readonly ReadSource[]): SearchedText[] {
+  return read.flatMap(({ file, reading }) =>
+    reading.found ? [{ sourceId: file.id, file: file.name, ...reading.found }] : [],
+  );
 }
 
 function unreadable(file: string): Reading {
@@ -85,7 +111,9 @@ function unreadable(file: string): Reading {
 
 /** Files without a structure; nothing where an error of the reading says so already. */
 function noStructure(read: readonly ReadSource[], problems: readonly Problem[]): Problem[] {
-  const held = read.some(({ reading }) => reading.tensorSets.length > 0);
+  const held = read.some(
+    ({ reading: { tensorSets, found } }) => tensorSets.length > 0 || found !== undefined,
+  );
   if (!held && problems.some(({ severity }) => severity === 'error')) return [];
   const names = read.map(({ file }) => file.name).join(', ');
   const message = held
@@ -113,8 +141,8 @@ class ReadingEngine implements Engine {
   }
 
   async derive(derivation: number, input: CaseInput, report: ReportProgress): Promise<DerivedCase> {
-    const { derived, dossier } = await this.#derive(derivation, input, report);
-    if (dossier) this.#desks.set(derivation, Promise.resolve(new CrystalDesk(dossier)));
+    const { derived, dossier, texts } = await this.#derive(derivation, input, report);
+    if (dossier) this.#desks.set(derivation, Promise.resolve(new CrystalDesk(dossier, texts)));
     return derived;
   }
 
@@ -122,7 +150,7 @@ class ReadingEngine implements Engine {
     let desk = this.#desks.get(derivation);
     if (!desk) {
       desk = this.#derive(derivation, input, () => undefined).then(
-        ({ dossier }) => dossier && new CrystalDesk(dossier),
+        ({ dossier, texts }) => dossier && new CrystalDesk(dossier, texts),
       );
       this.#desks.set(derivation, desk);
     }
@@ -141,10 +169,15 @@ class ReadingEngine implements Engine {
     derivation: number,
     input: CaseInput,
     report: ReportProgress,
-  ): Promise<{ readonly derived: DerivedCase; readonly dossier: CrystalDossier | null }> {
+  ): Promise<{
+    readonly derived: DerivedCase;
+    readonly dossier: CrystalDossier | null;
+    readonly texts: readonly SearchedText[];
+  }> {
     const watched = throttled(report);
     const read = await this.#readAll(input, watched);
     const chosen = chooseStructure(read, input.structure);
+    const texts = searchedTexts(read);
     const base = {
       derivation,
       sources: read.map(({ file, source, reading }) => ({
@@ -157,6 +190,7 @@ class ReadingEngine implements Engine {
       structures: structuresOf(read),
       tensors: tensorsFor(read, chosen?.choice ?? null).map(({ summary }) => summary),
       proposals: proposalsOf(read),
+      ...(texts.length > 0 && { found: texts.map(foundSummary) }),
     };
     const readingProblems = [
       ...(input.openingProblems ?? []),
@@ -164,7 +198,7 @@ class ReadingEngine implements Engine {
     ];
     if (!chosen) {
       const problems = [...readingProblems, ...noStructure(read, readingProblems)];
-      return { derived: { ...base, chosen: null, crystal: null, problems }, dossier: null };
+      return { derived: { ...base, chosen: null, crystal: null, problems }, dossier: null, texts };
     }
     watched(readingShare, 'loading the symmetry tables');
     const tables = await this.#symmetryTables();
@@ -181,7 +215,11 @@ class ReadingEngine implements Engine {
       (share, stage) => watched(readingShare + (1 - readingShare) * share, stage),
     );
     const crystal = summaryOf(dossier);
-    return { derived: { ...base, chosen: chosen.choice, crystal, problems: dossier.problems }, dossier };
+    return {
+      derived: { ...base, chosen: chosen.choice, crystal, problems: dossier.problems },
+      dossier,
+      texts,
+    };
   }
 
   async lines(file: SourceFile, first: number, count: number): Promise<LinePage> {
@@ -191,7 +229,10 @@ class ReadingEngine implements Engine {
     return source ? linePage(source, first, count) : { first: 1, lines: [], total: 0 };
   }
 
-  async #readAll({ sources, accepted = {} }: CaseInput, report: ReportProgress): Promise<ReadSource[]> {
+  async #readAll(
+    { sources, accepted = {}, textChoices = [] }: CaseInput,
+    report: ReportProgress,
+  ): Promise<ReadSource[]> {
     const total = sources.reduce((sum, { blob }) => sum + blob.size, 0) || 1;
     const read: ReadSource[] = [];
     let done = 0;
@@ -207,7 +248,7 @@ class ReadingEngine implements Engine {
       done += share;
     }
     this.#read = new Map(read.map((one) => [one.file.id, one]));
-    return read;
+    return Promise.all(read.map((one) => rechosen(one, textChoices)));
   }
 
   async #symmetryTables(): Promise<SymmetryTables> {

@@ -107,7 +107,7 @@ export function atomMention(line: TextLine): AtomMention | null {
   let words = 0;
   for (const token of tokens) if (token.kind === 'word') words++;
   const keyword = tokens.findIndex(({ kind, text }) => kind === 'word' && strongKeywords.test(text));
-  if (words > 14 && keyword !== 0) return null;
+  if (words > 20 && keyword !== 0) return null;
   let seen = 0;
   for (let at = 0; at < limit; at++) {
     const token = tokens[at]!;
@@ -166,7 +166,8 @@ function ofPair(key: string, value: string, end: number): AtomMention | null {
 function alone(tokens: readonly TextToken[], words: number): AtomMention | null {
   const first = tokens.findIndex(({ kind }) => kind !== 'mark');
   const element = first >= 0 && tokens[first]!.kind === 'word' ? symbolOf(tokens[first]!.text) : null;
-  if (element === null || words > 2) return null;
+  if (element === null || words > 2 || element === 'Y') return null;
+  if (/^[([{]$/.test(tokens[first + 1]?.text ?? '') && tokens[first + 2]?.kind === 'word') return null;
   const label = tokens[first]!.text;
   return { label, element, index: null, isGhost: false, end: first + 1, isSure: false };
 }
@@ -179,7 +180,10 @@ function mentionAt(
   named: boolean,
 ): AtomMention | null {
   const { text } = tokens[at]!;
-  const isEarly = seen < 4 || named || /["'=>]/.test(tokens[at - 1]?.text ?? '');
+  const isOf = /^(?:of|for|at|on)$/i.test(tokens[at - 1]?.text ?? '');
+  const isEarly = seen < 4 || named || isOf || /["'>]/.test(tokens[at - 1]?.text ?? '');
+  // `I = 5/2` and `Q = 0.1` are quantities, no elements.
+  if (text.length <= 2 && /^[=/*^²]$/.test(tokens[at + 1]?.text ?? '')) return null;
   if (componentOf(text) && !elementOf(text.replace(/\d+$/, ''))) return null;
   const numbered = keywordGlued.exec(text);
   if (numbered) return { ...blank, index: Number(numbered[1]), end: at + 1, isSure: true };
@@ -196,7 +200,7 @@ function mentionAt(
     const found = gluedName(text, at, words) ?? countedName(tokens, at);
     if (found) return { ...found, isSure: named };
     const element = symbolOf(text);
-    if (element !== null) return beside(tokens, at, element, named, words);
+    if (element !== null) return beside(tokens, at, element, named || isOf, words);
   }
   if (strongKeywords.test(text)) return afterKeyword(tokens, at);
   return null;

@@ -1,6 +1,7 @@
 import type { AtomMention } from './atom-mention.ts';
 import { atomKey } from './atom-mention.ts';
 import type { DataRow } from './data-row.ts';
+import { areOrthonormal, fromPrincipal } from './principal-tensor.ts';
 import type { Surroundings } from './text-context.ts';
 import type { TensorSeed } from './tensor-seed.ts';
 
@@ -34,6 +35,8 @@ export class BlockFinder {
   #rows: BlockRow[] = [];
   #length = 0;
   #start: Surroundings | null = null;
+  /** A row of three numbers right above the first of the run. */
+  #head: { readonly row: BlockRow; readonly start: Surroundings } | null = null;
 
   constructor(emit: (seed: TensorSeed) => void, surroundings: (line: number) => Surroundings) {
     this.#emit = emit;
@@ -47,7 +50,14 @@ export class BlockFinder {
       this.close();
       return false;
     }
-    if (this.#rows.length > 0 && this.#beginsAnew(next)) this.close();
+    if (this.#rows.length > 0 && this.#beginsAnew(next)) {
+      const [only] = this.#rows;
+      const head =
+        this.#length === 1 && next.row.axis === 0 && next.row.line === only!.row.line + 1 ? only! : null;
+      const start = this.#start;
+      this.close();
+      this.#head = head && start ? { row: head, start } : null;
+    }
     if (this.#length === 0) this.#start = this.#surroundings(next.row.line);
     this.#length++;
     if (this.#rows.length < longestRun) this.#rows.push(next);
@@ -58,6 +68,8 @@ export class BlockFinder {
   #beginsAnew(next: BlockRow): boolean {
     const last = this.#rows[this.#rows.length - 1]!;
     if (last.values.length !== next.values.length) return true;
+    const nextAxis = next.row.axis !== null && last.row.axis !== null && next.row.axis === last.row.axis + 1;
+    if (this.#length >= 3 && last.row.lead !== next.row.lead && !nextAxis) return true;
     const [first] = this.#rows;
     if (next.row.axis === 0 && last.row.axis !== 0) return true;
     const [own, before] = [next.row.atom, first!.row.atom];
@@ -65,8 +77,36 @@ export class BlockFinder {
     return own !== null && this.#length >= 3;
   }
 
+  /** Principal values over a matrix whose columns are their directions. */
+  #emitPrincipal(rows: readonly BlockRow[], start: Surroundings): void {
+    const [head, ...rest] = rows as [BlockRow, ...BlockRow[]];
+    const matrix = rest.flatMap(({ values }) => values);
+    if (matrix.length !== 9 || !areOrthonormal(matrix)) return;
+    const vectors = [0, 1, 2].map((k) => [matrix[k]!, matrix[3 + k]!, matrix[6 + k]!]);
+    this.#emit({
+      shape: 'principal',
+      line: head.row.line,
+      lastLine: rest[2]!.row.line,
+      values: fromPrincipal(head.values, vectors),
+      sixes: null,
+      atom: start.atom,
+      lead: 'principal',
+      prefix: '',
+      texts: [head.row.text],
+      isWhole: false,
+      beside: null,
+      surroundings: start,
+    });
+  }
+
   close(): void {
-    const [rows, length, start] = [this.#rows, this.#length, this.#start];
+    const [all, start] = [this.#rows, this.#start];
+    const hasHead = this.#length === 4 && isHead(all);
+    const [rows, length] = hasHead ? [all.slice(1), 3] : [all, this.#length];
+    if (hasHead && start !== null) this.#emitPrincipal(all, start);
+    const above = this.#head;
+    this.#head = null;
+    if (above !== null && this.#length === 3) this.#emitPrincipal([above.row, ...all], above.start);
     this.#rows = [];
     this.#length = 0;
     this.#start = null;
@@ -91,6 +131,15 @@ export class BlockFinder {
       });
     }
   }
+}
+
+/** A row with words over three of another kind, such as principal values over their directions. */
+function isHead(rows: readonly BlockRow[]): boolean {
+  const [first, ...rest] = rows as [BlockRow, ...BlockRow[]];
+  if (first.row.words === 0 || first.row.axis !== null) return false;
+  if (rest.some(({ row }) => row.lead === first.row.lead)) return false;
+  const axes = rest.map(({ row }) => row.axis);
+  return axes.every((axis, at) => axis === at) || rest.every(({ row }) => row.lead === rest[0]!.row.lead);
 }
 
 function leadOf(rows: readonly BlockRow[]): string {

@@ -58,7 +58,10 @@ export function dataRow(line: TextLine): DataRow | null {
     ends: run.map((token) => token.start + token.text.length),
     wholes,
     isWhole: run.every(({ text }) => !/[.eEdD*nN]/.test(text)),
-    atom: words === 0 ? null : atomMention({ ...line, tokens: tokens.slice(0, start + Math.min(wholes, 1)) }),
+    atom:
+      words === 0 || (/^[xyz]$/i.test(firstTag[words - 1]?.text ?? '') && words === 1)
+        ? null
+        : atomMention({ ...line, tokens: tokens.slice(0, start + Math.min(wholes, 1)) }),
     axis: rowAxis(firstTag),
     lead: firstTag
       .flatMap(({ text }) => (isAtomWord(text) ? [] : [text.toLowerCase().replace(/\d+/g, '#')]))

@@ -4,6 +4,7 @@ import { BlockFinder } from './block-finder.ts';
 import type { DataRow } from './data-row.ts';
 import { dataRow } from './data-row.ts';
 import type { LineMeaning } from './line-meaning.ts';
+import { AtomColumnsFinder, NumberListFinder } from './list-finder.ts';
 import { NamedFinder } from './named-finder.ts';
 import { PrincipalFinder } from './principal-finder.ts';
 import { areOrthonormal } from './principal-tensor.ts';
@@ -62,6 +63,8 @@ class TensorFinder implements LineFinder<TensorSightings> {
   );
   readonly #named = new NamedFinder((seed) => this.#emit(seed), this.#context);
   readonly #principal = new PrincipalFinder((seed) => this.#emit(seed), this.#context);
+  readonly #list = new NumberListFinder((seed) => this.#emit(seed), this.#context);
+  readonly #columns = new AtomColumnsFinder((seed) => this.#emit(seed), this.#context);
   readonly #table = new TableFinder(
     (seed) => this.#emit(seed),
     (found) => {
@@ -73,7 +76,8 @@ class TensorFinder implements LineFinder<TensorSightings> {
   take(line: TextLine): void {
     const row = line.tokens.length === 0 ? null : dataRow(line);
     this.#release(row);
-    const inTable = this.#table.take(line, row);
+    this.#list.take(row);
+    const inTable = this.#columns.take(line, row) || this.#table.take(line, row);
     const isDirection = !inTable && this.#principal.take(line, row);
     const isNamed = !inTable && !isDirection && this.#named.take(line);
     const isRow = !inTable && !isNamed && row !== null && this.#takeRow(row);
@@ -146,6 +150,8 @@ class TensorFinder implements LineFinder<TensorSightings> {
 
   finish(): TensorSightings {
     this.#release(null);
+    this.#list.close();
+    this.#columns.close();
     this.#blocks.close();
     this.#named.close();
     this.#table.close();

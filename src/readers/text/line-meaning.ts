@@ -161,7 +161,11 @@ function roleIn(text: string, inField: boolean): RoleWord | null {
   if (total.test(text) && !/total[- ](?:energ|charge|force|number|cpu|time|spin)/i.test(text))
     return { kind: 'total' };
   const word = firstMatch(contribution, text);
-  if (word !== null && (inField || /contrib|part|term|tensor|sigma|shield|efg|grad|matri/i.test(text))) {
+  const isAlone = /^[^\p{L}]*\p{L}+(?:[^\p{L}]+\p{L}+)?[^\p{L}]*$/u.test(text);
+  if (
+    word !== null &&
+    (isAlone || inField || /contrib|part|term|tensor|sigma|shield|efg|grad|matri/i.test(text))
+  ) {
     return { kind: 'contribution', word };
   }
   const open = firstMatch(unfinished, text);

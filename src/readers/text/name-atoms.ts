@@ -48,7 +48,7 @@ export function nameAtoms(
   }
   const bare = tensors.every(({ atom }) => atom?.element === null && atom.label === null);
   const most = Math.max(0, ...indices.map((index) => index ?? 0));
-  const elements = bare && most > 0 ? speciesOf(most, first) : null;
+  const elements = bare && most > 1 ? speciesOf(most, first) : null;
   return {
     structureIndex: null,
     names: tensors.map((raw, i) => {

@@ -58,7 +58,8 @@ export function topicOf(raw: RawTensor): Topic {
   let other: string | null = null;
   for (const line of lines) {
     const { meaning, number, text } = line;
-    const decoy = decoyOf(line);
+    const own = decoyOf(line);
+    const decoy = own === 'directions' && raw.shape === 'principal' ? null : own;
     order ??= meaning.order && { value: meaning.order, words: text.slice(0, 60), line: number };
     if (topic === null && meaning.role !== null && decoy === null)
       role ??= { value: meaning.role, words: roleWords(line), line: number };
