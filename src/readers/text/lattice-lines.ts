@@ -90,7 +90,7 @@ export class LatticeLines {
       rows: direct,
       unit: units[0] ?? null,
       kind: 'vectors',
-      words: deciding.trim().slice(0, 120),
+      words: inBrief(deciding),
     });
   }
 
@@ -127,7 +127,7 @@ export class LatticeLines {
       rows,
       unit: units[0] ?? null,
       kind: 'vectors',
-      words: said.trim().slice(0, 80),
+      words: inBrief(said),
     });
   }
 
@@ -184,7 +184,7 @@ export class LatticeLines {
       rows,
       unit,
       kind: 'constants',
-      words: words.trim().slice(0, 80),
+      words: inBrief(words),
     });
   }
 }
@@ -198,6 +198,12 @@ function constantName(text: string): keyof CellConstants | null {
   if (name === 'β') return 'beta';
   if (name === 'γ') return 'gamma';
   return /^(?:a|b|c|alpha|beta|gamma)$/.test(name) ? (name as keyof CellConstants) : null;
+}
+
+/** A line as evidence: its words, without the numbers. */
+function inBrief(text: string): string {
+  const words = text.replace(/[-+]?\d+\.[\d.eEdD+-]*/g, ' ').trim();
+  return words.replace(/\s+/g, ' ').slice(0, 80);
 }
 
 /** Matrices of a cell that are not its vectors. */
