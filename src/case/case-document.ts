@@ -5,6 +5,7 @@ import type { Measurement } from '#src/scene/measurement.ts';
 import type { SavedView } from '#src/scene/saved-view.ts';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
 import type { TableSettings } from '#src/table/table-settings.ts';
+import type { TextChoice } from '#src/tensor/text-choice.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
 
 /** What `schema` says in every case file, and by which one is known. */
@@ -34,6 +35,8 @@ export interface CaseDecisions {
   readonly structure: { readonly source: number; readonly index: number } | null;
   readonly settings: DossierSettings;
   readonly accepted: readonly CaseAccepted[];
+  /** How tensors found in texts are read, by their shape; they hold for texts added later, too. */
+  readonly textChoices: readonly TextChoice[];
 }
 
 /** Every decision that changes pictures and tables only. */

@@ -10,6 +10,7 @@ export const defaultCaseDecisions: CaseDecisions = {
   structure: null,
   settings: defaultSettings,
   accepted: [],
+  textChoices: [],
 };
 
 export const defaultCaseViews: CaseViews = {

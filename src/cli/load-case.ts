@@ -108,7 +108,12 @@ export async function chooseCase(common: CommonArguments, io: CommandIo): Promis
     problems,
     title: opened?.title ?? read.sources[0]?.name ?? '',
     sources: read.sources,
-    decisions: { structure, settings, accepted: opened?.decisions.accepted ?? [] },
+    decisions: {
+      structure,
+      settings,
+      accepted: opened?.decisions.accepted ?? [],
+      textChoices: opened?.decisions.textChoices ?? [],
+    },
     views: opened?.views ?? null,
   };
   if (!chosen) return { input: null, ...about };

@@ -5,6 +5,7 @@ import { lineCount, lineText } from '#src/bytes/source-from-text.ts';
 import type { SourceText } from '#src/bytes/source-text.ts';
 import { readCif } from './cif/read-cif.ts';
 import type { Reading } from './reading.ts';
+import type { TextChoice } from '#src/tensor/text-choice.ts';
 import type { AcceptedColumns } from './xyz/column-plan.ts';
 import { readXyz } from './xyz/read-xyz.ts';
 
@@ -12,6 +13,8 @@ export interface ReadOptions {
   readonly progress?: ReportProgress;
   /** Proposed columns of extended XYZ that the user takes, by name. */
   readonly accept?: AcceptedColumns;
+  /** How tensors found in texts of no format are to be read. */
+  readonly choices?: readonly TextChoice[];
 }
 
 /** What is read today, in one phrase for messages. */

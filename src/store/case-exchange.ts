@@ -14,7 +14,7 @@ export async function caseTextOf(decisions: Decisions, views: Views): Promise<st
 }
 
 async function documentOf(decisions: Decisions, views: Views): Promise<CaseDocument> {
-  const { title, sources, structure, settings, accepted } = decisions;
+  const { title, sources, structure, settings, accepted, textChoices = [] } = decisions;
   const numberOf = (id: string): number => sources.findIndex((source) => source.id === id);
   const texts: { name: string; text: string }[] = [];
   for (const source of sources) texts.push({ name: source.name, text: await textOf(source) });
@@ -28,6 +28,7 @@ async function documentOf(decisions: Decisions, views: Views): Promise<CaseDocum
       accepted: Object.entries(accepted).flatMap(([id, columns]) =>
         numberOf(id) < 0 ? [] : [{ source: numberOf(id), columns }],
       ),
+      textChoices,
     },
     views: { picture, camera, look, saved: savedViews, measurements, table },
   });
@@ -80,13 +81,14 @@ export function openedCase({ said, problems }: KeptCase): OpenedCase | null {
   return {
     decisions: (identify) => {
       const files = identify(said.files);
-      const { structure, settings, accepted } = decisions;
+      const { structure, settings, accepted, textChoices } = decisions;
       return {
         title,
         sources: files,
         structure: structure && { sourceId: files[structure.source]!.id, index: structure.index },
         settings,
         accepted: Object.fromEntries(accepted.map(({ source, columns }) => [files[source]!.id, columns])),
+        textChoices,
         ...(problems.length > 0 && {
           openingProblems: problems.map((found) => leadingSomewhere(found, files)),
         }),

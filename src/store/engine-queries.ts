@@ -7,6 +7,15 @@ import { columnsOf } from '#src/table/site-columns.ts';
 import { orderSites } from '#src/table/table-order.ts';
 import { tableRow } from '#src/table/table-rows.ts';
 import type { TableOrder, TablePage, TableRequest, TableTextRequest } from '#src/table/table-settings.ts';
+import { FoundDesk } from './found-desk.ts';
+import type { SearchedText } from './found-desk.ts';
+import type {
+  FoundEntriesRequest,
+  FoundEntryView,
+  FoundFileView,
+  FoundMark,
+  FoundMarksRequest,
+} from './found-protocol.ts';
 import { tableHtml, tableText } from '#src/table/table-text.ts';
 
 /** Another site on the same position. */
@@ -30,6 +39,10 @@ export interface Queries {
   /** Sites whose label stands in a text, the longest labels first, at most a handful. */
   readonly sitesNamed: { readonly ask: string; readonly answer: readonly KnownSite[] };
   readonly table: { readonly ask: TableRequest; readonly answer: TablePage };
+  /** What was found in the texts of the case, text by text. */
+  readonly found: { readonly ask: null; readonly answer: readonly FoundFileView[] };
+  readonly foundEntries: { readonly ask: FoundEntriesRequest; readonly answer: readonly FoundEntryView[] };
+  readonly foundMarks: { readonly ask: FoundMarksRequest; readonly answer: readonly FoundMark[] };
   readonly tableText: { readonly ask: TableTextRequest; readonly answer: string };
 }
 
@@ -50,8 +63,11 @@ export class CrystalDesk {
   readonly #dossier: CrystalDossier;
   #order: (TableOrder & { readonly key: string }) | null = null;
 
-  constructor(dossier: CrystalDossier) {
+  readonly #found: FoundDesk;
+
+  constructor(dossier: CrystalDossier, texts: readonly SearchedText[] = []) {
     this.#dossier = dossier;
+    this.#found = new FoundDesk(texts, dossier);
   }
 
   answer(query: Query): QueryAnswer {
@@ -64,6 +80,12 @@ export class CrystalDesk {
         return this.#sites(this.#named(query.ask));
       case 'table':
         return this.#page(query.ask);
+      case 'found':
+        return this.#found.files();
+      case 'foundEntries':
+        return this.#found.entries(query.ask);
+      case 'foundMarks':
+        return this.#found.marks(query.ask);
       case 'tableText':
         return this.#text(query.ask);
     }

@@ -1,6 +1,7 @@
 import type { Problem } from '#src/base/problem.ts';
 import type { AcceptedColumns } from '#src/readers/xyz/column-plan.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
+import type { TextChoice } from '#src/tensor/text-choice.ts';
 import type { Camera } from '#src/scene/camera.ts';
 import { defaultLook } from '#src/scene/look.ts';
 import type { Look } from '#src/scene/look.ts';
@@ -21,6 +22,8 @@ export interface Decisions {
   readonly settings: DossierSettings;
   /** Proposed columns that were taken, by source id. */
   readonly accepted: Readonly<Record<string, AcceptedColumns>>;
+  /** How tensors found in texts are read, the newest last. */
+  readonly textChoices?: readonly TextChoice[];
   /** What was found amiss when the case file was opened; it stays with the case. */
   readonly openingProblems?: readonly Problem[];
 }

@@ -3,6 +3,8 @@ import type { Camera } from '#src/scene/camera.ts';
 import type { Look } from '#src/scene/look.ts';
 import type { Measurement } from '#src/scene/measurement.ts';
 import type { SceneOptions } from '#src/scene/scene-options.ts';
+import { isNoChoice } from '#src/tensor/text-choice.ts';
+import type { TextChoice } from '#src/tensor/text-choice.ts';
 import type { Quantity } from '#src/tensor/tensor-set.ts';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
@@ -60,11 +62,13 @@ export class Store {
     return this.#holder.subscribe(listener);
   }
 
-  /** Opens files as a new case; settings and references stay, but for the frame, which belongs to one file. */
+  /** Opens files as a new case; settings, references and ways to read texts stay, but for the frame, which belongs to one file. */
   open(files: readonly FileInput[], title = titleOf(files)): Promise<boolean> {
-    const settings = { ...(this.#timeline.newest.decisions?.settings ?? defaultSettings), frame: null };
+    const before = this.#timeline.newest.decisions;
+    const settings = { ...(before?.settings ?? defaultSettings), frame: null };
+    const textChoices = (before?.textChoices ?? []).map((choice) => ({ ...choice, file: null }));
     const sources = this.#identified(files, []);
-    const decisions = { title, sources, structure: null, settings, accepted: {} };
+    const decisions = { title, sources, structure: null, settings, accepted: {}, textChoices };
     return this.#timeline.decide(`open ${title}`, decisions, viewsForNewCase);
   }
 
@@ -126,6 +130,15 @@ export class Store {
       ...base,
       accepted: { ...base.accepted, [sourceId]: columns },
     });
+  }
+
+  /** Says how tensors of one shape are read, here and in the next text of that kind; one that says nothing is forgotten. */
+  chooseText(choice: TextChoice, name: string): Promise<boolean> {
+    const base = this.#timeline.newest.decisions;
+    if (!base) return Promise.resolve(false);
+    const others = (base.textChoices ?? []).filter(({ signature }) => signature !== choice.signature);
+    const textChoices = isNoChoice(choice) ? others : [...others, choice];
+    return this.#timeline.decide(name, { ...base, textChoices });
   }
 
   changeSettings(change: Partial<DossierSettings>, name: string): Promise<boolean> {

@@ -153,6 +153,18 @@ export const arbitraryNewCase: fc.Arbitrary<NewCase> = fc.record({
       }),
       { maxLength: 2 },
     ),
+    textChoices: fc.array(
+      fc.record({
+        signature: fc.string({ maxLength: 9 }),
+        quantity: orNull(fc.constantFrom('shielding', 'shift', 'efg')),
+        unit: orNull(fc.constantFrom('ppm', 'au', '1e21V/m2', 'V/A2', 'V/m2')),
+        sign: fc.constantFrom(1, -1),
+        order: orNull(fc.constantFrom('exchanged', 'xx yy zz xy xz yz', 'xx xy yy xz yz zz')),
+        taken: orNull(fc.boolean()),
+        file: orNull(fc.constantFrom('a.log', 'b')),
+      }),
+      { maxLength: 2 },
+    ),
   }),
   views: fc.record({
     picture: arbitraryPicture,

@@ -20,6 +20,17 @@ export const everyDecision: NewCase = {
       frame: 'c-z-b-yz',
     },
     accepted: [{ source: 1, columns: { tens: { quantity: 'efg', unit: 'a.u.' } } }],
+    textChoices: [
+      {
+        signature: 'six | tensor | field',
+        quantity: 'efg',
+        unit: 'V/A2',
+        sign: -1,
+        order: 'xx xy xz yy yz zz',
+        taken: true,
+        file: 'c.log',
+      },
+    ],
   },
 };
 

@@ -3,6 +3,7 @@ import type { Problem } from '#src/base/problem.ts';
 import type { EfgUnit } from '#src/tensor/units.ts';
 import type { FoundStructure } from './found-structure.ts';
 import type { PrintedValue, TensorShape } from './raw-tensor.ts';
+import type { TextChoice } from '#src/tensor/text-choice.ts';
 
 /** A value printed with a tensor, beside what its numbers give. */
 export interface MatchedValue {
@@ -53,6 +54,14 @@ export interface FoundGroup {
   /** Index into the structures of the text of the one its atoms belong to. */
   readonly structureIndex: number | null;
   readonly entries: readonly FoundEntry[];
+  /** Shape and words, by which a choice of the user finds groups of the same kind in other texts. */
+  readonly signature?: string;
+  /** Places (0 to 8, row-major) in which six printed components were put; null where nine stand there. */
+  readonly sixOrder?: readonly number[] | null;
+  /** False where that order was assumed. */
+  readonly isOrderProved?: boolean;
+  /** What the user chose; `quantity`, `unit`, `proposed` and the tensors are as it says. */
+  readonly choice?: TextChoice;
 }
 
 /** Tensors and structures of any text. Plain data. */

@@ -4,22 +4,33 @@ import type { SourceText } from '#src/bytes/source-text.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
 import { efgTensorToAtomicUnits, efgUnitLabel } from '#src/tensor/units.ts';
 import type { Reading } from '../reading.ts';
+import { withChoices } from './choose-groups.ts';
 import { findInText } from './find-in-text.ts';
 import { foundCrystal } from './found-crystal.ts';
 import type { FoundGroup, FoundText } from './found-text.ts';
+import type { TextChoice } from '#src/tensor/text-choice.ts';
 
 /**
  * A text of no format of its own as a reading: the structures that were found, and the tensors that are proposed, in
  * canonical units. null where it holds neither.
  */
-export function readFoundText(source: SourceText, progress?: ReportProgress): Reading | null {
-  return readingOf(findInText(source, progress));
+export function readFoundText(
+  source: SourceText,
+  progress?: ReportProgress,
+  choices: readonly TextChoice[] = [],
+): Reading | null {
+  return readingOf(findInText(source, progress), choices);
 }
 
-/** Proposed groups of one quantity become one set for each structure they belong to; the structure with tensors comes first. */
-export function readingOf(found: FoundText): Reading | null {
+/**
+ * Proposed groups of one quantity become one set for each structure they belong to; the structure with tensors comes first.
+ * A text whose only tensors are yet to be named is a reading, too: it asks.
+ */
+export function readingOf(asFound: FoundText, choices: readonly TextChoice[] = []): Reading | null {
+  const found = withChoices(asFound, choices);
   const usable = found.groups.filter(isUsable);
-  if (usable.length === 0 && found.structures.length === 0) return null;
+  const isAsking = found.groups.some(({ role }) => role !== 'decoy');
+  if (usable.length === 0 && found.structures.length === 0 && !isAsking) return null;
   const order = structureOrder(found, usable);
   return {
     format: 'text',
@@ -28,6 +39,7 @@ export function readingOf(found: FoundText): Reading | null {
     tensorSets: setsOf(found, usable, order),
     proposals: [],
     problems: found.problems.filter(({ code }) => code !== 'find-none'),
+    found: { asFound, asChosen: found },
   };
 }
 

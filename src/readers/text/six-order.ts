@@ -1,10 +1,11 @@
 import type { RawTensor } from './raw-tensor.ts';
 import { fromSix, usualOrder } from './row-finder.ts';
+import type { ComponentOrder } from '#src/tensor/text-choice.ts';
 import { factsOf, proves, traceShare } from './tensor-proof.ts';
 import type { Topic } from './topic.ts';
 
 /** Orders in which six components are printed, as places 0 to 8. */
-const orders: readonly (readonly [string, readonly number[]])[] = [
+export const sixOrders: readonly (readonly [Exclude<ComponentOrder, 'exchanged'>, readonly number[]])[] = [
   ['xx yy zz xy xz yz', usualOrder],
   ['xx yy zz yz xz xy', [0, 4, 8, 5, 2, 1]],
   ['xx yy zz xy yz xz', [0, 4, 8, 1, 5, 2]],
@@ -30,7 +31,7 @@ export function sixOrder(tensors: readonly RawTensor[], topic: Topic): SixOrder 
     };
   }
   const sample = tensors.slice(0, 200);
-  const scored = orders.map(([name, order]) => {
+  const scored = sixOrders.map(([name, order]) => {
     let proofs = 0;
     let traces = 0;
     for (const { sixes, printed, digits } of sample) {
