@@ -1,100 +1,106 @@
-import { countOf, wordFor } from '#src/base/count-of.ts';
-import { apply, identity3, multiply, transpose } from '#src/base/matrix3.ts';
-import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
-import type { Periodicity } from '#src/base/periodicity.ts';
-import { openAxes, repeatsThroughout } from '#src/base/periodicity.ts';
+import { identity3, multiply, transpose } from '#src/base/matrix3.ts';
+import type { Mat3 } from '#src/base/matrix3.ts';
+import { repeatsThroughout } from '#src/base/periodicity.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
+import { latticeFromCell } from '#src/crystal/lattice.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
-import type { TensorEntry, TensorSet } from '#src/tensor/tensor-set.ts';
-import type { AtomImage, Attachment, AttachMethod, SiteTensor } from './attachment.ts';
-import { frameRotation, latticeAgreement, sameCell } from './frame-rotation.ts';
-import type { PositionMatch } from './match-positions.ts';
-import { matchDistanceAngstrom, positionFinder, rootMeanSquare } from './match-positions.ts';
+import { latticeSettings } from '#src/crystal/settings.ts';
+import type { TensorSet } from '#src/tensor/tensor-set.ts';
+import {
+  placeOfSet,
+  refused,
+  reportFrame,
+  reportMapping,
+  reportRefusal,
+  reportUnmatched,
+} from './attach-reports.ts';
+import type { AtomImage, Attachment, SiteTensor } from './attachment.ts';
+import { bindByLabels, bindByOrder, bindByRows } from './bind-by-name.ts';
+import type { SourceAtom, SourceStructure } from './bind-by-position.ts';
+import { bindByPosition, bindInPlace, bindMolecule, sourceOf } from './bind-by-position.ts';
+import type { AttachTarget, Binding } from './binding.ts';
+import type { FrameRanking } from './frame-ranking.ts';
+import { rankFrames } from './frame-ranking.ts';
+import { isIdentity } from './match-structure.ts';
 
-/** What a set is bound to: the crystal's lattice, its atoms in the cell, and how many sites they belong to. */
-export interface AttachTarget {
-  readonly lattice: Lattice | null;
-  /** Along a, b, c; absent: all three. */
-  readonly periodic?: Periodicity;
-  readonly images: readonly AtomImage[];
-  readonly siteCount: number;
-  /** Rows of the crystal's own file → image index of that row's atom; null where the set comes from another file. */
-  readonly rows: readonly number[] | null;
-}
+export type { AttachTarget } from './binding.ts';
 
 /** Q T Qᵀ: a tensor turned from one Cartesian frame into another. */
 function turned(rotation: Mat3, tensor: Mat3): Mat3 {
   return rotation === identity3 ? tensor : multiply(multiply(rotation, tensor), transpose(rotation));
 }
 
-interface Binding {
-  readonly method: AttachMethod;
-  readonly rotation: Mat3;
-  /** Image index of an entry, or null where it has none. */
-  readonly imageOf: (entry: TensorEntry) => number | null;
-  /** Of the atoms found by position. */
-  readonly matches: PositionMatch[];
-}
-
-function bindByRows(rows: readonly number[]): Binding {
-  const imageOf = (entry: TensorEntry) => (entry.atomIndex === null ? null : (rows[entry.atomIndex] ?? null));
-  return { method: 'same-file', rotation: identity3, imageOf, matches: [] };
-}
-
-function bindByGeometry(setLattice: Lattice, lattice: Lattice, target: AttachTarget): Binding {
-  const find = positionFinder(lattice, target.images, target.periodic);
-  const matches: PositionMatch[] = [];
-  const imageOf = (entry: TensorEntry) => {
-    if (!entry.cartesian) return null;
-    const fractional = apply(setLattice.toFractional, entry.cartesian);
-    const match = find(fractional, entry.element);
-    if (!match) return null;
-    matches.push(match);
-    return match.imageIndex;
-  };
-  return { method: 'geometry', rotation: frameRotation(setLattice, lattice), imageOf, matches };
-}
-
-/** By label, only where a label names one site; an element in the set must agree with the site's. */
-function bindByLabels(set: TensorSet, target: AttachTarget): Binding {
-  const byLabel = new Map<string, number | null>();
-  target.images.forEach((image, index) => {
-    if (image.own) byLabel.set(image.label, byLabel.has(image.label) ? null : index);
-  });
-  const rotation =
-    set.lattice && target.lattice && sameCell(set.lattice.cell, target.lattice.cell)
-      ? frameRotation(set.lattice, target.lattice)
-      : identity3;
-  const imageOf = (entry: TensorEntry) => {
-    const index = entry.label === null ? null : (byLabel.get(entry.label) ?? null);
-    return index !== null && target.images[index]?.element === entry.element ? index : null;
-  };
-  return { method: 'labels', rotation, imageOf, matches: [] };
-}
-
-/** Chooses the strongest binding the evidence allows; null with a problem when there is none. */
-function chooseBinding(set: TensorSet, target: AttachTarget, log: ProblemLog): Binding | null {
-  if (target.rows) return bindByRows(target.rows);
-  const place = { file: set.file, line: set.entries[0]?.place.line ?? 1 };
-  const hasPositions = set.lattice !== null && set.entries.some(({ cartesian }) => cartesian !== null);
-  if (hasPositions && set.lattice && target.lattice) {
-    if (sameCell(set.lattice.cell, target.lattice.cell)) {
-      return bindByGeometry(set.lattice, target.lattice, target);
-    }
+function bindByStructure(
+  set: TensorSet,
+  source: SourceStructure,
+  target: AttachTarget,
+  lattice: Lattice,
+  log: ProblemLog,
+): Binding | null {
+  const found = bindByPosition(source, target, lattice);
+  if (found?.refusal) reportRefusal(set, lattice, found.refusal, log);
+  if (found?.isTransposed && found.binding) {
     log.add(
-      'error',
-      'attach-other-cell',
-      `The cell of ${set.name} is not the crystal's: its tensors were left out.`,
+      'warning',
+      'attach-lattice-transposed',
+      `The lattice of ${set.name} fits the crystal only with its rows and columns exchanged: it was taken so.`,
       {
-        place,
-        got: describeCell(set.lattice),
-        allowed: `${describeCell(target.lattice)}, lengths within ${latticeAgreement.lengthShare * 100} %, angles within ${latticeAgreement.angleDegrees}°`,
-        hint: 'Give the tensors together with the structure in the cell that was calculated, or open their file alone.',
+        place: placeOfSet(set),
+        hint: 'Lengths and angles of the cell tell. Check whether the tensors are exchanged, too.',
       },
     );
-    return null;
   }
-  if (set.entries.some(({ label }) => label !== null)) {
+  if (found?.isAmbiguous) {
+    log.add(
+      'warning',
+      'attach-ambiguous',
+      `${set.name} fits the crystal almost as well in another way, which no symmetry of the crystal makes of this one.`,
+      {
+        place: placeOfSet(set),
+        hint: 'The crystal is nearly more symmetric than it is: check that equivalent atoms agree.',
+      },
+    );
+  }
+  return found?.binding ?? null;
+}
+
+/** Å; positions without a lattice that lie this near to atoms in one of the named settings say which one it is. */
+const inSettingAngstrom = 0.3;
+
+/** Positions without a lattice: tried as they stand and in each named setting; else they are of a molecule. */
+function bindWithoutLattice(
+  set: TensorSet,
+  source: SourceStructure,
+  target: AttachTarget,
+  lattice: Lattice,
+  log: ProblemLog,
+): Binding | null {
+  const lattices = [lattice, ...latticeSettings.map(({ name }) => latticeFromCell(lattice.cell, name))];
+  let best: Binding | null = null;
+  for (const candidate of source.atoms.length < 3 ? [] : lattices) {
+    const found = bindInPlace(source, candidate, lattice, target);
+    const { matched, atoms, rmsDisplacementAngstrom: rms } = found.mapping;
+    if (matched < 0.9 * atoms || rms === null || rms > inSettingAngstrom) continue;
+    if (rms < (best?.mapping.rmsDisplacementAngstrom ?? Infinity) - 1e-6) best = found;
+  }
+  if (best) return { ...best, frameFrom: 'positions' };
+  log.add(
+    'error',
+    'attach-molecule',
+    `${set.name} is of atoms without a lattice, which lie on those of the crystal in none of its settings: its tensors were left out.`,
+    {
+      place: placeOfSet(set),
+      hint: 'Tensors of a molecule are not those of the crystal it is in. Give the lattice that was calculated with them, or open the file alone.',
+    },
+  );
+  return null;
+}
+
+function bindByName(set: TensorSet, target: AttachTarget, log: ProblemLog): Binding | null {
+  const place = placeOfSet(set);
+  const hasLabels = set.entries.some(({ label }) => label !== null);
+  const byLabels = hasLabels ? bindByLabels(set, target) : null;
+  if (byLabels && byLabels.mapping.matched > 0) {
     log.add(
       'warning',
       'attach-by-label',
@@ -104,24 +110,66 @@ function chooseBinding(set: TensorSet, target: AttachTarget, log: ProblemLog): B
         hint: 'Check a few values, or give the structure with the tensors.',
       },
     );
-    return bindByLabels(set, target);
+    return byLabels;
   }
-  log.add(
-    'error',
-    'attach-no-evidence',
-    `${set.name} has neither positions nor labels: its tensors were left out.`,
-    {
-      place,
-      hint: 'Give the tensors in extended XYZ with a Lattice and positions.',
-    },
-  );
-  return null;
+  const hasElements = set.entries.length > 0 && set.entries.every(({ element }) => element !== 'X');
+  const byOrder = hasElements ? bindByOrder(set, target, log) : byLabels;
+  if (byOrder?.mapping.method === 'order') {
+    log.add(
+      'warning',
+      'attach-by-order',
+      `${set.name} has neither positions nor labels of the crystal: its tensors were taken in the order of the atoms of each element, weaker evidence.`,
+      {
+        place,
+        hint: 'Check a few values, or give the structure with the tensors.',
+      },
+    );
+  } else if (!byOrder && !hasElements) {
+    log.add(
+      'error',
+      'attach-no-evidence',
+      `${set.name} has neither positions nor labels: its tensors were left out.`,
+      {
+        place,
+        hint: 'Give the tensors in extended XYZ with a Lattice and positions.',
+      },
+    );
+  }
+  return byOrder;
 }
 
-function describeCell({ cell }: Lattice): string {
-  const lengths = [cell.a, cell.b, cell.c].map((x) => x.toFixed(3)).join(', ');
-  const angles = [cell.alpha, cell.beta, cell.gamma].map((x) => x.toFixed(2)).join(', ');
-  return `${lengths} Å; ${angles}°`;
+/** Chooses the strongest binding the evidence allows; null with a problem when there is none. */
+function chooseBinding(
+  set: TensorSet,
+  target: AttachTarget,
+  atoms: readonly SourceAtom[] | null,
+  log: ProblemLog,
+): Binding | null {
+  if (target.rows) return bindByRows(set, target, target.rows);
+  const source = sourceOf(set, atoms);
+  const hasPositions = source.atoms.length > 0;
+  if (!hasPositions) return bindByName(set, target, log);
+  if (target.lattice) {
+    return set.lattice
+      ? bindByStructure(set, source, target, target.lattice, log)
+      : bindWithoutLattice(set, source, target, target.lattice, log);
+  }
+  const positions = target.images.flatMap(({ cartesian }) => (cartesian ? [cartesian] : []));
+  if (positions.length < target.images.length) return bindByName(set, target, log);
+  const binding = bindMolecule(source, positions, target);
+  if (!binding) {
+    log.add(
+      'error',
+      'attach-other-molecule',
+      `${set.name} is of another molecule: its tensors were left out.`,
+      {
+        place: placeOfSet(set),
+        allowed: 'three quarters of the atoms within 0.7 Å after a rigid rotation',
+        hint: 'Open the file alone to see it.',
+      },
+    );
+  }
+  return binding;
 }
 
 /** Shared by all sites without a tensor; a list of their own comes with the first. */
@@ -136,136 +184,92 @@ function addTensor(bySite: SiteTensor[][], { siteIndex, own }: AtomImage, found:
   else list.push(found);
 }
 
-/**
- * Binds a tensor set to the atoms of a crystal and turns its tensors into the crystal's frame.
- * Raises `attach-other-cell`, `attach-no-evidence`, `attach-refused`, `attach-by-label`, `attach-unmatched`, `attach-twice`, `attach-moved`,
- * `attach-cells-away`.
- */
-export function attachTensors(set: TensorSet, target: AttachTarget, log: ProblemLog): Attachment | null {
-  const binding = chooseBinding(set, target, log);
-  if (!binding) return null;
+/** By site: the tensors as given, not yet turned. */
+function tensorsBySite(
+  set: TensorSet,
+  binding: Binding,
+  target: AttachTarget,
+  log: ProblemLog,
+): SiteTensor[][] {
   const bySite: SiteTensor[][] = Array.from({ length: target.siteCount }, () => noTensors);
-  const indices = set.entries.map(binding.imageOf);
-  if (refused(set, binding.method, indices, log)) return null;
   const taken = new Set<number>();
   for (const [row, entry] of set.entries.entries()) {
-    const index = indices[row] ?? null;
-    const image = index === null ? undefined : target.images[index];
-    if (index === null || !image) {
-      reportUnmatched(entry, binding.method, log);
-      continue;
+    const images = binding.images[row] ?? [];
+    if (images.length === 0) reportUnmatched(entry, binding.mapping.method, log);
+    for (const index of images) {
+      const image = target.images[index]!;
+      if (taken.has(index) && !binding.repeats) {
+        log.add(
+          'warning',
+          'attach-twice',
+          `Atom ${image.label} has two ${set.quantity} tensors: the first was kept.`,
+          {
+            place: entry.place,
+          },
+        );
+        continue;
+      }
+      taken.add(index);
+      addTensor(bySite, image, { tensor: entry.tensor, rotation: image.rotation, entry });
     }
-    if (taken.has(index)) {
-      log.add(
-        'warning',
-        'attach-twice',
-        `Atom ${image.label} has two ${set.quantity} tensors: the first was kept.`,
-        {
-          place: entry.place,
-        },
-      );
-      continue;
-    }
-    taken.add(index);
-    const tensor = turned(binding.rotation, entry.tensor);
-    addTensor(bySite, image, { tensor, rotation: image.rotation, entry });
   }
-  const distances = binding.matches.map(({ distanceAngstrom }) => distanceAngstrom);
-  const rmsDisplacementAngstrom = rootMeanSquare(distances);
-  reportDisplacement(set, distances, rmsDisplacementAngstrom, log);
-  reportCellsAway(set, binding.matches, target, log);
+  return bySite;
+}
+
+/** The matrix that turns the set's tensors into the crystal's frame, and how that was settled. */
+function settleFrame(
+  set: TensorSet,
+  binding: Binding,
+  bySite: readonly (readonly SiteTensor[])[],
+  target: AttachTarget,
+  log: ProblemLog,
+): { readonly rotation: Mat3; readonly ranking: FrameRanking | null } {
+  const { lattice, stabiliserOf, chosenFrame = null } = target;
+  const rotation = chosenFrame === null ? binding.rotation : identity3;
+  if (!lattice || !stabiliserOf) return { rotation, ranking: null };
+  const known =
+    chosenFrame !== null
+      ? { frame: identity3, by: 'user' as const, name: chosenFrame }
+      : binding.frameFrom && { frame: rotation, by: binding.frameFrom, name: 'given' };
+  const sites = bySite.flatMap((tensors, site) =>
+    tensors.length === 0 ? [] : [{ tensors, stabiliser: stabiliserOf(site) }],
+  );
+  const { frame, ranking } = rankFrames({ sites, lattice, known });
+  reportFrame(set, ranking, log);
+  // an exact identity stays one, so that tensors in the crystal's own frame keep their last digit
+  return { rotation: known ? rotation : isIdentity(frame) ? identity3 : frame, ranking };
+}
+
+/**
+ * Binds a tensor set to the atoms of a crystal and turns its tensors into the crystal's frame: by rows in the crystal's own file,
+ * by geometry where positions came with them (`atoms`: all of the structure they stand in, where known), else by labels, else by
+ * order within each element. Raises `attach-…` for what was refused, left out, guessed or has moved, `frame-…` for a frame that
+ * was found, is undecided or fits worse than another.
+ */
+export function attachTensors(
+  set: TensorSet,
+  target: AttachTarget,
+  log: ProblemLog,
+  atoms: readonly SourceAtom[] | null = null,
+): Attachment | null {
+  const binding = chooseBinding(set, target, atoms, log);
+  if (!binding || refused(set, binding, log)) return null;
+  const given = tensorsBySite(set, binding, target, log);
+  reportMapping(set, binding, target.periodic ?? repeatsThroughout, log);
+  const { rotation, ranking } = settleFrame(set, binding, given, target, log);
   return {
     name: set.name,
     file: set.file,
     quantity: set.quantity,
     unitGiven: set.unitGiven,
-    method: binding.method,
-    rotation: binding.rotation,
-    bySite,
-    rmsDisplacementAngstrom,
+    method: binding.mapping.method,
+    rotation,
+    bySite: given.map((list) =>
+      list.length === 0 ? list : list.map((one) => ({ ...one, tensor: turned(rotation, one.tensor) })),
+    ),
+    rmsDisplacementAngstrom:
+      binding.mapping.method === 'same-file' ? null : binding.mapping.rmsDisplacementAngstrom,
+    mapping: binding.mapping,
+    frame: ranking,
   };
-}
-
-/** Share of a set's atoms that must be found in the crystal; below it the agreement of the others is chance. */
-const leastMatchedShare = 0.5;
-
-/** True, with one problem, where too few atoms of another file's set lie on atoms of the crystal. */
-function refused(
-  set: TensorSet,
-  method: AttachMethod,
-  indices: readonly (number | null)[],
-  log: ProblemLog,
-): boolean {
-  const found = indices.filter((index) => index !== null).length;
-  if (method === 'same-file' || found >= leastMatchedShare * indices.length) return false;
-  log.add(
-    'error',
-    'attach-refused',
-    `Only ${found} of the ${countOf(indices.length, 'atom')} of ${set.name} ${wordFor(found, 'is', 'are')} found in the crystal: its tensors were left out.`,
-    {
-      place: { file: set.file, line: set.entries[0]?.place.line ?? 1 },
-      allowed: `at least ${leastMatchedShare * 100} % of them within ${matchDistanceAngstrom} Å of an atom of the same element`,
-      hint: 'Another compound, another origin or setting, or the other hand: open the file alone to see it.',
-    },
-  );
-  return true;
-}
-
-function reportUnmatched(entry: TensorEntry, method: AttachMethod, log: ProblemLog): void {
-  const name = entry.label ?? entry.element;
-  const allowed =
-    method === 'geometry'
-      ? `an atom of the same element within ${matchDistanceAngstrom} Å`
-      : 'a site of that label and element, named once';
-  log.add(
-    'error',
-    'attach-unmatched',
-    `The tensor of ${name} belongs to no atom of the crystal and was left out.`,
-    {
-      place: entry.place,
-      got: entry.cartesian ? formatPosition(entry.cartesian) : name,
-      allowed,
-      hint: 'Check that structure and tensors are of the same compound, cell and origin.',
-    },
-  );
-}
-
-function formatPosition(v: Vec3): string {
-  return `${v.map((x) => x.toFixed(4)).join(', ')} Å`;
-}
-
-function reportDisplacement(
-  set: TensorSet,
-  distances: readonly number[],
-  rms: number | null,
-  log: ProblemLog,
-): void {
-  const largest = distances.reduce((a, b) => Math.max(a, b), 0);
-  if (rms === null || largest < 0.02) return;
-  log.add(
-    'note',
-    'attach-moved',
-    `Atoms of ${set.name} lie off the crystal's by ${rms.toFixed(3)} Å rms, ${largest.toFixed(3)} Å at most.`,
-    { place: { file: set.file, line: set.entries[0]?.place.line ?? 1 } },
-  );
-}
-
-function reportCellsAway(
-  set: TensorSet,
-  matches: readonly PositionMatch[],
-  { periodic = repeatsThroughout }: AttachTarget,
-  log: ProblemLog,
-): void {
-  const count = matches.filter(({ isCellsAway }) => isCellsAway).length;
-  if (count === 0) return;
-  const open = openAxes(periodic).join(', ');
-  log.add(
-    'note',
-    'attach-cells-away',
-    `Atoms of ${set.name} lie whole cells away from the crystal's, which does not repeat along ${open}: they were taken for the same ones.`,
-    {
-      place: { file: set.file, line: set.entries[0]?.place.line ?? 1 },
-      got: `${count} of ${matches.length} so far away`,
-    },
-  );
 }
