@@ -32,7 +32,7 @@ export const cardStyles = css`
   }
   .facts {
     display: grid;
-    grid-template-columns: max-content minmax(0, 1fr);
+    grid-template-columns: fit-content(40%) minmax(0, 1fr);
     gap: 2px 14px;
     margin: 6px 0 0;
     font-variant-numeric: tabular-nums lining-nums;

@@ -17,7 +17,7 @@ import { atomIds, middleOf, selectedPositions, selectionOf } from './picture-mar
 import {
   annotations,
   axesDrawing,
-  captionWords,
+  captionOf,
   faultWords,
   flatMeasurements,
   labelsDrawing,
@@ -32,7 +32,6 @@ import type { PicturePanel, ToolsHost } from './picture-tools.ts';
 import { loadPanel, openPanel, pictureTools } from './picture-tools.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
-import './picture-caption.ts';
 import './spoken-line.ts';
 import type { ViewPanel } from './view-panel.ts';
 import { viewStyles } from './view-styles.ts';
@@ -135,11 +134,7 @@ export class CrystalView extends StoreElement {
         </div>
         ${openPanel(host)}
       </div>
-      ${colourBar(scene)}
-      <ellipsite-picture-caption
-        .text=${captionWords(scene)}
-        .drawnBy=${(scene && this.#picture?.drawnBy) ?? null}
-      ></ellipsite-picture-caption>
+      ${colourBar(scene)} ${captionOf(scene, (scene && this.#picture?.drawnBy) ?? null)}
       ${sampleLine(store?.state.decisions ?? null)}
       <p class="hidden-but-spoken" id="keys">${keysInWords}</p>
       <ellipsite-spoken-line .text=${this.#spoken()}></ellipsite-spoken-line>

@@ -10,6 +10,7 @@ import { valueText } from './measure-words.ts';
 import type { BoardEntry } from './measurement-board.ts';
 import type { Badge } from './picture-badges.ts';
 import type { PicturePoint } from './picture-controls.ts';
+import './picture-caption.ts';
 import { pointedSentence } from './pointed-sentence.ts';
 import { sampleOf } from './sample-cases.ts';
 import { withSubscripts } from './symbol-text.ts';
@@ -171,10 +172,13 @@ export function overPicture(
 }
 
 /** What the picture shows, in words; with what to do about tensors that it hides. */
-export function captionWords(scene: Scene | null): string {
+export function captionOf(scene: Scene | null, drawnBy: string | null): TemplateResult {
   const hasHidden = (scene?.sizeNotes ?? []).length > 0;
   const advice = hasHidden ? ' Ticked alone under Show, they are drawn at a scale of their own.' : '';
-  return unbroken(`${scene?.caption ?? ''}${advice}`);
+  return html`<ellipsite-picture-caption
+    .text=${unbroken(`${scene?.caption ?? ''}${advice}`)}
+    .drawnBy=${drawnBy}
+  ></ellipsite-picture-caption>`;
 }
 
 /** A sample says that its tensors are invented. */
