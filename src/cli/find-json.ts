@@ -40,7 +40,9 @@ function groupJson({
 }
 
 /** Tensors of shielding, shift or field gradient as the text gives them last and whole, or that the user must name. */
-export function isAnswer({ role }: FoundGroup): boolean {
+export function isAnswer({ role, shape }: FoundGroup): boolean {
+  // Principal values of tensors that stand in full elsewhere give them back with fewer digits.
+  if (role === 'repeated' && shape === 'principal') return false;
   return role !== 'decoy' && role !== 'contribution' && role !== 'earlier';
 }
 

@@ -22,6 +22,10 @@ const commands: Readonly<Record<string, Command>> = {
       'the tensors and structures that stand in any text, with the reasons: ellipsite find log.txt --json',
     run: async (argv, io) => (await import('./commands/find.ts')).findCommand(argv, io),
   },
+  check: {
+    summary: 'do these tensors belong to this crystal, in which frame, and how sound is the calculation',
+    run: async (argv, io) => (await import('./commands/check.ts')).checkCommand(argv, io),
+  },
   figure: {
     summary: 'a picture to take away: ellipsite figure crystal.cif tensors.xyz --view c -o crystal.png',
     help: figureHelp,

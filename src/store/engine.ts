@@ -211,6 +211,7 @@ class ReadingEngine implements Engine {
         tables,
         settings: input.settings,
         problems: readingProblems,
+        structures: read.flatMap(({ reading }) => reading.structures),
       },
       (share, stage) => watched(readingShare + (1 - readingShare) * share, stage),
     );

@@ -168,6 +168,7 @@ function alone(tokens: readonly TextToken[], words: number): AtomMention | null 
   const element = first >= 0 && tokens[first]!.kind === 'word' ? symbolOf(tokens[first]!.text) : null;
   if (element === null || words > 2 || element === 'Y') return null;
   if (/^[([{]$/.test(tokens[first + 1]?.text ?? '') && tokens[first + 2]?.kind === 'word') return null;
+  if (/^[=/*^²]$/.test(tokens[first + 1]?.text ?? '')) return null;
   const label = tokens[first]!.text;
   return { label, element, index: null, isGhost: false, end: first + 1, isSure: false };
 }

@@ -197,6 +197,20 @@ function plainWords(text: string): string {
 
 /** What the words of a line say about the numbers under it. Words alone: no number is looked at. */
 export function lineMeaning(text: string): LineMeaning {
+  const key = text.length > 120 ? text : text.replace(/\d+\.\d+(?:[eEdD][+-]?\d+)?/g, '0.0');
+  const known = remembered.get(key);
+  if (known) return known;
+  const found = readMeaning(text);
+  if (remembered.size >= mostRemembered) remembered.clear();
+  remembered.set(key, found);
+  return found;
+}
+
+/** Lines of a log repeat themselves but for their numbers. */
+const remembered = new Map<string, LineMeaning>();
+const mostRemembered = 5000;
+
+function readMeaning(text: string): LineMeaning {
   if (!anything.test(text)) return nothing;
   const plain = plainWords(text.length > 400 ? text.slice(0, 400) : text);
   const efgWords = firstMatch(gradient, plain);

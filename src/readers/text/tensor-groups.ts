@@ -9,6 +9,8 @@ export interface TensorGroup {
   /** Of the first tensor that has one. */
   topic: Topic;
   readonly topics: Topic[];
+  /** How many tensors stand between the atom's name and these. */
+  readonly ordinal: number;
 }
 
 function keyOf(raw: RawTensor, topic: Topic, ordinal: number): string {
@@ -50,7 +52,7 @@ export function tensorGroups(tensors: readonly RawTensor[]): TensorGroup[] {
       known.group.topics.push(topic);
       continue;
     }
-    const group: TensorGroup = { tensors: [raw], topic, topics: [topic] };
+    const group: TensorGroup = { tensors: [raw], topic, topics: [topic], ordinal };
     groups.push(group);
     open.set(key, { group, atoms: new Set([atom]) });
   }

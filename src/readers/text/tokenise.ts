@@ -39,6 +39,8 @@ function signMayStart(text: string, at: number, last: TextToken | undefined): bo
 }
 
 function valueOf(text: string): number {
+  const plain = Number(text);
+  if (!Number.isNaN(plain)) return plain;
   return Number(text.replace('−', '-').replace(/[dD]/, 'e').replace('−', '-'));
 }
 

@@ -1,5 +1,6 @@
 import type { EfgUnit } from '#src/tensor/units.ts';
 import type { DecoyKind, RoleWord } from './line-meaning.ts';
+import { isAtomWord } from './atom-mention.ts';
 import type { NearLine, RawTensor } from './raw-tensor.ts';
 import { leadMeaning } from './row-finder.ts';
 
@@ -118,6 +119,7 @@ function roleWords({ text, meaning }: NearLine): string {
 
 function sectionOf(text: string): string {
   return text
+    .replace(/[\p{L}\d]+/gu, (word) => (isAtomWord(word) ? ' ' : word))
     .toLowerCase()
     .replace(/[\d.]+/g, '')
     .replace(/[^\p{L}/^]+/gu, ' ')

@@ -56,6 +56,7 @@ export function weighGroups(judged: readonly JudgedGroup[]): FoundGroup[] {
       ({ judged: one, role }) =>
         role !== 'decoy' && (one.quantity === family || (family === 'shielding' && one.quantity === 'shift')),
     );
+    markStrays(ours);
     markSums(ours);
     markRepeated(ours);
     propose(ours);
@@ -65,6 +66,17 @@ export function weighGroups(judged: readonly JudgedGroup[]): FoundGroup[] {
     standing.map(({ judged: { group, roleWord } }) => ({ ...group, roleWord })),
   );
   return standing.map((one, at) => foundGroup(one, signatures[at]!));
+}
+
+/** One more tensor after that of the last of many atoms, without a name of its own, belongs to none of them. */
+function markStrays(groups: Weighed[]): void {
+  const many = groups.filter(({ byAtom, judged }) => byAtom.size >= 3 && judged.group.ordinal === 0);
+  for (const one of groups) {
+    if (one.byAtom.size > 1 || one.judged.group.ordinal === 0) continue;
+    if (!many.some((other) => sharesAtom(one, other))) continue;
+    one.role = 'decoy';
+    one.roleWord = 'of no atom that is named beside it';
+  }
 }
 
 /** Parts of a whole that stand before it: at most so many are added up. */
