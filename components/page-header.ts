@@ -2,6 +2,7 @@ import { css, html, nothing } from 'lit';
 import type { TemplateResult } from 'lit';
 import { countProblems } from '#src/store/state.ts';
 import type { ThemeChoice } from '#src/store/state.ts';
+import { counted } from '#src/table/number-format.ts';
 import { openFiles } from './open-files.ts';
 import type { Panel } from './panel.ts';
 import { askForPanel } from './panel.ts';
@@ -113,7 +114,7 @@ export class PageHeader extends StoreElement {
       <span class="case" title=${decisions?.title ?? ''}>${decisions?.title ?? ''}</span>
       ${this.#kept()} ${this.#structures()}
       <nav aria-label="Commands">
-        ${this.#problems()}
+        ${this.#found()} ${this.#problems()}
         <button @click=${this.#open}>Open</button>
         <button
           ?disabled=${!decisions}
@@ -163,6 +164,22 @@ export class PageHeader extends StoreElement {
       @click=${() => this.#toggle('problems')}
     >
       ${problemSummary(counts)}
+    </button>`;
+  }
+
+  /** Counts what was found in texts; nothing where none was searched. */
+  #found(): TemplateResult | typeof nothing {
+    const found = this.store?.state.derived?.found ?? [];
+    if (found.length === 0) return nothing;
+    const tensors = found.reduce((sum, { tensorCount }) => sum + tensorCount, 0);
+    const questions = found.reduce((sum, { questionCount }) => sum + questionCount, 0);
+    const asks = questions === 0 ? '' : `, ${counted(questions, 'question')}`;
+    return html`<button
+      class=${questions > 0 ? 'warning' : ''}
+      aria-expanded=${this.panel === 'found' ? 'true' : 'false'}
+      @click=${() => this.#toggle('found')}
+    >
+      Found ${counted(tensors, 'tensor')}${asks}
     </button>`;
   }
 

@@ -78,6 +78,7 @@ export class Workbench extends StoreElement {
     }
     if (!state.refused && before?.refused && this.#isOwnOpening && this.panel === 'problems')
       this.panel = null;
+    if (before && asksAnew(state, before) && this.panel === null) this.#show('found');
     if (state.shownPlace) void import('./source-view.ts');
     this.#speak(state, before);
   }
@@ -138,9 +139,10 @@ export class Workbench extends StoreElement {
 
   #drawer(panel: NonNullable<Panel>): TemplateResult {
     const { store } = this;
-    const names = { problems: 'Problems', settings: 'Settings', case: 'Case' } as const;
+    const names = { problems: 'Problems', settings: 'Settings', case: 'Case', found: 'Found' } as const;
     return html`<aside class="drawer" tabindex="-1" role="dialog" aria-label=${names[panel]}>
       ${panel === 'problems' ? html`<ellipsite-problems-drawer .store=${store}></ellipsite-problems-drawer>` : nothing}
+      ${panel === 'found' ? html`<ellipsite-found-panel .store=${store}></ellipsite-found-panel>` : nothing}
       ${panel === 'settings' ? html`<ellipsite-settings-panel .store=${store}></ellipsite-settings-panel>` : nothing}
       ${panel === 'case' ? html`<ellipsite-case-panel .store=${store} .keeper=${this.keeper}></ellipsite-case-panel>` : nothing}
     </aside>`;
@@ -157,6 +159,7 @@ export class Workbench extends StoreElement {
     if (panel === 'problems') void import('./problems-drawer.ts');
     if (panel === 'settings') void import('./settings-panel.ts');
     if (panel === 'case') void import('./case-panel.ts');
+    if (panel === 'found') void import('./found-panel.ts');
     this.panel = panel;
   }
 
@@ -172,6 +175,13 @@ export class Workbench extends StoreElement {
     if (this.store?.state.shownPlace) this.store.showPlace(null);
     else if (this.panel) this.#close();
   };
+}
+
+/** A text has come that leaves something open. */
+function asksAnew({ derived }: WorkbenchState, before: WorkbenchState): boolean {
+  if (!derived?.found || derived === before.derived) return false;
+  const known = new Set(before.derived?.found?.map(({ sourceId }) => sourceId));
+  return derived.found.some(({ sourceId, questionCount }) => questionCount > 0 && !known.has(sourceId));
 }
 
 /** All there is on a page that was cleared. */
