@@ -231,6 +231,9 @@ function settleFrame(
     chosenFrame !== null
       ? { frame: identity3, by: 'user' as const, name: chosenFrame }
       : binding.frameFrom && { frame: rotation, by: binding.frameFrom, name: 'given' };
+  if (known && known.by !== 'user' && !target.ranksKnownFrames) {
+    return { rotation, ranking: { frames: [], decided: true, by: known.by, inUse: known.name } };
+  }
   const sites = bySite.flatMap((tensors, site) =>
     tensors.length === 0 ? [] : [{ tensors, stabiliser: stabiliserOf(site) }],
   );

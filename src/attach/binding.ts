@@ -17,6 +17,8 @@ export interface AttachTarget {
   readonly operations?: readonly SymmetryOperation[];
   /** By site index: Cartesian matrices of the operations that keep a site in place; absent: frames are not ranked. */
   readonly stabiliserOf?: (siteIndex: number) => readonly Mat3[];
+  /** Rank the named settings also where the frame is known and nothing asks for it. */
+  readonly ranksKnownFrames?: boolean;
   /** The user named the crystal's frame: tensors are read in it as they stand. */
   readonly chosenFrame?: string | null;
 }

@@ -58,7 +58,11 @@ function chooseStructure(
   const others = readings.filter(
     (reading) => named && reading !== named.reading && reading.structures.length > 0,
   );
-  for (const { file, structures } of others) {
+  // a structure without tensors may be what tensors without a structure stand on
+  const hasBareSets = readings.some(({ tensorSets }) =>
+    tensorSets.some(({ structureIndex }) => structureIndex === null),
+  );
+  for (const { file, structures } of hasBareSets ? [] : others) {
     const withTensors = readings.some((reading) => reading.file === file && reading.tensorSets.length > 0);
     if (withTensors) continue;
     log.add(
@@ -123,5 +127,6 @@ export async function chooseCase(common: CommonArguments, io: CommandIo): Promis
     return reading.tensorSets.filter((set) => set.structureIndex === null || set.structureIndex === 0);
   });
   const tables = symmetryTablesFromBytes(io.symmetryModule());
-  return { input: { crystal: chosen.crystal, tensorSets, tables, settings, problems }, ...about };
+  const structures = readings.flatMap((reading) => reading.structures);
+  return { input: { crystal: chosen.crystal, tensorSets, tables, settings, problems, structures }, ...about };
 }

@@ -7,6 +7,7 @@ import type { Place, Problem } from '#src/base/problem.ts';
 import { countWatch, partOf, unwatched } from '#src/base/progress.ts';
 import type { ReportProgress } from '#src/base/progress.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
+import { isLeftHanded } from '#src/crystal/handedness.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
 import { nuclide } from '#src/data/nuclides.ts';
 import { forcedBySiteSymmetry } from '#src/tensor/forced.ts';
@@ -21,6 +22,8 @@ import type { CrystalDossier, DossierSettings, SiteDossier } from './dossier.ts'
 import { describeSymmetry } from './describe-symmetry.ts';
 import type { SymmetryDescription } from './describe-symmetry.ts';
 import { inNamedFrame } from './named-frame.ts';
+import { onStructure } from './on-structure.ts';
+import { orientationState } from './orientation-state.ts';
 import { otherTensors, siteTensors } from './site-tensors.ts';
 
 /** Everything a dossier is derived from. */
@@ -32,6 +35,10 @@ export interface DossierInput {
   readonly settings: DossierSettings;
   /** What reading already raised; kept at the head of the dossier's problems. */
   readonly problems: readonly Problem[];
+  /** Structures of all files that were read, in the order of each file: the atoms that tensors of other files stand on. */
+  readonly structures?: readonly Crystal[];
+  /** Rank the named frames also for sets that came with a lattice. */
+  readonly ranksKnownFrames?: boolean;
 }
 
 function imagesOf(sites: readonly SiteAtoms[]): AtomImage[] {
@@ -41,6 +48,7 @@ function imagesOf(sites: readonly SiteAtoms[]): AtomImage[] {
       element: site.element,
       label: site.label,
       fractional: atom.fractional,
+      cartesian: atom.cartesian,
       rotation: image === 0 ? identity3 : atom.rotation,
       own: image === 0,
     })),
@@ -58,15 +66,19 @@ interface BoundSets {
  * second the other one of a comparison; more are left out.
  */
 function attachAll(
+  { settings, structures = [], ranksKnownFrames = false }: DossierInput,
   crystal: Crystal,
   sets: readonly TensorSet[],
   chosen: ChosenCrystal,
   log: ProblemLog,
 ): BoundSets {
   const images = imagesOf(chosen.sites);
+  const stabiliserOf = stabilisersOf(chosen);
+  const chosenFrame = crystal.lattice && !isLeftHanded(crystal.lattice) ? settings.frame : null;
   const main: Attachment[] = [];
   const other: Attachment[] = [];
-  for (const set of sets) {
+  for (const given of sets) {
+    const { set, atoms } = onStructure(given, crystal, structures, log);
     const isSameQuantity = ({ quantity }: Attachment): boolean => quantity === set.quantity;
     const first = main.find(isSameQuantity);
     if (first && other.some(isSameQuantity)) {
@@ -80,14 +92,22 @@ function attachAll(
       images,
       siteCount: chosen.sites.length,
       rows: sameFile ? chosen.rowAtoms : null,
+      operations: chosen.crystal.symmetry.operations,
+      ...{ stabiliserOf, chosenFrame, ranksKnownFrames },
     };
-    const attachment = attachTensors(set, target, log);
+    const attachment = attachTensors(set, target, log, atoms);
     if (!attachment) continue;
     if (first) reportSecondSet(first, attachment, set, log);
     (first ? other : main).push(attachment);
     reportBareSites(attachment, chosen.sites, log);
   }
   return { main, other };
+}
+
+/** By site index: Cartesian matrices of the operations that keep a site in place. */
+function stabilisersOf(chosen: ChosenCrystal): (index: number) => Mat3[] {
+  const rotations = cartesianOperations(chosen.crystal);
+  return (index) => chosen.sites[index]!.stabiliser.map((operation) => rotations[operation] ?? identity3);
 }
 
 function placeOf(set: TensorSet): Place {
@@ -187,6 +207,10 @@ export type CrystalHead = Omit<CrystalDossier, 'sites' | 'bonds' | 'wholeMolecul
 export interface BegunDossier {
   readonly head: CrystalHead;
   readonly siteCount: number;
+  /** Bound sets, the main ones first. */
+  readonly attachments: readonly Attachment[];
+  /** As it is used, under the chosen symmetry. */
+  readonly crystal: Crystal;
   readonly site: (index: number) => SiteDossier;
   readonly bonds: (progress: ReportProgress) => Pick<CrystalDossier, 'bonds' | 'wholeMolecules'>;
   /** The problems of `bonds` alone, mostly far quicker. */
@@ -207,7 +231,7 @@ export function beginDossier(input: DossierInput, progress: ReportProgress = unw
   progress(0.5, 'Wyckoff letters');
   const symmetry = describeSymmetry(chosen, tables, settings, log);
   progress(0.7, 'attaching the tensors');
-  const bound = attachAll(crystal, sets, chosen, log);
+  const bound = attachAll(input, crystal, sets, chosen, log);
   const head: CrystalHead = {
     name: crystal.name,
     lattice: chosen.crystal.lattice,
@@ -218,10 +242,13 @@ export function beginDossier(input: DossierInput, progress: ReportProgress = unw
     composition: compositionOf(chosen.sites),
     temperatureK: crystal.temperatureK,
     settings,
+    ...orientationState(bound.main),
   };
   return {
     head,
     siteCount: chosen.sites.length,
+    attachments: [...bound.main, ...bound.other],
+    crystal: chosen.crystal,
     site: siteMaker(chosen, symmetry, bound, settings, log),
     bonds: (watch) => bondsOf(chosen, log, watch),
     reportBonds: () => reportBonds(chosen, log),
@@ -237,12 +264,12 @@ function siteMaker(
   settings: DossierSettings,
   log: ProblemLog,
 ): (index: number) => SiteDossier {
-  const rotations = cartesianOperations(chosen.crystal);
+  const stabiliserOf = stabilisersOf(chosen);
   const forced = forcedSentences(chosen);
   return (index) => {
     const siteAtoms = chosen.sites[index]!;
     const { site } = siteAtoms;
-    const stabiliser = siteAtoms.stabiliser.map((operation) => rotations[operation] ?? identity3);
+    const stabiliser = stabiliserOf(index);
     return {
       index,
       label: site.label,
@@ -278,7 +305,11 @@ const sitesShare = 0.7;
  * turned along their equivalents, conventions, noise, bonds. Never throws for content; problems carry what was doubtful.
  */
 export function deriveDossier(input: DossierInput, progress: ReportProgress = unwatched): CrystalDossier {
-  const begun = beginDossier(input, partOf(progress, 0, begunShare));
+  return wholeDossier(beginDossier(input, partOf(progress, 0, begunShare)), progress);
+}
+
+/** The dossier of a begun one, whose sites must not have been asked for. */
+export function wholeDossier(begun: BegunDossier, progress: ReportProgress = unwatched): CrystalDossier {
   const { siteCount } = begun;
   const reached = countWatch(siteCount, 'sites', partOf(progress, begunShare, sitesShare));
   const sites = Array.from({ length: siteCount }, (_none, index) => {

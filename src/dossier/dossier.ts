@@ -135,6 +135,21 @@ export interface BondRecord {
   readonly kind: 'bond' | 'hydrogen';
 }
 
+/**
+ * The Cartesian frame of some tensors is not settled: no lattice came with them, and symmetry does not decide among the named
+ * settings. Every figure of orientation carries the mark until the user names a frame; principal values do not depend on it.
+ */
+export interface UndecidedOrientation {
+  /** One sentence for captions and cards. */
+  readonly sentence: string;
+  /** Names of the sets it holds for. */
+  readonly sets: readonly string[];
+  /** The setting that orientations are shown in. */
+  readonly inUse: string;
+  /** Settings that symmetry leaves open. */
+  readonly open: readonly string[];
+}
+
 /** Everything the views may show of one crystal. Plain data. */
 export interface CrystalDossier {
   readonly name: string;
@@ -153,5 +168,7 @@ export interface CrystalDossier {
   readonly wholeMolecules: Readonly<Record<string, Vec3>>;
   readonly temperatureK: number | null;
   readonly settings: DossierSettings;
+  /** Absent where the frames of all tensors are settled. */
+  readonly orientation?: UndecidedOrientation;
   readonly problems: readonly Problem[];
 }

@@ -1,3 +1,4 @@
+import { sameCell } from '#src/attach/frame-rotation.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
 import { isLeftHanded } from '#src/crystal/handedness.ts';
@@ -57,6 +58,10 @@ export function inNamedFrame(input: FramedInput, frame: string | null, log: Prob
   const name = frame as LatticeSettingName;
   return {
     crystal: crystalInFrame(crystal, latticeFromCell(crystal.lattice.cell, name)),
-    sets: sets.map((set) => setInFrame(set, name)),
+    sets: sets.map((set) =>
+      set.lattice && crystal.lattice && sameCell(set.lattice.cell, crystal.lattice.cell)
+        ? setInFrame(set, name)
+        : set,
+    ),
   };
 }
