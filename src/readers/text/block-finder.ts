@@ -171,7 +171,13 @@ function atomOf(rows: readonly BlockRow[]): AtomMention | null {
   const named = rows.find(
     ({ row }) => row.atom !== null && (row.atom.index !== null || row.atom.isSure || row.atom.label !== null),
   );
-  const atom = named?.row.atom ?? null;
+  const found = named?.row.atom ?? null;
+  // `Si1x` is the row x of Si1.
+  const label = found?.label ?? null;
+  const atom =
+    found && label !== null && rows[1]!.row.axis !== null
+      ? { ...found, label: label.replace(/_?[xyz]$/, '') }
+      : found;
   const [first, second] = rows as [BlockRow, BlockRow];
   if (first.index !== null && second.index === null) {
     return atom

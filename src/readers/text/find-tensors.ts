@@ -203,8 +203,9 @@ function ofPart(
       .trim()
       .split(/\s{3,}|\t+|\s*\|\s*/)
       .filter((piece) => piece !== '');
-    if (pieces.length !== of) continue;
-    const text = pieces[part]!;
+    const named = pieces.length === of + 1 ? pieces.slice(1) : pieces;
+    if (named.length !== of) continue;
+    const text = named[part]!;
     const own = atomMention(tokenise(text, line.number));
     const near = [
       ...surroundings.near,

@@ -29,6 +29,9 @@ function keyOf(raw: RawTensor, topic: Topic, ordinal: number): string {
   ].join('|');
 }
 
+/** Words over a tensor of the whole, after those of its atoms. */
+const ofNoAtom = /\b(?:averaged?|mean|macroscopic|(?:whole|of the|over the) (?:molecule|cell|crystal))\b/i;
+
 /**
  * Runs of sightings that belong together: same shape, same words before them, same heading. An atom that comes again begins
  * another group (the next cycle or task). Blocks of one atom that follow each other are different things, one by one.
@@ -43,6 +46,7 @@ export function tensorGroups(tensors: readonly RawTensor[]): TensorGroup[] {
     const atom = atomKey(raw.atom);
     ordinal = atom === lastAtom ? ordinal + 1 : 0;
     lastAtom = atom;
+    if (ordinal > 0 && ofNoAtom.test(raw.near[raw.near.length - 1]?.text ?? '')) continue;
     const topic = topicOf(raw);
     const key = keyOf(raw, topic, ordinal);
     const known = open.get(key);
