@@ -104,7 +104,8 @@ export function checkJson(checked: Checked | null, problems: readonly Problem[])
     };
   }
   const { dossier, attachments } = checked;
-  const [main] = attachments;
+  // tensors of the crystal's own file need no mapping: what came from another is what is asked about
+  const main = attachments.find(({ method }) => method !== 'same-file') ?? attachments[0];
   return {
     schema,
     crystal: dossier.name,
