@@ -135,8 +135,8 @@ async function decide(page: Page): Promise<void> {
     const atoms = ['0:0', '1:0'].map((atomId) => ({ atomId, cellShift: [0, 0, 0] as const }));
     store.addMeasurement({ id: 'm1', kind: 'distance', atoms });
     store.setTable({ sort: { key: 'label', descending: true } }, 'sort by label');
-    store.setLook({ depthCue: false }, 'no depth cue');
     store.select({ siteIndex: 1, atomId: null });
+    store.setLook({ depthCue: false }, 'no depth cue');
     await store.undo();
   });
   await page.getByText('saved in this browser').waitFor();
@@ -170,7 +170,8 @@ describe('work kept in the browser', () => {
   });
 
   it('has something to lose', () => {
-    expect(before.past.length).toBe(8);
+    expect(before.past.length).toBe(9);
+    expect(before.past.at(-1)).toBe('select O1');
     expect(before.future).toEqual(['no depth cue']);
     expect(before.selection).toEqual({ siteIndex: 1, atomId: null });
   });
@@ -182,7 +183,7 @@ describe('work kept in the browser', () => {
     await expect.poll(async () => (await workOf(page)).views.look.depthCue).toBe(false);
     await page.keyboard.press('Control+z');
     await expect.poll(async () => (await workOf(page)).future).toEqual(['no depth cue']);
-    await page.getByRole('button', { name: 'Undo sort by label' }).waitFor();
+    await page.getByRole('button', { name: 'Undo select O1' }).waitFor();
   });
 
   it('is left alone by a second tab, which has work of its own', async () => {
@@ -226,7 +227,7 @@ describe('work kept in the browser', () => {
     await page.waitForTimeout(600);
     await page.reload();
     await page.getByRole('button', { name: 'Undo clear the page' }).click();
-    await isBack(page, { ...before, selection: null, future: ['clear the page'] });
+    await isBack(page, { ...before, future: ['clear the page'] });
   });
 
   it('that ended the page twice is left aside, which is said', async () => {
