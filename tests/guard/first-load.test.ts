@@ -58,7 +58,7 @@ describe('size of the page', () => {
   });
 
   // the aim is 300 kB; what step 2 added weighs more, see DEVELOPERS.md: it may not grow unnoticed
-  it('weighs at most 370 kB gzip as a whole, the symmetry module and the texts of the samples apart', () => {
+  it('weighs at most 430 kB gzip as a whole, the symmetry module and the texts of the samples apart', () => {
     const samples = readdirSync(join(projectRoot, 'samples'))
       .filter((name) => /\.(cif|xyz)$/.test(name))
       .map((name) => name.replace(/\.[^.]*$/, ''));
@@ -66,7 +66,7 @@ describe('size of the page', () => {
     const counted = assets().filter((name) => !isSample(name) && !/^moyo_wasm.*\.wasm$/.test(name));
     expect(counted.length).toBeGreaterThan(5);
     const total = counted.reduce((sum, name) => sum + gzipKilobytes(join(page, 'assets', name)), 0);
-    expect(total).toBeLessThan(370);
+    expect(total).toBeLessThan(430);
   });
 });
 
