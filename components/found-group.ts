@@ -46,7 +46,7 @@ export function foundGroup(
     <summary>
       ${groupMark(group.group)}
       <span>${role === 'decoy' && !proposed ? shapeNames[shape] : what}</span>
-      <span class="soft">${counted(entryCount, 'tensor')}, from line ${formatCount(line)}</span>
+      <span class="soft">${counted(entryCount, 'tensor')}, line ${formatCount(line)}</span>
       <span class="fate ${fate}">${fate}${fate === 'taken' || fate === 'asks' ? '' : known}</span>
     </summary>
     <div class="body">

@@ -5,6 +5,11 @@ export const foundStyles = css`
   h3 {
     overflow-wrap: anywhere;
   }
+  /* what stands in details does not inherit it */
+  details,
+  details * {
+    box-sizing: border-box;
+  }
   .soft,
   dd,
   td,
@@ -45,6 +50,7 @@ export const foundStyles = css`
     padding: 0 7px;
     font-size: 12.5px;
     color: var(--soft);
+    margin-left: auto;
   }
   .fate.taken {
     border-color: var(--accent);

@@ -57,7 +57,7 @@ export function valueText(value: FoundValue): string {
     const span = spanPpm === null ? '' : `, Ω ${formatNumber(spanPpm, 2)}`;
     return `${formatNumber(isotropicPpm, 2)} ppm${span}`;
   }
-  if (vzz === null) return '–';
+  if (vzz === null) return asymmetry === null ? '–' : `η ${formatNumber(asymmetry, 3)}`;
   const eta = asymmetry === null ? '' : `, η ${formatNumber(asymmetry, 3)}`;
   return couplingMHz === null
     ? `Vzz ${formatSmall(vzz, 6)} a.u.${eta}`

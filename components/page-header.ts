@@ -123,6 +123,7 @@ export class PageHeader extends StoreElement {
         >
           Save
         </button>
+        ${store.state.derived?.tensors.some(({ used }) => used) ? this.#panelButton('check', 'Check') : nothing}
         ${this.#panelButton('case', 'Case')}
         ${this.#stepButton('Undo', past.at(-1)?.name, 'Ctrl+Z', () => store.undo())}
         ${this.#stepButton('Redo', future.at(-1)?.name, 'Shift+Ctrl+Z', () => store.redo())}

@@ -139,10 +139,17 @@ export class Workbench extends StoreElement {
 
   #drawer(panel: NonNullable<Panel>): TemplateResult {
     const { store } = this;
-    const names = { problems: 'Problems', settings: 'Settings', case: 'Case', found: 'Found' } as const;
+    const names = {
+      problems: 'Problems',
+      settings: 'Settings',
+      case: 'Case',
+      found: 'Found',
+      check: 'Check',
+    } as const;
     return html`<aside class="drawer" tabindex="-1" role="dialog" aria-label=${names[panel]}>
       ${panel === 'problems' ? html`<ellipsite-problems-drawer .store=${store}></ellipsite-problems-drawer>` : nothing}
       ${panel === 'found' ? html`<ellipsite-found-panel .store=${store}></ellipsite-found-panel>` : nothing}
+      ${panel === 'check' ? html`<ellipsite-check-panel .store=${store}></ellipsite-check-panel>` : nothing}
       ${panel === 'settings' ? html`<ellipsite-settings-panel .store=${store}></ellipsite-settings-panel>` : nothing}
       ${panel === 'case' ? html`<ellipsite-case-panel .store=${store} .keeper=${this.keeper}></ellipsite-case-panel>` : nothing}
     </aside>`;
@@ -160,6 +167,7 @@ export class Workbench extends StoreElement {
     if (panel === 'settings') void import('./settings-panel.ts');
     if (panel === 'case') void import('./case-panel.ts');
     if (panel === 'found') void import('./found-panel.ts');
+    if (panel === 'check') void import('./check-panel.ts');
     this.panel = panel;
   }
 

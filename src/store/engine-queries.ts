@@ -7,6 +7,9 @@ import { columnsOf } from '#src/table/site-columns.ts';
 import { orderSites } from '#src/table/table-order.ts';
 import { tableRow } from '#src/table/table-rows.ts';
 import type { TableOrder, TablePage, TableRequest, TableTextRequest } from '#src/table/table-settings.ts';
+import type { Attachment } from '#src/attach/attachment.ts';
+import { checkView } from './check-desk.ts';
+import type { CheckView } from './check-desk.ts';
 import { FoundDesk } from './found-desk.ts';
 import type { SearchedText } from './found-desk.ts';
 import type {
@@ -39,6 +42,8 @@ export interface Queries {
   /** Sites whose label stands in a text, the longest labels first, at most a handful. */
   readonly sitesNamed: { readonly ask: string; readonly answer: readonly KnownSite[] };
   readonly table: { readonly ask: TableRequest; readonly answer: TablePage };
+  /** Whether the tensors belong to the crystal, and how sound they are. */
+  readonly check: { readonly ask: null; readonly answer: CheckView };
   /** What was found in the texts of the case, text by text. */
   readonly found: { readonly ask: null; readonly answer: readonly FoundFileView[] };
   readonly foundEntries: { readonly ask: FoundEntriesRequest; readonly answer: readonly FoundEntryView[] };
@@ -65,9 +70,17 @@ export class CrystalDesk {
 
   readonly #found: FoundDesk;
 
-  constructor(dossier: CrystalDossier, texts: readonly SearchedText[] = []) {
+  readonly #rankedSets: () => readonly Attachment[];
+
+  /** `rankedSets` binds the tensor sets once more with all frames ranked: it is asked when it is needed. */
+  constructor(
+    dossier: CrystalDossier,
+    texts: readonly SearchedText[] = [],
+    rankedSets: () => readonly Attachment[] = () => [],
+  ) {
+    this.#rankedSets = rankedSets;
     this.#dossier = dossier;
-    this.#found = new FoundDesk(texts, dossier);
+    this.#found = new FoundDesk(texts, dossier, rankedSets);
   }
 
   answer(query: Query): QueryAnswer {
@@ -80,6 +93,8 @@ export class CrystalDesk {
         return this.#sites(this.#named(query.ask));
       case 'table':
         return this.#page(query.ask);
+      case 'check':
+        return checkView(this.#dossier, this.#rankedSets());
       case 'found':
         return this.#found.files();
       case 'foundEntries':

@@ -1,3 +1,4 @@
+import type { Attachment } from '#src/attach/attachment.ts';
 import type { ReportProgress } from '#src/base/progress.ts';
 import type { Problem } from '#src/base/problem.ts';
 import { problem } from '#src/base/problem.ts';
@@ -5,7 +6,7 @@ import { decodeBytes, defaultByteLimits } from '#src/bytes/decode-bytes.ts';
 import type { DecodedBytes } from '#src/bytes/decode-bytes.ts';
 import type { SourceText } from '#src/bytes/source-text.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
-import { deriveDossier } from '#src/dossier/derive-dossier.ts';
+import { beginDossier, deriveDossier } from '#src/dossier/derive-dossier.ts';
 import type { CrystalDossier } from '#src/dossier/dossier.ts';
 import { readAnyText } from '#src/readers/read-any-text.ts';
 import type { Reading } from '#src/readers/reading.ts';
@@ -141,8 +142,8 @@ class ReadingEngine implements Engine {
   }
 
   async derive(derivation: number, input: CaseInput, report: ReportProgress): Promise<DerivedCase> {
-    const { derived, dossier, texts } = await this.#derive(derivation, input, report);
-    if (dossier) this.#desks.set(derivation, Promise.resolve(new CrystalDesk(dossier, texts)));
+    const { derived, dossier, texts, rankedSets } = await this.#derive(derivation, input, report);
+    if (dossier) this.#desks.set(derivation, Promise.resolve(new CrystalDesk(dossier, texts, rankedSets)));
     return derived;
   }
 
@@ -150,7 +151,7 @@ class ReadingEngine implements Engine {
     let desk = this.#desks.get(derivation);
     if (!desk) {
       desk = this.#derive(derivation, input, () => undefined).then(
-        ({ dossier, texts }) => dossier && new CrystalDesk(dossier, texts),
+        ({ dossier, texts, rankedSets }) => dossier && new CrystalDesk(dossier, texts, rankedSets),
       );
       this.#desks.set(derivation, desk);
     }
@@ -173,6 +174,7 @@ class ReadingEngine implements Engine {
     readonly derived: DerivedCase;
     readonly dossier: CrystalDossier | null;
     readonly texts: readonly SearchedText[];
+    readonly rankedSets: () => readonly Attachment[];
   }> {
     const watched = throttled(report);
     const read = await this.#readAll(input, watched);
@@ -198,28 +200,35 @@ class ReadingEngine implements Engine {
     ];
     if (!chosen) {
       const problems = [...readingProblems, ...noStructure(read, readingProblems)];
-      return { derived: { ...base, chosen: null, crystal: null, problems }, dossier: null, texts };
+      return {
+        derived: { ...base, chosen: null, crystal: null, problems },
+        dossier: null,
+        texts,
+        rankedSets: () => [],
+      };
     }
     watched(readingShare, 'loading the symmetry tables');
     const tables = await this.#symmetryTables();
-    const dossier = deriveDossier(
-      {
-        crystal: chosen.crystal,
-        tensorSets: tensorsFor(read, chosen.choice).flatMap(({ summary, set }) =>
-          summary.used ? [set] : [],
-        ),
-        tables,
-        settings: input.settings,
-        problems: readingProblems,
-        structures: read.flatMap(({ reading }) => reading.structures),
-      },
-      (share, stage) => watched(readingShare + (1 - readingShare) * share, stage),
+    const dossierInput = {
+      crystal: chosen.crystal,
+      tensorSets: tensorsFor(read, chosen.choice).flatMap(({ summary, set }) => (summary.used ? [set] : [])),
+      tables,
+      settings: input.settings,
+      problems: readingProblems,
+      structures: read.flatMap(({ reading }) => reading.structures),
+    };
+    const dossier = deriveDossier(dossierInput, (share, stage) =>
+      watched(readingShare + (1 - readingShare) * share, stage),
     );
+    let ranked: readonly Attachment[] | null = null;
+    const rankedSets = (): readonly Attachment[] =>
+      (ranked ??= beginDossier({ ...dossierInput, ranksKnownFrames: true }).attachments);
     const crystal = summaryOf(dossier);
     return {
       derived: { ...base, chosen: chosen.choice, crystal, problems: dossier.problems },
       dossier,
       texts,
+      rankedSets,
     };
   }
 

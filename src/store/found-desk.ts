@@ -1,3 +1,4 @@
+import type { Attachment } from '#src/attach/attachment.ts';
 import type { Mat3 } from '#src/base/matrix3.ts';
 import { nuclide, usualIsotope } from '#src/data/nuclides.ts';
 import type { CrystalDossier, DossierSettings, SiteDossier } from '#src/dossier/dossier.ts';
@@ -35,7 +36,9 @@ const sampleCount = 3;
 const mostMarks = 2000;
 
 export function foundSummary({ sourceId, file, asChosen: { groups } }: SearchedText): FoundSummary {
-  const taken = groups.filter(({ proposed }) => proposed);
+  const taken = groups.filter(
+    ({ proposed, quantity, unit }) => proposed && quantity !== 'unknown' && unit !== 'unknown',
+  );
   return {
     sourceId,
     file,
@@ -51,10 +54,14 @@ export class FoundDesk {
   readonly #settings: DossierSettings;
   readonly #sites: SiteFinder;
 
-  constructor(texts: readonly SearchedText[], dossier: CrystalDossier) {
+  constructor(
+    texts: readonly SearchedText[],
+    dossier: CrystalDossier,
+    boundSets: () => readonly Attachment[],
+  ) {
     this.#texts = texts;
     this.#settings = dossier.settings;
-    this.#sites = siteFinder(dossier.sites);
+    this.#sites = siteFinder(dossier.sites, boundSets);
   }
 
   files(): FoundFileView[] {
@@ -133,7 +140,11 @@ export class FoundDesk {
       const sign = group.choice?.sign ?? 1;
       const values = asFound.entries.slice(0, sampleCount).map(({ tensor, element }) => {
         const read = reordered(tensor, asFound, choice.order, sign);
-        return valueOf(read, reading, element, this.#settings);
+        if (reading.quantity !== 'efg' || reading.unit !== 'unknown')
+          return valueOf(read, reading, element, this.#settings);
+        // without a unit the asymmetry alone can be told
+        const { asymmetry } = valueOf(read, { quantity: 'efg', unit: 'au' }, element, this.#settings);
+        return { ...nothing, asymmetry };
       });
       return { change, values: change.taken === false ? [] : values };
     });
@@ -206,18 +217,25 @@ type SiteFinder = (
   isTaken: boolean,
 ) => number | null;
 
-/** Site whose tensor stands in a line; for tensors of its equivalents, and of groups not taken, the site of that label. */
-function siteFinder(sites: readonly SiteDossier[]): SiteFinder {
-  const byPlace = new Map<string, number>();
+/** Site on whose atoms a tensor was put; for those of groups not taken the site of that label. */
+function siteFinder(sites: readonly SiteDossier[], boundSets: () => readonly Attachment[]): SiteFinder {
   const byLabel = new Map<string, number | null>();
-  for (const { index, label, element, shielding, efg, other } of sites) {
-    for (const tensor of [shielding, efg, other?.shielding, other?.efg])
-      if (tensor) byPlace.set(`${tensor.source.line} ${tensor.source.file}`, index);
+  for (const { index, label, element } of sites) {
     const key = `${element} ${label}`;
     byLabel.set(key, byLabel.has(key) ? null : index);
   }
+  let byPlace: Map<string, number> | null = null;
   return (file, { line, label, element }, isTaken) => {
-    const own = isTaken ? byPlace.get(`${line} ${file}`) : undefined;
+    if (isTaken) byPlace ??= sitesByPlace(boundSets());
+    const own = isTaken ? byPlace?.get(`${line} ${file}`) : undefined;
     return own ?? byLabel.get(`${element ?? ''} ${label ?? ''}`) ?? null;
   };
+}
+
+function sitesByPlace(attachments: readonly Attachment[]): Map<string, number> {
+  const byPlace = new Map<string, number>();
+  for (const { bySite } of attachments)
+    for (const [siteIndex, tensors] of bySite.entries())
+      for (const { entry } of tensors) byPlace.set(`${entry.place.line} ${entry.place.file}`, siteIndex);
+  return byPlace;
 }

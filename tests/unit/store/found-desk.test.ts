@@ -47,7 +47,7 @@ describe('what was found, for the page', () => {
   it('is counted with the case, with its questions', async () => {
     const { derived } = await deskOf();
     expect(derived.found).toEqual([
-      { sourceId: 's2', file: 'a.log', groupCount: 2, tensorCount: 2, questionCount: 3 },
+      { sourceId: 's2', file: 'a.log', groupCount: 2, tensorCount: 0, questionCount: 3 },
     ]);
     expect(derived.tensors).toEqual([]);
   });
@@ -85,7 +85,7 @@ describe('what was found, for the page', () => {
       file: 'a.log',
     };
     const { derived, found, ask } = await deskOf([choice]);
-    expect(derived.found![0]).toMatchObject({ tensorCount: 4, questionCount: 2 });
+    expect(derived.found![0]).toMatchObject({ tensorCount: 2, questionCount: 2 });
     expect(derived.crystal?.tensorCounts.shielding).toBe(2);
     expect(found.groups[1]).toMatchObject({ quantity: 'shielding', choice, proposed: true });
     expect(found.groups[1]!.sample.map(({ label, siteIndex }) => [label, siteIndex])).toEqual([
