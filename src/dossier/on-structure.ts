@@ -2,6 +2,8 @@ import type { SourceAtom } from '#src/attach/bind-by-position.ts';
 import { chemicalElement } from '#src/attach/structure-atoms.ts';
 import { ProblemLog } from '#src/base/problem.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
+import type { Lattice } from '#src/crystal/lattice.ts';
+import { toCartesian, toFractional } from '#src/crystal/lattice.ts';
 import type { TensorEntry, TensorSet } from '#src/tensor/tensor-set.ts';
 import { cellAtoms } from './cell-atoms.ts';
 
@@ -16,6 +18,17 @@ function atomsOf(structure: Crystal): SourceAtom[] {
     atoms.slice(1).map(({ cartesian }) => ({ label: site.label, element: site.element, cartesian })),
   );
   return [...rows, ...images];
+}
+
+/** The same in the frame of the set, which is another one where the user named it. */
+function inFrameOf(lattice: Lattice, structure: Crystal): SourceAtom[] {
+  const given = structure.lattice;
+  const atoms = atomsOf(structure);
+  if (!given || given.rows.every((x, i) => x === lattice.rows[i])) return atoms;
+  return atoms.map((atom) => ({
+    ...atom,
+    cartesian: toCartesian(lattice, toFractional(given, atom.cartesian)),
+  }));
 }
 
 /** Rows of the structure that entries are, by label or in the order of each element; null where the counts differ. */
@@ -55,7 +68,7 @@ export function onStructure(
   if (structure) {
     const isCrystal = structure.place.file === crystal.place.file;
     const isListed = set.entries.every(({ atomIndex }) => atomIndex !== null);
-    return { set, atoms: !isCrystal && isListed && set.lattice ? atomsOf(structure) : null };
+    return { set, atoms: !isCrystal && isListed && set.lattice ? inFrameOf(set.lattice, structure) : null };
   }
   if (set.entries.some(({ cartesian }) => cartesian !== null)) return { set, atoms: null };
   for (const other of structures) {
