@@ -38,15 +38,19 @@ export class CheckPanel extends StoreElement {
         font-weight: 400;
         color: var(--soft);
         text-align: left;
-        padding: 1px 12px 1px 0;
+        padding: 1px 9px 1px 0;
         vertical-align: bottom;
       }
       td {
-        padding: 1px 12px 1px 0;
+        padding: 1px 9px 1px 0;
         white-space: nowrap;
       }
       .set {
         overflow-wrap: anywhere;
+      }
+      td.verdict {
+        white-space: normal;
+        min-width: 11ch;
       }
       .warns {
         color: var(--warning);
@@ -162,10 +166,10 @@ export class CheckPanel extends StoreElement {
                 <thead>
                   <tr>
                     <th>frame</th>
-                    <th class="number">turned</th>
+                    <th>symmetry says</th>
                     <th class="number">residual</th>
                     <th class="number">of anisotropy</th>
-                    <th>symmetry says</th>
+                    <th class="number">turned</th>
                   </tr>
                 </thead>
                 <tbody>
@@ -173,12 +177,14 @@ export class CheckPanel extends StoreElement {
                     ({ name, rotationDegrees, residual, relative, verdict }) =>
                       html`<tr class=${name === frame.inUse ? 'use' : ''}>
                         <td>${name}</td>
-                        <td class="number">${formatNumber(rotationDegrees, 1)}°</td>
+                        <td class="verdict ${verdict === 'undetectable by symmetry' ? 'warns' : ''}">
+                          ${verdict}
+                        </td>
                         <td class="number">${residualText(set, residual)}</td>
                         <td class="number">
                           ${relative === null ? '–' : `${formatNumber(relative * 100, 1)} %`}
                         </td>
-                        <td class=${verdict === 'undetectable by symmetry' ? 'warns' : ''}>${verdict}</td>
+                        <td class="number">${formatNumber(rotationDegrees, 1)}°</td>
                       </tr>`,
                   )}
                 </tbody>

@@ -27,10 +27,12 @@ export function mappingSentences({ mapping }: CheckedSet): string[] {
         .map((x) => formatNumber(x, Number.isInteger(x) ? 0 : 3))
         .join(' '),
     );
-    const strained = `strained by ${formatNumber((strain ?? 0) * 100, 2)} %`;
-    sentences.push(`Its cell is (${rows.join(' / ')}) times the crystal’s, ${strained}.`);
+    const isSame = basis.every((x, at) => x === (at % 4 === 0 ? 1 : 0));
+    const cell = isSame ? 'the crystal’s' : `(${rows.join(' / ')}) times the crystal’s`;
+    sentences.push(`Its cell is ${cell}, strained by ${formatNumber((strain ?? 0) * 100, 2)} %.`);
   }
-  if (originShift) sentences.push(`Origin shifted by ${formatTriple(originShift, 4)}.`);
+  if (originShift?.some((x) => Math.abs(x) >= 0.5e-4))
+    sentences.push(`Origin shifted by ${formatTriple(originShift, 4)}.`);
   if (handedness === 'mirrored') sentences.push('It is the mirror image of the crystal.');
   return sentences;
 }

@@ -100,7 +100,7 @@ function ways(group: FoundGroupView, { choose }: GroupActs): TemplateResult {
         id="${id}-quantity"
         @change=${(event: Event) => choose({ quantity: chosen(event) as TextChoice['quantity'], unit: null })}
       >
-        ${option('', choice?.quantity ?? '', `as found: ${quantityNames[asFound.quantity]}`)}
+        ${option('', choice?.quantity ?? '', `${quantityNames[asFound.quantity]}, as found`)}
         ${(['shielding', 'shift', 'efg'] as const).map((one) => option(one, choice?.quantity, quantityNames[one]))}
       </select>
       <label for="${id}-unit">unit</label>
@@ -112,7 +112,7 @@ function ways(group: FoundGroupView, { choose }: GroupActs): TemplateResult {
         ${quantity === 'efg' ? nothing : html`<option selected>${quantity === 'unknown' ? '–' : 'ppm'}</option>`}
         ${
           quantity === 'efg'
-            ? html`${option('', choice?.unit ?? '', `as found: ${unitName(asFound.unit)}`)}
+            ? html`${option('', choice?.unit ?? '', `${unitName(asFound.unit)}, as found`)}
               ${units.map((unit) => option(unit, choice?.unit, unitName(unit)))}`
             : nothing
         }
@@ -194,7 +194,7 @@ function entryTable(
                 </button>
               </td>
               <td class="number">${isComplete ? valueText(entry.value) : 'incomplete'}</td>
-              <td class="soft">${proofs.join(', ') || '–'}</td>
+              <td class="soft proofs">${proofs.join(', ') || '–'}</td>
             </tr>`;
           })}
         </tbody>

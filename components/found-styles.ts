@@ -96,6 +96,11 @@ export const foundStyles = css`
   }
   td button {
     white-space: nowrap;
+    margin: 1px 0;
+  }
+  td.proofs {
+    white-space: normal;
+    min-width: 12ch;
   }
   tr.selected td {
     background: var(--lit);

@@ -13,6 +13,13 @@ Al1 Al 0 0 0
 O1 O 1 1 2
 `;
 
+/** Without any symmetry, so that no frame can be told from another. */
+const triclinic = `2
+Lattice="4 0 0 0.7 5 0 -0.9 0.4 6" Properties=label:S:1:species:S:1:pos:R:3
+Al1 Al 0 0 0
+O1 O 1 1 2
+`;
+
 const otherCrystal = `2
 Lattice="5 0 0 0 5 0 0 0 6" Properties=label:S:1:species:S:1:pos:R:3
 Si1 Si 0 0 0
@@ -191,6 +198,34 @@ describe('a dropped text that leaves something open', () => {
     await until('the effect', () => root.querySelector('.question') === null);
     expect(textOf(foundButton())).toBe('Found 0 tensors');
     expect(textOf(root.querySelector('.fate'))).toBe('not settled');
+  });
+});
+
+describe('the check of bound tensors', () => {
+  it('says how they were bound, marks frames that symmetry leaves open, and leads to the sites', async () => {
+    await openFiles(store, [input('low.xyz', triclinic), input('a.log', logOf('Al1', 'O1'))]);
+    await takeAsShielding();
+    const button = [...header().querySelectorAll('button')].find((one) => textOf(one) === 'Check')!;
+    button.click();
+    const check = await until('the check', () => {
+      const found = root('ellipsite-check-panel');
+      return found?.querySelector('td') ? found : null;
+    });
+    expect(textOf(check)).toContain('Bound by site labels only: weaker evidence. 2 of 2 atoms found');
+    const verdicts = [...check.querySelectorAll('.verdict')].map(textOf);
+    expect(verdicts).toContain('undetectable by symmetry');
+    expect(textOf(check)).toContain('orientations are not to be trusted until a frame is chosen');
+    const sites = [...check.querySelectorAll<HTMLElement>('table .link')];
+    sites.find((one) => textOf(one) === 'O1')!.click();
+    expect(store.state.selection).toEqual({ siteIndex: 1, atomId: null });
+    press(workbench, 'Escape');
+    press(workbench, 'Escape');
+    await settle();
+    expect(root('ellipsite-check-panel')).toBeNull();
+  });
+
+  it('is not offered where nothing is bound', () => {
+    expect([...header().querySelectorAll('button')].map(textOf)).not.toContain('Check');
   });
 });
 
