@@ -17,7 +17,7 @@ export type GroupQuestion = 'quantity' | 'unit' | 'order';
 export function questionsOf(group: FoundGroup): GroupQuestion[] {
   const { role, quantity, proposed, unit, isOrderProved, choice } = group;
   if (choice?.taken === false) return [];
-  if (quantity === 'unknown') return role === 'unknown' ? ['quantity'] : [];
+  if (quantity === 'unknown') return role === 'unknown' || proposed ? ['quantity'] : [];
   if (!proposed) return [];
   const isOrderOpen = isOrderProved === false && !choice?.order;
   return [...(unit === 'unknown' ? ['unit' as const] : []), ...(isOrderOpen ? ['order' as const] : [])];

@@ -73,6 +73,16 @@ describe('a choice about found tensors', () => {
     expect(codes(chosen)).not.toContain('find-quantity-open');
   });
 
+  it('to take something else of a tensor’s shape asks what it is', () => {
+    const found = find(`Stress tensors (GPa)\n${blocks(['Al1']).replace('Invented run', '')}`);
+    expect(found.groups[0]).toMatchObject({ role: 'decoy', proposed: false });
+    expect(questionsOf(found.groups[0]!)).toEqual([]);
+    expect(questionsOf(choose(found, 0, { taken: true }).groups[0]!)).toEqual(['quantity']);
+    const named = choose(found, 0, { taken: true, quantity: 'shift' });
+    expect(questionsOf(named.groups[0]!)).toEqual([]);
+    expect(readingOf(found, [named.groups[0]!.choice!])?.tensorSets[0]?.quantity).toBe('shift');
+  });
+
   it('takes no unit of another quantity along', () => {
     const chosen = choose(find(blocks(['Al1'])), 0, { quantity: 'efg', unit: 'ppm' });
     expect(chosen.groups[0]!.unit).toBe('unknown');
