@@ -1,8 +1,11 @@
 import { describe, expect, it } from 'vitest';
+import { sourceFromText } from '#src/bytes/source-from-text.ts';
 import { newCase } from '#src/case/new-case.ts';
 import { serialiseCase } from '#src/case/serialise-case.ts';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
+import { findInText } from '#src/readers/text/find-in-text.ts';
+import { noChoice } from '#src/tensor/text-choice.ts';
 import { runCommand } from '#tests/support/command-io.ts';
 
 /** Two frames with invented tensors; the second also has a column under a foreign name. */
@@ -61,6 +64,36 @@ describe('a case file on the command line', () => {
     expect(document.crystal.symmetry.operations).toBe(1);
     // V_zz = −0.4 a.u.: e Q V_zz / h = 234.9648 MHz/(barn a.u.) × 0.15 × −0.4 (CODATA 2022)
     expect(aluminium.efg.couplingMHz).toBeCloseTo(-234.9648 * 0.15 * 0.4, 2);
+  });
+
+  it('reads tensors of a text as they were chosen to be read', async () => {
+    const log = `Invented run
+
+ Tensors, nothing more is said
+ atom Al1
+   520.0   2.0   0.0
+    -4.0  530.0  0.0
+     0.0   0.0  549.0
+`;
+    const crystal = `1
+Lattice="4 0 0 0 4 0 0 0 6" Properties=label:S:1:species:S:1:pos:R:3
+Al1 Al 0 0 0
+`;
+    const { groups } = findInText(sourceFromText('a.log', log));
+    const choice = { ...noChoice, signature: groups[0]!.signature!, quantity: 'shift', sign: -1 } as const;
+    const chosen = await newCase({
+      title: 'chosen',
+      sources: [
+        { name: 'crystal.xyz', text: crystal },
+        { name: 'a.log', text: log },
+      ],
+      decisions: { textChoices: [{ ...choice, file: 'a.log' }] },
+    });
+    const { document } = await sites({ c: serialiseCase(chosen) });
+    // −(520 + 530 + 549)/3 = −533
+    expect(document.sites[0].shift.isotropic).toBeCloseTo(-533, 9);
+    const unasked = await sites({ 'crystal.xyz': crystal, 'a.log': log });
+    expect(unasked.document.sites[0].shift).toBeNull();
   });
 
   it('lets options go before its settings, one by one', async () => {
