@@ -4,6 +4,7 @@ import { convention } from '#src/store/conventions.ts';
 import type { ConventionEntry } from '#src/store/conventions.ts';
 import { symbolOf } from './convention-symbol.ts';
 import { raiseIsotopes } from '#src/table/number-format.ts';
+import { isDiagnostic } from '#src/table/printed-value.ts';
 import { withSubscripts } from './symbol-text.ts';
 
 /** A printed number, or what stands for none with the reason as its tooltip; the reasons also stand below the table. */
@@ -12,13 +13,15 @@ export function valueOrReason(text: string, because: string | undefined): Templa
   return html`<span class="undefined" title=${because ? raiseIsotopes(because) : nothing}>${text}</span>`;
 }
 
-/** Sentences below a table for what is undefined in it, one for each reason. */
+/** Sentences below a table for what is undefined in it, one for each reason; diagnostics carry theirs in their own list. */
 export function reasons(
   quantity: ConventionEntry['quantity'],
   because: Readonly<Record<string, string>>,
 ): TemplateResult {
   const fieldsByReason = new Map<string, string[]>();
   for (const [field, reason] of Object.entries(because)) {
+    const entry = convention(quantity, field);
+    if (entry && isDiagnostic(entry)) continue;
     fieldsByReason.set(reason, [...(fieldsByReason.get(reason) ?? []), field]);
   }
   return html`${[...fieldsByReason].map(

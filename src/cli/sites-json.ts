@@ -3,6 +3,7 @@ import type { Vec3 } from '#src/base/matrix3.ts';
 import type { Problem } from '#src/base/problem.ts';
 import type { BegunDossier, CrystalHead } from '#src/dossier/derive-dossier.ts';
 import type { EfgDossier, ShieldingDossier, ShiftDossier, SiteDossier } from '#src/dossier/dossier.ts';
+import { watchUndefined } from './undefined-notes.ts';
 
 const list = (v: Vec3 | null): number[] | null => (v ? [...v] : null);
 
@@ -115,18 +116,21 @@ function crystalJson(dossier: CrystalHead) {
 
 /**
  * The document of `ellipsite sites --json`, schema `ellipsite/sites/1`, in pieces of one site each, which are made one after
- * the other, so that a crystal of any size can be written. Without a crystal, where no structure was read, it tells the
+ * the other, so that a crystal of any size can be written; notes say why what is null is so. Without a crystal, where no structure was read, it tells the
  * problems of reading.
  */
 export function* sitesJson(begun: BegunDossier | null, ofReading: readonly Problem[]): Generator<string> {
   const crystal = begun ? crystalJson(begun.head) : null;
   yield `{\n "schema": "ellipsite/sites/1",\n "crystal": ${JSON.stringify(crystal, null, 1)},\n "sites": [`;
   let separator = '\n';
+  const nulls = begun && watchUndefined(begun.head, begun.crystal.place);
   for (let index = 0; begun && index < begun.siteCount; index += 1) {
-    yield separator + JSON.stringify(siteJson(begun.site(index)), null, 1);
+    const site = begun.site(index);
+    nulls?.see(site);
+    yield separator + JSON.stringify(siteJson(site), null, 1);
     separator = ',\n';
   }
   begun?.reportBonds();
-  const problems = begun?.problems() ?? ofReading;
+  const problems = [...(begun?.problems() ?? ofReading), ...(nulls?.notes() ?? [])];
   yield `],\n "problems": ${JSON.stringify(problems, null, 1)}\n}\n`;
 }

@@ -269,7 +269,8 @@ function siteMaker(
   return (index) => {
     const siteAtoms = chosen.sites[index]!;
     const { site } = siteAtoms;
-    const stabiliser = stabiliserOf(index);
+    const multiplicity = siteAtoms.atoms.length;
+    const own = { site, stabiliser: stabiliserOf(index), multiplicity, settings };
     return {
       index,
       label: site.label,
@@ -278,7 +279,7 @@ function siteMaker(
       occupancy: site.occupancy,
       fractional: site.fractional,
       cartesian: site.cartesian,
-      multiplicity: siteAtoms.atoms.length,
+      multiplicity,
       siteSymmetryOrder: siteAtoms.stabiliser.length,
       wyckoff: symmetry.wyckoff[index] ?? null,
       siteSymmetry: symmetry.siteSymmetry[index] ?? null,
@@ -290,8 +291,8 @@ function siteMaker(
       charge: site.charge,
       attachedHydrogens: site.attachedHydrogens,
       source: site.place,
-      ...siteTensors({ site, stabiliser, attachments: bound.main, settings }, log),
-      ...otherTensors({ site, stabiliser, attachments: bound.other, settings }, log),
+      ...siteTensors({ ...own, attachments: bound.main }, log),
+      ...otherTensors({ ...own, attachments: bound.other }, log),
     };
   };
 }

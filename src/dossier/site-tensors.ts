@@ -19,6 +19,8 @@ export interface SiteTensorInput {
   readonly site: Site;
   /** Cartesian matrices of the operations that leave the site in place, identity included. */
   readonly stabiliser: readonly Mat3[];
+  /** Atoms of the site in the cell. */
+  readonly multiplicity: number;
   readonly attachments: readonly Attachment[];
   readonly settings: DossierSettings;
 }
@@ -93,7 +95,20 @@ function isotopeOf(element: string, settings: DossierSettings, use: Quantity): s
 
 /* Dossiers are written field by field: spreading a description costs as much as making it, and a large crystal has many. */
 
-function shieldingDossier(evidence: Evidence): ShieldingDossier {
+/** Reasons with that of the spread, which needs the tensors of two equivalent atoms. */
+function withSpreadReason(
+  reasons: Readonly<Record<string, string>>,
+  { equivalentSpread: spread }: Evidence,
+  multiplicity: number,
+): Readonly<Record<string, string>> {
+  if (spread !== null) return reasons;
+  return { ...reasons, equivalentSpread: multiplicity === 1 ? loneAtomReason : loneTensorReason };
+}
+
+const loneAtomReason = 'the atom has no equivalents';
+const loneTensorReason = 'only one of the equivalent atoms has a tensor';
+
+function shieldingDossier(evidence: Evidence, multiplicity: number): ShieldingDossier {
   const described = describeShielding(evidence.tensor, evidence.noise);
   return {
     tensor: described.tensor,
@@ -109,7 +124,7 @@ function shieldingDossier(evidence: Evidence): ShieldingDossier {
     antisymmetricNorm: described.antisymmetricNorm,
     axialVector: described.axialVector,
     noise: described.noise,
-    undefinedBecause: described.undefinedBecause,
+    undefinedBecause: withSpreadReason(described.undefinedBecause, evidence, multiplicity),
     projected: evidence.projected,
     symmetryResidual: evidence.symmetryResidual,
     equivalentSpread: evidence.equivalentSpread,
@@ -124,7 +139,11 @@ function noGradientReason({ trace, components }: EfgDescription): string | null 
   return `the trace of ${Number(trace.toPrecision(4))} a.u. is larger than Vzz, so that the tensor is no field gradient`;
 }
 
-function efgDossier(evidence: Evidence, isotope: string | null, settings: DossierSettings): EfgDossier {
+function efgDossier(
+  evidence: Evidence,
+  isotope: string | null,
+  { settings, multiplicity }: SiteTensorInput,
+): EfgDossier {
   const own = isotope === null ? null : (settings.quadrupoleMomentsBarn[isotope] ?? null);
   const described = describeEfg(
     evidence.tensor,
@@ -158,7 +177,7 @@ function efgDossier(evidence: Evidence, isotope: string | null, settings: Dossie
     signDetermined: described.signDetermined,
     antisymmetricNorm: described.antisymmetricNorm,
     noise: described.noise,
-    undefinedBecause,
+    undefinedBecause: withSpreadReason(undefinedBecause, evidence, multiplicity),
     projected: evidence.projected,
     symmetryResidual: evidence.symmetryResidual,
     equivalentSpread: evidence.equivalentSpread,
@@ -207,14 +226,14 @@ function inWords(field: string): string {
   return bare.replaceAll(/[A-Z]/g, (letter) => ` ${letter.toLowerCase()}`);
 }
 
-/** One note a reason, naming every field it holds for. */
+/** One note a reason, naming every field it holds for; a spread that needs a second tensor is no news at every site. */
 function reportUndefined(
   site: Site,
   name: string,
   reasons: Readonly<Record<string, string>>,
   log: ProblemLog,
 ): void {
-  const all = Object.entries(reasons);
+  const all = Object.entries(reasons).filter(([field]) => field !== 'equivalentSpread');
   if (all.length === 0) return;
   const fieldsOf = new Map<string, string[]>();
   for (const [field, reason] of all) {
@@ -262,7 +281,8 @@ function reportResidual(site: Site, quantity: Quantity, evidence: Evidence, log:
 /**
  * Shielding, shift and EFG of one site from all its tensors: the site's own (or the first copy turned back), its
  * projection, the spread among the equivalents, every convention. A shift tensor of the file goes before one made from the
- * shielding by the reference of the isotope. Raises `undefined-value` for every null, `symmetry-broken`, `efg-trace`.
+ * shielding by the reference of the isotope. Raises `undefined-value` for every null but
+ * a missing spread, `symmetry-broken`, `efg-trace`.
  */
 export function siteTensors(input: SiteTensorInput, log: ProblemLog): SiteTensorDossiers {
   const { site, stabiliser, attachments, settings } = input;
@@ -278,14 +298,14 @@ export function siteTensors(input: SiteTensorInput, log: ProblemLog): SiteTensor
   const ofEfg = evidenceOf('efg');
   const use = ofEfg && !ofShielding && !ofShift ? 'efg' : 'shielding';
   const isotope = isotopeOf(site.element, settings, use);
-  const shielding = ofShielding && shieldingDossier(ofShielding);
+  const shielding = ofShielding && shieldingDossier(ofShielding, input.multiplicity);
   const reference = isotope === null ? undefined : settings.references[isotope];
   const referenced =
     ofShielding && reference
       ? describeReferencedShift(ofShielding.tensor, reference, ofShielding.noise)
       : null;
   const shift = ofShift ? describeShift(ofShift.tensor, undefined, ofShift.noise) : referenced;
-  const efg = ofEfg && efgDossier(ofEfg, isotopeOf(site.element, settings, 'efg'), settings);
+  const efg = ofEfg && efgDossier(ofEfg, isotopeOf(site.element, settings, 'efg'), input);
   if (shielding) reportUndefined(site, 'shielding', shielding.undefinedBecause, log);
   if (shift) reportUndefined(site, 'shift', shift.undefinedBecause, log);
   if (efg) {

@@ -46,11 +46,7 @@ export function printedValue(part: object, entry: ConventionEntry, isotope: stri
 export function undefinedReason(site: SiteDossier, entry: ConventionEntry): string | undefined {
   const part = site[entry.quantity];
   if (!part || typeof entryValue(part, entry) === 'number') return undefined;
-  const reason = part.undefinedBecause[entry.field];
-  if (reason !== undefined || entry.field !== 'equivalentSpread') return reason;
-  return site.multiplicity === 1
-    ? 'the atom has no equivalents'
-    : 'only one of the equivalent atoms has a tensor';
+  return part.undefinedBecause[entry.field];
 }
 
 /** The isotope a coupling is of, where it is another one than the site's nuclide: raised, such as `¹⁴N`. */

@@ -63,7 +63,7 @@ const shielding: ShieldingDossier = {
   symmetryResidual: 0.0004,
   equivalentSpread: null,
   source: { file: 'invented.xyz', line: 3 },
-  undefinedBecause: {},
+  undefinedBecause: { equivalentSpread: 'only one of the equivalent atoms has a tensor' },
 };
 
 const shift: ShiftDossier = {
@@ -98,6 +98,7 @@ const isotropicShielding: ShieldingDossier = {
   undefinedBecause: {
     skew: 'the tensor is isotropic: its span is zero',
     axes: 'all principal values are equal',
+    equivalentSpread: 'the atom has no equivalents',
   },
 };
 
