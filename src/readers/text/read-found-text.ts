@@ -1,6 +1,8 @@
 import type { Mat3 } from '#src/base/matrix3.ts';
+import { ProblemLog } from '#src/base/problem.ts';
 import type { ReportProgress } from '#src/base/progress.ts';
 import type { SourceText } from '#src/bytes/source-text.ts';
+import { componentBeyondLimit, componentLimitText, componentText } from '#src/tensor/component-limit.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
 import { efgTensorToAtomicUnits, efgUnitLabel } from '#src/tensor/units.ts';
 import type { Reading } from '../reading.ts';
@@ -28,7 +30,8 @@ export function readFoundText(
  */
 export function readingOf(asFound: FoundText, choices: readonly TextChoice[] = []): Reading | null {
   const found = withChoices(asFound, choices);
-  const usable = found.groups.filter(isUsable);
+  const log = new ProblemLog();
+  const usable = found.groups.filter(isUsable).map((group) => withinLimit(group, found.file, log));
   const isAsking = found.groups.some(({ role }) => role !== 'decoy');
   if (usable.length === 0 && found.structures.length === 0 && !isAsking) return null;
   const order = structureOrder(found, usable);
@@ -38,7 +41,7 @@ export function readingOf(asFound: FoundText, choices: readonly TextChoice[] = [
     structures: order.map((at) => foundCrystal(found.structures[at]!, found.file)),
     tensorSets: setsOf(found, usable, order),
     proposals: [],
-    problems: found.problems.filter(({ code }) => code !== 'find-none'),
+    problems: [...found.problems.filter(({ code }) => code !== 'find-none'), ...log.list()],
     found: { asFound, asChosen: found },
   };
 }
@@ -46,6 +49,24 @@ export function readingOf(asFound: FoundText, choices: readonly TextChoice[] = [
 /** Taken without asking: proposed, with quantity and unit known. */
 function isUsable({ proposed, quantity, unit }: FoundGroup): boolean {
   return proposed && quantity !== 'unknown' && unit !== 'unknown';
+}
+
+/** The group without the tensors that no atom can have (`find-tensor-too-large`). */
+function withinLimit(group: FoundGroup, file: string, log: ProblemLog): FoundGroup {
+  const { quantity, unit } = group;
+  if (quantity === 'unknown') return group;
+  const entries = group.entries.filter(({ isComplete, tensor, label, line }) => {
+    const beyond = isComplete ? componentBeyondLimit(inCanonicalUnit(tensor, unit), quantity) : null;
+    if (beyond === null) return true;
+    const message = `The ${quantity} tensor of ${label ?? 'an atom'} was left out: a component is larger than any tensor of this quantity has.`;
+    log.add('error', 'find-tensor-too-large', message, {
+      place: { file, line },
+      got: componentText(beyond, quantity),
+      allowed: componentLimitText(quantity),
+    });
+    return false;
+  });
+  return entries.length === group.entries.length ? group : { ...group, entries };
 }
 
 /** Structures that tensors belong to come first, the last one ahead; else the last of the text. */

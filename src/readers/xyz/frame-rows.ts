@@ -4,7 +4,8 @@ import { scaleMatrix } from '#src/base/matrix3.ts';
 import type { Place, ProblemLog } from '#src/base/problem.ts';
 import { lineEnd } from '#src/bytes/source-from-text.ts';
 import type { SourceText } from '#src/bytes/source-text.ts';
-import type { ColumnPlan } from './column-plan.ts';
+import { componentBeyondLimit, componentText } from '#src/tensor/component-limit.ts';
+import type { ColumnPlan, TensorColumn } from './column-plan.ts';
 import type { Frame } from './frames.ts';
 import { isBlank } from './frames.ts';
 import type { Column } from './properties.ts';
@@ -64,7 +65,7 @@ const candidateSample = 2000;
 /**
  * Reads the rows of one frame after a plan. A row without usable coordinates is left out (`xyz-bad-coordinate`); of a
  * row shorter than the plan what stands there is kept (`xyz-short-row`), a longer one keeps its first fields
- * (`xyz-long-row`); of a tensor with a missing or unreadable component only that atom's is left out, and counted in `gaps`.
+ * (`xyz-long-row`); of a tensor with a missing, unreadable or impossibly large component only that atom's is left out, and counted in `gaps`.
  */
 export function readRows(context: RowContext, frame: Frame, plan: ColumnPlan, plain: boolean): FrameRows {
   const { source, fields } = context;
@@ -82,17 +83,9 @@ export function readRows(context: RowContext, frame: Frame, plan: ColumnPlan, pl
     const cartesian = plan.position === null ? null : readPosition(context, line, plan.position);
     if (plan.position !== null && cartesian === null) continue;
     atoms.push(readAtom(context, line, plan, cartesian));
-    plan.tensors.forEach(({ column, toCanonical }, index) => {
-      const tensor = nineNumbers(context, column);
-      if (tensor === null) {
-        noteGap(context, line, column, gaps[index]!);
-        return;
-      }
-      tensors[index]?.push({
-        atom: atoms.length - 1,
-        tensor: toCanonical === 1 ? tensor : scaleMatrix(toCanonical, tensor),
-        place: placeOfField(context, line, column.first),
-      });
+    plan.tensors.forEach((column, index) => {
+      const read = readTensor(context, line, column, gaps[index]!);
+      if (read !== null) tensors[index]?.push({ atom: atoms.length - 1, ...read });
     });
     plan.candidates.forEach((column, index) => {
       if (atoms.length > candidateSample) return;
@@ -187,6 +180,26 @@ function speciesOf(context: RowContext, text: string, line: number, field: numbe
     context.log.add('warning', 'xyz-unknown-element', message, { place, got: text.slice(0, 60), allowed });
   }
   return read;
+}
+
+/** The tensor of a row in the canonical unit; null where it is left out, which is noted in `gaps`. */
+function readTensor(
+  context: RowContext,
+  line: number,
+  { column, quantity, toCanonical }: TensorColumn,
+  gaps: TensorGaps,
+): Omit<RowTensor, 'atom'> | null {
+  const given = nineNumbers(context, column);
+  if (given === null) {
+    noteGap(context, line, column, gaps);
+    return null;
+  }
+  const tensor = toCanonical === 1 ? given : scaleMatrix(toCanonical, given);
+  const place = placeOfField(context, line, column.first);
+  const beyond = componentBeyondLimit(tensor, quantity);
+  if (beyond === null) return { tensor, place };
+  addGap(gaps, 'beyond', place, componentText(beyond, quantity));
+  return null;
 }
 
 /** Why a row has no tensor in this column. A short row has been reported; only what stands there and is no number needs words. */

@@ -154,9 +154,7 @@ function readOneFrame(
     reportNoAtoms(source, frame, log);
     return;
   }
-  plan.tensors.forEach(({ column }, index) =>
-    reportGaps(column.name, rows.gaps[index]!, rows.atoms.length, log),
-  );
+  plan.tensors.forEach((column, index) => reportGaps(column, rows.gaps[index]!, rows.atoms.length, log));
   const labels = labelsOf(rows.atoms);
   const made = plan.position !== null;
   const structureIndex = made ? collected.structures.length : null;

@@ -1,8 +1,10 @@
 import { countOf, wordFor } from '#src/base/count-of.ts';
 import type { Place, ProblemLog } from '#src/base/problem.ts';
+import { componentLimitText } from '#src/tensor/component-limit.ts';
+import type { TensorColumn } from './column-plan.ts';
 
-/** Why an atom got no tensor from a column: not given at all, a component not computed, a component that is no number. */
-export type GapKind = 'absent' | 'missing' | 'unreadable';
+/** Why an atom got no tensor from a column: not given at all, a component not computed, one that is no number or beyond the limit. */
+export type GapKind = 'absent' | 'missing' | 'unreadable' | 'beyond';
 
 interface Gap {
   count: number;
@@ -28,9 +30,14 @@ export function addGap(gaps: TensorGaps, kind: GapKind, place: Place, got: strin
 /**
  * One problem a reason: how many of the atoms have no tensor of this column, and in which lines they stand. The others keep
  * theirs. Raises `xyz-tensor-absent` (all nine components marked as missing), `xyz-missing-tensor` (some marked so),
- * `xyz-bad-tensor` (text that is no number).
+ * `xyz-bad-tensor` (text that is no number), `xyz-tensor-too-large` (a component beyond `largestComponent`).
  */
-export function reportGaps(name: string, gaps: TensorGaps, atoms: number, log: ProblemLog): void {
+export function reportGaps(
+  { column: { name }, quantity }: TensorColumn,
+  gaps: TensorGaps,
+  atoms: number,
+  log: ProblemLog,
+): void {
   for (const [kind, gap] of gaps) {
     const { severity, code, why } = kinds[kind];
     const lines = `${wordFor(gap.count, 'line')} ${gap.lines.join(', ')}${gap.count > gap.lines.length ? ', …' : ''}`;
@@ -39,7 +46,9 @@ export function reportGaps(name: string, gaps: TensorGaps, atoms: number, log: P
     log.add(severity, code, message, {
       place: gap.place,
       got: gap.got.slice(0, 60),
-      ...(kind !== 'absent' && { allowed: 'nine numbers, row by row' }),
+      ...(kind !== 'absent' && {
+        allowed: kind === 'beyond' ? componentLimitText(quantity) : 'nine numbers, row by row',
+      }),
     });
   }
 }
@@ -52,4 +61,9 @@ const kinds = {
   },
   missing: { severity: 'warning', code: 'xyz-missing-tensor', why: 'a component is missing' },
   unreadable: { severity: 'error', code: 'xyz-bad-tensor', why: 'a component is not a number' },
+  beyond: {
+    severity: 'error',
+    code: 'xyz-tensor-too-large',
+    why: 'a component is larger than any tensor of this quantity has',
+  },
 } as const;

@@ -4,7 +4,9 @@ import { asMat3 } from '#src/base/matrix3.ts';
 import type { Place, ProblemLog } from '#src/base/problem.ts';
 import type { Lattice } from '#src/crystal/lattice.ts';
 import type { Site } from '#src/crystal/crystal.ts';
+import { componentBeyondLimit, componentLimitText, componentText } from '#src/tensor/component-limit.ts';
 import type { Quantity, TensorEntry, TensorSet } from '#src/tensor/tensor-set.ts';
+import { unitOf } from '#src/tensor/tensor-set.ts';
 import { efgTensorToAtomicUnits, efgUnitOf } from '#src/tensor/units.ts';
 import type { CifValue } from '../cif-document.ts';
 import type { BlockView } from './block-view.ts';
@@ -31,7 +33,7 @@ export interface TensorGround {
 /**
  * Tensor sets of a block, one a quantity, from the loop `_ellipsite_tensor_…`: shielding and shift in ppm, EFG in
  * `a.u.` (also without a unit), `1e21V/m2` or `V/A2`, converted to atomic units; frame = that of the Cartesian transform of the
- * file, else the default frame (`cif-tensor-frame-assumed`). Rows with a faulty quantity, unit or component are left out,
+ * file, else the default frame (`cif-tensor-frame-assumed`). Rows with a faulty quantity, unit or component, also one beyond `largestComponent`, are left out,
  * and only these (`cif-bad-tensor`, one for all faulty components); a label that no site has, or several have, or that came before is reported (`cif-tensor-label`).
  */
 export function readTensorSets(view: BlockView, ground: TensorGround, log: ProblemLog): TensorSet[] {
@@ -126,21 +128,23 @@ function readRow(
     broken.push({ label, got, place });
     return null;
   }
-  const given = asMat3(numbers as number[]);
-  if (quantity !== 'efg') {
-    if (unitText !== null && !/^(ppm|1e-6)$/i.test(unitText))
-      return bad(`the unit is “${unitText}”`, unitText, 'ppm');
-    return { label, quantity, unitGiven: unitText ?? 'ppm', tensor: given, place };
+  const unitGiven = unitText ?? unitOf[quantity];
+  const tensor = inCanonicalUnit(asMat3(numbers as number[]), quantity, unitGiven);
+  if (!tensor)
+    return bad(`the unit is “${unitGiven}”`, unitGiven, quantity === 'efg' ? 'a.u., 1e21V/m2, V/A2' : 'ppm');
+  const beyond = componentBeyondLimit(tensor, quantity);
+  if (beyond !== null) {
+    const why = 'a component is larger than any tensor of this quantity has';
+    return bad(why, componentText(beyond, quantity), componentLimitText(quantity));
   }
-  const unit = efgUnitOf(unitText ?? 'a.u.');
-  if (!unit) return bad(`the unit is “${unitText}”`, unitText ?? '?', 'a.u., 1e21V/m2, V/A2');
-  return {
-    label,
-    quantity,
-    unitGiven: unitText ?? 'a.u.',
-    tensor: efgTensorToAtomicUnits(given, unit),
-    place,
-  };
+  return { label, quantity, unitGiven, tensor, place };
+}
+
+/** null where the unit is none of the quantity. */
+function inCanonicalUnit(given: Mat3, quantity: Quantity, unitGiven: string): Mat3 | null {
+  if (quantity !== 'efg') return /^(ppm|1e-6)$/i.test(unitGiven) ? given : null;
+  const unit = efgUnitOf(unitGiven);
+  return unit && efgTensorToAtomicUnits(given, unit);
 }
 
 const namedRows = 5;
