@@ -23,6 +23,8 @@ const keywords =
   /^(?:atom|atoms|ion|site|nucleus|nuc|nuclear|center|centre|position|at|species|label|id|element|kind|symbol|type)s?$|^(?:no|nr|n|index|number|num)$/i;
 const strongKeywords = /^(?:atom|ion|site|nucleus|center|centre)$/i;
 const gluedLabel = /^([A-Z][a-z]?|[a-z]{1,2})_?(\d{1,5})([A-Za-z'_]{0,3})$/;
+/** A variable that carries a label: `sigma_Al3`. */
+export const labelInName = /^[A-Za-z]{2,12}_([A-Z][a-z]?_?\d{1,5})$/;
 const countedSymbol = /^(\d{1,5})([A-Z][a-z]?)$/;
 const keywordGlued = /^(?:atom|ion|site|nucleus|center|centre)_?(\d{1,5})$/i;
 const ghosts = /^(?:bq|gh|ghost|xx|x|dummy)_?(\d*)$/i;
@@ -125,9 +127,16 @@ const elementKey = /^(?:element|symbol|species|type|elem|el|kind|atom_?type)$/i;
 const numberKey = /^(?:index|number|no|num|nr|n|id|atom|site|serial|atom_?(?:index|number|id|no))$/i;
 const labelKey = /^(?:label|name|id|atom|site|atom_?(?:label|name|id))$/i;
 
+const keyWithValue = /^\s*(?:-\s+)?([A-Za-z_]{1,20})\s*[:=]\s*([A-Za-z]{1,2}\d{0,5}|\d{1,6})\s*,?\s*$/;
+
+/** True for a line that is one key with its value. */
+export function mayBePair(text: string): boolean {
+  return keyWithValue.test(text);
+}
+
 /** The atom of attributes in markup: `element="Si" number="3"`, `"label": "Si3"`; null where the line has none. */
 function markedMention({ text, tokens }: TextLine): AtomMention | null {
-  const pair = /^\s*(?:-\s+)?([A-Za-z_]{1,20})\s*[:=]\s*([A-Za-z]{1,2}\d{0,5}|\d{1,6})\s*,?\s*$/.exec(text);
+  const pair = keyWithValue.exec(text);
   if (pair !== null) return ofPair(pair[1] ?? '', pair[2] ?? '', tokens.length);
   if (!/[A-Za-z]["']?\s*[=:]\s*["'\d]/.test(text) || !/["'<]/.test(text)) return null;
   let [label, element, index]: [string | null, string | null, number | null] = [null, null, null];
@@ -187,7 +196,13 @@ function mentionAt(
   if (text.length <= 2 && /^[=/*^²]$/.test(tokens[at + 1]?.text ?? '')) return null;
   if (componentOf(text) && !elementOf(text.replace(/\d+$/, ''))) return null;
   const numbered = keywordGlued.exec(text);
-  if (numbered) return { ...blank, index: Number(numbered[1]), end: at + 1, isSure: true };
+  if (numbered) {
+    const next = tokens[at + 2];
+    const isName = /^[.:_/]$/.test(tokens[at + 1]?.text ?? '') && next?.kind === 'word';
+    const element = isName ? symbolOf(next.text) : null;
+    const index = Number(numbered[1]);
+    return { ...blank, element, index, end: element === null ? at + 1 : at + 3, isSure: true };
+  }
   const ghost = ghosts.exec(text);
   if (ghost && (text.length > 1 || named) && isEarly) {
     const index = ghost[1]
@@ -210,6 +225,8 @@ function mentionAt(
 const blank: AtomMention = { label: null, element: null, index: null, isGhost: false, end: 0, isSure: false };
 
 function gluedName(text: string, at: number, words: number): AtomMention | null {
+  const named = labelInName.exec(text)?.[1];
+  if (named !== undefined) return gluedName(named, at, words);
   const parts = gluedLabel.exec(text);
   if (!parts || words > 10) return null;
   if (/^[a-z]/.test(text) && /^(?:a|b|c|v|s|p|d|f|k|n|h|i|u|w|y)\d/.test(text)) return null;
@@ -247,7 +264,8 @@ function beside(
   named: boolean,
   words: number,
 ): AtomMention | null {
-  const after = numberBeside(tokens, at + 1, 1);
+  const isCounted = /^(?:no|nr|number|num)$/i.test(tokens[at + 1]?.text ?? '');
+  const after = numberBeside(tokens, at + (isCounted ? 2 : 1), 1);
   const before = numberBeside(tokens, at - 1, -1);
   if (words > 8 && !named) return null;
   if (before && (at - 1 === before.at || named || !after)) {

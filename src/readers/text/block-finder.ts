@@ -14,6 +14,8 @@ interface BlockRow {
 
 /** Rows of one run that are kept: a list that is longer is no tensor unless its rows are marked. */
 const longestRun = 4;
+/** Lines between two rows of one block at most. */
+const widestGap = 5;
 
 /** Width of a block beside which others may stand: three, six or nine numbers on each of three lines. */
 function asBlockRow(row: DataRow): BlockRow | null {
@@ -34,6 +36,8 @@ export class BlockFinder {
   readonly #surroundings: (line: number) => Surroundings;
   #rows: BlockRow[] = [];
   #length = 0;
+  /** Lines since the last row. */
+  #gap: ('blank' | 'page')[] = [];
   #start: Surroundings | null = null;
   /** A row of three numbers right above the first of the run. */
   #head: { readonly row: BlockRow; readonly start: Surroundings } | null = null;
@@ -43,13 +47,23 @@ export class BlockFinder {
     this.#surroundings = surroundings;
   }
 
-  /** True where the line is a row that continues or begins a run. */
-  take(row: DataRow | null): boolean {
+  /**
+   * True where the line is a row that continues or begins a run. Between rows that are named by their axes a blank line may
+   * stand, and between any rows the head of a page.
+   */
+  take(row: DataRow | null, gap: 'blank' | 'page' | null = null): boolean {
+    const isOpen = this.#length === 1 || this.#length === 2;
+    if (gap !== null && isOpen && this.#gap.length < widestGap) {
+      this.#gap.push(gap);
+      return false;
+    }
     const next = row && asBlockRow(row);
     if (!next) {
       this.close();
       return false;
     }
+    if (this.#gap.length > 0 && !this.#bridges(next)) this.close();
+    this.#gap = [];
     if (this.#rows.length > 0 && this.#beginsAnew(next)) {
       const [only] = this.#rows;
       const head =
@@ -64,10 +78,18 @@ export class BlockFinder {
     return true;
   }
 
+  #bridges(next: BlockRow): boolean {
+    const last = this.#rows[this.#rows.length - 1];
+    if (last?.values.length !== next.values.length) return false;
+    if (last.row.axis !== null) return next.row.axis === last.row.axis + 1;
+    return this.#gap.includes('page') && next.row.words === 0 && next.row.lead === last.row.lead;
+  }
+
   /** A row that names an atom of its own, or the axis x again, or has another width, begins another block. */
   #beginsAnew(next: BlockRow): boolean {
     const last = this.#rows[this.#rows.length - 1]!;
     if (last.values.length !== next.values.length) return true;
+    if (namesColumns(last) && !next.row.isWhole) return true;
     const nextAxis = next.row.axis !== null && last.row.axis !== null && next.row.axis === last.row.axis + 1;
     if (this.#length >= 3 && last.row.lead !== next.row.lead && !nextAxis) return true;
     const [first] = this.#rows;
@@ -109,6 +131,7 @@ export class BlockFinder {
     if (above !== null && this.#length === 3) this.#emitPrincipal([above.row, ...all], above.start);
     this.#rows = [];
     this.#length = 0;
+    this.#gap = [];
     this.#start = null;
     if (length !== 3 || rows.length !== 3 || start === null || !areAlike(rows)) return;
     const atom = atomOf(rows) ?? start.atom;
@@ -142,6 +165,23 @@ function isHead(rows: readonly BlockRow[]): boolean {
   return axes.every((axis, at) => axis === at) || rest.every(({ row }) => row.lead === rest[0]!.row.lead);
 }
 
+/** `1 2 3` over the columns. */
+function namesColumns({ row: { isWhole, values, words } }: BlockRow): boolean {
+  const first = values[0]!;
+  return isWhole && words === 0 && first <= 1 && values.every((value, at) => value === first + at);
+}
+
+/** `sigma(Al3) = | … |` in the middle of three rows. */
+function isNamedInMiddle(rows: readonly BlockRow[]): boolean {
+  const [first, second, third] = rows as [BlockRow, BlockRow, BlockRow];
+  return (
+    first.row.words === 0 &&
+    third.row.words === 0 &&
+    second.row.atom !== null &&
+    rows.every(({ index, row }) => index === null && !row.isWhole)
+  );
+}
+
 function leadOf(rows: readonly BlockRow[]): string {
   return rows[1]!.row.words === 0 ? rows[0]!.row.lead : rows[1]!.row.lead;
 }
@@ -152,7 +192,10 @@ function areAlike(rows: readonly BlockRow[]): boolean {
   const axes = rows.map(({ row }) => row.axis);
   if (axes[1] !== null || axes[2] !== null)
     return axes[1] === 1 && axes[2] === 2 && (axes[0] === 0 || axes[0] === null);
+  if (isNamedInMiddle(rows)) return true;
   if (second.row.lead !== third.row.lead) return false;
+  // `Si x y z` three times is a list of atoms.
+  if (rows.every(({ row: { atom } }) => atom !== null && atom.index === null && !atom.isSure)) return false;
   const sameLead = first.row.lead === second.row.lead;
   const atoms = rows.map(({ row }) => row.atom);
   const distinct = new Set(atoms.filter((atom) => atom !== null).map((atom) => atomKey(atom)));

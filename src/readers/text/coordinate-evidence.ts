@@ -17,7 +17,7 @@ const coordinates =
 /** Names of the three axes: with a length unit beside them the numbers are positions, without one they may be anything. */
 const axes = /\bx\b.{0,24}\by\b.{0,24}\bz\b/i;
 const others =
-  /forc|gradient|shield|tensor|eigen|sigma|\bprincipal|shift|\bppm\b|veloc|displac|momen|magnet|spin|coupl|\bc_?q\b|polari[sz]|mulliken|hirshfeld|frequen|\bmodes?\b|hyperfine|\befg\b|\bv_?[xyz]{2}\b|\bborn\b|aniso|\beta\b|isotrop|axis|susceptib|stress|dipol|k-?points?|weight|\bMHz\b|reciprocal|\beV\b|charges? *tensor/i;
+  /forc|gradient|shield|tensor|eigen|sigma|\bprincipal|shift|\bppm\b|veloc|displac|momen|magnet|spin|coupl|\bc_?q\b|polari[sz]|mulliken|hirshfeld|populations?\b|\bvalence\b|\bradi(?:us|i)\b|\bs\s+p\s+d\b|orbital|frequen|\bmodes?\b|hyperfine|\befg\b|\bv_?[xyz]{2}\b|\bborn\b|aniso|\beta\b|isotrop|axis|susceptib|stress|dipol|k-?points?|weight|\bMHz\b|reciprocal|\beV\b|charges? *tensor/i;
 const fractional =
   /fract|crystallographic|\bcryst(?:al)?\b|\bdirect\b|\breduced\b|relative|x\s*\/\s*a\b|scaled coord|lattice coord|in units of (?:the )?(?:lattice|cell) vectors|\bu\s+v\s+w\b|internal coord/i;
 /** Two real numbers: the end of another table, whose words are its own. */

@@ -79,7 +79,7 @@ const decoys: readonly (readonly [DecoyKind, RegExp])[] = [
   ],
   [
     'lattice',
-    /lattice|unit[- ]cell|basis[- ]vec\w*|cell vec\w*|(?:crystal|primitive|translation|cell) (?:axes|vec\w*)|supercell|metric/i,
+    /lattice|unit[- ]cell|basis[- ]vec\w*|cell vec\w*|(?:crystal|primitive|translation|cell) (?:axes|vec\w*)|supercell|\bmetric\b/i,
   ],
   ['moment of inertia', /inertia|rotational const\w*/i],
   [
@@ -156,6 +156,8 @@ function unitIn(text: string): { unit: 'ppm' | EfgUnit; words: string } | null {
 }
 
 function roleIn(text: string, inField: boolean): RoleWord | null {
+  if (/\banti-?symm?etric\b|\bskew-?symmetric\b/i.test(text) && !/\+|symmetric and|full|total/i.test(text))
+    return { kind: 'contribution', word: 'antisymmetric' };
   if (raw.test(text)) return { kind: 'raw' };
   if (symmetrised.test(text)) return { kind: 'symmetrised' };
   if (total.test(text) && !/total[- ](?:energ|charge|force|number|cpu|time|spin)/i.test(text))

@@ -22,6 +22,8 @@ export interface WrittenLog {
   readonly expected: readonly WrittenTensor[];
   /** Other forms of the expected tensors that may come back in their place, such as the symmetrised one beside the raw. */
   readonly allowed: readonly WrittenTensor[];
+  /** How many structures stand in the text; the last is the system's. Without it: one where positions are Cartesian. */
+  readonly structures?: number;
 }
 
 export type LogLayout = (system: MadeSystem) => WrittenLog;
@@ -31,6 +33,7 @@ export class LogWriter {
   readonly #lines: string[] = [];
   readonly #expected: WrittenTensor[] = [];
   readonly #allowed: WrittenTensor[] = [];
+  #structures: number | undefined;
   readonly system: MadeSystem;
 
   constructor(system: MadeSystem) {
@@ -62,8 +65,15 @@ export class LogWriter {
     return this;
   }
 
+  /** Says that so many structures were written, the last of them the system's. */
+  printsStructure(count = 1): this {
+    this.#structures = count;
+    return this;
+  }
+
   written(newline = '\n'): WrittenLog {
-    return { text: this.#lines.join(newline), expected: this.#expected, allowed: this.#allowed };
+    const log = { text: this.#lines.join(newline), expected: this.#expected, allowed: this.#allowed };
+    return this.#structures === undefined ? log : { ...log, structures: this.#structures };
   }
 }
 
