@@ -104,6 +104,7 @@ function crystalJson(dossier: CrystalHead) {
     symmetry: {
       number: symmetry.number,
       hermannMauguin: symmetry.hermannMauguin,
+      ...(symmetry.named !== undefined && { named: symmetry.named }),
       hall: symmetry.hall,
       operations: symmetry.operations.length,
       source: symmetry.source,

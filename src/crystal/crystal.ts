@@ -57,8 +57,10 @@ export interface CrystalSymmetry {
   readonly operations: readonly SymmetryOperation[];
   /** International Tables number; null when it could not be told. */
   readonly number: number | null;
-  /** Symbol as the file names it, else as found. */
+  /** Symbol as the file names it, else as found; in a dossier always one of the operations. */
   readonly hermannMauguin: string | null;
+  /** The file's symbol where it names another group or setting than the operations are. */
+  readonly named?: string;
   readonly hall: string | null;
   readonly source: SymmetrySource;
   /** In words: which item of which line led to the operations. */

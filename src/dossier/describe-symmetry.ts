@@ -3,6 +3,8 @@ import { apply, identity3 } from '#src/base/matrix3.ts';
 import type { Mat3, VecFrac } from '#src/base/matrix3.ts';
 import type { Place, ProblemLog } from '#src/base/problem.ts';
 import type { CrystalSymmetry } from '#src/crystal/crystal.ts';
+import { operationSetKey } from '#src/crystal/group.ts';
+import { operationsFromHall } from '#src/crystal/hall-symbol.ts';
 import { identifySettingIn, settingFromHermannMauguin } from '#src/crystal/space-group.ts';
 import type { SpaceGroupSetting } from '#src/crystal/space-group.ts';
 import type { SymmetryTables } from '#src/crystal/symmetry-tables.ts';
@@ -24,20 +26,43 @@ function sameRotation(a: Mat3, b: Mat3): boolean {
   return a.every((value, k) => value === b[k]);
 }
 
-/**
- * The group in one line. Where the file's symbol names another group than its operations form, both stand there: the
- * operations count. `tabulated` is the setting of the operations, null outside the tables.
- */
-function heading(symmetry: CrystalSymmetry, tabulated: SpaceGroupSetting | null): string {
-  const { hermannMauguin, number, operations, stated } = symmetry;
+/** The group in one line. Where the file's symbol is another one than that of its operations, both stand there. */
+function heading({ hermannMauguin, named, number, operations, stated }: CrystalSymmetry): string {
   if (!stated) return 'no symmetry stated';
   const name = hermannMauguin ?? `group of ${countOf(operations.length, 'operation')}`;
-  if (number === null) return name;
-  const meant = hermannMauguin === null ? null : settingFromHermannMauguin(hermannMauguin);
-  if (tabulated && meant && meant.number !== null && meant.number !== number) {
-    return `${tabulated.hermannMauguinShort} (No. ${number}) by its operations, named ${name} in the file`;
-  }
-  return `${name} (No. ${number})`;
+  const numbered = number === null ? name : `${name} (No. ${number})`;
+  return named === undefined ? numbered : `${numbered} by its operations, named ${named} in the file`;
+}
+
+/** What the operations in use are: the tabulated setting, and number and symbol also where the axes are those of none. */
+interface InUse {
+  readonly setting: SpaceGroupSetting | null;
+  readonly number: number | null;
+  readonly hermannMauguin: string | null;
+}
+
+/** False where a symbol surely names another group, or other settings of it, than the operations are; true for what is not understood. */
+function mayName(symbol: string, { setting, number }: InUse): boolean {
+  const meant = settingFromHermannMauguin(symbol);
+  if (!meant) return true;
+  if (meant.number !== null && number !== null && meant.number !== number) return false;
+  const readings = [meant, ...meant.alternatives].map((reading) => reading.setting);
+  return !setting || readings.some((one) => one === null || one.hallNumber === setting.hallNumber);
+}
+
+/** Number, symbol and Hall symbol of the operations in use: names of the file stay where they are theirs. */
+function namedAsInUse(symmetry: CrystalSymmetry, inUse: InUse): CrystalSymmetry {
+  const { hermannMauguin: symbol, hall, operations, stated } = symmetry;
+  const isOthers = stated && symbol !== null && inUse.hermannMauguin !== null && !mayName(symbol, inUse);
+  const ofHall = stated && hall !== null ? operationsFromHall(hall) : null;
+  const isHallOthers = ofHall !== null && operationSetKey(ofHall) !== operationSetKey(operations);
+  return {
+    ...symmetry,
+    number: inUse.number,
+    hermannMauguin: isOthers ? inUse.hermannMauguin : (symbol ?? inUse.hermannMauguin),
+    ...(isOthers && { named: symbol }),
+    hall: (isHallOthers ? null : hall) ?? inUse.setting?.hall ?? null,
+  };
 }
 
 /** Says once, here or when the file was read, that the axes are those of no tabulated setting. */
@@ -61,7 +86,7 @@ function reportUntabulated(
 }
 
 /**
- * Names the group of the operations in use (number, Hall symbol where tabulated) and gives Wyckoff letters and oriented
+ * Names the group of the operations in use (number, Hall symbol where tabulated) also where the file names another one, and gives Wyckoff letters and oriented
  * site-symmetry symbols for that very group. Raises `wyckoff-unknown`, `setting-not-tabulated`.
  */
 export function describeSymmetry(
@@ -100,15 +125,14 @@ export function describeSymmetry(
     );
   }
   if (told && !setting && !smallCell && symmetry.hall === null) reportUntabulated(told, crystal.place, log);
-  const named: CrystalSymmetry = {
-    ...symmetry,
+  const named = namedAsInUse(symmetry, {
+    setting,
     number: setting?.number ?? told?.number ?? symmetry.number,
-    hermannMauguin: symmetry.hermannMauguin ?? setting?.hermannMauguinShort ?? told?.hermannMauguin ?? null,
-    hall: symmetry.hall ?? setting?.hall ?? null,
-  };
+    hermannMauguin: setting?.hermannMauguinShort ?? told?.hermannMauguin ?? null,
+  });
   return {
     symmetry: named,
-    spaceGroup: heading(named, setting),
+    spaceGroup: heading(named),
     wyckoff: told?.wyckoff ?? found?.wyckoff ?? unknown.wyckoff,
     siteSymmetry: told?.siteSymmetry ?? found?.siteSymmetry ?? unknown.siteSymmetry,
   };

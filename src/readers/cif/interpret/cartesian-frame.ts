@@ -12,6 +12,7 @@ import {
 } from '#src/base/matrix3.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import { scale, subtract } from '#src/base/vector3.ts';
+import { isLeftHanded } from '#src/crystal/handedness.ts';
 import type { CellConstants, Lattice } from '#src/crystal/lattice.ts';
 import { cellFromRows, latticeFromCell, latticeFromRows, rowsProblem } from '#src/crystal/lattice.ts';
 import type { CifValue } from '../cif-document.ts';
@@ -74,6 +75,7 @@ export function readFrame(view: BlockView, cell: CellConstants, log: ProblemLog)
     const misfit = rowsProblem(rows) ?? misfitOf(cellFromRows(rows), cell);
     if (misfit === null) {
       const lattice = { ...latticeFromRows(rows, `as given by ${cartesian.name}`), cell };
+      reportHandedness(view, lattice, cartesian.name, log);
       return given(lattice, readVector(view, spellings.cartesianShift));
     }
     reportMisfit(view, cartesian.name, misfit, log);
@@ -82,12 +84,20 @@ export function readFrame(view: BlockView, cell: CellConstants, log: ProblemLog)
   if (fractional) {
     const found = frameOfFractional(fractional, standard, cell);
     if (typeof found !== 'string') {
+      reportHandedness(view, found, fractional.name, log);
       const shift = readVector(view, spellings.fractionalShift);
       return given(found, scale(-1, apply(found.toCartesian, shift)));
     }
     if (!isPlaceholder(fractional.matrix)) reportMisfit(view, fractional.name, found, log);
   }
   return { lattice: standard, toFractional: (p) => apply(standard.toFractional, p), source: 'default' };
+}
+
+/** The dictionary asks for right-handed axes (`cif-left-handed`). */
+function reportHandedness(view: BlockView, lattice: Lattice, name: string, log: ProblemLog): void {
+  if (!isLeftHanded(lattice)) return;
+  const message = `The cell vectors of ${name} are left-handed; they were kept as they are, and the space group is named as on the right-handed −a, −b, −c.`;
+  log.add('note', 'cif-left-handed', message, { place: placeOfBlock(view) });
 }
 
 function given(lattice: Lattice, shift: Vec3): CartesianFrame {

@@ -62,7 +62,7 @@ export function interpretBlock(
   if (!cell || !frame) return molecule(view, built, formula, structureIndex, log);
   checkVolume(view, frame.lattice.volume, log);
   const names = readGroupNames(view, cell, lists.length > 0 ? 'note' : 'warning', log);
-  const choice = decideSymmetry(view, lists, names, cell, log);
+  const choice = decideSymmetry(view, lists, names, frame.lattice, log);
   const settledOrigin = chooseOrigin(view, choice, { sites, rows }, frame.lattice, formula, log);
   const symmetry = withinCellLimit(view, settledOrigin, sites.length, log);
   const counts = countAllImages(sites, symmetry.operations, frame.lattice, progress);

@@ -2,10 +2,12 @@ import { countOf, wordFor } from '#src/base/count-of.ts';
 import type { ProblemLog } from '#src/base/problem.ts';
 import type { CrystalSymmetry } from '#src/crystal/crystal.ts';
 import { isClosed, operationSetKey, uniqueOperations } from '#src/crystal/group.ts';
-import type { CellConstants } from '#src/crystal/lattice.ts';
+import { isLeftHanded, operationsOnInvertedAxes } from '#src/crystal/handedness.ts';
+import type { CellConstants, Lattice } from '#src/crystal/lattice.ts';
 import { metricMisfit } from '#src/crystal/metric-fit.ts';
 import type { SymbolReading } from '#src/crystal/space-group.ts';
-import { identifySetting } from '#src/crystal/space-group.ts';
+import { identifySetting, identifySettingIn } from '#src/crystal/space-group.ts';
+import type { SymmetryOperation } from '#src/crystal/symmetry-operation.ts';
 import { formatOperation, identityOperation } from '#src/crystal/symmetry-operation.ts';
 import type { BlockView } from './block-view.ts';
 import { placeOfBlock, placeOfValue } from './block-view.ts';
@@ -38,14 +40,15 @@ export function decideSymmetry(
   view: BlockView,
   lists: readonly ListedOperations[],
   names: GroupNames,
-  cell: CellConstants | null,
+  lattice: Lattice,
   log: ProblemLog,
 ): SymmetryChoice {
+  const { cell } = lattice;
   const choice =
     lists.length > 0
-      ? { symmetry: fromLists(view, lists, names, log), alternatives: [] }
+      ? { symmetry: fromLists(view, lists, names, lattice, log), alternatives: [] }
       : (fromNames(names, cell, view, log) ?? { symmetry: none(view, names, log), alternatives: [] });
-  if (cell) reportMetric(view, choice.symmetry, cell, log);
+  reportMetric(view, choice.symmetry, cell, log);
   return choice;
 }
 
@@ -53,13 +56,14 @@ function fromLists(
   view: BlockView,
   lists: readonly ListedOperations[],
   names: GroupNames,
+  lattice: Lattice,
   log: ProblemLog,
 ): CrystalSymmetry {
   const chosen = chooseList(lists, names, log);
   const operations = uniqueOperations(chosen.operations);
   reportFlaws(chosen, log);
-  const identified = identifySetting(operations);
-  const named = reportAgreement(view, operations, identified, names, log);
+  const identified = identifySettingIn(operations, lattice);
+  const named = reportNames(view, operations, names, lattice, log);
   return {
     operations,
     number: identified?.number ?? named,
@@ -69,6 +73,21 @@ function fromLists(
     reason: `${countOf(operations.length, 'operation')} listed in ${chosen.name} from line ${chosen.place.line}`,
     stated: true,
   };
+}
+
+/** Names are those of right-handed axes: the triplets of left-handed ones are compared as they are on −a, −b, −c, or as they stand. */
+function reportNames(
+  view: BlockView,
+  operations: readonly SymmetryOperation[],
+  names: GroupNames,
+  lattice: Lattice,
+  log: ProblemLog,
+): number | null {
+  const onRightHanded =
+    isLeftHanded(lattice) && identifySettingIn(operations, lattice) === null
+      ? operationsOnInvertedAxes(operations)
+      : operations;
+  return reportAgreement(view, onRightHanded, identifySetting(onRightHanded), names, log);
 }
 
 /** The first list, unless a later one is what the named group says; two lists that differ are reported. */
