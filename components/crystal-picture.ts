@@ -1,7 +1,6 @@
 import { chooseRenderer } from '#src/render/choose-renderer.ts';
 import type { WebGLProbe } from '#src/render/probe-webgl.ts';
 import type { CrystalRenderer, DrawnBy } from '#src/render/renderer.ts';
-import { darkTheme, lightTheme } from '#src/render/theme.ts';
 import type { Vec3 } from '#src/store/dossier-types.ts';
 import type { Camera, Viewport } from '#src/scene/camera.ts';
 import { pan, turnAbout, zoom } from '#src/scene/camera.ts';
@@ -34,6 +33,7 @@ import type { PictureEvents } from './picture-events.ts';
 import type { PictureCommand } from './picture-keys.ts';
 import { isSameAtom } from './picture-marks.ts';
 import { PictureMotion } from './picture-motion.ts';
+import { pictureTheme } from './picture-theme.ts';
 
 /** What stands over the canvas for the present camera. */
 export interface PictureOverlay {
@@ -46,8 +46,6 @@ export interface PictureOverlay {
 
 /** Rings drawn at most round the atoms of a hovered site. */
 const ringsShown = 400;
-/** Width of outlines where they are asked for, CSS pixels. */
-const outlinePx = 1.2;
 /** Labels beyond which they wait until the picture rests. */
 const labelsWhileMoving = 2000;
 const restMs = 160;
@@ -79,6 +77,7 @@ export class CrystalPicture {
     events: PictureEvents,
   ): Promise<CrystalPicture> {
     const renderer = await chooseRenderer(canvas, probe, {
+      onFrame: (scene) => events.drawn(scene),
       onContextLost: () => events.lost(true),
       onContextRestored: () => events.lost(false),
       onStandIn: () => events.moved(),
@@ -95,7 +94,8 @@ export class CrystalPicture {
     this.#canvas = canvas;
     this.#events = events;
     this.#renderer = renderer;
-    const at = ({ xPx, yPx }: PicturePoint): PickEntry | null => renderer.pick(xPx, yPx)?.entry ?? null;
+    const at = ({ xPx, yPx }: PicturePoint): PickEntry | null =>
+      this.#scene && (renderer.pick(xPx, yPx)?.entry ?? null);
     this.#detach = attachControls(surface, {
       camera: () => this.#motion.goal ?? this.#camera,
       viewport: () => this.#viewport,
@@ -138,6 +138,12 @@ export class CrystalPicture {
     const camera = this.#fitted(this.#camera);
     this.#motion.jump(camera);
     this.#events.fitted(camera);
+  }
+
+  /** Shows nothing until the next scene. */
+  forget(): void {
+    this.#scene = this.#camera = null;
+    this.#labels = [];
   }
 
   /** Takes a camera from outside, gliding there; null is the first view. */
@@ -336,13 +342,6 @@ export class CrystalPicture {
   }
 
   #dress(): void {
-    const theme = this.#theme === 'dark' ? darkTheme : lightTheme;
-    const { depthCue, circles, outlines } = this.#look;
-    this.#renderer.setTheme({
-      ...theme,
-      depthCue: depthCue ? theme.depthCue : 0,
-      circleWidthPx: circles ? theme.circleWidthPx : 0,
-      outlineWidthPx: outlines ? outlinePx : 0,
-    });
+    this.#renderer.setTheme(pictureTheme(this.#theme, this.#look));
   }
 }

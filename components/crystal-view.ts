@@ -4,6 +4,7 @@ import type { WebGLProbe } from '#src/render/probe-webgl.ts';
 import { probeWebGL } from '#src/render/probe-webgl.ts';
 import type { PickEntry } from '#src/scene/scene.ts';
 import type { WorkbenchState } from '#src/store/state.ts';
+import { AwaitedPicture } from './awaited-picture.ts';
 import { colourBar, colourBarStyles } from './colour-bar.ts';
 import type { CrystalPicture } from './crystal-picture.ts';
 import { completeWithout, draws, nothingDraws } from './drawing-words.ts';
@@ -30,6 +31,7 @@ import {
 } from './picture-overlay.ts';
 import type { PicturePanel, ToolsHost } from './picture-tools.ts';
 import { loadPanel, openPanel, pictureTools } from './picture-tools.ts';
+import { tellWhenShown } from './shown-event.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
 import './spoken-line.ts';
@@ -77,7 +79,7 @@ export class CrystalView extends StoreElement {
   readonly #board = new MeasurementBoard();
   #picture: CrystalPicture | null = null;
   #resize: ResizeObserver | null = null;
-  #crystalKey: string | null = null;
+  readonly #awaited = new AwaitedPicture();
   /** What the live region says: atoms stepped to, measurements. */
   #spoken: () => string = () => '';
 
@@ -91,6 +93,13 @@ export class CrystalView extends StoreElement {
   /** What is on screen, for a picture to take away. */
   get picture(): CrystalPicture | null {
     return this.#picture;
+  }
+
+  /** Whether the picture is that of the crystal on screen, or none is to come. */
+  get isCurrent(): boolean {
+    const [state, picture] = [this.store?.state, this.#picture];
+    const isDrawing = state?.scene && picture && picture.viewport.widthPx > 0 && this.fault === null;
+    return !isDrawing || this.#awaited.shows(state);
   }
 
   override disconnectedCallback(): void {
@@ -121,7 +130,7 @@ export class CrystalView extends StoreElement {
       <div class="line">${heading} ${pictureTools(host)}</div>
       <div class="middle">
         <div
-          class="stage ${this.#marker.kind ? 'picking' : ''}"
+          class="stage ${this.#marker.kind ? 'picking' : ''} ${store && this.#awaited.shows(store.state) ? '' : 'awaited'}"
           role="application"
           tabindex="0"
           aria-label="Picture of the crystal"
@@ -130,7 +139,7 @@ export class CrystalView extends StoreElement {
           @blur=${() => this.#point(null, null)}
         >
           <canvas></canvas>
-          ${this.#overlay()} ${store ? overPicture(store.state, this.isLost) : nothing}
+          ${this.#overlay()} ${store ? overPicture(store.state, this.isLost, scene !== null) : nothing}
         </div>
         ${openPanel(host)}
       </div>
@@ -179,6 +188,11 @@ export class CrystalView extends StoreElement {
 
   #events(): PictureEvents {
     return {
+      drawn: (scene) => {
+        if (scene !== this.#picture?.scene || !this.#awaited.came()) return;
+        this.requestUpdate();
+        tellWhenShown(this);
+      },
       moved: () => this.requestUpdate(),
       steered: (camera, words) => {
         this.pointed = null;
@@ -194,13 +208,13 @@ export class CrystalView extends StoreElement {
 
   #draw(picture: CrystalPicture, state: WorkbenchState, before: WorkbenchState | null): void {
     const { derived, decisions, scene, selection, picked, hover, camera, look } = state;
+    const isOther = this.#awaited.turnTo(state);
+    if (isOther) this.pointed = null;
+    if (isOther) this.#marker.end();
+    if (isOther && !scene) picture.forget();
     if (!derived || !scene) return;
-    const key = `${derived.chosen?.sourceId} ${derived.chosen?.index} ${decisions?.settings.symmetry}`;
-    const isOther = key !== this.#crystalKey;
     if (before && state.measurements.length > before.measurements.length)
       this.#spoken = () => newestWords(this.#board, this.store);
-    this.#crystalKey = key;
-    if (isOther) this.#marker.end();
     if (before && decisions?.sources[0] !== before.decisions?.sources[0]) this.open = null;
     if (look !== before?.look) picture.setLook(look);
     picture.show(scene, isOther);
@@ -284,7 +298,7 @@ export class CrystalView extends StoreElement {
         this.#setPivots(!this.pivots);
         return true;
       case 'clear':
-        return this.#clear();
+        return this.#marker.clear();
       case 'look':
         return picture.lookAlongText(command.along);
       case 'step': {
@@ -299,16 +313,6 @@ export class CrystalView extends StoreElement {
       default:
         return picture.run(command, this.#selected());
     }
-  }
-
-  /** Ends what is under way: measuring first, then the selection. */
-  #clear(): boolean {
-    const { store } = this;
-    if (!store || (this.#marker.kind === null && this.#marker.marks.length === 0 && !store.state.selection))
-      return false;
-    if (this.#marker.kind === null) store.select(null);
-    this.#marker.clear();
-    return true;
   }
 
   #show(open: PicturePanel | null): void {

@@ -1,9 +1,11 @@
 import type { Camera } from '#src/scene/camera.ts';
-import type { PickEntry } from '#src/scene/scene.ts';
+import type { PickEntry, Scene } from '#src/scene/scene.ts';
 import type { PicturePoint } from './picture-controls.ts';
 
 /** What the picture tells its element. */
 export interface PictureEvents {
+  /** A frame of a scene is on the canvas. */
+  readonly drawn: (scene: Scene) => void;
   /** Something over the canvas moved or changed. */
   readonly moved: () => void;
   /** The user moved the camera; the words name what was done, for the list of steps. */

@@ -64,12 +64,15 @@ export class PictureMarker {
     this.#kind = null;
   }
 
-  /** Ends measuring, and with it what was picked for it. */
-  clear(): void {
+  /** Ends what is under way: measuring first, with what was picked for it, then the selection. False where nothing is. */
+  clear(): boolean {
     const { store } = this.#host;
-    if (this.#kind !== null && store) this.#forget(store);
+    if (!store || (this.#kind === null && this.marks.length === 0 && !store.state.selection)) return false;
+    if (this.#kind === null) store.select(null);
+    else this.#forget(store);
     this.#kind = null;
     this.#changed();
+    return true;
   }
 
   /** The picked atoms, or the one atom that is selected elsewhere, at its own place. */

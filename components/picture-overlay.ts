@@ -158,10 +158,11 @@ export function pointedWords(entry: PickEntry, { scene }: CrystalPicture, store:
 export function overPicture(
   { sceneFault, isDrawing }: WorkbenchState,
   isLost: boolean,
+  hasPicture: boolean,
 ): TemplateResult | typeof nothing {
   if (sceneFault)
     return html`<p class="said" role="alert">
-      The picture could not be made: ${sceneFault}. What is shown is the one before.
+      The picture could not be made: ${sceneFault}. ${hasPicture ? 'What is shown is the one before.' : ''}
     </p>`;
   if (isDrawing) return html`<p class="said" role="status">The new picture is being made.</p>`;
   return isLost

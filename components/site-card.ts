@@ -45,11 +45,12 @@ export class SiteCard extends StoreElement {
     this.sourceLines = [];
   }
 
-  protected override stateChanged(state: WorkbenchState): void {
+  protected override stateChanged(state: WorkbenchState, before: WorkbenchState | null): void {
     const { selection } = state;
     const site = selection && (this.store?.site(selection.siteIndex) ?? null);
-    // the card of before stays until the selected site has come
-    if (site === this.#site || (selection && !site)) return;
+    // the card of before stays until the selected site has come, but for one of another crystal
+    const isStale = state.derived !== before?.derived;
+    if (site === this.#site || (selection && !site && !isStale)) return;
     this.#site = site;
     this.sourceLines = [];
     if (site) void this.#fetchLines(site);

@@ -1,3 +1,4 @@
+import type { Selection } from '#src/store/state.ts';
 import type { TableOrder } from '#src/table/table-settings.ts';
 
 /** A line of the site table: a site, or one of its atoms below it. */
@@ -24,6 +25,12 @@ export interface RowList {
   readonly opened: readonly OpenedSite[];
   readonly rowCount: number;
   readonly heightPx: number;
+}
+
+/** Sites one after another as they stand in the file. */
+export function orderInFile(siteCount: number): TableOrder {
+  const sites = Int32Array.from({ length: siteCount }, (_none, index) => index);
+  return { sites, places: sites };
 }
 
 export const siteRowHeight = 32;
@@ -115,4 +122,10 @@ export function indexOfRow(list: RowList, siteIndex: number, atom: number | null
   if (atom !== null) return isOpen && atom < above.atomCount ? place + above.atomsBefore + 1 + atom : -1;
   if (!above) return place;
   return place + above.atomsBefore + (isOpen ? 0 : above.atomCount);
+}
+
+/** A site's row is meant by the selection of the site and of any of its atoms; an atom's row only by that atom. */
+export function matches(selection: Selection | null, row: Selection): boolean {
+  if (selection?.siteIndex !== row.siteIndex) return false;
+  return row.atomId === null || selection.atomId === row.atomId;
 }

@@ -5,12 +5,23 @@ import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { quantityToShow } from '#src/store/state.ts';
 import { counted, formatCount } from '#src/table/number-format.ts';
 import type { TableOrder, TableSort } from '#src/table/table-settings.ts';
-import { isFiltering, noFilter } from '#src/table/table-settings.ts';
+import { isFiltering } from '#src/table/table-settings.ts';
 import { gridOf } from './column-widths.ts';
 import type { CopyKind } from './copy-table.ts';
 import { copyTable } from './copy-table.ts';
 import type { RowList, SiteRow } from './site-rows.ts';
-import { indexOfRow, listRows, rowAt, rowOf, siteRowHeight, topOf, visibleRows } from './site-rows.ts';
+import {
+  indexOfRow,
+  listRows,
+  matches,
+  orderInFile,
+  rowAt,
+  rowOf,
+  siteRowHeight,
+  topOf,
+  visibleRows,
+} from './site-rows.ts';
+import { tellWhenShown } from './shown-event.ts';
 import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
 import { sortSentence, tableHead } from './table-head.ts';
@@ -19,9 +30,9 @@ import { atomCells, siteCells } from './table-row.ts';
 import { TableSource, tableQuestion } from './table-source.ts';
 import { tableStyles } from './table-styles.ts';
 import type { TablePanel } from './table-tools.ts';
-import { enterPanel, tablePanel, tableTools } from './table-tools.ts';
+import { enterPanel, nothingPasses, tablePanel, tableTools } from './table-tools.ts';
 
-const empty: RowList = listRows({ sites: new Int32Array(0), places: new Int32Array(0) }, new Map());
+const empty: RowList = listRows(orderInFile(0), new Map());
 
 /**
  * One row a site, opening to its equivalent atoms: a tree grid with one focus stop, whose active row is named by
@@ -63,8 +74,7 @@ export class SiteTable extends StoreElement {
 
   constructor() {
     super();
-    this.panel = null;
-    this.said = '';
+    [this.panel, this.said] = [null, ''];
   }
 
   override connectedCallback(): void {
@@ -85,6 +95,9 @@ export class SiteTable extends StoreElement {
     if (isNew) {
       this.#crystal = crystal;
       this.#opened = new Map();
+      // lines that wait for their cells; the order stays where it may be the same
+      const isOther = crystal && this.#list.order.places.length !== crystal.siteCount;
+      this.#relist(isOther ? orderInFile(crystal.siteCount) : this.#list.order);
     }
     if (crystal && (isNew || state.table !== before?.table))
       void this.#source.load(crystal, state.table, this.#firstPlace());
@@ -94,6 +107,12 @@ export class SiteTable extends StoreElement {
   #rowsCame(order: TableOrder | null): void {
     if (order) this.#relist(order);
     this.requestUpdate();
+    tellWhenShown(this);
+  }
+
+  /** Whether the rows are those of the crystal on screen. */
+  get isCurrent(): boolean {
+    return this.#source.shows(this.store?.state.derived?.crystal ?? null);
   }
 
   override render(): TemplateResult {
@@ -150,14 +169,8 @@ export class SiteTable extends StoreElement {
   }
 
   #nothingLeft(): TemplateResult | typeof nothing {
-    const isEmpty = this.#list.rowCount === 0 && isFiltering(this.store!.state.table.filter);
-    if (!isEmpty || this.#source.columns.length === 0) return nothing;
-    return html`<p class="empty">
-      No site passes the filter.
-      <button class="link" @click=${() => this.store?.setTable({ filter: noFilter }, 'clear the filter')}>
-        Show all
-      </button>
-    </p>`;
+    const isEmpty = this.#list.rowCount === 0 && this.isCurrent;
+    return isEmpty && isFiltering(this.store!.state.table.filter) ? nothingPasses(this.store!) : nothing;
   }
 
   get #scroller(): HTMLElement | null {
@@ -332,12 +345,6 @@ export class SiteTable extends StoreElement {
   protected override updated(): void {
     this.style.setProperty('--content-height', `${this.#list.heightPx + siteRowHeight + 62}px`);
   }
-}
-
-/** A site's row is meant by the selection of the site and of any of its atoms; an atom's row only by that atom. */
-function matches(selection: Selection | null, row: Selection): boolean {
-  if (selection?.siteIndex !== row.siteIndex) return false;
-  return row.atomId === null || selection.atomId === row.atomId;
 }
 
 customElements.define('ellipsite-site-table', SiteTable);

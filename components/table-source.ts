@@ -30,7 +30,7 @@ export function tableQuestion(
 
 /**
  * The rows on screen: their order and columns, and the cells of those in view. What is shown stays until the rows of new
- * settings have come.
+ * settings have come; cells of another crystal go at once.
  */
 export class TableSource {
   readonly #ask: (request: TableRequest) => Promise<TablePage>;
@@ -39,6 +39,8 @@ export class TableSource {
   #pages: RowPages | null = null;
   #columns: readonly SiteColumn[] = [];
   #fault: string | null = null;
+  #crystal: CrystalSummary | null = null;
+  #isHere = false;
 
   /** `changed` is called with a new order, or with null when rows of the same order have come or could not be read. */
   constructor(
@@ -59,6 +61,11 @@ export class TableSource {
     return this.#fault;
   }
 
+  /** Whether the rows are those of this crystal, or it is known that they can't be read. */
+  shows(crystal: CrystalSummary | null): boolean {
+    return crystal === null || (this.#isHere && crystal === this.#crystal);
+  }
+
   row(place: number): TableRow | null {
     return this.#pages?.row(place) ?? null;
   }
@@ -66,9 +73,13 @@ export class TableSource {
   /** Fetches the order and the rows from about `firstPlace` on. */
   async load(crystal: CrystalSummary, table: TableSettings, firstPlace: number): Promise<void> {
     const question = tableQuestion(crystal, table);
+    if (crystal !== this.#crystal) this.#begin(crystal, table);
     const first = pageRows * Math.floor(firstPlace / pageRows);
     try {
       const page = await this.#newest.ask({ ...question, first, count: pageRows, withOrder: true });
+      // an answer about the crystal before may come after the next one is on screen
+      if (crystal !== this.#crystal) return;
+      this.#isHere = true;
       this.#fault = null;
       this.#columns = shownColumns(crystal, table);
       this.#pages = new RowPages(
@@ -78,9 +89,18 @@ export class TableSource {
       this.#pages.take(page);
       this.#changed(page.order);
     } catch (error) {
-      if (error instanceof Cancelled) return;
+      if (error instanceof Cancelled || crystal !== this.#crystal) return;
+      this.#isHere = true;
       this.#fault = error instanceof Error ? error.message : String(error);
       this.#changed(null);
     }
+  }
+
+  #begin(crystal: CrystalSummary, table: TableSettings): void {
+    this.#crystal = crystal;
+    this.#isHere = false;
+    this.#pages = null;
+    this.#fault = null;
+    this.#columns = shownColumns(crystal, table);
   }
 }

@@ -1,6 +1,7 @@
 import { html, nothing } from 'lit';
 import type { LitElement, TemplateResult } from 'lit';
 import type { Store } from '#src/store/store.ts';
+import { noFilter } from '#src/table/table-settings.ts';
 import type { CopyKind } from './copy-table.ts';
 
 /** A panel above the rows; null for none. */
@@ -68,4 +69,14 @@ export async function enterPanel(panel: NonNullable<TablePanel>, root: ParentNod
   const element = root.querySelector<LitElement>('.panel');
   await element?.updateComplete;
   element?.renderRoot.querySelector<HTMLElement>('input, select, button:not(:disabled)')?.focus();
+}
+
+/** Stands where no row is left. */
+export function nothingPasses(store: Store): TemplateResult {
+  return html`<p class="empty">
+    No site passes the filter.
+    <button class="link" @click=${() => store.setTable({ filter: noFilter }, 'clear the filter')}>
+      Show all
+    </button>
+  </p>`;
 }

@@ -63,6 +63,10 @@ export const viewStyles = css`
   .stage:active {
     cursor: grabbing;
   }
+  /* of the crystal before, until the first frame of this one */
+  .awaited canvas {
+    visibility: hidden;
+  }
   canvas {
     position: absolute;
     inset: 0;

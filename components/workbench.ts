@@ -6,12 +6,14 @@ import type { Selection, WorkbenchState } from '#src/store/state.ts';
 import { announcement, selectionSentence } from './announcement.ts';
 import { caseKey } from './case-keys.ts';
 import './crystal-view.ts';
+import type { CrystalView } from './crystal-view.ts';
 import './drop-zone.ts';
 import './page-header.ts';
 import type { Panel } from './panel.ts';
 import './progress-bar.ts';
 import './site-card.ts';
 import './site-table.ts';
+import type { SiteTable } from './site-table.ts';
 import { StoreElement } from './store-element.ts';
 import { shared, themes } from './styles.ts';
 import { effectiveTheme, keepTheme, watchTheme } from './theme.ts';
@@ -46,6 +48,8 @@ export class Workbench extends StoreElement {
   #spoken = '';
   /** A selection that is spoken once its site has come. */
   #unspoken: Selection | null = null;
+  /** A new crystal is announced once table and picture show it. */
+  #awaited: string | null = null;
   /** The problems were opened by a refused file, not by the user: they go when the refusal goes. */
   #isOwnOpening = false;
   /** What had the focus when a drawer was opened; it gets it back. */
@@ -87,12 +91,27 @@ export class Workbench extends StoreElement {
     const { selection } = state;
     const isNew = selection !== before?.selection && state.derived === before?.derived;
     if (isNew || !selection) this.#unspoken = selection;
-    this.#spoken = announcement(state, before) ?? this.#spoken;
+    const words = announcement(state, before);
+    if (words !== null) this.#awaited = null;
+    if (words !== null && state.derived !== before?.derived && before && state.derived?.crystal) {
+      this.#awaited = words;
+      void this.updateComplete.then(this.#sayAwaited);
+    } else this.#spoken = words ?? this.#spoken;
     const site = this.#unspoken && this.store?.site(this.#unspoken.siteIndex);
     if (!this.#unspoken || !site) return;
     this.#spoken = selectionSentence(this.#unspoken, site);
     this.#unspoken = null;
   }
+
+  readonly #sayAwaited = (): void => {
+    const parts = this.renderRoot.querySelectorAll<SiteTable | CrystalView>(
+      'ellipsite-site-table, ellipsite-crystal-view',
+    );
+    if (this.#awaited === null || [...parts].some(({ isCurrent }) => !isCurrent)) return;
+    this.#spoken = this.#awaited;
+    this.#awaited = null;
+    this.requestUpdate();
+  };
 
   override render(): TemplateResult {
     const { store, panel } = this;
@@ -109,7 +128,7 @@ export class Workbench extends StoreElement {
       ></ellipsite-page-header>
       <ellipsite-progress-bar .store=${store}></ellipsite-progress-bar>
       <div class="body ${panel ? 'with-drawer' : ''}" @ask-panel=${this.#askPanel}>
-        <main class=${isCleared ? 'cleared' : ''}>
+        <main class=${isCleared ? 'cleared' : ''} @part-shown=${this.#sayAwaited}>
           ${isCleared ? html`<p class="start">${emptyWords}</p>` : nothing}
           <ellipsite-crystal-view
             .store=${store}

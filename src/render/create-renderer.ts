@@ -275,6 +275,7 @@ class Renderer implements CrystalRenderer {
     if (target) this.#smoothing.resolve(this.#gl, target, across);
     this.#frames += 1;
     if (target) this.#smoothFrames += 1;
+    this.#options.onFrame?.(this.#scene);
   }
 
   /** What depends on the view itself: order and light of facets, fineness of polar surfaces. */

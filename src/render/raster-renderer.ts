@@ -104,7 +104,7 @@ class RasterRenderer implements CrystalRenderer {
     this.#turn += 1;
     if (!view || this.#isDisposed) return;
     const band = this.#client.drawNow(view);
-    this.#paint({ ...pictureSize(view), bands: [band], ms: 0 }, view.samplesAcross > 1);
+    this.#paint({ ...pictureSize(view), bands: [band], ms: 0 }, view.samplesAcross > 1, this.#scene);
   }
 
   pick(xPx: number, yPx: number): PickHit | null {
@@ -179,11 +179,12 @@ class RasterRenderer implements CrystalRenderer {
     this.#isStale = false;
     this.#isDrawing = true;
     const turn = ++this.#turn;
+    const scene = this.#scene;
     const picture = await this.#client.draw(view);
     this.#isDrawing = false;
     if (this.#isDisposed) return;
     if (picture && turn === this.#turn) {
-      this.#paint(picture, false);
+      this.#paint(picture, false, scene);
       this.#weigh(picture.ms);
     }
     if (this.#isStale) this.#stale(this.#lastReason);
@@ -198,9 +199,10 @@ class RasterRenderer implements CrystalRenderer {
     const view = this.#view(true);
     if (!view || this.#isDisposed) return;
     const turn = ++this.#turn;
+    const scene = this.#scene;
     const picture = await this.#client.draw(view);
     if (picture && turn === this.#turn && !this.#isDisposed && !this.#isStale) {
-      this.#paint(picture, view.samplesAcross > 1);
+      this.#paint(picture, view.samplesAcross > 1, scene);
     }
   }
 
@@ -211,7 +213,7 @@ class RasterRenderer implements CrystalRenderer {
     else if (this.#isCoarse && ms < fitsAgainMs * coarseRatio ** 2) this.#isCoarse = false;
   }
 
-  #paint({ width, height, bands }: RasterPicture, isSmooth: boolean): void {
+  #paint({ width, height, bands }: RasterPicture, isSmooth: boolean, scene: Scene | null): void {
     if (this.#canvas.width !== width || this.#canvas.height !== height) {
       this.#canvas.width = width;
       this.#canvas.height = height;
@@ -222,5 +224,6 @@ class RasterRenderer implements CrystalRenderer {
     this.#bands = bands.length;
     this.#frames += 1;
     if (isSmooth) this.#smoothFrames += 1;
+    if (scene) this.#options.onFrame?.(scene);
   }
 }

@@ -16,6 +16,8 @@ export interface RendererOptions {
   /** Called when the context was lost, and when the picture is back. Nothing needs to be set again. */
   readonly onContextLost?: () => void;
   readonly onContextRestored?: () => void;
+  /** Called when a frame is on the canvas, with the scene it shows. */
+  readonly onFrame?: (scene: Scene) => void;
   /** Called when the CPU renderer has stepped in for a lost context. */
   readonly onStandIn?: () => void;
 }
