@@ -22,6 +22,7 @@ const byName: ReadonlyMap<string, string> = new Map(elements.map(({ name, symbol
 const keywords =
   /^(?:atom|atoms|ion|site|nucleus|nuc|nuclear|center|centre|position|at|species|label|id|element|kind|symbol|type)s?$|^(?:no|nr|n|index|number|num)$/i;
 const strongKeywords = /^(?:atom|ion|site|nucleus|center|centre)$/i;
+const numberWords = /^(?:atom|ion|site|nucleus|center|centre|no|nr|number|num|index)$/i;
 const gluedLabel = /^([A-Z][a-z]?|[a-z]{1,2})_?(\d{1,5})([A-Za-z'_]{0,3})$/;
 /** A variable that carries a label: `sigma_Al3`. */
 export const labelInName = /^[A-Za-z]{2,12}_([A-Z][a-z]?_?\d{1,5})$/;
@@ -173,6 +174,8 @@ function ofPair(key: string, value: string, end: number): AtomMention | null {
 
 /** `1.234 …` rows that begin with a symbol only: `Si 432.5 0.58 …`, or a line that is nothing but a symbol. */
 function alone(tokens: readonly TextToken[], words: number): AtomMention | null {
+  const heading = elementHeading(tokens, words);
+  if (heading !== null) return heading;
   const first = tokens.findIndex(({ kind }) => kind !== 'mark');
   const element = first >= 0 && tokens[first]!.kind === 'word' ? symbolOf(tokens[first]!.text) : null;
   if (element === null || words > 2 || element === 'Y') return null;
@@ -180,6 +183,15 @@ function alone(tokens: readonly TextToken[], words: number): AtomMention | null 
   if (/^[=/*^²]$/.test(tokens[first + 1]?.text ?? '')) return null;
   const label = tokens[first]!.text;
   return { label, element, index: null, isGhost: false, end: first + 1, isSure: false };
+}
+
+/** `Species Al`, `--- element: Si ---`: a line that names nothing but an element. */
+function elementHeading(tokens: readonly TextToken[], words: number): AtomMention | null {
+  if (words !== 2 || tokens.some(({ kind }) => kind === 'number')) return null;
+  const [key, name] = tokens.filter(({ kind }) => kind === 'word');
+  if (!elementKey.test(key!.text)) return null;
+  const element = symbolOf(name!.text);
+  return element === null ? null : { ...blank, label: name!.text, element, end: tokens.length, isSure: true };
 }
 
 function mentionAt(
@@ -251,7 +263,7 @@ function countedName(tokens: readonly TextToken[], at: number): AtomMention | nu
 /** The number after a word such as `site`, further on in the line. */
 function numberOfSite(tokens: readonly TextToken[], from: number): { value: number; at: number } | null {
   for (let at = from; at < Math.min(tokens.length, from + 6); at++) {
-    if (tokens[at]!.kind !== 'word' || !strongKeywords.test(tokens[at]!.text)) continue;
+    if (tokens[at]!.kind !== 'word' || !numberWords.test(tokens[at]!.text)) continue;
     return numberBeside(tokens, at + 1, 1);
   }
   return null;
@@ -264,7 +276,7 @@ function beside(
   named: boolean,
   words: number,
 ): AtomMention | null {
-  const isCounted = /^(?:no|nr|number|num)$/i.test(tokens[at + 1]?.text ?? '');
+  const isCounted = /^(?:no|nr|number|num|index)$/i.test(tokens[at + 1]?.text ?? '');
   const after = numberBeside(tokens, at + (isCounted ? 2 : 1), 1);
   const before = numberBeside(tokens, at - 1, -1);
   if (words > 8 && !named) return null;

@@ -1,5 +1,5 @@
 import type { AtomMention } from './atom-mention.ts';
-import { atomMention, isAtomWord, isWholeNumber } from './atom-mention.ts';
+import { atomMention, isAtomWord, isWholeNumber, labelInName } from './atom-mention.ts';
 import { axisOf } from './component-name.ts';
 import type { TextLine, TextToken } from './text-line.ts';
 
@@ -64,7 +64,8 @@ export function dataRow(line: TextLine): DataRow | null {
         : atomMention({ ...line, tokens: tokens.slice(0, start + Math.min(wholes, 1)) }),
     axis: rowAxis(firstTag),
     lead: firstTag
-      .flatMap(({ text }) => (isAtomWord(text) ? [] : [text.toLowerCase().replace(/\d+/g, '#')]))
+      .map(({ text }) => (labelInName.test(text) ? text.slice(0, text.indexOf('_')) : text))
+      .flatMap((text) => (isAtomWord(text) ? [] : [text.toLowerCase().replace(/\d+/g, '#')]))
       .join(' '),
     words,
     text: line.text,
@@ -78,4 +79,28 @@ function rowAxis(words: readonly TextToken[]): number | null {
   if (own !== null) return own;
   const glued = /^[A-Z][a-z]?\d+_?([xyz])$/.exec(last.text);
   return glued ? 'xyz'.indexOf(glued[1] ?? '') : null;
+}
+
+/**
+ * Nine numbers in brackets within a line that goes on after them, such as `"tensor": [[…], […], […]], "iso": 4.2`, as a row that
+ * ends with them; null where none stand there.
+ */
+export function innerRow(line: TextLine, row: DataRow | null): DataRow | null {
+  const { tokens } = line;
+  if (tokens.length < 20 || (row !== null && row.values.length >= 6)) return null;
+  let count = 0;
+  let start = 0;
+  for (const [at, { kind, text }] of tokens.entries()) {
+    if (kind === 'number') count++;
+    else if (kind !== 'mark' || !insideRun.test(text)) {
+      count = 0;
+      start = at + 1;
+    }
+    const isClosed = count === 9 && /^[\])}]$/.test(text) && kind === 'mark';
+    if (!isClosed || !tokens.slice(start, at).some((token) => /^[[({]$/.test(token.text))) continue;
+    const inner = dataRow({ ...line, tokens: tokens.slice(0, at + 1) });
+    if (inner?.values.length !== 9) return null;
+    return { ...inner, atom: inner.atom ?? atomMention(line) };
+  }
+  return null;
 }

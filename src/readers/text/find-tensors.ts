@@ -2,7 +2,8 @@ import { atomKey, atomMention } from './atom-mention.ts';
 import type { AtomMention } from './atom-mention.ts';
 import { BlockFinder } from './block-finder.ts';
 import type { DataRow } from './data-row.ts';
-import { dataRow } from './data-row.ts';
+import { dataRow, innerRow } from './data-row.ts';
+import { IndexedFinder } from './indexed-finder.ts';
 import type { LineMeaning } from './line-meaning.ts';
 import { AtomColumnsFinder, NumberListFinder } from './list-finder.ts';
 import { NamedFinder } from './named-finder.ts';
@@ -15,6 +16,7 @@ import type { TablePrinted } from './table-finder.ts';
 import { TableFinder } from './table-finder.ts';
 import type { TensorSeed } from './tensor-seed.ts';
 import { TextContext } from './text-context.ts';
+import { UnevenRowsFinder } from './uneven-rows-finder.ts';
 import type { LineFinder, TextLine } from './text-line.ts';
 import { tokenise } from './tokenise.ts';
 
@@ -28,6 +30,8 @@ export interface UnitLine {
   readonly words: readonly string[];
   /** True where the line names field gradients. */
   readonly ofGradients: boolean;
+  /** True where it says so of everything near it: a line of nothing but units, “all values in …”. */
+  readonly ofAll?: boolean;
   readonly unit: NonNullable<LineMeaning['unit']>;
   readonly line: number;
   readonly text: string;
@@ -64,6 +68,8 @@ class TensorFinder implements LineFinder<TensorSightings> {
   readonly #named = new NamedFinder((seed) => this.#emit(seed), this.#context);
   readonly #principal = new PrincipalFinder((seed) => this.#emit(seed), this.#context);
   readonly #list = new NumberListFinder((seed) => this.#emit(seed), this.#context);
+  readonly #uneven = new UnevenRowsFinder((seed) => this.#emit(seed), this.#context);
+  readonly #indexed = new IndexedFinder((seed) => this.#emit(seed), this.#context);
   readonly #columns = new AtomColumnsFinder((seed) => this.#emit(seed), this.#context);
   readonly #table = new TableFinder(
     (seed) => this.#emit(seed),
@@ -74,15 +80,28 @@ class TensorFinder implements LineFinder<TensorSightings> {
   );
 
   take(line: TextLine): void {
-    const row = line.tokens.length === 0 ? null : dataRow(line);
+    const isBlank = line.tokens.length === 0;
+    const row = isBlank ? null : dataRow(line);
+    const gap = line.text.includes('\f') ? 'page' : isBlank ? 'blank' : null;
     this.#release(row);
-    this.#list.take(row);
+    const isRule = line.tokens.every(({ kind }) => kind === 'mark');
+    if (!isRule || gap !== null) this.#list.take(row);
+    this.#uneven.take(row);
+    if (this.#indexed.take(line)) {
+      this.#blocks.take(null);
+      return;
+    }
+    const inner = innerRow(line, row);
+    if (inner !== null && this.#takeRow(inner)) {
+      this.#blocks.take(null);
+      return;
+    }
     const inTable = this.#columns.take(line, row) || this.#table.take(line, row);
     const isDirection = !inTable && this.#principal.take(line, row);
     const isNamed = !inTable && !isDirection && this.#named.take(line);
     const isRow = !inTable && !isNamed && row !== null && this.#takeRow(row);
     // A row that names no atom may be the first of blocks side by side: the next line tells.
-    this.#blocks.take(inTable || isNamed || (isRow && this.#held === null) ? null : row);
+    this.#blocks.take(inTable || isNamed || (isRow && this.#held === null) ? null : row, gap);
     if (inTable || isNamed) return;
     this.#context.note(line, row);
     this.#keepUnit(line, this.#context.lastMeaning);
@@ -124,9 +143,15 @@ class TensorFinder implements LineFinder<TensorSightings> {
     const words = line.tokens.filter(({ kind }) => kind === 'word').map(({ text }) => text.toLowerCase());
     const isUnitRow = words.length <= 6 && words.some((word) => /^units?$/.test(word));
     const ofGradients = meaning.quantity === 'efg' && meaning.unit !== 'ppm';
-    if (!isUnitRow && !ofGradients) return;
+    const isBare = meaning.quantity === null && meaning.decoy === null && meaning.unit !== 'ppm';
+    const ofAll =
+      isBare &&
+      words.length <= 20 &&
+      (/\b(?:all|values?|tensors?|quantit\w+)\b/i.test(line.text) || isOfUnits(words));
+    if (!isUnitRow && !ofGradients && !ofAll) return;
     this.#unitLines.push({
       ofGradients,
+      ofAll,
       words,
       unit: meaning.unit,
       line: line.number,
@@ -151,6 +176,8 @@ class TensorFinder implements LineFinder<TensorSightings> {
   finish(): TensorSightings {
     this.#release(null);
     this.#list.close();
+    this.#uneven.close();
+    this.#indexed.close();
     this.#columns.close();
     this.#blocks.close();
     this.#named.close();
@@ -167,6 +194,10 @@ class TensorFinder implements LineFinder<TensorSightings> {
       leftOut: this.#leftOut,
     };
   }
+}
+
+function isOfUnits(words: readonly string[]): boolean {
+  return words.every((word) => /^(?:v|a|å|m|au|ang|angstrom|a0|e|ea0|hartree|ha|bohr|eh)$/.test(word));
 }
 
 function rawOf(seed: TensorSeed): RawTensor {

@@ -268,13 +268,23 @@ function unitOf(
   return 'unknown';
 }
 
+/** Lines above and below a group in which a unit of everything is its unit too. */
+const besideAbove = 4;
+const besideBelow = 12;
+
 /** Unit of field gradients that a line after the group names, else one before it. */
 function unitElsewhere(
   lines: readonly UnitLine[],
   facts: readonly Facts[],
 ): { value: EfgUnit; words: string; line: number } | null {
-  const last = facts[facts.length - 1]?.raw.line ?? 0;
-  const fitting = lines.filter(({ ofGradients, unit }) => ofGradients && unit !== 'ppm');
+  const first = facts[0]?.raw.line ?? 0;
+  const last = facts[facts.length - 1]?.raw.lastLine ?? 0;
+  const isBeside = (line: number): boolean =>
+    (line < first && first - line <= besideAbove) || (line > last && line - last <= besideBelow);
+  const fitting = lines.filter(
+    ({ ofGradients, ofAll, unit, line }) =>
+      unit !== 'ppm' && (ofGradients || (ofAll === true && isBeside(line))),
+  );
   const found = fitting.find(({ line }) => line > last) ?? fitting[fitting.length - 1];
   return found ? { value: found.unit as EfgUnit, words: found.text, line: found.line } : null;
 }

@@ -19,6 +19,7 @@ export type DecoyKind =
   | 'multipole moment'
   | 'force constants'
   | 'displacement parameters'
+  | 'frequencies'
   | 'positions'
   | 'forces';
 
@@ -92,6 +93,7 @@ const decoys: readonly (readonly [DecoyKind, RegExp])[] = [
     /thermal param\w*|displacement param\w*|\badps?\b|\bu_?ij\b|anisotropic displ\w*/i,
   ],
   ['forces', /\bforces?\b|velocit\w*|momentum|momenta/i],
+  ['frequencies', /[([/,]\s*[kMG]?Hz\b|\bin [kMG]?Hz\b/],
   ['positions', /coordinates?|positions?\b/i],
 ];
 
@@ -127,7 +129,7 @@ const symmetrised =
 const unfinished = /\b(?:preliminary|iteration|cycle|step|not converged|unconverged|intermediate)\b/i;
 
 const anything =
-  /shield|sigma|σ|shift|δ|delta|efg|grad|v_?zz|v_?xx|v_?ij|cq|c_q|tensor|matri|ppm|a\.\s?u|\bau\b|atomic unit|v\s*[/*·]?\s*\(?(?:m|å|a)|10\s*(?:\*\*|\^)|e\+?21|suscept|hyper|fermi|hfc|born|charge|apt|stress|virial|pressure|kbar|gpa|strain|elast|stiff|compl|piezo|dielec|permit|polar|raman|refrac|optic|recip|b\(|symm?|rotat|isym|transform|eigenvec|direc|euler|axes|axis|lattice|cell|vec|metric|inertia|moment|pole|hess|force|veloc|normal mode|therm|displac|u_?ij|coord|posit|spin|coupl|zero|zfs|dia|para|core|valence|bare|macro|gauge|local|site|ionic|electron|nucle|smooth|augm|recon|term|contrib|total|sum|final|full|raw|prelim|iter|cycle|step|interm|converg|term|corr|xx|bohr|hartree|zeeman|\bg\b|g-|main|so\b|magnet/i;
+  /shield|sigma|σ|shift|δ|delta|efg|grad|v_?zz|v_?xx|v_?ij|cq|c_q|tensor|matri|ppm|a\.\s?u|\bau\b|atomic unit|v\s*[/*·]?\s*\(?(?:m|å|a)|10\s*(?:\*\*|\^)|e\+?21|suscept|hyper|fermi|hfc|born|charge|apt|stress|virial|pressure|kbar|gpa|strain|elast|stiff|compl|piezo|dielec|permit|polar|raman|refrac|optic|recip|b\(|symm?|rotat|isym|transform|eigenvec|direc|euler|axes|axis|lattice|cell|vec|metric|inertia|moment|pole|hess|force|veloc|normal mode|therm|displac|u_?ij|coord|posit|spin|coupl|zero|zfs|dia|para|core|valence|bare|macro|gauge|local|site|ionic|electron|nucle|smooth|augm|recon|term|contrib|total|sum|final|full|raw|prelim|iter|cycle|step|interm|converg|term|corr|xx|bohr|hartree|zeeman|\bg\b|g-|main|so\b|magnet|Hz\b/i;
 
 const nothing: LineMeaning = {
   quantity: null,

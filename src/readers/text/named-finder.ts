@@ -1,6 +1,7 @@
 import type { AtomMention } from './atom-mention.ts';
 import { atomKey, atomMention } from './atom-mention.ts';
 import { componentOf, fromComponents, isWhole } from './component-name.ts';
+import { isTelling } from './line-meaning.ts';
 import type { TensorSeed } from './tensor-seed.ts';
 import type { Surroundings, TextContext } from './text-context.ts';
 import type { TextLine, TextToken } from './text-line.ts';
@@ -16,7 +17,7 @@ interface NamedValue {
 /** Lines without a component that may stand between two of one tensor. */
 const widestGap = 2;
 
-const joins = /^[=:>"'\])}|]$/;
+const joins = /^[=:>"'\])}|,;]$/;
 
 /** Components of a line that are named and followed by a number: `XX= 1.5`, `"xy": 2`, `V(1,2) = 3`, `sigma_zz 4`. */
 export function namedValues(line: TextLine): NamedValue[] {
@@ -126,7 +127,10 @@ export class NamedFinder {
   }
 
   #begin(line: TextLine, own: AtomMention | null, prefix: string): void {
-    this.#start = this.#context.surroundings(line.number);
+    const above = this.#context.surroundings(line.number);
+    const meaning = this.#context.meaningOf(line.text);
+    const self = { number: line.number, text: line.text.trim().slice(0, 300), meaning };
+    this.#start = isTelling(meaning) ? { ...above, near: [...above.near, self] } : above;
     this.#atom = own ?? this.#start.atom;
     this.#line = line.number;
     this.#prefix = prefix;

@@ -1,6 +1,6 @@
 import type { AtomMention } from './atom-mention.ts';
-import { atomMention } from './atom-mention.ts';
 import type { DataRow } from './data-row.ts';
+import { atomMention } from './atom-mention.ts';
 import type { LineMeaning } from './line-meaning.ts';
 import { isTelling, lineMeaning } from './line-meaning.ts';
 import type { NearLine } from './raw-tensor.ts';
@@ -36,6 +36,8 @@ function isSame(a: AtomMention, b: AtomMention): boolean {
 export class TextContext {
   #near: NearLine[] = [];
   #far: NearLine[] = [];
+  /** Their texts without numbers. */
+  #farKeys: string[] = [];
   #atom: AtomMention | null = null;
   #atomLine = 0;
   /** True once a tensor came for the atom: a line that names only its element then begins another. */
@@ -43,6 +45,8 @@ export class TextContext {
   #lastMention: AtomMention | null = null;
   #number: { index: number | null; line: number } = { index: null, line: -10 };
   #mentionLine = 0;
+  #headingLine = -10;
+  #section: { readonly element: string; readonly line: number } | null = null;
   #farShared: readonly NearLine[] = [];
 
   /** Meaning of the last line that was noted. */
@@ -70,6 +74,11 @@ export class TextContext {
       this.#noteNumber(mention.index, line.number);
       return;
     }
+    const named = this.#inSection(mention, line.number);
+    if (named !== null) {
+      this.#setAtom(named, line.number);
+      return;
+    }
     const neighbours = this.#mentionLine === line.number - 1;
     const isList = neighbours && this.#lastMention !== null && !isSame(mention, this.#lastMention);
     this.#lastMention = mention;
@@ -92,6 +101,32 @@ export class TextContext {
     this.#atomLine = line.number;
   }
 
+  /** `atom 2` under a line that named only an element is one of that element. */
+  #inSection(mention: AtomMention, line: number): AtomMention | null {
+    if (mention.element !== null) {
+      const isHeading = mention.index === null && mention.isSure;
+      // Headings that follow each other are a list of the elements.
+      const isListed = isHeading && line - this.#headingLine <= 1;
+      if (isHeading) this.#headingLine = line;
+      this.#section = isHeading && !isListed ? { element: mention.element, line } : null;
+      return null;
+    }
+    const section = this.#section;
+    if (section === null || mention.index === null || line - section.line > atomHolds) return null;
+    // The first number under an element may be that of the atom the line above names.
+    this.#section = { ...section, line };
+    return { ...mention, element: section.element };
+  }
+
+  #setAtom(atom: AtomMention, line: number): void {
+    const isOther = this.#lastMention === null || !isSame(atom, this.#lastMention);
+    if (isOther) this.#atomHasTensor = false;
+    this.#atom = isOther && this.#mentionLine === line - 1 && this.#lastMention?.index !== null ? null : atom;
+    this.#lastMention = atom;
+    this.#mentionLine = line;
+    this.#atomLine = line;
+  }
+
   /** A number on a line of its own is the atom's where the element stands beside it. */
   #noteNumber(index: number | null, line: number): void {
     if (this.#atom?.index === null && line - this.#atomLine <= numberHolds) {
@@ -102,7 +137,13 @@ export class TextContext {
 
   #toFar(line: NearLine): void {
     if (!isTelling(line.meaning)) return;
-    this.#far = [...this.#far.slice(-(keptFar - 1)), line];
+    const key = line.text.replace(/[\d.+-]+/g, '#');
+    const again = this.#farKeys.indexOf(key);
+    // Lines that only name a part come with every atom; they must not push the heading out.
+    const least = this.#far.findIndex(({ meaning }) => !isHeading(meaning));
+    const out = again >= 0 ? again : this.#far.length < keptFar ? -1 : Math.max(least, 0);
+    this.#far = [...this.#far.filter((_, at) => at !== out), line];
+    this.#farKeys = [...this.#farKeys.filter((_, at) => at !== out), key];
     this.#farShared = this.#far;
   }
 
@@ -153,6 +194,10 @@ export class TextContext {
 }
 
 const none: readonly NearLine[] = [];
+
+function isHeading({ quantity, decoy, unit, order }: LineMeaning): boolean {
+  return quantity !== null || decoy !== null || unit !== null || order !== null;
+}
 
 function merged(a: AtomMention, b: AtomMention): AtomMention {
   return {

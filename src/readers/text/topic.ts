@@ -34,12 +34,17 @@ const weak: ReadonlySet<DecoyKind> = new Set([
   'reciprocal lattice',
 ]);
 
+/** Lines under a unit of frequency that it holds for. */
+const frequencyHolds = 2;
+
 const hasValues = (text: string): boolean => /\d\.\d/.test(text);
 
 function decoyOf({ text, meaning }: NearLine): DecoyKind | null {
-  const { decoy, quantity } = meaning;
+  const { decoy, quantity, unit } = meaning;
   if (decoy === null) return null;
   if (weak.has(decoy)) return quantity !== null || hasValues(text) ? null : decoy;
+  // A tensor that is called one holds for all under it; a unit alone, for what follows at once.
+  if (decoy === 'frequencies') return hasValues(text) || unit !== null ? null : decoy;
   if (decoy === 'directions') return hasValues(text) ? null : decoy;
   if (quantity === null) return decoy;
   return decoy === 'susceptibility' || decoy === 'effective charge' || decoy === 'multipole moment'
@@ -60,7 +65,10 @@ export function topicOf(raw: RawTensor): Topic {
   for (const line of lines) {
     const { meaning, number, text } = line;
     const own = decoyOf(line);
-    const decoy = own === 'directions' && raw.shape === 'principal' ? null : own;
+    const isOut =
+      (own === 'directions' && raw.shape === 'principal') ||
+      (own === 'frequencies' && raw.line - number > frequencyHolds && !/tensor|matri/i.test(text));
+    const decoy = isOut ? null : own;
     order ??= meaning.order && { value: meaning.order, words: text.slice(0, 60), line: number };
     if (topic === null && meaning.role !== null && decoy === null)
       role ??= { value: meaning.role, words: roleWords(line), line: number };
