@@ -4,15 +4,13 @@ import type { Camera } from '#src/scene/camera.ts';
 import { zoomLimits } from '#src/scene/camera.ts';
 import type { NamedAxis } from '#src/scene/look-along.ts';
 import { parseLookAlong } from '#src/scene/look-along.ts';
+import { axesOfAtom } from '#src/scene/named-axes.ts';
+import type { SceneQuantity } from '#src/scene/scene.ts';
 import { viewAngles, withViewAngles } from '#src/scene/view-angles.ts';
 import type { ViewAngles } from '#src/scene/view-angles.ts';
-import { atomAxes } from '#src/store/axes.ts';
-import type { TensorQuantity } from '#src/store/axes.ts';
-import type { KnownSite } from '#src/store/engine-queries.ts';
 import type { Vec3 } from '#src/store/dossier-types.ts';
 import { inCell, toCell } from '#src/store/cell-position.ts';
 import type { CrystalPicture } from './crystal-picture.ts';
-import { axisSymbol } from './measure-words.ts';
 import { numberInput } from './number-input.ts';
 import { panelStyles } from './panel-styles.ts';
 import './saved-views.ts';
@@ -20,7 +18,6 @@ import { StoreElement } from './store-element.ts';
 import { shared } from './styles.ts';
 import { withSubscripts } from './symbol-text.ts';
 
-const quantities = ['shielding', 'shift', 'efg'] as const;
 const axisSpelling =
   'A principal axis is typed by the label of its site and the component: Al1 Vzz, Al1 σ33, Al1 33.';
 const letters = ['a', 'b', 'c', 'a*', 'b*', 'c*'] as const;
@@ -213,7 +210,7 @@ export class ViewPanel extends StoreElement {
     const { store } = this;
     const selection = store?.state.selection;
     const site = selection && store.site(selection.siteIndex);
-    return site ? principalAxes(site, selection.atomId, this.#shownFirst()) : [];
+    return site ? axesOfAtom(site, selection.atomId, this.#drawn) : [];
   }
 
   /** Those of the sites a text names as well: the selected atom comes first, then the sites' first atoms. */
@@ -223,13 +220,12 @@ export class ViewPanel extends StoreElement {
     // the selected site may be on its way
     if (store && selected) await store.readSites([selected.siteIndex]);
     const sites = (await store?.sitesNamed(text)) ?? [];
-    return [...this.#namedAxes(), ...sites.flatMap((site) => principalAxes(site, null, this.#shownFirst()))];
+    return [...this.#namedAxes(), ...sites.flatMap((site) => axesOfAtom(site, null, this.#drawn))];
   }
 
-  /** Quantities with the one that is drawn first: `Al1 33` means its axis. */
-  #shownFirst(): readonly TensorQuantity[] {
-    const drawn = this.picture?.scene?.scale?.quantity;
-    return [...new Set([...(drawn ? [drawn] : []), ...quantities])];
+  /** The quantity that is drawn: `Al1 33` means its axis. */
+  get #drawn(): SceneQuantity | null {
+    return this.picture?.scene?.scale?.quantity ?? null;
   }
 
   readonly #typed = (event: Event): void => {
@@ -259,24 +255,6 @@ export class ViewPanel extends StoreElement {
   #tell(name: 'to-selection' | 'pivots', detail?: boolean): void {
     this.dispatchEvent(new CustomEvent(name, { detail }));
   }
-}
-
-/** Principal axes of one atom of a site, its first without an id. */
-function principalAxes(
-  site: KnownSite,
-  atomId: string | null,
-  wanted: readonly TensorQuantity[],
-): NamedAxis[] {
-  const atom = site.equivalents.find(({ id }) => id === atomId) ?? site.equivalents[0];
-  if (!atom) return [];
-  return wanted.flatMap((quantity) =>
-    (atomAxes(site, atom, quantity) ?? []).map((axis, k) => ({
-      name: axisSymbol(quantity, k as 0 | 1 | 2),
-      others: [`${k + 1}${k + 1}`, ...(quantity === 'efg' ? [`V${k + 1}${k + 1}`] : [])],
-      of: site.label,
-      axis,
-    })),
-  );
 }
 
 function rounded(value: number, digits: number): number {
