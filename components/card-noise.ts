@@ -14,7 +14,7 @@ export function noiseList(
   site: SiteDossier,
 ): TemplateResult {
   const entries = conventionCatalogue[quantity].filter(isDiagnostic);
-  return html`<dl class="facts">
+  return html`<dl class="facts noise">
     ${entries.map((entry) => {
       const value = entryValue(noise, entry);
       if (value === undefined) return nothing;

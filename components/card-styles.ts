@@ -166,6 +166,13 @@ export const cardStyles = css`
     .conventions .number {
       flex: 0 0 10ch;
     }
+    /* a reason is a sentence: name and reason each have a line of their own below the term */
+    .noise {
+      grid-template-columns: minmax(0, 1fr);
+    }
+    .noise dd {
+      padding: 0 0 6px 14px;
+    }
     .conventions td.definition {
       flex-basis: 100%;
       padding: 0 0 4px;

@@ -64,6 +64,13 @@ export class ProgressBar extends StoreElement {
     }
   }
 
+  /** The button goes with the bar, so the page is told to speak and to place the focus. */
+  readonly #cancel = (): void => {
+    const what = this.store?.state.progress?.what ?? '';
+    this.store?.cancel();
+    this.dispatchEvent(new CustomEvent('was-cancelled', { detail: what }));
+  };
+
   override render(): TemplateResult {
     const progress = this.store?.state.progress;
     if (!progress || !this.late) return html``;
@@ -72,7 +79,7 @@ export class ProgressBar extends StoreElement {
       <p>${progress.what}: <span class="soft">${progress.stage}</span></p>
       <progress max="100" .value=${percent} aria-label=${progress.what}></progress>
       <span class="number percent">${percent} %</span>
-      <button class="line" @click=${() => this.store?.cancel()}>Cancel</button>
+      <button class="line" @click=${this.#cancel}>Cancel</button>
     </div>`;
   }
 }

@@ -50,6 +50,8 @@ export class Workbench extends StoreElement {
   #unspoken: Selection | null = null;
   /** A new crystal is announced once table and picture show it. */
   #awaited: string | null = null;
+  /** What had the focus before the button that cancels. */
+  #beforeBar: HTMLElement | null = null;
   /** The problems were opened by a refused file, not by the user: they go when the refusal goes. */
   #isOwnOpening = false;
   /** What had the focus when a drawer was opened; it gets it back. */
@@ -103,6 +105,23 @@ export class Workbench extends StoreElement {
     this.#unspoken = null;
   }
 
+  readonly #enterBar = (event: FocusEvent): void => {
+    this.#beforeBar = (event.relatedTarget as HTMLElement | null) ?? null;
+  };
+
+  /** What was cancelled is spoken of; the focus goes back to where it was, else to the first button of the page. */
+  readonly #cancelled = ({ detail }: CustomEvent<string>): void => {
+    const name = this.store?.state.derived?.crystal?.name;
+    const rest = name ? `${name} stays on screen.` : 'Nothing is on screen.';
+    this.#spoken = `Cancelled: ${detail}. ${rest}`;
+    this.requestUpdate();
+    const header = this.renderRoot.querySelector('ellipsite-page-header')?.shadowRoot;
+    const before = this.#beforeBar?.isConnected ? this.#beforeBar : null;
+    const inside = before?.shadowRoot?.querySelector<HTMLElement>('[tabindex="0"], button');
+    (inside ?? before ?? header?.querySelector<HTMLElement>('button'))?.focus();
+    this.#beforeBar = null;
+  };
+
   readonly #sayAwaited = (): void => {
     const parts = this.renderRoot.querySelectorAll<SiteTable | CrystalView>(
       'ellipsite-site-table, ellipsite-crystal-view',
@@ -126,7 +145,11 @@ export class Workbench extends StoreElement {
         role="banner"
         @ask-panel=${this.#askPanel}
       ></ellipsite-page-header>
-      <ellipsite-progress-bar .store=${store}></ellipsite-progress-bar>
+      <ellipsite-progress-bar
+        .store=${store}
+        @focusin=${this.#enterBar}
+        @was-cancelled=${this.#cancelled}
+      ></ellipsite-progress-bar>
       <div class="body ${panel ? 'with-drawer' : ''}" @ask-panel=${this.#askPanel}>
         <main class=${isCleared ? 'cleared' : ''} @part-shown=${this.#sayAwaited}>
           ${isCleared ? html`<p class="start">${emptyWords}</p>` : nothing}
