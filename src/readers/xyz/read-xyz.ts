@@ -8,6 +8,7 @@ import type { SourceText } from '#src/bytes/source-text.ts';
 import type { Crystal } from '#src/crystal/crystal.ts';
 import type { TensorSet } from '#src/tensor/tensor-set.ts';
 import type { ColumnProposal, Reading } from '#src/readers/reading.ts';
+import { reportAtomOverlaps } from './atoms-overlap.ts';
 import { guessColumn } from './column-guess.ts';
 import type { AcceptedColumns, ColumnPlan } from './column-plan.ts';
 import { planColumns } from './column-plan.ts';
@@ -160,9 +161,9 @@ function readOneFrame(
   const structureIndex = made ? collected.structures.length : null;
   if (made) {
     const name = `${nameOf(source.name, head)}${suffix}`;
-    collected.structures.push(
-      frameStructure(name, rows.atoms, labels, cell, { ...place, line: frame.countLine + 1 }),
-    );
+    const structure = frameStructure(name, rows.atoms, labels, cell, { ...place, line: frame.countLine + 1 });
+    collected.structures.push(structure);
+    reportAtomOverlaps(structure, log);
   }
   collected.tensorSets.push(...tensorSets(plan, rows, cell, structureIndex, suffix, source.name));
   propose(plan, rows, structureIndex, place.line, collected);

@@ -190,7 +190,7 @@ function reportBadOperation(
   log: ProblemLog,
 ): void {
   log.add(
-    'warning',
+    'error',
     'cif-bad-operation',
     `“${text.trim()}” in ${name} is not a symmetry operation and was left out.`,
     {

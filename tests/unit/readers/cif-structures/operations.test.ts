@@ -93,9 +93,15 @@ describe('flawed lists', () => {
     expect(operationsOf(reading)).toEqual(['x,y,z', '-x,-y,-z']);
     expect(problemOf(reading, 'cif-bad-operation')).toMatchObject({
       line: 11,
-      severity: 'warning',
+      severity: 'error',
       got: 'x,y',
     });
+  });
+
+  it('drop a string that makes space flat', () => {
+    const reading = block(box, list(['x,y,z', 'x,x,z']), atom);
+    expect(operationsOf(reading)).toEqual(['x,y,z']);
+    expect(problemOf(reading, 'cif-bad-operation')).toMatchObject({ severity: 'error', got: 'x,x,z' });
   });
 
   it('put a missing identity first and say so', () => {

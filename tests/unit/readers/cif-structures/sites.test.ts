@@ -35,7 +35,11 @@ describe('coordinates', () => {
     );
     expect(only(reading).sites.map(({ label }) => label)).toEqual(['C1']);
     const missing = reading.problems.filter(({ code }) => code === 'cif-missing-coordinates');
-    expect(missing.map(({ line }) => line)).toEqual([18, 19, 20]);
+    expect(missing.map(({ line, severity }) => [line, severity])).toEqual([
+      [18, 'error'],
+      [19, 'error'],
+      [20, 'error'],
+    ]);
   });
 
   it('that are no numbers leave their row out as an error; small slips are repaired', () => {
