@@ -30,16 +30,24 @@ export interface AtomTable {
 /** The table of a run of rows; null where the rows hold no three real numbers, or the words say it is something else. */
 export function atomTable(run: RowRun): AtomTable | null {
   const first = run.rows[0]!;
+  if (first.isBare && isOfNoAtoms(run)) return null;
   const offsets = tripleOffsets(run.rows);
   if (offsets.length === 0) return null;
   const evidence = coordinateEvidence(wordsBefore(first, offsets[0]!), run.heading);
+  if (evidence.areCoordinates === 'no') return null;
   const name = nameColumns(run.rows, offsets, run.heading);
   const hasElement = name.element !== null;
-  if (evidence.areCoordinates === 'no') return null;
   if (!hasElement && evidence.areCoordinates === null && !mayBeBareList(run, offsets)) return null;
   if (!hasElement && run.rows.length < 2) return null;
   const rows = run.rows.map((row, i) => atomRow(row, name, offsets, run.headElements[i] ?? null));
   return { line: first.line, rows, evidence, decimals: offsets.map((at) => decimalsAt(run.rows, at)) };
+}
+
+/** Rows without a letter are atoms only where the lines above say so, or as a bare list of three columns. */
+function isOfNoAtoms({ rows, heading }: RowRun): boolean {
+  const { areCoordinates } = coordinateEvidence('0', heading);
+  const mayBeBare = rows.length > 3 && rows[0]!.kinds.length === 3;
+  return areCoordinates === 'no' || (areCoordinates === null && !mayBeBare);
 }
 
 /**

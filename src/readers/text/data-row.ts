@@ -1,7 +1,9 @@
 import type { AtomMention } from './atom-mention.ts';
 import { atomMention, isAtomWord, isWholeNumber, labelInName } from './atom-mention.ts';
+import type { NamedAtom } from './shape-atom.ts';
+import { atomOf, namedAtom } from './shape-atom.ts';
 import { axisOf } from './component-name.ts';
-import type { TextLine, TextToken } from './text-line.ts';
+import type { ShapedText, TextLine, TextToken } from './text-line.ts';
 
 /** The run of numbers a line ends with, and what stands before it. */
 export interface DataRow {
@@ -34,6 +36,87 @@ function isTail(token: TextToken): boolean {
 
 /** Splits a line into what names it and the numbers it ends with; null where it ends with none. */
 export function dataRow(line: TextLine): DataRow | null {
+  return line.shaped ? shapedRow(line, line.shaped) : plainRow(line);
+}
+
+/** What rows of one shape have in common. */
+interface RowShape {
+  readonly row: DataRow;
+  /** Pieces of the run of numbers, and the place of the first among all numbers of the line. */
+  readonly pieces: readonly number[];
+  readonly firstNumber: number;
+  /** The row's atom; null where every line has to be asked. */
+  readonly atom: NamedAtom | null;
+}
+
+/** The row of a line whose shape is known. */
+function shapedRow(line: TextLine, shaped: ShapedText): DataRow | null {
+  const { shape } = shaped;
+  if (shape.numbers === 0) return null;
+  if (shape.row === undefined) shape.row = rowShape(line);
+  const known = shape.row as RowShape | null;
+  if (known === null) return null;
+  if (known.atom === null) return plainRow(line);
+  return new ShapedRow(line, shaped, known, known.atom);
+}
+
+class ShapedRow implements DataRow {
+  readonly line: number;
+  readonly text: string;
+  readonly values: readonly number[];
+  readonly wholes: number;
+  readonly isWhole: boolean;
+  readonly atom: AtomMention | null;
+  readonly axis: number | null;
+  readonly lead: string;
+  readonly words: number;
+  readonly #pieces: readonly number[];
+  readonly #shaped: ShapedText;
+
+  constructor({ number, text }: TextLine, shaped: ShapedText, known: RowShape, atom: NamedAtom) {
+    const { row, pieces, firstNumber } = known;
+    const all = shaped.values;
+    this.line = number;
+    this.text = text;
+    this.values = all.length === pieces.length ? all : all.slice(firstNumber, firstNumber + pieces.length);
+    this.wholes = row.wholes;
+    this.isWhole = row.isWhole;
+    this.atom = atomOf(atom, all);
+    this.axis = row.axis;
+    this.lead = row.lead;
+    this.words = row.words;
+    this.#pieces = pieces;
+    this.#shaped = shaped;
+  }
+
+  get ends(): readonly number[] {
+    return this.#pieces.map((piece) => this.#shaped.endOf(piece));
+  }
+}
+
+function rowShape(line: TextLine): RowShape | null {
+  const row = plainRow(line);
+  if (row === null) return null;
+  const { tokens } = line;
+  const ends = new Set(row.ends);
+  const pieces = tokens.flatMap((token, at) =>
+    token.kind === 'number' && ends.has(token.start + token.text.length) ? [at] : [],
+  );
+  const start = pieces[0]!;
+  const firstNumber = tokens.slice(0, start).filter(({ kind }) => kind === 'number').length;
+  const named = namedTokens(tokens, start, row.wholes);
+  const atom = named === null ? { mention: null, at: -1 } : namedAtom(line, named);
+  return { row, pieces, firstNumber, atom };
+}
+
+/** The tokens before the numbers, with the first whole one, where they may name an atom. */
+function namedTokens(tokens: readonly TextToken[], start: number, wholes: number): TextToken[] | null {
+  const words = tokens.slice(0, start).filter(({ kind }) => kind === 'word');
+  const isAxis = words.length === 1 && /^[xyz]$/i.test(words[0]!.text);
+  return words.length === 0 || isAxis ? null : tokens.slice(0, start + Math.min(wholes, 1));
+}
+
+function plainRow(line: TextLine): DataRow | null {
   const { tokens } = line;
   let end = tokens.length - 1;
   while (end >= 0 && isTail(tokens[end]!)) end--;
@@ -52,16 +135,14 @@ export function dataRow(line: TextLine): DataRow | null {
   const words = firstTag.length;
   let wholes = 0;
   while (wholes < run.length && isWholeNumber(run[wholes])) wholes++;
+  const named = namedTokens(tokens, start, wholes);
   return {
     line: line.number,
     values: run.map(({ value }) => value),
     ends: run.map((token) => token.start + token.text.length),
     wholes,
     isWhole: run.every(({ text }) => !/[.eEdD*nN]/.test(text)),
-    atom:
-      words === 0 || (/^[xyz]$/i.test(firstTag[words - 1]?.text ?? '') && words === 1)
-        ? null
-        : atomMention({ ...line, tokens: tokens.slice(0, start + Math.min(wholes, 1)) }),
+    atom: named && atomMention({ number: line.number, text: line.text, tokens: named }),
     axis: rowAxis(firstTag),
     lead: firstTag
       .map(({ text }) => (labelInName.test(text) ? text.slice(0, text.indexOf('_')) : text))
@@ -86,6 +167,7 @@ function rowAxis(words: readonly TextToken[]): number | null {
  * ends with them; null where none stand there.
  */
 export function innerRow(line: TextLine, row: DataRow | null): DataRow | null {
+  if (line.shaped && line.shaped.shape.count < 20) return null;
   const { tokens } = line;
   if (tokens.length < 20 || (row !== null && row.values.length >= 6)) return null;
   let count = 0;

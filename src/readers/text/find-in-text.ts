@@ -17,7 +17,8 @@ import { SpeciesLists } from './species-lists.ts';
 import type { TablePrinted } from './table-finder.ts';
 import { tensorGroups } from './tensor-groups.ts';
 import type { LineFinder } from './text-line.ts';
-import { longestLine, tokenise } from './tokenise.ts';
+import { lineMaker } from './line-shape.ts';
+import { longestLine } from './tokenise.ts';
 import { unfinishedFinder } from './unfinished-lines.ts';
 import { weighGroups } from './weigh-groups.ts';
 
@@ -33,20 +34,20 @@ export interface Sightings {
 /** Feeds every line once to all finders; lines are not kept. May be fed in chunks. */
 export function textPass(file: string): { take(text: string): void; finish(): Sightings } {
   const tensors = tensorFinder();
-  const structures: LineFinder<FoundStructure[]> = structureFinder();
   const species = new SpeciesLists();
+  const structures: LineFinder<FoundStructure[]> = structureFinder(species);
   const unfinished: LineFinder<Problem[]> = unfinishedFinder(file);
+  const lineOf = lineMaker();
   let number = 0;
   let longLines = 0;
   return {
     take(text) {
       number++;
       if (text.length > longestLine) longLines++;
-      const line = tokenise(text, number);
+      const line = lineOf(text, number);
       tensors.take(line);
       structures.take(line);
       unfinished.take(line);
-      species.take(line);
     },
     finish: () => ({
       tensors: tensors.finish(),

@@ -80,11 +80,14 @@ class TensorFinder implements LineFinder<TensorSightings> {
   );
 
   take(line: TextLine): void {
-    const isBlank = line.tokens.length === 0;
+    const shape = line.shaped?.shape;
+    const isBlank = (shape?.count ?? line.tokens.length) === 0;
     const row = isBlank ? null : dataRow(line);
-    const gap = line.text.includes('\f') ? 'page' : isBlank ? 'blank' : null;
+    const gap = shape === undefined && line.text.includes('\f') ? 'page' : isBlank ? 'blank' : null;
     this.#release(row);
-    const isRule = line.tokens.every(({ kind }) => kind === 'mark');
+    const isRule = shape
+      ? shape.words.length + shape.numbers === 0
+      : line.tokens.every(({ kind }) => kind === 'mark');
     if (!isRule || gap !== null) this.#list.take(row);
     this.#uneven.take(row);
     if (this.#indexed.take(line)) {
@@ -131,6 +134,7 @@ class TensorFinder implements LineFinder<TensorSightings> {
   }
 
   #keepPrinted(line: TextLine): void {
+    if (line.shaped?.shape.mayHoldPrinted === false) return;
     const atom = this.#context.atomAt(line.number);
     for (const value of printedIn(line.text, line.number)) {
       this.#pending.push({ key: atom && atomKey(atom), value });

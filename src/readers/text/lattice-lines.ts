@@ -2,6 +2,7 @@ import type { CellConstants } from '#src/crystal/lattice.ts';
 import { cellProblem, latticeFromCell, rowsProblem } from '#src/crystal/lattice.ts';
 import type { Mat3, Vec3 } from '#src/base/matrix3.ts';
 import { asMat3, multiply, scaleMatrix, transpose } from '#src/base/matrix3.ts';
+import { constantName } from './lattice-constants.ts';
 import type { LengthUnit } from './length-words.ts';
 import { lengthUnits } from './length-words.ts';
 import type { NumericRow } from './numeric-row.ts';
@@ -39,7 +40,7 @@ export class LatticeLines {
   #constantsUnit: LengthUnit | null = null;
 
   take(line: TextLine, row: NumericRow | null): void {
-    const blank = line.tokens.length === 0;
+    const blank = (line.shaped?.shape.count ?? line.tokens.length) === 0;
     const follows = this.#group.length > 0 && line.number - this.#group.at(-1)!.line <= 1;
     const other = this.#group.length === 3 && this.#group.every(({ key }) => key !== row?.key);
     if (this.#group.length > 0 && !(row && follows && !other)) this.#endGroup();
@@ -112,8 +113,9 @@ export class LatticeLines {
   }
 
   #rowOfNine(row: NumericRow): void {
+    if (row.values.length !== 9) return;
     const numbers = row.columns.filter(({ kind }) => kind === 'number');
-    if (numbers.length !== 9 || numbers.every(({ isInteger }) => isInteger)) return;
+    if (numbers.every(({ isInteger }) => isInteger)) return;
     const said = [row.text, ...this.#heading.slice(0, 2)].find(
       (t) => latticeWords.test(t) || otherWords.test(t),
     );
@@ -132,12 +134,8 @@ export class LatticeLines {
   }
 
   #rowOfSix(row: NumericRow): void {
-    const numbers = row.columns.filter(({ kind }) => kind === 'number');
-    if (numbers.length < 6 || numbers.length > 7) return;
-    const lines = [row.text, ...this.#heading.slice(0, 3)];
-    const said = lines.find((text) => /alpha|angles?\b|α|\bcell\b|lattice par/i.test(text));
-    if (said === undefined || startsOther(said)) return;
-    const [a, b, c, alpha, beta, gamma] = numbers.map(({ value }) => value) as [
+    if (row.values.length < 6 || row.values.length > 7) return;
+    const [a, b, c, alpha, beta, gamma] = row.values as unknown as [
       number,
       number,
       number,
@@ -147,12 +145,16 @@ export class LatticeLines {
     ];
     if (!(Math.min(a, b, c) > 1) || !(Math.min(alpha, beta, gamma) > 25) || alpha + beta + gamma < 120)
       return;
+    const lines = [row.text, ...this.#heading.slice(0, 3)];
+    const said = lines.find((text) => /alpha|angles?\b|α|\bcell\b|lattice par/i.test(text));
+    if (said === undefined || startsOther(said)) return;
     const units = lines.map(lengthUnits).find((found) => found.length > 0) ?? [];
     this.#addConstants({ a, b, c, alpha, beta, gamma }, row.line, units[0] ?? null, said);
   }
 
   /** `a = 5.2`, `alpha: 90`, `cell_length_a 5.2`, gathered over a few lines until all six are there. */
   #assignments(line: TextLine): void {
+    if (line.shaped?.shape.mayHoldConstants === false) return;
     const names = line.tokens.some(({ kind, text }) => kind === 'word' && constantName(text) !== null);
     if (!names || line.text.length > 300) return;
     if (line.number - this.#constantsLine > 12) this.#constants = {};
@@ -191,14 +193,6 @@ export class LatticeLines {
 
 const assignment =
   /(?<![\w.])((?:\w*_)?(?:a|b|c|alpha|beta|gamma)|[αβγ])(?![\w(])[|\s]*(?:[[(]\s*[A-Za-zÅ°.]{1,10}\s*[\])])?\s*[=:\s]\s*([-+]?\d+\.?\d*)(?![\w/])/gi;
-
-function constantName(text: string): keyof CellConstants | null {
-  const name = text.toLowerCase().replace(/^\w*_/, '');
-  if (name === 'α') return 'alpha';
-  if (name === 'β') return 'beta';
-  if (name === 'γ') return 'gamma';
-  return /^(?:a|b|c|alpha|beta|gamma)$/.test(name) ? (name as keyof CellConstants) : null;
-}
 
 /** A line as evidence: its words, without the numbers. */
 function inBrief(text: string): string {

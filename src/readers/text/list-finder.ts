@@ -82,6 +82,7 @@ export class AtomColumnsFinder {
 
   /** True where the line is a row of such a table. */
   take(line: TextLine, row: DataRow | null): boolean {
+    if (this.#atoms.length === 0 && line.shaped?.shape.mayHeadAtoms === false) return false;
     if (this.#atoms.length > 0 && row !== null && row.values.length === this.#atoms.length) {
       const name = line.tokens.find(({ kind }) => kind === 'word');
       const place = name ? componentOf(name.text) : null;

@@ -83,6 +83,8 @@ function valueAfter(tokens: readonly TextToken[], from: number): TextToken | nul
   return null;
 }
 
+const nothing: readonly NamedValue[] = [];
+
 /** Gathers components that are named one by one, over as many lines as they take. */
 export class NamedFinder {
   readonly #emit: (seed: TensorSeed) => void;
@@ -102,11 +104,11 @@ export class NamedFinder {
 
   /** True where the line names components with their values. */
   take(line: TextLine): boolean {
-    if (line.tokens.length < 2) return false;
-    const named = namedValues(line);
+    const shape = line.shaped?.shape;
+    if ((shape?.count ?? line.tokens.length) < 2) return false;
+    const named = shape?.mayNameComponents === false ? nothing : namedValues(line);
     if (named.length === 0) {
-      if (this.#values.size > 0 && line.tokens.length > 0 && line.number - this.#lastLine > widestGap)
-        this.close();
+      if (this.#values.size > 0 && line.number - this.#lastLine > widestGap) this.close();
       return false;
     }
     const own = atomMention(line);

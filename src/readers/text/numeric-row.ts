@@ -1,6 +1,6 @@
 import { elementOf } from '#src/data/elements.ts';
 import { elementWord } from './element-words.ts';
-import type { TextLine } from './text-line.ts';
+import type { ShapedText, TextLine } from './text-line.ts';
 
 /** One column of a row of numbers: marks are gone, words that name an element are known as such. */
 export interface RowColumn {
@@ -24,10 +24,122 @@ export interface NumericRow {
   readonly key: string;
   /** Such words, in lower case. */
   readonly words: readonly string[];
+  /** The columns, or those of an earlier row of its shape: kinds, words and elements hold, numbers need not. */
+  readonly kinds: readonly RowColumn[];
+  /** True where a scan showed that the line has no letter in it. */
+  readonly isBare: boolean;
+  /** All numbers of the line. */
+  readonly values: readonly number[];
+  /** What names the atom of the row: its element and the whole numbers before the coordinates. */
+  readonly identity: string;
+}
+
+/** What rows of one shape have in common. */
+interface RowShape {
+  readonly key: string;
+  readonly words: readonly string[];
+  /** Piece of each column, and the column as the first such row has it. */
+  readonly pieces: readonly number[];
+  readonly columns: readonly RowColumn[];
+}
+
+/** A row of a known shape: its columns are made when they are asked for. */
+class ShapedRow implements NumericRow {
+  readonly line: number;
+  readonly text: string;
+  readonly values: readonly number[];
+  readonly #shape: RowShape;
+  readonly #shaped: ShapedText;
+  #columns: readonly RowColumn[] | null = null;
+
+  constructor(line: TextLine, shaped: ShapedText, shape: RowShape) {
+    this.line = line.number;
+    this.text = line.text;
+    this.values = shaped.values;
+    this.#shape = shape;
+    this.#shaped = shaped;
+  }
+
+  get key(): string {
+    return this.#shape.key;
+  }
+
+  get words(): readonly string[] {
+    return this.#shape.words;
+  }
+
+  get kinds(): readonly RowColumn[] {
+    return this.#shape.columns;
+  }
+
+  get isBare(): boolean {
+    return this.#shaped.shape.words.length === 0;
+  }
+
+  get columns(): readonly RowColumn[] {
+    this.#columns ??= this.#madeColumns();
+    return this.#columns;
+  }
+
+  #madeColumns(): RowColumn[] {
+    const { pieces, columns } = this.#shape;
+    let number = 0;
+    return columns.map((column, at) => {
+      const piece = pieces[at]!;
+      const start = this.#shaped.startOf(piece);
+      if (column.kind !== 'number') return { ...column, start };
+      const text = this.text.slice(start, this.#shaped.endOf(piece));
+      return { ...column, text, start, value: this.values[number++]! };
+    });
+  }
+
+  get identity(): string {
+    const { pieces, columns } = this.#shape;
+    let found = '';
+    for (const [at, { kind, isInteger, text }] of columns.entries()) {
+      if (kind === 'number' && !isInteger) break;
+      if (kind === 'word') continue;
+      const piece = pieces[at]!;
+      const own =
+        kind === 'number' ? this.text.slice(this.#shaped.startOf(piece), this.#shaped.endOf(piece)) : text;
+      found = found === '' ? own : `${found} ${own}`;
+    }
+    return found;
+  }
+}
+
+/** The row of a line whose shape is known. */
+function shapedRow(line: TextLine, shaped: ShapedText): NumericRow | null {
+  const { shape } = shaped;
+  if (shape.numbers < 3) return null;
+  if (shape.columns === undefined) {
+    const row = plainRow(line);
+    const starts = new Map(line.tokens.map(({ start }, at) => [start, at]));
+    shape.columns = row && {
+      key: row.key,
+      words: row.words,
+      columns: row.columns,
+      pieces: row.columns.map(({ start }) => starts.get(start)!),
+    };
+  }
+  return new ShapedRow(line, shaped, shape.columns as RowShape);
+}
+
+function identityOf(columns: readonly RowColumn[]): string {
+  const parts: string[] = [];
+  for (const { kind, text, isInteger } of columns) {
+    if (kind === 'number' && !isInteger) break;
+    if (kind !== 'word') parts.push(text);
+  }
+  return parts.join(' ');
 }
 
 /** The columns of a line, letters of axes between the numbers left out; null for a line with fewer than three numbers. */
 export function numericRow(line: TextLine): NumericRow | null {
+  return line.shaped ? shapedRow(line, line.shaped) : plainRow(line);
+}
+
+function plainRow(line: TextLine): NumericRow | null {
   let numbers = 0;
   let letters = 0;
   for (const { kind } of line.tokens) {
@@ -46,7 +158,20 @@ export function numericRow(line: TextLine): NumericRow | null {
     if (column.kind === 'word') words.push(column.text.toLowerCase());
     key += key === '' ? keyOf(column) : ` ${keyOf(column)}`;
   }
-  return { line: line.number, text: line.text, columns, key, words };
+  const values = columns.flatMap(({ kind, value }) => (kind === 'number' ? [value] : []));
+  return {
+    line: line.number,
+    text: line.text,
+    columns,
+    kinds: columns,
+    isBare: false,
+    key,
+    words,
+    values,
+    get identity(): string {
+      return identityOf(columns);
+    },
+  };
 }
 
 function numberColumn({ text, value, start }: TextLine['tokens'][number]): RowColumn {
@@ -88,7 +213,7 @@ export function tripleOffsets(rows: readonly NumericRow[]): number[] {
   if (!first) return [];
   const width = first.columns.length;
   const whole = first.columns.map(
-    (_, i) => rows.every((row) => row.columns[i]?.isInteger ?? false) || isOfElement(rows, i),
+    (_, i) => rows.every((row) => row.kinds[i]?.isInteger ?? false) || isOfElement(rows, i),
   );
   const offsets = segments(first, width, (i) => !whole[i]).flatMap((segment) => triplesOf(segment, rows));
   if (offsets.length > 0) return offsets;
@@ -100,7 +225,7 @@ export function tripleOffsets(rows: readonly NumericRow[]): number[] {
 
 /** True for a column of nuclear charges or atomic masses, by the elements in the rows. */
 function isOfElement(rows: readonly NumericRow[], column: number): boolean {
-  const at = rows[0]!.columns.findIndex(({ kind }) => kind === 'element');
+  const at = rows[0]!.kinds.findIndex(({ kind }) => kind === 'element');
   if (at < 0) return false;
   return rows.every(({ columns }) => {
     const symbol = columns[at]?.element;

@@ -64,6 +64,10 @@ export class PrincipalFinder {
 
   /** A line that ends with one decimal number may hold the value of the direction on the next. */
   #keepValue(line: TextLine, row: DataRow | null): void {
+    if (line.shaped && line.shaped.shape.decimals !== 1) {
+      this.#value = null;
+      return;
+    }
     const numbers = line.tokens.filter(({ kind, text }) => kind === 'number' && text.includes('.'));
     const one = numbers.length === 1 ? numbers[0]! : null;
     this.#value = one && row === null ? null : one && { value: one.value, line: line.number, text: one.text };

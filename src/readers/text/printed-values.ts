@@ -39,6 +39,11 @@ const triple = new RegExp(
 const telling =
   /iso|sigma|trace|average|asym|eta|η|span|skew|Ω|κ|c_?q|qq|qcc|coupling|eigen|princip|diagonal|[σδvs]_?[123][123]|\bq\s*=/iu;
 
+/** False where no line of these words can hold such a value. */
+export function mayHoldPrinted(text: string): boolean {
+  return telling.test(text);
+}
+
 /** Totals and principal values that a line prints beside a tensor: what its reading is proved by. */
 export function printedIn(text: string, line: number): PrintedValue[] {
   if (text.length > 400 || !telling.test(text) || !/\d/.test(text)) return [];

@@ -38,7 +38,7 @@ export class RowRuns {
 
   /** A line that is no row of numbers. */
   passText(line: TextLine): void {
-    if (line.text.trim() === '') return;
+    if (line.shaped ? line.shaped.shape.count === 0 : line.text.trim() === '') return;
     this.#heading.push({ text: line.text, line: line.number });
     if (this.#heading.length > headingLines) this.#heading.shift();
   }
@@ -47,9 +47,12 @@ export class RowRuns {
     const run = this.#runFor(row);
     run.rows.push(row);
     run.headElements.push(run.headElement);
-    run.identities.add(identity(row));
-    if (!run.worded) this.#heading = [];
-    else this.#remember(row);
+    if (!run.worded) {
+      if (this.#heading.length > 0) this.#heading = [];
+      return;
+    }
+    run.identities.add(row.identity);
+    this.#remember(row);
   }
 
   finish(): void {
@@ -85,7 +88,16 @@ export class RowRuns {
     if (!keyed) return undefined;
     this.#open.delete(keyed.key);
     const first = keyed.rows[0]!;
-    const plain = { ...first, columns: first.columns.slice(1), key: row.key, words: [] };
+    const { line, text, values } = first;
+    const columns = first.columns.slice(1);
+    const plain = {
+      ...{ line, text, values, columns },
+      kinds: columns,
+      isBare: false,
+      key: row.key,
+      words: [],
+      identity: first.identity,
+    };
     const run: OpenRun = {
       ...keyed,
       rows: [plain],
@@ -101,9 +113,12 @@ export class RowRuns {
   #goesOn(open: OpenRun, row: NumericRow): boolean {
     const last = open.rows.at(-1)!.line;
     const gap = row.line - last;
-    const id = identity(row);
-    if (open.worded && !/\d/.test(id) && gap <= 2) return true;
-    if (open.worded) return gap <= widestGap && id !== '' && !open.identities.has(id);
+    if (open.worded) {
+      const id = row.identity;
+      if (gap <= 2 && !/\d/.test(id)) return true;
+      return gap <= widestGap && id !== '' && !open.identities.has(id);
+    }
+    if (gap <= 2 && this.#heading.length === 0) return true;
     const between = this.#heading.filter(({ line }) => line > last);
     if (gap <= 2 && between.length === 0) return true;
     if (gap <= headingLines && counter(row) !== null && counter(row) === counter(open.rows.at(-1)!)! + 1)
@@ -112,7 +127,7 @@ export class RowRuns {
       gap > 5 ||
       open !== this.#lastBare ||
       open.headElement === null ||
-      row.columns.some(({ kind }) => kind === 'element')
+      row.kinds.some(({ kind }) => kind === 'element')
     )
       return false;
     const element = soleElement(between.map(({ text }) => text));
@@ -126,7 +141,7 @@ export class RowRuns {
       .filter(({ line }) => row.line - line <= headingLines + 4)
       .map(({ text }) => text)
       .reverse();
-    const bare = !row.columns.some(({ kind }) => kind === 'element');
+    const bare = !row.kinds.some(({ kind }) => kind === 'element');
     return {
       rows: [],
       headElements: [],
@@ -142,16 +157,6 @@ export class RowRuns {
     this.#open.delete(run.key);
     this.#close(run);
   }
-}
-
-/** What names the atom of a row: its element and the whole numbers before the coordinates. */
-function identity({ columns }: NumericRow): string {
-  const parts: string[] = [];
-  for (const { kind, text, isInteger } of columns) {
-    if (kind === 'number' && !isInteger) break;
-    if (kind !== 'word') parts.push(text);
-  }
-  return parts.join(' ');
 }
 
 /** The whole number a row begins with. */

@@ -15,9 +15,16 @@ const named =
 const indexed = /^\s*[A-Za-z_]\w*\s*\(\s*1\s*\)\s*=\s*([-+.\dEeDd]+)\s+[A-Za-z_]\w*\s*\(\s*2\s*\)\s*=/;
 const perVector = /^\s*\w*cell\w*\s/i;
 
+const anyIndexed = /^\s*[A-Za-z_]\w*\s*\(\s*\d\s*\)\s*=/;
+
+/** False where no line of these words can hold a scale. */
+export function mayHoldScale(text: string): boolean {
+  return named.test(text) || perVector.test(text) || anyIndexed.test(text);
+}
+
 /** The scale of a line: a named length, the first of a named and numbered row of lengths, or three after a word such as "cell". */
 export function scaleOfLine(line: TextLine): ScaleFinding | null {
-  if (line.text.length > 200) return null;
+  if (line.shaped?.shape.mayHoldScale === false || line.text.length > 200) return null;
   const numbers = line.tokens.filter(({ kind, text }) => kind === 'number' && /[.eEdD]/.test(text));
   if (numbers.length === 0) return null;
   const unit = lengthUnits(line.text).find((found) => found !== 'scale') ?? null;

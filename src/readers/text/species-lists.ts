@@ -1,6 +1,6 @@
 import { symbolOfAtomicNumber } from '#src/data/elements.ts';
 import { elementWord } from './element-words.ts';
-import type { TextLine } from './text-line.ts';
+import type { ShapedText, TextLine } from './text-line.ts';
 
 interface Sequence {
   readonly line: number;
@@ -34,13 +34,12 @@ export class SpeciesLists {
   #openTypes: Counts | null = null;
 
   take(line: TextLine): void {
-    const { tokens } = line;
-    if (tokens.length === 0 || line.text.length > 2000) return;
-    const words = tokens.filter(({ kind }) => kind === 'word').map(({ text }) => text);
-    const numbers = tokens.filter(({ kind }) => kind === 'number').map(({ value }) => value);
-    const elements = words.map(elementOfWord);
-    const named = elements.filter((element) => element !== null);
-    const whole = numbers.every((value) => Number.isInteger(value) && value >= 0);
+    if (line.shaped ? line.shaped.shape.count === 0 : line.text.length > 2000 || line.tokens.length === 0)
+      return;
+    const { words, elements, named } = line.shaped ? sharedSpecies(line.shaped) : speciesIn(wordsOf(line));
+    const numbers = line.shaped ? line.shaped.values : numbersOf(line);
+    if (named.length === 0 && numbers.length === 0) return;
+    const whole = named.length === 0 && numbers.every((value) => Number.isInteger(value) && value >= 0);
     if (numbers.length === 0 && named.length > 0) this.#names(line, words, elements);
     else if (named.length > 0 && numbers.length <= 4 * named.length)
       this.#namesWithCounts(line, words, named, numbers);
@@ -83,7 +82,7 @@ export class SpeciesLists {
 
   #namesWithCounts(
     line: TextLine,
-    words: string[],
+    words: readonly string[],
     named: readonly string[],
     numbers: readonly number[],
   ): void {
@@ -176,6 +175,31 @@ export class SpeciesLists {
     }
     return null;
   }
+}
+
+interface SpeciesWords {
+  readonly words: readonly string[];
+  readonly elements: readonly (string | null)[];
+  readonly named: readonly string[];
+}
+
+function speciesIn(words: readonly string[]): SpeciesWords {
+  const elements = words.map(elementOfWord);
+  return { words, elements, named: elements.filter((element) => element !== null) };
+}
+
+/** Elements among the words of a shape, looked up once. */
+function sharedSpecies({ shape }: ShapedText): SpeciesWords {
+  shape.species ??= speciesIn(shape.words);
+  return shape.species as SpeciesWords;
+}
+
+function wordsOf({ tokens }: TextLine): string[] {
+  return tokens.filter(({ kind }) => kind === 'word').map(({ text }) => text);
+}
+
+function numbersOf({ tokens }: TextLine): number[] {
+  return tokens.filter(({ kind }) => kind === 'number').map(({ value }) => value);
 }
 
 /** Also `Ca_sv`: a species may carry the name of its variant. */

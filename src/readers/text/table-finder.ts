@@ -58,9 +58,9 @@ export class TableFinder {
   /** True where the line is a row of a table; a header is not taken, so that its words are noted. */
   take(line: TextLine, row: DataRow | null): boolean {
     if (this.#header !== null) {
-      if (line.tokens.length === 0 || separator.test(line.text)) {
-        if (this.#rows > 0 && line.tokens.length === 0 && this.#header.delimiter !== null)
-          this.#header = null;
+      const isBlank = (line.shaped?.shape.count ?? line.tokens.length) === 0;
+      if (isBlank || separator.test(line.text)) {
+        if (this.#rows > 0 && isBlank && this.#header.delimiter !== null) this.#header = null;
         return false;
       }
       if (this.#takeRow(line, row)) {
@@ -69,6 +69,7 @@ export class TableFinder {
       }
       if (this.#rows > 0 || ++this.#skipped > beforeFirstRow) this.#header = null;
     }
+    if (line.shaped?.shape.mayBeHeader === false) return false;
     const header = tableHeader(line);
     if (header !== null) this.#open(header, line.number);
     return false;

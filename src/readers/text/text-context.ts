@@ -1,6 +1,7 @@
 import type { AtomMention } from './atom-mention.ts';
 import type { DataRow } from './data-row.ts';
-import { atomMention } from './atom-mention.ts';
+import { atomOfLine } from './shape-atom.ts';
+import { meaningOfLine } from './shape-meaning.ts';
 import type { LineMeaning } from './line-meaning.ts';
 import { isTelling, lineMeaning } from './line-meaning.ts';
 import type { NearLine } from './raw-tensor.ts';
@@ -55,20 +56,21 @@ export class TextContext {
   /** Takes note of a line that holds no part of a tensor. */
   note(line: TextLine, row: DataRow | null): void {
     this.lastMeaning = null;
-    if (line.tokens.length === 0) return;
+    const shape = line.shaped?.shape;
+    if ((shape?.count ?? line.tokens.length) === 0) return;
     this.#noteAtom(line);
     if (row !== null && row.values.length >= 3 && row.words <= 2) return;
-    const hasWords = line.tokens.some(({ kind }) => kind === 'word');
+    const hasWords = shape ? shape.words.length > 0 : line.tokens.some(({ kind }) => kind === 'word');
     if (!hasWords) return;
     const text = line.text.length > 300 ? line.text.slice(0, 300) : line.text;
-    const meaning = lineMeaning(text);
+    const meaning = meaningOfLine(line);
     this.lastMeaning = meaning;
     this.#near.push({ number: line.number, text: text.trim(), meaning });
     if (this.#near.length > keptNear) this.#toFar(this.#near.shift()!);
   }
 
   #noteAtom(line: TextLine): void {
-    const mention = atomMention(line);
+    const mention = atomOfLine(line);
     if (mention === null) return;
     if (mention.element === null && mention.label === null && !mention.isSure) {
       this.#noteNumber(mention.index, line.number);

@@ -16,11 +16,17 @@ const unfinished = [
 const harmless =
   /\bif\b[^.]*\bnot\s+converg|not\s+converged?\s*[:=]\s*(?:no|none|f(?:alse)?|0)\b|[:=]\s*(?:none|no|0|false)\s*$|\bno\s+unconverged\b|\bnumber of unconverged\D+0\s*$/i;
 
+/** False where no line of these words can say that a run did not end well. */
+export function mayBeUnfinished(text: string): boolean {
+  return quick.test(text);
+}
+
 /** Lines that say that a run did not end well, as warnings with their place. */
 export function unfinishedFinder(file: string): LineFinder<Problem[]> {
   const log = new ProblemLog();
   return {
-    take({ text, number }: TextLine): void {
+    take({ text, number, shaped }: TextLine): void {
+      if (shaped?.shape.mayBeUnfinished === false) return;
       if (text.length > 400 || !quick.test(text)) return;
       if (!unfinished.some((pattern) => pattern.test(text)) || harmless.test(text)) return;
       const said = text.trim().slice(0, 120);
