@@ -23,7 +23,8 @@ const keywords =
   /^(?:atom|atoms|ion|site|nucleus|nuc|nuclear|center|centre|position|at|species|label|id|element|kind|symbol|type)s?$|^(?:no|nr|n|index|number|num)$/i;
 const strongKeywords = /^(?:atom|ion|site|nucleus|center|centre)$/i;
 const numberWords = /^(?:atom|ion|site|nucleus|center|centre|no|nr|number|num|index)$/i;
-const gluedLabel = /^([A-Z][a-z]?|[a-z]{1,2})_?(\d{1,5})([A-Za-z'_]{0,3})$/;
+const gluedLabel =
+  /^([A-Z][a-z]?|[a-z]{1,2}|(?!CO|NO|HO|CN|CS|OS|PO|HF|SN|NP)[A-Z]{2})_?(\d{1,5})([A-Za-z'_]{0,3})$/;
 /** A variable that carries a label: `sigma_Al3`. */
 export const labelInName = /^[A-Za-z]{2,12}_([A-Z][a-z]?_?\d{1,5})$/;
 const countedSymbol = /^(\d{1,5})([A-Z][a-z]?)$/;
@@ -264,9 +265,31 @@ function countedName(tokens: readonly TextToken[], at: number): AtomMention | nu
 function numberOfSite(tokens: readonly TextToken[], from: number): { value: number; at: number } | null {
   for (let at = from; at < Math.min(tokens.length, from + 6); at++) {
     if (tokens[at]!.kind !== 'word' || !numberWords.test(tokens[at]!.text)) continue;
-    return numberBeside(tokens, at + 1, 1);
+    const found = numberBeside(tokens, at + 1, 1);
+    if (found) return found;
   }
   return null;
+}
+
+/** `Al.1`, `Al-27 atom 1`, `Al (site 1)`, `index 0, element Al`: the number stands further off, or looks like another. */
+function distantNumber(
+  tokens: readonly TextToken[],
+  at: number,
+  element: string,
+  words: number,
+): { value: number; at: number } | null {
+  const [own, next] = [tokens[at]!, tokens[at + 1]];
+  const dotted = /^\.(\d{1,4})$/.exec(next?.text ?? '')?.[1];
+  if (dotted !== undefined && next!.start === own.start + own.text.length)
+    return { value: Number(dotted), at: at + 1 };
+  if (words > 5) return null;
+  const after = numberBeside(tokens, at + 1, 1);
+  const isMass =
+    after !== null && /^[-‑]$/.test(next?.text ?? '') && nuclide(`${after.value}${element}`) !== null;
+  if (after !== null && !isMass) return null;
+  const far = numberOfSite(tokens, at + 1);
+  if (far !== null || isMass) return far;
+  return numberBeside(tokens, at - 1, -1) === null ? numberOfSite(tokens, 0) : null;
 }
 
 function beside(
@@ -276,6 +299,10 @@ function beside(
   named: boolean,
   words: number,
 ): AtomMention | null {
+  const distant = distantNumber(tokens, at, element, words);
+  if (distant !== null) {
+    return { ...blank, element, index: distant.value, end: Math.max(at, distant.at) + 1, isSure: named };
+  }
   const isCounted = /^(?:no|nr|number|num|index)$/i.test(tokens[at + 1]?.text ?? '');
   const after = numberBeside(tokens, at + (isCounted ? 2 : 1), 1);
   const before = numberBeside(tokens, at - 1, -1);
@@ -309,9 +336,10 @@ function afterKeyword(tokens: readonly TextToken[], at: number): AtomMention | n
       return { ...blank, element: symbolOf(token.text), index: after.value, end: after.at + 1, isSure: true };
   }
   if (!isWholeNumber(token)) return null;
-  for (let i = next + 1; i < Math.min(tokens.length, next + 4); i++) {
+  for (let i = next + 1; i < Math.min(tokens.length, next + 7); i++) {
     const text = tokens[i]!.text;
-    if (tokens[i]!.kind !== 'word') continue;
+    if (tokens[i]!.kind === 'number' && !/^(?:of|\/)$/i.test(tokens[i - 1]!.text)) break;
+    if (tokens[i]!.kind !== 'word' || text.toLowerCase() === 'of' || elementKey.test(text)) continue;
     const glued = gluedName(text, i, 1);
     if (glued) return { ...glued, index: glued.index, isSure: true };
     const element = symbolOf(text) ?? symbolOf(countedSymbol.exec(text)?.[2] ?? '');

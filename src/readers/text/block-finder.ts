@@ -134,7 +134,8 @@ export class BlockFinder {
     this.#gap = [];
     this.#start = null;
     if (length !== 3 || rows.length !== 3 || start === null || !areAlike(rows)) return;
-    const atom = atomOf(rows) ?? start.atom;
+    // What stood above was noted before the head was read: the head's own name comes first.
+    const atom = atomOf(rows) ?? (hasHead ? all[0]!.row.atom : null) ?? start.atom;
     const width = rows[0]!.values.length / 3;
     for (let part = 0; part < width; part++) {
       const values = rows.flatMap(({ values: all }) => all.slice(part * 3, part * 3 + 3));

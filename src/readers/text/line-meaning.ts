@@ -152,7 +152,11 @@ function unitIn(text: string): { unit: 'ppm' | EfgUnit; words: string } | null {
   for (const [pattern, name] of unitPatterns) {
     const words = firstMatch(pattern, text);
     const unit = words === null ? null : efgUnitOf(name);
-    if (unit !== null && words !== null) return { unit, words };
+    // A power of ten that is none of the known ones: better no unit than one that is off by it.
+    const isScaled =
+      unit === 'V/m2' &&
+      /(?:10\s*(?:\*\*|\^)?\s*\{?[+-]?\d+\}?|10[⁺⁻⁰¹²³⁴-⁹]+|\d[eE][+-]?\d+)[\s*·x×]*V/u.test(text);
+    if (unit !== null && words !== null && !isScaled) return { unit, words };
   }
   return /\bppm\b|p\.p\.m/i.test(text) ? { unit: 'ppm', words: 'ppm' } : null;
 }

@@ -1,6 +1,7 @@
 import { crystalRunLayouts } from './crystal-run-layouts.ts';
 import type { LogLayout } from './log-writer.ts';
 import { moleculeRunLayouts } from './molecule-run-layouts.ts';
+import { nameLayouts } from './name-layouts.ts';
 import { paperLayouts } from './paper-layouts.ts';
 
 /** Whole logs of invented calculations, and tables as papers, scripts and spreadsheets hold them. */
@@ -8,4 +9,5 @@ export const realisticLayouts: readonly (readonly [string, LogLayout])[] = Objec
   ...crystalRunLayouts,
   ...moleculeRunLayouts,
   ...paperLayouts,
+  ...nameLayouts,
 });
