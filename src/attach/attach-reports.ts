@@ -9,7 +9,7 @@ import type { TensorEntry, TensorSet } from '#src/tensor/tensor-set.ts';
 import type { Binding } from './binding.ts';
 import type { FrameRanking } from './frame-ranking.ts';
 import { matchDistanceAngstrom } from './match-positions.ts';
-import { largestCostAngstrom, latticeTolerances, leastFitShare } from './match-structure.ts';
+import { latticeTolerances, leastFitShare } from './match-structure.ts';
 import type { PositionBinding } from './bind-by-position.ts';
 import type { ReducedLattice } from './structure-atoms.ts';
 
@@ -64,7 +64,7 @@ export function reportRefusal(
     );
     return;
   }
-  const { best } = refusal;
+  const { best, largestAngstrom } = refusal;
   const got = best
     ? `${best.sought - best.missing.length} of ${countOf(best.sought, 'atom')} found, ${best.rmsAngstrom.toFixed(3)} Å rms off`
     : 'no origin at which more than a few atoms agree';
@@ -75,7 +75,7 @@ export function reportRefusal(
     {
       place,
       got,
-      allowed: `at least ${leastFitShare * 100} % found, at most ${largestCostAngstrom} Å rms off, atoms that are not found counting as 0.7 Å`,
+      allowed: `at least ${leastFitShare * 100} % found, at most ${largestAngstrom.toFixed(2)} Å rms off, atoms that are not found counting as 0.7 Å`,
       hint: 'Another compound or polymorph in a like cell: open the file alone to see it.',
     },
   );

@@ -21,6 +21,7 @@ import { bindByPosition, bindInPlace, bindMolecule, sourceOf } from './bind-by-p
 import type { AttachTarget, Binding } from './binding.ts';
 import type { FrameRanking } from './frame-ranking.ts';
 import { rankFrames } from './frame-ranking.ts';
+import { toleratedChance } from './chance-agreement.ts';
 import { isIdentity } from './match-structure.ts';
 
 export type { AttachTarget } from './binding.ts';
@@ -58,6 +59,18 @@ function bindByStructure(
       {
         place: placeOfSet(set),
         hint: 'The crystal is nearly more symmetric than it is: check that equivalent atoms agree.',
+      },
+    );
+  }
+  if (found?.chance && found.chance > toleratedChance) {
+    log.add(
+      'warning',
+      'attach-by-chance',
+      `${set.name} lies on the crystal's atoms, but so would ${Math.max(1, Math.round(found.chance * 100))} % of all wrong structures with as few independent atoms.`,
+      {
+        place: placeOfSet(set),
+        got: `${(found.binding?.mapping.rmsDisplacementAngstrom ?? 0).toFixed(3)} Å rms off`,
+        hint: 'Make sure that both are the same compound and polymorph.',
       },
     );
   }

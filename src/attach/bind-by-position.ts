@@ -169,6 +169,8 @@ export interface PositionBinding {
   readonly refusal: Exclude<StructureMatch, { kind: 'match' }> | null;
   readonly isAmbiguous: boolean;
   readonly isTransposed: boolean;
+  /** How often a wrong structure would agree as well, where structures were matched; else null. */
+  readonly chance: number | null;
 }
 
 const share = ({ mapping }: Binding): number => mapping.matched / Math.max(1, mapping.atoms);
@@ -192,7 +194,7 @@ function bindWith(
   target: AttachTarget,
   lattice: Lattice,
 ): PositionBinding {
-  const plain = { refusal: null, isAmbiguous: false, isTransposed: false };
+  const plain = { refusal: null, isAmbiguous: false, isTransposed: false, chance: null };
   const inPlace = sameCell(setLattice.cell, lattice.cell)
     ? bindInPlace(source, setLattice, lattice, target)
     : null;
@@ -218,9 +220,13 @@ function bindWith(
       ...plain,
       binding: fromFit(source, atoms, crystal, match.fit),
       isAmbiguous: match.rivals.length > 0,
+      chance: match.chance,
     };
   }
-  const refusal = match.kind === 'match' ? ({ kind: 'other-atoms', best: match.fit } as const) : match;
+  const refusal =
+    match.kind === 'match'
+      ? ({ kind: 'other-atoms', best: match.fit, largestAngstrom: match.largestAngstrom } as const)
+      : match;
   return { ...plain, binding: inPlace, refusal: inPlace ? null : refusal };
 }
 

@@ -11,6 +11,7 @@ import {
 import { length } from '#src/base/vector3.ts';
 import { distinctRotations } from '#src/crystal/group.ts';
 import type { SymmetryOperation } from '#src/crystal/symmetry-operation.ts';
+import { believedCost, chanceLaw, chanceWithin } from './chance-agreement.ts';
 import { nearestOrthogonal } from './frame-rotation.ts';
 import type { LatticeTolerance } from './lattice-maps.ts';
 import { latticeMaps, latticeStrain } from './lattice-maps.ts';
@@ -30,20 +31,24 @@ export const latticeTolerances: readonly LatticeTolerance[] = [
 const excellentAngstrom = 0.02;
 /** Fits whose costs differ by less than this are one fit by the crystal's symmetry: the simplest is taken, Å. */
 const tieAngstrom = 0.003;
-/**
- * For a fit to be believed so many of the source's atoms must be found, and their displacement be no larger on average, atoms that
- * were not found counting as 0.7 Å off: atoms at random places come to 0.55 Å, rarely below 0.4 Å where symmetry leaves few of them free.
- */
+/** Share of the source's atoms that must be found for a fit to be believed; those that are not count as 0.7 Å off. */
 export const leastFitShare = 0.75;
-export const largestCostAngstrom = 0.35;
 
 /** What came of laying one structure on another. */
 export type StructureMatch =
-  | { readonly kind: 'match'; readonly fit: StructureFit; readonly rivals: readonly StructureFit[] }
+  | {
+      readonly kind: 'match';
+      readonly fit: StructureFit;
+      readonly rivals: readonly StructureFit[];
+      /** How often a wrong structure of the same elements and symmetry would agree as well (`chanceLaw`), at most 1. */
+      readonly chance: number;
+      /** The largest rms displacement that was believed, Å. */
+      readonly largestAngstrom: number;
+    }
   /** No cell of the one is a cell of the other. */
   | { readonly kind: 'other-lattice'; readonly source: ReducedLattice; readonly target: ReducedLattice }
   /** The lattices agree, the atoms do not; the best of the fits, if there was one. */
-  | { readonly kind: 'other-atoms'; readonly best: StructureFit | null }
+  | { readonly kind: 'other-atoms'; readonly best: StructureFit | null; readonly largestAngstrom: number }
   | { readonly kind: 'too-many' };
 
 /** M of source rows = M × crystal rows, from a map of the smaller reduced lattice onto the larger. */
@@ -96,9 +101,9 @@ function bestOf(fits: readonly StructureFit[]): StructureFit | null {
   return tied.reduce<StructureFit | null>((best, fit) => (!best || isPlainer(fit, best) ? fit : best), null);
 }
 
-export function isBelievable(fit: StructureFit): boolean {
+function isBelievable(fit: StructureFit, largestAngstrom: number): boolean {
   const found = fit.sought - fit.missing.length;
-  return found >= leastFitShare * fit.sought && found > 0 && fit.costAngstrom <= largestCostAngstrom;
+  return found >= leastFitShare * fit.sought && found > 0 && fit.costAngstrom <= largestAngstrom;
 }
 
 /** The operation of the crystal that would turn one fit into another is one of the listed operations. */
@@ -177,6 +182,8 @@ export function matchStructure(
 ): StructureMatch {
   const reduced = { source: reducedLattice(source), target: reducedLattice(target) };
   const fitted = fitTarget(target);
+  const law = chanceLaw(target, operations);
+  const largestAngstrom = believedCost(law);
   let all: StructureFit[] = [];
   let maps = 0;
   for (const tolerance of latticeTolerances) {
@@ -188,13 +195,20 @@ export function matchStructure(
     all = found.fits;
     maps = found.maps;
     const best = bestOf(all);
-    if (best && isBelievable(best) && best.costAngstrom < 0.1) break;
+    if (best && isBelievable(best, largestAngstrom) && best.costAngstrom < 0.1) break;
   }
   const best = bestOf(all);
-  if (best && isBelievable(best)) {
-    return { kind: 'match', fit: best, rivals: rivalsOf(best, all, operations) };
+  if (best && isBelievable(best, largestAngstrom)) {
+    const rivals = rivalsOf(best, all, operations);
+    return {
+      kind: 'match',
+      fit: best,
+      rivals,
+      chance: chanceWithin(law, best.costAngstrom),
+      largestAngstrom,
+    };
   }
-  return maps === 0 ? { kind: 'other-lattice', ...reduced } : { kind: 'other-atoms', best };
+  return maps === 0 ? { kind: 'other-lattice', ...reduced } : { kind: 'other-atoms', best, largestAngstrom };
 }
 
 /** The orthogonal matrix that turns the source's Cartesian frame into the crystal's; improper for a mirrored fit. */

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { believedCost, chanceLaw, chanceWithin, toleratedChance } from '#src/attach/chance-agreement.ts';
 import { matchStructure, rotationOfFit } from '#src/attach/match-structure.ts';
 import type { StructureAtoms } from '#src/attach/structure-atoms.ts';
 import type { Mat3, Vec3, VecFrac } from '#src/base/matrix3.ts';
@@ -191,13 +192,80 @@ describe.each(systems)('a structure laid on a %s crystal', (_name, hall, cell) =
   it('refuses another structure in the same cell, and another cell', () => {
     const random = seededRandom(14);
     const model = crystalOf(hall, cell, 4);
-    const other = disguised(crystalOf(hall, cell, 9), identity3, { strain: 0, moved: 0 }, random);
+    // another draw of one independent atom may fall on the same place: 'trust in a match' counts how often
+    const { source } = disguised(crystalOf(hall, cell, 9), identity3, { strain: 0, moved: 0 }, random);
     if (model.atoms.length > 3) {
-      expect(matchStructure(other.source, targetOf(model), operations).kind).toBe('other-atoms');
+      expect(matchStructure(source, targetOf(model), operations).kind).toBe('other-atoms');
     }
     const larger = { ...cell, a: cell.a * 1.2, c: cell.c * 0.91 };
     const strange = { ...targetOf(model), lattice: latticeFromCell(larger) };
     expect(matchStructure(strange, targetOf(model), operations).kind).not.toBe('match');
+  });
+});
+
+describe('trust in a match', () => {
+  /** Wrong structures of the same elements, atoms and group in the same cell, strained: how many are believed. */
+  const believed = (hall: string, cell: CellConstants, runs: number): number => {
+    const operations = operationsFromHall(hall)!;
+    const random = seededRandom(16);
+    let count = 0;
+    for (let run = 0; run < runs; run += 1) {
+      const model = crystalOf(hall, cell, 500 + 2 * run);
+      const other = crystalOf(hall, cell, 90_000 + 2 * run);
+      const { source } = disguised(other, unimodular(random), { strain: 0.01, moved: 0 }, random);
+      if (matchStructure(source, targetOf(model), operations).kind === 'match') count += 1;
+    }
+    return count;
+  };
+
+  it('believes no wrong structure of three or four independent atoms', () => {
+    for (const index of [0, 1, 2, 5]) {
+      const [, hall, cell] = systems[index]!;
+      expect(believed(hall, cell, 15)).toBe(0);
+    }
+  });
+
+  it('believes wrong structures of one independent atom as seldom as chance has it', () => {
+    for (const index of [3, 4, 6, 8]) {
+      const [, hall, cell] = systems[index]!;
+      const law = chanceLaw(targetOf(crystalOf(hall, cell, 1)), operationsFromHall(hall)!);
+      const expected = 40 * chanceWithin(law, believedCost(law));
+      // three standard deviations of rare events above what is expected
+      expect(believed(hall, cell, 40)).toBeLessThanOrEqual(expected + 3 * Math.sqrt(expected) + 1);
+    }
+  });
+
+  it('refuses no right structure with atoms moved by up to 0.3 Å and strained by 2 %', () => {
+    const random = seededRandom(17);
+    for (const [, hall, cell] of systems.slice(0, 11)) {
+      const operations = operationsFromHall(hall)!;
+      for (let seed = 700; seed < 704; seed += 1) {
+        const model = crystalOf(hall, cell, seed);
+        const moved = disguised(model, unimodular(random), { strain: 0.02, moved: 0.3 }, random);
+        expect(matchStructure(moved.source, targetOf(model), operations).kind).toBe('match');
+      }
+    }
+  });
+
+  it('takes the same crystal made twice for what it is', () => {
+    // two seeds whose only independent atom fell on one place of I 41/a c d, 0.039 Å apart: all 32 atoms agree, as they must
+    const [, hall, cell] = systems[6]!;
+    const [one, two] = [crystalOf(hall, cell, 4), crystalOf(hall, cell, 5)];
+    const match = matchStructure(targetOf(two), targetOf(one), operationsFromHall(hall)!);
+    if (match.kind !== 'match') throw new Error(match.kind);
+    expect(match.fit.links).toHaveLength(32);
+    expect(match.chance).toBeLessThan(toleratedChance);
+    const spread = match.fit.links.map(({ distanceAngstrom }) => distanceAngstrom);
+    expect(Math.max(...spread) - Math.min(...spread)).toBeLessThan(1e-6);
+  });
+
+  it('counts chance as elementary geometry has it', () => {
+    // one independent atom of 8 in 480 Å³ and a fixed origin: 8 origins × 8/480 Å⁻³ × 4π/3 c³
+    const operations = operationsFromHall('-P 2ac 2n')!;
+    const lattice = latticeFromCell({ a: 8, b: 6, c: 10, alpha: 90, beta: 90, gamma: 90 });
+    const positions = Array.from({ length: 8 }, () => [0, 0, 0] as unknown as VecFrac);
+    const law = chanceLaw({ lattice, positions, elements: positions.map(() => 'O') }, operations);
+    expect(chanceWithin(law, 0.3)).toBeCloseTo(8 * (8 / 480) * ((4 * Math.PI) / 3) * 0.027, 9);
   });
 });
 
