@@ -2,7 +2,8 @@ import { parseArgs } from 'node:util';
 import type { Reference } from '#src/dossier/dossier.ts';
 import type { DossierSettings } from '#src/dossier/dossier.ts';
 import { defaultSettings } from '#src/dossier/default-settings.ts';
-import { nuclide } from '#src/data/nuclides.ts';
+import { elementOf } from '#src/data/elements.ts';
+import { nuclide, nuclidesOf } from '#src/data/nuclides.ts';
 import { latticeSettings } from '#src/crystal/settings.ts';
 import { UsageError } from './io.ts';
 
@@ -30,8 +31,25 @@ const commonOptions = {
 
 function knownNuclide(name: string, option: string) {
   const found = nuclide(name);
-  if (!found) throw new UsageError(`--${option} ${name}: no such nuclide; write it like 27Al.`);
+  if (!found) throw new UsageError(`--${option} ${name}: ${unknownNuclideReason(name)}`);
   return found;
+}
+
+/** Nuclei of even mass and even charge have spin 0 in their ground state, without exception. */
+function unknownNuclideReason(name: string): string {
+  const [, mass = '', symbol = ''] = /^\s*(\d{1,3})([a-z]{1,2})\s*$/i.exec(name) ?? [];
+  const element = elementOf(symbol.charAt(0).toUpperCase() + symbol.slice(1).toLowerCase());
+  if (!element) return 'no such nuclide; write it like 27Al.';
+  const own = nuclidesOf(element.symbol).map((one) => one.symbol);
+  const isEven = Number(mass) % 2 === 0 && element.atomicNumber % 2 === 0;
+  const why = isEven
+    ? 'a nuclide of even mass and even charge has spin 0 and no signal'
+    : 'it is not in the table of nuclides';
+  const allowed =
+    own.length > 0
+      ? `of ${element.symbol} allowed are ${own.join(', ')}.`
+      : `the table has none of ${element.symbol}.`;
+  return `${why}; ${allowed}`;
 }
 
 function finite(text: string, option: string): number {
@@ -89,6 +107,8 @@ function plainSentence(error: unknown): string {
   const message = error instanceof Error ? error.message : String(error);
   const unknown = /Unknown option '([^']+)'/.exec(message);
   if (unknown) return `No option is called ${unknown[1]}; ellipsite --help lists them.`;
+  const negative = /Option '--tolerance[^']*' argument is ambiguous/.test(message);
+  if (negative) return '--tolerance must be positive: allowed are 0 < Å ≤ 1.';
   const missing =
     /Option '([^' ]+)[^']*'[^.]*argument missing|Option '([^' ]+)[^']*' argument is ambiguous/.exec(message);
   if (missing) return `${missing[1] ?? missing[2]} needs a value; ellipsite --help says which.`;

@@ -36,11 +36,16 @@ function crystalInFrame(crystal: Crystal, lattice: Lattice): Crystal {
 /**
  * The same crystal and sets with the Cartesian setting the user named in place of the given one: cell, fractional
  * coordinates and the nine numbers of each tensor stay, the frame they are read in changes. All named settings are
- * right-handed: on left-handed axes nothing is changed and `frame-left-handed` is raised.
+ * right-handed: on left-handed axes nothing is changed and `frame-left-handed` is raised. Without tensors `frame-without-tensors` is.
  */
 export function inNamedFrame(input: FramedInput, frame: string | null, log: ProblemLog): FramedInput {
   const { crystal, sets } = input;
-  if (frame === null || !crystal.lattice) return input;
+  if (frame === null) return input;
+  if (sets.length === 0) {
+    const message = `There are no tensors: the frame ${frame} has nothing to act on but the Cartesian positions.`;
+    log.add('note', 'frame-without-tensors', message, { place: crystal.place });
+  }
+  if (!crystal.lattice) return input;
   const lattices = [crystal.lattice, ...sets.flatMap((set) => set.lattice ?? [])];
   if (lattices.some(isLeftHanded)) {
     log.add(
