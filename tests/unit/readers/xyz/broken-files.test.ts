@@ -51,7 +51,7 @@ describe('counts', () => {
   });
 
   it('skips blank lines among the rows', () => {
-    const { structures, problems } = read('2\n\nO 0 0 0\n\n \nC 0 0 0\n');
+    const { structures, problems } = read('2\n\nO 0 0 0\n\n \nC 0 0 1\n');
     expect(structures[0]?.sites).toHaveLength(2);
     expect(problems).toEqual([]);
   });
