@@ -90,6 +90,7 @@ export function buildScene(whole: CrystalDossier, options: Partial<SceneOptions>
         ...visible.notes,
         ...(choice?.notes ?? []),
         ...(tensors?.notes ?? []),
+        ...(drawing && dossier.orientation ? [dossier.orientation.sentence] : []),
         ...(asked.displacement !== 'none' && !displacement ? [noDisplacements] : []),
       ],
     }),
