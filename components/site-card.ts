@@ -76,6 +76,11 @@ export class SiteCard extends StoreElement {
         }
         ${facts(site, atom, crystal)}
         ${
+          crystal.orientation && (site.shielding || site.shift || site.efg)
+            ? html`<p class="orientation">${crystal.orientation.sentence}</p>`
+            : nothing
+        }
+        ${
           !site.shielding && !site.shift && !site.efg
             ? html`<p class="soft">The files hold no tensor for this site.</p>`
             : nothing

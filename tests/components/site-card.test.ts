@@ -69,3 +69,14 @@ describe('the site card of an atom with displacements', () => {
     expect(facts()).toContain('0.0100, 0.0200, 0.0300, 0.0010, −0.0020, 0.0000 Å²');
   });
 });
+
+describe('the site card of a crystal whose tensors have no settled frame', () => {
+  it('says so', async () => {
+    const sentence = 'The frame of the tensors is undetectable by symmetry: orientations are shown as if.';
+    const orientation = { sentence, sets: ['t'], inUse: 'x', open: ['x', 'y'] };
+    page = await mountWorkbench(fixtureCase({ ...fixtureDossier, orientation }));
+    page.store.select({ siteIndex: 0, atomId: null });
+    await settle();
+    expect(textOf(card().querySelector('.orientation'))).toContain('undetectable by symmetry');
+  });
+});
