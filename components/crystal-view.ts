@@ -297,8 +297,9 @@ export class CrystalView extends StoreElement {
       case 'pivot':
         this.#setPivots(!this.pivots);
         return true;
+      case 'takeBack':
       case 'clear':
-        return this.#marker.clear();
+        return command.do === 'clear' ? this.#marker.clear() : this.#marker.takeBack();
       case 'look':
         return picture.lookAlongText(command.along);
       case 'step': {
@@ -320,7 +321,6 @@ export class CrystalView extends StoreElement {
     else void this.#openPanel(open);
   }
 
-  /** The focus goes into the panel, so that keys act there. */
   async #openPanel(open: PicturePanel): Promise<void> {
     await loadPanel((this.open = open));
     this.requestUpdate();

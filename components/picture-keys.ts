@@ -5,7 +5,7 @@ export type PictureCommand =
   | { readonly do: 'zoom'; readonly factor: number }
   /** A direction as it is typed: `a`, `-a`, `a*`. */
   | { readonly do: 'look'; readonly along: string }
-  | { readonly do: 'first' | 'fit' | 'toSelection' | 'pivot' | 'help' | 'measure' | 'type' | 'clear' }
+  | { readonly do: 'first' | 'fit' | 'toSelection' | 'pivot' | 'help' | 'measure' | 'type' | 'clear' | 'takeBack' }
   /** To the next or previous atom in reading order. */
   | { readonly do: 'step'; readonly by: 1 | -1 }
   | { readonly do: 'choose'; readonly adds: boolean };
@@ -36,6 +36,7 @@ export const keyRows: readonly KeyRow[] = [
   { shown: 'Enter', words: 'select that atom' },
   { shown: 'Space', words: 'add it to the selection, or take it away' },
   { shown: 'm', words: 'measure' },
+  { shown: 'Backspace', words: 'take back the last atom picked for a measurement' },
   { shown: 'Esc', words: 'end measuring, clear the selection' },
   { shown: '?', words: 'this list' },
 ];
@@ -80,6 +81,7 @@ const plainKeys: Readonly<Record<string, PictureCommand>> = {
   Enter: { do: 'choose', adds: false },
   ' ': { do: 'choose', adds: true },
   m: { do: 'measure' },
+  Backspace: { do: 'takeBack' },
   Escape: { do: 'clear' },
   '?': { do: 'help' },
 };

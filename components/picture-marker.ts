@@ -75,6 +75,14 @@ export class PictureMarker {
     return true;
   }
 
+  /** The last atom picked for what is being measured, no longer. False where there is none. */
+  takeBack(): boolean {
+    const { store } = this.#host;
+    if (!store || this.#kind === null || this.marks.length === 0) return false;
+    this.#pick(this.marks.slice(0, -1), store);
+    return true;
+  }
+
   /** The picked atoms, or the one atom that is selected elsewhere, at its own place. */
   #seeded(store: Store): readonly PickedAtom[] {
     const { selection } = store.state;

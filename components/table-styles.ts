@@ -73,7 +73,7 @@ export const tableStyles = css`
   .head {
     position: sticky;
     top: 0;
-    z-index: 1;
+    z-index: 2;
     height: 32px;
     background: var(--paper);
     color: var(--soft);

@@ -231,7 +231,9 @@ function sizeKey(
     ? 'tensors too small to be seen at this scale'
     : isBare
       ? 'without a tensor'
-      : 'tensors not drawn';
+      : plain.length > 0
+        ? 'tensors not drawn'
+        : 'atoms whose tensor is drawn elsewhere';
   return { tiny: names(tiny), elementsWords: choice.colourBy === 'element' ? null : words };
 }
 

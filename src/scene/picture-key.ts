@@ -28,7 +28,7 @@ export function lengthWords(scale: TensorScale): string {
 const subjects: Readonly<Record<SceneQuantity, string>> = {
   shielding: 'shielding tensors σ/ppm',
   shift: 'shift tensors δ/ppm',
-  efg: 'electric field gradients V/a.u.',
+  efg: 'electric field gradients (atomic units)',
 };
 
 /** What the glyphs are, where no colour bar of the same quantity says it. */

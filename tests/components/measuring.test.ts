@@ -96,6 +96,25 @@ describe('measuring in the picture', () => {
     );
   });
 
+  it('Backspace takes back one picked atom after another', async () => {
+    const page = await drawnPage();
+    const { root, stage, store } = page;
+    const panel = await openPanel(root, 'Measure', 'ellipsite-measure-panel');
+    buttonOf(panel, 'angle').click();
+    await settle();
+    const points = await atomPoints(page);
+    click(stage, points[0]!.x, points[0]!.y);
+    click(stage, points[1]!.x, points[1]!.y);
+    await settle();
+    expect(root.querySelectorAll('.mark')).toHaveLength(2);
+    press(stage, 'Backspace');
+    await settle();
+    expect(store.state.picked.map(({ atomId }) => atomId)).toEqual([points[0]!.atomId]);
+    press(stage, 'Backspace');
+    expect(store.state.picked).toEqual([]);
+    expect(store.state.measurements).toEqual([]);
+  });
+
   it('a second press with Shift takes an atom away again, a plain one starts anew', async () => {
     const page = await drawnPage();
     const [one, other] = await atomPoints(page);

@@ -149,6 +149,8 @@ export function scanLine(text: string, from: number, to: number): boolean {
       end = wordEnd(text, at, to);
       piece = wordClass;
     } else if (kind === point && next === digit) {
+      // `Al.1` is a name and its number, `Al .1` is not
+      if (at === lastEnd && count > 0 && !lastIsNumber) return false;
       end = numberEnd(text, at, to, false);
       piece = numberClass;
     } else if (kind === sign && (next === digit || next === point)) {

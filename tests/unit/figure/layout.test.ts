@@ -164,7 +164,7 @@ describe('a figure laid out', () => {
     expect(new Set(lines(layoutFigure(scene, request), names)).size).toBe(1);
     const efg = buildScene(madeQuartz(), { quantity: 'efg' });
     const [subject, positive, negative] = lines(layoutFigure(efg, request), [
-      'electric field gradients V/a.u.',
+      'electric field gradients (atomic units)',
       'positive',
       'negative (striped)',
     ]);

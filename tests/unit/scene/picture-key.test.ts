@@ -92,7 +92,7 @@ describe('the key', () => {
   it('names the glyphs where no colour bar of the same quantity does', () => {
     const subject = (options: Parameters<typeof buildScene>[1]) =>
       buildScene(madeQuartz(), options).key!.subject;
-    expect(subject({ quantity: 'efg' })).toBe('electric field gradients V/a.u.');
+    expect(subject({ quantity: 'efg' })).toBe('electric field gradients (atomic units)');
     expect(subject({ quantity: 'efg', colourBy: 'vzz' })).toBeNull();
     expect(subject({ quantity: 'shielding', colourBy: 'element' })).toBe('shielding tensors σ/ppm');
     expect(subject({ quantity: 'shielding', colourBy: 'vzz' })).toBe('shielding tensors σ/ppm');

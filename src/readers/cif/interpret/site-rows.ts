@@ -262,13 +262,19 @@ function placeOfRow(view: BlockView, table: CategoryTable, row: number): Place {
   return value ? placeOfValue(view, value) : placeOfValue(view, view.block);
 }
 
+/** A warning, for the file itself says that it does not know. */
 function reportMissing(label: string, place: Place, log: ProblemLog): void {
-  log.add('error', 'cif-missing-coordinates', `${label} has no complete coordinates; the row was left out.`, {
-    place,
-    got: '? or .',
-    allowed: 'three numbers',
-    hint: 'The atom exists in the crystal but was not located: composition and pictures lack it.',
-  });
+  log.add(
+    'warning',
+    'cif-missing-coordinates',
+    `${label} has no complete coordinates; the row was left out.`,
+    {
+      place,
+      got: '? or .',
+      allowed: 'three numbers',
+      hint: 'The atom exists in the crystal but was not located: composition and pictures lack it.',
+    },
+  );
 }
 
 /** Cells from the origin beyond which a list is hardly one of fractions. */

@@ -36,9 +36,9 @@ describe('coordinates', () => {
     expect(only(reading).sites.map(({ label }) => label)).toEqual(['C1']);
     const missing = reading.problems.filter(({ code }) => code === 'cif-missing-coordinates');
     expect(missing.map(({ line, severity }) => [line, severity])).toEqual([
-      [18, 'error'],
-      [19, 'error'],
-      [20, 'error'],
+      [18, 'warning'],
+      [19, 'warning'],
+      [20, 'warning'],
     ]);
   });
 
