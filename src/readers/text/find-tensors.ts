@@ -10,6 +10,7 @@ import { NamedFinder } from './named-finder.ts';
 import { PrincipalFinder } from './principal-finder.ts';
 import { areOrthonormal } from './principal-tensor.ts';
 import { digitsOf, printedIn } from './printed-values.ts';
+import { linePieces } from './line-pieces.ts';
 import type { NearLine, PrintedValue, RawTensor } from './raw-tensor.ts';
 import { rowTensor } from './row-finder.ts';
 import type { TablePrinted } from './table-finder.ts';
@@ -80,6 +81,12 @@ class TensorFinder implements LineFinder<TensorSightings> {
   );
 
   take(line: TextLine): void {
+    const pieces = linePieces(line);
+    if (pieces === null) this.#takeOne(line);
+    else for (const piece of pieces) this.#takeOne(piece);
+  }
+
+  #takeOne(line: TextLine): void {
     const shape = line.shaped?.shape;
     const isBlank = (shape?.count ?? line.tokens.length) === 0;
     const row = isBlank ? null : dataRow(line);

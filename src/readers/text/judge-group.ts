@@ -70,7 +70,10 @@ export function judgeGroup(whole: TensorGroup, text: TextEvidence): JudgedGroup 
   const looks = tensors[0]?.looks ?? 'tensor';
   const decoy = topic.decoy?.value ?? (looks === 'tensor' ? null : looks);
   if (topic.decoy) evidence.push(`“${topic.decoy.words}” in line ${topic.decoy.line}`);
-  const quantity = decoy === null ? quantityOf(topic, facts, whole, evidence) : 'unknown';
+  const refuted = decoy === null ? refutedIn(facts) : null;
+  if (refuted !== null)
+    evidence.push(`the isotropic value printed in line ${refuted} is not that of these components`);
+  const quantity = decoy === null && refuted === null ? quantityOf(topic, facts, whole, evidence) : 'unknown';
   const unit = quantity === 'unknown' ? unitSaid(topic) : unitOf(quantity, topic, facts, text, evidence);
   if (sixes) evidence.push(sixes.evidence);
   if (proved > 0) evidence.push(proofSentence(matches, facts.length));
@@ -112,6 +115,20 @@ function matchesOf({ raw, values, printed }: Facts): MatchedValue[] {
   return printed
     .filter((value) => proves(value, own, raw.digits))
     .map(({ kind, values: given, line }) => ({ kind, printed: given, line }));
+}
+
+/** First line whose own isotropic value is not that of its numbers, where that holds for most such lines of the group. */
+function refutedIn(facts: readonly Facts[]): number | null {
+  let agreeing = 0;
+  const others: number[] = [];
+  for (const { raw, values, printed } of facts) {
+    const own = factsOf(values);
+    const isotropic = printed.filter(({ kind, line }) => kind === 'isotropic' && line === raw.line);
+    if (own === null || isotropic.length === 0 || raw.shape === 'block') continue;
+    if (isotropic.some((value) => proves(value, own, raw.digits))) agreeing++;
+    else others.push(raw.line);
+  }
+  return others.length > agreeing ? others[0]! : null;
 }
 
 function proofSentence(matches: readonly (readonly MatchedValue[])[], count: number): string {

@@ -3,7 +3,7 @@ import { atomKey, atomMention, symbolOf } from './atom-mention.ts';
 import { fromComponents, isWhole } from './component-name.ts';
 import type { DataRow } from './data-row.ts';
 import type { PrintedValue } from './raw-tensor.ts';
-import { digitsOf } from './printed-values.ts';
+import { digitsOf, printedIn } from './printed-values.ts';
 import type { TableHeader } from './table-header.ts';
 import { cellsOf, tableHeader, withoutTypesetting } from './table-header.ts';
 import { rowCells } from './table-rows.ts';
@@ -106,6 +106,7 @@ export class TableFinder {
         this.#print({ atom, value: printed });
       }
     }
+    for (const value of printedIn(values.behind ?? '', line.number)) this.#print({ atom, value });
     if (isWhole(places)) this.#whole(atom, places, texts, line.number);
     else if (places.size > 0) this.#partial(atom, places, texts, line.number);
     return true;

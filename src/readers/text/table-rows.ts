@@ -1,3 +1,4 @@
+import { isWholeNumber } from './atom-mention.ts';
 import type { DataRow } from './data-row.ts';
 import type { TableHeader } from './table-header.ts';
 import type { TextLine, TextToken } from './text-line.ts';
@@ -7,6 +8,8 @@ export interface RowCells {
   readonly numbers: ReadonlyMap<number, { readonly value: number; readonly text: string }>;
   readonly names: string;
   readonly columns: ReadonlyMap<string, string>;
+  /** What stands behind the columns under a name of its own, such as `iso= 156.3`. */
+  readonly behind?: string;
 }
 
 /** Columns between the end of a header's word and of its number at most. */
@@ -17,7 +20,8 @@ const aligned = 9;
  * where they are as many, else by where they stand, else from the right.
  */
 export function rowCells(header: TableHeader, line: TextLine, row: DataRow | null): RowCells | null {
-  const cells = line.tokens.filter(({ kind }) => kind !== 'mark');
+  const end = namedTail(line.tokens);
+  const cells = line.tokens.slice(0, end).filter(({ kind }) => kind !== 'mark');
   const numbers = cells.filter(({ kind }) => kind === 'number');
   const wanted = header.columns.flatMap(({ kind }, at) =>
     kind.is === 'component' || kind.is === 'printed' ? [at] : [],
@@ -27,6 +31,7 @@ export function rowCells(header: TableHeader, line: TextLine, row: DataRow | nul
   if (cells.filter(({ kind }) => kind === 'word').length > 4) return null;
   const paired =
     pairedByCount(header, cells, wanted) ??
+    pairedAfterNumber(header, numbers, wanted) ??
     pairedByPlace(header, numbers, wanted) ??
     pairedFromRight(header, numbers, wanted);
   if (paired === null) return null;
@@ -40,7 +45,31 @@ export function rowCells(header: TableHeader, line: TextLine, row: DataRow | nul
       .replace(/[|;:,]+/g, ' ')
       .trim(),
     columns,
+    behind: line.text.slice(line.tokens[end]?.start ?? line.text.length),
   };
+}
+
+/** Piece at which values begin that have a name and an equals sign of their own, after the numbers of a row. */
+function namedTail(tokens: readonly TextToken[]): number {
+  const first = tokens.findIndex(({ kind, text }) => kind === 'number' && text.includes('.'));
+  if (first < 0) return tokens.length;
+  const sign = tokens.findIndex(({ kind, text }, at) => at > first && kind === 'mark' && /^[=:]$/.test(text));
+  if (sign < 0) return tokens.length;
+  let start = sign;
+  while (start > first && tokens[start - 1]!.kind !== 'number') start--;
+  while (start < sign && tokens[start]!.kind !== 'word') start++;
+  return start < sign ? start : tokens.length;
+}
+
+/** Under a line that ends with its components, a whole number before as many others is the atom's. */
+function pairedAfterNumber(
+  header: TableHeader,
+  numbers: readonly TextToken[],
+  wanted: readonly number[],
+): Map<number, TextToken> | null {
+  const isAtEnd = wanted[0] === header.columns.length - wanted.length;
+  if (!isAtEnd || numbers.length !== wanted.length + 1 || !isWholeNumber(numbers[0])) return null;
+  return new Map(wanted.map((at, i) => [at, numbers[i + 1]!]));
 }
 
 function pairedByCount(
