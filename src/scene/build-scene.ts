@@ -109,6 +109,7 @@ export function buildScene(whole: CrystalDossier, options: Partial<SceneOptions>
       atoms: drawn,
       hasCell: dossier.lattice !== null,
     }),
+    colourNotes: choice?.notes ?? [],
     sizeNotes: sizes && scale ? sizeSentences(sizes, scale.quantity) : [],
     drawnInstead: sharedPositions(dossier).drawnInstead,
     tensorElements: choice?.elements ?? null,

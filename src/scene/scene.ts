@@ -235,6 +235,8 @@ export interface Scene {
   readonly unfollowed?: readonly string[];
   /** Sentences on tensors that the one scale of the picture hides, with their sizes. Absent: none. */
   readonly sizeNotes?: readonly string[];
+  /** Sentences on what the colours cannot say: no such number, nothing but rounding, values beyond typed limits. Absent: none. */
+  readonly colourNotes?: readonly string[];
   /** Colours of positive and negative lobes where all polar surfaces have the same two, for a key beside the picture. */
   readonly lobeColours?: {
     readonly positive: readonly [number, number, number];

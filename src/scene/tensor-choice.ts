@@ -131,7 +131,15 @@ function chooseColours(
   }
   if (isNothing) notes.push(nothingButRounding(coloured, digits));
   if (values.size < sites.length) notes.push('Grey tensors have no such number.');
-  return { legend, colours, values, colourBy: isKnown ? colourBy : 'isotropic', coloured, notes };
+  notes.push(...beyondLimits(legend, coloured, [...values.values()]));
+  return {
+    legend: isNothing ? null : legend,
+    colours,
+    values,
+    colourBy: isKnown ? colourBy : 'isotropic',
+    coloured,
+    notes,
+  };
 }
 
 function isWithinRounding(values: ReadonlyMap<number, number>): boolean {
@@ -143,6 +151,16 @@ function isWithinRounding(values: ReadonlyMap<number, number>): boolean {
 function nothingButRounding({ unit }: ColouredValue, digits: number): string {
   const half = `${(0.5 * 10 ** -digits).toFixed(digits + 1)}${unit ? ` ${unit}` : ''}`;
   return `All of these numbers are zero within rounding, below ${half}: the tensors are grey.`;
+}
+
+/** Typed limits may be narrower than the values: then the ends of the bar stand for more than themselves. */
+function beyondLimits(legend: Legend, { unit }: ColouredValue, values: readonly number[]): string[] {
+  const [least, most] = [Math.min(...values), Math.max(...values)];
+  const rounding = 0.5 * 10 ** -legend.digits;
+  if (!(least < legend.low - rounding || most > legend.high + rounding)) return [];
+  const printed = (value: number): string => `${value.toFixed(legend.digits)}`.replace('-', '−');
+  const range = `${printed(least)} to ${printed(most)}${unit ? ` ${unit}` : ''}`;
+  return [`Values reach from ${range}: those beyond the colour bar have the colours of its ends.`];
 }
 
 function isDefined(value: number | null): value is number {

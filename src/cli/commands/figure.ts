@@ -155,6 +155,7 @@ function figureProblems(scene: Scene, { labelsLeftOut, isTurned }: Sheet): Probl
   for (const sentence of scene.unfollowed ?? []) {
     found.push(problem('warning', 'figure-wish-unfollowed', sentence));
   }
+  for (const sentence of scene.colourNotes ?? []) found.push(problem('note', 'figure-colours', sentence));
   for (const sentence of scene.sizeNotes ?? []) {
     const hint = 'Drawn alone, with --elements, they have a scale of their own.';
     found.push(problem('note', 'figure-tensors-hidden', sentence, { hint }));

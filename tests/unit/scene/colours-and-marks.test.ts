@@ -131,27 +131,33 @@ describe('what colours say', () => {
     ['residual', [4e-13, 0]],
     ['residual', [0.004, 0.0049]],
     ['difference', [2.3e-13, -2.3e-13]],
-  ] as const)(
-    '%s of %j ppm is nothing but rounding: grey, on a bar of at least 0.1 ppm, and said',
-    (colourBy, sizes) => {
-      const made = ([a, b]: readonly [number, number]) =>
-        colourBy === 'residual'
-          ? three([
-              withNumbers(first!, { symmetryResidual: a }),
-              withNumbers(second!, { symmetryResidual: b }),
-            ])
-          : three([other(1580 / 3 + a), other(1555 / 3 + b)]);
-      const scene = buildScene(made(sizes), { quantity: 'shielding', colourBy });
-      const [r, g, b] = colourAt(scene, 0);
-      expect(Math.max(r!, g!, b!) - Math.min(r!, g!, b!)).toBeLessThan(16);
-      expect(colourAt(scene, 1)).toEqual([r, g, b]);
-      expect(scene.quadrics.patterns).toBeUndefined();
-      // 0.01 ppm is the last printed digit
-      expect(scene.legend!.high - scene.legend!.low).toBeGreaterThanOrEqual(0.1);
-      expect(scene.legend!.digits).toBeLessThanOrEqual(2);
-      expect(scene.caption).toContain('zero within rounding, below 0.005 ppm');
-    },
-  );
+  ] as const)('%s of %j ppm is nothing but rounding: grey, without a bar, and said', (colourBy, sizes) => {
+    const made = ([a, b]: readonly [number, number]) =>
+      colourBy === 'residual'
+        ? three([withNumbers(first!, { symmetryResidual: a }), withNumbers(second!, { symmetryResidual: b })])
+        : three([other(1580 / 3 + a), other(1555 / 3 + b)]);
+    const scene = buildScene(made(sizes), { quantity: 'shielding', colourBy });
+    const [r, g, b] = colourAt(scene, 0);
+    expect(Math.max(r!, g!, b!) - Math.min(r!, g!, b!)).toBeLessThan(16);
+    expect(colourAt(scene, 1)).toEqual([r, g, b]);
+    expect(scene.quadrics.patterns).toBeUndefined();
+    expect(scene.legend).toBeNull();
+    expect(scene.colourNotes).toHaveLength(1);
+    expect(scene.caption).toContain('zero within rounding, below 0.005 ppm');
+  });
+
+  it('values beyond typed limits are told, those within are not', () => {
+    const dossier = three([
+      withNumbers(first!, { anisotropy: 50 }),
+      withNumbers(second!, { anisotropy: 20 }),
+    ]);
+    const notes = (colourLimits: readonly [number, number]) =>
+      buildScene(dossier, { colourBy: 'anisotropy', colourLimits }).colourNotes;
+    expect(notes([0, 60])).toEqual([]);
+    expect(notes([30, 60])).toEqual([
+      'Values reach from 20 to 50 ppm: those beyond the colour bar have the colours of its ends.',
+    ]);
+  });
 
   it('an undefined number leaves a grey tensor and no colour for the site', () => {
     const dossier = three([
