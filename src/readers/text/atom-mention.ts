@@ -54,6 +54,9 @@ const unlikely = new Set([
   'Mo',
 ]);
 
+/** Words of a line that is read as a sentence, at least one more than this. */
+const sentence = 5;
+
 /** Tokens of a line that are looked at for a name. */
 const searched = 24;
 
@@ -226,7 +229,7 @@ function mentionAt(
     }
   }
   if (isEarly) {
-    const found = gluedName(text, at, words) ?? countedName(tokens, at);
+    const found = gluedName(text, at, words) ?? countedName(tokens, at, words);
     if (found) return { ...found, isSure: named };
     const element = symbolOf(text);
     if (element !== null) return beside(tokens, at, element, named || isOf, words);
@@ -251,13 +254,15 @@ function gluedName(text: string, at: number, words: number): AtomMention | null 
 }
 
 /** `3Si`, and `27Al 3` where the number in front is the nuclide's. */
-function countedName(tokens: readonly TextToken[], at: number): AtomMention | null {
+function countedName(tokens: readonly TextToken[], at: number, words: number): AtomMention | null {
   const parts = countedSymbol.exec(tokens[at]!.text);
   const element = parts && elementOf(parts[2] ?? '')?.symbol;
   if (!element) return null;
   const after =
     numberBeside(tokens, at + 1, 1) ?? (nuclide(tokens[at]!.text) ? numberOfSite(tokens, at + 1) : null);
   if (after && Number(parts[1]) > 0) return { ...blank, element, index: after.value, end: after.at + 1 };
+  // In a sentence a nuclide is what was measured: `shift tensors of 13C, principal values`.
+  if (words > sentence && nuclide(tokens[at]!.text) !== null) return null;
   return { ...blank, label: tokens[at]!.text, element, index: Number(parts[1]), end: at + 1 };
 }
 
@@ -292,6 +297,12 @@ function distantNumber(
   return numberBeside(tokens, at - 1, -1) === null ? numberOfSite(tokens, 0) : null;
 }
 
+/** `[Na] (1)`: the number after a symbol in brackets of its own. */
+function afterBracket(tokens: readonly TextToken[], at: number): { value: number; at: number } | null {
+  const around = `${tokens[at - 1]?.text ?? ''}${tokens[at + 1]?.text ?? ''}`;
+  return at === 1 && /^(?:\[\]|\(\))$/.test(around) ? numberBeside(tokens, at + 2, 1) : null;
+}
+
 function beside(
   tokens: readonly TextToken[],
   at: number,
@@ -304,7 +315,7 @@ function beside(
     return { ...blank, element, index: distant.value, end: Math.max(at, distant.at) + 1, isSure: named };
   }
   const isCounted = /^(?:no|nr|number|num|index)$/i.test(tokens[at + 1]?.text ?? '');
-  const after = numberBeside(tokens, at + (isCounted ? 2 : 1), 1);
+  const after = numberBeside(tokens, at + (isCounted ? 2 : 1), 1) ?? afterBracket(tokens, at);
   const before = numberBeside(tokens, at - 1, -1);
   if (words > 8 && !named) return null;
   if (before && (at - 1 === before.at || named || !after)) {

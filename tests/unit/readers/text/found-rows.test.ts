@@ -80,3 +80,31 @@ describe('several tensors on one line', () => {
     );
   });
 });
+
+describe('which atom is meant', () => {
+  it('a nuclide in a title is none, so that the first atom under it is not lost', () => {
+    const axes = ['( 1.0000 0.0000 0.0000 )', '( 0.0000 0.0000 1.0000 )', '( 0.0000 -1.0000 0.0000 )'];
+    const atom = (name: string, values: number[]): string[] => [
+      name,
+      ...values.map((value, at) => ` d${at + 1}${at + 1} = ${value.toFixed(1)}   ${axes[at]!}`),
+    ];
+    const title = 'Chemical shift tensors of 13C, principal values (ppm) and direction cosines';
+    const all = taken(title, ...atom('C1', [170.5, 160.5, 20.5]), ...atom('C2', [70.5, 60.5, 50.5]));
+    expect(all.map(({ atom: name, tensor }) => [name, tensor[0], tensor[4], tensor[8]])).toEqual([
+      ['C1', 170.5, 20.5, 160.5],
+      ['C2', 70.5, 50.5, 60.5],
+    ]);
+  });
+
+  it('element and number in brackets of their own', () => {
+    const all = taken(
+      'Field gradients (10^21 V/m2), six numbers V11 V22 V33 V23 V13 V12',
+      '[Na] (1)  0.123,0.456,-0.579;0.010/0.020/0.030',
+      '[Na] (2)  0.223,0.356,-0.579;0.011/0.021/0.031',
+    );
+    expect(all.map(({ atom, tensor }) => [atom, tensor])).toEqual([
+      ['Na1', [0.123, 0.03, 0.02, 0.03, 0.456, 0.01, 0.02, 0.01, -0.579]],
+      ['Na2', [0.223, 0.031, 0.021, 0.031, 0.356, 0.011, 0.021, 0.011, -0.579]],
+    ]);
+  });
+});
