@@ -3,6 +3,7 @@ import { atomKey } from './atom-mention.ts';
 import type { DataRow } from './data-row.ts';
 import { areOrthonormal, fromPrincipal } from './principal-tensor.ts';
 import type { Surroundings } from './text-context.ts';
+import { lineMeaning } from './line-meaning.ts';
 import type { TensorSeed } from './tensor-seed.ts';
 
 interface BlockRow {
@@ -99,25 +100,29 @@ export class BlockFinder {
     return own !== null && this.#length >= 3;
   }
 
-  /** Principal values over a matrix whose columns are their directions. */
+  /** Principal values over a matrix whose columns are their directions, or its rows where each is called one. */
   #emitPrincipal(rows: readonly BlockRow[], start: Surroundings): void {
     const [head, ...rest] = rows as [BlockRow, ...BlockRow[]];
     const matrix = rest.flatMap(({ values }) => values);
     if (matrix.length !== 9 || !areOrthonormal(matrix)) return;
-    const vectors = [0, 1, 2].map((k) => [matrix[k]!, matrix[3 + k]!, matrix[6 + k]!]);
+    const areRows = rest.every(({ row: { lead } }) => /\b(?:axis|(?:eigen)?vector|direction)\b/.test(lead));
+    const vectors = [0, 1, 2].map((k) =>
+      areRows ? matrix.slice(3 * k, 3 * k + 3) : [matrix[k]!, matrix[3 + k]!, matrix[6 + k]!],
+    );
     this.#emit({
       shape: 'principal',
       line: head.row.line,
       lastLine: rest[2]!.row.line,
       values: fromPrincipal(head.values, vectors),
       sixes: null,
-      atom: start.atom,
+      // What stood above was noted before the head was read.
+      atom: head.row.atom ?? start.atom,
       lead: 'principal',
       prefix: '',
       texts: [head.row.text],
       isWhole: false,
       beside: null,
-      surroundings: start,
+      surroundings: withHead(start, head.row),
     });
   }
 
@@ -155,6 +160,12 @@ export class BlockFinder {
       });
     }
   }
+}
+
+/** What stands above three rows, with the words of the row over them. */
+function withHead(start: Surroundings, { line, text, words }: DataRow): Surroundings {
+  if (words === 0 || start.near.some(({ number }) => number === line)) return start;
+  return { ...start, near: [...start.near, { number: line, text: text.trim(), meaning: lineMeaning(text) }] };
 }
 
 /** A row with words over three of another kind, such as principal values over their directions. */

@@ -96,6 +96,20 @@ describe('which atom is meant', () => {
     ]);
   });
 
+  it('principal values in the line that names the atom, over axes that have a row each', () => {
+    const axes = [' axis 1:  0.0 1.0 0.0', ' axis 2:  0.0 0.0 1.0', ' axis 3:  1.0 0.0 0.0'];
+    const all = taken(
+      'Atom C1: principal shieldings 20.5 98.1 160.2 ppm',
+      ...axes,
+      'Atom C2: principal shieldings 30.5 88.1 150.2 ppm',
+      ...axes,
+    );
+    expect(all.map(({ atom: name, tensor }) => [name, tensor[0], tensor[4], tensor[8]])).toEqual([
+      ['C1', 160.2, 20.5, 98.1],
+      ['C2', 150.2, 30.5, 88.1],
+    ]);
+  });
+
   it('element and number in brackets of their own', () => {
     const all = taken(
       'Field gradients (10^21 V/m2), six numbers V11 V22 V33 V23 V13 V12',
