@@ -75,7 +75,7 @@ const page = {
   worker: { format: 'es' as const },
   preview: { headers: { 'Content-Security-Policy': pagePolicy() } },
   optimizeDeps: {
-    include: ['lit', 'lit/directives/live.js', 'gl-matrix', 'three/src/Three.js'],
+    include: ['lit', 'lit/directives/live.js', 'gl-matrix', 'three/src/Three.js', '@spglib/moyo-wasm'],
     rolldownOptions: { plugins: [leanThree()] },
   },
 };
