@@ -28,7 +28,7 @@ describe('tensors of a calculation on a structure of another file', () => {
   it('lays calculated quartz on published quartz of the same hand in its usual setting', async () => {
     const { quartz } = cells;
     const { out } = await runCommand(['check', 'quartz.cif', 'tensors.xyz', '--json'], {
-      'quartz.cif': read('./fixtures/quartz-usual-setting.cif'),
+      'quartz.cif': read('./fixtures/on-structures/quartz-usual-setting.cif'),
       'tensors.xyz': xyzOf(quartz, ':shielding:R:9', 'shielding_unit=ppm'),
     });
     const said = JSON.parse(out);
