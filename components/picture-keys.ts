@@ -5,7 +5,10 @@ export type PictureCommand =
   | { readonly do: 'zoom'; readonly factor: number }
   /** A direction as it is typed: `a`, `-a`, `a*`. */
   | { readonly do: 'look'; readonly along: string }
-  | { readonly do: 'first' | 'fit' | 'toSelection' | 'pivot' | 'help' | 'measure' | 'type' | 'clear' | 'takeBack' }
+  | {
+      readonly do:
+        'first' | 'fit' | 'toSelection' | 'pivot' | 'help' | 'measure' | 'type' | 'clear' | 'takeBack';
+    }
   /** To the next or previous atom in reading order. */
   | { readonly do: 'step'; readonly by: 1 | -1 }
   | { readonly do: 'choose'; readonly adds: boolean };
